@@ -1,0 +1,1 @@
+export function ping(): i32 { return 1; }

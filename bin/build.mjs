@@ -1,0 +1,66 @@
+// Builds everything that is made from the sources: the kernel, the command line, the page and the library.
+import { spawnSync } from 'node:child_process';
+import { existsSync, mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+
+const root = fileURLToPath(new URL('..', import.meta.url));
+const at = (...parts) => join(root, ...parts);
+
+function newest(folder) {
+  let time = 0;
+  for (const entry of readdirSync(folder, { withFileTypes: true, recursive: true })) {
+    if (entry.isFile()) time = Math.max(time, statSync(join(entry.parentPath, entry.name)).mtimeMs);
+  }
+  return time;
+}
+
+function buildKernel() {
+  const target = at('build', 'kernel.ts');
+  const made = existsSync(target) ? statSync(target).mtimeMs : 0;
+  if (made > Math.max(newest(at('assembly')), statSync(at('asconfig.json')).mtimeMs)) return;
+  const asc = at('node_modules', 'assemblyscript', 'bin', 'asc.js');
+  const run = spawnSync(process.execPath, [asc, '--config', 'asconfig.json', '--target', 'release'], {
+    cwd: root,
+    stdio: 'inherit',
+  });
+  if (run.status !== 0) process.exit(run.status ?? 1);
+  const bytes = readFileSync(at('build', 'kernel.wasm')).toString('base64');
+  writeFileSync(target, `// Made by npm run build from assembly/.\nexport const kernelBase64 =\n  '${bytes}';\n`);
+}
+
+async function bundle() {
+  const { build } = await import('esbuild');
+  const shared = { absWorkingDir: root, bundle: true, format: 'esm', target: 'es2023', logLevel: 'warning' };
+  // The page goes into the command line as text, so it is built first.
+  if (existsSync(at('src/page/main.ts'))) {
+    await build({
+      ...shared,
+      entryPoints: ['src/page/main.ts'],
+      format: 'iife',
+      platform: 'browser',
+      minify: true,
+      outfile: 'build/page.js',
+      charset: 'utf8',
+    });
+    const script = readFileSync(at('build', 'page.js'), 'utf8');
+    writeFileSync(
+      at('build', 'page-script.ts'),
+      `// Made by npm run build from src/page/.\nexport const pageScript: string =\n  ${JSON.stringify(script)};\n`,
+    );
+  }
+  const node = { ...shared, platform: 'node', packages: 'bundle', minifySyntax: true };
+  const banner = {
+    js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",
+  };
+  if (existsSync(at('src/cli/main.ts'))) {
+    await build({ ...node, banner, entryPoints: { skein: 'src/cli/main.ts' }, outdir: 'build/cli', splitting: true });
+  }
+  if (existsSync(at('src/index.ts'))) {
+    await build({ ...node, banner, entryPoints: { index: 'src/index.ts' }, outdir: 'build' });
+  }
+}
+
+mkdirSync(at('build'), { recursive: true });
+buildKernel();
+await bundle();

@@ -1,0 +1,165 @@
+// A model with every name resolved, every default filled and one unit system (km, km², steps): what the compiler reads.
+// Patches stand in the order of their names, classes in the order of the spec. Index p is a patch, c a class.
+
+export interface Patch {
+  readonly name: string;
+  /** Kilometres on the plane. */
+  readonly at: readonly [number, number] | null;
+  readonly areaKm2: number | null;
+  readonly capacity: number | null;
+  /** Position in the author's list, for printing. */
+  readonly fileOrder: number;
+}
+
+/** One number a patch and class, at p * classes + c, for each stretch of steps in which it is constant. */
+export interface RateTable {
+  readonly epochs: readonly Float64Array[];
+  /** Index into `epochs` for step t (1-based) at t - 1; empty where there is one epoch. */
+  readonly epochOf: Int32Array;
+}
+
+/** One C×C matrix a patch, at p * C * C + to * C + from. */
+export type PatchMatrices = RateTable;
+
+interface PhaseBase {
+  readonly name: string;
+}
+
+export interface CountPhase extends PhaseBase {
+  readonly kind: 'count';
+}
+export interface BreedingPhase extends PhaseBase {
+  readonly kind: 'breeding';
+  /** Young of the counted sex for each animal, P×C. */
+  readonly births: RateTable;
+  /** Share of the young that enters each class; sums to 1. */
+  readonly into: Float64Array;
+}
+export interface SurvivalPhase extends PhaseBase {
+  readonly kind: 'survival';
+  readonly survival: RateTable;
+}
+export interface AgeingPhase extends PhaseBase {
+  readonly kind: 'ageing';
+  /** Share of class c that goes on to `next[c]`; the others stay. */
+  readonly advance: Float64Array;
+  /** Class after c, or -1 where the animals leave the model. */
+  readonly next: Int32Array;
+}
+export interface DemographyPhase extends PhaseBase {
+  readonly kind: 'demography';
+  readonly fates: PatchMatrices;
+  readonly births: PatchMatrices;
+}
+export interface DispersalPhase extends PhaseBase {
+  readonly kind: 'dispersal';
+  /** Class c disperses in this phase. */
+  readonly moves: Uint8Array;
+  /** Share that sets out, P×C; where `shares` is given, the sum of the shares. */
+  readonly leaving: RateTable;
+  readonly rule: DispersalRule;
+}
+export type DispersalRule =
+  | {
+      readonly by: 'kernel';
+      readonly kernel: { readonly shape: 'exponential'; readonly scaleKm: number; readonly reachKm: number | null };
+      /** A factor of the weight of each target patch. */
+      readonly attraction: Float64Array;
+      readonly leavers: 'all arrive' | 'may miss';
+      readonly hazardPerKm: number;
+      readonly survivalOnTheWay: number;
+    }
+  /** Share of the animals present in `from` that goes to `to`, at to * P + from. */
+  | { readonly by: 'shares'; readonly shares: Float64Array };
+
+export interface CeilingPhase extends PhaseBase {
+  readonly kind: 'ceiling';
+  readonly counted: Uint8Array;
+  readonly capacity: Float64Array;
+}
+
+export type Phase =
+  | CountPhase
+  | BreedingPhase
+  | SurvivalPhase
+  | AgeingPhase
+  | DemographyPhase
+  | DispersalPhase
+  | CeilingPhase;
+
+/** Which part of a phase a condition scales. */
+export type RatePart = 'survival' | 'births' | 'fates';
+
+/**
+ * A condition: a multiplier g(N) in each patch, read once at the start of the first phase that it changes and applied to
+ * every rate it names. N = Σ weight[c] · n[p, c].
+ */
+export interface Crowding {
+  readonly name: string;
+  readonly form: 'beverton-holt' | 'ricker';
+  readonly counted: Float64Array;
+  /** Rates by phase (an index into `phases`), part and class. */
+  readonly changes: readonly { readonly phase: number; readonly part: RatePart; readonly classes: Uint8Array }[];
+  readonly capacity: Float64Array;
+  /** Half-saturation of the Allee factor N / (N + h) in each patch; 0 where there is none. */
+  readonly alleeHalf: Float64Array;
+  readonly whereDeclining: 'none' | 'ceiling' | { readonly as: number } | null;
+}
+
+export interface OutcomeRule {
+  readonly name: string;
+  readonly weights: Float64Array;
+  /** 1 for each patch that counts. */
+  readonly patches: Uint8Array;
+  readonly below: number;
+  /** In words, from the rule itself. */
+  readonly definition: string;
+}
+
+export interface NamedNumber {
+  readonly name: string;
+  readonly value: number;
+  readonly expression: string;
+  readonly source: string | null;
+  readonly basis: string | null;
+}
+
+export interface Model {
+  readonly title: string;
+  readonly question: string | null;
+  readonly by: string | null;
+  readonly madeFor: string | null;
+  readonly date: string | null;
+  readonly status: string | null;
+  readonly invented: boolean;
+  readonly firstYear: number;
+  readonly steps: number;
+  readonly counts: 'females' | 'both sexes';
+  readonly oldest: 'open-ended' | 'terminal' | null;
+  readonly patches: readonly Patch[];
+  readonly classes: readonly string[];
+  readonly parameters: readonly NamedNumber[];
+  /** From one count to the next: the phases after `count` in the author's list, then those before it, `count` last. */
+  readonly phases: readonly Phase[];
+  /** The year as its author wrote it. */
+  readonly year: readonly string[];
+  readonly crowding: readonly Crowding[];
+  /** Whole animals, P×C. */
+  readonly start: StartRule;
+  readonly outcomes: readonly OutcomeRule[];
+  readonly replicates: number;
+  readonly seed: number;
+  /** Every default that was used, in words. */
+  readonly defaults: readonly string[];
+}
+
+/** How the animals at count 0 are given; a stable spread needs the compiled matrix. */
+export type StartRule =
+  | { readonly by: 'table'; readonly animals: Float64Array }
+  | { readonly by: 'total'; readonly total: number; readonly spread: 'stable within patch' | 'stable over all' }
+  | {
+      readonly by: 'counted';
+      readonly counted: Float64Array;
+      readonly of: Uint8Array;
+      readonly rest: 'stable within patch' | 'none';
+    };

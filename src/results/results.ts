@@ -1,0 +1,87 @@
+// What a run says, as data. These objects are printed by `--json` and read by the page; each carries its `format`.
+
+/** A 95 % interval with its name: what it does and does not account for. */
+export interface Interval {
+  readonly lower: number;
+  readonly upper: number;
+  readonly level: number;
+  readonly method: string;
+  readonly from: 'the number of runs' | 'what is not known';
+}
+
+export interface Chance {
+  readonly probability: number;
+  /** From the number of runs. */
+  readonly interval: Interval;
+  /** From what is not known; null where the model gives no uncertainty. */
+  readonly intervalFromUnknown: Interval | null;
+}
+
+export interface Quantiles {
+  readonly '0.05': number;
+  readonly '0.25': number;
+  readonly '0.5': number;
+  readonly '0.75': number;
+  readonly '0.95': number;
+}
+
+export interface YearSummary {
+  readonly year: number;
+  readonly mean: number;
+  readonly sd: number;
+  readonly quantiles: Quantiles;
+}
+
+export interface OutcomeResult {
+  readonly name: string;
+  readonly definition: string;
+  readonly below: number;
+  readonly ever: Chance;
+  readonly atEnd: Chance;
+  /** Chance of having fallen below by each year, with a band that holds for the whole curve at once. */
+  readonly byYear: readonly {
+    readonly year: number;
+    readonly everBelow: number;
+    readonly lower: number;
+    readonly upper: number;
+    readonly below: number;
+  }[];
+}
+
+export interface RunResults {
+  readonly format: 'skein-run/1';
+  readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
+  readonly model: string;
+  /** SHA-256 of everything that decides the result. */
+  readonly hash: string;
+  readonly seed: number;
+  readonly replicates: number;
+  readonly years: number;
+  readonly firstYear: number;
+  readonly abundance: {
+    readonly whole: readonly YearSummary[];
+    readonly patches: readonly { readonly patch: string; readonly byYear: readonly YearSummary[] }[];
+  };
+  readonly outcomes: readonly OutcomeResult[];
+  readonly meanLowestCount: { readonly mean: number; readonly sd: number; readonly standardError: number };
+  readonly patchesInUse: readonly { readonly year: number; readonly mean: number; readonly quantiles: Quantiles }[];
+  /** Runs that had to be stopped, with the reason; they are in no other number. */
+  readonly stopped: { readonly runs: number; readonly reasons: readonly string[] };
+  readonly cautions: readonly string[];
+}
+
+export interface PathResults {
+  readonly format: 'skein-path/1';
+  readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
+  readonly model: string;
+  readonly hash: string;
+  readonly years: number;
+  readonly firstYear: number;
+  readonly abundance: readonly {
+    readonly year: number;
+    readonly patch: string;
+    readonly class: string;
+    readonly animals: number;
+  }[];
+  readonly cautions: readonly string[];
+}
