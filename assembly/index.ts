@@ -1,1 +1,3 @@
-export function ping(): i32 { return 1; }
+export function ping(): i32 {
+  return 1;
+}

@@ -79,13 +79,7 @@ export interface CeilingPhase extends PhaseBase {
 }
 
 export type Phase =
-  | CountPhase
-  | BreedingPhase
-  | SurvivalPhase
-  | AgeingPhase
-  | DemographyPhase
-  | DispersalPhase
-  | CeilingPhase;
+  CountPhase | BreedingPhase | SurvivalPhase | AgeingPhase | DemographyPhase | DispersalPhase | CeilingPhase;
 
 /** Which part of a phase a condition scales. */
 export type RatePart = 'survival' | 'births' | 'fates';

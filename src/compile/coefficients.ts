@@ -1,0 +1,12 @@
+// Crowding with its coefficients solved: from the base model at mean rates, held under every plan.
+
+/** How the multiplier g depends on the count N: 1, 1/(1+aN), exp(−bN), or min(1, K/N). Times the Allee factor N/(N+h). */
+export type CrowdingForm = 'none' | 'beverton-holt' | 'ricker' | 'ceiling';
+
+/** For one crowding, by patch. `coefficient` is a, b or K as the form needs. */
+export interface CrowdingCoefficients {
+  readonly form: readonly CrowdingForm[];
+  readonly coefficient: Float64Array;
+  /** h of the Allee factor; 0 where there is none. */
+  readonly alleeHalf: Float64Array;
+}
