@@ -1,0 +1,169 @@
+// Products of sparse matrices, with vectors and with one another.
+import { sparseFromTriplets, type SparseMatrix } from './sparse.ts';
+
+/** y = A x. Cost: one multiplication an entry. `into` is overwritten when given. */
+export function multiply(matrix: SparseMatrix, x: Float64Array, into?: Float64Array): Float64Array {
+  const { rows, columns, columnStart, rowIndex, values } = matrix;
+  checkLength(x, columns);
+  const y = into ?? new Float64Array(rows);
+  y.fill(0);
+  for (let j = 0; j < columns; j++) {
+    const factor = x[j] ?? 0;
+    if (factor === 0) continue;
+    const end = columnStart[j + 1] ?? 0;
+    for (let k = columnStart[j] ?? 0; k < end; k++) {
+      const i = rowIndex[k] ?? 0;
+      y[i] = (y[i] ?? 0) + (values[k] ?? 0) * factor;
+    }
+  }
+  return y;
+}
+
+/** y = Aᵀ x. Cost: one multiplication an entry. `into` is overwritten when given. */
+export function multiplyTransposed(matrix: SparseMatrix, x: Float64Array, into?: Float64Array): Float64Array {
+  const { rows, columns, columnStart, rowIndex, values } = matrix;
+  checkLength(x, rows);
+  const y = into ?? new Float64Array(columns);
+  for (let j = 0; j < columns; j++) {
+    let sum = 0;
+    const end = columnStart[j + 1] ?? 0;
+    for (let k = columnStart[j] ?? 0; k < end; k++) sum += (values[k] ?? 0) * (x[rowIndex[k] ?? 0] ?? 0);
+    y[j] = sum;
+  }
+  return y;
+}
+
+export function transpose(matrix: SparseMatrix): SparseMatrix {
+  const { rows, columns, columnStart, rowIndex, values } = matrix;
+  const start = new Int32Array(rows + 1);
+  for (const row of rowIndex) start[row + 1] = (start[row + 1] ?? 0) + 1;
+  for (let i = 0; i < rows; i++) start[i + 1] = (start[i + 1] ?? 0) + (start[i] ?? 0);
+  const next = start.slice(0, rows);
+  const outIndex = new Int32Array(values.length);
+  const outValue = new Float64Array(values.length);
+  for (let j = 0; j < columns; j++) {
+    const end = columnStart[j + 1] ?? 0;
+    for (let k = columnStart[j] ?? 0; k < end; k++) {
+      const row = rowIndex[k] ?? 0;
+      const place = next[row] ?? 0;
+      next[row] = place + 1;
+      outIndex[place] = j;
+      outValue[place] = values[k] ?? 0;
+    }
+  }
+  return { rows: columns, columns: rows, columnStart: start, rowIndex: outIndex, values: outValue };
+}
+
+/** A B, column by column; entries that come out as exactly 0 are left out. Cost: Σ over entries of B of the column of A it meets. */
+export function product(a: SparseMatrix, b: SparseMatrix): SparseMatrix {
+  if (a.columns !== b.rows) throw new RangeError(`Cannot multiply ${shapeOf(a)} by ${shapeOf(b)}.`);
+  const sum = new Float64Array(a.rows);
+  const seenIn = new Int32Array(a.rows).fill(-1);
+  const columnStart = new Int32Array(b.columns + 1);
+  const rowIndex: number[] = [];
+  const values: number[] = [];
+  for (let j = 0; j < b.columns; j++) {
+    const touched = addColumn({ a, b, sum, seenIn }, j).sort((left, right) => left - right);
+    for (const i of touched) {
+      const value = sum[i] ?? 0;
+      if (value === 0) continue;
+      rowIndex.push(i);
+      values.push(value);
+    }
+    columnStart[j + 1] = values.length;
+  }
+  return {
+    rows: a.rows,
+    columns: b.columns,
+    columnStart,
+    rowIndex: Int32Array.from(rowIndex),
+    values: Float64Array.from(values),
+  };
+}
+
+interface ProductWork {
+  readonly a: SparseMatrix;
+  readonly b: SparseMatrix;
+  readonly sum: Float64Array;
+  readonly seenIn: Int32Array;
+}
+
+function addColumn({ a, b, sum, seenIn }: ProductWork, j: number): number[] {
+  const touched: number[] = [];
+  const end = b.columnStart[j + 1] ?? 0;
+  for (let k = b.columnStart[j] ?? 0; k < end; k++) {
+    const factor = b.values[k] ?? 0;
+    const column = b.rowIndex[k] ?? 0;
+    const last = a.columnStart[column + 1] ?? 0;
+    for (let m = a.columnStart[column] ?? 0; m < last; m++) {
+      const i = a.rowIndex[m] ?? 0;
+      if (seenIn[i] !== j) {
+        seenIn[i] = j;
+        sum[i] = 0;
+        touched.push(i);
+      }
+      sum[i] = (sum[i] ?? 0) + (a.values[m] ?? 0) * factor;
+    }
+  }
+  return touched;
+}
+
+/** factorA · A + factorB · B. */
+export function weightedSum(
+  [factorA, a]: readonly [number, SparseMatrix],
+  [factorB, b]: readonly [number, SparseMatrix],
+): SparseMatrix {
+  if (a.rows !== b.rows || a.columns !== b.columns) throw new RangeError(`Cannot add ${shapeOf(a)} and ${shapeOf(b)}.`);
+  const total = a.values.length + b.values.length;
+  const row = new Int32Array(total);
+  const column = new Int32Array(total);
+  const values = new Float64Array(total);
+  let filled = 0;
+  for (const [factor, matrix] of [
+    [factorA, a],
+    [factorB, b],
+  ] as const) {
+    for (let j = 0; j < matrix.columns; j++) {
+      for (let k = matrix.columnStart[j] ?? 0; k < (matrix.columnStart[j + 1] ?? 0); k++) {
+        row[filled] = matrix.rowIndex[k] ?? 0;
+        column[filled] = j;
+        values[filled++] = factor * (matrix.values[k] ?? 0);
+      }
+    }
+  }
+  return sparseFromTriplets({ rows: a.rows, columns: a.columns, rowIndex: row, columnIndex: column, values });
+}
+
+/** The rows and columns named, in the order named: entry (a, b) of the result is entry (keep[a], keep[b]). */
+export function principalPart(matrix: SparseMatrix, keep: ArrayLike<number>): SparseMatrix {
+  const placeOf = new Map<number, number>();
+  for (let place = 0; place < keep.length; place++) placeOf.set(keep[place] ?? 0, place);
+  const row: number[] = [];
+  const column: number[] = [];
+  const values: number[] = [];
+  for (let place = 0; place < keep.length; place++) {
+    const j = keep[place] ?? 0;
+    for (let k = matrix.columnStart[j] ?? 0; k < (matrix.columnStart[j + 1] ?? 0); k++) {
+      const to = placeOf.get(matrix.rowIndex[k] ?? 0);
+      if (to === undefined) continue;
+      row.push(to);
+      column.push(place);
+      values.push(matrix.values[k] ?? 0);
+    }
+  }
+  return sparseFromTriplets({
+    rows: keep.length,
+    columns: keep.length,
+    rowIndex: row,
+    columnIndex: column,
+    values,
+  });
+}
+
+function checkLength(x: Float64Array, expected: number): void {
+  if (x.length !== expected) throw new RangeError(`A vector of ${x.length} meets a side of ${expected}.`);
+}
+
+function shapeOf(matrix: SparseMatrix): string {
+  return `${matrix.rows} × ${matrix.columns}`;
+}
