@@ -1,2 +1,5 @@
 // Everything that the kernel module offers to its host: functions over numbers only.
 export { exp, log, pow } from './mathematics';
+export { logFactorial } from './draws/factorial';
+export { probePhilox, probePhiloxLanes, probeSample, probeStream } from './probe';
+export { release, reserve } from './memory';

@@ -1,11 +1,19 @@
 // The kernel module, compiled once and instantiated on demand: in Node and in a browser, without imports of either.
 import { kernelBase64 } from '../../build/kernel.ts';
 
-/** What the kernel module offers: functions over numbers only. */
+/** What the kernel module offers: functions over numbers only; addresses are bytes in its memory. */
 export interface MachineFunctions {
   readonly exp: (x: number) => number;
   readonly log: (x: number) => number;
   readonly pow: (base: number, exponent: number) => number;
+  /** ln k! for whole k ≥ 0. */
+  readonly logFactorial: (k: number) => number;
+  readonly release: () => void;
+  readonly reserve: (bytes: number) => number;
+  readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
+  readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
+  readonly probeSample: (out: number, draws: number, request: number) => void;
+  readonly probeStream: (word: number, state: number, index: number) => void;
 }
 
 /** An instance with its own memory. Views on `memory.buffer` die when it grows: make them anew after `reserve`. */
@@ -13,7 +21,18 @@ export interface Machine extends MachineFunctions {
   readonly memory: WebAssembly.Memory;
 }
 
-const functionNames: Readonly<Record<keyof MachineFunctions, true>> = { exp: true, log: true, pow: true };
+const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
+  exp: true,
+  log: true,
+  pow: true,
+  logFactorial: true,
+  release: true,
+  reserve: true,
+  probePhilox: true,
+  probePhiloxLanes: true,
+  probeSample: true,
+  probeStream: true,
+};
 
 const compiled = new WebAssembly.Module(bytesOf(kernelBase64));
 
