@@ -60,7 +60,12 @@ export interface RunResults {
   readonly firstYear: number;
   readonly abundance: {
     readonly whole: readonly YearSummary[];
-    readonly patches: readonly { readonly patch: string; readonly byYear: readonly YearSummary[] }[];
+    readonly patches: readonly {
+      readonly patch: string;
+      readonly byYear: readonly YearSummary[];
+      /** Share of the runs in which nobody is there, in the order of `byYear`; absent where it was not counted. */
+      readonly empty?: readonly number[];
+    }[];
   };
   readonly outcomes: readonly OutcomeResult[];
   readonly meanLowestCount: { readonly mean: number; readonly sd: number; readonly standardError: number };

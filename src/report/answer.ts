@@ -1,0 +1,80 @@
+// The answer in sentences, the same on the page and in the terminal: what happens in how many futures, how sure the number
+// is and of what, and whose call the risk is.
+import type { Chance, OutcomeResult, RunResults } from '../results/results.ts';
+import { of100, percent, plain, whole } from '../view/number.ts';
+
+export interface Answer {
+  /** The first sentence in three parts, the middle one to be stressed. */
+  readonly lead: readonly [string, string, string];
+  readonly meaning: string | null;
+  readonly fromRuns: string | null;
+  readonly fromUnknown: string | null;
+  readonly abundance: string;
+  readonly call: string;
+}
+
+/** `animals` is what one individual is called, 'females' or 'animals'. */
+export function answer(results: RunResults, animals: string): Answer {
+  const outcome = results.outcomes[0];
+  const call = 'How much risk is acceptable is not a matter of calculation: it is for those who decide.';
+  const abundance = abundanceSentence(results, animals);
+  if (outcome === undefined) {
+    const lead = ['No outcome was named in this model. ', abundance, ''] as const;
+    return { lead, meaning: null, fromRuns: null, fromUnknown: null, abundance, call };
+  }
+  return {
+    lead: leadOf(outcome, results),
+    meaning: `“${outcome.name}” means: ${outcome.definition}.`,
+    fromRuns: runsSentence(outcome.ever, results),
+    fromUnknown: unknownSentence(outcome.ever),
+    abundance,
+    call,
+  };
+}
+
+function leadOf(outcome: OutcomeResult, results: RunResults): Answer['lead'] {
+  const by = ` by ${lastYear(results)}`;
+  const { probability } = outcome.ever;
+  const runs = plain(finished(results));
+  if (probability === 0) return ['In ', `none of ${runs} futures`, ` does “${outcome.name}” happen${by}.`];
+  if (probability === 1) return ['In ', `all of ${runs} futures`, ` “${outcome.name}” happens${by}.`];
+  const futures = of100(probability);
+  const about = /^\d/.test(futures) ? `about ${futures}` : futures;
+  return ['In ', `${about} of 100 futures`, ` “${outcome.name}” happens${by}.`];
+}
+
+function runsSentence(chance: Chance, results: RunResults): string {
+  const { lower, upper, level, method } = chance.interval;
+  const runs = `${plain(finished(results))} runs`;
+  const how = `${plain(level * 100)} %, ${method}`;
+  if (chance.probability === 0) {
+    return `${runs} without a case still allow a chance of up to ${percent(upper)} (${how}).`;
+  }
+  return `From the number of runs alone (${runs}), the chance lies between ${percent(lower)} and ${percent(upper)} (${how}).`;
+}
+
+function unknownSentence({ intervalFromUnknown }: Chance): string {
+  if (intervalFromUnknown === null) {
+    return 'The model gives no uncertainty for its numbers, so how far the answer could move because they are not exactly known is in none of the intervals here.';
+  }
+  const { lower, upper, level } = intervalFromUnknown;
+  return `From what is not known about the numbers of the model, it lies between ${percent(lower)} and ${percent(upper)} (${plain(level * 100)} %).`;
+}
+
+function abundanceSentence(results: RunResults, animals: string): string {
+  const { whole: years } = results.abundance;
+  const [first, last] = [years[0], years[years.length - 1]];
+  if (first === undefined || last === undefined) return 'Nothing was counted.';
+  const q = last.quantiles;
+  const now = `The middle future ends with ${whole(q['0.5'])} ${animals} in ${last.year}, after ${whole(first.quantiles['0.5'])} at the start`;
+  return `${now}; 90 of 100 futures end between ${whole(q['0.05'])} and ${whole(q['0.95'])}.`;
+}
+
+/** Runs that are in the numbers. */
+export function finished(results: RunResults): number {
+  return results.replicates - results.stopped.runs;
+}
+
+export function lastYear({ abundance, firstYear }: RunResults): number {
+  return abundance.whole[abundance.whole.length - 1]?.year ?? firstYear;
+}

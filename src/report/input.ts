@@ -1,0 +1,20 @@
+// Everything that a report is written from.
+import type { CrowdingCoefficients } from '../compile/coefficients.ts';
+import type { Landscape } from '../landscape/landscape.ts';
+import type { Model } from '../model/model.ts';
+import type { PathResults, RunResults } from '../results/results.ts';
+
+export interface ReportInput {
+  readonly results: RunResults;
+  /** The path without chance; the spread over classes that movement is worked out with comes from it. */
+  readonly path?: PathResults;
+  readonly model: Model;
+  readonly landscape: Landscape;
+  /** In the order of the model's crowding; without them movement is not worked out for a model that has crowding. */
+  readonly coefficients?: readonly CrowdingCoefficients[];
+  readonly specText: string;
+  /** As it can be typed again. */
+  readonly commandLine: string;
+  /** The script of the page, as built from src/page/. */
+  readonly pageScript: string;
+}

@@ -1,0 +1,47 @@
+// The decision report: one page that answers, shows, warns and can be run again.
+import { mark, type Markup } from '../view/markup.ts';
+import { answer } from './answer.ts';
+import { writeDocument } from './document.ts';
+import type { ReportInput } from './input.ts';
+import { annexSection, limitsSection } from './section/annex.ts';
+import { abundanceSection, chancesSection } from './section/courses.ts';
+import { answerSection, headSection } from './section/head.ts';
+import { mapSection } from './section/map.ts';
+import { outcomesSection } from './section/outcomes.ts';
+import { styleSheet } from './style.ts';
+import { summariseForView } from './view.ts';
+
+export type { ReportInput } from './input.ts';
+
+export function buildReport(input: ReportInput): string {
+  const { model, results } = input;
+  const view = summariseForView(input);
+  const summary = [
+    answerSection(answer(results, view.animals), results),
+    outcomesSection(model, results),
+    mapSection(view),
+    chancesSection(view),
+  ];
+  const rest = [abundanceSection(view, results), limitsSection(input), annexSection(input)];
+  const foot = `skein ${results.tool.version} · ${results.hash.slice(0, 16)} · ${model.date ?? 'no date given'}`;
+  return writeDocument({
+    title: `${model.title}: decision report`,
+    style: styleSheet(foot),
+    script: input.pageScript,
+    data: view,
+    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages">${rest}</div><footer>${foot}</footer>`,
+  });
+}
+
+function contents(chances: boolean): Markup {
+  const places = [
+    ['answer', 'Answer'],
+    ['outcomes', 'Outcomes'],
+    ['map', 'Map'],
+    ...(chances ? [['chances', 'Chances by year']] : []),
+    ['abundance', 'Abundance'],
+    ['limits', 'Limits'],
+    ['annex', 'Annex'],
+  ];
+  return mark`<nav aria-label="Contents"><ul>${places.map(([id, name]) => mark`<li><a href="#${id ?? ''}">${name ?? ''}</a></li>`)}</ul></nav>`;
+}

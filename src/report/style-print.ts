@@ -1,0 +1,32 @@
+// How the report looks on paper: the summary on two pages, the annex after it, everything unfolded.
+
+export function printStyle(foot: string): string {
+  const safe = foot.replace(/[^\w .:·-]/g, '');
+  return `
+@page{margin:15mm 16mm 17mm;@bottom-left{content:"${safe}";font:8.5pt sans-serif;color:#4a5963}@bottom-right{content:"page " counter(page) " of " counter(pages);font:8.5pt sans-serif;color:#4a5963}}
+@media print{
+html,body{background:#fff}
+body{font-size:9.6pt;line-height:1.42}
+main{padding:0;border:0;max-width:none;background:#fff}
+nav,.controls,.save,.skip,.readout,.tip,footer{display:none!important}
+.wide{display:block!important}.narrow{display:none!important}
+h1{font-size:22pt;margin:.2rem 0}h2{font-size:14.5pt;margin:1.1rem 0 .4rem;padding-top:.45rem;break-after:avoid}h3,h4,h5{break-after:avoid}
+.question{font-size:12.5pt;margin:.1rem 0 .3rem}.lead{font-size:14pt;margin-bottom:.4rem}
+p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max-width:none}
+.answer{grid-template-columns:1fr auto;gap:1rem}.futures{max-width:13rem}.sure{margin-top:.4rem}
+.lead strong{text-decoration:underline;text-decoration-thickness:1.5pt;text-underline-offset:3pt;background:none}
+table{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}th,td{padding:.12rem .6rem .12rem 0}
+tr,figure,dl div{break-inside:avoid}
+figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
+.map svg{max-height:105mm;width:auto;margin:0 auto}
+.chart .wide svg{max-height:62mm;width:auto}
+.pages{break-before:page}
+.smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}
+dl{margin:.4rem 0}.numbers div,.concepts div{grid-template-columns:11rem 1fr;padding:.1rem 0}
+details::details-content{content-visibility:visible!important;display:block!important;height:auto!important}
+summary{list-style:none;color:var(--ink);font-weight:600}
+#map details{display:none}
+pre{white-space:pre-wrap;font-size:7.6pt;background:#fff;border:1px solid #aab4b5}
+a{color:inherit;text-decoration:none}
+}`;
+}

@@ -1,0 +1,87 @@
+// From results and model to what the figures are drawn from. Patches return to the order of their author's list.
+import type { OutcomeResult, YearSummary } from '../results/results.ts';
+import type { Fan, LinkView, OutcomeView, PatchView, ReportView } from '../view/contract.ts';
+import type { ReportInput } from './input.ts';
+import { estimateMovement, type LinkFlow } from './movement.ts';
+
+/** More links than this would make the page heavy and the map grey; the strongest are kept. */
+const mostLinks = 400;
+
+export function summariseForView(input: ReportInput): ReportView {
+  const { model, results } = input;
+  const order = model.patches.map((_, p) => p).sort((a, b) => fileOrder(input, a) - fileOrder(input, b));
+  const flows = estimateMovement(input) ?? [];
+  const links = strongest(flows, order);
+  return {
+    format: 'skein-view/1',
+    title: model.title,
+    hash: results.hash,
+    animals: model.counts === 'females' ? 'females' : 'animals',
+    futures: results.replicates - results.stopped.runs,
+    years: results.abundance.whole.map((summary) => summary.year),
+    whole: fan(results.abundance.whole),
+    inUse: fan(results.patchesInUse),
+    patches: order.flatMap((p) => patchView(input, p)),
+    links,
+    linksLeftOut: flows.length - links.length,
+    outcomes: results.outcomes.map((outcome) => outcomeView(outcome, results.abundance.whole)),
+  };
+}
+
+/** Counts before the first at which the outcome is looked at have chance 0. */
+function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): OutcomeView {
+  const byYear = new Map(outcome.byYear.map((one) => [one.year, one]));
+  const series = (part: 'everBelow' | 'lower' | 'upper' | 'below') =>
+    counts.map(({ year }) => short(byYear.get(year)?.[part] ?? 0));
+  return {
+    name: outcome.name,
+    definition: outcome.definition,
+    ever: series('everBelow'),
+    lower: series('lower'),
+    upper: series('upper'),
+    below: series('below'),
+  };
+}
+
+function fileOrder({ model }: ReportInput, p: number): number {
+  return model.patches[p]?.fileOrder ?? p;
+}
+
+function patchView({ model, results }: ReportInput, p: number): readonly PatchView[] {
+  const patch = model.patches[p];
+  const found = results.abundance.patches.find((one) => one.patch === patch?.name);
+  if (patch === undefined || found === undefined) return [];
+  const { name, at, capacity, areaKm2 } = patch;
+  const empty = found.empty === undefined ? null : found.empty.map(short);
+  return [{ name, at, capacity, areaKm2, fan: fan(found.byYear), empty }];
+}
+
+function fan(byYear: readonly Pick<YearSummary, 'mean' | 'quantiles'>[]): Fan {
+  const quantile = (level: keyof YearSummary['quantiles']) => byYear.map((one) => short(one.quantiles[level]));
+  return {
+    mean: byYear.map((one) => short(one.mean)),
+    p05: quantile('0.05'),
+    p25: quantile('0.25'),
+    median: quantile('0.5'),
+    p75: quantile('0.75'),
+    p95: quantile('0.95'),
+  };
+}
+
+function strongest(flows: readonly LinkFlow[], order: readonly number[]): readonly LinkView[] {
+  const place = new Map(order.map((p, index) => [p, index]));
+  return flows
+    .map((flow) => ({ flow, total: flow.animals.reduce((sum, animals) => sum + animals, 0) }))
+    .sort((a, b) => b.total - a.total)
+    .slice(0, mostLinks)
+    .map(({ flow }) => ({
+      from: place.get(flow.from) ?? 0,
+      to: place.get(flow.to) ?? 0,
+      animals: Array.from(flow.animals, short),
+    }));
+}
+
+/** Four digits are more than a reader can use. */
+function short(value: number): number {
+  return Number(value.toPrecision(4));
+}

@@ -1,0 +1,76 @@
+// What the figures and tables of a report are drawn from. Plain data: it travels inside the page as JSON, and nothing in
+// view/ or page/ knows more of a model than this. Index p is a patch, index i is a count (0 is the start).
+
+/** One number a count. */
+export type Series = readonly number[];
+
+/** Abundance over many futures, by count. */
+export interface Fan {
+  readonly mean: Series;
+  readonly p05: Series;
+  readonly p25: Series;
+  readonly median: Series;
+  readonly p75: Series;
+  readonly p95: Series;
+}
+
+export interface PatchView {
+  readonly name: string;
+  /** Kilometres on the plane; null where the figures place the patches by themselves. */
+  readonly at: readonly [number, number] | null;
+  readonly capacity: number | null;
+  readonly areaKm2: number | null;
+  readonly fan: Fan;
+  /** Share of the futures in which nobody is there; null where it is not known. */
+  readonly empty: Series | null;
+}
+
+export interface LinkView {
+  /** Index into `patches`. */
+  readonly from: number;
+  readonly to: number;
+  /** Animals that arrive in the year that ends with count i; 0 at the start. */
+  readonly animals: Series;
+}
+
+export interface OutcomeView {
+  readonly name: string;
+  readonly definition: string;
+  readonly ever: Series;
+  readonly lower: Series;
+  readonly upper: Series;
+  /** Chance of being below at count i, whatever was before. */
+  readonly below: Series;
+}
+
+export interface ReportView {
+  readonly format: 'skein-view/1';
+  readonly title: string;
+  readonly hash: string;
+  /** What one individual is called: 'females' or 'animals'. */
+  readonly animals: string;
+  readonly futures: number;
+  readonly years: Series;
+  readonly whole: Fan;
+  readonly inUse: Fan;
+  readonly patches: readonly PatchView[];
+  readonly links: readonly LinkView[];
+  /** Links that exist but are too weak to be kept among so many. */
+  readonly linksLeftOut: number;
+  readonly outcomes: readonly OutcomeView[];
+}
+
+/** What the map shows at a moment. */
+export interface MapState {
+  /** Index into `years`. */
+  readonly count: number;
+  readonly show: 'abundance' | 'empty';
+  /** The patch that the keyboard is at, where the map is live; null for a still picture. */
+  readonly focus: number | null;
+}
+
+/** Pixels. */
+export interface Size {
+  readonly width: number;
+  readonly height: number;
+}

@@ -1,0 +1,64 @@
+// Abundance over many futures: nine in ten lie in the light band, half in the darker one, the line is the middle.
+import { area, line } from 'd3';
+import type { Fan, Series, Size } from './contract.ts';
+import { axes, cursor, plot, type Plot } from './axes.ts';
+import { figure, type FigureWords } from './figure.ts';
+import { key } from './key.ts';
+import { mark, type Markup } from './markup.ts';
+import { plain } from './number.ts';
+import { deep, ink, middle, softInk, tint } from './palette.ts';
+import { largest, pick } from './series.ts';
+
+export interface FanChart {
+  readonly words: FigureWords;
+  readonly years: Series;
+  readonly fan: Fan;
+  /** What the upright axis counts. */
+  readonly axis: string;
+  /** A year to mark, where the chart is live. */
+  readonly marked: number | null;
+  readonly write?: (value: number) => string;
+}
+
+export function drawFan(chart: FanChart, size: Size): Markup {
+  const legend = key(entries, 0, 4, size.width);
+  const margins = { top: legend.height + 32, right: 16, bottom: 28, left: 52 };
+  const place = plot(size, margins, chart.years, largest(chart.fan.p95));
+  const title = mark`<text x="0" y="${legend.height + 20}" fill="${softInk}">${chart.axis}</text>`;
+  const inside = mark`${bands(place, chart.years, chart.fan)}${cursor(place, chart.marked)}`;
+  return figure(size, chart.words, mark`${legend.markup}${title}${axes(place, chart.write ?? plain)}${inside}`);
+}
+
+/** The two bands and the line of the middle. */
+export function bands(place: Plot, years: Series, fan: Fan): Markup {
+  const outer = ribbon(place, years, fan.p05, fan.p95);
+  const inner = ribbon(place, years, fan.p25, fan.p75);
+  const course = line<number>()
+    .x((_, i) => place.x(pick(years, i)))
+    .y((value) => place.y(value))
+    .digits(1);
+  return mark`<path d="${outer}" fill="${tint}"/><path d="${inner}" fill="${middle}"/><path d="${course([...fan.median]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5" stroke-linejoin="round"/>`;
+}
+
+export function ribbon(place: Plot, years: Series, lower: Series, upper: Series): string {
+  const shape = area<number>()
+    .x((_, i) => place.x(pick(years, i)))
+    .y0((_, i) => place.y(pick(lower, i)))
+    .y1((_, i) => place.y(pick(upper, i)))
+    .digits(1);
+  return shape([...years]) ?? '';
+}
+
+const entries = [
+  { sample: swatch(tint), width: 26, words: '90 of 100 futures' },
+  { sample: swatch(middle), width: 26, words: 'the middle half' },
+  {
+    sample: mark`<line x1="0" x2="26" stroke="${deep}" stroke-width="2.5"/>`,
+    width: 26,
+    words: 'the middle future of each year',
+  },
+];
+
+function swatch(colour: string): Markup {
+  return mark`<rect y="-6" width="26" height="12" fill="${colour}" stroke="${ink}" stroke-width="0.5"/>`;
+}

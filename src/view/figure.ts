@@ -1,0 +1,34 @@
+// The frame of every figure: an SVG that stands alone (no style sheet, no script) and says in words what it shows.
+import type { Size } from './contract.ts';
+import { mark, type Content, type Markup } from './markup.ts';
+import { paper, sans } from './palette.ts';
+
+export interface FigureWords {
+  /** Short name, read first. */
+  readonly title: string;
+  /** What is to be seen, in a sentence or two. */
+  readonly description: string;
+}
+
+/** A still picture for assistive technology unless `live`, when its parts are read one by one. */
+export function figure(size: Size, words: FigureWords, content: Content, live = false): Markup {
+  const label = `${words.title}. ${words.description}`;
+  return mark`<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${size.width} ${size.height}" width="${size.width}" height="${size.height}" role="${live ? 'group' : 'img'}" aria-label="${label}" font-family="${sans}" font-size="13"><title>${words.title}</title><desc>${words.description}</desc><rect width="${size.width}" height="${size.height}" fill="${paper}"/>${content}</svg>`;
+}
+
+/** About how wide a text of this size stands, without a browser to ask. */
+export function textWidth(text: string, fontSize: number): number {
+  let width = 0;
+  for (const character of text) width += narrow.test(character) ? 0.32 : character > '\u2e80' ? 1 : 0.57;
+  return width * fontSize;
+}
+
+const narrow = /[ iljtfrI.,:;'|()[\]!1]/;
+
+/** A text that fits, cut with an ellipsis where it must be. */
+export function fitText(text: string, fontSize: number, width: number): string {
+  if (textWidth(text, fontSize) <= width) return text;
+  const characters = [...text];
+  while (characters.length > 1 && textWidth(`${characters.join('')}…`, fontSize) > width) characters.pop();
+  return `${characters.join('').trimEnd()}…`;
+}

@@ -1,0 +1,43 @@
+// What the map shows at one patch or link, in words: for tooltips, for screen readers and for the table beside it.
+import type { LinkView, ReportView } from '../contract.ts';
+import { of100, plain, whole } from '../number.ts';
+import { pick } from '../series.ts';
+
+/** Movement below a whole animal a year still counts: it adds up over years. */
+export function flow(animals: number): string {
+  if (animals === 0) return '0';
+  if (animals < 0.05) return 'under 0.1';
+  return animals < 9.95 ? animals.toFixed(1) : plain(animals);
+}
+
+export function patchLines(view: ReportView, patch: number, count: number): readonly string[] {
+  const { fan, empty } = pick(view.patches, patch);
+  const lines = [
+    `${whole(pick(fan.median, count))} ${view.animals} in the middle of ${plain(view.futures)} futures`,
+    `90 of 100 futures: ${whole(pick(fan.p05, count))} to ${whole(pick(fan.p95, count))}`,
+  ];
+  if (empty !== null) lines.push(`empty in ${of100(pick(empty, count))} of 100 futures`);
+  if (count > 0 && view.links.length > 0) {
+    lines.push(
+      `arriving ${flow(arriving(view, patch, count))} a year, setting out and arriving elsewhere ${flow(leaving(view, patch, count))}`,
+    );
+  }
+  return lines;
+}
+
+export function linkLine(view: ReportView, link: LinkView, count: number): string {
+  const [from, to] = [pick(view.patches, link.from).name, pick(view.patches, link.to).name];
+  return `${from} to ${to}: ${flow(pick(link.animals, count))} ${view.animals} a year`;
+}
+
+export function arriving(view: ReportView, patch: number, count: number): number {
+  return sum(view.links, (link) => (link.to === patch ? pick(link.animals, count) : 0));
+}
+
+export function leaving(view: ReportView, patch: number, count: number): number {
+  return sum(view.links, (link) => (link.from === patch ? pick(link.animals, count) : 0));
+}
+
+function sum(links: readonly LinkView[], part: (link: LinkView) => number): number {
+  return links.reduce((total, link) => total + part(link), 0);
+}
