@@ -5,8 +5,8 @@ export interface LargeProblem {
   readonly size: number;
   /** A x, a new vector. */
   readonly multiply: (x: Float64Array) => Float64Array;
-  /** Something near (σI − A)⁻¹ r. */
-  readonly precondition: (r: Float64Array) => Float64Array;
+  /** Something near r → (σI − A)⁻¹ r for a given σ; asked for anew as the growth becomes known. */
+  readonly preconditioner: (shift: number) => (r: Float64Array) => Float64Array;
   /** Not negative, not all 0. */
   readonly start: Float64Array;
   /** Of |Ax − θx| against θ|x|. */
@@ -31,8 +31,9 @@ const keptAtRestart = 8;
  * and some hundred operations a state. The caller judges `residual`.
  */
 export function davidson(problem: LargeProblem): LargePair {
-  const { tolerance = 1e-13, maxSteps = 1500 } = problem;
+  const { tolerance = 1e-13, maxSteps = 2000 } = problem;
   const space = openSpace(problem, problem.start);
+  let near: Near | null = null;
   let best: LargePair | null = null;
   for (let step = 1; step <= maxSteps; step++) {
     const found = ritz(space);
@@ -41,13 +42,29 @@ export function davidson(problem: LargeProblem): LargePair {
     const residual = norm(pair.residual) / (Math.abs(found.value) * size);
     if (!best || residual < best.residual)
       best = { growthRate: found.value, vector: pair.vector, residual, steps: step };
-    if (residual <= tolerance || step - best.steps > 60) break;
-    const next = correction(problem, pair);
+    if (residual <= tolerance || step - best.steps > 150) break;
+    if (near === null || space.basis.length >= largestSpace) near = nearer(problem, near, found.value, residual);
+    const next = correction(near.apply, pair);
     if (space.basis.length >= largestSpace) restart(space, found.kept);
     if (!extend(problem, space, next) && !extend(problem, space, problem.multiply(pair.vector))) break;
   }
   if (!best) throw new Error('Davidson iteration without a step.');
   return best;
+}
+
+interface Near {
+  readonly shift: number;
+  readonly distance: number;
+  readonly apply: (r: Float64Array) => Float64Array;
+}
+
+/** A preconditioner for a shift just above the growth, made anew where the old one has become far off or too low. */
+function nearer(problem: LargeProblem, old: Near | null, value: number, residual: number): Near {
+  const distance = value * Math.min(0.05, Math.max(1e-4, residual));
+  const still = old !== null && old.shift > value && old.shift - value < 4 * distance;
+  if (still || (old !== null && old.shift > value && old.distance <= 2 * distance)) return old;
+  const shift = value + distance;
+  return { shift, distance, apply: problem.preconditioner(shift) };
 }
 
 interface Space {
@@ -128,9 +145,9 @@ function combine(space: Space, weights: readonly number[]): Combined {
 }
 
 /** Olsen's correction: the preconditioned residual, with as much of the preconditioned vector as makes it new. */
-function correction(problem: LargeProblem, { vector, residual }: Combined): Float64Array {
-  const fromResidual = problem.precondition(residual);
-  const fromVector = problem.precondition(vector);
+function correction(precondition: Near['apply'], { vector, residual }: Combined): Float64Array {
+  const fromResidual = precondition(residual);
+  const fromVector = precondition(vector);
   const share = dot(vector, fromVector);
   if (share !== 0) addTimes(fromResidual, -dot(vector, fromResidual) / share, fromVector);
   return fromResidual;

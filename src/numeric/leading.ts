@@ -67,9 +67,9 @@ export function leading(matrix: SparseMatrix): Leading {
   const main = fastest[0];
   if (reason !== null || main === undefined)
     return { ...facts, right: null, left: null, reason: reason ?? 'no states' };
-  const right = carry({ matrix, components, growthRate }, main, pairs[main]?.right ?? Float64Array.of());
+  const right = carry({ matrix, components, growthRate }, main, pairs[main]?.right ?? new Float64Array(0));
   const mirrored = { matrix: transpose(matrix), components, growthRate };
-  const left = carry(mirrored, main, leftOf(matrix, components.states[main] ?? new Int32Array(0)));
+  const left = carry(mirrored, main, pairs[main]?.left ?? new Float64Array(0));
   return { ...facts, right: toShares(right), left: firstToOne(left) };
 }
 
@@ -85,18 +85,15 @@ interface SolvedBlock {
   readonly growthRate: number;
   readonly period: number;
   readonly right: Float64Array;
+  readonly left: Float64Array;
 }
 
 function solveBlock(matrix: SparseMatrix, states: Int32Array): SolvedBlock {
   const block = principalPart(matrix, states);
   const period = periodOfIrreducible(block);
-  if (period === 0) return { states, growthRate: 0, period, right: Float64Array.of(1) };
-  const { growthRate, vector } = irreduciblePair(block);
-  return { states, growthRate, period, right: vector };
-}
-
-function leftOf(matrix: SparseMatrix, states: Int32Array): Float64Array {
-  return irreduciblePair(transpose(principalPart(matrix, states))).vector;
+  const one = Float64Array.of(1);
+  if (period === 0) return { states, growthRate: 0, period, right: one, left: one };
+  return { states, period, ...irreduciblePair(block) };
 }
 
 function feedsOf(matrix: SparseMatrix, { of, states }: Components): number[][] {
