@@ -1,0 +1,51 @@
+// The mistakes that only show when names are resolved and numbers are known.
+
+export const modelCodes = {
+  // Names
+  'unknown-class': 'A name is not one of the classes.',
+  'unknown-patch': 'A name is not one of the patches.',
+  'unknown-phase': 'A name in the year is not a phase.',
+  'unknown-name': 'A name in an expression is not known.',
+  'unknown-rate': 'A condition names a rate that does not exist.',
+  'ambiguous-name': 'A name stands for two things.',
+  'reserved-name': 'A name has a meaning of its own in the language.',
+  'parameter-cycle': 'A parameter is made from itself.',
+  'repeated-patch': 'Two patches have the same name.',
+
+  // The year
+  'missing-count': 'The year does not say when animals are counted.',
+  'repeated-phase': 'A phase stands twice in the year.',
+  'missing-rates': 'A phase is in the year, but its rates are not given.',
+  'unused-rates': 'Rates are given for a phase that is not in the year.',
+  'missing-oldest': 'It is not said what happens to the oldest class.',
+
+  // Rates
+  'missing-rate': 'A class has no rate.',
+  'share-out-of-range': 'A share is below 0 or above 1.',
+  'negative-rate': 'A rate is below zero.',
+  'matrix-size': 'A matrix has another size than the classes ask for.',
+  'column-above-one': 'The fates of one class add up to more than 1.',
+
+  // Places and dispersal
+  'missing-position': 'It is not said what the places of the patches mean.',
+  'missing-place': 'A patch has no place, and a distance is needed.',
+  'same-place': 'Two patches lie at the same place.',
+  'missing-area': 'A patch has no area, and one is needed.',
+  'dispersal-shape': 'A dispersal says too little or too much.',
+  'shares-above-one': 'More animals leave a patch than there are.',
+  'self-share': 'A share goes from a patch to itself.',
+  'no-target': 'Leavers of a patch have nowhere to go.',
+  'misses-above-one': 'More leavers arrive than set out.',
+
+  // Crowding
+  'missing-capacity': 'A patch has no capacity above zero.',
+  'declining-patch': 'A patch declines alone, so it has no capacity to stand still at.',
+  'capacity-unreachable': 'No strength of crowding makes a patch stand still at its capacity.',
+  'uncounted-capacity': 'The crowding counts nobody at its place in the year.',
+
+  // Start and outcomes
+  'start-empty-class': 'The start has animals of a class that is always empty at the count.',
+  'start-needs-spread': 'A stable spread does not exist here.',
+  'start-nobody': 'The start has no animals.',
+  'already-below': 'An outcome is true from the start.',
+} as const satisfies Readonly<Record<string, string>>;

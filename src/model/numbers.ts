@@ -1,0 +1,162 @@
+// Values of expressions: over named parameters, the attributes of a patch, and the year.
+import { pinned } from '../machine/pinned.ts';
+import { nearestName } from '../diagnostic/nearest.ts';
+import type { SpecPath } from '../spec/document.ts';
+import type { Ast } from '../spec/expression/ast.ts';
+import { evaluate, type Fault } from '../spec/expression/evaluate.ts';
+import { namesIn } from '../spec/expression/names.ts';
+import type { Finding } from '../spec/finding.ts';
+import { readMeasure, type Dimension } from '../spec/quantity.ts';
+
+/** Where an expression is evaluated. `attributes` are those of the patch at hand. */
+export interface Where {
+  readonly year: number;
+  readonly attributes?: ReadonlyMap<string, number>;
+  /** How to call the patch in an error. */
+  readonly patch?: string;
+  /** What a unit behind the number may measure; plain numbers and shares take `%`. */
+  readonly dimension?: Dimension;
+}
+
+export interface NamedExpression {
+  readonly name: string;
+  readonly expression: number | string;
+  readonly path: SpecPath;
+}
+
+/** Evaluates expressions and tells each mistake once, however many patches and years meet it. */
+export class Numbers {
+  readonly #parameters = new Map<string, { readonly ast: Ast; readonly path: SpecPath }>();
+  readonly #parsed = new Map<string, Ast | null>();
+  readonly #told = new Set<string>();
+  readonly #findings: Finding[];
+  readonly #attributeNames: ReadonlySet<string>;
+  #year = NaN;
+  #memo = new Map<string, number | undefined>();
+
+  constructor(parameters: readonly NamedExpression[], attributeNames: ReadonlySet<string>, findings: Finding[]) {
+    this.#findings = findings;
+    this.#attributeNames = attributeNames;
+    for (const { name, expression, path } of parameters) {
+      const ast = this.#parse(expression, path);
+      if (ast !== null) this.#parameters.set(name, { ast, path });
+    }
+    this.#refuseCycles();
+  }
+
+  /** The value, or NaN after telling why there is none. */
+  value(expression: number | string, path: SpecPath, where: Where): number {
+    if (typeof expression === 'number') return expression;
+    const ast = this.#parse(expression, path, where.dimension);
+    if (ast === null) return NaN;
+    const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
+    if (result.ok) return result.value;
+    this.#tell(result.fault, path, where);
+    return NaN;
+  }
+
+  /** True where the value can differ between years. */
+  varies(expression: number | string, path: SpecPath, dimension?: Dimension): boolean {
+    const ast = this.#parse(expression, path, dimension);
+    return ast !== null && this.#namesBehind(ast).has('year');
+  }
+
+  #parse(expression: number | string, path: SpecPath, dimension: Dimension = 'share'): Ast | null {
+    const key = `${dimension}:${expression}`;
+    const known = this.#parsed.get(key);
+    if (known !== undefined) return known;
+    const parsed = readMeasure(expression, dimension);
+    this.#parsed.set(key, parsed.ok ? parsed.ast : null);
+    if (parsed.ok) return parsed.ast;
+    const { message, ...details } = parsed.error;
+    const { code, span, ...told } = details;
+    this.#findings.push({ severity: 'error', code, message, path, span, details: told });
+    return null;
+  }
+
+  #lookUp(name: string, where: Where): number | undefined {
+    if (name === 'year') return where.year;
+    const attribute = where.attributes?.get(name);
+    if (attribute !== undefined) return attribute;
+    return this.#parameter(name, where.year);
+  }
+
+  #parameter(name: string, year: number): number | undefined {
+    if (year !== this.#year) {
+      this.#year = year;
+      this.#memo = new Map();
+    }
+    if (this.#memo.has(name)) return this.#memo.get(name);
+    const parameter = this.#parameters.get(name);
+    if (parameter === undefined) return undefined;
+    const result = evaluate(parameter.ast, (inner) => this.#lookUp(inner, { year }), pinned);
+    if (!result.ok) this.#tell(result.fault, parameter.path, { year });
+    const value = result.ok ? result.value : NaN;
+    this.#memo.set(name, value);
+    return value;
+  }
+
+  #namesBehind(ast: Ast): ReadonlySet<string> {
+    const found = new Set<string>();
+    const open = [...namesIn(ast)];
+    for (let name = open.pop(); name !== undefined; name = open.pop()) {
+      if (found.has(name)) continue;
+      found.add(name);
+      const parameter = this.#parameters.get(name);
+      if (parameter !== undefined) open.push(...namesIn(parameter.ast));
+    }
+    return found;
+  }
+
+  #refuseCycles(): void {
+    const cyclic = [...this.#parameters].filter(([name, { ast }]) => this.#namesBehind(ast).has(name));
+    for (const [name, { path }] of cyclic) {
+      this.#findings.push({
+        severity: 'error',
+        code: 'parameter-cycle',
+        message: `The parameter \`${name}\` is made from itself`,
+        path,
+        details: { found: cyclic.map(([one]) => one).join(', '), fix: 'Give one of them a number of its own.' },
+      });
+      this.#parameters.set(name, { ast: { kind: 'number', value: 1, span: { offset: 0, length: 0 } }, path });
+    }
+  }
+
+  #tell(fault: Fault, path: SpecPath, where: Where): void {
+    const key = JSON.stringify([path, fault.code, fault.span]);
+    if (this.#told.has(key)) return;
+    this.#told.add(key);
+    const { code, message, span } = fault;
+    if (code !== 'unknown-name') {
+      const inPatch = where.patch === undefined ? '' : ` in ${where.patch}`;
+      this.#findings.push({ severity: 'error', code, message: message + inPatch, path, span });
+      return;
+    }
+    this.#findings.push({ severity: 'error', code, ...this.#unknown(fault.name ?? '', where), path, span });
+  }
+
+  #unknown(name: string, where: Where): Pick<Finding, 'message' | 'details'> {
+    if (this.#attributeNames.has(name)) {
+      if (where.patch === undefined) {
+        return {
+          message: `\`${name}\` belongs to a patch and cannot be read here`,
+          details: { found: name, expected: 'a number, a parameter or `year`' },
+        };
+      }
+      return {
+        message: `The patch \`${where.patch}\` has no \`${name}\``,
+        details: { fix: `Give every patch its \`${name}\`.` },
+      };
+    }
+    const known = [...this.#parameters.keys(), ...this.#attributeNames, 'year'];
+    return {
+      message: `There is no \`${name}\` here`,
+      details: {
+        found: name,
+        expected: 'the name of a parameter, of an attribute of the patches, or `year`',
+        nearest: nearestName(name, known),
+        fix: `Add it under \`parameters\`, or correct the name.`,
+      },
+    };
+  }
+}
