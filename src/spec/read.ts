@@ -1,0 +1,55 @@
+// Reads a spec: text in, a document with the way back to every place out, or all that is wrong with it.
+import type { Diagnostic } from '../diagnostic/diagnostic.ts';
+import { Bug } from '../diagnostic/bug.ts';
+import { inFileOrder } from '../diagnostic/tell.ts';
+import type { SpecDocument } from './document.ts';
+import { CoreSchema, type Spec } from './schema/spec.ts';
+import { checkTop } from './shape/top.ts';
+import type { Report } from './shape/report.ts';
+import { locateIn } from './text/locate.ts';
+import { sourceText, type SourceMap, type SourceText } from './text/source.ts';
+import { readTree } from './text/tree.ts';
+import { sectionOf, valueOf } from './text/value.ts';
+
+export interface ReadSpec {
+  /** Missing where there is any error. */
+  readonly document?: SpecDocument;
+  /** Errors and warnings in the order of the file. */
+  readonly diagnostics: readonly Diagnostic[];
+}
+
+/** `file` is the name that places carry; nothing is read but `text`, which may be YAML or JSON. */
+export function readSpec(text: string, file: string): ReadSpec {
+  const source = sourceText(file, text.startsWith('\uFEFF') ? text.slice(1) : text);
+  const tree = readTree(source);
+  const report: Report = { source, list: [...tree.diagnostics] };
+  const top = tree.root === undefined ? undefined : checkTop(tree.root, report);
+  const diagnostics = inFileOrder(report.list);
+  if (top === undefined || diagnostics.some((one) => one.severity === 'error')) return { diagnostics };
+  return { document: documentOf(top, source, diagnostics), diagnostics };
+}
+
+function documentOf(root: SourceMap, source: SourceText, diagnostics: readonly Diagnostic[]): SpecDocument {
+  const value = specOf(root);
+  if (!isSpec(value, diagnostics)) throw new Bug('A spec with errors was taken for one without.');
+  return {
+    file: source.file,
+    text: source.text,
+    spec: value,
+    locate: (path, part) => locateIn(root, path[0] === 'named' ? path.slice(1) : path, { source, part }),
+  };
+}
+
+/** The keys of the language as they are, the sections that the author named together under `named`. */
+function specOf(root: SourceMap): unknown {
+  const known = CoreSchema.properties;
+  const core = root.entries.filter((entry) => Object.hasOwn(known, entry.key));
+  const own = root.entries.filter((entry) => !Object.hasOwn(known, entry.key));
+  const named = sectionOf(own.map((entry) => [entry.key, valueOf(entry.value)]));
+  return sectionOf([...core.map((entry) => [entry.key, valueOf(entry.value)] as const), ['named', named]]);
+}
+
+/** The checks of shape have the same source as the type: what they find nothing wrong with is a spec. */
+function isSpec(value: unknown, diagnostics: readonly Diagnostic[]): value is Spec {
+  return typeof value === 'object' && value !== null && diagnostics.every((one) => one.severity !== 'error');
+}

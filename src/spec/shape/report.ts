@@ -1,0 +1,45 @@
+// Where the checks of shape put what they find.
+import type { DiagnosticCode } from '../../diagnostic/codes.ts';
+import type { Diagnostic, Severity } from '../../diagnostic/diagnostic.ts';
+import { tell, type Details } from '../../diagnostic/tell.ts';
+import type { Span } from '../expression/ast.ts';
+import { placeAt, type SourceScalar, type SourceText } from '../text/source.ts';
+
+export interface Report {
+  readonly source: SourceText;
+  readonly list: Diagnostic[];
+}
+
+/** The value being checked: what it is called in messages, and where it is shown when it has no text of its own. */
+export interface Subject {
+  readonly label: string;
+  readonly span: Span;
+}
+
+export interface Finding extends Details {
+  readonly severity?: Severity;
+  readonly code: DiagnosticCode;
+  readonly message: string;
+  readonly span: Span;
+}
+
+export function put(report: Report, { severity = 'error', code, message, span, ...details }: Finding): void {
+  report.list.push(tell(severity, code, message, { place: placeAt(report.source, span), ...details }));
+}
+
+/** A report of its own for a branch that is only tried. */
+export function trial(report: Report): Report {
+  return { source: report.source, list: [] };
+}
+
+export function errorsIn(report: Report): number {
+  return report.list.filter((one) => one.severity === 'error').length;
+}
+
+/** The place of a stretch inside the text of a scalar; the whole scalar where quotes or escapes come between. */
+export function spanWithin(scalar: SourceScalar, inner: Span, source: SourceText): Span {
+  const written = source.text.slice(scalar.span.offset, scalar.span.offset + scalar.span.length);
+  const lead = written === scalar.source ? 0 : written.slice(1, -1) === scalar.source ? 1 : undefined;
+  if (lead === undefined) return scalar.span;
+  return { offset: scalar.span.offset + lead + inner.offset, length: Math.max(1, inner.length) };
+}

@@ -1,0 +1,63 @@
+// The part of JSON Schema that the spec's schema is written in.
+
+export interface Shape {
+  readonly type?: string;
+  readonly const?: string | number | boolean;
+  readonly anyOf?: readonly Shape[];
+  readonly properties?: Readonly<Record<string, Shape>>;
+  readonly required?: readonly string[] | undefined;
+  readonly additionalProperties?: boolean | Shape;
+  readonly patternProperties?: Readonly<Record<string, Shape>>;
+  readonly propertyNames?: Shape;
+  readonly items?: Shape | readonly Shape[];
+  readonly minItems?: number;
+  readonly maxItems?: number;
+  readonly uniqueItems?: boolean;
+  readonly minLength?: number;
+  readonly minimum?: number;
+  readonly maximum?: number;
+  readonly exclusiveMinimum?: number;
+  readonly exclusiveMaximum?: number;
+  /** One of ours: see format.ts. */
+  readonly format?: string;
+  /** What a value of this shape is called, in a few words. */
+  readonly title?: string;
+  readonly description?: string;
+  readonly examples?: readonly unknown[];
+  readonly default?: unknown;
+  readonly 'x-unit'?: string;
+}
+
+export type Sort = 'map' | 'list' | 'text' | 'number' | 'truth';
+
+const sorts: Readonly<Record<string, Sort>> = {
+  object: 'map',
+  array: 'list',
+  string: 'text',
+  number: 'number',
+  integer: 'number',
+  boolean: 'truth',
+};
+
+/** Undefined for a union, which may take several sorts. */
+export function sortOf(shape: Shape): Sort | undefined {
+  return shape.type === undefined ? undefined : sorts[shape.type];
+}
+
+/** Unions within unions laid out flat. */
+export function branchesOf(shape: Shape): readonly Shape[] {
+  return shape.anyOf === undefined ? [shape] : shape.anyOf.flatMap(branchesOf);
+}
+
+/** The shape of a key, and of all keys that have none of their own. */
+export function shapeOfKey(shape: Shape, key: string): Shape | undefined {
+  const own =
+    shape.properties !== undefined && Object.hasOwn(shape.properties, key) ? shape.properties[key] : undefined;
+  return own ?? shapeOfOthers(shape);
+}
+
+export function shapeOfOthers(shape: Shape): Shape | undefined {
+  const [pattern] = Object.values(shape.patternProperties ?? {});
+  if (pattern !== undefined) return pattern;
+  return typeof shape.additionalProperties === 'object' ? shape.additionalProperties : undefined;
+}

@@ -1,0 +1,43 @@
+// Text to tree: YAML and JSON, which is a part of it.
+import { Composer, type Document } from 'yaml';
+import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
+import { tell } from '../../diagnostic/tell.ts';
+import { checkText } from './guard.ts';
+import { readNode } from './nodes.ts';
+import { placeAt, type SourceNode, type SourceText } from './source.ts';
+import { syntaxDiagnostics } from './syntax.ts';
+import { readTokens } from './tokens.ts';
+
+export interface Tree {
+  /** Missing where the text could not be read at all. */
+  readonly root?: SourceNode;
+  readonly diagnostics: readonly Diagnostic[];
+}
+
+export function readTree(source: SourceText): Tree {
+  const refused = checkText(source);
+  if (refused !== undefined) return { diagnostics: [refused] };
+  const pass = readTokens(source);
+  if (pass.fatal) return pass;
+  // Every word stays text: what it means is decided here, by the same rule for every place.
+  const composer = new Composer({ schema: 'failsafe', uniqueKeys: false, prettyErrors: false, logLevel: 'silent' });
+  const [document, ...others] = [...composer.compose(pass.tokens, true, source.text.length)];
+  const wrong = syntaxDiagnostics(
+    [document, ...others].flatMap((one) => one?.errors ?? []),
+    source,
+  );
+  if (wrong.length > 0) return { diagnostics: [...pass.diagnostics, ...wrong] };
+  const extra = others.map((one) => anotherDocument(one, source));
+  const diagnostics = [...pass.diagnostics, ...extra];
+  const whole = { offset: 0, length: 1 };
+  const root = readNode(document?.contents, whole, { source, diagnostics });
+  return { root, diagnostics };
+}
+
+function anotherDocument(document: Document.Parsed, source: SourceText): Diagnostic {
+  return tell('error', 'yaml-documents', 'A second document begins here', {
+    place: placeAt(source, { offset: document.range[0], length: 1 }),
+    found: '---',
+    expected: 'one spec in a file',
+  });
+}
