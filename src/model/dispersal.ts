@@ -1,0 +1,234 @@
+// A dispersal: who sets out, and by which rule those that left find another patch.
+import type { DispersalSpec } from '../spec/schema/spec.ts';
+import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
+import type { DispersalPhase, DispersalRule, RateTable } from './model.ts';
+import type { Where } from './numbers.ts';
+import { buildTable, whereIn, withinBounds } from './rates.ts';
+import { requirePlaces } from './places.ts';
+
+export function resolveDispersal(context: Context, name: string, spec: DispersalSpec): DispersalPhase | null {
+  const moves = classMask(context, spec.classes, [name, 'classes']);
+  if (spec.shares !== undefined) return bySharesTable(context, { name, spec, moves, shares: spec.shares });
+  if (!hasKernelParts(context, name, spec)) return null;
+  const leaving = leavingTable(context, { name, spec, moves });
+  const rule = kernelRule(context, name, spec);
+  return rule === null ? null : { kind: 'dispersal', name, moves, leaving, rule };
+}
+
+interface Named {
+  readonly name: string;
+  readonly spec: DispersalSpec;
+  readonly moves: Uint8Array;
+}
+
+function bySharesTable(
+  context: Context,
+  { name, spec, moves, shares }: Named & { readonly shares: NonNullable<DispersalSpec['shares']> },
+): DispersalPhase {
+  for (const key of ['leaving', 'kernel', 'attraction', 'leavers', 'distance'] as const) {
+    if (spec[key] !== undefined) {
+      fail(context, 'dispersal-shape', [name, key], {
+        message: `\`${key}\` and \`shares\` exclude each other`,
+        part: 'key',
+        details: { fix: 'Shares already say who leaves and where to: remove one of the two.' },
+      });
+    }
+  }
+  const patchCount = context.patches.length;
+  const table = new Float64Array(patchCount * patchCount);
+  for (const [from, row] of Object.entries(shares)) {
+    const p = patchIndex(context, from, [name, 'shares', from]);
+    for (const [to, expression] of Object.entries(row)) {
+      const path = [name, 'shares', from, to];
+      const q = patchIndex(context, to, path);
+      if (p < 0 || q < 0) continue;
+      if (p === q) tellSelf(context, path);
+      const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear + 1));
+      const told = { expression, path, what: `share that goes to ${to}` };
+      if (withinBounds(context, told, { value, bounds: 'share', patch: from })) table[q * patchCount + p] = value;
+    }
+  }
+  const leaving = sumOfShares(context, { name, moves, table });
+  return { kind: 'dispersal', name, moves, leaving, rule: { by: 'shares', shares: table } };
+}
+
+function tellSelf(context: Context, path: readonly string[]): void {
+  fail(context, 'self-share', path, {
+    message: 'A share goes from a patch to itself',
+    part: 'key',
+    details: { fix: 'Remove it: who does not leave stays.' },
+  });
+}
+
+function sumOfShares(
+  context: Context,
+  { name, moves, table }: { readonly name: string; readonly moves: Uint8Array; readonly table: Float64Array },
+): RateTable {
+  const [patchCount, classCount] = [context.patches.length, context.classes.length];
+  const leaving = new Float64Array(patchCount * classCount);
+  for (let p = 0; p < patchCount; p++) {
+    let sum = 0;
+    for (let q = 0; q < patchCount; q++) sum += table[q * patchCount + p] ?? 0;
+    const from = context.patches[p]?.name ?? '';
+    if (sum > 1 + 1e-9) {
+      fail(context, 'shares-above-one', [name, 'shares', from], {
+        message: `The shares that leave ${from} add up to ${Number(sum.toFixed(6))}`,
+        part: 'key',
+        details: { expected: 'at most 1' },
+      });
+    }
+    for (let c = 0; c < classCount; c++) if (moves[c] === 1) leaving[p * classCount + c] = Math.min(1, sum);
+  }
+  return { epochs: [leaving], epochOf: new Int32Array(0) };
+}
+
+function hasKernelParts(context: Context, name: string, spec: DispersalSpec): boolean {
+  const wanted = {
+    leaving: 'the share that sets out, such as `leaving: 0.2`, or a table of `shares`',
+    kernel: 'such as `kernel: { shape: exponential, mean: 4 km }`, or a table of `shares`',
+    leavers: '`leavers: all arrive` (isolation costs nothing by itself) or `leavers: may miss`',
+  } as const;
+  let complete = true;
+  for (const key of ['leaving', 'kernel', 'leavers'] as const) {
+    if (spec[key] !== undefined) continue;
+    complete = false;
+    fail(context, 'dispersal-shape', [name], {
+      message: `The dispersal \`${name}\` does not say \`${key}\``,
+      part: 'key',
+      details: { expected: wanted[key] },
+    });
+  }
+  if (spec.hazard !== undefined && spec['survival-on-the-way'] !== undefined) {
+    complete = false;
+    fail(context, 'dispersal-shape', [name, 'hazard'], {
+      message: '`hazard` and `survival-on-the-way` exclude each other',
+      part: 'key',
+      details: { fix: 'Remove one of the two.' },
+    });
+  }
+  return complete;
+}
+
+function leavingTable(context: Context, { name, spec, moves }: Named): RateTable {
+  const { leaving } = spec;
+  if (typeof leaving === 'object') {
+    for (const key of Object.keys(leaving)) {
+      const c = classIndex(context, key, [name, 'leaving', key]);
+      if (c < 0 || moves[c] === 1) continue;
+      fail(context, 'dispersal-shape', [name, 'leaving', key], {
+        message: `\`${key}\` leaves, but is not among the classes of \`${name}\``,
+        part: 'key',
+        details: { fix: `Add it to \`classes\`, or remove it here.` },
+      });
+    }
+  }
+  return buildTable(context, {
+    size: context.classes.length,
+    bounds: 'share',
+    written: (_, c) => {
+      if (leaving === undefined || moves[c] !== 1) return null;
+      if (typeof leaving !== 'object') return { expression: leaving, path: [name, 'leaving'], what: 'leaving share' };
+      const key = context.classes[c] ?? '';
+      const expression = leaving[key];
+      return expression === undefined
+        ? null
+        : { expression, path: [name, 'leaving', key], what: `leaving share of ${key}` };
+    },
+  });
+}
+
+function kernelRule(context: Context, name: string, spec: DispersalSpec): DispersalRule | null {
+  const { kernel, leavers } = spec;
+  if (kernel === undefined || leavers === undefined) return null;
+  if (!requirePlaces(context, name)) return null;
+  const scaleKm = scaleOf(context, name, kernel);
+  const reachKm =
+    kernel.reach === undefined ? null : positive(context, kernel.reach, [name, 'kernel', 'reach'], 'length');
+  const attraction = attractionOf(context, name, spec);
+  if (leavers === 'may miss') requireAreas(context, name);
+  const where: Where = { year: context.time.firstYear + 1 };
+  const onTheWay = spec['survival-on-the-way'] ?? 1;
+  const wayPath = [name, 'survival-on-the-way'];
+  const survivalOnTheWay = context.numbers.value(onTheWay, wayPath, where);
+  withinBounds(
+    context,
+    { expression: onTheWay, path: wayPath, what: 'survival on the way' },
+    { value: survivalOnTheWay, bounds: 'share', patch: undefined },
+  );
+  const hazardPath = [name, 'hazard'];
+  const hazardPerKm = context.numbers.value(spec.hazard ?? 0, hazardPath, { ...where, dimension: 'per-length' });
+  withinBounds(
+    context,
+    { expression: spec.hazard ?? 0, path: hazardPath, what: 'hazard per km' },
+    { value: hazardPerKm, bounds: 'from zero', patch: undefined },
+  );
+  if (scaleKm === null) return null;
+  return {
+    by: 'kernel',
+    kernel: { shape: 'exponential', scaleKm, reachKm },
+    attraction,
+    leavers,
+    hazardPerKm,
+    survivalOnTheWay,
+  };
+}
+
+/** The exponential kernel in the plane has twice its scale as mean distance. */
+function scaleOf(context: Context, name: string, kernel: NonNullable<DispersalSpec['kernel']>): number | null {
+  const { mean, scale } = kernel;
+  if ((mean === undefined) === (scale === undefined)) {
+    fail(context, 'dispersal-shape', [name, 'kernel'], {
+      message:
+        mean === undefined ? 'The kernel does not say how far animals go' : 'The kernel has both a mean and a scale',
+      part: 'key',
+      details: {
+        expected: 'one of `mean` (the mean distance in the plane) and `scale`',
+        reason: 'In the plane the exponential kernel has a mean distance of twice its scale.',
+      },
+    });
+    return null;
+  }
+  if (mean === undefined)
+    return scale === undefined ? null : positive(context, scale, [name, 'kernel', 'scale'], 'length');
+  const meanKm = positive(context, mean, [name, 'kernel', 'mean'], 'length');
+  return meanKm === null ? null : meanKm / 2;
+}
+
+function positive(
+  context: Context,
+  text: number | string,
+  path: readonly string[],
+  dimension: 'length',
+): number | null {
+  const value = context.numbers.value(text, path, { year: context.time.firstYear + 1, dimension });
+  if (value > 0) return value;
+  if (!Number.isNaN(value)) {
+    fail(context, 'out-of-range', path, {
+      message: `A distance of ${value} km`,
+      details: { expected: 'a distance above zero' },
+    });
+  }
+  return null;
+}
+
+function attractionOf(context: Context, name: string, spec: DispersalSpec): Float64Array {
+  const expression = spec.attraction ?? 1;
+  const path = [name, 'attraction'];
+  return Float64Array.from(context.patches, (patch, p) => {
+    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear + 1));
+    withinBounds(context, { expression, path, what: 'attraction' }, { value, bounds: 'from zero', patch: patch.name });
+    return value;
+  });
+}
+
+function requireAreas(context: Context, name: string): void {
+  const without = context.patches.filter((patch) => patch.areaKm2 === null);
+  if (without.length === 0) return;
+  fail(context, 'missing-area', [name, 'leavers'], {
+    message: `Leavers may miss, and \`${without[0]?.name}\` has no area`,
+    details: {
+      expected: 'an `area` for every patch',
+      reason: 'The chance of meeting a patch is the kernel at its distance times its area.',
+    },
+  });
+}

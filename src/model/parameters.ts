@@ -1,0 +1,50 @@
+// Named numbers, and the names that may not clash with them.
+import type { Spec } from '../spec/schema/spec.ts';
+import { fail, type Context } from './context.ts';
+import type { NamedNumber } from './model.ts';
+import type { NamedExpression } from './numbers.ts';
+
+type ParameterSpec = NonNullable<Spec['parameters']>[string];
+
+export function namedExpressions(spec: Spec): readonly NamedExpression[] {
+  return Object.entries(spec.parameters ?? {}).map(([name, parameter]) => ({
+    name,
+    expression: typeof parameter === 'object' ? parameter.value : parameter,
+    path: typeof parameter === 'object' ? ['parameters', name, 'value'] : ['parameters', name],
+  }));
+}
+
+export function resolveParameters(context: Context): readonly NamedNumber[] {
+  const written = context.spec.parameters ?? {};
+  return namedExpressions(context.spec).map(({ name, expression, path }) => ({
+    name,
+    value: context.numbers.value(expression, path, { year: context.time.firstYear + 1 }),
+    expression: String(expression),
+    ...sourceOf(written[name]),
+  }));
+}
+
+function sourceOf(parameter: ParameterSpec | undefined): Pick<NamedNumber, 'source' | 'basis'> {
+  const source = typeof parameter === 'object' ? parameter.source : undefined;
+  return { source: source?.text ?? null, basis: source?.basis ?? null };
+}
+
+/** A name in an expression must mean one thing. */
+export function checkNames(context: Context): void {
+  const attributes = new Set(context.attributes.flatMap((map) => [...map.keys()]));
+  for (const name of Object.keys(context.spec.parameters ?? {})) {
+    if (name === 'year') {
+      fail(context, 'reserved-name', ['parameters', name], {
+        message: '`year` is the calendar year in expressions',
+        part: 'key',
+        details: { fix: 'Give the parameter another name.' },
+      });
+    }
+    if (!attributes.has(name)) continue;
+    fail(context, 'ambiguous-name', ['parameters', name], {
+      message: `\`${name}\` is a parameter and an attribute of the patches`,
+      part: 'key',
+      details: { fix: 'Rename one of them.' },
+    });
+  }
+}

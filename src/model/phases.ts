@@ -1,0 +1,84 @@
+// The year in order: from the phase after the count round to the count.
+import { fail, tellUnknown, type Context } from './context.ts';
+import { resolveCeiling } from './crowding.ts';
+import { resolveDemography } from './demography.ts';
+import { resolveDispersal } from './dispersal.ts';
+import { resolveAgeing, resolveBreeding, resolveSurvival } from './life-phases.ts';
+import type { Phase } from './model.ts';
+
+/** The phases that every study can use without naming them itself. */
+const ownPhases = ['count', 'breeding', 'survival', 'ageing', 'demography'] as const;
+
+export function resolvePhases(context: Context): readonly Phase[] {
+  const { year } = context.spec;
+  refuseRepeats(context);
+  tellUnused(context);
+  const count = year.indexOf('count');
+  if (count < 0) {
+    fail(context, 'missing-count', ['year'], {
+      message: 'The year does not say when animals are counted',
+      part: 'key',
+      details: { expected: '`count` at its place in the year', fix: 'Abundance is read there, and thresholds apply.' },
+    });
+  }
+  const turned = [...year.keys()].map((i) => (count + 1 + i) % year.length);
+  return turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []);
+}
+
+function resolvePhase(context: Context, name: string, index: number): Phase | null {
+  switch (name) {
+    case 'count':
+      return { kind: 'count', name };
+    case 'breeding':
+      return resolveBreeding(context);
+    case 'survival':
+      return resolveSurvival(context);
+    case 'ageing':
+      return resolveAgeing(context);
+    case 'demography':
+      return resolveDemography(context);
+  }
+  const named = context.spec.named[name];
+  if (named === undefined) {
+    const known = [...ownPhases, ...Object.keys(context.spec.named)];
+    tellUnknown(context, { code: 'unknown-phase', what: 'phase', name, known, path: ['year', index], part: 'value' });
+    return null;
+  }
+  return named.kind === 'dispersal' ? resolveDispersal(context, name, named) : resolveCeiling(context, name, named);
+}
+
+function refuseRepeats(context: Context): void {
+  const { year } = context.spec;
+  year.forEach((name, i) => {
+    if (year.indexOf(name) === i) return;
+    fail(context, 'repeated-phase', ['year', i], {
+      message: `The phase \`${name}\` stands twice in the year`,
+      details: { found: name, expected: 'every phase once' },
+    });
+  });
+}
+
+function tellUnused(context: Context): void {
+  const { spec } = context;
+  const owners = { survival: 'survival', births: 'breeding', demography: 'demography' } as const;
+  for (const key of ['survival', 'births', 'demography'] as const) {
+    if (spec[key] !== undefined && !spec.year.includes(owners[key])) tellUnusedKey(context, key, owners[key]);
+  }
+  for (const name of Object.keys(spec.named)) {
+    if (ownPhases.some((own) => own === name)) {
+      fail(context, 'reserved-name', [name], {
+        message: `\`${name}\` is a phase of the language`,
+        part: 'key',
+        details: { fix: 'Give this phase another name.' },
+      });
+    } else if (!spec.year.includes(name)) tellUnusedKey(context, name, name);
+  }
+}
+
+function tellUnusedKey(context: Context, key: string, phase: string): void {
+  fail(context, 'unused-rates', [key], {
+    message: `\`${key}\` is given, but the phase \`${phase}\` is not in the year`,
+    part: 'key',
+    details: { expected: `\`${phase}\` at its place in \`year\``, fix: `Add it to \`year\`, or remove \`${key}\`.` },
+  });
+}

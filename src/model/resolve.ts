@@ -1,0 +1,87 @@
+// From a spec to a model: names resolved, defaults filled, one unit system. Every mistake is found, not only the first.
+import type { Finding } from '../spec/finding.ts';
+import type { Spec } from '../spec/schema/spec.ts';
+import type { Context } from './context.ts';
+import { resolveCrowding } from './crowding.ts';
+import type { Model } from './model.ts';
+import { Numbers } from './numbers.ts';
+import { resolveOutcomes } from './outcomes.ts';
+import { checkNames, namedExpressions, resolveParameters } from './parameters.ts';
+import { resolvePatches } from './patches.ts';
+import { resolvePhases } from './phases.ts';
+import { resolveStart } from './start.ts';
+
+export interface Resolved {
+  /** Null where a mistake stands in the way. */
+  readonly model: Model | null;
+  readonly findings: readonly Finding[];
+}
+
+const defaultReplicates = 1000;
+const defaultSeed = 1;
+
+export function resolveModel(spec: Spec): Resolved {
+  const findings: Finding[] = [];
+  const context = contextOf(spec, findings);
+  checkNames(context);
+  const phases = resolvePhases(context);
+  const parts = {
+    parameters: resolveParameters(context),
+    phases,
+    crowding: resolveCrowding(context, phases),
+    start: resolveStart(context),
+    outcomes: resolveOutcomes(context),
+    ...runSettings(context),
+  };
+  if (findings.some((finding) => finding.severity === 'error')) return { model: null, findings };
+  return { model: { ...head(context), ...parts, defaults: context.defaults }, findings };
+}
+
+function contextOf(spec: Spec, findings: Finding[]): Context {
+  const { patches, attributes, attributeNames } = resolvePatches(spec, findings);
+  const numbers = new Numbers(namedExpressions(spec), attributeNames, findings);
+  const defaults: string[] = [];
+  if (spec['first-year'] === undefined) defaults.push('Years are counted from 0, since no `first-year` is given.');
+  return {
+    spec,
+    patches,
+    classes: spec.classes,
+    names: {
+      patches: new Map(patches.map((patch, p) => [patch.name, p])),
+      classes: new Map(spec.classes.map((name, c) => [name, c])),
+    },
+    numbers,
+    attributes,
+    time: { firstYear: spec['first-year'] ?? 0, steps: spec.years },
+    toldBounds: new Set(),
+    findings,
+    defaults,
+  };
+}
+
+function head({ spec, patches, classes, time }: Context) {
+  const { study } = spec;
+  return {
+    title: study.title,
+    question: study.question ?? null,
+    by: study.by ?? null,
+    madeFor: study.for ?? null,
+    date: study.date ?? null,
+    status: study.status ?? null,
+    invented: study.invented ?? false,
+    firstYear: time.firstYear,
+    steps: time.steps,
+    counts: spec.counts,
+    oldest: spec.oldest ?? null,
+    patches,
+    classes,
+    year: spec.year,
+  } as const;
+}
+
+function runSettings({ spec, defaults }: Context): { readonly replicates: number; readonly seed: number } {
+  const { replicates, seed } = spec.run ?? {};
+  if (replicates === undefined) defaults.push(`A run has ${defaultReplicates} replicates.`);
+  if (seed === undefined) defaults.push(`The seed is ${defaultSeed}.`);
+  return { replicates: replicates ?? defaultReplicates, seed: seed ?? defaultSeed };
+}
