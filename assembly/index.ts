@@ -3,3 +3,19 @@ export { exp, log, pow } from './mathematics';
 export { logFactorial } from './draws/factorial';
 export { probePhilox, probePhiloxLanes, probeSample, probeStream } from './probe';
 export { release, reserve } from './memory';
+export {
+  open,
+  faultSubject,
+  start,
+  step,
+  run,
+  replicates,
+  observed,
+  stops,
+  animals,
+  laneBytes,
+  saveLane,
+  restoreLane,
+  setBatchStep,
+} from './lanes';
+export { startPath, stepPath, pathAnimals } from './path/program';

@@ -76,6 +76,8 @@ export const kindOutcomeWeights = 24; // f64, outcomes × C
 export const kindOutcomePatches = 25; // i32, outcomes × P
 export const kindNames = 26; // u8, JSON for printers; the kernel does not read it
 
+export const highestKind = 26;
+
 // Sections of one movement, as words of a movement row.
 export const movementWords = 6;
 export const movementStart = 0;

@@ -1,4 +1,5 @@
 // Probes for the tests: single draws and whole samples, one a counter, without an image.
+import { putF64, putU32 } from './arrays';
 import { bitsPair } from './draws/bits';
 import { binomial } from './draws/binomial';
 import { hypergeometric } from './draws/hypergeometric';
@@ -36,10 +37,10 @@ export function probeSample(out: usize, draws: i32, request: usize): void {
   const replicates = request + 32;
   const words = request + 96;
   for (let first = 0; first < draws; first += lanes) {
-    for (let lane = 0; lane < lanes; lane++) store<i32>(replicates + ((<usize>lane) << 2), first + lane);
+    for (let lane = 0; lane < lanes; lane++) putU32(replicates, lane, first + lane);
     philoxLanes(words, replicates, 0, 0, 0);
     for (let lane = 0; lane < lanes; lane++) {
-      store<f64>(out + ((<usize>(first + lane)) << 3), one(request, words + ((<usize>lane) << 3)));
+      putF64(out, first + lane, one(request, words + ((<usize>lane) << 3)));
     }
   }
 }

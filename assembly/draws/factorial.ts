@@ -1,4 +1,5 @@
 // Logarithms of factorials.
+import { f64At } from '../arrays';
 import { log } from '../mathematics';
 
 /** ½ ln(2π). */
@@ -9,7 +10,7 @@ const halfLogTwoPi: f64 = 0.9189385332046728;
  * Table and series after Hörmann (1993); the table is exact to the last digits, the series to 1e-11 from k = 10.
  */
 export function stirlingTail(k: f64): f64 {
-  if (k < 10) return load<f64>(tails + ((<usize>k) << 3));
+  if (k < 10) return f64At(tails, i32(k));
   const r = 1 / (k + 1);
   const rr = r * r;
   return (1 / 12.0 - (1 / 360.0 - (1 / 1260.0 - rr / 1680.0) * rr) * rr) * r;

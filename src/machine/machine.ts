@@ -10,6 +10,26 @@ export interface MachineFunctions {
   readonly logFactorial: (k: number) => number;
   readonly release: () => void;
   readonly reserve: (bytes: number) => number;
+  /** A fault code of layout.ts. */
+  readonly open: (address: number, size: number) => number;
+  readonly faultSubject: () => number;
+  readonly start: (count: number, seedLow: number, seedHigh: number) => void;
+  readonly step: () => void;
+  readonly run: (steps: number) => void;
+  /** Addresses: u32 [lane]; f64 [column][lane]; i32 [lane][3]; i32 [patch][class][lane]. */
+  readonly replicates: () => number;
+  readonly observed: () => number;
+  readonly stops: () => number;
+  readonly animals: () => number;
+  readonly laneBytes: () => number;
+  readonly saveLane: (lane: number, target: number) => void;
+  /** 0 where the lane was saved at another step than the batch is at. */
+  readonly restoreLane: (lane: number, source: number) => number;
+  readonly setBatchStep: (step: number) => void;
+  readonly startPath: () => void;
+  readonly stepPath: () => void;
+  /** Address: f64 [patch][class]. */
+  readonly pathAnimals: () => number;
   readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
   readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
   readonly probeSample: (out: number, draws: number, request: number) => void;
@@ -28,6 +48,22 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   logFactorial: true,
   release: true,
   reserve: true,
+  open: true,
+  faultSubject: true,
+  start: true,
+  step: true,
+  run: true,
+  replicates: true,
+  observed: true,
+  stops: true,
+  animals: true,
+  laneBytes: true,
+  saveLane: true,
+  restoreLane: true,
+  setBatchStep: true,
+  startPath: true,
+  stepPath: true,
+  pathAnimals: true,
   probePhilox: true,
   probePhiloxLanes: true,
   probeSample: true,

@@ -1,0 +1,96 @@
+// The means of the phases that act within a patch.
+import { f64At, i32At, putF64 } from '../arrays';
+import { classes, operand, patches, section, sectionAt } from '../image';
+import * as layout from '../layout';
+import { crowdingFactor } from '../phases/crowding';
+import { add, animals, animalsIn, arrivals, scaleOf, slotValues, stateBytes, step } from './state';
+
+export function meanBreeding(record: usize): void {
+  const table = sectionAt(operand(record, layout.breedingBirths), step);
+  const into = section(operand(record, layout.breedingInto));
+  const lists = section(operand(record, layout.breedingSlots));
+  for (let patch = 0; patch < patches; patch++) {
+    let young: f64 = 0;
+    for (let c = 0; c < classes; c++) {
+      const births = f64At(table, patch * classes + c);
+      if (births !== 0) young += animalsIn(patch, c) * births * scaleOf(lists, c, patch);
+    }
+    for (let c = 0; c < classes; c++) add(animals, patch, c, young * f64At(into, c));
+  }
+}
+
+export function meanSurvival(record: usize): void {
+  const table = sectionAt(operand(record, layout.survivalRates), step);
+  const lists = section(operand(record, layout.survivalSlots));
+  for (let patch = 0; patch < patches; patch++) {
+    for (let c = 0; c < classes; c++) {
+      const at = (<usize>(patch * classes + c)) << 3;
+      store<f64>(animals + at, load<f64>(animals + at) * load<f64>(table + at) * scaleOf(lists, c, patch));
+    }
+  }
+}
+
+export function meanAgeing(record: usize): void {
+  const advance = section(operand(record, layout.ageingAdvance));
+  const next = section(operand(record, layout.ageingNext));
+  memory.fill(arrivals, 0, stateBytes());
+  for (let patch = 0; patch < patches; patch++) {
+    for (let c = 0; c < classes; c++) {
+      const going = animalsIn(patch, c) * f64At(advance, c);
+      const to = i32At(next, c);
+      add(arrivals, patch, c, animalsIn(patch, c) - going);
+      if (to >= 0) add(arrivals, patch, to, going);
+    }
+  }
+  memory.copy(animals, arrivals, stateBytes());
+}
+
+export function meanDemography(record: usize): void {
+  memory.fill(arrivals, 0, stateBytes());
+  const fates = sectionAt(operand(record, layout.demographyFates), step);
+  const births = sectionAt(operand(record, layout.demographyBirths), step);
+  for (let patch = 0; patch < patches; patch++) {
+    for (let c = 0; c < classes; c++) {
+      const first = (<usize>(patch * classes * classes + c)) << 3;
+      const lives = scaleOf(section(operand(record, layout.demographyFateSlots)), c, patch);
+      const breeds = scaleOf(section(operand(record, layout.demographyBirthSlots)), c, patch);
+      for (let to = 0; to < classes; to++) {
+        const at = first + ((<usize>(to * classes)) << 3);
+        const each = load<f64>(fates + at) * lives + load<f64>(births + at) * breeds;
+        if (each !== 0) add(arrivals, patch, to, animalsIn(patch, c) * each);
+      }
+    }
+  }
+  memory.copy(animals, arrivals, stateBytes());
+}
+
+export function meanCeiling(record: usize): void {
+  const counted = section(operand(record, layout.ceilingCounted));
+  const capacities = section(operand(record, layout.ceilingCapacity));
+  for (let patch = 0; patch < patches; patch++) {
+    let all: f64 = 0;
+    for (let c = 0; c < classes; c++) if (i32At(counted, c) !== 0) all += animalsIn(patch, c);
+    const capacity = f64At(capacities, patch);
+    if (all <= capacity) continue;
+    for (let c = 0; c < classes; c++) {
+      const at = animals + ((<usize>(patch * classes + c)) << 3);
+      if (i32At(counted, c) !== 0) store<f64>(at, load<f64>(at) * (capacity / all));
+    }
+  }
+}
+
+export function meanCrowding(record: usize): void {
+  const weights = section(operand(record, layout.crowdingWeights));
+  const forms = section(operand(record, layout.crowdingForms));
+  const coefficients = section(operand(record, layout.crowdingCoefficients));
+  const halves = section(operand(record, layout.crowdingAlleeHalf));
+  const slot = operand(record, layout.crowdingSlot);
+  for (let patch = 0; patch < patches; patch++) {
+    let all: f64 = 0;
+    for (let c = 0; c < classes; c++) all += f64At(weights, c) * animalsIn(patch, c);
+    const at = (<usize>patch) << 3;
+    const form = i32At(forms, patch);
+    const factor = crowdingFactor(all, form, load<f64>(coefficients + at), load<f64>(halves + at));
+    putF64(slotValues, slot * patches + patch, factor);
+  }
+}

@@ -1,0 +1,34 @@
+// The mean of a dispersal.
+import { f64At, i32At } from '../arrays';
+import { classes, operand, patches, section, sectionAt } from '../image';
+import * as layout from '../layout';
+import { add, animals, animalsIn, arrivals, stateBytes, step } from './state';
+
+export function meanDispersal(record: usize): void {
+  const moves = section(operand(record, layout.dispersalMoves));
+  const table = sectionAt(operand(record, layout.dispersalLeaving), step);
+  const movement = sectionAt(operand(record, layout.dispersalMovement), step);
+  memory.fill(arrivals, 0, stateBytes());
+  for (let patch = 0; patch < patches; patch++) {
+    for (let c = 0; c < classes; c++) {
+      if (i32At(moves, c) === 0) continue;
+      const leavers = animalsIn(patch, c) * f64At(table, patch * classes + c);
+      if (leavers === 0) continue;
+      add(animals, patch, c, -leavers);
+      send(movement, patch, c, leavers);
+    }
+  }
+  for (let at: usize = 0; at < stateBytes(); at += 8) {
+    store<f64>(animals + at, load<f64>(animals + at) + load<f64>(arrivals + at));
+  }
+}
+
+function send(movement: usize, patch: i32, c: i32, leavers: f64): void {
+  const start = section(load<i32>(movement + (layout.movementStart << 2)));
+  const ends = section(load<i32>(movement + (layout.movementTo << 2)));
+  const chance = section(load<i32>(movement + (layout.movementChance << 2)));
+  const end = i32At(start, patch + 1);
+  for (let entry = i32At(start, patch); entry < end; entry++) {
+    add(arrivals, i32At(ends, entry), c, leavers * f64At(chance, entry));
+  }
+}

@@ -1,0 +1,54 @@
+// Runs the programs of the open image without chance.
+import { entries, header, operand, section } from '../image';
+import * as layout from '../layout';
+import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, meanSurvival } from './maps';
+import { meanDispersal } from './movement';
+import { animals, fillPath, setStep, step } from './state';
+
+/** Puts the start into the path. */
+export function startPath(): void {
+  fillPath();
+}
+
+/** From one count to the next. */
+export function stepPath(): void {
+  setStep(step + 1);
+  runProgram(header(layout.headerYearProgram));
+  runProgram(header(layout.headerPhaseProgram));
+}
+
+/** Where the animals of the path stand. */
+export function pathAnimals(): usize {
+  return animals;
+}
+
+function runProgram(row: i32): void {
+  const end = section(row) + ((<usize>entries(row)) << 2);
+  for (let record = section(row); record < end; record += layout.recordBytes) runRecord(record);
+}
+
+function runRecord(record: usize): void {
+  switch (operand(record, layout.recordOpcode)) {
+    case layout.opBreeding:
+      meanBreeding(record);
+      break;
+    case layout.opSurvival:
+      meanSurvival(record);
+      break;
+    case layout.opAgeing:
+      meanAgeing(record);
+      break;
+    case layout.opDemography:
+      meanDemography(record);
+      break;
+    case layout.opDispersal:
+      meanDispersal(record);
+      break;
+    case layout.opCeiling:
+      meanCeiling(record);
+      break;
+    case layout.opCrowding:
+      meanCrowding(record);
+      break;
+  }
+}

@@ -1,0 +1,82 @@
+// Breeding: young of each breeding class by a Poisson draw, shared over the classes that they enter.
+import { f64At, putU32, u32At } from '../arrays';
+import {
+  animals,
+  cellBytes,
+  counts,
+  moreCounts,
+  numbers,
+  rates,
+  replicates,
+  rowBytes,
+  step,
+  stopLane,
+  words,
+} from '../batch';
+import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells';
+import { philoxLanes } from '../draws/philox';
+import { poisson } from '../draws/poisson';
+import { streamOf } from '../draws/stream';
+import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
+import * as layout from '../layout';
+
+export function breed(record: usize): void {
+  const table = sectionAt(operand(record, layout.breedingBirths), step);
+  for (let patch = 0; patch < patches; patch++) {
+    const row = animals + <usize>patch * rowBytes();
+    if (!occupied(row, rowBytes())) continue;
+    philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
+    memory.fill(numbers, 0, 128);
+    for (let c = 0; c < classes; c++) {
+      const births = f64At(table, patch * classes + c);
+      const cell = row + <usize>c * cellBytes;
+      if (births === 0 || !occupied(cell, cellBytes)) continue;
+      scaledRates(rates, births, section(operand(record, layout.breedingSlots)), c, patch);
+      addYoung(cell, streamOf(u32At(classKeys, c), layout.useYoung));
+    }
+    wholeYoung(operand(record, layout.recordIndex));
+    shareOut(row, section(operand(record, layout.breedingOnward)));
+  }
+}
+
+/** numbers[lane] += the young of the animals in a cell. */
+function addYoung(cell: usize, stream: u64): void {
+  for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
+    const n = load<u32>(cell + (lane << 2));
+    if (n === 0) continue;
+    const at = lane << 3;
+    const mean = f64(n) * load<f64>(rates + at);
+    const young = poisson(mean, load<u64>(words + at), load<u64>(words + at, 128), stream);
+    store<f64>(numbers + at, load<f64>(numbers + at) + young);
+  }
+}
+
+/** counts[lane] = numbers[lane], where a replicate may have so many. */
+function wholeYoung(index: i32): void {
+  for (let lane = 0; lane < layout.lanes; lane++) {
+    let young = f64At(numbers, lane);
+    if (young > layout.mostAnimals) {
+      stopLane(lane, layout.faultTooMany, index);
+      young = 0;
+    }
+    putU32(counts, lane, u32(young));
+  }
+}
+
+/** Adds the young to the classes that they enter, class by class; those left over enter the last with a share. */
+function shareOut(row: usize, onward: usize): void {
+  if (!occupied(counts, cellBytes)) return;
+  for (let c = 0; c < classes; c++) {
+    const share = f64At(onward, c);
+    if (share <= 0) continue;
+    const cell = row + <usize>c * cellBytes;
+    if (share >= 1) {
+      addCell(cell, counts);
+      return;
+    }
+    scaledRates(rates, share, 0, c, 0);
+    drawCell(moreCounts, counts, streamOf(u32At(classKeys, c), layout.useInto));
+    addCell(cell, moreCounts);
+    subtractCell(counts, moreCounts);
+  }
+}

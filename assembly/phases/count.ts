@@ -1,0 +1,50 @@
+// Count: the sums that the host keeps, one column each: the whole, each patch, each outcome's weighted set.
+import { f64At, i32At } from '../arrays';
+import { animals, cellBytes, laneNumbers, observed, rowBytes, stopLane } from '../batch';
+import { classes, operand, patches, section } from '../image';
+import * as layout from '../layout';
+import { addWeighted } from './crowding';
+
+export function count(record: usize): void {
+  memory.fill(observed, 0, laneNumbers);
+  for (let patch = 0; patch < patches; patch++) {
+    const column = observed + <usize>(patch + 1) * laneNumbers;
+    memory.fill(column, 0, laneNumbers);
+    const row = animals + <usize>patch * rowBytes();
+    for (let c = 0; c < classes; c++) addWeighted(column, row + <usize>c * cellBytes, 1);
+    addNumbers(observed, column);
+  }
+  const outcomes = operand(record, layout.countOutcomes);
+  for (let outcome = 0; outcome < outcomes; outcome++) countOutcome(record, outcome);
+}
+
+function addNumbers(target: usize, source: usize): void {
+  for (let i: usize = 0; i < laneNumbers; i += 16) {
+    v128.store(target + i, f64x2.add(v128.load(target + i), v128.load(source + i)));
+  }
+}
+
+function countOutcome(record: usize, outcome: i32): void {
+  const weights = section(operand(record, layout.countOutcomeWeights)) + ((<usize>(outcome * classes)) << 3);
+  const inside = section(operand(record, layout.countOutcomePatches)) + ((<usize>(outcome * patches)) << 2);
+  const column = observed + <usize>(patches + 1 + outcome) * laneNumbers;
+  memory.fill(column, 0, laneNumbers);
+  for (let patch = 0; patch < patches; patch++) {
+    if (i32At(inside, patch) === 0) continue;
+    const row = animals + <usize>patch * rowBytes();
+    for (let c = 0; c < classes; c++) {
+      const weight = f64At(weights, c);
+      if (weight !== 0) addWeighted(column, row + <usize>c * cellBytes, weight);
+    }
+  }
+}
+
+/** Stops every replicate in which more animals live than the kernel can count. */
+export function checkTotals(index: i32): void {
+  memory.fill(observed, 0, laneNumbers);
+  for (let cell = animals; cell < animals + <usize>patches * rowBytes(); cell += cellBytes)
+    addWeighted(observed, cell, 1);
+  for (let lane = 0; lane < layout.lanes; lane++) {
+    if (f64At(observed, lane) > layout.mostAnimals) stopLane(lane, layout.faultTooMany, index);
+  }
+}

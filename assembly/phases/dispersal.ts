@@ -1,0 +1,116 @@
+// Dispersal: a binomial draw of those that leave, then for each of them where the way ends. All move at once.
+import { f64At, i32At, u32At } from '../arrays';
+import * as batch from '../batch';
+import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells';
+import { binomial } from '../draws/binomial';
+import { philoxLanes } from '../draws/philox';
+import { finalise, firstWord, streamOf, substreamOf, unit } from '../draws/stream';
+import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
+import * as layout from '../layout';
+
+let start: usize = 0;
+let ends: usize = 0;
+let onward: usize = 0;
+let aliasStart: usize = 0;
+let aliasKeep: usize = 0;
+let aliasEnds: usize = 0;
+
+/** Above so many leavers a column of the alias table, one binomial draw a destination costs less than a pick a leaver. */
+const manyPerColumn: u32 = 5;
+
+export function disperse(record: usize): void {
+  const moves = section(operand(record, layout.dispersalMoves));
+  openMovement(sectionAt(operand(record, layout.dispersalMovement), batch.step));
+  memory.fill(batch.arrivals, 0, batch.stateBytes());
+  for (let patch = 0; patch < patches; patch++) leavePatch(record, patch, moves);
+  for (let patch = 0; patch < patches; patch++) {
+    for (let c = 0; c < classes; c++) {
+      if (i32At(moves, c) === 0) continue;
+      const at = <usize>(patch * classes + c) * batch.cellBytes;
+      addCell(batch.animals + at, batch.arrivals + at);
+    }
+  }
+}
+
+function openMovement(movement: usize): void {
+  start = section(load<i32>(movement + (layout.movementStart << 2)));
+  ends = section(load<i32>(movement + (layout.movementTo << 2)));
+  onward = section(load<i32>(movement + (layout.movementOnward << 2)));
+  aliasStart = section(load<i32>(movement + (layout.movementAliasStart << 2)));
+  const keepRow = load<i32>(movement + (layout.movementAlias << 2));
+  aliasKeep = section(keepRow);
+  aliasEnds = section(keepRow + 1);
+}
+
+function leavePatch(record: usize, patch: i32, moves: usize): void {
+  const row = batch.animals + <usize>patch * batch.rowBytes();
+  if (!occupied(row, batch.rowBytes())) return;
+  const leaving = sectionAt(operand(record, layout.dispersalLeaving), batch.step);
+  const key = u32At(patchKeys, patch);
+  philoxLanes(batch.words, batch.replicates, batch.step, key, operand(record, layout.recordKey));
+  for (let c = 0; c < classes; c++) {
+    const share = f64At(leaving, patch * classes + c);
+    const cell = row + <usize>c * batch.cellBytes;
+    if (i32At(moves, c) === 0 || share === 0 || !occupied(cell, batch.cellBytes)) continue;
+    const classKey = u32At(classKeys, c);
+    scaledRates(batch.rates, share, 0, c, patch);
+    drawCell(batch.counts, cell, streamOf(classKey, layout.useLeave));
+    subtractCell(cell, batch.counts);
+    sendAll(patch, c, streamOf(classKey, layout.useTravel), streamOf(classKey, layout.useSpread));
+  }
+}
+
+function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
+  const first = i32At(aliasStart, patch);
+  const width = i32At(aliasStart, patch + 1) - first;
+  if (width === 0) return;
+  const target = batch.arrivals + <usize>c * batch.cellBytes;
+  for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
+    const leavers = load<u32>(batch.counts + (lane << 2));
+    if (leavers === 0) continue;
+    laneTarget = target + (lane << 2);
+    const at = batch.words + (lane << 3);
+    if (leavers > manyPerColumn * width) {
+      spread(leavers, patch, at, spreading);
+    } else {
+      pick(leavers, first, width, finalise(load<u64>(at) + travel), finalise(load<u64>(at, 128) + travel));
+    }
+  }
+}
+
+/** Where the arrivals of the class and lane at hand stand for the first patch. */
+let laneTarget: usize = 0;
+
+function arrive(end: i32, n: u32): void {
+  const at = laneTarget + <usize>end * batch.rowBytes();
+  store<u32>(at, load<u32>(at) + n);
+}
+
+/** An alias pick (Walker 1977) for each leaver: a column, and which of its two ends. */
+function pick(leavers: u32, first: i32, width: i32, s0: u64, s1: u64): void {
+  const keep = aliasKeep + ((<usize>first) << 3);
+  const both = aliasEnds + ((<usize>first) << 3);
+  for (let i: u32 = 0; i < leavers; i++) {
+    const position = unit(firstWord(s0, s1)) * f64(width);
+    const column = <usize>i32(position);
+    const other: usize = position - f64(column) < load<f64>(keep + (column << 3)) ? 0 : 4;
+    const end = load<i32>(both + (column << 3) + other);
+    if (end >= 0) arrive(end, 1);
+    const t = s1 ^ s0;
+    s0 = rotl<u64>(s0, 49) ^ t ^ (t << 21);
+    s1 = rotl<u64>(t, 28);
+  }
+}
+
+/** A binomial draw for each destination out of those not placed yet; who is left over dies on the way. */
+function spread(leavers: u32, patch: i32, laneWords: usize, stream: u64): void {
+  const end = i32At(start, patch + 1);
+  for (let entry = i32At(start, patch); entry < end && leavers !== 0; entry++) {
+    const to = i32At(ends, entry);
+    const own = substreamOf(stream, u32At(patchKeys, to));
+    const chance = f64At(onward, entry);
+    const n = binomial(leavers, chance, load<u64>(laneWords), load<u64>(laneWords, 128), own);
+    arrive(to, n);
+    leavers -= n;
+  }
+}

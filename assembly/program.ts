@@ -1,0 +1,67 @@
+// Runs the programs of the open image: one record after the other, each over all patches and lanes.
+import { clearStopped, setStep, step } from './batch';
+import { entries, header, operand, section } from './image';
+import * as layout from './layout';
+import { age } from './phases/ageing';
+import { breed } from './phases/breeding';
+import { limit } from './phases/ceiling';
+import { checkTotals, count } from './phases/count';
+import { readCrowding } from './phases/crowding';
+import { liveYear } from './phases/demography';
+import { disperse } from './phases/dispersal';
+import { survive } from './phases/survival';
+
+/** From one count to the next. */
+export function advance(): void {
+  setStep(step + 1);
+  runProgram(header(layout.headerYearProgram));
+  runProgram(header(layout.headerPhaseProgram));
+}
+
+function runProgram(row: i32): void {
+  const end = section(row) + ((<usize>entries(row)) << 2);
+  for (let record = section(row); record < end; record += layout.recordBytes) {
+    runRecord(record);
+    clearStopped();
+  }
+}
+
+/** Counts without a step: for the start. */
+export function countStart(): void {
+  const row = header(layout.headerPhaseProgram);
+  const end = section(row) + ((<usize>entries(row)) << 2);
+  for (let record = section(row); record < end; record += layout.recordBytes) {
+    if (operand(record, layout.recordOpcode) === layout.opCount) count(record);
+  }
+}
+
+function runRecord(record: usize): void {
+  switch (operand(record, layout.recordOpcode)) {
+    case layout.opBreeding:
+      breed(record);
+      checkTotals(operand(record, layout.recordIndex));
+      break;
+    case layout.opSurvival:
+      survive(record);
+      break;
+    case layout.opAgeing:
+      age(record);
+      break;
+    case layout.opDemography:
+      liveYear(record);
+      checkTotals(operand(record, layout.recordIndex));
+      break;
+    case layout.opDispersal:
+      disperse(record);
+      break;
+    case layout.opCeiling:
+      limit(record);
+      break;
+    case layout.opCrowding:
+      readCrowding(record);
+      break;
+    case layout.opCount:
+      count(record);
+      break;
+  }
+}

@@ -1,0 +1,18 @@
+// Runs the path without chance: the means of the phases, one after the other.
+import * as layout from '../../assembly/layout.ts';
+import { headerOf } from '../compile/image/read.ts';
+import { openOwnImage } from './open.ts';
+import type { RawPath } from './output.ts';
+
+export function runPath(image: ArrayBuffer, { steps }: { readonly steps: number }): RawPath {
+  const machine = openOwnImage(image);
+  const header = headerOf(image);
+  const cells = (header[layout.headerPatches] ?? 0) * (header[layout.headerClasses] ?? 0);
+  const animals = new Float64Array((steps + 1) * cells);
+  machine.startPath();
+  for (let step = 0; step <= steps; step++) {
+    if (step > 0) machine.stepPath();
+    animals.set(new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells), step * cells);
+  }
+  return { steps, animals };
+}
