@@ -1,4 +1,4 @@
-// Distances between patches and, for each dispersal, where those that leave end.
+// For each dispersal, where those that leave a patch end.
 
 /**
  * Where leavers of a patch end, by origin: destinations[start[p]] to destinations[start[p + 1]] in ascending order, with
@@ -8,11 +8,11 @@ export interface Movement {
   readonly start: Int32Array;
   readonly destinations: Int32Array;
   readonly chance: Float64Array;
+  /** Kilometres of each of these ways, rounded to 1 mm; null where no distance is used. */
+  readonly lengthKm: Float64Array | null;
 }
 
 export interface Landscape {
-  /** Kilometres, P×P, rounded to 1 mm; null where no distance is used. */
-  readonly distanceKm: Float64Array | null;
   /** One movement for each phase of kind `dispersal`, by the index of the phase; null elsewhere. */
   readonly movements: readonly (Movement | null)[];
 }

@@ -1,0 +1,24 @@
+// From a model to its landscape: the movement of every dispersal.
+import type { Finding } from '../spec/finding.ts';
+import type { DispersalPhase, Model } from '../model/model.ts';
+import { kernelMovement } from './kernel-movement.ts';
+import type { Landscape, Movement } from './landscape.ts';
+import { sharesMovement } from './shares-movement.ts';
+
+export interface BuiltLandscape {
+  readonly landscape: Landscape;
+  readonly findings: readonly Finding[];
+}
+
+export function buildLandscape(model: Model): BuiltLandscape {
+  const findings: Finding[] = [];
+  const movements = model.phases.map((phase) =>
+    phase.kind === 'dispersal' ? movementOf(model, phase, findings) : null,
+  );
+  return { landscape: { movements }, findings };
+}
+
+function movementOf(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {
+  const { rule } = phase;
+  return rule.by === 'shares' ? sharesMovement(model, rule.shares) : kernelMovement({ model, phase, rule, findings });
+}
