@@ -1,0 +1,80 @@
+// The part of a phase map that stays within one patch: survival, births, ageing, fates. The diagonal block of the map.
+import type { AgeingPhase, BreedingPhase, DemographyPhase, Model, SurvivalPhase } from '../model/model.ts';
+import { multiplierOf, type Multipliers } from './multipliers.ts';
+import { tableAt } from './rates.ts';
+
+export type LifePhase = SurvivalPhase | BreedingPhase | AgeingPhase | DemographyPhase;
+
+export interface LifeRequest {
+  readonly model: Model;
+  readonly phase: number;
+  readonly patch: number;
+  readonly step: number;
+  readonly multipliers: Multipliers;
+}
+
+/** C×C, at to * C + from: animals of `to` after the phase for each of `from` before it. */
+export function lifeMap(phase: LifePhase, request: LifeRequest): Float64Array {
+  const fates = fatesMap(phase, request);
+  const births = birthsMap(phase, request);
+  return fates.map((value, i) => value + (births[i] ?? 0));
+}
+
+/** Animals that were there before. */
+export function fatesMap(phase: LifePhase, request: LifeRequest): Float64Array {
+  const n = request.model.classes.length;
+  const map = new Float64Array(n * n);
+  switch (phase.kind) {
+    case 'survival': {
+      const table = tableAt(phase.survival, request.step);
+      for (let c = 0; c < n; c++) map[c * n + c] = (table[request.patch * n + c] ?? 0) * factor(request, 'survival', c);
+      return map;
+    }
+    case 'breeding':
+      for (let c = 0; c < n; c++) map[c * n + c] = 1;
+      return map;
+    case 'ageing':
+      fillAgeing(map, phase, n);
+      return map;
+    case 'demography': {
+      const table = tableAt(phase.fates, request.step);
+      for (let i = 0; i < n * n; i++)
+        map[i] = (table[request.patch * n * n + i] ?? 0) * factor(request, 'fates', i % n);
+      return map;
+    }
+  }
+}
+
+/** Animals that are new. */
+export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array {
+  const n = request.model.classes.length;
+  const map = new Float64Array(n * n);
+  if (phase.kind === 'breeding') {
+    const table = tableAt(phase.births, request.step);
+    for (let i = 0; i < n * n; i++) {
+      const [to, from] = [Math.floor(i / n), i % n];
+      const young = (table[request.patch * n + from] ?? 0) * factor(request, 'births', from);
+      map[i] = (phase.into[to] ?? 0) * young;
+    }
+  } else if (phase.kind === 'demography') {
+    const table = tableAt(phase.births, request.step);
+    for (let i = 0; i < n * n; i++) map[i] = (table[request.patch * n * n + i] ?? 0) * factor(request, 'births', i % n);
+  }
+  return map;
+}
+
+function factor(
+  { model, phase, patch, multipliers }: LifeRequest,
+  part: 'survival' | 'births' | 'fates',
+  c: number,
+): number {
+  return multiplierOf(model, multipliers, { phase, part, patch, class: c });
+}
+
+function fillAgeing(map: Float64Array, { advance, next }: AgeingPhase, n: number): void {
+  for (let c = 0; c < n; c++) {
+    const [share, to] = [advance[c] ?? 0, next[c] ?? -1];
+    map[c * n + c] = (map[c * n + c] ?? 0) + 1 - share;
+    if (to >= 0) map[to * n + c] = (map[to * n + c] ?? 0) + share;
+  }
+}

@@ -1,0 +1,72 @@
+// A whole year as a function of the animals at its start: the path without chance, and the matrix at any state.
+import { pinned } from '../machine/pinned.ts';
+import type { Landscape } from '../landscape/landscape.ts';
+import type { Model } from '../model/model.ts';
+import type { SparseMatrix } from '../numeric/sparse.ts';
+import { multiply } from '../numeric/sparse-product.ts';
+import type { CrowdingCoefficients } from './coefficients.ts';
+import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
+import { phaseMap } from './phase-map.ts';
+
+export interface Compiled {
+  readonly model: Model;
+  readonly landscape: Landscape;
+  readonly coefficients: readonly CrowdingCoefficients[];
+}
+
+/** The maps of a year's phases as the given animals meet them, and the animals after it. */
+export interface YearRun {
+  readonly maps: readonly SparseMatrix[];
+  readonly multipliers: Multipliers;
+  readonly after: Float64Array;
+}
+
+/** Runs one year from P·C animals at the count before step `step`. */
+export function runYear({ model, landscape, coefficients }: Compiled, before: Float64Array, step = 1): YearRun {
+  const multipliers = unitMultipliers(model);
+  const readAt = model.crowding.map((_, k) => readingPhase(model, k));
+  let state = before;
+  const maps = model.phases.map((_, index) => {
+    readAt.forEach((reading, k) => {
+      const own = coefficients[k];
+      if (reading === index && own !== undefined) readMultipliers({ model, k, own, into: multipliers[k] }, state);
+    });
+    const map = phaseMap(index, { model, landscape, step, multipliers, state });
+    state = multiply(map, state);
+    return map;
+  });
+  return { maps, multipliers, after: state };
+}
+
+interface Reading {
+  readonly model: Model;
+  readonly k: number;
+  readonly own: CrowdingCoefficients;
+  readonly into: Float64Array | undefined;
+}
+
+function readMultipliers({ model, k, own, into }: Reading, state: Float64Array): void {
+  const n = model.classes.length;
+  const counted = model.crowding[k]?.counted;
+  model.patches.forEach((_, p) => {
+    let count = 0;
+    for (let c = 0; c < n; c++) count += (counted?.[c] ?? 0) * (state[p * n + c] ?? 0);
+    if (into !== undefined) into[p] = multiplierAt(own, p, count);
+  });
+}
+
+/** g(N) of one patch. */
+export function multiplierAt(own: CrowdingCoefficients, p: number, count: number): number {
+  const [form, coefficient, half] = [own.form[p] ?? 'none', own.coefficient[p] ?? 0, own.alleeHalf[p] ?? 0];
+  const allee = half === 0 ? 1 : count / (count + half);
+  switch (form) {
+    case 'none':
+      return allee;
+    case 'beverton-holt':
+      return allee / (1 + coefficient * count);
+    case 'ricker':
+      return allee * pinned.exp(-coefficient * count);
+    case 'ceiling':
+      return allee * (count > coefficient ? coefficient / count : 1);
+  }
+}
