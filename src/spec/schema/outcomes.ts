@@ -1,40 +1,105 @@
 import { Type } from 'typebox';
-import { ClassList, Name } from './values.ts';
+import { byNumber, classList, Name } from './values.ts';
 
 export const Outcome = Type.Object(
   {
-    of: ClassList,
-    in: Type.Optional(Type.Union([Name, Type.Array(Name, { minItems: 1 })])),
-    below: Type.Number({ exclusiveMinimum: 0, description: 'Animals; below is strict.' }),
+    of: classList({ description: 'Classes that are counted.', examples: ['[adult]'] }),
+    in: Type.Optional(
+      Type.Union([Name, Type.Array(Name, { minItems: 1, uniqueItems: true })], {
+        title: 'a patch or a list of patches',
+        description: 'Patches that are counted together; without it, all.',
+        examples: ['North fen'],
+      }),
+    ),
+    below: Type.Number({
+      exclusiveMinimum: 0,
+      description: 'True as soon as fewer than this are counted.',
+      examples: [40],
+      'x-unit': 'animals',
+    }),
+  },
+  { additionalProperties: false, title: 'an outcome: { of: …, below: … }' },
+);
+
+export const Outcomes = Type.Record(Type.String(), Outcome, {
+  title: 'names with outcomes',
+  description: 'What is looked for in every future, each under a name of its own.',
+  examples: ['lost hares: { of: [adult], below: 40 }'],
+  'x-key': 'OUTCOME',
+});
+
+const animals = { description: 'Animals at the start.', examples: [12], 'x-unit': 'animals' };
+
+const StartTable = Type.Object(
+  {
+    table: Type.Record(Type.String(), byNumber(animals, 'CLASS'), {
+      title: 'patches with animals by class',
+      description: 'Animals of each class in each patch; what is not named is empty.',
+      examples: ['North fen: { adult: 40, yearling: 22 }'],
+      'x-key': 'PATCH',
+    }),
   },
   { additionalProperties: false },
 );
 
-const Table = Type.Record(Type.String(), Type.Record(Type.String(), Type.Number({ minimum: 0 })));
+const StartTotal = Type.Object(
+  {
+    total: Type.Number({
+      minimum: 0,
+      description: 'All animals together, spread over patches and classes.',
+      examples: [420],
+      'x-unit': 'animals',
+    }),
+    spread: Type.Optional(
+      Type.Union([Type.Literal('stable within patch'), Type.Literal('stable over all')], {
+        description:
+          'Stable classes in each patch, the patches by capacity, else alike; or the stable spread of the whole landscape.',
+        examples: ['stable within patch'],
+        default: 'stable within patch',
+      }),
+    ),
+  },
+  { additionalProperties: false },
+);
 
-export const Start = Type.Union([
-  Type.Object({ table: Table }, { additionalProperties: false }),
-  Type.Object(
-    {
-      total: Type.Number({ minimum: 0 }),
-      spread: Type.Optional(Type.Union([Type.Literal('stable within patch'), Type.Literal('stable over all')])),
-    },
-    { additionalProperties: false },
-  ),
-  Type.Object(
-    {
-      counted: Type.Record(Type.String(), Type.Number({ minimum: 0 })),
-      of: ClassList,
-      rest: Type.Union([Type.Literal('stable within patch'), Type.Literal('none')]),
-    },
-    { additionalProperties: false },
-  ),
-]);
+const StartCounted = Type.Object(
+  {
+    counted: byNumber({ ...animals, description: 'Animals counted in each patch.' }, 'PATCH'),
+    of: classList({ description: 'Classes that the counts hold.', examples: ['[yearling, adult]'] }),
+    rest: Type.Union([Type.Literal('stable within patch'), Type.Literal('none')], {
+      description: 'The classes that were not counted: in stable proportion to the others, or none.',
+      examples: ['stable within patch'],
+    }),
+  },
+  { additionalProperties: false },
+);
+
+export const Start = Type.Union([StartTable, StartTotal, StartCounted], {
+  title: 'a start: { table: … }, { total: … } or { counted: …, of: …, rest: … }',
+  description: 'The animals at the first count.',
+  examples: ['{ total: 420 }'],
+});
 
 export const Run = Type.Object(
   {
-    replicates: Type.Optional(Type.Integer({ minimum: 1, maximum: 100_000_000 })),
-    seed: Type.Optional(Type.Integer({ minimum: 0, maximum: Number.MAX_SAFE_INTEGER })),
+    replicates: Type.Optional(
+      Type.Integer({
+        minimum: 1,
+        maximum: 100_000_000,
+        description: 'How many futures are drawn.',
+        examples: [2000],
+        default: 1000,
+      }),
+    ),
+    seed: Type.Optional(
+      Type.Integer({
+        minimum: 0,
+        maximum: Number.MAX_SAFE_INTEGER,
+        description: 'Decides all chance: the same seed gives the same futures.',
+        examples: [2026],
+        default: 1,
+      }),
+    ),
   },
-  { additionalProperties: false },
+  { additionalProperties: false, description: 'How the model is run unless the command says otherwise.' },
 );

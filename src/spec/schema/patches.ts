@@ -1,47 +1,80 @@
 import { Type } from 'typebox';
-import { Expression, Name, Quantity } from './values.ts';
+import { expression, Name, quantity, text } from './values.ts';
 
 export const InlinePatch = Type.Object(
   {
-    name: Name,
+    name: Type.String({ ...Name, description: 'What the patch is called.', examples: ['North fen'] }),
     at: Type.Optional(
-      Type.Tuple([Type.Number(), Type.Number()], { description: 'x and y in the `unit` of the plane.' }),
+      Type.Tuple([Type.Number(), Type.Number()], {
+        title: 'two numbers, x and y',
+        description:
+          'Where the middle of the patch lies, x to the east and y to the north, in the `unit` of the plane.',
+        examples: ['[3.2, 9.1]'],
+        'x-unit': 'the `unit` of the plane',
+      }),
     ),
-    area: Type.Optional(Quantity),
+    area: Type.Optional(quantity('area', { description: 'Size of the patch.', examples: ['140 ha'] })),
     capacity: Type.Optional(
-      Type.Number({ minimum: 0, description: 'Animals, in the count of the crowding or ceiling that uses it.' }),
+      Type.Number({
+        minimum: 0,
+        description: 'How many animals the patch has room for, in the count of the crowding or ceiling that uses it.',
+        examples: [260],
+        'x-unit': 'animals',
+      }),
     ),
   },
-  { additionalProperties: Type.Number({ description: 'An attribute of the patch, usable by name in expressions.' }) },
+  {
+    additionalProperties: Type.Number({
+      description: 'Any other key is an attribute of the patch that expressions may use by its name.',
+      examples: [0.4],
+    }),
+    propertyNames: { format: 'identifier' },
+    'x-key': 'ATTRIBUTE',
+    title: 'a patch: { name: …, at: […], … }',
+  },
 );
 
-export const Patches = Type.Array(InlinePatch, { minItems: 1 });
+export const Patches = Type.Array(InlinePatch, {
+  minItems: 1,
+  title: 'a list of patches',
+  description: 'The habitat patches. Their order changes nothing.',
+  examples: ['- { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260 }'],
+});
+
+const Source = Type.Object(
+  {
+    text: Type.Optional(
+      text({ description: 'Where the number is from.', examples: ['radio-tracking 2019-2024, 61 hares'] }),
+    ),
+    basis: Type.Optional(
+      Type.Union(
+        [
+          Type.Literal('measured here'),
+          Type.Literal('measured elsewhere'),
+          Type.Literal('expert'),
+          Type.Literal('assumed'),
+        ],
+        { description: 'How the number is known.', examples: ['measured here'] },
+      ),
+    ),
+  },
+  { additionalProperties: false, description: 'Where the number is from and how it is known; the report shows it.' },
+);
 
 export const Parameter = Type.Union([
-  Expression,
+  expression({ description: 'A number of its own name.', examples: [0.22] }),
   Type.Object(
     {
-      value: Expression,
-      source: Type.Optional(
-        Type.Object(
-          {
-            text: Type.Optional(Type.String({ description: 'Where the number is from.' })),
-            basis: Type.Optional(
-              Type.Union(
-                [
-                  Type.Literal('measured here'),
-                  Type.Literal('measured elsewhere'),
-                  Type.Literal('expert'),
-                  Type.Literal('assumed'),
-                ],
-                { description: 'How the number is known.' },
-              ),
-            ),
-          },
-          { additionalProperties: false },
-        ),
-      ),
+      value: expression({ description: 'The number, or an expression over other parameters.', examples: [0.74] }),
+      source: Type.Optional(Source),
     },
-    { additionalProperties: false },
+    { additionalProperties: false, title: 'a number with its source: { value: …, source: … }' },
   ),
 ]);
+
+export const Parameters = Type.Record(Type.String(), Parameter, {
+  description: 'Named numbers. Expressions use them; sweeps and sensitivities go over them.',
+  examples: ['litter: { value: 4.6, source: { text: "three fens, 2021", basis: measured elsewhere } }'],
+  propertyNames: { format: 'identifier' },
+  'x-key': 'PARAMETER',
+});

@@ -1,56 +1,170 @@
 // The phases that a study names itself: each stands at the top level under its own name with a `kind`.
 import { Type } from 'typebox';
-import { ByClass, ClassList, Expression, Name, Quantity } from './values.ts';
+import { byClass, classList, expression, Name, quantity } from './values.ts';
 
 export const Kernel = Type.Object(
   {
-    shape: Type.Literal('exponential'),
-    mean: Type.Optional(Quantity),
-    scale: Type.Optional(Quantity),
-    reach: Type.Optional(Quantity),
+    shape: Type.Literal('exponential', {
+      description: 'How the density of arrivals falls with distance: exp(-distance / scale).',
+      examples: ['exponential'],
+    }),
+    mean: Type.Optional(
+      quantity('length', { description: 'Mean distance moved in the plane, twice the scale.', examples: ['4 km'] }),
+    ),
+    scale: Type.Optional(
+      quantity('length', { description: 'Scale of the kernel, instead of its mean.', examples: ['2 km'] }),
+    ),
+    reach: Type.Optional(quantity('length', { description: 'Nobody moves further than this.', examples: ['25 km'] })),
   },
-  { additionalProperties: false },
+  { additionalProperties: false, description: 'How likely a patch is reached by its distance.' },
 );
 
 /** From patch to patch: the share of the animals present that goes there. */
-export const Shares = Type.Record(Type.String(), Type.Record(Type.String(), Expression));
+export const Shares = Type.Record(
+  Type.String(),
+  Type.Record(
+    Type.String(),
+    expression({ description: 'Share of the animals present.', examples: [0.1], 'x-unit': 'a share' }),
+    { 'x-key': 'TO' },
+  ),
+  {
+    title: 'patches with the shares that go to other patches',
+    description:
+      'From patch to patch, the share of the animals present that goes there; instead of leaving, kernel and attraction.',
+    examples: ['North fen: { Long holm: 0.1 }'],
+    'x-key': 'FROM',
+  },
+);
+
+const leaving = {
+  description: 'Share that sets out, for all classes or by class.',
+  examples: ['natal_leaving'],
+  'x-unit': 'a share',
+};
 
 export const Dispersal = Type.Object(
   {
-    kind: Type.Literal('dispersal'),
-    classes: ClassList,
-    leaving: Type.Optional(Type.Union([Expression, ByClass])),
-    distance: Type.Optional(Type.Literal('straight')),
+    kind: Type.Literal('dispersal', { description: 'Animals move between patches.', examples: ['dispersal'] }),
+    classes: classList({ description: 'Classes that move.', examples: ['[newborn]'] }),
+    leaving: Type.Optional(Type.Union([expression(leaving), byClass(leaving)], leaving)),
+    distance: Type.Optional(
+      Type.Literal('straight', {
+        description: 'How distance is measured.',
+        examples: ['straight'],
+        default: 'straight',
+      }),
+    ),
     kernel: Type.Optional(Kernel),
-    attraction: Type.Optional(Expression),
-    leavers: Type.Optional(Type.Union([Type.Literal('all arrive'), Type.Literal('may miss')])),
-    hazard: Type.Optional(Quantity),
-    'survival-on-the-way': Type.Optional(Expression),
+    attraction: Type.Optional(
+      expression({
+        description: 'Weight of a patch as a target, over its attributes; without it all patches attract alike.',
+        examples: ['capacity ^ 0.5'],
+      }),
+    ),
+    leavers: Type.Optional(
+      Type.Union([Type.Literal('all arrive'), Type.Literal('may miss')], {
+        description:
+          'Whether all who leave reach some patch, or the kernel is a density over the plane and those who hit no patch are lost. Must be said with a kernel.',
+        examples: ['all arrive'],
+      }),
+    ),
+    hazard: Type.Optional(
+      quantity('per-length', {
+        description: 'Danger of the way: of those who travel d km, exp(-hazard * d) survive.',
+        examples: ['0.03 per km'],
+        default: 0,
+      }),
+    ),
+    'survival-on-the-way': Type.Optional(
+      expression({
+        description: 'Share that survives the way, however long it is.',
+        examples: [0.9],
+        default: 1,
+        'x-unit': 'a share',
+      }),
+    ),
     shares: Type.Optional(Shares),
   },
-  { additionalProperties: false },
+  {
+    additionalProperties: false,
+    title: 'a dispersal',
+    description: 'Movement between patches, under a name of its own.',
+  },
 );
 
 export const Ceiling = Type.Object(
   {
-    kind: Type.Literal('ceiling'),
-    counted: ClassList,
-    capacity: Expression,
-    takes: Type.Literal('at random'),
+    kind: Type.Literal('ceiling', { description: 'A patch holds no more than its capacity.', examples: ['ceiling'] }),
+    counted: classList({ description: 'Classes that are counted and removed.', examples: ['[yearling, adult]'] }),
+    capacity: expression({ description: 'How many may stay.', examples: ['capacity'], 'x-unit': 'animals' }),
+    takes: Type.Literal('at random', { description: 'Who is removed.', examples: ['at random'] }),
   },
-  { additionalProperties: false },
+  {
+    additionalProperties: false,
+    title: 'a ceiling',
+    description: 'An upper limit at its place in the year, under a name of its own.',
+  },
 );
+
+const counted = {
+  description: 'Whose number crowds: a list of classes, or classes with weights.',
+  examples: ['{ yearling: 1, adult: 1 }'],
+};
 
 export const Crowding = Type.Object(
   {
-    form: Type.Union([Type.Literal('beverton-holt'), Type.Literal('ricker')]),
-    changes: Type.Record(Type.String(), ClassList),
-    counted: Type.Union([Type.Record(Type.String(), Type.Number({ minimum: 0 })), ClassList]),
-    capacity: Expression,
-    'allee-half': Type.Optional(Expression),
+    form: Type.Union([Type.Literal('beverton-holt'), Type.Literal('ricker')], {
+      description: 'How rates fall with the number N: 1 / (1 + a N) or exp(-b N).',
+      examples: ['beverton-holt'],
+    }),
+    changes: Type.Record(
+      Type.String(),
+      classList({ description: 'Classes whose rate falls.', examples: ['[newborn]'] }),
+      {
+        title: 'phases with lists of classes',
+        description: 'Which rates fall: the phases, and the classes in each.',
+        examples: ['{ survival: [newborn] }'],
+        'x-key': 'PHASE',
+      },
+    ),
+    counted: Type.Union(
+      [
+        Type.Record(Type.String(), Type.Number({ minimum: 0, description: 'Weight of the class.', examples: [1] }), {
+          'x-key': 'CLASS',
+        }),
+        classList(counted),
+      ],
+      counted,
+    ),
+    capacity: expression({
+      description: 'The number at which an isolated patch stands still at mean rates.',
+      examples: ['capacity'],
+      'x-unit': 'animals',
+    }),
+    'allee-half': Type.Optional(
+      expression({
+        description: 'The number at which rates fall to half because mates or company are scarce: N / (N + half).',
+        examples: [4],
+        'x-unit': 'animals',
+      }),
+    ),
     'where-declining': Type.Optional(
-      Type.Union([Type.Literal('none'), Type.Literal('ceiling'), Type.Object({ as: Name })]),
+      Type.Union(
+        [
+          Type.Literal('none'),
+          Type.Literal('ceiling'),
+          Type.Object(
+            { as: Type.String({ ...Name, description: 'The patch whose crowding is used.', examples: ['North fen'] }) },
+            { additionalProperties: false, title: '{ as: PATCH }' },
+          ),
+        ],
+        {
+          description:
+            'What crowding does in a patch that declines alone: nothing, a ceiling at capacity, or as in another patch.',
+          examples: ['ceiling'],
+        },
+      ),
     ),
   },
-  { additionalProperties: false },
+  { additionalProperties: false, description: 'Rates that fall where animals are many.' },
 );

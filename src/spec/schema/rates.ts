@@ -1,37 +1,98 @@
 import { Type } from 'typebox';
-import { ByClass, ClassList, Expression } from './values.ts';
+import { byClass, classList, expression, Name } from './values.ts';
 
-export const Survival = Type.Record(Type.String(), Expression, {
+const young = 'Young of the counted sex for each animal of the class that is present in the phase `breeding`.';
+
+export const Survival = byClass({
   description: 'Share of each class that survives the phase `survival`.',
+  examples: [0.62],
+  'x-unit': 'a share',
 });
+
+const FemaleShare = expression({
+  description:
+    'Share of females among the young, where births are given for both sexes. Without it births are of the counted sex.',
+  examples: [0.5],
+  'x-unit': 'a share',
+});
+
+const Into = Type.String({
+  ...Name,
+  title: 'a class',
+  description: 'Class that the young enter; without it, the first class.',
+  examples: ['newborn'],
+});
+
+const birthsWords = { description: young, examples: ['0.4 * litter'], 'x-unit': 'animals' };
 
 /** Class names to young per animal, and besides them `female-share` and `into`. */
-export const Births = Type.Record(Type.String(), Type.Union([Expression, ClassList]), {
-  description: 'Young of the counted sex for each animal of a class present in the phase `breeding`.',
+export const Births = Type.Record(Type.String(), Type.Union([expression(birthsWords), classList(birthsWords)]), {
+  title: 'classes with their young',
+  description: young,
+  'x-key': 'CLASS',
+  'x-keys': { 'female-share': FemaleShare, into: Into },
+  'x-others': expression(birthsWords),
 });
 
-const Row = Type.Array(Expression, { minItems: 1 });
-const Square = Type.Array(Row, { minItems: 1 });
+const Row = Type.Array(expression({ description: 'An entry.', examples: [0.3] }), {
+  minItems: 1,
+  title: 'a row of numbers',
+});
+
+function square(description: string, example: string) {
+  return Type.Array(Row, { minItems: 1, title: 'a list of rows', description, examples: [example] });
+}
 
 export const EntryDemography = Type.Object(
   {
-    fates: Type.Optional(Square),
-    births: Type.Optional(Square),
+    fates: Type.Optional(
+      square('Share of the animals of a class (column) that is in a class (row) a year later.', '[[0, 0], [0.3, 0.8]]'),
+    ),
+    births: Type.Optional(
+      square('Young in a class (row) a year later for each animal of a class (column).', '[[0, 1.2], [0, 0]]'),
+    ),
   },
   { additionalProperties: false },
 );
 
-export const LeslieDemography = Type.Object({ survival: Row, fecundity: Row }, { additionalProperties: false });
+export const LeslieDemography = Type.Object(
+  {
+    survival: Type.Array(expression({ description: 'A share.', examples: [0.3] }), {
+      minItems: 1,
+      description:
+        'Share of each class that is in the next a year later; the last entry is for staying in the oldest class.',
+      examples: ['[0.3, 0.8]'],
+    }),
+    fecundity: Type.Array(expression({ description: 'Young.', examples: [1.2] }), {
+      minItems: 1,
+      description: 'First row of the matrix: newborns a year later for each animal of a class.',
+      examples: ['[0, 1.2]'],
+    }),
+  },
+  { additionalProperties: false },
+);
 
 /** A published matrix whose entries hold a whole year. Columns are from, rows are to. */
-export const Demography = Type.Union([EntryDemography, LeslieDemography]);
+export const Demography = Type.Union([EntryDemography, LeslieDemography], {
+  title: 'a matrix: { fates: …, births: … } or { survival: …, fecundity: … }',
+  description:
+    'A published matrix whose entries hold a whole year; columns are from, rows are to. The phase `demography` then stands in the year.',
+  examples: ['{ survival: [0.3, 0.8], fecundity: [0, 1.2] }'],
+});
 
 /** What is different in one patch. */
 export const PatchRates = Type.Object(
   {
-    survival: Type.Optional(ByClass),
-    births: Type.Optional(ByClass),
+    survival: Type.Optional(Survival),
+    births: Type.Optional(byClass(birthsWords)),
     demography: Type.Optional(Demography),
   },
   { additionalProperties: false },
 );
+
+export const InPatches = Type.Record(Type.String(), PatchRates, {
+  title: 'patches with their own rates',
+  description: 'Rates that are different in one patch; what is not written here is as everywhere.',
+  examples: ['Saltmarsh: { survival: { adult: adult_survival * 0.9 } }'],
+  'x-key': 'PATCH',
+});

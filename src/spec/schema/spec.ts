@@ -1,35 +1,72 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
-import { Outcome, Run, Start } from './outcomes.ts';
-import { Parameter, Patches } from './patches.ts';
-import { Ceiling, Crowding, Dispersal } from './phases.ts';
-import { Births, Demography, PatchRates, Survival } from './rates.ts';
+import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
+import { Parameters, Patches } from './patches.ts';
+import { Ceiling, Dispersal, Crowding } from './phases.ts';
+import { Births, Demography, InPatches, Survival } from './rates.ts';
 import { Study } from './study.ts';
 import { Name } from './values.ts';
 
 /** The keys that the language knows. What a study names itself stands beside them, each with a `kind`. */
 export const CoreSchema = Type.Object(
   {
-    skein: Type.Literal(1),
+    skein: Type.Literal(1, { description: 'Version of this language.', examples: [1] }),
     study: Study,
-    'first-year': Type.Optional(Type.Integer()),
-    years: Type.Integer({ minimum: 1, maximum: 100_000 }),
-    step: Type.Optional(Type.Literal('1 year')),
-    position: Type.Optional(Type.Literal('plane')),
-    unit: Type.Optional(Type.Union([Type.Literal('km'), Type.Literal('m')])),
+    'first-year': Type.Optional(
+      Type.Integer({ description: 'Calendar year of the first step.', examples: [2027], default: 0 }),
+    ),
+    years: Type.Integer({
+      minimum: 1,
+      maximum: 100_000,
+      description: 'How many years are looked ahead.',
+      examples: [50],
+      'x-unit': 'years',
+    }),
+    step: Type.Optional(
+      Type.Literal('1 year', { description: 'Length of a step.', examples: ['1 year'], default: '1 year' }),
+    ),
+    position: Type.Optional(
+      Type.Literal('plane', { description: 'What the places of the patches mean.', examples: ['plane'] }),
+    ),
+    unit: Type.Optional(
+      Type.Union([Type.Literal('km'), Type.Literal('m')], {
+        description: 'Unit of the places on the plane.',
+        examples: ['km'],
+      }),
+    ),
     patches: Patches,
-    counts: Type.Union([Type.Literal('females'), Type.Literal('both sexes')]),
-    classes: Type.Array(Name, { minItems: 1, uniqueItems: true }),
-    oldest: Type.Optional(Type.Union([Type.Literal('open-ended'), Type.Literal('terminal')])),
-    parameters: Type.Optional(Type.Record(Type.String(), Parameter)),
+    counts: Type.Union([Type.Literal('females'), Type.Literal('both sexes')], {
+      description: 'What one individual of the model stands for.',
+      examples: ['females'],
+    }),
+    classes: Type.Array(Name, {
+      minItems: 1,
+      uniqueItems: true,
+      title: 'a list of names',
+      description: 'Age or stage classes, the youngest first.',
+      examples: ['[newborn, yearling, adult]'],
+    }),
+    oldest: Type.Optional(
+      Type.Union([Type.Literal('open-ended'), Type.Literal('terminal')], {
+        description: 'Whether the oldest class stays in itself or leaves the model when it ages.',
+        examples: ['open-ended'],
+      }),
+    ),
+    parameters: Type.Optional(Parameters),
     survival: Type.Optional(Survival),
     births: Type.Optional(Births),
     demography: Type.Optional(Demography),
-    in: Type.Optional(Type.Record(Type.String(), PatchRates)),
-    year: Type.Array(Name, { minItems: 1 }),
+    in: Type.Optional(InPatches),
+    year: Type.Array(Name, {
+      minItems: 1,
+      title: 'a list of phases',
+      description:
+        'What happens in a year, in order: `count`, `breeding`, `survival`, `ageing`, `demography`, and phases of your own names.',
+      examples: ['[count, breeding, survival, natal, ageing]'],
+    }),
     crowding: Type.Optional(Crowding),
     start: Start,
-    outcomes: Type.Optional(Type.Record(Type.String(), Outcome)),
+    outcomes: Type.Optional(Outcomes),
     run: Type.Optional(Run),
   },
   { additionalProperties: false },

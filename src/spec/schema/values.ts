@@ -1,21 +1,64 @@
 // The small values that every section is made of.
 import { Type } from 'typebox';
+import { dimensionWords, type Dimension } from '../quantity.ts';
+
+/** What the reference says of a key; `x-unit` is the unit of a bare number. */
+export interface KeyWords {
+  readonly description: string;
+  readonly examples: readonly (string | number | boolean)[];
+  readonly default?: string | number;
+  readonly 'x-unit'?: string;
+}
 
 /** A number, or arithmetic over named parameters, patch attributes, drivers and `year`. */
-export const Expression = Type.Union([Type.Number(), Type.String()], {
-  description: 'A number or an expression, such as `adult_survival * 0.9`.',
-});
+export function expression(words: KeyWords) {
+  const title = 'a number or an expression such as `adult_survival * 0.9`';
+  return Type.Union([Type.Number(), Type.String({ minLength: 1, format: 'expression' })], { title, ...words });
+}
 
-/** A number with a unit, such as `4 km`; a bare number has the unit that the key's description states. */
-export const Quantity = Type.Union([Type.Number(), Type.String()], {
-  description: 'A number with a unit, such as `4 km`, or a bare number in the stated unit.',
-});
+const baseUnits: Readonly<Record<Dimension, string>> = {
+  length: 'km',
+  area: 'km2',
+  share: 'a share',
+  'per-length': 'per km',
+  time: 'years',
+};
 
-export const Name = Type.String({ minLength: 1 });
+/** A number with a unit, such as `4 km`, or an expression with one; a bare number has the base unit. */
+export function quantity(dimension: Dimension, words: KeyWords) {
+  const own = { title: dimensionWords[dimension], 'x-unit': baseUnits[dimension], ...words };
+  return Type.Union([Type.Number(), Type.String({ minLength: 1, format: dimension })], own);
+}
+
+/** A name that the author chooses or uses. */
+export const Name = Type.String({ minLength: 1, format: 'name', title: 'a name' });
 
 /** Class name to expression. */
-export const ByClass = Type.Record(Type.String(), Expression);
+export function byClass(words: KeyWords) {
+  return Type.Record(Type.String(), expression(words), {
+    title: 'classes with a number or an expression each',
+    description: words.description,
+    'x-key': 'CLASS',
+  });
+}
 
-export const ClassList = Type.Union([Type.Array(Name, { minItems: 1 }), Type.Literal('all')], {
-  description: 'Names of classes, or `all`.',
-});
+export function classList(words: KeyWords) {
+  return Type.Union([Type.Array(Name, { minItems: 1, uniqueItems: true }), Type.Literal('all')], {
+    title: 'a list of classes, or `all`',
+    ...words,
+  });
+}
+
+/** A text that the tool shows and does not interpret. */
+export function text(words: KeyWords) {
+  return Type.String({ minLength: 1, ...words });
+}
+
+/** Names of one sort, such as `CLASS`, with a number each that is not negative. */
+export function byNumber(words: KeyWords, key: string) {
+  return Type.Record(Type.String(), Type.Number({ minimum: 0, ...words }), {
+    title: 'names with a number each',
+    description: words.description,
+    'x-key': key,
+  });
+}

@@ -4,7 +4,7 @@ import type { SourceEntry, SourceList, SourceMap, SourceNode, SourceScalar } fro
 import { checkFormat, checkName } from './format.ts';
 import { put, type Report, type Subject } from './report.ts';
 import { checkScalar, tellWrongType } from './scalar.ts';
-import { shapeOfKey, sortOf, type Shape } from './shape.ts';
+import { knownKeys, shapeOfKey, sortOf, type Shape } from './shape.ts';
 import { checkUnion } from './union.ts';
 import { expectationOf } from './words.ts';
 
@@ -25,10 +25,10 @@ export function checkMap(map: SourceMap, shape: Shape, subject: Subject, report:
   for (const entry of map.entries) {
     const known = shapeOfKey(shape, entry.key);
     if (known === undefined) {
-      tellUnknownKey(entry, Object.keys(shape.properties ?? {}), report);
+      tellUnknownKey(entry, Object.keys(knownKeys(shape)), report);
       continue;
     }
-    if (shape.properties?.[entry.key] === undefined) checkOwnKey(entry, shape, report);
+    if (!Object.hasOwn(knownKeys(shape), entry.key)) checkOwnKey(entry, shape, report);
     checkShape(entry.value, known, subjectOf(entry), report);
   }
   for (const key of shape.required ?? []) {
@@ -42,63 +42,55 @@ function checkOwnKey(entry: SourceEntry, shape: Shape, report: Report): void {
   const scalar: SourceScalar = { kind: 'scalar', value: key, source: key, plain, span: keySpan };
   if (shape.propertyNames?.format === undefined) checkName(scalar, report);
   else checkFormat(scalar, shape.propertyNames.format, subjectOf(entry), report);
-  const nearest = nearestName(key, Object.keys(shape.properties ?? {}));
+  const nearest = nearestName(key, Object.keys(knownKeys(shape)));
   if (nearest === undefined) return;
-  put(report, {
-    ...{ severity: 'warning', code: 'near-key', message: `\`${key}\` is taken for a name of your own`, span: keySpan },
-    ...{ nearest, fix: `Write \`${nearest}\` if that is meant.` },
-  });
+  put(
+    report,
+    { severity: 'warning', code: 'near-key', message: `\`${key}\` is taken for a name of your own`, span: keySpan },
+    { nearest, fix: `Write \`${nearest}\` if that is meant.` },
+  );
 }
 
 export function tellUnknownKey(entry: SourceEntry, known: readonly string[], report: Report): void {
   const nearest = nearestName(entry.key, known);
   const few = known.length > 0 && known.length <= 12 ? known.map((key) => `\`${key}\``).join(', ') : undefined;
-  put(report, {
-    ...{ code: 'unknown-key', message: `\`${entry.key}\` is not a key of this section`, span: entry.keySpan },
-    ...{ nearest, expected: nearest === undefined ? few : undefined },
-  });
+  put(
+    report,
+    { code: 'unknown-key', message: `\`${entry.key}\` is not a key of this section`, span: entry.keySpan },
+    { nearest, expected: nearest === undefined ? few : undefined },
+  );
 }
 
 function tellMissingKey(key: string, shape: Shape, subject: Subject, report: Report): void {
   const known = shapeOfKey(shape, key);
   const example = known?.examples?.[0];
-  put(report, {
-    ...{ code: 'missing-key', message: `\`${subject.label}\` needs \`${key}\``, span: subject.span },
-    expected: known === undefined ? undefined : expectationOf(known),
-    fix: typeof example === 'string' ? `Add a line such as \`${key}: ${example}\`.` : undefined,
-    reason: known?.description,
-  });
+  put(
+    report,
+    { code: 'missing-key', message: `\`${subject.label}\` needs \`${key}\``, span: subject.span },
+    {
+      expected: known === undefined ? undefined : expectationOf(known),
+      fix: typeof example === 'string' ? `Add a line such as \`${key}: ${example}\`.` : undefined,
+      reason: known?.description,
+    },
+  );
 }
 
 function checkList(list: SourceList, shape: Shape, subject: Subject, report: Report): void {
   const { minItems = 0, maxItems = Infinity, items } = shape;
-  const tuple = Array.isArray(items) ? items.length : undefined;
-  const [least, most] = tuple === undefined ? [minItems, maxItems] : [tuple, tuple];
-  if (list.items.length < least || list.items.length > most) {
-    put(report, {
-      ...{
-        code: 'wrong-length',
-        message: `\`${subject.label}\` has too ${list.items.length < least ? 'few' : 'many'} items`,
-      },
-      ...{ span: subject.span, found: String(list.items.length) },
-      expected:
-        least === most
-          ? String(least)
-          : list.items.length < least
-            ? `at least ${String(least)}`
-            : `at most ${String(most)}`,
-    });
+  const [least, most] = isSeveral(items) ? [items.length, items.length] : [minItems, maxItems];
+  const number = list.items.length;
+  if (number < least || number > most) {
+    const message = `\`${subject.label}\` has too ${number < least ? 'few' : 'many'} items`;
+    const bound = number < least ? `at least ${String(least)}` : `at most ${String(most)}`;
+    const expected = least === most ? String(least) : bound;
+    put(report, { code: 'wrong-length', message, span: subject.span }, { found: String(number), expected });
   }
   for (const [index, item] of list.items.entries()) {
-    const own = itemShape(items, index);
+    const own = isSeveral(items) ? items[index] : items;
     const span = item.span.length > 0 ? item.span : subject.span;
     if (own !== undefined) checkShape(item, own, { label: subject.label, span }, report);
   }
   if (shape.uniqueItems === true) tellRepeated(list, subject, report);
-}
-
-function itemShape(items: Shape | readonly Shape[] | undefined, index: number): Shape | undefined {
-  return isSeveral(items) ? items[index] : items;
 }
 
 function isSeveral(items: Shape | readonly Shape[] | undefined): items is readonly Shape[] {
@@ -111,11 +103,9 @@ function tellRepeated(list: SourceList, subject: Subject, report: Report): void 
     if (item.kind !== 'scalar') continue;
     if (seen.has(item.source)) {
       put(report, {
-        ...{
-          code: 'repeated-item',
-          message: `\`${item.source}\` stands twice in \`${subject.label}\``,
-          span: item.span,
-        },
+        code: 'repeated-item',
+        message: `\`${item.source}\` stands twice in \`${subject.label}\``,
+        span: item.span,
       });
     }
     seen.add(item.source);

@@ -3,7 +3,6 @@ import { pinned } from '../../machine/pinned.ts';
 import { reservedWords, type Ast } from '../expression/ast.ts';
 import { evaluate } from '../expression/evaluate.ts';
 import { namesIn } from '../expression/names.ts';
-import { parseExpression } from '../expression/parse.ts';
 import { dimensionWords, readMeasure, type Dimension } from '../quantity.ts';
 import { isAmbiguousWord } from '../text/scalar.ts';
 import type { SourceScalar } from '../text/source.ts';
@@ -14,7 +13,7 @@ export function checkFormat(scalar: SourceScalar, format: string, subject: Subje
   if (format === 'name') checkName(scalar, report);
   else if (format === 'identifier') checkIdentifier(scalar, report);
   else if (format === 'expression') checkExpression(scalar, subject, report);
-  else if (isDimension(format)) checkQuantity(scalar, format, report);
+  else if (isDimension(format) && !isStrangeNumber(scalar, subject, report)) checkQuantity(scalar, format, report);
 }
 
 function isDimension(format: string): format is Dimension {
@@ -26,16 +25,17 @@ const longestName = 100;
 export function checkName(scalar: SourceScalar, report: Report): void {
   const { source, span } = scalar;
   if (source.length > longestName || /[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Co}]/u.test(source) || source !== source.trim()) {
-    put(report, {
-      ...{ code: 'unusable-name', message: 'This name cannot be used', span },
-      expected: `at most ${String(longestName)} visible characters, without blanks at its ends`,
-    });
+    put(
+      report,
+      { code: 'unusable-name', message: 'This name cannot be used', span },
+      { expected: `at most ${String(longestName)} visible characters, without blanks at its ends` },
+    );
   } else if (scalar.plain && isAmbiguousWord(source)) {
-    put(report, {
-      ...{ severity: 'warning', code: 'quote-word', message: `\`${source}\` is a name here`, span },
-      reason: 'Other programs that read YAML take it for true, false or nothing.',
-      fix: `Write "${source}".`,
-    });
+    put(
+      report,
+      { severity: 'warning', code: 'quote-word', message: `\`${source}\` is a name here`, span },
+      { reason: 'Other programs that read YAML take it for true, false or nothing.', fix: `Write "${source}".` },
+    );
   }
 }
 
@@ -44,29 +44,28 @@ const reserved: ReadonlySet<string> = new Set(reservedWords);
 function checkIdentifier(scalar: SourceScalar, report: Report): void {
   const { source, span } = scalar;
   if (reserved.has(source)) {
-    put(report, {
-      ...{ code: 'unusable-name', message: `\`${source}\` has a meaning of its own in expressions`, span },
-      fix: 'Choose another name.',
-    });
+    put(
+      report,
+      { code: 'unusable-name', message: `\`${source}\` has a meaning of its own in expressions`, span },
+      { fix: 'Choose another name.' },
+    );
   } else if (source.length > longestName || !/^[\p{L}_][\p{L}\p{M}\p{N}_]*$/u.test(source)) {
     const better = source.trim().replace(/[^\p{L}\p{M}\p{N}_]+/gu, '_');
-    put(report, {
-      ...{ code: 'unusable-name', message: 'This name cannot stand in an expression', span, found: source },
-      expected: `a letter, then letters, digits and _, at most ${String(longestName)}`,
-      ...(/^[\p{L}_]/u.test(better) ? { fix: `Write \`${better.slice(0, longestName)}\`.` } : {}),
-    });
+    put(
+      report,
+      { code: 'unusable-name', message: 'This name cannot stand in an expression', span },
+      {
+        found: source,
+        expected: `a letter, then letters, digits and _, at most ${String(longestName)}`,
+        ...(/^[\p{L}_]/u.test(better) ? { fix: `Write \`${better.slice(0, longestName)}\`.` } : {}),
+      },
+    );
   }
 }
 
+/** Expressions are numbers without a unit; only % may stand behind one. */
 function checkExpression(scalar: SourceScalar, subject: Subject, report: Report): void {
-  if (isStrangeNumber(scalar, subject, report)) return;
-  const parsed = parseExpression(scalar.source);
-  if (parsed.ok) {
-    checkConstant(parsed.ast, scalar, report);
-    return;
-  }
-  const { code, message, span, ...details } = parsed.error;
-  put(report, { code, message, ...details, span: spanWithin(scalar, span, report.source) });
+  if (!isStrangeNumber(scalar, subject, report)) checkQuantity(scalar, 'share', report);
 }
 
 function checkQuantity(scalar: SourceScalar, dimension: Dimension, report: Report): void {
@@ -76,8 +75,10 @@ function checkQuantity(scalar: SourceScalar, dimension: Dimension, report: Repor
     return;
   }
   const { code, message, span, expected, ...details } = read.error;
-  const words = expected ?? dimensionWords[dimension];
-  put(report, { code, message, ...details, expected: words, span: spanWithin(scalar, span, report.source) });
+  const words = dimension === 'share' ? 'a number or an expression without a unit' : dimensionWords[dimension];
+  const wanted = expected === undefined || code === 'wrong-unit' ? words : expected;
+  const where = spanWithin(scalar, span, report.source);
+  put(report, { code, message, span: where }, { ...details, expected: wanted });
 }
 
 /** What needs no names has its value already here, or none. */
@@ -94,24 +95,31 @@ export function isStrangeNumber(scalar: SourceScalar, subject: Subject, report: 
   const { source, span } = scalar;
   const digits = source.replaceAll('_', '');
   if (/^\+\s*[\d.]+(?:[eE][+-]?\d+)?$/u.test(digits)) {
-    put(report, {
-      ...{
+    put(
+      report,
+      {
         code: 'relative-change',
         message: `\`${subject.label}\` takes a number without a plus`,
         span,
-        found: source,
       },
-      fix: `Write ${digits.slice(1).trim()}. A change by so much is { add: ${digits.slice(1).trim()} }, where changes are taken.`,
-    });
+      {
+        found: source,
+        fix: `Write ${digits.slice(1).trim()}. A change by so much is { add: ${digits.slice(1).trim()} }, where changes are taken.`,
+      },
+    );
     return true;
   }
   const other = /^[-+]?0[xob][\da-f]+$/iu.test(source) || /^[-+]?\.(?:inf|nan)$/iu.test(source);
   const underscored = source.includes('_') && /^-?\d[\d.]*(?:e[-+]?\d+)?$/iu.test(digits);
   if (!other && !underscored) return false;
-  put(report, {
-    ...{ code: 'number-format', message: 'This is no number here', span, found: source },
-    expected: 'digits with at most one point: 1000, 0.74 or 1e3',
-    ...(underscored ? { fix: `Write ${digits}.` } : {}),
-  });
+  put(
+    report,
+    { code: 'number-format', message: 'This is no number here', span },
+    {
+      found: source,
+      expected: 'digits with at most one point: 1000, 0.74 or 1e3',
+      ...(underscored ? { fix: `Write ${digits}.` } : {}),
+    },
+  );
   return true;
 }

@@ -16,15 +16,16 @@ export interface Subject {
   readonly span: Span;
 }
 
-export interface Finding extends Details {
+export interface Mistake {
   readonly severity?: Severity;
   readonly code: DiagnosticCode;
   readonly message: string;
   readonly span: Span;
 }
 
-export function put(report: Report, { severity = 'error', code, message, span, ...details }: Finding): void {
-  report.list.push(tell(severity, code, message, { place: placeAt(report.source, span), ...details }));
+export function put(report: Report, mistake: Mistake, details: Omit<Details, 'place'> = {}): void {
+  const { severity = 'error', code, message, span } = mistake;
+  report.list.push(tell(severity, code, message, { ...details, place: placeAt(report.source, span) }));
 }
 
 /** A report of its own for a branch that is only tried. */

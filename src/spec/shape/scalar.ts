@@ -18,22 +18,26 @@ export function checkScalar(scalar: SourceScalar, shape: Shape, subject: Subject
 /** One of the words that the key takes. */
 export function checkWord(scalar: SourceScalar, words: readonly Shape[], subject: Subject, report: Report): void {
   if (words.some((word) => word.const === scalar.value)) return;
-  put(report, {
-    ...{ code: 'unknown-word', message: `\`${subject.label}\` does not take this`, span: scalar.span },
-    found: scalar.source,
-    expected: either(words.map(expectationOf)),
-    nearest: nearestName(
-      scalar.source,
-      words.map((word) => String(word.const)),
-    ),
-  });
+  put(
+    report,
+    { code: 'unknown-word', message: `\`${subject.label}\` does not take this`, span: scalar.span },
+    {
+      found: scalar.source,
+      expected: either(words.map(expectationOf)),
+      nearest: nearestName(
+        scalar.source,
+        words.map((word) => String(word.const)),
+      ),
+    },
+  );
 }
 
 function tellMissing(shape: Shape, subject: Subject, report: Report): void {
-  put(report, {
-    ...{ code: 'missing-value', message: `\`${subject.label}\` has no value`, span: subject.span },
-    expected: expectationOf(shape),
-  });
+  put(
+    report,
+    { code: 'missing-value', message: `\`${subject.label}\` has no value`, span: subject.span },
+    { expected: expectationOf(shape) },
+  );
 }
 
 function checkTextual(scalar: SourceScalar, shape: Shape, subject: Subject, report: Report): void {
@@ -44,10 +48,15 @@ function checkTextual(scalar: SourceScalar, shape: Shape, subject: Subject, repo
 
 function tellQuotes(scalar: SourceScalar, subject: Subject, report: Report): void {
   const read = typeof scalar.value === 'number' ? `the number ${String(scalar.value)}` : `\`${String(scalar.value)}\``;
-  put(report, {
-    ...{ code: 'needs-quotes', message: `\`${subject.label}\` takes a text, and this is read as ${read}` },
-    ...{ span: scalar.span, found: scalar.source, fix: `If it is a name or a text, write "${scalar.source}".` },
-  });
+  put(
+    report,
+    {
+      code: 'needs-quotes',
+      message: `\`${subject.label}\` takes a text, and this is read as ${read}`,
+      span: scalar.span,
+    },
+    { found: scalar.source, fix: `If it is a name or a text, write "${scalar.source}".` },
+  );
 }
 
 function checkNumber(scalar: SourceScalar, shape: Shape, subject: Subject, report: Report): void {
@@ -59,10 +68,11 @@ function checkNumber(scalar: SourceScalar, shape: Shape, subject: Subject, repor
   }
   const whole = shape.type !== 'integer' || Number.isInteger(value);
   if (whole && Number.isFinite(value) && within(value, shape)) return;
-  put(report, {
-    ...{ code: 'out-of-range', message: `\`${subject.label}\` is outside its limits`, span: scalar.span },
-    ...{ found: scalar.source, expected: expectationOf(shape) },
-  });
+  put(
+    report,
+    { code: 'out-of-range', message: `\`${subject.label}\` is outside its limits`, span: scalar.span },
+    { found: scalar.source, expected: expectationOf(shape) },
+  );
 }
 
 function within(value: number, shape: Shape): boolean {
@@ -73,15 +83,19 @@ function within(value: number, shape: Shape): boolean {
 
 /** A value of another sort than the shape takes. */
 export function tellWrongType(node: SourceNode, shape: Shape, subject: Subject, report: Report): void {
-  put(report, {
-    ...{ code: 'wrong-type', message: `\`${subject.label}\` takes another sort of value` },
-    ...{
+  put(
+    report,
+    {
+      code: 'wrong-type',
+      message: `\`${subject.label}\` takes another sort of value`,
       span: node.kind === 'scalar' ? node.span : subject.span,
+    },
+    {
       found: foundIn(node),
       expected: expectationOf(shape),
+      fix: adviceFor(node, shape),
     },
-    fix: adviceFor(node, shape),
-  });
+  );
 }
 
 function foundIn(node: SourceNode): string {

@@ -26,6 +26,12 @@ export interface Shape {
   readonly examples?: readonly unknown[];
   readonly default?: unknown;
   readonly 'x-unit'?: string;
+  /** What the keys that the author chooses are, such as CLASS. */
+  readonly 'x-key'?: string;
+  /** Keys with a meaning of their own among those that the author chooses, which TypeScript has no type for. */
+  readonly 'x-keys'?: Readonly<Record<string, Shape>>;
+  /** All other keys beside those. */
+  readonly 'x-others'?: Shape;
 }
 
 export type Sort = 'map' | 'list' | 'text' | 'number' | 'truth';
@@ -49,14 +55,19 @@ export function branchesOf(shape: Shape): readonly Shape[] {
   return shape.anyOf === undefined ? [shape] : shape.anyOf.flatMap(branchesOf);
 }
 
+/** The keys that a section knows by name. */
+export function knownKeys(shape: Shape): Readonly<Record<string, Shape>> {
+  return { ...shape.properties, ...shape['x-keys'] };
+}
+
 /** The shape of a key, and of all keys that have none of their own. */
 export function shapeOfKey(shape: Shape, key: string): Shape | undefined {
-  const own =
-    shape.properties !== undefined && Object.hasOwn(shape.properties, key) ? shape.properties[key] : undefined;
-  return own ?? shapeOfOthers(shape);
+  const known = knownKeys(shape);
+  return Object.hasOwn(known, key) ? known[key] : shapeOfOthers(shape);
 }
 
 export function shapeOfOthers(shape: Shape): Shape | undefined {
+  if (shape['x-others'] !== undefined) return shape['x-others'];
   const [pattern] = Object.values(shape.patternProperties ?? {});
   if (pattern !== undefined) return pattern;
   return typeof shape.additionalProperties === 'object' ? shape.additionalProperties : undefined;

@@ -14,14 +14,15 @@ const kinds: Readonly<Record<string, Shape>> = namedSchemas;
 /** The sections of the spec, or undefined where it has none. */
 export function checkTop(root: SourceNode, report: Report): SourceMap | undefined {
   if (root.kind !== 'map') {
-    put(report, {
-      ...{
+    put(
+      report,
+      {
         code: 'yaml-not-sections',
         message: 'A spec is made of keys with values',
         span: { ...root.span, length: 1 },
       },
-      ...{ expected: 'a line such as `skein: 1`', fix: 'Begin with `skein: 1`, then `study:`, `patches:` and so on.' },
-    });
+      { expected: 'a line such as `skein: 1`', fix: 'Begin with `skein: 1`, then `study:`, `patches:` and so on.' },
+    );
     return undefined;
   }
   const known = root.entries.filter((entry) => isCore(entry.key));
@@ -64,16 +65,25 @@ function kindWords(): string {
 }
 
 function tellMissingKind(entry: SourceEntry, report: Report): void {
-  put(report, {
-    ...{ code: 'missing-kind', message: `\`${entry.key}\` stands in the year and does not say its kind` },
-    ...{ span: entry.keySpan, expected: kindWords(), fix: 'Add a line such as `kind: dispersal`.' },
-  });
+  put(
+    report,
+    {
+      code: 'missing-kind',
+      message: `\`${entry.key}\` stands in the year and does not say its kind`,
+      span: entry.keySpan,
+    },
+    { expected: kindWords(), fix: 'Add a line such as `kind: dispersal`.' },
+  );
 }
 
 function tellUnknownKind(kind: SourceEntry, word: SourceScalar | undefined, report: Report): void {
-  put(report, {
-    ...{ code: 'unknown-kind', message: 'There is no such kind', span: word?.span ?? kind.keySpan },
-    ...{ found: word?.source, expected: kindWords() },
-    nearest: word === undefined ? undefined : nearestName(word.source, Object.keys(kinds)),
-  });
+  put(
+    report,
+    { code: 'unknown-kind', message: 'There is no such kind', span: word?.span ?? kind.keySpan },
+    {
+      found: word?.source,
+      expected: kindWords(),
+      nearest: word === undefined ? undefined : nearestName(word.source, Object.keys(kinds)),
+    },
+  );
 }

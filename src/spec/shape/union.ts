@@ -2,7 +2,7 @@
 import type { SourceNode } from '../text/source.ts';
 import { errorsIn, trial, type Report, type Subject } from './report.ts';
 import { checkWord, tellWrongType } from './scalar.ts';
-import { branchesOf, sortOf, type Shape, type Sort } from './shape.ts';
+import { branchesOf, knownKeys, sortOf, type Shape, type Sort } from './shape.ts';
 
 type Check = (node: SourceNode, shape: Shape, subject: Subject, report: Report) => void;
 
@@ -48,6 +48,6 @@ function sortOfNode(node: SourceNode): Sort | undefined {
 /** How many keys of a section the shape knows by name. */
 function shared(node: SourceNode, shape: Shape): number {
   if (node.kind !== 'map') return 0;
-  const known = shape.properties ?? {};
+  const known = knownKeys(shape);
   return node.entries.filter((entry) => Object.hasOwn(known, entry.key)).length;
 }
