@@ -47,7 +47,7 @@ export function modelOf(sketch: Sketch): Model {
 export function imageOf(sketch: Sketch): ArrayBuffer {
   return buildImage({
     model: modelOf(sketch),
-    landscape: { distanceKm: null, movements: sketch.movements ?? sketch.phases.map(() => null) },
+    landscape: { movements: sketch.movements ?? sketch.phases.map(() => null) },
     coefficients: sketch.coefficients ?? [],
     startAnimals: Float64Array.from(sketch.start),
   });
@@ -69,5 +69,6 @@ export function movement(patches: number, rows: readonly (readonly [number, numb
     start,
     destinations: Int32Array.from(rows, ([, to]) => to),
     chance: Float64Array.from(rows, ([, , chance]) => chance),
+    lengthKm: null,
   };
 }
