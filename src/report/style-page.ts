@@ -59,6 +59,7 @@ details{margin:.6rem 0}
 summary{cursor:pointer;padding:.3rem 0;color:var(--deep)}
 pre{background:var(--tint);padding:1rem;overflow:auto;font:0.85rem/1.5 ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monospace;tab-size:2}
 code{font:0.92em ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monospace;overflow-wrap:anywhere}
+.readout{color:var(--soft)}
 .smalls{display:grid;grid-template-columns:repeat(auto-fill,minmax(12.5rem,1fr));gap:1rem 1.2rem;margin:1rem 0}
 .smalls svg{width:100%;height:auto;display:block}
 .limits li{margin:.5rem 0;max-width:42rem}
@@ -86,11 +87,11 @@ button:hover{background:var(--tint)}
 .tip{position:absolute;z-index:8;max-width:19rem;background:var(--ink);color:#fff;padding:.5rem .8rem;font-size:.92rem;line-height:1.4;border-radius:2px;pointer-events:auto}
 .tip strong{display:block;font-weight:600}
 .tip span{display:block}
-.readout{min-height:1.5em;font-size:.95rem;color:var(--ink);margin:.2rem 0 0}
+.readout{min-height:1.5em;font-size:.95rem;margin:.2rem 0 0;max-width:none}
 footer{margin-top:3rem;padding-top:.7rem;border-top:1px solid var(--ink);color:var(--soft);font-size:.92rem}
 @media (max-width:56rem){main{padding:1.6rem 1.5rem 3rem;border:0}nav{margin:1.2rem -1.5rem 0;padding:.45rem 1.5rem}}
 @media (max-width:48rem){.answer{grid-template-columns:1fr}}
-@media (max-width:40rem){body{font-size:1rem}main{padding:1.2rem 1.1rem 3rem}nav{margin:1rem -1.1rem 0;padding:.4rem 1.1rem;position:static}h1{font-size:1.9rem}h2{font-size:1.4rem;margin-top:2.4rem}.lead{font-size:1.35rem}.question{font-size:1.15rem}.wide{display:none}.narrow{display:block}.numbers div,.concepts div{grid-template-columns:1fr}.smalls{grid-template-columns:1fr 1fr;gap:.8rem}.outcomes thead{display:none}.outcomes,.outcomes tbody,.outcomes tr,.outcomes th,.outcomes td{display:block;max-width:none}.outcomes th,.outcomes td{border:0;padding:.1rem 0}.outcomes tbody{border-bottom:1px solid var(--hair);padding:.5rem 0}.outcomes tr{padding:.35rem 0}.outcomes tr>th[scope=row]{color:var(--soft)}.outcomes tr>td:nth-last-child(2)::before{content:"from the number of runs: "}.outcomes tr>td:last-child::before{content:"from what is not known: "}}
+@media (max-width:40rem){body{font-size:1rem}main{padding:1.2rem 1.1rem 3rem}nav{margin:1rem -1.1rem 0;padding:.4rem 1.1rem;position:static}h1{font-size:1.9rem}h2{font-size:1.4rem;margin-top:2.4rem}.lead{font-size:1.35rem}.question{font-size:1.15rem}.wide{display:none}.narrow{display:block}.numbers div,.concepts div{grid-template-columns:1fr}.smalls{grid-template-columns:1fr 1fr;gap:.8rem}.outcomes thead{display:none}.outcomes,.outcomes caption,.outcomes tbody,.outcomes tr,.outcomes th,.outcomes td{display:block;max-width:none}.outcomes th,.outcomes td{border:0;padding:.1rem 0}.outcomes tbody{border-bottom:1px solid var(--hair);padding:.5rem 0}.outcomes tr{padding:.35rem 0}.outcomes tr>th[scope=row]{color:var(--soft)}.outcomes tr>td:nth-last-child(2)::before{content:"from the number of runs: "}.outcomes tr>td:last-child::before{content:"from what is not known: "}}
 @media (prefers-reduced-motion:reduce){html{scroll-behavior:auto}}
 @media (forced-colors:active){figure svg{forced-color-adjust:none}}
 `;

@@ -15,11 +15,12 @@ h1{font-size:22pt;margin:.2rem 0}h2{font-size:14.5pt;margin:1.1rem 0 .4rem;paddi
 p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max-width:none}
 .answer{grid-template-columns:1fr auto;gap:1rem}.futures{max-width:13rem}.sure{margin-top:.4rem}
 .lead strong{text-decoration:underline;text-decoration-thickness:1.5pt;text-underline-offset:3pt;background:none}
-table{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}th,td{padding:.12rem .6rem .12rem 0}
+table,th small{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}th,td{padding:.12rem .6rem .12rem 0}
 tr,figure,dl div{break-inside:avoid}
 figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
 .map svg{max-height:105mm;width:auto;margin:0 auto}
 .chart .wide svg{max-height:62mm;width:auto}
+.chances{display:grid;grid-template-columns:1fr 1fr;gap:.3rem 1.2rem}.chances figure{margin:.2rem 0}.chances .wide{display:none!important}.chances .narrow{display:block!important}.chances svg{width:100%}.chances h3{margin:.3rem 0 0;font-size:10.5pt}.chances .definition{margin:0}
 .pages{break-before:page}
 .smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}
 dl{margin:.4rem 0}.numbers div,.concepts div{grid-template-columns:11rem 1fr;padding:.1rem 0}

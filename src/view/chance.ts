@@ -1,5 +1,5 @@
 // The chance of having fallen below a threshold by each year, with the band that holds for the whole curve at once.
-import { curveStepAfter, line } from 'd3';
+import { line } from 'd3';
 import type { OutcomeView, Series, Size } from './contract.ts';
 import { axes, cursor, plot, type Plot } from './axes.ts';
 import { figure } from './figure.ts';
@@ -23,7 +23,7 @@ export function drawChance(chart: ChanceChart, size: Size): Markup {
   const place = plot(size, margins, years, Math.max(0.1, largest(outcome.upper)) * 100);
   const title = mark`<text x="0" y="${legend.height + 20}" fill="${softInk}">of 100 futures</text>`;
   const content = mark`${legend.markup}${title}${axes(place, plain)}${curves(place, outcome, years)}${cursor(place, chart.marked)}`;
-  return figure(size, words(outcome, years), content);
+  return figure(size, words(outcome, years), content, { years: [place.left, place.right] });
 }
 
 function curves(place: Plot, outcome: OutcomeView, years: Series): Markup {
@@ -38,7 +38,6 @@ function course(place: Plot, years: Series, values: Series): string {
   const draw = line<number>()
     .x((_, i) => place.x(pick(years, i)))
     .y((value) => place.y(value))
-    .curve(curveStepAfter)
     .digits(1);
   return draw([...values]) ?? '';
 }

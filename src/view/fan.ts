@@ -26,7 +26,8 @@ export function drawFan(chart: FanChart, size: Size): Markup {
   const place = plot(size, margins, chart.years, largest(chart.fan.p95));
   const title = mark`<text x="0" y="${legend.height + 20}" fill="${softInk}">${chart.axis}</text>`;
   const inside = mark`${bands(place, chart.years, chart.fan)}${cursor(place, chart.marked)}`;
-  return figure(size, chart.words, mark`${legend.markup}${title}${axes(place, chart.write ?? plain)}${inside}`);
+  const content = mark`${legend.markup}${title}${axes(place, chart.write ?? plain)}${inside}`;
+  return figure(size, chart.words, content, { years: [place.left, place.right] });
 }
 
 /** The two bands and the line of the middle. */

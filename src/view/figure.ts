@@ -10,10 +10,21 @@ export interface FigureWords {
   readonly description: string;
 }
 
-/** A still picture for assistive technology unless `live`, when its parts are read one by one. */
-export function figure(size: Size, words: FigureWords, content: Content, live = false): Markup {
+export interface FigureKind {
+  /** Its parts are read one by one, not as one picture. */
+  readonly live?: boolean;
+  /** Where the first and the last year stand, in pixels. */
+  readonly years?: readonly [number, number];
+}
+
+export function figure(size: Size, words: FigureWords, content: Content, kind: FigureKind = {}): Markup {
   const label = `${words.title}. ${words.description}`;
-  return mark`<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${size.width} ${size.height}" width="${size.width}" height="${size.height}" role="${live ? 'group' : 'img'}" aria-label="${label}" font-family="${sans}" font-size="13"><title>${words.title}</title><desc>${words.description}</desc><rect width="${size.width}" height="${size.height}" fill="${paper}"/>${content}</svg>`;
+  const years = kind.years === undefined ? null : mark` data-left="${kind.years[0]}" data-right="${kind.years[1]}"`;
+  const box = mark`viewBox="0 0 ${size.width} ${size.height}" width="${size.width}" height="${size.height}"`;
+  const role = mark`role="${kind.live === true ? 'group' : 'img'}" aria-label="${label}"`;
+  return mark`<svg xmlns="http://www.w3.org/2000/svg" ${box} ${role}${years} font-family="${sans}" font-size="13">
+<title>${words.title}</title><desc>${words.description}</desc>
+<rect width="${size.width}" height="${size.height}" fill="${paper}"/>${content}</svg>`;
 }
 
 /** About how wide a text of this size stands, without a browser to ask. */

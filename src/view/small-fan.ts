@@ -1,28 +1,46 @@
 // One small fan for one patch, to stand beside many others.
 import type { PatchView, Series, Size } from './contract.ts';
-import { cursor, plot } from './axes.ts';
+import { cursor, plot, type Plot } from './axes.ts';
 import { bands } from './fan.ts';
 import { figure, fitText } from './figure.ts';
 import { mark, type Markup } from './markup.ts';
 import { plain, whole } from './number.ts';
-import { ink, rule, softInk } from './palette.ts';
+import { deep, ink, rule, softInk } from './palette.ts';
 import { largest, pick } from './series.ts';
 
+/** `marked` is the index of a count at which the middle is written out, or null. */
 export function drawSmallFan(patch: PatchView, years: Series, marked: number | null, size: Size): Markup {
-  const place = plot(size, { top: 30, right: 34, bottom: 22, left: 6 }, years, largest(patch.fan.p95));
-  const top = pick(place.y.domain(), 1);
-  const last = years.length - 1;
-  const frame = mark`<line x1="${place.left}" x2="${place.right}" y1="${place.bottom}" y2="${place.bottom}" stroke="${ink}"/><line x1="${place.left}" x2="${place.right}" y1="${place.top}" y2="${place.top}" stroke="${rule}"/>`;
-  const labels = mark`<text x="${place.left}" y="17" fill="${ink}" font-weight="600">${fitText(patch.name, 13, size.width - 12)}</text><text x="${place.right + 5}" y="${place.top + 4}" font-size="12" fill="${softInk}">${plain(top)}</text><text x="${place.right + 5}" y="${place.bottom + 4}" font-size="12" fill="${softInk}">0</text><text x="${place.left}" y="${size.height - 5}" font-size="12" fill="${softInk}">${String(pick(years, 0))}</text><text x="${place.right}" y="${size.height - 5}" font-size="12" text-anchor="end" fill="${softInk}">${String(pick(years, last))}</text>`;
-  const content = mark`${frame}${bands(place, years, patch.fan)}${labels}${cursor(place, marked)}`;
-  return figure(size, words(patch, years), content);
+  const place = plot(size, { top: 44, right: 36, bottom: 22, left: 6 }, years, largest(patch.fan.p95));
+  const year = marked === null ? null : pick(years, marked);
+  const content = mark`${frame(place)}${bands(place, years, patch.fan)}${labels(patch, years, place)}
+${cursor(place, year)}${reading(patch, years, marked, place)}`;
+  return figure(size, words(patch, years), content, { years: [place.left, place.right] });
+}
+
+function frame({ left, right, top, bottom }: Plot): Markup {
+  return mark`<line x1="${left}" x2="${right}" y1="${bottom}" y2="${bottom}" stroke="${ink}"/>
+<line x1="${left}" x2="${right}" y1="${top}" y2="${top}" stroke="${rule}"/>`;
+}
+
+function labels(patch: PatchView, years: Series, place: Plot): Markup {
+  const { left, right, top, bottom, size } = place;
+  const most = pick(place.y.domain(), 1);
+  const foot = mark`<text x="${left}" y="${size.height - 5}">${String(pick(years, 0))}</text>
+<text x="${right}" y="${size.height - 5}" text-anchor="end">${String(pick(years, years.length - 1))}</text>`;
+  return mark`<text x="${left}" y="16" fill="${ink}" font-weight="600">${fitText(patch.name, 13.5, size.width - 12)}</text>
+<g font-size="12" fill="${softInk}"><text x="${right + 5}" y="${top + 4}">${plain(most)}</text><text x="${right + 5}" y="${bottom + 4}">0</text>${foot}</g>`;
+}
+
+function reading(patch: PatchView, years: Series, marked: number | null, { left }: Plot): Markup {
+  const count = marked ?? years.length - 1;
+  const median = whole(pick(patch.fan.median, count));
+  return mark`<text x="${left}" y="34" font-size="12" fill="${deep}">${median} in ${String(pick(years, count))}</text>`;
 }
 
 function words(patch: PatchView, years: Series) {
   const last = years.length - 1;
-  const end = `In ${pick(years, last)}, 90 of 100 futures lie between ${whole(pick(patch.fan.p05, last))} and ${whole(pick(patch.fan.p95, last))}, the middle at ${whole(pick(patch.fan.median, last))}`;
-  return {
-    title: `Abundance in ${patch.name}`,
-    description: `${end}; at the start it is ${whole(pick(patch.fan.median, 0))}.`,
-  };
+  const { p05, p95, median } = patch.fan;
+  const range = `90 of 100 futures lie between ${whole(pick(p05, last))} and ${whole(pick(p95, last))}`;
+  const end = `In ${pick(years, last)}, ${range}, the middle at ${whole(pick(median, last))}`;
+  return { title: `Abundance in ${patch.name}`, description: `${end}; it starts from ${whole(pick(median, 0))}.` };
 }

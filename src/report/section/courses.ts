@@ -2,7 +2,7 @@
 import type { RunResults } from '../../results/results.ts';
 import type { ReportView } from '../../view/contract.ts';
 import { drawChance } from '../../view/chance.ts';
-import { drawFan } from '../../view/fan.ts';
+import { drawAbundance } from '../../view/abundance.ts';
 import { mark, type Markup } from '../../view/markup.ts';
 import { decimal, plain, whole } from '../../view/number.ts';
 import { drawSmallFan } from '../../view/small-fan.ts';
@@ -10,7 +10,7 @@ import { drawSmallFan } from '../../view/small-fan.ts';
 export const chartSizes = {
   chance: { wide: { width: 720, height: 280 }, narrow: { width: 340, height: 300 } },
   fan: { wide: { width: 720, height: 320 }, narrow: { width: 340, height: 320 } },
-  small: { width: 220, height: 132 },
+  small: { width: 220, height: 146 },
 } as const;
 
 export function chancesSection(view: ReportView): Markup | null {
@@ -20,25 +20,11 @@ export function chancesSection(view: ReportView): Markup | null {
       drawChance({ outcome, years: view.years, marked: null }, chartSizes.chance[size]);
     return mark`<figure class="chart"><h3><bdi>${outcome.name}</bdi></h3><p class="definition"><bdi>${outcome.definition}</bdi></p>${both('chance', draw, k)}</figure>`;
   });
-  return mark`<section id="chances" aria-labelledby="chances-title"><h2 id="chances-title">Chances by year</h2><p>The band holds for the whole curve at once: with 95 % confidence the curve that endless runs would give lies inside it in every year. It accounts for the number of runs, not for what is not known about the model.</p>${figures}</section>`;
+  return mark`<section id="chances" aria-labelledby="chances-title"><h2 id="chances-title">Chances by year</h2><p>The band holds for the whole curve at once: with 95 % confidence the curve that endless runs would give lies inside it in every year. It accounts for the number of runs, not for what is not known about the model.</p><div class="chances">${figures}</div></section>`;
 }
 
 export function abundanceSection(view: ReportView, results: RunResults): Markup {
-  const words = (what: string) => ({
-    title: `${what} by year`,
-    description: `Over ${plain(view.futures)} futures; the numbers stand in the table below.`,
-  });
-  const fan = (size: 'wide' | 'narrow') =>
-    drawFan(
-      {
-        words: words('Abundance'),
-        years: view.years,
-        fan: view.whole,
-        axis: `${view.animals} in all patches`,
-        marked: null,
-      },
-      chartSizes.fan[size],
-    );
+  const fan = (size: 'wide' | 'narrow') => drawAbundance(view, null, chartSizes.fan[size]);
   const smalls = view.patches.map(
     (patch, p) =>
       mark`<div class="chart" data-figure="small" data-index="${String(p)}">${drawSmallFan(patch, view.years, null, chartSizes.small)}</div>`,

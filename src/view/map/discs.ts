@@ -25,10 +25,10 @@ export function sizeDiscs(
 ): Discs {
   const { sizes, sizeMeans } = measure(patches);
   const most = Math.max(largest(sizes), 1e-9);
-  const reach = Math.min(width * 0.115, room(sizes, points, most));
+  const reach = Math.min(width * 0.11, room(sizes, points, most));
   const radius = sizes.map((size) => Math.max(smallest, reach * Math.sqrt(size / most)));
   const holds = patches.map((patch) => Math.max(patch.capacity ?? 0, largest(patch.fan.p75), 1));
-  const perDot = roundUp(Math.max(...holds.map((count, p) => (count * 3.6 * 3.6) / pick(radius, p) ** 2 / 0.8)));
+  const perDot = roundUp(Math.max(1, ...holds.map((count, p) => (count * 3.6 * 3.6) / pick(radius, p) ** 2 / 0.8)));
   const slots = holds.map((count) => Math.max(1, Math.ceil(count / perDot)));
   const tightest = Math.min(...slots.map((count, p) => pick(radius, p) / Math.sqrt(count)));
   const dots = reach >= 12 && patches.length <= 80;

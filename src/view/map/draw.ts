@@ -10,7 +10,7 @@ import { bandPath } from './band.ts';
 import { dotPath, sizeDiscs, type Discs } from './discs.ts';
 import { placeLabels } from './labels.ts';
 import { legendEntries, neatline, type Flows } from './legend.ts';
-import { innerFrame, placePatches, shapeOf, type Placing } from './place.ts';
+import { innerFrame, mapHeight, placePatches, type Placing } from './place.ts';
 import { scaleBar } from './scale-bar.ts';
 import { flow, linkLine, patchLines } from './words.ts';
 
@@ -25,14 +25,14 @@ interface Sheet {
 }
 
 export function drawMap(view: ReportView, state: MapState, width: number): Markup {
-  const height = Math.round(width * Math.max(shapeOf(view.patches), width < 500 ? 0.8 : 0));
-  const placing = placePatches(view.patches, innerFrame({ width, height }, 34, height - 26));
+  const height = mapHeight(view.patches, width);
+  const placing = placePatches(view.patches, innerFrame({ width, height }));
   const discs = sizeDiscs(view.patches, placing.points, width);
   const flows = { most: Math.max(0, ...view.links.map((link) => largest(link.animals))), widest: width < 500 ? 9 : 14 };
   const sheet = { view, state, width, height, placing, discs, flows };
   const legend = key(legendEntries(view, state, discs, flows), 2, height + 8, width - 4);
   const picture = mark`${neatline(width, height)}${heading(sheet)}${links(sheet)}${bands(sheet)}${patches(sheet)}${names(sheet)}${foot(sheet)}${legend.markup}`;
-  return figure({ width, height: height + 12 + legend.height }, words(sheet), picture, state.focus !== null);
+  return figure({ width, height: height + 12 + legend.height }, words(sheet), picture, { live: state.focus !== null });
 }
 
 function heading({ view, state }: Sheet): Markup {

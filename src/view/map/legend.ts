@@ -35,8 +35,12 @@ const sizeWords: Readonly<Record<Discs['sizeMeans'], string>> = {
 };
 
 export function perDotWords(perDot: number, animals: string): string {
-  if (perDot === 1) return `one dot is one of the ${animals}`;
-  return perDot < 1 ? `${plain(1 / perDot)} dots are one of the ${animals}` : `one dot is ${plain(perDot)} ${animals}`;
+  if (perDot === 1) return `one dot is one ${singular(animals)}`;
+  return `one dot is ${plain(perDot)} ${animals}`;
+}
+
+function singular(animals: string): string {
+  return animals.replace(/s$/, '');
 }
 
 const rampEntry: KeyEntry = {
@@ -65,7 +69,7 @@ function bandEntry(view: ReportView, flows: Flows): readonly KeyEntry[] {
 const linkEntry: KeyEntry = {
   sample: mark`<line x1="0" x2="30" stroke="${softInk}" stroke-width="1" stroke-dasharray="1 4" stroke-linecap="round"/>`,
   width: 30,
-  words: 'some can reach',
+  words: 'animals can go between these',
 };
 
 /** The double frame of a survey sheet. */

@@ -24,13 +24,19 @@ export function placePatches(patches: readonly PatchView[], frame: Frame): Placi
   return onPlane(places, frame);
 }
 
-/** How tall a map of this width should be for the shape of its landscape, between 0.45 and 0.9 of the width. */
-export function shapeOf(patches: readonly PatchView[]): number {
+/** How tall a map of this width should be for the shape of its landscape. */
+export function mapHeight(patches: readonly PatchView[], width: number): number {
+  const side = margin(width);
+  const shape = shapeOf(patches);
+  const height = (width - 2 * side) * shape + 1.7 * side + head + foot;
+  return Math.round(Math.min(1.05 * width, Math.max((width < 500 ? 0.8 : 0.5) * width, height)));
+}
+
+function shapeOf(patches: readonly PatchView[]): number {
   const places = patches.flatMap((patch) => (patch.at === null ? [] : [patch.at]));
-  if (places.length < patches.length || places.length < 2) return 0.62;
+  if (places.length < patches.length || places.length < 2) return 0.55;
   const box = bounds(places);
-  const shape = box.width > 0 ? box.height / box.width : 1;
-  return Math.min(0.9, Math.max(0.45, shape * 0.8 + 0.1));
+  return box.width > 0 ? box.height / box.width : 1.5;
 }
 
 function onPlane(places: readonly (readonly [number, number])[], frame: Frame): Placing {
@@ -73,7 +79,15 @@ function bounds(places: readonly (readonly [number, number])[]) {
 }
 
 /** The frame inside which centres may lie, so that circles and names find room. */
-export function innerFrame(size: Size, top: number, bottom: number): Frame {
-  const side = size.width * 0.13;
-  return { left: side, right: size.width - side, top: top + side * 0.75, bottom: bottom - side * 0.75 };
+export function innerFrame(size: Size): Frame {
+  const side = margin(size.width);
+  return { left: side, right: size.width - side, top: head + side * 0.85, bottom: size.height - foot - side * 0.85 };
+}
+
+/** Pixels for the year above and the scale below. */
+const head = 30;
+const foot = 26;
+
+function margin(width: number): number {
+  return width * 0.125;
 }
