@@ -1,7 +1,8 @@
 // Every kind of mistake that can be told, with what it means in one line. The mistakes in test/mistakes show each of them.
 import { modelCodes } from './model-codes.ts';
 
-export const diagnosticCodes = {
+/** What reading a text finds. */
+export const readingCodes = {
   // The file as text
   'file-empty': 'The file holds nothing.',
   'file-not-text': 'The file is not text in UTF-8.',
@@ -49,8 +50,8 @@ export const diagnosticCodes = {
   'not-a-number': 'An expression has no value.',
   'infinite-number': 'An expression is too large to be a number.',
   'wrong-unit': 'A quantity has a unit that the key does not take.',
-
-  ...modelCodes,
 } as const satisfies Readonly<Record<string, string>>;
+
+export const diagnosticCodes = { ...readingCodes, ...modelCodes } as const;
 
 export type DiagnosticCode = keyof typeof diagnosticCodes;

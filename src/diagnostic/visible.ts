@@ -7,9 +7,9 @@ const wide =
   /[\u1100-\u115F\u2E80-\u303E\u3041-\uA4CF\uAC00-\uD7A3\uF900-\uFAFF\uFE30-\uFE6F\uFF00-\uFF60\uFFE0-\uFFE6\u{1F300}-\u{1FAFF}\u{20000}-\u{3FFFD}]/u;
 const none = /[\p{M}\u200C\u200D]/u;
 
-/** One character as it is shown: a tab as a blank, a hidden one by its number. */
+/** One character as it is shown: a tab as an arrow, a hidden one by its number. */
 export function visibleCharacter(character: string): string {
-  if (character === '\t') return ' ';
+  if (character === '\t') return '→';
   if (!hidden.test(character)) return character;
   return `\\u{${(character.codePointAt(0) ?? 0).toString(16)}}`;
 }

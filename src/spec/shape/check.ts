@@ -66,7 +66,11 @@ function tellMissingKey(key: string, shape: Shape, subject: Subject, report: Rep
   const example = known?.examples?.[0];
   put(
     report,
-    { code: 'missing-key', message: `\`${subject.label}\` needs \`${key}\``, span: subject.span },
+    {
+      code: 'missing-key',
+      message: `${subject.label === '' ? 'The spec' : `\`${subject.label}\``} needs \`${key}\``,
+      span: subject.span,
+    },
     {
       expected: known === undefined ? undefined : expectationOf(known),
       fix: typeof example === 'string' ? `Add a line such as \`${key}: ${example}\`.` : undefined,
@@ -82,7 +86,7 @@ function checkList(list: SourceList, shape: Shape, subject: Subject, report: Rep
   if (number < least || number > most) {
     const message = `\`${subject.label}\` has too ${number < least ? 'few' : 'many'} items`;
     const bound = number < least ? `at least ${String(least)}` : `at most ${String(most)}`;
-    const expected = least === most ? String(least) : bound;
+    const expected = isSeveral(items) ? expectationOf(shape) : bound;
     put(report, { code: 'wrong-length', message, span: subject.span }, { found: String(number), expected });
   }
   for (const [index, item] of list.items.entries()) {

@@ -10,7 +10,7 @@ export interface Report {
   readonly list: Diagnostic[];
 }
 
-/** The value being checked: what it is called in messages, and where it is shown when it has no text of its own. */
+/** The value being checked: its key (empty for the whole spec), and where it is shown when it has no text of its own. */
 export interface Subject {
   readonly label: string;
   readonly span: Span;

@@ -26,7 +26,7 @@ export function checkTop(root: SourceNode, report: Report): SourceMap | undefine
     return undefined;
   }
   const known = root.entries.filter((entry) => isCore(entry.key));
-  checkMap({ ...root, entries: known }, core, { label: 'the spec', span: { ...root.span, length: 1 } }, report);
+  checkMap({ ...root, entries: known }, core, { label: '', span: { ...root.span, length: 1 } }, report);
   const year = phasesOf(root);
   for (const entry of root.entries) {
     if (!isCore(entry.key)) checkOwnSection(entry, year, report);
@@ -81,7 +81,7 @@ function tellUnknownKind(kind: SourceEntry, word: SourceScalar | undefined, repo
     report,
     { code: 'unknown-kind', message: 'There is no such kind', span: word?.span ?? kind.keySpan },
     {
-      found: word?.source,
+      found: word?.source === '' ? undefined : word?.source,
       expected: kindWords(),
       nearest: word === undefined ? undefined : nearestName(word.source, Object.keys(kinds)),
     },

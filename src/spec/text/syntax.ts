@@ -1,6 +1,6 @@
 // What the YAML library finds wrong with the text, in an ecologist's words.
 import type { ErrorCode, YAMLError } from 'yaml';
-import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
+import type { Diagnostic, Place } from '../../diagnostic/diagnostic.ts';
 import { tell } from '../../diagnostic/tell.ts';
 import { placeAt, type SourceText } from './source.ts';
 
@@ -14,19 +14,27 @@ const indent =
 const brackets = 'Close every [ with ] and every { with }, and put a comma between items.';
 const quoting = 'Put quotes around a text that holds a colon, a bracket, a comma or another mark.';
 
+const twoKeys = 'Two keys stand on one line, or the line is indented wrongly';
+const noComma = 'A comma is missing, or a text holds a colon';
+const notAKey = 'This is not a key: a key stands on one line, with a colon and a blank after it';
+
 const words: Readonly<Partial<Record<ErrorCode, Words>>> = {
   BAD_DQ_ESCAPE: { message: 'A backslash in double quotes begins something unknown', fix: 'Use single quotes.' },
   BAD_INDENT: { message: 'The line is indented wrongly', fix: indent },
   BAD_SCALAR_START: { message: 'A text cannot begin with this mark', fix: quoting },
-  BLOCK_AS_IMPLICIT_KEY: {
-    message: 'Two keys stand on one line, or a line is indented wrongly',
-    fix: `${indent} ${quoting}`,
-  },
-  BLOCK_IN_FLOW: { message: 'A list with dashes stands inside brackets', fix: brackets },
+  BLOCK_AS_IMPLICIT_KEY: { message: twoKeys, fix: `${indent} ${quoting}` },
+  BLOCK_IN_FLOW: { message: noComma, fix: `${brackets} ${quoting}` },
   KEY_OVER_1024_CHARS: { message: 'A key is too long', fix: brackets },
   MISSING_CHAR: { message: 'A mark is missing', fix: `${brackets} A key needs a colon and a blank after it.` },
-  MULTILINE_IMPLICIT_KEY: { message: 'A key must stand on one line, with a colon after it', fix: quoting },
-  UNEXPECTED_TOKEN: { message: 'This does not belong here', fix: quoting },
+  MULTILINE_IMPLICIT_KEY: { message: notAKey, fix: 'Write `key: value`.' },
+  UNEXPECTED_TOKEN: { message: 'This does not belong here', fix: `${indent} ${quoting}` },
+};
+
+/** What does not belong somewhere, by its first character. */
+const unexpected: Readonly<Record<string, Words>> = {
+  '}': { message: 'This bracket was never opened', fix: brackets },
+  ']': { message: 'This bracket was never opened', fix: brackets },
+  ',': { message: 'An item is missing before this comma', fix: brackets },
 };
 
 /** Follow from anchors, tags and directives, which are told by themselves. */
@@ -56,13 +64,24 @@ function translate(error: YAMLError, source: SourceText): Diagnostic {
       fix: 'Use blanks to indent, two for each level.',
     });
   }
-  const known = words[error.code];
+  const marked = place.text.charAt(place.column - 1);
+  const mark = error.code === 'UNEXPECTED_TOKEN' ? unexpected[marked] : undefined;
+  const known = mark ?? (afterQuote(error, place) ? quoteEnds : words[error.code]);
   const comment = /\s#/u.test(place.text) ? ' A blank and # begin a comment: put quotes around a name with #.' : '';
   return tell('error', 'yaml-syntax', known?.message ?? 'The text cannot be read as YAML', {
     place,
     found: asked(error.message),
     fix: `${known?.fix ?? quoting}${comment}`,
   });
+}
+
+const quoteEnds: Words = {
+  message: 'The text in quotes ended before this',
+  fix: 'Put double quotes around a text with an apostrophe.',
+};
+
+function afterQuote(error: YAMLError, place: Place): boolean {
+  return error.code === 'UNEXPECTED_TOKEN' && /["']$/u.test(place.text.slice(0, place.column - 1));
 }
 
 /** The library names what is missing or too much in its first words; the rest is for programmers. */

@@ -108,11 +108,36 @@ function judge(token: CST.Token, source: SourceText): Diagnostic | undefined {
         found: token.source,
         fix: 'Leave the line out.',
       });
+    case 'flow-collection':
+      return unclosed(token, source);
+    case 'single-quoted-scalar':
+    case 'double-quoted-scalar':
+      return unclosedQuote(token, source);
     case 'scalar':
       return cutName(token, source);
     default:
       return undefined;
   }
+}
+
+/** The library tells of this only where the text ends or the next section begins. */
+function unclosed(token: CST.FlowCollection, source: SourceText): Diagnostic | undefined {
+  if (token.end.some((mark) => mark.type === 'flow-map-end' || mark.type === 'flow-seq-end')) return undefined;
+  const open = token.start.source;
+  return tell('error', 'yaml-syntax', `This ${open} is not closed`, {
+    place: placeAt(source, { offset: token.offset, length: 1 }),
+    expected: `a ${open === '{' ? '}' : ']'} where it ends`,
+    fix: 'A blank and # begin a comment, which may hide the end: put quotes around a name with #.',
+  });
+}
+
+function unclosedQuote(token: CST.FlowScalar, source: SourceText): Diagnostic | undefined {
+  const quote = token.source.charAt(0);
+  if (token.source.length > 1 && token.source.endsWith(quote)) return undefined;
+  return tell('error', 'yaml-syntax', `This ${quote} is not closed`, {
+    place: placeAt(source, { offset: token.offset, length: 1 }),
+    expected: `another ${quote} where the text ends`,
+  });
 }
 
 /** `North #2` is read as `North`: a blank and # begin a comment. */

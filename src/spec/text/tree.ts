@@ -26,12 +26,18 @@ export function readTree(source: SourceText): Tree {
     [document, ...others].flatMap((one) => one?.errors ?? []),
     source,
   );
-  if (wrong.length > 0) return { diagnostics: [...pass.diagnostics, ...wrong] };
+  if (wrong.length > 0) return { diagnostics: withoutEchoes([...pass.diagnostics, ...wrong]) };
   const extra = others.map((one) => anotherDocument(one, source));
   const diagnostics = [...pass.diagnostics, ...extra];
   const whole = { offset: 0, length: 1 };
   const root = readNode(document?.contents, whole, { source, diagnostics });
   return { root, diagnostics };
+}
+
+/** A bracket that is not closed, or a tab, makes nonsense of what follows: only these are told where there are any. */
+function withoutEchoes(list: readonly Diagnostic[]): readonly Diagnostic[] {
+  const root = list.filter((one) => one.code === 'yaml-tab' || one.message.endsWith('is not closed'));
+  return root.length > 0 ? root : list;
 }
 
 function anotherDocument(document: Document.Parsed, source: SourceText): Diagnostic {

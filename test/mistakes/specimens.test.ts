@@ -1,0 +1,29 @@
+// One wrong spec for each kind of mistake, and exactly what is told of it.
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
+import { expect, test } from 'vitest';
+import { diagnosticCodes, readingCodes } from '../../src/diagnostic/codes.ts';
+import { renderDiagnostics } from '../../src/diagnostic/render.ts';
+import { checkText } from './check-text.ts';
+import { madeTexts } from './made.ts';
+
+const folder = new URL('.', import.meta.url);
+const files = readdirSync(folder).filter((file) => file.endsWith('.yaml'));
+const specimens = [...files.map((file) => file.replace('.yaml', '')), ...Object.keys(madeTexts)].sort();
+
+function textOf(code: string): string {
+  return madeTexts[code] ?? readFileSync(new URL(`${code}.yaml`, folder), 'utf8');
+}
+
+test('every kind of mistake has its specimen, and every specimen its text', () => {
+  const codes = Object.keys(diagnosticCodes);
+  expect(Object.keys(readingCodes).filter((code) => !specimens.includes(code))).toEqual([]);
+  expect(specimens.filter((code) => !codes.includes(code))).toEqual([]);
+  expect(specimens.filter((code) => !existsSync(new URL(`${code}.txt`, folder)))).toEqual([]);
+});
+
+test.each(specimens)('%s', async (code) => {
+  const told = checkText(textOf(code), `${code}.yaml`);
+  expect(told.map((one) => one.code)).toContain(code);
+  const rendered = renderDiagnostics(told, { colour: false, width: 100 });
+  await expect(rendered).toMatchFileSnapshot(`${code}.txt`);
+});
