@@ -37,11 +37,13 @@ function patchOf(target: EventTarget | null): number | null {
 }
 
 function spots(holder: Element): readonly Spot[] {
-  return [...holder.querySelectorAll('[data-patch]')].map((element) => {
-    const circle = element.querySelector('circle');
-    const at = (name: string) => Number(circle?.getAttribute(name) ?? 0);
-    return { patch: Number(element.getAttribute('data-patch')), x: at('cx'), y: at('cy') };
-  });
+  return [...holder.querySelectorAll('[data-patch]')]
+    .map((element) => {
+      const circle = element.querySelector('circle');
+      const at = (name: string) => Number(circle?.getAttribute(name) ?? 0);
+      return { patch: Number(element.getAttribute('data-patch')), x: at('cx'), y: at('cy') };
+    })
+    .sort((a, b) => a.patch - b.patch);
 }
 
 function target(key: string, from: number | null, all: readonly Spot[]): number | null {

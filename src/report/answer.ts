@@ -9,7 +9,7 @@ export interface Answer {
   readonly meaning: string | null;
   readonly fromRuns: string | null;
   readonly fromUnknown: string | null;
-  readonly abundance: string;
+  readonly abundance: string | null;
   readonly call: string;
 }
 
@@ -20,7 +20,7 @@ export function answer(results: RunResults, animals: string): Answer {
   const abundance = abundanceSentence(results, animals);
   if (outcome === undefined) {
     const lead = ['No outcome was named in this model. ', abundance, ''] as const;
-    return { lead, meaning: null, fromRuns: null, fromUnknown: null, abundance, call };
+    return { lead, meaning: null, fromRuns: null, fromUnknown: null, abundance: null, call };
   }
   return {
     lead: leadOf(outcome, results),

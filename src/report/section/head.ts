@@ -26,7 +26,7 @@ export function answerSection(said: Answer, results: RunResults): Markup {
     outcome === undefined
       ? null
       : mark`<figure class="futures" aria-hidden="true">${drawFutures(outcome.ever.probability, `come to ${outcome.name}`)}<figcaption>a hundred futures, those that come to “<bdi>${outcome.name}</bdi>” filled</figcaption></figure>`;
-  return mark`<section id="answer" aria-labelledby="answer-title"><h2 id="answer-title">The answer</h2><div class="answer"><div><p class="lead">${before}<strong>${stress}</strong>${after}</p>${paragraph(said.meaning)}${paragraph(outcome === undefined ? null : said.abundance)}</div>${picture}</div><div class="sure">${paragraph(said.fromRuns)}${paragraph(said.fromUnknown)}${paragraph(said.call)}</div></section>`;
+  return mark`<section id="answer" aria-labelledby="answer-title"><h2 id="answer-title">The answer</h2><div class="answer"><div><p class="lead">${before}<strong>${stress}</strong>${after}</p>${paragraph(said.meaning)}${paragraph(said.abundance)}</div>${picture}</div><div class="sure">${paragraph(said.fromRuns)}${paragraph(said.fromUnknown)}${paragraph(said.call)}</div></section>`;
 }
 
 function paragraph(text: string | null): Markup | null {

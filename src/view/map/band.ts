@@ -12,12 +12,12 @@ const steps = 14;
 const shape = line().digits(1);
 
 /** The outline of a band of this width (pixels) at its origin. It keeps to the right of the straight line. */
-export function bandPath(ends: Ends, width: number): string {
+export function bandPath(ends: Ends, width: number, bent = 0.16): string {
   const [dx, dy] = [ends.to[0] - ends.from[0], ends.to[1] - ends.from[1]];
   const distance = Math.hypot(dx, dy);
   if (distance === 0) return '';
   const [ux, uy] = [dx / distance, dy / distance];
-  const bend = Math.min(34, distance * 0.16);
+  const bend = Math.min(34, distance * bent);
   const middle: Point = [ends.from[0] + dx / 2 - uy * bend, ends.from[1] + dy / 2 + ux * bend];
   const start = towards(ends.from, middle, ends.fromRadius + 1.5);
   const end = towards(ends.to, middle, ends.toRadius + 2.5);

@@ -28,7 +28,8 @@ export function sizeDiscs(
   const reach = Math.min(width * 0.11, room(sizes, points, most));
   const radius = sizes.map((size) => Math.max(smallest, reach * Math.sqrt(size / most)));
   const holds = patches.map((patch) => Math.max(patch.capacity ?? 0, largest(patch.fan.p75), 1));
-  const perDot = roundUp(Math.max(1, ...holds.map((count, p) => (count * 3.6 * 3.6) / pick(radius, p) ** 2 / 0.8)));
+  const crowded = holds.map((count, p) => (16 * count) / pick(radius, p) ** 2);
+  const perDot = roundUp(Math.max(1, ...crowded));
   const slots = holds.map((count) => Math.max(1, Math.ceil(count / perDot)));
   const tightest = Math.min(...slots.map((count, p) => pick(radius, p) / Math.sqrt(count)));
   const dots = reach >= 12 && patches.length <= 80;
@@ -53,16 +54,19 @@ function measure(patches: readonly PatchView[]): { sizes: readonly number[]; siz
   return { sizes: patches.map((patch) => largest(patch.fan.p95)), sizeMeans: 'animals' };
 }
 
-/** The radius of the largest circle at which no two circles touch. */
+/**
+ * The radius of the largest circle at which three in four circles keep clear of their nearest neighbour; were it all of
+ * them, one close pair would shrink the whole map.
+ */
 function room(sizes: readonly number[], points: readonly (readonly [number, number])[], most: number): number {
-  let reach = Infinity;
-  points.forEach((a, i) => {
+  const clear = points.map((a, i) => {
+    let reach = Infinity;
     points.forEach((b, j) => {
-      if (j <= i) return;
-      const apart = Math.hypot(a[0] - b[0], a[1] - b[1]);
       const together = Math.sqrt(pick(sizes, i) / most) + Math.sqrt(pick(sizes, j) / most);
-      if (together > 0) reach = Math.min(reach, (0.84 * apart) / together);
+      if (j !== i && together > 0) reach = Math.min(reach, (0.84 * Math.hypot(a[0] - b[0], a[1] - b[1])) / together);
     });
+    return reach;
   });
-  return Math.max(reach, smallest);
+  clear.sort((a, b) => a - b);
+  return Math.max(clear[Math.floor(clear.length / 4)] ?? Infinity, smallest);
 }

@@ -1,0 +1,87 @@
+// What a run says in a terminal: the answer in words first, then a small table, then the course of abundance.
+import type { Chance, RunResults } from '../results/results.ts';
+import { decimal, percent, plain, whole } from '../view/number.ts';
+import { answer, finished, lastYear } from './answer.ts';
+import { sparkLine } from './spark-line.ts';
+import { bold, columnsOf, dim, printable, room, wrap, type TextStyle } from './terminal.ts';
+
+export interface RunTextStyle extends TextStyle {
+  /** What one individual is called: 'females' or 'animals'. */
+  readonly animals?: string;
+}
+
+export function runText(results: RunResults, style: RunTextStyle): string {
+  const animals = style.animals ?? 'animals';
+  const said = answer(results, animals);
+  const blocks = [
+    bold(printable(results.model), style),
+    ...[said.lead.join(''), said.meaning, said.abundance, said.fromRuns, said.fromUnknown, said.call].map((text) =>
+      text === null ? '' : wrap(text, style),
+    ),
+    outcomeTable(results, style),
+    course(results, animals, style),
+    numbers(results, animals, style),
+    cautionList(results.cautions, style),
+    dim(origin(results), style),
+  ];
+  return joinBlocks(blocks);
+}
+
+/** Spaces that may not break have done their work once lines are broken. */
+export function joinBlocks(blocks: readonly string[]): string {
+  return `${blocks.filter((block) => block !== '').join('\n\n')}\n`.replaceAll('\u00a0', ' ');
+}
+
+function outcomeTable(results: RunResults, style: TextStyle): string {
+  if (results.outcomes.length === 0) return '';
+  const end = lastYear(results);
+  const rows = results.outcomes.flatMap((outcome) => [
+    [`${outcome.name}: having fallen below`, ...chanceCells(outcome.ever)],
+    [`${outcome.name}: being below in ${end}`, ...chanceCells(outcome.atEnd)],
+  ]);
+  const definitions = results.outcomes.slice(1).map((outcome) => wrap(`${outcome.name}: ${outcome.definition}`, style));
+  const table = columnsOf(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
+  return [table, ...(definitions.length > 0 ? ['', ...definitions] : [])].join('\n');
+}
+
+function chanceCells({ probability, interval, intervalFromUnknown }: Chance): readonly string[] {
+  const range = probability === 0 ? `at most ${percent(interval.upper)}` : between(interval);
+  return [percent(probability), range, intervalFromUnknown === null ? 'not given' : between(intervalFromUnknown)];
+}
+
+function between({ lower, upper }: { readonly lower: number; readonly upper: number }): string {
+  return `${percent(lower)} to ${percent(upper)}`;
+}
+
+function course(results: RunResults, animals: string, style: TextStyle): string {
+  const years = results.abundance.whole;
+  const [first, last] = [years[0], years[years.length - 1]];
+  if (first === undefined || last === undefined) return '';
+  const line = sparkLine(
+    years.map((one) => one.quantiles['0.5']),
+    room(style) - 12,
+  );
+  return `the middle of ${plain(finished(results))} futures, ${animals} by year\n${first.year} ${line} ${last.year}`;
+}
+
+function numbers(results: RunResults, animals: string, style: TextStyle): string {
+  const { mean, standardError } = results.meanLowestCount;
+  const lowest = `mean lowest count: ${whole(mean)} ${animals}, give or take ${whole(1.96 * standardError)} from the number of runs`;
+  const end = results.patchesInUse[results.patchesInUse.length - 1];
+  const inUse = end === undefined ? '' : `patches in use in ${end.year}: ${decimal(end.mean)} in the mean`;
+  const { runs, reasons } = results.stopped;
+  const stopped =
+    runs === 0 ? '' : `${plain(runs)} runs had to be stopped and are in no number here: ${reasons.join('; ')}`;
+  return [lowest, inUse, stopped]
+    .filter((text) => text !== '')
+    .map((text) => wrap(text, style))
+    .join('\n');
+}
+
+export function cautionList(cautions: readonly string[], style: TextStyle): string {
+  return cautions.map((text) => `- ${wrap(text, style, '  ').trimStart()}`).join('\n');
+}
+
+function origin(results: RunResults): string {
+  return `seed ${results.seed}, hash ${results.hash.slice(0, 16)}, skein ${results.tool.version}`;
+}
