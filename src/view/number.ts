@@ -34,6 +34,7 @@ export function percent(chance: number): string {
   const value = chance * 100;
   const edge = Math.min(value, 100 - value);
   if (edge === 0) return `${value}\u00a0%`;
+  if (edge < 0.005) return value < 50 ? 'under 0.01\u00a0%' : 'over 99.99\u00a0%';
   return `${value.toFixed(edge < 1 ? 2 : 1)}\u00a0%`;
 }
 
