@@ -2,8 +2,8 @@
 import type { PathResults } from '../results/results.ts';
 import { whole } from '../view/number.ts';
 import { sparkLine } from './spark-line.ts';
-import { bold, columnsOf, dim, printable, room, wrap } from './terminal.ts';
-import { cautionList, joinBlocks, type RunTextStyle } from './text.ts';
+import { bold, columnsOf, dim, joinBlocks, printable, room, wrap } from './terminal.ts';
+import { cautionList, type RunTextStyle } from './text.ts';
 
 export function pathText(results: PathResults, style: RunTextStyle): string {
   const animals = style.animals ?? 'animals';

@@ -46,6 +46,11 @@ export function columnsOf(head: readonly string[], rows: readonly (readonly stri
     .join('\n');
 }
 
+/** Spaces that may not break have done their work once lines are broken. */
+export function joinBlocks(blocks: readonly string[]): string {
+  return `${blocks.filter((block) => block !== '').join('\n\n')}\n`.replaceAll('\u00a0', ' ');
+}
+
 /** Terminals that say nothing of their width, or zero, get 80. */
 export function room({ width }: TextStyle): number {
   return width >= 20 ? Math.min(width, 100) : 80;

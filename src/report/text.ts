@@ -3,7 +3,7 @@ import type { Chance, RunResults } from '../results/results.ts';
 import { decimal, percent, plain, whole } from '../view/number.ts';
 import { answer, finished, lastYear } from './answer.ts';
 import { sparkLine } from './spark-line.ts';
-import { bold, columnsOf, dim, printable, room, wrap, type TextStyle } from './terminal.ts';
+import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
 export interface RunTextStyle extends TextStyle {
   /** What one individual is called: 'females' or 'animals'. */
@@ -25,11 +25,6 @@ export function runText(results: RunResults, style: RunTextStyle): string {
     dim(origin(results), style),
   ];
   return joinBlocks(blocks);
-}
-
-/** Spaces that may not break have done their work once lines are broken. */
-export function joinBlocks(blocks: readonly string[]): string {
-  return `${blocks.filter((block) => block !== '').join('\n\n')}\n`.replaceAll('\u00a0', ' ');
 }
 
 function outcomeTable(results: RunResults, style: TextStyle): string {

@@ -14,9 +14,9 @@ export function plain(count: number): string {
   return grouped(count);
 }
 
-/** One decimal for means of small numbers of things, such as patches in use. */
-export function decimal(value: number): string {
-  return format(',.1f')(value);
+/** One decimal, unless more are asked for, for means of small numbers of things, such as patches in use. */
+export function decimal(value: number, digits = 1): string {
+  return format(`,.${digits}f`)(value);
 }
 
 /** A chance as 'about 12' of 100, never rounding something to nothing or to all. */
