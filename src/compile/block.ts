@@ -1,10 +1,9 @@
 // The block projection matrix: the product of the phase maps in the order of the year, the last phase leftmost
 // (for demography and dispersal this is the vec-permutation model of Hunter & Caswell 2005).
-import type { SparseMatrix } from '../numeric/sparse.ts';
-import { principalPart, product } from '../numeric/sparse-product.ts';
+import { principalPart } from '../numeric/sparse-product.ts';
 import type { AtState, BlockMatrix } from './block-matrix.ts';
 import { presentClasses } from './present-classes.ts';
-import { runYear, type Compiled } from './year-map.ts';
+import { productOf, runYear, type Compiled } from './year-map.ts';
 
 /** At nobody (`zero`), or at given P·C animals at the count. */
 export function buildBlock(compiled: Compiled, at: AtState, state?: Float64Array): BlockMatrix {
@@ -28,11 +27,4 @@ export function keptStates({ model }: Compiled): readonly number[] {
   const present = presentClasses(model);
   const n = model.classes.length;
   return model.patches.flatMap((_, p) => model.classes.flatMap((_, c) => (present[c] === 1 ? [p * n + c] : [])));
-}
-
-/** maps[last] · … · maps[0]. */
-export function productOf(maps: readonly SparseMatrix[]): SparseMatrix {
-  const [first, ...others] = maps;
-  if (first === undefined) throw new RangeError('A year has at least one phase.');
-  return others.reduce((year, map) => product(map, year), first);
 }

@@ -3,7 +3,7 @@ import { pinned } from '../machine/pinned.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { Model } from '../model/model.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
-import { multiply } from '../numeric/sparse-product.ts';
+import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
@@ -69,4 +69,27 @@ export function multiplierAt(own: CrowdingCoefficients, p: number, count: number
     case 'ceiling':
       return allee * (count > coefficient ? coefficient / count : 1);
   }
+}
+
+/** The year of the first step as a function over all P·C animals. */
+export interface WholeYear {
+  readonly states: number;
+  readonly apply: (animals: Float64Array) => Float64Array;
+  readonly matrixAt: (animals: Float64Array) => SparseMatrix;
+}
+
+export function wholeYear(compiled: Compiled): WholeYear {
+  const { patches, classes } = compiled.model;
+  return {
+    states: patches.length * classes.length,
+    apply: (animals) => runYear(compiled, animals).after,
+    matrixAt: (animals) => productOf(runYear(compiled, animals).maps),
+  };
+}
+
+/** maps[last] · … · maps[0]. */
+export function productOf(maps: readonly SparseMatrix[]): SparseMatrix {
+  const [first, ...others] = maps;
+  if (first === undefined) throw new RangeError('A year has at least one phase.');
+  return others.reduce((year, map) => product(map, year), first);
 }

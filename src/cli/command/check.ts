@@ -1,0 +1,51 @@
+// skein check: all mistakes, every default, and what was understood.
+import { dispersalReach, standingOf } from '../../analysis/standing.ts';
+import { buildBlock } from '../../compile/block.ts';
+import { leading } from '../../numeric/leading.ts';
+import type { CompiledModel } from '../../pipeline.ts';
+import { checkText, type Understood } from '../../report/check-text.ts';
+import { Ending, exitCodes } from '../exit.ts';
+import { errorCount, readModel, tellDiagnostics, type Loaded } from '../load.ts';
+import { settingsOf, type CommonOptions } from '../options.ts';
+import { writeOut } from '../output.ts';
+import { terminalOf } from '../terminal.ts';
+
+export function checkModel(path: string, options: CommonOptions & { readonly strict?: boolean }): void {
+  const loaded = readModel(path, settingsOf(options));
+  const understood = loaded.compiled === null ? null : understand(loaded.compiled);
+  if (options.json === true) writeOut(`${JSON.stringify(checkJson(loaded, understood), null, 2)}\n`);
+  else {
+    tellDiagnostics(loaded.diagnostics);
+    if (understood !== null) writeOut(`${checkText(understood, terminalOf(process.stdout)).trimEnd()}\n`);
+  }
+  if (loaded.compiled === null) throw new Ending(exitCodes.model, errorCount(loaded.diagnostics));
+  const warnings = loaded.diagnostics.filter((one) => one.severity === 'warning').length;
+  if (options.strict === true && warnings > 0) {
+    throw new Ending(
+      exitCodes.model,
+      `${warnings === 1 ? '1 warning' : `${warnings} warnings`}, and --strict lets warnings fail.`,
+    );
+  }
+}
+
+function understand(compiled: CompiledModel): Understood {
+  const { model, startAnimals } = compiled;
+  return {
+    model,
+    startAnimals: startAnimals.reduce((sum, value) => sum + value, 0),
+    standing: standingOf(compiled, startAnimals),
+    reach: dispersalReach(compiled, startAnimals),
+    growthRate: leading(buildBlock(compiled, 'zero').matrix).growthRate,
+  };
+}
+
+function checkJson({ diagnostics }: Loaded, understood: Understood | null): unknown {
+  return {
+    format: 'skein-check/1',
+    diagnostics,
+    defaults: understood?.model.defaults ?? null,
+    growthRate: understood?.growthRate ?? null,
+    patches: understood?.standing ?? null,
+    dispersal: understood?.reach ?? null,
+  };
+}

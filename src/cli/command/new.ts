@@ -1,0 +1,38 @@
+// skein new: a small working model to start from.
+import { existsSync, readFileSync, readdirSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { Ending, exitCodes } from '../exit.ts';
+import { makeFolder, openPending, writeError, writeOut } from '../output.ts';
+
+const starter = 'two-ponds';
+
+export function newModel(folder: string, { example }: { readonly example?: string }): void {
+  if (example === 'list') {
+    writeOut(`${exampleNames().join('\n')}\n`);
+    return;
+  }
+  const name = example ?? starter;
+  if (!exampleNames().includes(name)) {
+    throw new Ending(exitCodes.usage, `There is no example \`${name}\`. There are: ${exampleNames().join(', ')}.`);
+  }
+  const target = join(folder, 'model.yaml');
+  if (existsSync(target)) throw new Ending(exitCodes.work, `${target} exists already; nothing was written.`);
+  const text = readFileSync(join(examplesFolder(), `${name}.yaml`), 'utf8');
+  makeFolder(folder);
+  openPending(target).finish(text);
+  writeError(`Wrote ${target}\nNext: skein check ${target}\n`);
+}
+
+function exampleNames(): readonly string[] {
+  return readdirSync(examplesFolder())
+    .filter((file) => file.endsWith('.yaml'))
+    .map((file) => file.slice(0, -'.yaml'.length))
+    .sort();
+}
+
+/** Beside the built command as well as beside the sources. */
+function examplesFolder(): string {
+  const places = ['../../models/', '../../../models/'].map((path) => fileURLToPath(new URL(path, import.meta.url)));
+  return places.find((place) => existsSync(place)) ?? '';
+}

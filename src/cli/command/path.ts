@@ -1,0 +1,18 @@
+// skein path: the path without chance.
+import { followPath } from '../../pipeline.ts';
+import { pathText } from '../../report/path-text.ts';
+import { loadModel } from '../load.ts';
+import { settingsOf, type CommonOptions } from '../options.ts';
+import { openOutFolder } from '../out-folder.ts';
+import { writeOut } from '../output.ts';
+import { pathTables } from '../tables.ts';
+import { terminalOf } from '../terminal.ts';
+
+export function pathCommand(path: string, options: CommonOptions): void {
+  const { compiled } = loadModel(path, settingsOf(options), options.quiet === true);
+  const folder = options.out === undefined ? null : openOutFolder(options.out);
+  const results = followPath(compiled);
+  folder?.write(compiled, { results, tables: pathTables(results) });
+  if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
+  else writeOut(`${pathText(results, terminalOf(process.stdout)).trimEnd()}\n`);
+}

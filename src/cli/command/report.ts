@@ -1,0 +1,49 @@
+// skein report: one page that an agency can read.
+import { pageScript } from '../../../build/page-script.ts';
+import { followPath, runModel } from '../../pipeline.ts';
+import { buildReport } from '../../report/report.ts';
+import { loadModel } from '../load.ts';
+import { settingsOf, type CommonOptions } from '../options.ts';
+import { openPending, writeError, writeOut } from '../output.ts';
+import { showProgress } from '../progress.ts';
+
+export function reportCommand(path: string, options: CommonOptions & { readonly output: string }): void {
+  const { compiled, document } = loadModel(path, settingsOf(options), options.quiet === true);
+  const file = options.output === '-' ? null : openPending(options.output);
+  try {
+    const progress = showProgress('Replicates', options.quiet === true);
+    const results = runModel(compiled, { onProgress: progress.update });
+    progress.finish();
+    const page = buildReport({
+      results,
+      path: followPath(compiled),
+      model: compiled.model,
+      landscape: compiled.landscape,
+      coefficients: compiled.coefficients,
+      specText: document.text,
+      commandLine: commandLineOf(path, options),
+      pageScript,
+    });
+    if (file === null) writeOut(page);
+    else file.finish(page);
+  } catch (error) {
+    file?.abandon();
+    throw error;
+  }
+  if (file !== null && options.quiet !== true) writeError(`Wrote ${options.output}\n`);
+}
+
+/** As it can be typed again. */
+function commandLineOf(path: string, options: CommonOptions & { readonly output: string }): string {
+  const { years, replicates, seed, set, output } = options;
+  const words = ['skein', 'report', path];
+  for (const { name, value } of set ?? []) words.push('--set', `${name}=${value}`);
+  if (years !== undefined) words.push('--years', String(years));
+  if (replicates !== undefined) words.push('--replicates', String(replicates));
+  if (seed !== undefined) words.push('--seed', String(seed));
+  return [...words, '-o', output].map(quoted).join(' ');
+}
+
+function quoted(word: string): string {
+  return /^[\w./=:,+-]+$/.test(word) ? word : `'${word.replaceAll("'", `'\\''`)}'`;
+}

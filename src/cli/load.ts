@@ -1,0 +1,90 @@
+// From the name of a model file to a compiled model; what is wrong with it goes to standard error.
+import { readFileSync, statSync } from 'node:fs';
+import type { Diagnostic } from '../diagnostic/diagnostic.ts';
+import { renderDiagnostics } from '../diagnostic/render.ts';
+import { inFileOrder } from '../diagnostic/tell.ts';
+import { compileSpec, type CompiledModel } from '../pipeline.ts';
+import type { SpecDocument } from '../spec/document.ts';
+import { locateFinding } from '../spec/finding.ts';
+import { readSpec } from '../spec/read.ts';
+import { applySettings, type Settings } from '../spec/settings.ts';
+import { Ending, exitCodes } from './exit.ts';
+import { reasonOf, writeError } from './output.ts';
+import { terminalOf } from './terminal.ts';
+
+/** Larger files are not specs; data belong into files of their own. */
+const largestSpecBytes = 8 * 1024 * 1024;
+
+export interface Loaded {
+  readonly document: SpecDocument;
+  /** Null where there is an error. */
+  readonly compiled: CompiledModel | null;
+  readonly diagnostics: readonly Diagnostic[];
+}
+
+/** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
+export function loadModel(path: string, settings: Settings, quiet: boolean): Loaded & { compiled: CompiledModel } {
+  const loaded = readModel(path, settings);
+  const { compiled } = loaded;
+  const told = loaded.diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && !quiet));
+  tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
+  if (compiled === null) throw new Ending(exitCodes.model, errorCount(told));
+  return { ...loaded, compiled };
+}
+
+export function readModel(path: string, settings: Settings): Loaded {
+  const name = path === '-' ? 'standard input' : path;
+  const { document, diagnostics } = readSpec(readText(path), name);
+  if (document === undefined) {
+    tellDiagnostics(diagnostics);
+    throw new Ending(exitCodes.model, errorCount(diagnostics));
+  }
+  const applied = applySettings(document.spec, settings);
+  if (!applied.ok) {
+    const { name: unknown, nearest } = applied.unknown;
+    const hint = nearest === undefined ? '' : ` Did you mean \`${nearest}\`?`;
+    throw new Ending(exitCodes.usage, `--set ${unknown}: the model has no parameter \`${unknown}\`.${hint}`);
+  }
+  const { compiled, findings } = compileSpec(applied.spec);
+  const located = findings.map((finding) => locateFinding(document, finding));
+  return { document, compiled, diagnostics: inFileOrder([...diagnostics, ...located]) };
+}
+
+export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {
+  if (diagnostics.length > 0) writeError(`${renderDiagnostics(diagnostics, terminalOf(process.stderr)).trimEnd()}\n`);
+}
+
+export function errorCount(diagnostics: readonly Diagnostic[]): string {
+  const errors = diagnostics.filter((one) => one.severity === 'error').length;
+  return errors === 1 ? '1 error.' : `${errors} errors.`;
+}
+
+function readText(path: string): string {
+  const bytes = readBytes(path);
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+  } catch {
+    throw new Ending(exitCodes.model, `Cannot read ${path}: it is not text in UTF-8.`);
+  }
+}
+
+function readBytes(path: string): Uint8Array {
+  const size = path === '-' ? 0 : sizeOf(path);
+  if (size > largestSpecBytes) {
+    const megabytes = Math.round(size / 1024 / 1024);
+    throw new Ending(exitCodes.model, `Cannot read ${path}: ${megabytes} MB is too large for a model (at most 8 MB).`);
+  }
+  try {
+    return readFileSync(path === '-' ? 0 : path);
+  } catch (error) {
+    throw new Ending(exitCodes.model, `Cannot read ${path}: ${reasonOf(error)}.`);
+  }
+}
+
+function sizeOf(path: string): number {
+  const found = statSync(path, { throwIfNoEntry: false });
+  if (found === undefined) throw new Ending(exitCodes.model, `Cannot read ${path}: there is no such file or folder.`);
+  if (found.isDirectory())
+    throw new Ending(exitCodes.model, `Cannot read ${path}: it is a folder; name the model file in it.`);
+  return found.size;
+}

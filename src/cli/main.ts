@@ -1,0 +1,103 @@
+// The command line: which commands there are. Each is loaded only when it is called.
+import { Command, CommanderError } from 'commander';
+import { toolVersion } from '../results/provenance.ts';
+import { Ending, exitCodes } from './exit.ts';
+import { addOptions, type CommonOptions } from './options.ts';
+import { writeError, writeOut } from './output.ts';
+
+type Handler<Options> = (model: string, options: Options) => void;
+
+function buildProgram(): Command {
+  const program = new Command('skein')
+    .description('Animals in several habitat patches linked by dispersal: sources and sinks, risks, maps and reports.')
+    .version(toolVersion, '--version', 'print the version')
+    .helpOption('--help', 'show this help')
+    .helpCommand(false)
+    .exitOverride()
+    .configureOutput({ writeOut, writeErr: writeError })
+    .showHelpAfterError('(--help shows what it takes)');
+  program
+    .command('new')
+    .argument('<folder>', 'a folder to make, or an empty one')
+    .description('write a small working model to start from')
+    .option('--example <name>', 'start from one of the examples instead (`--example list` names them)')
+    .addHelpText('after', '\nExample:\n  skein new my-study')
+    .action(async (folder: string, options: { readonly example?: string }) => {
+      (await import('./command/new.ts')).newModel(folder, options);
+    });
+  model(program, 'check', 'tell all mistakes, every default used, and what was understood', ['set', 'years', 'json'])
+    .option('--strict', 'let warnings fail')
+    .addHelpText('after', '\nExample:\n  skein check models/reed-hare.yaml')
+    .action(async (path: string, options: CommonOptions & { readonly strict?: boolean }) => {
+      (await import('./command/check.ts')).checkModel(path, options);
+    });
+  addShow(program);
+  addRuns(program);
+  return program;
+}
+
+function addShow(program: Command): void {
+  addOptions(program.command('show'), ['set', 'years', 'json'])
+    .argument('<model>', 'a model file, or - for standard input')
+    .argument('<stage>', 'spec, model, landscape, matrix or packed')
+    .description('print what a stage of the work makes of a model')
+    .addHelpText('after', '\nExample:\n  skein show models/reed-hare.yaml matrix')
+    .action(async (path: string, stage: string, options: CommonOptions) => {
+      (await import('./command/show.ts')).showStage(path, stage, options);
+    });
+}
+
+function addRuns(program: Command): void {
+  model(program, 'path', 'follow the path without chance, year by year', ['set', 'years', 'json', 'out', 'quiet'])
+    .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
+    .action(run(async () => (await import('./command/path.ts')).pathCommand));
+  const chance = ['set', 'years', 'replicates', 'seed'] as const;
+  model(program, 'run', 'run the model many times with chance', [...chance, 'json', 'out', 'quiet'])
+    .addHelpText('after', '\nExample:\n  skein run models/reed-hare.yaml --replicates 500 --seed 7')
+    .action(run(async () => (await import('./command/run.ts')).runCommand));
+  model(program, 'report', 'run the model and write one page that an agency can read', [...chance, 'quiet'])
+    .requiredOption('-o, --output <file>', 'the HTML file to write (- for standard output)')
+    .addHelpText('after', '\nExample:\n  skein report models/reed-hare.yaml -o reed-hare.html')
+    .action(run(async () => (await import('./command/report.ts')).reportCommand));
+}
+
+function model(program: Command, name: string, what: string, shared: Parameters<typeof addOptions>[1]): Command {
+  return addOptions(program.command(name), shared)
+    .argument('<model>', 'a model file, or - for standard input')
+    .description(what);
+}
+
+function run<Options>(load: () => Promise<Handler<Options>>) {
+  return async (path: string, options: Options): Promise<void> => {
+    (await load())(path, options);
+  };
+}
+
+/** Text for a report of a bug, without anything of the model. */
+function tellBug(error: unknown): void {
+  const what = error instanceof Error ? (error.stack ?? error.message) : String(error);
+  writeError(
+    `This is a bug in skein ${toolVersion}, not a mistake of yours. Please report it with the lines below\n` +
+      `and, if you can, the model.\n\n${what}\nNode ${process.version}, ${process.platform} ${process.arch}\n`,
+  );
+}
+
+function endingOf(error: unknown): number {
+  if (error instanceof CommanderError) return error.exitCode === 0 ? exitCodes.done : exitCodes.usage;
+  if (error instanceof Ending) {
+    writeError(`${error.message}\n`);
+    return error.exitCode;
+  }
+  tellBug(error);
+  return exitCodes.bug;
+}
+
+try {
+  await buildProgram().parseAsync();
+} catch (error) {
+  try {
+    process.exitCode = endingOf(error);
+  } catch {
+    process.exitCode = exitCodes.work;
+  }
+}

@@ -1,0 +1,53 @@
+// Options that several commands share, read from the words of the command line.
+import { InvalidArgumentError, Option, type Command } from 'commander';
+import type { Settings } from '../spec/settings.ts';
+
+export interface CommonOptions {
+  readonly set?: Settings['set'];
+  readonly years?: number;
+  readonly replicates?: number;
+  readonly seed?: number;
+  readonly json?: boolean;
+  readonly out?: string;
+  readonly quiet?: boolean;
+}
+
+type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'json' | 'out' | 'quiet';
+
+const options: Readonly<Record<Shared, () => Option>> = {
+  set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
+  years: () => new Option('--years <n>', 'years to look ahead').argParser(wholeFrom(1, 100_000)),
+  replicates: () => new Option('--replicates <n>', 'how often to run the model').argParser(wholeFrom(1, 100_000_000)),
+  seed: () =>
+    new Option('--seed <n>', 'the number that decides all chance').argParser(wholeFrom(0, Number.MAX_SAFE_INTEGER)),
+  json: () => new Option('--json', 'print one JSON object instead of text'),
+  out: () => new Option('--out <folder>', 'write tables and what is needed to run again'),
+  quiet: () => new Option('--quiet', 'no warnings and no progress'),
+};
+
+export function addOptions(command: Command, wanted: readonly Shared[]): Command {
+  return wanted.reduce((one, name) => one.addOption(options[name]()), command);
+}
+
+export function settingsOf({ set, years, replicates, seed }: CommonOptions): Settings {
+  return {
+    ...(set === undefined ? {} : { set }),
+    ...(years === undefined ? {} : { years }),
+    ...(replicates === undefined ? {} : { replicates }),
+    ...(seed === undefined ? {} : { seed }),
+  };
+}
+
+function readSet(text: string, before: Settings['set']): NonNullable<Settings['set']> {
+  const sign = text.indexOf('=');
+  if (sign < 1 || sign === text.length - 1) throw new InvalidArgumentError('Write it as name=value.');
+  return [...(before ?? []), { name: text.slice(0, sign).trim(), value: text.slice(sign + 1).trim() }];
+}
+
+function wholeFrom(lowest: number, highest: number): (text: string) => number {
+  return (text) => {
+    const value = /^\d+$/.test(text) ? Number(text) : NaN;
+    if (value >= lowest && value <= highest) return value;
+    throw new InvalidArgumentError(`It takes a whole number from ${lowest} to ${highest}.`);
+  };
+}

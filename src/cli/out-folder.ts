@@ -1,0 +1,33 @@
+// What `--out` writes: results, tidy tables with a dictionary, and what is needed to run again.
+import { join } from 'node:path';
+import type { CompiledModel } from '../pipeline.ts';
+import type { PathResults, RunResults } from '../results/results.ts';
+import { makeFolder, openPending } from './output.ts';
+import { csvText, dictionaryText, type Table } from './tables.ts';
+
+export interface OutContent {
+  readonly results: RunResults | PathResults;
+  readonly tables: readonly Table[];
+}
+
+export interface OutFolder {
+  write(compiled: CompiledModel, content: OutContent): void;
+}
+
+/** Made, and tried for writing, before the work begins. */
+export function openOutFolder(folder: string): OutFolder {
+  makeFolder(folder);
+  const trial = openPending(join(folder, 'results.json'));
+  trial.abandon();
+  return {
+    write: ({ spec, provenance }, { results, tables }) => {
+      const put = (name: string, text: string): void => {
+        openPending(join(folder, name)).finish(text);
+      };
+      for (const table of tables) put(`${table.name}.csv`, csvText(table));
+      put('dictionary.csv', dictionaryText(tables));
+      put('run.json', `${JSON.stringify({ format: 'skein-inputs/1', ...provenance, spec }, null, 2)}\n`);
+      put('results.json', `${JSON.stringify(results, null, 2)}\n`);
+    },
+  };
+}

@@ -1,0 +1,122 @@
+// What `skein check` says of a model that has no errors: what was understood, every default, and where patches stand still.
+import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
+import { pinned } from '../machine/pinned.ts';
+import type { DispersalPhase, Model, Phase } from '../model/model.ts';
+import { percent } from '../view/number.ts';
+import { fixed } from './rounded.ts';
+import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
+import { joinBlocks } from './text.ts';
+
+export interface Understood {
+  readonly model: Model;
+  readonly startAnimals: number;
+  readonly standing: readonly PatchStanding[];
+  readonly reach: readonly DispersalReach[];
+  /** Growth of the linked system near zero. */
+  readonly growthRate: number;
+}
+
+export function checkText(understood: Understood, style: TextStyle): string {
+  const { model } = understood;
+  return joinBlocks([
+    bold(printable(model.title), style),
+    wrap(sizeWords(understood), style),
+    section(
+      'The year, from count to count',
+      model.phases.map((phase) => phaseWords(model, phase)),
+      style,
+    ),
+    section(
+      'Dispersal',
+      model.phases.flatMap((phase) => dispersalWords(understood, phase)),
+      style,
+    ),
+    standingTable(understood, style),
+    section(
+      'Outcomes',
+      model.outcomes.map(({ name, definition }) => `${name}: ${definition}`),
+      style,
+    ),
+    section('Defaults that were used', model.defaults, style),
+  ]);
+}
+
+function section(title: string, lines: readonly string[], style: TextStyle): string {
+  if (lines.length === 0) return '';
+  return [bold(title, style), ...lines.map((line) => wrap(line, style, '  '))].join('\n');
+}
+
+function sizeWords({ model, startAnimals, growthRate }: Understood): string {
+  const patches = model.patches.length === 1 ? '1 patch' : `${model.patches.length} patches`;
+  const classes = model.classes.length === 1 ? '1 class' : `${model.classes.length} classes`;
+  const counts = model.counts === 'females' ? 'females' : 'animals of both sexes';
+  const change = fixed((growthRate - 1) * 100, 2);
+  return (
+    `${patches}, ${classes} (${model.classes.join(', ')}), ${model.steps} years from ${model.firstYear}; ` +
+    `${startAnimals} ${counts} at the start. Near zero the whole changes by ${change} % a year (growth rate ${fixed(growthRate, 4)}).`
+  );
+}
+
+function phaseWords(model: Model, phase: Phase): string {
+  switch (phase.kind) {
+    case 'count':
+      return 'count: abundance is read, thresholds apply';
+    case 'survival':
+      return 'survival: each animal lives on or dies';
+    case 'breeding':
+      return `breeding: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}`;
+    case 'ageing': {
+      const last = model.classes.at(-1) ?? '';
+      return `ageing: each goes on to the next class; ${last} ${model.oldest === 'terminal' ? 'leaves the model' : 'stays'}`;
+    }
+    case 'demography':
+      return 'demography: fates and births of a whole year at once';
+    case 'dispersal': {
+      const movers = model.classes.filter((_, c) => phase.moves[c] === 1).join(', ');
+      return `${phase.name}: ${movers} may leave for other patches`;
+    }
+    case 'ceiling': {
+      const counted = model.classes.filter((_, c) => phase.counted[c] === 1).join(', ');
+      return `${phase.name}: where there are more ${counted} than the capacity, the surplus is removed at random`;
+    }
+  }
+}
+
+function dispersalWords({ reach }: Understood, phase: Phase): readonly string[] {
+  if (phase.kind !== 'dispersal') return [];
+  const own = reach.find((one) => one.phase === phase.name);
+  const realised =
+    own?.realisedMeanKm === undefined || own.realisedMeanKm === null
+      ? ''
+      : ` Between these patches, arrivals have come ${fixed(own.realisedMeanKm, 2)} km on average.`;
+  const lost = own === undefined ? '' : ` Of the leavers ${percent(own.lost)} are lost.`;
+  return [`${phase.name}: ${ruleWords(phase)}${realised}${lost}`];
+}
+
+/** The weight of the kernel at half, once and twice its mean distance, and how many go beyond. */
+function ruleWords({ rule }: DispersalPhase): string {
+  if (rule.by === 'shares') return 'a table of shares.';
+  const { scaleKm, reachKm } = rule.kernel;
+  const at = [scaleKm, 2 * scaleKm, 4 * scaleKm].map((km) => {
+    const beyond = (1 + km / scaleKm) * pinned.exp(-km / scaleKm);
+    return `${fixed(km, 2)} km (weight ${fixed(pinned.exp(-km / scaleKm), 3)}; ${percent(beyond)} of moves are longer)`;
+  });
+  const end = reachKm === null ? 'no limit' : `nobody goes beyond ${fixed(reachKm, 2)} km`;
+  const leavers = rule.leavers === 'all arrive' ? 'all leavers arrive somewhere' : 'leavers may miss every patch';
+  return `exponential kernel, mean ${fixed(2 * scaleKm, 2)} km in the plane; at ${at.join(', ')}; ${end}; ${leavers}.`;
+}
+
+function standingTable({ model, standing }: Understood, style: TextStyle): string {
+  const order = [...model.patches.keys()].sort(
+    (a, b) => (model.patches[a]?.fileOrder ?? 0) - (model.patches[b]?.fileOrder ?? 0),
+  );
+  const number = (value: number | null): string => (value === null ? '-' : fixed(value, 1));
+  const rows = order.flatMap((p) => {
+    const one = standing[p];
+    return one === undefined ? [] : [[one.patch, fixed(one.growthAlone, 4), number(one.alone), number(one.linked)]];
+  });
+  const head = ['patch', 'growth alone', 'stands still alone at', 'linked at'];
+  const table = columnsOf(head, rows.slice(0, 60), style);
+  const more = rows.length > 60 ? `\n  and ${rows.length - 60} more patches` : '';
+  return `${bold('Patches (all classes, at the count, without chance)', style)}\n${table}${more}`;
+}
