@@ -1,7 +1,7 @@
 // Sixteen replicates side by side: where their animals and everything they need during a step stand in memory.
 // An array [..][lane] has the sixteen lanes of one number next to each other.
 import { i32At, putU32 } from './arrays';
-import { classes, columns, entries, header, patches, section, slots } from './image';
+import { classes, columns, entries, header, patches, section, slots, ways } from './image';
 import { faultNone, headerStart, lanes } from './layout';
 import { reserve } from './memory';
 
@@ -13,6 +13,8 @@ export let arrivals: usize = 0;
 export let slotValues: usize = 0;
 /** f64 [column][lane]: what was counted last */
 export let observed: usize = 0;
+/** f64 [way]: animals that arrived over each way, all classes and lanes together, since `start` */
+export let moved: usize = 0;
 /** u32 [lane] */
 export let replicates: usize = 0;
 /** i32 [lane][3]: fault code, index of the phase, step */
@@ -45,6 +47,7 @@ export function reserveBatch(): bool {
   arrivals = reserve(stateBytes());
   slotValues = reserve(<usize>slots * patches * laneNumbers);
   observed = reserve(<usize>columns * laneNumbers);
+  moved = reserve((<usize>ways) << 3);
   const small = reserve(1024);
   replicates = small;
   stops = small + 64;
@@ -54,7 +57,7 @@ export function reserveBatch(): bool {
   moreNumbers = small + 768;
   counts = small + 896;
   moreCounts = small + 960;
-  return animals !== 0 && arrivals !== 0 && slotValues !== 0 && observed !== 0 && small !== 0;
+  return animals !== 0 && arrivals !== 0 && slotValues !== 0 && observed !== 0 && moved !== 0 && small !== 0;
 }
 
 /** Puts the starting animals into the first `count` lanes and none into the others. */
@@ -66,6 +69,7 @@ export function fillBatch(count: i32): void {
     for (let lane = 0; lane < lanes; lane++) putU32(at, lane, lane < count ? n : 0);
   }
   memory.fill(stops, 0, 192);
+  memory.fill(moved, 0, (<usize>ways) << 3);
   memory.fill(slotValues, 0, <usize>slots * patches * laneNumbers);
   anyStopped = false;
 }

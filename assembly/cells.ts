@@ -29,6 +29,21 @@ export function subtractCell(target: usize, source: usize): void {
   }
 }
 
+/** target += source, for f64 [lane]. */
+export function addNumbers(target: usize, source: usize): void {
+  for (let i: usize = 0; i < laneNumbers; i += 16) {
+    v128.store(target + i, f64x2.add(v128.load(target + i), v128.load(source + i)));
+  }
+}
+
+/** target[lane] ×= animals of a cell. */
+export function multiplyByCell(target: usize, cell: usize): void {
+  for (let i: usize = 0; i < cellBytes; i += 8) {
+    const at = target + (i << 1);
+    v128.store(at, f64x2.mul(v128.load(at), f64x2.convert_low_i32x4_u(v128.load64_zero(cell + i))));
+  }
+}
+
 /** Number of slots that scale a class. */
 export function slotCount(lists: usize, c: i32): i32 {
   return lists === 0 ? 0 : i32At(lists, c + 1) - i32At(lists, c);

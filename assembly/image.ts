@@ -7,6 +7,7 @@ export let classes: i32 = 0;
 export let steps: i32 = 0;
 export let slots: i32 = 0;
 export let columns: i32 = 0;
+export let ways: i32 = 0;
 export let patchKeys: usize = 0;
 export let classKeys: usize = 0;
 /** What a fault is about: a kind, an opcode, a version. */
@@ -24,6 +25,7 @@ export function openImage(address: usize, size: i32): i32 {
   steps = header(layout.headerSteps);
   slots = header(layout.headerSlots);
   columns = header(layout.headerColumns);
+  ways = header(layout.headerWays);
   patchKeys = section(header(layout.headerPatchKeys));
   classKeys = section(header(layout.headerClassKeys));
   return layout.faultNone;

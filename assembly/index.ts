@@ -13,9 +13,10 @@ export {
   observed,
   stops,
   animals,
+  moved,
   laneBytes,
   saveLane,
   restoreLane,
   setBatchStep,
 } from './lanes';
-export { startPath, stepPath, pathAnimals } from './path/program';
+export { startPath, stepPath, pathAnimals, pathMoved } from './path/program';

@@ -44,6 +44,9 @@ export function observed(): usize {
 export function stops(): usize {
   return batch.stops;
 }
+export function moved(): usize {
+  return batch.moved;
+}
 export function animals(): usize {
   return batch.animals;
 }

@@ -27,6 +27,8 @@ export const headerPatchKeys = 11;
 export const headerClassKeys = 12;
 export const headerStart = 13;
 export const headerColumns = 14;
+/** Ways of all dispersals together. */
+export const headerWays = 15;
 
 // Directory: one row of eight i32 a section, after the header. Rows are named by their index; none is -1.
 export const rowWords = 8;
@@ -67,7 +69,7 @@ export const kindMovementChance = 15; // f64, one an entry
 export const kindMovementOnward = 16; // f64, chance of an entry given that no earlier entry was taken
 export const kindAliasStart = 17; // i32, P + 1
 export const kindAliasKeep = 18; // f64, chance to keep the first of the two ends of a column
-export const kindAliasEnds = 19; // i32, two a column: patch, or -1 for death on the way
+export const kindAliasEnds = 19; // i32, two a column: entry of the movement, or -1 for death on the way
 export const kindPatchNumbers = 20; // f64, P
 export const kindPatchForms = 21; // i32, P
 export const kindClassWeights = 22; // f64, C
@@ -119,6 +121,7 @@ export const opDispersal = 5;
 export const dispersalMoves = 3; // class mask
 export const dispersalLeaving = 4; // rates
 export const dispersalMovement = 5; // movement
+export const dispersalWays = 6; // a number: ways of the dispersals before this one
 export const opCeiling = 6;
 export const ceilingCounted = 3; // class mask
 export const ceilingCapacity = 4; // patch numbers

@@ -48,14 +48,25 @@ function bitsCounts(undecided: v128, p: v128, s0: v128, s1: v128): u64 {
   let digits = i64x2.shl(onePlus, 12);
   let successes = v128.and(undecided, sure);
   undecided = v128.andnot(undecided, sure);
-  for (let word = 0; word < 7 || v128.any_true(undecided); word++) {
+  for (let word = 0; word < 7; word++) {
     const sum = i64x2.add(s0, s1);
     const bits = i64x2.add(v128.or(i64x2.shl(sum, 17), i64x2.shr_u(sum, 47)), s0);
     const t = v128.xor(s0, s1);
     s0 = v128.xor(v128.xor(v128.or(i64x2.shl(s0, 49), i64x2.shr_u(s0, 15)), t), i64x2.shl(t, 21));
     s1 = v128.or(i64x2.shl(t, 28), i64x2.shr_u(t, 36));
-    const digit = i64x2.shr_s(digits, 63);
-    digits = i64x2.shl(digits, 1);
+    const digit = i64x2.lt_s(digits, i64x2.splat(0));
+    digits = i64x2.add(digits, digits);
+    successes = v128.or(successes, v128.and(undecided, v128.andnot(digit, bits)));
+    undecided = v128.andnot(undecided, v128.xor(bits, digit));
+  }
+  while (v128.any_true(undecided)) {
+    const sum = i64x2.add(s0, s1);
+    const bits = i64x2.add(v128.or(i64x2.shl(sum, 17), i64x2.shr_u(sum, 47)), s0);
+    const t = v128.xor(s0, s1);
+    s0 = v128.xor(v128.xor(v128.or(i64x2.shl(s0, 49), i64x2.shr_u(s0, 15)), t), i64x2.shl(t, 21));
+    s1 = v128.or(i64x2.shl(t, 28), i64x2.shr_u(t, 36));
+    const digit = i64x2.lt_s(digits, i64x2.splat(0));
+    digits = i64x2.add(digits, digits);
     successes = v128.or(successes, v128.and(undecided, v128.andnot(digit, bits)));
     undecided = v128.andnot(undecided, v128.xor(bits, digit));
   }

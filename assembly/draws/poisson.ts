@@ -1,4 +1,4 @@
-// Poisson draws: by inversion where the mean is below 10, else by transformed rejection (algorithm PTRS of Hörmann 1993).
+// Poisson draws: by inversion where the mean is below 30, else by transformed rejection (algorithm PTRS of Hörmann 1993).
 import { exp, log } from '../mathematics';
 import { stirlingTail } from './factorial';
 import { finalise, firstWord, unit } from './stream';
@@ -6,6 +6,8 @@ import { finalise, firstWord, unit } from './stream';
 const halfLogTwoPi: f64 = 0.9189385332046728;
 /** Larger means stop the replicate whatever is drawn. */
 const largestMean: f64 = 4e9;
+/** Up to here the count also never falls when the mean rises; it costs no more than rejection. */
+export const mostByInversion: f64 = 30;
 
 /** A count with this mean, from both words of the block of random bits and the constant of the stream. */
 export function poisson(mean: f64, w0: u64, w1: u64, stream: u64): f64 {
@@ -13,14 +15,14 @@ export function poisson(mean: f64, w0: u64, w1: u64, stream: u64): f64 {
   if (mean >= largestMean) return floor<f64>(mean);
   const s0 = finalise(w0 + stream);
   const s1 = finalise(w1 + stream);
-  return mean < 10 ? byInversion(mean, unit(firstWord(s0, s1))) : byRejection(mean, s0, s1);
+  return mean < mostByInversion ? byInversion(mean, unit(firstWord(s0, s1))) : byRejection(mean, s0, s1);
 }
 
-/** Walks up from 0. Beyond 120 the chance is below 1e-80 where the mean is below 10. */
+/** Walks up from 0. Beyond 200 the chance is below 1e-80 where the mean is below 30. */
 function byInversion(mean: f64, u: f64): f64 {
   let chance = exp(-mean);
   let k: f64 = 0;
-  while (u >= chance && k < 120) {
+  while (u >= chance && k < 200) {
     u -= chance;
     k++;
     chance *= mean / k;

@@ -1,13 +1,14 @@
 // The mean of a dispersal.
-import { f64At, i32At } from '../arrays';
+import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
-import { add, animals, animalsIn, arrivals, stateBytes, step } from './state';
+import { add, animals, animalsIn, arrivals, moved, stateBytes, step } from './state';
 
 export function meanDispersal(record: usize): void {
   const moves = section(operand(record, layout.dispersalMoves));
   const table = sectionAt(operand(record, layout.dispersalLeaving), step);
   const movement = sectionAt(operand(record, layout.dispersalMovement), step);
+  movedHere = moved + ((<usize>operand(record, layout.dispersalWays)) << 3);
   memory.fill(arrivals, 0, stateBytes());
   for (let patch = 0; patch < patches; patch++) {
     for (let c = 0; c < classes; c++) {
@@ -23,12 +24,17 @@ export function meanDispersal(record: usize): void {
   }
 }
 
+/** Animals that arrived over the ways of this dispersal. */
+let movedHere: usize = 0;
+
 function send(movement: usize, patch: i32, c: i32, leavers: f64): void {
   const start = section(load<i32>(movement + (layout.movementStart << 2)));
   const ends = section(load<i32>(movement + (layout.movementTo << 2)));
   const chance = section(load<i32>(movement + (layout.movementChance << 2)));
   const end = i32At(start, patch + 1);
-  for (let entry = i32At(start, patch); entry < end; entry++) {
-    add(arrivals, i32At(ends, entry), c, leavers * f64At(chance, entry));
+  for (let way = i32At(start, patch); way < end; way++) {
+    const n = leavers * f64At(chance, way);
+    add(arrivals, i32At(ends, way), c, n);
+    putF64(movedHere, way, f64At(movedHere, way) + n);
   }
 }

@@ -3,7 +3,7 @@ import { entries, header, operand, section } from '../image';
 import * as layout from '../layout';
 import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, meanSurvival } from './maps';
 import { meanDispersal } from './movement';
-import { animals, fillPath, setStep, step } from './state';
+import { animals, fillPath, moved, setStep, step } from './state';
 
 /** Puts the start into the path. */
 export function startPath(): void {
@@ -20,6 +20,11 @@ export function stepPath(): void {
 /** Where the animals of the path stand. */
 export function pathAnimals(): usize {
   return animals;
+}
+
+/** Where the animals that moved stand. */
+export function pathMoved(): usize {
+  return moved;
 }
 
 function runProgram(row: i32): void {

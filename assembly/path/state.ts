@@ -1,6 +1,6 @@
 // The path without chance: mean animals as f64 [patch][class], through the same program.
 import { f64At, i32At, putF64 } from '../arrays';
-import { classes, entries, header, patches, section, slots } from '../image';
+import { classes, entries, header, patches, section, slots, ways } from '../image';
 import { headerStart } from '../layout';
 import { reserve } from '../memory';
 
@@ -10,6 +10,8 @@ export let animals: usize = 0;
 export let arrivals: usize = 0;
 /** f64 [slot][patch] */
 export let slotValues: usize = 0;
+/** f64 [way]: animals that arrived over each way since `startPath` */
+export let moved: usize = 0;
 export let step: i32 = 0;
 
 export function rowBytes(): usize {
@@ -24,7 +26,8 @@ export function reservePath(): bool {
   animals = reserve(stateBytes());
   arrivals = reserve(stateBytes());
   slotValues = reserve((<usize>slots * patches) << 3);
-  return animals !== 0 && arrivals !== 0 && slotValues !== 0;
+  moved = reserve((<usize>ways) << 3);
+  return moved !== 0 && animals !== 0 && arrivals !== 0 && slotValues !== 0;
 }
 
 export function fillPath(): void {
@@ -32,6 +35,7 @@ export function fillPath(): void {
   for (let cell = 0; cell < entries(header(headerStart)); cell++) {
     putF64(animals, cell, f64(i32At(start, cell)));
   }
+  memory.fill(moved, 0, (<usize>ways) << 3);
   step = 0;
 }
 

@@ -4,6 +4,7 @@ import {
   animals,
   cellBytes,
   counts,
+  laneNumbers,
   moreCounts,
   numbers,
   rates,
@@ -13,9 +14,9 @@ import {
   stopLane,
   words,
 } from '../batch';
-import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells';
+import { addCell, addNumbers, drawCell, multiplyByCell, occupied, scaledRates, subtractCell } from '../cells';
 import { philoxLanes } from '../draws/philox';
-import { poisson } from '../draws/poisson';
+import { poissonFour } from '../draws/poisson-four';
 import { streamOf } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
 import * as layout from '../layout';
@@ -41,14 +42,11 @@ export function breed(record: usize): void {
 
 /** numbers[lane] += the young of the animals in a cell. */
 function addYoung(cell: usize, stream: u64): void {
-  for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
-    const n = load<u32>(cell + (lane << 2));
-    if (n === 0) continue;
-    const at = lane << 3;
-    const mean = f64(n) * load<f64>(rates + at);
-    const young = poisson(mean, load<u64>(words + at), load<u64>(words + at, 128), stream);
-    store<f64>(numbers + at, load<f64>(numbers + at) + young);
+  multiplyByCell(rates, cell);
+  for (let quarter: usize = 0; quarter < laneNumbers; quarter += 32) {
+    poissonFour(rates + quarter, words + quarter, stream);
   }
+  addNumbers(numbers, rates);
 }
 
 /** counts[lane] = numbers[lane], where a replicate may have so many. */

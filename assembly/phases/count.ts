@@ -1,6 +1,7 @@
 // Count: the sums that the host keeps, one column each: the whole, each patch, each outcome's weighted set.
 import { f64At, i32At } from '../arrays';
 import { animals, cellBytes, laneNumbers, observed, rowBytes, stopLane } from '../batch';
+import { addNumbers } from '../cells';
 import { classes, operand, patches, section } from '../image';
 import * as layout from '../layout';
 import { addWeighted } from './crowding';
@@ -16,12 +17,6 @@ export function count(record: usize): void {
   }
   const outcomes = operand(record, layout.countOutcomes);
   for (let outcome = 0; outcome < outcomes; outcome++) countOutcome(record, outcome);
-}
-
-function addNumbers(target: usize, source: usize): void {
-  for (let i: usize = 0; i < laneNumbers; i += 16) {
-    v128.store(target + i, f64x2.add(v128.load(target + i), v128.load(source + i)));
-  }
 }
 
 function countOutcome(record: usize, outcome: i32): void {

@@ -1,5 +1,5 @@
 // Dispersal: a binomial draw of those that leave, then for each of them where the way ends. All move at once.
-import { f64At, i32At, u32At } from '../arrays';
+import { f64At, i32At, putF64, u32At } from '../arrays';
 import * as batch from '../batch';
 import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells';
 import { binomial } from '../draws/binomial';
@@ -20,6 +20,7 @@ const manyPerColumn: u32 = 5;
 
 export function disperse(record: usize): void {
   const moves = section(operand(record, layout.dispersalMoves));
+  moved = batch.moved + ((<usize>operand(record, layout.dispersalWays)) << 3);
   openMovement(sectionAt(operand(record, layout.dispersalMovement), batch.step));
   memory.fill(batch.arrivals, 0, batch.stateBytes());
   for (let patch = 0; patch < patches; patch++) leavePatch(record, patch, moves);
@@ -81,9 +82,13 @@ function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
 /** Where the arrivals of the class and lane at hand stand for the first patch. */
 let laneTarget: usize = 0;
 
-function arrive(end: i32, n: u32): void {
-  const at = laneTarget + <usize>end * batch.rowBytes();
+/** Animals that arrived over the ways of this dispersal. */
+let moved: usize = 0;
+
+function arrive(way: i32, n: u32): void {
+  const at = laneTarget + <usize>i32At(ends, way) * batch.rowBytes();
   store<u32>(at, load<u32>(at) + n);
+  putF64(moved, way, f64At(moved, way) + f64(n));
 }
 
 /** An alias pick (Walker 1977) for each leaver: a column, and which of its two ends. */
@@ -94,8 +99,8 @@ function pick(leavers: u32, first: i32, width: i32, s0: u64, s1: u64): void {
     const position = unit(firstWord(s0, s1)) * f64(width);
     const column = <usize>i32(position);
     const other: usize = position - f64(column) < load<f64>(keep + (column << 3)) ? 0 : 4;
-    const end = load<i32>(both + (column << 3) + other);
-    if (end >= 0) arrive(end, 1);
+    const way = load<i32>(both + (column << 3) + other);
+    if (way >= 0) arrive(way, 1);
     const t = s1 ^ s0;
     s0 = rotl<u64>(s0, 49) ^ t ^ (t << 21);
     s1 = rotl<u64>(t, 28);
@@ -105,12 +110,10 @@ function pick(leavers: u32, first: i32, width: i32, s0: u64, s1: u64): void {
 /** A binomial draw for each destination out of those not placed yet; who is left over dies on the way. */
 function spread(leavers: u32, patch: i32, laneWords: usize, stream: u64): void {
   const end = i32At(start, patch + 1);
-  for (let entry = i32At(start, patch); entry < end && leavers !== 0; entry++) {
-    const to = i32At(ends, entry);
-    const own = substreamOf(stream, u32At(patchKeys, to));
-    const chance = f64At(onward, entry);
-    const n = binomial(leavers, chance, load<u64>(laneWords), load<u64>(laneWords, 128), own);
-    arrive(to, n);
+  for (let way = i32At(start, patch); way < end && leavers !== 0; way++) {
+    const own = substreamOf(stream, u32At(patchKeys, i32At(ends, way)));
+    const n = binomial(leavers, f64At(onward, way), load<u64>(laneWords), load<u64>(laneWords, 128), own);
+    arrive(way, n);
     leavers -= n;
   }
 }

@@ -3,6 +3,7 @@ import * as layout from '../../assembly/layout.ts';
 import { headerOf, readNames } from '../compile/image/read.ts';
 import type { Machine } from '../machine/machine.ts';
 import { openOwnImage } from './open.ts';
+import { eachStep } from './moved.ts';
 import type { RawRun } from './output.ts';
 
 /** Numbers in 32 bits. */
@@ -25,17 +26,19 @@ export function runReplicates(image: ArrayBuffer, request: RunRequest): RawRun {
   const machine = openOwnImage(image);
   const { replicates, steps } = request;
   const columns = headerOf(image)[layout.headerColumns] ?? 0;
+  const ways = headerOf(image)[layout.headerWays] ?? 0;
+  const movedSoFar = new Float64Array((steps + 1) * ways);
   const { phases } = readNames(image);
   const counts = new Float64Array((steps + 1) * columns * replicates);
   const stopped: RawRun['stopped'][number][] = [];
   const most = Math.min(request.lanes ?? layout.lanes, layout.lanes);
   for (let first = 0; first < replicates; first += most) {
-    const batch = { first, lanes: Math.min(most, replicates - first), columns, counts };
+    const batch = { first, lanes: Math.min(most, replicates - first), columns, counts, ways, movedSoFar };
     runBatch(machine, request, batch);
     stopped.push(...stopsOf(machine, batch, phases));
     request.onProgress?.(first + batch.lanes);
   }
-  return { replicates, steps, columns, counts, stopped };
+  return { replicates, steps, columns, counts, stopped, moved: eachStep(movedSoFar, ways) };
 }
 
 interface Batch {
@@ -44,6 +47,9 @@ interface Batch {
   readonly lanes: number;
   readonly columns: number;
   readonly counts: Float64Array;
+  readonly ways: number;
+  /** Animals moved up to step t over way w, at t * ways + w. */
+  readonly movedSoFar: Float64Array;
 }
 
 function runBatch(machine: Machine, request: RunRequest, batch: Batch): void {
@@ -55,6 +61,7 @@ function runBatch(machine: Machine, request: RunRequest, batch: Batch): void {
   for (let step = 1; step <= request.steps; step++) {
     machine.step();
     keepCounts(machine, request, batch, step);
+    keepMoved(machine, batch, step);
   }
 }
 
@@ -64,6 +71,12 @@ function keepCounts(machine: Machine, request: RunRequest, batch: Batch, step: n
     const lanes = observed.subarray(column * layout.lanes, column * layout.lanes + batch.lanes);
     batch.counts.set(lanes, (step * batch.columns + column) * request.replicates + batch.first);
   }
+}
+
+function keepMoved(machine: Machine, { ways, movedSoFar }: Batch, step: number): void {
+  const moved = new Float64Array(machine.memory.buffer, machine.moved(), ways);
+  const sums = movedSoFar.subarray(step * ways, (step + 1) * ways);
+  for (let way = 0; way < ways; way++) sums[way] = (sums[way] ?? 0) + (moved[way] ?? 0);
 }
 
 function stopsOf(machine: Machine, batch: Batch, phases: readonly string[]): RawRun['stopped'] {

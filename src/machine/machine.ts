@@ -21,6 +21,8 @@ export interface MachineFunctions {
   readonly observed: () => number;
   readonly stops: () => number;
   readonly animals: () => number;
+  /** Address: f64 [way], animals that arrived over each way since `start`, all classes and lanes together. */
+  readonly moved: () => number;
   readonly laneBytes: () => number;
   readonly saveLane: (lane: number, target: number) => void;
   /** 0 where the lane was saved at another step than the batch is at. */
@@ -30,6 +32,8 @@ export interface MachineFunctions {
   readonly stepPath: () => void;
   /** Address: f64 [patch][class]. */
   readonly pathAnimals: () => number;
+  /** Address: f64 [way], since `startPath`. */
+  readonly pathMoved: () => number;
   readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
   readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
   readonly probeSample: (out: number, draws: number, request: number) => void;
@@ -57,6 +61,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   observed: true,
   stops: true,
   animals: true,
+  moved: true,
   laneBytes: true,
   saveLane: true,
   restoreLane: true,
@@ -64,6 +69,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   startPath: true,
   stepPath: true,
   pathAnimals: true,
+  pathMoved: true,
   probePhilox: true,
   probePhiloxLanes: true,
   probeSample: true,

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import * as layout from '../../assembly/layout.ts';
 import { aliasTable } from '../../src/compile/image/alias.ts';
 import { keyOfName, keysOfNames } from '../../src/compile/image/keys.ts';
+import { describeImage } from '../../src/compile/image/describe.ts';
 import { headerOf, readNames, readSections } from '../../src/compile/image/read.ts';
 import { openImage } from '../../src/kernel/open.ts';
 import { runPath } from '../../src/kernel/path.ts';
@@ -61,13 +62,9 @@ describe('an image', () => {
 describe('keys of names', () => {
   // FNV-1a (Fowler, Noll & Vo) and the finaliser of MurmurHash3 (Appleby): fixed here so that no release changes the luck.
   it('never change', () => {
-    expect([keyOfName(''), keyOfName('patch:east'), keyOfName('patch:Übersee')]).toMatchInlineSnapshot(`
-      [
-        2872998923,
-        3863059619,
-        2347763219,
-      ]
-    `);
+    expect([keyOfName(''), keyOfName('patch:east'), keyOfName('patch:Übersee')]).toEqual([
+      2872998923, 3863059619, 2347763219,
+    ]);
   });
 
   it('are the same for any order of the names, and differ by kind', () => {
@@ -128,5 +125,30 @@ describe('the path without chance', () => {
     // West: 3.75 and 8.75; 1.875 and 7; a quarter of the young leaves and dies since no way leads out.
     const west = 1.875 * 0.75 + 2.5 + 7;
     expect(Array.from(path.animals)).toEqual([10, 20, 0, 5, 0, 30, 0, west]);
+  });
+});
+
+describe('the printed image', () => {
+  it('says every record and section in words', () => {
+    expect(describeImage(image())).toMatchInlineSnapshot(`
+      "image version 1.0, 864 bytes
+      2 patches, 2 classes, 10 steps
+
+      year program
+      phase program
+        survival "survival" key 24c5d480: rates 4, slots -
+        count "count" key af67dcac: weights 5, patches 6, outcomes 0
+
+      sections
+        0 patch keys at 544 (2 in 2): e6419ca3 f695dc63
+        1 class keys at 560 (2 in 2): a7f8ff18 71a67ba7
+        2 start animals at 576 (4 in 4): 1 2 3 4
+        3 year program at 592 (0 in 16)
+        4 rates at 592 (4 in 4): 0.5 0.25 0.5 0.25
+        5 outcome weights at 624 (0 in 0)
+        6 outcome patches at 624 (0 in 0)
+        7 phase program at 624 (32 in 16)
+      "
+    `);
   });
 });

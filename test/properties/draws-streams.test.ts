@@ -1,5 +1,6 @@
 // What a replicate gives depends on the seed, its number and the names, on nothing else.
 import { describe, expect, it } from 'vitest';
+import { runPath } from '../../src/kernel/path.ts';
 import { runReplicates } from '../../src/kernel/run.ts';
 import { openOwnImage } from '../../src/kernel/open.ts';
 import type { Phase } from '../../src/model/model.ts';
@@ -45,7 +46,7 @@ describe('a run', () => {
   });
 
   it.each([1, 3, 7, 16])('does not depend on how many replicates run side by side: %d', (lanes) => {
-    expect(runReplicates(image, { replicates: 40, steps: 12, seed: 77, lanes }).counts).toEqual(whole.counts);
+    expect(runReplicates(image, { replicates: 40, steps: 12, seed: 77, lanes })).toEqual(whole);
   });
 
   it('does not depend on which replicates run beside which', () => {
@@ -65,6 +66,34 @@ describe('a run', () => {
   it('starts with the animals of the start in every column', () => {
     const starts = [345, 15, 300, 30].flatMap((n) => new Array<number>(40).fill(n));
     expect(Array.from(whole.counts.subarray(0, 160))).toEqual(starts);
+  });
+});
+
+describe('animals that moved', () => {
+  const leave = (shares: readonly number[]): Phase => ({
+    kind: 'dispersal',
+    name: 'natal',
+    moves: Uint8Array.of(1, 1),
+    leaving: everywhere(2, shares),
+    rule: { by: 'shares', shares: new Float64Array() },
+  });
+  const ways = movement(2, [[0, 1, 0.8], [1, 0, 1]]); // prettier-ignore
+  const sketch = { patches: ['east', 'west'], classes: ['a', 'b'], start: [400, 0, 0, 50], steps: 1 };
+  const moving = imageOf({ ...sketch, phases: [leave([0.5, 0.2])], movements: [ways, null] });
+
+  it('are summed over the replicates for each way and step, and agree with where the animals are', () => {
+    const run = runReplicates(moving, { replicates: 200, steps: 1, seed: 4 });
+    const sum = (column: number) =>
+      run.counts.subarray((3 + column) * 200, (4 + column) * 200).reduce((a, b) => a + b, 0);
+    const [eastward = 0, westward = 0] = run.moved?.animals ?? [];
+    // derived: 200 × 400 × 0.5 × 0.8 and 200 × 50 × 0.2, within five standard errors.
+    expect(Math.abs(eastward - 32_000)).toBeLessThan(5 * Math.sqrt(80_000 * 0.4 * 0.6));
+    expect(Math.abs(westward - 2000)).toBeLessThan(5 * Math.sqrt(10_000 * 0.2 * 0.8));
+    expect(sum(2)).toBe(200 * 50 + eastward - westward);
+  });
+
+  it('are the means in the path without chance', () => {
+    expect(Array.from(runPath(moving, { steps: 1 }).moved?.animals ?? [])).toEqual([160, 10]);
   });
 });
 

@@ -38,6 +38,7 @@ export function buildImage(input: ImageInput): ArrayBuffer {
     [layout.headerSteps, model.steps],
     [layout.headerSlots, model.crowding.length],
     [layout.headerColumns, 1 + model.patches.length + model.outcomes.length],
+    [layout.headerWays, waysBefore(input.landscape, model.phases.length)],
   ]);
   const names = namesOf(model);
   header.set(layout.headerPatchKeys, list.add(keySection(layout.kindPatchKeys, 'patch', names.patches)));
@@ -86,9 +87,15 @@ function phaseProgram(list: SectionList, { model, landscape, coefficients }: Ima
       if (firstPhaseOf(crowding) !== index || solved === undefined) return [];
       return [crowdingRecord(list, { crowding, coefficients: solved, slot, key: conditionKeys[slot] ?? 0 })];
     });
+    const key = phaseKeys[index] ?? 0;
     const movement = landscape.movements[index] ?? null;
-    return [...readHere, phaseRecord(phase, { list, model, index, key: phaseKeys[index] ?? 0, movement })];
+    const ways = waysBefore(landscape, index);
+    return [...readHere, phaseRecord(phase, { list, model, index, key, movement, waysBefore: ways })];
   });
+}
+
+function waysBefore(landscape: Landscape, phase: number): number {
+  return landscape.movements.slice(0, phase).reduce((sum, movement) => sum + (movement?.destinations.length ?? 0), 0);
 }
 
 function typeOf(data: Section['data']): number {

@@ -21,11 +21,11 @@ export function addMovement(list: SectionList, movement: Movement, reads: string
   return list.add(plain(layout.kindMovement, rows, reads));
 }
 
-function entriesOf(movement: Movement, patch: number): { readonly ends: number[]; readonly chances: number[] } {
+function entriesOf(movement: Movement, patch: number): { readonly ways: number[]; readonly chances: number[] } {
   const from = movement.start[patch] ?? 0;
   const until = movement.start[patch + 1] ?? from;
   return {
-    ends: Array.from(movement.destinations.subarray(from, until)),
+    ways: Array.from({ length: until - from }, (_, i) => from + i),
     chances: Array.from(movement.chance.subarray(from, until)),
   };
 }
@@ -65,11 +65,11 @@ function aliasTables(movement: Movement): AliasTables {
   for (let patch = 0; patch + 1 < movement.start.length; patch++) {
     const origin = entriesOf(movement, patch);
     const death = deathChance(origin.chances);
-    if (death > 0 && origin.ends.length > 0) {
-      origin.ends.push(layout.none);
+    if (death > 0 && origin.ways.length > 0) {
+      origin.ways.push(layout.none);
       origin.chances.push(death);
     }
-    const table = aliasTable(origin.ends, origin.chances);
+    const table = aliasTable(origin.ways, origin.chances);
     keep.push(...table.keep);
     table.first.forEach((first, i) => ends.push(first, table.second[i] ?? layout.none));
     start.push(keep.length);

@@ -13,6 +13,8 @@ export interface PhasePlace {
   readonly index: number;
   readonly key: number;
   readonly movement: Movement | null;
+  /** Ways of the dispersals before this phase. */
+  readonly waysBefore: number;
 }
 
 export function phaseRecord(phase: M.Phase, place: PhasePlace): Int32Array {
@@ -88,12 +90,13 @@ function demographyRecord(phase: M.DemographyPhase, { list, model, index, key }:
   ]);
 }
 
-function dispersalRecord(phase: M.DispersalPhase, { list, index, key, movement }: PhasePlace): Int32Array {
+function dispersalRecord(phase: M.DispersalPhase, { list, index, key, movement, waysBefore }: PhasePlace): Int32Array {
   if (movement === null) throw new Error(`The landscape has no movement for the phase ${phase.name}.`);
   return record(layout.opDispersal, key, index, [
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.moves), `classes of ${phase.name}`)),
     addTable(list, layout.kindRates, phase.leaving, `leaving of ${phase.name}`),
     addMovement(list, movement, `movement of ${phase.name}`),
+    waysBefore,
   ]);
 }
 

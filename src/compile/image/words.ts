@@ -1,0 +1,58 @@
+// The words by which kinds, opcodes and operands of an image are printed.
+import * as layout from '../../../assembly/layout.ts';
+
+const kinds: readonly (readonly [number, string])[] = [
+  [layout.kindPatchKeys, 'patch keys'],
+  [layout.kindClassKeys, 'class keys'],
+  [layout.kindStartAnimals, 'start animals'],
+  [layout.kindYearProgram, 'year program'],
+  [layout.kindPhaseProgram, 'phase program'],
+  [layout.kindEpochOf, 'epoch of step'],
+  [layout.kindRates, 'rates'],
+  [layout.kindClassShares, 'class shares'],
+  [layout.kindClassLinks, 'class links'],
+  [layout.kindClassMask, 'class mask'],
+  [layout.kindPatchMatrices, 'patch matrices'],
+  [layout.kindMovement, 'movement'],
+  [layout.kindMovementStart, 'movement start'],
+  [layout.kindMovementTo, 'movement to'],
+  [layout.kindMovementChance, 'movement chance'],
+  [layout.kindMovementOnward, 'movement onward'],
+  [layout.kindAliasStart, 'alias start'],
+  [layout.kindAliasKeep, 'alias keep'],
+  [layout.kindAliasEnds, 'alias ends'],
+  [layout.kindPatchNumbers, 'patch numbers'],
+  [layout.kindPatchForms, 'patch forms'],
+  [layout.kindClassWeights, 'class weights'],
+  [layout.kindSlotLists, 'slot lists'],
+  [layout.kindOutcomeWeights, 'outcome weights'],
+  [layout.kindOutcomePatches, 'outcome patches'],
+  [layout.kindNames, 'names'],
+];
+
+/** For each opcode its word, then the words of its operands in order. */
+const opcodes: readonly (readonly [number, readonly string[]])[] = [
+  [layout.opBreeding, ['breeding', 'births', 'into', 'onward', 'slots']],
+  [layout.opSurvival, ['survival', 'rates', 'slots']],
+  [layout.opAgeing, ['ageing', 'advance', 'next']],
+  [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],
+  [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before']],
+  [layout.opCeiling, ['ceiling', 'counted', 'capacity']],
+  [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number']],
+  [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
+];
+
+const kindWords = new Map(kinds);
+const opcodeWords = new Map(opcodes);
+
+export function kindWord(kind: number): string {
+  return kindWords.get(kind) ?? `unknown kind ${String(kind)}`;
+}
+
+export function opcodeWord(opcode: number): string {
+  return opcodeWords.get(opcode)?.[0] ?? `unknown opcode ${String(opcode)}`;
+}
+
+export function operandWords(opcode: number): readonly string[] {
+  return opcodeWords.get(opcode)?.slice(1) ?? [];
+}
