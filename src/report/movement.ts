@@ -1,8 +1,10 @@
 // Animals that move between patches each year: the mean abundance of all futures, spread over the classes as on the path
 // without chance, taken through one mean year. A mean of movements would differ a little where crowding bends.
+import { runYear, type Compiled } from '../compile/year-map.ts';
+import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
+import { multiply } from '../numeric/sparse-product.ts';
 import type { PathResults } from '../results/results.ts';
 import type { ReportInput } from './input.ts';
-import { runMeanYear } from './mean-year.ts';
 
 export interface LinkFlow {
   readonly from: number;
@@ -11,7 +13,7 @@ export interface LinkFlow {
   readonly animals: Float64Array;
 }
 
-/** Null where it cannot be worked out. */
+/** Every link that a leaver could take, the unused too. Null where movement cannot be worked out. */
 export function estimateMovement(input: ReportInput): readonly LinkFlow[] | null {
   const { model, landscape, path, results } = input;
   const coefficients = input.coefficients ?? [];
@@ -20,14 +22,32 @@ export function estimateMovement(input: ReportInput): readonly LinkFlow[] | null
   const counts = results.abundance.whole.length;
   const links = new Map<number, LinkFlow>();
   for (let count = 1; count < counts; count++) {
-    const animals = meanState(input, shares, count - 1);
-    runMeanYear({ model, landscape, coefficients }, count, animals, (from, to, arrive) => {
+    const state = meanState(input, shares, count - 1);
+    forEachArrival({ model, landscape, coefficients }, state, count, (from, to, arrive) => {
       const link = links.get(from * model.patches.length + to) ?? { from, to, animals: new Float64Array(counts) };
       link.animals[count] = (link.animals[count] ?? 0) + arrive;
       links.set(from * model.patches.length + to, link);
     });
   }
-  return [...links.values()].filter((link) => link.from !== link.to);
+  return [...links.values()];
+}
+
+type Arrival = (from: number, to: number, animals: number) => void;
+
+function forEachArrival(compiled: Compiled, before: Float64Array, step: number, arrival: Arrival): void {
+  const { phases, classes } = compiled.model;
+  let state = before;
+  runYear(compiled, before, step).maps.forEach((map, index) => {
+    if (phases[index]?.kind === 'dispersal') tellMoves(map, state, classes.length, arrival);
+    state = multiply(map, state);
+  });
+}
+
+function tellMoves(map: SparseMatrix, state: Float64Array, classes: number, arrival: Arrival): void {
+  forEachEntry(map, (row, column, share) => {
+    const [to, from] = [Math.floor(row / classes), Math.floor(column / classes)];
+    if (to !== from) arrival(from, to, share * (state[column] ?? 0));
+  });
 }
 
 function meanState({ model, results }: ReportInput, shares: Float64Array, count: number): Float64Array {

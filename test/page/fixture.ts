@@ -5,7 +5,7 @@ import type { Landscape } from '../../src/landscape/landscape.ts';
 import type { Model, RateTable } from '../../src/model/model.ts';
 import type { Chance, PathResults, RunResults, YearSummary } from '../../src/results/results.ts';
 
-const firstYear = 2027;
+const firstYear = 2026;
 const steps = 50;
 const futures = 2000;
 const classes = ['newborn', 'yearling', 'adult'];
@@ -160,7 +160,7 @@ function fixturePath(model: Model): PathResults {
   const abundance = Array.from({ length: steps + 1 }, (_, t) =>
     model.patches.flatMap((patch) =>
       classes.map((name, c) => ({
-        year: firstYear + t - 1,
+        year: firstYear + t,
         patch: patch.name,
         class: name,
         animals: [0, 0.4, 0.6][c]! * 10,
@@ -236,7 +236,7 @@ function summaries(value: (r: number, t: number) => number): YearSummary[] {
     const sd = Math.sqrt(all.reduce((a, b) => a + (b - mean) ** 2, 0) / futures);
     const at = (level: number) => all[Math.floor(level * (futures - 1))]!;
     const quantiles = { '0.05': at(0.05), '0.25': at(0.25), '0.5': at(0.5), '0.75': at(0.75), '0.95': at(0.95) };
-    return { year: firstYear + t - 1, mean, sd, quantiles };
+    return { year: firstYear + t, mean, sd, quantiles };
   });
 }
 
@@ -254,7 +254,7 @@ function outcome(model: Model, k: number, value: (r: number, t: number) => numbe
     }
   }
   const byYear = Array.from(ever, (everBelow, t) => ({
-    year: firstYear + t - 1,
+    year: firstYear + t,
     everBelow,
     lower: Math.max(0, everBelow - 0.0304),
     upper: Math.min(1, everBelow + 0.0304),
