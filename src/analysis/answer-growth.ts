@@ -1,0 +1,133 @@
+// The parts of the analysis that need the matrix and its vectors alone.
+import type { BlockMatrix } from '../compile/block-matrix.ts';
+import { exp } from '../machine/pinned.ts';
+import type { Leading } from '../numeric/leading.ts';
+import { forEachEntry } from '../numeric/sparse.ts';
+import { because, type Answer } from './answer.ts';
+import { growthStandardError } from './growth-error.ts';
+import type { AnalysisInput, NamedCovariance, ParameterTangent } from './input.ts';
+import { stateName } from './label.ts';
+import { generationTimes, lifetimes, netReproductiveRate, type LifeSplit } from './life-history.ts';
+import type { Analysis } from './schema.ts';
+import { entrySensitivities, sensitivityAlong, type Vectors } from './sensitivity.ts';
+import { smallNoiseGrowth } from './small-noise.ts';
+import { pathFromStart, transientBounds } from './transients.ts';
+
+export function blocksAnswer(block: BlockMatrix, leading: Leading): Analysis['blocks'] {
+  return leading.blocks.map(({ states, growthRate, period, feeds }) => ({
+    states: Array.from(states, (state) => stateName(block, state)),
+    growthRate,
+    period,
+    feeds: [...feeds],
+  }));
+}
+
+export function distributionAnswer(
+  block: BlockMatrix,
+  { right }: Vectors,
+): NonNullable<Analysis['stableDistribution']> {
+  return Array.from(right, (share, s) => ({ ...stateName(block, s), share }));
+}
+
+export function worthAnswer(block: BlockMatrix, { left }: Vectors): NonNullable<Analysis['reproductiveValue']> {
+  return Array.from(left, (value, s) => ({ ...stateName(block, s), value }));
+}
+
+export function entriesAnswer(block: BlockMatrix, vectors: Vectors): NonNullable<Analysis['entries']> {
+  const { sensitivity, elasticity } = entrySensitivities(block.matrix, vectors);
+  const entries: NonNullable<Analysis['entries']> = [];
+  forEachEntry(block.matrix, (row, column, value, k) => {
+    entries.push({
+      from: stateName(block, column),
+      to: stateName(block, row),
+      value,
+      sensitivity: sensitivity[k] ?? 0,
+      elasticity: elasticity[k] ?? 0,
+    });
+  });
+  return entries;
+}
+
+export function parametersAnswer(
+  tangents: readonly ParameterTangent[],
+  vectors: Vectors,
+): NonNullable<Analysis['parameters']> {
+  return tangents.map(({ name, value, matrixTangent }) => {
+    const sensitivity = sensitivityAlong(matrixTangent, vectors);
+    return { name, value, sensitivity, elasticity: (value / vectors.growthRate) * sensitivity };
+  });
+}
+
+export interface LifeAnswers {
+  readonly netReproductiveRate: Answer<number>;
+  readonly generationTime: Answer<NonNullable<Analysis['generationTime']>>;
+  readonly lifetimes: Answer<NonNullable<Analysis['lifetimes']>>;
+}
+
+const immortal = 'Somebody never dies: without births the matrix does not fade.';
+
+export function lifeAnswers(block: BlockMatrix, split: LifeSplit | undefined, vectors: Vectors | null): LifeAnswers {
+  if (!split) {
+    const none = because('The matrix was given without telling births from fates.');
+    return { netReproductiveRate: none, generationTime: none, lifetimes: none };
+  }
+  const netRate = netReproductiveRate(split);
+  const lives = lifetimes(split.fates);
+  return {
+    netReproductiveRate: netRate === null ? because(immortal) : { value: netRate },
+    generationTime: vectors
+      ? { value: generationTimes(split, vectors, netRate) }
+      : because('There is no single stable distribution.'),
+    lifetimes: lives
+      ? {
+          value: Array.from(lives.expectancy, (expectancy, s) => ({
+            ...stateName(block, s),
+            expectancy,
+            variance: lives.variance[s] ?? 0,
+          })),
+        }
+      : because(immortal),
+  };
+}
+
+export function transientsAnswer(
+  { block, start, pathSteps = 20 }: AnalysisInput,
+  vectors: Vectors,
+  primitive: boolean,
+): NonNullable<Analysis['transients']> {
+  const bounds = transientBounds(block.matrix, vectors, primitive);
+  const path = start ? pathFromStart(block.matrix, vectors, { start, steps: pathSteps, primitive }) : null;
+  return { ...bounds, fromStart: path && { ...path, times: [...path.times] } };
+}
+
+/** The sensitivities in the order of the names; null where a name has no tangent. */
+function sensitivitiesOf(
+  { names }: NamedCovariance,
+  tangents: readonly ParameterTangent[],
+  vectors: Vectors,
+): Float64Array | null {
+  const found = names.map((name) => tangents.find((tangent) => tangent.name === name));
+  if (found.some((tangent) => tangent === undefined)) return null;
+  return Float64Array.from(found, (tangent) => (tangent ? sensitivityAlong(tangent.matrixTangent, vectors) : 0));
+}
+
+export function stochasticAnswer(
+  input: AnalysisInput,
+  vectors: Vectors,
+): Answer<NonNullable<Analysis['stochasticGrowth']>> {
+  const { variation, parameterTangents = [] } = input;
+  if (!variation) return because('The model says nothing about how years differ.');
+  const sensitivities = sensitivitiesOf(variation, parameterTangents, vectors);
+  if (!sensitivities) return because('Some of what varies has no sensitivity.');
+  const { logGrowth, yearlyVariance } = smallNoiseGrowth(vectors.growthRate, sensitivities, variation.covariance);
+  const method = 'Tuljapurkar (1982), small noise, independent years';
+  return { value: { growthRate: exp(logGrowth), logGrowth, yearlyVariance, method } };
+}
+
+export function standardErrorAnswer(input: AnalysisInput, vectors: Vectors): Answer<number> {
+  const { uncertainty, parameterTangents = [] } = input;
+  if (!uncertainty) return because('The model gives no uncertainty of its numbers.');
+  const sensitivities = sensitivitiesOf(uncertainty, parameterTangents, vectors);
+  if (!sensitivities) return because('Some of what is uncertain has no sensitivity.');
+  return { value: growthStandardError(sensitivities, uncertainty.covariance) };
+}

@@ -1,0 +1,43 @@
+// What a reader must know before using an analysis.
+
+/** Why growth without chance cannot speak for corridors (Karlin 1982; Altenberg 2012, from memory). */
+export const corridorParadox =
+  'Nobody dies on the way, and this analysis knows neither chance nor crowding. Mixing patches can then only lower the growth ' +
+  'rate, whatever links are added (Karlin 1982; Altenberg 2012): do not judge corridors by it. Their benefit shows in runs with ' +
+  'chance: refilling empty patches, years that differ between patches, crowding.';
+
+export const smallChanges =
+  'Sensitivities and elasticities hold for small changes of one number alone; large or joint changes must be run.';
+
+export const meanYear =
+  'The growth rate is that of a year of mean rates. Years that differ make the usual growth lower, so a growth rate a little ' +
+  'above 1 does not mean that a population lasts.';
+
+export const apparentSurvival =
+  'If survival was estimated from marked animals that may have moved away unseen, leaving is already counted in it as death: do ' +
+  'not add dispersal to it again.';
+
+export interface CautionFacts {
+  readonly patches: number;
+  readonly losslessDispersal: boolean;
+  readonly irreducible: boolean;
+  readonly period: number;
+}
+
+export function cautionsFor({ patches, losslessDispersal, irreducible, period }: CautionFacts): string[] {
+  const cautions = [meanYear, smallChanges];
+  if (patches > 1) cautions.push(apparentSurvival);
+  if (patches > 1 && losslessDispersal) cautions.push(corridorParadox);
+  if (!irreducible) {
+    cautions.push(
+      'Some states cannot be reached from all others (one-way patches, or classes past breeding). What happens in the long run can ' +
+        'depend on where the animals are at the start; the groups are listed with their own growth rates.',
+    );
+  }
+  if (period > 1) {
+    cautions.push(
+      `All loops of the life cycle take a multiple of ${period} years, so numbers keep swinging with that period and never settle.`,
+    );
+  }
+  return cautions;
+}

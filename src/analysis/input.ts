@@ -1,0 +1,45 @@
+// What the whole analysis is made from.
+import type { BlockMatrix } from '../compile/block-matrix.ts';
+import type { DenseMatrix, SparseMatrix } from '../numeric/sparse.ts';
+import type { LifeSplit } from './life-history.ts';
+import type { Network } from './metapopulation-capacity.ts';
+import type { LineKernel } from './spread.ts';
+import type { YearMap } from './year-map.ts';
+
+/** A named number of the model, and how the matrix moves with it. */
+export interface ParameterTangent {
+  readonly name: string;
+  readonly value: number;
+  /** ∂A/∂θ over the states of the matrix. */
+  readonly matrixTangent: SparseMatrix;
+}
+
+/** Covariances of named parameters, in the order of `names`. */
+export interface NamedCovariance {
+  readonly names: readonly string[];
+  readonly covariance: DenseMatrix;
+}
+
+/** All but the matrix may be missing; what then cannot be said comes out as null with the reason. */
+export interface AnalysisInput {
+  readonly block: BlockMatrix;
+  /** Animals at count 0, by state of the matrix. */
+  readonly start?: Float64Array;
+  readonly split?: LifeSplit;
+  /** Over the states of the matrix, where rates depend on numbers. */
+  readonly yearMap?: YearMap;
+  readonly parameterTangents?: readonly ParameterTangent[];
+  /** From year to year. */
+  readonly variation?: NamedCovariance;
+  /** Of what is not known. */
+  readonly uncertainty?: NamedCovariance;
+  readonly network?: Network;
+  readonly lineKernels?: (row: number, column: number) => LineKernel;
+  /** What the growth is compared with, over the same states. */
+  readonly reference?: SparseMatrix;
+  /** Nobody dies on the way in any dispersal. */
+  readonly losslessDispersal?: boolean;
+  readonly wantEigenvalues?: boolean;
+  /** Years of the path from the start; 20 where not given. */
+  readonly pathSteps?: number;
+}

@@ -1,0 +1,175 @@
+// What an analysis says, as data: the published schema, from which the types come.
+import { Type, type Static, type TSchema } from 'typebox';
+
+const orNull = <T extends TSchema>(schema: T) => Type.Union([schema, Type.Null()]);
+const closed = <T extends Record<string, TSchema>>(properties: T, description?: string) =>
+  Type.Object(properties, { additionalProperties: false, ...(description === undefined ? {} : { description }) });
+const number = (description: string) => Type.Number({ description });
+const maybe = (description: string) => Type.Union([Type.Number(), Type.Null()], { description });
+
+const patch = Type.String({ description: 'Name of the patch.' });
+const className = Type.String({ description: 'Name of the class.' });
+const State = closed({ patch, class: className });
+const Extreme = closed({
+  times: number('Size against steady growth from the same number.'),
+  step: Type.Integer({ minimum: 0, description: 'Steps from the start.' }),
+});
+
+export const BlockSchema = closed(
+  {
+    states: Type.Array(State),
+    growthRate: number('0 where no state of the block ever comes back.'),
+    period: Type.Integer({ minimum: 0 }),
+    feeds: Type.Array(Type.Integer({ minimum: 0 }), {
+      description: 'Blocks that this one sends to, by place in the list.',
+    }),
+  },
+  'States that can all reach one another.',
+);
+
+export const EntrySchema = closed({
+  from: State,
+  to: State,
+  value: number('Animals next year for each animal now.'),
+  sensitivity: number('Growth per unit of the entry.'),
+  elasticity: number('Share of growth per share of the entry; these sum to 1.'),
+});
+
+export const ParameterSchema = closed({
+  name: Type.String(),
+  value: Type.Number(),
+  sensitivity: number('Growth per unit of the parameter.'),
+  elasticity: number('Share of growth per share of the parameter; these need not sum to 1.'),
+});
+
+export const PatchSchema = closed({
+  patch,
+  share: maybe('Share of the stable distribution.'),
+  growthAlone: number('Growth rate when whoever leaves is lost and nobody comes.'),
+  contribution: maybe('Animals next year anywhere for each animal in the patch now.'),
+  selfRecruitment: maybe('The same, counting only those in the patch itself.'),
+  role: orNull(Type.Union([Type.Literal('source'), Type.Literal('sink'), Type.Literal('undecided')])),
+  removalLoss: maybe('Growth lost when the patch and its animals are taken away.'),
+});
+
+export const LinkSchema = closed({
+  phase: Type.String(),
+  from: patch,
+  to: patch,
+  class: className,
+  share: number('Share of the animals present that arrives over the link.'),
+  sensitivity: number('Growth per unit of the share, nothing else changed.'),
+  sensitivityInsteadOfStaying: number('The same where those who go would otherwise have stayed.'),
+  removalLoss: number('Growth lost when those who would have arrived are lost.'),
+  exact: Type.Boolean({ description: 'Recomputed whole, or share times sensitivity.' }),
+});
+
+export const TransientsSchema = closed({
+  firstStepRise: number('Largest that any start can be after one step, against steady growth.'),
+  firstStepDrop: number('Smallest that any start can be after one step.'),
+  highest: Extreme,
+  lowest: Extreme,
+  lasting: orNull(
+    closed({ gain: Type.Number(), loss: Type.Number() }, 'What the best and the worst start keep for good.'),
+  ),
+  kreiss: orNull(closed({ atLeast: Type.Number(), atMost: Type.Number() }, 'Kreiss bounds of highest and lowest.')),
+  fromStart: orNull(
+    closed({
+      times: Type.Array(Type.Number(), { description: 'At each count, against steady growth from the same number.' }),
+      lasting: maybe('Where it comes to in the long run.'),
+      stepsToSettle: maybe('First count from which it stays within 5 % of that.'),
+    }),
+  ),
+});
+
+export const EquilibriumSchema = closed({
+  invasionGrowth: number('Growth rate when almost nobody is there.'),
+  states: Type.Array(
+    closed({
+      animals: Type.Array(closed({ patch, class: className, animals: Type.Number() })),
+      total: Type.Number(),
+      leadingModulus: number('By this factor a year small disturbances fade.'),
+      stable: Type.Boolean(),
+    }),
+  ),
+  startThreshold: orNull(
+    closed({ diesBelow: Type.Number(), lastsAbove: Type.Number() }, 'Total animals, made up as at the start.'),
+  ),
+});
+
+export const AnalysisSchema = closed({
+  format: Type.Literal('skein-analysis/1'),
+  at: Type.Union([Type.Literal('zero'), Type.Literal('equilibrium'), Type.Literal('start')], {
+    description: 'Where the matrix was taken: with nobody there, where numbers stand still, or at the start.',
+  }),
+  growthRate: number('Factor by which numbers change in a year, in the long run at mean rates.'),
+  dampingRatio: maybe('By this factor a year what is not in stable proportion fades.'),
+  oscillationSteps: maybe('Years from wave to wave.'),
+  eigenvalues: orNull(Type.Array(closed({ re: Type.Number(), im: Type.Number() }))),
+  irreducible: Type.Boolean({ description: 'Every state can reach every other.' }),
+  primitive: Type.Boolean({ description: 'Irreducible, and numbers settle.' }),
+  period: Type.Integer({ minimum: 0, description: 'Common divisor of the lengths of all loops; 0 without a loop.' }),
+  blocks: Type.Array(BlockSchema),
+  netReproductiveRate: maybe('Young of a newborn in its life.'),
+  generationTime: orNull(
+    closed({
+      cohort: maybe('Mean age of mothers in one cohort, steps.'),
+      stable: maybe('Mean age of mothers in the stable population, steps.'),
+      replacement: maybe('Steps in which numbers multiply by the net reproductive rate.'),
+    }),
+  ),
+  lifetimes: orNull(
+    Type.Array(
+      closed({
+        patch,
+        class: className,
+        expectancy: number('Steps until death, the present one included.'),
+        variance: Type.Number(),
+      }),
+    ),
+  ),
+  stableDistribution: orNull(Type.Array(closed({ patch, class: className, share: Type.Number() }))),
+  reproductiveValue: orNull(Type.Array(closed({ patch, class: className, value: Type.Number() }))),
+  entries: orNull(Type.Array(EntrySchema)),
+  parameters: orNull(Type.Array(ParameterSchema)),
+  patches: orNull(Type.Array(PatchSchema)),
+  links: orNull(Type.Array(LinkSchema)),
+  transients: orNull(TransientsSchema),
+  stochasticGrowth: orNull(
+    closed({
+      growthRate: number('e to the mean yearly change of ln numbers.'),
+      logGrowth: Type.Number(),
+      yearlyVariance: number('Variance that a year adds to ln numbers.'),
+      method: Type.String(),
+    }),
+  ),
+  growthStandardError: maybe('Standard error of the growth rate from those of the parameters.'),
+  equilibrium: orNull(EquilibriumSchema),
+  metapopulationCapacity: orNull(
+    closed({
+      capacity: Type.Number(),
+      patchValues: orNull(Type.Array(closed({ patch, value: Type.Number() }))),
+    }),
+  ),
+  spread: orNull(closed({ speedKm: number('Kilometres a step.'), theta: number('Steepness of the front, per km.') })),
+  difference: orNull(
+    closed({
+      difference: number('Growth rate less that of the reference.'),
+      unexplained: Type.Number(),
+      contributions: Type.Array(
+        closed({ from: State, to: State, difference: Type.Number(), contribution: Type.Number() }),
+      ),
+    }),
+  ),
+  cautions: Type.Array(Type.String()),
+  reasons: Type.Record(Type.String(), Type.String(), { description: 'Why a field is null.' }),
+});
+
+export type Analysis = Static<typeof AnalysisSchema>;
+
+/** The published JSON Schema of `skein analyse --json`. */
+export const analysisJsonSchema: TSchema = Type.Object(AnalysisSchema.properties, {
+  additionalProperties: false,
+  $schema: 'https://json-schema.org/draft/2020-12/schema',
+  title: 'Analysis of a block projection matrix',
+});
