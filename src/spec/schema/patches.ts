@@ -73,6 +73,7 @@ export const Parameter = Type.Union([
 ]);
 
 export const Parameters = Type.Record(Type.String(), Parameter, {
+  title: 'names with a number or an expression',
   description: 'Named numbers. Expressions use them; sweeps and sensitivities go over them.',
   examples: ['litter: { value: 4.6, source: { text: "three fens, 2021", basis: measured elsewhere } }'],
   propertyNames: { format: 'identifier' },

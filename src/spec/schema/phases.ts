@@ -24,7 +24,7 @@ export const Shares = Type.Record(
   Type.String(),
   Type.Record(
     Type.String(),
-    expression({ description: 'Share of the animals present.', examples: [0.1], 'x-unit': 'a share' }),
+    expression({ description: 'Share of the animals present.', examples: [0.1], 'x-unit': 'share' }),
     { 'x-key': 'TO' },
   ),
   {
@@ -39,14 +39,19 @@ export const Shares = Type.Record(
 const leaving = {
   description: 'Share that sets out, for all classes or by class.',
   examples: ['natal_leaving'],
-  'x-unit': 'a share',
+  'x-unit': 'share',
 };
 
 export const Dispersal = Type.Object(
   {
     kind: Type.Literal('dispersal', { description: 'Animals move between patches.', examples: ['dispersal'] }),
     classes: classList({ description: 'Classes that move.', examples: ['[newborn]'] }),
-    leaving: Type.Optional(Type.Union([expression(leaving), byClass(leaving)], leaving)),
+    leaving: Type.Optional(
+      Type.Union([expression(leaving), byClass(leaving)], {
+        title: 'a number, an expression, or classes with one each',
+        ...leaving,
+      }),
+    ),
     distance: Type.Optional(
       Type.Literal('straight', {
         description: 'How distance is measured.',
@@ -80,7 +85,7 @@ export const Dispersal = Type.Object(
         description: 'Share that survives the way, however long it is.',
         examples: [0.9],
         default: 1,
-        'x-unit': 'a share',
+        'x-unit': 'share',
       }),
     ),
     shares: Type.Optional(Shares),
@@ -107,6 +112,7 @@ export const Ceiling = Type.Object(
 );
 
 const counted = {
+  title: 'a list of classes, `all`, or classes with weights',
   description: 'Whose number crowds: a list of classes, or classes with weights.',
   examples: ['{ yearling: 1, adult: 1 }'],
 };

@@ -6,14 +6,14 @@ const young = 'Young of the counted sex for each animal of the class that is pre
 export const Survival = byClass({
   description: 'Share of each class that survives the phase `survival`.',
   examples: [0.62],
-  'x-unit': 'a share',
+  'x-unit': 'share',
 });
 
 const FemaleShare = expression({
   description:
     'Share of females among the young, where births are given for both sexes. Without it births are of the counted sex.',
   examples: [0.5],
-  'x-unit': 'a share',
+  'x-unit': 'share',
 });
 
 const Into = Type.String({
@@ -87,7 +87,7 @@ export const PatchRates = Type.Object(
     births: Type.Optional(byClass(birthsWords)),
     demography: Type.Optional(Demography),
   },
-  { additionalProperties: false },
+  { additionalProperties: false, title: 'rates of one patch', 'x-brief': true },
 );
 
 export const InPatches = Type.Record(Type.String(), PatchRates, {

@@ -12,14 +12,14 @@ export interface KeyWords {
 
 /** A number, or arithmetic over named parameters, patch attributes, drivers and `year`. */
 export function expression(words: KeyWords) {
-  const title = 'a number or an expression such as `adult_survival * 0.9`';
+  const title = 'a number or an expression';
   return Type.Union([Type.Number(), Type.String({ minLength: 1, format: 'expression' })], { title, ...words });
 }
 
 const baseUnits: Readonly<Record<Dimension, string>> = {
   length: 'km',
   area: 'km2',
-  share: 'a share',
+  share: 'share',
   'per-length': 'per km',
   time: 'years',
 };

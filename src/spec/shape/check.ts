@@ -4,7 +4,7 @@ import type { SourceEntry, SourceList, SourceMap, SourceNode, SourceScalar } fro
 import { checkFormat, checkName } from './format.ts';
 import { put, type Report, type Subject } from './report.ts';
 import { checkScalar, tellWrongType } from './scalar.ts';
-import { knownKeys, shapeOfKey, sortOf, type Shape } from './shape.ts';
+import { isSeveral, knownKeys, shapeOfKey, sortOf, type Shape } from './shape.ts';
 import { checkUnion } from './union.ts';
 import { expectationOf } from './words.ts';
 
@@ -95,10 +95,6 @@ function checkList(list: SourceList, shape: Shape, subject: Subject, report: Rep
     if (own !== undefined) checkShape(item, own, { label: subject.label, span }, report);
   }
   if (shape.uniqueItems === true) tellRepeated(list, subject, report);
-}
-
-function isSeveral(items: Shape | readonly Shape[] | undefined): items is readonly Shape[] {
-  return Array.isArray(items);
 }
 
 function tellRepeated(list: SourceList, subject: Subject, report: Report): void {

@@ -28,6 +28,8 @@ export interface Shape {
   readonly 'x-unit'?: string;
   /** What the keys that the author chooses are, such as CLASS. */
   readonly 'x-key'?: string;
+  /** Its keys are described elsewhere. */
+  readonly 'x-brief'?: boolean;
   /** Keys with a meaning of their own among those that the author chooses, which TypeScript has no type for. */
   readonly 'x-keys'?: Readonly<Record<string, Shape>>;
   /** All other keys beside those. */
@@ -71,4 +73,9 @@ export function shapeOfOthers(shape: Shape): Shape | undefined {
   const [pattern] = Object.values(shape.patternProperties ?? {});
   if (pattern !== undefined) return pattern;
   return typeof shape.additionalProperties === 'object' ? shape.additionalProperties : undefined;
+}
+
+/** Whether the items of a list have each a shape of their own. */
+export function isSeveral(items: Shape | readonly Shape[] | undefined): items is readonly Shape[] {
+  return Array.isArray(items);
 }

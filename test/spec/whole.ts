@@ -1,0 +1,65 @@
+// A spec that uses every key of the language (an invented case).
+export const wholeText = `skein: 1
+study:
+  title: Reed hare on the Harrow Levels
+  question: "Which of two plans: hedge, or none?"
+  by: Fen office
+  for: Harrow water board
+  date: 2026-03-01
+  status: draft
+  invented: true
+first-year: 2027
+years: 50
+step: 1 year
+position: plane
+unit: km
+patches:
+  - { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260, cover: 0.4 }
+  - name: Saltmarsh
+    at: [-1e1, .5]
+    capacity: 0
+counts: females
+classes: [newborn, yearling, adult]
+oldest: open-ended
+parameters:
+  adult_survival:
+    value: 0.74
+    source: { text: "radio-tracking 2019-2024, 61 hares", basis: measured here }
+  litter: { value: 4 + 0.6 }
+  natal_leaving: 22 %
+survival: { newborn: 0.38, yearling: 0.62, adult: adult_survival }
+births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newborn }
+demography: { fates: [[0, 0, 0], [0.3, 0, 0], [0, "min(0.5, cover)", 0.8]] }
+in:
+  Saltmarsh: { survival: { adult: adult_survival * 0.9 }, births: { adult: 2 } }
+  North fen: { demography: { survival: [0.3, 0.4, 0.8], fecundity: [0, 1, 1.2] } }
+year: [count, breeding, survival, natal, roaming, room, ageing]
+natal:
+  kind: dispersal
+  classes: [newborn]
+  leaving: natal_leaving
+  distance: straight
+  kernel: { shape: exponential, mean: 4 km, reach: 25000 m }
+  attraction: capacity ^ 0.5
+  leavers: all arrive
+  hazard: 0.03 per km
+roaming:
+  kind: dispersal
+  classes: all
+  leaving: { adult: 0.1 }
+  survival-on-the-way: if year > 2030 then 0.9 else 0.8
+  shares: { North fen: { Saltmarsh: 0.1 } }
+room: { kind: ceiling, counted: [adult], capacity: 2 * capacity, takes: at random }
+crowding:
+  form: beverton-holt
+  changes: { survival: [newborn] }
+  counted: { yearling: 1, adult: 0.5 }
+  capacity: capacity
+  allee-half: 4
+  where-declining: { as: North fen }
+start: { counted: { North fen: 120 }, of: [yearling, adult], rest: stable within patch }
+outcomes:
+  lost hares: { of: [adult], below: 40 }
+  north empty: { of: all, in: [North fen], below: 0.5 }
+run: { replicates: 2000, seed: 2026 }
+`;
