@@ -89,7 +89,7 @@ function tellNoRate(
 
 function capacities(context: Context, expression: number | string, path: SpecPath): Float64Array {
   return Float64Array.from(context.patches, (patch, p) => {
-    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear + 1));
+    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
     if (value > 0 || Number.isNaN(value)) return value;
     const key = JSON.stringify(path);
     if (!context.toldBounds.has(key)) {
@@ -107,7 +107,7 @@ function alleeHalves(context: Context, spec: CrowdingSpec, path: SpecPath): Floa
   const expression = spec['allee-half'] ?? 0;
   const at = [...path, 'allee-half'];
   return Float64Array.from(context.patches, (patch, p) => {
-    const value = context.numbers.value(expression, at, whereIn(context, p, context.time.firstYear + 1));
+    const value = context.numbers.value(expression, at, whereIn(context, p, context.time.firstYear));
     const told = { expression, path: at, what: 'half-saturation of the Allee factor' };
     withinBounds(context, told, { value, bounds: 'from zero', patch: patch.name });
     return value;

@@ -43,7 +43,7 @@ function bySharesTable(
       const q = patchIndex(context, to, path);
       if (p < 0 || q < 0) continue;
       if (p === q) tellSelf(context, path);
-      const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear + 1));
+      const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
       const told = { expression, path, what: `share that goes to ${to}` };
       if (withinBounds(context, told, { value, bounds: 'share', patch: from })) table[q * patchCount + p] = value;
     }
@@ -146,7 +146,7 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
     kernel.reach === undefined ? null : positive(context, kernel.reach, [name, 'kernel', 'reach'], 'length');
   const attraction = attractionOf(context, name, spec);
   if (leavers === 'may miss') requireAreas(context, name);
-  const where: Where = { year: context.time.firstYear + 1 };
+  const where: Where = { year: context.time.firstYear };
   const onTheWay = spec['survival-on-the-way'] ?? 1;
   const wayPath = [name, 'survival-on-the-way'];
   const survivalOnTheWay = context.numbers.value(onTheWay, wayPath, where);
@@ -200,7 +200,7 @@ function positive(
   path: readonly string[],
   dimension: 'length',
 ): number | null {
-  const value = context.numbers.value(text, path, { year: context.time.firstYear + 1, dimension });
+  const value = context.numbers.value(text, path, { year: context.time.firstYear, dimension });
   if (value > 0) return value;
   if (!Number.isNaN(value)) {
     fail(context, 'out-of-range', path, {
@@ -215,7 +215,7 @@ function attractionOf(context: Context, name: string, spec: DispersalSpec): Floa
   const expression = spec.attraction ?? 1;
   const path = [name, 'attraction'];
   return Float64Array.from(context.patches, (patch, p) => {
-    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear + 1));
+    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
     withinBounds(context, { expression, path, what: 'attraction' }, { value, bounds: 'from zero', patch: patch.name });
     return value;
   });

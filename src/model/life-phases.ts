@@ -79,7 +79,7 @@ function femaleShare(context: Context): number {
   const expression = context.spec.births?.['female-share'];
   if (expression === undefined || typeof expression === 'object') return 1;
   const path = ['births', 'female-share'];
-  const value = context.numbers.value(expression, path, { year: context.time.firstYear + 1 });
+  const value = context.numbers.value(expression, path, { year: context.time.firstYear });
   if (value >= 0 && value <= 1) return value;
   if (!Number.isNaN(value)) {
     fail(context, 'share-out-of-range', path, {

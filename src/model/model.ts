@@ -126,6 +126,7 @@ export interface Model {
   readonly date: string | null;
   readonly status: string | null;
   readonly invented: boolean;
+  /** Calendar year of step 1 and of the count that ends it; the start is the count of the year before. */
   readonly firstYear: number;
   readonly steps: number;
   readonly counts: 'females' | 'both sexes';

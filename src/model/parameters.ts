@@ -18,7 +18,7 @@ export function resolveParameters(context: Context): readonly NamedNumber[] {
   const written = context.spec.parameters ?? {};
   return namedExpressions(context.spec).map(({ name, expression, path }) => ({
     name,
-    value: context.numbers.value(expression, path, { year: context.time.firstYear + 1 }),
+    value: context.numbers.value(expression, path, { year: context.time.firstYear }),
     expression: String(expression),
     ...sourceOf(written[name]),
   }));

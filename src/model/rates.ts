@@ -26,7 +26,7 @@ export interface TableRequest {
 export function buildTable(context: Context, request: TableRequest): RateTable {
   const varies = tableVaries(context, request);
   const { steps, firstYear } = context.time;
-  const years = varies ? Array.from({ length: steps }, (_, t) => firstYear + t + 1) : [firstYear + 1];
+  const years = varies ? Array.from({ length: steps }, (_, t) => firstYear + t) : [firstYear];
   const epochs: Float64Array[] = [];
   const epochOf = new Int32Array(varies ? steps : 0);
   years.forEach((year, t) => {

@@ -41,7 +41,8 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
   const { patches, attributes, attributeNames } = resolvePatches(spec, findings);
   const numbers = new Numbers(namedExpressions(spec), attributeNames, findings);
   const defaults: string[] = [];
-  if (spec['first-year'] === undefined) defaults.push('Years are counted from 0, since no `first-year` is given.');
+  if (spec['first-year'] === undefined)
+    defaults.push('The first step is year 1, and the start year 0, since no `first-year` is given.');
   return {
     spec,
     patches,
@@ -52,7 +53,7 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
     },
     numbers,
     attributes,
-    time: { firstYear: spec['first-year'] ?? 0, steps: spec.years },
+    time: { firstYear: spec['first-year'] ?? 1, steps: spec.years },
     toldBounds: new Set(),
     findings,
     defaults,

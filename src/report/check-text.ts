@@ -5,7 +5,6 @@ import type { DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { fixed } from './rounded.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
-import { joinBlocks } from './text.ts';
 
 export interface Understood {
   readonly model: Model;
@@ -18,7 +17,7 @@ export interface Understood {
 
 export function checkText(understood: Understood, style: TextStyle): string {
   const { model } = understood;
-  return joinBlocks([
+  return [
     bold(printable(model.title), style),
     wrap(sizeWords(understood), style),
     section(
@@ -38,7 +37,9 @@ export function checkText(understood: Understood, style: TextStyle): string {
       style,
     ),
     section('Defaults that were used', model.defaults, style),
-  ]);
+  ]
+    .filter((block) => block !== '')
+    .join('\n\n');
 }
 
 function section(title: string, lines: readonly string[], style: TextStyle): string {
@@ -52,7 +53,7 @@ function sizeWords({ model, startAnimals, growthRate }: Understood): string {
   const counts = model.counts === 'females' ? 'females' : 'animals of both sexes';
   const change = fixed((growthRate - 1) * 100, 2);
   return (
-    `${patches}, ${classes} (${model.classes.join(', ')}), ${model.steps} years from ${model.firstYear}; ` +
+    `${patches}, ${classes} (${model.classes.join(', ')}), ${model.steps} years from ${model.firstYear} on; ` +
     `${startAnimals} ${counts} at the start. Near zero the whole changes by ${change} % a year (growth rate ${fixed(growthRate, 4)}).`
   );
 }

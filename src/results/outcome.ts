@@ -26,7 +26,7 @@ export function summariseOutcome(finished: FinishedRuns, { rule, column, firstYe
     });
     const everBelow = fallen.reduce((sum, one) => sum + one, 0) / runs;
     return {
-      year: firstYear + t + 1,
+      year: firstYear + t,
       everBelow,
       lower: Math.max(0, everBelow - band),
       upper: Math.min(1, everBelow + band),

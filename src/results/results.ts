@@ -57,6 +57,7 @@ export interface RunResults {
   readonly seed: number;
   readonly replicates: number;
   readonly years: number;
+  /** Calendar year of step 1 and of the count that ends it; the start is the count of the year before. */
   readonly firstYear: number;
   readonly abundance: {
     readonly whole: readonly YearSummary[];
@@ -81,6 +82,7 @@ export interface PathResults {
   readonly model: string;
   readonly hash: string;
   readonly years: number;
+  /** Calendar year of step 1 and of the count that ends it; the start is the count of the year before. */
   readonly firstYear: number;
   readonly abundance: readonly {
     readonly year: number;

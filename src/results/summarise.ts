@@ -59,7 +59,7 @@ export function summarisePath({ model, raw, provenance, cautions }: PathToSummar
   const abundance = Array.from({ length: raw.steps + 1 }, (_, t) =>
     order.flatMap((p) =>
       classes.map((name, c) => ({
-        year: firstYear + t,
+        year: firstYear - 1 + t,
         patch: patches[p]?.name ?? '',
         class: name,
         animals: raw.animals[(t * patches.length + p) * classes.length + c] ?? 0,
@@ -82,7 +82,7 @@ function counts({ steps }: FinishedRuns): readonly number[] {
 function course(model: Model, finished: FinishedRuns, column: number): readonly YearSummary[] {
   return counts(finished).map((t) => {
     const values = finished.at(t, column);
-    return { year: model.firstYear + t, ...momentsOf(values), quantiles: quantilesOf(values) };
+    return { year: model.firstYear - 1 + t, ...momentsOf(values), quantiles: quantilesOf(values) };
   });
 }
 
@@ -106,6 +106,6 @@ function patchesInUse(model: Model, finished: FinishedRuns): RunResults['patches
     model.patches.forEach((_, p) => {
       finished.at(t, firstPatchColumn + p).forEach((animals, r) => (used[r] = (used[r] ?? 0) + (animals > 0 ? 1 : 0)));
     });
-    return { year: model.firstYear + t, mean: momentsOf(used).mean, quantiles: quantilesOf(used) };
+    return { year: model.firstYear - 1 + t, mean: momentsOf(used).mean, quantiles: quantilesOf(used) };
   });
 }

@@ -13,7 +13,12 @@ export const CoreSchema = Type.Object(
     skein: Type.Literal(1, { description: 'Version of this language.', examples: [1] }),
     study: Study,
     'first-year': Type.Optional(
-      Type.Integer({ description: 'Calendar year of the first step.', examples: [2027], default: 0 }),
+      Type.Integer({
+        description:
+          'Calendar year of the first step and of the count that ends it; the start is the count of the year before.',
+        examples: [2027],
+        default: 1,
+      }),
     ),
     years: Type.Integer({
       minimum: 1,
