@@ -1,0 +1,23 @@
+// The public library: from the text of a model to what a run says.
+export type { Diagnostic, Place } from './diagnostic/diagnostic.ts';
+export { renderDiagnostics } from './diagnostic/render.ts';
+export { readSpec, type ReadSpec } from './spec/read.ts';
+export type { SpecDocument } from './spec/document.ts';
+export { locateFinding, type Finding } from './spec/finding.ts';
+export { applySettings, type Settings } from './spec/settings.ts';
+export { printSpec } from './spec/print.ts';
+export type { Spec } from './spec/schema/spec.ts';
+export {
+  compileSpec,
+  followPath,
+  runModel,
+  type Compilation,
+  type CompiledModel,
+  type RunOptions,
+} from './pipeline.ts';
+export { buildBlock } from './compile/block.ts';
+export type { BlockMatrix } from './compile/block-matrix.ts';
+export { leading, type Leading } from './numeric/leading.ts';
+export type { SparseMatrix } from './numeric/sparse.ts';
+export type { PathResults, RunResults } from './results/results.ts';
+export { buildReport, type ReportInput } from './report/report.ts';
