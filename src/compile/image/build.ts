@@ -3,7 +3,8 @@ import * as layout from '../../../assembly/layout.ts';
 import type { Landscape } from '../../landscape/landscape.ts';
 import type { Model } from '../../model/model.ts';
 import type { CrowdingCoefficients } from '../coefficients.ts';
-import { crowdingRecord, firstPhaseOf } from './crowding.ts';
+import { readingPhase } from '../multipliers.ts';
+import { crowdingRecord } from './crowding.ts';
 import { keysOfNames } from './keys.ts';
 import { phaseRecord } from './phases.ts';
 import { plain, type Section, SectionList } from './section.ts';
@@ -84,7 +85,7 @@ function phaseProgram(list: SectionList, { model, landscape, coefficients }: Ima
   return model.phases.flatMap((phase, index) => {
     const readHere = model.crowding.flatMap((crowding, slot) => {
       const solved = coefficients[slot];
-      if (firstPhaseOf(crowding) !== index || solved === undefined) return [];
+      if (readingPhase(model, slot) !== index || solved === undefined) return [];
       return [crowdingRecord(list, { crowding, coefficients: solved, slot, key: conditionKeys[slot] ?? 0 })];
     });
     const key = phaseKeys[index] ?? 0;

@@ -12,11 +12,6 @@ const formCodes: Readonly<Record<CrowdingForm, number>> = {
   ceiling: layout.formCeiling,
 };
 
-/** Index of the first phase that a crowding changes: it is read just before. */
-export function firstPhaseOf(crowding: Crowding): number {
-  return crowding.changes.reduce((first, change) => Math.min(first, change.phase), Infinity);
-}
-
 export interface CrowdingRecord {
   readonly crowding: Crowding;
   readonly coefficients: CrowdingCoefficients;
