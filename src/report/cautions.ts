@@ -40,7 +40,7 @@ function movement(model: Model): readonly string[] {
   const all = rules.every((rule) => rule.leavers === 'all arrive');
   return [
     all
-      ? 'All leavers are taken to arrive in some patch, however far: isolation then costs nothing by itself, and the worth of a link depends on this choice.'
+      ? 'All leavers are taken to head for some patch, however far; isolation then costs only what dying on the way costs. The worth of a link depends on this choice.'
       : 'Leavers may miss every patch and are then lost: isolation costs animals, and the worth of a link depends on this choice.',
   ];
 }

@@ -29,7 +29,7 @@ export function buildReport(input: ReportInput): string {
     style: styleSheet(foot),
     script: input.pageScript,
     data: view,
-    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages">${rest}</div><footer>${foot}</footer>`,
+    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${rest}</div><footer>${foot}</footer>`,
   });
 }
 

@@ -60,6 +60,8 @@ summary{cursor:pointer;padding:.3rem 0;color:var(--deep)}
 pre{background:var(--tint);padding:1rem;overflow:auto;font:0.85rem/1.5 ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monospace;tab-size:2}
 code{font:0.92em ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monospace;overflow-wrap:anywhere}
 .readout{color:var(--soft)}
+.beside{display:grid;grid-template-columns:repeat(auto-fit,minmax(min(100%,20rem),1fr));gap:0 2rem}
+.beside figure{display:flex;flex-direction:column;margin:0 0 1.5rem}.beside figure svg{width:100%;max-width:26rem}.beside .definition{flex:1}.beside h3{margin-top:1rem}
 .smalls{display:grid;grid-template-columns:repeat(auto-fill,minmax(12.5rem,1fr));gap:1rem 1.2rem;margin:1rem 0}
 .smalls svg{width:100%;height:auto;display:block}
 .limits li{margin:.5rem 0;max-width:42rem}

@@ -18,10 +18,12 @@ p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max
 table,th small{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}th,td{padding:.12rem .6rem .12rem 0}
 tr,figure,dl div{break-inside:avoid}
 figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
-.map svg{max-height:105mm;width:auto;margin:0 auto}
+
+.map svg{max-height:112mm;width:auto;margin:0 auto}
 .chart .wide svg{max-height:62mm;width:auto}
-.chances{display:grid;grid-template-columns:1fr 1fr;gap:.3rem 1.2rem}.chances figure{margin:.2rem 0}.chances .wide{display:none!important}.chances .narrow{display:block!important}.chances svg{width:100%}.chances h3{margin:.3rem 0 0;font-size:10.5pt}.chances .definition{margin:0}
-.pages{break-before:page}
+.beside{grid-template-columns:repeat(auto-fit,minmax(54mm,1fr));gap:0 1rem}.beside figure{margin:.2rem 0}.beside h3{margin:.3rem 0 0;font-size:10.5pt}.beside .definition{margin:0;font-size:8.4pt;line-height:1.3}
+svg>rect:first-of-type{fill:#fff}
+.pages{break-before:page}.more{break-before:auto}
 .smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}
 dl{margin:.4rem 0}.numbers div,.concepts div{grid-template-columns:11rem 1fr;padding:.1rem 0}
 details::details-content{content-visibility:visible!important;display:block!important;height:auto!important}

@@ -3,8 +3,9 @@ import type { Chance, RunResults } from '../results/results.ts';
 import { decimal, percent, plain, whole } from '../view/number.ts';
 import { answer, finished, lastYear } from './answer.ts';
 import { sparkLine } from './spark-line.ts';
-export { joinBlocks } from './terminal.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
+
+export { joinBlocks } from './terminal.ts';
 
 export interface RunTextStyle extends TextStyle {
   /** What one individual is called: 'females' or 'animals'. */

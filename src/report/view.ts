@@ -1,5 +1,6 @@
 // From results and model to what the figures are drawn from. Patches return to the order of their author's list.
 import type { OutcomeResult, YearSummary } from '../results/results.ts';
+import { inFileOrder } from '../results/summarise.ts';
 import type { Fan, LinkView, OutcomeView, PatchView, ReportView } from '../view/contract.ts';
 import type { ReportInput } from './input.ts';
 import { estimateMovement, type LinkFlow } from './movement.ts';
@@ -9,7 +10,7 @@ const mostLinks = 400;
 
 export function summariseForView(input: ReportInput): ReportView {
   const { model, results } = input;
-  const order = model.patches.map((_, p) => p).sort((a, b) => fileOrder(input, a) - fileOrder(input, b));
+  const order = inFileOrder(model);
   const flows = estimateMovement(input) ?? [];
   const links = strongest(flows, order);
   return {
@@ -28,7 +29,7 @@ export function summariseForView(input: ReportInput): ReportView {
   };
 }
 
-/** Counts before the first at which the outcome is looked at have chance 0. */
+/** Counts at which the outcome is not looked at, such as the start, have chance 0 and lie before `first`. */
 function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): OutcomeView {
   const byYear = new Map(outcome.byYear.map((one) => [one.year, one]));
   const series = (part: 'everBelow' | 'lower' | 'upper' | 'below') =>
@@ -36,15 +37,15 @@ function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): Ou
   return {
     name: outcome.name,
     definition: outcome.definition,
+    first: Math.max(
+      0,
+      counts.findIndex(({ year }) => byYear.has(year)),
+    ),
     ever: series('everBelow'),
     lower: series('lower'),
     upper: series('upper'),
     below: series('below'),
   };
-}
-
-function fileOrder({ model }: ReportInput, p: number): number {
-  return model.patches[p]?.fileOrder ?? p;
 }
 
 function patchView({ model, results }: ReportInput, p: number): readonly PatchView[] {

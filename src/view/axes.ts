@@ -44,7 +44,7 @@ export function axes(area: Plot, write: (value: number) => string): Markup {
 }
 
 function yearTicks(area: Plot): readonly Markup[] {
-  const room = Math.max(2, Math.floor((area.right - area.left) / 70));
+  const room = Math.max(2, Math.floor((area.right - area.left) / 62));
   const ticks = area.x.ticks(room).filter((year) => Number.isInteger(year));
   return ticks.map((year) => {
     const x = area.x(year);

@@ -27,11 +27,14 @@ export function drawChance(chart: ChanceChart, size: Size): Markup {
 }
 
 function curves(place: Plot, outcome: OutcomeView, years: Series): Markup {
-  const scaled = (series: Series) => series.map((chance) => chance * 100);
-  const band = ribbon(place, years, scaled(outcome.lower), scaled(outcome.upper));
-  const ever = course(place, years, scaled(outcome.ever));
-  const below = course(place, years, scaled(outcome.below));
-  return mark`<path d="${band}" fill="${tint}"/><path d="${below}" fill="none" stroke="${umber}" stroke-width="1.75" stroke-dasharray="2 3.5"/><path d="${ever}" fill="none" stroke="${deep}" stroke-width="2.5"/>`;
+  const seen = years.slice(outcome.first);
+  const scaled = (series: Series) => series.slice(outcome.first).map((chance) => chance * 100);
+  const band = ribbon(place, seen, scaled(outcome.lower), scaled(outcome.upper));
+  const ever = course(place, seen, scaled(outcome.ever));
+  const below = course(place, seen, scaled(outcome.below));
+  return mark`<path d="${band}" fill="${tint}"/>
+<path d="${below}" fill="none" stroke="${umber}" stroke-width="1.75" stroke-dasharray="2 3.5"/>
+<path d="${ever}" fill="none" stroke="${deep}" stroke-width="2.5"/>`;
 }
 
 function course(place: Plot, years: Series, values: Series): string {

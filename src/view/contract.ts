@@ -36,6 +36,8 @@ export interface LinkView {
 export interface OutcomeView {
   readonly name: string;
   readonly definition: string;
+  /** The first count that is looked at; the series hold nothing before it. */
+  readonly first: number;
   readonly ever: Series;
   readonly lower: Series;
   readonly upper: Series;

@@ -88,7 +88,7 @@ describe('the report in a browser', () => {
 
   it('reads a chart at any year by keyboard and by pointer', async () => {
     const { page, close } = await open(browser, html);
-    const chart = page.locator('#chances .wide[role=slider]').first();
+    const chart = page.locator('#chances [role=slider]').first();
     await chart.focus();
     await page.keyboard.press('Home');
     expect(await chart.getAttribute('aria-valuetext')).toMatch(/^2026: none of 100 futures have fallen below by then/);

@@ -1,6 +1,7 @@
 // The model under the seven headings of the ODD protocol (Grimm et al. 2020, JASSS 23(2):7), written from the model itself.
 import type { Model } from '../../model/model.ts';
 import type { RunResults } from '../../results/results.ts';
+import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { designConcepts } from './concepts.ts';
@@ -44,7 +45,7 @@ function entities(model: Model): Markup {
       : model.oldest === 'open-ended'
         ? ' The oldest class is open-ended: its animals stay in it.'
         : ' The oldest class is terminal: its animals leave the model at ageing.';
-  const names = model.patches.map((patch, i) => mark`${i > 0 ? ', ' : ''}<bdi>${patch.name}</bdi>`);
+  const names = inFileOrder(model).map((p, i) => mark`${i > 0 ? ', ' : ''}<bdi>${model.patches[p]?.name ?? ''}</bdi>`);
   const classes = model.classes.map((name, i) => mark`${i > 0 ? ', ' : ''}<bdi>${name}</bdi>`);
   return mark`<p>The state is the number of animals of each class in each patch: ${plain(model.classes.length)} classes (${classes}) in ${plain(model.patches.length)} patches ${places} (${names}). ${what}${oldest} One step is a year; a run has ${plain(model.steps)} of them, from ${String(model.firstYear)} on. Animals are whole.</p>`;
 }

@@ -1,5 +1,6 @@
 // Tables of rates: one row where all patches agree, else one a patch; the first and the last value where they change.
 import type { DemographyPhase, Model, RateTable } from '../../model/model.ts';
+import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Markup } from '../../view/markup.ts';
 
 /** Four significant digits. */
@@ -11,7 +12,7 @@ export function rateTable(model: Model, rates: RateTable, caption: string): Mark
   const classes = model.classes.length;
   const row = (p: number) =>
     model.classes.map((_, c) => entry(rates.epochs.map((epoch) => epoch[p * classes + c] ?? 0)));
-  const rows = model.patches.map((patch, p) => ({ name: patch.name, cells: row(p) }));
+  const rows = inFileOrder(model).map((p) => ({ name: model.patches[p]?.name ?? '', cells: row(p) }));
   const alike = rows.every((one) => one.cells.join('|') === rows[0]?.cells.join('|'));
   const shown = alike ? rows.slice(0, 1).map((one) => ({ ...one, name: 'every patch' })) : rows;
   const body = shown.map(
@@ -24,8 +25,8 @@ export function rateTable(model: Model, rates: RateTable, caption: string): Mark
 
 export function matrixTables(model: Model, phase: DemographyPhase): Markup {
   const size = model.classes.length * model.classes.length;
-  const matrices = model.patches.map((patch, p) => ({
-    name: patch.name,
+  const matrices = inFileOrder(model).map((p) => ({
+    name: model.patches[p]?.name ?? '',
     fates: first(phase.fates, p, size),
     births: first(phase.births, p, size),
   }));

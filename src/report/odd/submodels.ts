@@ -1,5 +1,6 @@
 // Every phase and condition with its numbers.
 import type { Crowding, DispersalPhase, Model, Phase } from '../../model/model.ts';
+import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { classNames } from './phases.ts';
@@ -34,7 +35,7 @@ function numbers(phase: Phase, model: Model): Content {
 }
 
 function ageing(model: Model, name: string, advance: number, next: number): Markup | null {
-  if (advance === 0) return mark`<bdi>${name}</bdi> stays. `;
+  if (advance === 0 || model.classes[next] === name) return mark`<bdi>${name}</bdi> stays. `;
   const share = advance === 1 ? '' : ` (share ${digits(advance)}, the others stay)`;
   if (next < 0) return mark`<bdi>${name}</bdi> leaves the model${share}. `;
   return mark`<bdi>${name}</bdi> becomes <bdi>${model.classes[next] ?? ''}</bdi>${share}. `;
@@ -48,7 +49,7 @@ function rule({ rule }: DispersalPhase): string {
   const kernel = `Where leavers end follows a negative exponential kernel in the plane with scale ${digits(scaleKm)} km (mean distance ${digits(2 * scaleKm)} km)${reach}, times the attraction of the target.`;
   const arrive =
     rule.leavers === 'all arrive'
-      ? ' Leavers share out over the patches within reach, so isolation costs nothing by itself.'
+      ? ' Leavers share out over the patches within reach, and isolation costs only what dying on the way costs.'
       : ' The kernel is a density over the plane times the area of the target; leavers that meet no patch are lost.';
   const way = [
     rule.hazardPerKm > 0 ? ` The hazard on the way is ${digits(rule.hazardPerKm)} per km.` : '',
@@ -75,8 +76,9 @@ function crowding(one: Crowding, model: Model): Markup {
 }
 
 function byPatch(model: Model, values: Float64Array, what: string): Markup {
-  const list = model.patches.map(
-    (patch, p) => mark`${p > 0 ? ', ' : ''}<bdi>${patch.name}</bdi> ${plain(values[p] ?? 0)}`,
-  );
+  const list = inFileOrder(model).map((p, i) => {
+    const name = model.patches[p]?.name ?? '';
+    return mark`${i > 0 ? ', ' : ''}<bdi>${name}</bdi> ${plain(values[p] ?? 0)}`;
+  });
   return mark`${what}: ${list}.`;
 }

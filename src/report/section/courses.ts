@@ -5,22 +5,34 @@ import { drawChance } from '../../view/chance.ts';
 import { drawAbundance } from '../../view/abundance.ts';
 import { mark, type Markup } from '../../view/markup.ts';
 import { decimal, plain, whole } from '../../view/number.ts';
+import { pick } from '../../view/series.ts';
 import { drawSmallFan } from '../../view/small-fan.ts';
 
 export const chartSizes = {
-  chance: { wide: { width: 720, height: 280 }, narrow: { width: 340, height: 300 } },
+  chance: { wide: { width: 720, height: 280 }, narrow: { width: 340, height: 290 } },
   fan: { wide: { width: 720, height: 320 }, narrow: { width: 340, height: 320 } },
   small: { width: 220, height: 146 },
 } as const;
 
 export function chancesSection(view: ReportView): Markup | null {
   if (view.outcomes.length === 0) return null;
-  const figures = view.outcomes.map((outcome, k) => {
-    const draw = (size: 'wide' | 'narrow') =>
-      drawChance({ outcome, years: view.years, marked: null }, chartSizes.chance[size]);
-    return mark`<figure class="chart"><h3><bdi>${outcome.name}</bdi></h3><p class="definition"><bdi>${outcome.definition}</bdi></p>${both('chance', draw, k)}</figure>`;
-  });
-  return mark`<section id="chances" aria-labelledby="chances-title"><h2 id="chances-title">Chances by year</h2><p>The band holds for the whole curve at once: with 95 % confidence the curve that endless runs would give lies inside it in every year. It accounts for the number of runs, not for what is not known about the model.</p><div class="chances">${figures}</div></section>`;
+  const figures = view.outcomes.map((_, k) => chanceFigure(view, k));
+  const many = view.outcomes.length > 1 ? ' beside' : '';
+  return mark`<section id="chances" aria-labelledby="chances-title"><h2 id="chances-title">Chances by year</h2>
+<p>The band holds for the whole curve at once: with 95 % confidence the curve that endless runs would give lies inside it in
+every year. It accounts for the number of runs, not for what is not known about the model.</p>
+<div class="chances${many}">${figures}</div></section>`;
+}
+
+/** Several outcomes stand side by side, each as narrow as on a phone. */
+function chanceFigure(view: ReportView, k: number): Markup {
+  const outcome = pick(view.outcomes, k);
+  const draw = (size: 'wide' | 'narrow') =>
+    drawChance({ outcome, years: view.years, marked: null }, chartSizes.chance[size]);
+  const one = mark`<div data-figure="chance" data-index="${String(k)}">${draw('narrow')}</div>`;
+  const pictures = view.outcomes.length > 1 ? one : both('chance', draw, k);
+  return mark`<figure class="chart"><h3><bdi>${outcome.name}</bdi></h3>
+<p class="definition"><bdi>${outcome.definition}</bdi></p>${pictures}</figure>`;
 }
 
 export function abundanceSection(view: ReportView, results: RunResults): Markup {
