@@ -71,15 +71,30 @@ function firstFault(size: i32): i32 {
   if (size < layout.headerBytes) return fault(layout.faultSize, size);
   if (header(layout.headerMagic) !== layout.imageMagic) return fault(layout.faultMagic, header(layout.headerMagic));
   if (header(layout.headerMajor) !== layout.imageMajor) return fault(layout.faultMajor, header(layout.headerMajor));
-  if (header(layout.headerSize) !== size) return fault(layout.faultSize, size);
-  for (let row = 0; row < header(layout.headerSections); row++) {
+  const rows = header(layout.headerSections);
+  const room = (size - layout.headerBytes) / layout.rowBytes;
+  if (header(layout.headerSize) !== size || rows < 0 || rows > room) return fault(layout.faultSize, size);
+  for (let row = 0; row < rows; row++) {
     const kind = directory(row, layout.rowKind);
     if (kind < 1 || kind > layout.highestKind) return fault(layout.faultKind, kind);
+    if (!fits(row, size)) return fault(layout.faultSize, size);
+  }
+  for (let word = layout.headerYearProgram; word <= layout.headerStart; word++) {
+    if (<u32>header(word) >= <u32>rows) return fault(layout.faultSize, size);
   }
   const inYear = firstUnknown(header(layout.headerYearProgram));
   if (inYear !== 0) return fault(layout.faultOpcode, inYear);
   const inPhases = firstUnknown(header(layout.headerPhaseProgram));
   return inPhases !== 0 ? fault(layout.faultOpcode, inPhases) : layout.faultNone;
+}
+
+/** Whether a section stands within the image, on its alignment. */
+function fits(row: i32, size: i32): bool {
+  const type = directory(row, layout.rowType);
+  const bytes: u64 = type === layout.typeF64 ? 8 : type === layout.typeI32 ? 4 : 1;
+  const offset = <u32>directory(row, layout.rowOffset);
+  const end = u64(offset) + u64(<u32>directory(row, layout.rowCount)) * bytes;
+  return offset % layout.sectionAlignment === 0 && end <= u64(size);
 }
 
 function firstUnknown(program: i32): i32 {

@@ -36,6 +36,10 @@ describe('an image', () => {
       'other-version: The compiled model has version 9; this kernel runs version 1.',
     );
     expect(faultAfter((words) => (words[layout.headerSize] = 16))).toMatch(/^damaged: /);
+    const firstOffset = layout.headerBytes / 4 + layout.rowOffset;
+    expect(faultAfter((words) => (words[firstOffset] = 1 << 20))).toMatch(/^damaged: /);
+    expect(faultAfter((words) => (words[layout.headerStart] = 99))).toMatch(/^damaged: /);
+    expect(faultAfter((words) => (words[layout.headerSections] = 1 << 20))).toMatch(/^damaged: /);
     expect(faultAfter((words) => (words[layout.headerBytes / 4] = 99))).toBe(
       'unknown-kind: The compiled model has a section of unknown kind 99.',
     );
