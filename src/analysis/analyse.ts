@@ -96,6 +96,7 @@ export function analyse(input: AnalysisInput): Analysis {
       losslessDispersal: input.losslessDispersal ?? false,
       irreducible: found.irreducible,
       period: found.period,
+      entries: block.matrix.values.length,
     }),
     reasons: told,
   };

@@ -1,13 +1,15 @@
 // The parts of the analysis that need the matrix and its vectors alone.
 import type { BlockMatrix } from '../compile/block-matrix.ts';
 import { exp } from '../machine/pinned.ts';
+import { fadingSums } from '../numeric/fading.ts';
 import type { Leading } from '../numeric/leading.ts';
 import { forEachEntry } from '../numeric/sparse.ts';
 import { because, type Answer } from './answer.ts';
+import { mostEntries } from './cautions.ts';
 import { growthStandardError } from './growth-error.ts';
 import type { AnalysisInput, NamedCovariance, ParameterTangent } from './input.ts';
 import { stateName } from './label.ts';
-import { generationTimes, lifetimes, netReproductiveRate, type LifeSplit } from './life-history.ts';
+import { generationTimes, lifetimes, nextGeneration, type LifeSplit } from './life-history.ts';
 import type { Analysis } from './schema.ts';
 import { entrySensitivities, sensitivityAlong, type Vectors } from './sensitivity.ts';
 import { smallNoiseGrowth } from './small-noise.ts';
@@ -35,8 +37,10 @@ export function worthAnswer(block: BlockMatrix, { left }: Vectors): NonNullable<
 
 export function entriesAnswer(block: BlockMatrix, vectors: Vectors): NonNullable<Analysis['entries']> {
   const { sensitivity, elasticity } = entrySensitivities(block.matrix, vectors);
+  const least = elasticity.length > mostEntries ? (elasticity.slice().sort()[elasticity.length - mostEntries] ?? 0) : 0;
   const entries: NonNullable<Analysis['entries']> = [];
   forEachEntry(block.matrix, (row, column, value, k) => {
+    if ((elasticity[k] ?? 0) < least || entries.length >= mostEntries) return;
     entries.push({
       from: stateName(block, column),
       to: stateName(block, row),
@@ -71,12 +75,13 @@ export function lifeAnswers(block: BlockMatrix, split: LifeSplit | undefined, ve
     const none = because('The matrix was given without telling births from fates.');
     return { netReproductiveRate: none, generationTime: none, lifetimes: none };
   }
-  const netRate = netReproductiveRate(split);
-  const lives = lifetimes(split.fates);
+  const fading = fadingSums(split.fates);
+  const next = nextGeneration(split, fading);
+  const lives = lifetimes(split.fates, fading);
   return {
-    netReproductiveRate: netRate === null ? because(immortal) : { value: netRate },
+    netReproductiveRate: next ? { value: next.netRate } : because(immortal),
     generationTime: vectors
-      ? { value: generationTimes(split, vectors, netRate) }
+      ? { value: generationTimes(split, vectors, next) }
       : because('There is no single stable distribution.'),
     lifetimes: lives
       ? {

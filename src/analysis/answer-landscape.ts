@@ -20,7 +20,7 @@ export function patchesAnswer({ block }: AnalysisInput, vectors: Vectors): NonNu
     importance[patch] = (importance[patch] ?? 0) + here * (vectors.left[s] ?? 0);
   });
   const roles = patchRoles(matrix, states, vectors.right, patches.length);
-  const losses = patchRemovalLosses(matrix, states, vectors.growthRate, importance);
+  const losses = patchRemovalLosses(matrix, states, vectors, importance);
   return roles.map((role, p) => ({
     patch: patches[p] ?? '?',
     share: share[p] ?? 0,
@@ -34,7 +34,7 @@ export function linksAnswer({ block }: AnalysisInput, vectors: Vectors): NonNull
   const phases = phaseSensitivities(block.phaseMaps, places, vectors);
   const links = linkValues({
     matrix: block.matrix,
-    growthRate: vectors.growthRate,
+    vectors,
     phases,
     places,
     classCount: block.classes.length,

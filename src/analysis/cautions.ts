@@ -6,6 +6,9 @@ export const corridorParadox =
   'rate, whatever links are added (Karlin 1982; Altenberg 2012): do not judge corridors by it. Their benefit shows in runs with ' +
   'chance: refilling empty patches, years that differ between patches, crowding.';
 
+/** Entries listed; of a larger matrix those with the largest elasticities. */
+export const mostEntries = 10_000;
+
 export const smallChanges =
   'Sensitivities and elasticities hold for small changes of one number alone; large or joint changes must be run.';
 
@@ -22,9 +25,11 @@ export interface CautionFacts {
   readonly losslessDispersal: boolean;
   readonly irreducible: boolean;
   readonly period: number;
+  /** Of the matrix. */
+  readonly entries: number;
 }
 
-export function cautionsFor({ patches, losslessDispersal, irreducible, period }: CautionFacts): string[] {
+export function cautionsFor({ patches, losslessDispersal, irreducible, period, entries }: CautionFacts): string[] {
   const cautions = [meanYear, smallChanges];
   if (patches > 1) cautions.push(apparentSurvival);
   if (patches > 1 && losslessDispersal) cautions.push(corridorParadox);
@@ -38,6 +43,9 @@ export function cautionsFor({ patches, losslessDispersal, irreducible, period }:
     cautions.push(
       `All loops of the life cycle take a multiple of ${period} years, so numbers keep swinging with that period and never settle.`,
     );
+  }
+  if (entries > mostEntries) {
+    cautions.push(`Of ${entries} entries only the ${mostEntries} with the largest elasticities are listed.`);
   }
   return cautions;
 }

@@ -1,10 +1,9 @@
 // Lifetimes, young in a lifetime, and generation times, from the split of a matrix into fates and births.
 import { log } from '../machine/pinned.ts';
-import { solveBelow } from '../numeric/downstream.ts';
+import { fadingSums, type Fading } from '../numeric/fading.ts';
 import { leading } from '../numeric/leading.ts';
-import { findRoot } from '../numeric/root.ts';
-import { multiply, multiplyTransposed, transpose, weightedSum } from '../numeric/sparse-product.ts';
-import type { SparseMatrix } from '../numeric/sparse.ts';
+import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
+import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
 import { dot, type Vectors } from './sensitivity.ts';
 
 /** A = U + F: what becomes of the animals themselves, and their young. */
@@ -23,28 +22,70 @@ export interface Lifetimes {
  * η = 1ᵀN and its variance 1ᵀN(2N − I) − η² with N = (I − U)⁻¹ (Cochran & Ellner 1992), by two solves of (I − Uᵀ)x = b.
  * Null where somebody never dies (the fates alone do not fade).
  */
-export function lifetimes(fates: SparseMatrix): Lifetimes | null {
-  if (!(leading(fates).growthRate < 1)) return null;
-  const turned = transpose(fates);
-  const expectancy = solveBelow(turned, 1, new Float64Array(fates.columns).fill(1));
-  const twice = solveBelow(turned, 1, expectancy);
+export function lifetimes(fates: SparseMatrix, fading = fadingSums(fates)): Lifetimes | null {
+  if (!fading) return null;
+  const expectancy = fading.sumTransposed(new Float64Array(fates.columns).fill(1));
+  const twice = fading.sumTransposed(expectancy);
   const variance = expectancy.map((mean, i) => Math.max(0, 2 * (twice[i] ?? 0) - mean - mean * mean));
   return { expectancy, variance };
 }
 
+/** From one generation of newborns to the next. */
+export interface NextGeneration {
+  /** R0: young of a newborn in its life, weighted by what each kind of newborn leaves behind. */
+  readonly netRate: number;
+  /** Mean age of mothers in one cohort followed to its end; null without births or where kinds of newborns do not mix. */
+  readonly cohortAge: number | null;
+}
+
 /**
- * R0: young of a newborn in its life, weighted by what each kind of newborn leaves behind; ρ(F(I − U)⁻¹) (Cushing & Zhou
- * 1994). Found as the x at which U + F/x stands still, which asks for no inverse. 0 without births; null where
- * somebody never dies.
+ * R0 = ρ(K) with K = F(I − U)⁻¹ over the states that newborns enter (Cushing & Zhou 1994), and with its vectors u and b the
+ * age of mothers uᵀF N² b / uᵀF N b, which for one kind of newborn is Σ i φ_i / R0. Cost: one solve for each such state.
+ * Null where somebody never dies.
  */
-export function netReproductiveRate({ fates, births }: LifeSplit): number | null {
-  const standsAbove = (x: number): number => leading(weightedSum([1, fates], [1 / x, births])).growthRate - 1;
-  if (!(leading(fates).growthRate < 1)) return null;
-  if (leading(weightedSum([1, fates], [1, births])).growthRate <= leading(fates).growthRate) return 0;
-  let [low, high] = [1, 1];
-  while (standsAbove(low) < 0 && low > 1e-12) low /= 4;
-  while (standsAbove(high) > 0 && high < 1e12) high *= 4;
-  return findRoot(standsAbove, { low, high }, 1e-13);
+export function nextGeneration(split: LifeSplit, fading = fadingSums(split.fates)): NextGeneration | null {
+  if (!fading) return null;
+  const newborn = statesEntered(split.births);
+  if (newborn.length === 0) return { netRate: 0, cohortAge: null };
+  const found = leading(generationMatrix(split, newborn, fading));
+  if (!found.right || !found.left) return { netRate: found.growthRate, cohortAge: null };
+  const size = split.fates.columns;
+  const lived = fading.sum(spreadOver(newborn, found.right, size));
+  const worth = multiplyTransposed(split.births, spreadOver(newborn, found.left, size));
+  return { netRate: found.growthRate, cohortAge: dot(worth, fading.sum(lived)) / dot(worth, lived) };
+}
+
+/** R0 alone. */
+export function netReproductiveRate(split: LifeSplit): number | null {
+  return nextGeneration(split)?.netRate ?? null;
+}
+
+function statesEntered(births: SparseMatrix): number[] {
+  return [...new Set(births.rowIndex)].sort((a, b) => a - b);
+}
+
+function generationMatrix({ births }: LifeSplit, newborn: readonly number[], fading: Fading): SparseMatrix {
+  const [rowIndex, columnIndex, values]: [number[], number[], number[]] = [[], [], []];
+  const unit = new Float64Array(births.columns);
+  newborn.forEach((state, column) => {
+    unit[state] = 1;
+    const young = multiply(births, fading.sum(unit));
+    unit[state] = 0;
+    newborn.forEach((to, row) => {
+      const value = young[to] ?? 0;
+      if (value === 0) return;
+      rowIndex.push(row);
+      columnIndex.push(column);
+      values.push(value);
+    });
+  });
+  return sparseFromTriplets({ rows: newborn.length, columns: newborn.length, rowIndex, columnIndex, values });
+}
+
+function spreadOver(places: readonly number[], values: Float64Array, size: number): Float64Array {
+  const x = new Float64Array(size);
+  places.forEach((place, k) => (x[place] = values[k] ?? 0));
+  return x;
 }
 
 export interface GenerationTimes {
@@ -57,22 +98,15 @@ export interface GenerationTimes {
 }
 
 /** Each under its definition, in steps. Null where it does not exist. */
-export function generationTimes(split: LifeSplit, vectors: Vectors, netRate: number | null): GenerationTimes {
+export function generationTimes(split: LifeSplit, vectors: Vectors, next: NextGeneration | null): GenerationTimes {
   const { growthRate, right, left } = vectors;
   const worthOfBirths = dot(left, multiply(split.births, right));
   const stable = worthOfBirths > 0 ? (growthRate * dot(left, right)) / worthOfBirths : null;
-  const standsStill = Math.abs(growthRate - 1) < 1e-7;
-  const replacement = netRate && netRate > 0 ? (standsStill ? stable : log(netRate) / log(growthRate)) : null;
-  return { cohort: netRate ? cohortAge(split, netRate) : null, stable, replacement };
+  return { cohort: next?.cohortAge ?? null, stable, replacement: replacementTime(growthRate, next, stable) };
 }
 
-/**
- * At x = R0 the matrix U + F/x stands still; its mean age of mothers there is the cohort's, since then nobody's
- * contribution is discounted by growth.
- */
-function cohortAge({ fates, births }: LifeSplit, netRate: number): number | null {
-  const still = leading(weightedSum([1, fates], [1 / netRate, births]));
-  if (!still.right || !still.left) return null;
-  const worth = dot(multiplyTransposed(births, still.left), still.right) / netRate;
-  return worth > 0 ? dot(still.left, still.right) / worth : null;
+/** At λ = 1, where both logarithms are 0, it is the mean age of mothers in the stable population. */
+function replacementTime(growthRate: number, next: NextGeneration | null, stable: number | null): number | null {
+  if (!next || !(next.netRate > 0)) return null;
+  return Math.abs(growthRate - 1) < 1e-7 ? stable : log(next.netRate) / log(growthRate);
 }

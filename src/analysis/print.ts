@@ -92,10 +92,10 @@ function linkLines({ links }: Analysis, most: number): string[] {
 
 function firstYears({ transients, dampingRatio, oscillationSteps }: Analysis): string[] {
   if (!transients) return [];
-  const { firstStepRise, firstStepDrop, highest, lowest, lasting, fromStart } = transients;
+  const { stepsFollowed, firstStepRise, firstStepDrop, highest, lowest, lasting, fromStart } = transients;
   const lines = [
     `Against steady growth, numbers after one year can be ${told(firstStepDrop)} to ${told(firstStepRise)} times as many, by who is there.`,
-    `The furthest they can ever be: ${told(lowest.times)} times after ${lowest.step} years, ${told(highest.times)} times after ${highest.step}.`,
+    `The furthest they can be within ${stepsFollowed} years: ${told(lowest.times)} times after ${lowest.step}, ${told(highest.times)} times after ${highest.step}.`,
   ];
   if (lasting) lines.push(`For good they can be ${told(lasting.loss)} to ${told(lasting.gain)} times as many.`);
   if (fromStart?.lasting !== null && fromStart?.lasting !== undefined) {

@@ -1,9 +1,11 @@
 // What the growth rate loses when a patch or a link is taken away.
+import { irreducibleGrowth } from '../numeric/irreducible-pair.ts';
 import { leading } from '../numeric/leading.ts';
 import { principalPart } from '../numeric/sparse-product.ts';
-import { multiply, multiplyTransposed, weightedSum } from '../numeric/sparse-product.ts';
-import { entryAt, forEachEntry, sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
+import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
+import { entryAt, forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 import { statesByPatch, type PatchState } from './patches.ts';
+import type { Vectors } from './sensitivity.ts';
 import {
   firstOrderLoss,
   movedInsteadOfStaying,
@@ -16,7 +18,16 @@ const workLimit = 4e9;
 
 function workOf(matrix: SparseMatrix): number {
   const n = matrix.columns;
-  return n <= 160 ? 10 * n * n * n + 1e4 : 2e3 * matrix.values.length + 4e6;
+  return n <= 160 ? 3 * n * n * n + 1e4 : 200 * matrix.values.length + 4e6;
+}
+
+/** Growth of what is left, from the vectors of the whole where it still hangs together. */
+function growthOf(rest: SparseMatrix, vectors: Vectors, states: ArrayLike<number>): number {
+  const right = Float64Array.from(states, (state) => vectors.right[state] ?? 0);
+  const quick = right.every((share) => share > 0)
+    ? irreducibleGrowth(rest, { growthRate: vectors.growthRate, right })
+    : null;
+  return quick ?? leading(rest).growthRate;
 }
 
 /**
@@ -26,7 +37,7 @@ function workOf(matrix: SparseMatrix): number {
 export function patchRemovalLosses(
   matrix: SparseMatrix,
   states: readonly PatchState[],
-  growthRate: number,
+  vectors: Vectors,
   importance: Float64Array,
 ): (number | null)[] {
   const groups = statesByPatch(states, importance.length);
@@ -36,8 +47,8 @@ export function patchRemovalLosses(
   return groups.map((_, patch) => {
     if (!chosen.has(patch)) return null;
     const rest = states.flatMap((state, s) => (state.patch === patch ? [] : [s]));
-    const without = rest.length > 0 ? leading(principalPart(matrix, rest)).growthRate : 0;
-    return Math.max(0, growthRate - without);
+    const without = rest.length > 0 ? growthOf(principalPart(matrix, rest), vectors, rest) : 0;
+    return Math.max(0, vectors.growthRate - without);
   });
 }
 
@@ -61,7 +72,7 @@ export interface LinkValue {
 
 export interface LinkInput {
   readonly matrix: SparseMatrix;
-  readonly growthRate: number;
+  readonly vectors: Vectors;
   readonly phases: readonly PhaseSensitivity[];
   /** Place of state s of the matrix among all states of the phase maps. */
   readonly places: readonly number[];
@@ -82,7 +93,7 @@ export function linkValues(input: LinkInput): LinkValue[] {
   const chosen = new Set(order.slice(0, affordable));
   return links.map(({ link, firstOrder, row, column, index }, k) => {
     const exact = chosen.has(k);
-    const removalLoss = exact ? exactLoss(input, index, [row, column]) : firstOrder;
+    const removalLoss = exact ? exactLoss(input, index, { row, column }) : firstOrder;
     return { ...link, removalLoss: Math.max(0, removalLoss), exact };
   });
 }
@@ -114,37 +125,48 @@ function linksOf(phase: PhaseSensitivity, classCount: number, index: number): Fo
   return found;
 }
 
-function exactLoss(input: LinkInput, index: number, [row, column]: readonly [number, number]): number {
-  const share = entryAt(input.phases[index]?.map ?? input.matrix, row, column);
-  const removed = rankOne(input, index, [row, column]);
-  const without = dropRounding(weightedSum([1, input.matrix], [-share, removed]));
-  return input.growthRate - leading(without).growthRate;
+function exactLoss({ matrix, vectors, phases, places }: LinkInput, index: number, link: Place): number {
+  const share = entryAt(phases[index]?.map ?? matrix, link.row, link.column);
+  const after = phases.slice(index + 1).reduce((x, { map }) => multiply(map, x), unit(matrixSize(phases), link.row));
+  const earlier = phases.slice(0, index).reverse();
+  const before = earlier.reduce((x, { map }) => multiplyTransposed(map, x), unit(matrixSize(phases), link.column));
+  const left = withoutFlow(matrix, (i, j) => share * (after[places[i] ?? 0] ?? 0) * (before[places[j] ?? 0] ?? 0));
+  return (
+    vectors.growthRate -
+    growthOf(
+      left,
+      vectors,
+      places.map((_, s) => s),
+    )
+  );
 }
 
-/** (M_after e_row)(M_beforeᵀ e_column)ᵀ, over the states of the matrix. */
-function rankOne(input: LinkInput, index: number, [row, column]: readonly [number, number]): SparseMatrix {
-  const size = input.phases[index]?.map.rows ?? 0;
-  const after = input.phases.slice(index + 1).reduce((x, { map }) => multiply(map, x), unit(size, row));
-  const earlier = input.phases.slice(0, index).reverse();
-  const before = earlier.reduce((x, { map }) => multiplyTransposed(map, x), unit(size, column));
-  const entries = input.places.flatMap((place, s) => ((before[place] ?? 0) > 0 ? [s] : []));
-  const targets = input.places.flatMap((place, s) => ((after[place] ?? 0) > 0 ? [s] : []));
-  const pairs = entries.flatMap((j) => targets.map((i) => [i, j] as const));
-  return sparseFromTriplets({
-    rows: input.matrix.rows,
-    columns: input.matrix.columns,
-    rowIndex: pairs.map(([i]) => i),
-    columnIndex: pairs.map(([, j]) => j),
-    values: pairs.map(([i, j]) => (after[input.places[i] ?? 0] ?? 0) * (before[input.places[j] ?? 0] ?? 0)),
+interface Place {
+  readonly row: number;
+  readonly column: number;
+}
+
+function matrixSize(phases: readonly PhaseSensitivity[]): number {
+  return phases[0]?.map.rows ?? 0;
+}
+
+/** The matrix less `flow`, without the differences that rounding leaves where there should be nothing. */
+function withoutFlow(matrix: SparseMatrix, flow: (row: number, column: number) => number): SparseMatrix {
+  const { rows, columns } = matrix;
+  const columnStart = new Int32Array(columns + 1);
+  const rowIndex = new Int32Array(matrix.values.length);
+  const values = new Float64Array(matrix.values.length);
+  let filled = 0;
+  forEachEntry(matrix, (row, column, value) => {
+    const rest = value - flow(row, column);
+    if (rest > 1e-13 * value) {
+      rowIndex[filled] = row;
+      values[filled++] = rest;
+    }
+    columnStart[column + 1] = filled;
   });
-}
-
-/** Differences that rounding left where there should be nothing. */
-function dropRounding(matrix: SparseMatrix): SparseMatrix {
-  const columnIndex = new Int32Array(matrix.values.length);
-  forEachEntry(matrix, (_row, column, _value, k) => (columnIndex[k] = column));
-  const values = matrix.values.map((value) => (value < 1e-16 ? 0 : value));
-  return sparseFromTriplets({ ...matrix, columnIndex, values });
+  for (let j = 0; j < columns; j++) columnStart[j + 1] = Math.max(columnStart[j + 1] ?? 0, columnStart[j] ?? 0);
+  return { rows, columns, columnStart, rowIndex: rowIndex.slice(0, filled), values: values.slice(0, filled) };
 }
 
 function unit(size: number, place: number): Float64Array {

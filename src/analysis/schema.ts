@@ -67,6 +67,7 @@ export const LinkSchema = closed({
 export const TransientsSchema = closed({
   firstStepRise: number('Largest that any start can be after one step, against steady growth.'),
   firstStepDrop: number('Smallest that any start can be after one step.'),
+  stepsFollowed: Type.Integer({ minimum: 1, description: 'Steps over which highest and lowest were looked for.' }),
   highest: Extreme,
   lowest: Extreme,
   lasting: orNull(

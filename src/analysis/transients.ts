@@ -11,9 +11,11 @@ export interface TransientBounds {
   readonly firstStepRise: number;
   /** Smallest that any start can be after one step. */
   readonly firstStepDrop: number;
-  /** Largest that any start can ever be, and when. */
+  /** Steps over which `highest` and `lowest` were looked for. */
+  readonly stepsFollowed: number;
+  /** Largest that any start can be within them, and when. */
   readonly highest: { readonly times: number; readonly step: number };
-  /** Smallest that any start can ever be, and when. */
+  /** Smallest that any start can be within them, and when. */
   readonly lowest: { readonly times: number; readonly step: number };
   /** Largest and smallest size that any start can keep for good; null where numbers never settle (period above 1). */
   readonly lasting: { readonly gain: number; readonly loss: number } | null;
@@ -21,9 +23,9 @@ export interface TransientBounds {
   readonly kreiss: { readonly atLeast: number; readonly atMost: number } | null;
 }
 
-/** Steps followed, fewer in matrices of more than a million entries. */
-function longestFor(matrix: SparseMatrix): number {
-  return Math.round(Math.min(2000, Math.max(200, 2e9 / (matrix.values.length + 1))));
+/** Steps followed: 1000, fewer where the matrix is large. */
+function stepsFollowed(matrix: SparseMatrix): number {
+  return Math.round(Math.min(1000, Math.max(100, 3e8 / (matrix.values.length + 1))));
 }
 const kreissLimit = 300;
 
@@ -36,7 +38,7 @@ export function transientBounds(matrix: SparseMatrix, vectors: Vectors, primitiv
   let first = { high: 1, low: 1 };
   let highest = { times: 1, step: 0 };
   let lowest = { times: 1, step: 0 };
-  const longest = longestFor(matrix);
+  const longest = stepsFollowed(matrix);
   for (let step = 1; step <= longest; step++) {
     const next = multiplyTransposed(matrix, sizes).map((size) => size / vectors.growthRate);
     const [high, low] = [maximum(next), minimum(next)];
@@ -49,6 +51,7 @@ export function transientBounds(matrix: SparseMatrix, vectors: Vectors, primitiv
   }
   const worth = vectors.left.map((value) => value / dot(vectors.left, vectors.right));
   return {
+    stepsFollowed: longest,
     firstStepRise: first.high,
     firstStepDrop: first.low,
     highest,
@@ -96,7 +99,7 @@ export function pathFromStart(
   const times = [1];
   let settledSince: number | null = null;
   let animals = options.start;
-  const longest = Math.max(options.steps, longestFor(matrix));
+  const longest = Math.max(options.steps, stepsFollowed(matrix));
   for (let step = 0; step <= longest; step++) {
     const now = sum(animals) / total;
     if (step > 0 && step <= options.steps) times.push(now);

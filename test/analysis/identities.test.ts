@@ -3,7 +3,7 @@ import { expect, test } from 'vitest';
 import { phaseElasticitySum, phaseSensitivities } from '../../src/analysis/phase-sensitivity.ts';
 import { patchRoles } from '../../src/analysis/patches.ts';
 import { entrySensitivities, vectorsOf } from '../../src/analysis/sensitivity.ts';
-import { generationTimes, netReproductiveRate } from '../../src/analysis/life-history.ts';
+import { generationTimes, nextGeneration } from '../../src/analysis/life-history.ts';
 import { leading } from '../../src/numeric/leading.ts';
 import { principalPart, product } from '../../src/numeric/sparse-product.ts';
 import { forEachEntry, sparseFromRows } from '../../src/numeric/sparse.ts';
@@ -106,9 +106,9 @@ test('the net reproductive rate and the growth are on the same side of 1, and ge
   fc.assert(
     fc.property(anyLandscape, ({ block, split }) => {
       const vectors = vectorsOf(leading(block.matrix))!;
-      const netRate = netReproductiveRate(split)!;
-      expect(Math.sign(netRate - 1)).toBe(Math.sign(vectors.growthRate - 1));
-      const times = generationTimes(split, vectors, netRate);
+      const next = nextGeneration(split)!;
+      expect(Math.sign(next.netRate - 1)).toBe(Math.sign(vectors.growthRate - 1));
+      const times = generationTimes(split, vectors, next);
       const [shortest, longest] = [Math.min(times.cohort!, times.stable!), Math.max(times.cohort!, times.stable!)];
       expect(times.replacement!).toBeGreaterThan(shortest * (1 - 1e-9));
       expect(times.replacement!).toBeLessThan(longest * (1 + 1e-9));
