@@ -7,6 +7,7 @@ export const readingCodes = {
   'file-empty': 'The file holds nothing.',
   'file-not-text': 'The file is not text in UTF-8.',
   'file-too-large': 'The file is too large to be a spec.',
+  'many-mistakes': 'There are more mistakes than are told.',
   'yaml-nesting': 'Lists and sections are nested too deeply.',
   'yaml-syntax': 'The text is not YAML.',
   'yaml-tab': 'A tab indents a line.',

@@ -76,16 +76,24 @@ function unitError(details: Omit<UnitError, 'code'>): { readonly ok: false; read
   return { ok: false, error: { code: 'wrong-unit', ...details } };
 }
 
-const unitAtEnd = /\s*((?:per\s+|\/\s*)?[\p{L}%°][\p{L}²]*(?:\^?2)?)\s*$/u;
+/** Units are short: only the end of a text is looked at, however long it is. */
+const unitAtEnd = /(?<=[^\s/])\s{0,9}((?:per\s{1,9}|\/\s{0,9})?[\p{L}%°][\p{L}²]{0,19}(?:\^?2)?)$/u;
+const longestUnit = 60;
 
-function splitUnit(
-  text: string,
-): { readonly amount: string; readonly unit: string; readonly offset: number } | undefined {
-  const match = unitAtEnd.exec(text);
+interface UnitSplit {
+  readonly amount: string;
+  readonly unit: string;
+  readonly offset: number;
+}
+
+function splitUnit(text: string): UnitSplit | undefined {
+  const trimmed = text.trimEnd();
+  const before = Math.max(0, trimmed.length - longestUnit);
+  const match = unitAtEnd.exec(trimmed.slice(before));
   const unit = match?.[1];
-  if (match === null || unit === undefined || match.index === 0) return undefined;
-  const offset = text.indexOf(unit, match.index);
-  return { amount: text.slice(0, match.index), unit: unit.replace(/\s+/gu, ' '), offset };
+  if (match === null || unit === undefined) return undefined;
+  const offset = trimmed.length - unit.length;
+  return { amount: text.slice(0, before + match.index), unit: unit.replace(/\s+/gu, ' '), offset };
 }
 
 /** Numbers are brought to the base unit at once, other expressions by a factor in the tree. */

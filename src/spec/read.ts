@@ -1,7 +1,7 @@
 // Reads a spec: text in, a document with the way back to every place out, or all that is wrong with it.
 import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { Bug } from '../diagnostic/bug.ts';
-import { inFileOrder } from '../diagnostic/tell.ts';
+import { Collector } from '../diagnostic/collector.ts';
 import type { SpecDocument } from './document.ts';
 import { CoreSchema, type Spec } from './schema/spec.ts';
 import { checkTop } from './shape/top.ts';
@@ -22,16 +22,18 @@ export interface ReadSpec {
 export function readSpec(text: string, file: string): ReadSpec {
   const source = sourceText(file, text.startsWith('\uFEFF') ? text.slice(1) : text);
   const tree = readTree(source);
-  const report: Report = { source, list: [...tree.diagnostics] };
+  const found = new Collector();
+  found.add(...tree.diagnostics);
+  const report: Report = { source, found };
   const top = tree.root === undefined ? undefined : checkTop(tree.root, report);
-  const diagnostics = inFileOrder(report.list);
-  if (top === undefined || diagnostics.some((one) => one.severity === 'error')) return { diagnostics };
-  return { document: documentOf(top, source, diagnostics), diagnostics };
+  const diagnostics = found.told();
+  if (top === undefined || found.errors > 0) return { diagnostics };
+  return { document: documentOf(top, source, found), diagnostics };
 }
 
-function documentOf(root: SourceMap, source: SourceText, diagnostics: readonly Diagnostic[]): SpecDocument {
+function documentOf(root: SourceMap, source: SourceText, found: Collector): SpecDocument {
   const value = specOf(root);
-  if (!isSpec(value, diagnostics)) throw new Bug('A spec with errors was taken for one without.');
+  if (!isSpec(value, found)) throw new Bug('A spec with errors was taken for one without.');
   return {
     file: source.file,
     text: source.text,
@@ -50,6 +52,6 @@ function specOf(root: SourceMap): unknown {
 }
 
 /** The checks of shape have the same source as the type: what they find nothing wrong with is a spec. */
-function isSpec(value: unknown, diagnostics: readonly Diagnostic[]): value is Spec {
-  return typeof value === 'object' && value !== null && diagnostics.every((one) => one.severity !== 'error');
+function isSpec(value: unknown, found: Collector): value is Spec {
+  return typeof value === 'object' && value !== null && found.errors === 0;
 }

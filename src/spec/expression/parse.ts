@@ -1,6 +1,17 @@
 // Reads the text of an expression: precedence as in mathematics, so -2^2 is -4 and 2^3^2 is 2^9.
-import { nearestName } from '../../diagnostic/nearest.ts';
 import type { ArithmeticSign, Ast, ComparisonSign, Span, Truth } from './ast.ts';
+import {
+  chained,
+  deepest,
+  functions,
+  leftOver,
+  missing,
+  notFinite,
+  tooDeep,
+  unexpected,
+  unknownFunction,
+  withoutArguments,
+} from './complaints.ts';
 import { failure, type ExpressionError } from './failure.ts';
 import { readTokens, type Token } from './tokens.ts';
 
@@ -15,9 +26,6 @@ interface Reader {
   next: number;
   depth: number;
 }
-
-/** Brackets, choices and signs within each other. */
-const deepest = 100;
 
 /** How strongly each sign binds; a minus in front stands between * and ^. */
 const strength: Readonly<Record<string, number>> = {
@@ -41,10 +49,6 @@ export function parseExpression(text: string | number): Parsed {
   if (rest.kind !== 'end') return wrong(leftOver(rest));
   const ast = needNumber(whole);
   return isError(ast) ? wrong(ast) : { ok: true, ast };
-}
-
-function notFinite(value: number): ExpressionError {
-  return failure('expression-character', at(0, 0), 'This is not a number', { found: String(value) });
 }
 
 function wrong(error: ExpressionError): Parsed {
@@ -92,13 +96,6 @@ function readNode(reader: Reader, floor: number): Step {
   return left;
 }
 
-function tooDeep(span: Span): ExpressionError {
-  return failure('expression-size', span, 'The expression is nested too deeply', {
-    expected: `at most ${String(deepest)} brackets within each other`,
-    fix: 'Give its parts names under `parameters` and use those.',
-  });
-}
-
 function join(sign: Token, left: Node, right: Node): Step {
   const span = between(left.span, right.span);
   if (sign.text === 'and' || sign.text === 'or') {
@@ -138,12 +135,6 @@ function needTruth(node: Node): Truth | ExpressionError {
   if (isTruth(node)) return node;
   return failure('expression-truth', node.span, 'This is a number where a condition is needed', {
     expected: 'a comparison such as `year >= 2030`',
-  });
-}
-
-function chained(span: Span): ExpressionError {
-  return failure('expression-syntax', span, 'Two comparisons stand in a row', {
-    fix: 'Write them apart: `a < b and b < c`.',
   });
 }
 
@@ -198,8 +189,6 @@ function readChoice(reader: Reader, start: Token): Step {
   return { kind: 'if', condition, then, otherwise, span: between(start.span, otherwise.span) };
 }
 
-const functions: readonly string[] = ['min', 'max', 'exp', 'log', 'sqrt'];
-
 function readCall(reader: Reader, name: Token): Step {
   reader.next++;
   const values: Ast[] = [];
@@ -231,43 +220,4 @@ function callOf(name: Token, values: readonly Ast[], span: Span): Step {
     });
   }
   return unknownFunction(name);
-}
-
-function unknownFunction(name: Token): ExpressionError {
-  const nearest = name.text === 'ln' ? 'log' : nearestName(name.text, functions);
-  return failure('expression-function', name.span, `There is no function \`${name.text}\``, {
-    expected: 'min, max, exp, log (natural) or sqrt; a product needs its sign: a * (b + c)',
-    ...(nearest === undefined ? {} : { nearest }),
-  });
-}
-
-function withoutArguments(name: Token): ExpressionError {
-  return failure('expression-function', name.span, `\`${name.text}\` is a function and needs brackets`, {
-    expected: name.text === 'min' || name.text === 'max' ? `${name.text}(a, b)` : `${name.text}(a)`,
-  });
-}
-
-function missing(token: Token, expected: string, message: string): ExpressionError {
-  return failure('expression-syntax', token.span, message, { found: shown(token), expected: `\`${expected}\`` });
-}
-
-function shown(token: Token): string {
-  return token.kind === 'end' ? 'the end of the expression' : token.text;
-}
-
-function unexpected(token: Token): ExpressionError {
-  const fix = token.text === '+' ? 'Leave out a plus in front of a number.' : undefined;
-  return failure('expression-syntax', token.span, 'A number, a name or a bracket is missing here', {
-    found: shown(token),
-    ...(fix === undefined ? {} : { fix }),
-  });
-}
-
-function leftOver(token: Token): ExpressionError {
-  const comma = 'A comma stands only between the arguments of min and max; decimals have a point: 0.5.';
-  return failure('expression-syntax', token.span, 'The expression should have ended before this', {
-    found: token.text,
-    expected: 'a sign such as * or + before it, or nothing',
-    ...(token.text === ',' ? { fix: comma } : {}),
-  });
 }

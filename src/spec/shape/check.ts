@@ -23,6 +23,7 @@ export function subjectOf(entry: SourceEntry): Subject {
 
 export function checkMap(map: SourceMap, shape: Shape, subject: Subject, report: Report): void {
   for (const entry of map.entries) {
+    if (report.found.full) return;
     const known = shapeOfKey(shape, entry.key);
     if (known === undefined) {
       tellUnknownKey(entry, Object.keys(knownKeys(shape)), report);
@@ -90,6 +91,7 @@ function checkList(list: SourceList, shape: Shape, subject: Subject, report: Rep
     put(report, { code: 'wrong-length', message, span: subject.span }, { found: String(number), expected });
   }
   for (const [index, item] of list.items.entries()) {
+    if (report.found.full) return;
     const own = isSeveral(items) ? items[index] : items;
     const span = item.span.length > 0 ? item.span : subject.span;
     if (own !== undefined) checkShape(item, own, { label: subject.label, span }, report);
@@ -100,7 +102,7 @@ function checkList(list: SourceList, shape: Shape, subject: Subject, report: Rep
 function tellRepeated(list: SourceList, subject: Subject, report: Report): void {
   const seen = new Set<string>();
   for (const item of list.items) {
-    if (item.kind !== 'scalar') continue;
+    if (item.kind !== 'scalar' || report.found.full) continue;
     if (seen.has(item.source)) {
       put(report, {
         code: 'repeated-item',

@@ -1,13 +1,14 @@
 // Where the checks of shape put what they find.
 import type { DiagnosticCode } from '../../diagnostic/codes.ts';
-import type { Diagnostic, Severity } from '../../diagnostic/diagnostic.ts';
+import { Collector } from '../../diagnostic/collector.ts';
+import type { Severity } from '../../diagnostic/diagnostic.ts';
 import { tell, type Details } from '../../diagnostic/tell.ts';
 import type { Span } from '../expression/ast.ts';
 import { placeAt, type SourceScalar, type SourceText } from '../text/source.ts';
 
 export interface Report {
   readonly source: SourceText;
-  readonly list: Diagnostic[];
+  readonly found: Collector;
 }
 
 /** The value being checked: its key (empty for the whole spec), and where it is shown when it has no text of its own. */
@@ -25,16 +26,12 @@ export interface Mistake {
 
 export function put(report: Report, mistake: Mistake, details: Omit<Details, 'place'> = {}): void {
   const { severity = 'error', code, message, span } = mistake;
-  report.list.push(tell(severity, code, message, { ...details, place: placeAt(report.source, span) }));
+  report.found.add(tell(severity, code, message, { ...details, place: placeAt(report.source, span) }));
 }
 
 /** A report of its own for a branch that is only tried. */
 export function trial(report: Report): Report {
-  return { source: report.source, list: [] };
-}
-
-export function errorsIn(report: Report): number {
-  return report.list.filter((one) => one.severity === 'error').length;
+  return { source: report.source, found: new Collector() };
 }
 
 /** The place of a stretch inside the text of a scalar; the whole scalar where quotes or escapes come between. */

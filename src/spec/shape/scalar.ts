@@ -107,7 +107,7 @@ function foundIn(node: SourceNode): string {
 function adviceFor(node: SourceNode, shape: Shape): string | undefined {
   if (node.kind !== 'scalar') return undefined;
   if (sortOf(shape) === 'list') return `Write a list: [${node.source}].`;
-  const number = /^\s*(-?\d[\d.]*)\s*\S*\s*$/u.exec(node.source)?.[1];
+  const number = /^(-?\d[\d.]*)\s{0,9}\S{0,20}$/u.exec(node.source)?.[1];
   if (sortOf(shape) !== 'number' || number === undefined) return undefined;
   const unit = shape['x-unit'] === undefined ? '' : `, in ${shape['x-unit']}`;
   return `Write the number alone, without quotes or a unit${unit}: ${number}.`;

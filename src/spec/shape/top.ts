@@ -29,7 +29,7 @@ export function checkTop(root: SourceNode, report: Report): SourceMap | undefine
   checkMap({ ...root, entries: known }, core, { label: '', span: { ...root.span, length: 1 } }, report);
   const year = phasesOf(root);
   for (const entry of root.entries) {
-    if (!isCore(entry.key)) checkOwnSection(entry, year, report);
+    if (!isCore(entry.key) && !report.found.full) checkOwnSection(entry, year, report);
   }
   return root;
 }

@@ -1,6 +1,6 @@
 // A value that may have several shapes: found wrong, it is judged by the one that its author meant.
 import type { SourceNode } from '../text/source.ts';
-import { errorsIn, trial, type Report, type Subject } from './report.ts';
+import { trial, type Report, type Subject } from './report.ts';
 import { checkWord, tellWrongType } from './scalar.ts';
 import { branchesOf, knownKeys, sortOf, type Shape, type Sort } from './shape.ts';
 
@@ -12,11 +12,11 @@ export function checkUnion(node: SourceNode, shape: Shape, { subject, report, ch
   const tried = branches.map((branch) => {
     const own = trial(report);
     check(node, branch, subject, own);
-    return { branch, report: own, errors: errorsIn(own) };
+    return { branch, report: own, errors: own.found.errors };
   });
   const fitting = tried.find((one) => one.errors === 0);
   if (fitting !== undefined) {
-    report.list.push(...fitting.report.list);
+    report.found.add(...fitting.report.found.all);
     return;
   }
   const words = branches.filter((branch) => branch.const !== undefined);
@@ -26,8 +26,8 @@ export function checkUnion(node: SourceNode, shape: Shape, { subject, report, ch
     return;
   }
   const meant = alike.toSorted((a, b) => shared(node, b.branch) - shared(node, a.branch) || a.errors - b.errors)[0];
-  if (meant !== undefined) report.list.push(...meant.report.list);
-  else if (node.kind === 'scalar' && node.value === null) report.list.push(...(tried[0]?.report.list ?? []));
+  if (meant !== undefined) report.found.add(...meant.report.found.all);
+  else if (node.kind === 'scalar' && node.value === null) report.found.add(...(tried[0]?.report.found.all ?? []));
   else tellWrongType(node, shape, subject, report);
 }
 

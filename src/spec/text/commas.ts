@@ -1,9 +1,9 @@
 // `{ adult: min(1, x) }`: YAML cuts at every comma inside braces, also inside the brackets of an expression.
 import type { SourceScalar } from './source.ts';
 
-/** How many brackets stay open. */
-export function openBrackets(text: string): number {
-  let open = 0;
+/** How many brackets stay open after a text, when some were open before it. */
+export function openBrackets(text: string, before = 0): number {
+  let open = before;
   for (const character of text) {
     if (character === '(') open++;
     if (character === ')' && open > 0) open--;
@@ -11,19 +11,23 @@ export function openBrackets(text: string): number {
   return open;
 }
 
-/** The pieces from `first` on that together close all brackets, or undefined where nothing was cut. */
+/** An expression has at most so many commas. */
+const mostPieces = 50;
+
+/** The pieces from `first` on until all brackets are closed, or undefined where nothing was cut. */
 export function cutPieces(
   first: SourceScalar,
-  following: Iterable<SourceScalar | undefined>,
+  pieceAt: (index: number) => SourceScalar | undefined,
 ): readonly SourceScalar[] | undefined {
-  if (!first.plain || openBrackets(first.source) === 0) return undefined;
+  let open = first.plain ? openBrackets(first.source) : 0;
   const pieces = [first];
-  for (const piece of following) {
+  while (open > 0) {
+    const piece = pieces.length < mostPieces ? pieceAt(pieces.length) : undefined;
     if (piece === undefined || !piece.plain) return undefined;
     pieces.push(piece);
-    if (openBrackets(textOf(pieces)) === 0) return pieces;
+    open = openBrackets(piece.source, open);
   }
-  return undefined;
+  return pieces.length > 1 ? pieces : undefined;
 }
 
 export function textOf(pieces: readonly SourceScalar[]): string {

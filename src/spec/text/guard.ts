@@ -1,9 +1,8 @@
 // What a file must be before anyone tries to read it as YAML: text, of a size that can be read in a second.
 import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
 import { tell } from '../../diagnostic/tell.ts';
+import { mostCharacters } from './limits.ts';
 import { placeAt, type SourceText } from './source.ts';
-
-export const mostCharacters = 8_000_000;
 
 /** Everything but tab, line feed, carriage return before a line feed, and printable characters. */
 const strange = /[\u0000-\u0008\u000B\u000C\u000E-\u001F\u007F\uFFFD\uFFFE\uFFFF]|\r(?!\n)|\p{Cs}/u;

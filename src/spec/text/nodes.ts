@@ -1,6 +1,6 @@
 // From what the YAML library composed to a tree of our own: every value with its place, and every trap told.
 import { isMap, isScalar, isSeq, Scalar, type YAMLMap, type YAMLSeq } from 'yaml';
-import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
+import type { Collector } from '../../diagnostic/collector.ts';
 import { tell } from '../../diagnostic/tell.ts';
 import type { Span } from '../expression/ast.ts';
 import { cutPieces, joined, textOf } from './commas.ts';
@@ -10,7 +10,7 @@ import { placeAt, type SourceEntry, type SourceNode, type SourceScalar, type Sou
 /** Gathers diagnostics while it reads. */
 export interface NodeReader {
   readonly source: SourceText;
-  readonly diagnostics: Diagnostic[];
+  readonly found: Collector;
 }
 
 /** `where` is the place of a node that YAML left out. Depth was bounded before. */
@@ -45,8 +45,11 @@ function readList(node: YAMLSeq, where: Span, reader: NodeReader): SourceNode {
   for (let i = 0; i < read.length; i++) {
     const item = read[i];
     if (item === undefined) continue;
-    const scalars = read.slice(i + 1, i + 50).map((next) => (next.kind === 'scalar' ? next : undefined));
-    const pieces = node.flow === true && item.kind === 'scalar' ? cutPieces(item, scalars) : undefined;
+    const scalarAt = (after: number): SourceScalar | undefined => {
+      const next = read[i + after];
+      return next?.kind === 'scalar' ? next : undefined;
+    };
+    const pieces = node.flow === true && item.kind === 'scalar' ? cutPieces(item, scalarAt) : undefined;
     if (pieces === undefined || item.kind !== 'scalar') {
       items.push(item);
       continue;
@@ -59,7 +62,7 @@ function readList(node: YAMLSeq, where: Span, reader: NodeReader): SourceNode {
 
 function mend(pieces: readonly SourceScalar[], first: SourceScalar, reader: NodeReader): SourceScalar {
   const whole = joined(pieces, first);
-  reader.diagnostics.push(
+  reader.found.add(
     tell('error', 'comma-in-braces', 'A comma inside braces or square brackets cuts this expression', {
       place: placeAt(reader.source, whole.span),
       found: pieces.map((piece) => `\`${piece.source}\``).join(' and '),
@@ -80,10 +83,11 @@ function readMap(node: YAMLMap, where: Span, reader: NodeReader): SourceNode {
     const pair = pairs[i];
     if (pair === undefined) continue;
     const value = readNode(pair.value, pair.key.span, reader);
-    const bareKeys = pairs
-      .slice(i + 1, i + 50)
-      .map((next) => (next.bare && next.key.kind === 'scalar' ? next.key : undefined));
-    const pieces = node.flow === true && value.kind === 'scalar' ? cutPieces(value, bareKeys) : undefined;
+    const bareKeyAt = (after: number): SourceScalar | undefined => {
+      const next = pairs[i + after];
+      return next?.bare === true && next.key.kind === 'scalar' ? next.key : undefined;
+    };
+    const pieces = node.flow === true && value.kind === 'scalar' ? cutPieces(value, bareKeyAt) : undefined;
     const whole = pieces === undefined || value.kind !== 'scalar' ? value : mend(pieces, value, reader);
     addEntry(entries, pair.key, whole, reader);
     i += (pieces?.length ?? 1) - 1;
@@ -95,21 +99,21 @@ function readMap(node: YAMLMap, where: Span, reader: NodeReader): SourceNode {
 function addEntry(entries: SourceEntry[], key: SourceNode, value: SourceNode, reader: NodeReader): void {
   const place = placeAt(reader.source, key.span);
   if (key.kind !== 'scalar' || key.source === '') {
-    reader.diagnostics.push(
+    reader.found.add(
       tell('error', 'yaml-key', 'A key must be a word or a name', {
         place,
         fix: 'Put quotes around a key that begins with a bracket or another mark.',
       }),
     );
   } else if (key.plain && key.source === '<<') {
-    reader.diagnostics.push(
+    reader.found.add(
       tell('error', 'yaml-merge', 'A merge key (<<) has no meaning in a spec', {
         place,
         fix: 'Write the keys out, or give numbers that are used twice names under `parameters`.',
       }),
     );
   } else if (key.source === '__proto__') {
-    reader.diagnostics.push(tell('error', 'unusable-name', 'This name cannot be used', { place, found: key.source }));
+    reader.found.add(tell('error', 'unusable-name', 'This name cannot be used', { place, found: key.source }));
   } else {
     entries.push({ key: key.source, keySpan: key.span, plain: key.plain, value });
   }
@@ -118,13 +122,14 @@ function addEntry(entries: SourceEntry[], key: SourceNode, value: SourceNode, re
 function tellRepeated(entries: readonly SourceEntry[], reader: NodeReader): void {
   const first = new Map<string, SourceEntry>();
   for (const entry of entries) {
+    if (reader.found.full) return;
     const before = first.get(entry.key);
     if (before === undefined) {
       first.set(entry.key, entry);
       continue;
     }
     const line = placeAt(reader.source, before.keySpan).line;
-    reader.diagnostics.push(
+    reader.found.add(
       tell('error', 'duplicate-key', `\`${entry.key}\` stands twice in this section`, {
         place: placeAt(reader.source, entry.keySpan),
         fix: `Leave out one of them; the first is in line ${String(line)}.`,

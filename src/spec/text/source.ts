@@ -56,9 +56,14 @@ export function placeAt(source: SourceText, span: Span): Place {
   const line = lineOf(source.lineStarts, offset);
   const start = source.lineStarts[line] ?? 0;
   const end = (source.lineStarts[line + 1] ?? source.text.length + 1) - 1;
-  const text = source.text.slice(start, end).replace(/\r$/u, '');
+  const text = source.text.slice(start, source.text.charAt(end - 1) === '\r' ? end - 1 : end);
   const length = Math.max(1, Math.min(span.length, start + text.length - offset));
   return { file: source.file, line: line + 1, column: offset - start + 1, length, text };
+}
+
+/** The line of an offset, from 0. */
+export function lineAt(source: SourceText, offset: number): number {
+  return lineOf(source.lineStarts, offset);
 }
 
 /** Index of the last line that starts at or before the offset, by bisection. */

@@ -2,7 +2,7 @@
 import type { ErrorCode, YAMLError } from 'yaml';
 import type { Diagnostic, Place } from '../../diagnostic/diagnostic.ts';
 import { tell } from '../../diagnostic/tell.ts';
-import { placeAt, type SourceText } from './source.ts';
+import { lineAt, placeAt, type SourceText } from './source.ts';
 
 interface Words {
   readonly message: string;
@@ -48,9 +48,8 @@ export function syntaxDiagnostics(errors: readonly YAMLError[], source: SourceTe
   const told = new Map<number, Diagnostic>();
   for (const error of errors) {
     if (toldElsewhere.has(error.code)) continue;
-    const diagnostic = translate(error, source);
-    const line = diagnostic.place?.line ?? 0;
-    if (!told.has(line)) told.set(line, diagnostic);
+    const line = lineAt(source, error.pos[0]);
+    if (!told.has(line)) told.set(line, translate(error, source));
   }
   return [...told.values()];
 }

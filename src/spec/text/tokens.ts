@@ -1,9 +1,11 @@
 // The first pass over YAML: it counts and measures, so that nothing of a size or depth that could harm goes further, and
 // finds the marks of YAML that have no meaning in a spec.
 import { Lexer, Parser, type CST } from 'yaml';
+import { Collector } from '../../diagnostic/collector.ts';
 import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
 import { tell, type Details } from '../../diagnostic/tell.ts';
 import type { DiagnosticCode } from '../../diagnostic/codes.ts';
+import { deepest, mostMarks, mostTokens } from './limits.ts';
 import { placeAt, type SourceText } from './source.ts';
 
 export interface TokenPass {
@@ -13,18 +15,15 @@ export interface TokenPass {
   readonly fatal: boolean;
 }
 
-/** Marks and words, blanks not counted: about 8,000 patches written out with five values each. */
-const mostMarks = 100_000;
-const deepest = 32;
-
 export function readTokens(source: SourceText): TokenPass {
   const parser = new Parser();
   const tokens: CST.Token[] = [];
   let marks = 0;
+  let all = 0;
   let offset = 0;
   for (const lexeme of new Lexer().lex(source.text)) {
     if (!/^[\s\u0002\u001f\u0018]*$/u.test(lexeme) && !lexeme.startsWith('#')) marks++;
-    if (marks > mostMarks) return stopped(tooMany(source, offset));
+    if (marks > mostMarks || ++all > mostTokens) return stopped(tooMany(source, offset));
     tokens.push(...parser.next(lexeme));
     if (!/^[\u0002\u001f\u0018]$/u.test(lexeme)) offset += lexeme.length;
   }
@@ -39,25 +38,25 @@ function stopped(diagnostic: Diagnostic): TokenPass {
 function tooMany(source: SourceText, offset: number): Diagnostic {
   return tell('error', 'file-too-large', 'The file holds too much for a spec', {
     place: placeAt(source, { offset, length: 1 }),
-    found: `more than ${String(mostMarks)} words and marks up to here`,
+    found: `more than ${String(mostMarks)} words and marks, or ${String(mostTokens)} with blanks and line ends`,
     fix: 'Put long tables into files of their own and name those in the spec.',
   });
 }
 
 /** Looks at every token once, without recursion: depth is what it guards against. */
 function inspect(tokens: readonly CST.Token[], source: SourceText): TokenPass {
-  const diagnostics: Diagnostic[] = [];
+  const found = new Collector();
   const stack = tokens.map((token) => ({ token, depth: 0 })).reverse();
   for (let next = stack.pop(); next !== undefined; next = stack.pop()) {
     const { token, depth } = next;
     if (depth > deepest) return stopped(tooDeep(source, token.offset));
-    const found = judge(token, source);
-    if (found !== undefined) diagnostics.push(found);
+    const diagnostic = judge(token, source);
+    if (diagnostic !== undefined) found.add(diagnostic);
     for (const child of childrenOf(token).toReversed()) {
       stack.push({ token: child, depth: isCollection(token) ? depth + 1 : depth });
     }
   }
-  return { tokens, diagnostics, fatal: false };
+  return { tokens, diagnostics: found.all, fatal: false };
 }
 
 function tooDeep(source: SourceText, offset: number): Diagnostic {

@@ -1,5 +1,6 @@
 // Text to tree: YAML and JSON, which is a part of it.
 import { Composer, type Document } from 'yaml';
+import { Collector } from '../../diagnostic/collector.ts';
 import type { Diagnostic } from '../../diagnostic/diagnostic.ts';
 import { tell } from '../../diagnostic/tell.ts';
 import { checkText } from './guard.ts';
@@ -27,11 +28,12 @@ export function readTree(source: SourceText): Tree {
     source,
   );
   if (wrong.length > 0) return { diagnostics: withoutEchoes([...pass.diagnostics, ...wrong]) };
-  const extra = others.map((one) => anotherDocument(one, source));
-  const diagnostics = [...pass.diagnostics, ...extra];
+  const extra = others.slice(0, 1).map((one) => anotherDocument(one, source));
+  const found = new Collector();
+  found.add(...pass.diagnostics, ...extra);
   const whole = { offset: 0, length: 1 };
-  const root = readNode(document?.contents, whole, { source, diagnostics });
-  return { root, diagnostics };
+  const root = readNode(document?.contents, whole, { source, found });
+  return { root, diagnostics: found.all };
 }
 
 /** A bracket that is not closed, or a tab, makes nonsense of what follows: only these are told where there are any. */
