@@ -1,0 +1,22 @@
+// The path without chance as the kernel follows it, against the compiler's own year applied over and over.
+import { readFileSync, readdirSync } from 'node:fs';
+import { expect, test } from 'vitest';
+import { runYear } from '../../src/compile/year-map.ts';
+import { runPath } from '../../src/kernel/path.ts';
+import { compileText } from './compile-text.ts';
+
+const folder = new URL('../../models/', import.meta.url);
+const models = readdirSync(folder).filter((file) => file.endsWith('.yaml'));
+
+test.each(models)('%s: both give the same animals at every count', (file) => {
+  const compiled = compileText(readFileSync(new URL(file, folder), 'utf8'));
+  const { steps } = compiled.model;
+  const { animals } = runPath(compiled.image, { steps });
+  const cells = compiled.startAnimals.length;
+  let state: Float64Array = compiled.startAnimals;
+  for (let t = 0; t <= steps; t++) {
+    if (t > 0) state = runYear(compiled, state, t).after;
+    const kernel = animals.subarray(t * cells, (t + 1) * cells);
+    state.forEach((value, i) => expect(Math.abs(kernel[i]! - value)).toBeLessThanOrEqual(1e-12 * Math.max(1, value)));
+  }
+});
