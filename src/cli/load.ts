@@ -28,7 +28,7 @@ export function loadModel(path: string, settings: Settings, quiet: boolean): Loa
   const { compiled } = loaded;
   const told = loaded.diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && !quiet));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
-  if (compiled === null) throw new Ending(exitCodes.model, errorCount(told));
+  if (compiled === null) throw toldAlready();
   return { ...loaded, compiled };
 }
 
@@ -37,7 +37,7 @@ export function readModel(path: string, settings: Settings): Loaded {
   const { document, diagnostics } = readSpec(readText(path), name);
   if (document === undefined) {
     tellDiagnostics(diagnostics);
-    throw new Ending(exitCodes.model, errorCount(diagnostics));
+    throw toldAlready();
   }
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) {
@@ -54,9 +54,9 @@ export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {
   if (diagnostics.length > 0) writeError(`${renderDiagnostics(diagnostics, terminalOf(process.stderr)).trimEnd()}\n`);
 }
 
-export function errorCount(diagnostics: readonly Diagnostic[]): string {
-  const errors = diagnostics.filter((one) => one.severity === 'error').length;
-  return errors === 1 ? '1 error.' : `${errors} errors.`;
+/** The mistakes were told with their count; there is nothing to add. */
+export function toldAlready(): Ending {
+  return new Ending(exitCodes.model, '');
 }
 
 function readText(path: string): string {

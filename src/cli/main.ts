@@ -85,7 +85,7 @@ function tellBug(error: unknown): void {
 function endingOf(error: unknown): number {
   if (error instanceof CommanderError) return error.exitCode === 0 ? exitCodes.done : exitCodes.usage;
   if (error instanceof Ending) {
-    writeError(`${error.message}\n`);
+    if (error.message !== '') writeError(`${error.message}\n`);
     return error.exitCode;
   }
   tellBug(error);

@@ -5,7 +5,7 @@ import { leading } from '../../numeric/leading.ts';
 import type { CompiledModel } from '../../pipeline.ts';
 import { checkText, type Understood } from '../../report/check-text.ts';
 import { Ending, exitCodes } from '../exit.ts';
-import { errorCount, readModel, tellDiagnostics, type Loaded } from '../load.ts';
+import { readModel, tellDiagnostics, toldAlready, type Loaded } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { writeOut } from '../output.ts';
 import { terminalOf } from '../terminal.ts';
@@ -18,7 +18,7 @@ export function checkModel(path: string, options: CommonOptions & { readonly str
     tellDiagnostics(loaded.diagnostics);
     if (understood !== null) writeOut(`${checkText(understood, terminalOf(process.stdout)).trimEnd()}\n`);
   }
-  if (loaded.compiled === null) throw new Ending(exitCodes.model, errorCount(loaded.diagnostics));
+  if (loaded.compiled === null) throw toldAlready();
   const warnings = loaded.diagnostics.filter((one) => one.severity === 'warning').length;
   if (options.strict === true && warnings > 0) {
     throw new Ending(
