@@ -1,6 +1,6 @@
 // What each patch is to the whole: growth alone, contribution, self-recruitment, source or sink.
 import { leading } from '../numeric/leading.ts';
-import { principalPart } from '../numeric/sparse-product.ts';
+import { principalPart } from '../numeric/principal-part.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 
 export interface PatchState {

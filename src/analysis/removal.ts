@@ -1,7 +1,7 @@
 // What the growth rate loses when a patch or a link is taken away.
 import { irreducibleGrowth } from '../numeric/irreducible-pair.ts';
 import { leading } from '../numeric/leading.ts';
-import { principalPart } from '../numeric/sparse-product.ts';
+import { principalPart } from '../numeric/principal-part.ts';
 import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
 import { entryAt, forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 import { statesByPatch, type PatchState } from './patches.ts';

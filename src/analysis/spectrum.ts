@@ -3,7 +3,7 @@ import { angleOf } from '../numeric/angle.ts';
 import { eigenvalues, modulus, type Complex } from '../numeric/eigenvalues.ts';
 import { irreduciblePair } from '../numeric/irreducible-pair.ts';
 import type { Leading, LeadingBlock } from '../numeric/leading.ts';
-import { principalPart } from '../numeric/sparse-product.ts';
+import { principalPart } from '../numeric/principal-part.ts';
 import { toDense, type DenseMatrix, type SparseMatrix } from '../numeric/sparse.ts';
 
 export interface Spectrum {

@@ -1,6 +1,6 @@
 // The block projection matrix: the product of the phase maps in the order of the year, the last phase leftmost
 // (for demography and dispersal this is the vec-permutation model of Hunter & Caswell 2005).
-import { principalPart } from '../numeric/sparse-product.ts';
+import { principalPart } from '../numeric/principal-part.ts';
 import type { AtState, BlockMatrix } from './block-matrix.ts';
 import { presentClasses } from './present-classes.ts';
 import { productOf, runYear, type Compiled } from './year-map.ts';

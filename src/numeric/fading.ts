@@ -2,7 +2,8 @@
 import { strongComponents } from './components.ts';
 import { solveBelow } from './downstream.ts';
 import { leading } from './leading.ts';
-import { principalPart, transpose } from './sparse-product.ts';
+import { principalPart } from './principal-part.ts';
+import { transpose } from './sparse-product.ts';
 import type { SparseMatrix } from './sparse.ts';
 
 export interface Fading {

@@ -4,7 +4,8 @@ import { solveBelow } from './downstream.ts';
 import { irreduciblePair } from './irreducible-pair.ts';
 import { periodOfIrreducible } from './period.ts';
 import { toShares } from './positive-pair.ts';
-import { principalPart, transpose } from './sparse-product.ts';
+import { principalPart } from './principal-part.ts';
+import { transpose } from './sparse-product.ts';
 import type { SparseMatrix } from './sparse.ts';
 
 /** States that can all reach one another. */

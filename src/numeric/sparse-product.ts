@@ -134,32 +134,6 @@ export function weightedSum(
   return sparseFromTriplets({ rows: a.rows, columns: a.columns, rowIndex: row, columnIndex: column, values });
 }
 
-/** The rows and columns named, in the order named: entry (a, b) of the result is entry (keep[a], keep[b]). */
-export function principalPart(matrix: SparseMatrix, keep: ArrayLike<number>): SparseMatrix {
-  const placeOf = new Map<number, number>();
-  for (let place = 0; place < keep.length; place++) placeOf.set(keep[place] ?? 0, place);
-  const row: number[] = [];
-  const column: number[] = [];
-  const values: number[] = [];
-  for (let place = 0; place < keep.length; place++) {
-    const j = keep[place] ?? 0;
-    for (let k = matrix.columnStart[j] ?? 0; k < (matrix.columnStart[j + 1] ?? 0); k++) {
-      const to = placeOf.get(matrix.rowIndex[k] ?? 0);
-      if (to === undefined) continue;
-      row.push(to);
-      column.push(place);
-      values.push(matrix.values[k] ?? 0);
-    }
-  }
-  return sparseFromTriplets({
-    rows: keep.length,
-    columns: keep.length,
-    rowIndex: row,
-    columnIndex: column,
-    values,
-  });
-}
-
 function checkLength(x: Float64Array, expected: number): void {
   if (x.length !== expected) throw new RangeError(`A vector of ${x.length} meets a side of ${expected}.`);
 }

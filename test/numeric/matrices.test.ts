@@ -4,14 +4,8 @@ import { strongComponents } from '../../src/numeric/components.ts';
 import { factor, invertDense, solveDense } from '../../src/numeric/dense-solve.ts';
 import { nearestCorrelation } from '../../src/numeric/nearest-correlation.ts';
 import { findRoot } from '../../src/numeric/root.ts';
-import {
-  multiply,
-  multiplyTransposed,
-  principalPart,
-  product,
-  transpose,
-  weightedSum,
-} from '../../src/numeric/sparse-product.ts';
+import { principalPart } from '../../src/numeric/principal-part.ts';
+import { multiply, multiplyTransposed, product, transpose, weightedSum } from '../../src/numeric/sparse-product.ts';
 import { entryAt, sparseFromDense, sparseFromRows, sparseFromTriplets, toDense } from '../../src/numeric/sparse.ts';
 import { stream } from './random-matrix.ts';
 
