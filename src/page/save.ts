@@ -8,7 +8,7 @@ export function mountSave(view: ReportView): void {
     row.className = 'save';
     row.append(button('Save as SVG', figure, view, saveSvg), button('Save as PNG', figure, view, savePng));
     if (figure.tagName === 'FIGURE') figure.append(row);
-    else figure.after(row);
+    else (figure.nextElementSibling ?? figure).after(row);
   }
 }
 

@@ -46,7 +46,7 @@ function leadOf(outcome: OutcomeResult, results: RunResults): Answer['lead'] {
 function runsSentence(chance: Chance, results: RunResults): string {
   const { lower, upper, level, method } = chance.interval;
   const runs = `${plain(finished(results))} runs`;
-  const how = `${plain(level * 100)} %, ${method}`;
+  const how = `${plain(level * 100)}\u00a0%, ${method}`;
   if (chance.probability === 0) {
     return `${runs} without a case still allow a chance of up to ${percent(upper)} (${how}).`;
   }
@@ -55,10 +55,12 @@ function runsSentence(chance: Chance, results: RunResults): string {
 
 function unknownSentence({ intervalFromUnknown }: Chance): string {
   if (intervalFromUnknown === null) {
-    return 'The model gives no uncertainty for its numbers, so how far the answer could move because they are not exactly known is in none of the intervals here.';
+    const cause = 'The model gives no uncertainty for its numbers';
+    return `${cause}, so how far the answer could move because they are not exactly known is in none of the intervals here.`;
   }
   const { lower, upper, level } = intervalFromUnknown;
-  return `From what is not known about the numbers of the model, it lies between ${percent(lower)} and ${percent(upper)} (${plain(level * 100)} %).`;
+  const range = `between ${percent(lower)} and ${percent(upper)} (${plain(level * 100)}\u00a0%)`;
+  return `From what is not known about the numbers of the model, it lies ${range}.`;
 }
 
 function abundanceSentence(results: RunResults, animals: string): string {

@@ -4,43 +4,47 @@ import type { RunResults } from '../results/results.ts';
 import { basisWords } from './basis.ts';
 
 export function cautions(model: Model, results: RunResults): readonly string[] {
-  return [...results.cautions, ...standing(model)];
+  return [...results.cautions, ...standingCautions(model)];
 }
 
-function standing(model: Model): readonly string[] {
+export function standingCautions(model: Model): readonly string[] {
   return [
-    'Rank plans by these numbers rather than trust a risk as it stands: errors that plans share mostly cancel in a comparison, never in an absolute number.',
-    `A run looks ${model.steps} years ahead. Errors of prediction grow fast beyond about a fifth of the length of the counts that a model rests on (Fieberg & Ellner 2000); compare the two lengths.`,
+    `Rank plans by these numbers rather than trust a risk as it stands: errors that plans share mostly cancel in a comparison,
+never in an absolute number.`,
+    `A run looks ${model.steps} years ahead. Errors of prediction grow fast beyond about a fifth of the length of the counts
+that a model rests on (Fieberg & Ellner 2000); compare the two lengths.`,
     `The model leaves out: ${leftOut(model).join(', ')}.`,
     ...movement(model),
-    'How strongly good and bad years strike all patches together often moves the risk more than movement does; look at it before trusting that patches back each other up.',
+    `How strongly good and bad years strike all patches together often moves the risk more than movement does; look at it
+before trusting that patches back each other up.`,
     basisWords(model),
-    'Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for conservation translocations. This report is one input to it.',
-  ];
+    `Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for
+conservation translocations. This report is one input to it.`,
+  ].map((text) => text.replaceAll('\n', ' '));
 }
 
-function leftOut(model: Model): readonly string[] {
-  const allee = model.crowding.some((one) => one.alleeHalf.some((half) => half > 0));
+function leftOut({ crowding, phases }: Model): readonly string[] {
+  const allee = crowding.some((one) => one.alleeHalf.some((half) => half > 0));
+  const crowded = crowding.length > 0 || phases.some((phase) => phase.kind === 'ceiling');
   return [
     'disease',
     'inbreeding',
     'a trend of the climate',
     ...(allee ? [] : ['trouble in finding mates when few are left (Allee effects)']),
-    ...(model.crowding.length > 0 || model.phases.some((phase) => phase.kind === 'ceiling') ? [] : ['crowding']),
+    ...(crowded ? [] : ['crowding']),
     'year-to-year variation of the rates',
     'catastrophes',
   ];
 }
 
-function movement(model: Model): readonly string[] {
-  const rules = model.phases.flatMap((phase) =>
+function movement({ phases }: Model): readonly string[] {
+  const rules = phases.flatMap((phase) =>
     phase.kind === 'dispersal' && phase.rule.by === 'kernel' ? [phase.rule] : [],
   );
   if (rules.length === 0) return [];
-  const all = rules.every((rule) => rule.leavers === 'all arrive');
-  return [
-    all
-      ? 'All leavers are taken to head for some patch, however far; isolation then costs only what dying on the way costs. The worth of a link depends on this choice.'
-      : 'Leavers may miss every patch and are then lost: isolation costs animals, and the worth of a link depends on this choice.',
-  ];
+  const lost = rules.some((rule) => rule.leavers === 'may miss');
+  const all =
+    'All leavers are taken to head for some patch, however far; isolation costs only what dying on the way costs.';
+  const miss = 'Leavers may miss every patch and are then lost: isolation costs animals.';
+  return [`${lost ? miss : all} The worth of a link depends on this choice.`];
 }

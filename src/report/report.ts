@@ -43,5 +43,6 @@ function contents(chances: boolean): Markup {
     ['limits', 'Limits'],
     ['annex', 'Annex'],
   ];
-  return mark`<nav aria-label="Contents"><ul>${places.map(([id, name]) => mark`<li><a href="#${id ?? ''}">${name ?? ''}</a></li>`)}</ul></nav>`;
+  const links = places.map(([id = '', name = '']) => mark`<li><a href="#${id}">${name}</a></li>`);
+  return mark`<nav aria-label="Contents"><ul>${links}</ul></nav>`;
 }

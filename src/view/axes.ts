@@ -38,7 +38,8 @@ export function axes(area: Plot, write: (value: number) => string): Markup {
   const ticks = area.y.ticks(4);
   const lines = ticks.map((value) => {
     const y = area.y(value);
-    return mark`<line x1="${area.left}" x2="${area.right}" y1="${y}" y2="${y}" stroke="${value === 0 ? ink : hairline}"/><text x="${area.left - 7}" y="${y + 4}" text-anchor="end" fill="${softInk}">${write(value)}</text>`;
+    return mark`<line x1="${area.left}" x2="${area.right}" y1="${y}" y2="${y}" stroke="${value === 0 ? ink : hairline}"/>
+<text x="${area.left - 7}" y="${y + 4}" text-anchor="end" fill="${softInk}">${write(value)}</text>`;
   });
   return mark`<g>${lines}${yearTicks(area)}</g>`;
 }
@@ -48,7 +49,8 @@ function yearTicks(area: Plot): readonly Markup[] {
   const ticks = area.x.ticks(room).filter((year) => Number.isInteger(year));
   return ticks.map((year) => {
     const x = area.x(year);
-    return mark`<line x1="${x}" x2="${x}" y1="${area.bottom}" y2="${area.bottom + 4}" stroke="${ink}"/><text x="${x}" y="${area.bottom + 18}" text-anchor="middle" fill="${softInk}">${String(year)}</text>`;
+    return mark`<line x1="${x}" x2="${x}" y1="${area.bottom}" y2="${area.bottom + 4}" stroke="${ink}"/>
+<text x="${x}" y="${area.bottom + 18}" text-anchor="middle" fill="${softInk}">${String(year)}</text>`;
   });
 }
 
@@ -56,5 +58,6 @@ function yearTicks(area: Plot): readonly Markup[] {
 export function cursor(area: Plot, year: number | null): Markup | null {
   if (year === null) return null;
   const x = area.x(year);
-  return mark`<line class="cursor" x1="${x}" x2="${x}" y1="${area.top}" y2="${area.bottom}" stroke="${ink}" stroke-dasharray="2 3"/>`;
+  const { top, bottom } = area;
+  return mark`<line x1="${x}" x2="${x}" y1="${top}" y2="${bottom}" stroke="${ink}" stroke-dasharray="2 3"/>`;
 }

@@ -38,7 +38,8 @@ export function bands(place: Plot, years: Series, fan: Fan): Markup {
     .x((_, i) => place.x(pick(years, i)))
     .y((value) => place.y(value))
     .digits(1);
-  return mark`<path d="${outer}" fill="${tint}"/><path d="${inner}" fill="${middle}"/><path d="${course([...fan.median]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5" stroke-linejoin="round"/>`;
+  return mark`<path d="${outer}" fill="${tint}"/><path d="${inner}" fill="${middle}"/>
+<path d="${course([...fan.median]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5" stroke-linejoin="round"/>`;
 }
 
 export function ribbon(place: Plot, years: Series, lower: Series, upper: Series): string {

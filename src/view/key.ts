@@ -22,7 +22,8 @@ export function key(entries: readonly KeyEntry[], left: number, top: number, wid
   const placed = entries.map((entry) => {
     const needed = entry.width + 8 + textWidth(entry.words, 13) + 22;
     if (x > 0 && x + needed - 22 > width) [x, row] = [0, row + 1];
-    const at = mark`<g transform="translate(${left + x} ${top + row * rowHeight + rowHeight / 2})">${entry.sample}<text x="${entry.width + 8}" y="4.5" fill="${ink}">${entry.words}</text></g>`;
+    const at = mark`<g transform="translate(${left + x} ${top + (row + 0.5) * rowHeight})">${entry.sample}
+<text x="${entry.width + 8}" y="4.5" fill="${ink}">${entry.words}</text></g>`;
     x += needed;
     return at;
   });

@@ -10,7 +10,7 @@ import { largest, pick } from './series.ts';
 
 /** `marked` is the index of a count at which the middle is written out, or null. */
 export function drawSmallFan(patch: PatchView, years: Series, marked: number | null, size: Size): Markup {
-  const place = plot(size, { top: 44, right: 36, bottom: 22, left: 6 }, years, largest(patch.fan.p95));
+  const place = plot(size, { top: 44, right: 32, bottom: 22, left: 6 }, years, largest(patch.fan.p95));
   const year = marked === null ? null : pick(years, marked);
   const content = mark`${frame(place)}${bands(place, years, patch.fan)}${labels(patch, years, place)}
 ${cursor(place, year)}${reading(patch, years, marked, place)}`;

@@ -1,15 +1,13 @@
 // The eleven design concepts, each with what this model says to it.
 import type { Model } from '../../model/model.ts';
 import type { RunResults } from '../../results/results.ts';
-import { mark, type Markup } from '../../view/markup.ts';
+import type { Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { finished } from '../answer.ts';
+import { list } from '../section/section.ts';
 
 export function designConcepts(model: Model, results: RunResults): Markup {
-  const moving = model.phases.some((phase) => phase.kind === 'dispersal');
-  const ceiling = model.phases.some((phase) => phase.kind === 'ceiling');
-  const crowd = model.crowding.length > 0 || ceiling;
-  const concepts: readonly (readonly [string, string])[] = [
+  return list('concepts', [
     ['Basic principles', 'a matrix population model in several patches, run with whole animals and chance.'],
     ['Emergence', 'abundance, risk and which patches are in use follow from the rates, the movement and chance.'],
     ['Adaptation', 'none: animals do not choose in answer to their state.'],
@@ -17,22 +15,21 @@ export function designConcepts(model: Model, results: RunResults): Markup {
     ['Learning', 'none.'],
     ['Prediction', 'none.'],
     ['Sensing', 'none of the animals; rates answer to the number present where crowding is on.'],
-    ['Interaction', interaction(crowd, moving)],
-    [
-      'Stochasticity',
-      `births, deaths, fates and movement of single animals are drawn (demographic chance); ${plain(finished(results))} futures share one seed, ${String(results.seed)}.`,
-    ],
+    ['Interaction', interaction(model)],
+    ['Stochasticity', stochasticity(results)],
     ['Collectives', 'the animals of a patch, which share its rates.'],
-    [
-      'Observation',
-      'at each count: animals in each patch and in all, the outcomes named in the model, and the patches in use.',
-    ],
-  ];
-  const items = concepts.map(([name, words]) => mark`<div><dt>${name}</dt><dd>${words}</dd></div>`);
-  return mark`<dl class="concepts">${items}</dl>`;
+    ['Observation', 'at each count: animals in each patch and in all, the outcomes, and the patches in use.'],
+  ]);
 }
 
-function interaction(crowd: boolean, moving: boolean): string {
-  const within = crowd ? 'animals of a patch compete through crowding' : 'none within a patch';
-  return `${within}; ${moving ? 'patches are linked by movement' : 'patches are not linked'}.`;
+function interaction({ phases, crowding }: Model): string {
+  const crowded = crowding.length > 0 || phases.some((phase) => phase.kind === 'ceiling');
+  const within = crowded ? 'animals of a patch compete through crowding' : 'none within a patch';
+  const linked = phases.some((phase) => phase.kind === 'dispersal');
+  return `${within}; ${linked ? 'patches are linked by movement' : 'patches are not linked'}.`;
+}
+
+function stochasticity(results: RunResults): string {
+  const single = 'births, deaths, fates and movement of single animals are drawn (demographic chance)';
+  return `${single}; ${plain(finished(results))} futures come from one seed, ${results.seed}.`;
 }

@@ -1,6 +1,7 @@
 // What one phase of the year does, in a sentence.
 import type { Model, Phase } from '../../model/model.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
+import { names } from '../section/section.ts';
 
 export function phaseWords(phase: Phase, model: Model): Markup {
   return mark`<strong><bdi>${phase.name}</bdi></strong>: ${act(phase, model)}`;
@@ -11,22 +12,27 @@ function act(phase: Phase, model: Model): Content {
     case 'count':
       return 'the animals are counted; thresholds are looked at here, and the year ends.';
     case 'breeding':
-      return mark`young are born, a Poisson number around the sum over their mothers, and enter ${classNames(model, (c) => (phase.into[c] ?? 0) > 0)}.`;
+      return mark`young are born, a Poisson number around the sum over their mothers, and enter
+${classNames(model, phase.into)}.`;
     case 'survival':
       return 'each animal survives or dies by itself (binomial).';
     case 'ageing':
       return 'animals go on to their next class; where only a share goes on, each does so by itself.';
     case 'demography':
-      return 'the entries of a whole-year matrix act at once: each animal has one fate (multinomial), and bears young by a Poisson number.';
+      return `the entries of a whole-year matrix act at once: each animal has one fate (multinomial), and bears young by a
+Poisson number.`;
     case 'dispersal':
-      return mark`a share of ${classNames(model, (c) => phase.moves[c] === 1)} sets out; each leaver ends in one other patch or dies on the way (multinomial).`;
+      return mark`a share of ${classNames(model, phase.moves)} sets out; each leaver ends in one other patch or dies on the
+way (multinomial).`;
     case 'ceiling':
-      return mark`where more animals of ${classNames(model, (c) => phase.counted[c] === 1)} are present than the patch can hold, the surplus is removed at random.`;
+      return mark`where more animals of ${classNames(model, phase.counted)} are present than the patch can hold, the surplus
+is removed at random.`;
   }
 }
 
-export function classNames(model: Model, chosen: (c: number) => boolean): Markup {
-  const names = model.classes.filter((_, c) => chosen(c));
-  if (names.length === model.classes.length && names.length > 1) return mark`all classes`;
-  return mark`${names.map((name, i) => mark`${i > 0 ? ', ' : ''}<bdi>${name}</bdi>`)}`;
+/** The classes with a weight above 0. */
+export function classNames(model: Model, weights: ArrayLike<number>): Markup {
+  const chosen = model.classes.filter((_, c) => (weights[c] ?? 0) > 0);
+  if (chosen.length === model.classes.length && chosen.length > 1) return mark`all classes`;
+  return mark`${names(chosen)}`;
 }

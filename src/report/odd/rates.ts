@@ -2,6 +2,7 @@
 import type { DemographyPhase, Model, RateTable } from '../../model/model.ts';
 import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Markup } from '../../view/markup.ts';
+import { drawTable, type Row } from '../../view/table.ts';
 
 /** Four significant digits. */
 export function digits(value: number): string {
@@ -10,17 +11,15 @@ export function digits(value: number): string {
 
 export function rateTable(model: Model, rates: RateTable, caption: string): Markup {
   const classes = model.classes.length;
-  const row = (p: number) =>
-    model.classes.map((_, c) => entry(rates.epochs.map((epoch) => epoch[p * classes + c] ?? 0)));
-  const rows = inFileOrder(model).map((p) => ({ name: model.patches[p]?.name ?? '', cells: row(p) }));
-  const alike = rows.every((one) => one.cells.join('|') === rows[0]?.cells.join('|'));
-  const shown = alike ? rows.slice(0, 1).map((one) => ({ ...one, name: 'every patch' })) : rows;
-  const body = shown.map(
-    (one) =>
-      mark`<tr><th scope="row"><bdi>${one.name}</bdi></th>${one.cells.map((cell) => mark`<td>${cell}</td>`)}</tr>`,
-  );
-  const head = model.classes.map((name) => mark`<th scope="col"><bdi>${name}</bdi></th>`);
-  return mark`<div class="scroll" tabindex="0" role="region" aria-label="${caption}"><table><caption>${caption}</caption><thead><tr><th scope="col">patch</th>${head}</tr></thead><tbody>${body}</tbody></table></div>`;
+  const rows = inFileOrder(model).map((p): Row => {
+    const cells = model.classes.map((_, c) => entry(rates.epochs.map((epoch) => epoch[p * classes + c] ?? 0)));
+    return [model.patches[p]?.name ?? '', ...cells];
+  });
+  const cells = rows.map(([, ...rest]) => rest.join('|'));
+  const [top] = rows;
+  const alike = top !== undefined && cells.every((text) => text === cells[0]);
+  const shown: readonly Row[] = alike ? [['every patch', ...top.slice(1)]] : rows;
+  return drawTable({ caption, head: ['patch', ...model.classes], rows: shown });
 }
 
 export function matrixTables(model: Model, phase: DemographyPhase): Markup {
@@ -31,19 +30,19 @@ export function matrixTables(model: Model, phase: DemographyPhase): Markup {
     births: first(phase.births, p, size),
   }));
   const text = (one: (typeof matrices)[number]) => `${one.fates.join()}|${one.births.join()}`;
-  const alike = matrices.every((one) => matrices[0] !== undefined && text(one) === text(matrices[0]));
+  const alike = new Set(matrices.map(text)).size === 1;
   const shown = alike ? matrices.slice(0, 1).map((one) => ({ ...one, name: 'every patch' })) : matrices;
-  return mark`${shown.map((one) => mark`${matrix(model, one.fates, `Fates, ${one.name}`)}${matrix(model, one.births, `Births, ${one.name}`)}`)}`;
+  const tables = shown.map(({ name, fates, births }) => [
+    matrix(model, fates, `Fates, ${name}`),
+    matrix(model, births, `Births, ${name}`),
+  ]);
+  return mark`${tables}`;
 }
 
-function matrix(model: Model, entries: readonly number[], caption: string): Markup {
-  const classes = model.classes.length;
-  const rows = model.classes.map((name, to) => {
-    const cells = model.classes.map((_, from) => mark`<td>${digits(entries[to * classes + from] ?? 0)}</td>`);
-    return mark`<tr><th scope="row"><bdi>${name}</bdi></th>${cells}</tr>`;
-  });
-  const head = model.classes.map((name) => mark`<th scope="col">from <bdi>${name}</bdi></th>`);
-  return mark`<div class="scroll" tabindex="0" role="region" aria-label="${caption}"><table><caption>${caption}</caption><thead><tr><th scope="col">to</th>${head}</tr></thead><tbody>${rows}</tbody></table></div>`;
+function matrix({ classes }: Model, entries: readonly number[], caption: string): Markup {
+  const n = classes.length;
+  const rows = classes.map((name, to): Row => [name, ...entries.slice(to * n, (to + 1) * n).map(digits)]);
+  return drawTable({ caption, head: ['to', ...classes.map((name) => `from ${name}`)], rows });
 }
 
 function first(rates: RateTable, p: number, size: number): readonly number[] {

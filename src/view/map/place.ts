@@ -28,7 +28,7 @@ export function placePatches(patches: readonly PatchView[], frame: Frame): Placi
 export function mapHeight(patches: readonly PatchView[], width: number): number {
   const side = margin(width);
   const shape = shapeOf(patches);
-  const height = (width - 2 * side) * shape + 1.7 * side + head + foot;
+  const height = (width - 2 * side) * shape + 1.9 * side + head + foot;
   return Math.round(Math.min(1.05 * width, Math.max((width < 500 ? 0.8 : 0.5) * width, height)));
 }
 
@@ -81,11 +81,11 @@ function bounds(places: readonly (readonly [number, number])[]) {
 /** The frame inside which centres may lie, so that circles and names find room. */
 export function innerFrame(size: Size): Frame {
   const side = margin(size.width);
-  return { left: side, right: size.width - side, top: head + side * 0.85, bottom: size.height - foot - side * 0.85 };
+  return { left: side, right: size.width - side, top: head + side * 0.95, bottom: size.height - foot - side * 0.95 };
 }
 
 /** Pixels for the year above and the scale below. */
-const head = 30;
+const head = 42;
 const foot = 26;
 
 function margin(width: number): number {

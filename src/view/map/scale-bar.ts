@@ -5,12 +5,13 @@ import { roundDown } from '../number.ts';
 
 export function scaleBar(pixelsPerKm: number, x: number, y: number, room: number): Markup {
   const km = roundDown(room / pixelsPerKm);
-  const quarter = (km * pixelsPerKm) / 4;
-  const blocks = [0, 1, 2, 3].map(
-    (i) =>
-      mark`<rect x="${x + i * quarter}" y="${y}" width="${quarter}" height="5" fill="${i % 2 === 0 ? ink : paper}" stroke="${ink}" stroke-width="0.75"/>`,
-  );
-  return mark`<g>${blocks}<text x="${x}" y="${y + 19}" font-size="12" fill="${ink}">0</text><text x="${x + quarter * 4}" y="${y + 19}" font-size="12" text-anchor="middle" fill="${ink}">${kilometres(km)}</text></g>`;
+  const length = km * pixelsPerKm;
+  const blocks = [0, 1, 2, 3].map((i) => {
+    const fill = i % 2 === 0 ? ink : paper;
+    return mark`<rect x="${x + (i * length) / 4}" y="${y}" width="${length / 4}" height="5" fill="${fill}"/>`;
+  });
+  return mark`<g font-size="12" fill="${ink}"><g stroke="${ink}" stroke-width="0.75">${blocks}</g>
+<text x="${x}" y="${y + 19}">0</text><text x="${x + length}" y="${y + 19}" text-anchor="middle">${kilometres(km)}</text></g>`;
 }
 
 function kilometres(km: number): string {
