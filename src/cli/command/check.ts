@@ -28,7 +28,7 @@ export function checkModel(path: string, options: CommonOptions & { readonly str
   }
 }
 
-function understand(compiled: CompiledModel): Understood {
+export function understand(compiled: CompiledModel): Understood {
   const { model, startAnimals } = compiled;
   return {
     model,

@@ -1,0 +1,20 @@
+// The models that come with the tool.
+import { readFileSync, readdirSync } from 'node:fs';
+import type { CompiledModel } from '../../src/pipeline.ts';
+import type { Settings } from '../../src/spec/settings.ts';
+import { compileText } from '../pipeline/compile-text.ts';
+
+const folder = new URL('../../models/', import.meta.url);
+
+export const modelNames: readonly string[] = readdirSync(folder)
+  .filter((file) => file.endsWith('.yaml'))
+  .map((file) => file.slice(0, -'.yaml'.length))
+  .sort();
+
+export function modelText(name: string): string {
+  return readFileSync(new URL(`${name}.yaml`, folder), 'utf8');
+}
+
+export function compileModel(name: string, settings: Settings = {}): CompiledModel {
+  return compileText(modelText(name), settings);
+}

@@ -1,0 +1,45 @@
+// Every model that comes with the tool, printed at every stage of the pipeline.
+import { readdirSync } from 'node:fs';
+import { describe, expect, test } from 'vitest';
+import { understand } from '../../src/cli/command/check.ts';
+import { describeImage } from '../../src/compile/image/describe.ts';
+import type { CompiledModel } from '../../src/pipeline.ts';
+import { checkText } from '../../src/report/check-text.ts';
+import { landscapeText } from '../../src/report/show/landscape.ts';
+import { matrixText } from '../../src/report/show/matrix.ts';
+import { modelText } from '../../src/report/show/model.ts';
+import { printSpec } from '../../src/spec/print.ts';
+import { expectGolden } from './golden.ts';
+import { compileModel, modelNames } from './models.ts';
+
+const stages: Readonly<Record<string, (compiled: CompiledModel) => string>> = {
+  spec: ({ spec }) => printSpec(spec),
+  model: ({ model }) => modelText(model),
+  landscape: landscapeText,
+  matrix: matrixText,
+  packed: ({ image }) => describeImage(image),
+  check: (compiled) => checkText(understand(compiled), { colour: false, width: 100 }),
+};
+
+describe.each(modelNames)('%s', (name) => {
+  const compiled = compileModel(name);
+
+  test.each(Object.keys(stages))('%s', (stage) => {
+    const text = `${stages[stage]?.(compiled).trimEnd() ?? ''}\n`;
+    expectGolden(new URL(`${name}/${stage}.txt`, import.meta.url), text);
+  });
+});
+
+test('no text is left of a model or a stage that is gone', () => {
+  const found = readdirSync(new URL('.', import.meta.url), { withFileTypes: true });
+  const folders = found.filter((entry) => entry.isDirectory()).map((entry) => entry.name);
+  expect(folders.sort()).toEqual(modelNames);
+  for (const name of folders) {
+    const files = readdirSync(new URL(`${name}/`, import.meta.url)).sort();
+    expect(files).toEqual(
+      Object.keys(stages)
+        .map((stage) => `${stage}.txt`)
+        .sort(),
+    );
+  }
+});
