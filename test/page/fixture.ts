@@ -5,7 +5,7 @@ import type { Landscape } from '../../src/landscape/landscape.ts';
 import type { Model, RateTable } from '../../src/model/model.ts';
 import type { Chance, PathResults, RunResults, YearSummary } from '../../src/results/results.ts';
 
-const firstYear = 2026;
+const firstYear = 2027;
 const steps = 50;
 const futures = 2000;
 const classes = ['newborn', 'yearling', 'adult'];
@@ -160,7 +160,7 @@ function fixturePath(model: Model): PathResults {
   const abundance = Array.from({ length: steps + 1 }, (_, t) =>
     model.patches.flatMap((patch) =>
       classes.map((name, c) => ({
-        year: firstYear + t,
+        year: firstYear - 1 + t,
         patch: patch.name,
         class: name,
         animals: [0, 0.4, 0.6][c]! * 10,
@@ -236,7 +236,7 @@ function summaries(value: (r: number, t: number) => number): YearSummary[] {
     const sd = Math.sqrt(all.reduce((a, b) => a + (b - mean) ** 2, 0) / futures);
     const at = (level: number) => all[Math.floor(level * (futures - 1))]!;
     const quantiles = { '0.05': at(0.05), '0.25': at(0.25), '0.5': at(0.5), '0.75': at(0.75), '0.95': at(0.95) };
-    return { year: firstYear + t, mean, sd, quantiles };
+    return { year: firstYear - 1 + t, mean, sd, quantiles };
   });
 }
 
@@ -246,20 +246,21 @@ function outcome(model: Model, k: number, value: (r: number, t: number) => numbe
   const now = new Float64Array(steps + 1);
   for (let r = 0; r < futures; r++) {
     let fallen = false;
-    for (let t = 0; t <= steps; t++) {
+    for (let t = 1; t <= steps; t++) {
       const below = value(r, t) < rule.below;
       fallen ||= below;
       ever[t] = ever[t]! + (fallen ? 1 / futures : 0);
       now[t] = now[t]! + (below ? 1 / futures : 0);
     }
   }
-  const byYear = Array.from(ever, (everBelow, t) => ({
-    year: firstYear + t,
+  const counts = Array.from(ever, (everBelow, t) => ({
+    year: firstYear - 1 + t,
     everBelow,
     lower: Math.max(0, everBelow - 0.0304),
     upper: Math.min(1, everBelow + 0.0304),
     below: now[t]!,
   }));
+  const byYear = counts.slice(1);
   const { name, definition, below } = rule;
   return { name, definition, below, ever: chance(ever[steps]!), atEnd: chance(now[steps]!), byYear };
 }

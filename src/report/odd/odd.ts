@@ -52,8 +52,8 @@ function entities(model: Model): Markup {
   const patchNames = names(inFileOrder(model).map((p) => patches[p]?.name ?? ''));
   return mark`<p>The state is the number of animals of each class in each patch: ${plain(classes.length)} classes
 (${names(classes)}) in ${plain(patches.length)} patches ${places} (${patchNames}).
-${what}${oldest === null ? '' : oldestWords[oldest]} One step is a year; a run has ${plain(steps)} of them, starting from
-the count of ${String(firstYear)}. Animals are whole.</p>`;
+${what}${oldest === null ? '' : oldestWords[oldest]} One step is a year; a run has ${plain(steps)} of them, ${String(firstYear)} to
+${String(firstYear + steps - 1)}, from the count of the year before. Animals are whole.</p>`;
 }
 
 function overview(model: Model): Markup {
