@@ -1,5 +1,4 @@
 // From the name of a model file to a compiled model; what is wrong with it goes to standard error.
-import { readFileSync, statSync } from 'node:fs';
 import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { renderDiagnostics } from '../diagnostic/render.ts';
 import { inFileOrder } from '../diagnostic/tell.ts';
@@ -9,11 +8,9 @@ import { locateFinding } from '../spec/finding.ts';
 import { readSpec } from '../spec/read.ts';
 import { applySettings, type Settings } from '../spec/settings.ts';
 import { Ending, exitCodes } from './exit.ts';
-import { reasonOf, writeError } from './output.ts';
+import { readText } from './input.ts';
+import { writeError } from './output.ts';
 import { terminalOf } from './terminal.ts';
-
-/** Larger files are not specs; data belong into files of their own. */
-const largestSpecBytes = 8 * 1024 * 1024;
 
 export interface Loaded {
   readonly document: SpecDocument;
@@ -57,34 +54,4 @@ export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {
 /** The mistakes were told with their count; there is nothing to add. */
 export function toldAlready(): Ending {
   return new Ending(exitCodes.model, '');
-}
-
-function readText(path: string): string {
-  const bytes = readBytes(path);
-  try {
-    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
-  } catch {
-    throw new Ending(exitCodes.model, `Cannot read ${path}: it is not text in UTF-8.`);
-  }
-}
-
-function readBytes(path: string): Uint8Array {
-  const size = path === '-' ? 0 : sizeOf(path);
-  if (size > largestSpecBytes) {
-    const megabytes = Math.round(size / 1024 / 1024);
-    throw new Ending(exitCodes.model, `Cannot read ${path}: ${megabytes} MB is too large for a model (at most 8 MB).`);
-  }
-  try {
-    return readFileSync(path === '-' ? 0 : path);
-  } catch (error) {
-    throw new Ending(exitCodes.model, `Cannot read ${path}: ${reasonOf(error)}.`);
-  }
-}
-
-function sizeOf(path: string): number {
-  const found = statSync(path, { throwIfNoEntry: false });
-  if (found === undefined) throw new Ending(exitCodes.model, `Cannot read ${path}: there is no such file or folder.`);
-  if (found.isDirectory())
-    throw new Ending(exitCodes.model, `Cannot read ${path}: it is a folder; name the model file in it.`);
-  return found.size;
 }

@@ -2,7 +2,7 @@
 import { join } from 'node:path';
 import type { CompiledModel } from '../pipeline.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
-import { makeFolder, openPending } from './output.ts';
+import { makeFolder, pendingFile } from './files.ts';
 import { csvText, dictionaryText, type Table } from './tables.ts';
 
 export interface OutContent {
@@ -17,12 +17,11 @@ export interface OutFolder {
 /** Made, and tried for writing, before the work begins. */
 export function openOutFolder(folder: string): OutFolder {
   makeFolder(folder);
-  const trial = openPending(join(folder, 'results.json'));
-  trial.abandon();
+  pendingFile(join(folder, 'results.json'));
   return {
     write: ({ spec, provenance }, { results, tables }) => {
       const put = (name: string, text: string): void => {
-        openPending(join(folder, name)).finish(text);
+        pendingFile(join(folder, name)).finish(text);
       };
       for (const table of tables) put(`${table.name}.csv`, csvText(table));
       put('dictionary.csv', dictionaryText(tables));

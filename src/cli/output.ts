@@ -1,71 +1,24 @@
-// Standard output and error, and files that are written whole or not at all.
-import { closeSync, mkdirSync, openSync, renameSync, rmSync, statSync, writeSync } from 'node:fs';
-import { basename, dirname, join } from 'node:path';
+// Standard output and error, and why something could not be written or read, in words.
+import { writeSync } from 'node:fs';
 import { Ending, exitCodes } from './exit.ts';
 
+const standardOutput = 1;
+const standardError = 2;
+
 export function writeOut(text: string): void {
-  writeAll(1, text, 'standard output');
+  writeAll(standardOutput, text, 'standard output');
 }
 
 export function writeError(text: string): void {
   try {
-    writeAll(2, text, 'standard error');
+    writeAll(standardError, text, 'standard error');
   } catch {
     // Nobody is left to tell.
   }
 }
 
-/** A file that appears under its name only once all of it is written. */
-export interface PendingFile {
-  readonly path: string;
-  finish(text: string | Uint8Array): void;
-  abandon(): void;
-}
-
-/** Opens a file beside the wanted one, so that an unwritable place is told before the work and not after it. */
-export function openPending(path: string): PendingFile {
-  refuseDirectory(path);
-  const temporary = join(dirname(path), `.${basename(path)}.${process.pid}.tmp`);
-  const descriptor = attempt(path, () => openSync(temporary, 'wx'));
-  const abandon = (): void => {
-    rmSync(temporary, { force: true });
-  };
-  return {
-    path,
-    abandon,
-    finish: (content) => {
-      try {
-        writeAll(descriptor, content, path);
-        attempt(path, () => {
-          closeSync(descriptor);
-          renameSync(temporary, path);
-        });
-      } catch (error) {
-        abandon();
-        throw error;
-      }
-    },
-  };
-}
-
-export function makeFolder(path: string): void {
-  attempt(path, () => mkdirSync(path, { recursive: true }));
-}
-
-function refuseDirectory(path: string): void {
-  const found = statSync(path, { throwIfNoEntry: false });
-  if (found?.isDirectory() === true) throw new Ending(exitCodes.work, `Cannot write ${path}: it is a folder.`);
-}
-
-function attempt<T>(path: string, action: () => T): T {
-  try {
-    return action();
-  } catch (error) {
-    throw new Ending(exitCodes.work, `Cannot write ${path}: ${reasonOf(error)}.`);
-  }
-}
-
-function writeAll(descriptor: number, content: string | Uint8Array, name: string): void {
+/** All of it, however little the other end takes at a time. */
+export function writeAll(descriptor: number, content: string | Uint8Array, name: string): void {
   const bytes = typeof content === 'string' ? new TextEncoder().encode(content) : content;
   let done = 0;
   while (done < bytes.length) {
@@ -74,24 +27,26 @@ function writeAll(descriptor: number, content: string | Uint8Array, name: string
     } catch (error) {
       if (codeOf(error) === 'EAGAIN') continue;
       // Whoever read our output has enough of it.
-      if (codeOf(error) === 'EPIPE') process.exit(exitCodes.done);
+      if (codeOf(error) === 'EPIPE' && descriptor === standardOutput) process.exit(exitCodes.done);
       throw new Ending(exitCodes.work, `Cannot write ${name}: ${reasonOf(error)}.`);
     }
   }
 }
 
-function codeOf(error: unknown): string {
+export function codeOf(error: unknown): string {
   return error instanceof Error && 'code' in error ? String(error.code) : '';
 }
 
 const reasons: Readonly<Record<string, string>> = {
   ENOENT: 'there is no such file or folder',
+  EEXIST: 'a file of this name is there already',
   EACCES: 'permission denied',
   EPERM: 'permission denied',
   EROFS: 'the disk is read-only',
   ENOSPC: 'no space left on the disk',
   EISDIR: 'it is a folder',
   ENOTDIR: 'a part of its path is not a folder',
+  ELOOP: 'its links lead in a circle',
   ENAMETOOLONG: 'its name is too long',
 };
 

@@ -3,7 +3,8 @@ import { existsSync, readFileSync, readdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { Ending, exitCodes } from '../exit.ts';
-import { makeFolder, openPending, writeError, writeOut } from '../output.ts';
+import { makeFolder, pendingFile } from '../files.ts';
+import { writeError, writeOut } from '../output.ts';
 
 const starter = 'two-ponds';
 
@@ -20,7 +21,7 @@ export function newModel(folder: string, { example }: { readonly example?: strin
   if (existsSync(target)) throw new Ending(exitCodes.work, `${target} exists already; nothing was written.`);
   const text = readFileSync(join(examplesFolder(), `${name}.yaml`), 'utf8');
   makeFolder(folder);
-  openPending(target).finish(text);
+  pendingFile(target).finish(text);
   writeError(`Wrote ${target}\nNext: skein check ${target}\n`);
 }
 

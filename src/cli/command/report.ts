@@ -4,32 +4,28 @@ import { followPath, runModel } from '../../pipeline.ts';
 import { buildReport } from '../../report/report.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
-import { openPending, writeError, writeOut } from '../output.ts';
+import { pendingFile } from '../files.ts';
+import { writeError, writeOut } from '../output.ts';
 import { showProgress } from '../progress.ts';
 
 export function reportCommand(path: string, options: CommonOptions & { readonly output: string }): void {
   const { compiled, document } = loadModel(path, settingsOf(options), options.quiet === true);
-  const file = options.output === '-' ? null : openPending(options.output);
-  try {
-    const progress = showProgress('Replicates', options.quiet === true);
-    const results = runModel(compiled, { onProgress: progress.update });
-    progress.finish();
-    const page = buildReport({
-      results,
-      path: followPath(compiled),
-      model: compiled.model,
-      landscape: compiled.landscape,
-      coefficients: compiled.coefficients,
-      specText: document.text,
-      commandLine: commandLineOf(path, options),
-      pageScript,
-    });
-    if (file === null) writeOut(page);
-    else file.finish(page);
-  } catch (error) {
-    file?.abandon();
-    throw error;
-  }
+  const file = options.output === '-' ? null : pendingFile(options.output);
+  const progress = showProgress('Replicates', options.quiet === true);
+  const results = runModel(compiled, { onProgress: progress.update });
+  progress.finish();
+  const page = buildReport({
+    results,
+    path: followPath(compiled),
+    model: compiled.model,
+    landscape: compiled.landscape,
+    coefficients: compiled.coefficients,
+    specText: document.text,
+    commandLine: commandLineOf(path, options),
+    pageScript,
+  });
+  if (file === null) writeOut(page);
+  else file.finish(page);
   if (file !== null && options.quiet !== true) writeError(`Wrote ${options.output}\n`);
 }
 
