@@ -10,7 +10,7 @@ body{font-size:9.6pt;line-height:1.42}
 main{padding:0;border:0;max-width:none;background:#fff}
 nav,.controls,.save,.skip,.readout,.tip,footer{display:none!important}
 .wide{display:block!important}.narrow{display:none!important}
-h1{font-size:22pt;margin:.2rem 0}h2{font-size:14.5pt;margin:1.1rem 0 .4rem;padding-top:.45rem;break-after:avoid}h3,h4,h5{break-after:avoid}
+h1{font-size:22pt;margin:.2rem 0}h3{font-size:11pt;margin:.8rem 0 .3rem}h4,h5{font-size:9.8pt;margin:.6rem 0 .2rem}h2{font-size:14.5pt;margin:1.1rem 0 .4rem;padding-top:.45rem;break-after:avoid}h3,h4,h5{break-after:avoid}
 .question{font-size:12.5pt;margin:.1rem 0 .3rem}.lead{font-size:14pt;margin-bottom:.4rem}
 p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max-width:none}
 .answer{grid-template-columns:1fr auto;gap:1rem}.futures{max-width:13rem}.sure{margin-top:.4rem}

@@ -5,8 +5,6 @@ import { answer, finished, lastYear } from './answer.ts';
 import { sparkLine } from './spark-line.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
-export { joinBlocks } from './terminal.ts';
-
 export interface RunTextStyle extends TextStyle {
   /** What one individual is called: 'females' or 'animals'. */
   readonly animals?: string;
