@@ -13,8 +13,8 @@ import {
   type PhaseSensitivity,
 } from './phase-sensitivity.ts';
 
-/** Work that exact removals may take, in states³ or entries: some seconds. */
-const workLimit = 4e9;
+/** Work that exact removals may take, in states³ or entries: seconds. */
+const workLimit = { patches: 8e9, links: 4e9 } as const;
 
 function workOf(matrix: SparseMatrix): number {
   const n = matrix.columns;
@@ -41,7 +41,7 @@ export function patchRemovalLosses(
   importance: Float64Array,
 ): (number | null)[] {
   const groups = statesByPatch(states, importance.length);
-  const affordable = Math.max(10, Math.floor(workLimit / workOf(matrix)));
+  const affordable = Math.max(10, Math.floor(workLimit.patches / workOf(matrix)));
   const order = groups.map((_, p) => p).sort((a, b) => (importance[b] ?? 0) - (importance[a] ?? 0) || a - b);
   const chosen = new Set(order.slice(0, affordable));
   return groups.map((_, patch) => {
@@ -86,7 +86,7 @@ export interface LinkInput {
  */
 export function linkValues(input: LinkInput): LinkValue[] {
   const links = input.phases.flatMap((phase, index) => linksOf(phase, input.classCount, index));
-  const affordable = Math.floor(workLimit / workOf(input.matrix));
+  const affordable = Math.floor(workLimit.links / workOf(input.matrix));
   const order = links
     .map((_, k) => k)
     .sort((a, b) => (links[b]?.firstOrder ?? 0) - (links[a]?.firstOrder ?? 0) || a - b);

@@ -10,10 +10,15 @@ export interface Folding {
 
 /**
  * Finds few states that all loops pass through: the ends of backward steps of a depth-first search, less those that turn
- * out not to be needed. Cost: linear, plus a short search for each state kept.
+ * out not to be needed. States of which more than `mostStaying` stay are kept in any case. Cost: linear, plus a short
+ * search for each state kept.
  */
-export function foldingOf(matrix: SparseMatrix): Folding {
+export function foldingOf(matrix: SparseMatrix, mostStaying = Infinity): Folding {
   const keep = endsOfBackwardSteps(matrix);
+  const stayers = new Uint8Array(matrix.columns);
+  for (let state = 0; state < matrix.columns; state++) {
+    if (mostStaying < Infinity && stayOf(matrix, state) > mostStaying) stayers[state] = keep[state] = 1;
+  }
   const candidates: number[] = [];
   keep.forEach((is, state) => {
     if (is === 1) candidates.push(state);
@@ -21,7 +26,9 @@ export function foldingOf(matrix: SparseMatrix): Folding {
   const mark = new Int32Array(matrix.columns).fill(-1);
   const entries = (state: number): number => (matrix.columnStart[state + 1] ?? 0) - (matrix.columnStart[state] ?? 0);
   candidates.sort((a, b) => entries(a) - entries(b) || a - b);
-  for (const state of candidates) if (!comesBack(matrix, keep, mark, state)) keep[state] = 0;
+  for (const state of candidates) {
+    if (stayers[state] === 0 && !comesBack(matrix, keep, mark, state)) keep[state] = 0;
+  }
   return {
     kept: Int32Array.from(candidates.filter((state) => keep[state] === 1).sort((a, b) => a - b)),
     folded: orderOf(matrix, keep),

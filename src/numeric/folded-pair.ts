@@ -18,8 +18,7 @@ export interface IrreduciblePair {
  * there is one such σ; secant steps from both sides, then the quotient vᵀBw / vᵀw.
  */
 export function foldedPair(block: SparseMatrix): IrreduciblePair {
-  const folding = foldingOf(block);
-  const { shift, vector } = matchShift(block, folding, { guess: null, tolerance: 2e-13 });
+  const { folding, shift, vector } = foldAndMatch(block, { guess: null, tolerance: 2e-13 });
   const turned = transpose(block);
   const back: Folding = { kept: folding.kept, folded: folding.folded.slice().reverse() };
   const kernel = condensedAt(block, folding, shift);
@@ -31,6 +30,7 @@ export function foldedPair(block: SparseMatrix): IrreduciblePair {
 }
 
 interface Matched {
+  readonly folding: Folding;
   readonly shift: number;
   readonly vector: Float64Array;
 }
@@ -44,12 +44,24 @@ export interface Guess {
 
 /** The growth alone, from a guess. `tolerance` is relative. */
 export function foldedGrowth(block: SparseMatrix, guess: Guess, tolerance: number): number {
-  return matchShift(block, foldingOf(block), { guess, tolerance }).shift;
+  return foldAndMatch(block, { guess, tolerance }).shift;
 }
 
 interface Wanted {
   readonly guess: Guess | null;
   readonly tolerance: number;
+}
+
+/** Growth must be above what stays in a folded state by this share, or the state is kept. */
+const clearance = 1e-3;
+
+/** A folded state in which nearly as much stays as the whole grows by would make Q(σ) too steep: those are kept instead. */
+function foldAndMatch(block: SparseMatrix, wanted: Wanted): Matched {
+  const first = foldingOf(block);
+  const floor = largestStay(block, first);
+  const matched = matchShift(block, first, wanted);
+  if (matched.shift > floor * (1 + clearance)) return matched;
+  return matchShift(block, foldingOf(block, floor * 0.9), wanted);
 }
 
 function matchShift(block: SparseMatrix, folding: Folding, { guess, tolerance }: Wanted): Matched {
@@ -77,7 +89,7 @@ function matchShift(block: SparseMatrix, folding: Folding, { guess, tolerance }:
     if (Math.abs(step - shift) <= 1e-15 * shift) break;
     shift = step;
   }
-  return { shift, vector: vector ?? ones(folding.kept.length) };
+  return { folding, shift, vector: vector ?? ones(folding.kept.length) };
 }
 
 function ones(size: number): Float64Array {

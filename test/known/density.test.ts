@@ -136,7 +136,7 @@ test('two classes with crowded births: the equilibrium solves A(n)n = n, and its
 });
 
 test('many states: the return rate is found without the whole Jacobian', () => {
-  const size = 450;
+  const size = 402;
   const map: YearMap = {
     states: size,
     apply: (n) => n.map((value, i) => ((1.5 + 0.2 * (i % 3)) * value) / (1 + value / 10)),
