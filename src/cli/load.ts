@@ -13,29 +13,31 @@ import { writeError } from './output.ts';
 import { terminalOf } from './terminal.ts';
 
 export interface Loaded {
-  readonly document: SpecDocument;
+  /** Null where the text cannot be read as a spec. */
+  readonly document: SpecDocument | null;
   /** Null where there is an error. */
   readonly compiled: CompiledModel | null;
   readonly diagnostics: readonly Diagnostic[];
 }
 
+export interface LoadedModel {
+  readonly document: SpecDocument;
+  readonly compiled: CompiledModel;
+}
+
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
-export function loadModel(path: string, settings: Settings, quiet: boolean): Loaded & { compiled: CompiledModel } {
-  const loaded = readModel(path, settings);
-  const { compiled } = loaded;
-  const told = loaded.diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && !quiet));
+export function loadModel(path: string, settings: Settings, quiet: boolean): LoadedModel {
+  const { document, compiled, diagnostics } = readModel(path, settings);
+  const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && !quiet));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
-  if (compiled === null) throw toldAlready();
-  return { ...loaded, compiled };
+  if (document === null || compiled === null) throw toldAlready();
+  return { document, compiled };
 }
 
 export function readModel(path: string, settings: Settings): Loaded {
   const name = path === '-' ? 'standard input' : path;
   const { document, diagnostics } = readSpec(readText(path), name);
-  if (document === undefined) {
-    tellDiagnostics(diagnostics);
-    throw toldAlready();
-  }
+  if (document === undefined) return { document: null, compiled: null, diagnostics };
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) {
     const { name: unknown, nearest } = applied.unknown;
