@@ -7,6 +7,7 @@ import { runPath } from './kernel/path.ts';
 import { runReplicates } from './kernel/run.ts';
 import { buildLandscape } from './landscape/build.ts';
 import { resolveModel } from './model/resolve.ts';
+import { standingCautions } from './results/cautions.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
 import type { PathResults, RunResults } from './results/results.ts';
 import { summarisePath, summariseRun } from './results/summarise.ts';
@@ -57,11 +58,11 @@ export function runModel({ model, image, provenance }: CompiledModel, { onProgre
     seed,
     ...(onProgress === undefined ? {} : { onProgress: (done) => onProgress(done, replicates) }),
   });
-  return summariseRun({ model, raw, provenance, cautions: [] });
+  return summariseRun({ model, raw, provenance, cautions: standingCautions(model) });
 }
 
 /** The path without chance. */
 export function followPath({ model, image, provenance }: CompiledModel): PathResults {
   const raw = runPath(image, { steps: model.steps });
-  return summarisePath({ model, raw, provenance, cautions: [] });
+  return summarisePath({ model, raw, provenance, cautions: standingCautions(model) });
 }

@@ -14,5 +14,8 @@ export function pathCommand(path: string, options: CommonOptions): void {
   const results = followPath(compiled);
   folder?.write(compiled, { results, tables: pathTables(results) });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
-  else writeOut(`${pathText(results, terminalOf(process.stdout)).trimEnd()}\n`);
+  else
+    writeOut(
+      `${pathText(results, { ...terminalOf(process.stdout), animals: compiled.model.counts === 'females' ? 'females' : 'animals' }).trimEnd()}\n`,
+    );
 }

@@ -17,5 +17,8 @@ export function runCommand(path: string, options: CommonOptions): void {
   progress.finish();
   folder?.write(compiled, { results, tables: runTables(compiled.model, results) });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
-  else writeOut(`${runText(results, terminalOf(process.stdout)).trimEnd()}\n`);
+  else
+    writeOut(
+      `${runText(results, { ...terminalOf(process.stdout), animals: compiled.model.counts === 'females' ? 'females' : 'animals' }).trimEnd()}\n`,
+    );
 }

@@ -3,16 +3,15 @@ import type { Model } from '../../model/model.ts';
 import { mark, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { drawTable, type Row } from '../../view/table.ts';
-import { basisWords } from '../basis.ts';
-import { cautions } from '../cautions.ts';
+import { basisWords } from '../../results/basis.ts';
 import type { ReportInput } from '../input.ts';
 import { oddSection } from '../odd/odd.ts';
 import { digits } from '../odd/rates.ts';
 import { list, section } from './section.ts';
 
 /** Stands before the annex: nobody should read the answer without it. */
-export function limitsSection({ model, results }: ReportInput): Markup {
-  const items = cautions(model, results).map((text) => mark`<li>${text}</li>`);
+export function limitsSection({ results }: ReportInput): Markup {
+  const items = results.cautions.map((text) => mark`<li>${text}</li>`);
   return section('limits', 'Limits and cautions', mark`<ul class="limits">${items}</ul>`);
 }
 

@@ -1,11 +1,6 @@
-// What every reader should know before trusting a number: the cautions of this run, and those of any such model.
+// What every reader should know before trusting a number of this model.
 import type { Model } from '../model/model.ts';
-import type { RunResults } from '../results/results.ts';
 import { basisWords } from './basis.ts';
-
-export function cautions(model: Model, results: RunResults): readonly string[] {
-  return [...results.cautions, ...standingCautions(model)];
-}
 
 export function standingCautions(model: Model): readonly string[] {
   return [
@@ -19,7 +14,7 @@ that a model rests on (Fieberg & Ellner 2000); compare the two lengths.`,
 before trusting that patches back each other up.`,
     basisWords(model),
     `Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for
-conservation translocations. This report is one input to it.`,
+conservation translocations. What a model says is one input to it.`,
   ].map((text) => text.replaceAll('\n', ' '));
 }
 

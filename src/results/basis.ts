@@ -1,6 +1,5 @@
 // How well the named numbers of a model are known, in a sentence.
 import type { Model } from '../model/model.ts';
-import { plain } from '../view/number.ts';
 
 const bases = [
   ['measured here', 'measured here'],
@@ -14,15 +13,15 @@ export function basisWords({ parameters }: Model): string {
   if (all === 0) return 'The model names no numbers: all stand in its text without a source of their own.';
   const count = (basis: string | null) => parameters.filter((one) => one.basis === basis).length;
   const known = bases.map(([basis, words]) => [count(basis), words] as const).filter(([many]) => many > 0);
-  const others = known.map(([many, words]) => `${plain(many)} ${words}`);
+  const others = known.map(([many, words]) => `${String(many)} ${words}`);
   const silent = count(null);
-  if (silent > 0) others.push(`${plain(silent)} without a word on where ${silent === 1 ? 'it is' : 'they are'} from`);
+  if (silent > 0) others.push(`${String(silent)} without a word on where ${silent === 1 ? 'it is' : 'they are'} from`);
   const assumed = count('assumed');
-  const first = assumed === 0 ? `None of the ${plain(all)} named numbers is assumed` : assumedWords(assumed, all);
+  const first = assumed === 0 ? `None of the ${String(all)} named numbers is assumed` : assumedWords(assumed, all);
   const rest = others.length === 0 ? '' : `: ${others.join(', ')}`;
   return `${first}${rest}. Numbers that stand in the model without a name have no source of their own.`;
 }
 
 function assumedWords(assumed: number, all: number): string {
-  return `${plain(assumed)} of ${plain(all)} named numbers ${assumed === 1 ? 'is' : 'are'} assumed`;
+  return `${String(assumed)} of ${String(all)} named numbers ${assumed === 1 ? 'is' : 'are'} assumed`;
 }
