@@ -1,4 +1,5 @@
 // From the name of a model file to a compiled model; what is wrong with it goes to standard error.
+import { constructionFindings } from '../analysis/construction/construction.ts';
 import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { renderDiagnostics } from '../diagnostic/render.ts';
 import { inFileOrder } from '../diagnostic/tell.ts';
@@ -45,7 +46,8 @@ export function readModel(path: string, settings: Settings): Loaded {
     throw new Ending(exitCodes.usage, `--set ${unknown}: the model has no parameter \`${unknown}\`.${hint}`);
   }
   const { compiled, findings } = compileSpec(applied.spec);
-  const located = findings.map((finding) => locateFinding(document, finding));
+  const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];
+  const located = all.map((finding) => locateFinding(document, finding));
   return { document, compiled, diagnostics: inFileOrder([...diagnostics, ...located]) };
 }
 

@@ -2,7 +2,7 @@
 import { modelCodes } from './model-codes.ts';
 
 /** What reading a text finds. */
-export const readingCodes = {
+const readingCodes = {
   // The file as text
   'file-empty': 'The file holds nothing.',
   'file-not-text': 'The file is not text in UTF-8.',

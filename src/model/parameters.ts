@@ -33,13 +33,6 @@ function sourceOf(parameter: ParameterSpec | undefined): Pick<NamedNumber, 'sour
 export function checkNames(context: Context): void {
   const attributes = new Set(context.attributes.flatMap((map) => [...map.keys()]));
   for (const name of Object.keys(context.spec.parameters ?? {})) {
-    if (name === 'year') {
-      fail(context, 'reserved-name', ['parameters', name], {
-        message: '`year` is the calendar year in expressions',
-        part: 'key',
-        details: { fix: 'Give the parameter another name.' },
-      });
-    }
     if (!attributes.has(name)) continue;
     fail(context, 'ambiguous-name', ['parameters', name], {
       message: `\`${name}\` is a parameter and an attribute of the patches`,

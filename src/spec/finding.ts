@@ -1,5 +1,5 @@
 // A diagnostic that a later stage found: it knows which key it is about, the document knows where that key stands.
-import type { Diagnostic, Place, Severity } from '../diagnostic/diagnostic.ts';
+import type { Diagnostic, Severity } from '../diagnostic/diagnostic.ts';
 import type { DiagnosticCode } from '../diagnostic/codes.ts';
 import { tell, type Details } from '../diagnostic/tell.ts';
 import type { SpecDocument, SpecPath } from './document.ts';
@@ -17,15 +17,7 @@ export interface Finding {
 }
 
 export function locateFinding(document: SpecDocument, finding: Finding): Diagnostic {
-  const place = document.locate(finding.path, finding.part ?? 'value');
-  const details = { ...finding.details, place: finding.span ? within(place, finding.span) : place };
-  return tell(finding.severity, finding.code, finding.message, details);
-}
-
-/** The stretch of an expression inside the place of its value. Quotes around the value push it one to the right. */
-function within(place: Place, span: Span): Place {
-  const quoted = /^["']/.test(place.text.slice(place.column - 1));
-  const column = place.column + span.offset + (quoted ? 1 : 0);
-  const length = span.length;
-  return column - 1 + length <= place.text.length ? { ...place, column, length } : place;
+  const { part = 'value', span } = finding;
+  const place = document.locate(finding.path, part, span);
+  return tell(finding.severity, finding.code, finding.message, { ...finding.details, place });
 }

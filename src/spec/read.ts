@@ -38,7 +38,7 @@ function documentOf(root: SourceMap, source: SourceText, found: Collector): Spec
     file: source.file,
     text: source.text,
     spec: value,
-    locate: (path, part) => locateIn(root, path[0] === 'named' ? path.slice(1) : path, { source, part }),
+    locate: (path, part, span) => locateIn(root, path[0] === 'named' ? path.slice(1) : path, { source, part, span }),
   };
 }
 

@@ -1,7 +1,15 @@
 // Everything that is told of a text, through all stages that look for mistakes.
+import { constructionFindings } from '../../src/analysis/construction/construction.ts';
 import type { Diagnostic } from '../../src/diagnostic/diagnostic.ts';
+import { inFileOrder } from '../../src/diagnostic/tell.ts';
+import { compileSpec } from '../../src/pipeline.ts';
+import { locateFinding } from '../../src/spec/finding.ts';
 import { readSpec } from '../../src/spec/read.ts';
 
 export function checkText(text: string, file: string): readonly Diagnostic[] {
-  return readSpec(text, file).diagnostics;
+  const { document, diagnostics } = readSpec(text, file);
+  if (document === undefined) return diagnostics;
+  const { compiled, findings } = compileSpec(document.spec);
+  const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];
+  return inFileOrder([...diagnostics, ...all.map((finding) => locateFinding(document, finding))]);
 }

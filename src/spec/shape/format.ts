@@ -5,8 +5,8 @@ import { evaluate } from '../expression/evaluate.ts';
 import { namesIn } from '../expression/names.ts';
 import { dimensionWords, readMeasure, type Dimension } from '../quantity.ts';
 import { isAmbiguousWord } from '../text/scalar.ts';
-import type { SourceScalar } from '../text/source.ts';
-import { put, spanWithin, type Report, type Subject } from './report.ts';
+import { spanWithin, type SourceScalar } from '../text/source.ts';
+import { put, type Report, type Subject } from './report.ts';
 
 /** Checks the text of a scalar against a format of the schema. */
 export function checkFormat(scalar: SourceScalar, format: string, subject: Subject, report: Report): void {

@@ -4,7 +4,7 @@ import { Collector } from '../../diagnostic/collector.ts';
 import type { Severity } from '../../diagnostic/diagnostic.ts';
 import { tell, type Details } from '../../diagnostic/tell.ts';
 import type { Span } from '../expression/ast.ts';
-import { placeAt, type SourceScalar, type SourceText } from '../text/source.ts';
+import { placeAt, type SourceText } from '../text/source.ts';
 
 export interface Report {
   readonly source: SourceText;
@@ -32,12 +32,4 @@ export function put(report: Report, mistake: Mistake, details: Omit<Details, 'pl
 /** A report of its own for a branch that is only tried. */
 export function trial(report: Report): Report {
   return { source: report.source, found: new Collector() };
-}
-
-/** The place of a stretch inside the text of a scalar; the whole scalar where quotes or escapes come between. */
-export function spanWithin(scalar: SourceScalar, inner: Span, source: SourceText): Span {
-  const written = source.text.slice(scalar.span.offset, scalar.span.offset + scalar.span.length);
-  const lead = written === scalar.source ? 0 : written.slice(1, -1) === scalar.source ? 1 : undefined;
-  if (lead === undefined) return scalar.span;
-  return { offset: scalar.span.offset + lead + inner.offset, length: Math.max(1, inner.length) };
 }

@@ -2,14 +2,9 @@
 import type { Place } from '../../diagnostic/diagnostic.ts';
 import type { SpecPath } from '../document.ts';
 import type { Span } from '../expression/ast.ts';
-import { placeAt, type SourceEntry, type SourceNode, type SourceText } from './source.ts';
+import { placeAt, spanWithin, type SourceEntry, type SourceNode, type SourceText } from './source.ts';
 
-/** Without `part`, a single value is shown itself, and a section or list by its key. */
-export function locateIn(
-  root: SourceNode,
-  path: SpecPath,
-  { source, part }: { readonly source: SourceText; readonly part: 'key' | 'value' | undefined },
-): Place {
+export function locateIn(root: SourceNode, path: SpecPath, { source, part, span }: Sought): Place {
   let node = root;
   let key: Span = { offset: node.span.offset, length: 1 };
   for (const step of path) {
@@ -19,7 +14,16 @@ export function locateIn(
     if (next.keySpan !== undefined) key = next.keySpan;
     else key = { offset: node.span.offset, length: Math.max(1, node.span.length) };
   }
+  if (span !== undefined && node.kind === 'scalar' && span.offset + span.length <= node.source.length) {
+    return placeAt(source, spanWithin(node, span, source));
+  }
   return placeAt(source, shown(node, key, part));
+}
+
+interface Sought {
+  readonly source: SourceText;
+  readonly part: 'key' | 'value' | undefined;
+  readonly span: Span | undefined;
 }
 
 type Step = Pick<SourceEntry, 'value'> & Partial<Pick<SourceEntry, 'keySpan'>>;

@@ -77,3 +77,11 @@ function lineOf(lineStarts: readonly number[], offset: number): number {
   }
   return low;
 }
+
+/** The place of a stretch inside the text of a scalar; the whole scalar where quotes or escapes come between. */
+export function spanWithin(scalar: SourceScalar, inner: Span, source: SourceText): Span {
+  const written = source.text.slice(scalar.span.offset, scalar.span.offset + scalar.span.length);
+  const lead = written === scalar.source ? 0 : written.slice(1, -1) === scalar.source ? 1 : undefined;
+  if (lead === undefined) return scalar.span;
+  return { offset: scalar.span.offset + lead + inner.offset, length: Math.max(1, inner.length) };
+}
