@@ -3,6 +3,7 @@ import { seeded } from './random.ts';
 import type { ReportInput } from '../../src/report/input.ts';
 import type { Landscape } from '../../src/landscape/landscape.ts';
 import type { Model, RateTable } from '../../src/model/model.ts';
+import { standingCautions } from '../../src/results/cautions.ts';
 import type { Chance, PathResults, RunResults, YearSummary } from '../../src/results/results.ts';
 
 const firstYear = 2027;
@@ -204,7 +205,7 @@ function fixtureResults(model: Model, growth: number): RunResults {
     meanLowestCount: { mean, sd, standardError: sd / Math.sqrt(futures) },
     patchesInUse: summaries((r, t) => counts[r]![t]!.filter((n) => n > 0).length),
     stopped: { runs: 0, reasons: [] },
-    cautions: [],
+    cautions: standingCautions(model),
   };
 }
 
