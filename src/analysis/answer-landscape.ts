@@ -11,7 +11,7 @@ import type { Analysis } from './schema.ts';
 import type { Vectors } from './sensitivity.ts';
 import { spreadSpeed } from './spread.ts';
 
-export function patchesAnswer({ block }: AnalysisInput, vectors: Vectors): NonNullable<Analysis['patches']> {
+export function patchesAnswer({ block, start }: AnalysisInput, vectors: Vectors): NonNullable<Analysis['patches']> {
   const { matrix, states, patches } = block;
   const [share, importance] = [new Float64Array(patches.length), new Float64Array(patches.length)];
   states.forEach(({ patch }, s) => {
@@ -20,11 +20,13 @@ export function patchesAnswer({ block }: AnalysisInput, vectors: Vectors): NonNu
     importance[patch] = (importance[patch] ?? 0) + here * (vectors.left[s] ?? 0);
   });
   const roles = patchRoles(matrix, states, vectors.right, patches.length);
+  const now = start && patchRoles(matrix, states, start, patches.length);
   const losses = patchRemovalLosses(matrix, states, vectors, importance);
   return roles.map((role, p) => ({
     patch: patches[p] ?? '?',
     share: share[p] ?? 0,
     ...role,
+    contributionNow: now?.[p]?.contribution ?? null,
     removalLoss: losses[p] ?? null,
   }));
 }

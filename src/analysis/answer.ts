@@ -6,11 +6,6 @@ export function because(reason: string): { readonly value: null; readonly reason
   return { value: null, reason };
 }
 
-/** What is asked of `given`, or the reason why nothing is given. */
-export function whereGiven<G, T>(given: G | undefined, reason: string, ask: (given: G) => Answer<T>): Answer<T> {
-  return given === undefined ? because(reason) : ask(given);
-}
-
 /** Collects the reasons of missing answers by the field they are missing from. */
 export interface Reasons {
   readonly told: Readonly<Record<string, string>>;

@@ -13,12 +13,12 @@ import {
   type PhaseSensitivity,
 } from './phase-sensitivity.ts';
 
-/** Work that exact removals may take, in states³ or entries: seconds. */
-const workLimit = { patches: 8e9, links: 4e9 } as const;
+/** Work that exact removals may take, in about a nanosecond each: seconds. */
+const workLimit = { patches: 9e9, links: 2.5e9 } as const;
 
 function workOf(matrix: SparseMatrix): number {
   const n = matrix.columns;
-  return n <= 160 ? 3 * n * n * n + 1e4 : 200 * matrix.values.length + 4e6;
+  return n <= 160 ? 3 * n * n * n + 1e4 : 300 * matrix.values.length + 4e6;
 }
 
 /** Growth of what is left, from the vectors of the whole where it still hangs together. */

@@ -46,8 +46,11 @@ export const PatchSchema = closed({
   patch,
   share: maybe('Share of the stable distribution.'),
   growthAlone: number('Growth rate when whoever leaves is lost and nobody comes.'),
-  contribution: maybe('Animals next year anywhere for each animal in the patch now.'),
-  selfRecruitment: maybe('The same, counting only those in the patch itself.'),
+  contribution: maybe(
+    'Animals next year anywhere for each animal in the patch, made up as in the stable distribution.',
+  ),
+  contributionNow: maybe('The same, made up as at the start.'),
+  selfRecruitment: maybe('As `contribution`, counting only those in the patch itself.'),
   role: orNull(Type.Union([Type.Literal('source'), Type.Literal('sink'), Type.Literal('undecided')])),
   removalLoss: maybe('Growth lost when the patch and its animals are taken away.'),
 });

@@ -74,6 +74,15 @@ describe('a whole analysis', () => {
     expect(missing.filter((field) => field !== 'oscillationSteps')).toEqual([]);
   });
 
+  test('contributions are told for the stable make-up and for that of the start', () => {
+    const { matrix, states } = input.block;
+    const starting = [0, 1, 2].map((s) => [...matrix.values].slice(matrix.columnStart[s], matrix.columnStart[s + 1]));
+    const mean = starting.flat().reduce((sum, value) => sum + value, 0) / 3;
+    expect(states.slice(0, 3).every(({ patch }) => patch === 0)).toBe(true);
+    expect(found.patches![0]!.contributionNow).toBeCloseTo(mean, 12);
+    expect(found.patches![0]!.contribution).not.toBeCloseTo(mean, 3);
+  });
+
   test('a factor on everything has elasticity 1, and its noise comes through as it is', () => {
     expect(found.parameters![0]!.elasticity).toBeCloseTo(1, 12);
     expect(found.growthStandardError).toBeCloseTo(0.02 * found.growthRate, 12);

@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { eigenvalues } from '../../src/numeric/eigenvalues.ts';
 import { leading } from '../../src/numeric/leading.ts';
-import { multiply, multiplyTransposed } from '../../src/numeric/sparse-product.ts';
+import { multiply, multiplyTransposed, product } from '../../src/numeric/sparse-product.ts';
 import { sparseFromRows, sparseFromTriplets, toDense } from '../../src/numeric/sparse.ts';
 import {
   ageingOnly,
@@ -78,6 +78,14 @@ describe('published life cycles', () => {
 
   test('the slowest primitive pattern is told to be primitive (from memory of Wielandt 1950)', () => {
     expect([of(wielandt).primitive, of(wielandt).period]).toEqual([true, 1]);
+    const matrix = sparseFromRows(wielandt);
+    let power = matrix;
+    const filled = [power.values.length];
+    for (let exponent = 2; exponent <= 10; exponent++) {
+      power = product(power, matrix);
+      filled.push(power.values.length);
+    }
+    expect(filled.indexOf(16) + 1).toBe(10);
   });
 });
 
