@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import type { CompiledModel } from '../pipeline.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
 import { makeFolder, pendingFile } from './files.ts';
+import { specJson } from './spec-json.ts';
 import { csvText, dictionaryText, type Table } from './tables.ts';
 
 export interface OutContent {
@@ -25,7 +26,10 @@ export function openOutFolder(folder: string): OutFolder {
       };
       for (const table of tables) put(`${table.name}.csv`, csvText(table));
       put('dictionary.csv', dictionaryText(tables));
-      put('run.json', `${JSON.stringify({ format: 'skein-inputs/1', ...provenance, spec }, null, 2)}\n`);
+      put(
+        'run.json',
+        `${JSON.stringify({ format: 'skein-inputs/1', ...provenance, spec: specJson(spec) }, null, 2)}\n`,
+      );
       put('results.json', `${JSON.stringify(results, null, 2)}\n`);
     },
   };

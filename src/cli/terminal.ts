@@ -7,7 +7,9 @@ export interface Terminal {
 
 /** Of the stream that text goes to. NO_COLOR and pipes turn colours off. */
 export function terminalOf(stream: NodeJS.WriteStream): Terminal {
-  const colour = stream.isTTY && (process.env['NO_COLOR'] ?? '') === '' && process.env['TERM'] !== 'dumb';
-  const columns = stream.isTTY ? stream.columns : 0;
+  // Of a pipe it is not false but missing.
+  const terminal = stream.isTTY === true;
+  const colour = terminal && (process.env['NO_COLOR'] ?? '') === '' && process.env['TERM'] !== 'dumb';
+  const columns = terminal ? stream.columns : 0;
   return { colour, width: columns >= 40 ? Math.min(columns, 120) : 100 };
 }

@@ -9,6 +9,7 @@ import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { writeOut } from '../output.ts';
+import { specJson } from '../spec-json.ts';
 
 interface Printer {
   text(compiled: CompiledModel): string;
@@ -16,7 +17,7 @@ interface Printer {
 }
 
 const printers: Readonly<Record<string, Printer>> = {
-  spec: { text: ({ spec }) => printSpec(spec), json: ({ spec }) => spec },
+  spec: { text: ({ spec }) => printSpec(spec), json: ({ spec }) => specJson(spec) },
   model: { text: ({ model }) => modelText(model), json: ({ model }) => modelJson(model) },
   landscape: { text: landscapeText, json: landscapeJson },
   matrix: { text: matrixText, json: matrixJson },
