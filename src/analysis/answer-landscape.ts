@@ -57,7 +57,8 @@ export function capacityAnswer(input: AnalysisInput): Answer<NonNullable<Analysi
 }
 
 export function spreadAnswer({ block, lineKernels }: AnalysisInput): Answer<NonNullable<Analysis['spread']>> {
-  if (!lineKernels) return because('Needs a dispersal by a kernel of distance.');
+  if (!lineKernels)
+    return because('Was not asked for: it holds on land of one quality, not over a network of patches.');
   const found = spreadSpeed({ matrix: block.matrix, kernelOf: lineKernels });
   if (!found) return because('The population does not grow, so it has no front that advances.');
   return { value: { speedKm: found.speedKm, theta: found.theta } };

@@ -103,6 +103,9 @@ export const EquilibriumSchema = closed({
 
 export const AnalysisSchema = closed({
   format: Type.Literal('skein-analysis/1'),
+  tool: Type.Optional(closed({ name: Type.Literal('skein'), version: Type.String(), kernel: Type.String() })),
+  model: Type.Optional(Type.String({ description: 'Title of the study.' })),
+  hash: Type.Optional(Type.String({ description: 'SHA-256 of everything that decides the result.' })),
   at: Type.Union([Type.Literal('zero'), Type.Literal('equilibrium'), Type.Literal('start')], {
     description: 'Where the matrix was taken: with nobody there, where numbers stand still, or at the start.',
   }),

@@ -1,0 +1,102 @@
+// What the analysis needs of a compiled model: its matrix at a state, births apart from fates, the year as a function.
+import { buildBlock } from '../compile/block.ts';
+import type { AtState, BlockMatrix } from '../compile/block-matrix.ts';
+import { phaseMap } from '../compile/phase-map.ts';
+import { productOf, runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
+import type { Model } from '../model/model.ts';
+import { principalPart } from '../numeric/principal-part.ts';
+import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
+import type { SparseMatrix } from '../numeric/sparse.ts';
+import type { CompiledModel } from '../pipeline.ts';
+import { because, type Answer } from './answer.ts';
+import { equilibriumFrom } from './equilibrium.ts';
+import type { AnalysisInput } from './input.ts';
+import { placesOf } from './label.ts';
+import type { LifeSplit } from './life-history.ts';
+import { parameterTangents } from './parameter-tangents.ts';
+import type { YearMap } from './year-map.ts';
+
+/** The input at nobody, at the start, or where numbers stand still; there may be no such place. */
+export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<AnalysisInput> {
+  const { model, startAnimals } = compiled;
+  const state = stateAt(compiled, at);
+  if (state === null) return because('Numbers do not come to stand still from the start of this model.');
+  const block = buildBlock(compiled, at, state);
+  const places = placesOf(block);
+  const yearMap = dependsOnNumbers(model) ? { yearMap: yearOver(compiled, places) } : {};
+  return {
+    value: {
+      block,
+      start: Float64Array.from(places, (place) => startAnimals[place] ?? 0),
+      split: splitAt(compiled, block, state),
+      parameterTangents: parameterTangents(compiled, block, state),
+      losslessDispersal: nobodyIsLost(compiled),
+      ...yearMap,
+    },
+  };
+}
+
+function stateAt(compiled: CompiledModel, at: AtState): Float64Array | null {
+  const { startAnimals } = compiled;
+  if (at === 'zero') return new Float64Array(startAnimals.length);
+  if (at === 'start') return startAnimals;
+  if (!dependsOnNumbers(compiled.model)) return null;
+  return equilibriumFrom(wholeYear(compiled), startAnimals)?.animals ?? null;
+}
+
+function dependsOnNumbers(model: Model): boolean {
+  return model.crowding.length > 0 || model.phases.some(({ kind }) => kind === 'ceiling');
+}
+
+function yearOver(compiled: Compiled, places: readonly number[]): YearMap {
+  const whole = wholeYear(compiled);
+  const spread = (animals: Float64Array): Float64Array => {
+    const all = new Float64Array(whole.states);
+    places.forEach((place, s) => (all[place] = animals[s] ?? 0));
+    return all;
+  };
+  return {
+    states: places.length,
+    apply: (animals) => {
+      const after = whole.apply(spread(animals));
+      return Float64Array.from(places, (place) => after[place] ?? 0);
+    },
+    matrixAt: (animals) => principalPart(whole.matrixAt(spread(animals)), places),
+  };
+}
+
+/**
+ * U is the product of what each phase does to the animals themselves; F sums, over the phases with births, what later phases
+ * make of the young of animals that came through the earlier ones: A = U + F.
+ */
+export function splitAt(compiled: Compiled, block: BlockMatrix, state: Float64Array): LifeSplit {
+  const { maps, multipliers } = runYear(compiled, state);
+  const { model, landscape } = compiled;
+  let here = state;
+  let fates: SparseMatrix | null = null;
+  let births: SparseMatrix | null = null;
+  maps.forEach((map, index) => {
+    const request = { model, landscape, step: 1, multipliers, state: here };
+    const young = phaseMap(index, { ...request, part: 'births' });
+    const own = phaseMap(index, { ...request, part: 'fates' });
+    const born: SparseMatrix = fates ? product(young, fates) : young;
+    births = births ? weightedSum([1, product(map, births)], [1, born]) : born;
+    fates = fates ? product(own, fates) : own;
+    here = multiply(map, here);
+  });
+  const places = placesOf(block);
+  const none = productOf(maps);
+  return { fates: principalPart(fates ?? none, places), births: principalPart(births ?? none, places) };
+}
+
+/** In every dispersal all that leave arrive alive. */
+function nobodyIsLost({ model, landscape }: Compiled): boolean {
+  return model.phases.every((phase, index) => {
+    const movement = landscape.movements[index];
+    if (phase.kind !== 'dispersal' || !movement) return true;
+    return model.patches.every((_, p) => {
+      const [start, end] = [movement.start[p] ?? 0, movement.start[p + 1] ?? 0];
+      return start === end || movement.chance.subarray(start, end).reduce((sum, chance) => sum + chance, 0) > 1 - 1e-9;
+    });
+  });
+}
