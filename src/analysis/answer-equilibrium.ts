@@ -16,10 +16,11 @@ export function equilibriumAnswer(input: AnalysisInput): Answer<NonNullable<Anal
   const starts = multiples.map((times) => from.map((animals) => animals * times));
   const found = equilibriaFrom(yearMap, starts);
   if (found.length === 0) return because('Numbers never stand still: they swing or grow without end.');
-  const threshold = startThreshold(yearMap, from, [1e-4 / Math.max(1, total), 100]);
+  const invasion = invasionGrowth(yearMap);
+  const threshold = invasion < 1 ? startThreshold(yearMap, from, [1e-4 / Math.max(1, total), 100]) : null;
   return {
     value: {
-      invasionGrowth: invasionGrowth(yearMap),
+      invasionGrowth: invasion,
       states: found.map((equilibrium) => told(input, equilibrium)),
       startThreshold: threshold && {
         diesBelow: threshold.diesBelow * total,

@@ -1,6 +1,6 @@
 // The analysis as text: the answer first, in words, then the tables, then what limits it.
 import type { Analysis } from './schema.ts';
-import { change, listed, table, told } from './words.ts';
+import { change, listed, table, told, years } from './words.ts';
 
 /** The whole text, lines joined, with a line end. `most` is the length of each list of the largest. */
 export function printAnalysis(analysis: Analysis, most = 10): string {
@@ -95,12 +95,12 @@ function firstYears({ transients, dampingRatio, oscillationSteps }: Analysis): s
   const { stepsFollowed, firstStepRise, firstStepDrop, highest, lowest, lasting, fromStart } = transients;
   const lines = [
     `Against steady growth, numbers after one year can be ${told(firstStepDrop)} to ${told(firstStepRise)} times as many, by who is there.`,
-    `The furthest they can be within ${stepsFollowed} years: ${told(lowest.times)} times after ${lowest.step}, ${told(highest.times)} times after ${highest.step}.`,
+    `The fewest within ${years(stepsFollowed)} are ${told(lowest.times)} times as many, the most ${told(highest.times)} times.`,
   ];
   if (lasting) lines.push(`For good they can be ${told(lasting.loss)} to ${told(lasting.gain)} times as many.`);
   if (fromStart?.lasting !== null && fromStart?.lasting !== undefined) {
     const settles =
-      fromStart.stepsToSettle === null ? '' : ` and are there within 5 % after ${fromStart.stepsToSettle} years`;
+      fromStart.stepsToSettle === null ? '' : ` and are there within 5 % after ${years(fromStart.stepsToSettle)}`;
     lines.push(`From the actual start they come to ${told(fromStart.lasting)} times as many${settles}.`);
   }
   if (dampingRatio !== null) {

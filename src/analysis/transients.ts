@@ -43,11 +43,11 @@ export function transientBounds(matrix: SparseMatrix, vectors: Vectors, primitiv
     const next = multiplyTransposed(matrix, sizes).map((size) => size / vectors.growthRate);
     const [high, low] = [maximum(next), minimum(next)];
     if (step === 1) first = { high, low };
-    if (high > highest.times) highest = { times: high, step };
-    if (low < lowest.times) lowest = { times: low, step };
+    if (high > highest.times * (1 + 1e-9)) highest = { times: high, step };
+    if (low < lowest.times * (1 - 1e-9)) lowest = { times: low, step };
     const change = next.reduce((most, size, i) => Math.max(most, Math.abs(size - (sizes[i] ?? 0))), 0);
     sizes = next;
-    if (change < 1e-13 * high) break;
+    if (change < 1e-12 * high) break;
   }
   const worth = vectors.left.map((value) => value / dot(vectors.left, vectors.right));
   return {

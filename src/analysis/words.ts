@@ -35,3 +35,8 @@ export function table(head: readonly string[], rows: readonly (readonly string[]
       .trimEnd(),
   );
 }
+
+/** '1 year', '7 years'. */
+export function years(count: number): string {
+  return `${count} ${count === 1 ? 'year' : 'years'}`;
+}
