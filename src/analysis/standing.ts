@@ -140,15 +140,18 @@ function statesBefore(compiled: Compiled, start: Float64Array): readonly Float64
 function meanWay(landscape: Landscape, phase: number, leavers: readonly number[]): Omit<DispersalReach, 'phase'> {
   const movement = landscape.movements[phase];
   if (movement === null || movement === undefined) return { realisedMeanKm: null, lost: 0 };
-  let [arrived, way, left] = [0, 0, 0];
+  let [alive, arrived, way, left] = [0, 0, 0, 0];
   leavers.forEach((count, p) => {
     left += count;
     for (let k = movement.start[p] ?? 0; k < (movement.start[p + 1] ?? 0); k++) {
       const there = count * (movement.chance[k] ?? 0);
+      alive += there;
+      // Those that turned back have not moved.
+      if (movement.destinations[k] === p) continue;
       arrived += there;
       way += there * (movement.lengthKm?.[k] ?? 0);
     }
   });
   const known = movement.lengthKm !== null && arrived > 0;
-  return { realisedMeanKm: known ? way / arrived : null, lost: left === 0 ? 0 : 1 - arrived / left };
+  return { realisedMeanKm: known ? way / arrived : null, lost: left === 0 ? 0 : Math.max(0, 1 - alive / left) };
 }

@@ -20,5 +20,7 @@ export function buildLandscape(model: Model): BuiltLandscape {
 
 function movementOf(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {
   const { rule } = phase;
-  return rule.by === 'shares' ? sharesMovement(model, rule.shares) : kernelMovement({ model, phase, rule, findings });
+  return rule.by === 'shares'
+    ? sharesMovement(model, phase, rule.shares)
+    : kernelMovement({ model, phase, rule, findings });
 }

@@ -1,10 +1,12 @@
 // Movement from a dispersal kernel: by weights over the other patches, or by the chance of meeting one in the plane.
-// Kernels in the plane: Nathan et al. 2012; the negative exponential has density exp(−r/a) / (2πa²) and mean distance 2a.
 import type { Finding } from '../spec/finding.ts';
 import { pinned } from '../machine/pinned.ts';
 import type { DispersalPhase, DispersalRule, Model } from '../model/model.ts';
+import { densityPerKm2, weightRatio } from '../model/kernel-shape.ts';
 import { neighboursWithin, type Neighbour } from './distance.ts';
 import type { Movement } from './landscape.ts';
+import { crossLinks, withLinkDistances } from './links.ts';
+import { movementOf, type Way } from './ways.ts';
 
 type KernelRule = Extract<DispersalRule, { by: 'kernel' }>;
 
@@ -16,58 +18,43 @@ export interface KernelRequest {
 }
 
 export function kernelMovement(request: KernelRequest): Movement {
-  const { model, rule } = request;
-  const start = new Int32Array(model.patches.length + 1);
-  const [destinations, chance, lengthKm] = [[] as number[], [] as number[], [] as number[]];
-  neighboursWithin(model.patches, rule.kernel.reachKm).forEach((others, from) => {
-    const chances = rule.leavers === 'all arrive' ? arriving(rule, others) : meeting(model, rule, others);
-    if (!chances.some((one) => one > 0)) {
+  const { model, phase, rule } = request;
+  const ways = neighboursWithin(model.patches, rule.kernel.reachKm).map((straight, from) => {
+    const others = withLinkDistances({ phase, reachKm: rule.kernel.reachKm }, from, straight);
+    const aiming = rule.leavers === 'all arrive' ? sharedOut(rule, others) : meeting(model, rule, others);
+    if (!aiming.some((one) => one > 0)) {
       tellNoTarget(request, from);
-      if (rule.leavers === 'all arrive') {
-        // Nobody can arrive anywhere else, so those that set out come home.
-        destinations.push(from);
-        chance.push(1);
-        lengthKm.push(0);
-      }
-    } else {
-      others.forEach(({ patch, km }, i) => {
-        const one = chances[i] ?? 0;
-        if (one <= 0) return;
-        destinations.push(patch);
-        chance.push(one);
-        lengthKm.push(km);
-      });
-      refuseSurplus(request, from, chances);
+      // Where all arrive and nobody can arrive anywhere else, those that set out come home.
+      return rule.leavers === 'all arrive' ? [{ to: from, chance: 1, km: 0 }] : [];
     }
-    start[from + 1] = destinations.length;
+    const list = others.map(({ patch, km }, i) => {
+      const taking = aiming[i] ?? 0;
+      return { to: patch, chance: taking, arriving: taking * survivalOnTheWay(rule, km), km };
+    });
+    const own = crossLinks(phase, from, list);
+    refuseSurplus(request, from, own);
+    return own;
   });
-  return {
-    start,
-    destinations: Int32Array.from(destinations),
-    chance: Float64Array.from(chance),
-    lengthKm: Float64Array.from(lengthKm),
-  };
+  return movementOf(ways);
 }
 
-/** Weights divided by their sum, times survival on the way. Taken relative to the nearest patch, so none underflow. */
-function arriving(rule: KernelRule, others: readonly Neighbour[]): readonly number[] {
+/** Weights divided by their sum. Taken relative to the nearest patch, so none underflow. */
+function sharedOut(rule: KernelRule, others: readonly Neighbour[]): readonly number[] {
   const candidates = others.filter(({ patch }) => (rule.attraction[patch] ?? 0) > 0);
   const nearest = candidates.reduce((least, { km }) => Math.min(least, km), Infinity);
   const weights = others.map(({ patch, km }) => {
     const attraction = rule.attraction[patch] ?? 0;
-    return attraction > 0 ? attraction * pinned.exp(-(km - nearest) / rule.kernel.scaleKm) : 0;
+    return attraction > 0 ? attraction * weightRatio(rule.kernel, km, nearest) : 0;
   });
   const sum = weights.reduce((total, weight) => total + weight, 0);
-  return others.map(({ km }, i) => (sum > 0 ? ((weights[i] ?? 0) / sum) * survivalOnTheWay(rule, km) : 0));
+  return weights.map((weight) => (sum > 0 ? weight / sum : 0));
 }
 
 /** The density of the kernel at the distance times the area of the patch: good while patches are small beside the kernel. */
 function meeting(model: Model, rule: KernelRule, others: readonly Neighbour[]): readonly number[] {
-  const { scaleKm } = rule.kernel;
   return others.map(({ patch, km }) => {
-    const density = pinned.exp(-km / scaleKm) / (2 * Math.PI * scaleKm * scaleKm);
     const areaKm2 = model.patches[patch]?.areaKm2 ?? 0;
-    return (rule.attraction[patch] ?? 0) * areaKm2 * density * survivalOnTheWay(rule, km);
+    return (rule.attraction[patch] ?? 0) * areaKm2 * densityPerKm2(rule.kernel, km);
   });
 }
 
@@ -92,8 +79,8 @@ function tellNoTarget({ model, phase, rule, findings }: KernelRequest, from: num
   });
 }
 
-function refuseSurplus({ model, phase, findings }: KernelRequest, from: number, chances: readonly number[]): void {
-  const sum = chances.reduce((total, one) => total + one, 0);
+function refuseSurplus({ model, phase, findings }: KernelRequest, from: number, ways: readonly Way[]): void {
+  const sum = ways.reduce((total, { chance }) => total + chance, 0);
   if (sum <= 1 + 1e-9) return;
   findings.push({
     severity: 'error',

@@ -1,22 +1,19 @@
 // Movement from a table of shares: the chances of those that leave are the shares over their sum.
-import type { Model } from '../model/model.ts';
+import type { DispersalPhase, Model } from '../model/model.ts';
 import type { Movement } from './landscape.ts';
+import { crossLinks } from './links.ts';
+import { movementOf } from './ways.ts';
 
-export function sharesMovement(model: Model, shares: Float64Array): Movement {
+export function sharesMovement(model: Model, phase: DispersalPhase, shares: Float64Array): Movement {
   const count = model.patches.length;
-  const start = new Int32Array(count + 1);
-  const destinations: number[] = [];
-  const chance: number[] = [];
-  for (let from = 0; from < count; from++) {
-    let sum = 0;
-    for (let to = 0; to < count; to++) sum += shares[to * count + from] ?? 0;
-    for (let to = 0; to < count; to++) {
-      const share = shares[to * count + from] ?? 0;
-      if (share <= 0) continue;
-      destinations.push(to);
-      chance.push(share / sum);
-    }
-    start[from + 1] = destinations.length;
-  }
-  return { start, destinations: Int32Array.from(destinations), chance: Float64Array.from(chance), lengthKm: null };
+  return movementOf(
+    model.patches.map((_, from) => {
+      const own = model.patches.map((_patch, to) => shares[to * count + from] ?? 0);
+      const sum = own.reduce((total, share) => total + share, 0);
+      const open = own.flatMap((share, to) =>
+        share > 0 ? [{ to, chance: share / sum, arriving: share / sum, km: null }] : [],
+      );
+      return crossLinks(phase, from, open);
+    }),
+  );
 }

@@ -1,8 +1,9 @@
 // Crowding: which rates it scales, whom it counts, and the capacity at which a patch alone stands still.
 import type { SpecPath } from '../spec/document.ts';
 import type { CeilingSpec, CrowdingSpec } from '../spec/schema/spec.ts';
-import { classIndex, classMask, fail, patchIndex, tellUnknown, type Context } from './context.ts';
-import type { CeilingPhase, Crowding, Phase, RatePart } from './model.ts';
+import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
+import type { CeilingPhase, Crowding, Phase } from './model.ts';
+import { rateCalled } from './named-rates.ts';
 import { whereIn, withinBounds } from './rates.ts';
 
 export function resolveCeiling(context: Context, name: string, spec: CeilingSpec): CeilingPhase {
@@ -48,42 +49,8 @@ interface Changes {
 
 function changedRates(context: Context, { spec, path, phases }: Changes): Crowding['changes'] {
   return Object.entries(spec.changes).flatMap(([rate, list]) => {
-    const target = findRate(phases, rate);
-    if (target === null) {
-      tellNoRate(context, { rate, path: [...path, 'changes', rate], phases });
-      return [];
-    }
-    return [{ ...target, classes: classMask(context, list, [...path, 'changes', rate]) }];
-  });
-}
-
-/** Which phase and part a rate's name means in this year. */
-function findRate(phases: readonly Phase[], rate: string): { readonly phase: number; readonly part: RatePart } | null {
-  const at = (kind: Phase['kind']): number => phases.findIndex((phase) => phase.kind === kind);
-  const candidates: readonly (readonly [string, number, RatePart])[] = [
-    ['survival', at('survival'), 'survival'],
-    ['births', at('breeding'), 'births'],
-    ['breeding', at('breeding'), 'births'],
-    ['births', at('demography'), 'births'],
-    ['fates', at('demography'), 'fates'],
-    ['survival', at('demography'), 'fates'],
-  ];
-  const match = candidates.find(([name, phase]) => name === rate && phase >= 0);
-  return match === undefined ? null : { phase: match[1], part: match[2] };
-}
-
-function tellNoRate(
-  context: Context,
-  { rate, path, phases }: { readonly rate: string; readonly path: SpecPath; readonly phases: readonly Phase[] },
-): void {
-  const known = ['survival', 'births', 'fates'].filter((name) => findRate(phases, name) !== null);
-  tellUnknown(context, {
-    code: 'unknown-rate',
-    what: 'rate in this year called',
-    name: rate,
-    known,
-    path,
-    part: 'key',
+    const target = rateCalled(context, { rate, path: [...path, 'changes', rate], phases });
+    return target === null ? [] : [{ ...target, classes: classMask(context, list, [...path, 'changes', rate]) }];
   });
 }
 

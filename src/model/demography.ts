@@ -14,8 +14,7 @@ type Entry = (part: 'fates' | 'births', to: number, from: number) => Written | n
 export function resolveDemography(context: Context): DemographyPhase | null {
   const { spec, patches } = context;
   if (spec.demography === undefined) {
-    missingRates(context, 'demography', '`demography: { fates: …, births: … }`');
-    return null;
+    return missingRates(context, 'demography', '`demography: { fates: …, births: … }`');
   }
   for (const [patch, own] of Object.entries(spec.in ?? {})) {
     if (own.demography !== undefined) patchIndex(context, patch, ['in', patch]);

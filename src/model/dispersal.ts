@@ -1,6 +1,9 @@
 // A dispersal: who sets out, and by which rule those that left find another patch.
 import type { DispersalSpec } from '../spec/schema/spec.ts';
+import { checkOwnKeys, numbersIn } from './class-rates.ts';
 import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
+import { resolveKernel } from './kernel.ts';
+import { resolveLinks } from './links.ts';
 import type { DispersalPhase, DispersalRule, RateTable } from './model.ts';
 import type { Where } from './numbers.ts';
 import { buildTable, whereIn, withinBounds } from './rates.ts';
@@ -12,7 +15,8 @@ export function resolveDispersal(context: Context, name: string, spec: Dispersal
   if (!hasKernelParts(context, name, spec)) return null;
   const leaving = leavingTable(context, { name, spec, moves });
   const rule = kernelRule(context, name, spec);
-  return rule === null ? null : { kind: 'dispersal', name, moves, leaving, rule };
+  const links = resolveLinks(context, name, spec);
+  return rule === null ? null : { kind: 'dispersal', name, moves, leaving, rule, links };
 }
 
 interface Named {
@@ -34,6 +38,7 @@ function bySharesTable(
       });
     }
   }
+  refuseOwnLeaving(context, name);
   const patchCount = context.patches.length;
   const table = new Float64Array(patchCount * patchCount);
   for (const [from, row] of Object.entries(shares)) {
@@ -49,7 +54,20 @@ function bySharesTable(
     }
   }
   const leaving = sumOfShares(context, { name, moves, table });
-  return { kind: 'dispersal', name, moves, leaving, rule: { by: 'shares', shares: table } };
+  const links = resolveLinks(context, name, spec);
+  return { kind: 'dispersal', name, moves, leaving, rule: { by: 'shares', shares: table }, links };
+}
+
+/** Shares say for every patch who leaves it, so nothing can be different under `in`. */
+function refuseOwnLeaving(context: Context, name: string): void {
+  for (const { name: patch } of context.patches) {
+    if (numbersIn(context, patch, name) === undefined) continue;
+    fail(context, 'dispersal-shape', ['in', patch, name], {
+      message: `\`${name}\` has a table of shares, which already says who leaves ${patch}`,
+      part: 'key',
+      details: { fix: 'Remove this, and change the shares.' },
+    });
+  }
 }
 
 function tellSelf(context: Context, path: readonly string[]): void {
@@ -122,11 +140,17 @@ function leavingTable(context: Context, { name, spec, moves }: Named): RateTable
       });
     }
   }
+  checkOwnKeys(context, name);
   return buildTable(context, {
     size: context.classes.length,
     bounds: 'share',
-    written: (_, c) => {
+    written: (p, c) => {
       if (leaving === undefined || moves[c] !== 1) return null;
+      const patch = context.patches[p]?.name ?? '';
+      const own = numbersIn(context, patch, name)?.[context.classes[c] ?? ''];
+      if (typeof own === 'number' || typeof own === 'string') {
+        return { expression: own, path: ['in', patch, name, context.classes[c] ?? ''], what: 'leaving share' };
+      }
       if (typeof leaving !== 'object') return { expression: leaving, path: [name, 'leaving'], what: 'leaving share' };
       const key = context.classes[c] ?? '';
       const expression = leaving[key];
@@ -141,9 +165,7 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
   const { kernel, leavers } = spec;
   if (kernel === undefined || leavers === undefined) return null;
   if (!requirePlaces(context, name)) return null;
-  const scaleKm = scaleOf(context, name, kernel);
-  const reachKm =
-    kernel.reach === undefined ? null : positive(context, kernel.reach, [name, 'kernel', 'reach'], 'length');
+  const resolved = resolveKernel(context, name, kernel);
   const attraction = attractionOf(context, name, spec);
   if (leavers === 'may miss') requireAreas(context, name);
   const where: Where = { year: context.time.firstYear };
@@ -162,53 +184,15 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
     { expression: spec.hazard ?? 0, path: hazardPath, what: 'hazard per km' },
     { value: hazardPerKm, bounds: 'from zero', patch: undefined },
   );
-  if (scaleKm === null) return null;
+  if (resolved === null) return null;
   return {
     by: 'kernel',
-    kernel: { shape: 'exponential', scaleKm, reachKm },
+    kernel: resolved,
     attraction,
     leavers,
     hazardPerKm,
     survivalOnTheWay,
   };
-}
-
-/** The exponential kernel in the plane has twice its scale as mean distance. */
-function scaleOf(context: Context, name: string, kernel: NonNullable<DispersalSpec['kernel']>): number | null {
-  const { mean, scale } = kernel;
-  if ((mean === undefined) === (scale === undefined)) {
-    fail(context, 'dispersal-shape', [name, 'kernel'], {
-      message:
-        mean === undefined ? 'The kernel does not say how far animals go' : 'The kernel has both a mean and a scale',
-      part: 'key',
-      details: {
-        expected: 'one of `mean` (the mean distance in the plane) and `scale`',
-        reason: 'In the plane the exponential kernel has a mean distance of twice its scale.',
-      },
-    });
-    return null;
-  }
-  if (mean === undefined)
-    return scale === undefined ? null : positive(context, scale, [name, 'kernel', 'scale'], 'length');
-  const meanKm = positive(context, mean, [name, 'kernel', 'mean'], 'length');
-  return meanKm === null ? null : meanKm / 2;
-}
-
-function positive(
-  context: Context,
-  text: number | string,
-  path: readonly string[],
-  dimension: 'length',
-): number | null {
-  const value = context.numbers.value(text, path, { year: context.time.firstYear, dimension });
-  if (value > 0) return value;
-  if (!Number.isNaN(value)) {
-    fail(context, 'out-of-range', path, {
-      message: `A distance of ${value} km`,
-      details: { expected: 'a distance above zero' },
-    });
-  }
-  return null;
 }
 
 function attractionOf(context: Context, name: string, spec: DispersalSpec): Float64Array {

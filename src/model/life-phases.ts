@@ -1,46 +1,83 @@
-// The phases that every life cycle is made of: survival, breeding and ageing.
-import type { Written } from './rates.ts';
+// The phases that every life cycle is made of: survival, breeding and ageing. The first two may stand in a year several times.
+import type { SpecPath } from '../spec/document.ts';
+import type { BreedingSpec, SurvivalSpec } from '../spec/schema/spec.ts';
+import { checkClassKeys, requireEveryClass, writtenRate, type RateSection } from './class-rates.ts';
+import { classIndex, fail, type Context } from './context.ts';
+import type { AgeingPhase, BreedingPhase, RateTable, SurvivalPhase } from './model.ts';
 import { buildTable } from './rates.ts';
-import { classIndex, fail, patchIndex, type Context } from './context.ts';
-import type { AgeingPhase, BreedingPhase, SurvivalPhase } from './model.ts';
 
 /** Keys among the births that are not classes. */
-const birthSettings = new Set(['female-share', 'into']);
+const birthSettings: ReadonlySet<string> = new Set(['female-share', 'into']);
 
+/** The phase `survival` of the language. */
 export function resolveSurvival(context: Context): SurvivalPhase | null {
-  const { spec, classes } = context;
-  if (spec.survival === undefined) {
-    missingRates(context, 'survival', '`survival: { CLASS: share, … }`');
-    return null;
-  }
-  checkClassKeys(context, 'survival', new Set());
-  const everyPatch = spec.survival;
-  classes.forEach((name) => {
-    if (everyPatch[name] === undefined) tellMissingRate(context, name);
+  const { survival } = context.spec;
+  if (survival === undefined) return missingRates(context, 'survival', '`survival: { CLASS: share, … }`');
+  return survivalPhase(context, 'survival', {
+    everywhere: survival,
+    path: ['survival'],
+    key: 'survival',
+    what: 'survival',
+    settings: new Set(),
   });
-  const survival = buildTable(context, {
-    size: classes.length,
-    bounds: 'share',
-    written: (patch, c) => written(context, { section: 'survival', patch, c }),
-  });
-  return { kind: 'survival', name: 'survival', survival };
 }
 
-export function resolveBreeding(context: Context): BreedingPhase | null {
-  const { spec, classes } = context;
-  if (spec.births === undefined) {
-    missingRates(context, 'breeding', '`births: { CLASS: young, … }`');
-    return null;
-  }
-  checkClassKeys(context, 'births', birthSettings);
-  const share = femaleShare(context);
-  const births = buildTable(context, {
-    size: classes.length,
-    bounds: 'from zero',
-    written: (patch, c) => written(context, { section: 'births', patch, c }),
+/** A survival under a name of its own. */
+export function resolveNamedSurvival(context: Context, name: string, { survival }: SurvivalSpec): SurvivalPhase {
+  const what = `survival in ${name}`;
+  return survivalPhase(context, name, {
+    everywhere: survival,
+    path: [name, 'survival'],
+    key: name,
+    what,
+    settings: new Set(),
   });
-  const epochs = births.epochs.map((table) => table.map((young) => young * share));
-  return { kind: 'breeding', name: 'breeding', births: { ...births, epochs }, into: intoClasses(context) };
+}
+
+function survivalPhase(context: Context, name: string, section: RateSection): SurvivalPhase {
+  checkClassKeys(context, section);
+  requireEveryClass(context, section);
+  const survival = buildTable(context, {
+    size: context.classes.length,
+    bounds: 'share',
+    written: (patch, c) => writtenRate(context, section, [patch, c]),
+  });
+  return { kind: 'survival', name, survival };
+}
+
+/** The phase `breeding` of the language. */
+export function resolveBreeding(context: Context): BreedingPhase | null {
+  const { births } = context.spec;
+  if (births === undefined) return missingRates(context, 'breeding', '`births: { CLASS: young, … }`');
+  return breedingPhase(context, 'breeding', { births, path: ['births'], key: 'births' });
+}
+
+/** A breeding under a name of its own. */
+export function resolveNamedBreeding(context: Context, name: string, { births }: BreedingSpec): BreedingPhase {
+  return breedingPhase(context, name, { births, path: [name, 'births'], key: name });
+}
+
+interface BirthSection {
+  readonly births: BreedingSpec['births'];
+  readonly path: SpecPath;
+  readonly key: string;
+}
+
+function breedingPhase(context: Context, name: string, { births, path, key }: BirthSection): BreedingPhase {
+  const what = name === 'breeding' ? 'births' : `births in ${name}`;
+  const section: RateSection = { everywhere: births, path, key, what, settings: birthSettings };
+  checkClassKeys(context, section);
+  const share = femaleShare(context, births['female-share'], [...path, 'female-share']);
+  const table = buildTable(context, {
+    size: context.classes.length,
+    bounds: 'from zero',
+    written: (patch, c) => writtenRate(context, section, [patch, c]),
+  });
+  return { kind: 'breeding', name, births: scaledBy(table, share), into: intoClasses(context, births['into'], path) };
+}
+
+function scaledBy(table: RateTable, share: number): RateTable {
+  return { ...table, epochs: table.epochs.map((epoch) => epoch.map((young) => young * share)) };
 }
 
 export function resolveAgeing(context: Context): AgeingPhase | null {
@@ -57,28 +94,10 @@ export function resolveAgeing(context: Context): AgeingPhase | null {
   return { kind: 'ageing', name: 'ageing', advance: new Float64Array(classes.length).fill(1), next };
 }
 
-interface RateKey {
-  readonly section: 'survival' | 'births';
-  readonly patch: number;
-  readonly c: number;
-}
+type BirthValue = BreedingSpec['births'][string] | undefined;
 
-/** A patch's own number where it has one, else the number of every patch. */
-function written(context: Context, { section, patch, c }: RateKey): Written | null {
-  const name = context.classes[c] ?? '';
-  const what = section === 'survival' ? `survival of ${name}` : `births of ${name}`;
-  const patchName = context.patches[patch]?.name ?? '';
-  const own = context.spec.in?.[patchName]?.[section]?.[name];
-  if (own !== undefined) return { expression: own, path: ['in', patchName, section, name], what };
-  const general = context.spec[section]?.[name];
-  if (general === undefined || typeof general === 'object') return null;
-  return { expression: general, path: [section, name], what };
-}
-
-function femaleShare(context: Context): number {
-  const expression = context.spec.births?.['female-share'];
+function femaleShare(context: Context, expression: BirthValue, path: SpecPath): number {
   if (expression === undefined || typeof expression === 'object') return 1;
-  const path = ['births', 'female-share'];
   const value = context.numbers.value(expression, path, { year: context.time.firstYear });
   if (value >= 0 && value <= 1) return value;
   if (!Number.isNaN(value)) {
@@ -91,42 +110,24 @@ function femaleShare(context: Context): number {
 }
 
 /** Young enter the class that `into` names, else the first. */
-function intoClasses(context: Context): Float64Array {
+function intoClasses(context: Context, asked: BirthValue, path: SpecPath): Float64Array {
   const into = new Float64Array(context.classes.length);
-  const asked = context.spec.births?.into;
   if (typeof asked === 'string') {
-    const index = classIndex(context, asked, ['births', 'into'], 'value');
+    const index = classIndex(context, asked, [...path, 'into'], 'value');
     if (index >= 0) into[index] = 1;
     return into;
   }
   into[0] = 1;
-  context.defaults.push(`The young are born into the first class, ${context.classes[0]}.`);
+  const words = `The young are born into the first class, ${context.classes[0]}.`;
+  if (!context.defaults.includes(words)) context.defaults.push(words);
   return into;
 }
 
-/** Every key of a section, in every patch, must be a class. */
-function checkClassKeys(context: Context, section: 'survival' | 'births', settings: ReadonlySet<string>): void {
-  for (const name of Object.keys(context.spec[section] ?? {})) {
-    if (!settings.has(name)) classIndex(context, name, [section, name]);
-  }
-  for (const [patch, own] of Object.entries(context.spec.in ?? {})) {
-    if (own[section] === undefined || patchIndex(context, patch, ['in', patch]) < 0) continue;
-    for (const name of Object.keys(own[section])) classIndex(context, name, ['in', patch, section, name]);
-  }
-}
-
-function tellMissingRate(context: Context, name: string): void {
-  fail(context, 'missing-rate', ['survival'], {
-    message: `The class \`${name}\` has no survival`,
-    part: 'key',
-    details: { expected: 'a share for every class', fix: `Add \`${name}: …\` (0 where none survive).` },
-  });
-}
-
 /** Tells that a phase of the year has no rates. */
-export function missingRates(context: Context, phase: string, expected: string): void {
+export function missingRates(context: Context, phase: string, expected: string): null {
   fail(context, 'missing-rates', ['year', context.spec.year.indexOf(phase)], {
     message: `The phase \`${phase}\` is in the year, but its rates are not given`,
     details: { expected },
   });
+  return null;
 }

@@ -1,5 +1,6 @@
 // A model with every name resolved, every default filled and one unit system (km, km², steps): what the compiler reads.
 // Patches stand in the order of their names, classes in the order of the spec. Index p is a patch, c a class.
+import type { DispersalKernel } from './kernel-shape.ts';
 
 export interface Patch {
   readonly name: string;
@@ -58,11 +59,22 @@ export interface DispersalPhase extends PhaseBase {
   /** Share that sets out, P×C; where `shares` is given, the sum of the shares. */
   readonly leaving: RateTable;
   readonly rule: DispersalRule;
+  readonly links?: readonly Link[];
+}
+
+/** Of those that take this way, in either direction, a share turns back and stays at home; of the others a share dies. */
+export interface Link {
+  /** Indices of two patches, the lower first. */
+  readonly between: readonly [number, number];
+  /** Null for the distance of all others. */
+  readonly distanceKm: number | null;
+  readonly crossingDeath: number;
+  readonly turnBack: number;
 }
 export type DispersalRule =
   | {
       readonly by: 'kernel';
-      readonly kernel: { readonly shape: 'exponential'; readonly scaleKm: number; readonly reachKm: number | null };
+      readonly kernel: DispersalKernel;
       /** A factor of the weight of each target patch. */
       readonly attraction: Float64Array;
       readonly leavers: 'all arrive' | 'may miss';

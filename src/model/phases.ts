@@ -1,9 +1,17 @@
 // The year in order: from the phase after the count round to the count.
+import type { NamedSpec } from '../spec/schema/spec.ts';
+import { refuseUnknownOwnKeys } from './class-rates.ts';
 import { fail, tellUnknown, type Context } from './context.ts';
 import { resolveCeiling } from './crowding.ts';
 import { resolveDemography } from './demography.ts';
 import { resolveDispersal } from './dispersal.ts';
-import { resolveAgeing, resolveBreeding, resolveSurvival } from './life-phases.ts';
+import {
+  resolveAgeing,
+  resolveBreeding,
+  resolveNamedBreeding,
+  resolveNamedSurvival,
+  resolveSurvival,
+} from './life-phases.ts';
 import type { Phase } from './model.ts';
 
 /** The phases that every study can use without naming them itself. */
@@ -13,6 +21,7 @@ export function resolvePhases(context: Context): readonly Phase[] {
   const { year } = context.spec;
   refuseRepeats(context);
   tellUnused(context);
+  refuseUnknownOwnKeys(context);
   const count = year.indexOf('count');
   if (count < 0) {
     fail(context, 'missing-count', ['year'], {
@@ -44,7 +53,20 @@ function resolvePhase(context: Context, name: string, index: number): Phase | nu
     tellUnknown(context, { code: 'unknown-phase', what: 'phase', name, known, path: ['year', index], part: 'value' });
     return null;
   }
-  return named.kind === 'dispersal' ? resolveDispersal(context, name, named) : resolveCeiling(context, name, named);
+  return resolveNamed(context, name, named);
+}
+
+function resolveNamed(context: Context, name: string, named: NamedSpec): Phase | null {
+  switch (named.kind) {
+    case 'survival':
+      return resolveNamedSurvival(context, name, named);
+    case 'breeding':
+      return resolveNamedBreeding(context, name, named);
+    case 'dispersal':
+      return resolveDispersal(context, name, named);
+    case 'ceiling':
+      return resolveCeiling(context, name, named);
+  }
 }
 
 function refuseRepeats(context: Context): void {

@@ -1,6 +1,6 @@
 // What `skein check` says of a model that has no errors: what was understood, every default, and where patches stand still.
 import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
-import { pinned } from '../machine/pinned.ts';
+import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
 import type { DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { fixed } from './rounded.ts';
@@ -63,9 +63,9 @@ function phaseWords(model: Model, phase: Phase): string {
     case 'count':
       return 'count: abundance is read, thresholds apply';
     case 'survival':
-      return 'survival: each animal lives on or dies';
+      return `${phase.name}: each animal lives on or dies`;
     case 'breeding':
-      return `breeding: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}`;
+      return `${phase.name}: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}`;
     case 'ageing': {
       const last = model.classes.at(-1) ?? '';
       return `ageing: each goes on to the next class; ${last} ${model.oldest === 'terminal' ? 'leaves the model' : 'stays'}`;
@@ -94,17 +94,25 @@ function dispersalWords({ reach }: Understood, phase: Phase): readonly string[] 
   return [`${phase.name}: ${ruleWords(phase)}${realised}${lost}`];
 }
 
-/** The weight of the kernel at half, once and twice its mean distance, and how many go beyond. */
-function ruleWords({ rule }: DispersalPhase): string {
-  if (rule.by === 'shares') return 'a table of shares.';
-  const { scaleKm, reachKm } = rule.kernel;
-  const at = [scaleKm, 2 * scaleKm, 4 * scaleKm].map((km) => {
-    const beyond = (1 + km / scaleKm) * pinned.exp(-km / scaleKm);
-    return `${fixed(km, 2)} km (weight ${fixed(pinned.exp(-km / scaleKm), 3)}; ${percent(beyond)} of moves are longer)`;
+/** The weight of the kernel at half, once and twice its mean distance (or its scale where it has no mean), and how many go beyond. */
+function ruleWords({ rule, links }: DispersalPhase): string {
+  const crossings = links === undefined || links.length === 0 ? '' : ` ${linkWords(links.length)}`;
+  if (rule.by === 'shares') return `a table of shares.${crossings}`;
+  const { kernel, leavers } = rule;
+  const meanKm = kernel.scaleKm * meanOverScale(kernel.shape, kernel.shapeNumber);
+  const middle = Number.isFinite(meanKm) ? meanKm : kernel.scaleKm;
+  const at = [middle / 2, middle, 2 * middle].map((km) => {
+    const weight = fixed(weightRatio(kernel, km, 0), 3);
+    return `${fixed(km, 2)} km (weight ${weight}; ${percent(shareBeyond(kernel, km))} of moves are longer)`;
   });
-  const end = reachKm === null ? 'no limit' : `nobody goes beyond ${fixed(reachKm, 2)} km`;
-  const leavers = rule.leavers === 'all arrive' ? 'all leavers arrive somewhere' : 'leavers may miss every patch';
-  return `exponential kernel, mean ${fixed(2 * scaleKm, 2)} km in the plane; at ${at.join(', ')}; ${end}; ${leavers}.`;
+  const end = kernel.reachKm === null ? 'no limit' : `nobody goes beyond ${fixed(kernel.reachKm, 2)} km`;
+  const mean = Number.isFinite(meanKm) ? `mean ${fixed(meanKm, 2)} km in the plane` : 'without a mean distance';
+  const who = leavers === 'all arrive' ? 'all leavers arrive somewhere' : 'leavers may miss every patch';
+  return `${kernel.shape} kernel, ${mean}; at ${at.join(', ')}; ${end}; ${who}.${crossings}`;
+}
+
+function linkWords(links: number): string {
+  return links === 1 ? 'One way has a rule of its own.' : `${links} ways have rules of their own.`;
 }
 
 function standingTable({ model, standing }: Understood, style: TextStyle): string {

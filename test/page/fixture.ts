@@ -94,7 +94,7 @@ function fixtureModel(choice: FixtureChoice): Model {
         leaving: same([0.22, 0, 0]),
         rule: {
           by: 'kernel',
-          kernel: { shape: 'exponential', scaleKm: 2, reachKm: 15 },
+          kernel: { shape: 'exponential', scaleKm: 2, shapeNumber: 1, reachKm: 15 },
           attraction: Float64Array.from(sites, (site) => Math.sqrt(site.capacity)),
           leavers: 'all arrive',
           hazardPerKm: 0.03,

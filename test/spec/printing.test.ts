@@ -51,8 +51,10 @@ test('a spec that uses every key comes back', () => {
         survival: { adult: adult_survival * 0.9 }
         births: { adult: 2 }
       North fen:
+        moult: { adult: 0.95 }
+        natal: { newborn: 0.3 }
         demography: { survival: [0.3, 0.4, 0.8], fecundity: [0, 1, 1.2] }
-    year: [count, breeding, survival, natal, roaming, room, ageing]
+    year: [count, breeding, second brood, survival, moult, natal, roaming, wandering, room, ageing]
     natal:
       kind: dispersal
       classes: [newborn]
@@ -70,6 +72,20 @@ test('a spec that uses every key comes back', () => {
       shares:
         North fen: { Saltmarsh: 0.1 }
     room: { kind: ceiling, counted: [adult], capacity: 2 * capacity, takes: at random }
+    second brood:
+      kind: breeding
+      births: { adult: 0.5, female-share: 0.5, into: newborn }
+    moult:
+      kind: survival
+      survival: { newborn: 1, yearling: 0.98, adult: 0.97 }
+    wandering:
+      kind: dispersal
+      classes: [yearling]
+      leaving: 0.1
+      kernel: { shape: "2Dt", scale: 3 km, shape-number: 2.5 }
+      leavers: may miss
+      links:
+        - { between: [North fen, Saltmarsh], distance: 9 km, crossing-death: 0.4, turn-back: 50 % }
     crowding:
       form: beverton-holt
       changes: { survival: [newborn] }

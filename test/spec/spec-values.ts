@@ -68,7 +68,14 @@ const anyDispersal = fc.record({
   kind: fc.constant('dispersal' as const),
   classes: anyClasses,
   leaving: fc.oneof(anyExpression, record(anyName, anyExpression)),
-  kernel: fc.record({ shape: fc.constant('exponential' as const), mean: fc.constantFrom('4 km', 4, 'litter m') }),
+  kernel: fc.record({
+    shape: fc.constantFrom('exponential' as const, '2Dt' as const),
+    mean: fc.constantFrom('4 km', 4, 'litter m'),
+  }),
+  links: fc.array(fc.record({ between: fc.tuple(anyName, anyName), 'turn-back': anyExpression }), {
+    minLength: 1,
+    maxLength: 2,
+  }),
   attraction: anyExpression,
   shares: record(anyName, record(anyName, anyExpression)),
 });
@@ -79,6 +86,8 @@ const anyCeiling = fc.record({
   capacity: anyExpression,
   takes: fc.constant('at random' as const),
 });
+
+const anySurvival = fc.record({ kind: fc.constant('survival' as const), survival: record(anyName, anyExpression) });
 
 const anyStart = fc.oneof(
   fc.record({ total: anyPositive }),
@@ -129,6 +138,6 @@ const anySectionName = anyName.filter((name) => !coreKeys.has(name));
 
 /** Specs that are right in shape; whether their names fit together is not their concern. */
 export const anySpec: fc.Arbitrary<Spec> = fc.record(
-  { ...core, named: record(anySectionName, fc.oneof(anyDispersal, anyCeiling)) },
+  { ...core, named: record(anySectionName, fc.oneof(anyDispersal, anyCeiling, anySurvival)) },
   { requiredKeys: ['skein', 'study', 'years', 'patches', 'counts', 'classes', 'year', 'start', 'named'] },
 );

@@ -32,8 +32,8 @@ births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newbor
 demography: { fates: [[0, 0, 0], [0.3, 0, 0], [0, "min(0.5, cover)", 0.8]] }
 in:
   Saltmarsh: { survival: { adult: adult_survival * 0.9 }, births: { adult: 2 } }
-  North fen: { demography: { survival: [0.3, 0.4, 0.8], fecundity: [0, 1, 1.2] } }
-year: [count, breeding, survival, natal, roaming, room, ageing]
+  North fen: { moult: { adult: 0.95 }, natal: { newborn: 0.3 }, demography: { survival: [0.3, 0.4, 0.8], fecundity: [0, 1, 1.2] } }
+year: [count, breeding, second brood, survival, moult, natal, roaming, wandering, room, ageing]
 natal:
   kind: dispersal
   classes: [newborn]
@@ -62,4 +62,14 @@ outcomes:
   lost hares: { of: [adult], below: 40 }
   north empty: { of: all, in: [North fen], below: 0.5 }
 run: { replicates: 2000, seed: 2026 }
+second brood: { kind: breeding, births: { adult: 0.5, female-share: 0.5, into: newborn } }
+moult: { kind: survival, survival: { newborn: 1, yearling: 0.98, adult: 0.97 } }
+wandering:
+  kind: dispersal
+  classes: [yearling]
+  leaving: 0.1
+  kernel: { shape: 2Dt, scale: 3 km, shape-number: 2.5 }
+  leavers: may miss
+  links:
+    - { between: [North fen, Saltmarsh], distance: 9 km, crossing-death: 0.4, turn-back: 50 % }
 `;

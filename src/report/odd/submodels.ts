@@ -1,8 +1,9 @@
 // Every phase and condition with its numbers.
-import type { AgeingPhase, Crowding, DispersalPhase, Model, Phase } from '../../model/model.ts';
+import type { AgeingPhase, Crowding, Model, Phase } from '../../model/model.ts';
 import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
+import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
 import { digits, matrixTables, rateTable } from './rates.ts';
 
@@ -31,7 +32,7 @@ function numbers(phase: Phase, model: Model): Content {
     case 'demography':
       return matrixTables(model, phase);
     case 'dispersal':
-      return mark`${rateTable(model, phase.leaving, 'Share that sets out')}<p>${rule(phase)}</p>`;
+      return mark`${rateTable(model, phase.leaving, 'Share that sets out')}${destinations(phase, model)}`;
     case 'ceiling':
       return mark`<p>Classes counted: ${classNames(model, phase.counted)}. ${byPatch(model, phase.capacity, 'Most animals')}</p>`;
   }
@@ -43,20 +44,6 @@ function ageing({ classes }: Model, phase: AgeingPhase, c: number): Markup {
   const share = advance === 1 ? '' : ` (share ${digits(advance)}, the others stay)`;
   if (next < 0) return mark`<bdi>${name}</bdi> leaves the model${share}. `;
   return mark`<bdi>${name}</bdi> becomes <bdi>${classes[next] ?? ''}</bdi>${share}. `;
-}
-
-function rule({ rule }: DispersalPhase): string {
-  if (rule.by === 'shares') return 'Where leavers end stands in a table of shares in the text of the model.';
-  const { scaleKm, reachKm } = rule.kernel;
-  const reach = reachKm === null ? '' : `, cut at ${digits(reachKm)} km`;
-  const kernel = `a negative exponential kernel in the plane with scale ${digits(scaleKm)} km (mean distance ${digits(2 * scaleKm)} km)`;
-  const arrive =
-    rule.leavers === 'all arrive'
-      ? 'Leavers share out over the patches within reach, and isolation costs only what dying on the way costs.'
-      : 'The kernel is a density over the plane times the area of the target; leavers that meet no patch are lost.';
-  const hazard = rule.hazardPerKm > 0 ? ` The hazard on the way is ${digits(rule.hazardPerKm)} per km.` : '';
-  const survival = rule.survivalOnTheWay < 1 ? ` ${digits(rule.survivalOnTheWay)} of the leavers survive the way.` : '';
-  return `Where leavers end follows ${kernel}${reach}, times the attraction of the target. ${arrive}${hazard}${survival}`;
 }
 
 function crowding(one: Crowding, model: Model): Markup {

@@ -4,15 +4,28 @@ import { byClass, classList, expression, Name, quantity } from './values.ts';
 
 export const Kernel = Type.Object(
   {
-    shape: Type.Literal('exponential', {
-      description: 'How the density of arrivals falls with distance: exp(-distance / scale).',
-      examples: ['exponential'],
-    }),
+    shape: Type.Union(
+      [Type.Literal('exponential'), Type.Literal('gaussian'), Type.Literal('2Dt'), Type.Literal('exponential power')],
+      {
+        description:
+          'How the density of arrivals in the plane falls with r = distance / scale: exp(-r), exp(-r^2), (1 + r^2)^-b, or exp(-r^c).',
+        examples: ['exponential'],
+      },
+    ),
     mean: Type.Optional(
-      quantity('length', { description: 'Mean distance moved in the plane, twice the scale.', examples: ['4 km'] }),
+      quantity('length', {
+        description: 'Mean distance moved in the plane (for the exponential kernel twice its scale).',
+        examples: ['4 km'],
+      }),
     ),
     scale: Type.Optional(
       quantity('length', { description: 'Scale of the kernel, instead of its mean.', examples: ['2 km'] }),
+    ),
+    'shape-number': Type.Optional(
+      expression({
+        description: 'b of the 2Dt (above 1; above 1.5 where a mean is given), c of the exponential power (above 0).',
+        examples: [2.5],
+      }),
     ),
     reach: Type.Optional(quantity('length', { description: 'Nobody moves further than this.', examples: ['25 km'] })),
   },
@@ -34,6 +47,39 @@ export const Shares = Type.Record(
     examples: ['North fen: { Long holm: 0.1 }'],
     'x-key': 'FROM',
   },
+);
+
+const CrossingLink = Type.Object(
+  {
+    between: Type.Tuple([Name, Name], {
+      title: 'two patches',
+      description: 'The two patches that the link joins, in both directions.',
+      examples: ['[North fen, Long holm]'],
+    }),
+    distance: Type.Optional(
+      quantity('length', {
+        description: 'Length of this way, instead of the distance of the patches.',
+        examples: ['6 km'],
+      }),
+    ),
+    'crossing-death': Type.Optional(
+      expression({
+        description: 'Of those that cross, the share that dies of it (a road), besides all other dangers of the way.',
+        examples: [0.4],
+        default: 0,
+        'x-unit': 'share',
+      }),
+    ),
+    'turn-back': Type.Optional(
+      expression({
+        description: 'Of those that take this way, the share that turns back before crossing and stays at home.',
+        examples: [0.5],
+        default: 0,
+        'x-unit': 'share',
+      }),
+    ),
+  },
+  { additionalProperties: false, title: 'a link: { between: […], … }' },
 );
 
 const leaving = {
@@ -89,6 +135,14 @@ export const Dispersal = Type.Object(
       }),
     ),
     shares: Type.Optional(Shares),
+    links: Type.Optional(
+      Type.Array(CrossingLink, {
+        minItems: 1,
+        title: 'a list of links',
+        description: 'Ways between two patches that are unlike all others: longer, deadly, or shunned.',
+        examples: ['- { between: [North fen, Long holm], crossing-death: 0.4, turn-back: 0.5 }'],
+      }),
+    ),
   },
   {
     additionalProperties: false,

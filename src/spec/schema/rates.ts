@@ -34,6 +34,31 @@ export const Births = Type.Record(Type.String(), Type.Union([expression(birthsWo
   'x-others': expression(birthsWords),
 });
 
+/** A survival and a breeding under names of their own, beside or instead of the plain ones. */
+export const NamedSurvival = Type.Object(
+  {
+    kind: Type.Literal('survival', { description: 'Animals live on or die.', examples: ['survival'] }),
+    survival: byClass({
+      description: 'Share of each class that survives this phase.',
+      examples: [0.9],
+      'x-unit': 'share',
+    }),
+  },
+  {
+    additionalProperties: false,
+    title: 'a survival',
+    description: 'Survival of a season, under a name of its own; the shares of several such phases multiply.',
+  },
+);
+
+export const NamedBreeding = Type.Object(
+  {
+    kind: Type.Literal('breeding', { description: 'Animals have young.', examples: ['breeding'] }),
+    births: Births,
+  },
+  { additionalProperties: false, title: 'a breeding', description: 'Births of a season, under a name of its own.' },
+);
+
 const Row = Type.Array(expression({ description: 'An entry.', examples: [0.3] }), {
   minItems: 1,
   title: 'a row of numbers',
@@ -80,6 +105,11 @@ export const Demography = Type.Union([EntryDemography, LeslieDemography], {
   examples: ['{ survival: [0.3, 0.8], fecundity: [0, 1.2] }'],
 });
 
+const OwnPhaseRates = byClass({
+  description: 'By class what is different here in a phase of your own: survival, young, or the share that leaves.',
+  examples: [0.8],
+});
+
 /** What is different in one patch. */
 export const PatchRates = Type.Object(
   {
@@ -87,7 +117,7 @@ export const PatchRates = Type.Object(
     births: Type.Optional(byClass(birthsWords)),
     demography: Type.Optional(Demography),
   },
-  { additionalProperties: false, title: 'rates of one patch', 'x-brief': true },
+  { additionalProperties: OwnPhaseRates, title: 'rates of one patch', 'x-key': 'PHASE', 'x-brief': true },
 );
 
 export const InPatches = Type.Record(Type.String(), PatchRates, {

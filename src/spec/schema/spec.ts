@@ -3,7 +3,7 @@ import { Type, type Static } from 'typebox';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
 import { Parameters, Patches } from './patches.ts';
 import { Ceiling, Dispersal, Crowding } from './phases.ts';
-import { Births, Demography, InPatches, Survival } from './rates.ts';
+import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import { Study } from './study.ts';
 import { Name } from './values.ts';
 
@@ -77,13 +77,20 @@ export const CoreSchema = Type.Object(
   { additionalProperties: false },
 );
 
-export const namedSchemas = { dispersal: Dispersal, ceiling: Ceiling } as const;
+export const namedSchemas = {
+  survival: NamedSurvival,
+  breeding: NamedBreeding,
+  dispersal: Dispersal,
+  ceiling: Ceiling,
+} as const;
 
 export type DispersalSpec = Static<typeof Dispersal>;
 export type CeilingSpec = Static<typeof Ceiling>;
 export type CrowdingSpec = Static<typeof Crowding>;
 export type OutcomeSpec = Static<typeof Outcome>;
-export type NamedSpec = DispersalSpec | CeilingSpec;
+export type SurvivalSpec = Static<typeof NamedSurvival>;
+export type BreedingSpec = Static<typeof NamedBreeding>;
+export type NamedSpec = SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
 export type Spec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
