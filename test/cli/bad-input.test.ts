@@ -35,7 +35,6 @@ const deep = '['.repeat(10_000);
 
 const texts: readonly Text[] = [
   { what: 'nothing', text: '', told: /error file-empty/ },
-  { what: 'blanks and a comment', text: '\n# nothing here\n\n', told: /error yaml-not-sections/ },
   { what: 'an alias that holds itself', text: 'a: &a [*a]\n', told: /error yaml-alias/ },
   {
     what: 'aliases that grow to a billion',
@@ -43,7 +42,6 @@ const texts: readonly Text[] = [
     told: /error yaml-alias/,
   },
   { what: 'ten thousand levels of lists', text: `a: ${deep}${']'.repeat(10_000)}\n`, told: /error yaml-nesting/ },
-  { what: 'ten thousand levels never closed', text: `a: ${deep}`, told: /error/ },
   {
     what: 'a thousand levels of sections',
     text: Array.from({ length: 1000 }, (_, i) => `${' '.repeat(i)}a:`).join('\n'),
@@ -52,14 +50,10 @@ const texts: readonly Text[] = [
   { what: 'ten thousand brackets in an expression', text: adult(`"${'('.repeat(10_000)}1"`), told: /error expression/ },
   { what: 'not a number', text: adult('.nan'), told: /:\d+:\d+ error number-format/ },
   { what: 'infinity', text: adult('.inf'), told: /error number-format/ },
-  { what: 'minus infinity', text: adult('-.inf'), told: /error number-format/ },
   { what: 'a number too large to hold', text: adult('1e400'), told: /error/ },
   { what: 'NaN from an expression', text: adult('log(-1)'), told: /error/ },
-  { what: 'infinity from an expression', text: adult('1 / 0'), told: /error division-by-zero/ },
   { what: 'bytes that are not UTF-8', text: Uint8Array.of(0x73, 0xff, 0xfe), told: /it is not text in UTF-8/ },
   { what: 'UTF-16', text: Buffer.from(`\uFEFF${model}`, 'utf16le'), told: /it is not text in UTF-8/ },
-  { what: 'null bytes', text: '\0'.repeat(1000), told: /error/ },
-  { what: 'a page of the web', text: '<!doctype html>\n<p>Hello</p>\n', told: /error/ },
   { what: 'a list', text: '- 1\n- 2\n', told: /error yaml-not-sections/ },
 ];
 

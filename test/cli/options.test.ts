@@ -20,7 +20,7 @@ function runOf(...words: readonly string[]): Run {
 }
 
 function growthOf(...words: readonly string[]): number {
-  const { code, out } = skein(['check', hare, '--json', ...words]);
+  const { code, out } = skein(['show', hare, 'matrix', '--json', ...words]);
   expect(code).toBe(0);
   return JSON.parse(out).growthRate;
 }
