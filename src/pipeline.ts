@@ -4,13 +4,14 @@ import { buildImage } from './compile/image/build.ts';
 import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
 import { runPath } from './kernel/path.ts';
-import { runReplicates } from './kernel/run.ts';
+import { batchesOf } from './kernel/batch.ts';
+import { openRunner } from './kernel/run.ts';
 import { buildLandscape } from './landscape/build.ts';
 import { resolveModel } from './model/resolve.ts';
 import { standingCautions } from './results/cautions.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
 import type { PathResults, RunResults } from './results/results.ts';
-import { summarisePath, summariseRun } from './results/summarise.ts';
+import { openReduction, summarisePath, summariseRun } from './results/summarise.ts';
 import type { Finding } from './spec/finding.ts';
 import type { Spec } from './spec/schema/spec.ts';
 
@@ -52,13 +53,13 @@ export interface RunOptions {
 /** Stochastic replicates of one scenario. */
 export function runModel({ model, image, provenance }: CompiledModel, { onProgress }: RunOptions = {}): RunResults {
   const { replicates, steps, seed } = model;
-  const raw = runReplicates(image, {
-    replicates,
-    steps,
-    seed,
-    ...(onProgress === undefined ? {} : { onProgress: (done) => onProgress(done, replicates) }),
-  });
-  return summariseRun({ model, raw, provenance, cautions: standingCautions(model) });
+  const run = openRunner(image, { steps, seed });
+  const reduction = openReduction(model);
+  for (const batch of batchesOf(replicates)) {
+    reduction.take(run(batch));
+    onProgress?.(batch.first + batch.lanes, replicates);
+  }
+  return summariseRun({ model, reduction, provenance, cautions: standingCautions(model) });
 }
 
 /** The path without chance. */

@@ -1,24 +1,15 @@
-// Opens an image in a fresh instance of the kernel module, and tells in words what stands against it.
-import * as layout from '../../assembly/layout.ts';
-import { loadMachine, type Machine } from '../machine/machine.ts';
-
-/** Why an image cannot be run here. */
-export interface ImageFault {
-  readonly code: 'not-an-image' | 'other-version' | 'damaged' | 'unknown-kind' | 'unknown-opcode' | 'too-large';
-  readonly message: string;
-}
+// Opens an image in a fresh instance of the kernel module.
+import type { Machine } from '../machine/instance.ts';
+import { loadMachine } from '../machine/machine.ts';
+import { openIn, type ImageFault } from './open-in.ts';
 
 export type Opened =
   { readonly ok: true; readonly machine: Machine } | { readonly ok: false; readonly fault: ImageFault };
 
 export function openImage(image: ArrayBuffer): Opened {
   const machine = loadMachine();
-  const address = machine.reserve(image.byteLength);
-  if (address === 0) return { ok: false, fault: faultOf(layout.faultMemory, 0) };
-  new Uint8Array(machine.memory.buffer, address, image.byteLength).set(new Uint8Array(image));
-  const code = machine.open(address, image.byteLength);
-  if (code !== layout.faultNone) return { ok: false, fault: faultOf(code, machine.faultSubject()) };
-  return { ok: true, machine };
+  const fault = openIn(machine, image);
+  return fault === null ? { ok: true, machine } : { ok: false, fault };
 }
 
 /** An instance with the image open; a fault here is a bug of the tool, since its own compiler made the image. */
@@ -26,27 +17,4 @@ export function openOwnImage(image: ArrayBuffer): Machine {
   const opened = openImage(image);
   if (!opened.ok) throw new Error(opened.fault.message);
   return opened.machine;
-}
-
-function faultOf(code: number, subject: number): ImageFault {
-  switch (code) {
-    case layout.faultMagic:
-      return { code: 'not-an-image', message: 'These bytes are not a compiled model.' };
-    case layout.faultMajor:
-      return {
-        code: 'other-version',
-        message: `The compiled model has version ${String(subject)}; this kernel runs version ${String(layout.imageMajor)}.`,
-      };
-    case layout.faultSize:
-      return { code: 'damaged', message: `The compiled model is cut short or damaged (${String(subject)} bytes).` };
-    case layout.faultKind:
-      return { code: 'unknown-kind', message: `The compiled model has a section of unknown kind ${String(subject)}.` };
-    case layout.faultOpcode:
-      return {
-        code: 'unknown-opcode',
-        message: `The compiled model has a record with unknown opcode ${String(subject)}.`,
-      };
-    default:
-      return { code: 'too-large', message: 'The model needs more memory than the kernel can have.' };
-  }
 }

@@ -1,16 +1,25 @@
 // What the kernel gives back, before any statistics.
 
-/** Integer totals of one run, independent of the order in which batches arrive. */
-export interface RawRun {
-  readonly replicates: number;
-  readonly steps: number;
-  /** Names what column k of `counts` holds: the whole, then each patch, then each outcome. */
-  readonly columns: number;
-  /** Animals (weighted sums for outcomes) at count t (0 is the start) of column k in replicate r, at (t * columns + k) * replicates + r. */
-  readonly counts: Float64Array;
-  /** Replicates that the kernel had to stop, with why. Their counts are 0 from the step in which they were stopped. */
-  readonly stopped: readonly { readonly replicate: number; readonly step: number; readonly reason: string }[];
-  readonly moved?: Moved;
+/** A replicate that the kernel had to stop. Its counts are 0 from that step on. */
+export interface Stop {
+  readonly replicate: number;
+  readonly step: number;
+  readonly reason: string;
+}
+
+/** Up to sixteen replicates that ran side by side, as they were counted. */
+export interface BatchCounts {
+  /** Position of lane 0 among the replicates of the run. */
+  readonly first: number;
+  readonly lanes: number;
+  /**
+   * Animals (weighted sums for outcomes) at count t (0 is the start) of column k in lane l, at (t * columns + k) * 16 + l.
+   * Column 0 is the whole, then each patch, then each outcome.
+   */
+  readonly counts: Float64Array<ArrayBuffer>;
+  readonly stopped: readonly Stop[];
+  /** Null where it was not asked for. */
+  readonly moved: Moved | null;
 }
 
 /** The path without chance: animals at count t, at (t * P + p) * C + c. */
@@ -27,5 +36,5 @@ export interface RawPath {
  */
 export interface Moved {
   readonly ways: number;
-  readonly animals: Float64Array;
+  readonly animals: Float64Array<ArrayBuffer>;
 }

@@ -1,95 +1,15 @@
 // The kernel module, compiled once and instantiated on demand: in Node and in a browser, without imports of either.
 import { kernelBase64 } from '../../build/kernel.ts';
+import { instantiate, type Machine } from './instance.ts';
 
-/** What the kernel module offers: functions over numbers only; addresses are bytes in its memory. */
-export interface MachineFunctions {
-  readonly exp: (x: number) => number;
-  readonly log: (x: number) => number;
-  readonly pow: (base: number, exponent: number) => number;
-  /** ln k! for whole k ≥ 0. */
-  readonly logFactorial: (k: number) => number;
-  readonly release: () => void;
-  readonly reserve: (bytes: number) => number;
-  /** A fault code of layout.ts. */
-  readonly open: (address: number, size: number) => number;
-  readonly faultSubject: () => number;
-  readonly start: (count: number, seedLow: number, seedHigh: number) => void;
-  readonly step: () => void;
-  readonly run: (steps: number) => void;
-  /** Addresses: u32 [lane]; f64 [column][lane]; i32 [lane][3]; i32 [patch][class][lane]. */
-  readonly replicates: () => number;
-  readonly observed: () => number;
-  readonly stops: () => number;
-  readonly animals: () => number;
-  /** Address: f64 [way], animals that arrived over each way since `start`, all classes and lanes together. */
-  readonly moved: () => number;
-  readonly laneBytes: () => number;
-  readonly saveLane: (lane: number, target: number) => void;
-  /** 0 where the lane was saved at another step than the batch is at. */
-  readonly restoreLane: (lane: number, source: number) => number;
-  readonly setBatchStep: (step: number) => void;
-  readonly startPath: () => void;
-  readonly stepPath: () => void;
-  /** Address: f64 [patch][class]. */
-  readonly pathAnimals: () => number;
-  /** Address: f64 [way], since `startPath`. */
-  readonly pathMoved: () => number;
-  readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
-  readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
-  readonly probeSample: (out: number, draws: number, request: number) => void;
-  readonly probeStream: (word: number, state: number, index: number) => void;
-}
+export const kernelBytes: Uint8Array<ArrayBuffer> = bytesOf(kernelBase64);
 
-/** An instance with its own memory. Views on `memory.buffer` die when it grows: make them anew after `reserve`. */
-export interface Machine extends MachineFunctions {
-  readonly memory: WebAssembly.Memory;
-}
+/** Compiled once; other threads take it as it is. */
+export const kernelModule = new WebAssembly.Module(kernelBytes);
 
-const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
-  exp: true,
-  log: true,
-  pow: true,
-  logFactorial: true,
-  release: true,
-  reserve: true,
-  open: true,
-  faultSubject: true,
-  start: true,
-  step: true,
-  run: true,
-  replicates: true,
-  observed: true,
-  stops: true,
-  animals: true,
-  moved: true,
-  laneBytes: true,
-  saveLane: true,
-  restoreLane: true,
-  setBatchStep: true,
-  startPath: true,
-  stepPath: true,
-  pathAnimals: true,
-  pathMoved: true,
-  probePhilox: true,
-  probePhiloxLanes: true,
-  probeSample: true,
-  probeStream: true,
-};
-
-const compiled = new WebAssembly.Module(bytesOf(kernelBase64));
-
-/** A fresh instance of the kernel module. About 0.3 ms. */
+/** A fresh instance of the kernel module. */
 export function loadMachine(): Machine {
-  const exported: unknown = new WebAssembly.Instance(compiled).exports;
-  if (!isMachine(exported)) throw new Error('The kernel module was built from other sources: run `npm run build`.');
-  return exported;
-}
-
-function isMachine(exported: unknown): exported is Machine {
-  if (typeof exported !== 'object' || exported === null) return false;
-  const found = new Map<string, unknown>(Object.entries(exported));
-  if (!(found.get('memory') instanceof WebAssembly.Memory)) return false;
-  return Object.keys(functionNames).every((name) => typeof found.get(name) === 'function');
+  return instantiate(kernelModule);
 }
 
 function bytesOf(base64: string): Uint8Array<ArrayBuffer> {

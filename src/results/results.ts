@@ -48,6 +48,15 @@ export interface OutcomeResult {
   }[];
 }
 
+/** Quantiles that were read from counts in fixed bins, since there were too many to keep each. */
+export interface Sketched {
+  readonly quantilesOf: 'abundance.whole' | 'abundance.patches' | 'patchesInUse';
+  /** Counts below this are exact all the same. */
+  readonly exactBelow: number;
+  /** How far a quantile of larger counts can be off, as a share of itself. */
+  readonly relativeError: number;
+}
+
 export interface RunResults {
   readonly format: 'skein-run/1';
   readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
@@ -71,6 +80,8 @@ export interface RunResults {
   readonly outcomes: readonly OutcomeResult[];
   readonly meanLowestCount: { readonly mean: number; readonly sd: number; readonly standardError: number };
   readonly patchesInUse: readonly { readonly year: number; readonly mean: number; readonly quantiles: Quantiles }[];
+  /** Empty where every quantile is a count that some run had. */
+  readonly sketched: readonly Sketched[];
   /** Runs that had to be stopped, with the reason; they are in no other number. */
   readonly stopped: { readonly runs: number; readonly reasons: readonly string[] };
   readonly cautions: readonly string[];

@@ -1,47 +1,47 @@
 // From raw counts to what a run says.
-import type { RawPath, RawRun } from '../kernel/output.ts';
+import type { RawPath } from '../kernel/output.ts';
 import type { Model } from '../model/model.ts';
-import { momentsOf, quantilesOf } from './moments.ts';
 import { summariseOutcome } from './outcome.ts';
 import type { Provenance } from './provenance.ts';
-import type { PathResults, RunResults, YearSummary } from './results.ts';
-import { finishedRuns, type FinishedRuns } from './runs.ts';
+import { exactBelow, relativeError } from './reduction/bins.ts';
+import type { Counts } from './reduction/counts.ts';
+import { Reduction } from './reduction/reduction.ts';
+import type { PathResults, RunResults, Sketched, YearSummary } from './results.ts';
 
-/** Columns of the raw counts: the whole, then each patch, then each outcome. */
-const wholeColumn = 0;
-const firstPatchColumn = 1;
+/** For as many replicates as the model asks for. */
+export function openReduction({ patches, steps, replicates, outcomes }: Model): Reduction {
+  return new Reduction({ patches: patches.length, steps, replicates, below: outcomes.map((rule) => rule.below) });
+}
 
 export interface RunToSummarise {
   readonly model: Model;
-  readonly raw: RawRun;
+  readonly reduction: Reduction;
   readonly provenance: Provenance;
   readonly cautions: readonly string[];
 }
 
-export function summariseRun({ model, raw, provenance, cautions }: RunToSummarise): RunResults {
-  const finished = finishedRuns(raw);
-  const firstOutcome = firstPatchColumn + model.patches.length;
+export function summariseRun({ model, reduction, provenance, cautions }: RunToSummarise): RunResults {
+  const { runs, stopped } = reduction;
+  const { firstYear } = model;
   return {
     format: 'skein-run/1',
     ...provenance,
     seed: model.seed,
     replicates: model.replicates,
     years: model.steps,
-    firstYear: model.firstYear,
+    firstYear,
     abundance: {
-      whole: course(model, finished, wholeColumn),
-      patches: inFileOrder(model).map((p) => ({
-        patch: model.patches[p]?.name ?? '',
-        byYear: course(model, finished, firstPatchColumn + p),
-        empty: counts(finished).map((t) => shareEmpty(finished.at(t, firstPatchColumn + p))),
-      })),
+      whole: counts(model).map((t) => yearSummary(model, t, reduction.whole.summary(t, runs))),
+      patches: inFileOrder(model).map((p) => patchCourse(model, reduction, p)),
     },
-    outcomes: model.outcomes.map((rule, k) =>
-      summariseOutcome(finished, { rule, column: firstOutcome + k, firstYear: model.firstYear }),
-    ),
-    meanLowestCount: lowestCount(finished),
-    patchesInUse: patchesInUse(model, finished),
-    stopped: { runs: raw.stopped.length, reasons: [...new Set(raw.stopped.map(({ reason }) => reason))] },
+    outcomes: model.outcomes.flatMap((rule, k) => {
+      const falls = reduction.falls[k];
+      return falls === undefined ? [] : [summariseOutcome({ rule, falls, runs, firstYear })];
+    }),
+    meanLowestCount: lowestCount(reduction),
+    patchesInUse: patchesInUse(model, reduction),
+    sketched: sketchedQuantiles(reduction),
+    stopped: { runs: stopped.length, reasons: [...new Set(stopped.map(({ reason }) => reason))] },
     cautions,
   };
 }
@@ -75,37 +75,45 @@ export function inFileOrder({ patches }: Model): readonly number[] {
   return [...patches.keys()].sort((a, b) => order(a) - order(b));
 }
 
-function counts({ steps }: FinishedRuns): readonly number[] {
+function counts({ steps }: Model): readonly number[] {
   return Array.from({ length: steps + 1 }, (_, t) => t);
 }
 
-function course(model: Model, finished: FinishedRuns, column: number): readonly YearSummary[] {
-  return counts(finished).map((t) => {
-    const values = finished.at(t, column);
-    return { year: model.firstYear - 1 + t, ...momentsOf(values), quantiles: quantilesOf(values) };
-  });
+function yearSummary({ firstYear }: Model, t: number, summary: ReturnType<Counts['summary']>): YearSummary {
+  return { year: firstYear - 1 + t, ...summary };
 }
 
-function shareEmpty(values: Float64Array): number {
-  return values.reduce((sum, value) => sum + (value === 0 ? 1 : 0), 0) / values.length;
+function patchCourse(
+  model: Model,
+  { patches, runs }: Reduction,
+  p: number,
+): RunResults['abundance']['patches'][number] {
+  const cell = (t: number): number => t * model.patches.length + p;
+  return {
+    patch: model.patches[p]?.name ?? '',
+    byYear: counts(model).map((t) => yearSummary(model, t, patches.summary(cell(t), runs))),
+    empty: counts(model).map((t) => patches.empty(cell(t)) / runs),
+  };
 }
 
 /** Lowest count of each run, the start included (McCarthy & Thompson 2001). */
-function lowestCount(finished: FinishedRuns): RunResults['meanLowestCount'] {
-  const lowest = Float64Array.from(finished.at(0, wholeColumn));
-  for (let t = 1; t <= finished.steps; t++) {
-    finished.at(t, wholeColumn).forEach((animals, r) => (lowest[r] = Math.min(lowest[r] ?? Infinity, animals)));
-  }
-  const { mean, sd } = momentsOf(lowest);
-  return { mean, sd, standardError: sd / Math.sqrt(lowest.length) };
+function lowestCount(reduction: Reduction): RunResults['meanLowestCount'] {
+  const { mean, sd } = reduction.lowestCount();
+  return { mean, sd, standardError: sd / Math.sqrt(reduction.runs) };
 }
 
-function patchesInUse(model: Model, finished: FinishedRuns): RunResults['patchesInUse'] {
-  return counts(finished).map((t) => {
-    const used = new Float64Array(finished.runs);
-    model.patches.forEach((_, p) => {
-      finished.at(t, firstPatchColumn + p).forEach((animals, r) => (used[r] = (used[r] ?? 0) + (animals > 0 ? 1 : 0)));
-    });
-    return { year: model.firstYear - 1 + t, mean: momentsOf(used).mean, quantiles: quantilesOf(used) };
+function patchesInUse(model: Model, { inUse, runs }: Reduction): RunResults['patchesInUse'] {
+  return counts(model).map((t) => {
+    const { mean, quantiles } = inUse.summary(t, runs);
+    return { year: model.firstYear - 1 + t, mean, quantiles };
   });
+}
+
+function sketchedQuantiles({ whole, patches, inUse }: Reduction): readonly Sketched[] {
+  const all = [
+    ['abundance.whole', whole],
+    ['abundance.patches', patches],
+    ['patchesInUse', inUse],
+  ] as const;
+  return all.flatMap(([quantilesOf, { exact }]) => (exact ? [] : [{ quantilesOf, exactBelow, relativeError }]));
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { runReplicates } from '../../src/kernel/run.ts';
+import { runReplicates } from '../kernel/collect.ts';
 import type { Phase } from '../../src/model/model.ts';
 import { everywhere, imageOf, table } from '../kernel/models.ts';
 import { expectMoments, sampleStates } from '../kernel/moments.ts';

@@ -204,6 +204,7 @@ function fixtureResults(model: Model, growth: number): RunResults {
     ],
     meanLowestCount: { mean, sd, standardError: sd / Math.sqrt(futures) },
     patchesInUse: summaries((r, t) => counts[r]![t]!.filter((n) => n > 0).length),
+    sketched: [],
     stopped: { runs: 0, reasons: [] },
     cautions: standingCautions(model),
   };

@@ -1,7 +1,7 @@
 // What a replicate gives depends on the seed, its number and the names, on nothing else.
 import { describe, expect, it } from 'vitest';
 import { runPath } from '../../src/kernel/path.ts';
-import { runReplicates } from '../../src/kernel/run.ts';
+import { runReplicates } from '../kernel/collect.ts';
 import { openOwnImage } from '../../src/kernel/open.ts';
 import type { Phase } from '../../src/model/model.ts';
 import { everywhere, imageOf, movement, type Sketch } from '../kernel/models.ts';
