@@ -106,6 +106,8 @@ export const breedingBirths = 3; // rates
 export const breedingInto = 4; // class shares
 export const breedingOnward = 5; // class shares, each given that no earlier class was taken
 export const breedingSlots = 6; // slot lists
+export const breedingWaitCounted = 7; // class mask: of these no more than the capacity breed
+export const breedingWaitCapacity = 8; // patch numbers
 export const opSurvival = 2;
 export const survivalRates = 3;
 export const survivalSlots = 4;
@@ -125,12 +127,16 @@ export const dispersalWays = 6; // a number: ways of the dispersals before this 
 export const opCeiling = 6;
 export const ceilingCounted = 3; // class mask
 export const ceilingCapacity = 4; // patch numbers
+export const ceilingTakes = 5; // a number: one of those below; none for at random
+export const takesYoungest = 1;
+export const takesNobody = 2;
 export const opCrowding = 7;
 export const crowdingWeights = 3; // class weights
 export const crowdingForms = 4; // patch forms
 export const crowdingCoefficients = 5; // patch numbers
 export const crowdingAlleeHalf = 6; // patch numbers
 export const crowdingSlot = 7; // a slot, not a row
+export const crowdingShape = 8; // patch numbers, one: the shape number s of a form that has one
 
 // 32-63 belong to chance, 64-95 to plans, 96-127 to counts and outcomes.
 export const opCount = 96;
@@ -143,6 +149,8 @@ export const formNone = 0;
 export const formBevertonHolt = 1; // 1 / (1 + k N)
 export const formRicker = 2; // exp(-k N)
 export const formCeiling = 3; // min(1, k / N)
+export const formTheta = 4; // exp(-k N^s)
+export const formHassell = 5; // (1 + k N)^-s
 
 // Uses: what a class draws random numbers for within a phase.
 export const useSurvive = 1;

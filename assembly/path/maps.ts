@@ -2,18 +2,23 @@
 import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
-import { crowdingFactor } from '../phases/crowding';
+import { crowdingFactor, crowdingShapeOf } from '../phases/crowding';
 import { add, animals, animalsIn, arrivals, scaleOf, slotValues, stateBytes, step } from './state';
 
 export function meanBreeding(record: usize): void {
   const table = sectionAt(operand(record, layout.breedingBirths), step);
   const into = section(operand(record, layout.breedingInto));
   const lists = section(operand(record, layout.breedingSlots));
+  const waiting = section(operand(record, layout.breedingWaitCounted));
+  const places = section(operand(record, layout.breedingWaitCapacity));
   for (let patch = 0; patch < patches; patch++) {
     let young: f64 = 0;
+    const share = waiting === 0 ? 1 : shareWithin(waiting, f64At(places, patch), patch);
     for (let c = 0; c < classes; c++) {
       const births = f64At(table, patch * classes + c);
-      if (births !== 0) young += animalsIn(patch, c) * births * scaleOf(lists, c, patch);
+      if (births === 0) continue;
+      const own = animalsIn(patch, c) * births * scaleOf(lists, c, patch);
+      young += waiting !== 0 && i32At(waiting, c) !== 0 ? own * share : own;
     }
     for (let c = 0; c < classes; c++) add(animals, patch, c, young * f64At(into, c));
   }
@@ -64,18 +69,40 @@ export function meanDemography(record: usize): void {
   memory.copy(animals, arrivals, stateBytes());
 }
 
+/** min(1, K/N) of the counted animals of a patch. */
+function shareWithin(counted: usize, capacity: f64, patch: i32): f64 {
+  let all: f64 = 0;
+  for (let c = 0; c < classes; c++) if (i32At(counted, c) !== 0) all += animalsIn(patch, c);
+  return all > capacity ? capacity / all : 1;
+}
+
 export function meanCeiling(record: usize): void {
   const counted = section(operand(record, layout.ceilingCounted));
   const capacities = section(operand(record, layout.ceilingCapacity));
+  const takes = operand(record, layout.ceilingTakes);
+  if (takes === layout.takesNobody) return;
   for (let patch = 0; patch < patches; patch++) {
-    let all: f64 = 0;
-    for (let c = 0; c < classes; c++) if (i32At(counted, c) !== 0) all += animalsIn(patch, c);
-    const capacity = f64At(capacities, patch);
-    if (all <= capacity) continue;
-    for (let c = 0; c < classes; c++) {
-      const at = animals + ((<usize>(patch * classes + c)) << 3);
-      if (i32At(counted, c) !== 0) store<f64>(at, load<f64>(at) * (capacity / all));
-    }
+    if (takes === layout.takesYoungest) takeYoungest(counted, f64At(capacities, patch), patch);
+    else takeAlike(counted, shareWithin(counted, f64At(capacities, patch), patch), patch);
+  }
+}
+
+function takeAlike(counted: usize, share: f64, patch: i32): void {
+  if (share === 1) return;
+  for (let c = 0; c < classes; c++) {
+    const at = animals + ((<usize>(patch * classes + c)) << 3);
+    if (i32At(counted, c) !== 0) store<f64>(at, load<f64>(at) * share);
+  }
+}
+
+function takeYoungest(counted: usize, capacity: f64, patch: i32): void {
+  let surplus = -capacity;
+  for (let c = 0; c < classes; c++) if (i32At(counted, c) !== 0) surplus += animalsIn(patch, c);
+  for (let c = 0; c < classes && surplus > 0; c++) {
+    if (i32At(counted, c) === 0) continue;
+    const taken = min<f64>(surplus, animalsIn(patch, c));
+    add(animals, patch, c, -taken);
+    surplus -= taken;
   }
 }
 
@@ -84,13 +111,14 @@ export function meanCrowding(record: usize): void {
   const forms = section(operand(record, layout.crowdingForms));
   const coefficients = section(operand(record, layout.crowdingCoefficients));
   const halves = section(operand(record, layout.crowdingAlleeHalf));
+  const shape = crowdingShapeOf(record);
   const slot = operand(record, layout.crowdingSlot);
   for (let patch = 0; patch < patches; patch++) {
     let all: f64 = 0;
     for (let c = 0; c < classes; c++) all += f64At(weights, c) * animalsIn(patch, c);
     const at = (<usize>patch) << 3;
     const form = i32At(forms, patch);
-    const factor = crowdingFactor(all, form, load<f64>(coefficients + at), load<f64>(halves + at));
+    const factor = crowdingFactor(all, form, load<f64>(coefficients + at), load<f64>(halves + at), shape);
     putF64(slotValues, slot * patches + patch, factor);
   }
 }

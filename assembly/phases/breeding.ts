@@ -2,6 +2,7 @@
 import { f64At, putU32, u32At } from '../arrays';
 import {
   animals,
+  arrivals,
   cellBytes,
   counts,
   laneNumbers,
@@ -20,6 +21,7 @@ import { poissonFour } from '../draws/poisson-four';
 import { streamOf } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
 import * as layout from '../layout';
+import { exceeds, removeSurplus } from './ceiling';
 
 export function breed(record: usize): void {
   const table = sectionAt(operand(record, layout.breedingBirths), step);
@@ -27,10 +29,11 @@ export function breed(record: usize): void {
     const row = animals + <usize>patch * rowBytes();
     if (!occupied(row, rowBytes())) continue;
     philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
+    const breeders = breedingRow(record, patch, row);
     memory.fill(numbers, 0, 128);
     for (let c = 0; c < classes; c++) {
       const births = f64At(table, patch * classes + c);
-      const cell = row + <usize>c * cellBytes;
+      const cell = breeders + <usize>c * cellBytes;
       if (births === 0 || !occupied(cell, cellBytes)) continue;
       scaledRates(rates, births, section(operand(record, layout.breedingSlots)), c, patch);
       addYoung(cell, streamOf(u32At(classKeys, c), layout.useYoung));
@@ -38,6 +41,17 @@ export function breed(record: usize): void {
     wholeYoung(operand(record, layout.recordIndex));
     shareOut(row, section(operand(record, layout.breedingOnward)));
   }
+}
+
+/** Those that breed: all, or a copy of the row without the surplus that waits. */
+function breedingRow(record: usize, patch: i32, row: usize): usize {
+  const counted = section(operand(record, layout.breedingWaitCounted));
+  if (counted === 0) return row;
+  const capacity = f64At(section(operand(record, layout.breedingWaitCapacity)), patch);
+  if (!exceeds(row, counted, capacity)) return row;
+  memory.copy(arrivals, row, rowBytes());
+  removeSurplus(arrivals, counted, capacity, false);
+  return arrivals;
 }
 
 /** numbers[lane] += the young of the animals in a cell. */

@@ -3,13 +3,14 @@ import { f64At, i32At } from '../arrays';
 import { animals, cellBytes, laneNumbers, rowBytes, slotValues } from '../batch';
 import { classes, operand, patches, section } from '../image';
 import * as layout from '../layout';
-import { exp } from '../mathematics';
+import { exp, pow } from '../mathematics';
 
 export function readCrowding(record: usize): void {
   const weights = section(operand(record, layout.crowdingWeights));
   const forms = section(operand(record, layout.crowdingForms));
   const coefficients = section(operand(record, layout.crowdingCoefficients));
   const halves = section(operand(record, layout.crowdingAlleeHalf));
+  const shape = crowdingShapeOf(record);
   const slot = slotValues + <usize>operand(record, layout.crowdingSlot) * patches * laneNumbers;
   for (let patch = 0; patch < patches; patch++) {
     const target = slot + <usize>patch * laneNumbers;
@@ -18,7 +19,7 @@ export function readCrowding(record: usize): void {
     const coefficient = f64At(coefficients, patch);
     const half = f64At(halves, patch);
     for (let at = target; at < target + laneNumbers; at += 8) {
-      store<f64>(at, crowdingFactor(load<f64>(at), form, coefficient, half));
+      store<f64>(at, crowdingFactor(load<f64>(at), form, coefficient, half, shape));
     }
   }
 }
@@ -43,11 +44,19 @@ export function addWeighted(target: usize, cell: usize, weight: f64): void {
   }
 }
 
+/** The shape number of the form; 1 for those that have none. */
+export function crowdingShapeOf(record: usize): f64 {
+  const row = operand(record, layout.crowdingShape);
+  return row < 0 ? 1 : load<f64>(section(row));
+}
+
 /** g(N) times the Allee factor, which is 0 where nobody is counted. */
-export function crowdingFactor(n: f64, form: i32, coefficient: f64, half: f64): f64 {
+export function crowdingFactor(n: f64, form: i32, coefficient: f64, half: f64, shape: f64): f64 {
   const allee = half > 0 ? n / (n + half) : 1;
   if (form === layout.formBevertonHolt) return allee / (1 + coefficient * n);
   if (form === layout.formRicker) return allee * exp(-coefficient * n);
+  if (form === layout.formTheta) return allee * exp(-coefficient * pow(n, shape));
+  if (form === layout.formHassell) return allee * pow(1 + coefficient * n, -shape);
   if (form === layout.formCeiling && n > coefficient) return (allee * coefficient) / n;
   return allee;
 }

@@ -3,7 +3,7 @@ import { unitMultipliers } from '../compile/multipliers.ts';
 import { patchYear } from '../compile/patch-year.ts';
 import { runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
 import type { Landscape } from '../landscape/landscape.ts';
-import type { Model } from '../model/model.ts';
+import type { CeilingPhase, Model } from '../model/model.ts';
 import { leading } from '../numeric/leading.ts';
 import { multiply } from '../numeric/sparse-product.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
@@ -75,12 +75,14 @@ function isolated({ model, coefficients }: Compiled, p: number): Compiled {
     epochs: rates.epochs.map((epoch) => pick(epoch, size)),
     epochOf: rates.epochOf,
   });
+  const waitsOf = (waits: CeilingPhase | undefined) =>
+    waits === undefined ? {} : { waits: { ...waits, capacity: pick(waits.capacity, 1) } };
   const phases = model.phases.map((phase) => {
     switch (phase.kind) {
       case 'survival':
         return { ...phase, survival: table(phase.survival, n) };
       case 'breeding':
-        return { ...phase, births: table(phase.births, n) };
+        return { ...phase, births: table(phase.births, n), ...waitsOf(phase.waits) };
       case 'demography':
         return { ...phase, fates: table(phase.fates, n * n), births: table(phase.births, n * n) };
       case 'ceiling':
@@ -95,7 +97,8 @@ function isolated({ model, coefficients }: Compiled, p: number): Compiled {
   return {
     model: { ...model, patches: model.patches.slice(p, p + 1), phases },
     landscape: { movements: phases.map(() => null) },
-    coefficients: coefficients.map(({ form, coefficient, alleeHalf }) => ({
+    coefficients: coefficients.map(({ form, coefficient, alleeHalf, ...others }) => ({
+      ...others,
       form: form.slice(p, p + 1),
       coefficient: pick(coefficient, 1),
       alleeHalf: pick(alleeHalf, 1),

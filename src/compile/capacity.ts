@@ -1,15 +1,14 @@
 // The strength of crowding in each patch, so that the patch alone stands still at its capacity.
 // Solves ρ(A(g*)) = 1 for the multiplier g* of all rates that the crowding changes, then sets the coefficient so that
-// g(K) = g*, the Allee factor included. Solved once, from the base model, and held under every plan.
+// g(K) = g*, the Allee factor included. Of several crowdings each is solved by itself: of the others only the Allee factors act,
+// so that their order does not matter. Solved once, from the base model, and held under every plan.
 import type { Finding } from '../spec/finding.ts';
-import { pinned } from '../machine/pinned.ts';
 import type { Crowding, Model } from '../model/model.ts';
-import { leading } from '../numeric/leading.ts';
-import { findRoot } from '../numeric/root.ts';
-import { sparseFromDense } from '../numeric/sparse.ts';
 import type { CrowdingCoefficients, CrowdingForm } from './coefficients.ts';
+import { coefficientAt } from './crowding-form.ts';
 import { unitMultipliers } from './multipliers.ts';
 import { patchYear } from './patch-year.ts';
+import { standstill, type Standstill } from './standstill.ts';
 
 export interface SolvedCapacities {
   readonly coefficients: readonly CrowdingCoefficients[];
@@ -29,18 +28,22 @@ interface Request {
   readonly findings: Finding[];
 }
 
-/** What the multiplier must be for a patch alone to stand still. */
-type Standstill =
-  | { readonly kind: 'found'; readonly multiplier: number }
-  | { readonly kind: 'declines'; readonly growth: number }
-  | { readonly kind: 'always grows'; readonly growth: number };
-
 function solveCrowding(request: Request): CrowdingCoefficients {
-  const { model, crowding } = request;
+  const { model, crowding, k } = request;
+  const held = { shapeNumber: crowding.shapeNumber, alleeHalf: crowding.alleeHalf };
+  if (crowding.form === 'allee') {
+    return {
+      form: model.patches.map(() => 'none'),
+      coefficient: new Float64Array(model.patches.length),
+      ...shapeless(held),
+    };
+  }
   const solved = new Map<string, Standstill>();
   const standstills = model.patches.map((_, p) => {
-    const key = patchYear({ model, patch: p, multipliers: unitMultipliers(model) }).join();
-    const known = solved.get(key) ?? standstill(request, p);
+    const year = patchYear({ model, patch: p, multipliers: unitMultipliers(model) }).join();
+    const others = model.crowding.map(({ alleeHalf }, j) => (j === k ? 0 : (alleeHalf[p] ?? 0)));
+    const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${crowding.capacity[p]}` : year;
+    const known = solved.get(key) ?? standstill({ model, k, patch: p });
     solved.set(key, known);
     return known;
   });
@@ -51,23 +54,18 @@ function solveCrowding(request: Request): CrowdingCoefficients {
     form.push(chosen.form);
     coefficient[p] = chosen.coefficient;
   });
-  return { form, coefficient, alleeHalf: crowding.alleeHalf };
+  return { form, coefficient, ...shapeless(held) };
 }
 
-function standstill({ model, k }: Request, patch: number): Standstill {
-  const n = model.classes.length;
-  const growthAt = (multiplier: number): number => {
-    const multipliers = unitMultipliers(model);
-    multipliers[k]?.fill(multiplier);
-    const values = patchYear({ model, patch, multipliers });
-    return leading(sparseFromDense({ rows: n, columns: n, values })).growthRate;
-  };
-  const highest = growthAt(1);
-  if (highest <= 1) return { kind: 'declines', growth: highest };
-  const lowest = growthAt(0);
-  if (lowest >= 1) return { kind: 'always grows', growth: lowest };
-  const multiplier = findRoot((g) => growthAt(g) - 1, { low: 0, high: 1 });
-  return multiplier === null ? { kind: 'always grows', growth: lowest } : { kind: 'found', multiplier };
+/** Leaves out a shape number that there is not. */
+function shapeless({
+  shapeNumber,
+  alleeHalf,
+}: {
+  readonly shapeNumber: number | undefined;
+  readonly alleeHalf: Float64Array;
+}) {
+  return shapeNumber === undefined ? { alleeHalf } : { shapeNumber, alleeHalf };
 }
 
 interface Choice {
@@ -111,16 +109,16 @@ interface Target {
   readonly capacity: number;
 }
 
-/** g(K) = form(K) · K/(K+h): Beverton-Holt 1/(1+aK), Ricker exp(−bK). */
+/** g(K) = form(K) · K/(K+h). */
 function coefficientFor(request: Request, { multiplier, p, capacity }: Target): Chosen {
-  const { form, alleeHalf } = request.crowding;
-  const half = alleeHalf[p] ?? 0;
+  const { crowding } = request;
+  const half = crowding.alleeHalf[p] ?? 0;
   const share = half === 0 ? multiplier : multiplier / (capacity / (capacity + half));
-  if (!(share > 0 && share <= 1)) {
+  if (crowding.form === 'allee' || !(share > 0 && share <= 1)) {
     tellUnreachable(request, p, 'the Allee factor alone holds it below that');
     return noCrowding;
   }
-  return { form, coefficient: form === 'beverton-holt' ? (1 / share - 1) / capacity : -pinned.log(share) / capacity };
+  return { form: crowding.form, coefficient: coefficientAt(crowding, share, capacity) };
 }
 
 function tellUnreachable({ model, crowding, findings }: Request, p: number, why: string): void {

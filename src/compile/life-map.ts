@@ -1,5 +1,6 @@
 // The part of a phase map that stays within one patch: survival, births, ageing, fates. The diagonal block of the map.
 import type { AgeingPhase, BreedingPhase, DemographyPhase, Model, SurvivalPhase } from '../model/model.ts';
+import { shareWithin } from './ceiling.ts';
 import { multiplierOf, type Multipliers } from './multipliers.ts';
 import { tableAt } from './rates.ts';
 
@@ -11,6 +12,8 @@ export interface LifeRequest {
   readonly patch: number;
   readonly step: number;
   readonly multipliers: Multipliers;
+  /** By class, in this patch, at the start of the phase; nobody where it is missing. */
+  readonly animals?: Float64Array;
 }
 
 /** C×C, at to * C + from: animals of `to` after the phase for each of `from` before it. */
@@ -54,13 +57,19 @@ export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array 
     for (let i = 0; i < n * n; i++) {
       const [to, from] = [Math.floor(i / n), i % n];
       const young = (table[request.patch * n + from] ?? 0) * factor(request, 'births', from);
-      map[i] = (phase.into[to] ?? 0) * young;
+      map[i] = (phase.into[to] ?? 0) * young * breedingShare(phase, request, from);
     }
   } else if (phase.kind === 'demography') {
     const table = tableAt(phase.births, request.step);
     for (let i = 0; i < n * n; i++) map[i] = (table[request.patch * n * n + i] ?? 0) * factor(request, 'births', i % n);
   }
   return map;
+}
+
+/** Of a class, the share that breeds: below 1 only where the surplus over a ceiling waits. */
+function breedingShare({ waits }: BreedingPhase, { patch, animals }: LifeRequest, c: number): number {
+  if (waits === undefined || animals === undefined || waits.counted[c] !== 1) return 1;
+  return shareWithin(waits, patch, animals);
 }
 
 function factor(

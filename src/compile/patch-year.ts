@@ -1,7 +1,7 @@
 // One patch alone for a whole year: no dispersal, no ceiling. What capacities and stable spreads within a patch rest on.
 import type { Model } from '../model/model.ts';
 import { lifeMap } from './life-map.ts';
-import type { Multipliers } from './multipliers.ts';
+import { readingPhase, type Multipliers } from './multipliers.ts';
 
 export interface PatchYear {
   readonly model: Model;
@@ -25,6 +25,18 @@ export function patchYear({ model, patch, multipliers }: PatchYear, until = mode
     }
   });
   return year;
+}
+
+/** N of each crowding where it is read, from animals by class at the count. */
+export function countsAlone(year: PatchYear, animals: Float64Array): readonly number[] {
+  const { model } = year;
+  const n = model.classes.length;
+  return model.crowding.map(({ counted }, k) => {
+    const map = patchYear(year, readingPhase(model, k));
+    let count = 0;
+    for (let i = 0; i < n * n; i++) count += (counted[Math.floor(i / n)] ?? 0) * (map[i] ?? 0) * (animals[i % n] ?? 0);
+    return count;
+  });
 }
 
 function identity(n: number): Float64Array {

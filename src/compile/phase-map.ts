@@ -2,6 +2,7 @@
 import type { Landscape } from '../landscape/landscape.ts';
 import type { CeilingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
+import { keptShares } from './ceiling.ts';
 import { birthsMap, fatesMap, lifeMap, type LifePhase } from './life-map.ts';
 import type { Multipliers } from './multipliers.ts';
 import { tableAt } from './rates.ts';
@@ -90,7 +91,9 @@ function fillLife(triplets: TripletList, fillRequest: FillRequest & { readonly p
   const n = model.classes.length;
   const make = request.part === 'fates' ? fatesMap : request.part === 'births' ? birthsMap : lifeMap;
   for (let p = 0; p < model.patches.length; p++) {
-    const map = make(phase, { model, phase: index, patch: p, step, multipliers });
+    const animals = request.state?.subarray(p * n, p * n + n);
+    const here = { model, phase: index, patch: p, step, multipliers };
+    const map = make(phase, animals === undefined ? here : { ...here, animals });
     for (let i = 0; i < n * n; i++) triplets.add(p * n + Math.floor(i / n), p * n + (i % n), map[i] ?? 0);
   }
 }
@@ -118,14 +121,7 @@ function fillCeiling(triplets: TripletList, phase: CeilingPhase, { model, state,
   if (part === 'births') return;
   const n = model.classes.length;
   for (let p = 0; p < model.patches.length; p++) {
-    const kept = state === null ? 1 : keptShare(phase, state.subarray(p * n, p * n + n), phase.capacity[p] ?? Infinity);
-    for (let c = 0; c < n; c++) triplets.add(p * n + c, p * n + c, phase.counted[c] === 1 ? kept : 1);
+    const kept = keptShares(phase, p, state?.subarray(p * n, p * n + n) ?? new Float64Array(n));
+    for (let c = 0; c < n; c++) triplets.add(p * n + c, p * n + c, kept[c] ?? 1);
   }
-}
-
-/** min(1, K/N). */
-export function keptShare(phase: CeilingPhase, animals: Float64Array, capacity: number): number {
-  let count = 0;
-  animals.forEach((value, c) => (count += phase.counted[c] === 1 ? value : 0));
-  return count > capacity ? capacity / count : 1;
 }

@@ -1,10 +1,10 @@
 // A whole year as a function of the animals at its start: the path without chance, and the matrix at any state.
-import { pinned } from '../machine/pinned.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { Model } from '../model/model.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
 import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
+import { multiplierAt } from './crowding-form.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
 
@@ -53,22 +53,6 @@ function readMultipliers({ model, k, own, into }: Reading, state: Float64Array):
     for (let c = 0; c < n; c++) count += (counted?.[c] ?? 0) * (state[p * n + c] ?? 0);
     if (into !== undefined) into[p] = multiplierAt(own, p, count);
   });
-}
-
-/** g(N) of one patch. */
-export function multiplierAt(own: CrowdingCoefficients, p: number, count: number): number {
-  const [form, coefficient, half] = [own.form[p] ?? 'none', own.coefficient[p] ?? 0, own.alleeHalf[p] ?? 0];
-  const allee = half === 0 ? 1 : count / (count + half);
-  switch (form) {
-    case 'none':
-      return allee;
-    case 'beverton-holt':
-      return allee / (1 + coefficient * count);
-    case 'ricker':
-      return allee * pinned.exp(-coefficient * count);
-    case 'ceiling':
-      return allee * (count > coefficient ? coefficient / count : 1);
-  }
 }
 
 /** The year of the first step as a function over all P·C animals. */

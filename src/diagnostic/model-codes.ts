@@ -38,6 +38,8 @@ export const modelCodes = {
   'misses-above-one': 'More leavers arrive than set out.',
 
   // Crowding
+  'crowding-shape': 'A crowding says too little or too much.',
+  'ceiling-without-breeding': 'A surplus waits to breed in a year without a breeding.',
   'missing-capacity': 'A patch has no capacity above zero.',
   'declining-patch': 'A patch declines alone, so it has no capacity to stand still at.',
   'capacity-unreachable': 'No strength of crowding makes a patch stand still at its capacity.',

@@ -1,32 +1,94 @@
 // Crowding: which rates it scales, whom it counts, and the capacity at which a patch alone stands still.
 import type { SpecPath } from '../spec/document.ts';
-import type { CeilingSpec, CrowdingSpec } from '../spec/schema/spec.ts';
+import type { CrowdingSpec } from '../spec/schema/spec.ts';
 import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
-import type { CeilingPhase, Crowding, Phase } from './model.ts';
+import { resolveCapacities } from './capacities.ts';
+import type { Crowding, Phase } from './model.ts';
 import { rateCalled } from './named-rates.ts';
 import { whereIn, withinBounds } from './rates.ts';
 
-export function resolveCeiling(context: Context, name: string, spec: CeilingSpec): CeilingPhase {
-  const counted = classMask(context, spec.counted, [name, 'counted']);
-  const capacity = capacities(context, spec.capacity, [name, 'capacity']);
-  return { kind: 'ceiling', name, counted, capacity };
+export function resolveCrowding(context: Context, phases: readonly Phase[]): readonly Crowding[] {
+  const { crowding, named } = context.spec;
+  const own = Object.entries(named).flatMap(([name, spec]) =>
+    spec.kind === 'crowding' ? [resolveOne(context, { name, spec, phases })] : [],
+  );
+  return crowding === undefined ? own : [resolveOne(context, { name: 'crowding', spec: crowding, phases }), ...own];
 }
 
-export function resolveCrowding(context: Context, phases: readonly Phase[]): readonly Crowding[] {
-  const spec = context.spec.crowding;
-  if (spec === undefined) return [];
-  const path = ['crowding'];
-  return [
-    {
-      name: 'crowding',
-      form: spec.form,
-      counted: countedWeights(context, spec, path),
-      changes: changedRates(context, { spec, path, phases }),
-      capacity: capacities(context, spec.capacity, [...path, 'capacity']),
-      alleeHalf: alleeHalves(context, spec, path),
-      whereDeclining: whereDeclining(context, spec, path),
-    },
-  ];
+interface Named {
+  readonly name: string;
+  readonly spec: CrowdingSpec;
+  readonly phases: readonly Phase[];
+}
+
+function resolveOne(context: Context, { name, spec, phases }: Named): Crowding {
+  const path = [name];
+  const shapeNumber = shapeNumberOf(context, spec, path);
+  return {
+    name,
+    form: spec.form,
+    ...(shapeNumber === null ? {} : { shapeNumber }),
+    counted: countedWeights(context, spec, path),
+    changes: changedRates(context, { spec, path, phases }),
+    capacity: capacityOf(context, spec, path),
+    alleeHalf: alleeHalves(context, spec, path),
+    whereDeclining: whereDeclining(context, spec, path),
+  };
+}
+
+/** Null where the form has none, or after telling what is wrong. */
+function shapeNumberOf(context: Context, spec: CrowdingSpec, path: SpecPath): number | null {
+  const wanted = spec.form === 'theta' || spec.form === 'hassell';
+  const written = spec['shape-number'];
+  if (wanted !== (written !== undefined)) {
+    fail(context, 'crowding-shape', wanted ? [...path, 'form'] : [...path, 'shape-number'], {
+      message: wanted
+        ? `The form \`${spec.form}\` needs a \`shape-number\``
+        : `The form \`${spec.form}\` has no shape number`,
+      ...(wanted ? {} : { part: 'key' as const }),
+      details: {
+        expected: wanted ? 'a number above zero, such as `shape-number: 2`' : 'one with `theta` and `hassell` only',
+      },
+    });
+  }
+  if (!wanted || written === undefined) return null;
+  const at = [...path, 'shape-number'];
+  const value = context.numbers.value(written, at, { year: context.time.firstYear });
+  if (value > 0) return value;
+  if (!Number.isNaN(value)) {
+    fail(context, 'out-of-range', at, {
+      message: `The shape number is ${value}`,
+      details: { expected: 'a number above zero' },
+    });
+  }
+  return null;
+}
+
+function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Float64Array {
+  if (spec.form === 'allee') {
+    for (const key of ['capacity', 'where-declining'] as const) {
+      if (spec[key] === undefined) continue;
+      fail(context, 'crowding-shape', [...path, key], {
+        message: `The form \`allee\` has no \`${key}\``,
+        part: 'key',
+        details: { fix: 'Remove it, or take a form that falls with the number, such as `beverton-holt`.' },
+      });
+    }
+    if (spec['allee-half'] === undefined) {
+      fail(context, 'crowding-shape', [...path, 'form'], {
+        message: 'The form `allee` needs an `allee-half`',
+        details: { expected: 'the number at which rates fall to half, such as `allee-half: 4`' },
+      });
+    }
+    return new Float64Array(context.patches.length).fill(NaN);
+  }
+  if (spec.capacity !== undefined) return resolveCapacities(context, spec.capacity, [...path, 'capacity']);
+  fail(context, 'crowding-shape', path, {
+    message: `The crowding \`${path.join('.')}\` needs a \`capacity\``,
+    part: 'key',
+    details: { expected: 'the number at which a patch alone stands still, such as `capacity: capacity`' },
+  });
+  return new Float64Array(context.patches.length).fill(NaN);
 }
 
 function countedWeights(context: Context, { counted }: CrowdingSpec, path: SpecPath): Float64Array {
@@ -51,22 +113,6 @@ function changedRates(context: Context, { spec, path, phases }: Changes): Crowdi
   return Object.entries(spec.changes).flatMap(([rate, list]) => {
     const target = rateCalled(context, { rate, path: [...path, 'changes', rate], phases });
     return target === null ? [] : [{ ...target, classes: classMask(context, list, [...path, 'changes', rate]) }];
-  });
-}
-
-function capacities(context: Context, expression: number | string, path: SpecPath): Float64Array {
-  return Float64Array.from(context.patches, (patch, p) => {
-    const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
-    if (value > 0 || Number.isNaN(value)) return value;
-    const key = JSON.stringify(path);
-    if (!context.toldBounds.has(key)) {
-      fail(context, 'missing-capacity', path, {
-        message: `The capacity of ${patch.name} is ${value}`,
-        details: { expected: 'a number of animals above zero' },
-      });
-    }
-    context.toldBounds.add(key);
-    return NaN;
   });
 }
 

@@ -35,6 +35,8 @@ export interface BreedingPhase extends PhaseBase {
   readonly births: RateTable;
   /** Share of the young that enters each class; sums to 1. */
   readonly into: Float64Array;
+  /** A ceiling under which the surplus waits: of the counted classes no more than the capacity breed, drawn at random. */
+  readonly waits?: CeilingPhase;
 }
 export interface SurvivalPhase extends PhaseBase {
   readonly kind: 'survival';
@@ -88,6 +90,8 @@ export interface CeilingPhase extends PhaseBase {
   readonly kind: 'ceiling';
   readonly counted: Uint8Array;
   readonly capacity: Float64Array;
+  /** Where nobody is taken the surplus waits: see `waits` of a breeding. At random where it is missing. */
+  readonly takes?: 'at random' | 'youngest first' | 'nobody';
 }
 
 export type Phase =
@@ -102,7 +106,10 @@ export type RatePart = 'survival' | 'births' | 'fates';
  */
 export interface Crowding {
   readonly name: string;
-  readonly form: 'beverton-holt' | 'ricker';
+  /** `allee`: only the Allee factor acts, and there is no capacity (NaN). */
+  readonly form: 'beverton-holt' | 'ricker' | 'theta' | 'hassell' | 'allee';
+  /** Of the forms that have one. */
+  readonly shapeNumber?: number;
   readonly counted: Float64Array;
   /** Rates by phase (an index into `phases`), part and class. */
   readonly changes: readonly { readonly phase: number; readonly part: RatePart; readonly classes: Uint8Array }[];

@@ -2,7 +2,7 @@
 import type { NamedSpec } from '../spec/schema/spec.ts';
 import { refuseUnknownOwnKeys } from './class-rates.ts';
 import { fail, tellUnknown, type Context } from './context.ts';
-import { resolveCeiling } from './crowding.ts';
+import { resolveCeiling, withWaiting } from './ceiling.ts';
 import { resolveDemography } from './demography.ts';
 import { resolveDispersal } from './dispersal.ts';
 import {
@@ -31,7 +31,10 @@ export function resolvePhases(context: Context): readonly Phase[] {
     });
   }
   const turned = [...year.keys()].map((i) => (count + 1 + i) % year.length);
-  return turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []);
+  return withWaiting(
+    context,
+    turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []),
+  );
 }
 
 function resolvePhase(context: Context, name: string, index: number): Phase | null {
@@ -66,7 +69,17 @@ function resolveNamed(context: Context, name: string, named: NamedSpec): Phase |
       return resolveDispersal(context, name, named);
     case 'ceiling':
       return resolveCeiling(context, name, named);
+    case 'crowding':
+      return tellCondition(context, name);
   }
+}
+
+function tellCondition(context: Context, name: string): null {
+  fail(context, 'unknown-phase', ['year', context.spec.year.indexOf(name)], {
+    message: `\`${name}\` is a crowding, which is no phase of the year`,
+    details: { fix: 'Remove it from `year`: it acts on the phases that its `changes` name.' },
+  });
+  return null;
 }
 
 function refuseRepeats(context: Context): void {
@@ -93,7 +106,7 @@ function tellUnused(context: Context): void {
         part: 'key',
         details: { fix: 'Give this phase another name.' },
       });
-    } else if (!spec.year.includes(name)) tellUnusedKey(context, name, name);
+    } else if (!spec.year.includes(name) && spec.named[name]?.kind !== 'crowding') tellUnusedKey(context, name, name);
   }
 }
 

@@ -78,10 +78,16 @@ function phaseWords(model: Model, phase: Phase): string {
     }
     case 'ceiling': {
       const counted = model.classes.filter((_, c) => phase.counted[c] === 1).join(', ');
-      return `${phase.name}: where there are more ${counted} than the capacity, the surplus is removed at random`;
+      return `${phase.name}: where there are more ${counted} than the capacity, ${surplusWords[phase.takes ?? 'at random']}`;
     }
   }
 }
+
+const surplusWords = {
+  'at random': 'the surplus is removed at random',
+  'youngest first': 'the surplus is removed, the youngest first',
+  nobody: 'the surplus waits without breeding',
+} as const;
 
 function dispersalWords({ reach }: Understood, phase: Phase): readonly string[] {
   if (phase.kind !== 'dispersal') return [];

@@ -9,6 +9,8 @@ const formCodes: Readonly<Record<CrowdingForm, number>> = {
   none: layout.formNone,
   'beverton-holt': layout.formBevertonHolt,
   ricker: layout.formRicker,
+  theta: layout.formTheta,
+  hassell: layout.formHassell,
   ceiling: layout.formCeiling,
 };
 
@@ -29,6 +31,9 @@ export function crowdingRecord(list: SectionList, { crowding, coefficients, slot
     list.add(plain(layout.kindPatchNumbers, coefficients.coefficient, `coefficients of ${reads}`)),
     list.add(plain(layout.kindPatchNumbers, coefficients.alleeHalf, `coefficients of ${reads}`)),
     slot,
+    coefficients.shapeNumber === undefined
+      ? layout.none
+      : list.add(plain(layout.kindPatchNumbers, Float64Array.of(coefficients.shapeNumber), reads)),
   ]);
 }
 

@@ -52,7 +52,15 @@ function breedingRecord(phase: M.BreedingPhase, { list, model, index, key }: Pha
     list.add(plain(layout.kindClassShares, phase.into, `into of ${phase.name}`)),
     list.add(plain(layout.kindClassShares, onwardShares(phase.into), `into of ${phase.name}`)),
     addSlotLists(list, model, index, 'births'),
+    ...(phase.waits === undefined ? [] : waitingRows(list, phase.waits)),
   ]);
+}
+
+function waitingRows(list: SectionList, { name, counted, capacity }: M.CeilingPhase): readonly number[] {
+  return [
+    list.add(plain(layout.kindClassMask, Int32Array.from(counted), `counted of ${name}`)),
+    list.add(plain(layout.kindPatchNumbers, capacity, `capacity of ${name}`)),
+  ];
 }
 
 /** share[c] / (share[c] + all later shares): 1 for the last class that has a share. */
@@ -104,8 +112,15 @@ function ceilingRecord(phase: M.CeilingPhase, { list, index, key }: PhasePlace):
   return record(layout.opCeiling, key, index, [
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.counted), `counted of ${phase.name}`)),
     list.add(plain(layout.kindPatchNumbers, phase.capacity, `capacity of ${phase.name}`)),
+    takesCodes[phase.takes ?? 'at random'],
   ]);
 }
+
+const takesCodes = {
+  'at random': layout.none,
+  'youngest first': layout.takesYoungest,
+  nobody: layout.takesNobody,
+} as const;
 
 /** Adds a table once per epoch, and which epoch holds in each step where there are several. */
 function addTable(list: SectionList, kind: number, table: M.RateTable, reads: string): number {

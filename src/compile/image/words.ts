@@ -32,13 +32,13 @@ const kinds: readonly (readonly [number, string])[] = [
 
 /** For each opcode its word, then the words of its operands in order. */
 const opcodes: readonly (readonly [number, readonly string[]])[] = [
-  [layout.opBreeding, ['breeding', 'births', 'into', 'onward', 'slots']],
+  [layout.opBreeding, ['breeding', 'births', 'into', 'onward', 'slots', 'waiting', 'places']],
   [layout.opSurvival, ['survival', 'rates', 'slots']],
   [layout.opAgeing, ['ageing', 'advance', 'next']],
   [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],
   [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before']],
-  [layout.opCeiling, ['ceiling', 'counted', 'capacity']],
-  [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number']],
+  [layout.opCeiling, ['ceiling', 'counted', 'capacity', 'takes']],
+  [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number', 'shape']],
   [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
 ];
 

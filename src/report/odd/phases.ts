@@ -25,10 +25,16 @@ Poisson number.`;
       return mark`a share of ${classNames(model, phase.moves)} sets out; each leaver ends in one other patch or dies on the
 way (multinomial).`;
     case 'ceiling':
-      return mark`where more animals of ${classNames(model, phase.counted)} are present than the patch can hold, the surplus
-is removed at random.`;
+      return mark`where more animals of ${classNames(model, phase.counted)} are present than the patch can hold, ${surplusWords[phase.takes ?? 'at random']}.`;
   }
 }
+
+const surplusWords = {
+  'at random': 'the surplus is removed at random',
+  'youngest first': 'the surplus is removed, the youngest first',
+  nobody:
+    'the surplus waits: it lives on, and in each breeding from here on no more than the capacity breed, drawn at random',
+} as const;
 
 /** The classes with a weight above 0. */
 export function classNames(model: Model, weights: ArrayLike<number>): Markup {

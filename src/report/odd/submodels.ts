@@ -47,7 +47,6 @@ function ageing({ classes }: Model, phase: AgeingPhase, c: number): Markup {
 }
 
 function crowding(one: Crowding, model: Model): Markup {
-  const form = one.form === 'beverton-holt' ? 'Beverton-Holt, 1/(1 + aN)' : 'Ricker, exp(−bN)';
   const weights = model.classes
     .map((name, c) => ({ name, weight: one.counted[c] ?? 0 }))
     .filter(({ weight }) => weight > 0)
@@ -58,8 +57,21 @@ function crowding(one: Crowding, model: Model): Markup {
   });
   const rare = one.alleeHalf.some((half) => half > 0);
   const allee = rare ? ' An Allee factor N/(N + h) lowers the rates where few are left.' : '';
-  return mark`<p>${form}. N counts ${weights}. It changes ${changes}. Capacity is the count at which a patch by itself stands
-still; the coefficient is solved from it once.${allee} ${byPatch(model, one.capacity, 'Capacity')}</p>`;
+  const start = mark`${formWords(one)}. N counts ${weights}. It changes ${changes}.${allee}`;
+  if (one.form === 'allee') return mark`<p>${start}</p>`;
+  return mark`<p>${start} Capacity is the count at which a patch by itself stands still; the coefficient is solved from it
+once. ${byPatch(model, one.capacity, 'Capacity')}</p>`;
+}
+
+function formWords({ form, shapeNumber = 1 }: Crowding): string {
+  const forms = {
+    'beverton-holt': 'Beverton-Holt, 1/(1 + aN)',
+    ricker: 'Ricker, exp(−bN)',
+    theta: `Theta form, exp(−bN^s) with s = ${digits(shapeNumber)}`,
+    hassell: `Hassell, (1 + aN)^−s with s = ${digits(shapeNumber)}`,
+    allee: 'Only an Allee factor acts',
+  } as const;
+  return forms[form];
 }
 
 function byPatch(model: Model, values: Float64Array, what: string): Markup {

@@ -27,7 +27,7 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
         part: change.part,
         classes: mask(change.classes),
       })),
-      capacity: byPatch(one.capacity),
+      capacity: one.form === 'allee' ? null : byPatch(one.capacity),
       alleeHalf: byPatch(one.alleeHalf),
     })),
     start: startJson(model, start),
@@ -47,7 +47,12 @@ function phaseJson(model: Model, phase: Phase): unknown {
     case 'survival':
       return { ...phase, survival: tableJson(model, phase.survival) };
     case 'breeding':
-      return { ...phase, births: tableJson(model, phase.births), into: classes(phase.into) };
+      return {
+        ...phase,
+        ...(phase.waits === undefined ? {} : { waits: phase.waits.name }),
+        births: tableJson(model, phase.births),
+        into: classes(phase.into),
+      };
     case 'ageing':
       return {
         ...phase,

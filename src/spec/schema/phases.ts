@@ -154,9 +154,16 @@ export const Dispersal = Type.Object(
 export const Ceiling = Type.Object(
   {
     kind: Type.Literal('ceiling', { description: 'A patch holds no more than its capacity.', examples: ['ceiling'] }),
-    counted: classList({ description: 'Classes that are counted and removed.', examples: ['[yearling, adult]'] }),
+    counted: classList({
+      description: 'Classes that are counted, and removed where there are too many.',
+      examples: ['[yearling, adult]'],
+    }),
     capacity: expression({ description: 'How many may stay.', examples: ['capacity'], 'x-unit': 'animals' }),
-    takes: Type.Literal('at random', { description: 'Who is removed.', examples: ['at random'] }),
+    takes: Type.Union([Type.Literal('at random'), Type.Literal('youngest first'), Type.Literal('nobody')], {
+      description:
+        'Who is removed. Where it takes nobody the surplus waits: it lives on, and in each breeding between this place and the next no more than the capacity breed, drawn at random.',
+      examples: ['at random'],
+    }),
   },
   {
     additionalProperties: false,
@@ -171,60 +178,93 @@ const counted = {
   examples: ['{ yearling: 1, adult: 1 }'],
 };
 
-export const Crowding = Type.Object(
-  {
-    form: Type.Union([Type.Literal('beverton-holt'), Type.Literal('ricker')], {
-      description: 'How rates fall with the number N: 1 / (1 + a N) or exp(-b N).',
+const crowdingKeys = {
+  form: Type.Union(
+    [
+      Type.Literal('beverton-holt'),
+      Type.Literal('ricker'),
+      Type.Literal('theta'),
+      Type.Literal('hassell'),
+      Type.Literal('allee'),
+    ],
+    {
+      description:
+        'How rates fall with the number N: 1 / (1 + a N), exp(-b N), exp(-b N^s), (1 + a N)^-s with the shape number s; or `allee`: not at all, only the Allee factor acts.',
       examples: ['beverton-holt'],
+    },
+  ),
+  'shape-number': Type.Optional(
+    expression({
+      description: 's of the forms theta and hassell, above zero: how sharply rates fall near the capacity.',
+      examples: [2],
     }),
-    changes: Type.Record(
-      Type.String(),
-      classList({ description: 'Classes whose rate falls.', examples: ['[newborn]'] }),
-      {
-        title: 'phases with lists of classes',
-        description: 'Which rates fall: the phases, and the classes in each.',
-        examples: ['{ survival: [newborn] }'],
-        'x-key': 'PHASE',
-      },
-    ),
-    counted: Type.Union(
-      [
-        Type.Record(Type.String(), Type.Number({ minimum: 0, description: 'Weight of the class.', examples: [1] }), {
-          'x-key': 'CLASS',
-        }),
-        classList(counted),
-      ],
-      counted,
-    ),
-    capacity: expression({
-      description: 'The number at which an isolated patch stands still at mean rates.',
+  ),
+  changes: Type.Record(
+    Type.String(),
+    classList({ description: 'Classes whose rate falls.', examples: ['[newborn]'] }),
+    {
+      title: 'phases with lists of classes',
+      description: 'Which rates fall: the phases, and the classes in each.',
+      examples: ['{ survival: [newborn] }'],
+      'x-key': 'PHASE',
+    },
+  ),
+  counted: Type.Union(
+    [
+      Type.Record(Type.String(), Type.Number({ minimum: 0, description: 'Weight of the class.', examples: [1] }), {
+        'x-key': 'CLASS',
+      }),
+      classList(counted),
+    ],
+    counted,
+  ),
+  capacity: Type.Optional(
+    expression({
+      description: 'The number at which an isolated patch stands still at mean rates. Must be said, but for `allee`.',
       examples: ['capacity'],
       'x-unit': 'animals',
     }),
-    'allee-half': Type.Optional(
-      expression({
-        description: 'The number at which rates fall to half because mates or company are scarce: N / (N + half).',
-        examples: [4],
-        'x-unit': 'animals',
-      }),
+  ),
+  'allee-half': Type.Optional(
+    expression({
+      description: 'The number at which rates fall to half because mates or company are scarce: N / (N + half).',
+      examples: [4],
+      'x-unit': 'animals',
+    }),
+  ),
+  'where-declining': Type.Optional(
+    Type.Union(
+      [
+        Type.Literal('none'),
+        Type.Literal('ceiling'),
+        Type.Object(
+          { as: Type.String({ ...Name, description: 'The patch whose crowding is used.', examples: ['North fen'] }) },
+          { additionalProperties: false, title: '{ as: PATCH }' },
+        ),
+      ],
+      {
+        description:
+          'What crowding does in a patch that declines alone: nothing, a ceiling at capacity, or as in another patch.',
+        examples: ['ceiling'],
+      },
     ),
-    'where-declining': Type.Optional(
-      Type.Union(
-        [
-          Type.Literal('none'),
-          Type.Literal('ceiling'),
-          Type.Object(
-            { as: Type.String({ ...Name, description: 'The patch whose crowding is used.', examples: ['North fen'] }) },
-            { additionalProperties: false, title: '{ as: PATCH }' },
-          ),
-        ],
-        {
-          description:
-            'What crowding does in a patch that declines alone: nothing, a ceiling at capacity, or as in another patch.',
-          examples: ['ceiling'],
-        },
-      ),
-    ),
+  ),
+};
+
+export const Crowding = Type.Object(crowdingKeys, {
+  additionalProperties: false,
+  description: 'Rates that fall where animals are many.',
+});
+
+/** A second crowding and more, each under a name of its own. It is a condition and does not stand in the year. */
+export const NamedCrowding = Type.Object(
+  {
+    kind: Type.Literal('crowding', { description: 'Rates that fall where animals are many.', examples: ['crowding'] }),
+    ...crowdingKeys,
   },
-  { additionalProperties: false, description: 'Rates that fall where animals are many.' },
+  {
+    additionalProperties: false,
+    title: 'a crowding',
+    description: 'One more crowding, under a name of its own; it stands in no year, since it acts on phases.',
+  },
 );

@@ -2,7 +2,7 @@
 import { Type, type Static } from 'typebox';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
 import { Parameters, Patches } from './patches.ts';
-import { Ceiling, Dispersal, Crowding } from './phases.ts';
+import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import { Study } from './study.ts';
 import { Name } from './values.ts';
@@ -82,6 +82,7 @@ export const namedSchemas = {
   breeding: NamedBreeding,
   dispersal: Dispersal,
   ceiling: Ceiling,
+  crowding: NamedCrowding,
 } as const;
 
 export type DispersalSpec = Static<typeof Dispersal>;
@@ -90,7 +91,8 @@ export type CrowdingSpec = Static<typeof Crowding>;
 export type OutcomeSpec = Static<typeof Outcome>;
 export type SurvivalSpec = Static<typeof NamedSurvival>;
 export type BreedingSpec = Static<typeof NamedBreeding>;
-export type NamedSpec = SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec;
+export type NamedCrowdingSpec = Static<typeof NamedCrowding>;
+export type NamedSpec = SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
 export type Spec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };

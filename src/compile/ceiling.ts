@@ -1,0 +1,32 @@
+// What a ceiling leaves of each class in a patch.
+import type { CeilingPhase } from '../model/model.ts';
+
+/**
+ * By class. At random: min(1, K/N) of each counted class. Youngest first: the surplus N − K comes out of the first counted class,
+ * what it lacks out of the next, and so on. Nobody is removed where the surplus waits.
+ */
+export function keptShares(phase: CeilingPhase, patch: number, animals: Float64Array): Float64Array {
+  const kept = new Float64Array(animals.length).fill(1);
+  if (phase.takes === 'nobody') return kept;
+  const share = shareWithin(phase, patch, animals);
+  if (phase.takes !== 'youngest first') return kept.map((_, c) => (phase.counted[c] === 1 ? share : 1));
+  let surplus = (1 - share) * countOf(phase, animals);
+  return kept.map((_, c) => {
+    const here = animals[c] ?? 0;
+    if (phase.counted[c] !== 1 || surplus <= 0 || here <= 0) return 1;
+    const taken = Math.min(here, surplus);
+    surplus -= taken;
+    return 1 - taken / here;
+  });
+}
+
+/** min(1, K/N): of the counted animals the share that finds room. */
+export function shareWithin(phase: CeilingPhase, patch: number, animals: Float64Array): number {
+  const count = countOf(phase, animals);
+  const capacity = phase.capacity[patch] ?? Infinity;
+  return count > capacity ? capacity / count : 1;
+}
+
+function countOf({ counted }: CeilingPhase, animals: Float64Array): number {
+  return animals.reduce((sum, value, c) => sum + (counted[c] === 1 ? value : 0), 0);
+}
