@@ -1,5 +1,5 @@
 // The whole analysis of a block projection matrix, as one object; what does not apply is null with the reason beside it.
-import { leading } from '../numeric/leading.ts';
+import { leading, type Leading } from '../numeric/leading.ts';
 import { because, collectReasons, type Answer } from './answer.ts';
 import { equilibriumAnswer } from './answer-equilibrium.ts';
 import {
@@ -42,11 +42,11 @@ export function analyse(input: AnalysisInput): Analysis {
       'dampingRatio',
       fromSpectrum(all?.dampingRatio, 'There is no second eigenvalue to compare with.'),
     ),
-    oscillationSteps: take('oscillationSteps', fromSpectrum(all?.oscillationSteps, 'Numbers settle without waves.')),
+    period: take('period', fromSpectrum(all?.oscillationSteps, 'Numbers settle without waves.')),
     eigenvalues: take('eigenvalues', eigenvaluesAnswer(input, all)),
     irreducible: found.irreducible,
     primitive: found.primitive,
-    period: found.period,
+    imprimitivity: found.period,
     blocks: blocksAnswer(block, found),
     netReproductiveRate: take('netReproductiveRate', life.netReproductiveRate),
     generationTime: take('generationTime', life.generationTime),
@@ -77,7 +77,7 @@ export function analyse(input: AnalysisInput): Analysis {
     ),
     transients: take(
       'transients',
-      plain((given) => transientsAnswer(input, given, found.primitive)),
+      plain((given) => transientsAnswer(input, given, settles(found))),
     ),
     stochasticGrowth: take(
       'stochasticGrowth',
@@ -90,7 +90,7 @@ export function analyse(input: AnalysisInput): Analysis {
     equilibrium: take('equilibrium', equilibriumAnswer(input)),
     metapopulationCapacity: take('metapopulationCapacity', capacityAnswer(input)),
     spread: take('spread', spreadAnswer(input)),
-    difference: take('difference', differenceAnswer(input)),
+    ltre: take('ltre', differenceAnswer(input)),
     cautions: cautionsFor({
       patches: block.patches.length,
       losslessDispersal: input.losslessDispersal ?? false,
@@ -100,6 +100,11 @@ export function analyse(input: AnalysisInput): Analysis {
     }),
     reasons: told,
   };
+}
+
+/** Numbers come to a steady growth: no part of the life cycle that grows as fast as the whole swings for ever. */
+function settles({ blocks, growthRate }: Leading): boolean {
+  return blocks.every((block) => block.growthRate < growthRate || block.period === 1);
 }
 
 function eigenvaluesAnswer(

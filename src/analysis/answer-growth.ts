@@ -19,7 +19,7 @@ export function blocksAnswer(block: BlockMatrix, leading: Leading): Analysis['bl
   return leading.blocks.map(({ states, growthRate, period, feeds }) => ({
     states: Array.from(states, (state) => stateName(block, state)),
     growthRate,
-    period,
+    imprimitivity: period,
     feeds: [...feeds],
   }));
 }

@@ -64,7 +64,7 @@ export function spreadAnswer({ block, lineKernels }: AnalysisInput): Answer<NonN
   return { value: { speedKm: found.speedKm, theta: found.theta } };
 }
 
-export function differenceAnswer({ block, reference }: AnalysisInput): Answer<NonNullable<Analysis['difference']>> {
+export function differenceAnswer({ block, reference }: AnalysisInput): Answer<NonNullable<Analysis['ltre']>> {
   if (!reference) return because('Nothing was given to compare with.');
   const found = growthDifference(block.matrix, reference);
   if (!found) return because('The matrix half-way between the two has no single stable distribution.');

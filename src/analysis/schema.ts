@@ -19,7 +19,7 @@ export const BlockSchema = closed(
   {
     states: Type.Array(State),
     growthRate: number('0 where no state of the block ever comes back.'),
-    period: Type.Integer({ minimum: 0 }),
+    imprimitivity: Type.Integer({ minimum: 0 }),
     feeds: Type.Array(Type.Integer({ minimum: 0 }), {
       description: 'Blocks that this one sends to, by place in the list.',
     }),
@@ -68,8 +68,8 @@ export const LinkSchema = closed({
 });
 
 export const TransientsSchema = closed({
-  firstStepRise: number('Largest that any start can be after one step, against steady growth.'),
-  firstStepDrop: number('Smallest that any start can be after one step.'),
+  reactivity: number('Largest that any start can be after one step, against steady growth.'),
+  firstStepAttenuation: number('Smallest that any start can be after one step.'),
   stepsFollowed: Type.Integer({ minimum: 1, description: 'Steps over which highest and lowest were looked for.' }),
   highest: Extreme,
   lowest: Extreme,
@@ -111,11 +111,14 @@ export const AnalysisSchema = closed({
   }),
   growthRate: number('Factor by which numbers change in a year, in the long run at mean rates.'),
   dampingRatio: maybe('By this factor a year what is not in stable proportion fades.'),
-  oscillationSteps: maybe('Years from wave to wave.'),
+  period: maybe('Years from wave to wave of what fades slowest.'),
   eigenvalues: orNull(Type.Array(closed({ re: Type.Number(), im: Type.Number() }))),
   irreducible: Type.Boolean({ description: 'Every state can reach every other.' }),
   primitive: Type.Boolean({ description: 'Irreducible, and numbers settle.' }),
-  period: Type.Integer({ minimum: 0, description: 'Common divisor of the lengths of all loops; 0 without a loop.' }),
+  imprimitivity: Type.Integer({
+    minimum: 0,
+    description: 'Common divisor of the lengths of all loops: 1 where numbers settle, 0 without a loop.',
+  }),
   blocks: Type.Array(BlockSchema),
   netReproductiveRate: maybe('Young of a newborn in its life.'),
   generationTime: orNull(
@@ -159,7 +162,7 @@ export const AnalysisSchema = closed({
     }),
   ),
   spread: orNull(closed({ speedKm: number('Kilometres a step.'), theta: number('Steepness of the front, per km.') })),
-  difference: orNull(
+  ltre: orNull(
     closed({
       difference: number('Growth rate less that of the reference.'),
       unexplained: Type.Number(),

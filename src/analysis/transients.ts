@@ -8,9 +8,9 @@ import { dot, type Vectors } from './sensitivity.ts';
 /** All against a population of the same size that grows steadily by λ from the start (1 = no difference). */
 export interface TransientBounds {
   /** Largest that any start can be after one step. */
-  readonly firstStepRise: number;
+  readonly reactivity: number;
   /** Smallest that any start can be after one step. */
-  readonly firstStepDrop: number;
+  readonly firstStepAttenuation: number;
   /** Steps over which `highest` and `lowest` were looked for. */
   readonly stepsFollowed: number;
   /** Largest that any start can be within them, and when. */
@@ -52,8 +52,8 @@ export function transientBounds(matrix: SparseMatrix, vectors: Vectors, primitiv
   const worth = vectors.left.map((value) => value / dot(vectors.left, vectors.right));
   return {
     stepsFollowed: longest,
-    firstStepRise: first.high,
-    firstStepDrop: first.low,
+    reactivity: first.high,
+    firstStepAttenuation: first.low,
     highest,
     lowest,
     lasting: primitive ? { gain: maximum(worth), loss: minimum(worth) } : null,

@@ -1,5 +1,5 @@
 // The command line: which commands there are. Each is loaded only when it is called.
-import { Command, CommanderError } from 'commander';
+import { Command, CommanderError, Option } from 'commander';
 import { toolVersion } from '../results/provenance.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
@@ -32,6 +32,7 @@ function buildProgram(): Command {
       (await import('./command/check.ts')).checkModel(path, options);
     });
   addShow(program);
+  addAnalyse(program);
   addRuns(program);
   return program;
 }
@@ -45,6 +46,22 @@ function addShow(program: Command): void {
     .action(async (path: string, stage: string, options: CommonOptions) => {
       (await import('./command/show.ts')).showStage(path, stage, options);
     });
+}
+
+function addAnalyse(program: Command): void {
+  const states = new Option('--at <state>', 'numbers at which the matrix is taken')
+    .choices(['zero', 'equilibrium', 'start'])
+    .default('zero');
+  model(program, 'analyse', 'say what drives growth, and which patches feed the others', [
+    'set',
+    'json',
+    'out',
+    'quiet',
+  ])
+    .addOption(states)
+    .option('--eigenvalues', 'list all eigenvalues')
+    .addHelpText('after', '\nExample:\n  skein analyse models/reed-hare.yaml --at start')
+    .action(run(async () => (await import('./command/analyse.ts')).analyseCommand));
 }
 
 function addRuns(program: Command): void {

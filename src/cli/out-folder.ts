@@ -1,5 +1,6 @@
 // What `--out` writes: results, tidy tables with a dictionary, and what is needed to run again.
 import { join } from 'node:path';
+import type { Analysis } from '../analysis/schema.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
 import { makeFolder, pendingFile } from './files.ts';
@@ -7,7 +8,7 @@ import { specJson } from './spec-json.ts';
 import { csvText, dictionaryText, type Table } from './tables.ts';
 
 export interface OutContent {
-  readonly results: RunResults | PathResults;
+  readonly results: RunResults | PathResults | Analysis;
   readonly tables: readonly Table[];
 }
 

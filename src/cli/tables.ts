@@ -2,9 +2,9 @@
 import type { Model } from '../model/model.ts';
 import type { PathResults, RunResults, YearSummary } from '../results/results.ts';
 
-type Cell = string | number | null;
+export type Cell = string | number | null;
 
-interface Column {
+export interface Column {
   readonly name: string;
   readonly unit: string;
   readonly meaning: string;

@@ -3,7 +3,7 @@ import Ajv from 'ajv/dist/2020.js';
 import { describe, expect, test } from 'vitest';
 import { analyseModel } from '../../src/analysis/analyse-model.ts';
 import { analysisInputOf } from '../../src/analysis/model-input.ts';
-import { printAnalysis } from '../../src/analysis/print.ts';
+import { analysisText } from '../../src/report/analysis/analysis-text.ts';
 import { analysisJsonSchema } from '../../src/analysis/schema.ts';
 import { weightedSum } from '../../src/numeric/sparse-product.ts';
 import { toDense } from '../../src/numeric/sparse.ts';
@@ -48,8 +48,8 @@ describe.each(names)('%s', (name) => {
   test('its analysis fits the schema and prints in words', () => {
     const { value: analysis } = analyseModel(compiled, { at: 'start', wantEigenvalues: true });
     expect(fits(JSON.parse(JSON.stringify(analysis)))).toBe(true);
-    const text = printAnalysis(analysis!);
-    expect(text).toMatch(/^The answer\n {2}At the numbers of the start/);
+    const text = analysisText(analysis!, { colour: false, width: 100 });
+    expect(text).toMatch(/^.*\n\nAt the numbers of the start/);
     expect(text).not.toMatch(/NaN|undefined|Infinity|\[object/);
   });
 });

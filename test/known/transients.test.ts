@@ -32,8 +32,8 @@ test('the Euclidean rise is the largest singular value (derived: σ² solves x²
 test('two stages: first-year extremes are the column sums over λ, lasting ones the reproductive values (derived)', () => {
   const found = bounds(twoStage);
   const growth = 1.1211102550927978;
-  expect(found.firstStepRise).toBeCloseTo(2 / growth, 12);
-  expect(found.firstStepDrop).toBeCloseTo(0.3 / growth, 12);
+  expect(found.reactivity).toBeCloseTo(2 / growth, 12);
+  expect(found.firstStepAttenuation).toBeCloseTo(0.3 / growth, 12);
   const [w1, v2] = [1.2 / (1.2 + growth), growth / 0.3];
   const scale = w1 + v2 * (1 - w1);
   expect(found.lasting!.gain).toBeCloseTo(v2 / scale, 12);

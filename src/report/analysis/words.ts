@@ -24,19 +24,23 @@ export function listed(names: readonly string[], most = 6): string {
   return parts.length === 0 ? last : `${parts.join(', ')} and ${last}`;
 }
 
-/** Lines of a table: the first column to the left, the others to the right. */
-export function table(head: readonly string[], rows: readonly (readonly string[])[]): string[] {
-  const all = [head, ...rows];
-  const widths = head.map((_, c) => Math.max(...all.map((row) => (row[c] ?? '').length)));
-  return all.map((row) =>
-    row
-      .map((cell, c) => (c === 0 ? cell.padEnd(widths[c] ?? 0) : cell.padStart(widths[c] ?? 0)))
-      .join('  ')
-      .trimEnd(),
-  );
-}
-
 /** '1 year', '7 years'. */
 export function years(count: number): string {
   return `${count} ${count === 1 ? 'year' : 'years'}`;
+}
+
+/** What is not there. */
+export function orDash(value: number | null): string {
+  return value === null ? '–' : told(value);
+}
+
+/** '1 year' or '2.5 years', for lengths that need not be whole. */
+export function yearsLong(length: number): string {
+  const text = told(length);
+  return `${text} ${text === '1' ? 'year' : 'years'}`;
+}
+
+/** '1.33 times', to be followed by 'as many'. */
+export function times(factor: number): string {
+  return `${told(factor)} times`;
 }

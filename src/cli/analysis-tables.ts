@@ -1,0 +1,163 @@
+// An analysis as tidy tables.
+import type { Analysis } from '../analysis/schema.ts';
+import type { Cell, Column, Table } from './tables.ts';
+
+const patch: Column = { name: 'patch', unit: '', meaning: 'Name of the patch.' };
+const className: Column = { name: 'class', unit: '', meaning: 'Name of the class.' };
+const column = (name: string, unit: string, meaning: string): Column => ({ name, unit, meaning });
+const perYear = 'a year';
+
+const fromTo: readonly Column[] = [
+  column('from_patch', '', 'Patch of the animals now.'),
+  column('from_class', '', 'Their class.'),
+  column('to_patch', '', 'Patch of what they are, or leave, a year later.'),
+  column('to_class', '', 'Its class.'),
+];
+
+/** One table for each list of the analysis that has an answer; the rest is in results.json. */
+export function analysisTables(analysis: Analysis): readonly Table[] {
+  return [
+    growthTable(analysis),
+    statesTable(analysis),
+    patchTable(analysis),
+    entryTable(analysis),
+    parameterTable(analysis),
+    linkTable(analysis),
+  ].filter(({ rows }) => rows.length > 0);
+}
+
+function growthTable({ at, growthRate, dampingRatio, period, netReproductiveRate, generationTime }: Analysis): Table {
+  return {
+    name: 'growth',
+    columns: [
+      column('at', '', 'State at which the matrix was taken: zero, equilibrium or start.'),
+      column('growth_rate', perYear, 'Factor by which numbers change in a year, in the long run at mean rates.'),
+      column('damping_ratio', perYear, 'Factor by which what is out of proportion fades.'),
+      column('period', 'years', 'From wave to wave of what fades slowest; empty without waves.'),
+      column('net_reproductive_rate', 'young', 'Young of a newborn in its life.'),
+      column('generation_stable', 'years', 'Mean age of mothers in the stable population.'),
+      column('generation_cohort', 'years', 'Mean age of mothers in one cohort.'),
+      column('generation_replacement', 'years', 'In which numbers multiply by the net reproductive rate.'),
+    ],
+    rows: [
+      [
+        at,
+        growthRate,
+        dampingRatio,
+        period,
+        netReproductiveRate,
+        generationTime?.stable ?? null,
+        generationTime?.cohort ?? null,
+        generationTime?.replacement ?? null,
+      ],
+    ],
+  };
+}
+
+function statesTable({ stableDistribution, reproductiveValue, lifetimes }: Analysis): Table {
+  const named = stableDistribution ?? lifetimes ?? [];
+  return {
+    name: 'states',
+    columns: [
+      patch,
+      className,
+      column('share', 'share', 'Share of the stable distribution.'),
+      column('reproductive_value', '', 'Worth of one animal for the future; the first that counts has 1.'),
+      column('life_expectancy', 'counts', 'Counts until death, the present one included.'),
+      column('life_variance', 'counts squared', 'Variance of that between animals.'),
+    ],
+    rows: named.map((state, s): readonly Cell[] => [
+      state.patch,
+      state.class,
+      stableDistribution?.[s]?.share ?? null,
+      reproductiveValue?.[s]?.value ?? null,
+      lifetimes?.[s]?.expectancy ?? null,
+      lifetimes?.[s]?.variance ?? null,
+    ]),
+  };
+}
+
+function patchTable({ patches, metapopulationCapacity }: Analysis): Table {
+  const value = (name: string): number | null =>
+    metapopulationCapacity?.patchValues?.find((one) => one.patch === name)?.value ?? null;
+  return {
+    name: 'patches',
+    columns: [
+      patch,
+      column('share', 'share', 'Share of the stable distribution.'),
+      column('growth_alone', perYear, 'Growth rate if all that leave were lost and nobody came.'),
+      column(
+        'contribution',
+        'animals',
+        'Next year anywhere for each animal now, made up as in the stable distribution.',
+      ),
+      column('contribution_now', 'animals', 'The same, made up as at the start.'),
+      column('self_recruitment', 'animals', 'As contribution, counting only those in the patch itself.'),
+      column('role', '', 'source, sink or undecided.'),
+      column('removal_loss', perYear, 'Growth rate lost when the patch and its animals are taken away.'),
+      column('network_value', 'km4', 'What the patch adds to the metapopulation capacity.'),
+    ],
+    rows: (patches ?? []).map((one): readonly Cell[] => [
+      one.patch,
+      one.share,
+      one.growthAlone,
+      one.contribution,
+      one.contributionNow,
+      one.selfRecruitment,
+      one.role,
+      one.removalLoss,
+      value(one.patch),
+    ]),
+  };
+}
+
+function entryTable({ entries }: Analysis): Table {
+  return {
+    name: 'entries',
+    columns: [
+      ...fromTo,
+      column('value', 'animals', 'Next year for each animal now.'),
+      column('sensitivity', perYear, 'Growth rate per unit of the entry.'),
+      column('elasticity', 'share', 'Share of the growth rate per share of the entry; they sum to 1.'),
+    ],
+    rows: (entries ?? []).map(({ from, to, value, sensitivity, elasticity }): readonly Cell[] => [
+      ...[from.patch, from.class, to.patch, to.class],
+      ...[value, sensitivity, elasticity],
+    ]),
+  };
+}
+
+function parameterTable({ parameters }: Analysis): Table {
+  return {
+    name: 'sensitivities',
+    columns: [
+      column('parameter', '', 'Name of the parameter.'),
+      column('value', 'as in the model', 'Value that was used.'),
+      column('sensitivity', perYear, 'Growth rate per unit of the parameter.'),
+      column('elasticity', 'share', 'Share of the growth rate per share of the parameter.'),
+    ],
+    rows: (parameters ?? []).map(({ name, value, sensitivity, elasticity }) => [name, value, sensitivity, elasticity]),
+  };
+}
+
+function linkTable({ links }: Analysis): Table {
+  return {
+    name: 'links',
+    columns: [
+      column('phase', '', 'Dispersal by its name.'),
+      column('from', '', 'Patch that is left.'),
+      column('to', '', 'Patch that is reached.'),
+      className,
+      column('share', 'share', 'Of the animals present, those that arrive over the link.'),
+      column('sensitivity', perYear, 'Growth rate per unit of the share, nothing else changed.'),
+      column('instead_of_staying', perYear, 'The same where those who go would otherwise have stayed.'),
+      column('removal_loss', perYear, 'Growth rate lost when those who would have arrived are lost.'),
+      column('exact', '', 'true where that was computed whole, false where it is share times sensitivity.'),
+    ],
+    rows: (links ?? []).map((link): readonly Cell[] => [
+      ...[link.phase, link.from, link.to, link.class],
+      ...[link.share, link.sensitivity, link.sensitivityInsteadOfStaying, link.removalLoss],
+      String(link.exact),
+    ]),
+  };
+}

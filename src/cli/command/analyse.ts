@@ -1,0 +1,26 @@
+// skein analyse: what drives growth, which patches feed the others, and whether the matrix says what was meant.
+import { analyseModel } from '../../analysis/analyse-model.ts';
+import type { AtState } from '../../compile/block-matrix.ts';
+import { analysisText } from '../../report/analysis/analysis-text.ts';
+import { analysisTables } from '../analysis-tables.ts';
+import { Ending, exitCodes } from '../exit.ts';
+import { loadModel } from '../load.ts';
+import { settingsOf, type CommonOptions } from '../options.ts';
+import { openOutFolder } from '../out-folder.ts';
+import { writeOut } from '../output.ts';
+import { terminalOf } from '../terminal.ts';
+
+export interface AnalyseCommandOptions extends CommonOptions {
+  readonly at: AtState;
+  readonly eigenvalues?: boolean;
+}
+
+export function analyseCommand(path: string, options: AnalyseCommandOptions): void {
+  const { compiled } = loadModel(path, settingsOf(options), options.quiet === true);
+  const folder = options.out === undefined ? null : openOutFolder(options.out);
+  const found = analyseModel(compiled, { at: options.at, wantEigenvalues: options.eigenvalues === true });
+  if (found.value === null) throw new Ending(exitCodes.work, `--at ${options.at}: ${found.reason}`);
+  folder?.write(compiled, { results: found.value, tables: analysisTables(found.value) });
+  if (options.json === true) writeOut(`${JSON.stringify(found.value, null, 2)}\n`);
+  else writeOut(analysisText(found.value, terminalOf(process.stdout)));
+}

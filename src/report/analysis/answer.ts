@@ -1,0 +1,45 @@
+// The answer of an analysis in a few sentences, before any table.
+import type { Analysis } from '../../analysis/schema.ts';
+import { change, listed, told } from './words.ts';
+
+const where = {
+  zero: 'With almost nobody there',
+  equilibrium: 'Where numbers stand still',
+  start: 'At the numbers of the start',
+} as const;
+
+export function answerWords(analysis: Analysis): readonly string[] {
+  const { at, growthRate, patches } = analysis;
+  if (growthRate === 0) {
+    return [`${where[at]}, the population dies out: no animal leaves young that come back to breed.`];
+  }
+  const rate = `${where[at]} and in mean years, the population ${change(growthRate)} (growth rate ${told(growthRate)}).`;
+  return [rate, ...depends(analysis), ...(patches === null || patches.length < 2 ? [] : roles(analysis))];
+}
+
+function depends({ parameters }: Analysis): readonly string[] {
+  const largest = [...(parameters ?? [])].sort((a, b) => Math.abs(b.elasticity) - Math.abs(a.elasticity))[0];
+  if (largest === undefined || largest.elasticity === 0) return [];
+  const turn = largest.elasticity > 0 ? 'raises' : 'lowers';
+  return [
+    `Of the named numbers it depends most on ${largest.name}: 1 % more of it ${turn} the growth rate by about ` +
+      `${told(Math.abs(largest.elasticity))} %.`,
+  ];
+}
+
+function roles({ patches, growthRate }: Analysis): readonly string[] {
+  const having = (role: string): readonly string[] =>
+    (patches ?? []).filter((patch) => patch.role === role).map(({ patch }) => patch);
+  const lines = [
+    `Sources, whose animals leave more than one animal each a year later, anywhere: ${listed(having('source'))}.`,
+    `Sinks, which would empty without arrivals: ${listed(having('sink'))}.`,
+  ];
+  const undecided = having('undecided');
+  if (undecided.length > 0) lines.push(`Neither, within rounding: ${listed(undecided)}.`);
+  const dearest = [...(patches ?? [])].sort((a, b) => (b.removalLoss ?? 0) - (a.removalLoss ?? 0))[0];
+  if (dearest?.removalLoss) {
+    const without = growthRate - dearest.removalLoss;
+    lines.push(`The growth rests most on ${dearest.patch}: without it the rest ${change(without)}.`);
+  }
+  return lines;
+}

@@ -1,0 +1,93 @@
+// skein analyse: the answer first, one JSON object of the published form, tables, and the state it is asked for.
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import Ajv from 'ajv/dist/2020.js';
+import { describe, expect, test } from 'vitest';
+import { analysisJsonSchema } from '../../src/analysis/schema.ts';
+import { filesIn, folder, hare, ponds, skein } from './skein.ts';
+
+const fits = new Ajv({ strict: false, allErrors: true }).compile(analysisJsonSchema);
+
+function analysisOf(...words: readonly string[]) {
+  const { code, out, err } = skein(['analyse', ponds, '--json', ...words]);
+  expect({ code, err }).toEqual({ code: 0, err: '' });
+  return JSON.parse(out);
+}
+
+test('text leads with the answer in words, below the title', () => {
+  const { code, out, err } = skein(['analyse', hare]);
+  expect({ code, err }).toEqual({ code: 0, err: '' });
+  const [title, blank, answer] = out.split('\n');
+  expect([title, blank]).toEqual(['Reed hare on the Harrow Levels', '']);
+  expect(answer).toMatch(/^With almost nobody there and in mean years, the population grows by /);
+  expect(out).toMatch(/\nSinks, which would empty without arrivals: Crane pool and Saltmarsh\.\n/);
+});
+
+describe('--json', () => {
+  const found = analysisOf();
+
+  test('is one object of the published form', () => {
+    expect(fits(found), JSON.stringify(fits.errors)).toBe(true);
+    expect(found).toMatchObject({ format: 'skein-analysis/1', at: 'zero', model: 'Newts in two ponds' });
+  });
+
+  test('says why a field is empty, of those fields and no others', () => {
+    const empty = Object.entries(found).flatMap(([field, value]) => (value === null ? [field] : []));
+    expect(Object.keys(found.reasons)).toEqual(expect.arrayContaining(empty));
+  });
+});
+
+describe('--at', () => {
+  test('start and equilibrium are other matrices than zero', () => {
+    const [zero, start, still] = ['zero', 'start', 'equilibrium'].map((at) => analysisOf('--at', at));
+    expect(zero.growthRate).toBeGreaterThan(1.01);
+    expect(start.growthRate).toBeLessThan(zero.growthRate);
+    expect(still.growthRate).toBeCloseTo(1, 8);
+    expect([zero.at, start.at, still.at]).toEqual(['zero', 'start', 'equilibrium']);
+  });
+
+  test('takes no other word', () => {
+    const { code, out, err } = skein(['analyse', ponds, '--at', 'end']);
+    expect({ code, out }).toEqual({ code: 2, out: '' });
+    expect(err).toMatch(/zero, equilibrium, start/);
+  });
+
+  test('where numbers never stand still, that is the reason to fail', () => {
+    const { code, out, err } = skein(['analyse', 'models/share-taken.yaml', '--at', 'equilibrium']);
+    expect({ code, out }).toEqual({ code: 3, out: '' });
+    expect(err).toBe('--at equilibrium: Numbers do not come to stand still from the start of this model.\n');
+  });
+});
+
+test('--eigenvalues lists them all, the growth rate first', () => {
+  const { eigenvalues, growthRate } = analysisOf('--eigenvalues');
+  expect(eigenvalues).toHaveLength(4);
+  expect(eigenvalues[0].re).toBeCloseTo(growthRate, 10);
+  expect(analysisOf().eigenvalues).toBeNull();
+});
+
+test('--set moves the growth rate by the sensitivity', () => {
+  const growth = (litter: number): number => {
+    const { out } = skein(['analyse', hare, '--json', '--set', `litter=${litter}`]);
+    return JSON.parse(out).growthRate;
+  };
+  const { parameters } = JSON.parse(skein(['analyse', hare, '--json']).out);
+  const { sensitivity } = parameters.find((one: { name: string }) => one.name === 'litter');
+  expect((growth(2.501) - growth(2.499)) / 0.002).toBeCloseTo(sensitivity, 6);
+});
+
+test('--out writes a table for each list, with a dictionary of every column', () => {
+  const cwd = folder();
+  expect(skein(['analyse', ponds, '--out', 'here', '--quiet'], { cwd }).code).toBe(0);
+  const tables = ['entries', 'growth', 'links', 'patches', 'states'];
+  expect(filesIn(join(cwd, 'here'))).toEqual(
+    ['dictionary.csv', 'results.json', 'run.json', ...tables.map((name) => `${name}.csv`)].sort(),
+  );
+  const dictionary = readFileSync(join(cwd, 'here/dictionary.csv'), 'utf8');
+  for (const name of tables) {
+    const [head = ''] = readFileSync(join(cwd, `here/${name}.csv`), 'utf8').split('\n');
+    for (const column of head.split(',')) expect(dictionary).toContain(`\n${name},${column},`);
+  }
+  const results = JSON.parse(readFileSync(join(cwd, 'here/results.json'), 'utf8'));
+  expect(fits(results)).toBe(true);
+});
