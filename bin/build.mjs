@@ -29,6 +29,10 @@ function buildKernel() {
   writeFileSync(target, `// Made by npm run build from assembly/.\nexport const kernelBase64 =\n  '${bytes}';\n`);
 }
 
+function writeScript(name, from, content) {
+  writeFileSync(at('build', name), `// Made by npm run build from ${from}.\nexport const ${content};\n`);
+}
+
 async function bundle() {
   const { build } = await import('esbuild');
   const shared = { absWorkingDir: root, bundle: true, format: 'esm', target: 'es2023', logLevel: 'warning' };
@@ -44,11 +48,18 @@ async function bundle() {
       charset: 'utf8',
     });
     const script = readFileSync(at('build', 'page.js'), 'utf8');
-    writeFileSync(
-      at('build', 'page-script.ts'),
-      `// Made by npm run build from src/page/.\nexport const pageScript: string =\n  ${JSON.stringify(script)};\n`,
-    );
+    writeScript('page-script.ts', 'src/page/', `pageScript: string =\n  ${JSON.stringify(script)}`);
   }
+  // The script of a thread goes into the command line and the library as text, so that both find it wherever they are put.
+  const { outputFiles } = await build({
+    ...shared,
+    entryPoints: ['src/threads/worker.ts'],
+    format: 'cjs',
+    platform: 'node',
+    minify: true,
+    write: false,
+  });
+  writeScript('worker-script.ts', 'src/threads/', `workerScript: string =\n  ${JSON.stringify(outputFiles[0].text)}`);
   const node = { ...shared, platform: 'node', packages: 'bundle', minifySyntax: true };
   const banner = {
     js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",

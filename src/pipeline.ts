@@ -5,11 +5,14 @@ import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
 import { runPath } from './kernel/path.ts';
 import { batchesOf } from './kernel/batch.ts';
+import type { Crew } from './kernel/crew.ts';
+import type { BatchCounts } from './kernel/output.ts';
 import { openRunner } from './kernel/run.ts';
 import { buildLandscape } from './landscape/build.ts';
 import { resolveModel } from './model/resolve.ts';
 import { standingCautions } from './results/cautions.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
+import type { Reduction } from './results/reduction/reduction.ts';
 import type { PathResults, RunResults } from './results/results.ts';
 import { openReduction, summarisePath, summariseRun } from './results/summarise.ts';
 import type { Finding } from './spec/finding.ts';
@@ -50,15 +53,61 @@ export interface RunOptions {
   readonly onProgress?: (done: number, of: number) => void;
 }
 
-/** Stochastic replicates of one scenario. */
-export function runModel({ model, image, provenance }: CompiledModel, { onProgress }: RunOptions = {}): RunResults {
-  const { replicates, steps, seed } = model;
-  const run = openRunner(image, { steps, seed });
+export interface CrewOptions extends RunOptions {
+  readonly signal?: AbortSignal;
+}
+
+/** Stochastic replicates of one scenario, in this thread. */
+export function runModel(compiled: CompiledModel, { onProgress }: RunOptions = {}): RunResults {
+  const { model, image } = compiled;
+  const run = openRunner(image, { steps: model.steps, seed: model.seed });
   const reduction = openReduction(model);
-  for (const batch of batchesOf(replicates)) {
+  for (const batch of batchesOf(model.replicates)) {
     reduction.take(run(batch));
-    onProgress?.(batch.first + batch.lanes, replicates);
+    onProgress?.(batch.first + batch.lanes, model.replicates);
   }
+  return summarise(compiled, reduction);
+}
+
+/** What was finished of a run. */
+export interface FinishedRun {
+  /** With as many replicates as were finished. */
+  readonly compiled: CompiledModel;
+  /** Null where not even the first batch was finished. */
+  readonly results: RunResults | null;
+}
+
+/**
+ * The same by a crew, with the same results. Where it is told to stop, what comes back is the run with as many replicates as
+ * were finished, as if only they had been asked for.
+ */
+export async function runModelWith(
+  crew: Crew,
+  compiled: CompiledModel,
+  options: CrewOptions = {},
+): Promise<FinishedRun> {
+  const { model, image } = compiled;
+  const { replicates, steps, seed } = model;
+  const reduction = openReduction(model);
+  const batches = batchesOf(replicates);
+  let told = 0;
+  const take = (batch: BatchCounts): void => {
+    reduction.take(batch);
+    options.onProgress?.((told += batch.lanes), replicates);
+  };
+  const finished = await crew.run({ image, request: { steps, seed }, batches }, take, options);
+  const done = batches.slice(0, finished).reduce((sum, { lanes }) => sum + lanes, 0);
+  const cut = done === replicates ? compiled : withReplicates(compiled, done);
+  return { compiled: cut, results: done === 0 ? null : summarise(cut, reduction) };
+}
+
+function withReplicates(compiled: CompiledModel, replicates: number): CompiledModel {
+  const spec = { ...compiled.spec, run: { ...compiled.spec.run, replicates } };
+  const model = { ...compiled.model, replicates };
+  return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
+}
+
+function summarise({ model, provenance }: CompiledModel, reduction: Reduction): RunResults {
   return summariseRun({ model, reduction, provenance, cautions: standingCautions(model) });
 }
 

@@ -5,7 +5,7 @@ import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
 import { writeError, writeOut } from './output.ts';
 
-type Handler<Options> = (model: string, options: Options) => void;
+type Handler<Options> = (model: string, options: Options) => void | Promise<void>;
 
 function buildProgram(): Command {
   const program = new Command('skein')
@@ -68,7 +68,7 @@ function addRuns(program: Command): void {
   model(program, 'path', 'follow the path without chance, year by year', ['set', 'years', 'json', 'out', 'quiet'])
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
-  const chance = ['set', 'years', 'replicates', 'seed'] as const;
+  const chance = ['set', 'years', 'replicates', 'seed', 'threads'] as const;
   model(program, 'run', 'run the model many times with chance', [...chance, 'json', 'out', 'quiet'])
     .addHelpText('after', '\nExample:\n  skein run models/reed-hare.yaml --replicates 500 --seed 7')
     .action(run(async () => (await import('./command/run.ts')).runCommand));
@@ -86,7 +86,9 @@ function model(program: Command, name: string, what: string, shared: Parameters<
 
 function run<Options>(load: () => Promise<Handler<Options>>) {
   return async (path: string, options: Options): Promise<void> => {
-    (await load())(path, options);
+    await (
+      await load()
+    )(path, options);
   };
 }
 

@@ -7,12 +7,13 @@ export interface CommonOptions {
   readonly years?: number;
   readonly replicates?: number;
   readonly seed?: number;
+  readonly threads?: number;
   readonly json?: boolean;
   readonly out?: string;
   readonly quiet?: boolean;
 }
 
-type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'json' | 'out' | 'quiet';
+type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'threads' | 'json' | 'out' | 'quiet';
 
 const options: Readonly<Record<Shared, () => Option>> = {
   set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
@@ -20,6 +21,8 @@ const options: Readonly<Record<Shared, () => Option>> = {
   replicates: () => new Option('--replicates <n>', 'how often to run the model').argParser(wholeFrom(1, 100_000_000)),
   seed: () =>
     new Option('--seed <n>', 'the number that decides all chance').argParser(wholeFrom(0, Number.MAX_SAFE_INTEGER)),
+  threads: () =>
+    new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),
   out: () => new Option('--out <folder>', 'write tables and what is needed to run again'),
   quiet: () => new Option('--quiet', 'no warnings and no progress'),

@@ -11,7 +11,7 @@ const silentMs = 1000;
 export function showProgress(what: string, quiet: boolean): Progress {
   const live = process.stderr.isTTY;
   const started = performance.now();
-  let [last, shown] = [started, false];
+  let [last, shown] = [-Infinity, false];
   return {
     update: (done, of) => {
       const now = performance.now();

@@ -1,19 +1,17 @@
 // skein report: one page that an agency can read.
 import { pageScript } from '../../../build/page-script.ts';
-import { followPath, runModel } from '../../pipeline.ts';
+import { followPath } from '../../pipeline.ts';
 import { buildReport } from '../../report/report.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { pendingFile } from '../files.ts';
 import { writeError, writeOut } from '../output.ts';
-import { showProgress } from '../progress.ts';
+import { runReplicates } from '../replicates.ts';
 
-export function reportCommand(path: string, options: CommonOptions & { readonly output: string }): void {
-  const { compiled, document } = loadModel(path, settingsOf(options), options.quiet === true);
+export async function reportCommand(path: string, options: CommonOptions & { readonly output: string }): Promise<void> {
+  const { document, ...loaded } = loadModel(path, settingsOf(options), options.quiet === true);
   const file = options.output === '-' ? null : pendingFile(options.output);
-  const progress = showProgress('Replicates', options.quiet === true);
-  const results = runModel(compiled, { onProgress: progress.update });
-  progress.finish();
+  const { compiled, results, cutShort } = await runReplicates(loaded.compiled, options);
   const page = buildReport({
     results,
     path: followPath(compiled),
@@ -21,12 +19,13 @@ export function reportCommand(path: string, options: CommonOptions & { readonly 
     landscape: compiled.landscape,
     coefficients: compiled.coefficients,
     specText: document.text,
-    commandLine: commandLineOf(path, options),
+    commandLine: commandLineOf(path, cutShort === null ? options : { ...options, replicates: results.replicates }),
     pageScript,
   });
   if (file === null) writeOut(page);
   else file.finish(page);
   if (file !== null && options.quiet !== true) writeError(`Wrote ${options.output}\n`);
+  if (cutShort !== null) throw cutShort;
 }
 
 /** As it can be typed again. */

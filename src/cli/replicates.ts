@@ -1,0 +1,84 @@
+// Runs a model with chance for a command: in as many threads as pay, with progress, and with a clean end when told to stop.
+import { availableParallelism } from 'node:os';
+import type { Crew } from '../kernel/crew.ts';
+import { runModelWith, type CompiledModel, type CrewOptions, type FinishedRun } from '../pipeline.ts';
+import type { RunResults } from '../results/results.ts';
+import { alone } from '../threads/alone.ts';
+import { openThreads, ThreadsFailure } from '../threads/threads.ts';
+import { Ending, exitCodes } from './exit.ts';
+import { writeError } from './output.ts';
+import { showProgress } from './progress.ts';
+
+/** Animals of one class in one patch, year and replicate: below so many a run ends before a thread has started. */
+const smallWork = 1e7;
+
+export interface ReplicatesOptions {
+  /** As many as pay where it is not said. */
+  readonly threads?: number;
+  readonly quiet?: boolean;
+}
+
+export interface DoneReplicates {
+  /** With as many replicates as were finished. */
+  readonly compiled: CompiledModel;
+  readonly results: RunResults;
+  readonly threads: number;
+  /** To be thrown once what is finished is written; null where all is. */
+  readonly cutShort: Ending | null;
+}
+
+export async function runReplicates(compiled: CompiledModel, options: ReplicatesOptions): Promise<DoneReplicates> {
+  const threads = options.threads ?? threadsFor(compiled);
+  const progress = showProgress('Replicates', options.quiet === true);
+  const stop = stopSignal();
+  const crew = threads === 1 ? alone : openThreads({ threads, onDeath: tellDeath });
+  try {
+    const done = await attempt(crew, compiled, { onProgress: progress.update, signal: stop.signal });
+    progress.finish();
+    return { ...checked(done, compiled.model.replicates), threads };
+  } finally {
+    stop.close();
+    await crew.close();
+  }
+}
+
+function threadsFor({ model: { replicates, steps, patches, classes } }: CompiledModel): number {
+  return replicates * steps * patches.length * classes.length < smallWork ? 1 : availableParallelism();
+}
+
+async function attempt(crew: Crew, compiled: CompiledModel, options: CrewOptions): Promise<FinishedRun> {
+  try {
+    return await runModelWith(crew, compiled, options);
+  } catch (error) {
+    if (error instanceof ThreadsFailure) throw new Ending(exitCodes.work, error.message);
+    throw error;
+  }
+}
+
+function checked({ compiled, results }: FinishedRun, asked: number): Omit<DoneReplicates, 'threads'> {
+  const done = compiled.model.replicates;
+  const of = asked.toLocaleString('en');
+  if (results === null) throw new Ending(exitCodes.work, `Stopped before the first of ${of} replicates was finished.`);
+  if (done === asked) return { compiled, results, cutShort: null };
+  const words = `Stopped after ${done.toLocaleString('en')} of ${of} replicates; the results are those of \`--replicates ${done}\`.`;
+  return { compiled, results, cutShort: new Ending(exitCodes.work, words) };
+}
+
+/** The first Ctrl-C (or SIGTERM) lets what was begun be finished; the second ends at once. */
+function stopSignal(): { readonly signal: AbortSignal; close(): void } {
+  const controller = new AbortController();
+  const stop = (): void => {
+    controller.abort();
+    close();
+    writeError('\nStopping; what is finished is kept. Once more to end at once.\n');
+  };
+  const close = (): void => {
+    process.off('SIGINT', stop).off('SIGTERM', stop);
+  };
+  process.on('SIGINT', stop).on('SIGTERM', stop);
+  return { signal: controller.signal, close };
+}
+
+function tellDeath(reason: string): void {
+  writeError(`A thread died (${reason}); its replicates are run again.\n`);
+}

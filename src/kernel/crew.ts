@@ -1,0 +1,24 @@
+// Who runs the batches of a job: this thread alone, or several threads. The batches that were finished are the same.
+import type { Batch, RunRequest } from './batch.ts';
+import type { BatchCounts } from './output.ts';
+
+export interface Job {
+  readonly image: ArrayBuffer;
+  readonly request: RunRequest;
+  /** Begun in this order. */
+  readonly batches: readonly Batch[];
+}
+
+export interface JobOptions {
+  /** Once it is aborted no further batch is begun; those that were begun are finished. */
+  readonly signal?: AbortSignal;
+}
+
+export interface Crew {
+  /**
+   * `take` is given every batch when it is finished, in any order. Resolves to the number of batches that were finished:
+   * always the first ones.
+   */
+  run(job: Job, take: (batch: BatchCounts) => void, options?: JobOptions): Promise<number>;
+  close(): Promise<void>;
+}
