@@ -11,8 +11,11 @@ export {
   compileSpec,
   followPath,
   runModel,
+  runModelWith,
   type Compilation,
   type CompiledModel,
+  type CrewOptions,
+  type FinishedRun,
   type RunOptions,
 } from './pipeline.ts';
 export { buildBlock } from './compile/block.ts';
@@ -20,4 +23,7 @@ export type { BlockMatrix } from './compile/block-matrix.ts';
 export { leading, type Leading } from './numeric/leading.ts';
 export type { SparseMatrix } from './numeric/sparse.ts';
 export type { PathResults, RunResults } from './results/results.ts';
+export type { Crew, Job, JobOptions } from './kernel/crew.ts';
+export { alone } from './threads/alone.ts';
+export { openThreads, type ThreadsOptions } from './threads/threads.ts';
 export { buildReport, type ReportInput } from './report/report.ts';
