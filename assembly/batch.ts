@@ -2,7 +2,7 @@
 // An array [..][lane] has the sixteen lanes of one number next to each other.
 import { i32At, putU32 } from './arrays';
 import { classes, columns, entries, header, patches, section, slots, ways } from './image';
-import { faultNone, headerStart, lanes } from './layout';
+import { faultNone, headerStart, headerWeather, headerWork, lanes } from './layout';
 import { reserve } from './memory';
 
 /** i32 [patch][class][lane] */
@@ -11,6 +11,10 @@ export let animals: usize = 0;
 export let arrivals: usize = 0;
 /** f64 [slot][patch][lane]: what conditions multiply rates by */
 export let slotValues: usize = 0;
+/** f64 [number][lane]: what lasts from year to year beside the animals, such as weather that is carried over, and waits */
+export let weather: usize = 0;
+/** f64 [number][lane]: for the year program */
+export let work: usize = 0;
 /** f64 [column][lane]: what was counted last */
 export let observed: usize = 0;
 /** f64 [way]: animals that arrived over each way, all classes and lanes together, since `start` */
@@ -41,11 +45,17 @@ export function stateBytes(): usize {
   return <usize>patches * rowBytes();
 }
 
+export function weatherBytes(): usize {
+  return <usize>header(headerWeather) * laneNumbers;
+}
+
 /** False where the memory is too small for a batch. */
 export function reserveBatch(): bool {
   animals = reserve(stateBytes());
   arrivals = reserve(stateBytes());
   slotValues = reserve(<usize>slots * patches * laneNumbers);
+  weather = reserve(weatherBytes());
+  work = reserve(<usize>header(headerWork) * laneNumbers);
   observed = reserve(<usize>columns * laneNumbers);
   moved = reserve((<usize>ways) << 3);
   const small = reserve(1024);
@@ -57,7 +67,8 @@ export function reserveBatch(): bool {
   moreNumbers = small + 768;
   counts = small + 896;
   moreCounts = small + 960;
-  return animals !== 0 && arrivals !== 0 && slotValues !== 0 && observed !== 0 && moved !== 0 && small !== 0;
+  const states = animals !== 0 && arrivals !== 0 && slotValues !== 0 && weather !== 0 && work !== 0;
+  return states && observed !== 0 && moved !== 0 && small !== 0;
 }
 
 /** Puts the starting animals into the first `count` lanes and none into the others. */
@@ -71,6 +82,7 @@ export function fillBatch(count: i32): void {
   memory.fill(stops, 0, 192);
   memory.fill(moved, 0, (<usize>ways) << 3);
   memory.fill(slotValues, 0, <usize>slots * patches * laneNumbers);
+  memory.fill(weather, 0, weatherBytes());
   anyStopped = false;
 }
 

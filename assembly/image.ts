@@ -76,7 +76,7 @@ function firstFault(size: i32): i32 {
   if (header(layout.headerSize) !== size || rows < 0 || rows > room) return fault(layout.faultSize, size);
   for (let row = 0; row < rows; row++) {
     const kind = directory(row, layout.rowKind);
-    if (kind < 1 || kind > layout.highestKind) return fault(layout.faultKind, kind);
+    if (!isKind(kind)) return fault(layout.faultKind, kind);
     if (!fits(row, size)) return fault(layout.faultSize, size);
   }
   for (let word = layout.headerYearProgram; word <= layout.headerStart; word++) {
@@ -86,6 +86,16 @@ function firstFault(size: i32): i32 {
   if (inYear !== 0) return fault(layout.faultOpcode, inYear);
   const inPhases = firstUnknown(header(layout.headerPhaseProgram));
   return inPhases !== 0 ? fault(layout.faultOpcode, inPhases) : layout.faultNone;
+}
+
+function isKind(kind: i32): bool {
+  if (kind >= layout.firstChanceKind && kind <= layout.lastChanceKind) return true;
+  return kind >= 1 && kind <= layout.highestKind;
+}
+
+function isOpcode(opcode: i32): bool {
+  if (opcode >= layout.opVariation && opcode <= layout.opCatastrophe) return true;
+  return (opcode >= layout.opBreeding && opcode <= layout.opCrowding) || opcode === layout.opCount;
 }
 
 /** Whether a section stands within the image, on its alignment. */
@@ -101,7 +111,7 @@ function firstUnknown(program: i32): i32 {
   const end = section(program) + ((<usize>entries(program)) << 2);
   for (let record = section(program); record < end; record += layout.recordBytes) {
     const opcode = operand(record, layout.recordOpcode);
-    if ((opcode < layout.opBreeding || opcode > layout.opCrowding) && opcode !== layout.opCount) return opcode;
+    if (!isOpcode(opcode)) return opcode;
   }
   return 0;
 }

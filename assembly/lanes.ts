@@ -2,8 +2,8 @@
 import { f64At, putF64, putU32, u32At } from './arrays';
 import * as batch from './batch';
 import { setSeed } from './draws/philox';
-import { faultDetail, openImage, patches, slots } from './image';
-import { faultMemory, faultNone, lanes } from './layout';
+import { faultDetail, header, openImage, patches, slots } from './image';
+import { faultMemory, faultNone, headerWeather, lanes } from './layout';
 import { reservePath } from './path/state';
 import { advance, countStart } from './program';
 
@@ -53,10 +53,10 @@ export function animals(): usize {
 
 /** Bytes of one lane's whole state, as `saveLane` writes it. */
 export function laneBytes(): i32 {
-  return 24 + i32(batch.stateBytes() / 16) + slots * patches * 8;
+  return 24 + i32(batch.stateBytes() / 16) + (slots * patches + header(headerWeather)) * 8;
 }
 
-/** Replicate number, stop (three words), step, animals, then what conditions hold. */
+/** Replicate number, stop (three words), step, animals, then what conditions hold, then the weather. */
 export function saveLane(lane: i32, target: usize): void {
   store<u32>(target, u32At(batch.replicates, lane));
   memory.copy(target + 4, batch.stops + <usize>lane * 12, 12);
@@ -68,6 +68,10 @@ export function saveLane(lane: i32, target: usize): void {
   }
   for (let slot: usize = 0; slot < <usize>(slots * patches); slot++) {
     store<f64>(at, f64At(batch.slotValues + slot * batch.laneNumbers, lane));
+    at += 8;
+  }
+  for (let number: usize = 0; number < batch.weatherBytes(); number += batch.laneNumbers) {
+    store<f64>(at, f64At(batch.weather + number, lane));
     at += 8;
   }
 }
@@ -84,6 +88,10 @@ export function restoreLane(lane: i32, source: usize): bool {
   }
   for (let slot: usize = 0; slot < <usize>(slots * patches); slot++) {
     putF64(batch.slotValues + slot * batch.laneNumbers, lane, load<f64>(at));
+    at += 8;
+  }
+  for (let number: usize = 0; number < batch.weatherBytes(); number += batch.laneNumbers) {
+    putF64(batch.weather + number, lane, load<f64>(at));
     at += 8;
   }
   return true;

@@ -29,6 +29,10 @@ export const headerStart = 13;
 export const headerColumns = 14;
 /** Ways of all dispersals together. */
 export const headerWays = 15;
+/** Numbers (f64) of each replicate that last from year to year beside its animals: weather and waits. */
+export const headerWeather = 16;
+/** Numbers (f64) of each replicate that the year program needs for work. */
+export const headerWork = 17;
 
 // Directory: one row of eight i32 a section, after the header. Rows are named by their index; none is -1.
 export const rowWords = 8;
@@ -80,6 +84,24 @@ export const kindNames = 26; // u8, JSON for printers; the kernel does not read 
 
 export const highestKind = 26;
 
+// 40-59 belong to chance. A factor is a matrix whose rows mix independent normals: starts, columns and weights stand in
+// three rows of the directory, one after the other, and are named by the first.
+export const kindColumnKeys = 40; // i32, one a column of a factor: hash of what its independent normals belong to
+export const kindFactorStart = 41; // i32, rows + 1
+export const kindFactorColumn = 42; // i32, one an entry
+export const kindFactorWeight = 43; // f64, one an entry
+export const kindCarry = 44; // f64: autocorrelation φ, and √(1 − φ²)
+export const kindQuantities = 45; // i32, records of quantityWords
+export const kindDistributions = 46; // f64, epochs × P × distributionNumbers
+export const kindQuantileTables = 47; // f64, value and slope a node
+export const kindExpression = 48; // i32, pairs: instruction and operand
+export const kindConstants = 49; // f64
+export const kindStrike = 50; // f64, strikeNumbers
+export const kindPatchList = 51; // i32
+export const kindSlotNumbers = 52; // f64, one a slot, or slots × P
+export const firstChanceKind = 40;
+export const lastChanceKind = 52;
+
 // Sections of one movement, as words of a movement row.
 export const movementWords = 6;
 export const movementStart = 0;
@@ -124,6 +146,7 @@ export const dispersalMoves = 3; // class mask
 export const dispersalLeaving = 4; // rates
 export const dispersalMovement = 5; // movement
 export const dispersalWays = 6; // a number: ways of the dispersals before this one
+export const dispersalSlots = 7; // slot lists
 export const opCeiling = 6;
 export const ceilingCounted = 3; // class mask
 export const ceilingCapacity = 4; // patch numbers
@@ -139,6 +162,87 @@ export const crowdingSlot = 7; // a slot, not a row
 export const crowdingShape = 8; // patch numbers, one: the shape number s of a form that has one
 
 // 32-63 belong to chance, 64-95 to plans, 96-127 to counts and outcomes.
+export const opVariation = 32;
+export const variationPatchColumns = 3; // column keys
+export const variationPatchFactor = 4; // factor with P rows
+export const variationRateColumns = 5; // column keys
+export const variationRateFactor = 6; // factor with a row a quantity
+export const variationCarry = 7;
+export const variationQuantities = 8;
+export const variationTables = 9; // quantile tables
+export const variationWeather = 10; // a number: the first of its numbers in the weather, column by column
+export const opResponse = 33;
+export const responseExpression = 3;
+export const responseConstants = 4;
+export const responseAttributes = 5; // constants, attributes × P
+export const responseYears = 6; // constants, the calendar year of each step
+export const responseBase = 7; // patch numbers, epochs × P: the value at the means; 0 where the rate is no such expression
+export const responseSlot = 8; // a slot, not a row
+export const responseBounds = 9; // a number: one of the bounds below
+export const responsePatches = 10; // patch list
+export const opCatastrophe = 34;
+export const strikeChance = 3; // strike numbers
+export const strikeOrigins = 4; // patch list
+export const strikeReach = 5; // starts by origin, then in the next row the patches hit; none for everywhere
+export const strikeSlots = 6; // slots (patch list without patches: i32)
+export const strikeValues = 7; // f64, one a slot: its value where the catastrophe is on
+export const strikeMeans = 8; // f64, slots × P: its mean over the years
+export const strikeWeather = 9; // a number: the first of its numbers in the weather
+export const strikeOver = 10; // a number: one of those below
+export const strikeColumn = 11; // column keys: one, for the landscape
+export const strikeCapacitySlots = 12; // a number: so many of the last slots hold as long as the capacity is lowered
+
+export const strikeNumbers = 4;
+export const strikeNumberChance = 0;
+export const strikeNumberLasts = 1; // steps
+export const strikeNumberWait = 2; // steps from one start to the next, at least
+export const strikeNumberCapacity = 3; // steps
+export const overPatches = 0;
+export const overLandscape = 1;
+
+export const quantityWords = 2;
+export const quantitySlot = 0;
+export const quantityDistributions = 1;
+
+export const distributionNumbers = 4; // form, a, b, scale
+export const distributionConstant = 0; // scale
+export const distributionLognormal = 1; // scale · exp(a + b z)
+export const distributionLogit = 2; // scale / (1 + exp(−a − b z))
+export const distributionShareTable = 3; // scale · table from node a, b nodes a unit of z, held to 0 … 1
+export const distributionPositiveTable = 4; // the same, held to 0 and above
+/** Quantile tables reach from −tableReach to tableReach. */
+export const tableReach = 9;
+
+export const boundsShare = 1;
+export const boundsPositive = 2;
+
+// Instructions of an expression, on a stack of numbers a lane. Truths are 1 and 0.
+export const doConstant = 1; // operand: which
+export const doSlot = 2; // operand: slot
+export const doAttribute = 3; // operand: which
+export const doYear = 4;
+export const doAdd = 5;
+export const doSubtract = 6;
+export const doMultiply = 7;
+export const doDivide = 8;
+export const doPower = 9;
+export const doNegate = 10;
+export const doMinimum = 11;
+export const doMaximum = 12;
+export const doExp = 13;
+export const doLog = 14;
+export const doSqrt = 15;
+export const doLess = 16;
+export const doAtMost = 17;
+export const doEqual = 18;
+export const doAnd = 19;
+export const doOr = 20;
+export const doNot = 21;
+/** Of condition, then and otherwise, in this order on the stack. */
+export const doChoose = 22;
+/** Numbers that an expression may have on its stack. */
+export const deepestStack = 64;
+
 export const opCount = 96;
 export const countOutcomeWeights = 3;
 export const countOutcomePatches = 4;
@@ -164,6 +268,9 @@ export const useTravel = 8;
 export const useSpread = 9;
 export const useCapacity = 10;
 export const useRemove = 11;
+export const useWeather = 32;
+export const useStrike = 33;
+export const useOrigin = 34;
 
 // Fault codes. 1-31: the image cannot be opened. 32-63: a replicate was stopped.
 export const faultNone = 0;

@@ -10,6 +10,9 @@ import { readCrowding } from './phases/crowding';
 import { liveYear } from './phases/demography';
 import { disperse } from './phases/dispersal';
 import { survive } from './phases/survival';
+import { strike } from './weather/catastrophe';
+import { respond } from './weather/response';
+import { vary } from './weather/variation';
 
 /** From one count to the next. */
 export function advance(): void {
@@ -59,6 +62,15 @@ function runRecord(record: usize): void {
       break;
     case layout.opCrowding:
       readCrowding(record);
+      break;
+    case layout.opVariation:
+      vary(record);
+      break;
+    case layout.opResponse:
+      respond(record);
+      break;
+    case layout.opCatastrophe:
+      strike(record);
       break;
     case layout.opCount:
       count(record);

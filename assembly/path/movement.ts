@@ -2,18 +2,19 @@
 import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
-import { add, animals, animalsIn, arrivals, moved, stateBytes, step } from './state';
+import { add, animals, animalsIn, arrivals, moved, scaleOf, stateBytes, step } from './state';
 
 export function meanDispersal(record: usize): void {
   const moves = section(operand(record, layout.dispersalMoves));
   const table = sectionAt(operand(record, layout.dispersalLeaving), step);
   const movement = sectionAt(operand(record, layout.dispersalMovement), step);
+  const lists = section(operand(record, layout.dispersalSlots));
   movedHere = moved + ((<usize>operand(record, layout.dispersalWays)) << 3);
   memory.fill(arrivals, 0, stateBytes());
   for (let patch = 0; patch < patches; patch++) {
     for (let c = 0; c < classes; c++) {
       if (i32At(moves, c) === 0) continue;
-      const leavers = animalsIn(patch, c) * f64At(table, patch * classes + c);
+      const leavers = animalsIn(patch, c) * f64At(table, patch * classes + c) * scaleOf(lists, c, patch);
       if (leavers === 0) continue;
       add(animals, patch, c, -leavers);
       send(movement, patch, c, leavers);

@@ -3,6 +3,7 @@ import { entries, header, operand, section } from '../image';
 import * as layout from '../layout';
 import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, meanSurvival } from './maps';
 import { meanDispersal } from './movement';
+import { meanCatastrophe, meanResponse, meanVariation } from './weather';
 import { animals, fillPath, moved, setStep, step } from './state';
 
 /** Puts the start into the path. */
@@ -54,6 +55,15 @@ function runRecord(record: usize): void {
       break;
     case layout.opCrowding:
       meanCrowding(record);
+      break;
+    case layout.opVariation:
+      meanVariation(record);
+      break;
+    case layout.opResponse:
+      meanResponse(record);
+      break;
+    case layout.opCatastrophe:
+      meanCatastrophe(record);
       break;
   }
 }

@@ -54,7 +54,7 @@ function leavePatch(record: usize, patch: i32, moves: usize): void {
     const cell = row + <usize>c * batch.cellBytes;
     if (i32At(moves, c) === 0 || share === 0 || !occupied(cell, batch.cellBytes)) continue;
     const classKey = u32At(classKeys, c);
-    scaledRates(batch.rates, share, 0, c, patch);
+    scaledRates(batch.rates, share, section(operand(record, layout.dispersalSlots)), c, patch);
     drawCell(batch.counts, cell, streamOf(classKey, layout.useLeave));
     subtractCell(cell, batch.counts);
     sendAll(patch, c, streamOf(classKey, layout.useTravel), streamOf(classKey, layout.useSpread));

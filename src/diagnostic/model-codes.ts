@@ -45,6 +45,16 @@ export const modelCodes = {
   'capacity-unreachable': 'No strength of crowding makes a patch stand still at its capacity.',
   'uncounted-capacity': 'The crowding counts nobody at its place in the year.',
 
+  // Chance
+  'nothing-varies': 'Variation is asked for, but nothing varies.',
+  'unknown-varied': 'A correlation is of a name that does not vary.',
+  'impossible-variation': 'No distribution has this mean and this SD.',
+  'varied-twice': 'A rate varies by itself and through a parameter.',
+  'varies-elsewhere': 'A parameter that varies stands where numbers cannot vary.',
+  'missing-correlation': 'It is not said how alike the years are in different patches.',
+  'impossible-correlation': 'Numbers cannot be correlated like this.',
+  'repaired-correlation': 'A table of correlations was moved to the nearest possible one.',
+
   // Start and outcomes
   'start-empty-class': 'The start has animals of a class that is always empty at the count.',
   'start-needs-spread': 'A stable spread does not exist here.',

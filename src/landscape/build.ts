@@ -4,6 +4,7 @@ import type { DispersalPhase, Model } from '../model/model.ts';
 import { kernelMovement } from './kernel-movement.ts';
 import type { Landscape, Movement } from './landscape.ts';
 import { sharesMovement } from './shares-movement.ts';
+import { patchCorrelation } from './weather.ts';
 
 export interface BuiltLandscape {
   readonly landscape: Landscape;
@@ -15,7 +16,8 @@ export function buildLandscape(model: Model): BuiltLandscape {
   const movements = model.phases.map((phase) =>
     phase.kind === 'dispersal' ? movementOf(model, phase, findings) : null,
   );
-  return { landscape: { movements }, findings };
+  const weather = patchCorrelation(model, model.variation, findings);
+  return { landscape: { movements, ...(weather === null ? {} : { weather }) }, findings };
 }
 
 function movementOf(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {

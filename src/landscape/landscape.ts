@@ -1,4 +1,5 @@
-// For each dispersal, where those that leave a patch end.
+// For each dispersal, where those that leave a patch end; and how alike the years are in different patches.
+import type { Correlation } from '../model/chance.ts';
 
 /**
  * Where leavers of a patch end, by origin: destinations[start[p]] to destinations[start[p + 1]] in ascending order, with
@@ -15,4 +16,6 @@ export interface Movement {
 export interface Landscape {
   /** One movement for each phase of kind `dispersal`, by the index of the phase; null elsewhere. */
   readonly movements: readonly (Movement | null)[];
+  /** Correlation of the years between patches, where rates vary. */
+  readonly weather?: Correlation;
 }

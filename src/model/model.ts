@@ -1,5 +1,6 @@
 // A model with every name resolved, every default filled and one unit system (km, km², steps): what the compiler reads.
 // Patches stand in the order of their names, classes in the order of the spec. Index p is a patch, c a class.
+import type { Variation } from './chance.ts';
 import type { DispersalKernel } from './kernel-shape.ts';
 
 export interface Patch {
@@ -17,6 +18,14 @@ export interface RateTable {
   readonly epochs: readonly Float64Array[];
   /** Index into `epochs` for step t (1-based) at t - 1; empty where there is one epoch. */
   readonly epochOf: Int32Array;
+  /** For each number of a table what it was written as, where that is an expression. */
+  readonly written?: readonly (WrittenNumber | null)[];
+}
+
+export interface WrittenNumber {
+  readonly expression: number | string;
+  readonly path: readonly (string | number)[];
+  readonly what: string;
 }
 
 /** One C×C matrix a patch, at p * C * C + to * C + from. */
@@ -158,6 +167,8 @@ export interface Model {
   /** The year as its author wrote it. */
   readonly year: readonly string[];
   readonly crowding: readonly Crowding[];
+  /** Null where no rate varies from year to year. */
+  readonly variation: Variation | null;
   /** Whole animals, P×C. */
   readonly start: StartRule;
   readonly outcomes: readonly OutcomeRule[];

@@ -5,6 +5,7 @@ import type { SpecPath } from '../spec/document.ts';
 import type { Ast } from '../spec/expression/ast.ts';
 import { evaluate, type Fault } from '../spec/expression/evaluate.ts';
 import { namesIn } from '../spec/expression/names.ts';
+import { replaceNames } from '../spec/expression/replace.ts';
 import type { Finding } from '../spec/finding.ts';
 import { readMeasure, type Dimension } from '../spec/quantity.ts';
 
@@ -24,6 +25,11 @@ export interface NamedExpression {
   readonly path: SpecPath;
 }
 
+export interface Use {
+  readonly expression: string;
+  readonly path: SpecPath;
+}
+
 /** Evaluates expressions and tells each mistake once, however many patches and years meet it. */
 export class Numbers {
   readonly #parameters = new Map<string, { readonly ast: Ast; readonly path: SpecPath }>();
@@ -31,6 +37,7 @@ export class Numbers {
   readonly #told = new Set<string>();
   readonly #findings: Finding[];
   readonly #attributeNames: ReadonlySet<string>;
+  readonly #uses = new Map<string, Use>();
   #year = NaN;
   #memo = new Map<string, number | undefined>();
 
@@ -47,6 +54,7 @@ export class Numbers {
   /** The value, or NaN after telling why there is none. */
   value(expression: number | string, path: SpecPath, where: Where): number {
     if (typeof expression === 'number') return expression;
+    this.#uses.set(path.join('\0'), { expression, path });
     const ast = this.#parse(expression, path, where.dimension);
     if (ast === null) return NaN;
     const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
@@ -59,6 +67,27 @@ export class Numbers {
   varies(expression: number | string, path: SpecPath, dimension?: Dimension): boolean {
     const ast = this.#parse(expression, path, dimension);
     return ast !== null && this.#namesBehind(ast).has('year');
+  }
+
+  /** Every place where an expression was asked for its value. */
+  uses(): readonly Use[] {
+    return [...this.#uses.values()];
+  }
+
+  /** All names that the value rests on, those behind its parameters included. */
+  behind(expression: string, path: SpecPath): readonly string[] {
+    const ast = this.#parse(expression, path);
+    return ast === null ? [] : [...this.#namesBehind(ast)];
+  }
+
+  /** The expression with every parameter but those kept replaced by what it stands for; null where it cannot be read. */
+  expanded(expression: number | string, path: SpecPath, keep: ReadonlySet<string>): Ast | null {
+    const ast = this.#parse(expression, path);
+    const replace = (name: string): Ast | null => {
+      const parameter = keep.has(name) ? undefined : this.#parameters.get(name);
+      return parameter === undefined ? null : replaceNames(parameter.ast, replace);
+    };
+    return ast === null ? null : replaceNames(ast, replace);
   }
 
   #parse(expression: number | string, path: SpecPath, dimension: Dimension = 'share'): Ast | null {

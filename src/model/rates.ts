@@ -35,7 +35,18 @@ export function buildTable(context: Context, request: TableRequest): RateTable {
     if (last === undefined || !sameNumbers(last, table)) epochs.push(table);
     if (varies) epochOf[t] = epochs.length - 1;
   });
-  return epochs.length === 1 ? { epochs, epochOf: new Int32Array(0) } : { epochs, epochOf };
+  return { epochs, epochOf: epochs.length === 1 ? new Int32Array(0) : epochOf, ...writtenOf(context, request) };
+}
+
+/** Kept where any number is an expression: parameters that vary are looked for there. */
+function writtenOf(context: Context, { size, written }: TableRequest): Pick<RateTable, 'written'> {
+  const all = context.patches.flatMap((_, p) =>
+    Array.from({ length: size }, (_unused, i) => {
+      const own = written(p, i);
+      return typeof own?.expression === 'string' ? own : null;
+    }),
+  );
+  return all.every((one) => one === null) ? {} : { written: all };
 }
 
 /** The scope of a patch in a year. */

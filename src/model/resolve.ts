@@ -10,6 +10,7 @@ import { checkNames, namedExpressions, resolveParameters } from './parameters.ts
 import { resolvePatches } from './patches.ts';
 import { resolvePhases } from './phases.ts';
 import { resolveStart } from './start.ts';
+import { resolveVariation } from './variation/resolve.ts';
 
 export interface Resolved {
   /** Null where a mistake stands in the way. */
@@ -29,6 +30,7 @@ export function resolveModel(spec: Spec): Resolved {
     parameters: resolveParameters(context),
     phases,
     crowding: resolveCrowding(context, phases),
+    variation: resolveVariation(context, phases),
     start: resolveStart(context),
     outcomes: resolveOutcomes(context),
     ...runSettings(context),

@@ -2,6 +2,7 @@
 import { buildImage } from '../../src/compile/image/build.ts';
 import type { CrowdingCoefficients } from '../../src/compile/coefficients.ts';
 import type { Movement } from '../../src/landscape/landscape.ts';
+import type { Variation } from '../../src/model/chance.ts';
 import type { Crowding, Model, OutcomeRule, Phase, RateTable } from '../../src/model/model.ts';
 
 export interface Sketch {
@@ -14,6 +15,7 @@ export interface Sketch {
   readonly crowding?: readonly Crowding[];
   readonly coefficients?: readonly CrowdingCoefficients[];
   readonly outcomes?: readonly OutcomeRule[];
+  readonly variation?: Variation;
   readonly steps?: number;
 }
 
@@ -36,6 +38,7 @@ export function modelOf(sketch: Sketch): Model {
     phases: [...sketch.phases, { kind: 'count', name: 'count' }],
     year: [],
     crowding: sketch.crowding ?? [],
+    variation: sketch.variation ?? null,
     start: { by: 'table', animals: Float64Array.from(sketch.start) },
     outcomes: sketch.outcomes ?? [],
     replicates: 1000,

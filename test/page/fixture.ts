@@ -105,6 +105,7 @@ function fixtureModel(choice: FixtureChoice): Model {
       { name: 'count', kind: 'count' },
     ],
     year: ['count', 'breeding', 'survival', 'natal', 'ageing'],
+    variation: null,
     crowding: [],
     start: { by: 'total', total: 420, spread: 'stable within patch' },
     outcomes: [

@@ -7,6 +7,8 @@ import { readingPhase } from '../multipliers.ts';
 import { crowdingRecord } from './crowding.ts';
 import { keysOfNames } from './keys.ts';
 import { phaseRecord } from './phases.ts';
+import { planSlots } from '../weather/slots.ts';
+import { variationRecords } from './variation.ts';
 import { plain, type Section, SectionList } from './section.ts';
 
 export interface ImageInput {
@@ -30,6 +32,7 @@ export interface ImageNames {
 export function buildImage(input: ImageInput): ArrayBuffer {
   const { model } = input;
   const list = new SectionList();
+  const slots = planSlots(model);
   const header = new Map<number, number>([
     [layout.headerMagic, layout.imageMagic],
     [layout.headerMajor, layout.imageMajor],
@@ -37,7 +40,7 @@ export function buildImage(input: ImageInput): ArrayBuffer {
     [layout.headerPatches, model.patches.length],
     [layout.headerClasses, model.classes.length],
     [layout.headerSteps, model.steps],
-    [layout.headerSlots, model.crowding.length],
+    [layout.headerSlots, slots.count],
     [layout.headerColumns, 1 + model.patches.length + model.outcomes.length],
     [layout.headerWays, waysBefore(input.landscape, model.phases.length)],
   ]);
@@ -46,7 +49,10 @@ export function buildImage(input: ImageInput): ArrayBuffer {
   header.set(layout.headerClassKeys, list.add(keySection(layout.kindClassKeys, 'class', names.classes)));
   const start = Int32Array.from(input.startAnimals);
   header.set(layout.headerStart, list.add(plain(layout.kindStartAnimals, start, 'start')));
-  header.set(layout.headerYearProgram, list.add(programSection(layout.kindYearProgram, [])));
+  const weather = variationRecords({ list, model, landscape: input.landscape, slots, weather: 0 });
+  header.set(layout.headerWeather, weather.weather);
+  header.set(layout.headerWork, weather.work);
+  header.set(layout.headerYearProgram, list.add(programSection(layout.kindYearProgram, weather.records)));
   header.set(layout.headerPhaseProgram, list.add(programSection(layout.kindPhaseProgram, phaseProgram(list, input))));
   list.add(plain(layout.kindNames, new TextEncoder().encode(JSON.stringify(names)), 'names'));
   return pack(header, list.sections);

@@ -2,7 +2,7 @@
 import * as layout from '../../../assembly/layout.ts';
 import type { Movement } from '../../landscape/landscape.ts';
 import type * as M from '../../model/model.ts';
-import { addSlotLists } from './crowding.ts';
+import { addSlotLists } from './slot-lists.ts';
 import { addMovement } from './movement.ts';
 import { record } from './record.ts';
 import { plain, type SectionList } from './section.ts';
@@ -98,13 +98,15 @@ function demographyRecord(phase: M.DemographyPhase, { list, model, index, key }:
   ]);
 }
 
-function dispersalRecord(phase: M.DispersalPhase, { list, index, key, movement, waysBefore }: PhasePlace): Int32Array {
+function dispersalRecord(phase: M.DispersalPhase, place: PhasePlace): Int32Array {
+  const { list, model, index, key, movement, waysBefore } = place;
   if (movement === null) throw new Error(`The landscape has no movement for the phase ${phase.name}.`);
   return record(layout.opDispersal, key, index, [
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.moves), `classes of ${phase.name}`)),
     addTable(list, layout.kindRates, phase.leaving, `leaving of ${phase.name}`),
     addMovement(list, movement, `movement of ${phase.name}`),
     waysBefore,
+    addSlotLists(list, model, index, 'leaving'),
   ]);
 }
 

@@ -28,6 +28,19 @@ const kinds: readonly (readonly [number, string])[] = [
   [layout.kindOutcomeWeights, 'outcome weights'],
   [layout.kindOutcomePatches, 'outcome patches'],
   [layout.kindNames, 'names'],
+  [layout.kindColumnKeys, 'column keys'],
+  [layout.kindFactorStart, 'factor start'],
+  [layout.kindFactorColumn, 'factor column'],
+  [layout.kindFactorWeight, 'factor weight'],
+  [layout.kindCarry, 'carried over'],
+  [layout.kindQuantities, 'quantities'],
+  [layout.kindDistributions, 'distributions'],
+  [layout.kindQuantileTables, 'quantile tables'],
+  [layout.kindExpression, 'expression'],
+  [layout.kindConstants, 'constants'],
+  [layout.kindStrike, 'strike'],
+  [layout.kindPatchList, 'patch list'],
+  [layout.kindSlotNumbers, 'slot numbers'],
 ];
 
 /** For each opcode its word, then the words of its operands in order. */
@@ -36,9 +49,27 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
   [layout.opSurvival, ['survival', 'rates', 'slots']],
   [layout.opAgeing, ['ageing', 'advance', 'next']],
   [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],
-  [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before']],
+  [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before', 'slots']],
   [layout.opCeiling, ['ceiling', 'counted', 'capacity', 'takes']],
   [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number', 'shape']],
+  [
+    layout.opVariation,
+    [
+      'variation',
+      'patch columns',
+      'patch factor',
+      'rate columns',
+      'rate factor',
+      'carry',
+      'quantities',
+      'tables',
+      'weather',
+    ],
+  ],
+  [
+    layout.opResponse,
+    ['response', 'expression', 'constants', 'attributes', 'years', 'base', 'slot number', 'bounds', 'patches'],
+  ],
   [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
 ];
 

@@ -6,6 +6,7 @@ import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import { Study } from './study.ts';
 import { Name } from './values.ts';
+import { type Varied, Variation } from './variation.ts';
 
 /** The keys that the language knows. What a study names itself stands beside them, each with a `kind`. */
 export const CoreSchema = Type.Object(
@@ -70,6 +71,7 @@ export const CoreSchema = Type.Object(
       examples: ['[count, breeding, survival, natal, ageing]'],
     }),
     crowding: Type.Optional(Crowding),
+    variation: Type.Optional(Variation),
     start: Start,
     outcomes: Type.Optional(Outcomes),
     run: Type.Optional(Run),
@@ -89,6 +91,7 @@ export type DispersalSpec = Static<typeof Dispersal>;
 export type CeilingSpec = Static<typeof Ceiling>;
 export type CrowdingSpec = Static<typeof Crowding>;
 export type OutcomeSpec = Static<typeof Outcome>;
+export type VariedSpec = Static<typeof Varied>;
 export type SurvivalSpec = Static<typeof NamedSurvival>;
 export type BreedingSpec = Static<typeof NamedBreeding>;
 export type NamedCrowdingSpec = Static<typeof NamedCrowding>;

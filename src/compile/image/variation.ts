@@ -1,0 +1,204 @@
+// Year-to-year variation in the image: the records of the year program and the sections that they name.
+import * as layout from '../../../assembly/layout.ts';
+import type { Landscape } from '../../landscape/landscape.ts';
+import type { Response, Varied, Variation } from '../../model/chance.ts';
+import type { Model } from '../../model/model.ts';
+import { distributionOf, type Distribution } from '../../model/variation/distribution.ts';
+import { betaTable, gammaTable, type QuantileTable } from '../../numeric/chance/quantile-table.ts';
+import { factorOf, type Factor } from '../weather/factor.ts';
+import type { SlotPlan } from '../weather/slots.ts';
+import { instructionsOf } from './expression.ts';
+import { keyOfName, keysOfNames } from './keys.ts';
+import { record } from './record.ts';
+import { plain, type SectionList } from './section.ts';
+
+export interface WeatherRequest {
+  readonly list: SectionList;
+  readonly model: Model;
+  readonly landscape: Landscape;
+  readonly slots: SlotPlan;
+  /** The first of the lasting numbers that is free. */
+  readonly weather: number;
+}
+
+export interface WeatherRecords {
+  readonly records: readonly Int32Array[];
+  /** Numbers of each replicate that last, and those for work. */
+  readonly weather: number;
+  readonly work: number;
+}
+
+/** Key of what all patches, or all quantities, share. */
+const sharedPatch = keyOfName('patch of the landscape') | 0;
+const sharedQuantity = keyOfName('quantity of the year') | 0;
+
+export function variationRecords(request: WeatherRequest): WeatherRecords {
+  const { list, model, landscape, slots, weather } = request;
+  const { variation } = model;
+  if (variation === null) return { records: [], weather: 0, work: 0 };
+  const patchNames = model.patches.map(({ name }) => name);
+  const quantityNames = variation.varied.map(({ name }) => name);
+  const overPatches = factorOf(landscape.weather ?? { of: 0, repaired: 0 }, patchNames);
+  const overRates = factorOf(variation.betweenRates, quantityNames);
+  const tables = new Tables();
+  const quantities = variation.varied.flatMap((varied, k) => [
+    slots.varied[k] ?? layout.none,
+    addDistributions(list, varied, tables),
+  ]);
+  const carry = Float64Array.of(
+    variation.autocorrelation,
+    Math.sqrt(1 - variation.autocorrelation * variation.autocorrelation),
+  );
+  const vary = record(layout.opVariation, keyOfName('condition:variation') | 0, layout.none, [
+    addKeys(list, overPatches, 'patch', sharedPatch),
+    addFactor(list, overPatches, 'correlation between patches'),
+    addKeys(list, overRates, 'quantity', sharedQuantity),
+    addFactor(list, overRates, 'correlation between rates'),
+    list.add(plain(layout.kindCarry, carry, 'autocorrelation')),
+    list.add({
+      ...plain(layout.kindQuantities, Int32Array.from(quantities), 'variation'),
+      columns: layout.quantityWords,
+    }),
+    list.add(plain(layout.kindQuantileTables, tables.numbers(), 'variation')),
+    weather,
+  ]);
+  const responses = responseRecords(request, variation);
+  const columns = overPatches.columns.length;
+  return {
+    records: [vary, ...responses],
+    weather: columns * overRates.columns.length,
+    work: Math.max(columns * quantityNames.length, responses.length > 0 ? layout.deepestStack : 0),
+  };
+}
+
+function addKeys(list: SectionList, { columns }: Factor, what: string, shared: number): number {
+  const own = columns.filter((name) => name !== null);
+  const keys = keysOfNames(what, own);
+  const all = columns.map((name) => (name === null ? shared : (keys[own.indexOf(name)] ?? 0)));
+  return list.add(plain(layout.kindColumnKeys, Int32Array.from(all), 'names'));
+}
+
+/** The row of the starts; columns and weights stand in the next two. */
+function addFactor(list: SectionList, { start, column, weight }: Factor, reads: string): number {
+  const row = list.add(plain(layout.kindFactorStart, start, reads));
+  list.add(plain(layout.kindFactorColumn, column, reads));
+  list.add(plain(layout.kindFactorWeight, weight, reads));
+  return row;
+}
+
+/** Quantile tables, each once however many patches have it. */
+class Tables {
+  readonly #known = new Map<string, { readonly first: number; readonly table: QuantileTable }>();
+  readonly #numbers: number[] = [];
+
+  place(key: string, make: () => QuantileTable): readonly [number, number] {
+    const known = this.#known.get(key);
+    if (known !== undefined) return [known.first, known.table.perUnit];
+    const table = make();
+    const first = this.#numbers.length;
+    for (const number of table.nodes) this.#numbers.push(number);
+    this.#known.set(key, { first, table });
+    return [first, table.perUnit];
+  }
+
+  numbers(): Float64Array {
+    return Float64Array.from(this.#numbers);
+  }
+}
+
+/** Rates are written as shares of their mean, parameters as they are. */
+function addDistributions(list: SectionList, varied: Varied, tables: Tables): number {
+  const { epochs, epochOf } = varied.mean;
+  const rows = epochs.map((means, e) =>
+    Float64Array.from(
+      Array.from(means).flatMap((mean, p) => {
+        const sd = varied.sd.epochs[e]?.[p] ?? 0;
+        const found = distributionOf(varied.shape, { mean, sd });
+        if (found === null) throw new Error(`${varied.name} was not found impossible before it was compiled.`);
+        return coded(found, { sd, scale: varied.of.kind === 'parameter' ? 1 : mean === 0 ? 1 : 1 / mean, tables });
+      }),
+    ),
+  );
+  return addEpochs(list, rows, { kind: layout.kindDistributions, epochOf, reads: `variation of ${varied.name}` });
+}
+
+interface Coding {
+  readonly sd: number;
+  readonly scale: number;
+  readonly tables: Tables;
+}
+
+function coded(found: Distribution, { sd, scale, tables }: Coding): readonly number[] {
+  switch (found.shape) {
+    case 'constant':
+      return [layout.distributionConstant, 0, 0, found.value === 0 ? 1 : found.value * scale];
+    case 'lognormal':
+      return [layout.distributionLognormal, found.mu, found.sigma, scale];
+    case 'logit-normal':
+      return [layout.distributionLogit, found.mu, found.sigma, scale];
+    case 'beta': {
+      const place = tables.place(`beta ${found.a} ${found.b}`, () => betaTable(found, sd));
+      return [layout.distributionShareTable, ...place, scale];
+    }
+    case 'gamma': {
+      const shape = { shape: found.k, scale: found.scale };
+      const place = tables.place(`gamma ${found.k} ${found.scale}`, () => gammaTable(shape, sd));
+      return [layout.distributionPositiveTable, ...place, scale];
+    }
+  }
+}
+
+interface EpochSection {
+  readonly kind: number;
+  readonly epochOf: Int32Array;
+  readonly reads: string;
+}
+
+function addEpochs(list: SectionList, rows: readonly Float64Array[], { kind, epochOf, reads }: EpochSection): number {
+  const columns = rows[0]?.length ?? 0;
+  const data = new Float64Array(columns * rows.length);
+  rows.forEach((row, i) => data.set(row, i * columns));
+  const epochs = rows.length > 1 ? list.add(plain(layout.kindEpochOf, epochOf, reads)) : layout.none;
+  return list.add({ kind, data, columns, epochOf: epochs, reads });
+}
+
+function responseRecords(request: WeatherRequest, variation: Variation): readonly Int32Array[] {
+  const { list, model, slots } = request;
+  if (variation.responses.length === 0) return [];
+  const slotOf = new Map(variation.varied.map(({ name }, k) => [name, slots.varied[k] ?? layout.none]));
+  const attributes = new Map([...variation.attributes.keys()].map((name, i) => [name, i]));
+  const values = Float64Array.from([...variation.attributes.values()].flatMap((own) => [...own]));
+  const attributeRow = list.add(plain(layout.kindConstants, values, 'attributes of the patches'));
+  const years = Float64Array.from({ length: model.steps }, (_, t) => model.firstYear + t);
+  const yearRow = list.add(plain(layout.kindConstants, years, 'years'));
+  return variation.responses.map((response, k) => {
+    const slot = slots.responses[k] ?? layout.none;
+    const first = slots.responses.indexOf(slot) === k;
+    const made = instructionsOf(response.expression, { slots: slotOf, attributes });
+    if (made === null) throw new Error(`${response.name} is nested too deeply for the kernel.`);
+    return record(layout.opResponse, 0, layout.none, [
+      list.add(plain(layout.kindExpression, made.words, `expression of ${response.name}`)),
+      list.add(plain(layout.kindConstants, made.constants, `expression of ${response.name}`)),
+      attributeRow,
+      yearRow,
+      addBase(list, response),
+      slot,
+      response.bounds === 'share' ? layout.boundsShare : layout.boundsPositive,
+      addPatches(list, model, response, first),
+    ]);
+  });
+}
+
+function addBase(list: SectionList, { base, name }: Response): number {
+  return addEpochs(list, base.epochs, {
+    kind: layout.kindPatchNumbers,
+    epochOf: base.epochOf,
+    reads: `mean of ${name}`,
+  });
+}
+
+/** The first response of a rate also sets the patches in which the rate is no such expression. */
+function addPatches(list: SectionList, model: Model, { patches, name }: Response, first: boolean): number {
+  const own = first ? model.patches.map((_, p) => p) : patches;
+  return list.add(plain(layout.kindPatchList, Int32Array.from(own), `patches of ${name}`));
+}

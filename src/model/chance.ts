@@ -1,0 +1,69 @@
+// What chance does beside the draws of single animals: years that differ, and catastrophes.
+import type { DenseMatrix } from '../numeric/sparse.ts';
+import type { Ast } from '../spec/expression/ast.ts';
+
+/** One number a patch, for each stretch of steps in which it is constant. */
+export interface PatchNumbers {
+  readonly epochs: readonly Float64Array[];
+  /** Index into `epochs` for step t (1-based) at t - 1; empty where there is one epoch. */
+  readonly epochOf: Int32Array;
+}
+
+/** Parts of a phase that a condition scales by class; `leaving` is the share that sets out in a dispersal. */
+export type ScaledPart = 'survival' | 'births' | 'fates' | 'leaving';
+
+/** The rate of a class in a phase (an index into the phases of the model). */
+export interface ScaledRate {
+  readonly phase: number;
+  readonly part: ScaledPart;
+  readonly class: number;
+}
+
+export type VariedShape = 'beta' | 'logit-normal' | 'lognormal' | 'gamma';
+
+/** A rate of a class, or a named parameter, that differs from year to year. */
+export interface Varied {
+  /** Such as `survival of adult`, or the name of the parameter. */
+  readonly name: string;
+  readonly of: ({ readonly kind: 'rate' } & ScaledRate) | { readonly kind: 'parameter' };
+  readonly shape: VariedShape;
+  /** On the scale of the number; where the SD is 0 it does not vary. */
+  readonly mean: PatchNumbers;
+  readonly sd: PatchNumbers;
+}
+
+/** A rate that is an expression over parameters that vary: it is worked out anew every year. */
+export interface Response extends ScaledRate {
+  readonly name: string;
+  /** Over varied parameters, attributes of the patch and `year`. */
+  readonly expression: Ast;
+  /** Patches in which the rate is this expression. */
+  readonly patches: readonly number[];
+  /** Its value at the means, in these patches; 0 elsewhere. */
+  readonly base: PatchNumbers;
+  readonly bounds: 'share' | 'from zero';
+}
+
+/** Correlation of underlying normal numbers. */
+export interface Correlation {
+  /** One number for all pairs, or a matrix in the order of the names. */
+  readonly of: number | DenseMatrix;
+  /** How far (root of the sum of squared changes) an impossible table was moved to the nearest possible one; 0 for not. */
+  readonly repaired: number;
+}
+
+export interface Variation {
+  /** In the order of their names. */
+  readonly varied: readonly Varied[];
+  readonly responses: readonly Response[];
+  readonly betweenRates: Correlation;
+  /** By distance it is exp(−distance / range); the landscape has the distances. */
+  readonly betweenPatches: Correlation | { readonly rangeKm: number };
+  readonly autocorrelation: number;
+  /** Values of the attributes that the responses read, by patch. */
+  readonly attributes: ReadonlyMap<string, Float64Array>;
+}
+
+export function numbersAt({ epochs, epochOf }: PatchNumbers, step: number): Float64Array {
+  return epochs[epochOf[step - 1] ?? 0] ?? new Float64Array(0);
+}

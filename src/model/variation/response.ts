@@ -1,0 +1,120 @@
+// Which rates are expressions over parameters that vary, and what they are made of.
+import type { Ast } from '../../spec/expression/ast.ts';
+import { namesIn } from '../../spec/expression/names.ts';
+import type { SpecPath } from '../../spec/document.ts';
+import type { PatchNumbers, Response, ScaledPart, Varied } from '../chance.ts';
+import { fail, type Context } from '../context.ts';
+import type { Phase } from '../model.ts';
+import { patchNumbers } from './patch-numbers.ts';
+import { rateWords, tableOf } from './rate-name.ts';
+import { whereIn } from '../rates.ts';
+
+const parts: readonly ScaledPart[] = ['survival', 'births', 'leaving'];
+
+export interface Responses {
+  readonly responses: readonly Response[];
+  readonly attributes: ReadonlyMap<string, Float64Array>;
+}
+
+/** One response for each rate and each way it is written. */
+export function resolveResponses(context: Context, phases: readonly Phase[], varied: readonly Varied[]): Responses {
+  const parameters = new Set(varied.filter((one) => one.of.kind === 'parameter').map((one) => one.name));
+  if (parameters.size === 0) return { responses: [], attributes: new Map() };
+  const places = new Set<string>();
+  const responses = phases.flatMap((phase, index) =>
+    parts.flatMap((part) => responsesOf(context, { phase, index, part, parameters, places })),
+  );
+  refuseElsewhere(context, parameters, places);
+  refuseTwice(context, responses, varied);
+  const read = new Set(responses.flatMap((one) => namesIn(one.expression)));
+  const attributes = new Map<string, Float64Array>();
+  for (const name of read) {
+    if (parameters.has(name) || name === 'year') continue;
+    attributes.set(
+      name,
+      Float64Array.from(context.attributes, (own) => own.get(name) ?? 0),
+    );
+  }
+  return { responses, attributes };
+}
+
+interface Request {
+  readonly phase: Phase;
+  readonly index: number;
+  readonly part: ScaledPart;
+  readonly parameters: ReadonlySet<string>;
+  /** Where expressions stand that are worked out anew every year. */
+  readonly places: Set<string>;
+}
+
+function responsesOf(context: Context, { phase, index, part, parameters, places }: Request): readonly Response[] {
+  const written = tableOf(phase, part)?.written;
+  if (written === undefined || phase.kind === 'demography') return [];
+  const classes = context.classes.length;
+  return context.classes.flatMap((_, c) => {
+    const groups = new Map<string, { expression: Ast; text: string; path: SpecPath; patches: number[] }>();
+    context.patches.forEach((_patch, p) => {
+      const own = written[p * classes + c] ?? null;
+      if (own === null) return;
+      const expression = context.numbers.expanded(own.expression, own.path, parameters);
+      if (expression === null || !namesIn(expression).some((name) => parameters.has(name))) return;
+      places.add(own.path.join('\0'));
+      const text = String(own.expression);
+      const group = groups.get(text) ?? { expression, text, path: own.path, patches: [] };
+      group.patches.push(p);
+      groups.set(text, group);
+    });
+    const name = rateWords(context, part === 'survival' || part === 'births' ? phase.name : phase.name, c);
+    return [...groups.values()].map((group): Response => {
+      const base = baseOf(context, group);
+      const bounds = part === 'births' ? 'from zero' : 'share';
+      return { phase: index, part, class: c, name, expression: group.expression, patches: group.patches, base, bounds };
+    });
+  });
+}
+
+interface Group {
+  readonly text: string;
+  readonly path: SpecPath;
+  readonly patches: readonly number[];
+}
+
+function baseOf(context: Context, { text, path, patches }: Group): PatchNumbers {
+  const inside = new Set(patches);
+  const varies = context.numbers.varies(text, path);
+  return patchNumbers(context, varies, (p, year) =>
+    inside.has(p) ? context.numbers.value(text, path, whereIn(context, p, year)) : 0,
+  );
+}
+
+/** Movement, crowding and the like are prepared once: what varies cannot stand there. */
+function refuseElsewhere(context: Context, parameters: ReadonlySet<string>, places: ReadonlySet<string>): void {
+  for (const { expression, path } of context.numbers.uses()) {
+    if (path[0] === 'parameters' || path[0] === 'variation' || places.has(path.join('\0'))) continue;
+    const name = context.numbers.behind(expression, path).find((one) => parameters.has(one));
+    if (name === undefined) continue;
+    fail(context, 'varies-elsewhere', path, {
+      message: `\`${name}\` varies from year to year, and this number cannot`,
+      details: {
+        found: String(expression),
+        expected: 'varied parameters in survival, births and the share that leaves only',
+        fix: 'Vary the rate itself under `variation`, or use another parameter here.',
+      },
+    });
+  }
+}
+
+function refuseTwice(context: Context, responses: readonly Response[], varied: readonly Varied[]): void {
+  for (const response of responses) {
+    const twice = varied.find(
+      ({ of }) =>
+        of.kind === 'rate' && of.phase === response.phase && of.part === response.part && of.class === response.class,
+    );
+    if (twice === undefined) continue;
+    fail(context, 'varied-twice', ['variation'], {
+      message: `${twice.name} varies by itself and through a parameter that varies`,
+      part: 'key',
+      details: { fix: 'Vary one of the two.' },
+    });
+  }
+}
