@@ -13,6 +13,7 @@ export {
   observed,
   stops,
   animals,
+  slotNumbers,
   moved,
   laneBytes,
   saveLane,

@@ -51,6 +51,11 @@ export function animals(): usize {
   return batch.animals;
 }
 
+/** f64 [slot][patch][lane]: what conditions multiply rates by in this step. */
+export function slotNumbers(): usize {
+  return batch.slotValues;
+}
+
 /** Bytes of one lane's whole state, as `saveLane` writes it. */
 export function laneBytes(): i32 {
   return 24 + i32(batch.stateBytes() / 16) + (slots * patches + header(headerWeather)) * 8;

@@ -20,6 +20,8 @@ export interface MachineFunctions {
   readonly observed: () => number;
   readonly stops: () => number;
   readonly animals: () => number;
+  /** Address: f64 [slot][patch][lane], what conditions multiply rates by in this step. */
+  readonly slotNumbers: () => number;
   /** Address: f64 [way], animals that arrived over each way since `start`, all classes and lanes together. */
   readonly moved: () => number;
   readonly laneBytes: () => number;
@@ -60,6 +62,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   observed: true,
   stops: true,
   animals: true,
+  slotNumbers: true,
   moved: true,
   laneBytes: true,
   saveLane: true,

@@ -1,9 +1,11 @@
 // What `skein check` says of a model that has no errors: what was understood, every default, and where patches stand still.
 import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
+import type { WeatherFacts } from '../analysis/weather.ts';
 import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
 import type { DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { fixed } from './rounded.ts';
+import { weatherWords } from './weather-words.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
 
 export interface Understood {
@@ -13,6 +15,8 @@ export interface Understood {
   readonly reach: readonly DispersalReach[];
   /** Growth of the linked system near zero. */
   readonly growthRate: number;
+  /** Null where nothing varies from year to year. */
+  readonly weather: WeatherFacts | null;
 }
 
 export function checkText(understood: Understood, style: TextStyle): string {
@@ -30,6 +34,7 @@ export function checkText(understood: Understood, style: TextStyle): string {
       model.phases.flatMap((phase) => dispersalWords(understood, phase)),
       style,
     ),
+    section('Variation from year to year', understood.weather === null ? [] : weatherWords(understood.weather), style),
     standingTable(understood, style),
     section(
       'Outcomes',

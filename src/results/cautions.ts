@@ -18,7 +18,7 @@ conservation translocations. What a model says is one input to it.`,
   ].map((text) => text.replaceAll('\n', ' '));
 }
 
-function leftOut({ crowding, phases }: Model): readonly string[] {
+function leftOut({ crowding, phases, variation }: Model): readonly string[] {
   const allee = crowding.some((one) => one.alleeHalf.some((half) => half > 0));
   const crowded = crowding.length > 0 || phases.some((phase) => phase.kind === 'ceiling');
   return [
@@ -27,7 +27,7 @@ function leftOut({ crowding, phases }: Model): readonly string[] {
     'a trend of the climate',
     ...(allee ? [] : ['trouble in finding mates when few are left (Allee effects)']),
     ...(crowded ? [] : ['crowding']),
-    'year-to-year variation of the rates',
+    ...(variation === null ? ['year-to-year variation of the rates'] : []),
     'catastrophes',
   ];
 }

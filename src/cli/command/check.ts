@@ -1,5 +1,6 @@
 // skein check: all mistakes, every default, and what was understood.
 import { dispersalReach, standingOf } from '../../analysis/standing.ts';
+import { weatherFacts } from '../../analysis/weather.ts';
 import { buildBlock } from '../../compile/block.ts';
 import { leading } from '../../numeric/leading.ts';
 import type { CompiledModel } from '../../pipeline.ts';
@@ -36,6 +37,7 @@ export function understand(compiled: CompiledModel): Understood {
     standing: standingOf(compiled, startAnimals),
     reach: dispersalReach(compiled, startAnimals),
     growthRate: leading(buildBlock(compiled, 'zero').matrix).growthRate,
+    weather: model.variation === null ? null : weatherFacts(model.variation, compiled.landscape),
   };
 }
 
@@ -47,5 +49,6 @@ function checkJson({ diagnostics }: Loaded, understood: Understood | null): unkn
     growthRate: understood?.growthRate ?? null,
     patches: understood?.standing ?? null,
     dispersal: understood?.reach ?? null,
+    variation: understood?.weather ?? null,
   };
 }

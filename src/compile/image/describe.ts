@@ -71,7 +71,7 @@ function describeRecord(record: readonly number[], names: ImageNames): RecordDes
   ]);
   return {
     opcode: opcodeWord(opcode),
-    name: listed[index] ?? String(index),
+    name: listed[index] ?? '',
     key: hexadecimal(key),
     operands: Object.fromEntries(operands),
   };

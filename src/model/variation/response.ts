@@ -1,10 +1,13 @@
 // Which rates are expressions over parameters that vary, and what they are made of.
+import { pinned } from '../../machine/pinned.ts';
 import type { Ast } from '../../spec/expression/ast.ts';
+import { evaluate } from '../../spec/expression/evaluate.ts';
 import { namesIn } from '../../spec/expression/names.ts';
 import type { SpecPath } from '../../spec/document.ts';
 import type { PatchNumbers, Response, ScaledPart, Varied } from '../chance.ts';
 import { fail, type Context } from '../context.ts';
 import type { Phase } from '../model.ts';
+import { distributionOf, numberAt } from './distribution.ts';
 import { patchNumbers } from './patch-numbers.ts';
 import { rateWords, tableOf } from './rate-name.ts';
 import { whereIn } from '../rates.ts';
@@ -25,6 +28,7 @@ export function resolveResponses(context: Context, phases: readonly Phase[], var
     parts.flatMap((part) => responsesOf(context, { phase, index, part, parameters, places })),
   );
   refuseElsewhere(context, parameters, places);
+  for (const response of responses) refuseOutOfBounds(context, response, varied);
   refuseTwice(context, responses, varied);
   const read = new Set(responses.flatMap((one) => namesIn(one.expression)));
   const attributes = new Map<string, Float64Array>();
@@ -64,7 +68,7 @@ function responsesOf(context: Context, { phase, index, part, parameters, places 
       group.patches.push(p);
       groups.set(text, group);
     });
-    const name = rateWords(context, part === 'survival' || part === 'births' ? phase.name : phase.name, c);
+    const name = rateWords(context, phase.name === 'breeding' ? 'births' : phase.name, c);
     return [...groups.values()].map((group): Response => {
       const base = baseOf(context, group);
       const bounds = part === 'births' ? 'from zero' : 'share';
@@ -117,4 +121,42 @@ function refuseTwice(context: Context, responses: readonly Response[], varied: r
       details: { fix: 'Vary one of the two.' },
     });
   }
+}
+
+/** How far out, in SDs of the normal numbers, a rate must stay within its bounds; beyond it the kernel holds it to them. */
+const lookedAt = 4;
+
+/** Looks where all parameters that vary are low, high, or some low and some high. */
+function refuseOutOfBounds(context: Context, response: Response, varied: readonly Varied[]): void {
+  const moving = varied.filter(
+    ({ name, of }) => of.kind === 'parameter' && namesIn(response.expression).includes(name),
+  );
+  const corners = 1 << Math.min(moving.length, 6);
+  for (let corner = 0; corner < corners; corner++) {
+    const values = new Map(moving.map((one, k) => [one.name, extreme(one, (corner >> k) % 2 === 0 ? -1 : 1)]));
+    for (const patch of response.patches) {
+      const attributes = context.attributes[patch];
+      const scope = (name: string): number | undefined =>
+        name === 'year' ? context.time.firstYear : (values.get(name) ?? attributes?.get(name));
+      const result = evaluate(response.expression, scope, pinned);
+      const inside = result.ok && result.value >= 0 && (response.bounds === 'from zero' || result.value <= 1);
+      if (inside) continue;
+      const found = result.ok ? `it is ${Number(result.value.toPrecision(4))}` : result.fault.message;
+      fail(context, 'impossible-variation', ['variation', moving[0]?.name ?? ''], {
+        message: `In a rare year ${response.name} in ${context.patches[patch]?.name ?? ''} is not possible: ${found}`,
+        part: 'key',
+        details: {
+          expected: response.bounds === 'share' ? 'a share between 0 and 1' : 'a number from 0',
+          reason: `Where the underlying normal number is ${lookedAt} standard deviations out.`,
+          fix: 'Make the variation smaller, choose another shape, or write the rate with `min` or `max`.',
+        },
+      });
+      return;
+    }
+  }
+}
+
+function extreme({ shape, mean, sd }: Varied, side: number): number {
+  const found = distributionOf(shape, { mean: mean.epochs[0]?.[0] ?? 0, sd: sd.epochs[0]?.[0] ?? 0 });
+  return found === null ? NaN : numberAt(found, side * lookedAt);
 }

@@ -16,7 +16,7 @@ export function designConcepts(model: Model, results: RunResults): Markup {
     ['Prediction', 'none.'],
     ['Sensing', 'none of the animals; rates answer to the number present where crowding is on.'],
     ['Interaction', interaction(model)],
-    ['Stochasticity', stochasticity(results)],
+    ['Stochasticity', stochasticity(model, results)],
     ['Collectives', 'the animals of a patch, which share its rates.'],
     ['Observation', 'at each count: animals in each patch and in all, the outcomes, and the patches in use.'],
   ]);
@@ -29,7 +29,8 @@ function interaction({ phases, crowding }: Model): string {
   return `${within}; ${linked ? 'patches are linked by movement' : 'patches are not linked'}.`;
 }
 
-function stochasticity(results: RunResults): string {
+function stochasticity({ variation }: Model, results: RunResults): string {
   const single = 'births, deaths, fates and movement of single animals are drawn (demographic chance)';
-  return `${single}; ${plain(finished(results))} futures come from one seed, ${results.seed}.`;
+  const years = variation === null ? '' : '; rates differ from year to year (environmental chance)';
+  return `${single}${years}; ${plain(finished(results))} futures come from one seed, ${results.seed}.`;
 }

@@ -1,4 +1,5 @@
 // The model under the seven headings of the ODD protocol (Grimm et al. 2020, JASSS 23(2):7), written from the model itself.
+import type { Landscape } from '../../landscape/landscape.ts';
 import type { Model } from '../../model/model.ts';
 import type { RunResults } from '../../results/results.ts';
 import { inFileOrder } from '../../results/summarise.ts';
@@ -10,7 +11,7 @@ import { initialWords } from './initial.ts';
 import { phaseWords } from './phases.ts';
 import { submodels } from './submodels.ts';
 
-export function oddSection(model: Model, results: RunResults): Markup {
+export function oddSection(model: Model, results: RunResults, landscape: Landscape): Markup {
   const headings: readonly (readonly [string, Content])[] = [
     ['Purpose and patterns', purpose(model)],
     ['Entities, state variables, and scales', entities(model)],
@@ -18,7 +19,7 @@ export function oddSection(model: Model, results: RunResults): Markup {
     ['Design concepts', designConcepts(model, results)],
     ['Initialization', initialWords(model)],
     ['Input data', inputData],
-    ['Submodels', submodels(model)],
+    ['Submodels', submodels(model, landscape)],
   ];
   const parts = headings.map(([title, content], i) => mark`<h4>${String(i + 1)}. ${title}</h4>${content}`);
   return mark`<h3 id="model">The model in the seven ODD headings</h3>

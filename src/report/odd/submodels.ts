@@ -1,18 +1,27 @@
 // Every phase and condition with its numbers.
+import { weatherFacts } from '../../analysis/weather.ts';
+import type { Landscape } from '../../landscape/landscape.ts';
 import type { AgeingPhase, Crowding, Model, Phase } from '../../model/model.ts';
 import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
+import { weatherWords } from '../weather-words.ts';
 import { digits, matrixTables, rateTable } from './rates.ts';
 
-export function submodels(model: Model): Markup {
+export function submodels(model: Model, landscape: Landscape): Markup {
   const phases = model.phases
     .filter((phase) => phase.kind !== 'count')
     .map((phase) => submodel(phase.name, numbers(phase, model)));
   const conditions = model.crowding.map((one) => submodel(one.name, crowding(one, model)));
-  return mark`${phases}${conditions}`;
+  return mark`${phases}${conditions}${weather(model, landscape)}`;
+}
+
+function weather({ variation }: Model, landscape: Landscape): Markup | null {
+  if (variation === null) return null;
+  const items = weatherWords(weatherFacts(variation, landscape)).map((words) => mark`<li><bdi>${words}</bdi></li>`);
+  return submodel('variation from year to year', mark`<ul>${items}</ul>`);
 }
 
 function submodel(name: string, content: Content): Markup {

@@ -16,8 +16,8 @@ export function limitsSection({ results }: ReportInput): Markup {
 }
 
 export function annexSection(input: ReportInput): Markup {
-  const { model, results } = input;
-  const content = mark`${oddSection(model, results)}${parameters(model)}${defaults(model)}${rerun(input)}`;
+  const { model, results, landscape } = input;
+  const content = mark`${oddSection(model, results, landscape)}${parameters(model)}${defaults(model)}${rerun(input)}`;
   return section('annex', 'Annex', content);
 }
 

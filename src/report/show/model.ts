@@ -1,5 +1,6 @@
 // The model with all names resolved, as plain data and as text that can be compared line by line.
 import { stringify } from 'yaml';
+import { variationJson } from './variation.ts';
 import type { Model, Phase, RateTable } from '../../model/model.ts';
 
 export function modelText(model: Model): string {
@@ -7,7 +8,7 @@ export function modelText(model: Model): string {
 }
 
 export function modelJson(model: Model): Readonly<Record<string, unknown>> {
-  const { phases, crowding, outcomes, patches, start, ...head } = model;
+  const { phases, crowding, variation, outcomes, patches, start, ...head } = model;
   const byPatch = (values: Float64Array) =>
     named(
       model.patches.map(({ name }) => name),
@@ -30,6 +31,7 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
       capacity: one.form === 'allee' ? null : byPatch(one.capacity),
       alleeHalf: byPatch(one.alleeHalf),
     })),
+    ...(variation === null ? {} : { variation: variationJson(model, variation) }),
     start: startJson(model, start),
     outcomes: outcomes.map(({ weights, patches: where, ...one }) => ({
       ...one,
