@@ -63,7 +63,3 @@ export interface Variation {
   /** Values of the attributes that the responses read, by patch. */
   readonly attributes: ReadonlyMap<string, Float64Array>;
 }
-
-export function numbersAt({ epochs, epochOf }: PatchNumbers, step: number): Float64Array {
-  return epochs[epochOf[step - 1] ?? 0] ?? new Float64Array(0);
-}

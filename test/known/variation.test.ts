@@ -6,7 +6,7 @@ import { logitNormalMoments } from '../../src/numeric/chance/logit-normal.ts';
 import { betaTable, gammaTable, tableAt } from '../../src/numeric/chance/quantile-table.ts';
 import { normalBelow } from '../../src/numeric/normal.ts';
 import { compileText } from '../pipeline/compile-text.ts';
-import { runReplicates } from '../../src/kernel/run.ts';
+import { runReplicates } from '../kernel/collect.ts';
 
 // Derived from the moments: a = m(m(1−m)/v − 1), b = a(1−m)/m (Morris & Doak 2002, from memory).
 test('a beta distribution from mean and SD', () => {

@@ -93,6 +93,15 @@ test('a spec that uses every key comes back', () => {
       capacity: capacity
       allee-half: 4
       where-declining: { as: North fen }
+    variation:
+      survival:
+        newborn: { sd: 0.1 }
+        adult: { cv: 5 %, shape: beta }
+      litter: { sd: 0.7, shape: gamma }
+      between-rates:
+        survival of adult: { litter: 0.4 }
+      between-patches: { range: 20 km }
+      autocorrelation: 0.2
     start:
       counted: { North fen: 120 }
       of: [yearling, adult]

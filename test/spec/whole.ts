@@ -57,17 +57,17 @@ crowding:
   capacity: capacity
   allee-half: 4
   where-declining: { as: North fen }
+start: { counted: { North fen: 120 }, of: [yearling, adult], rest: stable within patch }
+outcomes:
+  lost hares: { of: [adult], below: 40 }
+  north empty: { of: all, in: [North fen], below: 0.5 }
+run: { replicates: 2000, seed: 2026 }
 variation:
   survival: { newborn: { sd: 0.1 }, adult: { cv: 5 %, shape: beta } }
   litter: { sd: 0.7, shape: gamma }
   between-rates: { survival of adult: { litter: 0.4 } }
   between-patches: { range: 20 km }
   autocorrelation: 0.2
-start: { counted: { North fen: 120 }, of: [yearling, adult], rest: stable within patch }
-outcomes:
-  lost hares: { of: [adult], below: 40 }
-  north empty: { of: all, in: [North fen], below: 0.5 }
-run: { replicates: 2000, seed: 2026 }
 second brood: { kind: breeding, births: { adult: 0.5, female-share: 0.5, into: newborn } }
 moult: { kind: survival, survival: { newborn: 1, yearling: 0.98, adult: 0.97 } }
 wandering:

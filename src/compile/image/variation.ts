@@ -4,7 +4,7 @@ import type { Landscape } from '../../landscape/landscape.ts';
 import type { Response, Varied, Variation } from '../../model/chance.ts';
 import type { Model } from '../../model/model.ts';
 import { distributionOf, type Distribution } from '../../model/variation/distribution.ts';
-import { betaTable, gammaTable, type QuantileTable } from '../../numeric/chance/quantile-table.ts';
+import { betaTable, gammaTable, quantileReach, type QuantileTable } from '../../numeric/chance/quantile-table.ts';
 import { factorOf, type Factor } from '../weather/factor.ts';
 import type { SlotPlan } from '../weather/slots.ts';
 import { instructionsOf } from './expression.ts';
@@ -95,6 +95,7 @@ class Tables {
     const known = this.#known.get(key);
     if (known !== undefined) return [known.first, known.table.perUnit];
     const table = make();
+    if (quantileReach !== layout.tableReach) throw new Error('Quantile tables have another reach than the kernel.');
     const first = this.#numbers.length;
     for (const number of table.nodes) this.#numbers.push(number);
     this.#known.set(key, { first, table });

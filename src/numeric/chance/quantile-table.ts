@@ -1,9 +1,11 @@
 // A table of a distribution's quantiles over the normal numbers, for the kernel: value and slope at even steps of z.
-import { tableReach } from '../../../assembly/layout.ts';
 import { exp, log } from '../../machine/pinned.ts';
 import { betaTails, type BetaShape } from './beta.ts';
 import { gammaTails, type GammaShape } from './gamma.ts';
 import { quantileAt, type Tails } from './tail.ts';
+
+/** Tables go from −reach to reach; the kernel expects the same. */
+export const quantileReach = 9;
 
 export interface QuantileTable {
   /** Value at node i at 2i, slope times the step at 2i + 1. */
@@ -57,7 +59,7 @@ function build(source: Source): QuantileTable {
 }
 
 function nodesOf({ tails, start, value, slope }: Source, perUnit: number): Float64Array {
-  const middle = tableReach * perUnit;
+  const middle = quantileReach * perUnit;
   const nodes = new Float64Array(2 * (2 * middle + 1));
   for (const direction of [-1, 1]) {
     let guess = start;
@@ -86,7 +88,7 @@ function missed(coarse: Float64Array, fine: Float64Array): number {
 
 /** The table at z, as the kernel reads it. */
 export function tableAt({ nodes, perUnit }: QuantileTable, z: number): number {
-  const place = Math.max(0, Math.min(2 * tableReach * perUnit - 1e-9, (z + tableReach) * perUnit));
+  const place = Math.max(0, Math.min(2 * quantileReach * perUnit - 1e-9, (z + quantileReach) * perUnit));
   const i = Math.floor(place);
   const s = place - i;
   const [v0 = 0, d0 = 0, v1 = 0, d1 = 0] = nodes.subarray(2 * i, 2 * i + 4);
