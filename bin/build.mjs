@@ -1,7 +1,7 @@
 // Builds everything that is made from the sources: the kernel, the command line, the page and the library.
 import { spawnSync } from 'node:child_process';
-import { existsSync, mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
+import { basename, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
@@ -31,6 +31,13 @@ function buildKernel() {
 
 function writeScript(name, from, content) {
   writeFileSync(at('build', name), `// Made by npm run build from ${from}.\nexport const ${content};\n`);
+}
+
+/** Parts of earlier builds carry other names and would pile up. */
+function removeOthers(folder, made) {
+  const kept = new Set(made.map((path) => basename(path)));
+  for (const name of readdirSync(folder))
+    if (!kept.has(name)) rmSync(join(folder, name), { force: true, recursive: true });
 }
 
 async function bundle() {
@@ -65,7 +72,9 @@ async function bundle() {
     js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",
   };
   if (existsSync(at('src/cli/main.ts'))) {
-    await build({ ...node, banner, entryPoints: { skein: 'src/cli/main.ts' }, outdir: 'build/cli', splitting: true });
+    const options = { entryPoints: { skein: 'src/cli/main.ts' }, outdir: 'build/cli', splitting: true, metafile: true };
+    const { metafile } = await build({ ...node, ...options, banner });
+    removeOthers(at('build', 'cli'), Object.keys(metafile.outputs));
   }
   if (existsSync(at('src/index.ts'))) {
     await build({ ...node, banner, entryPoints: { index: 'src/index.ts' }, outdir: 'build' });

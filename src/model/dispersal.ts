@@ -25,16 +25,27 @@ interface Named {
   readonly moves: Uint8Array;
 }
 
+/** Keys whose part a table of shares plays already. */
+const notWithShares = [
+  'leaving',
+  'kernel',
+  'attraction',
+  'leavers',
+  'distance',
+  'hazard',
+  'survival-on-the-way',
+] as const;
+
 function bySharesTable(
   context: Context,
   { name, spec, moves, shares }: Named & { readonly shares: NonNullable<DispersalSpec['shares']> },
 ): DispersalPhase {
-  for (const key of ['leaving', 'kernel', 'attraction', 'leavers', 'distance'] as const) {
+  for (const key of notWithShares) {
     if (spec[key] !== undefined) {
       fail(context, 'dispersal-shape', [name, key], {
         message: `\`${key}\` and \`shares\` exclude each other`,
         part: 'key',
-        details: { fix: 'Shares already say who leaves and where to: remove one of the two.' },
+        details: { fix: 'Shares already say who leaves and who arrives where: remove one of the two.' },
       });
     }
   }

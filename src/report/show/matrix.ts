@@ -50,7 +50,7 @@ export function matrixText(compiled: Compiled): string {
   const head =
     'Block projection matrix from one count to the next, near zero. Columns are from, rows are to.\n' +
     `Growth rate ${significant(solved.growthRate, 12)}` +
-    (solved.reason === undefined ? '' : ` (no single stable distribution: ${solved.reason})`);
+    (solved.reason === undefined ? '' : `\nNo single stable distribution. ${solved.reason}`);
   const body = block.states.length <= widestMatrix ? fullTable(block, label) : entryTable(block, label);
   return [head, body, vectorTable(solved, block, label)].join('\n\n');
 }
