@@ -8,6 +8,7 @@ import type { SpecDocument } from '../spec/document.ts';
 import { locateFinding } from '../spec/finding.ts';
 import { readSpec } from '../spec/read.ts';
 import { applySettings, type Settings } from '../spec/settings.ts';
+import { readDataFiles } from './data-files.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { readText } from './input.ts';
 import { writeError } from './output.ts';
@@ -26,18 +27,27 @@ export interface LoadedModel {
   readonly compiled: CompiledModel;
 }
 
+interface ReadOptions {
+  readonly quiet?: boolean | undefined;
+  /** Folders besides that of the spec from which its data files may come. */
+  readonly allow?: readonly string[] | undefined;
+}
+
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
-export function loadModel(path: string, settings: Settings, quiet: boolean): LoadedModel {
-  const { document, compiled, diagnostics } = readModel(path, settings);
-  const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && !quiet));
+export function loadModel(path: string, settings: Settings, { quiet, allow }: ReadOptions): LoadedModel {
+  const { document, compiled, diagnostics } = readModel(path, settings, { allow });
+  const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && quiet !== true));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
   if (document === null || compiled === null) throw toldAlready();
   return { document, compiled };
 }
 
-export function readModel(path: string, settings: Settings): Loaded {
+export function readModel(path: string, settings: Settings, { allow = [] }: Pick<ReadOptions, 'allow'> = {}): Loaded {
   const name = path === '-' ? 'standard input' : path;
-  const { document, diagnostics } = readSpec(readText(path), name);
+  const text = readText(path);
+  const alone = readSpec(text, name);
+  const files = readDataFiles(alone.wants, { spec: path, allow });
+  const { document, diagnostics } = files.size === 0 ? alone : readSpec(text, name, files);
   if (document === undefined) return { document: null, compiled: null, diagnostics };
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) {

@@ -38,7 +38,7 @@ function buildProgram(): Command {
 }
 
 function addShow(program: Command): void {
-  addOptions(program.command('show'), ['set', 'years', 'json'])
+  addOptions(program.command('show'), ['set', 'years', 'json', 'allow'])
     .argument('<model>', 'a model file, or - for standard input')
     .argument('<stage>', 'spec, model, landscape, matrix or packed')
     .description('print what a stage of the work makes of a model')
@@ -79,7 +79,7 @@ function addRuns(program: Command): void {
 }
 
 function model(program: Command, name: string, what: string, shared: Parameters<typeof addOptions>[1]): Command {
-  return addOptions(program.command(name), shared)
+  return addOptions(program.command(name), [...shared, 'allow'])
     .argument('<model>', 'a model file, or - for standard input')
     .description(what);
 }

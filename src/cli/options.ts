@@ -11,9 +11,10 @@ export interface CommonOptions {
   readonly json?: boolean;
   readonly out?: string;
   readonly quiet?: boolean;
+  readonly allow?: readonly string[];
 }
 
-type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'threads' | 'json' | 'out' | 'quiet';
+type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'threads' | 'json' | 'out' | 'quiet' | 'allow';
 
 const options: Readonly<Record<Shared, () => Option>> = {
   set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
@@ -25,6 +26,10 @@ const options: Readonly<Record<Shared, () => Option>> = {
     new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),
   out: () => new Option('--out <folder>', 'write tables and what is needed to run again'),
+  allow: () =>
+    new Option('--allow <folder>', 'let the model read data files from this folder, too (repeatable)').argParser(
+      (folder: string, before: readonly string[] | undefined) => [...(before ?? []), folder],
+    ),
   quiet: () => new Option('--quiet', 'no warnings and no progress'),
 };
 

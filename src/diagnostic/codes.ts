@@ -40,6 +40,15 @@ const readingCodes = {
   'relative-change': 'A plus in front of a number.',
   'unusable-name': 'A name cannot be used.',
 
+  // Data files
+  'data-missing': 'A file that the spec names cannot be read.',
+  'data-syntax': 'A data file is not in the format that it should be in.',
+  'geojson-shape': 'A GeoJSON file or feature is of another sort than a patch can be.',
+  'geojson-crs': 'A GeoJSON file says that its places are something else than the spec says.',
+  'nameless-feature': 'A feature has no name.',
+  'open-ring': 'A ring of a polygon does not end where it begins.',
+  'left-out-property': 'A property of a feature is not used.',
+
   // Expressions and quantities
   'expression-empty': 'An expression holds nothing.',
   'expression-character': 'A character has no meaning in an expression.',

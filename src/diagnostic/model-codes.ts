@@ -28,6 +28,11 @@ export const modelCodes = {
 
   // Places and dispersal
   'missing-position': 'It is not said what the places of the patches mean.',
+  'not-degrees': 'A place cannot be longitude and latitude.',
+  'plane-degrees': 'Places on a plane look like degrees.',
+  'outline-ring': 'A ring of an outline has no inside, or is a hole outside its polygon.',
+  'self-crossing': 'An outline crosses itself.',
+  'area-differs': 'The area that is given is not that of the outline.',
   'missing-place': 'A patch has no place, and a distance is needed.',
   'same-place': 'Two patches lie at the same place.',
   'missing-area': 'A patch has no area, and one is needed.',

@@ -21,9 +21,11 @@ export function tell(severity: Severity, code: DiagnosticCode, message: string, 
   };
 }
 
-/** In the order of the file; what has no place comes first. */
+/** In the order of the file, one file after another as they come; what has no place comes first. */
 export function inFileOrder(list: readonly Diagnostic[]): readonly Diagnostic[] {
+  const files = [...new Set(list.map((one) => one.place?.file))];
+  const file = (one: Diagnostic): number => (one.place === undefined ? -1 : files.indexOf(one.place.file));
   const line = (one: Diagnostic): number => one.place?.line ?? 0;
   const column = (one: Diagnostic): number => one.place?.column ?? 0;
-  return list.toSorted((a, b) => line(a) - line(b) || column(a) - column(b));
+  return list.toSorted((a, b) => file(a) - file(b) || line(a) - line(b) || column(a) - column(b));
 }

@@ -1,10 +1,20 @@
-// Straight distances on the plane, and which patches lie within reach of one another.
+// Straight distances: on the plane, or along the ellipsoid; between the middles of patches or their nearest edges.
 import type { Patch } from '../model/model.ts';
+import { geodesicKm, kmPerDegree } from '../numeric/geodesic.ts';
+import { edgesOf, nearestPoints, type Edges } from '../numeric/plane/nearest.ts';
+import type { Point } from '../numeric/plane/point.ts';
 
-/** Kilometres between two patches, rounded to 1 mm so that every machine has the same number. */
+/** From where to where a distance is measured. */
+export type Between = 'centroids' | 'nearest edges';
+
+/** Kilometres between the middles of two patches, rounded to 1 mm so that every machine has the same number. */
 export function distanceKm(a: Patch, b: Patch): number {
-  if (a.at === null || b.at === null) return NaN;
-  const [dx, dy] = [a.at[0] - b.at[0], a.at[1] - b.at[1]];
+  if (a.degrees !== undefined && b.degrees !== undefined) return geodesicKm(a.degrees, b.degrees);
+  return a.at === null || b.at === null ? NaN : planeKm(a.at, b.at);
+}
+
+function planeKm(a: Point, b: Point): number {
+  const [dx, dy] = [a[0] - b[0], a[1] - b[1]];
   return Math.round(Math.sqrt(dx * dx + dy * dy) * 1e6) / 1e6;
 }
 
@@ -13,15 +23,28 @@ export interface Neighbour {
   readonly km: number;
 }
 
-/** For each patch the others within reach (all where it is null), in the order of the patches. */
-export function neighboursWithin(patches: readonly Patch[], reachKm: number | null): readonly (readonly Neighbour[])[] {
-  const eastward = patches.map((_, p) => p).sort((a, b) => x(patches[a]) - x(patches[b]) || a - b);
+export interface Neighbourhood {
+  readonly patches: readonly Patch[];
+  /** Null for all. */
+  readonly reachKm: number | null;
+  readonly between?: Between | undefined;
+}
+
+/** For each patch the others within reach, in the order of the patches. */
+export function neighboursWithin({ patches, reachKm, between }: Neighbourhood): readonly (readonly Neighbour[])[] {
+  const measure = between === 'nearest edges' ? betweenEdges(patches) : distanceKm;
+  const places = patches.map((patch) => northward(patch, between));
+  const southFirst = patches.map((_, p) => p).sort((a, b) => (places[a]?.from ?? 0) - (places[b]?.from ?? 0) || a - b);
   const found: Neighbour[][] = patches.map(() => []);
-  eastward.forEach((p, i) => {
-    for (const q of eastward.slice(i + 1, endOfReach(patches, { eastward, i, reachKm }))) {
+  southFirst.forEach((p, i) => {
+    const limit = (places[p]?.to ?? 0) + (reachKm ?? Infinity) + 1e-6;
+    for (let k = i + 1; k < southFirst.length; k++) {
+      const q = southFirst[k] ?? 0;
+      if ((places[q]?.from ?? 0) > limit) break;
       const [from, to] = [patches[p], patches[q]];
       if (from === undefined || to === undefined) continue;
-      const km = distanceKm(from, to);
+      // Always the same way round, so that the order of sweeping does not change the last bit.
+      const km = p < q ? measure(from, to) : measure(to, from);
       if (reachKm !== null && km > reachKm) continue;
       found[p]?.push({ patch: q, km });
       found[q]?.push({ patch: p, km });
@@ -31,21 +54,39 @@ export function neighboursWithin(patches: readonly Patch[], reachKm: number | nu
   return found;
 }
 
-interface Sweep {
-  readonly eastward: readonly number[];
-  readonly i: number;
-  readonly reachKm: number | null;
+/** No two places on the ellipsoid are nearer than this for each degree of latitude between them. */
+const leastKmPerDegree = 110.5;
+
+/** How far north a patch begins and ends, in kilometres: two patches are at least as far apart as these stretches. */
+function northward(patch: Patch, between: Between | undefined): { readonly from: number; readonly to: number } {
+  const scale = patch.degrees === undefined ? 1 : leastKmPerDegree;
+  const y = (patch.degrees ?? patch.at)?.[1] ?? 0;
+  const outline = between === 'nearest edges' ? (patch.degreesOutline ?? patch.outline) : undefined;
+  let [from, to] = [y, y];
+  for (const [, north] of outline?.flat(2) ?? []) {
+    from = Math.min(from, north);
+    to = Math.max(to, north);
+  }
+  return { from: from * scale, to: to * scale };
 }
 
-/** First position to the east that lies beyond reach. */
-function endOfReach(patches: readonly Patch[], { eastward, i, reachKm }: Sweep): number {
-  if (reachKm === null) return eastward.length;
-  const limit = x(patches[eastward[i] ?? 0]) + reachKm + 1e-6;
-  let end = i + 1;
-  while (end < eastward.length && x(patches[eastward[end] ?? 0]) <= limit) end++;
-  return end;
+/** A patch without an outline is its point. Edges are made once, when first needed. */
+function betweenEdges(patches: readonly Patch[]): (a: Patch, b: Patch) => number {
+  const known = new Map<Patch, Edges>();
+  const edges = (patch: Patch): Edges => {
+    const own = known.get(patch) ?? edgesOf(outlineOf(patch));
+    known.set(patch, own);
+    return own;
+  };
+  const inDegrees = patches.some((patch) => patch.degrees !== undefined);
+  return (a, b) => {
+    const scale = inDegrees ? kmPerDegree(((a.degrees?.[1] ?? 0) + (b.degrees?.[1] ?? 0)) / 2) : undefined;
+    const [from, to] = nearestPoints(edges(a), edges(b), scale);
+    return inDegrees ? geodesicKm(from, to) : planeKm(from, to);
+  };
 }
 
-function x(patch: Patch | undefined): number {
-  return patch?.at?.[0] ?? 0;
+function outlineOf(patch: Patch): readonly (readonly (readonly Point[])[])[] {
+  const outline = patch.degrees === undefined ? patch.outline : patch.degreesOutline;
+  return outline ?? [[[patch.degrees ?? patch.at ?? [NaN, NaN]]]];
 }

@@ -19,8 +19,10 @@ export interface KernelRequest {
 
 export function kernelMovement(request: KernelRequest): Movement {
   const { model, phase, rule } = request;
-  const ways = neighboursWithin(model.patches, rule.kernel.reachKm).map((straight, from) => {
-    const others = withLinkDistances({ phase, reachKm: rule.kernel.reachKm }, from, straight);
+  const { reachKm } = rule.kernel;
+  const near = neighboursWithin({ patches: model.patches, reachKm, between: rule.between });
+  const ways = near.map((straight, from) => {
+    const others = withLinkDistances({ phase, reachKm }, from, straight);
     const aiming = rule.leavers === 'all arrive' ? sharedOut(rule, others) : meeting(model, rule, others);
     if (!aiming.some((one) => one > 0)) {
       tellNoTarget(request, from);

@@ -175,7 +175,7 @@ function leavingTable(context: Context, { name, spec, moves }: Named): RateTable
 function kernelRule(context: Context, name: string, spec: DispersalSpec): DispersalRule | null {
   const { kernel, leavers } = spec;
   if (kernel === undefined || leavers === undefined) return null;
-  if (!requirePlaces(context, name)) return null;
+  if (!requirePlaces(context, name, spec['distance-between'])) return null;
   const resolved = resolveKernel(context, name, kernel);
   const attraction = attractionOf(context, name, spec);
   if (leavers === 'may miss') requireAreas(context, name);
@@ -199,6 +199,7 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
   return {
     by: 'kernel',
     kernel: resolved,
+    ...(spec['distance-between'] === 'nearest edges' ? { between: 'nearest edges' } : {}),
     attraction,
     leavers,
     hazardPerKm,

@@ -1,12 +1,19 @@
 // A model with every name resolved, every default filled and one unit system (km, km², steps): what the compiler reads.
 // Patches stand in the order of their names, classes in the order of the spec. Index p is a patch, c a class.
+import type { Outline, Point } from '../numeric/plane/point.ts';
 import type { Variation } from './chance.ts';
 import type { DispersalKernel } from './kernel-shape.ts';
 
 export interface Patch {
   readonly name: string;
-  /** Kilometres on the plane. */
+  /** Kilometres on the plane; where places are degrees, on a plane that is good for drawing only. */
   readonly at: readonly [number, number] | null;
+  /** Longitude and latitude on WGS84, where places are given so. */
+  readonly degrees?: Point;
+  /** Polygons with their holes on the same plane as `at`; absent where the patch is a point. */
+  readonly outline?: Outline;
+  /** The outline in degrees, where it is given so. */
+  readonly degreesOutline?: Outline;
   readonly areaKm2: number | null;
   readonly capacity: number | null;
   /** Position in the author's list, for printing. */
@@ -86,6 +93,8 @@ export type DispersalRule =
   | {
       readonly by: 'kernel';
       readonly kernel: DispersalKernel;
+      /** Absent for the middles of the patches. */
+      readonly between?: 'nearest edges';
       /** A factor of the weight of each target patch. */
       readonly attraction: Float64Array;
       readonly leavers: 'all arrive' | 'may miss';

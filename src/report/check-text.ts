@@ -4,6 +4,7 @@ import type { WeatherFacts } from '../analysis/weather.ts';
 import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
 import type { DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
+import { placesWords } from './places-text.ts';
 import { fixed } from './rounded.ts';
 import { weatherWords } from './weather-words.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
@@ -29,6 +30,7 @@ export function checkText(understood: Understood, style: TextStyle): string {
       model.phases.map((phase) => phaseWords(model, phase)),
       style,
     ),
+    section('Where the patches lie', placesWords(model), style),
     section(
       'Dispersal',
       model.phases.flatMap((phase) => dispersalWords(understood, phase)),

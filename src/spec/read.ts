@@ -2,6 +2,8 @@
 import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { Bug } from '../diagnostic/bug.ts';
 import { Collector } from '../diagnostic/collector.ts';
+import type { DataFiles } from './data/files.ts';
+import { joinFiles } from './data/join.ts';
 import type { SpecDocument } from './document.ts';
 import { CoreSchema, type Spec } from './schema/spec.ts';
 import { checkTop } from './shape/top.ts';
@@ -14,21 +16,28 @@ import { sectionOf, valueOf } from './text/value.ts';
 export interface ReadSpec {
   /** Missing where there is any error. */
   readonly document?: SpecDocument;
+  /** Files that the spec names, as it names them. */
+  readonly wants: readonly string[];
   /** Errors and warnings in the order of the file. */
   readonly diagnostics: readonly Diagnostic[];
 }
 
-/** `file` is the name that places carry; nothing is read but `text`, which may be YAML or JSON. */
-export function readSpec(text: string, file: string): ReadSpec {
+/**
+ * `file` is the name that places carry. Nothing is read but `text`, which may be YAML or JSON, and the texts of the files that
+ * it names; without them the spec is read as far as it goes, and says which it wants.
+ */
+export function readSpec(text: string, file: string, files: DataFiles = new Map()): ReadSpec {
   const source = sourceText(file, text.startsWith('\uFEFF') ? text.slice(1) : text);
   const tree = readTree(source);
   const found = new Collector();
   found.add(...tree.diagnostics);
   const report: Report = { source, found };
   const top = tree.root === undefined ? undefined : checkTop(tree.root, report);
+  if (top === undefined || found.errors > 0) return { diagnostics: found.told(), wants: [] };
+  const { root, wants } = joinFiles(top, files, report);
   const diagnostics = found.told();
-  if (top === undefined || found.errors > 0) return { diagnostics };
-  return { document: documentOf(top, source, found), diagnostics };
+  if (found.errors > 0) return { diagnostics, wants };
+  return { document: documentOf(root, source, found), diagnostics, wants };
 }
 
 function documentOf(root: SourceMap, source: SourceText, found: Collector): SpecDocument {

@@ -5,14 +5,14 @@ import { buildReport } from '../../src/report/report.ts';
 import { pathText } from '../../src/report/path-text.ts';
 import { runText } from '../../src/report/text.ts';
 import { tryText } from '../pipeline/compile-text.ts';
-import { compileModel, modelNames, modelText } from './models.ts';
+import { compileModel, modelFiles, modelNames, modelText } from './models.ts';
 
 describe.each(modelNames)('%s', (name) => {
   const compiled = compileModel(name, { replicates: 32 });
   const [results, path] = [runModel(compiled), followPath(compiled)];
 
   test('has no error and no warning', () => {
-    expect(tryText(modelText(name)).diagnostics.filter((one) => one.severity !== 'note')).toEqual([]);
+    expect(tryText(modelText(name), {}, modelFiles(name)).diagnostics.filter((one) => one.severity !== 'note')).toEqual([]);
   });
 
   test('says that it is invented', () => {

@@ -1,6 +1,10 @@
 // The models that come with the tool.
 import { readFileSync, readdirSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
+import { readDataFiles } from '../../src/cli/data-files.ts';
 import type { CompiledModel } from '../../src/pipeline.ts';
+import type { DataFiles } from '../../src/spec/data/files.ts';
+import { readSpec } from '../../src/spec/read.ts';
 import type { Settings } from '../../src/spec/settings.ts';
 import { compileText } from '../pipeline/compile-text.ts';
 
@@ -15,6 +19,12 @@ export function modelText(name: string): string {
   return readFileSync(new URL(`${name}.yaml`, folder), 'utf8');
 }
 
+/** The data files that a model names. */
+export function modelFiles(name: string): DataFiles {
+  const { wants } = readSpec(modelText(name), name);
+  return readDataFiles(wants, { spec: fileURLToPath(new URL(`${name}.yaml`, folder)), allow: [] });
+}
+
 export function compileModel(name: string, settings: Settings = {}): CompiledModel {
-  return compileText(modelText(name), settings);
+  return compileText(modelText(name), settings, modelFiles(name));
 }

@@ -3,11 +3,12 @@ import { constructionFindings } from '../../src/analysis/construction/constructi
 import type { Diagnostic } from '../../src/diagnostic/diagnostic.ts';
 import { inFileOrder } from '../../src/diagnostic/tell.ts';
 import { compileSpec } from '../../src/pipeline.ts';
+import type { DataFiles } from '../../src/spec/data/files.ts';
 import { locateFinding } from '../../src/spec/finding.ts';
 import { readSpec } from '../../src/spec/read.ts';
 
-export function checkText(text: string, file: string): readonly Diagnostic[] {
-  const { document, diagnostics } = readSpec(text, file);
+export function checkText(text: string, file: string, files: DataFiles = new Map()): readonly Diagnostic[] {
+  const { document, diagnostics } = readSpec(text, file, files);
   if (document === undefined) return diagnostics;
   const { compiled, findings } = compileSpec(document.spec);
   const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];

@@ -2,6 +2,7 @@
 import type { Diagnostic } from '../../src/diagnostic/diagnostic.ts';
 import { renderDiagnostics } from '../../src/diagnostic/render.ts';
 import { compileSpec, type CompiledModel } from '../../src/pipeline.ts';
+import type { DataFiles } from '../../src/spec/data/files.ts';
 import { locateFinding } from '../../src/spec/finding.ts';
 import { readSpec } from '../../src/spec/read.ts';
 import { applySettings, type Settings } from '../../src/spec/settings.ts';
@@ -12,8 +13,8 @@ export interface Told {
 }
 
 /** Whatever the text, with all that is told of it. */
-export function tryText(text: string, settings: Settings = {}): Told {
-  const { document, diagnostics } = readSpec(text, 'test.yaml');
+export function tryText(text: string, settings: Settings = {}, files: DataFiles = new Map()): Told {
+  const { document, diagnostics } = readSpec(text, 'test.yaml', files);
   if (document === undefined) return { compiled: null, diagnostics };
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) throw new Error(`The spec has no parameter ${applied.unknown.name}.`);
@@ -21,8 +22,8 @@ export function tryText(text: string, settings: Settings = {}): Told {
   return { compiled, diagnostics: [...diagnostics, ...findings.map((finding) => locateFinding(document, finding))] };
 }
 
-export function compileText(text: string, settings: Settings = {}): CompiledModel {
-  const { compiled, diagnostics } = tryText(text, settings);
+export function compileText(text: string, settings: Settings = {}, files: DataFiles = new Map()): CompiledModel {
+  const { compiled, diagnostics } = tryText(text, settings, files);
   if (compiled === null) throw new Error(renderDiagnostics(diagnostics, { colour: false, width: 100 }));
   return compiled;
 }

@@ -32,7 +32,7 @@ test('a spec that uses every key comes back', () => {
     position: plane
     unit: km
     patches:
-      - { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260, cover: 0.4 }
+      - { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260, cover: 0.4, outline: [[[[2, 8], [4, 8], [4, 10]]]] }
       - { name: Saltmarsh, at: [-10, 0.5], capacity: 0 }
     counts: females
     classes: [newborn, yearling, adult]
@@ -60,6 +60,7 @@ test('a spec that uses every key comes back', () => {
       classes: [newborn]
       leaving: natal_leaving
       distance: straight
+      distance-between: nearest edges
       kernel: { shape: exponential, mean: 4 km, reach: 25000 m }
       attraction: capacity ^ 0.5
       leavers: all arrive

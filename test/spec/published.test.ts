@@ -16,7 +16,7 @@ const published: unknown = JSON.parse(writeSchema());
 function validator() {
   const ajv = new Ajv2020({ strict: true, allErrors: true, allowUnionTypes: true, strictRequired: false });
   ajv.addVocabulary(['x-unit', 'x-key']);
-  for (const format of ['name', 'identifier', 'expression', 'length', 'area', 'share', 'per-length', 'time']) {
+  for (const format of ['name', 'identifier', 'expression', 'length', 'area', 'share', 'per-length', 'time', 'file']) {
     ajv.addFormat(format, true);
   }
   return ajv.compile(published as object);
@@ -47,7 +47,7 @@ test('the schema takes a spec that uses every key, and any spec', () => {
 
 /** Mistakes that a schema cannot see: of the text, of names and of expressions. */
 const beyondSchema =
-  /^(?:expression-|unusable-name|number-format|relative-change|wrong-unit|duplicate-key|division|not-a|inf)/u;
+  /^(?:expression-|data-missing|unusable-name|number-format|relative-change|wrong-unit|duplicate-key|division|not-a|inf)/u;
 
 const strange: fc.Arbitrary<unknown> = fc.constantFrom(
   null,

@@ -95,8 +95,14 @@ const anyStart = fc.oneof(
   fc.record({ counted: record(anyName, anyPositive), of: anyClasses, rest: fc.constant('none' as const) }),
 );
 
+const anyPlace = fc.tuple(anyNumber, anyNumber);
+const anyOutline = fc.array(fc.array(fc.array(anyPlace, { maxLength: 4 }), { maxLength: 2 }), {
+  minLength: 1,
+  maxLength: 2,
+});
+
 const anyPatch = fc.record(
-  { name: anyName, at: fc.tuple(anyNumber, anyNumber), area: fc.constantFrom('140 ha', 3), capacity: anyPositive },
+  { name: anyName, at: anyPlace, outline: anyOutline, area: fc.constantFrom('140 ha', 3), capacity: anyPositive },
   { requiredKeys: ['name'] },
 );
 

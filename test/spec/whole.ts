@@ -14,7 +14,7 @@ step: 1 year
 position: plane
 unit: km
 patches:
-  - { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260, cover: 0.4 }
+  - { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260, cover: 0.4, outline: [[[[2, 8], [4, 8], [4, 10]]]] }
   - name: Saltmarsh
     at: [-1e1, .5]
     capacity: 0
@@ -39,6 +39,7 @@ natal:
   classes: [newborn]
   leaving: natal_leaving
   distance: straight
+  distance-between: nearest edges
   kernel: { shape: exponential, mean: 4 km, reach: 25000 m }
   attraction: capacity ^ 0.5
   leavers: all arrive

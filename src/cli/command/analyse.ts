@@ -16,7 +16,7 @@ export interface AnalyseCommandOptions extends CommonOptions {
 }
 
 export function analyseCommand(path: string, options: AnalyseCommandOptions): void {
-  const { compiled } = loadModel(path, settingsOf(options), options.quiet === true);
+  const { compiled } = loadModel(path, settingsOf(options), options);
   const folder = options.out === undefined ? null : openOutFolder(options.out);
   const found = analyseModel(compiled, { at: options.at, wantEigenvalues: options.eigenvalues === true });
   if (found.value === null) throw new Ending(exitCodes.work, `--at ${options.at}: ${found.reason}`);

@@ -1,7 +1,8 @@
 // skein new: a small working model to start from.
 import { existsSync, readFileSync, readdirSync } from 'node:fs';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { readSpec } from '../../spec/read.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { makeFolder, pendingFile } from '../files.ts';
 import { writeError, writeOut } from '../output.ts';
@@ -21,8 +22,17 @@ export function newModel(folder: string, { example }: { readonly example?: strin
   if (existsSync(target)) throw new Ending(exitCodes.work, `${target} exists already; nothing was written.`);
   const text = readFileSync(join(examplesFolder(), `${name}.yaml`), 'utf8');
   makeFolder(folder);
+  for (const file of readSpec(text, name).wants) copyData(file, folder);
   pendingFile(target).finish(text);
   writeError(`Wrote ${target}\nNext: skein check ${target}\n`);
+}
+
+/** The files that an example names keep their places beside it. */
+function copyData(file: string, folder: string): void {
+  const target = join(folder, file);
+  if (existsSync(target)) throw new Ending(exitCodes.work, `${target} exists already; the model was not written.`);
+  makeFolder(dirname(target));
+  pendingFile(target).finish(readFileSync(join(examplesFolder(), file), 'utf8'));
 }
 
 function exampleNames(): readonly string[] {

@@ -9,7 +9,7 @@ import { pathTables } from '../tables.ts';
 import { terminalOf } from '../terminal.ts';
 
 export function pathCommand(path: string, options: CommonOptions): void {
-  const { compiled } = loadModel(path, settingsOf(options), options.quiet === true);
+  const { compiled } = loadModel(path, settingsOf(options), options);
   const folder = options.out === undefined ? null : openOutFolder(options.out);
   const results = followPath(compiled);
   folder?.write(compiled, { results, tables: pathTables(results) });

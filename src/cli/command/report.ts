@@ -9,7 +9,7 @@ import { writeError, writeOut } from '../output.ts';
 import { runReplicates } from '../replicates.ts';
 
 export async function reportCommand(path: string, options: CommonOptions & { readonly output: string }): Promise<void> {
-  const { document, ...loaded } = loadModel(path, settingsOf(options), options.quiet === true);
+  const { document, ...loaded } = loadModel(path, settingsOf(options), options);
   const file = options.output === '-' ? null : pendingFile(options.output);
   const { compiled, results, cutShort } = await runReplicates(loaded.compiled, options);
   const page = buildReport({

@@ -9,7 +9,7 @@ import { runTables } from '../tables.ts';
 import { terminalOf } from '../terminal.ts';
 
 export async function runCommand(path: string, options: CommonOptions): Promise<void> {
-  const loaded = loadModel(path, settingsOf(options), options.quiet === true);
+  const loaded = loadModel(path, settingsOf(options), options);
   const folder: OutFolder | null = options.out === undefined ? null : openOutFolder(options.out);
   const { compiled, results, cutShort } = await runReplicates(loaded.compiled, options);
   folder?.write(compiled, { results, tables: runTables(compiled.model, results) });

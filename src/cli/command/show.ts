@@ -32,7 +32,7 @@ export function showStage(path: string, stage: string, options: CommonOptions): 
       `There is no stage \`${stage}\`. There are: ${Object.keys(printers).join(', ')}.`,
     );
   }
-  const { compiled } = loadModel(path, settingsOf(options), options.quiet === true);
+  const { compiled } = loadModel(path, settingsOf(options), options);
   writeOut(
     options.json === true
       ? `${JSON.stringify(printer.json(compiled), null, 2)}\n`

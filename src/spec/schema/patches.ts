@@ -1,5 +1,16 @@
 import { Type } from 'typebox';
-import { expression, Name, quantity, text } from './values.ts';
+import { expression, FileName, Name, quantity, text } from './values.ts';
+
+const Place = Type.Tuple([Type.Number(), Type.Number()], { title: 'two numbers, x and y' });
+
+/** Polygons, each of an outer ring and rings of holes, as in GeoJSON's MultiPolygon. */
+const PatchOutline = Type.Array(Type.Array(Type.Array(Place, { title: 'a ring: a list of places' })), {
+  minItems: 1,
+  title: 'a list of polygons, each a list of rings, each a list of places',
+  description:
+    'The edge of the patch: polygons, each an outer ring and the rings of its holes. It gives the area and, without `at`, the place.',
+  examples: ['[[[[0, 0], [2, 0], [2, 1], [0, 1]]]]'],
+});
 
 export const InlinePatch = Type.Object(
   {
@@ -8,11 +19,12 @@ export const InlinePatch = Type.Object(
       Type.Tuple([Type.Number(), Type.Number()], {
         title: 'two numbers, x and y',
         description:
-          'Where the middle of the patch lies, x to the east and y to the north, in the `unit` of the plane.',
+          'Where the middle of the patch lies: x to the east and y to the north in the `unit` of the plane, or longitude and latitude in degrees.',
         examples: ['[3.2, 9.1]'],
-        'x-unit': 'the `unit` of the plane',
+        'x-unit': 'the `unit` of the plane, or degrees',
       }),
     ),
+    outline: Type.Optional(PatchOutline),
     area: Type.Optional(quantity('area', { description: 'Size of the patch.', examples: ['140 ha'] })),
     capacity: Type.Optional(
       Type.Number({
@@ -34,10 +46,27 @@ export const InlinePatch = Type.Object(
   },
 );
 
-export const Patches = Type.Array(InlinePatch, {
-  minItems: 1,
-  title: 'a list of patches',
-  description: 'The habitat patches. Their order changes nothing.',
+export const InlinePatches = Type.Array(InlinePatch, { minItems: 1, title: 'a list of patches' });
+
+/** Features of a GeoJSON file. */
+const PatchFile = Type.Object(
+  {
+    file: Type.String({ ...FileName, description: 'A GeoJSON file beside the spec.', examples: ['fens.geojson'] }),
+    name: Type.Optional(
+      text({
+        description: 'The property of the features that is the name of the patch.',
+        examples: ['site'],
+        default: 'name',
+      }),
+    ),
+  },
+  { additionalProperties: false, title: '{ file: FILE, name: PROPERTY }' },
+);
+
+export const Patches = Type.Union([InlinePatches, FileName, PatchFile], {
+  title: 'a list of patches, or the name of a GeoJSON file',
+  description:
+    'The habitat patches, or the GeoJSON file (points, polygons, multipolygons) that holds them; numbers among the properties of a feature are attributes of its patch. Their order changes nothing.',
   examples: ['- { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260 }'],
 });
 

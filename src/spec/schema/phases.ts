@@ -105,6 +105,13 @@ export const Dispersal = Type.Object(
         default: 'straight',
       }),
     ),
+    'distance-between': Type.Optional(
+      Type.Union([Type.Literal('centroids'), Type.Literal('nearest edges')], {
+        description: 'From where to where: the middles of two patches, or the nearest points of their outlines.',
+        examples: ['nearest edges'],
+        default: 'centroids',
+      }),
+    ),
     kernel: Type.Optional(Kernel),
     attraction: Type.Optional(
       expression({

@@ -1,7 +1,7 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
-import { Parameters, Patches } from './patches.ts';
+import { InlinePatches, Parameters, Patches, type InlinePatch } from './patches.ts';
 import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import { Study } from './study.ts';
@@ -32,7 +32,10 @@ export const CoreSchema = Type.Object(
       Type.Literal('1 year', { description: 'Length of a step.', examples: ['1 year'], default: '1 year' }),
     ),
     position: Type.Optional(
-      Type.Literal('plane', { description: 'What the places of the patches mean.', examples: ['plane'] }),
+      Type.Union([Type.Literal('plane'), Type.Literal('longitude-latitude')], {
+        description: 'What the places of the patches mean: a plane with a `unit`, or degrees on the WGS84 ellipsoid.',
+        examples: ['plane'],
+      }),
     ),
     unit: Type.Optional(
       Type.Union([Type.Literal('km'), Type.Literal('m')], {
@@ -79,6 +82,9 @@ export const CoreSchema = Type.Object(
   { additionalProperties: false },
 );
 
+/** What stands in a spec where it names no file. */
+export const inlinePatches = InlinePatches;
+
 export const namedSchemas = {
   survival: NamedSurvival,
   breeding: NamedBreeding,
@@ -87,6 +93,7 @@ export const namedSchemas = {
   crowding: NamedCrowding,
 } as const;
 
+export type InlinePatchSpec = Static<typeof InlinePatch>;
 export type DispersalSpec = Static<typeof Dispersal>;
 export type CeilingSpec = Static<typeof Ceiling>;
 export type CrowdingSpec = Static<typeof Crowding>;
@@ -98,4 +105,7 @@ export type NamedCrowdingSpec = Static<typeof NamedCrowding>;
 export type NamedSpec = SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
-export type Spec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
+export type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
+
+/** A model with what its data files hold in the place of their names. */
+export type Spec = Omit<WrittenSpec, 'patches'> & { readonly patches: readonly InlinePatchSpec[] };

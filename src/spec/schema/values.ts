@@ -62,3 +62,6 @@ export function byNumber(words: KeyWords, key: string) {
     'x-key': key,
   });
 }
+
+/** A file in the folder of the spec or below it. */
+export const FileName = Type.String({ minLength: 1, format: 'file', title: 'the name of a file' });

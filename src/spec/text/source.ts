@@ -11,7 +11,12 @@ export interface SourceText {
 
 export type Plain = string | number | boolean | null;
 
-export interface SourceScalar {
+/** What a data file holds has a text of its own; all below it is from there, too. */
+interface FromFile {
+  readonly file?: SourceText;
+}
+
+export interface SourceScalar extends FromFile {
   readonly kind: 'scalar';
   readonly value: Plain;
   /** Exactly as written, without quotes. */
@@ -20,25 +25,25 @@ export interface SourceScalar {
   readonly plain: boolean;
   readonly span: Span;
 }
-export interface SourceList {
+export interface SourceList extends FromFile {
   readonly kind: 'list';
   readonly items: readonly SourceNode[];
   readonly span: Span;
 }
-export interface SourceEntry {
+export interface SourceEntry extends FromFile {
   readonly key: string;
   readonly keySpan: Span;
   /** Written without quotes. */
   readonly plain: boolean;
   readonly value: SourceNode;
 }
-export interface SourceMap {
+export interface SourceMap extends FromFile {
   readonly kind: 'map';
   readonly entries: readonly SourceEntry[];
   readonly span: Span;
 }
 /** Something that was refused already: whatever stands here is not judged again. */
-export interface SourceHole {
+export interface SourceHole extends FromFile {
   readonly kind: 'hole';
   readonly span: Span;
 }
