@@ -3,6 +3,7 @@ import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { crowdingFactor, crowdingShapeOf } from '../phases/crowding';
+import { matingFactor } from '../phases/mating';
 import { add, animals, animalsIn, arrivals, scaleOf, slotValues, stateBytes, step } from './state';
 
 export function meanBreeding(record: usize): void {
@@ -13,11 +14,12 @@ export function meanBreeding(record: usize): void {
   const places = section(operand(record, layout.breedingWaitCapacity));
   for (let patch = 0; patch < patches; patch++) {
     let young: f64 = 0;
+    const mated = matedShare(record, patch);
     const share = waiting === 0 ? 1 : shareWithin(waiting, f64At(places, patch), patch);
     for (let c = 0; c < classes; c++) {
       const births = f64At(table, patch * classes + c);
       if (births === 0) continue;
-      const own = animalsIn(patch, c) * births * scaleOf(lists, c, patch);
+      const own = animalsIn(patch, c) * births * scaleOf(lists, c, patch) * mated;
       young += waiting !== 0 && i32At(waiting, c) !== 0 ? own * share : own;
     }
     for (let c = 0; c < classes; c++) add(animals, patch, c, young * f64At(into, c));
@@ -67,6 +69,18 @@ export function meanDemography(record: usize): void {
     }
   }
   memory.copy(animals, arrivals, stateBytes());
+}
+
+function matedShare(record: usize, patch: i32): f64 {
+  if (operand(record, layout.breedingMating) <= 0) return 1;
+  const sexes = section(operand(record, layout.breedingSexes));
+  let females: f64 = 0;
+  let males: f64 = 0;
+  for (let c = 0; c < classes; c++) {
+    if (f64At(sexes, c) > 0) females += animalsIn(patch, c);
+    if (f64At(sexes, c) < 0) males += animalsIn(patch, c);
+  }
+  return matingFactor(record, females, males);
 }
 
 /** min(1, K/N) of the counted animals of a patch. */

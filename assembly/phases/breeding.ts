@@ -1,4 +1,4 @@
-// Breeding: young of each breeding class by a Poisson draw, shared over the classes that they enter.
+// Breeding: young of each breeding class by a Poisson draw or by another distribution of litters, shared over the classes that they enter.
 import { f64At, putU32, u32At } from '../arrays';
 import {
   animals,
@@ -22,6 +22,8 @@ import { streamOf } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { exceeds, removeSurplus } from './ceiling';
+import { addLitters } from './litters';
+import { readMating, scaleByMating } from './mating';
 
 export function breed(record: usize): void {
   const table = sectionAt(operand(record, layout.breedingBirths), step);
@@ -30,13 +32,18 @@ export function breed(record: usize): void {
     if (!occupied(row, rowBytes())) continue;
     philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
     const breeders = breedingRow(record, patch, row);
+    const mating = operand(record, layout.breedingMating) > 0;
+    // The room of the numbers serves for the males first.
+    if (mating) readMating(record, row, numbers);
     memory.fill(numbers, 0, 128);
     for (let c = 0; c < classes; c++) {
       const births = f64At(table, patch * classes + c);
       const cell = breeders + <usize>c * cellBytes;
       if (births === 0 || !occupied(cell, cellBytes)) continue;
       scaledRates(rates, births, section(operand(record, layout.breedingSlots)), c, patch);
-      addYoung(cell, streamOf(u32At(classKeys, c), layout.useYoung));
+      if (mating) scaleByMating();
+      if (operand(record, layout.breedingOffspring) > 0) addLitters(record, c, cell, u32At(classKeys, c));
+      else addYoung(cell, streamOf(u32At(classKeys, c), layout.useYoung));
     }
     wholeYoung(operand(record, layout.recordIndex));
     shareOut(row, section(operand(record, layout.breedingOnward)));

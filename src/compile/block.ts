@@ -3,12 +3,12 @@
 import { principalPart } from '../numeric/principal-part.ts';
 import type { AtState, BlockMatrix } from './block-matrix.ts';
 import { presentClasses } from './present-classes.ts';
-import { productOf, runYear, type Compiled } from './year-map.ts';
+import { nearZero, productOf, runYear, type Compiled } from './year-map.ts';
 
-/** At nobody (`zero`), or at given P·C animals at the count. */
+/** At nobody (`zero`; where births depend on the sexes, at the make-up of few), or at given P·C animals at the count. */
 export function buildBlock(compiled: Compiled, at: AtState, state?: Float64Array): BlockMatrix {
   const { model } = compiled;
-  const before = state ?? new Float64Array(model.patches.length * model.classes.length);
+  const before = state ?? nearZero(compiled);
   const { maps } = runYear(compiled, before);
   const keep = keptStates(compiled);
   const n = model.classes.length;

@@ -1,6 +1,7 @@
 // The part of a phase map that stays within one patch: survival, births, ageing, fates. The diagonal block of the map.
 import type { AgeingPhase, BreedingPhase, DemographyPhase, Model, SurvivalPhase } from '../model/model.ts';
 import { shareWithin } from './ceiling.ts';
+import { matingFactor } from './mating.ts';
 import { multiplierOf, type Multipliers } from './multipliers.ts';
 import { tableAt } from './rates.ts';
 
@@ -54,10 +55,11 @@ export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array 
   const map = new Float64Array(n * n);
   if (phase.kind === 'breeding') {
     const table = tableAt(phase.births, request.step);
+    const mated = phase.mating === undefined ? 1 : matingFactor(phase.mating, request.animals);
     for (let i = 0; i < n * n; i++) {
       const [to, from] = [Math.floor(i / n), i % n];
       const young = (table[request.patch * n + from] ?? 0) * factor(request, 'births', from);
-      map[i] = (phase.into[to] ?? 0) * young * breedingShare(phase, request, from);
+      map[i] = (phase.into[to] ?? 0) * young * breedingShare(phase, request, from) * mated;
     }
   } else if (phase.kind === 'demography') {
     const table = tableAt(phase.births, request.step);

@@ -2,6 +2,7 @@
 import type { Model } from '../model/model.ts';
 import { lifeMap } from './life-map.ts';
 import { readingPhase, type Multipliers } from './multipliers.ts';
+import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 
 export interface PatchYear {
   readonly model: Model;
@@ -10,18 +11,35 @@ export interface PatchYear {
   readonly multipliers: Multipliers;
 }
 
-/** C×C from count to count, at to * C + from; up to (not with) the phase `until`, if given. */
-export function patchYear({ model, patch, multipliers }: PatchYear, until = model.phases.length): Float64Array {
+/**
+ * C×C from count to count, at to * C + from; up to (not with) the phase `until`, if given. Where births depend on the make-up
+ * of the sexes, at the make-up that the patch settles to under these multipliers.
+ */
+export function patchYear(year: PatchYear, until = year.model.phases.length): Float64Array {
+  const { model } = year;
+  if (!dependsOnMakeUp(model)) return yearFrom(year, until);
+  const n = model.classes.length;
+  const makeUp = settledMakeUp(n, (animals) => applied(yearFrom(year, model.phases.length, animals), animals));
+  return yearFrom(year, until, makeUp);
+}
+
+/** From animals by class at the count, of whom there may be so few that no ceiling matters. */
+function yearFrom({ model, patch, multipliers }: PatchYear, until: number, animals?: Float64Array): Float64Array {
   const n = model.classes.length;
   let year = identity(n);
+  let here = animals;
   model.phases.slice(0, until).forEach((phase, index) => {
     switch (phase.kind) {
       case 'count':
       case 'dispersal':
       case 'ceiling':
         return;
-      default:
-        year = times(lifeMap(phase, { model, phase: index, patch, step: 1, multipliers }), year, n);
+      default: {
+        const request = { model, phase: index, patch, step: 1, multipliers };
+        const map = lifeMap(phase, here === undefined ? request : { ...request, animals: here });
+        year = times(map, year, n);
+        here = here === undefined ? undefined : applied(map, here);
+      }
     }
   });
   return year;
@@ -30,13 +48,20 @@ export function patchYear({ model, patch, multipliers }: PatchYear, until = mode
 /** N of each crowding where it is read, from animals by class at the count. */
 export function countsAlone(year: PatchYear, animals: Float64Array): readonly number[] {
   const { model } = year;
-  const n = model.classes.length;
   return model.crowding.map(({ counted }, k) => {
-    const map = patchYear(year, readingPhase(model, k));
-    let count = 0;
-    for (let i = 0; i < n * n; i++) count += (counted[Math.floor(i / n)] ?? 0) * (map[i] ?? 0) * (animals[i % n] ?? 0);
-    return count;
+    const there = applied(patchYear(year, readingPhase(model, k)), animals);
+    return there.reduce((sum, value, c) => sum + (counted[c] ?? 0) * value, 0);
   });
+}
+
+function applied(map: Float64Array, animals: Float64Array): Float64Array {
+  const n = animals.length;
+  const out = new Float64Array(n);
+  for (let i = 0; i < n * n; i++) {
+    const to = Math.floor(i / n);
+    out[to] = (out[to] ?? 0) + (map[i] ?? 0) * (animals[i % n] ?? 0);
+  }
+  return out;
 }
 
 function identity(n: number): Float64Array {

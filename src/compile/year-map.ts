@@ -5,6 +5,7 @@ import type { SparseMatrix } from '../numeric/sparse.ts';
 import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
 import { multiplierAt } from './crowding-form.ts';
+import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
 
@@ -67,8 +68,19 @@ export function wholeYear(compiled: Compiled): WholeYear {
   return {
     states: patches.length * classes.length,
     apply: (animals) => runYear(compiled, animals).after,
-    matrixAt: (animals) => productOf(runYear(compiled, animals).maps),
+    matrixAt: (animals) => {
+      const nobody = animals.every((value) => value === 0);
+      return productOf(runYear(compiled, nobody ? nearZero(compiled) : animals).maps);
+    },
   };
+}
+
+/** Nobody; where births depend on the make-up of the sexes, so few animals of the settled make-up that nothing else matters. */
+export function nearZero(compiled: Compiled): Float64Array {
+  const { model } = compiled;
+  const states = model.patches.length * model.classes.length;
+  if (!dependsOnMakeUp(model)) return new Float64Array(states);
+  return settledMakeUp(states, (animals) => runYear(compiled, animals).after);
 }
 
 /** maps[last] · … · maps[0]. */

@@ -26,6 +26,9 @@ export const modelCodes = {
   'matrix-size': 'A matrix has another size than the classes ask for.',
   'column-above-one': 'The fates of one class add up to more than 1.',
 
+  'offspring-shape': 'A distribution of young says too little or too much, or cannot have these births.',
+  'sexes-shape': 'What is said of the two sexes is missing or does not fit.',
+
   // Places and dispersal
   'missing-position': 'It is not said what the places of the patches mean.',
   'not-degrees': 'A place cannot be longitude and latitude.',

@@ -4,7 +4,7 @@ import type { DiagnosticCode } from '../diagnostic/codes.ts';
 import type { SpecPath } from '../spec/document.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
-import type { Patch } from './model.ts';
+import type { Patch, Sex } from './model.ts';
 import type { Numbers } from './numbers.ts';
 
 export interface Names {
@@ -16,6 +16,8 @@ export interface Context {
   readonly spec: Spec;
   readonly patches: readonly Patch[];
   readonly classes: readonly string[];
+  /** By class; null where the sexes are not told apart. */
+  readonly sexes: readonly Sex[] | null;
   readonly names: Names;
   readonly numbers: Numbers;
   /** By patch, for expressions. */

@@ -90,6 +90,14 @@ function readLeslie(context: Context, { survival, fecundity }: LeslieSpec, path:
     });
     return null;
   }
+  if (context.sexes !== null) {
+    fail(context, 'sexes-shape', path, {
+      message: 'A Leslie matrix holds one sex, and the classes are of both',
+      part: 'key',
+      details: { expected: '`demography: { fates: …, births: … }` over all classes' },
+    });
+    return null;
+  }
   const wanted = spec.oldest === 'terminal' ? n - 1 : n;
   if (fecundity.length !== n) {
     wrongSize(context, [...path, 'fecundity'], { found: `${fecundity.length} numbers`, expected: `${n}, one a class` });

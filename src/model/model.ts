@@ -53,6 +53,29 @@ export interface BreedingPhase extends PhaseBase {
   readonly into: Float64Array;
   /** A ceiling under which the surplus waits: of the counted classes no more than the capacity breed, drawn at random. */
   readonly waits?: CeilingPhase;
+  /** How the young of one animal vary; Poisson where it is missing. */
+  readonly offspring?: Offspring;
+  /** Where both sexes are followed. */
+  readonly mating?: Mating;
+}
+
+/** Around a mean of m, the entry of `births`. */
+export type Offspring =
+  /** Up to `largest` young, each with chance m / largest. */
+  | { readonly by: 'binomial'; readonly largest: number }
+  /** Variance m + m²/size. */
+  | { readonly by: 'negative binomial'; readonly size: number }
+  /** By class the chances of 0, 1, 2, … young, null for a class that does not breed; each of them lives with chance m over their mean. */
+  | { readonly by: 'table'; readonly chances: readonly (Float64Array | null)[] };
+
+/** Scales all births of a patch by φ(F, M), with F and M the animals of these classes there at the start of the phase. */
+export interface Mating {
+  readonly form: 'female-dominant' | 'harmonic mean' | 'minimum';
+  /** 1 for each class that counts. */
+  readonly females: Uint8Array;
+  readonly males: Uint8Array;
+  /** h. */
+  readonly femalesPerMale: number;
 }
 export interface SurvivalPhase extends PhaseBase {
   readonly kind: 'survival';
@@ -147,6 +170,8 @@ export interface OutcomeRule {
   readonly definition: string;
 }
 
+export type Sex = 'female' | 'male';
+
 export interface NamedNumber {
   readonly name: string;
   readonly value: number;
@@ -170,6 +195,8 @@ export interface Model {
   readonly oldest: 'open-ended' | 'terminal' | null;
   readonly patches: readonly Patch[];
   readonly classes: readonly string[];
+  /** By class; missing where the sexes are not told apart. */
+  readonly sexes?: readonly Sex[];
   readonly parameters: readonly NamedNumber[];
   /** From one count to the next: the phases after `count` in the author's list, then those before it, `count` last. */
   readonly phases: readonly Phase[];

@@ -5,13 +5,8 @@ import { fail, tellUnknown, type Context } from './context.ts';
 import { resolveCeiling, withWaiting } from './ceiling.ts';
 import { resolveDemography } from './demography.ts';
 import { resolveDispersal } from './dispersal.ts';
-import {
-  resolveAgeing,
-  resolveBreeding,
-  resolveNamedBreeding,
-  resolveNamedSurvival,
-  resolveSurvival,
-} from './life-phases.ts';
+import { resolveBreeding, resolveNamedBreeding } from './breeding.ts';
+import { resolveAgeing, resolveNamedSurvival, resolveSurvival } from './life-phases.ts';
 import type { Phase } from './model.ts';
 
 /** The phases that every study can use without naming them itself. */
@@ -95,8 +90,14 @@ function refuseRepeats(context: Context): void {
 
 function tellUnused(context: Context): void {
   const { spec } = context;
-  const owners = { survival: 'survival', births: 'breeding', demography: 'demography' } as const;
-  for (const key of ['survival', 'births', 'demography'] as const) {
+  const owners = {
+    survival: 'survival',
+    births: 'breeding',
+    offspring: 'breeding',
+    mating: 'breeding',
+    demography: 'demography',
+  } as const;
+  for (const key of ['survival', 'births', 'offspring', 'mating', 'demography'] as const) {
     if (spec[key] !== undefined && !spec.year.includes(owners[key])) tellUnusedKey(context, key, owners[key]);
   }
   for (const name of Object.keys(spec.named)) {

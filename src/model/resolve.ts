@@ -2,6 +2,7 @@
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Context } from './context.ts';
+import { resolveClasses } from './classes.ts';
 import { resolveCrowding } from './crowding.ts';
 import type { Model } from './model.ts';
 import { Numbers } from './numbers.ts';
@@ -43,15 +44,16 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
   const { patches, attributes, attributeNames } = resolvePatches(spec, findings);
   const numbers = new Numbers(namedExpressions(spec), attributeNames, findings);
   const defaults: string[] = [];
+  const classes = resolveClasses(spec, findings);
   if (spec['first-year'] === undefined)
     defaults.push('The first step is year 1, and the start year 0, since no `first-year` is given.');
   return {
     spec,
     patches,
-    classes: spec.classes,
+    ...classes,
     names: {
       patches: new Map(patches.map((patch, p) => [patch.name, p])),
-      classes: new Map(spec.classes.map((name, c) => [name, c])),
+      classes: new Map(classes.classes.map((name, c) => [name, c])),
     },
     numbers,
     attributes,
@@ -62,7 +64,7 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
   };
 }
 
-function head({ spec, patches, classes, time }: Context) {
+function head({ spec, patches, classes, sexes, time }: Context) {
   const { study } = spec;
   return {
     title: study.title,
@@ -75,9 +77,10 @@ function head({ spec, patches, classes, time }: Context) {
     firstYear: time.firstYear,
     steps: time.steps,
     counts: spec.counts,
-    oldest: spec.oldest ?? null,
+    oldest: typeof spec.oldest === 'object' ? null : (spec.oldest ?? null),
     patches,
     classes,
+    ...(sexes === null ? {} : { sexes }),
     year: spec.year,
   } as const;
 }

@@ -2,9 +2,10 @@
 import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
 import type { WeatherFacts } from '../analysis/weather.ts';
 import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
-import type { DispersalPhase, Model, Phase } from '../model/model.ts';
+import type { BreedingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { placesWords } from './places-text.ts';
+import { litterWords, matingWords } from './breeding-words.ts';
 import { fixed } from './rounded.ts';
 import { weatherWords } from './weather-words.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
@@ -72,10 +73,12 @@ function phaseWords(model: Model, phase: Phase): string {
     case 'survival':
       return `${phase.name}: each animal lives on or dies`;
     case 'breeding':
-      return `${phase.name}: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}`;
+      return `${phase.name}: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}${breedingWords(phase)}`;
     case 'ageing': {
-      const last = model.classes.at(-1) ?? '';
-      return `ageing: each goes on to the next class; ${last} ${model.oldest === 'terminal' ? 'leaves the model' : 'stays'}`;
+      const named = (chosen: (c: number) => boolean) => model.classes.filter((_, c) => chosen(c)).join(', ');
+      const [stay, leave] = [named((c) => phase.next[c] === c), named((c) => phase.next[c] === -1)];
+      const ends = [...(stay === '' ? [] : [`${stay} stays`]), ...(leave === '' ? [] : [`${leave} leaves the model`])];
+      return `ageing: each goes on to the next class; ${ends.join('; ')}`;
     }
     case 'demography':
       return 'demography: fates and births of a whole year at once';
@@ -88,6 +91,13 @@ function phaseWords(model: Model, phase: Phase): string {
       return `${phase.name}: where there are more ${counted} than the capacity, ${surplusWords[phase.takes ?? 'at random']}`;
     }
   }
+}
+
+function breedingWords({ offspring, mating, waits }: BreedingPhase): string {
+  const litters = offspring === undefined ? [] : [litterWords(offspring)];
+  const mates = mating === undefined ? [] : [matingWords(mating)];
+  const places = waits === undefined ? [] : [`no more breed than \`${waits.name}\` has room for`];
+  return [...litters, ...mates, ...places].map((words) => `; ${words}`).join('');
 }
 
 const surplusWords = {

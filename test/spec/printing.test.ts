@@ -45,6 +45,8 @@ test('a spec that uses every key comes back', () => {
       natal_leaving: 22 %
     survival: { newborn: 0.38, yearling: 0.62, adult: adult_survival }
     births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newborn }
+    offspring: { distribution: binomial, largest-litter: 6 }
+    mating: { form: minimum, males: [adult], females: all, females-per-male: 4 }
     demography: { fates: [[0, 0, 0], [0.3, 0, 0], [0, "min(0.5, cover)", 0.8]] }
     in:
       Saltmarsh:
@@ -73,9 +75,22 @@ test('a spec that uses every key comes back', () => {
       shares:
         North fen: { Saltmarsh: 0.1 }
     room: { kind: ceiling, counted: [adult], capacity: 2 * capacity, takes: at random }
+    mates:
+      kind: crowding
+      form: allee
+      changes: { moult: all }
+      counted: all
+      allee-half: 3
     second brood:
       kind: breeding
       births: { adult: 0.5, female-share: 0.5, into: newborn }
+      offspring: { distribution: bernoulli }
+    late brood:
+      kind: breeding
+      births: { into: newborn }
+      offspring:
+        distribution: table of chances
+        chances: { adult: [0.5, 0.5] }
     moult:
       kind: survival
       survival: { newborn: 1, yearling: 0.98, adult: 0.97 }

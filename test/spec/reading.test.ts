@@ -34,7 +34,16 @@ test('a spec that uses every key is read without a word', () => {
 
 test('sections of the author’s own stand under `named`, and only there', () => {
   const { spec } = read(wholeText);
-  expect(Object.keys(spec.named)).toEqual(['natal', 'roaming', 'room', 'second brood', 'moult', 'wandering']);
+  expect(Object.keys(spec.named)).toEqual([
+    'natal',
+    'roaming',
+    'room',
+    'mates',
+    'second brood',
+    'late brood',
+    'moult',
+    'wandering',
+  ]);
   expect(spec.named['room']).toEqual({
     kind: 'ceiling',
     counted: ['adult'],

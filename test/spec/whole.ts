@@ -69,7 +69,11 @@ variation:
   between-rates: { survival of adult: { litter: 0.4 } }
   between-patches: { range: 20 km }
   autocorrelation: 0.2
-second brood: { kind: breeding, births: { adult: 0.5, female-share: 0.5, into: newborn } }
+mates: { kind: crowding, form: allee, changes: { moult: all }, counted: all, allee-half: 3 }
+second brood: { kind: breeding, births: { adult: 0.5, female-share: 0.5, into: newborn }, offspring: { distribution: bernoulli } }
+late brood: { kind: breeding, births: { into: newborn }, offspring: { distribution: table of chances, chances: { adult: [0.5, 0.5] } } }
+offspring: { distribution: binomial, largest-litter: 6 }
+mating: { form: minimum, males: [adult], females: all, females-per-male: 4 }
 moult: { kind: survival, survival: { newborn: 1, yearling: 0.98, adult: 0.97 } }
 wandering:
   kind: dispersal

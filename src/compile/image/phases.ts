@@ -1,21 +1,13 @@
 // The record of each phase, and the sections that it names.
 import * as layout from '../../../assembly/layout.ts';
-import type { Movement } from '../../landscape/landscape.ts';
 import type * as M from '../../model/model.ts';
 import { addSlotLists } from './slot-lists.ts';
+import { breedingRecord } from './breeding.ts';
 import { addMovement } from './movement.ts';
+import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
-import { plain, type SectionList } from './section.ts';
-
-export interface PhasePlace {
-  readonly list: SectionList;
-  readonly model: M.Model;
-  readonly index: number;
-  readonly key: number;
-  readonly movement: Movement | null;
-  /** Ways of the dispersals before this phase. */
-  readonly waysBefore: number;
-}
+import { addTable } from './table.ts';
+import { plain } from './section.ts';
 
 export function phaseRecord(phase: M.Phase, place: PhasePlace): Int32Array {
   switch (phase.kind) {
@@ -44,35 +36,6 @@ function countRecord({ list, model, index, key }: PhasePlace): Int32Array {
     list.add(plain(layout.kindOutcomePatches, patches, 'outcomes')),
     model.outcomes.length,
   ]);
-}
-
-function breedingRecord(phase: M.BreedingPhase, { list, model, index, key }: PhasePlace): Int32Array {
-  return record(layout.opBreeding, key, index, [
-    addTable(list, layout.kindRates, phase.births, `births of ${phase.name}`),
-    list.add(plain(layout.kindClassShares, phase.into, `into of ${phase.name}`)),
-    list.add(plain(layout.kindClassShares, onwardShares(phase.into), `into of ${phase.name}`)),
-    addSlotLists(list, model, index, 'births'),
-    ...(phase.waits === undefined ? [] : waitingRows(list, phase.waits)),
-  ]);
-}
-
-function waitingRows(list: SectionList, { name, counted, capacity }: M.CeilingPhase): readonly number[] {
-  return [
-    list.add(plain(layout.kindClassMask, Int32Array.from(counted), `counted of ${name}`)),
-    list.add(plain(layout.kindPatchNumbers, capacity, `capacity of ${name}`)),
-  ];
-}
-
-/** share[c] / (share[c] + all later shares): 1 for the last class that has a share. */
-function onwardShares(shares: Float64Array): Float64Array {
-  const onward = new Float64Array(shares.length);
-  let rest = 0;
-  for (let c = shares.length - 1; c >= 0; c--) {
-    const share = shares[c] ?? 0;
-    rest += share;
-    onward[c] = share > 0 ? share / rest : 0;
-  }
-  return onward;
 }
 
 function survivalRecord(phase: M.SurvivalPhase, { list, model, index, key }: PhasePlace): Int32Array {
@@ -123,13 +86,3 @@ const takesCodes = {
   'youngest first': layout.takesYoungest,
   nobody: layout.takesNobody,
 } as const;
-
-/** Adds a table once per epoch, and which epoch holds in each step where there are several. */
-function addTable(list: SectionList, kind: number, table: M.RateTable, reads: string): number {
-  const columns = table.epochs[0]?.length ?? 0;
-  const data = new Float64Array(columns * table.epochs.length);
-  table.epochs.forEach((epoch, i) => data.set(epoch, i * columns));
-  const many = table.epochs.length > 1;
-  const epochOf = many ? list.add(plain(layout.kindEpochOf, table.epochOf, reads)) : layout.none;
-  return list.add({ kind, data, columns, epochOf, reads });
-}

@@ -45,7 +45,24 @@ const kinds: readonly (readonly [number, string])[] = [
 
 /** For each opcode its word, then the words of its operands in order. */
 const opcodes: readonly (readonly [number, readonly string[]])[] = [
-  [layout.opBreeding, ['breeding', 'births', 'into', 'onward', 'slots', 'waiting', 'places']],
+  [
+    layout.opBreeding,
+    [
+      'breeding',
+      'births',
+      'into',
+      'onward',
+      'slots',
+      'waiting',
+      'places',
+      'offspring',
+      'litters',
+      'litter means',
+      'mating',
+      'sexes',
+      'per male',
+    ],
+  ],
   [layout.opSurvival, ['survival', 'rates', 'slots']],
   [layout.opAgeing, ['ageing', 'advance', 'next']],
   [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],

@@ -49,7 +49,9 @@ function entities(model: Model): Markup {
   const places = patches.every((patch) => patch.at !== null)
     ? 'with places on a plane in kilometres'
     : 'without places';
-  const what = counts === 'females' ? 'Only females are counted.' : 'Both sexes are counted together.';
+  const both =
+    model.sexes === undefined ? 'Both sexes are counted together.' : 'Both sexes are followed in classes of their own.';
+  const what = counts === 'females' ? 'Only females are counted.' : both;
   const patchNames = names(inFileOrder(model).map((p) => patches[p]?.name ?? ''));
   return mark`<p>The state is the number of animals of each class in each patch: ${plain(classes.length)} classes
 (${names(classes)}) in ${plain(patches.length)} patches ${places} (${patchNames}).

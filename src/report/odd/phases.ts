@@ -1,5 +1,6 @@
 // What one phase of the year does, in a sentence.
-import type { Model, Phase } from '../../model/model.ts';
+import type { BreedingPhase, Model, Phase } from '../../model/model.ts';
+import { litterWords, matingWords } from '../breeding-words.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { names } from '../section/section.ts';
 
@@ -12,8 +13,7 @@ function act(phase: Phase, model: Model): Content {
     case 'count':
       return 'the animals are counted; thresholds are looked at here, and the year ends.';
     case 'breeding':
-      return mark`young are born, a Poisson number around the sum over their mothers, and enter
-${classNames(model, phase.into)}.`;
+      return mark`young are born, ${youngWords(phase)}, and enter ${classNames(model, phase.into)}.`;
     case 'survival':
       return 'each animal survives or dies by itself (binomial).';
     case 'ageing':
@@ -27,6 +27,12 @@ way (multinomial).`;
     case 'ceiling':
       return mark`where more animals of ${classNames(model, phase.counted)} are present than the patch can hold, ${surplusWords[phase.takes ?? 'at random']}.`;
   }
+}
+
+function youngWords({ offspring, mating }: BreedingPhase): string {
+  const litters =
+    offspring === undefined ? 'a Poisson number around the sum over their mothers' : litterWords(offspring);
+  return mating === undefined ? litters : `${litters}; ${matingWords(mating)}`;
 }
 
 const surplusWords = {

@@ -33,7 +33,11 @@ function numbers(phase: Phase, model: Model): Content {
     case 'count':
       return null;
     case 'breeding':
-      return rateTable(model, phase.births, `Young (${model.counts}) for each animal`);
+      return rateTable(
+        model,
+        phase.births,
+        `Young (${model.counts}) for each animal${phase.mating === undefined ? '' : ', before mating'}`,
+      );
     case 'survival':
       return rateTable(model, phase.survival, 'Share that survives');
     case 'ageing':

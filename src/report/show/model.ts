@@ -1,7 +1,7 @@
 // The model with all names resolved, as plain data and as text that can be compared line by line.
 import { stringify } from 'yaml';
 import { variationJson } from './variation.ts';
-import type { Model, Phase, RateTable } from '../../model/model.ts';
+import type { BreedingPhase, Model, Phase, RateTable } from '../../model/model.ts';
 
 export function modelText(model: Model): string {
   return stringify(modelJson(model), { lineWidth: 0, flowCollectionPadding: true });
@@ -43,6 +43,7 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
 
 function phaseJson(model: Model, phase: Phase): unknown {
   const classes = (values: ArrayLike<number>) => named(model.classes, values);
+  const mask = (values: Uint8Array) => model.classes.filter((_, c) => values[c] === 1);
   switch (phase.kind) {
     case 'count':
       return phase;
@@ -54,6 +55,17 @@ function phaseJson(model: Model, phase: Phase): unknown {
         ...(phase.waits === undefined ? {} : { waits: phase.waits.name }),
         births: tableJson(model, phase.births),
         into: classes(phase.into),
+        ...(phase.offspring?.by === 'table'
+          ? {
+              offspring: {
+                by: 'table',
+                chances: Object.fromEntries(model.classes.map((name, c) => [name, chancesOf(phase, c)])),
+              },
+            }
+          : {}),
+        ...(phase.mating === undefined
+          ? {}
+          : { mating: { ...phase.mating, females: mask(phase.mating.females), males: mask(phase.mating.males) } }),
       };
     case 'ageing':
       return {
@@ -89,6 +101,10 @@ function phaseJson(model: Model, phase: Phase): unknown {
         ),
       };
   }
+}
+
+function chancesOf({ offspring }: BreedingPhase, c: number): readonly number[] {
+  return offspring?.by === 'table' ? Array.from(offspring.chances[c] ?? []) : [];
 }
 
 function named(names: readonly string[], values: ArrayLike<number>): Readonly<Record<string, number>> {

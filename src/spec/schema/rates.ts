@@ -1,4 +1,5 @@
 import { Type } from 'typebox';
+import { Mating, Offspring } from './breeding.ts';
 import { byClass, classList, expression, Name } from './values.ts';
 
 const young = 'Young of the counted sex for each animal of the class that is present in the phase `breeding`.';
@@ -55,6 +56,8 @@ export const NamedBreeding = Type.Object(
   {
     kind: Type.Literal('breeding', { description: 'Animals have young.', examples: ['breeding'] }),
     births: Births,
+    offspring: Type.Optional(Offspring),
+    mating: Type.Optional(Mating),
   },
   { additionalProperties: false, title: 'a breeding', description: 'Births of a season, under a name of its own.' },
 );

@@ -1,5 +1,7 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
+import { Mating, Offspring } from './breeding.ts';
+import { Classes, Oldest } from './classes.ts';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
 import { InlinePatches, Parameters, Patches, type InlinePatch } from './patches.ts';
 import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
@@ -48,22 +50,13 @@ export const CoreSchema = Type.Object(
       description: 'What one individual of the model stands for.',
       examples: ['females'],
     }),
-    classes: Type.Array(Name, {
-      minItems: 1,
-      uniqueItems: true,
-      title: 'a list of names',
-      description: 'Age or stage classes, the youngest first.',
-      examples: ['[newborn, yearling, adult]'],
-    }),
-    oldest: Type.Optional(
-      Type.Union([Type.Literal('open-ended'), Type.Literal('terminal')], {
-        description: 'Whether the oldest class stays in itself or leaves the model when it ages.',
-        examples: ['open-ended'],
-      }),
-    ),
+    classes: Classes,
+    oldest: Type.Optional(Oldest),
     parameters: Type.Optional(Parameters),
     survival: Type.Optional(Survival),
     births: Type.Optional(Births),
+    offspring: Type.Optional(Offspring),
+    mating: Type.Optional(Mating),
     demography: Type.Optional(Demography),
     in: Type.Optional(InPatches),
     year: Type.Array(Name, {
