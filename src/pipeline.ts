@@ -102,7 +102,8 @@ export async function runModelWith(
 }
 
 function withReplicates(compiled: CompiledModel, replicates: number): CompiledModel {
-  const spec = { ...compiled.spec, run: { ...compiled.spec.run, replicates } };
+  const { named, ...core } = compiled.spec;
+  const spec = { ...core, run: { ...core.run, replicates }, named };
   const model = { ...compiled.model, replicates };
   return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
 }

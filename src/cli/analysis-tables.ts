@@ -62,7 +62,10 @@ function statesTable({ stableDistribution, reproductiveValue, lifetimes }: Analy
       patch,
       className,
       column('share', 'share', 'Share of the stable distribution.'),
-      column('reproductive_value', '', 'Worth of one animal for the future; the first that counts has 1.'),
+      {
+        ...column('reproductive_value', '', 'Worth of one animal for the future; the first that counts has 1.'),
+        type: 'number',
+      },
       column('life_expectancy', 'counts', 'Counts until death, the present one included.'),
       column('life_variance', 'counts squared', 'Variance of that between animals.'),
     ],

@@ -7,6 +7,14 @@ import { reasonOf, writeAll } from './output.ts';
 /** A file that appears under its name only once all of it is written. */
 export interface PendingFile {
   finish(content: string | Uint8Array): void;
+  /** All of it is written; only its name is still to come. */
+  prepare(content: string | Uint8Array): PreparedFile;
+}
+
+export interface PreparedFile {
+  publish(): void;
+  /** Leaves nothing behind, unless it is published already. */
+  discard(): void;
 }
 
 /** Tries the place first, so that one that cannot be written is told before the work and not after it. */
@@ -17,7 +25,8 @@ export function pendingFile(path: string): PendingFile {
   // A link stays a link: what it points to is written.
   const target = attempt(path, () => (kind === 'file' ? realpathSync(path) : path));
   closeTemporary(openTemporary(path, target));
-  return { finish: (content) => writeWhole({ path, target, content }) };
+  const prepare = (content: string | Uint8Array): PreparedFile => prepareFile({ path, target, content });
+  return { prepare, finish: (content) => finishNow(prepare(content)) };
 }
 
 type Kind = 'none' | 'file' | 'folder' | 'device';
@@ -31,14 +40,24 @@ function kindOf(path: string): Kind {
 /** A device or a pipe is written as it stands; another file in its place would take it away. */
 function device(path: string): PendingFile {
   const descriptor = attempt(path, () => openSync(path, 'w'));
-  return {
-    finish: (content) => {
+  const prepare = (content: string | Uint8Array): PreparedFile => ({
+    publish: () => {
       writeAll(descriptor, content, path);
       attempt(path, () => {
         closeSync(descriptor);
       });
     },
-  };
+    discard: () => undefined,
+  });
+  return { prepare, finish: (content) => finishNow(prepare(content)) };
+}
+
+function finishNow(prepared: PreparedFile): void {
+  try {
+    prepared.publish();
+  } finally {
+    prepared.discard();
+  }
 }
 
 interface Temporary {
@@ -62,16 +81,25 @@ interface Whole {
   readonly content: string | Uint8Array;
 }
 
-function writeWhole({ path, target, content }: Whole): void {
+function prepareFile({ path, target, content }: Whole): PreparedFile {
   const temporary = openTemporary(path, target);
   try {
     writeAll(temporary.descriptor, content, path);
-    attempt(path, () => {
-      renameSync(temporary.name, target);
-    });
-  } finally {
+    closeSync(temporary.descriptor);
+  } catch (error) {
     closeTemporary(temporary);
+    throw error;
   }
+  return {
+    publish: () => {
+      attempt(path, () => {
+        renameSync(temporary.name, target);
+      });
+    },
+    discard: () => {
+      rmSync(temporary.name, { force: true });
+    },
+  };
 }
 
 /** With all folders above it. */

@@ -5,7 +5,7 @@ import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
 import { writeError, writeOut } from './output.ts';
 
-type Handler<Options> = (model: string, options: Options) => void | Promise<void>;
+type Handler<Path, Options> = (path: Path, options: Options) => void | Promise<void>;
 
 function buildProgram(): Command {
   const program = new Command('skein')
@@ -69,7 +69,10 @@ function addRuns(program: Command): void {
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
   const chance = ['set', 'years', 'replicates', 'seed', 'threads'] as const;
-  model(program, 'run', 'run the model many times with chance', [...chance, 'json', 'out', 'quiet'])
+  addOptions(program.command('run'), [...chance, 'json', 'out', 'quiet', 'allow'])
+    .argument('[model]', 'a model file, or - for standard input')
+    .description('run the model many times with chance')
+    .option('--again <file>', 'run what a run.json of `--out` holds, to the last byte')
     .addHelpText('after', '\nExample:\n  skein run models/reed-hare.yaml --replicates 500 --seed 7')
     .action(run(async () => (await import('./command/run.ts')).runCommand));
   model(program, 'report', 'run the model and write one page that an agency can read', [...chance, 'quiet'])
@@ -84,8 +87,8 @@ function model(program: Command, name: string, what: string, shared: Parameters<
     .description(what);
 }
 
-function run<Options>(load: () => Promise<Handler<Options>>) {
-  return async (path: string, options: Options): Promise<void> => {
+function run<Path, Options>(load: () => Promise<Handler<Path, Options>>) {
+  return async (path: Path, options: Options): Promise<void> => {
     await (
       await load()
     )(path, options);

@@ -1,15 +1,21 @@
-// What `--out` writes: results, tidy tables with a dictionary, and what is needed to run again.
+// What `--out` writes: results, tidy tables with a dictionary, what is needed to run again, and how the work went. Every file
+// is written whole under another name first; only then do all of them get theirs, one after the other.
 import { join } from 'node:path';
 import type { Analysis } from '../analysis/schema.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
-import { makeFolder, pendingFile } from './files.ts';
+import { makeFolder, pendingFile, type PreparedFile } from './files.ts';
+import { logOf } from './log.ts';
+import { parquetBytes } from './parquet.ts';
 import { specJson } from './spec-json.ts';
 import { csvText, dictionaryText, type Table } from './tables.ts';
 
 export interface OutContent {
+  readonly command: 'run' | 'path' | 'analyse';
   readonly results: RunResults | PathResults | Analysis;
   readonly tables: readonly Table[];
+  /** 1 where it is not said. */
+  readonly threads?: number;
 }
 
 export interface OutFolder {
@@ -18,20 +24,42 @@ export interface OutFolder {
 
 /** Made, and tried for writing, before the work begins. */
 export function openOutFolder(folder: string): OutFolder {
+  const started = new Date();
   makeFolder(folder);
   pendingFile(join(folder, 'results.json'));
   return {
-    write: ({ spec, provenance }, { results, tables }) => {
-      const put = (name: string, text: string): void => {
-        pendingFile(join(folder, name)).finish(text);
-      };
-      for (const table of tables) put(`${table.name}.csv`, csvText(table));
-      put('dictionary.csv', dictionaryText(tables));
-      put(
-        'run.json',
-        `${JSON.stringify({ format: 'skein-inputs/1', ...provenance, spec: specJson(spec) }, null, 2)}\n`,
-      );
-      put('results.json', `${JSON.stringify(results, null, 2)}\n`);
+    write: ({ spec, provenance }, { command, results, tables, threads = 1 }) => {
+      const inputs = { format: 'skein-inputs/1', command, ...provenance, spec: specJson(spec) };
+      writeTogether(folder, [
+        ...tables.flatMap((table) => tableFiles(table)),
+        ['dictionary.csv', dictionaryText(tables)],
+        ['results.json', jsonText(results)],
+        ['log.json', jsonText(logOf({ command, hash: provenance.hash, started, threads }))],
+        ['run.json', jsonText(inputs)],
+      ]);
     },
   };
+}
+
+type NamedContent = readonly [name: string, content: string | Uint8Array];
+
+function tableFiles(table: Table): readonly NamedContent[] {
+  return [
+    [`${table.name}.csv`, csvText(table)],
+    [`${table.name}.parquet`, parquetBytes(table)],
+  ];
+}
+
+function jsonText(value: unknown): string {
+  return `${JSON.stringify(value, null, 2)}\n`;
+}
+
+function writeTogether(folder: string, files: readonly NamedContent[]): void {
+  const prepared: PreparedFile[] = [];
+  try {
+    for (const [name, content] of files) prepared.push(pendingFile(join(folder, name)).prepare(content));
+    for (const file of prepared) file.publish();
+  } finally {
+    for (const file of prepared) file.discard();
+  }
 }

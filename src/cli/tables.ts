@@ -1,13 +1,18 @@
 // Results as tidy tables: one row an observation, each column with its unit and meaning in the dictionary.
 import type { Model } from '../model/model.ts';
-import type { PathResults, RunResults, YearSummary } from '../results/results.ts';
+import type { PathResults, Quantiles, RunResults, YearSummary } from '../results/results.ts';
+import { inFileOrder } from '../results/summarise.ts';
 
 export type Cell = string | number | null;
+
+type ColumnType = 'text' | 'integer' | 'number';
 
 export interface Column {
   readonly name: string;
   readonly unit: string;
   readonly meaning: string;
+  /** Where it is not said: text without a unit, an integer for a year, a number with any other unit. */
+  readonly type?: ColumnType;
 }
 
 export interface Table {
@@ -27,6 +32,8 @@ export function runTables(model: Model, results: RunResults): readonly Table[] {
     outcomeTable(results),
     chanceTable(results),
     inUseTable(results),
+    lowestTable(results),
+    patchTable(model),
     parameterTable(model),
   ];
 }
@@ -47,10 +54,11 @@ export function pathTables({ abundance }: PathResults): readonly Table[] {
 }
 
 function abundanceTable({ abundance }: RunResults): Table {
-  const row = (name: string | null, s: YearSummary): readonly Cell[] => {
-    const q = s.quantiles;
-    return [s.year, name, s.mean, s.sd, q['0.05'], q['0.25'], q['0.5'], q['0.75'], q['0.95']];
-  };
+  const row = (name: string | null, s: YearSummary, empty: number | null): readonly Cell[] => [
+    ...[s.year, name, s.mean, s.sd],
+    ...quantileCells(s.quantiles),
+    empty,
+  ];
   return {
     name: 'abundance',
     columns: [
@@ -58,15 +66,30 @@ function abundanceTable({ abundance }: RunResults): Table {
       patch,
       animals('mean', 'Mean over the runs.'),
       animals('sd', 'Standard deviation between the runs.'),
-      ...['0.05', '0.25', '0.5', '0.75', '0.95'].map((q) =>
-        animals(`quantile_${q}`, `Count that a share of ${q} of the runs does not exceed.`),
-      ),
+      ...quantileColumns('animals', 'Count'),
+      share('empty', 'Share of the runs in which nobody is in the patch; missing for all patches together.'),
     ],
     rows: [
-      ...abundance.whole.map((summary) => row(null, summary)),
-      ...abundance.patches.flatMap((one) => one.byYear.map((summary) => row(one.patch, summary))),
+      ...abundance.whole.map((summary) => row(null, summary, null)),
+      ...abundance.patches.flatMap((one) =>
+        one.byYear.map((summary, t) => row(one.patch, summary, one.empty?.[t] ?? null)),
+      ),
     ],
   };
+}
+
+const levels = ['0.05', '0.25', '0.5', '0.75', '0.95'] as const;
+
+function quantileColumns(unit: string, what: string): readonly Column[] {
+  return levels.map((level) => ({
+    name: `quantile_${level}`,
+    unit,
+    meaning: `${what} that a share of ${level} of the runs does not exceed.`,
+  }));
+}
+
+function quantileCells(quantiles: Quantiles): readonly Cell[] {
+  return levels.map((level) => quantiles[level]);
 }
 
 const outcome: Column = { name: 'outcome', unit: '', meaning: "The author's name of the outcome." };
@@ -109,8 +132,52 @@ function chanceTable({ outcomes }: RunResults): Table {
 function inUseTable({ patchesInUse }: RunResults): Table {
   return {
     name: 'patches_in_use',
-    columns: [year, { name: 'mean', unit: 'patches', meaning: 'Mean number of patches with at least one animal.' }],
-    rows: patchesInUse.map((one) => [one.year, one.mean]),
+    columns: [
+      year,
+      { name: 'mean', unit: 'patches', meaning: 'Mean number of patches with at least one animal.' },
+      ...quantileColumns('patches', 'Number of patches'),
+    ],
+    rows: patchesInUse.map((one) => [one.year, one.mean, ...quantileCells(one.quantiles)]),
+  };
+}
+
+function lowestTable({ meanLowestCount, replicates, stopped }: RunResults): Table {
+  return {
+    name: 'lowest_count',
+    columns: [
+      animals('mean', 'Mean over the runs of the lowest count of all animals, the start included.'),
+      animals('sd', 'Standard deviation between the runs.'),
+      animals('standard_error', 'How far the mean may be off from the number of runs.'),
+      { name: 'runs', unit: 'runs', type: 'integer', meaning: 'Runs that every number of these tables is from.' },
+      { name: 'stopped', unit: 'runs', type: 'integer', meaning: 'Runs that had to be stopped and are left out.' },
+    ],
+    rows: [
+      [
+        meanLowestCount.mean,
+        meanLowestCount.sd,
+        meanLowestCount.standardError,
+        replicates - stopped.runs,
+        stopped.runs,
+      ],
+    ],
+  };
+}
+
+function patchTable(model: Model): Table {
+  return {
+    name: 'patches',
+    columns: [
+      { name: 'patch', unit: '', meaning: 'Name of the patch.' },
+      { name: 'x', unit: 'km', meaning: 'Position to the east; missing where none was given.' },
+      { name: 'y', unit: 'km', meaning: 'Position to the north; missing where none was given.' },
+      { name: 'area', unit: 'km2', meaning: 'Area; missing where none was given.' },
+      animals('capacity', 'Capacity; missing where none was given.'),
+    ],
+    rows: inFileOrder(model).flatMap((p) => {
+      const patch = model.patches[p];
+      if (patch === undefined) return [];
+      return [[patch.name, patch.at?.[0] ?? null, patch.at?.[1] ?? null, patch.areaKm2, patch.capacity]];
+    }),
   };
 }
 
@@ -127,21 +194,30 @@ function parameterTable({ parameters }: Model): Table {
   };
 }
 
+export function typeOf({ type, unit }: Column): ColumnType {
+  return type ?? (unit === '' ? 'text' : unit === 'year' ? 'integer' : 'number');
+}
+
 /** RFC 4180, with a line feed; what is missing is empty. */
 export function csvText({ columns, rows }: Pick<Table, 'columns' | 'rows'>): string {
   return [columns.map((column) => column.name), ...rows].map((row) => `${row.map(csvCell).join(',')}\n`).join('');
 }
 
 export function dictionaryText(tables: readonly Table[]): string {
-  const names = ['table', 'column', 'unit', 'meaning'].map((name) => ({ name, unit: '', meaning: '' }));
+  const names = ['table', 'column', 'type', 'unit', 'meaning'].map((name) => ({ name, unit: '', meaning: '' }));
   const rows = tables.flatMap((table) =>
-    table.columns.map((column) => [table.name, column.name, column.unit, column.meaning]),
+    table.columns.map((column) => [table.name, column.name, typeOf(column), column.unit, column.meaning]),
   );
   return csvText({ columns: names, rows });
 }
 
+/** What is not known, or is no number, such as a mean over no run. */
+export function isMissing(cell: Cell): cell is null {
+  return cell === null || (typeof cell === 'number' && !Number.isFinite(cell));
+}
+
 function csvCell(cell: Cell): string {
-  if (cell === null) return '';
+  if (isMissing(cell)) return '';
   const text = String(cell);
   return /[",\n\r]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
 }

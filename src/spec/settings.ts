@@ -30,10 +30,12 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
     parameters[name] = typeof before === 'object' ? { ...before, value: expression } : expression;
   }
   const { years, replicates, seed } = settings;
+  // What the author named stays last, so that the spec reads back from its JSON with its keys in the same order.
+  const { named, ...core } = spec;
   return {
     ok: true,
     spec: {
-      ...spec,
+      ...core,
       ...(spec.parameters === undefined ? {} : { parameters }),
       ...(years === undefined ? {} : { years }),
       run: {
@@ -41,6 +43,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
         ...(replicates === undefined ? {} : { replicates }),
         ...(seed === undefined ? {} : { seed }),
       },
+      named,
     },
   };
 }

@@ -81,7 +81,10 @@ test('--out writes a table for each list, with a dictionary of every column', ()
   expect(skein(['analyse', ponds, '--out', 'here', '--quiet'], { cwd }).code).toBe(0);
   const tables = ['entries', 'growth', 'links', 'patches', 'states'];
   expect(filesIn(join(cwd, 'here'))).toEqual(
-    ['dictionary.csv', 'results.json', 'run.json', ...tables.map((name) => `${name}.csv`)].sort(),
+    [
+      ...['dictionary.csv', 'log.json', 'results.json', 'run.json'],
+      ...tables.flatMap((name) => [`${name}.csv`, `${name}.parquet`]),
+    ].sort(),
   );
   const dictionary = readFileSync(join(cwd, 'here/dictionary.csv'), 'utf8');
   for (const name of tables) {

@@ -15,19 +15,25 @@ describe('skein run --out', () => {
     const first = skein([...words, '--out', 'out'], { cwd });
     expect(first.code).toBe(0);
     const names = filesIn(join(cwd, 'out'));
-    expect(names).toEqual([
-      'abundance.csv',
-      'chances_by_year.csv',
-      'dictionary.csv',
-      'outcomes.csv',
-      'parameters.csv',
-      'patches_in_use.csv',
-      'results.json',
-      'run.json',
-    ]);
-    const before = names.map((name) => read(cwd, name));
+    const tables = [
+      'abundance',
+      'chances_by_year',
+      'lowest_count',
+      'outcomes',
+      'parameters',
+      'patches',
+      'patches_in_use',
+    ];
+    expect(names).toEqual(
+      [
+        ...tables.flatMap((name) => [`${name}.csv`, `${name}.parquet`]),
+        ...['dictionary.csv', 'log.json', 'results.json', 'run.json'],
+      ].sort(),
+    );
+    const others = names.filter((name) => name !== 'log.json');
+    const before = others.map((name) => read(cwd, name));
     expect(skein([...words, '--out', 'out'], { cwd })).toEqual(first);
-    expect(names.map((name) => read(cwd, name))).toEqual(before);
+    expect(others.map((name) => read(cwd, name))).toEqual(before);
     expect(filesIn(join(cwd, 'out'))).toEqual(names);
   });
 
@@ -66,7 +72,7 @@ describe('skein run --out', () => {
     const { format, hash, spec, ...others } = JSON.parse(read(cwd, 'run.json'));
     expect(format).toBe('skein-inputs/1');
     expect(hash).toBe(JSON.parse(out).hash);
-    expect(Object.keys(others).sort()).toEqual(['model', 'tool']);
+    expect(Object.keys(others).sort()).toEqual(['command', 'model', 'tool']);
     const again = skein(['run', '-', '--json'], { cwd, input: JSON.stringify(spec) });
     expect(again.out).toBe(out);
   });
@@ -76,7 +82,9 @@ test('skein path --out writes the path', () => {
   const cwd = folder();
   const { code, out } = skein(['path', ponds, '--years', '4', '--json', '--out', 'out'], { cwd });
   expect(code).toBe(0);
-  expect(filesIn(join(cwd, 'out'))).toEqual(['dictionary.csv', 'path.csv', 'results.json', 'run.json']);
+  expect(filesIn(join(cwd, 'out'))).toEqual([
+    ...['dictionary.csv', 'log.json', 'path.csv', 'path.parquet', 'results.json', 'run.json'],
+  ]);
   const rows = csvParse(readFileSync(join(cwd, 'out/path.csv'), 'utf8'));
   expect(rows.map((row) => Number(row['animals']))).toEqual(
     JSON.parse(out).abundance.map((one: { readonly animals: number }) => one.animals),

@@ -20,7 +20,7 @@ export function analyseCommand(path: string, options: AnalyseCommandOptions): vo
   const folder = options.out === undefined ? null : openOutFolder(options.out);
   const found = analyseModel(compiled, { at: options.at, wantEigenvalues: options.eigenvalues === true });
   if (found.value === null) throw new Ending(exitCodes.work, `--at ${options.at}: ${found.reason}`);
-  folder?.write(compiled, { results: found.value, tables: analysisTables(found.value) });
+  folder?.write(compiled, { command: 'analyse', results: found.value, tables: analysisTables(found.value) });
   if (options.json === true) writeOut(`${JSON.stringify(found.value, null, 2)}\n`);
   else writeOut(analysisText(found.value, terminalOf(process.stdout)));
 }

@@ -12,7 +12,7 @@ export function pathCommand(path: string, options: CommonOptions): void {
   const { compiled } = loadModel(path, settingsOf(options), options);
   const folder = options.out === undefined ? null : openOutFolder(options.out);
   const results = followPath(compiled);
-  folder?.write(compiled, { results, tables: pathTables(results) });
+  folder?.write(compiled, { command: 'path', results, tables: pathTables(results) });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
   else
     writeOut(

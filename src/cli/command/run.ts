@@ -1,5 +1,8 @@
 // skein run: stochastic replicates of one scenario.
+import type { CompiledModel } from '../../pipeline.ts';
 import { runText } from '../../report/text.ts';
+import { loadAgain } from '../again.ts';
+import { Ending, exitCodes } from '../exit.ts';
 import { openOutFolder, type OutFolder } from '../out-folder.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
@@ -8,15 +11,33 @@ import { runReplicates } from '../replicates.ts';
 import { runTables } from '../tables.ts';
 import { terminalOf } from '../terminal.ts';
 
-export async function runCommand(path: string, options: CommonOptions): Promise<void> {
-  const loaded = loadModel(path, settingsOf(options), options);
+export interface RunCommandOptions extends CommonOptions {
+  /** A run.json. */
+  readonly again?: string;
+}
+
+export async function runCommand(path: string | undefined, options: RunCommandOptions): Promise<void> {
+  const asked = load(path, options);
   const folder: OutFolder | null = options.out === undefined ? null : openOutFolder(options.out);
-  const { compiled, results, cutShort } = await runReplicates(loaded.compiled, options);
-  folder?.write(compiled, { results, tables: runTables(compiled.model, results) });
+  const { compiled, results, threads, cutShort } = await runReplicates(asked, options);
+  folder?.write(compiled, { command: 'run', results, tables: runTables(compiled.model, results), threads });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
   else {
     const animals = compiled.model.counts === 'females' ? 'females' : 'animals';
     writeOut(`${runText(results, { ...terminalOf(process.stdout), animals }).trimEnd()}\n`);
   }
   if (cutShort !== null) throw cutShort;
+}
+
+function load(path: string | undefined, options: RunCommandOptions): CompiledModel {
+  const { again, set, years, replicates, seed } = options;
+  if (again === undefined) {
+    if (path === undefined) throw new Ending(exitCodes.usage, 'Name a model, or a run.json with --again.');
+    return loadModel(path, settingsOf(options), options).compiled;
+  }
+  if ([path, set, years, replicates, seed].some((one) => one !== undefined)) {
+    const why = '--again takes the model, --set, --years, --replicates and --seed from its file; leave them out.';
+    throw new Ending(exitCodes.usage, why);
+  }
+  return loadAgain(again);
 }

@@ -1,0 +1,58 @@
+// Runs again what a run.json holds: the model with all its inputs, by a kernel that gives the same bytes.
+import { kernelVersion } from '../results/provenance.ts';
+import { compileSpec, type CompiledModel } from '../pipeline.ts';
+import { readSpec } from '../spec/read.ts';
+import { Ending, exitCodes } from './exit.ts';
+import { readText } from './input.ts';
+
+/** What a run.json says beside its spec. */
+interface Inputs {
+  readonly hash: string;
+  readonly spec: object;
+}
+
+export function loadAgain(path: string): CompiledModel {
+  const { hash, spec } = readInputs(path);
+  const { document } = readSpec(JSON.stringify(spec), path);
+  const compiled = document === undefined ? null : compileSpec(document.spec).compiled;
+  if (compiled?.provenance.hash !== hash) {
+    throw refused(path, 'its hash stands for other inputs, so it was changed. Its `spec` alone can be run as a model');
+  }
+  return compiled;
+}
+
+function readInputs(path: string): Inputs {
+  const read = parsed(path);
+  const { format, command, tool, hash, spec } = read;
+  if (format !== 'skein-inputs/1' || !isRecord(spec) || !isRecord(tool) || typeof hash !== 'string') {
+    throw refused(path, 'it is not the run.json of a run');
+  }
+  if (command !== 'run') throw refused(path, `it belongs to \`skein ${String(command)}\``);
+  const [made, here] = [String(tool['kernel']), kernelVersion];
+  if (made.split('.')[0] !== here.split('.')[0]) {
+    const version = String(tool['version']);
+    throw refused(
+      path,
+      `it was made by kernel ${made}, and kernel ${here} of this skein gives other bytes. Use skein ${version}`,
+    );
+  }
+  return { hash, spec };
+}
+
+function parsed(path: string): Readonly<Record<string, unknown>> {
+  try {
+    const value: unknown = JSON.parse(readText(path));
+    if (isRecord(value)) return value;
+  } catch (error) {
+    if (!(error instanceof SyntaxError)) throw error;
+  }
+  throw refused(path, 'it is not the run.json of a run');
+}
+
+function isRecord(value: unknown): value is Readonly<Record<string, unknown>> {
+  return typeof value === 'object' && value !== null && !Array.isArray(value);
+}
+
+function refused(path: string, why: string): Ending {
+  return new Ending(exitCodes.model, `Cannot run ${path} again: ${why}.`);
+}
