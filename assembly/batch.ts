@@ -32,6 +32,8 @@ export let numbers: usize = 0;
 export let moreNumbers: usize = 0;
 export let counts: usize = 0;
 export let moreCounts: usize = 0;
+/** f64 [lane]: how much of a capacity is left in the patch at hand */
+export let rooms: usize = 0;
 export let step: i32 = 0;
 
 export const cellBytes: usize = 64;
@@ -58,7 +60,7 @@ export function reserveBatch(): bool {
   work = reserve(<usize>header(headerWork) * laneNumbers);
   observed = reserve(<usize>columns * laneNumbers);
   moved = reserve((<usize>ways) << 3);
-  const small = reserve(1024);
+  const small = reserve(1152);
   replicates = small;
   stops = small + 64;
   words = small + 256;
@@ -67,6 +69,7 @@ export function reserveBatch(): bool {
   moreNumbers = small + 768;
   counts = small + 896;
   moreCounts = small + 960;
+  rooms = small + 1024;
   const states = animals !== 0 && arrivals !== 0 && slotValues !== 0 && weather !== 0 && work !== 0;
   return states && observed !== 0 && moved !== 0 && small !== 0;
 }

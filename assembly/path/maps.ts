@@ -4,6 +4,7 @@ import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { crowdingFactor, crowdingShapeOf } from '../phases/crowding';
 import { matingFactor } from '../phases/mating';
+import { roomOf } from './weather';
 import { add, animals, animalsIn, arrivals, scaleOf, slotValues, stateBytes, step } from './state';
 
 export function meanBreeding(record: usize): void {
@@ -15,7 +16,10 @@ export function meanBreeding(record: usize): void {
   for (let patch = 0; patch < patches; patch++) {
     let young: f64 = 0;
     const mated = matedShare(record, patch);
-    const share = waiting === 0 ? 1 : shareWithin(waiting, f64At(places, patch), patch);
+    const share =
+      waiting === 0
+        ? 1
+        : shareWithin(waiting, f64At(places, patch) * roomOf(operand(record, layout.breedingWaitRoom), patch), patch);
     for (let c = 0; c < classes; c++) {
       const births = f64At(table, patch * classes + c);
       if (births === 0) continue;
@@ -96,8 +100,9 @@ export function meanCeiling(record: usize): void {
   const takes = operand(record, layout.ceilingTakes);
   if (takes === layout.takesNobody) return;
   for (let patch = 0; patch < patches; patch++) {
-    if (takes === layout.takesYoungest) takeYoungest(counted, f64At(capacities, patch), patch);
-    else takeAlike(counted, shareWithin(counted, f64At(capacities, patch), patch), patch);
+    const capacity = f64At(capacities, patch) * roomOf(operand(record, layout.ceilingRoom), patch);
+    if (takes === layout.takesYoungest) takeYoungest(counted, capacity, patch);
+    else takeAlike(counted, shareWithin(counted, capacity, patch), patch);
   }
 }
 
@@ -132,7 +137,8 @@ export function meanCrowding(record: usize): void {
     for (let c = 0; c < classes; c++) all += f64At(weights, c) * animalsIn(patch, c);
     const at = (<usize>patch) << 3;
     const form = i32At(forms, patch);
-    const factor = crowdingFactor(all, form, load<f64>(coefficients + at), load<f64>(halves + at), shape);
+    const room = roomOf(operand(record, layout.crowdingRoom), patch);
+    const factor = crowdingFactor(all, room, form, load<f64>(coefficients + at), load<f64>(halves + at), shape);
     putF64(slotValues, slot * patches + patch, factor);
   }
 }

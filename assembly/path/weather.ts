@@ -30,3 +30,10 @@ export function meanCatastrophe(record: usize): void {
     }
   }
 }
+
+/** What is left of a capacity, by the product of these slots. */
+export function roomOf(row: i32, patch: i32): f64 {
+  let room: f64 = 1;
+  for (let k = 0; k < entries(row); k++) room *= f64At(slotValues, i32At(section(row), k) * patches + patch);
+  return room;
+}

@@ -21,6 +21,7 @@ import { poissonFour } from '../draws/poisson-four';
 import { streamOf } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
 import * as layout from '../layout';
+import { fillRooms } from '../weather/room';
 import { exceeds, removeSurplus } from './ceiling';
 import { addLitters } from './litters';
 import { readMating, scaleByMating } from './mating';
@@ -55,6 +56,7 @@ function breedingRow(record: usize, patch: i32, row: usize): usize {
   const counted = section(operand(record, layout.breedingWaitCounted));
   if (counted === 0) return row;
   const capacity = f64At(section(operand(record, layout.breedingWaitCapacity)), patch);
+  fillRooms(operand(record, layout.breedingWaitRoom), patch);
   if (!exceeds(row, counted, capacity)) return row;
   memory.copy(arrivals, row, rowBytes());
   removeSurplus(arrivals, counted, capacity, false);

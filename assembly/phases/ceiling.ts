@@ -1,13 +1,14 @@
 // Ceiling: where more animals are counted than the patch holds, the surplus is removed: at random without replacement, or
 // the youngest first.
 import { f64At, i32At, u32At } from '../arrays';
-import { animals, cellBytes, counts, replicates, rowBytes, step, words } from '../batch';
+import { animals, cellBytes, counts, replicates, rooms, rowBytes, step, words } from '../batch';
 import { addCell } from '../cells';
 import { hypergeometric } from '../draws/hypergeometric';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf, unit } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section } from '../image';
 import * as layout from '../layout';
+import { fillRooms } from '../weather/room';
 
 export function limit(record: usize): void {
   const takes = operand(record, layout.ceilingTakes);
@@ -17,13 +18,14 @@ export function limit(record: usize): void {
   for (let patch = 0; patch < patches; patch++) {
     const row = animals + <usize>patch * rowBytes();
     const capacity = f64At(capacities, patch);
+    fillRooms(operand(record, layout.ceilingRoom), patch);
     if (!exceeds(row, counted, capacity)) continue;
     philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
     removeSurplus(row, counted, capacity, takes === layout.takesYoungest);
   }
 }
 
-/** Whether any lane has more counted animals than the capacity. */
+/** Whether any lane has more counted animals than what is left (`rooms`) of the capacity. */
 export function exceeds(row: usize, counted: usize, capacity: f64): bool {
   countRow(row, counted);
   return anySurplus(capacity);
@@ -33,7 +35,7 @@ export function exceeds(row: usize, counted: usize, capacity: f64): bool {
 export function removeSurplus(row: usize, counted: usize, capacity: f64, youngest: bool): void {
   for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
     const all = load<u32>(counts + (lane << 2));
-    const surplus = surplusOf(all, capacity, words + (lane << 3));
+    const surplus = surplusOf(all, capacity * load<f64>(rooms + (lane << 3)), words + (lane << 3));
     if (surplus === 0) continue;
     if (youngest) removeYoungest(row, counted, lane, surplus);
     else remove(row, counted, lane, surplus);
@@ -60,7 +62,7 @@ function countRow(row: usize, counted: usize): void {
 
 function anySurplus(capacity: f64): bool {
   for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
-    if (f64(load<u32>(counts + (lane << 2))) > capacity) return true;
+    if (f64(load<u32>(counts + (lane << 2))) > capacity * load<f64>(rooms + (lane << 3))) return true;
   }
   return false;
 }

@@ -1,9 +1,10 @@
 // Crowding: reads N = Σ weight × animals in each patch and writes the multiplier g(N) × N / (N + h) into its slot.
 import { f64At, i32At } from '../arrays';
-import { animals, cellBytes, laneNumbers, rowBytes, slotValues } from '../batch';
+import { animals, cellBytes, laneNumbers, rooms, rowBytes, slotValues } from '../batch';
 import { classes, operand, patches, section } from '../image';
 import * as layout from '../layout';
 import { exp, pow } from '../mathematics';
+import { fillRooms } from '../weather/room';
 
 export function readCrowding(record: usize): void {
   const weights = section(operand(record, layout.crowdingWeights));
@@ -18,8 +19,10 @@ export function readCrowding(record: usize): void {
     const form = i32At(forms, patch);
     const coefficient = f64At(coefficients, patch);
     const half = f64At(halves, patch);
-    for (let at = target; at < target + laneNumbers; at += 8) {
-      store<f64>(at, crowdingFactor(load<f64>(at), form, coefficient, half, shape));
+    fillRooms(operand(record, layout.crowdingRoom), patch);
+    for (let i: usize = 0; i < laneNumbers; i += 8) {
+      const at = target + i;
+      store<f64>(at, crowdingFactor(load<f64>(at), load<f64>(rooms + i), form, coefficient, half, shape));
     }
   }
 }
@@ -50,9 +53,10 @@ export function crowdingShapeOf(record: usize): f64 {
   return row < 0 ? 1 : load<f64>(section(row));
 }
 
-/** g(N) times the Allee factor, which is 0 where nobody is counted. */
-export function crowdingFactor(n: f64, form: i32, coefficient: f64, half: f64, shape: f64): f64 {
-  const allee = half > 0 ? n / (n + half) : 1;
+/** g(N / room) times the Allee factor of N, which is 0 where nobody is counted. */
+export function crowdingFactor(animals: f64, room: f64, form: i32, coefficient: f64, half: f64, shape: f64): f64 {
+  const allee = half > 0 ? animals / (animals + half) : 1;
+  const n = animals / room;
   if (form === layout.formBevertonHolt) return allee / (1 + coefficient * n);
   if (form === layout.formRicker) return allee * exp(-coefficient * n);
   if (form === layout.formTheta) return allee * exp(-coefficient * pow(n, shape));

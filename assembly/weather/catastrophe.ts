@@ -18,11 +18,12 @@ export function strike(record: usize): void {
   lasts = f64At(numbers, layout.strikeNumberLasts);
   wait = f64At(numbers, layout.strikeNumberWait);
   lowered = f64At(numbers, layout.strikeNumberCapacity);
-  // work[patch][lane]: 1 where it is on; then the same for where the capacity is lowered.
+  // work[patch][lane]: 1 where it is on; then the same for where one begins, and after it where the capacity is lowered.
   memory.fill(work, 0, <usize>(2 * patches) * laneNumbers);
   const ages = weather + <usize>operand(record, layout.strikeWeather) * laneNumbers;
   if (operand(record, layout.strikeOver) === layout.overLandscape) strikeLandscape(record, ages);
   else strikePatches(record, ages);
+  if (lowered > 0) lowerCapacities(ages + <usize>strikeAges(record) * laneNumbers);
   writeSlots(record);
 }
 
@@ -68,7 +69,7 @@ function uniform(lane: i32, use: i32): f64 {
 function mark(record: usize, origin: i32, lane: i32, age: f64): void {
   if (age === 0) return;
   if (age <= lasts) markReach(record, origin, work + ((<usize>lane) << 3));
-  if (age <= lowered) markReach(record, origin, work + <usize>patches * laneNumbers + ((<usize>lane) << 3));
+  if (age === 1) markReach(record, origin, work + <usize>patches * laneNumbers + ((<usize>lane) << 3));
 }
 
 function markReach(record: usize, origin: i32, flags: usize): void {
@@ -80,6 +81,24 @@ function markReach(record: usize, origin: i32, flags: usize): void {
   const end = i32At(section(reach), origin + 1);
   for (let i = i32At(section(reach), origin); i < end; i++) {
     store<f64>(flags + <usize>i32At(section(reach + 1), i) * laneNumbers, 1);
+  }
+}
+
+/** Numbers that say how long ago the catastrophe began, before those of lowered capacities. */
+function strikeAges(record: usize): i32 {
+  const landscape = operand(record, layout.strikeOver) === layout.overLandscape;
+  return landscape ? 2 : entries(operand(record, layout.strikeOrigins));
+}
+
+/** Each patch counts for itself the years since one last struck it. */
+function lowerCapacities(ages: usize): void {
+  const flags = work + <usize>patches * laneNumbers;
+  for (let at: usize = 0; at < <usize>patches * laneNumbers; at += 8) {
+    let age = load<f64>(ages + at);
+    if (age > 0) age += 1;
+    if (load<f64>(flags + at) !== 0) age = 1;
+    store<f64>(ages + at, age);
+    store<f64>(flags + at, age > 0 && age <= lowered ? 1 : 0);
   }
 }
 

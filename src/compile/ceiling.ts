@@ -1,14 +1,21 @@
 // What a ceiling leaves of each class in a patch.
 import type { CeilingPhase } from '../model/model.ts';
 
+export interface Filled {
+  readonly patch: number;
+  readonly animals: Float64Array;
+  /** What is left of the capacity. */
+  readonly room: number;
+}
+
 /**
  * By class. At random: min(1, K/N) of each counted class. Youngest first: the surplus N − K comes out of the first counted class,
  * what it lacks out of the next, and so on. Nobody is removed where the surplus waits.
  */
-export function keptShares(phase: CeilingPhase, patch: number, animals: Float64Array): Float64Array {
+export function keptShares(phase: CeilingPhase, { patch, animals, room }: Filled): Float64Array {
   const kept = new Float64Array(animals.length).fill(1);
   if (phase.takes === 'nobody') return kept;
-  const share = shareWithin(phase, patch, animals);
+  const share = shareWithin(phase, { patch, animals, room });
   if (phase.takes !== 'youngest first') return kept.map((_, c) => (phase.counted[c] === 1 ? share : 1));
   let surplus = (1 - share) * countOf(phase, animals);
   return kept.map((_, c) => {
@@ -21,9 +28,9 @@ export function keptShares(phase: CeilingPhase, patch: number, animals: Float64A
 }
 
 /** min(1, K/N): of the counted animals the share that finds room. */
-export function shareWithin(phase: CeilingPhase, patch: number, animals: Float64Array): number {
+export function shareWithin(phase: CeilingPhase, { patch, animals, room }: Filled): number {
   const count = countOf(phase, animals);
-  const capacity = phase.capacity[patch] ?? Infinity;
+  const capacity = (phase.capacity[patch] ?? Infinity) * room;
   return count > capacity ? capacity / count : 1;
 }
 

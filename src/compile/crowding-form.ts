@@ -3,10 +3,11 @@ import { exp, log, pow } from '../machine/pinned.ts';
 import type { Crowding } from '../model/model.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
 
-/** g(N) of one patch. */
-export function multiplierAt(own: CrowdingCoefficients, p: number, count: number): number {
+/** g(N) of one patch; where only a share of the room is left, g(N / room), the Allee factor as before. */
+export function multiplierAt(own: CrowdingCoefficients, p: number, animals: number, room = 1): number {
   const [coefficient, half] = [own.coefficient[p] ?? 0, own.alleeHalf[p] ?? 0];
-  const allee = half === 0 ? 1 : count / (count + half);
+  const allee = half === 0 ? 1 : animals / (animals + half);
+  const count = animals / room;
   switch (own.form[p] ?? 'none') {
     case 'none':
       return allee;

@@ -2,6 +2,7 @@
 import type { AgeingPhase, BreedingPhase, DemographyPhase, Model, SurvivalPhase } from '../model/model.ts';
 import { shareWithin } from './ceiling.ts';
 import { matingFactor } from './mating.ts';
+import type { ScaledPart } from '../model/chance.ts';
 import { multiplierOf, type Multipliers } from './multipliers.ts';
 import { tableAt } from './rates.ts';
 
@@ -13,6 +14,8 @@ export interface LifeRequest {
   readonly patch: number;
   readonly step: number;
   readonly multipliers: Multipliers;
+  /** What is left of the capacity of the patch; all where not given. */
+  readonly room?: number;
   /** By class, in this patch, at the start of the phase; nobody where it is missing. */
   readonly animals?: Float64Array;
 }
@@ -69,16 +72,12 @@ export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array 
 }
 
 /** Of a class, the share that breeds: below 1 only where the surplus over a ceiling waits. */
-function breedingShare({ waits }: BreedingPhase, { patch, animals }: LifeRequest, c: number): number {
+function breedingShare({ waits }: BreedingPhase, { patch, animals, room = 1 }: LifeRequest, c: number): number {
   if (waits === undefined || animals === undefined || waits.counted[c] !== 1) return 1;
-  return shareWithin(waits, patch, animals);
+  return shareWithin(waits, { patch, animals, room });
 }
 
-function factor(
-  { model, phase, patch, multipliers }: LifeRequest,
-  part: 'survival' | 'births' | 'fates',
-  c: number,
-): number {
+function factor({ model, phase, patch, multipliers }: LifeRequest, part: ScaledPart, c: number): number {
   return multiplierOf(model, multipliers, { phase, part, patch, class: c });
 }
 

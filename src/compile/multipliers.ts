@@ -1,21 +1,26 @@
 // What the conditions of a year multiply the named rates by.
-import type { Model, RatePart } from '../model/model.ts';
+import type { MultipliedRate, ScaledPart } from '../model/chance.ts';
+import type { Model } from '../model/model.ts';
 
-/** For each crowding one multiplier a patch, as read at the start of the first phase that it changes. */
+/**
+ * For each crowding one multiplier a patch, as read at the start of the first phase that it changes; then for each catastrophe
+ * the share of years in which it is on.
+ */
 export type Multipliers = readonly Float64Array[];
 
 export function unitMultipliers(model: Model): Multipliers {
-  return model.crowding.map(() => new Float64Array(model.patches.length).fill(1));
+  const every = (value: number) => new Float64Array(model.patches.length).fill(value);
+  return [...model.crowding.map(() => every(1)), ...model.catastrophes.map(() => every(0))];
 }
 
 export interface RateOf {
   readonly phase: number;
-  readonly part: RatePart;
+  readonly part: ScaledPart;
   readonly patch: number;
   readonly class: number;
 }
 
-/** Product of the multipliers of all conditions that name this rate. */
+/** Product of the multipliers of all conditions that name this rate; of a catastrophe the mean over the years. */
 export function multiplierOf(model: Model, multipliers: Multipliers, rate: RateOf): number {
   let factor = 1;
   model.crowding.forEach((crowding, k) => {
@@ -24,7 +29,15 @@ export function multiplierOf(model: Model, multipliers: Multipliers, rate: RateO
     );
     if (named) factor *= multipliers[k]?.[rate.patch] ?? 1;
   });
+  model.catastrophes.forEach(({ multiplies }, k) => {
+    const on = multipliers[model.crowding.length + k]?.[rate.patch] ?? 0;
+    if (on > 0) for (const one of multiplies) if (isRate(one, rate)) factor *= 1 - on * (1 - one.times);
+  });
   return factor;
+}
+
+function isRate(one: MultipliedRate, rate: RateOf): boolean {
+  return one.phase === rate.phase && one.part === rate.part && one.class === rate.class;
 }
 
 /** The phase at whose start a crowding reads its count: the first that it changes. */

@@ -4,7 +4,8 @@ import type { CeilingPhase, DispersalPhase, Model, Phase } from '../model/model.
 import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
 import { keptShares } from './ceiling.ts';
 import { birthsMap, fatesMap, lifeMap, type LifePhase } from './life-map.ts';
-import type { Multipliers } from './multipliers.ts';
+import { multiplierOf, type Multipliers } from './multipliers.ts';
+import { roomOf } from './weather/room.ts';
 import { tableAt } from './rates.ts';
 
 export interface MapRequest {
@@ -92,7 +93,7 @@ function fillLife(triplets: TripletList, fillRequest: FillRequest & { readonly p
   const make = request.part === 'fates' ? fatesMap : request.part === 'births' ? birthsMap : lifeMap;
   for (let p = 0; p < model.patches.length; p++) {
     const animals = request.state?.subarray(p * n, p * n + n);
-    const here = { model, phase: index, patch: p, step, multipliers };
+    const here = { model, phase: index, patch: p, step, multipliers, room: roomOf(model, request.landscape, p) };
     const map = make(phase, animals === undefined ? here : { ...here, animals });
     for (let i = 0; i < n * n; i++) triplets.add(p * n + Math.floor(i / n), p * n + (i % n), map[i] ?? 0);
   }
@@ -107,7 +108,8 @@ function fillDispersal(triplets: TripletList, fillRequest: FillRequest & { reado
   const n = model.classes.length;
   for (let p = 0; p < model.patches.length; p++) {
     for (let c = 0; c < n; c++) {
-      const share = phase.moves[c] === 1 ? (leaving[p * n + c] ?? 0) : 0;
+      const factor = multiplierOf(model, request.multipliers, { phase: index, part: 'leaving', patch: p, class: c });
+      const share = phase.moves[c] === 1 ? (leaving[p * n + c] ?? 0) * factor : 0;
       triplets.add(p * n + c, p * n + c, 1 - share);
       if (share === 0 || movement === null || movement === undefined) continue;
       for (let k = movement.start[p] ?? 0; k < (movement.start[p + 1] ?? 0); k++) {
@@ -117,11 +119,13 @@ function fillDispersal(triplets: TripletList, fillRequest: FillRequest & { reado
   }
 }
 
-function fillCeiling(triplets: TripletList, phase: CeilingPhase, { model, state, part }: MapRequest): void {
+function fillCeiling(triplets: TripletList, phase: CeilingPhase, request: MapRequest): void {
+  const { model, landscape, state, part } = request;
   if (part === 'births') return;
   const n = model.classes.length;
   for (let p = 0; p < model.patches.length; p++) {
-    const kept = keptShares(phase, p, state?.subarray(p * n, p * n + n) ?? new Float64Array(n));
+    const animals = state?.subarray(p * n, p * n + n) ?? new Float64Array(n);
+    const kept = keptShares(phase, { patch: p, animals, room: roomOf(model, landscape, p) });
     for (let c = 0; c < n; c++) triplets.add(p * n + c, p * n + c, kept[c] ?? 1);
   }
 }

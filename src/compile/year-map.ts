@@ -8,6 +8,7 @@ import { multiplierAt } from './crowding-form.ts';
 import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
+import { roomOf } from './weather/room.ts';
 
 export interface Compiled {
   readonly model: Model;
@@ -25,12 +26,14 @@ export interface YearRun {
 /** Runs one year from P·C animals at the count before step `step`. */
 export function runYear({ model, landscape, coefficients }: Compiled, before: Float64Array, step = 1): YearRun {
   const multipliers = unitMultipliers(model);
+  landscape.strikes?.forEach(({ on }, k) => multipliers[model.crowding.length + k]?.set(on));
   const readAt = model.crowding.map((_, k) => readingPhase(model, k));
   let state = before;
   const maps = model.phases.map((_, index) => {
     readAt.forEach((reading, k) => {
       const own = coefficients[k];
-      if (reading === index && own !== undefined) readMultipliers({ model, k, own, into: multipliers[k] }, state);
+      if (reading === index && own !== undefined)
+        readMultipliers({ model, landscape, k, own, into: multipliers[k] }, state);
     });
     const map = phaseMap(index, { model, landscape, step, multipliers, state });
     state = multiply(map, state);
@@ -41,18 +44,19 @@ export function runYear({ model, landscape, coefficients }: Compiled, before: Fl
 
 interface Reading {
   readonly model: Model;
+  readonly landscape: Landscape;
   readonly k: number;
   readonly own: CrowdingCoefficients;
   readonly into: Float64Array | undefined;
 }
 
-function readMultipliers({ model, k, own, into }: Reading, state: Float64Array): void {
+function readMultipliers({ model, landscape, k, own, into }: Reading, state: Float64Array): void {
   const n = model.classes.length;
   const counted = model.crowding[k]?.counted;
   model.patches.forEach((_, p) => {
     let count = 0;
     for (let c = 0; c < n; c++) count += (counted?.[c] ?? 0) * (state[p * n + c] ?? 0);
-    if (into !== undefined) into[p] = multiplierAt(own, p, count);
+    if (into !== undefined) into[p] = multiplierAt(own, p, count, roomOf(model, landscape, p));
   });
 }
 

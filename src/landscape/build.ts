@@ -4,6 +4,7 @@ import type { DispersalPhase, Model } from '../model/model.ts';
 import { kernelMovement } from './kernel-movement.ts';
 import type { Landscape, Movement } from './landscape.ts';
 import { sharesMovement } from './shares-movement.ts';
+import { strikesOf } from './strikes.ts';
 import { patchCorrelation } from './weather.ts';
 
 export interface BuiltLandscape {
@@ -16,8 +17,12 @@ export function buildLandscape(model: Model): BuiltLandscape {
   const movements = model.phases.map((phase) =>
     phase.kind === 'dispersal' ? movementOf(model, phase, findings) : null,
   );
+  const strikes = strikesOf(model);
   const weather = patchCorrelation(model, model.variation, findings);
-  return { landscape: { movements, ...(weather === null ? {} : { weather }) }, findings };
+  return {
+    landscape: { movements, ...(weather === null ? {} : { weather }), ...(strikes.length === 0 ? {} : { strikes }) },
+    findings,
+  };
 }
 
 function movementOf(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {

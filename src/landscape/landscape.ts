@@ -1,4 +1,5 @@
 // For each dispersal, where those that leave a patch end; and how alike the years are in different patches.
+import type { Strike } from './strikes.ts';
 import type { Correlation } from '../model/chance.ts';
 
 /**
@@ -18,4 +19,6 @@ export interface Landscape {
   readonly movements: readonly (Movement | null)[];
   /** Correlation of the years between patches, where rates vary. */
   readonly weather?: Correlation;
+  /** One for each catastrophe of the model. */
+  readonly strikes?: readonly Strike[];
 }

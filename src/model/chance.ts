@@ -63,3 +63,24 @@ export interface Variation {
   /** Values of the attributes that the responses read, by patch. */
   readonly attributes: ReadonlyMap<string, Float64Array>;
 }
+
+/** What a rate is multiplied by where a catastrophe is on. */
+export interface MultipliedRate extends ScaledRate {
+  readonly times: number;
+}
+
+/** A rare event, bad or good. All its times are steps. */
+export interface Catastrophe {
+  readonly name: string;
+  /** A step: that one begins in a given patch, or somewhere in the landscape. */
+  readonly chance: number;
+  readonly over: 'patch' | 'landscape';
+  /** Patches in which it can begin. */
+  readonly origins: readonly number[];
+  readonly reach: 'everywhere' | 'one patch' | { readonly radiusKm: number };
+  readonly multiplies: readonly MultipliedRate[];
+  readonly lasts: number;
+  /** From one beginning to the next at least; never less than it lasts. */
+  readonly wait: number;
+  readonly capacity: { readonly times: number; readonly steps: number } | null;
+}

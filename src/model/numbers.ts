@@ -28,6 +28,7 @@ export interface NamedExpression {
 export interface Use {
   readonly expression: string;
   readonly path: SpecPath;
+  readonly dimension: Dimension;
 }
 
 /** Evaluates expressions and tells each mistake once, however many patches and years meet it. */
@@ -54,7 +55,7 @@ export class Numbers {
   /** The value, or NaN after telling why there is none. */
   value(expression: number | string, path: SpecPath, where: Where): number {
     if (typeof expression === 'number') return expression;
-    this.#uses.set(path.join('\0'), { expression, path });
+    this.#uses.set(path.join('\0'), { expression, path, dimension: where.dimension ?? 'share' });
     const ast = this.#parse(expression, path, where.dimension);
     if (ast === null) return NaN;
     const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
@@ -75,8 +76,8 @@ export class Numbers {
   }
 
   /** All names that the value rests on, those behind its parameters included. */
-  behind(expression: string, path: SpecPath): readonly string[] {
-    const ast = this.#parse(expression, path);
+  behind({ expression, path, dimension }: Use): readonly string[] {
+    const ast = this.#parse(expression, path, dimension);
     return ast === null ? [] : [...this.#namesBehind(ast)];
   }
 

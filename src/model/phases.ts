@@ -7,6 +7,7 @@ import { resolveDemography } from './demography.ts';
 import { resolveDispersal } from './dispersal.ts';
 import { resolveBreeding, resolveNamedBreeding } from './breeding.ts';
 import { resolveAgeing, resolveNamedSurvival, resolveSurvival } from './life-phases.ts';
+import { resolveTaking } from './variation/catastrophe.ts';
 import type { Phase } from './model.ts';
 
 /** The phases that every study can use without naming them itself. */
@@ -62,6 +63,8 @@ function resolveNamed(context: Context, name: string, named: NamedSpec): Phase |
       return resolveNamedBreeding(context, name, named);
     case 'dispersal':
       return resolveDispersal(context, name, named);
+    case 'catastrophe':
+      return resolveTaking(context, name, named);
     case 'ceiling':
       return resolveCeiling(context, name, named);
     case 'crowding':
@@ -107,8 +110,13 @@ function tellUnused(context: Context): void {
         part: 'key',
         details: { fix: 'Give this phase another name.' },
       });
-    } else if (!spec.year.includes(name) && spec.named[name]?.kind !== 'crowding') tellUnusedKey(context, name, name);
+    } else if (!spec.year.includes(name) && !isCondition(spec.named[name]?.kind)) tellUnusedKey(context, name, name);
   }
+}
+
+/** Conditions need no place in the year. */
+function isCondition(kind: string | undefined): boolean {
+  return kind === 'crowding' || kind === 'catastrophe';
 }
 
 function tellUnusedKey(context: Context, key: string, phase: string): void {

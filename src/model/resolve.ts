@@ -11,6 +11,7 @@ import { checkNames, namedExpressions, resolveParameters } from './parameters.ts
 import { resolvePatches } from './patches.ts';
 import { resolvePhases } from './phases.ts';
 import { resolveStart } from './start.ts';
+import { resolveCatastrophes } from './variation/catastrophe.ts';
 import { resolveVariation } from './variation/resolve.ts';
 
 export interface Resolved {
@@ -32,6 +33,7 @@ export function resolveModel(spec: Spec): Resolved {
     phases,
     crowding: resolveCrowding(context, phases),
     variation: resolveVariation(context, phases),
+    catastrophes: resolveCatastrophes(context, phases),
     start: resolveStart(context),
     outcomes: resolveOutcomes(context),
     ...runSettings(context),

@@ -1,17 +1,20 @@
 // What `skein check` says of a model that has no errors: what was understood, every default, and where patches stand still.
 import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
 import type { WeatherFacts } from '../analysis/weather.ts';
+import type { Landscape } from '../landscape/landscape.ts';
 import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
 import type { BreedingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { placesWords } from './places-text.ts';
 import { litterWords, matingWords } from './breeding-words.ts';
 import { fixed } from './rounded.ts';
+import { catastropheWords } from './catastrophe-words.ts';
 import { weatherWords } from './weather-words.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
 
 export interface Understood {
   readonly model: Model;
+  readonly landscape: Landscape;
   readonly startAnimals: number;
   readonly standing: readonly PatchStanding[];
   readonly reach: readonly DispersalReach[];
@@ -38,6 +41,7 @@ export function checkText(understood: Understood, style: TextStyle): string {
       style,
     ),
     section('Variation from year to year', understood.weather === null ? [] : weatherWords(understood.weather), style),
+    section('Catastrophes', catastropheWords(model, understood.landscape), style),
     standingTable(understood, style),
     section(
       'Outcomes',
@@ -71,6 +75,8 @@ function phaseWords(model: Model, phase: Phase): string {
     case 'count':
       return 'count: abundance is read, thresholds apply';
     case 'survival':
+      if (model.catastrophes.some(({ name }) => name === phase.name))
+        return `${phase.name}: takes animals where it is on`;
       return `${phase.name}: each animal lives on or dies`;
     case 'breeding':
       return `${phase.name}: those alive now have young, born as ${model.classes.filter((_, c) => (phase.into[c] ?? 0) > 0).join(', ')}${breedingWords(phase)}`;

@@ -18,7 +18,7 @@ conservation translocations. What a model says is one input to it.`,
   ].map((text) => text.replaceAll('\n', ' '));
 }
 
-function leftOut({ crowding, phases, variation }: Model): readonly string[] {
+function leftOut({ crowding, phases, variation, catastrophes }: Model): readonly string[] {
   const allee = crowding.some((one) => one.alleeHalf.some((half) => half > 0));
   const crowded = crowding.length > 0 || phases.some((phase) => phase.kind === 'ceiling');
   return [
@@ -28,7 +28,7 @@ function leftOut({ crowding, phases, variation }: Model): readonly string[] {
     ...(allee ? [] : ['trouble in finding mates when few are left (Allee effects)']),
     ...(crowded ? [] : ['crowding']),
     ...(variation === null ? ['year-to-year variation of the rates'] : []),
-    'catastrophes',
+    ...(catastrophes.length === 0 ? ['catastrophes'] : []),
   ];
 }
 

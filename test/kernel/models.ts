@@ -39,6 +39,7 @@ export function modelOf(sketch: Sketch): Model {
     year: [],
     crowding: sketch.crowding ?? [],
     variation: sketch.variation ?? null,
+    catastrophes: [],
     start: { by: 'table', animals: Float64Array.from(sketch.start) },
     outcomes: sketch.outcomes ?? [],
     replicates: 1000,

@@ -106,6 +106,7 @@ function fixtureModel(choice: FixtureChoice): Model {
     ],
     year: ['count', 'breeding', 'survival', 'natal', 'ageing'],
     variation: null,
+    catastrophes: [],
     crowding: [],
     start: { by: 'total', total: 420, spread: 'stable within patch' },
     outcomes: [

@@ -33,12 +33,25 @@ export function understand(compiled: CompiledModel): Understood {
   const { model, startAnimals } = compiled;
   return {
     model,
+    landscape: compiled.landscape,
     startAnimals: startAnimals.reduce((sum, value) => sum + value, 0),
     standing: standingOf(compiled, startAnimals),
     reach: dispersalReach(compiled, startAnimals),
     growthRate: leading(buildBlock(compiled, 'zero').matrix).growthRate,
     weather: model.variation === null ? null : weatherFacts(model.variation, compiled.landscape),
   };
+}
+
+function catastropheJson({ model, landscape }: Understood): unknown {
+  return model.catastrophes.map(({ name }, k) => {
+    const strike = landscape.strikes?.[k];
+    const patches = model.patches.map((patch, p) => ({
+      patch: patch.name,
+      yearsStruck: strike?.on[p] ?? 0,
+      yearsBegun: strike?.begins[p] ?? 0,
+    }));
+    return { name, patches };
+  });
 }
 
 function checkJson({ diagnostics }: Loaded, understood: Understood | null): unknown {
@@ -50,5 +63,6 @@ function checkJson({ diagnostics }: Loaded, understood: Understood | null): unkn
     patches: understood?.standing ?? null,
     dispersal: understood?.reach ?? null,
     variation: understood?.weather ?? null,
+    catastrophes: understood === null ? null : catastropheJson(understood),
   };
 }

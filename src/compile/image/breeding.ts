@@ -5,7 +5,7 @@ import { meanOfTable } from '../../model/offspring.ts';
 import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
 import { plain, type SectionList } from './section.ts';
-import { addSlotLists } from './slot-lists.ts';
+import { addRooms, addSlotLists } from './slot-lists.ts';
 import { addTable } from './table.ts';
 
 export function breedingRecord(phase: BreedingPhase, { list, model, index, key }: PhasePlace): Int32Array {
@@ -17,6 +17,7 @@ export function breedingRecord(phase: BreedingPhase, { list, model, index, key }
     ...waitingRows(list, phase.waits),
     ...offspringRows(list, phase),
     ...matingRows(list, phase),
+    phase.waits === undefined ? layout.none : addRooms(list, model),
   ];
   return record(layout.opBreeding, key, index, words);
 }
@@ -75,7 +76,7 @@ const matingCodes: Readonly<Record<Mating['form'], number>> = {
 };
 
 function matingRows(list: SectionList, { name, mating }: BreedingPhase): readonly number[] {
-  if (mating === undefined || mating.form === 'female-dominant') return [];
+  if (mating === undefined || mating.form === 'female-dominant') return [layout.none, layout.none, layout.none];
   const sexes = Float64Array.from(mating.females, (female, c) => female - (mating.males[c] ?? 0));
   return [
     matingCodes[mating.form],

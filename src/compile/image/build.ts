@@ -4,6 +4,7 @@ import type { Landscape } from '../../landscape/landscape.ts';
 import type { Model } from '../../model/model.ts';
 import type { CrowdingCoefficients } from '../coefficients.ts';
 import { readingPhase } from '../multipliers.ts';
+import { catastropheRecords } from './catastrophes.ts';
 import { crowdingRecord } from './crowding.ts';
 import { keysOfNames } from './keys.ts';
 import { phaseRecord } from './phases.ts';
@@ -50,9 +51,19 @@ export function buildImage(input: ImageInput): ArrayBuffer {
   const start = Int32Array.from(input.startAnimals);
   header.set(layout.headerStart, list.add(plain(layout.kindStartAnimals, start, 'start')));
   const weather = variationRecords({ list, model, landscape: input.landscape, slots, weather: 0 });
-  header.set(layout.headerWeather, weather.weather);
-  header.set(layout.headerWork, weather.work);
-  header.set(layout.headerYearProgram, list.add(programSection(layout.kindYearProgram, weather.records)));
+  const strikes = catastropheRecords({
+    list,
+    model,
+    landscape: input.landscape,
+    slots,
+    weather: weather.weather,
+  });
+  header.set(layout.headerWeather, weather.weather + strikes.weather);
+  header.set(layout.headerWork, Math.max(weather.work, strikes.work));
+  header.set(
+    layout.headerYearProgram,
+    list.add(programSection(layout.kindYearProgram, [...weather.records, ...strikes.records])),
+  );
   header.set(layout.headerPhaseProgram, list.add(programSection(layout.kindPhaseProgram, phaseProgram(list, input))));
   list.add(plain(layout.kindNames, new TextEncoder().encode(JSON.stringify(names)), 'names'));
   return pack(header, list.sections);
@@ -92,7 +103,7 @@ function phaseProgram(list: SectionList, { model, landscape, coefficients }: Ima
     const readHere = model.crowding.flatMap((crowding, slot) => {
       const solved = coefficients[slot];
       if (readingPhase(model, slot) !== index || solved === undefined) return [];
-      return [crowdingRecord(list, { crowding, coefficients: solved, slot, key: conditionKeys[slot] ?? 0 })];
+      return [crowdingRecord(list, { model, crowding, coefficients: solved, slot, key: conditionKeys[slot] ?? 0 })];
     });
     const key = phaseKeys[index] ?? 0;
     const movement = landscape.movements[index] ?? null;

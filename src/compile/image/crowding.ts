@@ -1,8 +1,9 @@
 // Crowding in the image: a record that reads the count and writes a slot.
 import * as layout from '../../../assembly/layout.ts';
-import type { Crowding } from '../../model/model.ts';
+import type { Crowding, Model } from '../../model/model.ts';
 import type { CrowdingCoefficients, CrowdingForm } from '../coefficients.ts';
 import { record } from './record.ts';
+import { addRooms } from './slot-lists.ts';
 import { plain, type SectionList } from './section.ts';
 
 const formCodes: Readonly<Record<CrowdingForm, number>> = {
@@ -15,6 +16,7 @@ const formCodes: Readonly<Record<CrowdingForm, number>> = {
 };
 
 export interface CrowdingRecord {
+  readonly model: Model;
   readonly crowding: Crowding;
   readonly coefficients: CrowdingCoefficients;
   /** Position among the crowdings of the model, which is its slot. */
@@ -22,7 +24,8 @@ export interface CrowdingRecord {
   readonly key: number;
 }
 
-export function crowdingRecord(list: SectionList, { crowding, coefficients, slot, key }: CrowdingRecord): Int32Array {
+export function crowdingRecord(list: SectionList, crowded: CrowdingRecord): Int32Array {
+  const { model, crowding, coefficients, slot, key } = crowded;
   const reads = `crowding ${crowding.name}`;
   const forms = Int32Array.from(coefficients.form, (form) => formCodes[form]);
   return record(layout.opCrowding, key, slot, [
@@ -34,5 +37,6 @@ export function crowdingRecord(list: SectionList, { crowding, coefficients, slot
     coefficients.shapeNumber === undefined
       ? layout.none
       : list.add(plain(layout.kindPatchNumbers, Float64Array.of(coefficients.shapeNumber), reads)),
+    addRooms(list, model),
   ]);
 }

@@ -1,7 +1,7 @@
 // The record of each phase, and the sections that it names.
 import * as layout from '../../../assembly/layout.ts';
 import type * as M from '../../model/model.ts';
-import { addSlotLists } from './slot-lists.ts';
+import { addRooms, addSlotLists } from './slot-lists.ts';
 import { breedingRecord } from './breeding.ts';
 import { addMovement } from './movement.ts';
 import type { PhasePlace } from './place.ts';
@@ -73,11 +73,12 @@ function dispersalRecord(phase: M.DispersalPhase, place: PhasePlace): Int32Array
   ]);
 }
 
-function ceilingRecord(phase: M.CeilingPhase, { list, index, key }: PhasePlace): Int32Array {
+function ceilingRecord(phase: M.CeilingPhase, { list, model, index, key }: PhasePlace): Int32Array {
   return record(layout.opCeiling, key, index, [
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.counted), `counted of ${phase.name}`)),
     list.add(plain(layout.kindPatchNumbers, phase.capacity, `capacity of ${phase.name}`)),
     takesCodes[phase.takes ?? 'at random'],
+    addRooms(list, model),
   ]);
 }
 

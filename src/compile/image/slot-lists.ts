@@ -18,6 +18,12 @@ export function addSlotLists(list: SectionList, model: Model, phase: number, par
   return list.add(plain(layout.kindSlotLists, Int32Array.from([...starts, ...slots.flat()]), 'crowding changes'));
 }
 
+/** Row of the slots that say how much of a capacity is left; none where nothing lowers one. */
+export function addRooms(list: SectionList, model: Model): number {
+  const { rooms } = planSlots(model);
+  return rooms.length === 0 ? layout.none : list.add(plain(layout.kindPatchList, Int32Array.from(rooms), 'capacity'));
+}
+
 function scales(crowding: Crowding, phase: number, part: ScaledPart, c: number): boolean {
   return crowding.changes.some((change) => change.phase === phase && change.part === part && change.classes[c] === 1);
 }

@@ -61,14 +61,15 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
       'mating',
       'sexes',
       'per male',
+      'room',
     ],
   ],
   [layout.opSurvival, ['survival', 'rates', 'slots']],
   [layout.opAgeing, ['ageing', 'advance', 'next']],
   [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],
   [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before', 'slots']],
-  [layout.opCeiling, ['ceiling', 'counted', 'capacity', 'takes']],
-  [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number', 'shape']],
+  [layout.opCeiling, ['ceiling', 'counted', 'capacity', 'takes', 'room']],
+  [layout.opCrowding, ['crowding', 'weights', 'forms', 'coefficients', 'allee half', 'slot number', 'shape', 'room']],
   [
     layout.opVariation,
     [
@@ -86,6 +87,22 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
   [
     layout.opResponse,
     ['response', 'expression', 'constants', 'attributes', 'years', 'base', 'slot number', 'bounds', 'patches'],
+  ],
+  [
+    layout.opCatastrophe,
+    [
+      'catastrophe',
+      'numbers',
+      'origins',
+      'reach',
+      'slots',
+      'values',
+      'means',
+      'weather',
+      'over',
+      'column',
+      'capacity slots',
+    ],
   ],
   [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
 ];

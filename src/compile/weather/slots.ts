@@ -16,8 +16,19 @@ export interface SlotPlan {
   readonly varied: readonly number[];
   /** Of each response; those of one rate share a slot. */
   readonly responses: readonly number[];
-  /** Slots of variation that scale rates. */
+  /** Slots of variation and catastrophes that scale rates. */
   readonly rates: readonly RateSlot[];
+  /** Of each catastrophe: one slot for each number that rates are multiplied by, then one for its capacity, if it lowers any. */
+  readonly catastrophes: readonly CatastropheSlots[];
+  /** What is left of capacities. */
+  readonly rooms: readonly number[];
+}
+
+export interface CatastropheSlots {
+  readonly slots: readonly number[];
+  /** What the slot is where the catastrophe is on. */
+  readonly values: readonly number[];
+  readonly capacity: boolean;
 }
 
 export function planSlots(model: Model): SlotPlan {
@@ -33,5 +44,15 @@ export function planSlots(model: Model): SlotPlan {
     rates.push({ slot: count, phase, part, class: c });
     return count++;
   });
-  return { count, varied, responses, rates };
+  const catastrophes = model.catastrophes.map(({ multiplies, capacity }): CatastropheSlots => {
+    const values = [...new Set(multiplies.map(({ times }) => times))];
+    const slots = values.map(() => count++);
+    for (const { times, phase, part, class: c } of multiplies) {
+      rates.push({ slot: slots[values.indexOf(times)] ?? 0, phase, part, class: c });
+    }
+    if (capacity === null) return { slots, values, capacity: false };
+    return { slots: [...slots, count++], values: [...values, capacity.times], capacity: true };
+  });
+  const rooms = catastrophes.flatMap(({ slots, capacity }) => (capacity ? slots.slice(-1) : []));
+  return { count, varied, responses, rates, catastrophes, rooms };
 }

@@ -93,9 +93,10 @@ function baseOf(context: Context, { text, path, patches }: Group): PatchNumbers 
 
 /** Movement, crowding and the like are prepared once: what varies cannot stand there. */
 function refuseElsewhere(context: Context, parameters: ReadonlySet<string>, places: ReadonlySet<string>): void {
-  for (const { expression, path } of context.numbers.uses()) {
+  for (const use of context.numbers.uses()) {
+    const { expression, path } = use;
     if (path[0] === 'parameters' || path[0] === 'variation' || places.has(path.join('\0'))) continue;
-    const name = context.numbers.behind(expression, path).find((one) => parameters.has(one));
+    const name = context.numbers.behind(use).find((one) => parameters.has(one));
     if (name === undefined) continue;
     fail(context, 'varies-elsewhere', path, {
       message: `\`${name}\` varies from year to year, and this number cannot`,

@@ -29,8 +29,9 @@ function interaction({ phases, crowding }: Model): string {
   return `${within}; ${linked ? 'patches are linked by movement' : 'patches are not linked'}.`;
 }
 
-function stochasticity({ variation }: Model, results: RunResults): string {
+function stochasticity({ variation, catastrophes }: Model, results: RunResults): string {
   const single = 'births, deaths, fates and movement of single animals are drawn (demographic chance)';
   const years = variation === null ? '' : '; rates differ from year to year (environmental chance)';
-  return `${single}${years}; ${plain(finished(results))} futures come from one seed, ${results.seed}.`;
+  const rare = catastrophes.length === 0 ? '' : `; ${catastrophes.map(({ name }) => name).join(', ')} strike by chance`;
+  return `${single}${years}${rare}; ${plain(finished(results))} futures come from one seed, ${results.seed}.`;
 }

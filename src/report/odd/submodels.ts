@@ -7,6 +7,7 @@ import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
+import { catastropheWords } from '../catastrophe-words.ts';
 import { weatherWords } from '../weather-words.ts';
 import { digits, matrixTables, rateTable } from './rates.ts';
 
@@ -15,7 +16,13 @@ export function submodels(model: Model, landscape: Landscape): Markup {
     .filter((phase) => phase.kind !== 'count')
     .map((phase) => submodel(phase.name, numbers(phase, model)));
   const conditions = model.crowding.map((one) => submodel(one.name, crowding(one, model)));
-  return mark`${phases}${conditions}${weather(model, landscape)}`;
+  return mark`${phases}${conditions}${weather(model, landscape)}${catastrophes(model, landscape)}`;
+}
+
+function catastrophes(model: Model, landscape: Landscape): Markup | null {
+  if (model.catastrophes.length === 0) return null;
+  const items = catastropheWords(model, landscape).map((words) => mark`<li><bdi>${words}</bdi></li>`);
+  return submodel('catastrophes and good years', mark`<ul>${items}</ul>`);
 }
 
 function weather({ variation }: Model, landscape: Landscape): Markup | null {

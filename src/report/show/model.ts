@@ -1,6 +1,6 @@
 // The model with all names resolved, as plain data and as text that can be compared line by line.
 import { stringify } from 'yaml';
-import { variationJson } from './variation.ts';
+import { catastropheJson, variationJson } from './variation.ts';
 import type { BreedingPhase, Model, Phase, RateTable } from '../../model/model.ts';
 
 export function modelText(model: Model): string {
@@ -8,7 +8,7 @@ export function modelText(model: Model): string {
 }
 
 export function modelJson(model: Model): Readonly<Record<string, unknown>> {
-  const { phases, crowding, variation, outcomes, patches, start, ...head } = model;
+  const { phases, crowding, variation, catastrophes, outcomes, patches, start, ...head } = model;
   const byPatch = (values: Float64Array) =>
     named(
       model.patches.map(({ name }) => name),
@@ -32,6 +32,7 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
       alleeHalf: byPatch(one.alleeHalf),
     })),
     ...(variation === null ? {} : { variation: variationJson(model, variation) }),
+    ...(catastrophes.length === 0 ? {} : { catastrophes: catastrophes.map((one) => catastropheJson(model, one)) }),
     start: startJson(model, start),
     outcomes: outcomes.map(({ weights, patches: where, ...one }) => ({
       ...one,

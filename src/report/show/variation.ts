@@ -1,5 +1,5 @@
-// Year-to-year variation as plain data.
-import type { Correlation, PatchNumbers, Variation } from '../../model/chance.ts';
+// Year-to-year variation and catastrophes as plain data.
+import type { Catastrophe, Correlation, PatchNumbers, Variation } from '../../model/chance.ts';
 import type { Model } from '../../model/model.ts';
 import { printExpression } from '../../spec/expression/print.ts';
 
@@ -43,4 +43,17 @@ function correlationJson(names: readonly string[], { of, repaired }: Correlation
     Object.fromEntries(names.map((other, b) => [other, of.values[a * of.columns + b] ?? 0])),
   ]);
   return { matrix: Object.fromEntries(rows), repaired };
+}
+
+export function catastropheJson(model: Model, { origins, multiplies, ...one }: Catastrophe): unknown {
+  return {
+    ...one,
+    beginsIn: origins.map((p) => model.patches[p]?.name),
+    multiplies: multiplies.map(({ phase, part, class: c, times }) => ({
+      phase: model.phases[phase]?.name,
+      part,
+      class: model.classes[c],
+      times,
+    })),
+  };
 }

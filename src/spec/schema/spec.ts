@@ -2,6 +2,7 @@
 import { Type, type Static } from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Oldest } from './classes.ts';
+import { Catastrophe } from './catastrophe.ts';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
 import { InlinePatches, Parameters, Patches, type InlinePatch } from './patches.ts';
 import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
@@ -84,6 +85,7 @@ export const namedSchemas = {
   dispersal: Dispersal,
   ceiling: Ceiling,
   crowding: NamedCrowding,
+  catastrophe: Catastrophe,
 } as const;
 
 export type InlinePatchSpec = Static<typeof InlinePatch>;
@@ -95,7 +97,8 @@ export type VariedSpec = Static<typeof Varied>;
 export type SurvivalSpec = Static<typeof NamedSurvival>;
 export type BreedingSpec = Static<typeof NamedBreeding>;
 export type NamedCrowdingSpec = Static<typeof NamedCrowding>;
-export type NamedSpec = SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
+export type CatastropheSpec = Static<typeof Catastrophe>;
+export type NamedSpec = CatastropheSpec | SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
 export type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };

@@ -1,5 +1,6 @@
 // Texts that have a form of their own: names, identifiers, expressions and quantities.
 import { pinned } from '../../machine/pinned.ts';
+import { readChance } from '../chance.ts';
 import { reservedWords, type Ast } from '../expression/ast.ts';
 import { evaluate } from '../expression/evaluate.ts';
 import { namesIn } from '../expression/names.ts';
@@ -12,6 +13,7 @@ import { put, type Report, type Subject } from './report.ts';
 export function checkFormat(scalar: SourceScalar, format: string, subject: Subject, report: Report): void {
   if (format === 'name') checkName(scalar, report);
   else if (format === 'identifier') checkIdentifier(scalar, report);
+  else if (format === 'chance') checkChance(scalar, subject, report);
   else if (format === 'expression') checkExpression(scalar, subject, report);
   else if (isDimension(format) && !isStrangeNumber(scalar, subject, report)) checkQuantity(scalar, format, report);
 }
@@ -66,6 +68,20 @@ function checkIdentifier(scalar: SourceScalar, report: Report): void {
 /** Expressions are numbers without a unit; only % may stand behind one. */
 function checkExpression(scalar: SourceScalar, subject: Subject, report: Report): void {
   if (!isStrangeNumber(scalar, subject, report)) checkQuantity(scalar, 'share', report);
+}
+
+/** A share that says what it is a chance of. */
+function checkChance(scalar: SourceScalar, subject: Subject, report: Report): void {
+  const read = readChance(scalar.source);
+  if (read === null) {
+    const { span } = scalar;
+    const message = `\`${subject.label}\` does not say what it is the chance of`;
+    put(
+      report,
+      { code: 'wrong-unit', message, span },
+      { found: scalar.source, expected: '`0.04 per patch` or `0.04 per landscape`' },
+    );
+  } else checkExpression({ ...scalar, source: read.amount, value: read.amount }, subject, report);
 }
 
 function checkQuantity(scalar: SourceScalar, dimension: Dimension, report: Report): void {
