@@ -102,6 +102,18 @@ test('a spec that uses every key comes back', () => {
       leavers: may miss
       links:
         - { between: [North fen, Saltmarsh], distance: 9 km, crossing-death: 0.4, turn-back: 50 % }
+    flood:
+      kind: catastrophe
+      chance: 0.04 per patch
+      reach: { radius: 8 km }
+      begins-in: [Saltmarsh]
+      multiplies:
+        survival: { newborn: 0.3 }
+        births: { adult: 1.2 }
+      takes: { adult: 0.5 }
+      capacity: { times: 0.4, for: 5 years }
+      lasts: 2 years
+      wait: 10 years
     crowding:
       form: beverton-holt
       changes: { survival: [newborn] }

@@ -16,7 +16,18 @@ const published: unknown = JSON.parse(writeSchema());
 function validator() {
   const ajv = new Ajv2020({ strict: true, allErrors: true, allowUnionTypes: true, strictRequired: false });
   ajv.addVocabulary(['x-unit', 'x-key']);
-  for (const format of ['name', 'identifier', 'expression', 'length', 'area', 'share', 'per-length', 'time', 'file']) {
+  for (const format of [
+    'name',
+    'identifier',
+    'expression',
+    'length',
+    'area',
+    'share',
+    'per-length',
+    'time',
+    'file',
+    'chance',
+  ]) {
     ajv.addFormat(format, true);
   }
   return ajv.compile(published as object);

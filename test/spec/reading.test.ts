@@ -43,6 +43,7 @@ test('sections of the author’s own stand under `named`, and only there', () =>
     'late brood',
     'moult',
     'wandering',
+    'flood',
   ]);
   expect(spec.named['room']).toEqual({
     kind: 'ceiling',
