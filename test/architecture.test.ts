@@ -22,6 +22,7 @@ const ranks: Readonly<Record<string, number>> = {
   'pipeline.ts': 8,
   analysis: 9,
   compare: 10,
+  export: 10,
   sweep: 11,
   view: 12,
   report: 13,

@@ -32,6 +32,7 @@ function buildProgram(): Command {
       (await import('./command/check.ts')).checkModel(path, options);
     });
   addShow(program);
+  addCompile(program);
   addAnalyse(program);
   addRuns(program);
   return program;
@@ -46,6 +47,19 @@ function addShow(program: Command): void {
     .action(async (path: string, stage: string, options: CommonOptions) => {
       (await import('./command/show.ts')).showStage(path, stage, options);
     });
+}
+
+function addCompile(program: Command): void {
+  model(program, 'compile', 'write the model as one file for other programs', [
+    'set',
+    'years',
+    'replicates',
+    'seed',
+    'quiet',
+  ])
+    .requiredOption('-o, --output <file>', 'the file: .mtx, .csv or .json for the matrix, .wasm for the whole model')
+    .addHelpText('after', '\nExample:\n  skein compile models/reed-hare.yaml -o reed-hare.mtx')
+    .action(run(async () => (await import('./command/compile.ts')).compileCommand));
 }
 
 function addAnalyse(program: Command): void {
