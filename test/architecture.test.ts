@@ -27,6 +27,7 @@ const ranks: Readonly<Record<string, number>> = {
   view: 12,
   report: 13,
   page: 13,
+  formats: 13,
   server: 14,
   cli: 15,
   'index.ts': 16,

@@ -35,6 +35,7 @@ function buildProgram(): Command {
   addCompile(program);
   addAnalyse(program);
   addRuns(program);
+  addSchema(program);
   return program;
 }
 
@@ -46,6 +47,17 @@ function addShow(program: Command): void {
     .addHelpText('after', '\nExample:\n  skein show models/reed-hare.yaml matrix')
     .action(async (path: string, stage: string, options: CommonOptions) => {
       (await import('./command/show.ts')).showStage(path, stage, options);
+    });
+}
+
+function addSchema(program: Command): void {
+  program
+    .command('schema')
+    .argument('<name>', 'spec, run, path, analysis or another format; a wrong name lists them')
+    .description('print the JSON Schema of what is read, printed or written')
+    .addHelpText('after', '\nExample:\n  skein schema run')
+    .action(async (name: string) => {
+      (await import('./command/schema.ts')).printSchema(name);
     });
 }
 

@@ -20,7 +20,7 @@ function describeModule({ model, provenance, image }: CompiledModel, address: nu
   const patches = model.patches.map(({ name }) => name);
   const outcomes = model.outcomes.map(({ name, definition, below }) => ({ name, definition, below }));
   return {
-    format: 'skein-model/1',
+    format: 'skein-module/1',
     ...provenance,
     seed,
     replicates,

@@ -39,7 +39,7 @@ describe.each(modelNames)('the module of %s', (name) => {
     expect(WebAssembly.Module.imports(made)).toEqual([]);
     const [section] = WebAssembly.Module.customSections(made, sectionName);
     const said = JSON.parse(new TextDecoder().decode(section)) as Description;
-    expect(said).toMatchObject({ format: 'skein-model/1', hash: compiled.provenance.hash, seed, years: steps });
+    expect(said).toMatchObject({ format: 'skein-module/1', hash: compiled.provenance.hash, seed, years: steps });
     expect(said.columns).toHaveLength(expected.length / 16 / (steps + 1));
     const memory = new WebAssembly.Instance(made).exports['memory'] as WebAssembly.Memory;
     const inside = new Uint8Array(memory.buffer, said.image.address, said.image.size);

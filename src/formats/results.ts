@@ -1,0 +1,105 @@
+// What `skein run --json` and `skein path --json` print.
+import { Type } from 'typebox';
+import * as part from './parts.ts';
+
+const Interval = Type.Object({
+  lower: part.share('Lower end.'),
+  upper: part.share('Upper end.'),
+  level: part.share('Such as 0.95.'),
+  method: part.text('How it was found, with the published source.'),
+  from: Type.Union([Type.Literal('the number of runs'), Type.Literal('what is not known')]),
+});
+
+const Chance = Type.Object({
+  probability: part.maybeShare('Share of the finished runs.'),
+  interval: Interval,
+  intervalFromUnknown: Type.Union([Interval, Type.Null()], {
+    description: 'From what is not known; null where the model gives no uncertainty.',
+  }),
+});
+
+const YearSummary = Type.Object({
+  year: part.year,
+  mean: part.maybe('Over the finished runs.'),
+  sd: part.maybe('Between the finished runs.'),
+  quantiles: part.Quantiles,
+});
+
+const Outcome = Type.Object({
+  name: part.text("The author's name."),
+  definition: part.text('In words, from the rule itself.'),
+  below: part.number('The threshold; strictly below it counts.'),
+  ever: Chance,
+  atEnd: Chance,
+  byYear: Type.Array(
+    Type.Object({
+      year: part.year,
+      everBelow: part.maybeShare('Chance of having fallen below by this year.'),
+      lower: part.maybeShare('Lower edge of a band that holds for the whole curve with 95 %.'),
+      upper: part.maybeShare('Upper edge of that band.'),
+      below: part.maybeShare('Chance of being below in this year.'),
+    }),
+  ),
+});
+
+const Sketched = Type.Object({
+  quantilesOf: Type.Union([
+    Type.Literal('abundance.whole'),
+    Type.Literal('abundance.patches'),
+    Type.Literal('patchesInUse'),
+  ]),
+  exactBelow: part.whole('Counts below this are exact all the same.'),
+  relativeError: part.share('How far a quantile of larger counts can be off, as a share of itself.'),
+});
+
+export const RunSchema = Type.Object({
+  format: Type.Literal('skein-run/1'),
+  ...part.provenance,
+  seed: part.seed,
+  replicates: part.whole('Runs that were made, the stopped ones among them.'),
+  years: part.years,
+  firstYear: part.firstYear,
+  abundance: Type.Object({
+    whole: Type.Array(YearSummary),
+    patches: Type.Array(
+      Type.Object({
+        patch: part.patch,
+        byYear: Type.Array(YearSummary),
+        empty: Type.Optional(
+          Type.Array(part.maybeShare('Share of the runs in which nobody is there.'), {
+            description: 'In the order of `byYear`.',
+          }),
+        ),
+      }),
+    ),
+  }),
+  outcomes: Type.Array(Outcome),
+  meanLowestCount: Type.Object({
+    mean: part.maybe('Over the finished runs.'),
+    sd: part.maybe('Between the finished runs.'),
+    standardError: part.maybe('Of the mean, from the number of runs.'),
+  }),
+  patchesInUse: Type.Array(Type.Object({ year: part.year, mean: Type.Number(), quantiles: part.Quantiles })),
+  sketched: Type.Array(Sketched, { description: 'Empty where every quantile is a count that some run had.' }),
+  stopped: Type.Object({
+    runs: part.whole('Runs that had to be stopped; they are in no other number.'),
+    reasons: Type.Array(Type.String()),
+  }),
+  cautions: part.cautions,
+});
+
+export const PathSchema = Type.Object({
+  format: Type.Literal('skein-path/1'),
+  ...part.provenance,
+  years: part.years,
+  firstYear: part.firstYear,
+  abundance: Type.Array(
+    Type.Object({
+      year: part.year,
+      patch: part.patch,
+      class: part.className,
+      animals: Type.Number({ minimum: 0, description: 'On the path without chance.' }),
+    }),
+  ),
+  cautions: part.cautions,
+});
