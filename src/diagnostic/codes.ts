@@ -48,6 +48,9 @@ const readingCodes = {
   'nameless-feature': 'A feature has no name.',
   'open-ring': 'A ring of a polygon does not end where it begins.',
   'left-out-property': 'A property of a feature is not used.',
+  'csv-column': 'A column of a table is missing, unknown or stands twice.',
+  'csv-row': 'A row of a table is not whole.',
+  'csv-repeated': 'Two places give a number for the same thing.',
 
   // Expressions and quantities
   'expression-empty': 'An expression holds nothing.',

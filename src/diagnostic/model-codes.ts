@@ -12,6 +12,11 @@ export const modelCodes = {
   'parameter-cycle': 'A parameter is made from itself.',
   'repeated-patch': 'Two patches have the same name.',
 
+  // Time
+  'not-a-year': 'A key that should be a calendar year is none.',
+  'driver-years': 'A driver has no value for a year of the model.',
+  'fixed-in-time': 'A number that cannot change with time depends on the year.',
+
   // The year
   'missing-count': 'The year does not say when animals are counted.',
   'repeated-phase': 'A phase stands twice in the year.',

@@ -2,7 +2,7 @@
 import type { SpecPath } from '../spec/document.ts';
 import type { BreedingSpec } from '../spec/schema/spec.ts';
 import type { BirthSections } from './birth-sections.ts';
-import { checkClassKeys, writtenRate, type RateSection } from './class-rates.ts';
+import { checkClassKeys, ownRatesAnywhere, writtenRate, type RateSection } from './class-rates.ts';
 import { classIndex, fail, type Context } from './context.ts';
 import { missingRates } from './life-phases.ts';
 import { resolveMating } from './mating.ts';
@@ -15,7 +15,8 @@ const birthSettings: ReadonlySet<string> = new Set(['female-share', 'into']);
 
 /** The phase `breeding` of the language. */
 export function resolveBreeding(context: Context): BreedingPhase | null {
-  const { births, offspring, mating } = context.spec;
+  const { offspring, mating } = context.spec;
+  const births = context.spec.births ?? (ownRatesAnywhere(context, 'births') ? {} : undefined);
   if (births === undefined) return missingRates(context, 'breeding', '`births: { CLASS: young, … }`');
   return breedingPhase(context, {
     name: 'breeding',

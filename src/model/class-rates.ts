@@ -49,16 +49,27 @@ export function checkOwnKeys(context: Context, key: string): void {
   }
 }
 
-/** Classes without a number in a section that must have one for each. */
-export function requireEveryClass(context: Context, { everywhere, path, what }: RateSection): void {
+/** Classes without a number in a section that must have one for each, everywhere or in every patch of its own. */
+export function requireEveryClass(context: Context, { everywhere, path, key, what }: RateSection): void {
   for (const name of context.classes) {
     if (everywhere[name] !== undefined) continue;
+    const own = ({ name: patch }: { readonly name: string }): boolean =>
+      isExpression(numbersIn(context, patch, key)?.[name]);
+    const without = context.patches.filter((patch) => !own(patch));
+    const [first] = without;
+    if (first === undefined) continue;
+    const where = without.length < context.patches.length ? ` in ${first.name}` : '';
     fail(context, 'missing-rate', path, {
-      message: `The class \`${name}\` has no ${what}`,
+      message: `The class \`${name}\` has no ${what}${where}`,
       part: 'key',
       details: { expected: 'a share for every class', fix: `Add \`${name}: …\` (0 where none survive).` },
     });
   }
+}
+
+/** Whether some patch has rates of its own under a key. */
+export function ownRatesAnywhere(context: Context, key: string): boolean {
+  return context.patches.some(({ name }) => numbersIn(context, name, key) !== undefined);
 }
 
 /** What stands under `in` and a patch for a phase. */

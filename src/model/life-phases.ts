@@ -1,6 +1,6 @@
 // Survival and ageing. A survival may stand in a year several times, under names of its own.
 import type { SurvivalSpec } from '../spec/schema/spec.ts';
-import { checkClassKeys, requireEveryClass, writtenRate, type RateSection } from './class-rates.ts';
+import { checkClassKeys, ownRatesAnywhere, requireEveryClass, writtenRate, type RateSection } from './class-rates.ts';
 import { oldestClasses, oldestLeave } from './classes.ts';
 import { fail, type Context } from './context.ts';
 import type { AgeingPhase, SurvivalPhase } from './model.ts';
@@ -8,7 +8,7 @@ import { buildTable } from './rates.ts';
 
 /** The phase `survival` of the language. */
 export function resolveSurvival(context: Context): SurvivalPhase | null {
-  const { survival } = context.spec;
+  const survival = context.spec.survival ?? (ownRatesAnywhere(context, 'survival') ? {} : undefined);
   if (survival === undefined) return missingRates(context, 'survival', '`survival: { CLASS: share, … }`');
   return survivalPhase(context, 'survival', {
     everywhere: survival,

@@ -180,6 +180,15 @@ export interface NamedNumber {
   readonly basis: string | null;
 }
 
+/** What was counted in the past; the patch is an index, the year a calendar year. */
+export interface ObservedCounts {
+  readonly counts: readonly { readonly patch: number; readonly year: number; readonly animals: number }[];
+  /** 1 for each class that the counts hold. */
+  readonly of: Uint8Array;
+  /** Standard error of a count as a share of it; null where it is not known. */
+  readonly error: number | null;
+}
+
 export interface Model {
   readonly title: string;
   readonly question: string | null;
@@ -208,6 +217,8 @@ export interface Model {
   readonly variation: Variation | null;
   /** Whole animals, P×C. */
   readonly start: StartRule;
+  /** Absent where none are given. */
+  readonly observed?: ObservedCounts;
   readonly outcomes: readonly OutcomeRule[];
   readonly replicates: number;
   readonly seed: number;

@@ -31,6 +31,16 @@ export interface Use {
   readonly dimension: Dimension;
 }
 
+/** Of each driver, the value in a calendar year of the model. */
+export type DriverValues = ReadonlyMap<string, (year: number) => number>;
+
+/** What expressions read besides named numbers, and where mistakes are told. */
+export interface Surroundings {
+  readonly attributeNames: ReadonlySet<string>;
+  readonly drivers: DriverValues;
+  readonly findings: Finding[];
+}
+
 /** Evaluates expressions and tells each mistake once, however many patches and years meet it. */
 export class Numbers {
   readonly #parameters = new Map<string, { readonly ast: Ast; readonly path: SpecPath }>();
@@ -39,12 +49,16 @@ export class Numbers {
   readonly #findings: Finding[];
   readonly #attributeNames: ReadonlySet<string>;
   readonly #uses = new Map<string, Use>();
+  readonly #drivers: DriverValues;
+  /** Numbers that are read once a year; all others are read once and for all. */
+  readonly #yearly = new Set<string>();
   #year = NaN;
   #memo = new Map<string, number | undefined>();
 
-  constructor(parameters: readonly NamedExpression[], attributeNames: ReadonlySet<string>, findings: Finding[]) {
+  constructor(parameters: readonly NamedExpression[], { attributeNames, drivers, findings }: Surroundings) {
     this.#findings = findings;
     this.#attributeNames = attributeNames;
+    this.#drivers = drivers;
     for (const { name, expression, path } of parameters) {
       const ast = this.#parse(expression, path);
       if (ast !== null) this.#parameters.set(name, { ast, path });
@@ -57,7 +71,7 @@ export class Numbers {
     if (typeof expression === 'number') return expression;
     this.#uses.set(path.join('\0'), { expression, path, dimension: where.dimension ?? 'share' });
     const ast = this.#parse(expression, path, where.dimension);
-    if (ast === null) return NaN;
+    if (ast === null || this.#isDatedWrongly(ast, path)) return NaN;
     const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
     if (result.ok) return result.value;
     this.#tell(result.fault, path, where);
@@ -67,7 +81,13 @@ export class Numbers {
   /** True where the value can differ between years. */
   varies(expression: number | string, path: SpecPath, dimension?: Dimension): boolean {
     const ast = this.#parse(expression, path, dimension);
-    return ast !== null && this.#namesBehind(ast).has('year');
+    this.#yearly.add(JSON.stringify(path));
+    return ast !== null && this.#dated(ast) !== undefined;
+  }
+
+  /** The name by which an expression depends on the year, if it does. */
+  #dated(ast: Ast): string | undefined {
+    return [...this.#namesBehind(ast)].find((name) => name === 'year' || this.#drivers.has(name));
   }
 
   /** Every place where an expression was asked for its value. */
@@ -91,6 +111,27 @@ export class Numbers {
     return ast === null ? null : replaceNames(ast, replace);
   }
 
+  /** A number that is read once cannot change with the year: better told than frozen in its first year. */
+  #isDatedWrongly(ast: Ast, path: SpecPath): boolean {
+    const key = JSON.stringify(path);
+    if (this.#yearly.has(key)) return false;
+    const name = this.#dated(ast);
+    if (name === undefined) {
+      this.#yearly.add(key);
+      return false;
+    }
+    if (this.#told.has(key)) return true;
+    this.#told.add(key);
+    this.#findings.push({
+      severity: 'error',
+      code: 'fixed-in-time',
+      message: `This number is the same in all years, and \`${name}\` changes with the year`,
+      path,
+      details: { expected: 'a number or an expression that does not depend on the year' },
+    });
+    return true;
+  }
+
   #parse(expression: number | string, path: SpecPath, dimension: Dimension = 'share'): Ast | null {
     const key = `${dimension}:${expression}`;
     const known = this.#parsed.get(key);
@@ -106,6 +147,8 @@ export class Numbers {
 
   #lookUp(name: string, where: Where): number | undefined {
     if (name === 'year') return where.year;
+    const driver = this.#drivers.get(name);
+    if (driver !== undefined) return driver(where.year);
     const attribute = where.attributes?.get(name);
     if (attribute !== undefined) return attribute;
     return this.#parameter(name, where.year);
@@ -178,7 +221,7 @@ export class Numbers {
         details: { fix: `Give every patch its \`${name}\`.` },
       };
     }
-    const known = [...this.#parameters.keys(), ...this.#attributeNames, 'year'];
+    const known = [...this.#parameters.keys(), ...this.#attributeNames, ...this.#drivers.keys(), 'year'];
     return {
       message: `There is no \`${name}\` here`,
       details: {

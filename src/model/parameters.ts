@@ -16,12 +16,12 @@ export function namedExpressions(spec: Spec): readonly NamedExpression[] {
 
 export function resolveParameters(context: Context): readonly NamedNumber[] {
   const written = context.spec.parameters ?? {};
-  return namedExpressions(context.spec).map(({ name, expression, path }) => ({
-    name,
-    value: context.numbers.value(expression, path, { year: context.time.firstYear }),
-    expression: String(expression),
-    ...sourceOf(written[name]),
-  }));
+  return namedExpressions(context.spec).map(({ name, expression, path }) => {
+    // A named number may change with the year; what is told of it is its value in the first.
+    context.numbers.varies(expression, path);
+    const value = context.numbers.value(expression, path, { year: context.time.firstYear });
+    return { name, value, expression: String(expression), ...sourceOf(written[name]) };
+  });
 }
 
 function sourceOf(parameter: ParameterSpec | undefined): Pick<NamedNumber, 'source' | 'basis'> {
@@ -32,12 +32,22 @@ function sourceOf(parameter: ParameterSpec | undefined): Pick<NamedNumber, 'sour
 /** A name in an expression must mean one thing. */
 export function checkNames(context: Context): void {
   const attributes = new Set(context.attributes.flatMap((map) => [...map.keys()]));
-  for (const name of Object.keys(context.spec.parameters ?? {})) {
-    if (!attributes.has(name)) continue;
-    fail(context, 'ambiguous-name', ['parameters', name], {
-      message: `\`${name}\` is a parameter and an attribute of the patches`,
-      part: 'key',
-      details: { fix: 'Rename one of them.' },
-    });
+  const parameters = new Set(Object.keys(context.spec.parameters ?? {}));
+  for (const name of parameters) {
+    if (attributes.has(name))
+      tellTwoMeanings(context, ['parameters', name], 'a parameter and an attribute of the patches');
   }
+  for (const name of Object.keys(context.spec.drivers?.values ?? {})) {
+    const path = ['drivers', 'values', name];
+    if (attributes.has(name)) tellTwoMeanings(context, path, 'a driver and an attribute of the patches');
+    if (parameters.has(name)) tellTwoMeanings(context, path, 'a driver and a parameter');
+  }
+}
+
+function tellTwoMeanings(context: Context, path: readonly string[], meanings: string): void {
+  fail(context, 'ambiguous-name', path, {
+    message: `\`${path.at(-1) ?? ''}\` is ${meanings}`,
+    part: 'key',
+    details: { fix: 'Rename one of them.' },
+  });
 }

@@ -60,14 +60,16 @@ export function whereIn(context: Context, patch: number, year: number): Where {
   };
 }
 
+/** Every number is asked, since a number that is never asked counts as read once and for all. */
 function tableVaries(context: Context, request: TableRequest): boolean {
+  let varies = false;
   for (let p = 0; p < context.patches.length; p++) {
     for (let i = 0; i < request.size; i++) {
       const written = request.written(p, i);
-      if (written !== null && context.numbers.varies(written.expression, written.path)) return true;
+      if (written !== null && context.numbers.varies(written.expression, written.path)) varies = true;
     }
   }
-  return false;
+  return varies;
 }
 
 function fillTable(context: Context, request: TableRequest, year: number): Float64Array {

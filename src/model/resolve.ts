@@ -6,6 +6,8 @@ import { resolveClasses } from './classes.ts';
 import { resolveCrowding } from './crowding.ts';
 import type { Model } from './model.ts';
 import { Numbers } from './numbers.ts';
+import { resolveDrivers } from './drivers.ts';
+import { resolveObserved } from './observed.ts';
 import { resolveOutcomes } from './outcomes.ts';
 import { checkNames, namedExpressions, resolveParameters } from './parameters.ts';
 import { resolvePatches } from './patches.ts';
@@ -36,15 +38,23 @@ export function resolveModel(spec: Spec): Resolved {
     catastrophes: resolveCatastrophes(context, phases),
     start: resolveStart(context),
     outcomes: resolveOutcomes(context),
+    ...observedIn(context),
     ...runSettings(context),
   };
   if (findings.some((finding) => finding.severity === 'error')) return { model: null, findings };
   return { model: { ...head(context), ...parts, defaults: context.defaults }, findings };
 }
 
+function observedIn(context: Context): Pick<Model, 'observed'> {
+  const observed = resolveObserved(context);
+  return observed === undefined ? {} : { observed };
+}
+
 function contextOf(spec: Spec, findings: Finding[]): Context {
   const { patches, attributes, attributeNames } = resolvePatches(spec, findings);
-  const numbers = new Numbers(namedExpressions(spec), attributeNames, findings);
+  const time = { firstYear: spec['first-year'] ?? 1, steps: spec.years };
+  const drivers = resolveDrivers(spec, time, findings);
+  const numbers = new Numbers(namedExpressions(spec), { attributeNames, drivers, findings });
   const defaults: string[] = [];
   const classes = resolveClasses(spec, findings);
   if (spec['first-year'] === undefined)
@@ -59,7 +69,7 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
     },
     numbers,
     attributes,
-    time: { firstYear: spec['first-year'] ?? 1, steps: spec.years },
+    time,
     toldBounds: new Set(),
     findings,
     defaults,

@@ -5,13 +5,15 @@ import { Collector } from '../diagnostic/collector.ts';
 import type { DataFiles } from './data/files.ts';
 import { joinFiles } from './data/join.ts';
 import type { SpecDocument } from './document.ts';
-import { CoreSchema, type Spec } from './schema/spec.ts';
+import { CoreSchema, namedSchemas, type Spec } from './schema/spec.ts';
 import { checkTop } from './shape/top.ts';
 import type { Report } from './shape/report.ts';
+import { knownKeys, type Shape } from './shape/shape.ts';
 import { locateIn } from './text/locate.ts';
-import { sourceText, type SourceMap, type SourceText } from './text/source.ts';
+import { sourceText, type SourceMap, type SourceNode, type SourceText } from './text/source.ts';
 import { readTree } from './text/tree.ts';
-import { sectionOf, valueOf } from './text/value.ts';
+import { sectionOf } from './text/value.ts';
+import { shapedValueOf } from './value.ts';
 
 export interface ReadSpec {
   /** Missing where there is any error. */
@@ -53,11 +55,21 @@ function documentOf(root: SourceMap, source: SourceText, found: Collector): Spec
 
 /** The keys of the language as they are, the sections that the author named together under `named`. */
 function specOf(root: SourceMap): unknown {
-  const known = CoreSchema.properties;
-  const core = root.entries.filter((entry) => Object.hasOwn(known, entry.key));
+  const core: Shape = CoreSchema;
+  const kinds: Readonly<Record<string, Shape>> = namedSchemas;
+  const known = knownKeys(core);
   const own = root.entries.filter((entry) => !Object.hasOwn(known, entry.key));
-  const named = sectionOf(own.map((entry) => [entry.key, valueOf(entry.value)]));
-  return sectionOf([...core.map((entry) => [entry.key, valueOf(entry.value)] as const), ['named', named]]);
+  const named = own.map(({ key, value }) => [key, shapedValueOf(value, kinds[kindOf(value)])] as const);
+  const written = root.entries.filter((entry) => Object.hasOwn(known, entry.key));
+  return sectionOf([
+    ...written.map(({ key, value }) => [key, shapedValueOf(value, known[key])] as const),
+    ['named', sectionOf(named)],
+  ]);
+}
+
+function kindOf(section: SourceNode): string {
+  const kind = section.kind === 'map' ? section.entries.find((entry) => entry.key === 'kind')?.value : undefined;
+  return kind?.kind === 'scalar' ? kind.source : '';
 }
 
 /** The checks of shape have the same source as the type: what they find nothing wrong with is a spec. */

@@ -56,6 +56,10 @@ test('a spec that uses every key comes back', () => {
         moult: { adult: 0.95 }
         natal: { newborn: 0.3 }
         demography: { survival: [0.3, 0.4, 0.8], fecundity: [0, 1, 1.2] }
+    drivers:
+      values:
+        rain: { "2027": 0.8, "2028": 1.1 }
+      future: repeat
     year: [count, breeding, second brood, survival, moult, natal, roaming, wandering, room, ageing]
     natal:
       kind: dispersal
@@ -134,6 +138,11 @@ test('a spec that uses every key comes back', () => {
       counted: { North fen: 120 }
       of: [yearling, adult]
       rest: stable within patch
+    observed:
+      counts:
+        North fen: { "2024": 71, "2025": 64 }
+      of: [adult]
+      error: 15 %
     outcomes:
       lost hares: { of: [adult], below: 40 }
       north empty: { of: all, in: [North fen], below: 0.5 }

@@ -27,6 +27,7 @@ function validator() {
     'time',
     'file',
     'chance',
+    'year',
   ]) {
     ajv.addFormat(format, true);
   }

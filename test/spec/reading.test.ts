@@ -107,7 +107,7 @@ test('all mistakes of a file come at once, in its order', () => {
     .replace('kind: ceiling', 'kind: roof')
     .replace('status: draft', 'status: drafted');
   expect(told(text)).toEqual([
-    ...['8 unknown-word', '11 out-of-range', '28 expression-character', '52 unknown-kind', '64 unknown-key'],
+    ...['8 unknown-word', '11 out-of-range', '28 expression-character', '52 unknown-kind', '66 unknown-key'],
   ]);
 });
 

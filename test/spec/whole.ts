@@ -62,6 +62,8 @@ start: { counted: { North fen: 120 }, of: [yearling, adult], rest: stable within
 outcomes:
   lost hares: { of: [adult], below: 40 }
   north empty: { of: all, in: [North fen], below: 0.5 }
+observed: { counts: { North fen: { 2024: 71, 2025: 64 } }, of: [adult], error: 15 % }
+drivers: { values: { rain: { 2027: 0.8, 2028: 1.1 } }, future: repeat }
 run: { replicates: 2000, seed: 2026 }
 variation:
   survival: { newborn: { sd: 0.1 }, adult: { cv: 5 %, shape: beta } }

@@ -1,5 +1,5 @@
 import { Type } from 'typebox';
-import { byNumber, classList, Name } from './values.ts';
+import { byNumber, classList, Name, orFile } from './values.ts';
 
 export const Outcome = Type.Object(
   {
@@ -32,12 +32,17 @@ const animals = { description: 'Animals at the start.', examples: [12], 'x-unit'
 
 const StartTable = Type.Object(
   {
-    table: Type.Record(Type.String(), byNumber(animals, 'CLASS'), {
-      title: 'patches with animals by class',
-      description: 'Animals of each class in each patch; what is not named is empty.',
-      examples: ['North fen: { adult: 40, yearling: 22 }'],
-      'x-key': 'PATCH',
-    }),
+    table: orFile(
+      Type.Record(Type.String(), byNumber(animals, 'CLASS'), {
+        title: 'patches with animals by class',
+        'x-key': 'PATCH',
+      }),
+      {
+        title: 'patches with animals by class, or a CSV file with the columns patch and a class each',
+        description: 'Animals of each class in each patch; what is not named is empty.',
+        examples: ['North fen: { adult: 40, yearling: 22 }'],
+      },
+    ),
   },
   { additionalProperties: false },
 );
@@ -64,7 +69,11 @@ const StartTotal = Type.Object(
 
 const StartCounted = Type.Object(
   {
-    counted: byNumber({ ...animals, description: 'Animals counted in each patch.' }, 'PATCH'),
+    counted: orFile(byNumber({ ...animals, description: 'Animals counted in the patch.' }, 'PATCH'), {
+      title: 'patches with a number each, or a CSV file with the columns patch, animals',
+      description: 'Animals counted in each patch.',
+      examples: ['counts-2026.csv'],
+    }),
     of: classList({ description: 'Classes that the counts hold.', examples: ['[yearling, adult]'] }),
     rest: Type.Union([Type.Literal('stable within patch'), Type.Literal('none')], {
       description: 'The classes that were not counted: in stable proportion to the others, or none.',

@@ -1,5 +1,5 @@
-import { Type } from 'typebox';
-import { expression, FileName, Name, quantity, text } from './values.ts';
+import { Type, type Static } from 'typebox';
+import { fileName, Name, quantity, text, timed } from './values.ts';
 
 const Place = Type.Tuple([Type.Number(), Type.Number()], { title: 'two numbers, x and y' });
 
@@ -46,12 +46,17 @@ export const InlinePatch = Type.Object(
   },
 );
 
-export const InlinePatches = Type.Array(InlinePatch, { minItems: 1, title: 'a list of patches' });
+const InlinePatches = Type.Array(InlinePatch, { minItems: 1, title: 'a list of patches' });
 
 /** Features of a GeoJSON file. */
 const PatchFile = Type.Object(
   {
-    file: Type.String({ ...FileName, description: 'A GeoJSON file beside the spec.', examples: ['fens.geojson'] }),
+    file: Type.String({
+      minLength: 1,
+      format: 'file',
+      description: 'A GeoJSON file beside the spec.',
+      examples: ['fens.geojson'],
+    }),
     name: Type.Optional(
       text({
         description: 'The property of the features that is the name of the patch.',
@@ -62,8 +67,9 @@ const PatchFile = Type.Object(
   },
   { additionalProperties: false, title: '{ file: FILE, name: PROPERTY }' },
 );
+export type PatchFileRef = Static<typeof PatchFile>;
 
-export const Patches = Type.Union([InlinePatches, FileName, PatchFile], {
+export const Patches = Type.Union([InlinePatches, fileName(), PatchFile], {
   title: 'a list of patches, or the name of a GeoJSON file',
   description:
     'The habitat patches, or the GeoJSON file (points, polygons, multipolygons) that holds them; numbers among the properties of a feature are attributes of its patch. Their order changes nothing.',
@@ -91,10 +97,10 @@ const Source = Type.Object(
 );
 
 export const Parameter = Type.Union([
-  expression({ description: 'A number of its own name.', examples: [0.22] }),
+  timed({ description: 'A number of its own name.', examples: [0.22] }),
   Type.Object(
     {
-      value: expression({ description: 'The number, or an expression over other parameters.', examples: [0.74] }),
+      value: timed({ description: 'The number, or an expression over other parameters.', examples: [0.74] }),
       source: Type.Optional(Source),
     },
     { additionalProperties: false, title: 'a number with its source: { value: …, source: … }' },

@@ -1,6 +1,6 @@
 // The phases that a study names itself: each stands at the top level under its own name with a `kind`.
 import { Type } from 'typebox';
-import { byClass, classList, expression, Name, quantity } from './values.ts';
+import { byClass, classList, expression, Name, orFile, quantity, timed } from './values.ts';
 
 export const Kernel = Type.Object(
   {
@@ -33,19 +33,21 @@ export const Kernel = Type.Object(
 );
 
 /** From patch to patch: the share of the animals present that goes there. */
-export const Shares = Type.Record(
-  Type.String(),
+export const Shares = orFile(
   Type.Record(
     Type.String(),
-    expression({ description: 'Share of the animals present.', examples: [0.1], 'x-unit': 'share' }),
-    { 'x-key': 'TO' },
+    Type.Record(
+      Type.String(),
+      expression({ description: 'Share of the animals present.', examples: [0.1], 'x-unit': 'share' }),
+      { 'x-key': 'TO' },
+    ),
+    { title: 'patches with the shares that go to other patches', 'x-key': 'FROM' },
   ),
   {
-    title: 'patches with the shares that go to other patches',
+    title: 'patches with the shares that go to other patches, or a CSV file with the columns from, to, share',
     description:
       'From patch to patch, the share of the animals present that goes there; instead of leaving, kernel and attraction.',
     examples: ['North fen: { Long holm: 0.1 }'],
-    'x-key': 'FROM',
   },
 );
 
@@ -93,7 +95,7 @@ export const Dispersal = Type.Object(
     kind: Type.Literal('dispersal', { description: 'Animals move between patches.', examples: ['dispersal'] }),
     classes: classList({ description: 'Classes that move.', examples: ['[newborn]'] }),
     leaving: Type.Optional(
-      Type.Union([expression(leaving), byClass(leaving)], {
+      Type.Union([timed(leaving), byClass(leaving)], {
         title: 'a number, an expression, or classes with one each',
         ...leaving,
       }),

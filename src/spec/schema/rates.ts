@@ -1,6 +1,6 @@
 import { Type } from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
-import { byClass, classList, expression, Name } from './values.ts';
+import { byClass, classList, expression, Name, orFile, timed } from './values.ts';
 
 const young = 'Young of the counted sex for each animal of the class that is present in the phase `breeding`.';
 
@@ -32,7 +32,7 @@ export const Births = Type.Record(Type.String(), Type.Union([expression(birthsWo
   description: young,
   'x-key': 'CLASS',
   'x-keys': { 'female-share': FemaleShare, into: Into },
-  'x-others': expression(birthsWords),
+  'x-others': timed(birthsWords),
 });
 
 /** A survival and a breeding under names of their own, beside or instead of the plain ones. */
@@ -68,7 +68,11 @@ const Row = Type.Array(expression({ description: 'An entry.', examples: [0.3] })
 });
 
 function square(description: string, example: string) {
-  return Type.Array(Row, { minItems: 1, title: 'a list of rows', description, examples: [example] });
+  return orFile(Type.Array(Row, { minItems: 1, title: 'a list of rows' }), {
+    title: 'a list of rows, or a CSV file with the classes in its first line and column',
+    description,
+    examples: [example],
+  });
 }
 
 export const EntryDemography = Type.Object(

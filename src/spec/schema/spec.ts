@@ -3,12 +3,14 @@ import { Type, type Static } from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';
+import { Drivers, Observed } from './history.ts';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
-import { InlinePatches, Parameters, Patches, type InlinePatch } from './patches.ts';
+import { Parameters, Patches, type InlinePatch, type PatchFileRef } from './patches.ts';
 import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
+import type { ScheduleRef } from './schedule.ts';
 import { Study } from './study.ts';
-import { Name } from './values.ts';
+import { fileName, Name, type FileRef } from './values.ts';
 import { type Varied, Variation } from './variation.ts';
 
 /** The keys that the language knows. What a study names itself stands beside them, each with a `kind`. */
@@ -60,6 +62,14 @@ export const CoreSchema = Type.Object(
     mating: Type.Optional(Mating),
     demography: Type.Optional(Demography),
     in: Type.Optional(InPatches),
+    rates: Type.Optional(
+      fileName({
+        description:
+          'A CSV file with the columns patch and class, and a column a rate (survival, births, or a phase of your own): one row a patch and class.',
+        examples: ['rates.csv'],
+      }),
+    ),
+    drivers: Type.Optional(Drivers),
     year: Type.Array(Name, {
       minItems: 1,
       title: 'a list of phases',
@@ -70,14 +80,12 @@ export const CoreSchema = Type.Object(
     crowding: Type.Optional(Crowding),
     variation: Type.Optional(Variation),
     start: Start,
+    observed: Type.Optional(Observed),
     outcomes: Type.Optional(Outcomes),
     run: Type.Optional(Run),
   },
   { additionalProperties: false },
 );
-
-/** What stands in a spec where it names no file. */
-export const inlinePatches = InlinePatches;
 
 export const namedSchemas = {
   survival: NamedSurvival,
@@ -88,20 +96,27 @@ export const namedSchemas = {
   catastrophe: Catastrophe,
 } as const;
 
-export type InlinePatchSpec = Static<typeof InlinePatch>;
-export type DispersalSpec = Static<typeof Dispersal>;
-export type CeilingSpec = Static<typeof Ceiling>;
-export type CrowdingSpec = Static<typeof Crowding>;
-export type OutcomeSpec = Static<typeof Outcome>;
-export type VariedSpec = Static<typeof Varied>;
-export type SurvivalSpec = Static<typeof NamedSurvival>;
-export type BreedingSpec = Static<typeof NamedBreeding>;
-export type NamedCrowdingSpec = Static<typeof NamedCrowding>;
-export type CatastropheSpec = Static<typeof Catastrophe>;
+export type InlinePatchSpec = Inline<Static<typeof InlinePatch>>;
+export type DispersalSpec = Inline<Static<typeof Dispersal>>;
+export type CeilingSpec = Inline<Static<typeof Ceiling>>;
+export type CrowdingSpec = Inline<Static<typeof Crowding>>;
+export type OutcomeSpec = Inline<Static<typeof Outcome>>;
+export type VariedSpec = Inline<Static<typeof Varied>>;
+export type SurvivalSpec = Inline<Static<typeof NamedSurvival>>;
+export type BreedingSpec = Inline<Static<typeof NamedBreeding>>;
+export type NamedCrowdingSpec = Inline<Static<typeof NamedCrowding>>;
+export type CatastropheSpec = Inline<Static<typeof Catastrophe>>;
 export type NamedSpec = CatastropheSpec | SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
-export type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
+type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
+
+/** Without the names of files, and with schedules as the expressions that they stand for. */
+type Inline<Value> = Value extends FileRef | PatchFileRef | ScheduleRef
+  ? never
+  : Value extends object
+    ? { [Key in keyof Value]: Inline<Value[Key]> }
+    : Value;
 
 /** A model with what its data files hold in the place of their names. */
-export type Spec = Omit<WrittenSpec, 'patches'> & { readonly patches: readonly InlinePatchSpec[] };
+export type Spec = Inline<Omit<WrittenSpec, 'rates'>>;

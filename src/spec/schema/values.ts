@@ -1,6 +1,7 @@
 // The small values that every section is made of.
-import { Type } from 'typebox';
+import { Type, type TSchema } from 'typebox';
 import { dimensionWords, type Dimension } from '../quantity.ts';
+import { schedule } from './schedule.ts';
 
 /** What the reference says of a key; `x-unit` is the unit of a bare number. */
 export interface KeyWords {
@@ -14,6 +15,17 @@ export interface KeyWords {
 export function expression(words: KeyWords) {
   const title = 'a number or an expression';
   return Type.Union([Type.Number(), Type.String({ minLength: 1, format: 'expression' })], { title, ...words });
+}
+
+/** An expression that may also be written as a schedule of years. */
+export function timed(words: KeyWords) {
+  const title = 'a number, an expression, or years with a number each';
+  const branches = [
+    Type.Number(),
+    Type.String({ minLength: 1, format: 'expression' }),
+    schedule('expression'),
+  ] as const;
+  return Type.Union([...branches], { title, ...words });
 }
 
 const baseUnits: Readonly<Record<Dimension, string>> = {
@@ -35,7 +47,7 @@ export const Name = Type.String({ minLength: 1, format: 'name', title: 'a name' 
 
 /** Class name to expression. */
 export function byClass(words: KeyWords) {
-  return Type.Record(Type.String(), expression(words), {
+  return Type.Record(Type.String(), timed(words), {
     title: 'classes with a number or an expression each',
     description: words.description,
     'x-key': 'CLASS',
@@ -63,5 +75,16 @@ export function byNumber(words: KeyWords, key: string) {
   });
 }
 
+/** The name of a file, in the place of what the file holds. */
+export type FileRef = string & { readonly namesFile: true };
+
 /** A file in the folder of the spec or below it. */
-export const FileName = Type.String({ minLength: 1, format: 'file', title: 'the name of a file' });
+export function fileName(words: { readonly description?: string; readonly examples?: readonly string[] } = {}) {
+  const schema = Type.String({ minLength: 1, format: 'file', title: 'the name of a file', ...words });
+  return Object.assign(Type.Unsafe<FileRef>(schema), { type: 'string' } as const);
+}
+
+/** What may stand in the spec, or in a file that it names. */
+export function orFile<Shape extends TSchema>(shape: Shape, words: KeyWords & { readonly title: string }) {
+  return Type.Union([shape, fileName()], { ...words });
+}

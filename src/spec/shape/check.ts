@@ -10,6 +10,11 @@ import { expectationOf } from './words.ts';
 
 export function checkShape(node: SourceNode, shape: Shape, subject: Subject, report: Report): void {
   if (node.kind === 'hole') return;
+  if (node.file !== undefined && node.file !== report.source) {
+    const span = { ...node.span, length: Math.max(1, node.span.length) };
+    checkShape(node, shape, { ...subject, span }, { ...report, source: node.file });
+    return;
+  }
   if (shape.anyOf !== undefined) checkUnion(node, shape, { subject, report, check: checkShape });
   else if (node.kind === 'map' && sortOf(shape) === 'map') checkMap(node, shape, subject, report);
   else if (node.kind === 'list' && sortOf(shape) === 'list') checkList(node, shape, subject, report);
@@ -24,17 +29,21 @@ export function subjectOf(entry: SourceEntry): Subject {
 export function checkMap(map: SourceMap, shape: Shape, subject: Subject, report: Report): void {
   for (const entry of map.entries) {
     if (report.found.full) return;
-    const known = shapeOfKey(shape, entry.key);
-    if (known === undefined) {
-      tellUnknownKey(entry, Object.keys(knownKeys(shape)), report);
-      continue;
-    }
-    if (!Object.hasOwn(knownKeys(shape), entry.key)) checkOwnKey(entry, shape, report);
-    checkShape(entry.value, known, subjectOf(entry), report);
+    checkEntry(entry, shape, entry.file === undefined ? report : { ...report, source: entry.file });
   }
   for (const key of shape.required ?? []) {
     if (!map.entries.some((entry) => entry.key === key)) tellMissingKey(key, shape, subject, report);
   }
+}
+
+function checkEntry(entry: SourceEntry, shape: Shape, report: Report): void {
+  const known = shapeOfKey(shape, entry.key);
+  if (known === undefined) {
+    tellUnknownKey(entry, Object.keys(knownKeys(shape)), report);
+    return;
+  }
+  if (!Object.hasOwn(knownKeys(shape), entry.key)) checkOwnKey(entry, shape, report);
+  checkShape(entry.value, known, subjectOf(entry), report);
 }
 
 /** A key that the author chose: a name, and perhaps a slip in a key of the language. */

@@ -5,6 +5,7 @@ import { reservedWords, type Ast } from '../expression/ast.ts';
 import { evaluate } from '../expression/evaluate.ts';
 import { namesIn } from '../expression/names.ts';
 import { dimensionWords, readMeasure, type Dimension } from '../quantity.ts';
+import { isYear } from '../schedule.ts';
 import { isAmbiguousWord } from '../text/scalar.ts';
 import { spanWithin, type SourceScalar } from '../text/source.ts';
 import { put, type Report, type Subject } from './report.ts';
@@ -14,12 +15,22 @@ export function checkFormat(scalar: SourceScalar, format: string, subject: Subje
   if (format === 'name') checkName(scalar, report);
   else if (format === 'identifier') checkIdentifier(scalar, report);
   else if (format === 'chance') checkChance(scalar, subject, report);
+  else if (format === 'year') checkYear(scalar, report);
   else if (format === 'expression') checkExpression(scalar, subject, report);
   else if (isDimension(format) && !isStrangeNumber(scalar, subject, report)) checkQuantity(scalar, format, report);
 }
 
 function isDimension(format: string): format is Dimension {
   return Object.hasOwn(dimensionWords, format);
+}
+
+function checkYear({ source, span }: SourceScalar, report: Report): void {
+  if (isYear(source)) return;
+  put(
+    report,
+    { code: 'not-a-year', message: `\`${source}\` is not a year`, span },
+    { expected: 'a calendar year, such as 2027' },
+  );
 }
 
 const longestName = 100;

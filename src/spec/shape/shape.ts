@@ -30,6 +30,8 @@ export interface Shape {
   readonly 'x-key'?: string;
   /** Its keys are described elsewhere. */
   readonly 'x-brief'?: boolean;
+  /** Years with numbers, which becomes an expression. */
+  readonly 'x-schedule'?: boolean;
   /** Keys with a meaning of their own among those that the author chooses, which TypeScript has no type for. */
   readonly 'x-keys'?: Readonly<Record<string, Shape>>;
   /** All other keys beside those. */
