@@ -84,6 +84,7 @@ export function fillBatch(count: i32): void {
   }
   memory.fill(stops, 0, 192);
   memory.fill(moved, 0, (<usize>ways) << 3);
+  memory.fill(observed, 0, <usize>columns * laneNumbers);
   memory.fill(slotValues, 0, <usize>slots * patches * laneNumbers);
   memory.fill(weather, 0, weatherBytes());
   anyStopped = false;
@@ -103,6 +104,10 @@ export function stopLane(lane: i32, code: i32, index: i32): void {
   store<i32>(at, index, 4);
   store<i32>(at, step, 8);
   anyStopped = true;
+}
+
+export function isStopped(lane: i32): bool {
+  return load<i32>(stops + <usize>lane * 12) !== faultNone;
 }
 
 export function clearStopped(): void {

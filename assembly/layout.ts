@@ -257,6 +257,26 @@ export const doChoose = 22;
 /** Numbers that an expression may have on its stack. */
 export const deepestStack = 64;
 
+// 64-95 belong to what people do with animals. All three begin alike.
+export const opTake = 64;
+export const opMove = 65;
+export const opAdd = 66;
+export const handledActive = 3; // epoch of step: 1 in steps in which it is done; none for every step
+export const handledColumn = 4; // a number: the first of three columns: animals handled, those of them that died, shortfall
+export const handledPatches = 5; // patch forms: 1 where it is done
+export const handledClasses = 6; // class mask
+export const handledAmounts = 7; // rates: numbers or shares; of the group at its first patch, and class 0 where classes go together
+export const handledRule = 8; // a number: one of the rules below
+export const handledTogether = 9; // a number: 1 where all patches are one group
+export const handledByClass = 10; // a number: 1 where each class is a group of its own
+export const handledLevels = 11; // patch numbers: the count above which there is an excess
+export const handledTo = 12; // a number: the patch that those moved enter
+export const handledSurvival = 13; // patch numbers, one: of those moved or added
+export const handledColumns = 3;
+export const ruleNumber = 1;
+export const ruleShare = 2;
+export const ruleExcess = 3;
+
 export const opCount = 96;
 export const countOutcomeWeights = 3;
 export const countOutcomePatches = 4;
@@ -285,6 +305,9 @@ export const useRemove = 11;
 export const useLitter = 12;
 export const useUneven = 13;
 export const useKept = 14;
+export const useQuota = 15;
+export const useTake = 16;
+export const useHandling = 17;
 export const useWeather = 32;
 export const useStrike = 33;
 export const useOrigin = 34;

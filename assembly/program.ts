@@ -9,6 +9,8 @@ import { checkTotals, count } from './phases/count';
 import { readCrowding } from './phases/crowding';
 import { liveYear } from './phases/demography';
 import { disperse } from './phases/dispersal';
+import { handle } from './phases/handling';
+import { release } from './phases/release';
 import { survive } from './phases/survival';
 import { strike } from './weather/catastrophe';
 import { respond } from './weather/response';
@@ -62,6 +64,14 @@ function runRecord(record: usize): void {
       break;
     case layout.opCrowding:
       readCrowding(record);
+      break;
+    case layout.opTake:
+    case layout.opMove:
+      handle(record);
+      break;
+    case layout.opAdd:
+      release(record);
+      checkTotals(operand(record, layout.recordIndex));
       break;
     case layout.opVariation:
       vary(record);

@@ -2,6 +2,7 @@
 import { entries, header, operand, section } from '../image';
 import * as layout from '../layout';
 import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, meanSurvival } from './maps';
+import { meanHandling, meanRelease } from './handling';
 import { meanDispersal } from './movement';
 import { meanCatastrophe, meanResponse, meanVariation } from './weather';
 import { animals, fillPath, moved, setStep, step } from './state';
@@ -49,6 +50,13 @@ function runRecord(record: usize): void {
       break;
     case layout.opDispersal:
       meanDispersal(record);
+      break;
+    case layout.opTake:
+    case layout.opMove:
+      meanHandling(record);
+      break;
+    case layout.opAdd:
+      meanRelease(record);
       break;
     case layout.opCeiling:
       meanCeiling(record);

@@ -5,7 +5,6 @@ import { runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { CeilingPhase, Model } from '../model/model.ts';
 import { leading } from '../numeric/leading.ts';
-import { multiply } from '../numeric/sparse-product.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
 import { equilibriumFrom } from './equilibrium.ts';
 
@@ -67,7 +66,7 @@ function patchTotals(model: Model, animals: Float64Array): readonly number[] {
   return model.patches.map((_, p) => animals.subarray(p * n, p * n + n).reduce((sum, value) => sum + value, 0));
 }
 
-/** A compiled model of one patch, whose dispersal moves nobody. */
+/** A compiled model of one patch, whose dispersal moves nobody, and where nobody is taken, brought or released. */
 function isolated({ model, coefficients }: Compiled, p: number): Compiled {
   const n = model.classes.length;
   const pick = (values: Float64Array, size: number): Float64Array => values.slice(p * size, p * size + size);
@@ -75,6 +74,7 @@ function isolated({ model, coefficients }: Compiled, p: number): Compiled {
     epochs: rates.epochs.map((epoch) => pick(epoch, size)),
     epochOf: rates.epochOf,
   });
+  const never = new Int32Array(model.steps);
   const waitsOf = (waits: CeilingPhase | undefined) =>
     waits === undefined ? {} : { waits: { ...waits, capacity: pick(waits.capacity, 1) } };
   const phases = model.phases.map((phase) => {
@@ -89,6 +89,11 @@ function isolated({ model, coefficients }: Compiled, p: number): Compiled {
         return { ...phase, capacity: pick(phase.capacity, 1) };
       case 'dispersal':
         return { ...phase, moves: new Uint8Array(n) };
+      case 'take':
+      case 'move':
+        return { ...phase, active: never, patches: new Uint8Array(1), levels: pick(phase.levels, 1), to: 0 };
+      case 'add':
+        return { ...phase, active: never, amounts: table(phase.amounts, n) };
       case 'count':
       case 'ageing':
         return phase;
@@ -117,7 +122,7 @@ export interface DispersalReach {
 /** How far the leavers of one year go, if the start is who leaves. */
 export function dispersalReach(compiled: Compiled, start: Float64Array): readonly DispersalReach[] {
   const { model, landscape } = compiled;
-  const before = statesBefore(compiled, start);
+  const { before } = runYear(compiled, start);
   return model.phases.flatMap((phase, i) => {
     if (phase.kind !== 'dispersal') return [];
     const n = model.classes.length;
@@ -131,13 +136,6 @@ export function dispersalReach(compiled: Compiled, start: Float64Array): readonl
     });
     return [{ phase: phase.name, ...meanWay(landscape, i, leavers) }];
   });
-}
-
-function statesBefore(compiled: Compiled, start: Float64Array): readonly Float64Array[] {
-  const { maps } = runYear(compiled, start);
-  const states = [start];
-  maps.forEach((map, i) => states.push(multiply(map, states[i] ?? start)));
-  return states;
 }
 
 function meanWay(landscape: Landscape, phase: number, leavers: readonly number[]): Omit<DispersalReach, 'phase'> {

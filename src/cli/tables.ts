@@ -31,6 +31,7 @@ export function runTables(model: Model, results: RunResults): readonly Table[] {
     abundanceTable(results),
     outcomeTable(results),
     chanceTable(results),
+    ...(results.handled.length === 0 ? [] : [handledTable(results)]),
     inUseTable(results),
     lowestTable(results),
     patchTable(model),
@@ -125,6 +126,40 @@ function chanceTable({ outcomes }: RunResults): Table {
     ],
     rows: outcomes.flatMap(({ name, byYear }) =>
       byYear.map((one) => [name, one.year, one.everBelow, one.lower, one.upper, one.below]),
+    ),
+  };
+}
+
+function handledTable({ handled }: RunResults): Table {
+  const part = (name: string, meaning: string): readonly Column[] => [
+    animals(`${name}_mean`, meaning),
+    animals(`${name}_quantile_0.05`, 'Number that a share of 0.05 of the runs does not exceed.'),
+    animals(`${name}_quantile_0.95`, 'Number that a share of 0.95 of the runs does not exceed.'),
+  ];
+  const cells = (one: { readonly mean: number; readonly quantiles: YearSummary['quantiles'] }): readonly Cell[] => [
+    one.mean,
+    one.quantiles['0.05'],
+    one.quantiles['0.95'],
+  ];
+  return {
+    name: 'handled',
+    columns: [
+      { name: 'phase', unit: '', meaning: 'Name of the take, move or release.' },
+      { name: 'does', unit: '', meaning: '`take`, `move` or `add`.' },
+      { ...year, meaning: 'Calendar year; empty for all years together.' },
+      ...part('handled', 'Animals taken, caught to be moved, or released; mean over the runs.'),
+      ...part('died', 'Of those moved or released, the ones that did not live through it; mean over the runs.'),
+      ...part('shortfall', 'Animals that were wanted and not there; mean over the runs.'),
+    ],
+    rows: handled.flatMap(({ phase, does, byYear, inAll }) =>
+      [...byYear, { year: null, ...inAll }].map((one) => [
+        phase,
+        does,
+        one.year,
+        ...cells(one.handled),
+        ...cells(one.died),
+        ...cells(one.shortfall),
+      ]),
     ),
   };
 }

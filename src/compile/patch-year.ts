@@ -1,4 +1,4 @@
-// One patch alone for a whole year: no dispersal, no ceiling. What capacities and stable spreads within a patch rest on.
+// One patch alone for a whole year: no dispersal, no ceiling, nobody who takes, moves or releases animals. What capacities and stable spreads within a patch rest on.
 import type { Model } from '../model/model.ts';
 import { lifeMap } from './life-map.ts';
 import { readingPhase, type Multipliers } from './multipliers.ts';
@@ -33,6 +33,9 @@ function yearFrom({ model, patch, multipliers }: PatchYear, until: number, anima
       case 'count':
       case 'dispersal':
       case 'ceiling':
+      case 'take':
+      case 'move':
+      case 'add':
         return;
       default: {
         const request = { model, phase: index, patch, step: 1, multipliers };

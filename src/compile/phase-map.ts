@@ -1,8 +1,9 @@
 // The map of one phase over all patches and classes, at given multipliers and a given state.
 import type { Landscape } from '../landscape/landscape.ts';
-import type { CeilingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
+import type { CeilingPhase, DispersalPhase, Model, MovePhase, Phase, TakePhase } from '../model/model.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
 import { keptShares } from './ceiling.ts';
+import { takenShares } from './handling.ts';
 import { birthsMap, fatesMap, lifeMap, type LifePhase } from './life-map.ts';
 import { multiplierOf, type Multipliers } from './multipliers.ts';
 import { roomOf } from './weather/room.ts';
@@ -73,6 +74,13 @@ function fill(triplets: TripletList, { phase, index, request }: FillRequest): vo
     case 'ceiling':
       fillCeiling(triplets, phase, request);
       return;
+    case 'take':
+    case 'move':
+      fillHandling(triplets, phase, request);
+      return;
+    case 'add':
+      fillIdentity(triplets, request);
+      return;
     case 'survival':
     case 'breeding':
     case 'ageing':
@@ -117,6 +125,21 @@ function fillDispersal(triplets: TripletList, fillRequest: FillRequest & { reado
       }
     }
   }
+}
+
+/** Of each cell a share is taken; those moved enter the same class elsewhere. */
+function fillHandling(
+  triplets: TripletList,
+  phase: TakePhase | MovePhase,
+  { model, state, step, part }: MapRequest,
+): void {
+  if (part === 'births') return;
+  const n = model.classes.length;
+  const taken = takenShares(phase, { animals: state ?? new Float64Array(model.patches.length * n), classes: n, step });
+  taken.forEach((share, i) => {
+    triplets.add(i, i, 1 - share);
+    if (phase.kind === 'move') triplets.add(phase.to * n + (i % n), i, share * phase.survival);
+  });
 }
 
 function fillCeiling(triplets: TripletList, phase: CeilingPhase, request: MapRequest): void {

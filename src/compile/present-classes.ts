@@ -48,7 +48,11 @@ function after(model: Model, { phase, there, born }: Passing): Uint8Array {
     case 'survival':
     case 'dispersal':
     case 'ceiling':
+    case 'take':
+    case 'move':
       return there;
+    case 'add':
+      return there.map((present, c) => Math.max(present, phase.classes[c] ?? 0));
   }
 }
 

@@ -5,6 +5,7 @@ import type { SparseMatrix } from '../numeric/sparse.ts';
 import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
 import { multiplierAt } from './crowding-form.ts';
+import { addedAnimals } from './handling.ts';
 import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
@@ -20,6 +21,9 @@ export interface Compiled {
 export interface YearRun {
   readonly maps: readonly SparseMatrix[];
   readonly multipliers: Multipliers;
+  /** Animals before each phase. */
+  readonly before: readonly Float64Array[];
+  /** Releases are not in the maps, but in here. */
   readonly after: Float64Array;
 }
 
@@ -28,18 +32,25 @@ export function runYear({ model, landscape, coefficients }: Compiled, before: Fl
   const multipliers = unitMultipliers(model);
   landscape.strikes?.forEach(({ on }, k) => multipliers[model.crowding.length + k]?.set(on));
   const readAt = model.crowding.map((_, k) => readingPhase(model, k));
+  const states: Float64Array[] = [];
   let state = before;
-  const maps = model.phases.map((_, index) => {
+  const maps = model.phases.map((phase, index) => {
     readAt.forEach((reading, k) => {
       const own = coefficients[k];
       if (reading === index && own !== undefined)
         readMultipliers({ model, landscape, k, own, into: multipliers[k] }, state);
     });
+    states.push(state);
     const map = phaseMap(index, { model, landscape, step, multipliers, state });
     state = multiply(map, state);
+    if (phase.kind === 'add') state = sum(state, addedAnimals(phase, step));
     return map;
   });
-  return { maps, multipliers, after: state };
+  return { maps, multipliers, before: states, after: state };
+}
+
+function sum(a: Float64Array, b: Float64Array): Float64Array {
+  return a.map((value, i) => value + (b[i] ?? 0));
 }
 
 interface Reading {

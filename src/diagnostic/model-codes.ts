@@ -69,6 +69,10 @@ export const modelCodes = {
   'idle-catastrophe': 'A catastrophe changes nothing.',
   'repaired-correlation': 'A table of correlations was moved to the nearest possible one.',
 
+  // What people do with animals
+  'handling-shape': 'A take, a move or a release says too little or too much.',
+  'year-outside': 'Something is to be done in years that are not looked at.',
+
   // Start and outcomes
   'start-empty-class': 'The start has animals of a class that is always empty at the count.',
   'start-needs-spread': 'A stable spread does not exist here.',

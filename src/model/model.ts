@@ -135,8 +135,51 @@ export interface CeilingPhase extends PhaseBase {
   readonly takes?: 'at random' | 'youngest first' | 'nobody';
 }
 
+interface HandledBase extends PhaseBase {
+  /** At t − 1 whether it is done in step t; null for every step. */
+  readonly active: Int32Array | null;
+  /** 1 for each patch that animals come from (or, released, come to), and for each class. */
+  readonly patches: Uint8Array;
+  readonly classes: Uint8Array;
+  /** P×C: numbers or shares. */
+  readonly amounts: RateTable;
+}
+
+/** Animals wanted of each group: a number, a share of it, or a share of what exceeds a level. */
+interface QuotaBase extends HandledBase {
+  readonly rule: 'number' | 'share' | 'excess';
+  /** All patches are one group, whose amount and level stand at patch 0; else each is one. */
+  readonly together: boolean;
+  /** Each class is a group of its own; else the amount stands at class 0. */
+  readonly byClass: boolean;
+  /** By patch. */
+  readonly levels: Float64Array;
+}
+export interface TakePhase extends QuotaBase {
+  readonly kind: 'take';
+}
+export interface MovePhase extends QuotaBase {
+  readonly kind: 'move';
+  readonly to: number;
+  /** Of handling and of the first year, at once. */
+  readonly survival: number;
+}
+export interface AddPhase extends HandledBase {
+  readonly kind: 'add';
+  readonly survival: number;
+}
+
 export type Phase =
-  CountPhase | BreedingPhase | SurvivalPhase | AgeingPhase | DemographyPhase | DispersalPhase | CeilingPhase;
+  | CountPhase
+  | BreedingPhase
+  | SurvivalPhase
+  | AgeingPhase
+  | DemographyPhase
+  | DispersalPhase
+  | CeilingPhase
+  | TakePhase
+  | MovePhase
+  | AddPhase;
 
 /** Which part of a phase a condition scales. */
 export type RatePart = 'survival' | 'births' | 'fates';

@@ -59,6 +59,9 @@ function ratesByName(phases: readonly Phase[]): readonly (readonly [string, Name
       case 'ageing':
       case 'dispersal':
       case 'ceiling':
+      case 'take':
+      case 'move':
+      case 'add':
         return [];
     }
   });

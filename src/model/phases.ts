@@ -6,6 +6,7 @@ import { resolveCeiling, withWaiting } from './ceiling.ts';
 import { resolveDemography } from './demography.ts';
 import { resolveDispersal } from './dispersal.ts';
 import { resolveBreeding, resolveNamedBreeding } from './breeding.ts';
+import { resolveAdd, resolveMove, resolveTake } from './handling.ts';
 import { resolveAgeing, resolveNamedSurvival, resolveSurvival } from './life-phases.ts';
 import { resolveTaking } from './variation/catastrophe.ts';
 import type { Phase } from './model.ts';
@@ -67,6 +68,12 @@ function resolveNamed(context: Context, name: string, named: NamedSpec): Phase |
       return resolveTaking(context, name, named);
     case 'ceiling':
       return resolveCeiling(context, name, named);
+    case 'take':
+      return resolveTake(context, name, named);
+    case 'move':
+      return resolveMove(context, name, named);
+    case 'add':
+      return resolveAdd(context, name, named);
     case 'crowding':
       return tellCondition(context, name);
   }

@@ -7,6 +7,7 @@ import type { BreedingPhase, DispersalPhase, Model, Phase } from '../model/model
 import { percent } from '../view/number.ts';
 import { placesWords } from './places-text.ts';
 import { litterWords, matingWords } from './breeding-words.ts';
+import { handlingWords } from './handling-words.ts';
 import { fixed } from './rounded.ts';
 import { catastropheWords } from './catastrophe-words.ts';
 import { weatherWords } from './weather-words.ts';
@@ -96,6 +97,10 @@ function phaseWords(model: Model, phase: Phase): string {
       const counted = model.classes.filter((_, c) => phase.counted[c] === 1).join(', ');
       return `${phase.name}: where there are more ${counted} than the capacity, ${surplusWords[phase.takes ?? 'at random']}`;
     }
+    case 'take':
+    case 'move':
+    case 'add':
+      return `${phase.name}: ${handlingWords(phase, model)}`;
   }
 }
 

@@ -2,7 +2,6 @@
 // without chance, taken through one mean year. A mean of movements would differ a little where crowding bends.
 import { runYear, type Compiled } from '../compile/year-map.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
-import { multiply } from '../numeric/sparse-product.ts';
 import type { PathResults } from '../results/results.ts';
 import type { ReportInput } from './input.ts';
 
@@ -36,10 +35,10 @@ type Arrival = (from: number, to: number, animals: number) => void;
 
 function forEachArrival(compiled: Compiled, before: Float64Array, step: number, arrival: Arrival): void {
   const { phases, classes } = compiled.model;
-  let state = before;
-  runYear(compiled, before, step).maps.forEach((map, index) => {
-    if (phases[index]?.kind === 'dispersal') tellMoves(map, state, classes.length, arrival);
-    state = multiply(map, state);
+  const year = runYear(compiled, before, step);
+  year.maps.forEach((map, index) => {
+    const state = year.before[index];
+    if (phases[index]?.kind === 'dispersal' && state !== undefined) tellMoves(map, state, classes.length, arrival);
   });
 }
 

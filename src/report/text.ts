@@ -2,6 +2,7 @@
 import type { Chance, RunResults } from '../results/results.ts';
 import { decimal, percent, plain, whole } from '../view/number.ts';
 import { answer, finished, lastYear } from './answer.ts';
+import { handledWords } from './handled-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
@@ -67,7 +68,8 @@ function numbers(results: RunResults, animals: string, style: TextStyle): string
   const { runs, reasons } = results.stopped;
   const stopped =
     runs === 0 ? '' : `${plain(runs)} runs had to be stopped and are in no number here: ${reasons.join('; ')}`;
-  return [lowest, inUse, stopped]
+  const handled = handledWords(results, animals).map(([name, words]) => `${name}: ${words}`);
+  return [lowest, inUse, ...handled, stopped]
     .filter((text) => text !== '')
     .map((text) => wrap(text, style))
     .join('\n');

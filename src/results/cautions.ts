@@ -1,4 +1,5 @@
 // What every reader should know before trusting a number of this model.
+import { isHandling } from '../compile/image/handling.ts';
 import type { Model } from '../model/model.ts';
 import { basisWords } from './basis.ts';
 
@@ -13,9 +14,20 @@ that a model rests on (Fieberg & Ellner 2000); compare the two lengths.`,
     `How strongly good and bad years strike all patches together often moves the risk more than movement does; look at it
 before trusting that patches back each other up.`,
     basisWords(model),
+    ...handling(model),
     `Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for
 conservation translocations. What a model says is one input to it.`,
   ].map((text) => text.replaceAll('\n', ' '));
+}
+
+/** What the model itself has people do with animals. */
+function handling({ phases }: Model): readonly string[] {
+  const named = phases.filter(isHandling).map(({ name }) => `“${name}”`);
+  if (named.length === 0) return [];
+  return [
+    `In this model people take, move or release animals (${named.join(', ')}). None of it may be done because a model says so:
+ask the wildlife authority, hold the permits, follow IUCN/SSC (2013) for translocations, and count before and after.`,
+  ];
 }
 
 function leftOut({ crowding, phases, variation, catastrophes }: Model): readonly string[] {

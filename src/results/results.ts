@@ -48,6 +48,29 @@ export interface OutcomeResult {
   }[];
 }
 
+/** Animals by year: taken; moved (caught); released. */
+export interface HandledResult {
+  /** Name of the phase. */
+  readonly phase: string;
+  readonly does: 'take' | 'move' | 'add';
+  readonly byYear: readonly {
+    readonly year: number;
+    readonly handled: Amounts;
+    /** Of those moved or released, the ones that did not live through it. */
+    readonly died: Amounts;
+    /** What was wanted and not there. */
+    readonly shortfall: Amounts;
+  }[];
+  /** Over all years. */
+  readonly inAll: { readonly handled: Amounts; readonly died: Amounts; readonly shortfall: Amounts };
+}
+
+export interface Amounts {
+  readonly mean: number;
+  readonly sd: number;
+  readonly quantiles: Quantiles;
+}
+
 /** Quantiles that were read from counts in fixed bins, since there were too many to keep each. */
 export interface Sketched {
   readonly quantilesOf: 'abundance.whole' | 'abundance.patches' | 'patchesInUse';
@@ -78,6 +101,8 @@ export interface RunResults {
     }[];
   };
   readonly outcomes: readonly OutcomeResult[];
+  /** What takes, moves and releases came to, in the order of the year. */
+  readonly handled: readonly HandledResult[];
   readonly meanLowestCount: { readonly mean: number; readonly sd: number; readonly standardError: number };
   readonly patchesInUse: readonly { readonly year: number; readonly mean: number; readonly quantiles: Quantiles }[];
   /** Empty where every quantile is a count that some run had. */

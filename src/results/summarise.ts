@@ -1,6 +1,8 @@
 // From raw counts to what a run says.
 import type { RawPath } from '../kernel/output.ts';
+import { isHandling } from '../compile/image/handling.ts';
 import type { Model } from '../model/model.ts';
+import { summariseHandled } from './handled.ts';
 import { summariseOutcome } from './outcome.ts';
 import type { Provenance } from './provenance.ts';
 import { exactBelow, relativeError } from './reduction/bins.ts';
@@ -9,8 +11,11 @@ import { Reduction } from './reduction/reduction.ts';
 import type { PathResults, RunResults, Sketched, YearSummary } from './results.ts';
 
 /** For as many replicates as the model asks for. */
-export function openReduction({ patches, steps, replicates, outcomes }: Model): Reduction {
-  return new Reduction({ patches: patches.length, steps, replicates, below: outcomes.map((rule) => rule.below) });
+export function openReduction(model: Model): Reduction {
+  const { patches, steps, replicates, outcomes } = model;
+  const below = outcomes.map((rule) => rule.below);
+  const handled = model.phases.filter(isHandling).length;
+  return new Reduction({ patches: patches.length, steps, replicates, below, handled });
 }
 
 export interface RunToSummarise {
@@ -38,6 +43,7 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
       const falls = reduction.falls[k];
       return falls === undefined ? [] : [summariseOutcome({ rule, falls, runs, firstYear })];
     }),
+    handled: summariseHandled(model, reduction),
     meanLowestCount: lowestCount(reduction),
     patchesInUse: patchesInUse(model, reduction),
     sketched: sketchedQuantiles(reduction),

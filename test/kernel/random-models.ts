@@ -2,7 +2,15 @@
 import fc from 'fast-check';
 import type { CrowdingCoefficients } from '../../src/compile/coefficients.ts';
 import type { Movement } from '../../src/landscape/landscape.ts';
-import type { Crowding, Phase, RateTable } from '../../src/model/model.ts';
+import type {
+  BreedingPhase,
+  CeilingPhase,
+  Crowding,
+  Mating,
+  Offspring,
+  Phase,
+  RateTable,
+} from '../../src/model/model.ts';
 import { movement, type Sketch } from './models.ts';
 
 /** The models know which epoch holds in so many steps. */
@@ -32,6 +40,81 @@ const flag = fc.constantFrom(0, 1);
 const bytes = (length: number) =>
   fc.array(flag, { minLength: length, maxLength: length }).map((list) => Uint8Array.from(list));
 
+function ceilingOf(P: number, C: number): fc.Arbitrary<CeilingPhase> {
+  const room = fc.array(fc.double({ min: 0, max: 60, noNaN: true }), { minLength: P, maxLength: P });
+  const takes = fc.constantFrom('at random' as const, 'youngest first' as const, 'nobody' as const);
+  return fc.tuple(bytes(C), room, takes).map(([counted, capacity, who]) => ({
+    kind: 'ceiling',
+    name: 'x',
+    counted,
+    capacity: Float64Array.from(capacity),
+    takes: who,
+  }));
+}
+
+/** No mean of these models exceeds the largest litter of 12. */
+function offspringOf(C: number): fc.Arbitrary<Offspring | null> {
+  const chances = Float64Array.of(0.2, 0.5, 0, 0.3);
+  return fc.constantFrom(
+    null,
+    { by: 'binomial' as const, largest: 12 },
+    { by: 'negative binomial' as const, size: 0.7 },
+    { by: 'table' as const, chances: Array.from({ length: C }, () => chances) },
+  );
+}
+
+function matingOf(C: number): fc.Arbitrary<Mating | null> {
+  const form = fc.constantFrom('female-dominant' as const, 'harmonic mean' as const, 'minimum' as const);
+  const females = Uint8Array.from({ length: C }, (_, c) => (c % 2 === 0 ? 1 : 0));
+  const mating = fc.tuple(form, fc.double({ min: 0.5, max: 5, noNaN: true })).map(([chosen, femalesPerMale]) => ({
+    form: chosen,
+    females,
+    males: females.map((female) => 1 - female),
+    femalesPerMale,
+  }));
+  return fc.oneof(fc.constant(null), mating);
+}
+
+function handlingOf(P: number, C: number): fc.Arbitrary<Phase> {
+  const active = fc.oneof(fc.constant(null), fc.constantFrom(Int32Array.of(1, 0, 1), Int32Array.of(0, 1, 1)));
+  const levels = fc.array(fc.double({ min: 0, max: 90, noNaN: true }), { minLength: P, maxLength: P });
+  const rule = fc.constantFrom('number' as const, 'share' as const, 'excess' as const);
+  const kind = fc.constantFrom('take' as const, 'move' as const, 'add' as const);
+  const base = fc.record({
+    active,
+    patches: bytes(P),
+    classes: bytes(C),
+    together: fc.boolean(),
+    byClass: fc.boolean(),
+    rule,
+  });
+  return fc
+    .tuple(kind, base, levels, tables(P * C, share), share)
+    .map(([what, own, level, shares, survival]): Phase => {
+      const times = own.rule === 'number' || what === 'add' ? 40 : 1;
+      const amounts = { ...shares, epochs: shares.epochs.map((epoch) => epoch.map((value) => value * times)) };
+      const { active: years, patches, classes, ...quota } = own;
+      const phase = { name: 'x', active: years, patches, classes, amounts };
+      if (what === 'add') {
+        const there = epochsIn(amounts, { patches, classes });
+        return { kind: 'add', ...phase, amounts: there, survival };
+      }
+      const levelled = { ...phase, ...quota, levels: Float64Array.from(level) };
+      if (what === 'take') return { kind: 'take', ...levelled };
+      return { kind: 'move', ...levelled, patches: patches.map((one, p) => (p === 0 ? 0 : one)), to: 0, survival };
+    });
+}
+
+/** Amounts of 0 outside of the patches and classes. */
+function epochsIn(
+  amounts: RateTable,
+  { patches, classes }: { readonly patches: Uint8Array; readonly classes: Uint8Array },
+): RateTable {
+  const n = classes.length;
+  const inside = (i: number) => (patches[Math.floor(i / n)] ?? 0) * (classes[i % n] ?? 0);
+  return { ...amounts, epochs: amounts.epochs.map((epoch) => epoch.map((value, i) => value * inside(i))) };
+}
+
 function phaseOf(P: number, C: number): fc.Arbitrary<readonly [Phase, Movement | null]> {
   const young = fc.oneof(fc.constant(0), fc.double({ min: 0, max: 3, noNaN: true }));
   const still = (phase: fc.Arbitrary<Phase>) => phase.map((made) => [made, null] as const);
@@ -41,7 +124,15 @@ function phaseOf(P: number, C: number): fc.Arbitrary<readonly [Phase, Movement |
   );
   const breeding = fc
     .tuple(tables(P * C, young), into)
-    .map(([births, enters]): Phase => ({ kind: 'breeding', name: 'x', births, into: enters }));
+    .map(([births, enters]): BreedingPhase => ({ kind: 'breeding', name: 'x', births, into: enters }));
+  const mated = fc
+    .tuple(breeding, offspringOf(C), matingOf(C), ceilingOf(P, C))
+    .map(([phase, offspring, mating, waits]) => ({
+      ...phase,
+      ...(offspring === null ? {} : { offspring }),
+      ...(mating === null ? {} : { mating }),
+      ...(waits.takes === 'nobody' ? { waits } : {}),
+    }));
   const next = Int32Array.from({ length: C }, (_, c) => (c + 1 < C ? c + 1 : -1));
   const ageing = fc
     .array(fc.oneof(flag, share), { minLength: C, maxLength: C })
@@ -60,13 +151,6 @@ function phaseOf(P: number, C: number): fc.Arbitrary<readonly [Phase, Movement |
   const demography = fc
     .tuple(fates, tables(P * C * C, young))
     .map(([life, births]): Phase => ({ kind: 'demography', name: 'x', fates: life, births }));
-  const room = fc.array(fc.double({ min: 0, max: 60, noNaN: true }), { minLength: P, maxLength: P });
-  const ceiling = fc.tuple(bytes(C), room).map(([counted, capacity]): Phase => ({
-    kind: 'ceiling',
-    name: 'x',
-    counted,
-    capacity: Float64Array.from(capacity),
-  }));
   const dispersal = fc
     .tuple(
       bytes(C),
@@ -83,7 +167,8 @@ function phaseOf(P: number, C: number): fc.Arbitrary<readonly [Phase, Movement |
       const rule = { by: 'shares' as const, shares: new Float64Array() };
       return [{ kind: 'dispersal', name: 'x', moves, leaving, rule }, movement(P, rows)];
     });
-  return fc.oneof(still(survival), still(breeding), still(ageing), still(demography), still(ceiling), dispersal);
+  const phases = [survival, breeding, mated, ageing, demography, ceilingOf(P, C), handlingOf(P, C)];
+  return fc.oneof(...phases.map(still), dispersal);
 }
 
 function crowdingOf(

@@ -204,6 +204,7 @@ function fixtureResults(model: Model, growth: number): RunResults {
       outcome(model, 0, (r, t) => Math.round(0.6 * total(r, t))),
       outcome(model, 1, (r, t) => counts[r]![t]![5]!),
     ],
+    handled: [],
     meanLowestCount: { mean, sd, standardError: sd / Math.sqrt(futures) },
     patchesInUse: summaries((r, t) => counts[r]![t]!.filter((n) => n > 0).length),
     sketched: [],

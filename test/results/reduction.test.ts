@@ -17,7 +17,7 @@ function numbers(seed: number): (below: number) => number {
   };
 }
 
-const shape = { patches: 3, steps: 4, replicates: 200, below: [50] };
+const shape = { patches: 3, steps: 4, replicates: 200, below: [50], handled: 0 };
 const columns = 1 + shape.patches + shape.below.length;
 
 function batch(first: number, count: number): BatchCounts {

@@ -71,6 +71,9 @@ variation:
   between-rates: { survival of adult: { litter: 0.4 } }
   between-patches: { range: 20 km }
   autocorrelation: 0.2
+bag: { kind: take, classes: [adult], share-of-excess: 0.25, over: 200, counted: each patch, in: [North fen, Saltmarsh], years: { from: 2030, until: 2035 } }
+moves: { kind: move, from: North fen, to: Saltmarsh, number: { adult: 6 }, handling-survival: 0.95, first-year-survival: 0.8, years: [2028] }
+release: { kind: add, in: Saltmarsh, number: { yearling: 4 } }
 mates: { kind: crowding, form: allee, changes: { moult: all }, counted: all, allee-half: 3 }
 second brood: { kind: breeding, births: { adult: 0.5, female-share: 0.5, into: newborn }, offspring: { distribution: bernoulli } }
 late brood: { kind: breeding, births: { into: newborn }, offspring: { distribution: table of chances, chances: { adult: [0.5, 0.5] } } }

@@ -3,6 +3,7 @@ import * as layout from '../../../assembly/layout.ts';
 import type * as M from '../../model/model.ts';
 import { addRooms, addSlotLists } from './slot-lists.ts';
 import { breedingRecord } from './breeding.ts';
+import { handlingRecord } from './handling.ts';
 import { addMovement } from './movement.ts';
 import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
@@ -25,6 +26,10 @@ export function phaseRecord(phase: M.Phase, place: PhasePlace): Int32Array {
       return dispersalRecord(phase, place);
     case 'ceiling':
       return ceilingRecord(phase, place);
+    case 'take':
+    case 'move':
+    case 'add':
+      return handlingRecord(phase, place);
   }
 }
 

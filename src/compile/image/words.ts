@@ -43,6 +43,20 @@ const kinds: readonly (readonly [number, string])[] = [
   [layout.kindSlotNumbers, 'slot numbers'],
 ];
 
+const handled = [
+  'active',
+  'first column',
+  'patches',
+  'classes',
+  'amounts',
+  'rule',
+  'together',
+  'by class',
+  'levels',
+  'to',
+  'survival',
+];
+
 /** For each opcode its word, then the words of its operands in order. */
 const opcodes: readonly (readonly [number, readonly string[]])[] = [
   [
@@ -104,6 +118,9 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
       'capacity slots',
     ],
   ],
+  [layout.opTake, ['take', ...handled]],
+  [layout.opMove, ['move', ...handled]],
+  [layout.opAdd, ['add', ...handled]],
   [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
 ];
 

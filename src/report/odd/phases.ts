@@ -1,6 +1,7 @@
 // What one phase of the year does, in a sentence.
 import type { BreedingPhase, Model, Phase } from '../../model/model.ts';
 import { litterWords, matingWords } from '../breeding-words.ts';
+import { handlingWords } from '../handling-words.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { names } from '../section/section.ts';
 
@@ -21,6 +22,10 @@ function act(phase: Phase, model: Model): Content {
     case 'demography':
       return `the entries of a whole-year matrix act at once: each animal has one fate (multinomial), and bears young by a
 Poisson number.`;
+    case 'take':
+    case 'move':
+    case 'add':
+      return mark`<bdi>${handlingWords(phase, model)}</bdi>; animals are drawn without replacement, never more than there are.`;
     case 'dispersal':
       return mark`a share of ${classNames(model, phase.moves)} sets out; each leaver ends in one other patch or dies on the
 way (multinomial).`;

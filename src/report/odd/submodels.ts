@@ -5,6 +5,7 @@ import type { AgeingPhase, Crowding, Model, Phase } from '../../model/model.ts';
 import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
+import { handlingWords } from '../handling-words.ts';
 import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
 import { catastropheWords } from '../catastrophe-words.ts';
@@ -53,6 +54,10 @@ function numbers(phase: Phase, model: Model): Content {
       return matrixTables(model, phase);
     case 'dispersal':
       return mark`${rateTable(model, phase.leaving, 'Share that sets out')}${destinations(phase, model)}`;
+    case 'take':
+    case 'move':
+    case 'add':
+      return mark`<p><bdi>${handlingWords(phase, model)}</bdi>.</p>`;
     case 'ceiling':
       return mark`<p>Classes counted: ${classNames(model, phase.counted)}. ${byPatch(model, phase.capacity, 'Most animals')}</p>`;
   }

@@ -5,6 +5,7 @@ import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { decimal, percent, plain, whole } from '../../view/number.ts';
 import { scrolling } from '../../view/table.ts';
 import { finished, lastYear } from '../answer.ts';
+import { handledWords } from '../handled-words.ts';
 import { list, section } from './section.ts';
 
 export function outcomesSection(model: Model, results: RunResults): Markup {
@@ -63,6 +64,7 @@ mean, over the futures, of the lowest count that each one sees`;
     const used = `${decimal(end.mean)} of ${plain(model.patches.length)} in the mean, ${most}`;
     items.push([`patches in use in ${end.year}`, used]);
   }
+  for (const [name, words] of handledWords(results, animals)) items.push([name, words]);
   const { runs, reasons } = results.stopped;
   const stopped = `${plain(runs)}, which are in no other number here: ${reasons.join('; ')}`;
   if (runs > 0) items.push(['runs that had to be stopped', stopped]);

@@ -1,7 +1,7 @@
 // The model with all names resolved, as plain data and as text that can be compared line by line.
 import { stringify } from 'yaml';
 import { catastropheJson, variationJson } from './variation.ts';
-import type { BreedingPhase, Model, Phase, RateTable } from '../../model/model.ts';
+import type { AddPhase, BreedingPhase, Model, MovePhase, Phase, RateTable, TakePhase } from '../../model/model.ts';
 
 export function modelText(model: Model): string {
   return stringify(modelJson(model), { lineWidth: 0, flowCollectionPadding: true });
@@ -92,6 +92,10 @@ function phaseJson(model: Model, phase: Phase): unknown {
                 ),
               },
       };
+    case 'take':
+    case 'move':
+    case 'add':
+      return handlingJson(model, phase);
     case 'ceiling':
       return {
         ...phase,
@@ -102,6 +106,22 @@ function phaseJson(model: Model, phase: Phase): unknown {
         ),
       };
   }
+}
+
+function handlingJson(model: Model, phase: TakePhase | MovePhase | AddPhase): unknown {
+  const patches = model.patches.map(({ name }) => name);
+  return {
+    ...phase,
+    active:
+      phase.active === null
+        ? null
+        : [...phase.active.keys()].filter((t) => phase.active?.[t] === 1).map((t) => model.firstYear + t),
+    patches: patches.filter((_, p) => phase.patches[p] === 1),
+    classes: model.classes.filter((_, c) => phase.classes[c] === 1),
+    amounts: tableJson(model, phase.amounts),
+    ...(phase.kind === 'add' ? {} : { levels: named(patches, phase.levels) }),
+    ...(phase.kind === 'move' ? { to: patches[phase.to] } : {}),
+  };
 }
 
 function chancesOf({ offspring }: BreedingPhase, c: number): readonly number[] {

@@ -4,6 +4,7 @@ import { lanes } from '../../kernel/batch.ts';
 import type { BatchCounts, Stop } from '../../kernel/output.ts';
 import { Counts } from './counts.ts';
 import { Falls } from './falls.ts';
+import { handledParts, HandledTotals } from './handled.ts';
 import { Sums, type Moments } from './sums.ts';
 
 export interface ReductionShape {
@@ -13,9 +14,11 @@ export interface ReductionShape {
   readonly replicates: number;
   /** Thresholds of the outcomes. */
   readonly below: readonly number[];
+  /** Takes, moves and releases of the model. */
+  readonly handled: number;
 }
 
-/** Columns of a batch: the whole, then each patch, then each outcome. */
+/** Columns of a batch: the whole, then each patch, then each outcome, then those of what people do with animals. */
 const wholeColumn = 0;
 const firstPatchColumn = 1;
 
@@ -28,6 +31,7 @@ export class Reduction {
   /** Patches with at least one animal; cell t. */
   readonly inUse: Counts;
   readonly falls: readonly Falls[];
+  readonly handled: readonly HandledTotals[];
   /** Of each replicate the lowest count of all animals, the start included; −1 for those that did not come or were stopped. */
   readonly lowest: Int32Array;
   readonly #lowest = new Sums(1);
@@ -37,12 +41,13 @@ export class Reduction {
   readonly #used = new Float64Array(lanes);
 
   constructor(shape: ReductionShape) {
-    const { patches, steps, replicates, below } = shape;
+    const { patches, steps, replicates, below, handled } = shape;
     this.shape = shape;
     this.whole = new Counts(steps + 1, replicates);
     this.patches = new Counts((steps + 1) * patches, replicates);
     this.inUse = new Counts(steps + 1, replicates);
     this.falls = below.map((threshold) => new Falls({ below: threshold, steps, replicates }));
+    this.handled = Array.from({ length: handled }, () => new HandledTotals(steps, replicates, lanes));
     this.lowest = new Int32Array(replicates).fill(-1);
   }
 
@@ -67,6 +72,7 @@ export class Reduction {
     this.#runs += kept.length;
     for (let t = 0; t <= this.shape.steps; t++) this.#takeCount(batch, kept, t);
     this.#takeLowest(batch, kept);
+    this.#takeHandled(batch, kept);
   }
 
   #takeCount(batch: BatchCounts, kept: readonly number[], t: number): void {
@@ -92,9 +98,23 @@ export class Reduction {
 
   /** Puts one column of the kept lanes into `#values`. */
   #read({ counts }: BatchCounts, kept: readonly number[], t: number, column: number): void {
-    const columns = firstPatchColumn + this.shape.patches + this.falls.length;
+    const columns = this.#firstHandled + this.handled.length * handledParts.length;
     const at = (t * columns + column) * lanes;
     for (let i = 0; i < kept.length; i++) this.#values[i] = counts[at + (kept[i] ?? 0)] ?? 0;
+  }
+
+  get #firstHandled(): number {
+    return firstPatchColumn + this.shape.patches + this.falls.length;
+  }
+
+  #takeHandled(batch: BatchCounts, kept: readonly number[]): void {
+    this.handled.forEach((totals, h) => {
+      const first = this.#firstHandled + h * handledParts.length;
+      totals.take((t, k) => {
+        this.#read(batch, kept, t, first + k);
+        return this.#values;
+      }, kept.length);
+    });
   }
 
   #takeLowest(batch: BatchCounts, kept: readonly number[]): void {

@@ -3,6 +3,7 @@ import { Type, type Static } from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';
+import { Add, Move, Take } from './handling.ts';
 import { Drivers, Observed } from './history.ts';
 import { Outcomes, Run, Start, type Outcome } from './outcomes.ts';
 import { Parameters, Patches, type InlinePatch, type PatchFileRef } from './patches.ts';
@@ -94,6 +95,9 @@ export const namedSchemas = {
   ceiling: Ceiling,
   crowding: NamedCrowding,
   catastrophe: Catastrophe,
+  take: Take,
+  move: Move,
+  add: Add,
 } as const;
 
 export type InlinePatchSpec = Inline<Static<typeof InlinePatch>>;
@@ -106,7 +110,19 @@ export type SurvivalSpec = Inline<Static<typeof NamedSurvival>>;
 export type BreedingSpec = Inline<Static<typeof NamedBreeding>>;
 export type NamedCrowdingSpec = Inline<Static<typeof NamedCrowding>>;
 export type CatastropheSpec = Inline<Static<typeof Catastrophe>>;
-export type NamedSpec = CatastropheSpec | SurvivalSpec | BreedingSpec | DispersalSpec | CeilingSpec | NamedCrowdingSpec;
+export type TakeSpec = Inline<Static<typeof Take>>;
+export type MoveSpec = Inline<Static<typeof Move>>;
+export type AddSpec = Inline<Static<typeof Add>>;
+export type NamedSpec =
+  | CatastropheSpec
+  | SurvivalSpec
+  | BreedingSpec
+  | DispersalSpec
+  | CeilingSpec
+  | NamedCrowdingSpec
+  | TakeSpec
+  | MoveSpec
+  | AddSpec;
 
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
 type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
