@@ -1,5 +1,5 @@
 // What takes, moves and releases do to the animals of a landscape.
-import type { AddPhase, MovePhase, TakePhase } from '../model/model.ts';
+import type { AddPhase, Model, MovePhase, Phase, TakePhase } from '../model/model.ts';
 import { tableAt } from './rates.ts';
 
 export interface Handled {
@@ -61,6 +61,14 @@ function groupsOf(
 export function addedAnimals(phase: AddPhase, step: number): Float64Array {
   const amounts = tableAt(phase.amounts, step);
   return amounts.map((number) => (isActive(phase, step) ? number * phase.survival : 0));
+}
+
+/** The model of a year that goes on: what people do in some years only is left out. */
+export function lastingOnly(model: Model): Model {
+  const passing = (phase: Phase): boolean => 'active' in phase && phase.active !== null;
+  if (!model.phases.some(passing)) return model;
+  const never = new Int32Array(model.steps);
+  return { ...model, phases: model.phases.map((phase) => (passing(phase) ? { ...phase, active: never } : phase)) };
 }
 
 function isActive({ active }: TakePhase | MovePhase | AddPhase, step: number): boolean {

@@ -5,7 +5,7 @@ import type { SparseMatrix } from '../numeric/sparse.ts';
 import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
 import { multiplierAt } from './crowding-form.ts';
-import { addedAnimals } from './handling.ts';
+import { addedAnimals, lastingOnly } from './handling.ts';
 import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
 import { phaseMap } from './phase-map.ts';
@@ -71,14 +71,15 @@ function readMultipliers({ model, landscape, k, own, into }: Reading, state: Flo
   });
 }
 
-/** The year of the first step as a function over all P·C animals. */
+/** The year of the first step as a function over all P·C animals; what people do in some years only is left out. */
 export interface WholeYear {
   readonly states: number;
   readonly apply: (animals: Float64Array) => Float64Array;
   readonly matrixAt: (animals: Float64Array) => SparseMatrix;
 }
 
-export function wholeYear(compiled: Compiled): WholeYear {
+export function wholeYear(first: Compiled): WholeYear {
+  const compiled = { ...first, model: lastingOnly(first.model) };
   const { patches, classes } = compiled.model;
   return {
     states: patches.length * classes.length,

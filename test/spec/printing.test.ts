@@ -79,6 +79,26 @@ test('a spec that uses every key comes back', () => {
       shares:
         North fen: { Saltmarsh: 0.1 }
     room: { kind: ceiling, counted: [adult], capacity: 2 * capacity, takes: at random }
+    bag:
+      kind: take
+      classes: [adult]
+      share-of-excess: 0.25
+      over: 200
+      counted: each patch
+      in: [North fen, Saltmarsh]
+      years: { from: 2030, until: 2035 }
+    moves:
+      kind: move
+      from: North fen
+      to: Saltmarsh
+      number: { adult: 6 }
+      handling-survival: 0.95
+      first-year-survival: 0.8
+      years: [2028]
+    release:
+      kind: add
+      in: Saltmarsh
+      number: { yearling: 4 }
     mates:
       kind: crowding
       form: allee

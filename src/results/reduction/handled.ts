@@ -3,7 +3,6 @@ import { Counts } from './counts.ts';
 
 /** Its columns in a batch, in order. */
 export const handledParts = ['handled', 'died', 'shortfall'] as const;
-export type HandledPart = (typeof handledParts)[number];
 
 /** Reads column k of the phase at step t for the kept lanes. */
 export type ReadColumn = (t: number, k: number) => Float64Array;
