@@ -56,9 +56,11 @@ export function parametersAnswer(
   tangents: readonly ParameterTangent[],
   vectors: Vectors,
 ): NonNullable<Analysis['parameters']> {
-  return tangents.map(({ name, value, matrixTangent }) => {
+  return tangents.map(({ name, value, matrixTangent, solvedAnew, exact = true }) => {
     const sensitivity = sensitivityAlong(matrixTangent, vectors);
-    return { name, value, sensitivity, elasticity: (value / vectors.growthRate) * sensitivity };
+    const sensitivitySolvedAnew = solvedAnew ? sensitivityAlong(solvedAnew, vectors) : sensitivity;
+    const elasticity = (value / vectors.growthRate) * sensitivity;
+    return { name, value, sensitivity, elasticity, sensitivitySolvedAnew, exact };
   });
 }
 
@@ -109,11 +111,11 @@ export function transientsAnswer(
 function sensitivitiesOf(
   { names }: NamedCovariance,
   tangents: readonly ParameterTangent[],
-  vectors: Vectors,
+  along: (tangent: ParameterTangent) => number,
 ): Float64Array | null {
   const found = names.map((name) => tangents.find((tangent) => tangent.name === name));
   if (found.some((tangent) => tangent === undefined)) return null;
-  return Float64Array.from(found, (tangent) => (tangent ? sensitivityAlong(tangent.matrixTangent, vectors) : 0));
+  return Float64Array.from(found, (tangent) => (tangent ? along(tangent) : 0));
 }
 
 export function stochasticAnswer(
@@ -122,7 +124,8 @@ export function stochasticAnswer(
 ): Answer<NonNullable<Analysis['stochasticGrowth']>> {
   const { variation, parameterTangents = [] } = input;
   if (!variation) return because('The model says nothing about how years differ.');
-  const sensitivities = sensitivitiesOf(variation, parameterTangents, vectors);
+  const along = ({ matrixTangent }: ParameterTangent): number => sensitivityAlong(matrixTangent, vectors);
+  const sensitivities = sensitivitiesOf(variation, parameterTangents, along);
   if (!sensitivities) return because('Some of what varies has no sensitivity.');
   const { logGrowth, yearlyVariance } = smallNoiseGrowth(vectors.growthRate, sensitivities, variation.covariance);
   const method = 'Tuljapurkar (1982), small noise, independent years';
@@ -132,7 +135,10 @@ export function stochasticAnswer(
 export function standardErrorAnswer(input: AnalysisInput, vectors: Vectors): Answer<number> {
   const { uncertainty, parameterTangents = [] } = input;
   if (!uncertainty) return because('The model gives no uncertainty of its numbers.');
-  const sensitivities = sensitivitiesOf(uncertainty, parameterTangents, vectors);
+  // A number that is not known is as it is from the first: capacities are solved for with it.
+  const along = ({ matrixTangent, solvedAnew }: ParameterTangent): number =>
+    sensitivityAlong(solvedAnew ?? matrixTangent, vectors);
+  const sensitivities = sensitivitiesOf(uncertainty, parameterTangents, along);
   if (!sensitivities) return because('Some of what is uncertain has no sensitivity.');
   return { value: growthStandardError(sensitivities, uncertainty.covariance) };
 }

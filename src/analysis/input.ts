@@ -10,8 +10,12 @@ import type { YearMap } from './year-map.ts';
 export interface ParameterTangent {
   readonly name: string;
   readonly value: number;
-  /** ∂A/∂θ over the states of the matrix. */
+  /** ∂A/∂θ over the states of the matrix, the strength of crowding held. */
   readonly matrixTangent: SparseMatrix;
+  /** The same where the strength of crowding is solved anew; missing where that makes no difference. */
+  readonly solvedAnew?: SparseMatrix;
+  /** False where differences were taken. True where it is missing. */
+  readonly exact?: boolean;
 }
 
 /** Covariances of named parameters, in the order of `names`. */

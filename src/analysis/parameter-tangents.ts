@@ -1,50 +1,52 @@
-// How the matrix moves with each named number of a model, through expressions, kernels and all.
-import { buildBlock } from '../compile/block.ts';
+// How the matrix moves with each named number of a model: through expressions, rates, kernels, their normalisation, and crowding.
 import type { BlockMatrix } from '../compile/block-matrix.ts';
-import { weightedSum } from '../numeric/sparse-product.ts';
+import { coefficientSlopes, type CrowdingRule } from '../compile/slopes/coefficient-slopes.ts';
+import { yearSlope } from '../compile/slopes/year-slope.ts';
+import { slopesOf, type ModelSlopes } from '../model/slopes/slopes.ts';
+import { principalPart } from '../numeric/principal-part.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
-import { compileSpec, type CompiledModel } from '../pipeline.ts';
-import { applySettings } from '../spec/settings.ts';
+import type { CompiledModel } from '../pipeline.ts';
 import type { ParameterTangent } from './input.ts';
-
-/** Relative step; the error of the difference is about its square. */
-const step = 1e-5;
+import { placesOf } from './label.ts';
+import { differenceTangent } from './parameter-differences.ts';
 
 /**
- * ∂A/∂θ by central differences of the compiled matrix, at the same state and with the coefficients of crowding held as the
- * base model solved them. At the edge of what a number may be, from one side. Numbers that nothing uses are left out.
+ * ∂A/∂θ at the same state, exact where the slopes of the model tell all; by differences where a number is used in a place whose
+ * slope is not known. Numbers that move nothing are left out.
  */
 export function parameterTangents(base: CompiledModel, block: BlockMatrix, state: Float64Array): ParameterTangent[] {
+  const read = slopesOf(base.spec);
+  const crowded = base.model.crowding.length > 0 && state.some((animals) => animals > 0);
   return base.model.parameters.flatMap(({ name, value }) => {
-    const width = step * Math.max(Math.abs(value), 1e-3);
-    const [above, below] = [value + width, value - width].map((moved) =>
-      matrixWith({ base, block, state }, name, moved),
-    );
-    const matrixTangent = difference([below ?? null, block.matrix, above ?? null], width);
-    return matrixTangent === null || matrixTangent.values.length === 0 ? [] : [{ name, value, matrixTangent }];
+    const slopes = read(name);
+    const along = (rule: CrowdingRule): SparseMatrix | null => exactTangent({ base, block, state, slopes }, rule);
+    const held = along('held');
+    const anew = crowded ? along('solved anew') : null;
+    const exact = held !== null && (anew !== null || !crowded);
+    const matrixTangent = exact ? held : differenceTangent({ base, block, state }, { name, value, rule: 'held' });
+    const solvedAnew = exact
+      ? anew
+      : crowded
+        ? differenceTangent({ base, block, state }, { name, value, rule: 'solved anew' })
+        : null;
+    const moves = (matrixTangent?.values.length ?? 0) + (solvedAnew?.values.length ?? 0) > 0;
+    if (matrixTangent === null || !moves) return [];
+    return [{ name, value, matrixTangent, exact, ...(solvedAnew === null ? {} : { solvedAnew }) }];
   });
 }
 
-interface Around {
+interface Along {
   readonly base: CompiledModel;
   readonly block: BlockMatrix;
   readonly state: Float64Array;
+  readonly slopes: ModelSlopes | null;
 }
 
-/** Null where the model does not allow the number. */
-function matrixWith({ base, block, state }: Around, name: string, value: number): SparseMatrix | null {
-  const applied = applySettings(base.spec, { set: [{ name, value: String(value) }] });
-  const compiled = applied.ok ? compileSpec(applied.spec).compiled : null;
-  if (!compiled) return null;
-  const { model, landscape } = compiled;
-  return buildBlock({ model, landscape, coefficients: base.coefficients }, block.at, state).matrix;
-}
-
-function difference(
-  [below, here, above]: readonly [SparseMatrix | null, SparseMatrix, SparseMatrix | null],
-  width: number,
-): SparseMatrix | null {
-  if (!below && !above) return null;
-  const span = below && above ? 2 * width : width;
-  return weightedSum([1 / span, above ?? here], [-1 / span, below ?? here]);
+/** Null where the slopes do not tell all, or do not exist. */
+function exactTangent({ base, block, state, slopes }: Along, rule: CrowdingRule): SparseMatrix | null {
+  if (slopes === null || slopes.missed.length > 0) return null;
+  const solved = coefficientSlopes(base, slopes, rule);
+  if (solved === null) return null;
+  const whole = yearSlope({ compiled: base, slopes, coefficientSlopes: solved }, state);
+  return whole.values.every(Number.isFinite) ? principalPart(whole, placesOf(block)) : null;
 }

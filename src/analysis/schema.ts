@@ -38,8 +38,10 @@ export const EntrySchema = closed({
 export const ParameterSchema = closed({
   name: Type.String(),
   value: Type.Number(),
-  sensitivity: number('Growth per unit of the parameter.'),
+  sensitivity: number('Growth per unit of the parameter; the strength of crowding stays what was solved for.'),
   elasticity: number('Share of growth per share of the parameter; these need not sum to 1.'),
+  sensitivitySolvedAnew: number('The same where the strength of crowding is solved anew, so that capacities stay.'),
+  exact: Type.Boolean({ description: 'By exact derivatives, or by differences where a number is beyond them.' }),
 });
 
 export const PatchSchema = closed({

@@ -138,8 +138,17 @@ function parameterTable({ parameters }: Analysis): Table {
       column('value', 'as in the model', 'Value that was used.'),
       column('sensitivity', perYear, 'Growth rate per unit of the parameter.'),
       column('elasticity', 'share', 'Share of the growth rate per share of the parameter.'),
+      column(
+        'solved_anew',
+        perYear,
+        'As sensitivity, with the strength of crowding solved anew so that capacities stay.',
+      ),
+      column('exact', '', 'true for exact derivatives, false for differences.'),
     ],
-    rows: (parameters ?? []).map(({ name, value, sensitivity, elasticity }) => [name, value, sensitivity, elasticity]),
+    rows: (parameters ?? []).map((one): readonly Cell[] => [
+      ...[one.name, one.value, one.sensitivity, one.elasticity, one.sensitivitySolvedAnew],
+      String(one.exact),
+    ]),
   };
 }
 

@@ -61,7 +61,7 @@ interface Reading {
   readonly into: Float64Array | undefined;
 }
 
-function readMultipliers({ model, landscape, k, own, into }: Reading, state: Float64Array): void {
+export function readMultipliers({ model, landscape, k, own, into }: Reading, state: Float64Array): void {
   const n = model.classes.length;
   const counted = model.crowding[k]?.counted;
   model.patches.forEach((_, p) => {

@@ -8,7 +8,7 @@ import type { Movement } from './landscape.ts';
 import { crossLinks, withLinkDistances } from './links.ts';
 import { movementOf, type Way } from './ways.ts';
 
-type KernelRule = Extract<DispersalRule, { by: 'kernel' }>;
+export type KernelRule = Extract<DispersalRule, { by: 'kernel' }>;
 
 export interface KernelRequest {
   readonly model: Model;
@@ -60,7 +60,7 @@ function meeting(model: Model, rule: KernelRule, others: readonly Neighbour[]): 
   });
 }
 
-function survivalOnTheWay(rule: KernelRule, km: number): number {
+export function survivalOnTheWay(rule: KernelRule, km: number): number {
   return rule.survivalOnTheWay * (rule.hazardPerKm === 0 ? 1 : pinned.exp(-rule.hazardPerKm * km));
 }
 

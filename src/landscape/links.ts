@@ -46,6 +46,6 @@ export function crossLinks({ links = [] }: DispersalPhase, from: number, open: r
   return home > 0 ? [...ways, { to: from, chance: home, km: open[0]?.km === null ? null : 0 }] : ways;
 }
 
-function otherEnd([a, b]: Link['between'], from: number): number | null {
+export function otherEnd([a, b]: Link['between'], from: number): number | null {
   return from === a ? b : from === b ? a : null;
 }

@@ -1,6 +1,6 @@
 // Dispersal kernels in the plane (Nathan et al. 2012; the 2Dt after Clark et al. 1999). k(r) is the density of arrivals per km² at
 // distance r, with ∫ 2πr k(r) dr = 1; it is not the density of distances, 2πr k(r).
-import { logGamma, upperGammaShare } from '../machine/gamma.ts';
+import { digamma, logGamma, upperGammaShare } from '../machine/gamma.ts';
 import { exp, log, pow } from '../machine/pinned.ts';
 
 export type KernelShape = 'exponential' | 'gaussian' | '2Dt' | 'exponential power';
@@ -80,5 +80,52 @@ export function shareBeyond({ shape, scaleKm, shapeNumber }: DispersalKernel, km
       return exp((1 - shapeNumber) * log(1 + r * r));
     case 'exponential power':
       return upperGammaShare(2 / shapeNumber, pow(r, shapeNumber));
+  }
+}
+
+/** ∂ of the mean over the scale by the shape number: the factor times the slope of its logarithm, ψ being that of ln Γ. */
+export function meanOverScaleSlope(shape: KernelShape, shapeNumber: number): number {
+  switch (shape) {
+    case 'exponential':
+    case 'gaussian':
+      return 0;
+    case '2Dt':
+      return meanOverScale(shape, shapeNumber) * (digamma(shapeNumber - 1.5) - digamma(shapeNumber - 1));
+    case 'exponential power': {
+      const [three, two] = [3 / shapeNumber, 2 / shapeNumber];
+      return (meanOverScale(shape, shapeNumber) * (two * digamma(two) - three * digamma(three))) / shapeNumber;
+    }
+  }
+}
+
+/** How ln of a density moves: per km of distance, per km of scale, and per unit of the shape number. */
+export interface DensitySlopes {
+  readonly perKm: number;
+  readonly perScale: number;
+  readonly perShapeNumber: number;
+}
+
+/** Slopes of ln k(km), the density with its normalisation. */
+export function logDensitySlopes({ shape, scaleKm: a, shapeNumber }: DispersalKernel, km: number): DensitySlopes {
+  const r = km / a;
+  // With ln k = fall(r) − 2 ln a + constant, ∂/∂a = −r fall'(r)/a − 2/a.
+  const slopes = (fallSlope: number, perShapeNumber: number): DensitySlopes => ({
+    perKm: fallSlope / a,
+    perScale: (-r * fallSlope - 2) / a,
+    perShapeNumber,
+  });
+  switch (shape) {
+    case 'exponential':
+      return slopes(-1, 0);
+    case 'gaussian':
+      return slopes(-2 * r, 0);
+    case '2Dt':
+      return slopes((-2 * shapeNumber * r) / (1 + r * r), 1 / (shapeNumber - 1) - log(1 + r * r));
+    case 'exponential power': {
+      const c = shapeNumber;
+      const fall = r === 0 ? 0 : pow(r, c);
+      const ofWhole = 1 / c + (2 / (c * c)) * digamma(2 / c);
+      return slopes(r === 0 ? 0 : -c * pow(r, c - 1), ofWhole - (r === 0 ? 0 : fall * log(r)));
+    }
   }
 }

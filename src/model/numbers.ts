@@ -3,6 +3,7 @@ import { pinned } from '../machine/pinned.ts';
 import { nearestName } from '../diagnostic/nearest.ts';
 import type { SpecPath } from '../spec/document.ts';
 import type { Ast } from '../spec/expression/ast.ts';
+import { derivative } from '../spec/expression/derivative.ts';
 import { evaluate, type Fault } from '../spec/expression/evaluate.ts';
 import { namesIn } from '../spec/expression/names.ts';
 import { replaceNames } from '../spec/expression/replace.ts';
@@ -52,6 +53,7 @@ export class Numbers {
   readonly #drivers: DriverValues;
   /** Numbers that are read once a year; all others are read once and for all. */
   readonly #yearly = new Set<string>();
+  readonly #slopes = new Map<Ast, Map<string, Ast>>();
   #year = NaN;
   #memo = new Map<string, number | undefined>();
 
@@ -130,6 +132,41 @@ export class Numbers {
       details: { expected: 'a number or an expression that does not depend on the year' },
     });
     return true;
+  }
+
+  /** The exact derivative of the value by a named parameter, through all that is made from it; NaN where it has none. */
+  slope(expression: number | string, path: SpecPath, where: Where, parameter: string): number {
+    if (typeof expression === 'number') return 0;
+    const ast = this.#parse(expression, path, where.dimension);
+    if (ast === null || !this.#namesBehind(ast).has(parameter)) return 0;
+    return this.#slopeOf(ast, where, parameter);
+  }
+
+  #slopeOf(ast: Ast, where: Where, parameter: string): number {
+    let sum = 0;
+    for (const name of namesIn(ast)) {
+      const inner = this.#slopeOfName(name, where, parameter);
+      if (inner === 0) continue;
+      const outer = evaluate(this.#derivative(ast, name), (one) => this.#lookUp(one, where), pinned);
+      sum += inner * (outer.ok ? outer.value : NaN);
+    }
+    return sum;
+  }
+
+  #slopeOfName(name: string, where: Where, parameter: string): number {
+    if (name === 'year' || where.attributes?.has(name) === true) return 0;
+    if (name === parameter) return 1;
+    const made = this.#parameters.get(name);
+    if (made === undefined || !this.#namesBehind(made.ast).has(parameter)) return 0;
+    return this.#slopeOf(made.ast, { year: where.year }, parameter);
+  }
+
+  #derivative(ast: Ast, name: string): Ast {
+    const known = this.#slopes.get(ast) ?? new Map<string, Ast>();
+    this.#slopes.set(ast, known);
+    const found = known.get(name) ?? derivative(ast, name);
+    known.set(name, found);
+    return found;
   }
 
   #parse(expression: number | string, path: SpecPath, dimension: Dimension = 'share'): Ast | null {

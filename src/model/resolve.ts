@@ -26,6 +26,11 @@ const defaultReplicates = 1000;
 const defaultSeed = 1;
 
 export function resolveModel(spec: Spec): Resolved {
+  return resolveWithContext(spec);
+}
+
+/** With what it was resolved from, for those who ask further. */
+export function resolveWithContext(spec: Spec): Resolved & { readonly context: Context } {
   const findings: Finding[] = [];
   const context = contextOf(spec, findings);
   checkNames(context);
@@ -41,8 +46,8 @@ export function resolveModel(spec: Spec): Resolved {
     ...observedIn(context),
     ...runSettings(context),
   };
-  if (findings.some((finding) => finding.severity === 'error')) return { model: null, findings };
-  return { model: { ...head(context), ...parts, defaults: context.defaults }, findings };
+  if (findings.some((finding) => finding.severity === 'error')) return { model: null, findings, context };
+  return { model: { ...head(context), ...parts, defaults: context.defaults }, findings, context };
 }
 
 function observedIn(context: Context): Pick<Model, 'observed'> {

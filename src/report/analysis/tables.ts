@@ -40,21 +40,40 @@ export function patchTable({ patches, at }: Analysis): TextTable | null {
 }
 
 export function dependenceTable({ parameters, entries }: Analysis, most: number): TextTable | null {
-  const named = (parameters ?? []).map((one) => ({ label: one.name, ...one }));
-  const direct = (entries ?? []).map((one) => ({
-    label: `${one.from.class} in ${one.from.patch} → ${one.to.class} in ${one.to.patch}`,
-    ...one,
-  }));
-  const chosen = named.length > 0 ? named : direct;
-  if (chosen.length === 0) return null;
-  const largest = [...chosen].sort((a, b) => Math.abs(b.elasticity) - Math.abs(a.elasticity));
+  if (parameters !== null && parameters.length > 0) return numberTable(parameters, most);
+  if (entries === null || entries.length === 0) return null;
   return {
-    head: [named.length > 0 ? 'number' : 'entry', 'value', 'growth per unit', 'growth per share'],
-    rows: largest
-      .slice(0, most)
-      .map((one) => [one.label, told(one.value), told(one.sensitivity), told(one.elasticity)]),
-    below: ['Growth per unit is the sensitivity, growth per share the elasticity.'],
+    head: ['entry', 'value', 'growth per unit', 'growth per share'],
+    rows: largestOf(entries, most).map((one) => [
+      `${one.from.class} in ${one.from.patch} → ${one.to.class} in ${one.to.patch}`,
+      ...[one.value, one.sensitivity, one.elasticity].map(told),
+    ]),
+    below: [units],
   };
+}
+
+const units = 'Growth per unit is the sensitivity, growth per share the elasticity.';
+const anew =
+  'Solved anew: per unit, if the number had been otherwise from the first, so that every patch still stands still at its capacity ' +
+  'when alone; the other columns let the strength of crowding stay, as a plan does.';
+
+function numberTable(parameters: NonNullable<Analysis['parameters']>, most: number): TextTable {
+  const differs = parameters.some(
+    ({ sensitivity, sensitivitySolvedAnew }) => Math.abs(sensitivity - sensitivitySolvedAnew) > 1e-9,
+  );
+  const about = parameters.some(({ exact }) => !exact);
+  return {
+    head: ['number', 'value', 'growth per unit', 'growth per share', ...(differs ? ['solved anew'] : [])],
+    rows: largestOf(parameters, most).map((one) => [
+      `${one.name}${one.exact ? '' : ' (about)'}`,
+      ...[one.value, one.sensitivity, one.elasticity, ...(differs ? [one.sensitivitySolvedAnew] : [])].map(told),
+    ]),
+    below: [units, ...(differs ? [anew] : []), ...(about ? ['About: by differences, good to six digits.'] : [])],
+  };
+}
+
+function largestOf<T extends { readonly elasticity: number }>(all: readonly T[], most: number): readonly T[] {
+  return [...all].sort((a, b) => Math.abs(b.elasticity) - Math.abs(a.elasticity)).slice(0, most);
 }
 
 export function linkTable({ links }: Analysis, most: number): TextTable | null {

@@ -1,0 +1,42 @@
+// How what a ceiling leaves moves with its capacity and with the animals under it.
+import type { CeilingPhase } from '../../model/model.ts';
+import { shareWithin } from '../ceiling.ts';
+
+export interface MovingPatch {
+  readonly animals: Float64Array;
+  readonly animalSlopes: Float64Array;
+  readonly capacitySlope: number;
+}
+
+/** Of min(1, K/N). */
+export function shareWithinSlope(phase: CeilingPhase, patch: number, moving: MovingPatch): number {
+  if (shareWithin(phase, patch, moving.animals) === 1) return 0;
+  const count = counted(phase, moving.animals);
+  const capacity = phase.capacity[patch] ?? 0;
+  return (moving.capacitySlope * count - capacity * counted(phase, moving.animalSlopes)) / (count * count);
+}
+
+/** By class, of what is kept. */
+export function keptSlopes(phase: CeilingPhase, patch: number, moving: MovingPatch): Float64Array {
+  const { animals, animalSlopes, capacitySlope } = moving;
+  const slopes = new Float64Array(animals.length);
+  if (phase.takes === 'nobody' || shareWithin(phase, patch, animals) === 1) return slopes;
+  if (phase.takes !== 'youngest first') {
+    const slope = shareWithinSlope(phase, patch, moving);
+    return slopes.map((_, c) => (phase.counted[c] === 1 ? slope : 0));
+  }
+  let surplus = counted(phase, animals) - (phase.capacity[patch] ?? 0);
+  let surplusSlope = counted(phase, animalSlopes) - capacitySlope;
+  return slopes.map((_, c) => {
+    const [here, hereSlope] = [animals[c] ?? 0, animalSlopes[c] ?? 0];
+    if (phase.counted[c] !== 1 || surplus <= 0 || here <= 0) return 0;
+    const [taken, takenSlope] = here <= surplus ? [here, hereSlope] : [surplus, surplusSlope];
+    surplus -= taken;
+    surplusSlope -= takenSlope;
+    return (taken * hereSlope - takenSlope * here) / (here * here);
+  });
+}
+
+function counted({ counted: mask }: CeilingPhase, values: Float64Array): number {
+  return values.reduce((sum, value, c) => sum + (mask[c] === 1 ? value : 0), 0);
+}

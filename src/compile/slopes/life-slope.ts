@@ -1,0 +1,46 @@
+// How the part of a phase map within one patch moves with a number of the model.
+import type { Phase } from '../../model/model.ts';
+import { birthsMap, fatesMap, lifeMap, type LifePhase, type LifeRequest } from '../life-map.ts';
+
+export interface LifeSlopeRequest {
+  readonly phase: LifePhase;
+  /** The phase with slopes as its numbers; null where it has none. */
+  readonly slopes: Phase | null;
+  readonly request: LifeRequest;
+  /** Of the multiplier of each crowding in this patch. */
+  readonly multiplierSlopes: readonly number[];
+}
+
+/**
+ * C×C, at to * C + from. The map is linear in its rates and, for each crowding, in its multiplier: what its own function gives for
+ * slopes in place of rates, and the difference between two multipliers, are exact.
+ */
+export function lifeSlope(asked: LifeSlopeRequest): Float64Array {
+  const slope = rateSlope(asked);
+  asked.multiplierSlopes.forEach((own, k) => {
+    if (own === 0) return;
+    const [with1, with0] = [1, 0].map((value) => lifeMap(asked.phase, withMultiplier(asked.request, k, value)));
+    for (let i = 0; i < slope.length; i++) {
+      slope[i] = (slope[i] ?? 0) + own * ((with1?.[i] ?? 0) - (with0?.[i] ?? 0));
+    }
+  });
+  return slope;
+}
+
+function rateSlope({ slopes, request }: LifeSlopeRequest): Float64Array {
+  const n = request.model.classes.length;
+  if (slopes?.kind === 'survival') return fatesMap(slopes, request);
+  if (slopes?.kind === 'breeding') return birthsMap(slopes, request);
+  if (slopes?.kind === 'demography') return lifeMap(slopes, request);
+  return new Float64Array(n * n);
+}
+
+function withMultiplier(request: LifeRequest, k: number, value: number): LifeRequest {
+  const multipliers = request.multipliers.map((own, j) => {
+    if (j !== k) return own;
+    const changed = own.slice();
+    changed[request.patch] = value;
+    return changed;
+  });
+  return { ...request, multipliers };
+}

@@ -1,0 +1,73 @@
+// How the year of a patch alone, and the multiplier at which it stands still, move with a number of the model.
+import type { Model } from '../../model/model.ts';
+import type { ModelSlopes } from '../../model/slopes/slopes.ts';
+import { leading } from '../../numeric/leading.ts';
+import { sparseFromDense } from '../../numeric/sparse.ts';
+import { lifeMap, type LifePhase } from '../life-map.ts';
+import { unitMultipliers, type Multipliers } from '../multipliers.ts';
+import { patchYear } from '../patch-year.ts';
+import { lifeSlope } from './life-slope.ts';
+
+export interface PatchAt {
+  readonly model: Model;
+  readonly slopes: ModelSlopes | null;
+  readonly patch: number;
+  readonly multipliers: Multipliers;
+  /** Of the multiplier of each crowding. */
+  readonly multiplierSlopes: readonly number[];
+}
+
+/**
+ * g*' of crowding k in a patch that stands still at g*, from ρ(A(g*)) = 1: −(vᵀ A_θ w) / (vᵀ A_g w). Null where the patch has no
+ * single stable distribution.
+ */
+export function standstillSlope(
+  model: Model,
+  slopes: ModelSlopes,
+  { k, patch, multiplier }: { readonly k: number; readonly patch: number; readonly multiplier: number },
+): number | null {
+  const n = model.classes.length;
+  const multipliers = unitMultipliers(model);
+  multipliers[k]?.fill(multiplier);
+  const values = patchYear({ model, patch, multipliers });
+  const { left, right } = leading(sparseFromDense({ rows: n, columns: n, values }));
+  if (left === null || right === null) return null;
+  const still = model.crowding.map(() => 0);
+  const byNumber = patchYearSlope({ model, slopes, patch, multipliers, multiplierSlopes: still });
+  const alone = { model, slopes: null, patch, multipliers, multiplierSlopes: still.map((_, j) => (j === k ? 1 : 0)) };
+  return -between(left, byNumber, right) / between(left, patchYearSlope(alone), right);
+}
+
+/** C×C: the product rule over the phases that stay within the patch. */
+function patchYearSlope({ model, slopes, patch, multipliers, multiplierSlopes }: PatchAt): Float64Array {
+  const n = model.classes.length;
+  let [year, slope] = [identity(n), new Float64Array(n * n)];
+  model.phases.forEach((phase, index) => {
+    if (phase.kind === 'count' || phase.kind === 'dispersal' || phase.kind === 'ceiling') return;
+    const request = { model, phase: index, patch, step: 1, multipliers };
+    const own: LifePhase = phase;
+    const map = lifeMap(own, request);
+    const moved = lifeSlope({ phase: own, slopes: slopes?.phases[index] ?? null, request, multiplierSlopes });
+    const [first, second] = [times(moved, year, n), times(map, slope, n)];
+    slope = first.map((value, i) => value + (second[i] ?? 0));
+    year = times(map, year, n);
+  });
+  return slope;
+}
+
+function identity(n: number): Float64Array {
+  return Float64Array.from({ length: n * n }, (_, i) => (i % (n + 1) === 0 ? 1 : 0));
+}
+
+function times(a: Float64Array, b: Float64Array, n: number): Float64Array {
+  return Float64Array.from({ length: n * n }, (_, i) => {
+    let sum = 0;
+    for (let k = 0; k < n; k++) sum += (a[Math.floor(i / n) * n + k] ?? 0) * (b[k * n + (i % n)] ?? 0);
+    return sum;
+  });
+}
+
+function between(left: Float64Array, matrix: Float64Array, right: Float64Array): number {
+  const n = left.length;
+  return matrix.reduce((sum, value, i) => sum + (left[Math.floor(i / n)] ?? 0) * value * (right[i % n] ?? 0), 0);
+}

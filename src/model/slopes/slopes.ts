@@ -1,0 +1,86 @@
+// How every number of a model moves with one named parameter: the model with slopes in the places of its numbers.
+import type { SpecPath } from '../../spec/document.ts';
+import type { Spec } from '../../spec/schema/spec.ts';
+import type { BreedingPhase, Crowding, Model, Phase, RateTable } from '../model.ts';
+import { resolveWithContext } from '../resolve.ts';
+import { dispersalSlopes } from './dispersal.ts';
+import { SlopeReader } from './reader.ts';
+
+export interface ModelSlopes {
+  /** For each phase the same phase with slopes as its numbers; null where it has none. What are no numbers stays. */
+  readonly phases: readonly (Phase | null)[];
+  readonly crowding: readonly CrowdingSlopes[];
+  /** Places that use the parameter and whose slopes are not known here: then the slopes do not tell all. */
+  readonly missed: readonly SpecPath[];
+}
+
+export interface CrowdingSlopes {
+  readonly capacity: Float64Array;
+  readonly alleeHalf: Float64Array;
+  readonly shapeNumber: number;
+}
+
+/** For any of the parameters of a spec that resolves; the rates are those of the first year. */
+export function slopesOf(spec: Spec): (parameter: string) => ModelSlopes | null {
+  const { model, context } = resolveWithContext(spec);
+  return (parameter) => {
+    if (model === null) return null;
+    const reader = new SlopeReader(context, parameter);
+    const phases = model.phases.map((phase) => phaseSlopes(reader, model, phase));
+    return {
+      phases,
+      crowding: model.crowding.map((crowding) => crowdingSlopes(reader, crowding)),
+      missed: reader.missed(),
+    };
+  };
+}
+
+function phaseSlopes(reader: SlopeReader, model: Model, phase: Phase): Phase | null {
+  switch (phase.kind) {
+    case 'count':
+    case 'ageing':
+      return null;
+    case 'survival':
+      return { ...phase, survival: reader.table(phase.survival) };
+    case 'breeding':
+      return { ...phase, births: birthSlopes(reader, phase) };
+    case 'demography':
+      return { ...phase, fates: reader.table(phase.fates), births: reader.table(phase.births) };
+    case 'dispersal':
+      return dispersalSlopes(reader, model, phase);
+    case 'ceiling':
+      return { ...phase, capacity: ceilingSlopes(reader, phase.name) };
+  }
+}
+
+/** Births are the written numbers times the share of females. */
+function birthSlopes(reader: SlopeReader, { name, births }: BreedingPhase): RateTable {
+  const { spec, numbers, time } = reader.context;
+  const named = spec.named[name];
+  const section = name === 'breeding' ? spec.births : named?.kind === 'breeding' ? named.births : undefined;
+  const path = name === 'breeding' ? ['births', 'female-share'] : [name, 'births', 'female-share'];
+  const written = section?.['female-share'];
+  const expression = typeof written === 'object' ? undefined : written;
+  const share = expression === undefined ? 1 : numbers.value(expression, path, { year: time.firstYear });
+  const shareSlope = reader.one(expression, path);
+  const own = reader.table(births).epochs[0] ?? new Float64Array(0);
+  const values = births.epochs[0] ?? own;
+  const slopes = own.map((slope, i) => slope * share + (share === 0 ? 0 : (values[i] ?? 0) / share) * shareSlope);
+  return { epochs: [slopes], epochOf: new Int32Array(0) };
+}
+
+function ceilingSlopes(reader: SlopeReader, name: string): Float64Array {
+  const spec = reader.context.spec.named[name];
+  return reader.byPatch(spec?.kind === 'ceiling' ? spec.capacity : undefined, [name, 'capacity']);
+}
+
+function crowdingSlopes(reader: SlopeReader, { name }: Crowding): CrowdingSlopes {
+  const { spec } = reader.context;
+  const named = spec.named[name];
+  const own = named?.kind === 'crowding' ? named : spec.crowding;
+  return {
+    capacity: reader.byPatch(own?.capacity, [name, 'capacity']),
+    alleeHalf: reader.byPatch(own?.['allee-half'], [name, 'allee-half']),
+    shapeNumber: reader.one(own?.['shape-number'], [name, 'shape-number']),
+  };
+}
