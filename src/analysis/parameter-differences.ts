@@ -24,7 +24,7 @@ export interface MovedNumber {
 
 /** At the edge of what the number may be, from one side. Null where the model allows no other number. */
 export function differenceTangent(around: Around, moved: MovedNumber): SparseMatrix | null {
-  const width = step * Math.max(Math.abs(moved.value), 1e-3);
+  const width = step * Math.max(Math.abs(moved.value), 0.01);
   const [above = null, below = null] = [moved.value + width, moved.value - width].map((value) =>
     matrixWith(around, { ...moved, value }),
   );

@@ -49,8 +49,10 @@ export function movementSlopes(
     });
   }
   if (of.by !== 'kernel') return model.patches.map(() => []);
-  return neighboursWithin(model.patches, rule.kernel.reachKm).map((straight, from) => {
-    const others = withLinkDistances({ phase, reachKm: rule.kernel.reachKm }, from, straight);
+  const { reachKm } = rule.kernel;
+  const near = neighboursWithin({ patches: model.patches, reachKm, between: rule.between });
+  return near.map((straight, from) => {
+    const others = withLinkDistances({ phase, reachKm }, from, straight);
     const ends = others.map((end) => ({ ...end, kmSlope: linkOf(slopes, from, end.patch)?.distanceKm ?? 0 }));
     const aimed = rule.leavers === 'all arrive' ? weights(rule, of, ends) : meetings(model, { rule, of }, ends);
     if (!aimed.some(({ value, slope }) => value > 0 || slope !== 0)) return [];

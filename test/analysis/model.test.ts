@@ -1,4 +1,3 @@
-import { readFileSync, readdirSync } from 'node:fs';
 import Ajv from 'ajv/dist/2020.js';
 import { describe, expect, test } from 'vitest';
 import { analyseModel } from '../../src/analysis/analyse-model.ts';
@@ -7,20 +6,10 @@ import { analysisText } from '../../src/report/analysis/analysis-text.ts';
 import { analysisJsonSchema } from '../../src/analysis/schema.ts';
 import { weightedSum } from '../../src/numeric/sparse-product.ts';
 import { toDense } from '../../src/numeric/sparse.ts';
-import { compileSpec, type CompiledModel } from '../../src/pipeline.ts';
-import { readSpec } from '../../src/spec/read.ts';
+import { compileModel, modelNames } from '../golden/models.ts';
+import { compileText } from '../pipeline/compile-text.ts';
 
-const folder = new URL('../../models/', import.meta.url);
 const fits = new Ajv({ strict: false, allErrors: true }).compile(analysisJsonSchema);
-
-function compiledFrom(text: string): CompiledModel {
-  const { document, diagnostics } = readSpec(text, 'test.yaml');
-  const { compiled, findings } = compileSpec(document!.spec);
-  if (!compiled) throw new Error(JSON.stringify([...diagnostics, ...findings]));
-  return compiled;
-}
-const model = (name: string): CompiledModel => compiledFrom(readFileSync(new URL(name, folder), 'utf8'));
-const names = readdirSync(folder).filter((name) => name.endsWith('.yaml'));
 
 const oneFen = (survival: number): string => `
 skein: 1
@@ -35,8 +24,8 @@ year: [count, demography]
 start: { table: { Fen: { young: 10, adult: 10 } } }
 `;
 
-describe.each(names)('%s', (name) => {
-  const compiled = model(name);
+describe.each(modelNames)('%s', (name) => {
+  const compiled = compileModel(name);
   const { value: input } = analysisInputOf(compiled, 'start');
 
   test('births and fates add up to the matrix', () => {
@@ -56,7 +45,7 @@ describe.each(names)('%s', (name) => {
 
 describe('named numbers', () => {
   test('have the sensitivities of the two-stage closed form, written as a spec (derived)', () => {
-    const { value: analysis } = analyseModel(compiledFrom(oneFen(0.8)), { at: 'zero' });
+    const { value: analysis } = analyseModel(compileText(oneFen(0.8)), { at: 'zero' });
     expect(analysis!.growthRate).toBeCloseTo(1.1211102550927978, 12);
     const found = new Map(analysis!.parameters!.map((one) => [one.name, one]));
     expect([...found.keys()].sort()).toEqual(['f', 's', 's0']);
@@ -67,7 +56,7 @@ describe('named numbers', () => {
   });
 
   test('at the edge of what they may be are moved to one side', () => {
-    const { value: analysis } = analyseModel(compiledFrom(oneFen(1)), { at: 'zero' });
+    const { value: analysis } = analyseModel(compileText(oneFen(1)), { at: 'zero' });
     expect(analysis!.parameters!.find((one) => one.name === 's')!.sensitivity).toBeGreaterThan(0.5);
     expect(analysis!.netReproductiveRate).toBeNull();
     expect(analysis!.reasons['netReproductiveRate']).toMatch(/never dies/);
@@ -75,13 +64,13 @@ describe('named numbers', () => {
 });
 
 test('where numbers stand still, the growth rate is 1', () => {
-  const { value: analysis } = analyseModel(model('two-ponds.yaml'), { at: 'equilibrium' });
+  const { value: analysis } = analyseModel(compileModel('two-ponds'), { at: 'equilibrium' });
   expect(analysis!.growthRate).toBeCloseTo(1, 9);
   expect(analysis!.equilibrium!.states[0]!.stable).toBe(true);
 });
 
 test('a model without crowding has nowhere to stand still, and says so', () => {
-  expect(analyseModel(compiledFrom(oneFen(0.8)), { at: 'equilibrium' })).toEqual({
+  expect(analyseModel(compileText(oneFen(0.8)), { at: 'equilibrium' })).toEqual({
     value: null,
     reason: 'Numbers do not come to stand still from the start of this model.',
   });
