@@ -97,6 +97,7 @@ export function analyse(input: AnalysisInput): Analysis {
       irreducible: found.irreducible,
       period: found.period,
       entries: block.matrix.values.length,
+      linearised: input.linearised ?? false,
     }),
     reasons: told,
   };

@@ -27,10 +27,19 @@ export interface CautionFacts {
   readonly period: number;
   /** Of the matrix. */
   readonly entries: number;
+  /** The matrix is that of small changes around the make-up of the sexes that few animals settle to. */
+  readonly linearised: boolean;
 }
 
-export function cautionsFor({ patches, losslessDispersal, irreducible, period, entries }: CautionFacts): string[] {
+/** Where births depend on who meets whom (Caswell & Weeks 1986, from memory). */
+export const bothSexes =
+  'Births depend on both sexes, so the matrix is that of small changes around the make-up that few animals settle to: an entry ' +
+  'tells what one more animal adds, and births stand with males too where females need them.';
+
+export function cautionsFor(facts: CautionFacts): string[] {
+  const { patches, losslessDispersal, irreducible, period, entries, linearised } = facts;
   const cautions = [meanYear, smallChanges];
+  if (linearised) cautions.push(bothSexes);
   if (patches > 1) cautions.push(apparentSurvival);
   if (patches > 1 && losslessDispersal) cautions.push(corridorParadox);
   if (!irreducible) {

@@ -43,6 +43,8 @@ export interface AnalysisInput {
   readonly reference?: SparseMatrix;
   /** Nobody dies on the way in any dispersal. */
   readonly losslessDispersal?: boolean;
+  /** The matrix is that of small changes around a make-up of the sexes. */
+  readonly linearised?: boolean;
   readonly wantEigenvalues?: boolean;
   /** Years of the path from the start; 20 where not given. */
   readonly pathSteps?: number;

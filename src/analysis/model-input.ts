@@ -2,11 +2,13 @@
 import { buildBlock } from '../compile/block.ts';
 import type { AtState, BlockMatrix } from '../compile/block-matrix.ts';
 import { phaseMap } from '../compile/phase-map.ts';
-import { productOf, runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
+import { linearisedBlock } from '../compile/slopes/linearised.ts';
+import { yearJacobian } from '../compile/slopes/year-jacobian.ts';
+import { nearZero, productOf, runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
 import type { Model } from '../model/model.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
-import type { SparseMatrix } from '../numeric/sparse.ts';
+import { sparseFromDense, type SparseMatrix } from '../numeric/sparse.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import { because, type Answer } from './answer.ts';
 import { equilibriumFrom } from './equilibrium.ts';
@@ -21,27 +23,41 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
   const { model, startAnimals } = compiled;
   const state = stateAt(compiled, at);
   if (state === null) return because('Numbers do not come to stand still from the start of this model.');
-  const block = buildBlock(compiled, at, state);
+  const linearised = at === 'zero' ? linearisedBlock(compiled) : null;
+  const block = linearised ?? buildBlock(compiled, at, state);
   const places = placesOf(block);
   const yearMap = dependsOnNumbers(model) ? { yearMap: yearOver(compiled, places) } : {};
   return {
     value: {
       block,
       start: Float64Array.from(places, (place) => startAnimals[place] ?? 0),
-      split: splitAt(compiled, block, state),
+      split: linearised === null ? splitAt(compiled, block, state) : apart(linearised, splitAt(compiled, block, state)),
       parameterTangents: parameterTangents(compiled, block, state),
       losslessDispersal: nobodyIsLost(compiled),
+      linearised: linearised !== null && needsBoth(model),
       ...yearMap,
     },
   };
 }
 
+/** The young that one more animal brings are all that is not the animals themselves. */
+function apart({ matrix }: BlockMatrix, { fates }: LifeSplit): LifeSplit {
+  const births = weightedSum([1, matrix], [-1, fates]);
+  return { fates, births: { ...births, values: births.values.map((young) => Math.max(0, young)) } };
+}
+
 function stateAt(compiled: CompiledModel, at: AtState): Float64Array | null {
   const { startAnimals } = compiled;
-  if (at === 'zero') return new Float64Array(startAnimals.length);
+  if (at === 'zero') return nearZero(compiled);
   if (at === 'start') return startAnimals;
   if (!dependsOnNumbers(compiled.model)) return null;
   return equilibriumFrom(wholeYear(compiled), startAnimals)?.animals ?? null;
+}
+
+function needsBoth({ phases }: Model): boolean {
+  return phases.some(
+    (phase) => phase.kind === 'breeding' && (phase.mating?.form ?? 'female-dominant') !== 'female-dominant',
+  );
 }
 
 function dependsOnNumbers(model: Model): boolean {
@@ -62,6 +78,10 @@ function yearOver(compiled: Compiled, places: readonly number[]): YearMap {
       return Float64Array.from(places, (place) => after[place] ?? 0);
     },
     matrixAt: (animals) => principalPart(whole.matrixAt(spread(animals)), places),
+    jacobianAt: (animals) => {
+      const all = spread(animals);
+      return sparseFromDense(yearJacobian(compiled, all.some((count) => count > 0) ? all : nearZero(compiled), places));
+    },
   };
 }
 

@@ -13,6 +13,7 @@ const skipped = new Set([
   'shape',
   'into',
   'leavers',
+  'chances',
 ]);
 /** Of the whole spec, those with rates. */
 const withoutRates = new Set([

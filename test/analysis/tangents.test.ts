@@ -4,6 +4,8 @@ import { describe, expect, test } from 'vitest';
 import { differenceTangent } from '../../src/analysis/parameter-differences.ts';
 import { parameterTangents } from '../../src/analysis/parameter-tangents.ts';
 import { buildBlock } from '../../src/compile/block.ts';
+import { dependsOnMakeUp } from '../../src/compile/make-up.ts';
+import { nearZero } from '../../src/compile/year-map.ts';
 import { compileSpec, type CompiledModel } from '../../src/pipeline.ts';
 import { toDense, type SparseMatrix } from '../../src/numeric/sparse.ts';
 import { compileModel, modelNames } from '../golden/models.ts';
@@ -26,8 +28,9 @@ function apart(a: SparseMatrix, b: SparseMatrix | null): number {
 function compare(compiled: CompiledModel, state: Float64Array, capacities: readonly string[] = []): string[] {
   const block = buildBlock(compiled, 'start', state);
   return parameterTangents(compiled, block, state).map(({ name, value, matrixTangent, solvedAnew, exact }) => {
-    // What a crowding is solved for while another has an Allee factor is left to differences.
-    const nested = state.some((animals) => animals > 0) && compiled.model.crowding.length > 1;
+    // What a crowding is solved for while another has an Allee factor, or sexes must meet, is left to differences.
+    const { crowding } = compiled.model;
+    const nested = state.some((animals) => animals > 0) && (crowding.length > 1 || dependsOnMakeUp(compiled.model));
     if (!nested) expect({ name, exact }).toEqual({ name, exact: true });
     const around = { base: compiled, block, state };
     if (!capacities.includes(name)) {
@@ -50,7 +53,7 @@ describe.each(modelNames)('%s', (name) => {
   const compiled = withProbe(compileModel(name));
 
   test('with nobody there', () => {
-    compare(compiled, new Float64Array(compiled.startAnimals.length));
+    compare(compiled, nearZero(compiled));
   });
 
   test('near the start', () => {

@@ -11,6 +11,8 @@ export interface MovingCount {
   readonly coefficientSlope: number;
   readonly alleeHalfSlope: number;
   readonly shapeNumberSlope: number;
+  /** What is left of the capacity. */
+  readonly room: number;
 }
 
 /** (f · N/(N + h))' with f the form without its Allee factor. */
@@ -18,7 +20,7 @@ export function multiplierSlope(own: CrowdingCoefficients, p: number, moving: Mo
   const { count, countSlope, alleeHalfSlope } = moving;
   const half = own.alleeHalf[p] ?? 0;
   const plain = { ...own, alleeHalf: new Float64Array(own.alleeHalf.length) };
-  const form = { value: multiplierAt(plain, p, count), slope: formSlope(own, p, moving) };
+  const form = { value: multiplierAt(plain, p, count, moving.room), slope: formSlope(own, p, moving) };
   const sum = count + half;
   const allee = half === 0 ? 1 : count / sum;
   if (sum === 0) return form.slope;
@@ -27,7 +29,8 @@ export function multiplierSlope(own: CrowdingCoefficients, p: number, moving: Mo
 }
 
 function formSlope(own: CrowdingCoefficients, p: number, moving: MovingCount): number {
-  const { count, countSlope, coefficientSlope, shapeNumberSlope } = moving;
+  const { coefficientSlope, shapeNumberSlope, room } = moving;
+  const [count, countSlope] = [moving.count / room, moving.countSlope / room];
   const [a, s] = [own.coefficient[p] ?? 0, own.shapeNumber ?? 1];
   const value = multiplierAt({ ...own, alleeHalf: new Float64Array(own.alleeHalf.length) }, p, count);
   const product = coefficientSlope * count + a * countSlope;

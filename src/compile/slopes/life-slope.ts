@@ -27,10 +27,13 @@ export function lifeSlope(asked: LifeSlopeRequest): Float64Array {
   return slope;
 }
 
-function rateSlope({ slopes, request }: LifeSlopeRequest): Float64Array {
+function rateSlope({ phase, slopes, request }: LifeSlopeRequest): Float64Array {
   const n = request.model.classes.length;
   if (slopes?.kind === 'survival') return fatesMap(slopes, request);
-  if (slopes?.kind === 'breeding') return birthsMap(slopes, request);
+  if (slopes?.kind === 'breeding' && phase.kind === 'breeding') {
+    const entering = birthsMap({ ...phase, into: slopes.into }, request);
+    return birthsMap({ ...phase, births: slopes.births }, request).map((value, i) => value + (entering[i] ?? 0));
+  }
   if (slopes?.kind === 'demography') return lifeMap(slopes, request);
   return new Float64Array(n * n);
 }

@@ -4,6 +4,7 @@ import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import { leading } from '../../numeric/leading.ts';
 import { sparseFromDense } from '../../numeric/sparse.ts';
 import { lifeMap, type LifePhase } from '../life-map.ts';
+import { dependsOnMakeUp } from '../make-up.ts';
 import { unitMultipliers, type Multipliers } from '../multipliers.ts';
 import { patchYear } from '../patch-year.ts';
 import { lifeSlope } from './life-slope.ts';
@@ -19,13 +20,14 @@ export interface PatchAt {
 
 /**
  * g*' of crowding k in a patch that stands still at g*, from ρ(A(g*)) = 1: −(vᵀ A_θ w) / (vᵀ A_g w). Null where the patch has no
- * single stable distribution.
+ * single stable distribution, and where the make-up that births depend on moves too.
  */
 export function standstillSlope(
   model: Model,
   slopes: ModelSlopes,
   { k, patch, multiplier }: { readonly k: number; readonly patch: number; readonly multiplier: number },
 ): number | null {
+  if (dependsOnMakeUp(model)) return null;
   const n = model.classes.length;
   const multipliers = unitMultipliers(model);
   multipliers[k]?.fill(multiplier);

@@ -1,17 +1,17 @@
 // How the matrix of a whole year, at given animals at the count, moves with a number of the model: the product rule over its phases.
 import { movementSlopes } from '../../landscape/movement-slopes.ts';
-import type { BreedingPhase, CeilingPhase, DispersalPhase, Phase } from '../../model/model.ts';
+import type { CeilingPhase, DispersalPhase, Phase } from '../../model/model.ts';
 import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import { multiply, product, weightedSum } from '../../numeric/sparse-product.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
-import { birthsMap, type LifeRequest } from '../life-map.ts';
-import { shareWithin } from '../ceiling.ts';
-import { readingPhase, type Multipliers } from '../multipliers.ts';
+import type { LifePhase, LifeRequest } from '../life-map.ts';
+import { multiplierOf, readingPhase, unitMultipliers, type Multipliers } from '../multipliers.ts';
 import { phaseMap } from '../phase-map.ts';
 import { tableAt } from '../rates.ts';
+import { roomOf } from '../weather/room.ts';
 import { readMultipliers, type Compiled } from '../year-map.ts';
-import { unitMultipliers } from '../multipliers.ts';
-import { keptSlopes, shareWithinSlope } from './ceiling-slope.ts';
+import { birthFactorSlope } from './birth-factors.ts';
+import { keptSlopes } from './ceiling-slope.ts';
 import { multiplierSlope } from './crowding-slope.ts';
 import { lifeSlope } from './life-slope.ts';
 
@@ -24,24 +24,42 @@ export interface YearSlopeRequest {
 
 /** P·C × P·C. The animals at the count are held; those within the year move, and with them crowding and ceilings. */
 export function yearSlope(request: YearSlopeRequest, before: Float64Array): SparseMatrix {
-  const { model, landscape } = request.compiled;
-  const multipliers = unitMultipliers(model);
-  const multiplierSlopes = model.crowding.map(() => new Float64Array(model.patches.length));
-  let [state, stateSlope] = [before, new Float64Array(before.length)];
   let year: SparseMatrix | null = null;
   let slope: SparseMatrix | null = null;
-  model.phases.forEach((phase, index) => {
-    readCrowding(request, { index, multipliers, multiplierSlopes, state, stateSlope });
-    const map = phaseMap(index, { model, landscape, step: 1, multipliers, state });
-    const moved = phaseSlope(request, { phase, index, multipliers, multiplierSlopes, state, stateSlope });
-    const after = multiply(map, stateSlope);
-    stateSlope = multiply(moved, state).map((value, i) => value + (after[i] ?? 0));
-    state = multiply(map, state);
+  walkYear(request, { animals: before, slopes: new Float64Array(before.length) }, (map, moved) => {
     slope = slope === null || year === null ? moved : weightedSum([1, product(map, slope)], [1, product(moved, year)]);
     year = year === null ? map : product(map, year);
   });
   if (slope === null) throw new RangeError('A year has at least one phase.');
   return slope;
+}
+
+export interface MovingAnimals {
+  readonly animals: Float64Array;
+  readonly slopes: Float64Array;
+}
+
+/** The animals after the year and their slopes; told of the map of each phase and how it moves. */
+export function walkYear(
+  request: YearSlopeRequest,
+  { animals, slopes }: MovingAnimals,
+  visit: (map: SparseMatrix, moved: SparseMatrix) => void,
+): MovingAnimals {
+  const { model, landscape } = request.compiled;
+  const multipliers = unitMultipliers(model);
+  landscape.strikes?.forEach(({ on }, k) => multipliers[model.crowding.length + k]?.set(on));
+  const multiplierSlopes = model.crowding.map(() => new Float64Array(model.patches.length));
+  let [state, stateSlope] = [animals, slopes];
+  model.phases.forEach((phase, index) => {
+    readCrowding(request, { index, multipliers, multiplierSlopes, state, stateSlope });
+    const map = phaseMap(index, { model, landscape, step: 1, multipliers, state });
+    const moved = phaseSlope(request, { phase, index, multipliers, multiplierSlopes, state, stateSlope });
+    visit(map, moved);
+    const carried = multiply(map, stateSlope);
+    stateSlope = multiply(moved, state).map((value, i) => value + (carried[i] ?? 0));
+    state = multiply(map, state);
+  });
+  return { animals: state, slopes: stateSlope };
 }
 
 interface Moment {
@@ -56,12 +74,12 @@ function readCrowding(
   request: YearSlopeRequest,
   { index, multipliers, multiplierSlopes, state, stateSlope }: Moment,
 ): void {
-  const { model, coefficients } = request.compiled;
+  const { model, landscape, coefficients } = request.compiled;
   model.crowding.forEach((crowding, k) => {
     const own = coefficients[k];
     const moved = request.slopes.crowding[k];
     if (readingPhase(model, k) !== index || own === undefined || moved === undefined) return;
-    readMultipliers({ model, k, own, into: multipliers[k] }, state);
+    readMultipliers({ model, landscape, k, own, into: multipliers[k] }, state);
     model.patches.forEach((_, p) => {
       const count = (values: Float64Array): number =>
         crowding.counted.reduce((sum, weight, c) => sum + weight * (values[p * model.classes.length + c] ?? 0), 0);
@@ -73,6 +91,7 @@ function readCrowding(
         coefficientSlope: request.coefficientSlopes[k]?.[p] ?? 0,
         alleeHalfSlope: moved.alleeHalf[p] ?? 0,
         shapeNumberSlope: moved.shapeNumber,
+        room: roomOf(model, landscape, p),
       });
     });
   });
@@ -129,54 +148,34 @@ function phaseSlope(request: YearSlopeRequest, moment: PhaseMoment): SparseMatri
 function addLife(
   entries: Entries,
   { compiled, slopes }: YearSlopeRequest,
-  { phase, index, multipliers, multiplierSlopes, state, stateSlope }: Moment & { readonly phase: LifePhaseOf },
+  { phase, index, multipliers, multiplierSlopes, state, stateSlope }: Moment & { readonly phase: LifePhase },
 ): void {
-  const { model } = compiled;
+  const { model, landscape } = compiled;
   const n = model.classes.length;
   const moved = slopes.phases[index] ?? null;
   model.patches.forEach((_, p) => {
     const animals = state.subarray(p * n, p * n + n);
-    const request: LifeRequest = { model, phase: index, patch: p, step: 1, multipliers, animals };
+    const room = roomOf(model, landscape, p);
+    const request: LifeRequest = { model, phase: index, patch: p, step: 1, multipliers, room, animals };
     const slope = lifeSlope({
       phase,
       slopes: moved,
       request,
       multiplierSlopes: multiplierSlopes.map((own) => own[p] ?? 0),
     });
-    if (phase.kind === 'breeding')
-      addWaiting(slope, slopes, { phase, request, animalSlopes: stateSlope.subarray(p * n, p * n + n) });
+    if (phase.kind === 'breeding') {
+      const animalSlopes = stateSlope.subarray(p * n, p * n + n);
+      const factors = birthFactorSlope({ phase, request, animalSlopes, slopes: slopes.phases });
+      factors.forEach((own, i) => (slope[i] = (slope[i] ?? 0) + own));
+    }
     for (let i = 0; i < n * n; i++) entries.add(p * n + Math.floor(i / n), p * n + (i % n), slope[i] ?? 0);
-  });
-}
-
-type LifePhaseOf = Extract<Phase, { kind: 'survival' | 'breeding' | 'ageing' | 'demography' }>;
-
-interface Waiting {
-  readonly phase: BreedingPhase;
-  readonly request: LifeRequest;
-  readonly animalSlopes: Float64Array;
-}
-
-/** Births of classes of which a part waits are in proportion to the share that finds room. */
-function addWaiting(slope: Float64Array, { phases }: ModelSlopes, { phase, request, animalSlopes }: Waiting): void {
-  const { waits } = phase;
-  const { animals, patch } = request;
-  if (waits === undefined || animals === undefined) return;
-  const share = shareWithin(waits, patch, animals);
-  const moved = phases.find((one): one is CeilingPhase => one?.kind === 'ceiling' && one.name === waits.name);
-  const capacitySlope = moved?.capacity[patch] ?? 0;
-  const shareSlope = shareWithinSlope(waits, patch, { animals, animalSlopes, capacitySlope });
-  if (shareSlope === 0) return;
-  const n = animals.length;
-  birthsMap(phase, request).forEach((births, i) => {
-    if (waits.counted[i % n] === 1) slope[i] = (slope[i] ?? 0) + (births / share) * shareSlope;
   });
 }
 
 function addDispersal(
   entries: Entries,
   { compiled, slopes }: YearSlopeRequest,
-  { phase, index }: Moment & { readonly phase: DispersalPhase },
+  { phase, index, multipliers }: Moment & { readonly phase: DispersalPhase },
 ): void {
   const { model, landscape } = compiled;
   const moved = slopes.phases[index];
@@ -188,7 +187,8 @@ function addDispersal(
     for (let c = 0; c < n; c++) {
       if (phase.moves[c] !== 1) continue;
       const from = p * n + c;
-      const [share, shareSlope] = [leaving[from] ?? 0, leavingSlope[from] ?? 0];
+      const factor = multiplierOf(model, multipliers, { phase: index, part: 'leaving', patch: p, class: c });
+      const [share, shareSlope] = [(leaving[from] ?? 0) * factor, (leavingSlope[from] ?? 0) * factor];
       entries.add(from, from, -shareSlope);
       for (const { to, slope } of ways) entries.add(to * n + c, from, share * slope);
       for (let k = movement?.start[p] ?? 0; k < (movement?.start[p + 1] ?? 0); k++) {
@@ -206,7 +206,9 @@ function addCeiling(
   const n = compiled.model.classes.length;
   const moved = slopes.phases[index];
   compiled.model.patches.forEach((_, p) => {
-    const kept = keptSlopes(phase, p, {
+    const kept = keptSlopes(phase, {
+      patch: p,
+      room: roomOf(compiled.model, compiled.landscape, p),
       animals: state.subarray(p * n, p * n + n),
       animalSlopes: stateSlope.subarray(p * n, p * n + n),
       capacitySlope: moved?.kind === 'ceiling' ? (moved.capacity[p] ?? 0) : 0,

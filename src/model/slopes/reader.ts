@@ -48,7 +48,7 @@ export class SlopeReader {
   missed(): readonly SpecPath[] {
     return this.context.numbers.uses().flatMap((use) => {
       const { path } = use;
-      const known = this.#asked.has(path.join('\0')) || withoutMatrix.has(String(path[0]));
+      const known = this.#asked.has(path.join('\0')) || standsOutside(path);
       return known || !this.context.numbers.behind(use).includes(this.#parameter) ? [] : [path];
     });
   }
@@ -60,5 +60,10 @@ export class SlopeReader {
   }
 }
 
-/** Keys whose numbers do not stand in the matrix. */
+/** Numbers that do not stand in the matrix: those of other sections, and how the young of one animal vary. */
+function standsOutside(path: SpecPath): boolean {
+  return withoutMatrix.has(String(path[0])) || (path.includes('offspring') && !path.includes('chances'));
+}
+
+/** Keys of the spec. */
 const withoutMatrix: ReadonlySet<string> = new Set(['parameters', 'start', 'outcomes', 'run', 'variation']);

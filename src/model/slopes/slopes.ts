@@ -1,7 +1,7 @@
 // How every number of a model moves with one named parameter: the model with slopes in the places of its numbers.
 import type { SpecPath } from '../../spec/document.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
-import type { BreedingPhase, Crowding, Model, Phase, RateTable } from '../model.ts';
+import type { BreedingPhase, Crowding, Model, Phase } from '../model.ts';
 import { resolveWithContext } from '../resolve.ts';
 import { dispersalSlopes } from './dispersal.ts';
 import { SlopeReader } from './reader.ts';
@@ -43,7 +43,7 @@ function phaseSlopes(reader: SlopeReader, model: Model, phase: Phase): Phase | n
     case 'survival':
       return { ...phase, survival: reader.table(phase.survival) };
     case 'breeding':
-      return { ...phase, births: birthSlopes(reader, phase) };
+      return breedingSlopes(reader, phase);
     case 'demography':
       return { ...phase, fates: reader.table(phase.fates), births: reader.table(phase.births) };
     case 'dispersal':
@@ -53,20 +53,33 @@ function phaseSlopes(reader: SlopeReader, model: Model, phase: Phase): Phase | n
   }
 }
 
-/** Births are the written numbers times the share of females. */
-function birthSlopes(reader: SlopeReader, { name, births }: BreedingPhase): RateTable {
-  const { spec, numbers, time } = reader.context;
+/** Births are the written numbers times the share of females; where both sexes are followed the share says which class they enter. */
+function breedingSlopes(reader: SlopeReader, phase: BreedingPhase): BreedingPhase {
+  const { spec, sexes, numbers, time } = reader.context;
+  const { name, births, into } = phase;
   const named = spec.named[name];
-  const section = name === 'breeding' ? spec.births : named?.kind === 'breeding' ? named.births : undefined;
-  const path = name === 'breeding' ? ['births', 'female-share'] : [name, 'births', 'female-share'];
-  const written = section?.['female-share'];
+  const own = name === 'breeding' ? spec : named?.kind === 'breeding' ? named : undefined;
+  const at = (...keys: readonly string[]): SpecPath => (name === 'breeding' ? keys : [name, ...keys]);
+  const written = own?.births?.['female-share'];
   const expression = typeof written === 'object' ? undefined : written;
-  const share = expression === undefined ? 1 : numbers.value(expression, path, { year: time.firstYear });
+  const path = at('births', 'female-share');
   const shareSlope = reader.one(expression, path);
-  const own = reader.table(births).epochs[0] ?? new Float64Array(0);
-  const values = births.epochs[0] ?? own;
-  const slopes = own.map((slope, i) => slope * share + (share === 0 ? 0 : (values[i] ?? 0) / share) * shareSlope);
-  return { epochs: [slopes], epochOf: new Int32Array(0) };
+  const mated = withMating(phase, reader.one(own?.mating?.['females-per-male'], at('mating', 'females-per-male')));
+  if (sexes !== null) {
+    const entering = new Float64Array(into.length);
+    entering[0] = shareSlope;
+    entering[sexes.indexOf('male')] = -shareSlope;
+    return { ...mated, births: reader.table(births), into: entering };
+  }
+  const share = expression === undefined ? 1 : numbers.value(expression, path, { year: time.firstYear });
+  const table = reader.table(births).epochs[0] ?? new Float64Array(0);
+  const values = births.epochs[0] ?? table;
+  const slopes = table.map((slope, i) => slope * share + (share === 0 ? 0 : (values[i] ?? 0) / share) * shareSlope);
+  return { ...mated, births: { epochs: [slopes], epochOf: new Int32Array(0) }, into: new Float64Array(into.length) };
+}
+
+function withMating(phase: BreedingPhase, femalesPerMale: number): BreedingPhase {
+  return phase.mating === undefined ? phase : { ...phase, mating: { ...phase.mating, femalesPerMale } };
 }
 
 function ceilingSlopes(reader: SlopeReader, name: string): Float64Array {
