@@ -42,6 +42,8 @@ function scaled(value: unknown): unknown {
   if (typeof value === 'string') return value.replace(/^(\d+(?:\.\d+)?) (km|per km)$/, '($1 * probe) $2');
   if (Array.isArray(value)) return value.map(scaled);
   if (typeof value !== 'object' || value === null) return value;
+  // The numbers of catastrophes are left to differences, and not all may be expressions.
+  if ('kind' in value && value.kind === 'catastrophe') return value;
   return Object.fromEntries(
     Object.entries(value).map(([key, inner]) => [key, skipped.has(key) ? inner : scaled(inner)]),
   );

@@ -58,12 +58,13 @@ function fixedDigits(text: string): string {
 
 const kept = new WeakMap<CompiledModel, Analysis>();
 
-/** With almost nobody there. */
+/** With almost nobody there; without hash and versions, which say nothing of the analysis. */
 function analysed(compiled: CompiledModel): Analysis {
   const found = kept.get(compiled) ?? analyseModel(compiled, { at: 'zero', wantEigenvalues: true }).value;
   if (found === null) throw new Error('Every model has a matrix near zero.');
-  kept.set(compiled, found);
-  return found;
+  const { hash: _hash, tool: _tool, ...told } = found;
+  kept.set(compiled, told);
+  return told;
 }
 
 /** Digits that no machine and no change in the order of sums moves. */
