@@ -1,5 +1,5 @@
 // How the year of a patch alone, and the multiplier at which it stands still, move with a number of the model.
-import type { Model } from '../../model/model.ts';
+import type { Model, Phase } from '../../model/model.ts';
 import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import { leading } from '../../numeric/leading.ts';
 import { sparseFromDense } from '../../numeric/sparse.ts';
@@ -45,9 +45,9 @@ function patchYearSlope({ model, slopes, patch, multipliers, multiplierSlopes }:
   const n = model.classes.length;
   let [year, slope] = [identity(n), new Float64Array(n * n)];
   model.phases.forEach((phase, index) => {
-    if (phase.kind === 'count' || phase.kind === 'dispersal' || phase.kind === 'ceiling') return;
+    const own = lifePhase(phase);
+    if (own === null) return;
     const request = { model, phase: index, patch, step: 1, multipliers };
-    const own: LifePhase = phase;
     const map = lifeMap(own, request);
     const moved = lifeSlope({ phase: own, slopes: slopes?.phases[index] ?? null, request, multiplierSlopes });
     const [first, second] = [times(moved, year, n), times(map, slope, n)];
@@ -55,6 +55,24 @@ function patchYearSlope({ model, slopes, patch, multipliers, multiplierSlopes }:
     year = times(map, year, n);
   });
   return slope;
+}
+
+/** Null for phases that a patch alone does not have. */
+function lifePhase(phase: Phase): LifePhase | null {
+  switch (phase.kind) {
+    case 'survival':
+    case 'breeding':
+    case 'ageing':
+    case 'demography':
+      return phase;
+    case 'count':
+    case 'dispersal':
+    case 'ceiling':
+    case 'take':
+    case 'move':
+    case 'add':
+      return null;
+  }
 }
 
 function identity(n: number): Float64Array {

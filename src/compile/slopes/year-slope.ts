@@ -1,9 +1,10 @@
 // How the matrix of a whole year, at given animals at the count, moves with a number of the model: the product rule over its phases.
 import { movementSlopes } from '../../landscape/movement-slopes.ts';
-import type { CeilingPhase, DispersalPhase, Phase } from '../../model/model.ts';
+import type { CeilingPhase, DispersalPhase, MovePhase, Phase, TakePhase } from '../../model/model.ts';
 import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import { multiply, product, weightedSum } from '../../numeric/sparse-product.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
+import { addedAnimals } from '../handling.ts';
 import type { LifePhase, LifeRequest } from '../life-map.ts';
 import { multiplierOf, readingPhase, unitMultipliers, type Multipliers } from '../multipliers.ts';
 import { phaseMap } from '../phase-map.ts';
@@ -13,6 +14,7 @@ import { readMultipliers, type Compiled } from '../year-map.ts';
 import { birthFactorSlope } from './birth-factors.ts';
 import { keptSlopes } from './ceiling-slope.ts';
 import { multiplierSlope } from './crowding-slope.ts';
+import { takenSlope } from './handling-slope.ts';
 import { lifeSlope } from './life-slope.ts';
 
 export interface YearSlopeRequest {
@@ -58,6 +60,10 @@ export function walkYear(
     const carried = multiply(map, stateSlope);
     stateSlope = multiply(moved, state).map((value, i) => value + (carried[i] ?? 0));
     state = multiply(map, state);
+    if (phase.kind === 'add') {
+      const added = addedAnimals(phase, 1);
+      state = state.map((value, i) => value + (added[i] ?? 0));
+    }
   });
   return { animals: state, slopes: stateSlope };
 }
@@ -129,6 +135,11 @@ function phaseSlope(request: YearSlopeRequest, moment: PhaseMoment): SparseMatri
   const { phase } = moment;
   switch (phase.kind) {
     case 'count':
+    case 'add':
+      break;
+    case 'take':
+    case 'move':
+      addHandling(entries, request, { ...moment, phase });
       break;
     case 'dispersal':
       addDispersal(entries, request, { ...moment, phase });
@@ -143,6 +154,18 @@ function phaseSlope(request: YearSlopeRequest, moment: PhaseMoment): SparseMatri
       addLife(entries, request, { ...moment, phase });
   }
   return entries.matrix();
+}
+
+function addHandling(
+  entries: Entries,
+  { compiled }: YearSlopeRequest,
+  { phase, state, stateSlope }: Moment & { readonly phase: TakePhase | MovePhase },
+): void {
+  const classes = compiled.model.classes.length;
+  takenSlope(phase, { state, stateSlope, classes }).forEach((slope, i) => {
+    entries.add(i, i, -slope);
+    if (phase.kind === 'move') entries.add(phase.to * classes + (i % classes), i, slope * phase.survival);
+  });
 }
 
 function addLife(

@@ -40,6 +40,11 @@ function phaseSlopes(reader: SlopeReader, model: Model, phase: Phase): Phase | n
     case 'count':
     case 'ageing':
       return null;
+    // Their amounts stay as they are; where they use the parameter they are among the places missed.
+    case 'take':
+    case 'move':
+    case 'add':
+      return null;
     case 'survival':
       return { ...phase, survival: reader.table(phase.survival) };
     case 'breeding':
