@@ -27,7 +27,7 @@ function outcomeTable(results: RunResults): Markup {
   const head = heads.map((name) => mark`<th scope="col">${name}</th>`);
   const bodies = results.outcomes.map((outcome) => outcomeRows(outcome, end));
   return scrolling(
-    'Outcomes',
+    caption,
     mark`<table class="outcomes"><caption>${caption}</caption><thead><tr>${head}</tr></thead>${bodies}</table>`,
   );
 }

@@ -1,0 +1,69 @@
+// An accessibility checker finds nothing wrong with the page, in any state that a reader can bring it to.
+import { readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { launch, open } from './browser.ts';
+import { reportPage } from './report-page.ts';
+
+const checker = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+
+let browser: Browser;
+let html: string;
+
+beforeAll(async () => {
+  [browser, html] = await Promise.all([launch(), reportPage()]);
+});
+afterAll(() => browser.close());
+
+interface State {
+  readonly name: string;
+  readonly context?: BrowserContextOptions;
+  readonly reach?: (page: Page) => Promise<void>;
+  readonly scripts?: false;
+}
+
+const states: readonly State[] = [
+  { name: 'with every table open', reach: openTables },
+  { name: 'with every table open on a phone', context: { viewport: { width: 380, height: 700 } }, reach: openTables },
+  { name: 'switched over, with the numbers of a patch shown and a year marked', reach: useAll },
+  { name: 'where scripts do not run', scripts: false },
+];
+
+async function openTables(page: Page): Promise<void> {
+  for (const summary of await page.locator('summary').all()) await summary.click();
+}
+
+async function useAll(page: Page): Promise<void> {
+  await page.locator('#abundance [role=slider]:visible').first().focus();
+  await page.keyboard.press('PageDown');
+  await page.getByLabel('the chance of being empty').check();
+  await page.locator('[data-patch][tabindex="0"]:visible').focus();
+}
+
+describe('the accessibility checker', () => {
+  it.each(states)('has nothing against the page $name', async ({ context, reach, scripts }) => {
+    const text = scripts === false ? html.slice(0, html.lastIndexOf('<script>')) : html;
+    const { page, close } = await open(browser, text, context);
+    await reach?.(page);
+    expect(await violations(page)).toEqual([]);
+    await close();
+  });
+
+  it('would complain of a page without a language and a slider without a name, so it does look', async () => {
+    const { page, close } = await open(browser, '<title>t</title><main><h1>h</h1><p role="slider">1</p></main>');
+    const found = (await violations(page)).map((text) => text.split(' ')[0]);
+    expect(found).toEqual(expect.arrayContaining(['html-has-lang', 'aria-input-field-name']));
+    await close();
+  });
+});
+
+/** Each as rule, place and reason. The checker speaks to the page through the browser, past the page's own policy. */
+async function violations(page: Page): Promise<readonly string[]> {
+  return page.evaluate(`(async () => {
+    ${checker}
+    const found = await axe.run(document, { runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'] });
+    return found.violations.flatMap((rule) =>
+      rule.nodes.map((node) => rule.id + ' at ' + node.target.join(' ') + ': ' + node.failureSummary));
+  })()`);
+}
