@@ -1,6 +1,6 @@
 // Brings the report to life in a browser: the page is whole without this, and nothing here asks for anything from outside.
 import type { ReportView } from '../view/contract.ts';
-import { redraw } from './figures.ts';
+import { mountFigures } from './figures.ts';
 import { mountReaders } from './reader.ts';
 import { mountSave } from './save.ts';
 import { createStore } from './state.ts';
@@ -10,14 +10,15 @@ import { mountYear } from './year.ts';
 
 function start(view: ReportView): void {
   const store = createStore({ count: view.years.length - 1, show: 'abundance', focus: 0, marked: null });
-  store.onChange((state) => redraw(view, state));
+  const redraw = mountFigures(view);
+  store.onChange((state) => redraw(state));
   mountYear(view, store);
   mountReaders(view, store);
   mountSave(view);
   mountTip(view, store);
   mountWalk(store);
-  window.matchMedia('(max-width: 40rem)').addEventListener('change', () => redraw(view, store.get()));
-  window.addEventListener('beforeprint', () => redraw(view, store.get(), true));
+  window.matchMedia('(max-width: 40rem)').addEventListener('change', () => redraw(store.get()));
+  window.addEventListener('beforeprint', () => redraw(store.get(), true));
   for (const controls of document.querySelectorAll<HTMLElement>('.controls')) controls.hidden = false;
   store.set({});
 }

@@ -39,9 +39,8 @@ function patchOf(target: EventTarget | null): number | null {
 function spots(holder: Element): readonly Spot[] {
   return [...holder.querySelectorAll('[data-patch]')]
     .map((element) => {
-      const circle = element.querySelector('circle');
-      const at = (name: string) => Number(circle?.getAttribute(name) ?? 0);
-      return { patch: Number(element.getAttribute('data-patch')), x: at('cx'), y: at('cy') };
+      const number = (name: string) => Number(element.getAttribute(name) ?? 0);
+      return { patch: number('data-patch'), x: number('data-x'), y: number('data-y') };
     })
     .sort((a, b) => a.patch - b.patch);
 }

@@ -1,5 +1,5 @@
 // The year of the map: its slider, its play button and what it shows.
-import type { ReportView } from '../view/contract.ts';
+import { mapShows, type ReportView } from '../view/contract.ts';
 import { mapTables } from '../view/map/table.ts';
 import { pick } from '../view/series.ts';
 import { readAbundance } from '../view/reading.ts';
@@ -21,7 +21,7 @@ export function mountYear(view: ReportView, store: Store): void {
   });
   for (const choice of document.querySelectorAll<HTMLInputElement>('input[name=show]')) {
     choice.addEventListener('change', () => {
-      store.set({ show: choice.value === 'empty' ? 'empty' : 'abundance' });
+      store.set({ show: mapShows.find((show) => show === choice.value) ?? 'abundance' });
     });
   }
   store.onChange((state: PageState) => {

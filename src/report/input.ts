@@ -1,4 +1,6 @@
 // Everything that a report is written from.
+import type { Answer } from '../analysis/answer.ts';
+import type { PatchValues } from '../analysis/patch-values.ts';
 import type { CrowdingCoefficients } from '../compile/coefficients.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { Model } from '../model/model.ts';
@@ -12,6 +14,8 @@ export interface ReportInput {
   readonly landscape: Landscape;
   /** In the order of the model's crowding; without them movement is not worked out for a model that has crowding. */
   readonly coefficients?: readonly CrowdingCoefficients[];
+  /** What the patches are to the whole, or why that is not told. */
+  readonly patchValues?: Answer<PatchValues>;
   readonly specText: string;
   /** As it can be typed again. */
   readonly commandLine: string;

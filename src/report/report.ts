@@ -10,6 +10,7 @@ import { mapSection } from './section/map.ts';
 import { outcomesSection } from './section/outcomes.ts';
 import { styleSheet } from './style.ts';
 import { summariseForView } from './view.ts';
+import { worthNote } from './worth.ts';
 
 export type { ReportInput } from './input.ts';
 
@@ -19,7 +20,7 @@ export function buildReport(input: ReportInput): string {
   const summary = [
     answerSection(answer(results, view.animals), results),
     outcomesSection(model, results),
-    mapSection(view),
+    mapSection(view, worthNote(input)),
     chancesSection(view),
   ];
   const rest = [abundanceSection(view, results), limitsSection(input), annexSection(input)];

@@ -85,6 +85,8 @@ button:hover{background:var(--tint)}
 .patch:focus,.patch:focus-visible{outline:none}
 .patch:hover .halo{stroke:var(--deep);stroke-width:1.5}
 .patch:focus-visible .halo{stroke:var(--umber);stroke-width:3}
+.patch:hover .halo.under{stroke-width:6}
+.patch:focus-visible .halo.under{stroke-width:10}
 [data-link]:hover{fill-opacity:.95}
 .tip{position:absolute;z-index:8;max-width:19rem;background:var(--ink);color:#fff;padding:.5rem .8rem;font-size:.92rem;line-height:1.4;border-radius:2px;pointer-events:auto}
 .tip strong{display:block;font-weight:600}

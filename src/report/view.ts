@@ -1,8 +1,10 @@
 // From results and model to what the figures are drawn from. Patches return to the order of their author's list.
 import type { OutcomeResult, YearSummary } from '../results/results.ts';
 import { inFileOrder } from '../results/summarise.ts';
-import type { Fan, LinkView, OutcomeView, PatchView, ReportView } from '../view/contract.ts';
+import type { Fan, LinkView, OutcomeView, OutlineView, PatchView, ReportView, WorthView } from '../view/contract.ts';
+import { thinOutlines } from '../view/map/thin.ts';
 import type { ReportInput } from './input.ts';
+import { worthAt } from './worth.ts';
 import { estimateMovement, type LinkFlow } from './movement.ts';
 
 /** More links than this would make the page heavy and the map grey; the strongest are kept. */
@@ -11,6 +13,7 @@ const mostLinks = 400;
 export function summariseForView(input: ReportInput): ReportView {
   const { model, results } = input;
   const order = inFileOrder(model);
+  const outlines = thinOutlines(model.patches.map((patch) => patch.outline ?? null));
   const flows = estimateMovement(input) ?? [];
   const links = strongest(flows, order);
   return {
@@ -22,10 +25,11 @@ export function summariseForView(input: ReportInput): ReportView {
     years: results.abundance.whole.map((summary) => summary.year),
     whole: fan(results.abundance.whole),
     inUse: fan(results.patchesInUse),
-    patches: order.flatMap((p) => patchView(input, p)),
+    patches: order.flatMap((p) => patchView(input, p, outlines[p] ?? null)),
     links,
     linksLeftOut: flows.length - links.length,
     outcomes: results.outcomes.map((outcome) => outcomeView(outcome, results.abundance.whole)),
+    worthAt: (input.patchValues?.value ?? null) === null ? null : worthAt,
   };
 }
 
@@ -48,13 +52,20 @@ function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): Ou
   };
 }
 
-function patchView({ model, results }: ReportInput, p: number): readonly PatchView[] {
+function patchView(input: ReportInput, p: number, outline: OutlineView | null): readonly PatchView[] {
+  const { model, results } = input;
   const patch = model.patches[p];
   const found = results.abundance.patches.find((one) => one.patch === patch?.name);
   if (patch === undefined || found === undefined) return [];
   const { name, at, capacity, areaKm2 } = patch;
   const empty = found.empty === undefined ? null : found.empty.map(short);
-  return [{ name, at, capacity, areaKm2, fan: fan(found.byYear), empty }];
+  return [{ name, at, outline, capacity, areaKm2, fan: fan(found.byYear), empty, worth: worthView(input, p) }];
+}
+
+function worthView({ patchValues }: ReportInput, p: number): WorthView | null {
+  const found = patchValues?.value?.patches[p];
+  if (found === undefined || found.role === null || found.contribution === null) return null;
+  return { role: found.role, contribution: short(found.contribution), growthAlone: short(found.growthAlone) };
 }
 
 function fan(byYear: readonly Pick<YearSummary, 'mean' | 'quantiles'>[]): Fan {

@@ -14,15 +14,33 @@ export interface Fan {
   readonly p95: Series;
 }
 
+/** A closed line on the plane, in kilometres. */
+export type RingView = readonly (readonly [number, number])[];
+
+/** Polygons, each an outer ring and those of its holes. */
+export type OutlineView = readonly (readonly RingView[])[];
+
+/** What a patch is to the whole. */
+export interface WorthView {
+  readonly role: 'source' | 'sink' | 'undecided';
+  /** Animals a year later, in all patches, for each animal there. */
+  readonly contribution: number;
+  /** Yearly growth where all that leave are lost and nobody comes. */
+  readonly growthAlone: number;
+}
+
 export interface PatchView {
   readonly name: string;
   /** Kilometres on the plane; null where the figures place the patches by themselves. */
   readonly at: readonly [number, number] | null;
+  /** Null where the patch is a point. */
+  readonly outline: OutlineView | null;
   readonly capacity: number | null;
   readonly areaKm2: number | null;
   readonly fan: Fan;
   /** Share of the futures in which nobody is there; null where it is not known. */
   readonly empty: Series | null;
+  readonly worth: WorthView | null;
 }
 
 export interface LinkView {
@@ -60,13 +78,19 @@ export interface ReportView {
   /** Links that exist but are too weak to be kept among so many. */
   readonly linksLeftOut: number;
   readonly outcomes: readonly OutcomeView[];
+  /** Where the worth of patches was taken, to follow 'taken'; null where it is not told. */
+  readonly worthAt: string | null;
 }
+
+/** What the map can show; outlines tell source or sink in each. */
+export const mapShows = ['abundance', 'empty', 'contribution', 'role'] as const;
+export type MapShow = (typeof mapShows)[number];
 
 /** What the map shows at a moment. */
 export interface MapState {
   /** Index into `years`. */
   readonly count: number;
-  readonly show: 'abundance' | 'empty';
+  readonly show: MapShow;
   /** The patch that the keyboard is at, where the map is live; null for a still picture. */
   readonly focus: number | null;
 }

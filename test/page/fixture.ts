@@ -1,5 +1,6 @@
 // A plausible report input of eight patches, invented, without the pipeline: counts come from a small seeded toy.
 import { seeded } from './random.ts';
+import type { PatchRole } from '../../src/analysis/patches.ts';
 import type { ReportInput } from '../../src/report/input.ts';
 import type { Landscape } from '../../src/landscape/landscape.ts';
 import type { Model, RateTable } from '../../src/model/model.ts';
@@ -42,9 +43,18 @@ export function fixture(choice: FixtureChoice = {}): ReportInput {
     commandLine: 'skein report reed-hare.yaml -o report.html',
     pageScript: choice.pageScript ?? '',
     coefficients: [],
+    patchValues: { value: { growthRate: 1.01, patches: worths } },
   };
   return choice.movement === false ? input : { ...input, path: fixturePath(model) };
 }
+
+/** In the order of the sites; made up like all else. */
+const worths: readonly PatchRole[] = [0.97, 1, 0.94, 1.04, 1.03, 1.06, 1.01, 0.99].map((contribution) => ({
+  growthAlone: contribution - 0.08,
+  contribution,
+  selfRecruitment: contribution - 0.1,
+  role: contribution === 1 ? 'undecided' : contribution > 1 ? 'source' : 'sink',
+}));
 
 function same(row: readonly number[]): RateTable {
   return { epochs: [Float64Array.from(sites.flatMap(() => row))], epochOf: new Int32Array(0) };

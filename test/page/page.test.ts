@@ -63,6 +63,30 @@ describe('the report in a browser', () => {
     await close();
   });
 
+  it('tells source and sink by the edge on every map, and the word and the number where the switch says so', async () => {
+    const { page, close } = await open(browser, html);
+    const dashes = () =>
+      page.evaluate(() =>
+        [...document.querySelectorAll('figure.map .wide [data-patch] > :nth-last-child(2)')].map((edge) =>
+          edge.getAttribute('stroke-dasharray'),
+        ),
+      );
+    const edges = await dashes();
+    expect(edges.filter((dash) => dash === '6 4').length).toBe(3);
+    expect(edges.filter((dash) => dash === '0.1 4.5').length).toBe(1);
+    expect(await page.locator('.wide [data-patch="0"] > path').count()).toBe(2);
+    await page.getByLabel('source or sink').check();
+    expect(await page.locator('.wide [data-patch="0"] text').textContent()).toBe('source');
+    expect(await page.locator('.wide [data-patch="3"]').getAttribute('aria-label')).toMatch(
+      /source: each of the females there leaves 1\.04 a year later in all patches/,
+    );
+    await page.getByLabel('the contribution').check();
+    expect(await page.locator('.wide [data-patch="0"] text').textContent()).toBe('1.06');
+    await page.locator('summary', { hasText: 'numbers of the map' }).click();
+    expect(await page.locator('#map-tables tbody tr').first().textContent()).toMatch(/source1\.0600\.980$/);
+    await close();
+  });
+
   it('plays from the first to the last year and stops there', async () => {
     const { page, close } = await open(browser, html);
     await page.clock.install({ time: 0 });

@@ -5,12 +5,13 @@ import { bandPath } from '../../src/view/map/band.ts';
 import { dotPath, sizeDiscs } from '../../src/view/map/discs.ts';
 import { placeLabels } from '../../src/view/map/labels.ts';
 import { placePatches } from '../../src/view/map/place.ts';
+import { circleShape } from '../../src/view/map/shape.ts';
 
 const flat = [5, 5];
 const fan = { mean: flat, p05: flat, p25: flat, median: flat, p75: flat, p95: flat };
 
 function patchAt(at: readonly [number, number] | null, capacity: number | null = 100): PatchView {
-  return { name: 'a', at, capacity, areaKm2: null, fan, empty: null };
+  return { name: 'a', at, capacity, areaKm2: null, outline: null, fan, empty: null, worth: null };
 }
 
 const frame = { left: 0, right: 100, top: 0, bottom: 100 };
@@ -93,15 +94,12 @@ describe('bands', () => {
 
 describe('names', () => {
   it('stay inside the frame and off the circles', () => {
-    const labels = placeLabels(
-      ['Long holm', 'Eel pond'],
-      [
-        [50, 50],
-        [120, 50],
-      ],
-      [20, 20],
-      { left: 0, right: 200, top: 0, bottom: 100 },
-    );
+    const labels = placeLabels(['Long holm', 'Eel pond'], [circleShape([50, 50], 20), circleShape([120, 50], 20)], {
+      left: 0,
+      right: 200,
+      top: 0,
+      bottom: 100,
+    });
     expect(labels.map((one) => one.text).sort()).toEqual(['Eel pond', 'Long holm']);
     for (const label of labels) expect(Math.abs(label.y - 50)).toBeGreaterThan(20);
   });
@@ -110,8 +108,7 @@ describe('names', () => {
     const many = Array.from({ length: 60 }, () => 'Same place');
     const labels = placeLabels(
       many,
-      many.map(() => [50, 50] as const),
-      many.map(() => 10),
+      many.map(() => circleShape([50, 50], 10)),
       { left: 0, right: 200, top: 0, bottom: 100 },
     );
     expect(labels.length).toBeGreaterThan(0);

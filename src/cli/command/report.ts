@@ -1,5 +1,6 @@
 // skein report: one page that an agency can read.
 import { pageScript } from '../../../build/page-script.ts';
+import { patchValues } from '../../analysis/patch-values.ts';
 import { followPath } from '../../pipeline.ts';
 import { buildReport } from '../../report/report.ts';
 import { loadModel } from '../load.ts';
@@ -18,6 +19,7 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
     model: compiled.model,
     landscape: compiled.landscape,
     coefficients: compiled.coefficients,
+    patchValues: patchValues(compiled),
     specText: document.text,
     commandLine: commandLineOf(path, cutShort === null ? options : { ...options, replicates: results.replicates }),
     pageScript,

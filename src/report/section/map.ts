@@ -1,24 +1,26 @@
 // The map at the last count. The page's script brings the slider, the switch and the tooltips to life.
-import type { MapState, ReportView } from '../../view/contract.ts';
+import { mapShows, type MapShow, type MapState, type ReportView } from '../../view/contract.ts';
 import { drawMap } from '../../view/map/draw.ts';
 import { mapTables } from '../../view/map/table.ts';
-import { mark, type Markup } from '../../view/markup.ts';
+import { layOut } from '../../view/map/sheet.ts';
+import { mark, Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { section } from './section.ts';
 
 /** Pixels, for a screen and for a phone. */
 const widths = { wide: 760, narrow: 340 } as const;
 
-export function mapSection(view: ReportView): Markup {
+/** `worth` says what sources and sinks are. */
+export function mapSection(view: ReportView, worth: string): Markup {
   const last = view.years.length - 1;
   const state: MapState = { count: last, show: 'abundance', focus: null };
   const picture = (size: 'wide' | 'narrow') =>
-    mark`<div class="${size}" data-figure="map" data-width="${String(widths[size])}">${drawMap(view, state, widths[size])}</div>`;
+    mark`<div class="${size}" data-figure="map" data-width="${String(widths[size])}">${drawMap(state, layOut(view, widths[size]))}</div>`;
   return section(
     'map',
     'The map',
     mark`${controls(view)}
-<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view)}</figcaption></figure>
+<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, worth)}</figcaption></figure>
 <details class="tables"><summary>The numbers of the map as tables</summary>
 <div id="map-tables">${mapTables(view, last)}</div></details>`,
   );
@@ -28,27 +30,50 @@ export function mapSection(view: ReportView): Markup {
 function controls(view: ReportView): Markup {
   const last = view.years.length - 1;
   const year = String(view.years[last] ?? '');
-  const choice = mark`<fieldset><legend>Show</legend>
-<label><input type="radio" name="show" value="abundance" checked> the middle abundance</label>
-<label><input type="radio" name="show" value="empty"> the chance of being empty</label></fieldset>`;
+  const choices = choicesFor(view).map(
+    (show) =>
+      mark`<label><input type="radio" name="show" value="${show}"${show === 'abundance' ? new Markup(' checked') : null}> ${choiceWords[show]}</label>`,
+  );
+  const choice = mark`<fieldset><legend>Show</legend>${choices}</fieldset>`;
   return mark`<div class="controls" hidden>
 <div class="year"><button type="button" id="play" aria-pressed="false">Play</button><label for="year">Year</label>
 <input type="range" id="year" min="0" max="${last}" step="1" value="${last}" aria-valuetext="${year}">
 <output for="year" id="year-shown">${year}</output></div>
-${view.patches.some((patch) => patch.empty !== null) ? choice : null}
+${choices.length > 1 ? choice : null}
 <p class="note">Point at a patch or a band, tap it, or tab to the map and use the arrow keys, for the numbers.</p>
 </div>`;
 }
 
-function caption(view: ReportView): Markup {
-  return mark`${placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
-so the patches together are no single future.`;
+const choiceWords: Readonly<Record<MapShow, string>> = {
+  abundance: 'the middle abundance',
+  empty: 'the chance of being empty',
+  contribution: 'the contribution',
+  role: 'source or sink',
+};
+
+function choicesFor({ patches, worthAt }: ReportView): readonly MapShow[] {
+  const known: Readonly<Record<MapShow, boolean>> = {
+    abundance: true,
+    empty: patches.some((patch) => patch.empty !== null),
+    contribution: worthAt !== null,
+    role: worthAt !== null,
+  };
+  return mapShows.filter((show) => known[show]);
 }
 
-function placeWords(view: ReportView): string {
-  return view.patches.every((patch) => patch.at !== null)
-    ? 'Patches stand where they are, as circles, not in their true outlines.'
-    : 'The model does not give every patch a place: they stand in a ring in the order of the model, and distances in the picture mean nothing.';
+function caption(view: ReportView, worth: string): Markup {
+  return mark`${placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
+so the patches together are no single future. ${worth}`;
+}
+
+function placeWords({ patches }: ReportView): string {
+  if (patches.some((patch) => patch.at === null)) {
+    return 'The model does not give every patch a place: they stand in a ring in the order of the model, and distances in the picture mean nothing.';
+  }
+  const drawn = patches.filter((patch) => patch.outline !== null).length;
+  if (drawn === patches.length) return 'Patches are drawn in their outlines, true to scale.';
+  if (drawn > 0) return 'Patches are drawn in their outlines where the model gives them, the others as circles.';
+  return 'Patches stand where they are, as circles, not in their true outlines.';
 }
 
 function movementWords({ links, linksLeftOut }: ReportView): string {

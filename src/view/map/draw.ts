@@ -1,5 +1,5 @@
 // The map of one year: patches as circles with counted dots, movement as tapered bands, the ways beneath.
-import type { MapState, ReportView } from '../contract.ts';
+import type { MapShow, MapState, ReportView, WorthView } from '../contract.ts';
 import { figure, fitText } from '../figure.ts';
 import { key } from '../key.ts';
 import { mark, type Markup } from '../markup.ts';
@@ -9,14 +9,16 @@ import { pick } from '../series.ts';
 import { placeLabels } from './labels.ts';
 import { legendEntries } from './legend.ts';
 import { drawBands, drawWays } from './movement.ts';
-import { drawPatches } from './patches.ts';
+import { drawPatches, textFits } from './patches.ts';
 import { scaleBar } from './scale-bar.ts';
-import { layOut, type Sheet } from './sheet.ts';
+import type { Layout, Sheet } from './sheet.ts';
+import { shownIn } from './shown.ts';
 import { flow } from './words.ts';
 
-export function drawMap(view: ReportView, state: MapState, width: number): Markup {
-  const sheet = layOut(view, state, width);
-  const { height } = sheet;
+/** A picture that is drawn again and again keeps its layout. */
+export function drawMap(state: MapState, layout: Layout): Markup {
+  const sheet = { ...layout, state };
+  const { width, height } = layout;
   const legend = key(legendEntries(sheet), 2, height + 8, width - 4);
   const movement = mark`${drawWays(sheet)}${drawBands(sheet)}`;
   const content = mark`${neatline(width, height)}${heading(sheet)}
@@ -33,17 +35,33 @@ function neatline(width: number, height: number): Markup {
 
 function heading({ view, state }: Sheet): Markup {
   const year = String(pick(view.years, state.count));
-  const middle = `the middle of ${plain(view.futures)} futures`;
-  const what = state.show === 'empty' ? 'empty in so many of 100 futures' : middle;
-  const start = state.count === 0 ? ', at the start' : '';
+  const start = state.count === 0 && !atRest(state.show) ? ', at the start' : '';
   return mark`<text x="18" y="38" font-size="26" font-family="Georgia, 'Times New Roman', serif" fill="${ink}">${year}</text>
-<text x="86" y="36" fill="${softInk}">${what}${start}</text>`;
+<text x="86" y="36" fill="${softInk}">${headings(view)[state.show]}${start}</text>`;
 }
 
-function names({ view, width, height, placing, discs }: Sheet): Markup {
+/** Shows the same in every year. */
+function atRest(show: MapShow): boolean {
+  return show === 'contribution' || show === 'role';
+}
+
+function headings(view: ReportView): Readonly<Record<MapShow, string>> {
+  return {
+    abundance: `the middle of ${plain(view.futures)} futures`,
+    empty: 'empty in so many of 100 futures',
+    contribution: `${view.animals} a year later, anywhere, for each one there`,
+    role: 'source or sink, the same in every year',
+  };
+}
+
+function names(sheet: Sheet): Markup {
+  const { view, state, width, height, marks } = sheet;
   const frame = { left: 9, right: width - 9, top: 46, bottom: height - 34 };
-  const all = view.patches.map((one) => one.name);
-  const texts = placeLabels(all, placing.points, discs.radius, frame).map(
+  const all = view.patches.map(({ name }, p) => {
+    const { text } = shownIn(view, state, p);
+    return text === '' || textFits(sheet, p, text) ? name : `${name}: ${text}`;
+  });
+  const texts = placeLabels(all, marks.shapes, frame).map(
     ({ x, y, anchor, text }) => mark`<text x="${x}" y="${y}" text-anchor="${anchor}">${text}</text>`,
   );
   const halo = mark`stroke="${paper}" stroke-width="3.5" stroke-linejoin="round" paint-order="stroke"`;
@@ -60,8 +78,12 @@ function foot({ view, width, height, placing }: Sheet): Markup {
 }
 
 function words({ view, state }: Sheet) {
-  const middle = `abundance in the middle of ${plain(view.futures)} futures`;
-  const what = state.show === 'empty' ? 'chance of being empty' : middle;
+  const what = {
+    abundance: `abundance in the middle of ${plain(view.futures)} futures`,
+    empty: 'chance of being empty',
+    contribution: 'contribution of each patch',
+    role: 'sources and sinks',
+  }[state.show];
   const most = view.patches
     .map((one) => ({ name: one.name, median: pick(one.fan.median, state.count) }))
     .sort((a, b) => b.median - a.median)
@@ -69,9 +91,21 @@ function words({ view, state }: Sheet) {
     .map((one) => `${one.name} ${whole(one.median)}`);
   const moved = view.links.reduce((sum, link) => sum + pick(link.animals, state.count), 0);
   const movement = view.links.length > 0 ? ` ${flow(moved)} ${view.animals} arrive in another patch in the year.` : '';
-  const patches = `${what} in ${view.patches.length} patches; most in ${most.join(', ')}.`;
+  const patches = `${what} in ${view.patches.length} patches; most animals in ${most.join(', ')}.`;
   return {
     title: `Map of ${view.title}, ${pick(view.years, state.count)}`,
-    description: `${patches}${movement} All numbers stand in the table below it.`,
+    description: `${patches}${movement}${roleWords(view)} All numbers stand in the table below it.`,
   };
+}
+
+function roleWords({ patches, worthAt }: ReportView): string {
+  if (worthAt === null) return '';
+  const named = (role: WorthView['role']) =>
+    patches.filter(({ worth }) => worth?.role === role).map(({ name }) => name);
+  const told = (['source', 'sink', 'undecided'] as const).map((role) => {
+    const all = named(role);
+    const more = all.length > 6 ? ` and ${plain(all.length - 6)} more` : '';
+    return `${role}: ${all.length === 0 ? 'none' : all.slice(0, 6).join(', ')}${more}`;
+  });
+  return ` Taken ${worthAt}, ${told.join('; ')}.`;
 }

@@ -1,6 +1,7 @@
 // Names beside their patches: for each, the free place that covers least; in a crowd only those that find one.
 import { fitText, textWidth } from '../figure.ts';
 import { pick } from '../series.ts';
+import type { Box, Shape } from './shape.ts';
 
 export interface Label {
   readonly patch: number;
@@ -10,32 +11,19 @@ export interface Label {
   readonly anchor: 'start' | 'middle' | 'end';
 }
 
-interface Box {
-  readonly left: number;
-  readonly right: number;
-  readonly top: number;
-  readonly bottom: number;
-}
-
 interface Candidate extends Label {
   readonly box: Box;
 }
 
 const fontSize = 13;
 
-export function placeLabels(
-  names: readonly string[],
-  points: readonly (readonly [number, number])[],
-  radius: readonly number[],
-  frame: Box,
-): readonly Label[] {
-  const discs = points.map(([x, y], p) => around(x, y, pick(radius, p)));
-  const order = names.map((_, p) => p).sort((a, b) => pick(radius, b) - pick(radius, a));
-  const taken: Box[] = [...discs];
+export function placeLabels(names: readonly string[], shapes: readonly Shape[], frame: Box): readonly Label[] {
+  const order = names.map((_, p) => p).sort((a, b) => pick(shapes, b).radius - pick(shapes, a).radius);
+  const taken: Box[] = shapes.map((shape) => shape.box);
   const crowd = names.length > 25;
   const labels: Label[] = [];
   for (const p of order) {
-    const scored = candidates(p, pick(names, p), pick(points, p), pick(radius, p))
+    const scored = candidates(p, pick(names, p), pick(shapes, p))
       .map((label, rank) => ({ label, cost: cost(label.box, taken, frame) + rank * 0.5 }))
       .sort((a, b) => a.cost - b.cost);
     const best = pick(scored, 0);
@@ -46,20 +34,21 @@ export function placeLabels(
   return labels;
 }
 
-function candidates(patch: number, name: string, at: readonly [number, number], radius: number): Candidate[] {
-  const text = fitText(name, fontSize, 140);
+function candidates(patch: number, name: string, shape: Shape): Candidate[] {
+  const text = fitText(name, fontSize, 170);
   const width = textWidth(text, fontSize);
-  const [x, y] = at;
-  const slant = radius * 0.72 + 3;
+  const { left: west, right: east, top, bottom } = shape.box;
+  const [x, y] = [(west + east) / 2, (top + bottom) / 2];
+  const [wide, high] = [((east - west) / 2) * 0.72 + 3, ((bottom - top) / 2) * 0.72 + 3];
   const spots: [number, number, Label['anchor']][] = [
-    [x, y + radius + 14, 'middle'],
-    [x, y - radius - 6, 'middle'],
-    [x + radius + 6, y + 4.5, 'start'],
-    [x - radius - 6, y + 4.5, 'end'],
-    [x + slant, y + slant + 9, 'start'],
-    [x - slant, y + slant + 9, 'end'],
-    [x + slant, y - slant, 'start'],
-    [x - slant, y - slant, 'end'],
+    [x, bottom + 17, 'middle'],
+    [x, top - 8, 'middle'],
+    [east + 8, y + 4.5, 'start'],
+    [west - 8, y + 4.5, 'end'],
+    [x + wide, y + high + 11, 'start'],
+    [x - wide, y + high + 11, 'end'],
+    [x + wide, y - high - 2, 'start'],
+    [x - wide, y - high - 2, 'end'],
   ];
   return spots.map(([left, base, anchor]) => {
     const from = anchor === 'start' ? left : anchor === 'end' ? left - width : left - width / 2;
@@ -87,8 +76,4 @@ function cost(box: Box, taken: readonly Box[], frame: Box): number {
     Math.max(0, frame.top - box.top) +
     Math.max(0, box.bottom - frame.bottom);
   return covered + outside * 40;
-}
-
-function around(x: number, y: number, radius: number): Box {
-  return { left: x - radius, right: x + radius, top: y - radius, bottom: y + radius };
 }

@@ -1,24 +1,62 @@
 // The key of the map: what a dot, a circle, a colour and a band stand for.
 import type { KeyEntry } from '../key.ts';
 import { mark, type Markup } from '../markup.ts';
-import { plain, roundDown } from '../number.ts';
+import { decimal, plain, roundDown } from '../number.ts';
 import { deep, ramp, rule, softInk, umber } from '../palette.ts';
 import { bandPath } from './band.ts';
-import type { Discs } from './discs.ts';
+import type { Marks } from './marks.ts';
+import { circleShape, drawShape, drawTicks, edgeOf } from './shape.ts';
 import type { Sheet } from './sheet.ts';
+import { contributionRange } from './shown.ts';
 
 export function legendEntries(sheet: Sheet): readonly KeyEntry[] {
-  const entries =
-    sheet.state.show === 'empty' ? [rampEntry('empty in 0 to 100 of 100 futures')] : abundanceEntries(sheet);
+  const entries = [...shownEntries(sheet), ...roleEntries(sheet)];
   return sheet.view.links.length === 0 ? entries : [...entries, ...bandEntry(sheet), wayEntry];
 }
 
-function abundanceEntries({ view, discs }: Sheet): readonly KeyEntry[] {
+function shownEntries(sheet: Sheet): readonly KeyEntry[] {
+  switch (sheet.state.show) {
+    case 'abundance':
+      return abundanceEntries(sheet);
+    case 'empty':
+      return [rampEntry('empty in 0 to 100 of 100 futures')];
+    case 'contribution': {
+      const { low, high } = contributionRange(sheet.view);
+      return [rampEntry(`${decimal(low, 2)} to ${decimal(high, 2)} a year later for each one there`)];
+    }
+    case 'role':
+      return [];
+  }
+}
+
+const roleWords = {
+  source: 'source: each one there leaves more than one',
+  sink: 'sink: each one there leaves fewer than one',
+  undecided: 'undecided',
+} as const;
+
+function roleEntries({ view, state }: Sheet): readonly KeyEntry[] {
+  const heavy = state.show === 'role';
+  return (['source', 'sink', 'undecided'] as const)
+    .filter((role) => view.patches.some(({ worth }) => worth?.role === role))
+    .map((role) => {
+      const shape = circleShape([13, 0], 7.5);
+      const ticks = role === 'source' ? drawTicks(shape, heavy) : null;
+      const sample = mark`${ticks}${drawShape(shape, mark`fill="#fff" ${edgeOf(role, heavy)}`)}`;
+      return { sample, width: 26, words: roleWords[role] };
+    });
+}
+
+function abundanceEntries({ view, marks }: Sheet): readonly KeyEntry[] {
   const circle = mark`<circle cx="8" r="7.5" fill="#fff" stroke="${softInk}"/>`;
-  const size = { sample: circle, width: 16, words: sizeWords[discs.sizeMeans] };
-  if (discs.perDot === null) return [size, rampEntry(fullness[discs.sizeMeans === 'capacity' ? 'capacity' : 'most'])];
-  const dot = mark`<circle cx="5" r="${discs.dotRadius}" fill="${deep}"/>`;
-  return [{ sample: dot, width: 10, words: perDotWords(discs.perDot, view.animals) }, size];
+  const words = sizeWords[marks.sizeMeans];
+  const size = words === null ? [] : [{ sample: circle, width: 16, words }];
+  if (marks.perDot === null) {
+    const full = view.patches.every(({ capacity }) => capacity !== null) ? 'capacity' : 'most';
+    return [...size, rampEntry(fullness[full])];
+  }
+  const dot = mark`<circle cx="5" r="${marks.dotRadius}" fill="${deep}"/>`;
+  return [{ sample: dot, width: 10, words: perDotWords(marks.perDot, view.animals) }, ...size];
 }
 
 const fullness = {
@@ -26,7 +64,9 @@ const fullness = {
   most: 'the middle, from nothing to the most in 95 of 100 futures',
 } as const;
 
-const sizeWords: Readonly<Record<Discs['sizeMeans'], string>> = {
+const sizeWords: Readonly<Record<Marks['sizeMeans'], string | null>> = {
+  outline: null,
+  'outline or area': 'circle: a patch without an outline, by its area',
   capacity: 'circle: what the patch can hold',
   area: 'circle: area of the patch',
   animals: 'circle: the most in 95 of 100 futures',

@@ -3,6 +3,7 @@ import { mark, type Markup } from '../markup.ts';
 import { softInk, umber } from '../palette.ts';
 import { pick } from '../series.ts';
 import { bandPath } from './band.ts';
+import { reachOf } from './shape.ts';
 import type { Sheet } from './sheet.ts';
 import { linkLine } from './words.ts';
 
@@ -17,14 +18,14 @@ export function drawWays({ view, placing }: Sheet): Markup {
   return mark`<path d="${path}" fill="none" stroke="${softInk}" stroke-opacity="0.55" stroke-dasharray="1 4" stroke-linecap="round"/>`;
 }
 
-export function drawBands({ view, state, placing, discs, flows }: Sheet): Markup {
+export function drawBands({ view, state, placing, marks, flows }: Sheet): Markup {
   const bands = view.links.map((link, index) => {
     const width = flows.most > 0 ? (flows.widest * pick(link.animals, state.count)) / flows.most : 0;
     const ends = {
       from: pick(placing.points, link.from),
       to: pick(placing.points, link.to),
-      fromRadius: pick(discs.radius, link.from),
-      toRadius: pick(discs.radius, link.to),
+      fromRadius: reachOf(pick(marks.shapes, link.from), pick(placing.points, link.to)),
+      toRadius: reachOf(pick(marks.shapes, link.to), pick(placing.points, link.from)),
     };
     const path = width < 0.15 ? '' : bandPath(ends, width);
     return mark`<path data-link="${String(index)}" d="${path}"><title>${linkLine(view, link, state.count)}</title></path>`;

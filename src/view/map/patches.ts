@@ -1,71 +1,74 @@
-// The patches of the map: circles with counted dots, or on the ramp. Large ones lie beneath, so that none is hidden.
+// The patches of the map with counted dots, or on the ramp. Large ones lie beneath, so that none is hidden.
 import { mark, type Markup } from '../markup.ts';
-import { of100 } from '../number.ts';
-import { deep, ink, inkOn, ramp, softInk } from '../palette.ts';
-import { largest, pick } from '../series.ts';
-import { dotPath } from './discs.ts';
+import { deep, inkOn, ramp } from '../palette.ts';
+import { pick } from '../series.ts';
+import { drawShape, drawTicks, edgeOf, type Shape } from './shape.ts';
 import type { Sheet } from './sheet.ts';
+import { shownIn } from './shown.ts';
 import { patchLines } from './words.ts';
 
 export function drawPatches(sheet: Sheet): Markup {
-  const order = sheet.view.patches.map((_, p) => p);
-  order.sort((a, b) => pick(sheet.discs.radius, b) - pick(sheet.discs.radius, a));
+  const { shapes } = sheet.marks;
+  const order = shapes.map((_, p) => p);
+  order.sort((a, b) => pick(shapes, b).radius - pick(shapes, a).radius);
   return mark`<g>${order.map((p) => patch(sheet, p))}</g>`;
 }
 
 function patch(sheet: Sheet, p: number): Markup {
   const { view, state } = sheet;
   const said = [pick(view.patches, p).name, ...patchLines(view, p, state.count)].join('. ');
-  const { x, y, radius } = disc(sheet, p);
-  const halo = mark`<circle class="halo" cx="${x}" cy="${y}" r="${radius + 5}" fill="none" stroke="none"/>`;
-  if (state.focus === null) return mark`<g><title>${said}</title>${filling(sheet, p)}</g>`;
+  if (state.focus === null) return mark`<g><title>${said}</title>${drawn(sheet, p)}</g>`;
+  const shape = pick(sheet.marks.shapes, p);
+  const [x, y] = shape.at;
   const stop = state.focus === p ? '0' : '-1';
-  return mark`<g class="patch" role="img" tabindex="${stop}" data-patch="${String(p)}" aria-label="${said}">
-${halo}${filling(sheet, p)}</g>`;
+  return mark`<g class="patch" role="img" tabindex="${stop}" data-patch="${String(p)}" data-x="${x}" data-y="${y}" aria-label="${said}">
+${halo(shape)}${drawn(sheet, p)}</g>`;
 }
 
-function disc({ placing, discs }: Sheet, p: number) {
-  const [x, y] = pick(placing.points, p);
-  return { x, y, radius: pick(discs.radius, p) };
+/** Lies around a circle and beneath an outline. */
+function halo(shape: Shape): Markup {
+  if (shape.outline !== null) return drawShape(shape, mark`class="halo under" fill="none" stroke="none"`);
+  return drawShape({ ...shape, radius: shape.radius + 5 }, mark`class="halo" fill="none" stroke="none"`);
 }
 
-function filling(sheet: Sheet, p: number): Markup {
-  const { empty } = pick(sheet.view.patches, p);
-  if (sheet.state.show === 'empty' && empty !== null) return chanceDisc(sheet, p, pick(empty, sheet.state.count));
-  return sheet.discs.perDot === null ? fullnessDisc(sheet, p) : dottedDisc(sheet, p, sheet.discs.perDot);
+function drawn(sheet: Sheet, p: number): Markup {
+  const shape = pick(sheet.marks.shapes, p);
+  const role = pick(sheet.view.patches, p).worth?.role ?? null;
+  const heavy = sheet.state.show === 'role';
+  const fill = fillOf(sheet, p);
+  const ticks = role === 'source' ? drawTicks(shape, heavy) : null;
+  return mark`${ticks}${drawShape(shape, mark`fill="${fill}" ${edgeOf(role, heavy)}`)}${inside(sheet, p)}`;
 }
 
-function chanceDisc(sheet: Sheet, p: number, chance: number): Markup {
-  const { x, y, radius } = disc(sheet, p);
-  const number =
-    radius < 13
-      ? null
-      : mark`<text x="${x}" y="${y + 4.5}" text-anchor="middle" fill="${inkOn(chance)}">${briefly(chance)}</text>`;
-  return mark`<circle cx="${x}" cy="${y}" r="${radius}" fill="${ramp(chance)}" stroke="${ink}"/>${number}`;
+function fillOf(sheet: Sheet, p: number): string {
+  const { share } = shownIn(sheet.view, sheet.state, p);
+  return share === null || hasDots(sheet) ? '#ffffff' : ramp(share);
 }
 
-/** Of 100, short enough for a circle. */
-function briefly(chance: number): string {
-  const futures = of100(chance);
-  return { none: '0', all: '100', 'fewer than 1': '<1', 'more than 99': '>99' }[futures] ?? futures;
+function hasDots({ state, marks }: Sheet): boolean {
+  return state.show === 'abundance' && marks.perDot !== null;
 }
 
-function fullnessDisc(sheet: Sheet, p: number): Markup {
-  const { x, y, radius } = disc(sheet, p);
-  const { fan, capacity } = pick(sheet.view.patches, p);
-  const share = pick(fan.median, sheet.state.count) / Math.max(capacity ?? largest(fan.p95), 1e-9);
-  const fill = ramp(Math.min(1, share));
-  return mark`<circle cx="${x}" cy="${y}" r="${radius}" fill="${fill}" stroke="${ink}" stroke-width="0.75"/>`;
+function inside(sheet: Sheet, p: number): Markup | null {
+  if (hasDots(sheet)) return dots(sheet, p);
+  const { share, text } = shownIn(sheet.view, sheet.state, p);
+  if (text === '' || !textFits(sheet, p, text)) return null;
+  const [x, y] = pick(sheet.marks.shapes, p).at;
+  return mark`<text x="${x}" y="${y + 4.5}" text-anchor="middle" fill="${inkOn(share ?? 0)}">${text}</text>`;
 }
 
-function dottedDisc(sheet: Sheet, p: number, perDot: number): Markup {
-  const { x, y, radius } = disc(sheet, p);
-  const { dotRadius, slots } = sheet.discs;
-  const median = pick(pick(sheet.view.patches, p).fan.median, sheet.state.count);
-  const count = Math.round(median / perDot);
-  const path = dotPath(count, pick(slots, p), radius, [x, y]);
-  const ground = mark`<circle cx="${x}" cy="${y}" r="${radius}" fill="#fff" stroke="${softInk}"/>`;
-  const dots = mark`<path d="${path}" stroke="${deep}" stroke-width="${dotRadius * 2}" stroke-linecap="round" fill="none"/>`;
-  if (count > 0 || median === 0) return mark`${ground}${dots}`;
-  return mark`${ground}${dots}<circle cx="${x}" cy="${y}" r="${dotRadius}" fill="none" stroke="${deep}"/>`;
+/** Words and numbers that find no room inside stand behind the name of the patch. */
+export function textFits({ marks }: Sheet, p: number, text: string): boolean {
+  const { radius, outline } = pick(marks.shapes, p);
+  return outline === null && radius >= Math.max(13, text.length * 4);
+}
+
+function dots({ view, state, marks }: Sheet, p: number): Markup {
+  const median = pick(pick(view.patches, p).fan.median, state.count);
+  const count = Math.round(median / (marks.perDot ?? 1));
+  const { dotRadius } = marks;
+  const [x, y] = pick(marks.shapes, p).at;
+  if (count === 0 && median > 0)
+    return mark`<circle cx="${x}" cy="${y}" r="${dotRadius}" fill="none" stroke="${deep}"/>`;
+  return mark`<path d="${marks.dots(p, count)}" stroke="${deep}" stroke-width="${dotRadius * 2}" stroke-linecap="round" fill="none"/>`;
 }

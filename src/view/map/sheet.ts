@@ -1,7 +1,7 @@
-// A map under way: what is shown, and where and how large everything stands.
+// A map under way: where and how large everything stands, which no year changes, and what is shown.
 import type { MapState, ReportView } from '../contract.ts';
 import { largest } from '../series.ts';
-import { sizeDiscs, type Discs } from './discs.ts';
+import { sizeMarks, type Marks } from './marks.ts';
 import { innerFrame, mapHeight, placePatches, type Placing } from './place.ts';
 
 export interface Flows {
@@ -11,21 +11,24 @@ export interface Flows {
   readonly widest: number;
 }
 
-export interface Sheet {
+export interface Layout {
   readonly view: ReportView;
-  readonly state: MapState;
   readonly width: number;
   /** Without the key beneath. */
   readonly height: number;
   readonly placing: Placing;
-  readonly discs: Discs;
+  readonly marks: Marks;
   readonly flows: Flows;
 }
 
-export function layOut(view: ReportView, state: MapState, width: number): Sheet {
+export interface Sheet extends Layout {
+  readonly state: MapState;
+}
+
+export function layOut(view: ReportView, width: number): Layout {
   const height = mapHeight(view.patches, width);
-  const placing = placePatches(view.patches, innerFrame({ width, height }));
-  const discs = sizeDiscs(view.patches, placing.points, width);
+  const placing = placePatches(view.patches, innerFrame(view.patches, { width, height }));
+  const marks = sizeMarks(view.patches, placing, width);
   const most = Math.max(0, ...view.links.map((link) => largest(link.animals)));
-  return { view, state, width, height, placing, discs, flows: { most, widest: width < 500 ? 9 : 14 } };
+  return { view, width, height, placing, marks, flows: { most, widest: width < 500 ? 9 : 14 } };
 }

@@ -1,7 +1,7 @@
 // The numbers of the map as two tables: patches, and the links between them.
-import type { ReportView } from '../contract.ts';
+import type { PatchView, ReportView } from '../contract.ts';
 import { mark, type Markup } from '../markup.ts';
-import { percent, whole } from '../number.ts';
+import { decimal, percent, whole } from '../number.ts';
 import { pick } from '../series.ts';
 import { drawTable, type Row } from '../table.ts';
 import { arriving, flow, leaving } from './words.ts';
@@ -13,19 +13,27 @@ export function mapTables(view: ReportView, count: number): Markup {
 
 function patchTable(view: ReportView, count: number, moved: boolean): Markup {
   const empty = view.patches.some((patch) => patch.empty !== null);
+  const told = view.worthAt !== null;
   const rows = view.patches.map((patch, p): Row => {
     const { p05, median, p95, mean } = patch.fan;
     const animals = [median, p05, p95, mean].map((series) => whole(pick(series, count)));
     const chance = patch.empty === null ? '' : percent(pick(patch.empty, count));
     const moves = moved ? [flow(arriving(view, p, count)), flow(leaving(view, p, count))] : [];
     const holds = patch.capacity === null ? '' : whole(patch.capacity);
-    return [patch.name, ...animals, ...(empty ? [chance] : []), ...moves, holds];
+    const worth = told ? worthCells(patch) : [];
+    return [patch.name, ...animals, ...(empty ? [chance] : []), ...moves, holds, ...worth];
   });
   const head = ['patch', 'middle future', '5 of 100 futures at or under', '95 of 100 at or under', 'mean'];
   if (empty) head.push('chance of being empty');
   if (moved) head.push('arriving a year', 'leaving for another patch a year');
   head.push('can hold');
+  if (told) head.push('source or sink', 'contribution', 'growth alone');
   return drawTable({ caption: `Patches in ${pick(view.years, count)} (${view.animals})`, head, rows });
+}
+
+function worthCells({ worth }: PatchView): readonly string[] {
+  if (worth === null) return ['not known', '', ''];
+  return [worth.role, decimal(worth.contribution, 3), decimal(worth.growthAlone, 3)];
 }
 
 function linkTable(view: ReportView, count: number): Markup {

@@ -1,6 +1,6 @@
 // What the map shows at one patch or link, in words: for tooltips, for screen readers and for the table beside it.
-import type { LinkView, ReportView } from '../contract.ts';
-import { of100, plain, whole } from '../number.ts';
+import type { LinkView, ReportView, WorthView } from '../contract.ts';
+import { decimal, of100, plain, whole } from '../number.ts';
 import { pick } from '../series.ts';
 
 /** Movement below a whole animal a year still counts: it adds up over years. */
@@ -11,7 +11,7 @@ export function flow(animals: number): string {
 }
 
 export function patchLines(view: ReportView, patch: number, count: number): readonly string[] {
-  const { fan, empty } = pick(view.patches, patch);
+  const { fan, empty, worth } = pick(view.patches, patch);
   const lines = [
     `${whole(pick(fan.median, count))} ${view.animals} in the middle of ${plain(view.futures)} futures`,
     `90 of 100 futures: ${whole(pick(fan.p05, count))} to ${whole(pick(fan.p95, count))}`,
@@ -22,7 +22,13 @@ export function patchLines(view: ReportView, patch: number, count: number): read
       `arriving ${flow(arriving(view, patch, count))} a year, setting out and arriving elsewhere ${flow(leaving(view, patch, count))}`,
     );
   }
+  if (worth !== null) lines.push(worthLine(view, worth));
   return lines;
+}
+
+function worthLine({ animals, worthAt }: ReportView, { role, contribution }: WorthView): string {
+  const leaves = `each of the ${animals} there leaves ${decimal(contribution, 2)} a year later in all patches`;
+  return `${role}: ${leaves}, taken ${worthAt ?? ''}`;
 }
 
 export function linkLine(view: ReportView, link: LinkView, count: number): string {
