@@ -4,7 +4,9 @@ import type { Model } from '../model/model.ts';
 
 /** So few that neither crowding nor ceilings matter. */
 const few = 1e-12;
-const mostYears = 20_000;
+const mostYears = 3000;
+/** Of all animals; what still changes then is too little to matter. */
+const settledShare = 1e-13;
 
 export function dependsOnMakeUp({ phases }: Model): boolean {
   return phases.some((phase) => phase.kind === 'breeding' && phase.mating !== undefined);
@@ -20,7 +22,7 @@ export function settledMakeUp(states: number, year: (animals: Float64Array) => F
     const next = animals.map((value, i) => (value + ((after[i] ?? 0) * few) / total) / 2);
     const change = next.reduce((most, value, i) => Math.max(most, Math.abs(value - (animals[i] ?? 0))), 0);
     animals = next;
-    if (change < 1e-16 * few) break;
+    if (change < settledShare * few) break;
   }
   return animals;
 }
