@@ -62,7 +62,9 @@ const kept = new WeakMap<CompiledModel, Analysis>();
 function analysed(compiled: CompiledModel): Analysis {
   const found = kept.get(compiled) ?? analyseModel(compiled, { at: 'zero', wantEigenvalues: true }).value;
   if (found === null) throw new Error('Every model has a matrix near zero.');
-  const { hash: _hash, tool: _tool, ...told } = found;
+  const told = { ...found };
+  delete told.hash;
+  delete told.tool;
   kept.set(compiled, told);
   return told;
 }
