@@ -73,6 +73,15 @@ export const modelCodes = {
   'handling-shape': 'A take, a move or a release says too little or too much.',
   'year-outside': 'Something is to be done in years that are not looked at.',
 
+  // What a careful reader asks of a model without a mistake
+  'births-of-both-sexes': 'Births of both sexes may be counted as females.',
+  'newborn-unsurvived': 'Young reach the next class before any survival.',
+  'too-long-lived': 'Animals of the oldest class live longer than is known of any.',
+  'too-fast-growth': 'A patch grows faster than its life history can.',
+  'apparent-survival': 'A survival from marked animals stands beside emigration.',
+  'life-cycle': 'The life cycle falls into parts, or keeps swinging.',
+  'long-horizon': 'The model looks further ahead than its counts reach back.',
+
   // Start and outcomes
   'start-empty-class': 'The start has animals of a class that is always empty at the count.',
   'start-needs-spread': 'A stable spread does not exist here.',
