@@ -9,8 +9,11 @@ import type { Crew } from './kernel/crew.ts';
 import type { BatchCounts } from './kernel/output.ts';
 import { openRunner } from './kernel/run.ts';
 import { buildLandscape } from './landscape/build.ts';
+import type { Model } from './model/model.ts';
 import { resolveModel } from './model/resolve.ts';
 import { standingCautions } from './results/cautions.ts';
+import { DrawCollector } from './results/draws/collect.ts';
+import { drawnValues, seedOfDraw, withValues, type DrawnValues } from './results/draws/plan.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
 import type { Reduction } from './results/reduction/reduction.ts';
 import type { PathResults, RunResults } from './results/results.ts';
@@ -58,7 +61,9 @@ export interface CrewOptions extends RunOptions {
 }
 
 /** Stochastic replicates of one scenario, in this thread. */
-export function runModel(compiled: CompiledModel, { onProgress }: RunOptions = {}): RunResults {
+export function runModel(compiled: CompiledModel, options: RunOptions = {}): RunResults {
+  if (drawing(compiled)) return runDraws(compiled, options);
+  const { onProgress } = options;
   const { model, image } = compiled;
   const run = openRunner(image, { steps: model.steps, seed: model.seed });
   const reduction = openReduction(model);
@@ -86,6 +91,7 @@ export async function runModelWith(
   compiled: CompiledModel,
   options: CrewOptions = {},
 ): Promise<FinishedRun> {
+  if (drawing(compiled)) return runDrawsWith(crew, compiled, options);
   const { model, image } = compiled;
   const { replicates, steps, seed } = model;
   const reduction = openReduction(model);
@@ -110,6 +116,73 @@ function withReplicates(compiled: CompiledModel, replicates: number): CompiledMo
 
 function summarise({ model, provenance }: CompiledModel, reduction: Reduction): RunResults {
   return summariseRun({ model, reduction, provenance, cautions: standingCautions(model) });
+}
+
+function drawing({ model }: CompiledModel): boolean {
+  return model.draws > 0 && model.uncertainty !== null;
+}
+
+/** One draw of what is not known: its values, and the image of the model that has them, or why there is none. */
+interface Draw {
+  readonly draw: number;
+  readonly values: DrawnValues;
+  readonly image: ArrayBuffer | null;
+  readonly failure: string;
+}
+
+function* drawsOf({ spec, model }: CompiledModel): Generator<Draw> {
+  const { uncertainty, seed, draws } = model;
+  if (uncertainty === null) return;
+  const number = uncertainty.table === null ? draws : Math.min(draws, uncertainty.table.length);
+  for (let draw = 0; draw < number; draw++) {
+    const values = drawnValues(uncertainty, seed, draw);
+    const { compiled, findings } = compileSpec(withValues(spec, values));
+    const failure = findings.find(({ severity }) => severity === 'error')?.message ?? '';
+    yield { draw, values, image: compiled?.image ?? null, failure };
+  }
+}
+
+/** For all draws together. */
+function openPooled(model: Model): Reduction {
+  return openReduction({ ...model, replicates: model.replicates * model.draws });
+}
+
+function runDraws(compiled: CompiledModel, { onProgress }: RunOptions): RunResults {
+  const { model } = compiled;
+  const reduction = openPooled(model);
+  const collector = new DrawCollector(model, reduction);
+  for (const { draw, values, image, failure } of drawsOf(compiled)) {
+    if (image === null) collector.fail(draw, values, failure);
+    else {
+      const run = openRunner(image, { steps: model.steps, seed: seedOfDraw(model.seed, draw) });
+      for (const batch of batchesOf(model.replicates)) collector.take(run(batch));
+      collector.finish(draw, values);
+    }
+    onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
+  }
+  return collector.withDraws(summarise(compiled, reduction));
+}
+
+/** By a crew; told to stop, the draws that were finished whole are kept. */
+async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOptions): Promise<FinishedRun> {
+  const { model } = compiled;
+  const reduction = openPooled(model);
+  const collector = new DrawCollector(model, reduction);
+  const batches = batchesOf(model.replicates);
+  for (const { draw, values, image, failure } of drawsOf(compiled)) {
+    if (image === null) collector.fail(draw, values, failure);
+    else {
+      const taken: BatchCounts[] = [];
+      const request = { steps: model.steps, seed: seedOfDraw(model.seed, draw) };
+      const finished = await crew.run({ image, request, batches }, (batch) => taken.push(batch), options);
+      if (finished < batches.length) break;
+      for (const batch of taken) collector.take(batch);
+      collector.finish(draw, values);
+    }
+    options.onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
+  }
+  const results = collector.done === 0 ? null : collector.withDraws(summarise(compiled, reduction));
+  return { compiled, results };
 }
 
 /** The path without chance. */

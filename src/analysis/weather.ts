@@ -1,6 +1,7 @@
 // What the variation of a model means on the scale of its numbers: spreads, and correlations as they really are.
 import { exp } from '../machine/pinned.ts';
-import type { Variation, Varied, VariedShape } from '../model/chance.ts';
+import type { Variation, Varied } from '../model/chance.ts';
+import type { VariedShape } from '../model/variation/shape.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import { distributionOf } from '../model/variation/distribution.ts';
 import { betaTable, gammaTable, tableAt } from '../numeric/chance/quantile-table.ts';

@@ -94,7 +94,7 @@ function addRuns(program: Command): void {
   model(program, 'path', 'follow the path without chance, year by year', ['set', 'years', 'json', 'out', 'quiet'])
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
-  const chance = ['set', 'years', 'replicates', 'seed', 'threads'] as const;
+  const chance = ['set', 'years', 'replicates', 'seed', 'draws', 'threads'] as const;
   addOptions(program.command('run'), [...chance, 'json', 'out', 'quiet', 'allow'])
     .argument('[model]', 'a model file, or - for standard input')
     .description('run the model many times with chance')

@@ -7,6 +7,7 @@ export interface CommonOptions {
   readonly years?: number;
   readonly replicates?: number;
   readonly seed?: number;
+  readonly draws?: number;
   readonly threads?: number;
   readonly json?: boolean;
   readonly out?: string;
@@ -14,7 +15,7 @@ export interface CommonOptions {
   readonly allow?: readonly string[];
 }
 
-type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'threads' | 'json' | 'out' | 'quiet' | 'allow';
+type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'draws' | 'threads' | 'json' | 'out' | 'quiet' | 'allow';
 
 const options: Readonly<Record<Shared, () => Option>> = {
   set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
@@ -22,6 +23,7 @@ const options: Readonly<Record<Shared, () => Option>> = {
   replicates: () => new Option('--replicates <n>', 'how often to run the model').argParser(wholeFrom(1, 100_000_000)),
   seed: () =>
     new Option('--seed <n>', 'the number that decides all chance').argParser(wholeFrom(0, Number.MAX_SAFE_INTEGER)),
+  draws: () => new Option('--draws <n>', 'how often to draw what is not known').argParser(wholeFrom(0, 100_000)),
   threads: () =>
     new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),
@@ -37,12 +39,13 @@ export function addOptions(command: Command, wanted: readonly Shared[]): Command
   return wanted.reduce((one, name) => one.addOption(options[name]()), command);
 }
 
-export function settingsOf({ set, years, replicates, seed }: CommonOptions): Settings {
+export function settingsOf({ set, years, replicates, seed, draws }: CommonOptions): Settings {
   return {
     ...(set === undefined ? {} : { set }),
     ...(years === undefined ? {} : { years }),
     ...(replicates === undefined ? {} : { replicates }),
     ...(seed === undefined ? {} : { seed }),
+    ...(draws === undefined ? {} : { draws }),
   };
 }
 

@@ -35,15 +35,17 @@ export async function runReplicates(compiled: CompiledModel, options: Replicates
   try {
     const done = await attempt(crew, compiled, { onProgress: progress.update, signal: stop.signal });
     progress.finish();
-    return { ...checked(done, compiled.model.replicates), threads };
+    return { ...checked(done, compiled.model), threads };
   } finally {
     stop.close();
     await crew.close();
   }
 }
 
-function threadsFor({ model: { replicates, steps, patches, classes } }: CompiledModel): number {
-  return replicates * steps * patches.length * classes.length < smallWork ? 1 : availableParallelism();
+function threadsFor({ model: { replicates, draws, steps, patches, classes } }: CompiledModel): number {
+  return replicates * Math.max(1, draws) * steps * patches.length * classes.length < smallWork
+    ? 1
+    : availableParallelism();
 }
 
 async function attempt(crew: Crew, compiled: CompiledModel, options: CrewOptions): Promise<FinishedRun> {
@@ -55,13 +57,23 @@ async function attempt(crew: Crew, compiled: CompiledModel, options: CrewOptions
   }
 }
 
-function checked({ compiled, results }: FinishedRun, asked: number): Omit<DoneReplicates, 'threads'> {
+function checked({ compiled, results }: FinishedRun, model: CompiledModel['model']): Omit<DoneReplicates, 'threads'> {
+  const asked = model.replicates;
   const done = compiled.model.replicates;
   const of = asked.toLocaleString('en');
   if (results === null) throw new Ending(exitCodes.work, `Stopped before the first of ${of} replicates was finished.`);
+  const draws = drawsAsked(model);
+  if (results.draws !== undefined && results.draws.number < draws) {
+    const words = `Stopped after ${results.draws.number} of ${draws} draws; the results are those of \`--draws ${results.draws.number}\`.`;
+    return { compiled, results, cutShort: new Ending(exitCodes.work, words) };
+  }
   if (done === asked) return { compiled, results, cutShort: null };
   const words = `Stopped after ${done.toLocaleString('en')} of ${of} replicates; the results are those of \`--replicates ${done}\`.`;
   return { compiled, results, cutShort: new Ending(exitCodes.work, words) };
+}
+
+function drawsAsked({ draws, uncertainty }: CompiledModel['model']): number {
+  return Math.min(draws, uncertainty?.table?.length ?? draws);
 }
 
 /** The first Ctrl-C (or SIGTERM) lets what was begun be finished; the second ends at once. */

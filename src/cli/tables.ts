@@ -1,6 +1,6 @@
 // Results as tidy tables: one row an observation, each column with its unit and meaning in the dictionary.
 import type { Model } from '../model/model.ts';
-import type { PathResults, Quantiles, RunResults, YearSummary } from '../results/results.ts';
+import type { Chance, Draws, PathResults, Quantiles, RunResults, YearSummary } from '../results/results.ts';
 import { inFileOrder } from '../results/summarise.ts';
 
 export type Cell = string | number | null;
@@ -36,6 +36,7 @@ export function runTables(model: Model, results: RunResults): readonly Table[] {
     lowestTable(results),
     patchTable(model),
     parameterTable(model),
+    ...(results.draws === undefined ? [] : [drawTable(results, results.draws)]),
   ];
 }
 
@@ -105,12 +106,19 @@ function outcomeTable({ outcomes }: RunResults): Table {
       share('probability', 'Share of the runs.'),
       share('lower', 'Lower end of the 95 % interval from the number of runs.'),
       share('upper', 'Upper end of the 95 % interval from the number of runs.'),
+      share('lower_unknown', 'Lower end of the 95 % interval from what is not known; empty where it was not drawn.'),
+      share('upper_unknown', 'Upper end of the 95 % interval from what is not known; empty where it was not drawn.'),
     ],
     rows: outcomes.flatMap(({ name, definition, ever, atEnd }) => [
-      [name, definition, 'ever', ever.probability, ever.interval.lower, ever.interval.upper],
-      [name, definition, 'at end', atEnd.probability, atEnd.interval.lower, atEnd.interval.upper],
+      [name, definition, 'ever', ...chanceCells(ever)],
+      [name, definition, 'at end', ...chanceCells(atEnd)],
     ]),
   };
+}
+
+function chanceCells({ probability, interval, intervalFromUnknown }: Chance): readonly Cell[] {
+  const unknown = [intervalFromUnknown?.lower ?? null, intervalFromUnknown?.upper ?? null];
+  return [probability, interval.lower, interval.upper, ...unknown];
 }
 
 function chanceTable({ outcomes }: RunResults): Table {
@@ -213,6 +221,34 @@ function patchTable(model: Model): Table {
       if (patch === undefined) return [];
       return [[patch.name, patch.at?.[0] ?? null, patch.at?.[1] ?? null, patch.areaKm2, patch.capacity]];
     }),
+  };
+}
+
+/** One row a draw and outcome; draws that no model can have are rows with their reason. */
+function drawTable({ outcomes }: RunResults, { rows }: Draws): Table {
+  const names = [...new Set(rows.flatMap(({ values }) => Object.keys(values)))];
+  return {
+    name: 'draws',
+    columns: [
+      { name: 'draw', unit: '', type: 'integer', meaning: 'Number of the draw of what is not known, from 1.' },
+      ...names.map((name): Column => ({
+        name,
+        unit: 'as in the model',
+        meaning: 'Value of this parameter in the draw.',
+      })),
+      outcome,
+      share('ever_below', 'Share of the runs of this draw that fell below; empty where it was not run.'),
+      { name: 'failure', unit: '', meaning: 'Why no model can have these values; empty where it was run.' },
+    ],
+    rows: rows.flatMap(({ draw, values, failure, everBelow }) =>
+      outcomes.map(({ name }, k) => [
+        draw,
+        ...names.map((one) => values[one] ?? null),
+        name,
+        everBelow[k] ?? null,
+        failure,
+      ]),
+    ),
   };
 }
 

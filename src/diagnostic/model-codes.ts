@@ -66,6 +66,7 @@ export const modelCodes = {
   'varies-elsewhere': 'A parameter that varies stands where numbers cannot vary.',
   'missing-correlation': 'It is not said how alike the years are in different patches.',
   'impossible-correlation': 'Numbers cannot be correlated like this.',
+  'impossible-uncertainty': 'No distribution is as uncertain as this.',
   'idle-catastrophe': 'A catastrophe changes nothing.',
   'repaired-correlation': 'A table of correlations was moved to the nearest possible one.',
 

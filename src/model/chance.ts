@@ -1,5 +1,7 @@
 // What chance does beside the draws of single animals: years that differ, and catastrophes.
 import type { DenseMatrix } from '../numeric/sparse.ts';
+import type { VariedShape } from './variation/shape.ts';
+import type { UncertainDistribution } from './uncertainty/distribution.ts';
 import type { Ast } from '../spec/expression/ast.ts';
 
 /** One number a patch, for each stretch of steps in which it is constant. */
@@ -18,8 +20,6 @@ export interface ScaledRate {
   readonly part: ScaledPart;
   readonly class: number;
 }
-
-export type VariedShape = 'beta' | 'logit-normal' | 'lognormal' | 'gamma';
 
 /** A rate of a class, or a named parameter, that differs from year to year. */
 export interface Varied {
@@ -83,4 +83,20 @@ export interface Catastrophe {
   /** From one beginning to the next at least; never less than it lasts. */
   readonly wait: number;
   readonly capacity: { readonly times: number; readonly steps: number } | null;
+}
+
+/** A parameter that is not exactly known. */
+export interface Uncertain {
+  readonly name: string;
+  /** What is used where nothing is drawn. */
+  readonly value: number;
+  readonly distribution: UncertainDistribution;
+}
+
+export interface Uncertainty {
+  /** In the order of their names. */
+  readonly parameters: readonly Uncertain[];
+  readonly correlation: Correlation;
+  /** Draws of the author's own, instead of distributions. */
+  readonly table: readonly Readonly<Record<string, number>>[] | null;
 }

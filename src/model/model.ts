@@ -1,7 +1,7 @@
 // A model with every name resolved, every default filled and one unit system (km, km², steps): what the compiler reads.
 // Patches stand in the order of their names, classes in the order of the spec. Index p is a patch, c a class.
 import type { Outline, Point } from '../numeric/plane/point.ts';
-import type { Catastrophe, Variation } from './chance.ts';
+import type { Catastrophe, Uncertainty, Variation } from './chance.ts';
 import type { DispersalKernel } from './kernel-shape.ts';
 
 export interface Patch {
@@ -256,6 +256,10 @@ export interface Model {
   readonly year: readonly string[];
   readonly crowding: readonly Crowding[];
   readonly catastrophes: readonly Catastrophe[];
+  /** Null where every number is taken as known. */
+  readonly uncertainty: Uncertainty | null;
+  /** Draws of what is not known; 0 for the numbers as they are. */
+  readonly draws: number;
   /** Null where no rate varies from year to year. */
   readonly variation: Variation | null;
   /** Whole animals, P×C. */

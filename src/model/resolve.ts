@@ -13,6 +13,7 @@ import { checkNames, namedExpressions, resolveParameters } from './parameters.ts
 import { resolvePatches } from './patches.ts';
 import { resolvePhases } from './phases.ts';
 import { resolveStart } from './start.ts';
+import { resolveUncertainty } from './uncertainty/resolve.ts';
 import { resolveCatastrophes } from './variation/catastrophe.ts';
 import { resolveVariation } from './variation/resolve.ts';
 
@@ -41,6 +42,7 @@ export function resolveWithContext(spec: Spec): Resolved & { readonly context: C
     crowding: resolveCrowding(context, phases),
     variation: resolveVariation(context, phases),
     catastrophes: resolveCatastrophes(context, phases),
+    uncertainty: resolveUncertainty(context),
     start: resolveStart(context),
     outcomes: resolveOutcomes(context),
     ...observedIn(context),
@@ -102,9 +104,13 @@ function head({ spec, patches, classes, sexes, time }: Context) {
   } as const;
 }
 
-function runSettings({ spec, defaults }: Context): { readonly replicates: number; readonly seed: number } {
+function runSettings({ spec, defaults }: Context): {
+  readonly replicates: number;
+  readonly seed: number;
+  readonly draws: number;
+} {
   const { replicates, seed } = spec.run ?? {};
   if (replicates === undefined) defaults.push(`A run has ${defaultReplicates} replicates.`);
   if (seed === undefined) defaults.push(`The seed is ${defaultSeed}.`);
-  return { replicates: replicates ?? defaultReplicates, seed: seed ?? defaultSeed };
+  return { replicates: replicates ?? defaultReplicates, seed: seed ?? defaultSeed, draws: spec.run?.draws ?? 0 };
 }

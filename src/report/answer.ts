@@ -26,7 +26,7 @@ export function answer(results: RunResults, animals: string): Answer {
     lead: leadOf(outcome, results),
     meaning: `“${outcome.name}” means: ${outcome.definition}.`,
     fromRuns: runsSentence(outcome.ever, results),
-    fromUnknown: unknownSentence(outcome.ever),
+    fromUnknown: unknownSentence(outcome.ever, results),
     abundance,
     call,
   };
@@ -45,7 +45,9 @@ function leadOf(outcome: OutcomeResult, results: RunResults): Answer['lead'] {
 
 function runsSentence(chance: Chance, results: RunResults): string {
   const { lower, upper, level, method } = chance.interval;
-  const runs = `${plain(finished(results))} runs`;
+  const { draws } = results;
+  const all = `${plain(finished(results))} runs`;
+  const runs = draws === undefined ? all : `${plain(draws.number - draws.failed)} draws, ${all}`;
   const how = `${plain(level * 100)}\u00a0%, ${method}`;
   if (chance.probability === 0) {
     return `${runs} without a case still allow a chance of up to ${percent(upper)} (${how}).`;
@@ -53,14 +55,27 @@ function runsSentence(chance: Chance, results: RunResults): string {
   return `From the number of runs alone (${runs}), the chance lies between ${percent(lower)} and ${percent(upper)} (${how}).`;
 }
 
-function unknownSentence({ intervalFromUnknown }: Chance): string {
+function unknownSentence({ intervalFromUnknown }: Chance, { notDrawn, draws }: RunResults): string {
+  if (notDrawn) {
+    return `The model says how sure its numbers are, but what is not known was not drawn: \`--draws 200\` shows how far the answer
+could move for that reason.`.replaceAll('\n', ' ');
+  }
   if (intervalFromUnknown === null) {
-    const cause = 'The model gives no uncertainty for its numbers';
-    return `${cause}, so how far the answer could move because they are not exactly known is in none of the intervals here.`;
+    return `The model gives no uncertainty for its numbers, so how far the answer could move because they are not exactly known is
+in none of the intervals here.`.replaceAll('\n', ' ');
   }
   const { lower, upper, level } = intervalFromUnknown;
-  const range = `between ${percent(lower)} and ${percent(upper)} (${plain(level * 100)}\u00a0%)`;
-  return `From what is not known about the numbers of the model, it lies ${range}.`;
+  const run = plain((draws?.number ?? 0) - (draws?.failed ?? 0));
+  return `From what is not known about the numbers of the model, it lies between ${percent(lower)} and ${percent(upper)}
+(${plain(level * 100)}\u00a0%, ${run} draws of them). No number of runs narrows that.${failedDraws(draws)}`.replaceAll(
+    '\n',
+    ' ',
+  );
+}
+
+function failedDraws(draws: RunResults['draws']): string {
+  if (draws === undefined || draws.failed === 0) return '';
+  return ` ${plain(draws.failed)} of ${plain(draws.number)} draws are numbers that the model cannot have; they are left out and listed.`;
 }
 
 function abundanceSentence(results: RunResults, animals: string): string {

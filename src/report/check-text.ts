@@ -10,6 +10,7 @@ import { litterWords, matingWords } from './breeding-words.ts';
 import { handlingWords } from './handling-words.ts';
 import { fixed } from './rounded.ts';
 import { catastropheWords } from './catastrophe-words.ts';
+import { uncertaintyWords } from './uncertainty-words.ts';
 import { weatherWords } from './weather-words.ts';
 import { bold, columnsOf, printable, wrap, type TextStyle } from './terminal.ts';
 
@@ -42,6 +43,7 @@ export function checkText(understood: Understood, style: TextStyle): string {
       style,
     ),
     section('Variation from year to year', understood.weather === null ? [] : weatherWords(understood.weather), style),
+    section('What is not known', uncertaintyWords(model.uncertainty), style),
     section('Catastrophes', catastropheWords(model, understood.landscape), style),
     standingTable(understood, style),
     section(

@@ -31,18 +31,19 @@ export function runText(results: RunResults, style: RunTextStyle): string {
 function outcomeTable(results: RunResults, style: TextStyle): string {
   if (results.outcomes.length === 0) return '';
   const end = lastYear(results);
+  const unknown = results.notDrawn ? 'not drawn' : 'not given';
   const rows = results.outcomes.flatMap((outcome) => [
-    [`${outcome.name}: having fallen below`, ...chanceCells(outcome.ever)],
-    [`${outcome.name}: being below in ${end}`, ...chanceCells(outcome.atEnd)],
+    [`${outcome.name}: having fallen below`, ...chanceCells(outcome.ever, unknown)],
+    [`${outcome.name}: being below in ${end}`, ...chanceCells(outcome.atEnd, unknown)],
   ]);
   const definitions = results.outcomes.slice(1).map((outcome) => wrap(`${outcome.name}: ${outcome.definition}`, style));
   const table = columnsOf(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
   return [table, ...(definitions.length > 0 ? ['', ...definitions] : [])].join('\n');
 }
 
-function chanceCells({ probability, interval, intervalFromUnknown }: Chance): readonly string[] {
+function chanceCells({ probability, interval, intervalFromUnknown }: Chance, unknown: string): readonly string[] {
   const range = probability === 0 ? `at most ${percent(interval.upper)}` : between(interval);
-  return [percent(probability), range, intervalFromUnknown === null ? 'not given' : between(intervalFromUnknown)];
+  return [percent(probability), range, intervalFromUnknown === null ? unknown : between(intervalFromUnknown)];
 }
 
 function between({ lower, upper }: { readonly lower: number; readonly upper: number }): string {

@@ -80,6 +80,24 @@ export interface Sketched {
   readonly relativeError: number;
 }
 
+/** One draw of what is not known. */
+export interface DrawRow {
+  /** From 1. */
+  readonly draw: number;
+  readonly values: Readonly<Record<string, number>>;
+  /** Why no model can have these values; null where it was run. */
+  readonly failure: string | null;
+  /** By outcome, the share of its runs that fell below; null where it was not run. */
+  readonly everBelow: readonly (number | null)[];
+}
+
+export interface Draws {
+  readonly number: number;
+  readonly failed: number;
+  readonly replicatesEach: number;
+  readonly rows: readonly DrawRow[];
+}
+
 export interface RunResults {
   readonly format: 'skein-run/1';
   readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
@@ -107,6 +125,10 @@ export interface RunResults {
   readonly patchesInUse: readonly { readonly year: number; readonly mean: number; readonly quantiles: Quantiles }[];
   /** Empty where every quantile is a count that some run had. */
   readonly sketched: readonly Sketched[];
+  /** Where the model says how sure its numbers are, but no draws were asked for. */
+  readonly notDrawn?: true;
+  /** Draws of what is not known: absent where none were asked for. */
+  readonly draws?: Draws;
   /** Runs that had to be stopped, with the reason; they are in no other number. */
   readonly stopped: { readonly runs: number; readonly reasons: readonly string[] };
   readonly cautions: readonly string[];

@@ -47,6 +47,7 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
     meanLowestCount: lowestCount(reduction),
     patchesInUse: patchesInUse(model, reduction),
     sketched: sketchedQuantiles(reduction),
+    ...(model.uncertainty !== null && model.draws === 0 ? { notDrawn: true as const } : {}),
     stopped: { runs: stopped.length, reasons: [...new Set(stopped.map(({ reason }) => reason))] },
     cautions,
   };

@@ -6,6 +6,7 @@ export interface Settings {
   readonly years?: number;
   readonly replicates?: number;
   readonly seed?: number;
+  readonly draws?: number;
   /** Named parameters with their new numbers or expressions. */
   readonly set?: readonly { readonly name: string; readonly value: string }[];
 }
@@ -29,7 +30,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
     const expression = value.trim() !== '' && Number.isFinite(number) ? number : value;
     parameters[name] = typeof before === 'object' ? { ...before, value: expression } : expression;
   }
-  const { years, replicates, seed } = settings;
+  const { years, replicates, seed, draws } = settings;
   // What the author named stays last, so that the spec reads back from its JSON with its keys in the same order.
   const { named, ...core } = spec;
   return {
@@ -42,6 +43,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
         ...spec.run,
         ...(replicates === undefined ? {} : { replicates }),
         ...(seed === undefined ? {} : { seed }),
+        ...(draws === undefined ? {} : { draws }),
       },
       named,
     },

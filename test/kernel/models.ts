@@ -40,6 +40,8 @@ export function modelOf(sketch: Sketch): Model {
     crowding: sketch.crowding ?? [],
     variation: sketch.variation ?? null,
     catastrophes: [],
+    uncertainty: null,
+    draws: 0,
     start: { by: 'table', animals: Float64Array.from(sketch.start) },
     outcomes: sketch.outcomes ?? [],
     replicates: 1000,

@@ -117,6 +117,8 @@ function fixtureModel(choice: FixtureChoice): Model {
     year: ['count', 'breeding', 'survival', 'natal', 'ageing'],
     variation: null,
     catastrophes: [],
+    uncertainty: null,
+    draws: 0,
     crowding: [],
     start: { by: 'total', total: 420, spread: 'stable within patch' },
     outcomes: [

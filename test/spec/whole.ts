@@ -25,7 +25,7 @@ parameters:
   adult_survival:
     value: 0.74
     source: { text: "radio-tracking 2019-2024, 61 hares", basis: measured here }
-  litter: { value: 4 + 0.6 }
+  litter: { value: 4.6, uncertainty: { standard-error: 0.4, interval: [4, 5], uniform: [4, 5], triangular: [4, 5], as: positive number } }
   natal_leaving: 22 %
 survival: { newborn: 0.38, yearling: 0.62, adult: adult_survival }
 births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newborn }
@@ -64,7 +64,7 @@ outcomes:
   north empty: { of: all, in: [North fen], below: 0.5 }
 observed: { counts: { North fen: { 2024: 71, 2025: 64 } }, of: [adult], error: 15 % }
 drivers: { values: { rain: { 2027: 0.8, 2028: 1.1 } }, future: repeat }
-run: { replicates: 2000, seed: 2026 }
+run: { replicates: 2000, seed: 2026, draws: 200 }
 variation:
   survival: { newborn: { sd: 0.1 }, adult: { cv: 5 %, shape: beta } }
   litter: { sd: 0.7, shape: gamma }
@@ -88,6 +88,9 @@ wandering:
   leavers: may miss
   links:
     - { between: [North fen, Saltmarsh], distance: 9 km, crossing-death: 0.4, turn-back: 50 % }
+uncertainty:
+  correlations: { adult_survival: { litter: 0.3 } }
+  draws: [{ litter: 4 }, { litter: 5 }]
 flood:
   kind: catastrophe
   chance: 0.04 per patch

@@ -4,7 +4,7 @@ import { betaOf, betaTails } from '../../numeric/chance/beta.ts';
 import { gammaOf, gammaTails } from '../../numeric/chance/gamma.ts';
 import { logitNormalOf, type MeanAndSd } from '../../numeric/chance/logit-normal.ts';
 import { quantileAt } from '../../numeric/chance/tail.ts';
-import type { VariedShape } from '../chance.ts';
+import type { VariedShape } from './shape.ts';
 
 export type Distribution =
   | { readonly shape: 'constant'; readonly value: number }

@@ -2,7 +2,8 @@
 import type { SpecPath } from '../../spec/document.ts';
 import { readQuantity } from '../../spec/quantity.ts';
 import type { Spec, VariedSpec } from '../../spec/schema/spec.ts';
-import type { Correlation, PatchNumbers, Varied, VariedShape, Variation } from '../chance.ts';
+import type { Correlation, PatchNumbers, Varied, Variation } from '../chance.ts';
+import type { VariedShape } from './shape.ts';
 import { classIndex, fail, type Context } from '../context.ts';
 import type { Phase } from '../model.ts';
 import { requirePlaces } from '../places.ts';

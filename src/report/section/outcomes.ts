@@ -24,24 +24,25 @@ const heads = [
 function outcomeTable(results: RunResults): Markup {
   const end = lastYear(results);
   const caption = `Chances over ${plain(finished(results))} futures, from ${results.firstYear} to ${end}`;
+  const unknown = results.notDrawn ? 'not drawn' : 'no uncertainty was given';
   const head = heads.map((name) => mark`<th scope="col">${name}</th>`);
-  const bodies = results.outcomes.map((outcome) => outcomeRows(outcome, end));
+  const bodies = results.outcomes.map((outcome) => outcomeRows(outcome, end, unknown));
   return scrolling(
     caption,
     mark`<table class="outcomes"><caption>${caption}</caption><thead><tr>${head}</tr></thead>${bodies}</table>`,
   );
 }
 
-function outcomeRows({ name, definition, ever, atEnd }: OutcomeResult, end: number): Markup {
+function outcomeRows({ name, definition, ever, atEnd }: OutcomeResult, end: number, unknown: string): Markup {
   const words = mark`<bdi>${name}</bdi><small><bdi>${definition}</bdi></small>`;
   return mark`<tbody>
-<tr><th scope="rowgroup" rowspan="2">${words}</th>${chanceCells('having fallen below', ever)}</tr>
-<tr>${chanceCells(`being below in ${end}`, atEnd)}</tr>
+<tr><th scope="rowgroup" rowspan="2">${words}</th>${chanceCells('having fallen below', ever, unknown)}</tr>
+<tr>${chanceCells(`being below in ${end}`, atEnd, unknown)}</tr>
 </tbody>`;
 }
 
-function chanceCells(of: string, { probability, interval, intervalFromUnknown }: Chance): Markup {
-  const unknown = intervalFromUnknown === null ? 'no uncertainty was given' : range(intervalFromUnknown, null);
+function chanceCells(of: string, { probability, interval, intervalFromUnknown }: Chance, none: string): Markup {
+  const unknown = intervalFromUnknown === null ? none : range(intervalFromUnknown, null);
   return mark`<th scope="row" class="words">${of}</th><td><strong>${percent(probability)}</strong></td>
 <td>${range(interval, probability)}</td><td class="words">${unknown}</td>`;
 }

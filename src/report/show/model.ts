@@ -1,6 +1,6 @@
 // The model with all names resolved, as plain data and as text that can be compared line by line.
 import { stringify } from 'yaml';
-import { catastropheJson, variationJson } from './variation.ts';
+import { catastropheJson, uncertaintyJson, variationJson } from './variation.ts';
 import type { AddPhase, BreedingPhase, Model, MovePhase, Phase, RateTable, TakePhase } from '../../model/model.ts';
 
 export function modelText(model: Model): string {
@@ -8,7 +8,7 @@ export function modelText(model: Model): string {
 }
 
 export function modelJson(model: Model): Readonly<Record<string, unknown>> {
-  const { phases, crowding, variation, catastrophes, outcomes, patches, start, ...head } = model;
+  const { phases, crowding, variation, catastrophes, uncertainty, draws, outcomes, patches, start, ...head } = model;
   const byPatch = (values: Float64Array) =>
     named(
       model.patches.map(({ name }) => name),
@@ -33,6 +33,8 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
     })),
     ...(variation === null ? {} : { variation: variationJson(model, variation) }),
     ...(catastrophes.length === 0 ? {} : { catastrophes: catastrophes.map((one) => catastropheJson(model, one)) }),
+    ...(uncertainty === null ? {} : { uncertainty: uncertaintyJson(uncertainty) }),
+    ...(draws === 0 ? {} : { draws }),
     start: startJson(model, start),
     outcomes: outcomes.map(({ weights, patches: where, ...one }) => ({
       ...one,

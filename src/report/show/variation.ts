@@ -1,5 +1,5 @@
 // Year-to-year variation and catastrophes as plain data.
-import type { Catastrophe, Correlation, PatchNumbers, Variation } from '../../model/chance.ts';
+import type { Catastrophe, Correlation, PatchNumbers, Uncertainty, Variation } from '../../model/chance.ts';
 import type { Model } from '../../model/model.ts';
 import { printExpression } from '../../spec/expression/print.ts';
 
@@ -56,4 +56,9 @@ export function catastropheJson(model: Model, { origins, multiplies, ...one }: C
       times,
     })),
   };
+}
+
+export function uncertaintyJson({ parameters, correlation, table }: Uncertainty): unknown {
+  const names = parameters.map(({ name }) => name);
+  return { parameters, correlation: correlationJson(names, correlation), table };
 }

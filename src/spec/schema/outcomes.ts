@@ -100,6 +100,16 @@ export const Run = Type.Object(
         default: 1000,
       }),
     ),
+    draws: Type.Optional(
+      Type.Integer({
+        minimum: 0,
+        maximum: 100_000,
+        description:
+          'How often what is not known is drawn, each time with so many replicates. 0 takes the numbers as they are.',
+        examples: [200],
+        default: 0,
+      }),
+    ),
     seed: Type.Optional(
       Type.Integer({
         minimum: 0,

@@ -1,4 +1,5 @@
 import { Type, type Static } from 'typebox';
+import { Uncertain } from './uncertainty.ts';
 import { fileName, Name, quantity, text, timed } from './values.ts';
 
 const Place = Type.Tuple([Type.Number(), Type.Number()], { title: 'two numbers, x and y' });
@@ -101,6 +102,7 @@ export const Parameter = Type.Union([
   Type.Object(
     {
       value: timed({ description: 'The number, or an expression over other parameters.', examples: [0.74] }),
+      uncertainty: Type.Optional(Uncertain),
       source: Type.Optional(Source),
     },
     { additionalProperties: false, title: 'a number with its source: { value: …, source: … }' },

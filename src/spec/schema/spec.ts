@@ -11,6 +11,7 @@ import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import type { ScheduleRef } from './schedule.ts';
 import { Study } from './study.ts';
+import { type Uncertain, Uncertainty } from './uncertainty.ts';
 import { fileName, Name, type FileRef } from './values.ts';
 import { type Varied, Variation } from './variation.ts';
 
@@ -80,6 +81,7 @@ export const CoreSchema = Type.Object(
     }),
     crowding: Type.Optional(Crowding),
     variation: Type.Optional(Variation),
+    uncertainty: Type.Optional(Uncertainty),
     start: Start,
     observed: Type.Optional(Observed),
     outcomes: Type.Optional(Outcomes),
@@ -105,6 +107,7 @@ export type DispersalSpec = Inline<Static<typeof Dispersal>>;
 export type CeilingSpec = Inline<Static<typeof Ceiling>>;
 export type CrowdingSpec = Inline<Static<typeof Crowding>>;
 export type OutcomeSpec = Inline<Static<typeof Outcome>>;
+export type UncertainSpec = Inline<Static<typeof Uncertain>>;
 export type VariedSpec = Inline<Static<typeof Varied>>;
 export type SurvivalSpec = Inline<Static<typeof NamedSurvival>>;
 export type BreedingSpec = Inline<Static<typeof NamedBreeding>>;
