@@ -52,6 +52,37 @@ const Sketched = Type.Object({
   relativeError: part.share('How far a quantile of larger counts can be off, as a share of itself.'),
 });
 
+const Amounts = Type.Object({
+  mean: part.maybe('Animals, over the finished runs.'),
+  sd: part.maybe('Between the finished runs.'),
+  quantiles: part.Quantiles,
+});
+
+const amounts = { handled: Amounts, died: Amounts, shortfall: Amounts };
+
+const Handled = Type.Object({
+  phase: part.text('Name of the phase.'),
+  does: Type.Union([Type.Literal('take'), Type.Literal('move'), Type.Literal('add')]),
+  byYear: Type.Array(Type.Object({ year: part.year, ...amounts })),
+  inAll: Type.Object(amounts, { description: 'Over all years.' }),
+});
+
+const Draws = Type.Object({
+  number: part.whole('Draws of what is not known that were asked for.'),
+  failed: part.whole('Draws that no model can have.'),
+  replicatesEach: part.whole('Runs of each draw.'),
+  rows: Type.Array(
+    Type.Object({
+      draw: part.whole('From 1.'),
+      values: Type.Record(Type.String(), Type.Number()),
+      failure: Type.Union([Type.String(), Type.Null()], {
+        description: 'Why no model can have these values; null where it was run.',
+      }),
+      everBelow: Type.Array(part.maybeShare('By outcome; null where it was not run.')),
+    }),
+  ),
+});
+
 export const RunSchema = Type.Object({
   format: Type.Literal('skein-run/1'),
   ...part.provenance,
@@ -74,6 +105,7 @@ export const RunSchema = Type.Object({
     ),
   }),
   outcomes: Type.Array(Outcome),
+  handled: Type.Array(Handled, { description: 'What takes, moves and releases came to, in the order of the year.' }),
   meanLowestCount: Type.Object({
     mean: part.maybe('Over the finished runs.'),
     sd: part.maybe('Between the finished runs.'),
@@ -81,6 +113,10 @@ export const RunSchema = Type.Object({
   }),
   patchesInUse: Type.Array(Type.Object({ year: part.year, mean: Type.Number(), quantiles: part.Quantiles })),
   sketched: Type.Array(Sketched, { description: 'Empty where every quantile is a count that some run had.' }),
+  notDrawn: Type.Optional(
+    Type.Literal(true, { description: 'The model says how sure its numbers are, but no draws were asked for.' }),
+  ),
+  draws: Type.Optional(Draws),
   stopped: Type.Object({
     runs: part.whole('Runs that had to be stopped; they are in no other number.'),
     reasons: Type.Array(Type.String()),
