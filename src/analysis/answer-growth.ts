@@ -123,7 +123,8 @@ export function stochasticAnswer(
   vectors: Vectors,
 ): Answer<NonNullable<Analysis['stochasticGrowth']>> {
   const { variation, parameterTangents = [] } = input;
-  if (!variation) return because('The model says nothing about how years differ.');
+  if (!variation)
+    return because('It needs a covariance of the yearly rates, which was not given; `skein run` follows what varies.');
   const along = ({ matrixTangent }: ParameterTangent): number => sensitivityAlong(matrixTangent, vectors);
   const sensitivities = sensitivitiesOf(variation, parameterTangents, along);
   if (!sensitivities) return because('Some of what varies has no sensitivity.');
@@ -134,7 +135,7 @@ export function stochasticAnswer(
 
 export function standardErrorAnswer(input: AnalysisInput, vectors: Vectors): Answer<number> {
   const { uncertainty, parameterTangents = [] } = input;
-  if (!uncertainty) return because('The model gives no uncertainty of its numbers.');
+  if (!uncertainty) return because('It needs a covariance of the named numbers, which was not given.');
   // A number that is not known is as it is from the first: capacities are solved for with it.
   const along = ({ matrixTangent, solvedAnew }: ParameterTangent): number =>
     sensitivityAlong(solvedAnew ?? matrixTangent, vectors);

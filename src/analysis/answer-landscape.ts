@@ -50,7 +50,7 @@ export function linksAnswer({ block }: AnalysisInput, vectors: Vectors): NonNull
 }
 
 export function capacityAnswer(input: AnalysisInput): Answer<NonNullable<Analysis['metapopulationCapacity']>> {
-  if (!input.network) return because('Needs areas, distances and a mean distance of movement.');
+  if (!input.network) return because('Was not asked for: it needs areas, distances and a mean distance of movement.');
   const { capacity, patchValues } = metapopulationCapacity(input.network);
   const named = patchValues && Array.from(patchValues, (value, p) => ({ patch: input.block.patches[p] ?? '?', value }));
   return { value: { capacity, patchValues: named } };
