@@ -1,6 +1,8 @@
 // A compiled model as one self-contained WebAssembly module that says what it is.
+import { isHandling } from '../compile/image/handling.ts';
 import { lanes } from '../kernel/batch.ts';
 import { kernelBytes, loadMachine } from '../machine/machine.ts';
+import type { Model } from '../model/model.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import { writeModule } from './module.ts';
 
@@ -31,6 +33,11 @@ function describeModule({ model, provenance, image }: CompiledModel, address: nu
     patches,
     classes,
     outcomes,
-    columns: ['all', ...patches, ...outcomes.map(({ name }) => name)],
+    columns: ['all', ...patches, ...outcomes.map(({ name }) => name), ...handledNames(model)],
   };
+}
+
+/** Animals taken, moved or released by each such phase, those of them that died, and what was wanted and not there. */
+function handledNames({ phases }: Model): readonly string[] {
+  return phases.filter(isHandling).flatMap(({ name }) => [name, `${name}: died`, `${name}: shortfall`]);
 }

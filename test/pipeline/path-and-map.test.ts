@@ -1,15 +1,11 @@
 // The path without chance as the kernel follows it, against the compiler's own year applied over and over.
-import { readFileSync, readdirSync } from 'node:fs';
 import { expect, test } from 'vitest';
 import { runYear } from '../../src/compile/year-map.ts';
 import { runPath } from '../../src/kernel/path.ts';
-import { compileText } from './compile-text.ts';
+import { compileModel, modelNames } from '../golden/models.ts';
 
-const folder = new URL('../../models/', import.meta.url);
-const models = readdirSync(folder).filter((file) => file.endsWith('.yaml'));
-
-test.each(models)('%s: both give the same animals at every count', (file) => {
-  const compiled = compileText(readFileSync(new URL(file, folder), 'utf8'));
+test.each(modelNames)('%s: both give the same animals at every count', (name) => {
+  const compiled = compileModel(name);
   const { steps } = compiled.model;
   const { animals } = runPath(compiled.image, { steps });
   const cells = compiled.startAnimals.length;

@@ -41,7 +41,14 @@ test('a spec that uses every key comes back', () => {
       adult_survival:
         value: 0.74
         source: { text: "radio-tracking 2019-2024, 61 hares", basis: measured here }
-      litter: { value: 4 + 0.6 }
+      litter:
+        value: 4.6
+        uncertainty:
+          standard-error: 0.4
+          interval: [4, 5]
+          uniform: [4, 5]
+          triangular: [4, 5]
+          as: positive number
       natal_leaving: 22 %
     survival: { newborn: 0.38, yearling: 0.62, adult: adult_survival }
     births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newborn }
@@ -154,6 +161,12 @@ test('a spec that uses every key comes back', () => {
         survival of adult: { litter: 0.4 }
       between-patches: { range: 20 km }
       autocorrelation: 0.2
+    uncertainty:
+      correlations:
+        adult_survival: { litter: 0.3 }
+      draws:
+        - { litter: 4 }
+        - { litter: 5 }
     start:
       counted: { North fen: 120 }
       of: [yearling, adult]
@@ -166,7 +179,7 @@ test('a spec that uses every key comes back', () => {
     outcomes:
       lost hares: { of: [adult], below: 40 }
       north empty: { of: all, in: [North fen], below: 0.5 }
-    run: { replicates: 2000, seed: 2026 }
+    run: { replicates: 2000, seed: 2026, draws: 200 }
     "
   `);
 });
