@@ -1,5 +1,4 @@
 // The published schema is what the reader goes by: fresh, complete, and of the same opinion as the reader.
-import { Ajv2020 } from 'ajv/dist/2020.js';
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { writeSchema } from '../../src/spec/publish.ts';
@@ -8,33 +7,11 @@ import { writeReference } from '../../src/spec/reference.ts';
 import { CoreSchema, namedSchemas } from '../../src/spec/schema/spec.ts';
 import { branchesOf, knownKeys, shapeOfOthers, type Shape } from '../../src/spec/shape/shape.ts';
 import type { Spec } from '../../src/spec/schema/spec.ts';
+import { publishedValidator } from './published-validator.ts';
 import { anySpec } from './spec-values.ts';
 import { wholeText } from './whole.ts';
 
-const published: unknown = JSON.parse(writeSchema());
-
-function validator() {
-  const ajv = new Ajv2020({ strict: true, allErrors: true, allowUnionTypes: true, strictRequired: false });
-  ajv.addVocabulary(['x-unit', 'x-key']);
-  for (const format of [
-    'name',
-    'identifier',
-    'expression',
-    'length',
-    'area',
-    'share',
-    'per-length',
-    'time',
-    'file',
-    'chance',
-    'year',
-  ]) {
-    ajv.addFormat(format, true);
-  }
-  return ajv.compile(published as object);
-}
-
-const validate = validator();
+const validate = publishedValidator();
 
 /** The spec as it stands in a file: sections of the author's own at the top. */
 function flat({ named, ...core }: Spec): Record<string, unknown> {
