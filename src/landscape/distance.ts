@@ -32,7 +32,7 @@ export interface Neighbourhood {
 
 /** For each patch the others within reach, in the order of the patches. */
 export function neighboursWithin({ patches, reachKm, between }: Neighbourhood): readonly (readonly Neighbour[])[] {
-  const measure = between === 'nearest edges' ? betweenEdges(patches) : distanceKm;
+  const measure = between === 'nearest edges' ? betweenEdges(patches, reachKm) : distanceKm;
   const places = patches.map((patch) => northward(patch, between));
   const southFirst = patches.map((_, p) => p).sort((a, b) => (places[a]?.from ?? 0) - (places[b]?.from ?? 0) || a - b);
   const found: Neighbour[][] = patches.map(() => []);
@@ -70,20 +70,33 @@ function northward(patch: Patch, between: Between | undefined): { readonly from:
   return { from: from * scale, to: to * scale };
 }
 
-/** A patch without an outline is its point. Edges are made once, when first needed. */
-function betweenEdges(patches: readonly Patch[]): (a: Patch, b: Patch) => number {
-  const known = new Map<Patch, Edges>();
-  const edges = (patch: Patch): Edges => {
-    const own = known.get(patch) ?? edgesOf(outlineOf(patch));
+/** A patch without an outline is its point. Pairs whose middles are too far apart to have edges within reach are not measured. */
+function betweenEdges(patches: readonly Patch[], reachKm: number | null): (a: Patch, b: Patch) => number {
+  const known = new Map<Patch, { readonly edges: Edges; readonly radiusKm: number }>();
+  const shape = (patch: Patch) => {
+    const own = known.get(patch) ?? { edges: edgesOf(outlineOf(patch)), radiusKm: radiusOf(patch) };
     known.set(patch, own);
     return own;
   };
   const inDegrees = patches.some((patch) => patch.degrees !== undefined);
   return (a, b) => {
+    const [one, other] = [shape(a), shape(b)];
+    if (reachKm !== null && distanceKm(a, b) > reachKm + one.radiusKm + other.radiusKm) return Infinity;
     const scale = inDegrees ? kmPerDegree(((a.degrees?.[1] ?? 0) + (b.degrees?.[1] ?? 0)) / 2) : undefined;
-    const [from, to] = nearestPoints(edges(a), edges(b), scale);
+    const [from, to] = nearestPoints(one.edges, other.edges, scale);
     return inDegrees ? geodesicKm(from, to) : planeKm(from, to);
   };
+}
+
+/** No point of the outline is farther from the middle of the patch. */
+function radiusOf(patch: Patch): number {
+  const middle = patch.degrees ?? patch.at;
+  const measure = patch.degrees === undefined ? planeKm : geodesicKm;
+  const corners = outlineOf(patch).flat(2);
+  // A side that is straight in degrees bulges beyond its ends by far less than a hundredth.
+  return middle === null
+    ? Infinity
+    : 1.01 * corners.reduce((most, corner) => Math.max(most, measure(middle, corner)), 0);
 }
 
 function outlineOf(patch: Patch): readonly (readonly (readonly Point[])[])[] {

@@ -44,23 +44,50 @@ export function edgesOf(outline: Outline): Edges {
 export function nearestPoints(a: Edges, b: Edges, scale: Point = [1, 1]): readonly [Point, Point] {
   const inside = insideOther(a, b) ?? insideOther(b, a);
   if (inside !== null) return [inside, inside];
-  const pairs = a.bundles.flatMap((one) => {
-    return b.bundles.map((other) => ({ one, other, least: gapSquared(one.box, other.box, scale) }));
-  });
-  pairs.sort((x, y) => x.least - y.least);
-  let best: { readonly points: readonly [Point, Point]; readonly squared: number } | null = null;
-  for (const { one, other, least } of pairs) {
-    if (best !== null && least >= best.squared) break;
-    for (const side of one.sides) {
-      for (const opposite of other.sides) {
-        const points = nearestOfSides(side, opposite, scale);
-        const squared = distanceSquared(points[0], points[1], scale);
-        if (best === null || squared < best.squared) best = { points, squared };
-      }
+  // The pair of bundles whose boxes are nearest gives a bound at once, which few of the others get under.
+  let nearest: Pair | null = null;
+  for (const one of a.bundles) {
+    for (const other of b.bundles) {
+      const least = gapSquared(one.box, other.box, scale);
+      if (nearest === null || least < nearest.least) nearest = { one, other, least };
     }
   }
-  if (best === null) throw new RangeError('An outline has at least one point.');
+  if (nearest === null) throw new RangeError('An outline has at least one point.');
+  let best = nearestOfBundles(nearest, scale);
+  for (const one of a.bundles) {
+    for (const other of b.bundles) {
+      const least = gapSquared(one.box, other.box, scale);
+      if (least >= best.squared || (one === nearest.one && other === nearest.other)) continue;
+      const found = nearestOfBundles({ one, other, least }, scale);
+      if (found.squared < best.squared) best = found;
+    }
+  }
   return best.points;
+}
+
+interface Pair {
+  readonly one: Bundle;
+  readonly other: Bundle;
+  /** No two points of theirs are nearer; squared. */
+  readonly least: number;
+}
+
+interface Found {
+  readonly points: readonly [Point, Point];
+  readonly squared: number;
+}
+
+function nearestOfBundles({ one, other }: Pair, scale: Point): Found {
+  let best: Found | null = null;
+  for (const side of one.sides) {
+    for (const opposite of other.sides) {
+      const points = nearestOfSides(side, opposite, scale);
+      const squared = distanceSquared(points[0], points[1], scale);
+      if (best === null || squared < best.squared) best = { points, squared };
+    }
+  }
+  if (best === null) throw new RangeError('A bundle has at least one side.');
+  return best;
 }
 
 /** A corner of the first that lies inside the second. */
