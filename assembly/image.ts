@@ -94,7 +94,7 @@ function isKind(kind: i32): bool {
 }
 
 function isOpcode(opcode: i32): bool {
-  if (opcode >= layout.opVariation && opcode <= layout.opCatastrophe) return true;
+  if (opcode >= layout.opVariation && opcode <= layout.opDrivers) return true;
   if (opcode >= layout.opTake && opcode <= layout.opAdd) return true;
   return (opcode >= layout.opBreeding && opcode <= layout.opCrowding) || opcode === layout.opCount;
 }

@@ -189,7 +189,7 @@ export const opResponse = 33;
 export const responseExpression = 3;
 export const responseConstants = 4;
 export const responseAttributes = 5; // constants, attributes × P
-export const responseYears = 6; // constants, the calendar year of each step
+export const responseYears = 6; // constants: the calendar year of each step, then each driver that follows the calendar, by step
 export const responseBase = 7; // patch numbers, epochs × P: the value at the means; 0 where the rate is no such expression
 export const responseSlot = 8; // a slot, not a row
 export const responseBounds = 9; // a number: one of the bounds below
@@ -205,6 +205,11 @@ export const strikeWeather = 9; // a number: the first of its numbers in the wea
 export const strikeOver = 10; // a number: one of those below
 export const strikeColumn = 11; // column keys: one, for the landscape
 export const strikeCapacitySlots = 12; // a number: so many of the last slots hold as long as the capacity is lowered
+
+export const opDrivers = 35;
+export const driversValues = 3; // constants, drivers × given years
+export const driversSlots = 4; // patch list: one slot a driver
+export const driversColumn = 5; // column keys: one, for the landscape
 
 export const strikeNumbers = 4;
 export const strikeNumberChance = 0;
@@ -254,6 +259,8 @@ export const doOr = 20;
 export const doNot = 21;
 /** Of condition, then and otherwise, in this order on the stack. */
 export const doChoose = 22;
+/** Operand: which of the series by step; the calendar year is 0. */
+export const doDated = 23;
 /** Numbers that an expression may have on its stack. */
 export const deepestStack = 64;
 
@@ -311,6 +318,7 @@ export const useHandling = 17;
 export const useWeather = 32;
 export const useStrike = 33;
 export const useOrigin = 34;
+export const useDrivers = 35;
 
 // Fault codes. 1-31: the image cannot be opened. 32-63: a replicate was stopped.
 export const faultNone = 0;

@@ -13,6 +13,7 @@ import { handle } from './phases/handling';
 import { release } from './phases/release';
 import { survive } from './phases/survival';
 import { strike } from './weather/catastrophe';
+import { drive } from './weather/drivers';
 import { respond } from './weather/response';
 import { vary } from './weather/variation';
 
@@ -72,6 +73,9 @@ function runRecord(record: usize): void {
     case layout.opAdd:
       release(record);
       checkTotals(operand(record, layout.recordIndex));
+      break;
+    case layout.opDrivers:
+      drive(record);
       break;
     case layout.opVariation:
       vary(record);

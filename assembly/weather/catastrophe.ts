@@ -3,9 +3,9 @@
 import { f64At, i32At, putF64, u32At } from '../arrays';
 import { laneNumbers, replicates, slotValues, step, weather, words, work } from '../batch';
 import { philoxLanes } from '../draws/philox';
-import { finalise, firstWord, streamOf, unit } from '../draws/stream';
 import { entries, operand, patches, patchKeys, section } from '../image';
 import * as layout from '../layout';
+import { uniform } from './uniform';
 
 let chance: f64 = 0;
 let lasts: f64 = 0;
@@ -58,12 +58,6 @@ function grow(ages: usize, lane: i32): bool {
   const begins = (age === 0 || age > wait) && uniform(lane, layout.useStrike) < chance;
   putF64(ages, lane, begins ? 1 : age);
   return begins;
-}
-
-function uniform(lane: i32, use: i32): f64 {
-  const stream = streamOf(0, use);
-  const at = words + ((<usize>lane) << 3);
-  return unit(firstWord(finalise(load<u64>(at) + stream), finalise(load<u64>(at, 128) + stream)));
 }
 
 function mark(record: usize, origin: i32, lane: i32, age: f64): void {

@@ -2,13 +2,14 @@
 // its slot says how much of its value at the means it has.
 import { f64At, i32At } from '../arrays';
 import { laneNumbers, slotValues, step, work } from '../batch';
-import { entries, operand, patches, section, sectionAt } from '../image';
+import { entries, operand, patches, section, sectionAt, steps } from '../image';
 import * as layout from '../layout';
 import { exp, log, pow } from '../mathematics';
 
 let constants: usize = 0;
 let attributes: usize = 0;
-let year: f64 = 0;
+/** Series by step. */
+let dated: usize = 0;
 let patch: i32 = 0;
 
 export function respond(record: usize): void {
@@ -18,7 +19,7 @@ export function respond(record: usize): void {
   const share = operand(record, layout.responseBounds) === layout.boundsShare;
   constants = section(operand(record, layout.responseConstants));
   attributes = section(operand(record, layout.responseAttributes));
-  year = f64At(section(operand(record, layout.responseYears)), step - 1);
+  dated = section(operand(record, layout.responseYears));
   const list = operand(record, layout.responsePatches);
   for (let i = 0; i < entries(list); i++) {
     patch = i32At(section(list), i);
@@ -40,7 +41,7 @@ function evaluate(expression: usize, words: i32): void {
   for (let word = 0; word < words; word += 2) {
     const what = i32At(expression, word);
     const which = i32At(expression, word + 1);
-    if (what <= layout.doYear) {
+    if (what <= layout.doYear || what === layout.doDated) {
       top += laneNumbers;
       push(top, what, which);
     } else if (what === layout.doChoose) {
@@ -62,9 +63,10 @@ function push(target: usize, what: i32, which: i32): void {
     memory.copy(target, slotValues + <usize>(which * patches + patch) * laneNumbers, laneNumbers);
     return;
   }
-  let value = year;
+  let value: f64 = 0;
   if (what === layout.doConstant) value = f64At(constants, which);
   else if (what === layout.doAttribute) value = f64At(attributes, which * patches + patch);
+  else value = f64At(dated, (what === layout.doYear ? 0 : which * steps) + step - 1);
   for (let at = target; at < target + laneNumbers; at += 8) store<f64>(at, value);
 }
 

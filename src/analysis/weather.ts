@@ -32,6 +32,14 @@ export interface PairFacts {
   readonly realised: number;
 }
 
+export interface DriversFacts {
+  readonly names: readonly string[];
+  /** Given years, of which each step has one. */
+  readonly years: number;
+  /** Rates that are worked out anew with them. */
+  readonly moves: readonly string[];
+}
+
 export interface WeatherFacts {
   readonly varied: readonly VariedFacts[];
   readonly betweenRates: readonly PairFacts[];
@@ -40,6 +48,8 @@ export interface WeatherFacts {
   /** The same of each number itself, in its first distribution. */
   readonly betweenPatchesRealised: readonly { readonly name: string; readonly range: Range }[];
   readonly autocorrelation: number;
+  /** Whose years are drawn; null for none. */
+  readonly drivers: DriversFacts | null;
 }
 
 /** Pairs of rates listed. */
@@ -69,7 +79,15 @@ export function weatherFacts(variation: Variation, landscape: Landscape): Weathe
             },
           })),
     autocorrelation,
+    drivers: driversFacts(variation),
   };
+}
+
+function driversFacts({ resampled, responses }: Variation): DriversFacts | null {
+  if (resampled === null) return null;
+  const { names, years } = resampled;
+  const moved = responses.filter(({ expression }) => namesIn(expression).some((name) => names.includes(name)));
+  return { names, years: years.length, moves: [...new Set(moved.map(({ name }) => name))] };
 }
 
 function entryOf(of: Variation['betweenRates']['of'], a: number, b: number): number {

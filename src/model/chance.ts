@@ -32,14 +32,14 @@ export interface Varied {
   readonly sd: PatchNumbers;
 }
 
-/** A rate that is an expression over parameters that vary: it is worked out anew every year. */
+/** A rate that is an expression over parameters that vary, or over resampled drivers: it is worked out anew every year. */
 export interface Response extends ScaledRate {
   readonly name: string;
-  /** Over varied parameters, attributes of the patch and `year`. */
+  /** Over varied parameters, drivers, attributes of the patch and `year`. */
   readonly expression: Ast;
   /** Patches in which the rate is this expression. */
   readonly patches: readonly number[];
-  /** Its value at the means, in these patches; 0 elsewhere. */
+  /** Its value at the means of the parameters, averaged over resampled years, in these patches; 0 elsewhere. */
   readonly base: PatchNumbers;
   readonly bounds: 'share' | 'from zero';
 }
@@ -52,7 +52,20 @@ export interface Correlation {
   readonly repaired: number;
 }
 
+/** Drivers of which every year of the model has those of a given year, each given year with the same chance. */
+export interface Resampled {
+  /** In their order. */
+  readonly names: readonly string[];
+  /** Calendar years of the values. */
+  readonly years: readonly number[];
+  /** Of driver d in given year y at d · years + y. */
+  readonly values: Float64Array;
+}
+
 export interface Variation {
+  readonly resampled: Resampled | null;
+  /** Of each driver that responses read and that follows the calendar, its values, one a step. */
+  readonly dated: ReadonlyMap<string, Float64Array>;
   /** In the order of their names. */
   readonly varied: readonly Varied[];
   readonly responses: readonly Response[];

@@ -5,7 +5,7 @@ import type { SpecPath } from '../spec/document.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Patch, Sex } from './model.ts';
-import type { Numbers } from './numbers.ts';
+import type { Drivers, Numbers } from './numbers.ts';
 
 export interface Names {
   readonly patches: ReadonlyMap<string, number>;
@@ -20,6 +20,7 @@ export interface Context {
   readonly sexes: readonly Sex[] | null;
   readonly names: Names;
   readonly numbers: Numbers;
+  readonly drivers: Drivers;
   /** By patch, for expressions. */
   readonly attributes: readonly ReadonlyMap<string, number>[];
   readonly time: { readonly firstYear: number; readonly steps: number };

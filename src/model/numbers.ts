@@ -9,6 +9,8 @@ import { namesIn } from '../spec/expression/names.ts';
 import { replaceNames } from '../spec/expression/replace.ts';
 import type { Finding } from '../spec/finding.ts';
 import { readMeasure, type Dimension } from '../spec/quantity.ts';
+import type { Resampled } from './chance.ts';
+import { ResampledYears } from './resampled.ts';
 
 /** Where an expression is evaluated. `attributes` are those of the patch at hand. */
 export interface Where {
@@ -32,13 +34,17 @@ export interface Use {
   readonly dimension: Dimension;
 }
 
-/** Of each driver, the value in a calendar year of the model. */
-export type DriverValues = ReadonlyMap<string, (year: number) => number>;
+/** What drives rates from outside. */
+export interface Drivers {
+  /** Of each driver that follows the calendar, the value in a calendar year of the model. */
+  readonly dated: ReadonlyMap<string, (year: number) => number>;
+  readonly resampled: Resampled | null;
+}
 
 /** What expressions read besides named numbers, and where mistakes are told. */
 export interface Surroundings {
   readonly attributeNames: ReadonlySet<string>;
-  readonly drivers: DriverValues;
+  readonly drivers: Drivers;
   readonly findings: Finding[];
 }
 
@@ -50,7 +56,8 @@ export class Numbers {
   readonly #findings: Finding[];
   readonly #attributeNames: ReadonlySet<string>;
   readonly #uses = new Map<string, Use>();
-  readonly #drivers: DriverValues;
+  readonly #drivers: Drivers['dated'];
+  readonly #resampled: ResampledYears;
   /** Numbers that are read once a year; all others are read once and for all. */
   readonly #yearly = new Set<string>();
   readonly #slopes = new Map<Ast, Map<string, Ast>>();
@@ -60,7 +67,8 @@ export class Numbers {
   constructor(parameters: readonly NamedExpression[], { attributeNames, drivers, findings }: Surroundings) {
     this.#findings = findings;
     this.#attributeNames = attributeNames;
-    this.#drivers = drivers;
+    this.#drivers = drivers.dated;
+    this.#resampled = new ResampledYears(drivers.resampled);
     for (const { name, expression, path } of parameters) {
       const ast = this.#parse(expression, path);
       if (ast !== null) this.#parameters.set(name, { ast, path });
@@ -68,16 +76,29 @@ export class Numbers {
     this.#refuseCycles();
   }
 
-  /** The value, or NaN after telling why there is none. */
+  /** The value, over resampled years their mean, or NaN after telling why there is none. */
   value(expression: number | string, path: SpecPath, where: Where): number {
     if (typeof expression === 'number') return expression;
     this.#uses.set(path.join('\0'), { expression, path, dimension: where.dimension ?? 'share' });
     const ast = this.#parse(expression, path, where.dimension);
     if (ast === null || this.#isDatedWrongly(ast, path)) return NaN;
-    const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
-    if (result.ok) return result.value;
-    this.#tell(result.fault, path, where);
-    return NaN;
+    return this.#overYears(ast, () => {
+      const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
+      if (result.ok) return result.value;
+      this.#tell(result.fault, path, where);
+      return NaN;
+    });
+  }
+
+  /** The mean over all resampled years where the expression rests on them, else what it is. */
+  #overYears(ast: Ast, valueInYear: () => number): number {
+    if (!this.#resampled.names.some((name) => this.#namesBehind(ast).has(name))) return valueInYear();
+    const mean = this.#resampled.mean(() => {
+      this.#memo = new Map();
+      return valueInYear();
+    });
+    this.#memo = new Map();
+    return mean;
   }
 
   /** True where the value can differ between years. */
@@ -139,7 +160,7 @@ export class Numbers {
     if (typeof expression === 'number') return 0;
     const ast = this.#parse(expression, path, where.dimension);
     if (ast === null || !this.#namesBehind(ast).has(parameter)) return 0;
-    return this.#slopeOf(ast, where, parameter);
+    return this.#overYears(ast, () => this.#slopeOf(ast, where, parameter));
   }
 
   #slopeOf(ast: Ast, where: Where, parameter: string): number {
@@ -186,6 +207,8 @@ export class Numbers {
     if (name === 'year') return where.year;
     const driver = this.#drivers.get(name);
     if (driver !== undefined) return driver(where.year);
+    const resampled = this.#resampled.value(name);
+    if (resampled !== undefined) return resampled;
     const attribute = where.attributes?.get(name);
     if (attribute !== undefined) return attribute;
     return this.#parameter(name, where.year);
@@ -258,7 +281,13 @@ export class Numbers {
         details: { fix: `Give every patch its \`${name}\`.` },
       };
     }
-    const known = [...this.#parameters.keys(), ...this.#attributeNames, ...this.#drivers.keys(), 'year'];
+    const known = [
+      ...this.#parameters.keys(),
+      ...this.#attributeNames,
+      ...this.#drivers.keys(),
+      ...this.#resampled.names,
+      'year',
+    ];
     return {
       message: `There is no \`${name}\` here`,
       details: {

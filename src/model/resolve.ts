@@ -75,6 +75,7 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
       classes: new Map(classes.classes.map((name, c) => [name, c])),
     },
     numbers,
+    drivers,
     attributes,
     time,
     toldBounds: new Set(),

@@ -10,9 +10,26 @@ export function weatherWords(facts: WeatherFacts): readonly string[] {
     }),
     ...betweenRates(facts),
     ...betweenPatches(facts),
-    facts.autocorrelation === 0
-      ? 'Each year is independent of the year before.'
-      : `From year to year the underlying normal numbers have a correlation of ${digits(facts.autocorrelation)}, and their whole spread from the first year on.`,
+    ...carriedOver(facts),
+    ...drivers(facts),
+  ];
+}
+
+function carriedOver({ varied, autocorrelation }: WeatherFacts): readonly string[] {
+  if (varied.length === 0) return [];
+  if (autocorrelation === 0) return ['Each year is independent of the year before.'];
+  return [
+    `From year to year the underlying normal numbers have a correlation of ${digits(autocorrelation)}, and their whole spread from the first year on.`,
+  ];
+}
+
+function drivers({ drivers: drawn }: WeatherFacts): readonly string[] {
+  if (drawn === null) return [];
+  const { names, years, moves } = drawn;
+  const which = names.length === 1 ? `Each year has the ${names[0] ?? ''}` : `Each year has ${names.join(', ')}`;
+  const moved = moves.length === 0 ? 'No rate reads it.' : `With it vary ${moves.join(', ')}.`;
+  return [
+    `${which} of one of ${years} given years, all with the same chance, the same in every patch, whatever the year before had. ${moved}`,
   ];
 }
 
@@ -27,7 +44,7 @@ function betweenRates({ betweenRates: pairs }: WeatherFacts): readonly string[] 
 }
 
 function betweenPatches({ betweenPatches: given, betweenPatchesRealised: realised }: WeatherFacts): readonly string[] {
-  if (given === null) return [];
+  if (given === null || realised.length === 0) return [];
   const words = realised.map(({ name, range }) => `${name} ${spread(range)}`);
   return [
     `Correlation between patches: ${spread(given)} of the underlying normal numbers; of the numbers themselves: ${words.join('; ')}.`,

@@ -9,6 +9,7 @@ import { crowdingRecord } from './crowding.ts';
 import { handledColumns } from './handling.ts';
 import { keysOfNames } from './keys.ts';
 import { phaseRecord } from './phases.ts';
+import { responseRecords } from './responses.ts';
 import { planSlots } from '../weather/slots.ts';
 import { variationRecords } from './variation.ts';
 import { plain, type Section, SectionList } from './section.ts';
@@ -52,6 +53,7 @@ export function buildImage(input: ImageInput): ArrayBuffer {
   const start = Int32Array.from(input.startAnimals);
   header.set(layout.headerStart, list.add(plain(layout.kindStartAnimals, start, 'start')));
   const weather = variationRecords({ list, model, landscape: input.landscape, slots, weather: 0 });
+  const responses = responseRecords({ list, model, landscape: input.landscape, slots, weather: 0 });
   const strikes = catastropheRecords({
     list,
     model,
@@ -60,10 +62,10 @@ export function buildImage(input: ImageInput): ArrayBuffer {
     weather: weather.weather,
   });
   header.set(layout.headerWeather, weather.weather + strikes.weather);
-  header.set(layout.headerWork, Math.max(weather.work, strikes.work));
+  header.set(layout.headerWork, Math.max(weather.work, responses.work, strikes.work));
   header.set(
     layout.headerYearProgram,
-    list.add(programSection(layout.kindYearProgram, [...weather.records, ...strikes.records])),
+    list.add(programSection(layout.kindYearProgram, [...weather.records, ...responses.records, ...strikes.records])),
   );
   header.set(layout.headerPhaseProgram, list.add(programSection(layout.kindPhaseProgram, phaseProgram(list, input))));
   list.add(plain(layout.kindNames, new TextEncoder().encode(JSON.stringify(names)), 'names'));

@@ -6,6 +6,8 @@ import type { ArithmeticSign, Ast, Comparison, OneArgument, Truth } from '../../
 export interface ExpressionNames {
   readonly slots: ReadonlyMap<string, number>;
   readonly attributes: ReadonlyMap<string, number>;
+  /** Series by step beside the calendar year, which is 0. */
+  readonly dated: ReadonlyMap<string, number>;
 }
 
 export interface Instructions {
@@ -93,8 +95,10 @@ class Writer {
   #name(name: string): void {
     const slot = this.#names.slots.get(name);
     const attribute = this.#names.attributes.get(name);
+    const dated = this.#names.dated.get(name);
     if (slot !== undefined) this.#put(layout.doSlot, slot, 1);
     else if (attribute !== undefined) this.#put(layout.doAttribute, attribute, 1);
+    else if (dated !== undefined) this.#put(layout.doDated, dated, 1);
     else this.#put(layout.doYear, 0, 1);
   }
 

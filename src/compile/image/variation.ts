@@ -1,13 +1,12 @@
 // Year-to-year variation in the image: the records of the year program and the sections that they name.
 import * as layout from '../../../assembly/layout.ts';
 import type { Landscape } from '../../landscape/landscape.ts';
-import type { Response, Varied, Variation } from '../../model/chance.ts';
+import type { Varied } from '../../model/chance.ts';
 import type { Model } from '../../model/model.ts';
 import { distributionOf, type Distribution } from '../../model/variation/distribution.ts';
 import { betaTable, gammaTable, quantileReach, type QuantileTable } from '../../numeric/chance/quantile-table.ts';
 import { factorOf, type Factor } from '../weather/factor.ts';
 import type { SlotPlan } from '../weather/slots.ts';
-import { instructionsOf } from './expression.ts';
 import { keyOfName, keysOfNames } from './keys.ts';
 import { record } from './record.ts';
 import { plain, type SectionList } from './section.ts';
@@ -29,13 +28,13 @@ export interface WeatherRecords {
 }
 
 /** Key of what all patches, or all quantities, share. */
-const sharedPatch = keyOfName('patch of the landscape') | 0;
+export const sharedPatch = keyOfName('patch of the landscape') | 0;
 const sharedQuantity = keyOfName('quantity of the year') | 0;
 
 export function variationRecords(request: WeatherRequest): WeatherRecords {
   const { list, model, landscape, slots, weather } = request;
   const { variation } = model;
-  if (variation === null) return { records: [], weather: 0, work: 0 };
+  if (variation === null || variation.varied.length === 0) return { records: [], weather: 0, work: 0 };
   const patchNames = model.patches.map(({ name }) => name);
   const quantityNames = variation.varied.map(({ name }) => name);
   const overPatches = factorOf(landscape.weather ?? { of: 0, repaired: 0 }, patchNames);
@@ -62,12 +61,11 @@ export function variationRecords(request: WeatherRequest): WeatherRecords {
     list.add(plain(layout.kindQuantileTables, tables.numbers(), 'variation')),
     weather,
   ]);
-  const responses = responseRecords(request, variation);
   const columns = overPatches.columns.length;
   return {
-    records: [vary, ...responses],
+    records: [vary],
     weather: columns * overRates.columns.length,
-    work: Math.max(columns * quantityNames.length, responses.length > 0 ? layout.deepestStack : 0),
+    work: columns * quantityNames.length,
   };
 }
 
@@ -155,51 +153,14 @@ interface EpochSection {
   readonly reads: string;
 }
 
-function addEpochs(list: SectionList, rows: readonly Float64Array[], { kind, epochOf, reads }: EpochSection): number {
+export function addEpochs(
+  list: SectionList,
+  rows: readonly Float64Array[],
+  { kind, epochOf, reads }: EpochSection,
+): number {
   const columns = rows[0]?.length ?? 0;
   const data = new Float64Array(columns * rows.length);
   rows.forEach((row, i) => data.set(row, i * columns));
   const epochs = rows.length > 1 ? list.add(plain(layout.kindEpochOf, epochOf, reads)) : layout.none;
   return list.add({ kind, data, columns, epochOf: epochs, reads });
-}
-
-function responseRecords(request: WeatherRequest, variation: Variation): readonly Int32Array[] {
-  const { list, model, slots } = request;
-  if (variation.responses.length === 0) return [];
-  const slotOf = new Map(variation.varied.map(({ name }, k) => [name, slots.varied[k] ?? layout.none]));
-  const attributes = new Map([...variation.attributes.keys()].map((name, i) => [name, i]));
-  const values = Float64Array.from([...variation.attributes.values()].flatMap((own) => [...own]));
-  const attributeRow = list.add(plain(layout.kindConstants, values, 'attributes of the patches'));
-  const years = Float64Array.from({ length: model.steps }, (_, t) => model.firstYear + t);
-  const yearRow = list.add(plain(layout.kindConstants, years, 'years'));
-  return variation.responses.map((response, k) => {
-    const slot = slots.responses[k] ?? layout.none;
-    const first = slots.responses.indexOf(slot) === k;
-    const made = instructionsOf(response.expression, { slots: slotOf, attributes });
-    if (made === null) throw new Error(`${response.name} is nested too deeply for the kernel.`);
-    return record(layout.opResponse, 0, layout.none, [
-      list.add(plain(layout.kindExpression, made.words, `expression of ${response.name}`)),
-      list.add(plain(layout.kindConstants, made.constants, `expression of ${response.name}`)),
-      attributeRow,
-      yearRow,
-      addBase(list, response),
-      slot,
-      response.bounds === 'share' ? layout.boundsShare : layout.boundsPositive,
-      addPatches(list, model, response, first),
-    ]);
-  });
-}
-
-function addBase(list: SectionList, { base, name }: Response): number {
-  return addEpochs(list, base.epochs, {
-    kind: layout.kindPatchNumbers,
-    epochOf: base.epochOf,
-    reads: `mean of ${name}`,
-  });
-}
-
-/** The first response of a rate also sets the patches in which the rate is no such expression. */
-function addPatches(list: SectionList, model: Model, { patches, name }: Response, first: boolean): number {
-  const own = first ? model.patches.map((_, p) => p) : patches;
-  return list.add(plain(layout.kindPatchList, Int32Array.from(own), `patches of ${name}`));
 }

@@ -118,6 +118,7 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
       'capacity slots',
     ],
   ],
+  [layout.opDrivers, ['drivers', 'values', 'slots', 'column']],
   [layout.opTake, ['take', ...handled]],
   [layout.opMove, ['move', ...handled]],
   [layout.opAdd, ['add', ...handled]],

@@ -16,6 +16,8 @@ export interface SlotPlan {
   readonly varied: readonly number[];
   /** Of each response; those of one rate share a slot. */
   readonly responses: readonly number[];
+  /** Of each driver whose years are drawn; responses alone read them. */
+  readonly drivers: readonly number[];
   /** Slots of variation and catastrophes that scale rates. */
   readonly rates: readonly RateSlot[];
   /** Of each catastrophe: one slot for each number that rates are multiplied by, then one for its capacity, if it lowers any. */
@@ -38,6 +40,7 @@ export function planSlots(model: Model): SlotPlan {
     of.kind === 'rate' ? [{ slot: first + k, phase: of.phase, part: of.part, class: of.class }] : [],
   );
   let count = first + varied.length;
+  const drivers = (model.variation?.resampled?.names ?? []).map(() => count++);
   const responses = (model.variation?.responses ?? []).map(({ phase, part, class: c }) => {
     const known = rates.find((one) => one.phase === phase && one.part === part && one.class === c);
     if (known !== undefined) return known.slot;
@@ -54,5 +57,5 @@ export function planSlots(model: Model): SlotPlan {
     return { slots: [...slots, count++], values: [...values, capacity.times], capacity: true };
   });
   const rooms = catastrophes.flatMap(({ slots, capacity }) => (capacity ? slots.slice(-1) : []));
-  return { count, varied, responses, rates, catastrophes, rooms };
+  return { count, varied, drivers, responses, rates, catastrophes, rooms };
 }

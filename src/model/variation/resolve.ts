@@ -20,21 +20,23 @@ const settings: ReadonlySet<string> = new Set(['between-rates', 'between-patches
 
 /** Null where nothing varies. */
 export function resolveVariation(context: Context, phases: readonly Phase[]): Variation | null {
-  const spec = context.spec.variation;
-  if (spec === undefined) return null;
+  const { resampled } = context.drivers;
+  const spec = context.spec.variation ?? {};
+  if (context.spec.variation === undefined && resampled === null) return null;
   const varied = Object.entries(spec)
     .filter(([key]) => !settings.has(key))
     .flatMap(([key, entry]) => resolveEntry(context, { key, entry, phases }))
     .sort((a, b) => (a.name < b.name ? -1 : a.name > b.name ? 1 : 0));
-  if (varied.length === 0) {
+  if (varied.length === 0 && context.spec.variation !== undefined) {
     if (!context.findings.some(({ severity }) => severity === 'error')) tellNothing(context);
     return null;
   }
   return {
     varied,
+    resampled,
     ...resolveResponses(context, phases, varied),
     betweenRates: betweenRates(context, spec['between-rates'], varied),
-    betweenPatches: betweenPatches(context, spec['between-patches']),
+    betweenPatches: varied.length === 0 ? { of: 0, repaired: 0 } : betweenPatches(context, spec['between-patches']),
     autocorrelation: numberIn(spec['autocorrelation']) ?? 0,
   };
 }

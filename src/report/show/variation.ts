@@ -1,5 +1,5 @@
 // Year-to-year variation and catastrophes as plain data.
-import type { Catastrophe, Correlation, PatchNumbers, Uncertainty, Variation } from '../../model/chance.ts';
+import type { Catastrophe, Correlation, PatchNumbers, Resampled, Uncertainty, Variation } from '../../model/chance.ts';
 import type { Model } from '../../model/model.ts';
 import { printExpression } from '../../spec/expression/print.ts';
 
@@ -28,7 +28,14 @@ export function variationJson(model: Model, variation: Variation): unknown {
     betweenRates: correlationJson(quantities, variation.betweenRates),
     betweenPatches: 'of' in betweenPatches ? correlationJson(patches, betweenPatches) : betweenPatches,
     autocorrelation: variation.autocorrelation,
+    ...(variation.resampled === null ? {} : { drivers: driversJson(variation.resampled) }),
   };
+}
+
+function driversJson({ names, years, values }: Resampled): unknown {
+  const byYear = (k: number) =>
+    years.map((year, y): [string, number] => [String(year), values[k * years.length + y] ?? 0]);
+  return Object.fromEntries(names.map((name, k) => [name, Object.fromEntries(byYear(k))]));
 }
 
 function numbersJson(patches: readonly string[], { epochs, epochOf }: PatchNumbers): unknown {

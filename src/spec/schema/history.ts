@@ -49,9 +49,9 @@ export const Drivers = Type.Object(
       description: 'What drives rates from outside, such as rain, by calendar year; expressions use it by its name.',
       examples: ['rain.csv'],
     }),
-    future: Type.Union([Type.Literal('as-dated'), Type.Literal('repeat')], {
+    future: Type.Union([Type.Literal('as-dated'), Type.Literal('repeat'), Type.Literal('resample-years')], {
       description:
-        'Which year of the values a year of the model has: its own, which must be there; or all in their order, again and again.',
+        'Which year of the values a year of the model has: its own, which must be there; all in their order, again and again; or one of them by chance, each with the same chance and all drivers from the same one.',
       examples: ['as-dated'],
     }),
   },

@@ -6,14 +6,16 @@ import { expression, quantity } from './values.ts';
 const ownKeys = {
   sd: Type.Optional(
     expression({
-      description: 'Standard deviation between years, on the scale of the number itself, without sampling error.',
+      description:
+        'Standard deviation between years, on the scale of the number itself, without sampling error. Where the mean changes with `year` or a driver, it stays.',
       examples: [0.1],
       'x-unit': 'that of the number',
     }),
   ),
   cv: Type.Optional(
     expression({
-      description: 'Standard deviation between years as a share of the mean, instead of `sd`.',
+      description:
+        'Standard deviation between years as a share of the mean, instead of `sd`; it goes with a mean that changes.',
       examples: ['20 %'],
       'x-unit': 'share',
     }),
