@@ -21,3 +21,14 @@ export {
   setBatchStep,
 } from './lanes';
 export { startPath, stepPath, pathAnimals, pathMoved } from './path/program';
+export {
+  openMany,
+  manyInputs,
+  manyGrowths,
+  manyErrors,
+  manyPeriods,
+  manyRights,
+  manyLefts,
+  manyStarts,
+  solveMany,
+} from './many/many';

@@ -23,6 +23,7 @@ export type { BlockMatrix } from './compile/block-matrix.ts';
 export { leading, type Leading } from './numeric/leading.ts';
 export type { SparseMatrix } from './numeric/sparse.ts';
 export type { PathResults, RunResults } from './results/results.ts';
+export { openManySolver, type ManyGrowths, type ManyRequest, type ManySolver } from './kernel/many-growths.ts';
 export type { Crew, Job, JobOptions } from './kernel/crew.ts';
 export { alone } from './threads/alone.ts';
 export { openThreads, type ThreadsOptions } from './threads/threads.ts';

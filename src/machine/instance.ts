@@ -35,6 +35,22 @@ export interface MachineFunctions {
   readonly pathAnimals: () => number;
   /** Address: f64 [way], since `startPath`. */
   readonly pathMoved: () => number;
+  /** Room for so many matrices of an order at a time; 0 where the memory cannot grow so far. Addresses follow. */
+  readonly openMany: (order: number, most: number) => number;
+  /** f64 [matrix][row][column]; where elasticities are wanted, they take the place of the entries. */
+  readonly manyInputs: () => number;
+  /** f64 [matrix]: growth, and how far its bounds lie apart relative to it. */
+  readonly manyGrowths: () => number;
+  readonly manyErrors: () => number;
+  /** i32 [matrix]: period; 0 reducible, -1 the bounds did not close, -2 an entry is no number from 0. */
+  readonly manyPeriods: () => number;
+  /** f64 [matrix][state]: right vectors sum to 1, left ones begin with 1. */
+  readonly manyRights: () => number;
+  readonly manyLefts: () => number;
+  /** f64 [2][state]: positive vectors to begin with, right and left. */
+  readonly manyStarts: () => number;
+  /** Wanted: 1 vectors, 2 elasticities, 4 each from the vectors of the one two places before it. */
+  readonly solveMany: (count: number, wanted: number, multiplications: number) => void;
   readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
   readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
   readonly probeSample: (out: number, draws: number, request: number) => void;
@@ -72,6 +88,15 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   stepPath: true,
   pathAnimals: true,
   pathMoved: true,
+  openMany: true,
+  manyInputs: true,
+  manyGrowths: true,
+  manyErrors: true,
+  manyPeriods: true,
+  manyRights: true,
+  manyLefts: true,
+  manyStarts: true,
+  solveMany: true,
   probePhilox: true,
   probePhiloxLanes: true,
   probeSample: true,
