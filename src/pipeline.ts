@@ -103,14 +103,15 @@ export async function runModelWith(
   };
   const finished = await crew.run({ image, request: { steps, seed }, batches }, take, options);
   const done = batches.slice(0, finished).reduce((sum, { lanes }) => sum + lanes, 0);
-  const cut = done === replicates ? compiled : withReplicates(compiled, done);
+  const cut = done === replicates ? compiled : withSettings(compiled, { replicates: done });
   return { compiled: cut, results: done === 0 ? null : summarise(cut, reduction) };
 }
 
-function withReplicates(compiled: CompiledModel, replicates: number): CompiledModel {
+/** As if less had been asked for: what was finished of a run. */
+function withSettings(compiled: CompiledModel, done: { replicates: number } | { draws: number }): CompiledModel {
   const { named, ...core } = compiled.spec;
-  const spec = { ...core, run: { ...core.run, replicates }, named };
-  const model = { ...compiled.model, replicates };
+  const spec = { ...core, run: { ...core.run, ...done }, named };
+  const model = { ...compiled.model, ...done };
   return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
 }
 
@@ -169,20 +170,24 @@ async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOp
   const reduction = openPooled(model);
   const collector = new DrawCollector(model, reduction);
   const batches = batchesOf(model.replicates);
+  let cut = compiled;
   for (const { draw, values, image, failure } of drawsOf(compiled)) {
     if (image === null) collector.fail(draw, values, failure);
     else {
       const taken: BatchCounts[] = [];
       const request = { steps: model.steps, seed: seedOfDraw(model.seed, draw) };
       const finished = await crew.run({ image, request, batches }, (batch) => taken.push(batch), options);
-      if (finished < batches.length) break;
+      if (finished < batches.length) {
+        cut = withSettings(compiled, { draws: draw });
+        break;
+      }
       for (const batch of taken) collector.take(batch);
       collector.finish(draw, values);
     }
     options.onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
   }
-  const results = collector.done === 0 ? null : collector.withDraws(summarise(compiled, reduction));
-  return { compiled, results };
+  const results = collector.done === 0 ? null : collector.withDraws(summarise(cut, reduction));
+  return { compiled: cut, results };
 }
 
 /** The path without chance. */

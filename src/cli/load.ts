@@ -17,6 +17,7 @@ import { terminalOf } from './terminal.ts';
 export interface Loaded {
   /** Null where the text cannot be read as a spec. */
   readonly document: SpecDocument | null;
+  readonly files: readonly string[];
   /** Null where there is an error. */
   readonly compiled: CompiledModel | null;
   readonly diagnostics: readonly Diagnostic[];
@@ -24,6 +25,8 @@ export interface Loaded {
 
 export interface LoadedModel {
   readonly document: SpecDocument;
+  /** Data files that the model names, as it names them. */
+  readonly files: readonly string[];
   readonly compiled: CompiledModel;
 }
 
@@ -35,11 +38,11 @@ interface ReadOptions {
 
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
 export function loadModel(path: string, settings: Settings, { quiet, allow }: ReadOptions): LoadedModel {
-  const { document, compiled, diagnostics } = readModel(path, settings, { allow });
+  const { document, files, compiled, diagnostics } = readModel(path, settings, { allow });
   const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && quiet !== true));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
   if (document === null || compiled === null) throw toldAlready();
-  return { document, compiled };
+  return { document, files, compiled };
 }
 
 export function readModel(path: string, settings: Settings, { allow = [] }: Pick<ReadOptions, 'allow'> = {}): Loaded {
@@ -48,7 +51,7 @@ export function readModel(path: string, settings: Settings, { allow = [] }: Pick
   const alone = readSpec(text, name);
   const files = readDataFiles(alone.wants, { spec: path, allow });
   const { document, diagnostics } = files.size === 0 ? alone : readSpec(text, name, files);
-  if (document === undefined) return { document: null, compiled: null, diagnostics };
+  if (document === undefined) return { document: null, files: alone.wants, compiled: null, diagnostics };
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) {
     const { name: unknown, nearest } = applied.unknown;
@@ -58,7 +61,7 @@ export function readModel(path: string, settings: Settings, { allow = [] }: Pick
   const { compiled, findings } = compileSpec(applied.spec);
   const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];
   const located = all.map((finding) => locateFinding(document, finding));
-  return { document, compiled, diagnostics: inFileOrder([...diagnostics, ...located]) };
+  return { document, files: alone.wants, compiled, diagnostics: inFileOrder([...diagnostics, ...located]) };
 }
 
 export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {

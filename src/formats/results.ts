@@ -21,7 +21,7 @@ const Chance = Type.Object({
 const YearSummary = Type.Object({
   year: part.year,
   mean: part.maybe('Over the finished runs.'),
-  sd: part.maybe('Between the finished runs.'),
+  sd: part.maybe('Between the finished runs; null where there are fewer than two.'),
   quantiles: part.Quantiles,
 });
 
@@ -109,7 +109,7 @@ export const RunSchema = Type.Object({
   meanLowestCount: Type.Object({
     mean: part.maybe('Over the finished runs.'),
     sd: part.maybe('Between the finished runs.'),
-    standardError: part.maybe('Of the mean, from the number of runs.'),
+    standardError: part.maybe('Of the mean, from the number of runs; null where that cannot be told.'),
   }),
   patchesInUse: Type.Array(Type.Object({ year: part.year, mean: Type.Number(), quantiles: part.Quantiles })),
   sketched: Type.Array(Sketched, { description: 'Empty where every quantile is a count that some run had.' }),

@@ -5,6 +5,7 @@ import type { CrowdingCoefficients } from '../compile/coefficients.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { Model } from '../model/model.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
+import type { Spec } from '../spec/schema/spec.ts';
 
 export interface ReportInput {
   readonly results: RunResults;
@@ -17,8 +18,21 @@ export interface ReportInput {
   /** What the patches are to the whole, or why that is not told. */
   readonly patchValues?: Answer<PatchValues>;
   readonly specText: string;
+  /** Absent where the model reads no files and is not driven from outside. */
+  readonly data?: InputData;
   /** As it can be typed again. */
   readonly commandLine: string;
+  /** The same for the run whose tables and run.json hold what the page shows. */
+  readonly runLine?: string;
   /** The script of the page, as built from src/page/. */
   readonly pageScript: string;
+}
+
+/** What comes into the model from outside its text. */
+export interface InputData {
+  /** As the model names them. */
+  readonly files: readonly string[];
+  readonly drivers: Spec['drivers'];
+  /** The model with what its files hold in their place. */
+  readonly wholeText: string;
 }

@@ -1,8 +1,9 @@
 // What a run says in a terminal: the answer in words first, then a small table, then the course of abundance.
 import type { Chance, RunResults } from '../results/results.ts';
-import { decimal, percent, plain, whole } from '../view/number.ts';
+import { decimal, percent, plain } from '../view/number.ts';
 import { answer, finished, lastYear } from './answer.ts';
 import { handledWords } from './handled-words.ts';
+import { lowestWords } from './lowest-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
@@ -62,8 +63,7 @@ function course(results: RunResults, animals: string, style: TextStyle): string 
 }
 
 function numbers(results: RunResults, animals: string, style: TextStyle): string {
-  const { mean, standardError } = results.meanLowestCount;
-  const lowest = `mean lowest count: ${whole(mean)} ${animals}, give or take ${whole(1.96 * standardError)} from the number of runs`;
+  const lowest = `mean lowest count: ${lowestWords(results, animals)}`;
   const end = results.patchesInUse[results.patchesInUse.length - 1];
   const inUse = end === undefined ? '' : `patches in use in ${end.year}: ${decimal(end.mean)} in the mean`;
   const { runs, reasons } = results.stopped;

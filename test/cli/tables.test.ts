@@ -82,6 +82,19 @@ describe('what is missing', () => {
     expect(empty.at(-1)?.['empty']).toBe(1);
   });
 
+  test('a single run has no spread: nothing is said of it, rather than 0', async () => {
+    const cwd = folder();
+    const { out } = skein(['run', hare, '--replicates', '1', '--years', '2', '--out', 'out'], { cwd });
+    expect(out).toMatch(/mean lowest count: [\d,]+ females\n/);
+    const rows = await query(`SELECT sd, mean FROM '${cwd}/out/abundance.parquet'`);
+    expect(rows.every((row) => row['sd'] === null && row['mean'] !== null)).toBe(true);
+    const results: unknown = JSON.parse(readFileSync(join(cwd, 'out/results.json'), 'utf8'));
+    expect(results).toMatchObject({ meanLowestCount: { sd: null, standardError: null } });
+    const page = skein(['report', hare, '--replicates', '1', '--years', '2', '-o', '-'], { cwd }).out;
+    const shown = page.slice(0, page.indexOf('<script'));
+    expect(shown.match(/NaN|give or take/g)).toBe(null);
+  });
+
   test('and numbers with a unit have it in the dictionary', () => {
     const cwd = folder();
     skein(['run', hare, '--replicates', '20', '--years', '3', '--out', 'out'], { cwd });

@@ -3,6 +3,8 @@ import { pageScript } from '../../../build/page-script.ts';
 import { patchValues } from '../../analysis/patch-values.ts';
 import { followPath } from '../../pipeline.ts';
 import { buildReport } from '../../report/report.ts';
+import type { RunResults } from '../../results/results.ts';
+import { printSpec } from '../../spec/print.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { pendingFile } from '../files.ts';
@@ -10,9 +12,10 @@ import { writeError, writeOut } from '../output.ts';
 import { runReplicates } from '../replicates.ts';
 
 export async function reportCommand(path: string, options: CommonOptions & { readonly output: string }): Promise<void> {
-  const { document, ...loaded } = loadModel(path, settingsOf(options), options);
+  const { document, files, ...loaded } = loadModel(path, settingsOf(options), options);
   const file = options.output === '-' ? null : pendingFile(options.output);
   const { compiled, results, cutShort } = await runReplicates(loaded.compiled, options);
+  const done = cutShort === null ? options : { ...options, ...finishedOf(results) };
   const page = buildReport({
     results,
     path: followPath(compiled),
@@ -21,7 +24,9 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
     coefficients: compiled.coefficients,
     patchValues: patchValues(compiled),
     specText: document.text,
-    commandLine: commandLineOf(path, cutShort === null ? options : { ...options, replicates: results.replicates }),
+    data: { files, drivers: compiled.spec.drivers, wholeText: printSpec(compiled.spec) },
+    commandLine: commandLineOf(['report', path], done, ['-o', options.output]),
+    runLine: commandLineOf(['run', path], done, ['--out', 'results']),
     pageScript,
   });
   if (file === null) writeOut(page);
@@ -30,15 +35,22 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
   if (cutShort !== null) throw cutShort;
 }
 
+/** What would have had to be asked for. */
+function finishedOf({ replicates, draws }: RunResults): Pick<CommonOptions, 'replicates' | 'draws'> {
+  return draws === undefined ? { replicates } : { replicates: draws.replicatesEach, draws: draws.number };
+}
+
 /** As it can be typed again. */
-function commandLineOf(path: string, options: CommonOptions & { readonly output: string }): string {
-  const { years, replicates, seed, set, output } = options;
-  const words = ['skein', 'report', path];
+function commandLineOf(first: readonly string[], options: CommonOptions, last: readonly string[]): string {
+  const { years, replicates, seed, draws, set, allow } = options;
+  const words = ['skein', ...first];
   for (const { name, value } of set ?? []) words.push('--set', `${name}=${value}`);
+  for (const folder of allow ?? []) words.push('--allow', folder);
   if (years !== undefined) words.push('--years', String(years));
   if (replicates !== undefined) words.push('--replicates', String(replicates));
   if (seed !== undefined) words.push('--seed', String(seed));
-  return [...words, '-o', output].map(quoted).join(' ');
+  if (draws !== undefined) words.push('--draws', String(draws));
+  return [...words, ...last].map(quoted).join(' ');
 }
 
 function quoted(word: string): string {

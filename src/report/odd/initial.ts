@@ -4,7 +4,11 @@ import { mark, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 
 export function initialWords(model: Model): Markup {
-  const { start } = model;
+  const calm = model.catastrophes.length === 0 ? null : mark`<p>No catastrophe is on at the start.</p>`;
+  return mark`${animalWords(model)}${calm}`;
+}
+
+function animalWords({ start }: Model): Markup {
   switch (start.by) {
     case 'table':
       return mark`<p>Every run starts from the same table of animals by patch and class, ${plain(sum(start.animals))} in all.</p>`;

@@ -9,6 +9,7 @@ import { handlingWords } from '../handling-words.ts';
 import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
 import { catastropheWords } from '../catastrophe-words.ts';
+import { uncertaintyWords } from '../uncertainty-words.ts';
 import { weatherWords } from '../weather-words.ts';
 import { digits, matrixTables, rateTable } from './rates.ts';
 
@@ -17,7 +18,7 @@ export function submodels(model: Model, landscape: Landscape): Markup {
     .filter((phase) => phase.kind !== 'count')
     .map((phase) => submodel(phase.name, numbers(phase, model)));
   const conditions = model.crowding.map((one) => submodel(one.name, crowding(one, model)));
-  return mark`${phases}${conditions}${weather(model, landscape)}${catastrophes(model, landscape)}`;
+  return mark`${phases}${conditions}${weather(model, landscape)}${catastrophes(model, landscape)}${unknown(model)}`;
 }
 
 function catastrophes(model: Model, landscape: Landscape): Markup | null {
@@ -30,6 +31,16 @@ function weather({ variation }: Model, landscape: Landscape): Markup | null {
   if (variation === null) return null;
   const items = weatherWords(weatherFacts(variation, landscape)).map((words) => mark`<li><bdi>${words}</bdi></li>`);
   return submodel('variation from year to year', mark`<ul>${items}</ul>`);
+}
+
+function unknown({ uncertainty, draws }: Model): Markup | null {
+  if (uncertainty === null) return null;
+  const items = uncertaintyWords(uncertainty).map((words) => mark`<li><bdi>${words}</bdi></li>`);
+  const drawn =
+    draws === 0
+      ? 'Nothing of it was drawn in these runs.'
+      : `It was drawn ${plain(draws)} times, each once for a set of runs.`;
+  return submodel('what is not known', mark`<ul>${items}</ul><p>${drawn}</p>`);
 }
 
 function submodel(name: string, content: Content): Markup {

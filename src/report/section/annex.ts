@@ -4,7 +4,7 @@ import { mark, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { drawTable, type Row } from '../../view/table.ts';
 import { basisWords } from '../../results/basis.ts';
-import type { ReportInput } from '../input.ts';
+import type { InputData, ReportInput } from '../input.ts';
 import { oddSection } from '../odd/odd.ts';
 import { digits } from '../odd/rates.ts';
 import { list, section } from './section.ts';
@@ -16,8 +16,8 @@ export function limitsSection({ results }: ReportInput): Markup {
 }
 
 export function annexSection(input: ReportInput): Markup {
-  const { model, results, landscape } = input;
-  const content = mark`${oddSection(model, results, landscape)}${parameters(model)}${defaults(model)}${rerun(input)}`;
+  const { model } = input;
+  const content = mark`${oddSection(input)}${parameters(model)}${defaults(model)}${rerun(input)}`;
   return section('annex', 'Annex', content);
 }
 
@@ -37,17 +37,41 @@ function defaults(model: Model): Markup {
   return mark`<h3 id="defaults">Defaults that were used</h3>${items.length === 0 ? none : mark`<ul>${items}</ul>`}`;
 }
 
-function rerun({ results, specText, commandLine }: ReportInput): Markup {
-  const { tool, seed, replicates, hash } = results;
+function rerun(input: ReportInput): Markup {
+  const { results, specText, data } = input;
+  const { tool, seed, replicates, hash, draws } = results;
   const facts = list('numbers', [
-    ['command', mark`<code>${commandLine}</code>`],
     ['seed', mark`<code>${String(seed)}</code>`],
     ['futures', plain(replicates)],
+    ...(draws === undefined ? [] : [['draws of what is not known', plain(draws.number)] as const]),
     ['hash of all that decides the result (SHA-256)', mark`<code>${hash}</code>`],
     ['version', `${tool.name} ${tool.version}, kernel ${tool.kernel}`],
   ]);
   return mark`<h3 id="again">How to run it again</h3>
 <p>The same text, seed and version give the same numbers, bit for bit, on any machine.</p>
+${steps(input)}
 ${facts}
-<details class="tables"><summary>The text of the model</summary><pre tabindex="0">${specText}</pre></details>`;
+${text('The text of the model', specText)}${data === undefined ? null : wholeText(data)}`;
+}
+
+function steps({ commandLine, runLine }: ReportInput): Markup {
+  const page = mark`<li><code>${commandLine}</code> writes this page again.</li>`;
+  if (runLine === undefined) return mark`<ol>${page}</ol>`;
+  return mark`<ol>${page}
+<li><code>${runLine}</code> writes the tables behind it, and <code>results/run.json</code>, which holds the model with all its
+inputs. Its <code>hash</code> is the one below: where they are equal, everything that decides the result is.</li>
+<li><code>skein run --again results/run.json</code> gives the same bytes from that file alone, for whoever it is handed to.</li></ol>`;
+}
+
+/** Longer texts would make the page heavy. */
+const longestText = 300_000;
+
+function wholeText({ files, wholeText: whole }: InputData): Markup | null {
+  if (files.length === 0) return null;
+  if (whole.length <= longestText) return text('The same with what its files hold, which runs by itself', whole);
+  return mark`<p>With what its files hold the text is too long to be printed here; <code>skein show MODEL spec</code> prints it.</p>`;
+}
+
+function text(summary: string, content: string): Markup {
+  return mark`<details class="tables"><summary>${summary}</summary><pre tabindex="0">${content}</pre></details>`;
 }

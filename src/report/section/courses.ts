@@ -71,8 +71,8 @@ function yearTable(view: ReportView, results: RunResults): Table {
   const inUse = new Map(results.patchesInUse.map((one) => [one.year, one.mean]));
   const rows = results.abundance.whole.map(({ year, mean, sd, quantiles: q }): Row => {
     const used = inUse.get(year);
-    const animals = [q['0.05'], q['0.25'], q['0.5'], q['0.75'], q['0.95'], mean, sd].map(whole);
-    return [String(year), ...animals, used === undefined ? '' : decimal(used)];
+    const animals = [q['0.05'], q['0.25'], q['0.5'], q['0.75'], q['0.95'], mean].map(whole);
+    return [String(year), ...animals, Number.isNaN(sd) ? '' : whole(sd), used === undefined ? '' : decimal(used)];
   });
   const shares = ['5 of 100 at or under', '25 of 100', 'middle', '75 of 100', '95 of 100'];
   const head = ['year', ...shares, 'mean', 'standard deviation', 'patches in use, mean'];

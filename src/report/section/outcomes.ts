@@ -2,10 +2,11 @@
 import type { Model } from '../../model/model.ts';
 import type { Chance, Interval, OutcomeResult, RunResults } from '../../results/results.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
-import { decimal, percent, plain, whole } from '../../view/number.ts';
+import { decimal, percent, plain } from '../../view/number.ts';
 import { scrolling } from '../../view/table.ts';
 import { finished, lastYear } from '../answer.ts';
 import { handledWords } from '../handled-words.ts';
+import { lowestWords } from '../lowest-words.ts';
 import { list, section } from './section.ts';
 
 export function outcomesSection(model: Model, results: RunResults): Markup {
@@ -54,10 +55,8 @@ function range({ lower, upper, level }: Interval, probability: number | null): s
 }
 
 function others(model: Model, results: RunResults): Markup {
-  const { mean, standardError } = results.meanLowestCount;
   const animals = model.counts === 'females' ? 'females' : 'animals';
-  const lowest = `${whole(mean)} ${animals}, give or take ${whole(1.96 * standardError)} from the number of runs; it is the
-mean, over the futures, of the lowest count that each one sees`;
+  const lowest = `${lowestWords(results, animals)}; it is the mean, over the futures, of the lowest count that each one sees`;
   const items: (readonly [string, Content])[] = [['mean lowest count', lowest]];
   const end = results.patchesInUse[results.patchesInUse.length - 1];
   if (end !== undefined) {

@@ -70,12 +70,12 @@ export class DrawCollector {
     return { ...pooled, replicates, outcomes, meanLowestCount, draws };
   }
 
-  /** Of the mean over draws, with the draw as its unit. */
+  /** Of the mean over draws, with the draw as its unit; NaN for a single draw. */
   #errorOfLowest(): number {
     const means = this.#finished.map(({ lowest }) => lowest);
     const mean = means.reduce((a, b) => a + b, 0) / means.length;
     const squares = means.reduce((sum, one) => sum + (one - mean) * (one - mean), 0);
-    return means.length < 2 ? 0 : Math.sqrt(squares / (means.length - 1) / means.length);
+    return means.length < 2 ? NaN : Math.sqrt(squares / (means.length - 1) / means.length);
   }
 
   #outcome(outcome: OutcomeResult, k: number): OutcomeResult {

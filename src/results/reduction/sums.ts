@@ -5,7 +5,7 @@ const half = 65536;
 
 export interface Moments {
   readonly mean: number;
-  /** With n − 1; 0 for a single value. */
+  /** With n − 1; NaN, which is written as missing, where a single value has no spread. */
   readonly sd: number;
 }
 
@@ -39,7 +39,7 @@ export class Sums {
     const [sum = 0, highs = 0, mixed = 0, lows = 0] = this.#parts.subarray(cell * 4, cell * 4 + 4);
     const mean = sum / n;
     const squares = highs * half * half + 2 * mixed * half + lows;
-    const variance = n < 2 ? 0 : Math.max(0, squares - sum * mean) / (n - 1);
+    const variance = n < 2 ? NaN : Math.max(0, squares - sum * mean) / (n - 1);
     return { mean, sd: Math.sqrt(variance) };
   }
 }
