@@ -78,11 +78,12 @@ export const kindPatchNumbers = 20; // f64, P
 export const kindPatchForms = 21; // i32, P
 export const kindClassWeights = 22; // f64, C
 export const kindSlotLists = 23; // i32, C + 1 starts (from the first list entry), then slots
-export const kindOutcomeWeights = 24; // f64, outcomes × C
+export const kindOutcomeWeights = 24; // f64, rows × C: one an outcome, or as the rules say
 export const kindOutcomePatches = 25; // i32, outcomes × P
 export const kindNames = 26; // u8, JSON for printers; the kernel does not read it
+export const kindOutcomeRules = 27; // i32, outcomes × ruleWords
 
-export const highestKind = 26;
+export const highestKind = 27;
 
 // 40-59 belong to chance. A factor is a matrix whose rows mix independent normals: starts, columns and weights stand in
 // three rows of the directory, one after the other, and are named by the first.
@@ -288,6 +289,16 @@ export const opCount = 96;
 export const countOutcomeWeights = 3;
 export const countOutcomePatches = 4;
 export const countOutcomes = 5; // a number, not a row
+export const countOutcomeRules = 6; // none where each outcome has one row of weights and sums its patches
+
+// Of an outcome: its count is the smallest of its rows of weights, each over the patches as said.
+export const ruleWords = 3;
+export const ruleFirstWeights = 0;
+export const ruleRows = 1;
+export const ruleOver = 2;
+export const overSum = 0;
+export const overSmallest = 1;
+export const overLargest = 2;
 
 // Forms of crowding. N is the count, k the coefficient.
 export const formNone = 0;

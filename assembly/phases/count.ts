@@ -1,10 +1,11 @@
 // Count: the sums that the host keeps, one column each: the whole, each patch, each outcome's weighted set.
-import { f64At, i32At } from '../arrays';
+import { f64At } from '../arrays';
 import { animals, cellBytes, laneNumbers, observed, rowBytes, stopLane } from '../batch';
 import { addNumbers } from '../cells';
-import { classes, operand, patches, section } from '../image';
+import { classes, operand, patches } from '../image';
 import * as layout from '../layout';
 import { addWeighted } from './crowding';
+import { countOutcome } from './outcome';
 
 export function count(record: usize): void {
   memory.fill(observed, 0, laneNumbers);
@@ -17,21 +18,6 @@ export function count(record: usize): void {
   }
   const outcomes = operand(record, layout.countOutcomes);
   for (let outcome = 0; outcome < outcomes; outcome++) countOutcome(record, outcome);
-}
-
-function countOutcome(record: usize, outcome: i32): void {
-  const weights = section(operand(record, layout.countOutcomeWeights)) + ((<usize>(outcome * classes)) << 3);
-  const inside = section(operand(record, layout.countOutcomePatches)) + ((<usize>(outcome * patches)) << 2);
-  const column = observed + <usize>(patches + 1 + outcome) * laneNumbers;
-  memory.fill(column, 0, laneNumbers);
-  for (let patch = 0; patch < patches; patch++) {
-    if (i32At(inside, patch) === 0) continue;
-    const row = animals + <usize>patch * rowBytes();
-    for (let c = 0; c < classes; c++) {
-      const weight = f64At(weights, c);
-      if (weight !== 0) addWeighted(column, row + <usize>c * cellBytes, weight);
-    }
-  }
 }
 
 /** Stops every replicate in which more animals live than the kernel can count. */

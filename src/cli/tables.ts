@@ -31,6 +31,7 @@ export function runTables(model: Model, results: RunResults): readonly Table[] {
     abundanceTable(results),
     outcomeTable(results),
     chanceTable(results),
+    firstTable(results),
     ...(results.handled.length === 0 ? [] : [handledTable(results)]),
     inUseTable(results),
     lowestTable(results),
@@ -127,14 +128,38 @@ function chanceTable({ outcomes }: RunResults): Table {
     columns: [
       outcome,
       year,
-      share('ever_below', 'Share of the runs that have fallen below by this year.'),
+      share('ever', 'Share of the runs that have come to it by this year.'),
       share('lower', 'Lower edge of a band that holds for the whole curve with 95 %.'),
       share('upper', 'Upper edge of that band.'),
-      share('below', 'Share of the runs that are below in this year.'),
+      share('now', 'Share of the runs in which it is so in this year.'),
     ],
     rows: outcomes.flatMap(({ name, byYear }) =>
-      byYear.map((one) => [name, one.year, one.everBelow, one.lower, one.upper, one.below]),
+      byYear.map((one) => [name, one.year, one.ever, one.lower, one.upper, one.now]),
     ),
+  };
+}
+
+function firstTable({ outcomes }: RunResults): Table {
+  return {
+    name: 'when_first',
+    columns: [
+      outcome,
+      ...levels.map((level): Column => ({
+        name: `year_${level}`,
+        unit: 'year',
+        meaning: `Calendar year by which a share of ${level} of the runs has come to it; empty where fewer ever do.`,
+      })),
+      {
+        name: 'mean_years',
+        unit: 'years',
+        meaning: 'Years from the start to it, the mean over the runs that come to it; empty where none does.',
+      },
+    ],
+    rows: outcomes.map(({ name, whenFirst: { quantiles, meanYears } }) => [
+      name,
+      ...levels.map((level) => quantiles[level]),
+      meanYears,
+    ]),
   };
 }
 
@@ -237,17 +262,11 @@ function drawTable({ outcomes }: RunResults, { rows }: Draws): Table {
         meaning: 'Value of this parameter in the draw.',
       })),
       outcome,
-      share('ever_below', 'Share of the runs of this draw that fell below; empty where it was not run.'),
+      share('ever', 'Share of the runs of this draw that came to it; empty where it was not run.'),
       { name: 'failure', unit: '', meaning: 'Why no model can have these values; empty where it was run.' },
     ],
-    rows: rows.flatMap(({ draw, values, failure, everBelow }) =>
-      outcomes.map(({ name }, k) => [
-        draw,
-        ...names.map((one) => values[one] ?? null),
-        name,
-        everBelow[k] ?? null,
-        failure,
-      ]),
+    rows: rows.flatMap(({ draw, values, failure, ever }) =>
+      outcomes.map(({ name }, k) => [draw, ...names.map((one) => values[one] ?? null), name, ever[k] ?? null, failure]),
     ),
   };
 }

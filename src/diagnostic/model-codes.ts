@@ -87,5 +87,6 @@ export const modelCodes = {
   'start-empty-class': 'The start has animals of a class that is always empty at the count.',
   'start-needs-spread': 'A stable spread does not exist here.',
   'start-nobody': 'The start has no animals.',
-  'already-below': 'An outcome is true from the start.',
+  'already-so': 'An outcome is so from the start, or can never be.',
+  'outcome-shape': 'An outcome says too little or too much.',
 } as const satisfies Readonly<Record<string, string>>;

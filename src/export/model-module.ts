@@ -20,7 +20,7 @@ export function modelModule(compiled: CompiledModel): Uint8Array<ArrayBuffer> {
 function describeModule({ model, provenance, image }: CompiledModel, address: number): unknown {
   const { seed, replicates, steps, firstYear, classes } = model;
   const patches = model.patches.map(({ name }) => name);
-  const outcomes = model.outcomes.map(({ name, definition, below }) => ({ name, definition, below }));
+  const outcomes = model.outcomes.map(({ name, definition, event, counts }) => ({ name, definition, event, counts }));
   return {
     format: 'skein-module/1',
     ...provenance,

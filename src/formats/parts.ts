@@ -30,6 +30,19 @@ export const firstYear = Type.Integer({
 });
 export const seed = whole('Decides all chance.');
 
+/** What must be so at a count, and at how many counts one after the other. */
+export const outcomeRule = {
+  definition: text('In words, from the rule itself.'),
+  event: Type.Union([
+    Type.Object({
+      is: Type.Union([Type.Literal('below'), Type.Literal('above')]),
+      than: number('The threshold; strictly below or above it counts.'),
+    }),
+    Type.Object({ is: Type.Literal('fallen'), by: share('By this share of the count at the start, or more.') }),
+  ]),
+  counts: whole('Counts one after the other at which it must be so.'),
+} as const;
+
 export const Quantiles = Type.Object(
   {
     '0.05': Type.Number(),

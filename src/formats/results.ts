@@ -25,19 +25,31 @@ const YearSummary = Type.Object({
   quantiles: part.Quantiles,
 });
 
+const maybeYear = part.orNull(part.year);
+
 const Outcome = Type.Object({
   name: part.text("The author's name."),
-  definition: part.text('In words, from the rule itself.'),
-  below: part.number('The threshold; strictly below it counts.'),
+  ...part.outcomeRule,
+  words: Type.Object({
+    happened: part.text("To be put behind 'having' or 'have'."),
+    now: part.text("To be put behind 'being' or 'are'."),
+  }),
   ever: Chance,
   atEnd: Chance,
+  whenFirst: Type.Object({
+    quantiles: Type.Object(
+      { '0.05': maybeYear, '0.25': maybeYear, '0.5': maybeYear, '0.75': maybeYear, '0.95': maybeYear },
+      { description: 'Year by which this share of the runs has come to it; null where fewer ever do.' },
+    ),
+    meanYears: part.maybe('Years from the start to it, the mean over the runs that come to it; null where none does.'),
+  }),
   byYear: Type.Array(
     Type.Object({
       year: part.year,
-      everBelow: part.maybeShare('Chance of having fallen below by this year.'),
+      ever: part.maybeShare('Chance of having come to it by this year.'),
       lower: part.maybeShare('Lower edge of a band that holds for the whole curve with 95 %.'),
       upper: part.maybeShare('Upper edge of that band.'),
-      below: part.maybeShare('Chance of being below in this year.'),
+      now: part.maybeShare('Chance that it is so in this year.'),
     }),
   ),
 });
@@ -78,7 +90,7 @@ const Draws = Type.Object({
       failure: Type.Union([Type.String(), Type.Null()], {
         description: 'Why no model can have these values; null where it was run.',
       }),
-      everBelow: Type.Array(part.maybeShare('By outcome; null where it was not run.')),
+      ever: Type.Array(part.maybeShare('By outcome; null where it was not run.')),
     }),
   ),
 });

@@ -44,9 +44,7 @@ export const ModelSchema = Type.Object({
   }),
   crowding: Type.Array(Named),
   start: Type.Object({}),
-  outcomes: Type.Array(
-    Type.Object({ name: Type.String(), below: Type.Number(), definition: Type.String(), in: Type.Array(part.patch) }),
-  ),
+  outcomes: Type.Array(Type.Object({ name: Type.String(), ...part.outcomeRule, in: Type.Array(part.patch) })),
 });
 
 export const LandscapeSchema = Type.Object({
@@ -130,6 +128,6 @@ export const ModuleSchema = Type.Object({
   lanes: part.whole('Replicates that run side by side.'),
   patches: Type.Array(part.patch),
   classes: Type.Array(part.className),
-  outcomes: Type.Array(Type.Object({ name: Type.String(), definition: Type.String(), below: Type.Number() })),
+  outcomes: Type.Array(Type.Object({ name: Type.String(), ...part.outcomeRule })),
   columns: Type.Array(Type.String(), { description: 'What is counted, in the order of `observed()`.' }),
 });

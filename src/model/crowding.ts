@@ -1,7 +1,8 @@
 // Crowding: which rates it scales, whom it counts, and the capacity at which a patch alone stands still.
 import type { SpecPath } from '../spec/document.ts';
 import type { CrowdingSpec } from '../spec/schema/spec.ts';
-import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
+import { classWeights } from './class-weights.ts';
+import { classMask, fail, patchIndex, type Context } from './context.ts';
 import { resolveCapacities } from './capacities.ts';
 import type { Crowding, Phase } from './model.ts';
 import { rateCalled } from './named-rates.ts';
@@ -28,7 +29,7 @@ function resolveOne(context: Context, { name, spec, phases }: Named): Crowding {
     name,
     form: spec.form,
     ...(shapeNumber === null ? {} : { shapeNumber }),
-    counted: countedWeights(context, spec, path),
+    counted: classWeights(context, spec.counted, [...path, 'counted']),
     changes: changedRates(context, { spec, path, phases }),
     capacity: capacityOf(context, spec, path),
     alleeHalf: alleeHalves(context, spec, path),
@@ -89,18 +90,6 @@ function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Float
     details: { expected: 'the number at which a patch alone stands still, such as `capacity: capacity`' },
   });
   return new Float64Array(context.patches.length).fill(NaN);
-}
-
-function countedWeights(context: Context, { counted }: CrowdingSpec, path: SpecPath): Float64Array {
-  if (counted === 'all' || Array.isArray(counted)) {
-    return Float64Array.from(classMask(context, counted, [...path, 'counted']));
-  }
-  const weights = new Float64Array(context.classes.length);
-  for (const [name, weight] of Object.entries(counted)) {
-    const c = classIndex(context, name, [...path, 'counted', name]);
-    if (c >= 0) weights[c] = weight;
-  }
-  return weights;
 }
 
 interface Changes {

@@ -203,14 +203,32 @@ export interface Crowding {
   readonly whereDeclining: 'none' | 'ceiling' | { readonly as: number } | null;
 }
 
+/** What must be so at a count, and at how many counts one after the other. All comparisons are strict but that of `fallen`. */
+export type OutcomeEvent =
+  | { readonly is: 'below' | 'above'; readonly than: number }
+  /** By this share of the count at the start, or more. */
+  | { readonly is: 'fallen'; readonly by: number };
+
 export interface OutcomeRule {
   readonly name: string;
-  readonly weights: Float64Array;
+  /** By class; two where the count is that of the scarcer sex, each with the weights of one sex. */
+  readonly weights: readonly Float64Array[];
   /** 1 for each patch that counts. */
   readonly patches: Uint8Array;
-  readonly below: number;
+  /** The sum over the patches, the largest count of a patch, or the smallest. */
+  readonly over: 'sum' | 'largest' | 'smallest';
+  readonly event: OutcomeEvent;
+  /** Counts one after the other at which it must be so. */
+  readonly counts: number;
   /** In words, from the rule itself. */
   readonly definition: string;
+  readonly words: OutcomeWords;
+}
+
+/** To be put behind 'having' or 'have', and behind 'being' or 'are'. */
+export interface OutcomeWords {
+  readonly happened: string;
+  readonly now: string;
 }
 
 export type Sex = 'female' | 'male';

@@ -5,6 +5,7 @@ import { answer, finished, lastYear } from './answer.ts';
 import { handledWords } from './handled-words.ts';
 import { lowestWords } from './lowest-words.ts';
 import { sparkLine } from './spark-line.ts';
+import { whenWords } from './when-words.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
 export interface RunTextStyle extends TextStyle {
@@ -34,10 +35,14 @@ function outcomeTable(results: RunResults, style: TextStyle): string {
   const end = lastYear(results);
   const unknown = results.notDrawn ? 'not drawn' : 'not given';
   const rows = results.outcomes.flatMap((outcome) => [
-    [`${outcome.name}: having fallen below`, ...chanceCells(outcome.ever, unknown)],
-    [`${outcome.name}: being below in ${end}`, ...chanceCells(outcome.atEnd, unknown)],
+    [`${outcome.name}: having ${outcome.words.happened}`, ...chanceCells(outcome.ever, unknown)],
+    [`${outcome.name}: being ${outcome.words.now} in ${end}`, ...chanceCells(outcome.atEnd, unknown)],
   ]);
-  const definitions = results.outcomes.slice(1).map((outcome) => wrap(`${outcome.name}: ${outcome.definition}`, style));
+  const definitions = results.outcomes.flatMap((outcome, k) => {
+    const when = whenWords(outcome, end);
+    const told = [...(k === 0 ? [] : [outcome.definition]), ...(when === null ? [] : [when])];
+    return told.length === 0 ? [] : [wrap(`${outcome.name}: ${told.join('; ')}`, style)];
+  });
   const table = columnsOf(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
   return [table, ...(definitions.length > 0 ? ['', ...definitions] : [])].join('\n');
 }

@@ -36,7 +36,7 @@ export function summariseForView(input: ReportInput): ReportView {
 /** Counts at which the outcome is not looked at, such as the start, have chance 0 and lie before `first`. */
 function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): OutcomeView {
   const byYear = new Map(outcome.byYear.map((one) => [one.year, one]));
-  const series = (part: 'everBelow' | 'lower' | 'upper' | 'below') =>
+  const series = (part: 'ever' | 'lower' | 'upper' | 'now') =>
     counts.map(({ year }) => short(byYear.get(year)?.[part] ?? 0));
   return {
     name: outcome.name,
@@ -45,10 +45,11 @@ function outcomeView(outcome: OutcomeResult, counts: readonly YearSummary[]): Ou
       0,
       counts.findIndex(({ year }) => byYear.has(year)),
     ),
-    ever: series('everBelow'),
+    ever: series('ever'),
     lower: series('lower'),
     upper: series('upper'),
-    below: series('below'),
+    now: series('now'),
+    words: outcome.words,
   };
 }
 

@@ -1,4 +1,5 @@
 // What a run says, as data. These objects are printed by `--json` and read by the page; each carries its `format`.
+import type { OutcomeEvent, OutcomeWords } from '../model/model.ts';
 
 /** A 95 % interval with its name: what it does and does not account for. */
 export interface Interval {
@@ -32,19 +33,32 @@ export interface YearSummary {
   readonly quantiles: Quantiles;
 }
 
+/** When an outcome comes first. */
+export interface WhenFirst {
+  /** Calendar year by which this share of all finished runs has come to it; null where fewer ever do. */
+  readonly quantiles: Readonly<Record<keyof Quantiles, number | null>>;
+  /** Years from the start to it, the mean over the runs that come to it; null where none does. */
+  readonly meanYears: number | null;
+}
+
 export interface OutcomeResult {
   readonly name: string;
   readonly definition: string;
-  readonly below: number;
+  readonly event: OutcomeEvent;
+  /** Counts one after the other at which it must be so. */
+  readonly counts: number;
+  readonly words: OutcomeWords;
   readonly ever: Chance;
   readonly atEnd: Chance;
-  /** Chance of having fallen below by each year, with a band that holds for the whole curve at once. */
+  readonly whenFirst: WhenFirst;
   readonly byYear: readonly {
     readonly year: number;
-    readonly everBelow: number;
+    /** Share of the runs that have come to it by this year, with a band that holds for the whole curve at once. */
+    readonly ever: number;
     readonly lower: number;
     readonly upper: number;
-    readonly below: number;
+    /** Share of the runs in which it is so in this year. */
+    readonly now: number;
   }[];
 }
 
@@ -87,8 +101,8 @@ export interface DrawRow {
   readonly values: Readonly<Record<string, number>>;
   /** Why no model can have these values; null where it was run. */
   readonly failure: string | null;
-  /** By outcome, the share of its runs that fell below; null where it was not run. */
-  readonly everBelow: readonly (number | null)[];
+  /** By outcome, the share of its runs that came to it; null where it was not run. */
+  readonly ever: readonly (number | null)[];
 }
 
 export interface Draws {

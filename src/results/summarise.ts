@@ -13,9 +13,8 @@ import type { PathResults, RunResults, Sketched, YearSummary } from './results.t
 /** For as many replicates as the model asks for. */
 export function openReduction(model: Model): Reduction {
   const { patches, steps, replicates, outcomes } = model;
-  const below = outcomes.map((rule) => rule.below);
   const handled = model.phases.filter(isHandling).length;
-  return new Reduction({ patches: patches.length, steps, replicates, below, handled });
+  return new Reduction({ patches: patches.length, steps, replicates, outcomes, handled });
 }
 
 export interface RunToSummarise {
@@ -40,8 +39,8 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
       patches: inFileOrder(model).map((p) => patchCourse(model, reduction, p)),
     },
     outcomes: model.outcomes.flatMap((rule, k) => {
-      const falls = reduction.falls[k];
-      return falls === undefined ? [] : [summariseOutcome({ rule, falls, runs, firstYear })];
+      const hits = reduction.hits[k];
+      return hits === undefined ? [] : [summariseOutcome({ rule, hits, runs, firstYear })];
     }),
     handled: summariseHandled(model, reduction),
     meanLowestCount: lowestCount(reduction),

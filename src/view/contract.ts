@@ -59,8 +59,10 @@ export interface OutcomeView {
   readonly ever: Series;
   readonly lower: Series;
   readonly upper: Series;
-  /** Chance of being below at count i, whatever was before. */
-  readonly below: Series;
+  /** Chance that it is so at count i, whatever was before. */
+  readonly now: Series;
+  /** To be put behind 'have', and behind 'are'. */
+  readonly words: { readonly happened: string; readonly now: string };
 }
 
 export interface ReportView {

@@ -12,10 +12,10 @@ export function readAbundance(view: ReportView, count: number): string {
 
 export function readChance(view: ReportView, outcome: OutcomeView, count: number): string {
   if (count < outcome.first) return `${pick(view.years, count)}: the start, which is not looked at.`;
-  const ever = `${of100(pick(outcome.ever, count))} of 100 futures have fallen below by then`;
+  const ever = `${of100(pick(outcome.ever, count))} of 100 futures have ${outcome.words.happened} by then`;
   const band = `band ${of100(pick(outcome.lower, count))} to ${of100(pick(outcome.upper, count))}`;
-  const below = `${of100(pick(outcome.below, count))} of 100 are below in that year`;
-  return `${pick(view.years, count)}: ${ever} (${band}); ${below}.`;
+  const now = `${of100(pick(outcome.now, count))} of 100 are ${outcome.words.now} in that year`;
+  return `${pick(view.years, count)}: ${ever} (${band}); ${now}.`;
 }
 
 export function readPatches(view: ReportView, count: number): string {

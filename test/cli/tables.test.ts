@@ -104,7 +104,7 @@ describe('what is missing', () => {
       rows.find((row) => row['table'] === table && row['column'] === column)?.['unit'];
     expect(unit('patches', 'area')).toBe('km2');
     expect(unit('abundance', 'quantile_0.5')).toBe('animals');
-    expect(unit('chances_by_year', 'ever_below')).toBe('share');
+    expect(unit('chances_by_year', 'ever')).toBe('share');
     expect(unit('abundance', 'year')).toBe('year');
   });
 });

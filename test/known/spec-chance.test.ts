@@ -30,23 +30,23 @@ run: { replicates: ${replicates}, seed: 21 }
 
   test('all gone by the tenth count with a chance of 0.1031309', () => {
     expect(goneBy(10)).toBeCloseTo(0.1031309, 7);
-    expect(Math.abs(byYear[9]!.everBelow - 0.1031309)).toBeLessThan(within(0.1031309, replicates));
+    expect(Math.abs(byYear[9]!.ever - 0.1031309)).toBeLessThan(within(0.1031309, replicates));
   });
 
   test('the whole curve: chance (1 − 0.8^t)²⁰ at every count, in the band that holds for all of it', () => {
-    byYear.forEach(({ everBelow, lower, upper, below }, i) => {
-      expect(Math.abs(everBelow - goneBy(i + 1))).toBeLessThan(4.5 * 0.5 * Math.sqrt(1 / replicates));
-      expect(lower).toBeLessThanOrEqual(everBelow);
-      expect(upper).toBeGreaterThanOrEqual(everBelow);
+    byYear.forEach(({ ever, lower, upper, now }, i) => {
+      expect(Math.abs(ever - goneBy(i + 1))).toBeLessThan(4.5 * 0.5 * Math.sqrt(1 / replicates));
+      expect(lower).toBeLessThanOrEqual(ever);
+      expect(upper).toBeGreaterThanOrEqual(ever);
       // Nobody comes back.
-      expect(below).toBe(everBelow);
+      expect(now).toBe(ever);
     });
     expect(ever.probability).toBeGreaterThan(0.9999);
   });
 
   test('lasts 16.62 years on average', () => {
     // Mean of the time is the sum of the chances of not being gone yet; its SD is below 6 years.
-    const mean = byYear.reduce((sum, { everBelow }) => sum + (1 - everBelow), 1);
+    const mean = byYear.reduce((sum, { ever }) => sum + (1 - ever), 1);
     expect(Math.abs(mean - 16.62298)).toBeLessThan((4.5 * 6) / Math.sqrt(replicates));
   });
 
@@ -78,7 +78,7 @@ run: { replicates: 50, seed: 1 }
   );
 
   test('never before the fourth count, always at it', () => {
-    expect(results.outcomes[0]!.byYear.map((one) => one.everBelow)).toEqual([0, 0, 0, 1, 1, 1]);
+    expect(results.outcomes[0]!.byYear.map((one) => one.ever)).toEqual([0, 0, 0, 1, 1, 1]);
     expect(results.abundance.whole.map((one) => one.mean)).toEqual([10, 9, 7, 4, 0, 0, 0]);
     expect(results.abundance.whole.every((one) => one.sd === 0)).toBe(true);
   });

@@ -21,7 +21,7 @@ outcomes: { gone: { of: [adult], below: 1 } }
 
 /** Shares of runs that have died out by each year, and the number of runs. */
 function goneBy(text: string, replicates = 20_000): readonly number[] {
-  return runModel(compileText(text, { replicates })).outcomes[0]!.byYear.map(({ everBelow }) => everBelow);
+  return runModel(compileText(text, { replicates })).outcomes[0]!.byYear.map(({ ever }) => ever);
 }
 
 /** Within 5 standard errors of a share. */

@@ -124,16 +124,22 @@ function fixtureModel(choice: FixtureChoice): Model {
     outcomes: [
       {
         name: text('few hares'),
-        weights: Float64Array.of(0, 0, 1),
+        weights: [Float64Array.of(0, 0, 1)],
         patches: new Uint8Array(8).fill(1),
-        below: 40,
+        over: 'sum',
+        event: { is: 'below', than: 40 },
+        counts: 1,
+        words: { happened: 'fallen below', now: 'below' },
         definition: definitions[0],
       },
       {
         name: text('north empty'),
-        weights: Float64Array.of(0, 1, 1),
+        weights: [Float64Array.of(0, 1, 1)],
         patches: Uint8Array.of(0, 0, 0, 0, 0, 1, 0, 0),
-        below: 5,
+        over: 'sum',
+        event: { is: 'below', than: 5 },
+        counts: 1,
+        words: { happened: 'fallen below', now: 'below' },
         definition: definitions[1],
       },
     ],
@@ -259,27 +265,30 @@ function summaries(value: (r: number, t: number) => number): YearSummary[] {
 
 function outcome(model: Model, k: number, value: (r: number, t: number) => number): RunResults['outcomes'][number] {
   const rule = model.outcomes[k]!;
-  const ever = new Float64Array(steps + 1);
+  const come = new Float64Array(steps + 1);
   const now = new Float64Array(steps + 1);
   for (let r = 0; r < futures; r++) {
     let fallen = false;
     for (let t = 1; t <= steps; t++) {
-      const below = value(r, t) < rule.below;
+      const below = rule.event.is === 'below' && value(r, t) < rule.event.than;
       fallen ||= below;
-      ever[t] = ever[t]! + (fallen ? 1 / futures : 0);
+      come[t] = come[t]! + (fallen ? 1 / futures : 0);
       now[t] = now[t]! + (below ? 1 / futures : 0);
     }
   }
-  const counts = Array.from(ever, (everBelow, t) => ({
+  const counts = Array.from(come, (ever, t) => ({
     year: firstYear - 1 + t,
-    everBelow,
-    lower: Math.max(0, everBelow - 0.0304),
-    upper: Math.min(1, everBelow + 0.0304),
-    below: now[t]!,
+    ever,
+    lower: Math.max(0, ever - 0.0304),
+    upper: Math.min(1, ever + 0.0304),
+    now: now[t]!,
   }));
   const byYear = counts.slice(1);
-  const { name, definition, below } = rule;
-  return { name, definition, below, ever: chance(ever[steps]!), atEnd: chance(now[steps]!), byYear };
+  const { name, definition, event, counts: asked, words } = rule;
+  const quantiles = { '0.05': firstYear + 9, '0.25': null, '0.5': null, '0.75': null, '0.95': null };
+  const whenFirst = { quantiles, meanYears: 12 };
+  const told = { name, definition, event, counts: asked, words };
+  return { ...told, ever: chance(come[steps]!), atEnd: chance(now[steps]!), whenFirst, byYear };
 }
 
 function chance(probability: number): Chance {

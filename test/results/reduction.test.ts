@@ -5,7 +5,7 @@ import type { BatchCounts } from '../../src/kernel/output.ts';
 import { binOf, exactBelow, middleOf, relativeError } from '../../src/results/reduction/bins.ts';
 import { ExactValues } from '../../src/results/reduction/exact.ts';
 import { isExact, mostExactValues, openQuantiles, quantilesOf } from '../../src/results/reduction/quantiles.ts';
-import { Reduction } from '../../src/results/reduction/reduction.ts';
+import { Reduction, type ReductionShape } from '../../src/results/reduction/reduction.ts';
 import { Sketches } from '../../src/results/reduction/sketch.ts';
 
 /** Whole numbers that look random, the same in every run. */
@@ -17,8 +17,14 @@ function numbers(seed: number): (below: number) => number {
   };
 }
 
-const shape = { patches: 3, steps: 4, replicates: 200, below: [50], handled: 0 };
-const columns = 1 + shape.patches + shape.below.length;
+const shape: ReductionShape = {
+  patches: 3,
+  steps: 4,
+  replicates: 200,
+  outcomes: [{ event: { is: 'below', than: 50 }, counts: 1 }],
+  handled: 0,
+};
+const columns = 1 + shape.patches + shape.outcomes.length;
 
 function batch(first: number, count: number): BatchCounts {
   const draw = numbers(first + 1);
@@ -39,7 +45,7 @@ const batches = Array.from({ length: 13 }, (_, i) => batch(i * 16, i === 12 ? 8 
 function reduced(order: readonly BatchCounts[]): unknown {
   const reduction = new Reduction(shape);
   for (const one of order) reduction.take(one);
-  const { runs, whole, patches, inUse, falls, lowest, stopped } = reduction;
+  const { runs, whole, patches, inUse, hits, lowest, stopped } = reduction;
   const cells = [...Array(shape.steps + 1).keys()];
   return {
     runs,
@@ -50,7 +56,7 @@ function reduced(order: readonly BatchCounts[]): unknown {
     inUse: cells.map((t) => inUse.summary(t, runs)),
     patches: cells.flatMap((t) => [0, 1, 2].map((p) => patches.summary(t * 3 + p, runs))),
     empty: cells.map((t) => patches.empty(t * 3)),
-    falls: falls.map(({ first, belowAt, firstAt }) => [[...first], [...belowAt], [...firstAt]]),
+    hits: hits.map(({ first, nowAt, firstAt }) => [[...first], [...nowAt], [...firstAt]]),
   };
 }
 
@@ -90,7 +96,7 @@ describe('a reduction', () => {
       '0.95': values[189],
     });
     const below = kept.filter(([one, lane]) => at(one, lane, 4) < 50).length;
-    expect(reduction.falls[0]!.belowAt[t]).toBe(below);
+    expect(reduction.hits[0]!.nowAt[t]).toBe(below);
   });
 });
 

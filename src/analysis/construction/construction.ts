@@ -8,7 +8,7 @@ import { lifeCycle } from './life-cycle.ts';
 import { longLives } from './longevity.ts';
 import { fastGrowth } from './growth.ts';
 import { longHorizon } from './horizon.ts';
-import { alreadyBelow } from './outcomes.ts';
+import { settledOutcomes } from './outcomes.ts';
 import { apparentSurvival } from './sources.ts';
 
 const checks: readonly ((compiled: CompiledModel) => readonly Finding[])[] = [
@@ -20,7 +20,7 @@ const checks: readonly ((compiled: CompiledModel) => readonly Finding[])[] = [
   lifeCycle,
   uncountedCrowding,
   longHorizon,
-  alreadyBelow,
+  settledOutcomes,
 ];
 
 export function constructionFindings(compiled: CompiledModel): readonly Finding[] {

@@ -3,6 +3,7 @@ import * as layout from '../../../assembly/layout.ts';
 import type * as M from '../../model/model.ts';
 import { addRooms, addSlotLists } from './slot-lists.ts';
 import { breedingRecord } from './breeding.ts';
+import { countRecord } from './count.ts';
 import { handlingRecord } from './handling.ts';
 import { addMovement } from './movement.ts';
 import type { PhasePlace } from './place.ts';
@@ -31,16 +32,6 @@ export function phaseRecord(phase: M.Phase, place: PhasePlace): Int32Array {
     case 'add':
       return handlingRecord(phase, place);
   }
-}
-
-function countRecord({ list, model, index, key }: PhasePlace): Int32Array {
-  const weights = Float64Array.from(model.outcomes.flatMap((outcome) => [...outcome.weights]));
-  const patches = Int32Array.from(model.outcomes.flatMap((outcome) => [...outcome.patches]));
-  return record(layout.opCount, key, index, [
-    list.add(plain(layout.kindOutcomeWeights, weights, 'outcomes')),
-    list.add(plain(layout.kindOutcomePatches, patches, 'outcomes')),
-    model.outcomes.length,
-  ]);
 }
 
 function survivalRecord(phase: M.SurvivalPhase, { list, model, index, key }: PhasePlace): Int32Array {

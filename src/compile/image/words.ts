@@ -28,6 +28,7 @@ const kinds: readonly (readonly [number, string])[] = [
   [layout.kindOutcomeWeights, 'outcome weights'],
   [layout.kindOutcomePatches, 'outcome patches'],
   [layout.kindNames, 'names'],
+  [layout.kindOutcomeRules, 'outcome rules'],
   [layout.kindColumnKeys, 'column keys'],
   [layout.kindFactorStart, 'factor start'],
   [layout.kindFactorColumn, 'factor column'],
@@ -122,7 +123,7 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
   [layout.opTake, ['take', ...handled]],
   [layout.opMove, ['move', ...handled]],
   [layout.opAdd, ['add', ...handled]],
-  [layout.opCount, ['count', 'weights', 'patches', 'outcomes']],
+  [layout.opCount, ['count', 'weights', 'patches', 'outcomes', 'rules']],
 ];
 
 const kindWords = new Map(kinds);

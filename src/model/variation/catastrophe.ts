@@ -7,6 +7,7 @@ import type { Catastrophe, MultipliedRate } from '../chance.ts';
 import { classIndex, fail, patchIndex, type Context } from '../context.ts';
 import type { Phase, SurvivalPhase } from '../model.ts';
 import { requirePlaces } from '../places.ts';
+import { wholeYears } from '../years.ts';
 import { findRates, meanRate, rateWords, tableOf, tellNoRates } from './rate-name.ts';
 
 /** In the order of their names. */
@@ -74,18 +75,6 @@ function chanceOf(context: Context, name: string, text: string): Pick<Catastroph
 
 function number(context: Context, expression: number | string, path: SpecPath): number {
   return context.numbers.value(expression, path, { year: context.time.firstYear });
-}
-
-function wholeYears(context: Context, quantity: number | string | undefined, path: SpecPath): number {
-  if (quantity === undefined) return 1;
-  const read = readQuantity(quantity, 'time');
-  const years = read.ok ? read.value : NaN;
-  if (Number.isInteger(years) && years >= 1) return years;
-  fail(context, 'out-of-range', path, {
-    message: 'A step is a year, so this is a whole number of years',
-    details: { found: String(quantity), expected: 'such as `2 years`' },
-  });
-  return 1;
 }
 
 function originsOf(context: Context, name: string, list: readonly string[] | undefined): readonly number[] {

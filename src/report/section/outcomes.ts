@@ -7,6 +7,7 @@ import { scrolling } from '../../view/table.ts';
 import { finished, lastYear } from '../answer.ts';
 import { handledWords } from '../handled-words.ts';
 import { lowestWords } from '../lowest-words.ts';
+import { whenWords } from '../when-words.ts';
 import { list, section } from './section.ts';
 
 export function outcomesSection(model: Model, results: RunResults): Markup {
@@ -34,12 +35,18 @@ function outcomeTable(results: RunResults): Markup {
   );
 }
 
-function outcomeRows({ name, definition, ever, atEnd }: OutcomeResult, end: number, unknown: string): Markup {
-  const words = mark`<bdi>${name}</bdi><small><bdi>${definition}</bdi></small>`;
+function outcomeRows(outcome: OutcomeResult, end: number, unknown: string): Markup {
+  const { name, definition, words: said, ever, atEnd } = outcome;
+  const when = whenWords(outcome, end);
+  const words = mark`<bdi>${name}</bdi><small><bdi>${definition}</bdi>${when === null ? null : mark`. ${capital(when)}.`}</small>`;
   return mark`<tbody>
-<tr><th scope="rowgroup" rowspan="2">${words}</th>${chanceCells('having fallen below', ever, unknown)}</tr>
-<tr>${chanceCells(`being below in ${end}`, atEnd, unknown)}</tr>
+<tr><th scope="rowgroup" rowspan="2">${words}</th>${chanceCells(`having ${said.happened}`, ever, unknown)}</tr>
+<tr>${chanceCells(`being ${said.now} in ${end}`, atEnd, unknown)}</tr>
 </tbody>`;
+}
+
+function capital(text: string): string {
+  return `${text.slice(0, 1).toUpperCase()}${text.slice(1)}`;
 }
 
 function chanceCells(of: string, { probability, interval, intervalFromUnknown }: Chance, none: string): Markup {

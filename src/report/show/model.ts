@@ -36,9 +36,9 @@ export function modelJson(model: Model): Readonly<Record<string, unknown>> {
     ...(uncertainty === null ? {} : { uncertainty: uncertaintyJson(uncertainty) }),
     ...(draws === 0 ? {} : { draws }),
     start: startJson(model, start),
-    outcomes: outcomes.map(({ weights, patches: where, ...one }) => ({
-      ...one,
-      weights: named(model.classes, weights),
+    outcomes: outcomes.map(({ name, definition, event, counts, over, weights, patches: where }) => ({
+      ...{ name, definition, event, counts, over },
+      weights: weights.map((row) => named(model.classes, row)),
       in: patches.filter((_, p) => where[p] === 1).map(({ name }) => name),
     })),
   };

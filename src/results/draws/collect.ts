@@ -9,9 +9,9 @@ import type { DrawnValues } from './plan.ts';
 /** Runs and hits of one draw that could be run, by outcome. */
 interface FinishedDraw {
   readonly runs: number;
-  /** By outcome: runs that had fallen below by count t, and those below at the end. */
-  readonly fallenBy: readonly Float64Array[];
-  readonly belowAtEnd: readonly number[];
+  /** By outcome: runs that had come to it by count t, and those in which it is so at the end. */
+  readonly comeBy: readonly Float64Array[];
+  readonly soAtEnd: readonly number[];
   /** Mean of the lowest counts. */
   readonly lowest: number;
 }
@@ -40,19 +40,19 @@ export class DrawCollector {
     const after = counted(this.#reduction);
     const less = (now: Float64Array, then: Float64Array | undefined) => now.map((value, t) => value - (then?.[t] ?? 0));
     const runs = after.runs - this.#before.runs;
-    const fallenBy = after.fallenBy.map((now, k) => less(now, this.#before.fallenBy[k]));
-    const belowAtEnd = after.belowAtEnd.map((now, k) => now - (this.#before.belowAtEnd[k] ?? 0));
+    const comeBy = after.comeBy.map((now, k) => less(now, this.#before.comeBy[k]));
+    const soAtEnd = after.soAtEnd.map((now, k) => now - (this.#before.soAtEnd[k] ?? 0));
     this.#before = after;
     const lowest = meanFrom(this.#reduction.lowest, this.#offset, this.#model.replicates);
     this.#offset += this.#model.replicates;
-    this.#finished.push({ runs, fallenBy, belowAtEnd, lowest });
-    const ever = fallenBy.map((curve) => (runs === 0 ? null : (curve.at(-1) ?? 0) / runs));
-    this.#rows.push({ draw: draw + 1, values, failure: null, everBelow: ever });
+    this.#finished.push({ runs, comeBy, soAtEnd, lowest });
+    const ever = comeBy.map((curve) => (runs === 0 ? null : (curve.at(-1) ?? 0) / runs));
+    this.#rows.push({ draw: draw + 1, values, failure: null, ever });
   }
 
   /** A draw that no model can have. */
   fail(draw: number, values: DrawnValues, failure: string): void {
-    this.#rows.push({ draw: draw + 1, values, failure, everBelow: this.#model.outcomes.map(() => null) });
+    this.#rows.push({ draw: draw + 1, values, failure, ever: this.#model.outcomes.map(() => null) });
   }
 
   /** Draws that could be run. */
@@ -79,11 +79,9 @@ export class DrawCollector {
   }
 
   #outcome(outcome: OutcomeResult, k: number): OutcomeResult {
-    const ever = this.#finished.map(({ runs, fallenBy }): DrawCount => ({ hits: fallenBy[k]?.at(-1) ?? 0, runs }));
-    const atEnd = this.#finished.map(({ runs, belowAtEnd }): DrawCount => ({ hits: belowAtEnd[k] ?? 0, runs }));
-    const curves = this.#finished.map(({ runs, fallenBy }) =>
-      (fallenBy[k] ?? new Float64Array(0)).map((n) => n / runs),
-    );
+    const ever = this.#finished.map(({ runs, comeBy }): DrawCount => ({ hits: comeBy[k]?.at(-1) ?? 0, runs }));
+    const atEnd = this.#finished.map(({ runs, soAtEnd }): DrawCount => ({ hits: soAtEnd[k] ?? 0, runs }));
+    const curves = this.#finished.map(({ runs, comeBy }) => (comeBy[k] ?? new Float64Array(0)).map((n) => n / runs));
     const band = bandOverDraws(curves);
     return {
       ...outcome,
@@ -91,8 +89,8 @@ export class DrawCollector {
       atEnd: overDraws(outcome.atEnd, atEnd),
       byYear: outcome.byYear.map((year) => ({
         ...year,
-        lower: Math.max(0, year.everBelow - band),
-        upper: Math.min(1, year.everBelow + band),
+        lower: Math.max(0, year.ever - band),
+        upper: Math.min(1, year.ever + band),
       })),
     };
   }
@@ -110,17 +108,17 @@ function meanFrom(lowest: Int32Array, first: number, count: number): number {
 
 interface Counted {
   readonly runs: number;
-  readonly fallenBy: readonly Float64Array[];
-  readonly belowAtEnd: readonly number[];
+  readonly comeBy: readonly Float64Array[];
+  readonly soAtEnd: readonly number[];
 }
 
-function counted({ runs, falls }: Reduction): Counted {
+function counted({ runs, hits }: Reduction): Counted {
   return {
     runs,
-    fallenBy: falls.map(({ firstAt }) => {
+    comeBy: hits.map(({ firstAt }) => {
       let sum = 0;
       return Float64Array.from(firstAt.subarray(1), (first) => (sum += first));
     }),
-    belowAtEnd: falls.map(({ belowAt }) => belowAt.at(-1) ?? 0),
+    soAtEnd: hits.map(({ nowAt }) => nowAt.at(-1) ?? 0),
   };
 }

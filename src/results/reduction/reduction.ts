@@ -3,8 +3,8 @@
 import { lanes } from '../../kernel/batch.ts';
 import type { BatchCounts, Stop } from '../../kernel/output.ts';
 import { Counts } from './counts.ts';
-import { Falls } from './falls.ts';
 import { handledParts, HandledTotals } from './handled.ts';
+import { Hits, type Asked } from './hits.ts';
 import { Sums, type Moments } from './sums.ts';
 
 export interface ReductionShape {
@@ -12,8 +12,7 @@ export interface ReductionShape {
   readonly steps: number;
   /** The largest number of replicates that can come. */
   readonly replicates: number;
-  /** Thresholds of the outcomes. */
-  readonly below: readonly number[];
+  readonly outcomes: readonly Asked[];
   /** Takes, moves and releases of the model. */
   readonly handled: number;
 }
@@ -30,7 +29,7 @@ export class Reduction {
   readonly patches: Counts;
   /** Patches with at least one animal; cell t. */
   readonly inUse: Counts;
-  readonly falls: readonly Falls[];
+  readonly hits: readonly Hits[];
   readonly handled: readonly HandledTotals[];
   /** Of each replicate the lowest count of all animals, the start included; −1 for those that did not come or were stopped. */
   readonly lowest: Int32Array;
@@ -41,12 +40,12 @@ export class Reduction {
   readonly #used = new Float64Array(lanes);
 
   constructor(shape: ReductionShape) {
-    const { patches, steps, replicates, below, handled } = shape;
+    const { patches, steps, replicates, outcomes, handled } = shape;
     this.shape = shape;
     this.whole = new Counts(steps + 1, replicates);
     this.patches = new Counts((steps + 1) * patches, replicates);
     this.inUse = new Counts(steps + 1, replicates);
-    this.falls = below.map((threshold) => new Falls({ below: threshold, steps, replicates }));
+    this.hits = outcomes.map(({ event, counts }) => new Hits({ event, counts, steps, replicates }));
     this.handled = Array.from({ length: handled }, () => new HandledTotals(steps, replicates, lanes));
     this.lowest = new Int32Array(replicates).fill(-1);
   }
@@ -87,11 +86,10 @@ export class Reduction {
       for (let i = 0; i < count; i++) used[i] = (used[i] ?? 0) + ((values[i] ?? 0) > 0 ? 1 : 0);
     }
     this.inUse.add(t, used, count);
-    if (t === 0) return;
-    this.falls.forEach((falls, k) => {
+    this.hits.forEach((hits, k) => {
       this.#read(batch, kept, t, firstPatchColumn + patches + k);
       kept.forEach((lane, i) => {
-        falls.add(t, batch.first + lane, values[i] ?? 0);
+        hits.add(t, batch.first + lane, values[i] ?? 0);
       });
     });
   }
@@ -104,7 +102,7 @@ export class Reduction {
   }
 
   get #firstHandled(): number {
-    return firstPatchColumn + this.shape.patches + this.falls.length;
+    return firstPatchColumn + this.shape.patches + this.hits.length;
   }
 
   #takeHandled(batch: BatchCounts, kept: readonly number[]): void {

@@ -1,24 +1,77 @@
 import { Type } from 'typebox';
-import { byNumber, classList, Name, orFile } from './values.ts';
+import { byNumber, classList, Name, orFile, quantity } from './values.ts';
+
+const counted = { description: 'Classes that are counted, alike or with a weight each.', examples: ['[adult]'] };
 
 export const Outcome = Type.Object(
   {
-    of: classList({ description: 'Classes that are counted.', examples: ['[adult]'] }),
+    of: Type.Union(
+      [
+        Type.Record(
+          Type.String(),
+          Type.Number({ minimum: 0, description: 'What one animal of the class counts.', examples: [0.5] }),
+          { 'x-key': 'CLASS' },
+        ),
+        classList(counted),
+      ],
+      { title: 'a list of classes, `all`, or classes with weights', ...counted },
+    ),
     in: Type.Optional(
       Type.Union([Name, Type.Array(Name, { minItems: 1, uniqueItems: true })], {
         title: 'a patch or a list of patches',
-        description: 'Patches that are counted together; without it, all.',
+        description: 'Patches that are counted; without it, all.',
         examples: ['North fen'],
       }),
     ),
-    below: Type.Number({
-      exclusiveMinimum: 0,
-      description: 'True as soon as fewer than this are counted.',
-      examples: [40],
-      'x-unit': 'animals',
-    }),
+    counted: Type.Optional(
+      Type.Union([Type.Literal('as a whole'), Type.Literal('in each patch'), Type.Literal('in any patch')], {
+        description:
+          'Whether the patches are added up, or the count of each of them is looked at by itself: true when it holds in each of them at the same time, or in at least one.',
+        examples: ['in each patch'],
+        default: 'as a whole',
+      }),
+    ),
+    below: Type.Optional(
+      Type.Number({
+        exclusiveMinimum: 0,
+        description:
+          'True when fewer than this are counted. An outcome has one of `below`, `above`, `fallen-by`, `lacking`.',
+        examples: [40],
+        'x-unit': 'animals',
+      }),
+    ),
+    above: Type.Optional(
+      Type.Number({
+        minimum: 0,
+        description: 'True when more than this are counted.',
+        examples: [200],
+        'x-unit': 'animals',
+      }),
+    ),
+    'fallen-by': Type.Optional(
+      quantity('share', {
+        description: 'True when the count has fallen by this share of that at the start, or more.',
+        examples: ['50 %'],
+      }),
+    ),
+    lacking: Type.Optional(
+      Type.Literal('one sex', {
+        description: 'True when of the classes counted nobody of one sex is there.',
+        examples: ['one sex'],
+      }),
+    ),
+    for: Type.Optional(
+      quantity('time', {
+        description: 'For how long it must hold, in a whole number of yearly counts one after the other.',
+        examples: ['5 years'],
+        default: '1 year',
+      }),
+    ),
   },
-  { additionalProperties: false, title: 'an outcome: { of: …, below: … }' },
+  {
+    additionalProperties: false,
+    title: 'an outcome: { of: …, below: … }, or `above`, `fallen-by`, `lacking` in the place of `below`',
+  },
 );
 
 export const Outcomes = Type.Record(Type.String(), Outcome, {
