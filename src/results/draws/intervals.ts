@@ -16,20 +16,39 @@ export interface DrawCount {
  */
 export function intervalFromUnknown(draws: readonly DrawCount[]): Interval | null {
   const known = draws.filter(({ runs }) => runs > 1);
-  if (known.length < 2) return null;
   const chances = known.map(({ hits, runs }) => hits / runs);
-  const mean = average(chances);
-  const spread = chances.reduce((sum, p) => sum + (p - mean) * (p - mean), 0) / (chances.length - 1);
-  const fromRuns = average(known.map(({ runs }, i) => ((chances[i] ?? 0) * (1 - (chances[i] ?? 0))) / (runs - 1)));
-  const kept = spread > 0 ? Math.sqrt(Math.max(0, spread - fromRuns) / spread) : 0;
-  const sorted = chances.map((p) => mean + kept * (p - mean)).sort((a, b) => a - b);
+  const noises = known.map(({ runs }, i) => ((chances[i] ?? 0) * (1 - (chances[i] ?? 0))) / (runs - 1));
+  const middle = middleOfDraws(chances, noises);
+  if (middle === null) return null;
+  return { lower: Math.max(0, middle.lower), upper: Math.min(1, middle.upper), ...ofDraws(known.length) };
+}
+
+/** The words of an interval over draws. */
+export function ofDraws(draws: number): Pick<Interval, 'level' | 'method' | 'from'> {
   return {
-    lower: Math.max(0, ranked(sorted, 0.025)),
-    upper: Math.min(1, ranked(sorted, 0.975)),
     level: 0.95,
-    method: `middle of ${known.length} draws, without the part of their spread that comes from the number of runs`,
+    method: `middle of ${draws} draws, without the part of their spread that comes from the number of runs`,
     from: 'what is not known',
   };
+}
+
+/**
+ * The middle 95 % of numbers that each draw knows from a number of runs only: with the variance that this alone gives each
+ * (`noises`), all are drawn towards their mean until that part of their spread is gone. So many draws know their spread only
+ * so well: `above` takes it so many of its standard errors above what was seen, never wider than that. Null for fewer than two.
+ */
+export function middleOfDraws(
+  values: readonly number[],
+  noises: readonly number[],
+  above = 0,
+): { readonly lower: number; readonly upper: number } | null {
+  if (values.length < 2) return null;
+  const mean = average(values);
+  const spread = values.reduce((sum, p) => sum + (p - mean) * (p - mean), 0) / (values.length - 1);
+  const wide = spread * (1 + above * Math.sqrt(2 / (values.length - 1)));
+  const kept = spread > 0 ? Math.sqrt(Math.min(1, Math.max(0, wide - average(noises)) / spread)) : 0;
+  const sorted = values.map((p) => mean + kept * (p - mean)).sort((a, b) => a - b);
+  return { lower: ranked(sorted, 0.025), upper: ranked(sorted, 0.975) };
 }
 
 /** Between the order statistics around share · (n + 1). */
@@ -44,12 +63,13 @@ function average(values: readonly number[]): number {
   return values.reduce((a, b) => a + b, 0) / values.length;
 }
 
-const resamples = 2000;
+export const resamples = 2000;
 
 /** How often each of the draws comes when they are drawn again with replacement; the same for every b and number. */
-function resampled(draws: number, b: number): Float64Array {
+export function resampled(draws: number, b: number): Float64Array {
   const weights = new Float64Array(draws);
-  let state = Math.imul(b + 1, 0x9e3779b9);
+  // Scrambled, so that one resampling is not the other moved on by a place.
+  let state = scrambled(Math.imul(b + 1, 0x85ebca77));
   for (let i = 0; i < draws; i++) {
     state = (state + 0x9e3779b9) | 0;
     const chosen = Math.floor((scrambled(state) / 4294967296) * draws);
