@@ -108,14 +108,15 @@ export async function runModelWith(
 }
 
 /** As if less had been asked for: what was finished of a run. */
-function withSettings(compiled: CompiledModel, done: { replicates: number } | { draws: number }): CompiledModel {
+export function withSettings(compiled: CompiledModel, done: { replicates: number } | { draws: number }): CompiledModel {
   const { named, ...core } = compiled.spec;
   const spec = { ...core, run: { ...core.run, ...done }, named };
   const model = { ...compiled.model, ...done };
   return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
 }
 
-function summarise({ model, provenance }: CompiledModel, reduction: Reduction): RunResults {
+/** Of a reduction that holds the runs of this model. */
+export function summarise({ model, provenance }: CompiledModel, reduction: Reduction): RunResults {
   return summariseRun({ model, reduction, provenance, cautions: standingCautions(model) });
 }
 
@@ -144,7 +145,7 @@ function* drawsOf({ spec, model }: CompiledModel): Generator<Draw> {
 }
 
 /** For all draws together. */
-function openPooled(model: Model): Reduction {
+export function openPooled(model: Model): Reduction {
   return openReduction({ ...model, replicates: model.replicates * model.draws });
 }
 

@@ -12,10 +12,10 @@ export function sharesOfBest(rows: readonly Float64Array[], better: Better): Flo
     const best = better === 'less' ? Math.min(...row) : Math.max(...row);
     const ties = row.reduce((sum, value) => sum + (value === best ? 1 : 0), 0);
     row.forEach((value, plan) => {
-      if (value === best) shares[plan] = (shares[plan] ?? 0) + 1 / ties / rows.length;
+      if (value === best) shares[plan] = (shares[plan] ?? 0) + 1 / ties;
     });
   }
-  return shares;
+  return shares.map((best) => best / rows.length);
 }
 
 /** What is asked of plans: its rows stand for the same futures or draws, in the same order, in every objective. */
@@ -34,10 +34,10 @@ export function sharesBeaten(objectives: readonly ObjectiveRows[]): Float64Array
   (first?.rows ?? []).forEach((_, r) => {
     const values = objectives.map(({ better, rows }) => rows[r]?.map((value) => (better === 'less' ? value : -value)));
     for (let plan = 0; plan < plans; plan++) {
-      if (isBeaten(values, plan)) shares[plan] = (shares[plan] ?? 0) + 1 / (first?.rows.length ?? 1);
+      if (isBeaten(values, plan)) shares[plan] = (shares[plan] ?? 0) + 1;
     }
   });
-  return shares;
+  return shares.map((rows) => rows / (first?.rows.length ?? 1));
 }
 
 /** Less is better in all. */

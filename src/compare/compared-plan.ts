@@ -1,0 +1,99 @@
+// One plan by itself, with what it costs and whether another is at least as good in everything.
+import { meanOf, varianceOf } from './paired-mean.ts';
+import type { Objective } from './objectives.ts';
+import type { Amount, ComparedPlan, OverBoth, PlanDifference, RiskPrice } from './results.ts';
+import type { PlanRun, PlansRun } from './run-plans.ts';
+import { costPerRisk } from './worth-the-money.ts';
+
+interface Beside {
+  readonly objectives: readonly Objective[];
+  /** 1 for the futures that count. */
+  readonly ended: Uint8Array;
+  readonly differences: readonly PlanDifference[];
+  readonly beaten: readonly OverBoth[];
+  readonly money: boolean;
+}
+
+export function comparedPlans(run: PlansRun, beside: Beside): readonly ComparedPlan[] {
+  const takes = run.runs.some(({ ledger }) => ledger.takes);
+  const free = notBeatenIn(beside);
+  return run.runs.map((one, p) => {
+    const { results, plan, ledger } = one;
+    const cost = beside.money
+      ? { presentValue: amountOf(ledger.presentValue, one), undiscounted: amountOf(ledger.undiscounted, one) }
+      : null;
+    return {
+      name: plan.name,
+      actions: plan.actions,
+      cost,
+      outcomes: results.outcomes.map(({ name, definition, ever, atEnd }) => ({
+        name,
+        definition,
+        probability: ever.probability,
+        intervals: { runs: ever.interval, unknown: ever.intervalFromUnknown },
+        atEnd,
+      })),
+      animalsAtEnd: lastYear(one),
+      meanLowestCount: results.meanLowestCount.mean,
+      animalsTaken: takes ? amountOf(ledger.taken, one) : null,
+      changeAtEnd: changeAtEnd(one),
+      notBeaten: free[p] ?? true,
+      beaten: beside.beaten[p] ?? { runs: 0, draws: null },
+      prices: cost === null || p === 0 ? [] : pricesOf(run, p, beside),
+      handled: results.handled,
+    };
+  });
+}
+
+/** Over the futures that came to their end. */
+function amountOf(values: Float64Array, { ledger }: PlanRun): Amount {
+  const kept = values.filter((_, i) => ledger.ended[i] === 1);
+  return { mean: meanOf(kept), sd: kept.length < 2 ? 0 : Math.sqrt(varianceOf(kept)) };
+}
+
+function lastYear({ results }: PlanRun): ComparedPlan['animalsAtEnd'] {
+  const last = results.abundance.whole.at(-1);
+  if (last === undefined) throw new RangeError('A run has no year.');
+  const { mean, sd, quantiles } = last;
+  return { mean, sd, quantiles };
+}
+
+/** Mean animals a year, over the last fifth of the years. */
+function changeAtEnd({ results: { abundance, years } }: PlanRun): number {
+  const stretch = Math.max(1, Math.round(years / 5));
+  const [then, now] = [abundance.whole.at(-1 - stretch), abundance.whole.at(-1)];
+  return ((now?.mean ?? 0) - (then?.mean ?? 0)) / stretch;
+}
+
+function notBeatenIn({ objectives, ended }: Beside): readonly boolean[] {
+  const deciding = objectives.filter(({ decides, better }) => decides && better !== null);
+  const plans = deciding[0]?.values.length ?? 0;
+  const means = deciding.map(({ values, better }) =>
+    values.map(
+      (plan) => (better === 'less' ? 1 : -1) * meanOf(Float64Array.from(plan).filter((_, i) => ended[i] === 1)),
+    ),
+  );
+  return Array.from({ length: plans }, (_, p) => {
+    const beats = (other: number): boolean => {
+      const steps = means.map((row) => (row[other] ?? 0) - (row[p] ?? 0));
+      return steps.every((step) => step <= 0) && steps.some((step) => step < 0);
+    };
+    return !Array.from({ length: plans }, (_, other) => other).some((other) => other !== p && beats(other));
+  });
+}
+
+function pricesOf({ runs }: PlansRun, p: number, { differences }: Beside): readonly RiskPrice[] {
+  const [now, own] = [runs[0], runs[p]];
+  if (now === undefined || own === undefined) return [];
+  const [from, to] = [now.plan.name, own.plan.name];
+  const more = amountOf(own.ledger.presentValue, own).mean - amountOf(now.ledger.presentValue, now).mean;
+  return differences
+    .filter((one) => one.of === 'chance' && one.from === from && one.to === to)
+    .map(({ outcome, estimate, interval, toldApart }): RiskPrice => {
+      const removed = { estimate: -estimate, lower: -interval.upper, upper: -interval.lower };
+      const price = toldApart ? costPerRisk(more, removed) : null;
+      if (price === null) return { outcome, costPerRisk: null, why: 'no reliable gain' };
+      if (!(more > 0)) return { outcome, costPerRisk: null, why: 'costs no more' };
+      return { outcome, costPerRisk: price, why: 'priced' };
+    });
+}

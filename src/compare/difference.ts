@@ -1,0 +1,112 @@
+// Any two plans in one objective: how far they lie apart in the same futures, and whether they can be told apart at all.
+import type { Interval } from '../results/results.ts';
+import type { Objective } from './objectives.ts';
+import {
+  meanDifferenceFromUnknown,
+  overDrawsMethod,
+  shareDifferenceFromRuns,
+  shareDifferenceFromUnknown,
+} from './over-draws.ts';
+import { meanDifference, pairedMeanMethod } from './paired-mean.ts';
+import {
+  countPairs,
+  pairedShareDifference,
+  pairedShareMethod,
+  type Estimate,
+  type PairedCounts,
+} from './paired-share.ts';
+import type { PlanDifference } from './results.ts';
+import type { PlansRun } from './run-plans.ts';
+
+export interface Pair {
+  readonly objective: Objective;
+  readonly from: number;
+  readonly to: number;
+}
+
+/** `ended` says which futures count. */
+export function differenceOf(run: PlansRun, { objective, from, to }: Pair, ended: Uint8Array): PlanDifference {
+  const nameOf = (plan: number): string => run.runs[plan]?.plan.name ?? '';
+  const names = { outcome: objective.name, of: objective.of, from: nameOf(from), to: nameOf(to) };
+  const found =
+    objective.of === 'chance'
+      ? ofShares(run, { objective, from, to }, ended)
+      : ofMeans(run, { objective, from, to }, ended);
+  if (areSame(run, { objective, from, to })) return { ...names, ...same(found.futures, run.draws.length > 0) };
+  const { estimate, interval, intervalFromUnknown } = found;
+  const apart = excludesZero(interval) && (intervalFromUnknown === null || excludesZero(intervalFromUnknown));
+  return {
+    ...names,
+    estimate,
+    interval,
+    intervalFromUnknown,
+    method: interval.method,
+    futures: found.futures,
+    toldApart: apart,
+  };
+}
+
+export function excludesZero({ lower, upper }: Pick<Estimate, 'lower' | 'upper'>): boolean {
+  return lower > 0 || upper < 0;
+}
+
+type Found = Pick<PlanDifference, 'estimate' | 'interval' | 'intervalFromUnknown' | 'futures'>;
+
+function ofShares({ draws, futures }: PlansRun, pair: Pair, ended: Uint8Array): Found {
+  const counts = (first: number, many: number): PairedCounts => {
+    const part = (plan: number): Uint8Array =>
+      Uint8Array.from(pair.objective.values[plan]?.subarray(first, first + many) ?? []);
+    return countPairs(part(pair.from), part(pair.to), ended.subarray(first, first + many));
+  };
+  const all = counts(0, futures);
+  if (draws.length === 0) {
+    const found = pairedShareDifference(all);
+    return {
+      estimate: found.estimate,
+      interval: named(found, pairedShareMethod),
+      intervalFromUnknown: null,
+      futures: all,
+    };
+  }
+  const each = draws.map((draw) => counts(draw.first, draw.futures));
+  const { estimate, ...ends } = shareDifferenceFromRuns(each);
+  const interval = named(ends, overDrawsMethod);
+  return { estimate, interval, intervalFromUnknown: shareDifferenceFromUnknown(each), futures: all };
+}
+
+function ofMeans({ draws, futures }: PlansRun, { objective, from, to }: Pair, ended: Uint8Array): Found {
+  const [before, after] = [objective.values[from], objective.values[to]];
+  const differences = (first: number, many: number): Float64Array => {
+    const kept: number[] = [];
+    for (let i = first; i < first + many; i++) if (ended[i] === 1) kept.push((after?.[i] ?? 0) - (before?.[i] ?? 0));
+    return Float64Array.from(kept);
+  };
+  if (draws.length === 0) {
+    const { estimate, ...ends } = meanDifference(differences(0, futures));
+    return { estimate, interval: named(ends, pairedMeanMethod), intervalFromUnknown: null, futures: null };
+  }
+  const each = draws.map((draw) => differences(draw.first, draw.futures));
+  const { estimate, ...ends } = meanDifference(Float64Array.from(each, (draw) => meanDifference(draw).estimate));
+  const interval = named(ends, overDrawsMethod);
+  return { estimate, interval, intervalFromUnknown: meanDifferenceFromUnknown(each), futures: null };
+}
+
+function named({ lower, upper }: Pick<Estimate, 'lower' | 'upper'>, method: string): Interval {
+  return { lower, upper, level: 0.95, method, from: 'the number of runs' };
+}
+
+/** One and the same model down to its last byte, with the same number in every future: no chance is left in it. */
+function areSame({ runs }: PlansRun, { objective, from, to }: Pair): boolean {
+  const [a, b] = [runs[from]?.compiled.image, runs[to]?.compiled.image];
+  if (a === undefined || b === undefined || a.byteLength !== b.byteLength) return false;
+  const [left, right] = [new Uint8Array(a), new Uint8Array(b)];
+  const [before, after] = [objective.values[from], objective.values[to]];
+  return left.every((byte, i) => byte === right[i]) && before?.every((value, i) => value === after?.[i]) === true;
+}
+
+function same(futures: PairedCounts | null, drawn: boolean): Omit<PlanDifference, 'outcome' | 'of' | 'from' | 'to'> {
+  const method = 'the two plans are one and the same model';
+  const none: Interval = { lower: 0, upper: 0, level: 0.95, method, from: 'the number of runs' };
+  const unknown: Interval | null = drawn ? { ...none, from: 'what is not known' } : null;
+  return { estimate: 0, interval: none, intervalFromUnknown: unknown, method, futures, toldApart: false };
+}

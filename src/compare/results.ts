@@ -1,0 +1,168 @@
+// What a comparison says, as data: printed by `--json` and read by the page.
+import type { Chance, Interval, Quantiles, RunResults } from '../results/results.ts';
+import type { Better } from './best.ts';
+import type { PairedCounts } from './paired-share.ts';
+import type { PlanAction } from './plan.ts';
+
+export interface Amount {
+  readonly mean: number;
+  readonly sd: number;
+}
+
+export interface AmountWithRange extends Amount {
+  readonly quantiles: Quantiles;
+}
+
+/** Shares from 0 to 1: with other futures of the same number, and over the draws of what is not known. */
+export interface OverBoth {
+  readonly runs: number;
+  /** Null where nothing was drawn. */
+  readonly draws: number | null;
+}
+
+export interface PlanOutcome {
+  readonly name: string;
+  readonly definition: string;
+  /** Of having happened at some count. */
+  readonly probability: number;
+  readonly intervals: { readonly runs: Interval; readonly unknown: Interval | null };
+  readonly atEnd: Chance;
+}
+
+/** Money for each unit of chance less, against the first plan. */
+export interface RiskPrice {
+  readonly outcome: string;
+  /** Null where the plan removes no risk for sure, or costs no more. */
+  readonly costPerRisk: { readonly estimate: number; readonly lower: number; readonly upper: number } | null;
+  readonly why: 'priced' | 'no reliable gain' | 'costs no more';
+}
+
+export interface ComparedPlan {
+  readonly name: string;
+  readonly actions: readonly PlanAction[];
+  /** Null where the model knows no money. */
+  readonly cost: { readonly presentValue: Amount; readonly undiscounted: Amount } | null;
+  readonly outcomes: readonly PlanOutcome[];
+  readonly animalsAtEnd: AmountWithRange;
+  readonly meanLowestCount: number;
+  /** Over all years; null where nothing is taken in any plan. */
+  readonly animalsTaken: Amount | null;
+  /** How the mean count changes a year over the last fifth of the years. */
+  readonly changeAtEnd: number;
+  /** No other plan is at least as good in every objective and better in one. */
+  readonly notBeaten: boolean;
+  /** Chance that some plan is. */
+  readonly beaten: OverBoth;
+  readonly prices: readonly RiskPrice[];
+  readonly handled: RunResults['handled'];
+}
+
+export interface PlanDifference {
+  /** Name of the objective. */
+  readonly outcome: string;
+  readonly of: 'chance' | 'animals' | 'money';
+  readonly from: string;
+  readonly to: string;
+  /** Under `to` less under `from`. */
+  readonly estimate: number;
+  readonly interval: Interval;
+  readonly intervalFromUnknown: Interval | null;
+  readonly method: string;
+  /** Futures by what became of them under the two; null for amounts. */
+  readonly futures: PairedCounts | null;
+  /** No interval holds 0. */
+  readonly toldApart: boolean;
+}
+
+export interface BestPlan {
+  readonly outcome: string;
+  readonly scenario: string;
+  /** Chance of being best with other futures of the same number; plans that are equally good share it. */
+  readonly probability: number;
+  /** Share of the draws in which it is; null where nothing was drawn. */
+  readonly probabilityOverDraws: number | null;
+}
+
+/** A patch under a plan against the first plan. */
+export interface PatchChange {
+  readonly patch: string;
+  readonly scenario: string;
+  /** Animals at the last count, more or less, with its 95 % interval. */
+  readonly animals: { readonly estimate: number; readonly lower: number; readonly upper: number };
+  /** Chance of standing empty at some count, under the first plan and under this one. */
+  readonly everEmpty: { readonly before: number; readonly after: number };
+  /** The difference of these chances. */
+  readonly everEmptyChange: { readonly estimate: number; readonly lower: number; readonly upper: number };
+}
+
+/** What a move does to where it takes its animals from. */
+export interface SourceRisk {
+  readonly scenario: string;
+  readonly action: string;
+  readonly source: string;
+  readonly change: PatchChange;
+  /** Animals that 95 of 100 futures without the plan still count there in the first year of the move; a floor for stopping. */
+  readonly stopBelow: number;
+  readonly year: number;
+}
+
+export interface Robustness {
+  readonly variant: string;
+  readonly what: string;
+  /** Why it was not run; null where it was. */
+  readonly notRun: string | null;
+  /** Plans by the first objective, the best first; empty where it was not run. */
+  readonly order: readonly string[];
+  readonly best: string | null;
+  /** Null where it was not run. No pair of plans that the model tells apart stands the other way round. */
+  readonly holds: boolean | null;
+  /** Pairs that stand the other way round, and whether this variant tells them apart. */
+  readonly reversed: readonly { readonly better: string; readonly worse: string; readonly toldApart: boolean }[];
+}
+
+export type Strength = 'clear' | 'limited' | 'none';
+
+export interface Statement {
+  readonly text: string;
+  readonly rule: string;
+  readonly strength: Strength;
+  /** Plans that the rule leaves. */
+  readonly plans: readonly string[];
+}
+
+export interface ObjectiveWords {
+  readonly name: string;
+  readonly definition: string;
+  readonly of: 'chance' | 'animals' | 'money';
+  /** Null where neither is better by itself. */
+  readonly better: Better | null;
+  /** It counts for being beaten in everything. */
+  readonly decides: boolean;
+}
+
+export interface Comparison {
+  readonly format: 'skein-compare/1';
+  readonly tool: RunResults['tool'];
+  readonly model: string;
+  readonly hash: string;
+  readonly seed: number;
+  readonly replicates: number;
+  readonly years: number;
+  readonly firstYear: number;
+  readonly money: { readonly currency: string; readonly priceYear: number | null; readonly discount: number } | null;
+  readonly objectives: readonly ObjectiveWords[];
+  readonly scenarios: readonly ComparedPlan[];
+  readonly differences: readonly PlanDifference[];
+  readonly best: readonly BestPlan[];
+  readonly patches: readonly PatchChange[];
+  readonly sources: readonly SourceRisk[];
+  /** Empty where it was not asked for. */
+  readonly robustness: readonly Robustness[];
+  readonly statement: Statement;
+  /** What is and is not said of the time after the last year. */
+  readonly afterHorizon: string;
+  readonly notDrawn?: true;
+  readonly draws?: { readonly number: number; readonly failed: number; readonly replicatesEach: number };
+  readonly stopped: RunResults['stopped'];
+  readonly cautions: readonly string[];
+}

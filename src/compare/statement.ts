@@ -1,0 +1,152 @@
+// One sentence on what the results support, under which rule, and how strongly. The rule is told, since it is not the only one.
+import type {
+  ComparedPlan,
+  Comparison,
+  ObjectiveWords,
+  PlanDifference,
+  Robustness,
+  Statement,
+  Strength,
+} from './results.ts';
+import { moneyWords, namesWords, percentWords, pointsWords } from './words.ts';
+
+export interface ToState {
+  readonly objectives: readonly ObjectiveWords[];
+  readonly plans: readonly ComparedPlan[];
+  readonly differences: readonly PlanDifference[];
+  readonly robustness: readonly Robustness[];
+  readonly money: Comparison['money'];
+  /** Whether what is not known was drawn. */
+  readonly drawn: boolean;
+}
+
+export function statementOf(to: ToState): Statement {
+  const [objective] = to.objectives;
+  const order = objective === undefined ? [] : planOrder(to, objective);
+  const [best] = order;
+  if (objective === undefined || best === undefined) {
+    return { text: 'There is nothing to decide between.', rule: ruleOf(to, ''), strength: 'none', plans: [] };
+  }
+  const apart = (other: ComparedPlan): boolean => between(to, objective, best, other)?.toldApart === true;
+  const close = order.filter((plan) => plan === best || !apart(plan));
+  const now = to.plans[0];
+  const gaining = close.filter((plan) => now !== undefined && between(to, objective, now, plan)?.toldApart === true);
+  const left = to.money === null ? gaining : cheapest(gaining);
+  const strength = strengthOf(to, { gains: now !== undefined && now !== best && apart(now), left });
+  const text = textOf(to, { objective, best, close, left });
+  return { text, rule: ruleOf(to, objective.name), strength, plans: left.map(({ name }) => name) };
+}
+
+/** The best first; plans that are equally good in the order of the text. */
+export function planOrder(to: Pick<ToState, 'plans'>, objective: ObjectiveWords): readonly ComparedPlan[] {
+  const sign = objective.better === 'more' ? -1 : 1;
+  return to.plans.toSorted((a, b) => sign * (valueOf(a, objective) - valueOf(b, objective)));
+}
+
+function valueOf(plan: ComparedPlan, { name, of }: ObjectiveWords): number {
+  if (of === 'chance') return plan.outcomes.find((one) => one.name === name)?.probability ?? NaN;
+  return plan.animalsAtEnd.mean;
+}
+
+function between(
+  { differences }: Pick<ToState, 'differences'>,
+  { name }: ObjectiveWords,
+  a: ComparedPlan,
+  b: ComparedPlan,
+): PlanDifference | undefined {
+  return differences.find(
+    (one) =>
+      one.outcome === name &&
+      ((one.from === a.name && one.to === b.name) || (one.from === b.name && one.to === a.name)),
+  );
+}
+
+function cheapest(plans: readonly ComparedPlan[]): readonly ComparedPlan[] {
+  const cost = (plan: ComparedPlan): number => plan.cost?.presentValue.mean ?? 0;
+  const least = Math.min(...plans.map(cost));
+  return plans.filter((plan) => cost(plan) === least);
+}
+
+function ruleOf({ money, plans }: ToState, outcome: string): string {
+  const now = plans[0]?.name ?? '';
+  const rule = `the plan that does best in “${outcome}”, with those that the 95 % interval of the paired difference cannot tell from it
+and can tell from “${now}”${money === null ? '' : '; of these, the one that costs least'}`;
+  return rule.replaceAll('\n', ' ');
+}
+
+interface Standing {
+  /** The best plan is told apart from the first one. */
+  readonly gains: boolean;
+  readonly left: readonly ComparedPlan[];
+}
+
+function strengthOf({ plans, drawn, robustness }: ToState, { gains, left }: Standing): Strength {
+  const now = plans[0];
+  const idle = now !== undefined && left.includes(now);
+  if (!gains || idle) return 'none';
+  const whole = drawn && left.length === 1 && robustness.every(({ holds }) => holds !== false);
+  return whole ? 'clear' : 'limited';
+}
+
+interface Told {
+  readonly objective: ObjectiveWords;
+  readonly best: ComparedPlan;
+  readonly close: readonly ComparedPlan[];
+  readonly left: readonly ComparedPlan[];
+}
+
+function textOf(to: ToState, { objective, best, close, left }: Told): string {
+  const now = to.plans[0];
+  const rest = close.filter((plan) => plan !== best);
+  if (now !== undefined && (best === now || close.includes(now))) return noneText(to, { objective, best, close, left });
+  const names = namesWords(left.map(({ name }) => name));
+  const chosen = left[0] ?? best;
+  const gain = now === undefined ? '' : gainWords(to, { objective, now, chosen });
+  const others = rest.length === 0 ? '' : ` ${closeWords(best, rest)}`;
+  return `The results support ${names}: ${gain}.${others}${reservations(to)}`;
+}
+
+/** No plan is told apart from doing nothing new. */
+function noneText({ plans }: ToState, { objective, best, close }: Told): string {
+  const now = plans[0]?.name ?? '';
+  const all = close.length === plans.length;
+  if (all) return `The results tell no plan apart from “${now}” in “${objective.name}”: they support none over it.`;
+  if (best.name === now)
+    return `No plan does better than “${now}” in “${objective.name}” for sure, and ${namesWords(plans.filter((plan) => !close.includes(plan)).map(({ name }) => name))} do worse.`;
+  return `No plan is told apart from “${now}” in “${objective.name}”: the results support none over it.`;
+}
+
+interface Gain {
+  readonly objective: ObjectiveWords;
+  readonly now: ComparedPlan;
+  readonly chosen: ComparedPlan;
+}
+
+function gainWords(to: ToState, { objective, now, chosen }: Gain): string {
+  const found = between(to, objective, now, chosen);
+  const [before, after] = [valueOf(now, objective), valueOf(chosen, objective)];
+  const ends =
+    found === undefined ? [0, 0] : [found.interval.lower, found.interval.upper].map(Math.abs).sort((a, b) => a - b);
+  const [least = 0, most = 0] = ends;
+  const cost =
+    chosen.cost === null || to.money === null
+      ? ''
+      : `, for ${moneyWords(chosen.cost.presentValue.mean, to.money.currency)}`;
+  if (objective.of !== 'chance') {
+    const fewer = Math.round(Math.abs(after - before));
+    return `${fewer} animals ${after > before ? 'more' : 'fewer'} at the end than under “${now.name}” (95 %: ${Math.round(least)} to ${Math.round(most)})${cost}`;
+  }
+  return `a chance of “${objective.name}” of ${percentWords(after)} against ${percentWords(before)} under “${now.name}”, ${pointsWords(after - before)} ${after < before ? 'less' : 'more'} (95 %: ${(least * 100).toFixed(1)} to ${(most * 100).toFixed(1)})${cost}`;
+}
+
+function closeWords(best: ComparedPlan, rest: readonly ComparedPlan[]): string {
+  return `${namesWords([best, ...rest].map(({ name }) => name))} cannot be told apart.`;
+}
+
+function reservations({ drawn, robustness }: ToState): string {
+  const reversed = robustness.filter(({ holds }) => holds === false).map(({ variant }) => variant);
+  const unknown = drawn ? '' : ' What is not known about the numbers of the model was not drawn and could change this.';
+  const turned =
+    reversed.length === 0 ? '' : ` Another sound model would reverse some of the order: ${reversed.join('; ')}.`;
+  return `${unknown}${turned}`;
+}

@@ -1,0 +1,175 @@
+// Whole comparisons of small plans under common chance.
+import { expect, test } from 'vitest';
+import { comparePlans, type ToCompare } from '../../src/compare/compare.ts';
+import type { PlanToRun } from '../../src/compare/plan.ts';
+import type { Comparison } from '../../src/compare/results.ts';
+import { runPlans } from '../../src/compare/run-plans.ts';
+import { runModel } from '../../src/pipeline.ts';
+import { alone } from '../../src/threads/alone.ts';
+import { openThreads } from '../../src/threads/threads.ts';
+import { planOf } from './plans.ts';
+
+/** Two patches of a hare whose newborn survival a plan raises in one of them. */
+function text(inPond: number, more = ''): string {
+  return `skein: 1
+study: { title: Two ponds }
+years: 15
+patches: [{ name: Pond, capacity: 30 }, { name: Marsh, capacity: 20 }]
+counts: females
+classes: [newborn, adult]
+oldest: open-ended
+survival: { newborn: 0.3, adult: 0.6 }
+births: { adult: 2.4, female-share: 0.5 }
+in:
+  Pond: { survival: { newborn: ${inPond} } }
+year: [count, breeding, survival, ageing]
+crowding: { form: beverton-holt, changes: { survival: [newborn] }, counted: { adult: 1 }, capacity: capacity, where-declining: ceiling }
+start: { table: { Pond: { adult: 12 }, Marsh: { adult: 9 } } }
+outcomes:
+  few: { of: [adult], below: 6 }
+run: { replicates: 600, seed: 11 }
+${more}`;
+}
+
+const beside = { hash: '0'.repeat(64), moves: [], robustness: [], cautions: [] };
+
+async function compared(plans: readonly PlanToRun[], with_: Partial<ToCompare> = {}): Promise<Comparison> {
+  const run = await runPlans(alone, plans);
+  return comparePlans({ ...beside, money: { currency: 'crowns', priceYear: null, discount: 0 }, run: run!, ...with_ });
+}
+
+const plans = () => [
+  planOf({ name: 'as now', text: text(0.3), cost: 0 }),
+  planOf({ name: 'fence', text: text(0.36), cost: 1000 }),
+  planOf({ name: 'posters', text: text(0.3), cost: 500 }),
+];
+
+test('a comparison holds each plan as a run of it alone would', async () => {
+  const found = await compared(plans());
+  expect(found.scenarios.map(({ name }) => name)).toEqual(['as now', 'fence', 'posters']);
+  found.scenarios.forEach(({ outcomes }, i) => {
+    const own = runModel(plans()[i]!.compiled).outcomes[0]!;
+    expect(outcomes[0]!.probability).toBe(own.ever.probability);
+    expect(outcomes[0]!.intervals.runs).toEqual(own.ever.interval);
+  });
+});
+
+test('differences are those of the same futures, and chances of being best share among all plans', async () => {
+  const { differences, best, scenarios } = await compared(plans());
+  const fence = differences.find(({ outcome, from, to }) => outcome === 'few' && from === 'as now' && to === 'fence')!;
+  expect(fence.estimate).toBeCloseTo(
+    scenarios[1]!.outcomes[0]!.probability - scenarios[0]!.outcomes[0]!.probability,
+    12,
+  );
+  expect([fence.toldApart, fence.interval.upper < 0]).toEqual([true, true]);
+  expect(fence.futures!.onlyFrom).toBeGreaterThan(fence.futures!.onlyTo);
+  for (const outcome of ['few', 'animals at the end', 'cost']) {
+    const all = best.filter((one) => one.outcome === outcome).reduce((sum, { probability }) => sum + probability, 0);
+    expect(all).toBeCloseTo(1, 9);
+  }
+});
+
+test('a plan without effect differs by exactly zero, and what it costs buys no reliable gain', async () => {
+  const { differences, scenarios, best } = await compared(plans());
+  for (const one of differences.filter(({ from, to, of }) => from === 'as now' && to === 'posters' && of !== 'money')) {
+    expect([one.estimate, one.interval.lower, one.interval.upper, one.toldApart]).toEqual([0, 0, 0, false]);
+  }
+  const [, fence, posters] = scenarios;
+  expect(posters!.prices).toEqual([{ outcome: 'few', costPerRisk: null, why: 'no reliable gain' }]);
+  expect(fence!.prices[0]!.why).toBe('priced');
+  expect(fence!.prices[0]!.costPerRisk!.lower).toBeLessThan(fence!.prices[0]!.costPerRisk!.estimate);
+  const of = (name: string) =>
+    best.find(({ outcome, scenario }) => outcome === 'few' && scenario === name)!.probability;
+  expect(of('posters')).toBe(of('as now'));
+  expect([posters!.notBeaten, posters!.beaten.runs]).toEqual([false, 1]);
+  expect(scenarios.slice(0, 2).map(({ notBeaten }) => notBeaten)).toEqual([true, true]);
+});
+
+test('only the patch in which something is done gains', async () => {
+  const { patches } = await compared(plans());
+  const of = (patch: string) => patches.find((one) => one.patch === patch && one.scenario === 'fence')!;
+  expect(of('Pond').animals.lower).toBeGreaterThan(0);
+  expect(of('Marsh').animals).toEqual({ estimate: 0, lower: 0, upper: 0 });
+  expect(of('Marsh').everEmpty.before).toBe(of('Marsh').everEmpty.after);
+});
+
+test('the statement says what is supported, under which rule, and that nothing unknown was drawn', async () => {
+  const { statement } = await compared(plans());
+  expect(statement.plans).toEqual(['fence']);
+  expect(statement.strength).toBe('limited');
+  expect(statement.text).toMatch(/^The results support “fence”: a chance of “few” of .* against .* under “as now”/);
+  expect(statement.text).toContain('for 1,000 crowns');
+  expect(statement.text).toContain('was not drawn');
+  expect(statement.rule).toContain('“few”');
+});
+
+test('plans that only chance tells apart support nothing', async () => {
+  const both = [
+    planOf({ name: 'as now', text: text(0.3), cost: 0 }),
+    planOf({ name: 'paint', text: text(0.3005), cost: 9 }),
+  ];
+  const { statement } = await compared(both);
+  expect([statement.strength, statement.plans]).toEqual(['none', []]);
+  expect(statement.text).toContain('tell no plan apart');
+});
+
+test('the order in which plans are listed and the number of threads change no byte', async () => {
+  const [now, fence, posters] = plans();
+  const there = await compared([now!, fence!, posters!]);
+  const back = await compared([now!, posters!, fence!]);
+  const byName = (one: Comparison) => one.scenarios.toSorted((a, b) => (a.name < b.name ? -1 : 1));
+  expect(byName(back)).toEqual(byName(there));
+  const crew = openThreads({ threads: 2 });
+  const threaded = await runPlans(crew, plans());
+  await crew.close();
+  const again = comparePlans({
+    ...beside,
+    money: { currency: 'crowns', priceYear: null, discount: 0 },
+    run: threaded!,
+  });
+  expect(JSON.stringify(again)).toBe(JSON.stringify(there));
+});
+
+test('what was finished when the work is stopped is finished for every plan', async () => {
+  const controller = new AbortController();
+  const many = plans().map(({ name }, i) => planOf({ name, text: text([0.3, 0.36, 0.3][i]!) }, { replicates: 5000 }));
+  const run = await runPlans(alone, many, {
+    signal: controller.signal,
+    onProgress: (done) => {
+      if (done > 5000) controller.abort();
+    },
+  });
+  expect(run!.futures).toBeGreaterThan(0);
+  expect(run!.futures).toBeLessThan(5000);
+  const fewer = plans().map(({ name }, i) =>
+    planOf({ name, text: text([0.3, 0.36, 0.3][i]!) }, { replicates: run!.futures }),
+  );
+  const whole = await runPlans(alone, fewer);
+  expect(run!.runs.map(({ results }) => results)).toEqual(whole!.runs.map(({ results }) => results));
+});
+
+test('where what is not known is drawn, the draw is the unit and all plans meet the same draws', async () => {
+  const drawn = (survival: string) =>
+    text(0.3)
+      .replace('adult: 0.6 }\nbirths', `adult: ${survival} }\nbirths`)
+      .replace(
+        'run: {',
+        'parameters:\n  adults: { value: 0.6, uncertainty: { standard-error: 0.02 } }\nrun: { draws: 40,',
+      )
+      .replace('600', '60');
+  const both = [
+    planOf({ name: 'as now', text: drawn('adults') }),
+    planOf({ name: 'wardens', text: drawn('adults + 0.1') }),
+  ];
+  const { differences, scenarios, best, draws, statement } = await compared(both, { money: null });
+  const few = differences.find(({ outcome }) => outcome === 'few')!;
+  expect(few.intervalFromUnknown!.from).toBe('what is not known');
+  expect(few.method).toContain('draw as their unit');
+  expect(few.toldApart).toBe(true);
+  expect(scenarios[1]!.outcomes[0]!.intervals.unknown).not.toBeNull();
+  expect(
+    best.filter(({ outcome }) => outcome === 'few').reduce((sum, one) => sum + one.probabilityOverDraws!, 0),
+  ).toBeCloseTo(1, 9);
+  expect(draws).toEqual({ number: 40, failed: 0, replicatesEach: 60 });
+  expect(statement.strength).toBe('clear');
+});
