@@ -191,9 +191,7 @@ async function runDraws(crew: Crew, plans: readonly PlanToRun[], options: CrewOp
   const runs = opened.flatMap(({ plan, reduction, ledger, patches }, i) => {
     const compiled = begun === number ? plan.compiled : withSettings(plan.compiled, { draws: begun });
     const results = collectors[i]?.withDraws(summarise(compiled, reduction));
-    return results === undefined
-      ? []
-      : [{ plan, compiled, results, ledger, reduction, patches: patches.pairs }];
+    return results === undefined ? [] : [{ plan, compiled, results, ledger, reduction, patches: patches.pairs }];
   });
   return { runs, draws, futures: draws.length * replicates };
 }
