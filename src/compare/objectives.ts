@@ -30,7 +30,7 @@ export function objectivesOf({ runs }: PlansRun): readonly Objective[] {
 }
 
 function hits({ reduction }: PlanRun, outcome: number): Uint8Array {
-  return Uint8Array.from(reduction.falls[outcome]?.first ?? [], (count) => (count > 0 ? 1 : 0));
+  return Uint8Array.from(reduction.hits[outcome]?.first ?? [], (count) => (count > 0 ? 1 : 0));
 }
 
 function animals(runs: readonly PlanRun[], decides: boolean): readonly Objective[] {
