@@ -79,10 +79,7 @@ export function analyse(input: AnalysisInput): Analysis {
       'transients',
       plain((given) => transientsAnswer(input, given, settles(found))),
     ),
-    stochasticGrowth: take(
-      'stochasticGrowth',
-      withVectors((given) => stochasticAnswer(input, given)),
-    ),
+    stochasticGrowth: take('stochasticGrowth', stochasticAnswer(input)),
     growthStandardError: take(
       'growthStandardError',
       withVectors((given) => standardErrorAnswer(input, given)),

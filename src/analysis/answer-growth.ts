@@ -7,12 +7,11 @@ import { forEachEntry } from '../numeric/sparse.ts';
 import { because, type Answer } from './answer.ts';
 import { mostEntries } from './cautions.ts';
 import { growthStandardError } from './growth-error.ts';
-import type { AnalysisInput, NamedCovariance, ParameterTangent } from './input.ts';
+import type { AnalysisInput, ParameterTangent } from './input.ts';
 import { stateName } from './label.ts';
 import { generationTimes, lifetimes, nextGeneration, type LifeSplit } from './life-history.ts';
 import type { Analysis } from './schema.ts';
 import { entrySensitivities, sensitivityAlong, type Vectors } from './sensitivity.ts';
-import { smallNoiseGrowth } from './small-noise.ts';
 import { pathFromStart, transientBounds } from './transients.ts';
 
 export function blocksAnswer(block: BlockMatrix, leading: Leading): Analysis['blocks'] {
@@ -64,6 +63,8 @@ export function parametersAnswer(
   });
 }
 
+type ApproximateGrowth = NonNullable<NonNullable<Analysis['stochasticGrowth']>['approximation']>;
+
 export interface LifeAnswers {
   readonly netReproductiveRate: Answer<number>;
   readonly generationTime: Answer<NonNullable<Analysis['generationTime']>>;
@@ -107,39 +108,35 @@ export function transientsAnswer(
   return { ...bounds, fromStart: path && { ...path, times: [...path.times] } };
 }
 
-/** The sensitivities in the order of the names; null where a name has no tangent. */
-function sensitivitiesOf(
-  { names }: NamedCovariance,
-  tangents: readonly ParameterTangent[],
-  along: (tangent: ParameterTangent) => number,
-): Float64Array | null {
-  const found = names.map((name) => tangents.find((tangent) => tangent.name === name));
-  if (found.some((tangent) => tangent === undefined)) return null;
-  return Float64Array.from(found, (tangent) => (tangent ? along(tangent) : 0));
+export function stochasticAnswer(input: AnalysisInput): Answer<NonNullable<Analysis['stochasticGrowth']>> {
+  const approximation = approximateGrowth(input);
+  return approximation.value === null ? approximation : { value: { approximation: approximation.value } };
 }
 
-export function stochasticAnswer(
-  input: AnalysisInput,
-  vectors: Vectors,
-): Answer<NonNullable<Analysis['stochasticGrowth']>> {
-  const { variation, parameterTangents = [] } = input;
-  if (!variation)
-    return because('It needs a covariance of the yearly rates, which was not given; `skein run` follows what varies.');
-  const along = ({ matrixTangent }: ParameterTangent): number => sensitivityAlong(matrixTangent, vectors);
-  const sensitivities = sensitivitiesOf(variation, parameterTangents, along);
-  if (!sensitivities) return because('Some of what varies has no sensitivity.');
-  const { logGrowth, yearlyVariance } = smallNoiseGrowth(vectors.growthRate, sensitivities, variation.covariance);
-  const method = 'Tuljapurkar (1982), small noise, independent years';
-  return { value: { growthRate: exp(logGrowth), logGrowth, yearlyVariance, method } };
+function approximateGrowth({ noise, noiseLeavesOut = [] }: AnalysisInput): Answer<ApproximateGrowth> {
+  if (!noise) return because('Nothing was said to vary from year to year.');
+  if (noise.value === null) return noise;
+  const { logGrowth, yearlyVariance } = noise.value;
+  const method = 'Tuljapurkar (1982), small noise';
+  return { value: { growthRate: exp(logGrowth), logGrowth, yearlyVariance, method, leftOut: [...noiseLeavesOut] } };
 }
 
 export function standardErrorAnswer(input: AnalysisInput, vectors: Vectors): Answer<number> {
-  const { uncertainty, parameterTangents = [] } = input;
-  if (!uncertainty) return because('It needs a covariance of the named numbers, which was not given.');
+  const { uncertainty, parameterTangents = [], withoutTangent = [] } = input;
+  if (!uncertainty) return because('Every number is taken as known: no parameter says how sure it is.');
+  if (uncertainty.value === null) return uncertainty;
+  const { names, covariance } = uncertainty.value;
+  const beyond = names.find((name) => withoutTangent.includes(name));
+  if (beyond !== undefined)
+    return because(`The model allows no other number for ${beyond}, so its slope is not known.`);
   // A number that is not known is as it is from the first: capacities are solved for with it.
   const along = ({ matrixTangent, solvedAnew }: ParameterTangent): number =>
     sensitivityAlong(solvedAnew ?? matrixTangent, vectors);
-  const sensitivities = sensitivitiesOf(uncertainty, parameterTangents, along);
-  if (!sensitivities) return because('Some of what is uncertain has no sensitivity.');
-  return { value: growthStandardError(sensitivities, uncertainty.covariance) };
+  const moved = new Map(parameterTangents.map((tangent) => [tangent.name, along(tangent)]));
+  return {
+    value: growthStandardError(
+      Float64Array.from(names, (name) => moved.get(name) ?? 0),
+      covariance,
+    ),
+  };
 }

@@ -9,7 +9,6 @@ import { phaseSensitivities } from './phase-sensitivity.ts';
 import { linkValues, patchRemovalLosses } from './removal.ts';
 import type { Analysis } from './schema.ts';
 import type { Vectors } from './sensitivity.ts';
-import { spreadSpeed } from './spread.ts';
 
 export function patchesAnswer({ block, start }: AnalysisInput, vectors: Vectors): NonNullable<Analysis['patches']> {
   const { matrix, states, patches } = block;
@@ -50,18 +49,18 @@ export function linksAnswer({ block }: AnalysisInput, vectors: Vectors): NonNull
 }
 
 export function capacityAnswer(input: AnalysisInput): Answer<NonNullable<Analysis['metapopulationCapacity']>> {
-  if (!input.network) return because('Was not asked for: it needs areas, distances and a mean distance of movement.');
-  const { capacity, patchValues } = metapopulationCapacity(input.network);
+  const { network } = input;
+  if (!network) return because('The matrix was given without the areas of its patches and the distances between them.');
+  if (network.value === null) return network;
+  const { capacity, patchValues } = metapopulationCapacity(network.value);
   const named = patchValues && Array.from(patchValues, (value, p) => ({ patch: input.block.patches[p] ?? '?', value }));
   return { value: { capacity, patchValues: named } };
 }
 
-export function spreadAnswer({ block, lineKernels }: AnalysisInput): Answer<NonNullable<Analysis['spread']>> {
-  if (!lineKernels)
-    return because('Was not asked for: it holds on land of one quality, not over a network of patches.');
-  const found = spreadSpeed({ matrix: block.matrix, kernelOf: lineKernels });
-  if (!found) return because('The population does not grow, so it has no front that advances.');
-  return { value: { speedKm: found.speedKm, theta: found.theta } };
+export function spreadAnswer({ spread }: AnalysisInput): Answer<NonNullable<Analysis['spread']>> {
+  if (!spread) return because('The matrix was given without kernels of movement.');
+  if (spread.value === null) return spread;
+  return { value: spread.value.map(({ parameters, ...land }) => ({ ...land, parameters: [...parameters] })) };
 }
 
 export function differenceAnswer({ block, reference }: AnalysisInput): Answer<NonNullable<Analysis['ltre']>> {

@@ -6,6 +6,13 @@ export function because(reason: string): { readonly value: null; readonly reason
   return { value: null, reason };
 }
 
+/** 'North, Ridge and 5 more'. */
+export function listNames(names: readonly string[], most = 3): string {
+  const more = names.length - most;
+  if (more > 0) return `${names.slice(0, most).join(', ')} and ${more} more`;
+  return names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1) ?? ''}`;
+}
+
 /** Collects the reasons of missing answers by the field they are missing from. */
 export interface Reasons {
   readonly told: Readonly<Record<string, string>>;

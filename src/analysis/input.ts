@@ -1,9 +1,11 @@
 // What the whole analysis is made from.
 import type { BlockMatrix } from '../compile/block-matrix.ts';
 import type { DenseMatrix, SparseMatrix } from '../numeric/sparse.ts';
+import type { Answer } from './answer.ts';
 import type { LifeSplit } from './life-history.ts';
 import type { Network } from './metapopulation-capacity.ts';
-import type { LineKernel } from './spread.ts';
+import type { SmallNoise } from './small-noise.ts';
+import type { LandSpeed } from './spread/model-spread.ts';
 import type { YearMap } from './year-map.ts';
 
 /** A named number of the model, and how the matrix moves with it. */
@@ -33,12 +35,16 @@ export interface AnalysisInput {
   /** Over the states of the matrix, where rates depend on numbers. */
   readonly yearMap?: YearMap;
   readonly parameterTangents?: readonly ParameterTangent[];
-  /** From year to year. */
-  readonly variation?: NamedCovariance;
+  /** Names whose slopes cannot be told, since the model allows no other number. */
+  readonly withoutTangent?: readonly string[];
+  /** Long-run growth with the variation of the years, by approximation. */
+  readonly noise?: Answer<SmallNoise>;
+  /** What is in the mean year, but not in the variation of the approximation. */
+  readonly noiseLeavesOut?: readonly string[];
   /** Of what is not known. */
-  readonly uncertainty?: NamedCovariance;
-  readonly network?: Network;
-  readonly lineKernels?: (row: number, column: number) => LineKernel;
+  readonly uncertainty?: Answer<NamedCovariance>;
+  readonly network?: Answer<Network>;
+  readonly spread?: Answer<readonly LandSpeed[]>;
   /** What the growth is compared with, over the same states. */
   readonly reference?: SparseMatrix;
   /** Nobody dies on the way in any dispersal. */

@@ -1,14 +1,11 @@
 // Metapopulation capacity: one number for how well a network of patches holds together, and what each patch adds to it.
-import { exp } from '../machine/pinned.ts';
 import { leading } from '../numeric/leading.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
 
 export interface Network {
   readonly areasKm2: ArrayLike<number>;
-  /** Kilometres, P×P. */
-  readonly distanceKm: ArrayLike<number>;
-  /** Mean of the exponential that movement falls off with along a line. */
-  readonly meanDistanceKm: number;
+  /** How much of the movement to a patch next door comes as far as from j to i: e^(−d/α), or another kernel over itself at 0. P×P at i * P + j. */
+  readonly reach: ArrayLike<number>;
 }
 
 export interface MetapopulationCapacity {
@@ -18,15 +15,14 @@ export interface MetapopulationCapacity {
   readonly patchValues: Float64Array | null;
 }
 
-/** Leading eigenvalue of M with M_ij = e^(−d_ij/mean) A_i A_j, M_ii = 0 (Hanski & Ovaskainen 2000). Symmetric. */
-export function metapopulationCapacity({ areasKm2, distanceKm, meanDistanceKm }: Network): MetapopulationCapacity {
+/** Leading eigenvalue of M with M_ij = reach_ij A_i A_j, M_ii = 0 (Hanski & Ovaskainen 2000). Symmetric. */
+export function metapopulationCapacity({ areasKm2, reach }: Network): MetapopulationCapacity {
   const size = areasKm2.length;
   const values = new Float64Array(size * size);
   for (let i = 0; i < size; i++) {
     for (let j = 0; j < size; j++) {
       if (i === j) continue;
-      const reach = exp(-(distanceKm[i * size + j] ?? 0) / meanDistanceKm);
-      values[i * size + j] = reach * (areasKm2[i] ?? 0) * (areasKm2[j] ?? 0);
+      values[i * size + j] = (reach[i * size + j] ?? 0) * (areasKm2[i] ?? 0) * (areasKm2[j] ?? 0);
     }
   }
   const found = leading(sparseFromDense({ rows: size, columns: size, values }));

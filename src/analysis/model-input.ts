@@ -11,11 +11,15 @@ import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
 import { sparseFromDense, type SparseMatrix } from '../numeric/sparse.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import { because, type Answer } from './answer.ts';
+import { estimateErrors } from './chance/estimate-errors.ts';
+import { modelYears } from './chance/model-years.ts';
 import { equilibriumFrom } from './equilibrium.ts';
-import type { AnalysisInput } from './input.ts';
+import type { AnalysisInput, NamedCovariance } from './input.ts';
 import { placesOf } from './label.ts';
 import type { LifeSplit } from './life-history.ts';
+import { networkOf } from './network.ts';
 import { parameterTangents } from './parameter-tangents.ts';
+import { modelSpread } from './spread/model-spread.ts';
 import type { YearMap } from './year-map.ts';
 
 /** The input at nobody, at the start, or where numbers stand still; there may be no such place. */
@@ -32,12 +36,31 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
       block,
       start: Float64Array.from(places, (place) => startAnimals[place] ?? 0),
       split: linearised === null ? splitAt(compiled, block, state) : apart(linearised, splitAt(compiled, block, state)),
-      parameterTangents: parameterTangents(compiled, block, state),
+      ...parameterTangents(compiled, block, state),
+      noise: noiseAt(compiled, at),
+      noiseLeavesOut: model.catastrophes.map(({ name }) => name),
+      uncertainty: uncertaintyOf(model),
+      network: networkOf(model),
+      spread: modelSpread(compiled),
       losslessDispersal: nobodyIsLost(compiled),
       linearised: linearised !== null && needsBoth(model),
       ...yearMap,
     },
   };
+}
+
+function noiseAt(compiled: CompiledModel, at: AtState): AnalysisInput['noise'] & object {
+  const { model } = compiled;
+  if (at !== 'zero' && model.variation !== null && dependsOnNumbers(model)) {
+    return because('Where numbers are held by crowding there is no long-run growth; it is told near zero.');
+  }
+  return modelYears(compiled);
+}
+
+function uncertaintyOf({ uncertainty }: Model): Answer<NamedCovariance> {
+  if (uncertainty === null) return because('Every number is taken as known: no parameter says how sure it is.');
+  const errors = estimateErrors(uncertainty);
+  return errors === null ? because('One draw does not tell how far a number can be off.') : { value: errors };
 }
 
 /** The young that one more animal brings are all that is not the animals themselves. */

@@ -10,14 +10,21 @@ import type { ParameterTangent } from './input.ts';
 import { placesOf } from './label.ts';
 import { differenceTangent } from './parameter-differences.ts';
 
+export interface ParameterTangents {
+  readonly parameterTangents: readonly ParameterTangent[];
+  /** Names of numbers beside which the model allows no other. */
+  readonly withoutTangent: readonly string[];
+}
+
 /**
  * ∂A/∂θ at the same state, exact where the slopes of the model tell all; by differences where a number is used in a place whose
  * slope is not known. Numbers that move nothing are left out.
  */
-export function parameterTangents(base: CompiledModel, block: BlockMatrix, state: Float64Array): ParameterTangent[] {
+export function parameterTangents(base: CompiledModel, block: BlockMatrix, state: Float64Array): ParameterTangents {
   const read = slopesOf(base.spec);
   const crowded = base.model.crowding.length > 0 && state.some((animals) => animals > 0);
-  return base.model.parameters.flatMap(({ name, value }) => {
+  const withoutTangent: string[] = [];
+  const parameterTangents = base.model.parameters.flatMap(({ name, value }): ParameterTangent[] => {
     const slopes = read(name);
     const along = (rule: CrowdingRule): SparseMatrix | null => exactTangent({ base, block, state, slopes }, rule);
     const held = along('held');
@@ -30,9 +37,11 @@ export function parameterTangents(base: CompiledModel, block: BlockMatrix, state
         ? differenceTangent({ base, block, state }, { name, value, rule: 'solved anew' })
         : null;
     const moves = (matrixTangent?.values.length ?? 0) + (solvedAnew?.values.length ?? 0) > 0;
+    if (matrixTangent === null) withoutTangent.push(name);
     if (matrixTangent === null || !moves) return [];
     return [{ name, value, matrixTangent, exact, ...(solvedAnew === null ? {} : { solvedAnew }) }];
   });
+  return { parameterTangents, withoutTangent };
 }
 
 interface Along {

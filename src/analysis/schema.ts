@@ -103,6 +103,34 @@ export const EquilibriumSchema = closed({
   ),
 });
 
+export const StochasticGrowthSchema = closed({
+  approximation: orNull(
+    closed({
+      growthRate: number('e to the mean yearly change of ln numbers.'),
+      logGrowth: Type.Number(),
+      yearlyVariance: number('Variance that a year adds to ln numbers in the long run.'),
+      method: Type.String(),
+      leftOut: Type.Array(Type.String(), { description: 'What acts in the mean year only.' }),
+    }),
+  ),
+});
+
+export const SpreadSchema = closed(
+  {
+    patch,
+    speedKm: number('Kilometres a step that a front comes to over empty land like that of the patch.'),
+    theta: number('Steepness of the front, per km.'),
+    parameters: Type.Array(
+      closed({
+        name: Type.String(),
+        sensitivity: number('Kilometres a step per unit of the parameter.'),
+        elasticity: number('Share of the speed per share of the parameter.'),
+      }),
+    ),
+  },
+  'Only patches where a population grows.',
+);
+
 export const AnalysisSchema = closed({
   format: Type.Literal('skein-analysis/1'),
   tool: Type.Optional(closed({ name: Type.Literal('skein'), version: Type.String(), kernel: Type.String() })),
@@ -147,14 +175,7 @@ export const AnalysisSchema = closed({
   patches: orNull(Type.Array(PatchSchema)),
   links: orNull(Type.Array(LinkSchema)),
   transients: orNull(TransientsSchema),
-  stochasticGrowth: orNull(
-    closed({
-      growthRate: number('e to the mean yearly change of ln numbers.'),
-      logGrowth: Type.Number(),
-      yearlyVariance: number('Variance that a year adds to ln numbers.'),
-      method: Type.String(),
-    }),
-  ),
+  stochasticGrowth: orNull(StochasticGrowthSchema),
   growthStandardError: maybe('Standard error of the growth rate from those of the parameters.'),
   equilibrium: orNull(EquilibriumSchema),
   metapopulationCapacity: orNull(
@@ -163,7 +184,7 @@ export const AnalysisSchema = closed({
       patchValues: orNull(Type.Array(closed({ patch, value: Type.Number() }))),
     }),
   ),
-  spread: orNull(closed({ speedKm: number('Kilometres a step.'), theta: number('Steepness of the front, per km.') })),
+  spread: orNull(Type.Array(SpreadSchema)),
   ltre: orNull(
     closed({
       difference: number('Growth rate less that of the reference.'),

@@ -54,7 +54,7 @@ export function densityPerKm2(kernel: DispersalKernel, km: number): number {
 }
 
 /** ln k(km) − ln k(0). */
-function logFall({ shape, scaleKm, shapeNumber }: DispersalKernel, km: number): number {
+export function logFall({ shape, scaleKm, shapeNumber }: DispersalKernel, km: number): number {
   const r = km / scaleKm;
   switch (shape) {
     case 'exponential':

@@ -44,14 +44,17 @@ function everything(): AnalysisInput {
     yearMap,
     start: new Float64Array(block.states.length).fill(4),
     parameterTangents: [{ name: 'everything', value: 1, matrixTangent: births }],
-    variation: { names: ['everything'], covariance: { rows: 1, columns: 1, values: Float64Array.of(0.01) } },
-    uncertainty: { names: ['everything'], covariance: { rows: 1, columns: 1, values: Float64Array.of(0.0004) } },
-    network: {
-      areasKm2: [1, 2, 3, 4, 5],
-      distanceKm: Array.from({ length: 25 }, (_, k) => 3 * Math.abs(Math.floor(k / 5) - (k % 5))),
-      meanDistanceKm: 4,
+    noise: { value: { logGrowth: 0.05, lost: 0.005, yearlyVariance: 0.01 } },
+    uncertainty: {
+      value: { names: ['everything'], covariance: { rows: 1, columns: 1, values: Float64Array.of(0.0004) } },
     },
-    lineKernels: (row) => (row % 3 === 0 ? { kind: 'normal', sdKm: 2 } : { kind: 'stays' }),
+    network: {
+      value: {
+        areasKm2: [1, 2, 3, 4, 5],
+        reach: Array.from({ length: 25 }, (_, k) => Math.exp(-0.75 * Math.abs(Math.floor(k / 5) - (k % 5)))),
+      },
+    },
+    spread: { value: [{ patch: 'patch 001', speedKm: 2, theta: 0.3, parameters: [] }] },
     reference: weightedSum([0.9, block.matrix], [0, block.matrix]),
     losslessDispersal: true,
     wantEigenvalues: true,
@@ -91,8 +94,7 @@ describe('a whole analysis', () => {
   test('a factor on everything has elasticity 1, and its noise comes through as it is', () => {
     expect(found.parameters![0]!.elasticity).toBeCloseTo(1, 12);
     expect(found.growthStandardError).toBeCloseTo(0.02 * found.growthRate, 12);
-    expect(found.stochasticGrowth!.yearlyVariance).toBeCloseTo(0.01, 12);
-    expect(found.stochasticGrowth!.growthRate).toBeCloseTo(found.growthRate * Math.exp(-0.005), 12);
+    expect(found.stochasticGrowth!.approximation!.growthRate).toBeCloseTo(Math.exp(0.05), 12);
   });
 
   test('a reference that is 0.9 of everything explains the difference whole', () => {
@@ -128,7 +130,7 @@ describe('what does not apply', () => {
     expect(found.netReproductiveRate).toBeNull();
     expect(found.reasons).toMatchObject({
       netReproductiveRate: 'The matrix was given without telling births from fates.',
-      spread: 'Was not asked for: it holds on land of one quality, not over a network of patches.',
+      spread: 'The matrix was given without kernels of movement.',
     });
     expect(textOf(found)).toMatch(/the population grows by 12.1 % a year \(growth rate\s1.121\)/);
   });

@@ -27,23 +27,25 @@ function apart(a: SparseMatrix, b: SparseMatrix | null): number {
 /** Names of the numbers that were compared. `held` tangents move with the capacity itself, which differences hold too. */
 function compare(compiled: CompiledModel, state: Float64Array, capacities: readonly string[] = []): string[] {
   const block = buildBlock(compiled, 'start', state);
-  return parameterTangents(compiled, block, state).map(({ name, value, matrixTangent, solvedAnew, exact }) => {
-    // What a crowding is solved for while another has an Allee factor, or sexes must meet, is left to differences.
-    const { crowding } = compiled.model;
-    const nested = state.some((animals) => animals > 0) && (crowding.length > 1 || dependsOnMakeUp(compiled.model));
-    // Amounts that people take, move and release are left to differences too.
-    const handled = compiled.model.phases.some(({ kind }) => kind === 'take' || kind === 'move' || kind === 'add');
-    if (!nested && !handled) expect({ name, exact }).toEqual({ name, exact: true });
-    const around = { base: compiled, block, state };
-    if (!capacities.includes(name)) {
-      expect(apart(matrixTangent, differenceTangent(around, { name, value, rule: 'held' })), name).toBeLessThan(5e-7);
-    }
-    if (solvedAnew) {
-      const anew = differenceTangent(around, { name, value, rule: 'solved anew' });
-      expect(apart(solvedAnew, anew), `${name}, solved anew`).toBeLessThan(5e-7);
-    }
-    return name;
-  });
+  return parameterTangents(compiled, block, state).parameterTangents.map(
+    ({ name, value, matrixTangent, solvedAnew, exact }) => {
+      // What a crowding is solved for while another has an Allee factor, or sexes must meet, is left to differences.
+      const { crowding } = compiled.model;
+      const nested = state.some((animals) => animals > 0) && (crowding.length > 1 || dependsOnMakeUp(compiled.model));
+      // Amounts that people take, move and release are left to differences too.
+      const handled = compiled.model.phases.some(({ kind }) => kind === 'take' || kind === 'move' || kind === 'add');
+      if (!nested && !handled) expect({ name, exact }).toEqual({ name, exact: true });
+      const around = { base: compiled, block, state };
+      if (!capacities.includes(name)) {
+        expect(apart(matrixTangent, differenceTangent(around, { name, value, rule: 'held' })), name).toBeLessThan(5e-7);
+      }
+      if (solvedAnew) {
+        const anew = differenceTangent(around, { name, value, rule: 'solved anew' });
+        expect(apart(solvedAnew, anew), `${name}, solved anew`).toBeLessThan(5e-7);
+      }
+      return name;
+    },
+  );
 }
 
 /** Away from every kink: the start with a part more of each state. */
@@ -224,7 +226,7 @@ start: { total: 50 }
 `);
   const { model, coefficients, landscape } = compiled;
   const block = buildBlock({ model, coefficients, landscape }, 'start', Float64Array.of(50));
-  const tangents = parameterTangents(compiled, block, Float64Array.of(50));
+  const tangents = parameterTangents(compiled, block, Float64Array.of(50)).parameterTangents;
   const of = (name: string) => tangents.find((one) => one.name === name)!;
 
   test('grows neither more nor less with another survival if its capacity is what it is', () => {

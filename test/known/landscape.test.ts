@@ -214,15 +214,15 @@ test('a patch is undecided where the interval of its contribution holds 1', () =
 
 describe('metapopulation capacity (Hanski & Ovaskainen 2000; derived for two patches)', () => {
   test('two patches: e^(−d/α) A₁A₂, shared equally', () => {
-    const found = metapopulationCapacity({ areasKm2: [2, 3], distanceKm: [0, 5, 5, 0], meanDistanceKm: 5 });
+    const found = metapopulationCapacity({ areasKm2: [2, 3], reach: [1, 1 / Math.E, 1 / Math.E, 1] });
     expect(found.capacity).toBeCloseTo(6 * Math.exp(-1), 12);
     found.patchValues!.forEach((value) => expect(value).toBeCloseTo(3 * Math.exp(-1), 12));
   });
 
   test('values of patches sum to the capacity, and one patch alone has none', () => {
-    const distanceKm = [0, 1, 4, 1, 0, 3, 4, 3, 0];
-    const found = metapopulationCapacity({ areasKm2: [1, 2, 3], distanceKm, meanDistanceKm: 2 });
+    const reach = [0, 1, 4, 1, 0, 3, 4, 3, 0].map((km) => Math.exp(-km / 2));
+    const found = metapopulationCapacity({ areasKm2: [1, 2, 3], reach });
     expect(found.patchValues!.reduce((sum, value) => sum + value, 0)).toBeCloseTo(found.capacity, 12);
-    expect(metapopulationCapacity({ areasKm2: [4], distanceKm: [0], meanDistanceKm: 2 }).capacity).toBe(0);
+    expect(metapopulationCapacity({ areasKm2: [4], reach: [1] }).capacity).toBe(0);
   });
 });

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { momentOf, spreadSpeed, type LineKernel } from '../../src/analysis/spread.ts';
+import { momentOf, spreadSpeed, type LineKernel } from '../../src/analysis/spread/speed.ts';
 import { entryAt, forEachEntry, sparseFromRows } from '../../src/numeric/sparse.ts';
 import { twoStage } from '../numeric/published.ts';
 

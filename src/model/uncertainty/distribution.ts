@@ -1,5 +1,7 @@
 // The distribution of a parameter that is not exactly known.
 import { normalBelow } from '../../numeric/normal.ts';
+import { exp } from '../../machine/pinned.ts';
+import { logitNormalMoments } from '../../numeric/chance/logit-normal.ts';
 import { findRoot } from '../../numeric/root.ts';
 import { distributionOf, largestSd, numberAt, type Distribution } from '../variation/distribution.ts';
 
@@ -51,6 +53,38 @@ export function valueAt(distribution: UncertainDistribution, z: number): number 
       return triangular(distribution, normalBelow(z));
     default:
       return numberAt(distribution, z);
+  }
+}
+
+/** In closed form but for the logit-normal. */
+export function varianceOf(distribution: UncertainDistribution): number {
+  switch (distribution.shape) {
+    case 'constant':
+      return 0;
+    case 'normal':
+      return distribution.sd * distribution.sd;
+    case 'uniform': {
+      const width = distribution.high - distribution.low;
+      return (width * width) / 12;
+    }
+    case 'triangular': {
+      const { low, mode, high } = distribution;
+      return (low * low + mode * mode + high * high - low * mode - low * high - mode * high) / 18;
+    }
+    case 'beta': {
+      const { a, b } = distribution;
+      return (a * b) / ((a + b) * (a + b) * (a + b + 1));
+    }
+    case 'gamma':
+      return distribution.k * distribution.scale * distribution.scale;
+    case 'lognormal': {
+      const { mu, sigma } = distribution;
+      return (exp(sigma * sigma) - 1) * exp(2 * mu + sigma * sigma);
+    }
+    case 'logit-normal': {
+      const { sd } = logitNormalMoments(distribution);
+      return sd * sd;
+    }
   }
 }
 

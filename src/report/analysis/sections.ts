@@ -80,8 +80,7 @@ function expectancies(lifetimes: Analysis['lifetimes']): readonly string[] {
 export function chanceWords({ stochasticGrowth, growthStandardError, growthRate }: Analysis): readonly string[] {
   const lines: string[] = [];
   if (stochasticGrowth !== null) {
-    const { growthRate: withChance, method } = stochasticGrowth;
-    lines.push(`With years that differ, the population usually ${change(withChance)} (${method}).`);
+    lines.push(...longRun(stochasticGrowth));
   }
   if (growthStandardError !== null) {
     lines.push(
@@ -89,6 +88,16 @@ export function chanceWords({ stochasticGrowth, growthStandardError, growthRate 
     );
   }
   return lines;
+}
+
+function longRun({ approximation }: NonNullable<Analysis['stochasticGrowth']>): readonly string[] {
+  if (approximation === null) return [];
+  const { growthRate, yearlyVariance, method, leftOut } = approximation;
+  const without = leftOut.length === 0 ? '' : ` What ${listed(leftOut)} takes is in the mean year only.`;
+  return [
+    `With years that differ, a few animals usually come to a population that ${change(growthRate)} (${method}); the logarithm of ` +
+      `numbers strays by ${told(Math.sqrt(yearlyVariance))} times the root of the years.${without}`,
+  ];
 }
 
 export function equilibriumWords({ equilibrium }: Analysis): readonly string[] {
@@ -113,11 +122,31 @@ export function networkWords({ metapopulationCapacity, spread }: Analysis): read
     const { capacity, patchValues } = metapopulationCapacity;
     const largest = [...(patchValues ?? [])].sort((a, b) => b.value - a.value).slice(0, 3);
     const names = largest.length === 0 ? '' : `; most of it rests on ${listed(largest.map(({ patch }) => patch))}`;
-    lines.push(`Metapopulation capacity, from areas and distances alone: ${told(capacity)} km⁴${names}.`);
+    lines.push(`Metapopulation capacity, from areas, distances and the kernel: ${told(capacity)} km⁴${names}.`);
   }
-  if (spread !== null)
-    lines.push(`Over empty land of one quality the edge advances ${told(spread.speedKm)} km a year.`);
-  return lines;
+  return [...lines, ...spreadWords(spread)];
+}
+
+/** Kinds of land listed in a terminal. */
+const mostLands = 5;
+
+function spreadWords(spread: Analysis['spread']): readonly string[] {
+  if (spread === null) return [];
+  const fastest = [...spread].sort((a, b) => b.speedKm - a.speedKm);
+  const [first] = fastest;
+  const most = [...(first?.parameters ?? [])].sort((a, b) => Math.abs(b.elasticity) - Math.abs(a.elasticity))[0];
+  const speeds = new Map<string, string[]>();
+  for (const { patch, speedKm } of fastest) speeds.set(told(speedKm), [...(speeds.get(told(speedKm)) ?? []), patch]);
+  const shown = [...speeds]
+    .slice(0, mostLands)
+    .map(([speed, patches]) => `${speed} km a year like ${listed(patches, 3)}`);
+  const more = speeds.size - shown.length;
+  const list = `Over empty land, the edge of a population advances ${shown.join('; ')}${more > 0 ? '; elsewhere slower' : ''}.`;
+  if (first === undefined || most === undefined) return [list];
+  return [
+    list,
+    `Like ${first.patch}, the speed depends most on ${most.name}: 1 % more of it changes it by ${told(most.elasticity)} %.`,
+  ];
 }
 
 /** Groups listed in a terminal. */

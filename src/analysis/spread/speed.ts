@@ -1,8 +1,8 @@
 // How fast a growing population spreads over empty land of one quality.
-import { exp, log, pow } from '../machine/pinned.ts';
-import { leading } from '../numeric/leading.ts';
-import { forEachEntry, sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
-import { dot, vectorsOf } from './sensitivity.ts';
+import { exp, log, pow } from '../../machine/pinned.ts';
+import { leading } from '../../numeric/leading.ts';
+import { forEachEntry, sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
+import { dot, vectorsOf } from '../sensitivity.ts';
 
 /** How far a transition moves along one line, in km. The last two are what kernels in the plane look like from the side. */
 export type LineKernel =
@@ -123,7 +123,7 @@ function sensitivitiesAt(input: SpreadInput, theta: number): Float64Array | null
   return sensitivity;
 }
 
-function goldenMinimum(f: (x: number) => number, [from, to]: readonly [number, number]): number {
+export function goldenMinimum(f: (x: number) => number, [from, to]: readonly [number, number]): number {
   const share = (Math.sqrt(5) - 1) / 2;
   let [low, high] = [from, to];
   let [left, right] = [high - share * (high - low), low + share * (high - low)];
