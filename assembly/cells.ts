@@ -1,6 +1,6 @@
 // What every phase does with the sixteen counts of one patch and class.
 import { i32At } from './arrays';
-import { bitsPair } from './draws/bits';
+import { bitsFour } from './draws/bits';
 import { binomial } from './draws/binomial';
 import { cellBytes, laneNumbers, rates, slotValues, words } from './batch';
 import { classes, patches } from './image';
@@ -64,21 +64,23 @@ export function scaledRates(target: usize, rate: f64, lists: usize, c: i32, patc
   }
 }
 
-const above63: u64 = 0xffffffc0_ffffffc0;
+const above63: i32 = -64;
 
 /** drawn[lane] = successes of n[lane] trials at chance rates[lane]; `drawn` may be `n`. */
 export function drawCell(drawn: usize, n: usize, stream: u64): void {
-  for (let pair: usize = 0; pair < 8; pair++) {
-    const both = load<u64>(n + (pair << 3));
-    let found: u64 = 0;
-    if (both !== 0) {
-      const at = pair << 4;
-      found =
-        (both & above63) === 0
-          ? bitsPair(both, v128.load(rates + at), v128.load(words + at), v128.load(words + at, 128), stream)
-          : drawLarge(both, at, stream);
-    }
-    store<u64>(drawn + (pair << 3), found);
+  for (let four: usize = 0; four < cellBytes; four += 16) {
+    const counts = v128.load(n + four);
+    const at = four << 1;
+    if (!v128.any_true(counts)) v128.store(drawn + four, counts);
+    else if (v128.any_true(v128.and(counts, i32x4.splat(above63)))) drawSome(drawn + four, n + four, at, stream);
+    else bitsFour(drawn + four, n + four, rates + at, words + at, stream);
+  }
+}
+
+function drawSome(drawn: usize, n: usize, at: usize, stream: u64): void {
+  for (let pair: usize = 0; pair < 16; pair += 8) {
+    const both = load<u64>(n + pair);
+    store<u64>(drawn + pair, both === 0 ? 0 : drawLarge(both, at + (pair << 1), stream));
   }
 }
 

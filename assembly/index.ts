@@ -1,7 +1,7 @@
 // Everything that the kernel module offers to its host: functions over numbers only.
 export { exp, log, pow } from './mathematics';
 export { logFactorial } from './draws/factorial';
-export { probePhilox, probePhiloxLanes, probeSample, probeStream } from './probe';
+export { probeExpTwo, probePhilox, probePhiloxLanes, probeSample, probeStream } from './probe';
 export { release, reserve } from './memory';
 export {
   open,

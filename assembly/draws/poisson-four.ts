@@ -1,6 +1,6 @@
 // Four Poisson draws side by side, each the very number that it would be alone.
 import { f64At, putF64, u64At } from '../arrays';
-import { exp } from '../mathematics';
+import { expTwo } from '../exp-two';
 import { mostByInversion, poisson } from './poisson';
 import { finalise, firstWord, unit } from './stream';
 
@@ -30,8 +30,8 @@ function invertFour(means: usize, u0: v128, u1: v128): void {
   const mean0 = v128.load(means);
   const mean1 = v128.load(means, 16);
   const arrived = f64x2.splat(-1);
-  let chance0 = f64x2.replace_lane(f64x2.splat(exp(-f64At(means, 0))), 1, exp(-f64At(means, 1)));
-  let chance1 = f64x2.replace_lane(f64x2.splat(exp(-f64At(means, 2))), 1, exp(-f64At(means, 3)));
+  let chance0 = expTwo(f64x2.neg(mean0));
+  let chance1 = expTwo(f64x2.neg(mean1));
   let k0 = i64x2.splat(0);
   let k1 = i64x2.splat(0);
   for (let k: f64 = 1; k <= 200; k++) {

@@ -66,6 +66,10 @@ function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
   const width = i32At(aliasStart, patch + 1) - first;
   if (width === 0) return;
   const target = batch.arrivals + <usize>c * batch.cellBytes;
+  if (fewEach(manyPerColumn * width)) {
+    pickTogether(target, first, width, travel);
+    return;
+  }
   for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
     const leavers = load<u32>(batch.counts + (lane << 2));
     if (leavers === 0) continue;
@@ -76,6 +80,59 @@ function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
     } else {
       pick(leavers, first, width, finalise(load<u64>(at) + travel), finalise(load<u64>(at, 128) + travel));
     }
+  }
+}
+
+/** Leavers of a lane that `pickTogether` takes at most. */
+const fewLeavers: i32 = 8;
+/** i32 [pick]: the lane of each, with room for a last one's eight. u64 [lane][2]: states of the streams. */
+const pickLanes = memory.data(4 * (16 * 8 + 8), 16);
+const pickStates = memory.data(16 * 16, 16);
+
+function fewEach(most: i32): bool {
+  const limit = i32x4.splat(min<i32>(most, fewLeavers));
+  const low = i32x4.max_u(v128.load(batch.counts), v128.load(batch.counts, 16));
+  const high = i32x4.max_u(v128.load(batch.counts, 32), v128.load(batch.counts, 48));
+  return !v128.any_true(i32x4.gt_u(i32x4.max_u(low, high), limit));
+}
+
+/**
+ * The same picks as `pick`, those of all lanes in one list, without a branch that depends on chance: a processor that guesses
+ * wrong loses more than a pick costs.
+ */
+function pickTogether(target: usize, first: i32, width: i32, stream: u64): void {
+  let end = pickLanes;
+  for (let lane = 0; lane < layout.lanes; lane++) {
+    const at = batch.words + ((<usize>lane) << 3);
+    const state = pickStates + ((<usize>lane) << 4);
+    store<u64>(state, finalise(load<u64>(at) + stream));
+    store<u64>(state, finalise(load<u64>(at, 128) + stream), 8);
+    const same = i32x4.splat(lane);
+    v128.store(end, same);
+    v128.store(end, same, 16);
+    end += (<usize>load<u32>(batch.counts + ((<usize>lane) << 2))) << 2;
+  }
+  const keep = aliasKeep + ((<usize>first) << 3);
+  const both = aliasEnds + ((<usize>first) << 3);
+  const row = batch.rowBytes();
+  for (let next = pickLanes; next < end; next += 4) {
+    const lane = <usize>load<u32>(next);
+    const state = pickStates + (lane << 4);
+    const s0 = load<u64>(state);
+    const s1 = load<u64>(state, 8);
+    const position = unit(firstWord(s0, s1)) * f64(width);
+    const column = <usize>i32(position);
+    const other = <usize>(position - f64(column) >= load<f64>(keep + (column << 3)));
+    const way = load<i32>(both + (column << 3) + (other << 2));
+    // -1 is death on the way: nobody arrives over the first.
+    const nobody = way >> 31;
+    const taken = way & ~nobody;
+    const at = target + (lane << 2) + <usize>i32At(ends, taken) * row;
+    store<i32>(at, load<i32>(at) + 1 + nobody);
+    putF64(moved, taken, f64At(moved, taken) + f64(1 + nobody));
+    const t = s1 ^ s0;
+    store<u64>(state, rotl<u64>(s0, 49) ^ t ^ (t << 21));
+    store<u64>(state, rotl<u64>(t, 28), 8);
   }
 }
 
@@ -98,8 +155,8 @@ function pick(leavers: u32, first: i32, width: i32, s0: u64, s1: u64): void {
   for (let i: u32 = 0; i < leavers; i++) {
     const position = unit(firstWord(s0, s1)) * f64(width);
     const column = <usize>i32(position);
-    const other: usize = position - f64(column) < load<f64>(keep + (column << 3)) ? 0 : 4;
-    const way = load<i32>(both + (column << 3) + other);
+    const other = <usize>(position - f64(column) >= load<f64>(keep + (column << 3)));
+    const way = load<i32>(both + (column << 3) + (other << 2));
     if (way >= 0) arrive(way, 1);
     const t = s1 ^ s0;
     s0 = rotl<u64>(s0, 49) ^ t ^ (t << 21);

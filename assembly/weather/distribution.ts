@@ -2,7 +2,7 @@
 import { f64At } from '../arrays';
 import { laneNumbers } from '../batch';
 import * as layout from '../layout';
-import { exp } from '../mathematics';
+import { expTwo } from '../exp-two';
 
 /** target[lane] holds z before, and the number times its scale after. */
 export function distribute(target: usize, distribution: usize, tables: usize): void {
@@ -12,9 +12,14 @@ export function distribute(target: usize, distribution: usize, tables: usize): v
   const scale = load<f64>(distribution, 24);
   const end = target + laneNumbers;
   if (form === layout.distributionLognormal) {
-    for (let at = target; at < end; at += 8) store<f64>(at, scale * exp(a + b * load<f64>(at)));
+    for (let at = target; at < end; at += 16) {
+      v128.store(at, f64x2.mul(f64x2.splat(scale), expTwo(f64x2.add(f64x2.splat(a), times(b, at)))));
+    }
   } else if (form === layout.distributionLogit) {
-    for (let at = target; at < end; at += 8) store<f64>(at, scale / (1 + exp(-a - b * load<f64>(at))));
+    for (let at = target; at < end; at += 16) {
+      const against = f64x2.add(f64x2.splat(1), expTwo(f64x2.sub(f64x2.splat(-a), times(b, at))));
+      v128.store(at, f64x2.div(f64x2.splat(scale), against));
+    }
   } else if (form === layout.distributionConstant) {
     for (let at = target; at < end; at += 8) store<f64>(at, scale);
   } else {
@@ -24,6 +29,10 @@ export function distribute(target: usize, distribution: usize, tables: usize): v
       store<f64>(at, scale * max<f64>(0, min<f64>(most, tabled(nodes, b, load<f64>(at)))));
     }
   }
+}
+
+function times(factor: f64, at: usize): v128 {
+  return f64x2.mul(f64x2.splat(factor), v128.load(at));
 }
 
 /** Cubic Hermite between nodes of value and slope; z beyond the table is held to its end. */

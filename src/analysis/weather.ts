@@ -98,8 +98,14 @@ function patchRange({ weather }: Landscape): Range | null {
   if (weather === undefined) return null;
   const { of } = weather;
   if (typeof of === 'number') return { low: of, high: of };
-  const others = of.values.filter((_, i) => i % (of.columns + 1) !== 0);
-  return others.length === 0 ? null : { low: Math.min(...others), high: Math.max(...others) };
+  if (of.columns < 2) return null;
+  let [low, high] = [Infinity, -Infinity];
+  of.values.forEach((value, i) => {
+    if (i % (of.columns + 1) === 0) return;
+    low = Math.min(low, value);
+    high = Math.max(high, value);
+  });
+  return { low, high };
 }
 
 function factsOf(

@@ -51,6 +51,7 @@ export interface MachineFunctions {
   readonly manyStarts: () => number;
   /** Wanted: 1 vectors, 2 elasticities, 4 each from the vectors of the one two places before it. */
   readonly solveMany: (count: number, wanted: number, multiplications: number) => void;
+  readonly probeExpTwo: (both: number) => void;
   readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
   readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
   readonly probeSample: (out: number, draws: number, request: number) => void;
@@ -97,6 +98,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   manyLefts: true,
   manyStarts: true,
   solveMany: true,
+  probeExpTwo: true,
   probePhilox: true,
   probePhiloxLanes: true,
   probeSample: true,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { loadMachine } from '../../src/machine/machine.ts';
 import { exp, log, pow } from '../../src/machine/pinned.ts';
 
 describe('the pinned functions', () => {
@@ -24,5 +25,35 @@ describe('the pinned functions', () => {
       expect(Math.abs(exp(x) / Math.exp(x) - 1)).toBeLessThan(4.5e-16);
       expect(Math.abs(log(exp(x)) - x)).toBeLessThan(1e-15 + 4.5e-16 * Math.abs(x));
     }
+  });
+
+  it('give e^x to the last bit the same alone and two by two', () => {
+    const machine = loadMachine();
+    const at = machine.reserve(16);
+    const odd = [
+      0,
+      -0,
+      1e-17,
+      -1e-20,
+      511.9,
+      512,
+      -512,
+      709.7,
+      709.8,
+      1000,
+      -745,
+      -746,
+      1e308,
+      NaN,
+      Infinity,
+      -Infinity,
+    ];
+    const wide = Array.from({ length: 20_000 }, (_, k) => ((k * 7919) % 20_011) / 37 - 270);
+    [...odd, ...wide].forEach((x, k, all) => {
+      const neighbour = all[(k + 1) % all.length]!;
+      new Float64Array(machine.memory.buffer, at, 2).set([x, neighbour]);
+      machine.probeExpTwo(at);
+      expect([...new Float64Array(machine.memory.buffer, at, 2)]).toEqual([exp(x), exp(neighbour)]);
+    });
   });
 });
