@@ -141,7 +141,7 @@ describe('the printed image', () => {
       year program
       phase program
         survival "survival" key 24c5d480: rates 4, slots -
-        count "count" key af67dcac: weights 5, patches 6, outcomes 0
+        count "count" key af67dcac: weights 5, patches 6, outcomes 0, rules -
 
       sections
         0 patch keys at 544 (2 in 2): e6419ca3 f695dc63
