@@ -23,11 +23,17 @@ export function loadAgain(path: string): CompiledModel {
 
 function readInputs(path: string): Inputs {
   const read = parsed(path);
-  const { format, command, tool, hash, spec } = read;
+  const { format, command, tool, hash, spec, places } = read;
   if (format !== 'skein-inputs/1' || !isRecord(spec) || !isRecord(tool) || typeof hash !== 'string') {
     throw refused(path, 'it is not the run.json of a run');
   }
   if (command !== 'run') throw refused(path, `it belongs to \`skein ${String(command)}\``);
+  if (places !== undefined) {
+    throw refused(
+      path,
+      'the places of its patches are hidden. Whoever has the model runs it with the `run` of this file',
+    );
+  }
   const [made, here] = [String(tool['kernel']), kernelVersion];
   if (made.split('.')[0] !== here.split('.')[0]) {
     const version = String(tool['version']);

@@ -91,17 +91,24 @@ function addAnalyse(program: Command): void {
 }
 
 function addRuns(program: Command): void {
-  model(program, 'path', 'follow the path without chance, year by year', ['set', 'years', 'json', 'out', 'quiet'])
+  model(program, 'path', 'follow the path without chance, year by year', [
+    'set',
+    'years',
+    'json',
+    'out',
+    'places',
+    'quiet',
+  ])
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
   const chance = ['set', 'years', 'replicates', 'seed', 'draws', 'threads'] as const;
-  addOptions(program.command('run'), [...chance, 'json', 'out', 'quiet', 'allow'])
+  addOptions(program.command('run'), [...chance, 'json', 'out', 'places', 'quiet', 'allow'])
     .argument('[model]', 'a model file, or - for standard input')
     .description('run the model many times with chance')
     .option('--again <file>', 'run what a run.json of `--out` holds, to the last byte')
     .addHelpText('after', '\nExample:\n  skein run models/reed-hare.yaml --replicates 500 --seed 7')
     .action(run(async () => (await import('./command/run.ts')).runCommand));
-  model(program, 'report', 'run the model and write one page that an agency can read', [...chance, 'quiet'])
+  model(program, 'report', 'run the model and write one page that an agency can read', [...chance, 'places', 'quiet'])
     .requiredOption('-o, --output <file>', 'the HTML file to write (- for standard output)')
     .addHelpText('after', '\nExample:\n  skein report models/reed-hare.yaml -o reed-hare.html')
     .action(run(async () => (await import('./command/report.ts')).reportCommand));

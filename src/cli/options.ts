@@ -1,6 +1,7 @@
 // Options that several commands share, read from the words of the command line.
 import { InvalidArgumentError, Option, type Command } from 'commander';
 import type { Settings } from '../spec/settings.ts';
+import { placesChoices, type PlacesChoice } from './places-choice.ts';
 
 export interface CommonOptions {
   readonly set?: Settings['set'];
@@ -13,9 +14,11 @@ export interface CommonOptions {
   readonly out?: string;
   readonly quiet?: boolean;
   readonly allow?: readonly string[];
+  readonly places?: PlacesChoice;
 }
 
-type Shared = 'set' | 'years' | 'replicates' | 'seed' | 'draws' | 'threads' | 'json' | 'out' | 'quiet' | 'allow';
+type Shared =
+  'set' | 'years' | 'replicates' | 'seed' | 'draws' | 'threads' | 'json' | 'out' | 'quiet' | 'allow' | 'places';
 
 const options: Readonly<Record<Shared, () => Option>> = {
   set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
@@ -31,6 +34,10 @@ const options: Readonly<Record<Shared, () => Option>> = {
   allow: () =>
     new Option('--allow <folder>', 'let the model read data files from this folder, too (repeatable)').argParser(
       (folder: string, before: readonly string[] | undefined) => [...(before ?? []), folder],
+    ),
+  places: () =>
+    new Option('--places <how>', 'how what is written tells where patches are (exact if nothing is said)').choices(
+      placesChoices,
     ),
   quiet: () => new Option('--quiet', 'no warnings and no progress'),
 };

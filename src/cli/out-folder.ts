@@ -3,6 +3,7 @@
 import { join } from 'node:path';
 import type { Analysis } from '../analysis/schema.ts';
 import type { CompiledModel } from '../pipeline.ts';
+import type { Hidden } from '../report/hiding/hide.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
 import { makeFolder, pendingFile, type PreparedFile } from './files.ts';
 import { logOf } from './log.ts';
@@ -16,6 +17,8 @@ export interface OutContent {
   readonly tables: readonly Table[];
   /** 1 where it is not said. */
   readonly threads?: number;
+  /** Takes the place of everything that tells where patches are. */
+  readonly hidden?: Hidden | null;
 }
 
 export interface OutFolder {
@@ -28,13 +31,22 @@ export function openOutFolder(folder: string): OutFolder {
   makeFolder(folder);
   pendingFile(join(folder, 'results.json'));
   return {
-    write: ({ spec, provenance }, { command, results, tables, threads = 1 }) => {
-      const inputs = { format: 'skein-inputs/1', command, ...provenance, spec: specJson(spec) };
+    write: ({ spec, provenance }, { command, results, tables, threads = 1, hidden = null }) => {
+      const { hash } = hidden ?? provenance;
+      const places = hidden === null ? {} : { places: hidden.places };
+      const inputs = {
+        format: 'skein-inputs/1',
+        command,
+        ...provenance,
+        hash,
+        ...places,
+        spec: specJson(hidden?.spec ?? spec),
+      };
       writeTogether(folder, [
         ...tables.flatMap((table) => tableFiles(table)),
         ['dictionary.csv', dictionaryText(tables)],
         ['results.json', jsonText(results)],
-        ['log.json', jsonText(logOf({ command, hash: provenance.hash, started, threads }))],
+        ['log.json', jsonText(logOf({ command, hash, started, threads }))],
         ['run.json', jsonText(inputs)],
       ]);
     },

@@ -35,7 +35,7 @@ export function runTables(model: Model, results: RunResults): readonly Table[] {
     ...(results.handled.length === 0 ? [] : [handledTable(results)]),
     inUseTable(results),
     lowestTable(results),
-    patchTable(model),
+    patchTable(model, results),
     parameterTable(model),
     ...(results.draws === undefined ? [] : [drawTable(results, results.draws)]),
   ];
@@ -231,14 +231,16 @@ function lowestTable({ meanLowestCount, replicates, stopped }: RunResults): Tabl
   };
 }
 
-function patchTable(model: Model): Table {
+function patchTable(model: Model, { places }: RunResults): Table {
+  const where = places === undefined ? 'missing where none was given' : `${places}, so that nobody finds the patch`;
+  const size = places === undefined ? '' : ' to one digit';
   return {
     name: 'patches',
     columns: [
       { name: 'patch', unit: '', meaning: 'Name of the patch.' },
-      { name: 'x', unit: 'km', meaning: 'Position to the east; missing where none was given.' },
-      { name: 'y', unit: 'km', meaning: 'Position to the north; missing where none was given.' },
-      { name: 'area', unit: 'km2', meaning: 'Area; missing where none was given.' },
+      { name: 'x', unit: 'km', meaning: `Position to the east; ${where}.` },
+      { name: 'y', unit: 'km', meaning: `Position to the north; ${where}.` },
+      { name: 'area', unit: 'km2', meaning: `Area${size}; missing where none was given.` },
       animals('capacity', 'Capacity; missing where none was given.'),
     ],
     rows: inFileOrder(model).flatMap((p) => {

@@ -53,3 +53,9 @@ export const Quantiles = Type.Object(
   },
   { description: 'Counts that the given share of the runs does not exceed.' },
 );
+
+export const places = Type.Optional(
+  Type.Union([Type.Literal('shifted'), Type.Literal('schematic')], {
+    description: 'Where the places of patches are hidden: the hash then leaves them out. Absent where they are exact.',
+  }),
+);

@@ -133,6 +133,7 @@ export const RunSchema = Type.Object({
     runs: part.whole('Runs that had to be stopped; they are in no other number.'),
     reasons: Type.Array(Type.String()),
   }),
+  places: part.places,
   cautions: part.cautions,
 });
 
@@ -149,5 +150,6 @@ export const PathSchema = Type.Object({
       animals: Type.Number({ minimum: 0, description: 'On the path without chance.' }),
     }),
   ),
+  places: part.places,
   cautions: part.cautions,
 });

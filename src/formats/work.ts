@@ -61,6 +61,7 @@ export const InputsSchema = Type.Object({
   format: Type.Literal('skein-inputs/1'),
   command,
   ...part.provenance,
+  places: part.places,
   spec: Type.Object({}, { description: 'The model with all its inputs, as the language has it.' }),
 });
 

@@ -5,6 +5,7 @@ import type { CrowdingCoefficients } from '../compile/coefficients.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import type { Model } from '../model/model.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
+import type { Hidden } from './hiding/hide.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 
 export interface ReportInput {
@@ -24,6 +25,8 @@ export interface ReportInput {
   readonly commandLine: string;
   /** The same for the run whose tables and run.json hold what the page shows. */
   readonly runLine?: string;
+  /** Where places are hidden: `model`, the hash and the texts are then those that may be handed out. */
+  readonly hiding?: Pick<Hidden, 'places' | 'ring'>;
   /** The script of the page, as built from src/page/. */
   readonly pageScript: string;
 }
@@ -33,6 +36,6 @@ export interface InputData {
   /** As the model names them. */
   readonly files: readonly string[];
   readonly drivers: Spec['drivers'];
-  /** The model with what its files hold in their place. */
-  readonly wholeText: string;
+  /** The model with what its files hold in their place; null where it is not to be shown. */
+  readonly wholeText: string | null;
 }

@@ -9,6 +9,7 @@ import { answerSection, headSection } from './section/head.ts';
 import { mapSection } from './section/map.ts';
 import { outcomesSection } from './section/outcomes.ts';
 import { styleSheet } from './style.ts';
+import { hidingWords } from './hiding/hiding-words.ts';
 import { summariseForView } from './view.ts';
 import { worthNote } from './worth.ts';
 
@@ -20,7 +21,7 @@ export function buildReport(input: ReportInput): string {
   const summary = [
     answerSection(answer(results, view.animals), results),
     outcomesSection(model, results),
-    mapSection(view, worthNote(input)),
+    mapSection(view, { worth: worthNote(input), hidden: hidingWords(input) }),
     chancesSection(view),
   ];
   const rest = [abundanceSection(view, results), limitsSection(input), annexSection(input)];

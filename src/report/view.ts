@@ -3,6 +3,7 @@ import type { OutcomeResult, YearSummary } from '../results/results.ts';
 import { inFileOrder } from '../results/summarise.ts';
 import type { Fan, LinkView, OutcomeView, OutlineView, PatchView, ReportView, WorthView } from '../view/contract.ts';
 import { thinOutlines } from '../view/map/thin.ts';
+import { coarseMovement } from './hiding/coarse-movement.ts';
 import type { ReportInput } from './input.ts';
 import { worthAt } from './worth.ts';
 import { estimateMovement, type LinkFlow } from './movement.ts';
@@ -14,7 +15,8 @@ export function summariseForView(input: ReportInput): ReportView {
   const { model, results } = input;
   const order = inFileOrder(model);
   const outlines = thinOutlines(model.patches.map((patch) => patch.outline ?? null));
-  const flows = estimateMovement(input) ?? [];
+  const exact = estimateMovement(input) ?? [];
+  const flows = input.hiding === undefined ? exact : coarseMovement(exact);
   const links = strongest(flows, order);
   return {
     format: 'skein-view/1',
@@ -27,7 +29,8 @@ export function summariseForView(input: ReportInput): ReportView {
     inUse: fan(results.patchesInUse),
     patches: order.flatMap((p) => patchView(input, p, outlines[p] ?? null)),
     links,
-    linksLeftOut: flows.length - links.length,
+    linksLeftOut: exact.length - links.length,
+    ...(input.hiding === undefined ? {} : { places: input.hiding.places }),
     outcomes: results.outcomes.map((outcome) => outcomeView(outcome, results.abundance.whole)),
     worthAt: (input.patchValues?.value ?? null) === null ? null : worthAt,
   };

@@ -145,6 +145,8 @@ export interface RunResults {
   readonly draws?: Draws;
   /** Runs that had to be stopped, with the reason; they are in no other number. */
   readonly stopped: { readonly runs: number; readonly reasons: readonly string[] };
+  /** Where places are hidden: the hash then leaves them out. */
+  readonly places?: 'shifted' | 'schematic';
   readonly cautions: readonly string[];
 }
 
@@ -162,5 +164,7 @@ export interface PathResults {
     readonly class: string;
     readonly animals: number;
   }[];
+  /** Where places are hidden: the hash then leaves them out. */
+  readonly places?: 'shifted' | 'schematic';
   readonly cautions: readonly string[];
 }

@@ -79,6 +79,8 @@ export interface ReportView {
   readonly links: readonly LinkView[];
   /** Links that exist but are too weak to be kept among so many. */
   readonly linksLeftOut: number;
+  /** Absent where patches stand where they are. */
+  readonly places?: 'shifted' | 'schematic';
   readonly outcomes: readonly OutcomeView[];
   /** Where the worth of patches was taken, to follow 'taken'; null where it is not told. */
   readonly worthAt: string | null;

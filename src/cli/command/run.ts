@@ -1,5 +1,6 @@
 // skein run: stochastic replicates of one scenario.
 import type { CompiledModel } from '../../pipeline.ts';
+import { withHiding } from '../../report/hiding/hide.ts';
 import { runText } from '../../report/text.ts';
 import { loadAgain } from '../again.ts';
 import { Ending, exitCodes } from '../exit.ts';
@@ -7,6 +8,7 @@ import { openOutFolder, type OutFolder } from '../out-folder.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { writeOut } from '../output.ts';
+import { askedHiding } from '../places.ts';
 import { runReplicates } from '../replicates.ts';
 import { runTables } from '../tables.ts';
 import { terminalOf } from '../terminal.ts';
@@ -19,8 +21,11 @@ export interface RunCommandOptions extends CommonOptions {
 export async function runCommand(path: string | undefined, options: RunCommandOptions): Promise<void> {
   const asked = load(path, options);
   const folder: OutFolder | null = options.out === undefined ? null : openOutFolder(options.out);
-  const { compiled, results, threads, cutShort } = await runReplicates(asked, options);
-  folder?.write(compiled, { command: 'run', results, tables: runTables(compiled.model, results), threads });
+  const { compiled, threads, cutShort, ...done } = await runReplicates(asked, options);
+  const hidden = askedHiding(compiled, { ...options, path: path ?? options.again ?? '-', written: folder !== null });
+  const results = withHiding(done.results, hidden);
+  const tables = runTables(hidden?.model ?? compiled.model, results);
+  folder?.write(compiled, { command: 'run', results, tables, threads, hidden });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
   else {
     const animals = compiled.model.counts === 'females' ? 'females' : 'animals';

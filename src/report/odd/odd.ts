@@ -11,7 +11,8 @@ import { inputDataWords } from './input-data.ts';
 import { phaseWords } from './phases.ts';
 import { submodels } from './submodels.ts';
 
-export function oddSection({ model, results, landscape, data }: ReportInput): Markup {
+export function oddSection(input: ReportInput): Markup {
+  const { model, results, data } = input;
   const headings: readonly (readonly [string, Content])[] = [
     ['Purpose and patterns', purpose(model)],
     ['Entities, state variables, and scales', entities(model)],
@@ -19,7 +20,7 @@ export function oddSection({ model, results, landscape, data }: ReportInput): Ma
     ['Design concepts', designConcepts(model, results)],
     ['Initialization', initialWords(model)],
     ['Input data', inputDataWords(model, data)],
-    ['Submodels', submodels(model, landscape)],
+    ['Submodels', submodels(input)],
   ];
   const parts = headings.map(([title, content], i) => mark`<h4>${String(i + 1)}. ${title}</h4>${content}`);
   return mark`<h3 id="model">The model in the seven ODD headings</h3>

@@ -6,6 +6,7 @@ import { inFileOrder } from '../../results/summarise.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { handlingWords } from '../handling-words.ts';
+import type { ReportInput } from '../input.ts';
 import { destinations } from './dispersal.ts';
 import { classNames } from './phases.ts';
 import { catastropheWords } from '../catastrophe-words.ts';
@@ -13,12 +14,12 @@ import { uncertaintyWords } from '../uncertainty-words.ts';
 import { weatherWords } from '../weather-words.ts';
 import { digits, matrixTables, rateTable } from './rates.ts';
 
-export function submodels(model: Model, landscape: Landscape): Markup {
+export function submodels({ model, landscape, hiding }: ReportInput): Markup {
   const phases = model.phases
     .filter((phase) => phase.kind !== 'count')
     .map((phase) => submodel(phase.name, numbers(phase, model)));
   const conditions = model.crowding.map((one) => submodel(one.name, crowding(one, model)));
-  return mark`${phases}${conditions}${weather(model, landscape)}${catastrophes(model, landscape)}${unknown(model)}`;
+  return mark`${phases}${conditions}${weather(model, landscape, hiding !== undefined)}${catastrophes(model, landscape)}${unknown(model)}`;
 }
 
 function catastrophes(model: Model, landscape: Landscape): Markup | null {
@@ -27,9 +28,14 @@ function catastrophes(model: Model, landscape: Landscape): Markup | null {
   return submodel('catastrophes and good years', mark`<ul>${items}</ul>`);
 }
 
-function weather({ variation }: Model, landscape: Landscape): Markup | null {
+/** Correlations that follow from distances would tell the least and the greatest of them. */
+function weather({ variation }: Model, landscape: Landscape, hidden: boolean): Markup | null {
   if (variation === null) return null;
-  const items = weatherWords(weatherFacts(variation, landscape)).map((words) => mark`<li><bdi>${words}</bdi></li>`);
+  const facts = weatherFacts(variation, landscape);
+  const telling = hidden && 'rangeKm' in variation.betweenPatches;
+  const items = weatherWords(telling ? { ...facts, betweenPatches: null } : facts).map(
+    (words) => mark`<li><bdi>${words}</bdi></li>`,
+  );
   return submodel('variation from year to year', mark`<ul>${items}</ul>`);
 }
 

@@ -5,13 +5,16 @@ import { plain } from '../../view/number.ts';
 import { drawTable, type Row } from '../../view/table.ts';
 import { basisWords } from '../../results/basis.ts';
 import type { InputData, ReportInput } from '../input.ts';
+import { placesCaution } from '../hiding/hiding-words.ts';
 import { oddSection } from '../odd/odd.ts';
 import { digits } from '../odd/rates.ts';
 import { list, section } from './section.ts';
 
 /** Stands before the annex: nobody should read the answer without it. */
-export function limitsSection({ results }: ReportInput): Markup {
-  const items = results.cautions.map((text) => mark`<li>${text}</li>`);
+export function limitsSection(input: ReportInput): Markup {
+  const places = placesCaution(input);
+  const cautions = [...(places === null ? [] : [places]), ...input.results.cautions];
+  const items = cautions.map((text) => mark`<li>${text}</li>`);
   return section('limits', 'Limits and cautions', mark`<ul class="limits">${items}</ul>`);
 }
 
@@ -38,13 +41,16 @@ function defaults(model: Model): Markup {
 }
 
 function rerun(input: ReportInput): Markup {
-  const { results, specText, data } = input;
+  const { results, specText, data, hiding } = input;
   const { tool, seed, replicates, hash, draws } = results;
   const facts = list('numbers', [
     ['seed', mark`<code>${String(seed)}</code>`],
     ['futures', plain(replicates)],
     ...(draws === undefined ? [] : [['draws of what is not known', plain(draws.number)] as const]),
-    ['hash of all that decides the result (SHA-256)', mark`<code>${hash}</code>`],
+    [
+      `hash of all that decides the result${hiding === undefined ? '' : ' but the places'} (SHA-256)`,
+      mark`<code>${hash}</code>`,
+    ],
     ['version', `${tool.name} ${tool.version}, kernel ${tool.kernel}`],
   ]);
   return mark`<h3 id="again">How to run it again</h3>
@@ -54,20 +60,25 @@ ${facts}
 ${text('The text of the model', specText)}${data === undefined ? null : wholeText(data)}`;
 }
 
-function steps({ commandLine, runLine }: ReportInput): Markup {
+function steps({ commandLine, runLine, hiding }: ReportInput): Markup {
   const page = mark`<li><code>${commandLine}</code> writes this page again.</li>`;
   if (runLine === undefined) return mark`<ol>${page}</ol>`;
+  const whole = hiding === undefined;
+  const holds = whole ? 'the model with all its inputs' : 'the model with all its inputs but the places';
+  const again = mark`<li><code>skein run --again results/run.json</code> gives the same bytes from that file alone, for whoever it is
+handed to.</li>`;
+  const hidden = mark`<li>Only whoever has the model with its places can run it.</li>`;
   return mark`<ol>${page}
-<li><code>${runLine}</code> writes the tables behind it, and <code>results/run.json</code>, which holds the model with all its
-inputs. Its <code>hash</code> is the one below: where they are equal, everything that decides the result is.</li>
-<li><code>skein run --again results/run.json</code> gives the same bytes from that file alone, for whoever it is handed to.</li></ol>`;
+<li><code>${runLine}</code> writes the tables behind it, and <code>results/run.json</code>, which holds ${holds}. Its
+<code>hash</code> is the one below: where they are equal, everything that decides the result is${whole ? '' : ', but for the places'}.</li>
+${whole ? again : hidden}</ol>`;
 }
 
 /** Longer texts would make the page heavy. */
 const longestText = 300_000;
 
 function wholeText({ files, wholeText: whole }: InputData): Markup | null {
-  if (files.length === 0) return null;
+  if (files.length === 0 || whole === null) return null;
   if (whole.length <= longestText) return text('The same with what its files hold, which runs by itself', whole);
   return mark`<p>With what its files hold the text is too long to be printed here; <code>skein show MODEL spec</code> prints it.</p>`;
 }

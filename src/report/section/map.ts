@@ -10,8 +10,14 @@ import { section } from './section.ts';
 /** Pixels, for a screen and for a phone. */
 const widths = { wide: 760, narrow: 340 } as const;
 
-/** `worth` says what sources and sinks are. */
-export function mapSection(view: ReportView, worth: string): Markup {
+interface MapNotes {
+  /** What sources and sinks are. */
+  readonly worth: string;
+  /** How places are hidden; null where they are not. */
+  readonly hidden: string | null;
+}
+
+export function mapSection(view: ReportView, notes: MapNotes): Markup {
   const last = view.years.length - 1;
   const state: MapState = { count: last, show: 'abundance', focus: null };
   const picture = (size: 'wide' | 'narrow') =>
@@ -20,7 +26,7 @@ export function mapSection(view: ReportView, worth: string): Markup {
     'map',
     'The map',
     mark`${controls(view)}
-<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, worth)}</figcaption></figure>
+<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, notes)}</figcaption></figure>
 <details class="tables"><summary>The numbers of the map as tables</summary>
 <div id="map-tables">${mapTables(view, last)}</div></details>`,
   );
@@ -61,8 +67,8 @@ function choicesFor({ patches, worthAt }: ReportView): readonly MapShow[] {
   return mapShows.filter((show) => known[show]);
 }
 
-function caption(view: ReportView, worth: string): Markup {
-  return mark`${placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
+function caption(view: ReportView, { worth, hidden }: MapNotes): Markup {
+  return mark`${hidden ?? placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
 so the patches together are no single future. ${worth}`;
 }
 

@@ -1,0 +1,4 @@
+// How places are told.
+
+export const placesChoices = ['exact', 'shifted', 'schematic'] as const;
+export type PlacesChoice = (typeof placesChoices)[number];
