@@ -149,6 +149,7 @@ export const survivalSlots = 4;
 export const opAgeing = 3;
 export const ageingAdvance = 3; // class shares
 export const ageingNext = 4; // class links
+export const ageingByPatch = 5; // rates: shares by patch and class, in the place of those by class; or none
 export const opDemography = 4;
 export const demographyFates = 3; // patch matrices
 export const demographyBirths = 4; // patch matrices

@@ -1,6 +1,7 @@
 // The story of the tool: from a spec to a model, its landscape, its compiled year and image, and to what a run says.
 import { solveCapacities } from './compile/capacity.ts';
 import { buildImage } from './compile/image/build.ts';
+import { solveStages } from './compile/stage-advance.ts';
 import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
 import { runPath } from './kernel/path.ts';
@@ -39,12 +40,12 @@ export interface Compilation {
 
 export function compileSpec(spec: Spec): Compilation {
   const resolved = resolveModel(spec);
-  const { model } = resolved;
-  if (model === null) return { compiled: null, findings: resolved.findings };
-  const { landscape, findings: ofLandscape } = buildLandscape(model);
+  if (resolved.model === null) return { compiled: null, findings: resolved.findings };
+  const { landscape, findings: ofLandscape } = buildLandscape(resolved.model);
+  const { model, findings: ofStages } = solveStages(resolved.model, landscape);
   const { coefficients, findings: ofCapacities } = solveCapacities(model);
   const { animals, findings: ofStart } = startAnimals({ model, landscape, coefficients });
-  const findings = [...resolved.findings, ...ofLandscape, ...ofCapacities, ...ofStart];
+  const findings = [...resolved.findings, ...ofLandscape, ...ofStages, ...ofCapacities, ...ofStart];
   if (findings.some((finding) => finding.severity === 'error')) return { compiled: null, findings };
   const image = buildImage({ model, landscape, coefficients, startAnimals: animals });
   const provenance = provenanceOf(model.title, spec);

@@ -2,6 +2,7 @@
 import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
+import { advanceShares } from '../phases/ageing';
 import { crowdingFactor, crowdingShapeOf } from '../phases/crowding';
 import { matingFactor } from '../phases/mating';
 import { roomOf } from './weather';
@@ -42,10 +43,10 @@ export function meanSurvival(record: usize): void {
 }
 
 export function meanAgeing(record: usize): void {
-  const advance = section(operand(record, layout.ageingAdvance));
   const next = section(operand(record, layout.ageingNext));
   memory.fill(arrivals, 0, stateBytes());
   for (let patch = 0; patch < patches; patch++) {
+    const advance = advanceShares(record, patch);
     for (let c = 0; c < classes; c++) {
       const going = animalsIn(patch, c) * f64At(advance, c);
       const to = i32At(next, c);

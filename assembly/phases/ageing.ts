@@ -5,18 +5,19 @@ import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells
 import { philoxLanes } from '../draws/philox';
 import { streamOf } from '../draws/stream';
 import { classes, classKeys, operand, patches, patchKeys, section } from '../image';
-import { ageingAdvance, ageingNext, recordKey, useAdvance } from '../layout';
+import { ageingAdvance, ageingByPatch, ageingNext, recordKey, useAdvance } from '../layout';
 
 export function age(record: usize): void {
-  const advance = section(operand(record, ageingAdvance));
   const next = section(operand(record, ageingNext));
-  const chance = anyChance(advance);
+  const chance =
+    anyChance(section(operand(record, ageingAdvance)), classes) || anyChance(sharesByPatch(record), patches * classes);
   for (let patch = 0; patch < patches; patch++) {
     const row = animals + <usize>patch * rowBytes();
     if (!occupied(row, rowBytes())) continue;
     if (chance) {
       philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, recordKey));
     }
+    const advance = advanceShares(record, patch);
     // The first row of the arrivals serves as the next state of the patch.
     memory.fill(arrivals, 0, rowBytes());
     for (let c = 0; c < classes; c++) {
@@ -27,8 +28,20 @@ export function age(record: usize): void {
   }
 }
 
-function anyChance(advance: usize): bool {
-  for (let c = 0; c < classes; c++) {
+function sharesByPatch(record: usize): usize {
+  return section(operand(record, ageingByPatch));
+}
+
+/** By class, in a patch. */
+export function advanceShares(record: usize, patch: i32): usize {
+  const byPatch = sharesByPatch(record);
+  if (byPatch === 0) return section(operand(record, ageingAdvance));
+  return byPatch + ((<usize>(patch * classes)) << 3);
+}
+
+function anyChance(advance: usize, count: i32): bool {
+  if (advance === 0) return false;
+  for (let c = 0; c < count; c++) {
     const share = f64At(advance, c);
     if (share > 0 && share < 1) return true;
   }

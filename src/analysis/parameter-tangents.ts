@@ -1,6 +1,7 @@
 // How the matrix moves with each named number of a model: through expressions, rates, kernels, their normalisation, and crowding.
 import type { BlockMatrix } from '../compile/block-matrix.ts';
 import { coefficientSlopes, type CrowdingRule } from '../compile/slopes/coefficient-slopes.ts';
+import { withStageSlopes } from '../compile/slopes/stage-slopes.ts';
 import { yearSlope } from '../compile/slopes/year-slope.ts';
 import { slopesOf, type ModelSlopes } from '../model/slopes/slopes.ts';
 import { principalPart } from '../numeric/principal-part.ts';
@@ -25,7 +26,8 @@ export function parameterTangents(base: CompiledModel, block: BlockMatrix, state
   const crowded = base.model.crowding.length > 0 && state.some((animals) => animals > 0);
   const withoutTangent: string[] = [];
   const parameterTangents = base.model.parameters.flatMap(({ name, value }): ParameterTangent[] => {
-    const slopes = read(name);
+    const written = read(name);
+    const slopes = written === null ? null : withStageSlopes(base, written);
     const along = (rule: CrowdingRule): SparseMatrix | null => exactTangent({ base, block, state, slopes }, rule);
     const held = along('held');
     const anew = crowded ? along('solved anew') : null;

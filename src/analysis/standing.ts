@@ -94,8 +94,9 @@ function isolated({ model, coefficients }: Compiled, p: number): Compiled {
         return { ...phase, active: never, patches: new Uint8Array(1), levels: pick(phase.levels, 1), to: 0 };
       case 'add':
         return { ...phase, active: never, amounts: table(phase.amounts, n) };
-      case 'count':
       case 'ageing':
+        return phase.advanceIn === undefined ? phase : { ...phase, advanceIn: pick(phase.advanceIn, n) };
+      case 'count':
         return phase;
     }
   });

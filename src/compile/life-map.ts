@@ -1,5 +1,6 @@
 // The part of a phase map that stays within one patch: survival, births, ageing, fates. The diagonal block of the map.
 import type { AgeingPhase, BreedingPhase, DemographyPhase, Model, SurvivalPhase } from '../model/model.ts';
+import { advanceAt } from './advance.ts';
 import { shareWithin } from './ceiling.ts';
 import { matingFactor } from './mating.ts';
 import type { ScaledPart } from '../model/chance.ts';
@@ -41,7 +42,7 @@ export function fatesMap(phase: LifePhase, request: LifeRequest): Float64Array {
       for (let c = 0; c < n; c++) map[c * n + c] = 1;
       return map;
     case 'ageing':
-      fillAgeing(map, phase, n);
+      fillAgeing(map, phase, request.patch);
       return map;
     case 'demography': {
       const table = tableAt(phase.fates, request.step);
@@ -81,9 +82,10 @@ function factor({ model, phase, patch, multipliers }: LifeRequest, part: ScaledP
   return multiplierOf(model, multipliers, { phase, part, patch, class: c });
 }
 
-function fillAgeing(map: Float64Array, { advance, next }: AgeingPhase, n: number): void {
+function fillAgeing(map: Float64Array, phase: AgeingPhase, patch: number): void {
+  const n = phase.next.length;
   for (let c = 0; c < n; c++) {
-    const [share, to] = [advance[c] ?? 0, next[c] ?? -1];
+    const [share, to] = [advanceAt(phase, { patch, class: c }), phase.next[c] ?? -1];
     map[c * n + c] = (map[c * n + c] ?? 0) + 1 - share;
     if (to >= 0) map[to * n + c] = (map[to * n + c] ?? 0) + share;
   }

@@ -1,5 +1,6 @@
 // Which classes can be there at the count. Counting before breeding finds nobody newborn, so that class is left out.
 import type { Model, Phase, RateTable } from '../model/model.ts';
+import { advanceAt } from './advance.ts';
 
 /** 1 for each class that belongs into the block matrix: all but those that are filled and emptied again between two counts. */
 export function presentClasses(model: Model): Uint8Array {
@@ -31,9 +32,10 @@ function after(model: Model, { phase, there, born }: Passing): Uint8Array {
     case 'ageing':
       there.forEach((present, c) => {
         if (present === 0) return;
-        const [share, to] = [phase.advance[c] ?? 0, phase.next[c] ?? -1];
-        if (share < 1) next[c] = 1;
-        if (share > 0 && to >= 0) next[to] = 1;
+        const to = phase.next[c] ?? -1;
+        const shares = model.patches.map((_, patch) => advanceAt(phase, { patch, class: c }));
+        if (shares.some((share) => share < 1)) next[c] = 1;
+        if (to >= 0 && shares.some((share) => share > 0)) next[to] = 1;
       });
       return next;
     case 'demography':

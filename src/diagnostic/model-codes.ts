@@ -22,6 +22,7 @@ export const modelCodes = {
   'repeated-phase': 'A phase stands twice in the year.',
   'missing-rates': 'A phase is in the year, but its rates are not given.',
   'unused-rates': 'Rates are given for a phase that is not in the year.',
+  'stage-duration': 'A stage has no duration that can be.',
   'missing-oldest': 'It is not said what happens to the oldest class.',
 
   // Rates
@@ -80,6 +81,7 @@ export const modelCodes = {
   'too-long-lived': 'Animals of the oldest class live longer than is known of any.',
   'too-fast-growth': 'A patch grows faster than its life history can.',
   'apparent-survival': 'A survival from marked animals stands beside emigration.',
+  'fast-stage': 'Animals pass a stage faster than its duration lets them.',
   'life-cycle': 'The life cycle falls into parts, or keeps swinging.',
   'long-horizon': 'The model looks further ahead than its counts reach back.',
 

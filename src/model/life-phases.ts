@@ -5,6 +5,7 @@ import { oldestClasses, oldestLeave } from './classes.ts';
 import { fail, type Context } from './context.ts';
 import type { AgeingPhase, SurvivalPhase } from './model.ts';
 import { buildTable } from './rates.ts';
+import { resolveStages } from './stages.ts';
 
 /** The phase `survival` of the language. */
 export function resolveSurvival(context: Context): SurvivalPhase | null {
@@ -62,7 +63,10 @@ export function resolveAgeing(context: Context): AgeingPhase | null {
   const next = Int32Array.from(classes, (_, c) =>
     !last.includes(c) ? c + 1 : oldestLeave(context, c) === true ? -1 : c,
   );
-  return { kind: 'ageing', name: 'ageing', advance: new Float64Array(classes.length).fill(1), next };
+  const stages = resolveStages(context, next);
+  const advance = new Float64Array(classes.length).fill(1);
+  for (const stage of stages) advance[stage.class] = 1 / stage.years;
+  return { kind: 'ageing', name: 'ageing', advance, next, ...(stages.length === 0 ? {} : { stages }) };
 }
 
 /** Tells that a phase of the year has no rates. */

@@ -85,8 +85,18 @@ export interface AgeingPhase extends PhaseBase {
   readonly kind: 'ageing';
   /** Share of class c that goes on to `next[c]`; the others stay. */
   readonly advance: Float64Array;
+  /** The same by patch, P×C, where it is not the same in all. */
+  readonly advanceIn?: Float64Array;
+  /** Classes that last longer than a year; `advance` of the fixed ones is solved when the model is compiled. */
+  readonly stages?: readonly StageDuration[];
   /** Class after c, or -1 where the animals leave the model. */
   readonly next: Int32Array;
+}
+/** A stage that lasts for so many years. */
+export interface StageDuration {
+  readonly class: number;
+  readonly years: number;
+  readonly as: 'fixed' | 'geometric';
 }
 export interface DemographyPhase extends PhaseBase {
   readonly kind: 'demography';

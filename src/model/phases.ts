@@ -10,6 +10,7 @@ import { resolveAdd, resolveMove, resolveTake } from './handling.ts';
 import { resolveAgeing, resolveNamedSurvival, resolveSurvival } from './life-phases.ts';
 import { resolveTaking } from './variation/catastrophe.ts';
 import type { Phase } from './model.ts';
+import { refuseIdleStages } from './stages.ts';
 
 /** The phases that every study can use without naming them itself. */
 const ownPhases = ['count', 'breeding', 'survival', 'ageing', 'demography'] as const;
@@ -19,6 +20,7 @@ export function resolvePhases(context: Context): readonly Phase[] {
   refuseRepeats(context);
   tellUnused(context);
   refuseUnknownOwnKeys(context);
+  refuseIdleStages(context);
   const count = year.indexOf('count');
   if (count < 0) {
     fail(context, 'missing-count', ['year'], {

@@ -3,7 +3,8 @@ import type { DispersalReach, PatchStanding } from '../analysis/standing.ts';
 import type { WeatherFacts } from '../analysis/weather.ts';
 import type { Landscape } from '../landscape/landscape.ts';
 import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.ts';
-import type { BreedingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
+import { advanceAt } from '../compile/advance.ts';
+import type { AgeingPhase, BreedingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
 import { placesWords } from './places-text.ts';
 import { litterWords, matingWords } from './breeding-words.ts';
@@ -87,7 +88,7 @@ function phaseWords(model: Model, phase: Phase): string {
       const named = (chosen: (c: number) => boolean) => model.classes.filter((_, c) => chosen(c)).join(', ');
       const [stay, leave] = [named((c) => phase.next[c] === c), named((c) => phase.next[c] === -1)];
       const ends = [...(stay === '' ? [] : [`${stay} stays`]), ...(leave === '' ? [] : [`${leave} leaves the model`])];
-      return `ageing: each goes on to the next class; ${ends.join('; ')}`;
+      return `ageing: each goes on to the next class; ${[...stageWords(model, phase), ...ends].join('; ')}`;
     }
     case 'demography':
       return 'demography: fates and births of a whole year at once';
@@ -104,6 +105,17 @@ function phaseWords(model: Model, phase: Phase): string {
     case 'add':
       return `${phase.name}: ${handlingWords(phase, model)}`;
   }
+}
+
+function stageWords({ classes, patches }: Model, phase: AgeingPhase): readonly string[] {
+  return (phase.stages ?? []).map(({ class: c, years, as }) => {
+    const shares = patches.map((_, patch) => advanceAt(phase, { patch, class: c }));
+    const [least, most] = [Math.min(...shares), Math.max(...shares)].map((share) => share.toFixed(4));
+    const share = least === most ? `${String(most)}` : `${String(least)} to ${String(most)} by patch`;
+    const lasts =
+      as === 'fixed' ? `lasts ${String(years)} years for all alike` : `lasts ${String(years)} years in the mean`;
+    return `${String(classes[c])} ${lasts}, a share of ${share} goes on each year`;
+  });
 }
 
 function breedingWords({ offspring, mating, waits }: BreedingPhase): string {

@@ -10,6 +10,7 @@ import { fastGrowth } from './growth.ts';
 import { longHorizon } from './horizon.ts';
 import { settledOutcomes } from './outcomes.ts';
 import { apparentSurvival } from './sources.ts';
+import { fastStages } from './stages.ts';
 
 const checks: readonly ((compiled: CompiledModel) => readonly Finding[])[] = [
   birthsOfBothSexes,
@@ -17,6 +18,7 @@ const checks: readonly ((compiled: CompiledModel) => readonly Finding[])[] = [
   longLives,
   fastGrowth,
   apparentSurvival,
+  fastStages,
   lifeCycle,
   uncountedCrowding,
   longHorizon,

@@ -53,7 +53,8 @@ function paceOf(model: Model): Pace | null {
   const broods = model.phases.filter((phase) => phase.kind === 'breeding');
   const ageing = model.phases.find((phase) => phase.kind === 'ageing');
   if (seasons.length === 0 || broods.length === 0 || ageing === undefined) return null;
-  if (model.counts !== 'females' || ageing.advance.some((share) => share < 1)) return null;
+  if (model.counts !== 'females' || ageing.stages !== undefined || ageing.advance.some((share) => share < 1))
+    return null;
   const n = model.classes.length;
   const breeds = (i: number): boolean =>
     broods.some(({ births }) => births.epochs.some((epoch) => (epoch[i] ?? 0) > 0));

@@ -45,6 +45,9 @@ function ageingRecord(phase: M.AgeingPhase, { list, index, key }: PhasePlace): I
   return record(layout.opAgeing, key, index, [
     list.add(plain(layout.kindClassShares, phase.advance, `advance of ${phase.name}`)),
     list.add(plain(layout.kindClassLinks, phase.next, `next of ${phase.name}`)),
+    phase.advanceIn === undefined
+      ? layout.none
+      : list.add(plain(layout.kindRates, phase.advanceIn, `advance of ${phase.name}`)),
   ]);
 }
 

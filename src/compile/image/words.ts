@@ -80,7 +80,7 @@ const opcodes: readonly (readonly [number, readonly string[]])[] = [
     ],
   ],
   [layout.opSurvival, ['survival', 'rates', 'slots']],
-  [layout.opAgeing, ['ageing', 'advance', 'next']],
+  [layout.opAgeing, ['ageing', 'advance', 'next', 'by patch']],
   [layout.opDemography, ['demography', 'fates', 'births', 'fate slots', 'birth slots']],
   [layout.opDispersal, ['dispersal', 'moves', 'leaving', 'movement', 'ways before', 'slots']],
   [layout.opCeiling, ['ceiling', 'counted', 'capacity', 'takes', 'room']],

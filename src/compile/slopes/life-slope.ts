@@ -1,5 +1,6 @@
 // How the part of a phase map within one patch moves with a number of the model.
-import type { Phase } from '../../model/model.ts';
+import type { AgeingPhase, Phase } from '../../model/model.ts';
+import { advanceAt } from '../advance.ts';
 import { birthsMap, fatesMap, lifeMap, type LifePhase, type LifeRequest } from '../life-map.ts';
 
 export interface LifeSlopeRequest {
@@ -35,7 +36,20 @@ function rateSlope({ phase, slopes, request }: LifeSlopeRequest): Float64Array {
     return birthsMap({ ...phase, births: slopes.births }, request).map((value, i) => value + (entering[i] ?? 0));
   }
   if (slopes?.kind === 'demography') return lifeMap(slopes, request);
+  if (slopes?.kind === 'ageing') return advanceSlope(slopes, request.patch);
   return new Float64Array(n * n);
+}
+
+/** What goes on no longer stays. */
+function advanceSlope(slopes: AgeingPhase, patch: number): Float64Array {
+  const n = slopes.next.length;
+  const map = new Float64Array(n * n);
+  for (let c = 0; c < n; c++) {
+    const [slope, to] = [advanceAt(slopes, { patch, class: c }), slopes.next[c] ?? -1];
+    map[c * n + c] = (map[c * n + c] ?? 0) - slope;
+    if (to >= 0) map[to * n + c] = (map[to * n + c] ?? 0) + slope;
+  }
+  return map;
 }
 
 function withMultiplier(request: LifeRequest, k: number, value: number): LifeRequest {

@@ -1,7 +1,7 @@
 // How every number of a model moves with one named parameter: the model with slopes in the places of its numbers.
 import type { SpecPath } from '../../spec/document.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
-import type { BreedingPhase, Crowding, Model, Phase } from '../model.ts';
+import type { AgeingPhase, BreedingPhase, Crowding, Model, Phase } from '../model.ts';
 import { resolveWithContext } from '../resolve.ts';
 import { dispersalSlopes } from './dispersal.ts';
 import { SlopeReader } from './reader.ts';
@@ -38,8 +38,9 @@ export function slopesOf(spec: Spec): (parameter: string) => ModelSlopes | null 
 function phaseSlopes(reader: SlopeReader, model: Model, phase: Phase): Phase | null {
   switch (phase.kind) {
     case 'count':
-    case 'ageing':
       return null;
+    case 'ageing':
+      return stageSlopes(reader, model, phase);
     // Their amounts stay as they are; where they use the parameter they are among the places missed.
     case 'take':
     case 'move':
@@ -81,6 +82,17 @@ function breedingSlopes(reader: SlopeReader, phase: BreedingPhase): BreedingPhas
   const values = births.epochs[0] ?? table;
   const slopes = table.map((slope, i) => slope * share + (share === 0 ? 0 : (values[i] ?? 0) / share) * shareSlope);
   return { ...mated, births: { epochs: [slopes], epochOf: new Int32Array(0) }, into: new Float64Array(into.length) };
+}
+
+/** Slopes of durations as the years of the stages; what they do to the shares that go on is found when growth is known. */
+function stageSlopes(reader: SlopeReader, { classes }: Model, phase: AgeingPhase): AgeingPhase | null {
+  if (phase.stages === undefined) return null;
+  const { duration } = reader.context.spec;
+  const stages = phase.stages.map((stage) => {
+    const name = classes[stage.class] ?? '';
+    return { ...stage, years: reader.one(duration?.[name]?.years, ['duration', name, 'years']) };
+  });
+  return { ...phase, stages, advance: new Float64Array(classes.length) };
 }
 
 function withMating(phase: BreedingPhase, femalesPerMale: number): BreedingPhase {

@@ -1,5 +1,6 @@
 // Every phase and condition with its numbers.
 import { weatherFacts } from '../../analysis/weather.ts';
+import { advanceAt } from '../../compile/advance.ts';
 import type { Landscape } from '../../landscape/landscape.ts';
 import type { AgeingPhase, Crowding, Model, Phase } from '../../model/model.ts';
 import { inFileOrder } from '../../results/summarise.ts';
@@ -80,12 +81,22 @@ function numbers(phase: Phase, model: Model): Content {
   }
 }
 
-function ageing({ classes }: Model, phase: AgeingPhase, c: number): Markup {
-  const [name, advance, next] = [classes[c] ?? '', phase.advance[c] ?? 0, phase.next[c] ?? -1];
-  if (advance === 0 || next === c) return mark`<bdi>${name}</bdi> stays. `;
-  const share = advance === 1 ? '' : ` (share ${digits(advance)}, the others stay)`;
+function ageing({ classes, patches }: Model, phase: AgeingPhase, c: number): Markup {
+  const [name, next] = [classes[c] ?? '', phase.next[c] ?? -1];
+  const shares = patches.map((_, patch) => advanceAt(phase, { patch, class: c }));
+  const [least, most] = [Math.min(...shares), Math.max(...shares)];
+  if (most === 0 || next === c) return mark`<bdi>${name}</bdi> stays. `;
+  const between = least === most ? digits(most) : `${digits(least)} to ${digits(most)} by patch`;
+  const share = least === 1 ? '' : ` (share ${between}, the others stay${stageWords(phase, c)})`;
   if (next < 0) return mark`<bdi>${name}</bdi> leaves the model${share}. `;
   return mark`<bdi>${name}</bdi> becomes <bdi>${classes[next] ?? ''}</bdi>${share}. `;
+}
+
+function stageWords({ stages = [] }: AgeingPhase, c: number): string {
+  const stage = stages.find((one) => one.class === c);
+  if (stage === undefined) return '';
+  const years = `the stage lasts ${digits(stage.years)} years`;
+  return stage.as === 'fixed' ? `; ${years} for all alike` : `; ${years} in the mean`;
 }
 
 function crowding(one: Crowding, model: Model): Markup {

@@ -74,6 +74,12 @@ function phaseJson(model: Model, phase: Phase): unknown {
       return {
         ...phase,
         advance: classes(phase.advance),
+        ...(phase.advanceIn === undefined
+          ? {}
+          : { advanceIn: tableJson(model, { epochs: [phase.advanceIn], epochOf: new Int32Array(0) }) }),
+        ...(phase.stages === undefined
+          ? {}
+          : { stages: phase.stages.map((stage) => ({ ...stage, class: model.classes[stage.class] })) }),
         next: Object.fromEntries(model.classes.map((name, c) => [name, model.classes[phase.next[c] ?? -1] ?? null])),
       };
     case 'demography':

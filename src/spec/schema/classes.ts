@@ -1,6 +1,6 @@
 // Age or stage classes, of one sex or of both.
 import { Type } from 'typebox';
-import { Name } from './values.ts';
+import { expression, Name } from './values.ts';
 
 function namesOf(description: string, example: string) {
   return Type.Array(Name, {
@@ -48,5 +48,30 @@ export const Oldest = Type.Union(
     title: '`open-ended`, `terminal`, or one of them for each sex',
     description: 'Whether the oldest class (of each sex) stays in itself or leaves the model when it ages.',
     examples: ['open-ended'],
+  },
+);
+
+export const Duration = Type.Record(
+  Type.String(),
+  Type.Object(
+    {
+      years: expression({
+        description: 'How long the stage lasts for an animal that lives through it.',
+        examples: [7],
+        'x-unit': 'years',
+      }),
+      as: Type.Union([Type.Literal('fixed'), Type.Literal('geometric')], {
+        description:
+          'How it lasts. `fixed`: for all animals alike; the share that goes on each year is that of a stable make-up of ages within the stage. `geometric`: a share of 1/years goes on each year, however long an animal has been there.',
+        examples: ['fixed'],
+      }),
+    },
+    { additionalProperties: false, title: '{ years: …, as: … }' },
+  ),
+  {
+    title: 'classes with { years: …, as: … } each',
+    description: 'Classes in which animals stay longer than a year; those that are not named are as wide as a year.',
+    examples: ['{ juvenile: { years: 7, as: fixed } }'],
+    'x-key': 'CLASS',
   },
 );

@@ -1,7 +1,7 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
-import { Classes, Oldest } from './classes.ts';
+import { Classes, Duration, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';
 import { Add, Move, Take } from './handling.ts';
 import { Drivers, Observed } from './history.ts';
@@ -57,6 +57,7 @@ export const CoreSchema = Type.Object(
     }),
     classes: Classes,
     oldest: Type.Optional(Oldest),
+    duration: Type.Optional(Duration),
     parameters: Type.Optional(Parameters),
     survival: Type.Optional(Survival),
     births: Type.Optional(Births),
