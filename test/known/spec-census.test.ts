@@ -57,6 +57,44 @@ describe('counted before and after breeding (derived)', () => {
   });
 });
 
+describe('a life table with l = 1, 0.6, 0.4, 0.2, 0 and m = 1, 2, 1 at ages 1, 2, 3 (derived)', () => {
+  const pulse = (year: string) =>
+    compileText(
+      framed(`classes: [age 0, age 1, age 2, age 3]
+oldest: terminal
+survival: { age 0: 0.6, age 1: 0.4 / 0.6, age 2: 0.2 / 0.4, age 3: 0 }
+births: { age 1: 1, age 2: 2, age 3: 1 }
+year: ${year}
+start: { total: 50 }
+`),
+    );
+  const [pre, post] = [pulse('[count, breeding, survival, ageing]'), pulse('[breeding, count, survival, ageing]')];
+
+  test('counted before breeding', () => {
+    const wanted = [
+      [0.6, 1.2, 0.6],
+      [2 / 3, 0, 0],
+      [0, 0.5, 0],
+    ];
+    expect(largestDifference(blockRows(pre).flat(), wanted.flat())).toBeLessThan(1e-15);
+  });
+
+  test('counted after breeding', () => {
+    const wanted = [
+      [0.6, 4 / 3, 0.5, 0],
+      [0.6, 0, 0, 0],
+      [0, 2 / 3, 0, 0],
+      [0, 0, 0.5, 0],
+    ];
+    expect(largestDifference(blockRows(post).flat(), wanted.flat())).toBeLessThan(1e-15);
+  });
+
+  test('both grow by 1.3205174101', () => {
+    for (const compiled of [pre, post])
+      expect(Math.abs(leadingOf(compiled).growthRate - 1.3205174101)).toBeLessThan(1e-10);
+  });
+});
+
 describe('the usual mistakes of construction cannot be written by leaving something out', () => {
   test('young without their first-year survival (would give 1.7278)', () => {
     expect(errorsOf(before.replace('age 0: 0.25, ', ''))).toEqual(['missing-rate']);
