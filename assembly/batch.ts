@@ -35,6 +35,8 @@ export let moreCounts: usize = 0;
 /** f64 [lane]: how much of a capacity is left in the patch at hand */
 export let rooms: usize = 0;
 export let step: i32 = 0;
+/** The step whose tables hold: `step`, or 1 for good where years go on without the calendar. */
+export let calendar: i32 = 0;
 
 export const cellBytes: usize = 64;
 export const laneNumbers: usize = 128;
@@ -92,6 +94,13 @@ export function fillBatch(count: i32): void {
 
 export function setStep(t: i32): void {
   step = t;
+  calendar = t;
+}
+
+/** One step further, in which the tables of the first step hold. */
+export function stepWithoutCalendar(): void {
+  step += 1;
+  calendar = 1;
 }
 
 let anyStopped: bool = false;

@@ -8,6 +8,7 @@ export {
   faultSubject,
   start,
   step,
+  stepWeather,
   run,
   replicates,
   observed,
@@ -20,7 +21,7 @@ export {
   restoreLane,
   setBatchStep,
 } from './lanes';
-export { startPath, stepPath, pathAnimals, pathMoved } from './path/program';
+export { startPath, stepPath, stepPathUnder, pathAnimals, pathMoved } from './path/program';
 export {
   openMany,
   manyInputs,

@@ -5,7 +5,7 @@ import { setSeed } from './draws/philox';
 import { faultDetail, header, openImage, patches, slots } from './image';
 import { faultMemory, faultNone, headerWeather, lanes } from './layout';
 import { reservePath } from './path/state';
-import { advance, countStart } from './program';
+import { advance, advanceWeather, countStart } from './program';
 
 /** Opens the image at this address, in memory that was reserved; a fault code where it cannot be run. */
 export function open(address: usize, size: i32): i32 {
@@ -28,6 +28,11 @@ export function start(count: i32, seedLow: u32, seedHigh: u32): void {
 
 export function step(): void {
   advance();
+}
+
+/** The conditions of one more year without its animals, tables as in the first year: for growth in the long run. */
+export function stepWeather(): void {
+  advanceWeather();
 }
 
 /** So many steps; only the last count stays in `observed()`. */

@@ -1,9 +1,12 @@
 // The story of the tool: from a spec to a model, its landscape, its compiled year and image, and to what a run says.
+import { buildBlock } from './compile/block.ts';
 import { solveCapacities } from './compile/capacity.ts';
+import { growingOnly } from './compile/handling.ts';
 import { buildImage } from './compile/image/build.ts';
 import { solveStages } from './compile/stage-advance.ts';
 import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
+import { runLongRun } from './kernel/long-run.ts';
 import { runPath } from './kernel/path.ts';
 import { batchesOf } from './kernel/batch.ts';
 import type { Crew } from './kernel/crew.ts';
@@ -12,13 +15,23 @@ import { openRunner } from './kernel/run.ts';
 import { buildLandscape } from './landscape/build.ts';
 import type { Model } from './model/model.ts';
 import { resolveModel } from './model/resolve.ts';
+import { leading } from './numeric/leading.ts';
 import { standingCautions } from './results/cautions.ts';
 import { DrawCollector } from './results/draws/collect.ts';
 import { drawnValues, seedOfDraw, withValues, type DrawnValues } from './results/draws/plan.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
 import type { Reduction } from './results/reduction/reduction.ts';
-import type { PathResults, RunResults } from './results/results.ts';
-import { openReduction, summarisePath, summariseRun } from './results/summarise.ts';
+import { longRunGrowth, longRunRequest, yearsDiffer } from './results/long-run.ts';
+import {
+  blocksOf,
+  endsBlockOfDraws,
+  expectedReplicates,
+  mostDraws,
+  precisionOf,
+  withPrecision,
+} from './results/precision.ts';
+import type { PathGrowth, PathResults, ReachedPrecision, RunResults } from './results/results.ts';
+import { openReduction, summariseOutcomes, summarisePath, summariseRun } from './results/summarise.ts';
 import type { Finding } from './spec/finding.ts';
 import type { Spec } from './spec/schema/spec.ts';
 
@@ -68,11 +81,23 @@ export function runModel(compiled: CompiledModel, options: RunOptions = {}): Run
   const { model, image } = compiled;
   const run = openRunner(image, { steps: model.steps, seed: model.seed });
   const reduction = openReduction(model);
-  for (const batch of batchesOf(model.replicates)) {
-    reduction.take(run(batch));
-    onProgress?.(batch.first + batch.lanes, model.replicates);
+  let [done, expected] = [0, model.replicates];
+  for (const block of blocksOf(model)) {
+    for (const batch of block) {
+      reduction.take(run(batch));
+      done += batch.lanes;
+      onProgress?.(done, expected);
+    }
+    const reached = precisionSoFar(model, reduction);
+    if (reached?.reached !== false) break;
+    expected = expectedReplicates(done, reached);
   }
-  return summarise(compiled, reduction);
+  return withPrecision(model, summarise({ ...compiled, model: { ...model, replicates: done } }, reduction));
+}
+
+/** Null where no precision was asked for. */
+function precisionSoFar(model: Model, reduction: Reduction): ReachedPrecision | null {
+  return model.precision === undefined ? null : precisionOf(model, summariseOutcomes(model, reduction));
 }
 
 /** What was finished of a run. */
@@ -96,23 +121,35 @@ export async function runModelWith(
   const { model, image } = compiled;
   const { replicates, steps, seed } = model;
   const reduction = openReduction(model);
-  const batches = batchesOf(replicates);
-  let told = 0;
+  let [told, done, expected] = [0, 0, replicates];
   const take = (batch: BatchCounts): void => {
     reduction.take(batch);
-    options.onProgress?.((told += batch.lanes), replicates);
+    options.onProgress?.((told += batch.lanes), expected);
   };
-  const finished = await crew.run({ image, request: { steps, seed }, batches }, take, options);
-  const done = batches.slice(0, finished).reduce((sum, { lanes }) => sum + lanes, 0);
-  const cut = done === replicates ? compiled : withSettings(compiled, { replicates: done });
-  return { compiled: cut, results: done === 0 ? null : summarise(cut, reduction) };
+  for (const batches of blocksOf(model)) {
+    const finished = await crew.run({ image, request: { steps, seed }, batches }, take, options);
+    done += batches.slice(0, finished).reduce((sum, { lanes }) => sum + lanes, 0);
+    if (finished < batches.length) {
+      const cut = withSettings(compiled, { replicates: done });
+      return { compiled: cut, results: done === 0 ? null : summarise(cut, reduction) };
+    }
+    const reached = precisionSoFar(model, reduction);
+    if (reached?.reached !== false) break;
+    expected = expectedReplicates(done, reached);
+  }
+  const results = summarise({ ...compiled, model: { ...model, replicates: done } }, reduction);
+  return { compiled, results: withPrecision(model, results) };
 }
 
 /** As if less had been asked for: what was finished of a run. */
 export function withSettings(compiled: CompiledModel, done: { replicates: number } | { draws: number }): CompiledModel {
   const { named, ...core } = compiled.spec;
-  const spec = { ...core, run: { ...core.run, ...done }, named };
-  const model = { ...compiled.model, ...done };
+  const run = { ...core.run, ...done };
+  // What is left was not to be precise.
+  delete run.precision;
+  delete run['at-most'];
+  const spec = { ...core, run, named };
+  const model = { ...compiled.model, ...done, precision: undefined };
   return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
 }
 
@@ -134,7 +171,8 @@ interface Draw {
 }
 
 function* drawsOf({ spec, model }: CompiledModel): Generator<Draw> {
-  const { uncertainty, seed, draws } = model;
+  const { uncertainty, seed } = model;
+  const draws = mostDraws(model);
   if (uncertainty === null) return;
   const number = uncertainty.table === null ? draws : Math.min(draws, uncertainty.table.length);
   for (let draw = 0; draw < number; draw++) {
@@ -147,7 +185,20 @@ function* drawsOf({ spec, model }: CompiledModel): Generator<Draw> {
 
 /** For all draws together. */
 export function openPooled(model: Model): Reduction {
-  return openReduction({ ...model, replicates: model.replicates * model.draws });
+  return openReduction({ ...model, replicates: model.replicates * mostDraws(model) });
+}
+
+interface DrawsSoFar {
+  readonly reduction: Reduction;
+  readonly collector: DrawCollector;
+  readonly draws: number;
+}
+
+/** Looked at after whole blocks of draws only. */
+function isPrecise(compiled: CompiledModel, { reduction, collector, draws }: DrawsSoFar): boolean {
+  if (!endsBlockOfDraws(compiled.model, draws) || collector.done === 0) return false;
+  const { outcomes } = collector.withDraws(summarise(compiled, reduction));
+  return precisionOf(compiled.model, outcomes)?.reached === true;
 }
 
 function runDraws(compiled: CompiledModel, { onProgress }: RunOptions): RunResults {
@@ -162,8 +213,9 @@ function runDraws(compiled: CompiledModel, { onProgress }: RunOptions): RunResul
       collector.finish(draw, values);
     }
     onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
+    if (isPrecise(compiled, { reduction, collector, draws: draw + 1 })) break;
   }
-  return collector.withDraws(summarise(compiled, reduction));
+  return withPrecision(model, collector.withDraws(summarise(compiled, reduction)));
 }
 
 /** By a crew; told to stop, the draws that were finished whole are kept. */
@@ -187,13 +239,27 @@ async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOp
       collector.finish(draw, values);
     }
     options.onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
+    if (isPrecise(compiled, { reduction, collector, draws: draw + 1 })) break;
   }
-  const results = collector.done === 0 ? null : collector.withDraws(summarise(cut, reduction));
+  const results =
+    collector.done === 0 ? null : withPrecision(cut.model, collector.withDraws(summarise(cut, reduction)));
   return { compiled: cut, results };
 }
 
-/** The path without chance. */
-export function followPath({ model, image, provenance }: CompiledModel): PathResults {
+/** The path without chance, and beside it growth with chance in the long run, which can have the other sign. */
+export function followPath(compiled: CompiledModel): PathResults {
+  const { model, image, provenance } = compiled;
   const raw = runPath(image, { steps: model.steps });
-  return summarisePath({ model, raw, provenance, cautions: standingCautions(model) });
+  return summarisePath({ model, raw, growth: growthOf(compiled), provenance, cautions: standingCautions(model) });
+}
+
+function growthOf(compiled: CompiledModel): PathGrowth {
+  const withoutChance = leading(buildBlock(compiled, 'zero').matrix).growthRate;
+  const none = (reason: string): PathGrowth => ({ withoutChance, withChance: null, reason });
+  if (!yearsDiffer(compiled.model)) return none('No rate varies from year to year and no catastrophe strikes.');
+  const model = growingOnly(compiled.model);
+  const image = model === compiled.model ? compiled.image : buildImage({ ...compiled, model });
+  const request = longRunRequest(model, image);
+  const withChance = longRunGrowth(runLongRun(image, request), request.years);
+  return withChance === null ? none('In some years nobody is left.') : { withoutChance, withChance, reason: null };
 }

@@ -5,7 +5,7 @@ import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, me
 import { meanHandling, meanRelease } from './handling';
 import { meanDispersal } from './movement';
 import { meanCatastrophe, meanResponse, meanVariation } from './weather';
-import { animals, fillPath, moved, setStep, step } from './state';
+import { animals, fillPath, moved, setStep, step, takeConditions } from './state';
 
 /** Puts the start into the path. */
 export function startPath(): void {
@@ -16,6 +16,13 @@ export function startPath(): void {
 export function stepPath(): void {
   setStep(step + 1);
   runProgram(header(layout.headerYearProgram));
+  runProgram(header(layout.headerPhaseProgram));
+}
+
+/** The phases of the first year alone, on the animals of the path, under the conditions that a lane of the batch has now. */
+export function stepPathUnder(lane: i32): void {
+  setStep(1);
+  takeConditions(lane);
   runProgram(header(layout.headerPhaseProgram));
 }
 

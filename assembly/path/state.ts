@@ -1,5 +1,6 @@
 // The path without chance: mean animals as f64 [patch][class], through the same program.
 import { f64At, i32At, putF64 } from '../arrays';
+import * as batch from '../batch';
 import { classes, entries, header, patches, section, slots, ways } from '../image';
 import { headerStart } from '../layout';
 import { reserve } from '../memory';
@@ -37,6 +38,13 @@ export function fillPath(): void {
   }
   memory.fill(moved, 0, (<usize>ways) << 3);
   step = 0;
+}
+
+/** What a lane of the batch multiplies rates by. */
+export function takeConditions(lane: i32): void {
+  for (let i = 0; i < slots * patches; i++) {
+    putF64(slotValues, i, f64At(batch.slotValues + <usize>i * batch.laneNumbers, lane));
+  }
 }
 
 export function setStep(t: i32): void {

@@ -1,7 +1,7 @@
 // A rate that is an expression over named numbers which vary: the expression is worked out anew for each patch and lane, and
 // its slot says how much of its value at the means it has.
 import { f64At, i32At } from '../arrays';
-import { laneNumbers, slotValues, step, work } from '../batch';
+import { calendar, laneNumbers, slotValues, work } from '../batch';
 import { entries, operand, patches, section, sectionAt, steps } from '../image';
 import * as layout from '../layout';
 import { exp, log, pow } from '../mathematics';
@@ -14,7 +14,7 @@ let patch: i32 = 0;
 
 export function respond(record: usize): void {
   const expression = operand(record, layout.responseExpression);
-  const base = sectionAt(operand(record, layout.responseBase), step);
+  const base = sectionAt(operand(record, layout.responseBase), calendar);
   const slot = operand(record, layout.responseSlot);
   const share = operand(record, layout.responseBounds) === layout.boundsShare;
   constants = section(operand(record, layout.responseConstants));
@@ -66,7 +66,7 @@ function push(target: usize, what: i32, which: i32): void {
   let value: f64 = 0;
   if (what === layout.doConstant) value = f64At(constants, which);
   else if (what === layout.doAttribute) value = f64At(attributes, which * patches + patch);
-  else value = f64At(dated, (what === layout.doYear ? 0 : which * steps) + step - 1);
+  else value = f64At(dated, (what === layout.doYear ? 0 : which * steps) + calendar - 1);
   for (let at = target; at < target + laneNumbers; at += 8) store<f64>(at, value);
 }
 

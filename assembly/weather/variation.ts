@@ -1,7 +1,7 @@
 // Year-to-year variation: correlated normal numbers for each quantity and patch, and from them what the rates are multiplied by.
 // Z = A E Bᵀ: E holds independent normals, keyed by names; A mixes them over patches, B over quantities.
 import { f64At, i32At, u32At } from '../arrays';
-import { laneNumbers, replicates, slotValues, step, weather, words, work } from '../batch';
+import { calendar, laneNumbers, replicates, slotValues, step, weather, words, work } from '../batch';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf } from '../draws/stream';
 import { entries, operand, patches, section, sectionAt } from '../image';
@@ -133,7 +133,7 @@ function slotOf(record: usize, k: i32): usize {
 
 /** From normal numbers to what the rates are multiplied by. */
 function distributeAll(record: usize, k: i32): void {
-  const distributions = sectionAt(i32At(quantityOf(record, k), layout.quantityDistributions), step);
+  const distributions = sectionAt(i32At(quantityOf(record, k), layout.quantityDistributions), calendar);
   const tables = section(operand(record, layout.variationTables));
   const target = slotOf(record, k);
   for (let patch = 0; patch < patches; patch++) {

@@ -101,7 +101,7 @@ function addRuns(program: Command): void {
   ])
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
-  const chance = ['set', 'years', 'replicates', 'seed', 'draws', 'threads'] as const;
+  const chance = ['set', 'years', 'replicates', 'seed', 'draws', 'precision', 'at-most', 'threads'] as const;
   addOptions(program.command('run'), [...chance, 'json', 'out', 'places', 'quiet', 'allow'])
     .argument('[model]', 'a model file, or - for standard input')
     .description('run the model many times with chance')

@@ -9,6 +9,8 @@ export interface CommonOptions {
   readonly replicates?: number;
   readonly seed?: number;
   readonly draws?: number;
+  readonly precision?: number | undefined;
+  readonly atMost?: number | undefined;
   readonly threads?: number;
   readonly json?: boolean;
   readonly out?: string;
@@ -18,7 +20,19 @@ export interface CommonOptions {
 }
 
 type Shared =
-  'set' | 'years' | 'replicates' | 'seed' | 'draws' | 'threads' | 'json' | 'out' | 'quiet' | 'allow' | 'places';
+  | 'set'
+  | 'years'
+  | 'replicates'
+  | 'seed'
+  | 'draws'
+  | 'precision'
+  | 'at-most'
+  | 'threads'
+  | 'json'
+  | 'out'
+  | 'quiet'
+  | 'allow'
+  | 'places';
 
 const options: Readonly<Record<Shared, () => Option>> = {
   set: () => new Option('--set <name=value>', 'give a named parameter another number (repeatable)').argParser(readSet),
@@ -27,6 +41,13 @@ const options: Readonly<Record<Shared, () => Option>> = {
   seed: () =>
     new Option('--seed <n>', 'the number that decides all chance').argParser(wholeFrom(0, Number.MAX_SAFE_INTEGER)),
   draws: () => new Option('--draws <n>', 'how often to draw what is not known').argParser(wholeFrom(0, 100_000)),
+  precision: () =>
+    new Option(
+      '--precision <share>',
+      'go on until 95 % intervals from the number of runs reach no further, such as 0.01',
+    ).argParser(readPrecision),
+  'at-most': () =>
+    new Option('--at-most <n>', 'replicates after which --precision gives up').argParser(wholeFrom(1, 100_000_000)),
   threads: () =>
     new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),
@@ -46,13 +67,15 @@ export function addOptions(command: Command, wanted: readonly Shared[]): Command
   return wanted.reduce((one, name) => one.addOption(options[name]()), command);
 }
 
-export function settingsOf({ set, years, replicates, seed, draws }: CommonOptions): Settings {
+export function settingsOf({ set, years, replicates, seed, draws, precision, atMost }: CommonOptions): Settings {
   return {
     ...(set === undefined ? {} : { set }),
     ...(years === undefined ? {} : { years }),
     ...(replicates === undefined ? {} : { replicates }),
     ...(seed === undefined ? {} : { seed }),
     ...(draws === undefined ? {} : { draws }),
+    ...(precision === undefined ? {} : { precision }),
+    ...(atMost === undefined ? {} : { atMost }),
   };
 }
 
@@ -60,6 +83,13 @@ function readSet(text: string, before: Settings['set']): NonNullable<Settings['s
   const sign = text.indexOf('=');
   if (sign < 1 || sign === text.length - 1) throw new InvalidArgumentError('Write it as name=value.');
   return [...(before ?? []), { name: text.slice(0, sign).trim(), value: text.slice(sign + 1).trim() }];
+}
+
+function readPrecision(text: string): number {
+  const match = /^(\d*\.?\d+)\s*(%?)$/u.exec(text.trim());
+  const value = match === null ? NaN : Number(match[1]) / (match[2] === '%' ? 100 : 1);
+  if (value > 0 && value < 0.5) return value;
+  throw new InvalidArgumentError('It takes a share above 0 and below 0.5, such as 0.01.');
 }
 
 function wholeFrom(lowest: number, highest: number): (text: string) => number {

@@ -58,18 +58,27 @@ async function attempt(crew: Crew, compiled: CompiledModel, options: CrewOptions
 }
 
 function checked({ compiled, results }: FinishedRun, model: CompiledModel['model']): Omit<DoneReplicates, 'threads'> {
-  const asked = model.replicates;
-  const done = compiled.model.replicates;
-  const of = asked.toLocaleString('en');
-  if (results === null) throw new Ending(exitCodes.work, `Stopped before the first of ${of} replicates was finished.`);
-  const draws = drawsAsked(model);
-  if (results.draws !== undefined && results.draws.number < draws) {
-    const words = `Stopped after ${results.draws.number} of ${draws} draws; the results are those of \`--draws ${results.draws.number}\`.`;
-    return { compiled, results, cutShort: new Ending(exitCodes.work, words) };
+  const asked = model.replicates.toLocaleString('en');
+  if (results === null) {
+    throw new Ending(exitCodes.work, `Stopped before the first of ${asked} replicates was finished.`);
   }
-  if (done === asked) return { compiled, results, cutShort: null };
-  const words = `Stopped after ${done.toLocaleString('en')} of ${of} replicates; the results are those of \`--replicates ${done}\`.`;
-  return { compiled, results, cutShort: new Ending(exitCodes.work, words) };
+  const cutShort = (done: number, of: string, what: string, option: string): Ending => {
+    const whole =
+      model.precision === undefined ? `of ${of} ${what}` : `${what}, before the chances were known as well as asked`;
+    return new Ending(
+      exitCodes.work,
+      `Stopped after ${done.toLocaleString('en')} ${whole}; the results are those of \`--${option} ${done}\`.`,
+    );
+  };
+  // What is left of a run that was to be precise asks for no precision.
+  const stopped = compiled.model.precision !== model.precision;
+  const draws = drawsAsked(model);
+  if (results.draws !== undefined && (stopped || results.draws.number < draws)) {
+    return { compiled, results, cutShort: cutShort(results.draws.number, String(draws), 'draws', 'draws') };
+  }
+  const done = compiled.model.replicates;
+  if (done === model.replicates && !stopped) return { compiled, results, cutShort: null };
+  return { compiled, results, cutShort: cutShort(done, asked, 'replicates', 'replicates') };
 }
 
 function drawsAsked({ draws, uncertainty }: CompiledModel['model']): number {

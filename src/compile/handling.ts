@@ -71,6 +71,15 @@ export function lastingOnly(model: Model): Model {
   return { ...model, phases: model.phases.map((phase) => (passing(phase) ? { ...phase, active: never } : phase)) };
 }
 
+/** The same without releases, which bring in what did not grow here. */
+export function growingOnly(model: Model): Model {
+  const lasting = lastingOnly(model);
+  if (!lasting.phases.some(({ kind }) => kind === 'add')) return lasting;
+  const never = new Int32Array(model.steps);
+  const phases = lasting.phases.map((phase) => (phase.kind === 'add' ? { ...phase, active: never } : phase));
+  return { ...lasting, phases };
+}
+
 function isActive({ active }: TakePhase | MovePhase | AddPhase, step: number): boolean {
   return active === null || active[step - 1] === 1;
 }

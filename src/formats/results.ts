@@ -95,6 +95,16 @@ const Draws = Type.Object({
   ),
 });
 
+const Precision = Type.Object(
+  {
+    asked: part.share('Half the width of a 95 % interval from the number of runs that was asked for.'),
+    halfWidth: part.share('The widest of any outcome.'),
+    reached: Type.Boolean(),
+    atMost: part.whole('Replicates at which the run would have ended without.'),
+  },
+  { description: 'Of a run that goes on until it is precise; absent where that was not asked for.' },
+);
+
 export const RunSchema = Type.Object({
   format: Type.Literal('skein-run/1'),
   ...part.provenance,
@@ -128,6 +138,7 @@ export const RunSchema = Type.Object({
   notDrawn: Type.Optional(
     Type.Literal(true, { description: 'The model says how sure its numbers are, but no draws were asked for.' }),
   ),
+  precision: Type.Optional(Precision),
   draws: Type.Optional(Draws),
   stopped: Type.Object({
     runs: part.whole('Runs that had to be stopped; they are in no other number.'),
@@ -149,6 +160,24 @@ export const PathSchema = Type.Object({
       class: part.className,
       animals: Type.Number({ minimum: 0, description: 'On the path without chance.' }),
     }),
+  ),
+  growth: Type.Object(
+    {
+      withoutChance: part.number('Growth rate of a year in which everything that varies is at its mean.'),
+      withChance: part.orNull(
+        Type.Object(
+          {
+            growthRate: part.number('exp of the mean yearly change of the logarithm.'),
+            logGrowth: part.number('Mean yearly change of the natural logarithm of numbers.'),
+            standardError: part.number('Of that mean.'),
+            years: part.whole('That were simulated, all courses together.'),
+          },
+          { description: 'Growth in the long run where years differ by chance.' },
+        ),
+      ),
+      reason: part.maybeText('Why there is none; null where there is one.'),
+    },
+    { description: 'Near zero, where neither crowding nor ceilings matter, with the rates of the first year.' },
   ),
   places: part.places,
   cautions: part.cautions,

@@ -14,6 +14,8 @@ export interface MachineFunctions {
   readonly faultSubject: () => number;
   readonly start: (count: number, seedLow: number, seedHigh: number) => void;
   readonly step: () => void;
+  /** The conditions of one more year alone. */
+  readonly stepWeather: () => void;
   readonly run: (steps: number) => void;
   /** Addresses: u32 [lane]; f64 [column][lane]; i32 [lane][3]; i32 [patch][class][lane]. */
   readonly replicates: () => number;
@@ -31,6 +33,8 @@ export interface MachineFunctions {
   readonly setBatchStep: (step: number) => void;
   readonly startPath: () => void;
   readonly stepPath: () => void;
+  /** The phases of the first year on the animals of the path, under the conditions of a lane. */
+  readonly stepPathUnder: (lane: number) => void;
   /** Address: f64 [patch][class]. */
   readonly pathAnimals: () => number;
   /** Address: f64 [way], since `startPath`. */
@@ -74,6 +78,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   faultSubject: true,
   start: true,
   step: true,
+  stepWeather: true,
   run: true,
   replicates: true,
   observed: true,
@@ -87,6 +92,7 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   setBatchStep: true,
   startPath: true,
   stepPath: true,
+  stepPathUnder: true,
   pathAnimals: true,
   pathMoved: true,
   openMany: true,

@@ -260,6 +260,14 @@ export interface ObservedCounts {
   readonly error: number | null;
 }
 
+/** A run goes on until its chances are known so well. */
+export interface Precision {
+  /** Half the width of the 95 % interval from the number of runs. */
+  readonly halfWidth: number;
+  /** Replicates of all draws together after which it ends all the same. */
+  readonly atMost: number;
+}
+
 export interface Model {
   readonly title: string;
   readonly question: string | null;
@@ -296,6 +304,8 @@ export interface Model {
   readonly observed?: ObservedCounts;
   readonly outcomes: readonly OutcomeRule[];
   readonly replicates: number;
+  /** Absent where just the replicates are run. */
+  readonly precision?: Precision | undefined;
   readonly seed: number;
   /** Every default that was used, in words. */
   readonly defaults: readonly string[];

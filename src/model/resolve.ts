@@ -12,6 +12,7 @@ import { resolveOutcomes } from './outcomes.ts';
 import { checkNames, namedExpressions, resolveParameters } from './parameters.ts';
 import { resolvePatches } from './patches.ts';
 import { resolvePhases } from './phases.ts';
+import { runSettings } from './run-settings.ts';
 import { resolveStart } from './start.ts';
 import { resolveUncertainty } from './uncertainty/resolve.ts';
 import { resolveCatastrophes } from './variation/catastrophe.ts';
@@ -22,9 +23,6 @@ export interface Resolved {
   readonly model: Model | null;
   readonly findings: readonly Finding[];
 }
-
-const defaultReplicates = 1000;
-const defaultSeed = 1;
 
 export function resolveModel(spec: Spec): Resolved {
   return resolveWithContext(spec);
@@ -103,15 +101,4 @@ function head({ spec, patches, classes, sexes, time }: Context) {
     ...(sexes === null ? {} : { sexes }),
     year: spec.year,
   } as const;
-}
-
-function runSettings({ spec, defaults }: Context): {
-  readonly replicates: number;
-  readonly seed: number;
-  readonly draws: number;
-} {
-  const { replicates, seed } = spec.run ?? {};
-  if (replicates === undefined) defaults.push(`A run has ${defaultReplicates} replicates.`);
-  if (seed === undefined) defaults.push(`The seed is ${defaultSeed}.`);
-  return { replicates: replicates ?? defaultReplicates, seed: seed ?? defaultSeed, draws: spec.run?.draws ?? 0 };
 }

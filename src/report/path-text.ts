@@ -1,6 +1,7 @@
 // What the path without chance says in a terminal.
-import type { PathResults } from '../results/results.ts';
-import { whole } from '../view/number.ts';
+import type { PathGrowth, PathResults } from '../results/results.ts';
+import { plain, whole } from '../view/number.ts';
+import { fixed } from './rounded.ts';
 import { sparkLine } from './spark-line.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap } from './terminal.ts';
 import { cautionList, type RunTextStyle } from './text.ts';
@@ -13,16 +14,40 @@ export function pathText(results: PathResults, style: RunTextStyle): string {
   const all = course(results, years, () => true);
   const [first, last] = [years[0] ?? 0, years[years.length - 1] ?? 0];
   const lead = `Without chance, ${whole(all[0] ?? 0)} ${animals} at the start become ${whole(all[all.length - 1] ?? 0)} by ${last}.`;
-  const warning = 'No single future follows this path, and growth with chance can have the other sign.';
+  const warning = 'No single future follows this path.';
   const rows = patches.map((patch, i) => row(patch, byPatch[i] ?? [], style));
   const blocks = [
     bold(printable(results.model), style),
     wrap(`${lead} ${warning}`, style),
+    wrap(growthWords(results.growth), style),
     columnsOf(['patch', 'start', `${last}`, 'course'], [...rows, row('all patches', all, style)], style),
     cautionList(results.cautions, style),
     dim(`${first} to ${last}, hash ${results.hash.slice(0, 16)}, skein ${results.tool.version}`, style),
   ];
   return joinBlocks(blocks);
+}
+
+/** Growth near zero, without chance and in the long run with it. */
+export function growthWords({ withoutChance, withChance, reason }: PathGrowth): string {
+  const without = `Near zero an average year changes numbers by ${change(withoutChance)} (growth rate ${fixed(withoutChance, 4)})`;
+  if (withChance === null)
+    return `${without}. Growth in the long run with chance is not told apart: ${lowered(reason ?? '')}`;
+  const { growthRate, standardError, logGrowth, years } = withChance;
+  const against =
+    logGrowth < 0 !== withoutChance < 1 ? ' This is of the other sign: bad years cost more than good years bring.' : '';
+  const unsure =
+    Math.abs(logGrowth) < 2.13 * standardError
+      ? ' Whether numbers grow or decline in the long run is within its error.'
+      : '';
+  return `${without}; in the long run, with years that differ by chance, numbers change by ${change(growthRate)} a year (growth rate ${fixed(growthRate, 4)}, standard error ${fixed(standardError * growthRate, 4)}, from ${plain(years)} simulated years).${against}${unsure} Both are those of many animals: the luck of single animals comes on top.`;
+}
+
+function change(growthRate: number): string {
+  return `${fixed((growthRate - 1) * 100, 2)} %`;
+}
+
+function lowered(sentence: string): string {
+  return sentence.charAt(0).toLowerCase() + sentence.slice(1);
 }
 
 type Row = PathResults['abundance'][number];

@@ -74,11 +74,21 @@ function numbers(results: RunResults, animals: string, style: TextStyle): string
   const { runs, reasons } = results.stopped;
   const stopped =
     runs === 0 ? '' : `${plain(runs)} runs had to be stopped and are in no number here: ${reasons.join('; ')}`;
+  const precise = precisionWords(results);
   const handled = handledWords(results, animals).map(([name, words]) => `${name}: ${words}`);
-  return [lowest, inUse, ...handled, stopped]
+  return [precise, lowest, inUse, ...handled, stopped]
     .filter((text) => text !== '')
     .map((text) => wrap(text, style))
     .join('\n');
+}
+
+function precisionWords({ precision, replicates, draws }: RunResults): string {
+  if (precision === undefined) return '';
+  const { asked, halfWidth, reached } = precision;
+  const runs = `${plain(replicates)} runs${draws === undefined ? '' : ` in ${plain(draws.number)} draws`}`;
+  return reached
+    ? `every chance is known to ${percent(asked)} to either side after ${runs}, as asked (from the number of runs)`
+    : `not every chance is known to ${percent(asked)} to either side after ${runs}, the most that was allowed: the widest interval reaches ${percent(halfWidth)}`;
 }
 
 export function cautionList(cautions: readonly string[], style: TextStyle): string {

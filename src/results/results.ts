@@ -94,6 +94,16 @@ export interface Sketched {
   readonly relativeError: number;
 }
 
+/** What a run that goes on until it is precise came to. */
+export interface ReachedPrecision {
+  /** Half the width of a 95 % interval from the number of runs: what was asked for, and the widest of any outcome. */
+  readonly asked: number;
+  readonly halfWidth: number;
+  readonly reached: boolean;
+  /** Replicates at which it would have ended without. */
+  readonly atMost: number;
+}
+
 /** One draw of what is not known. */
 export interface DrawRow {
   /** From 1. */
@@ -141,6 +151,8 @@ export interface RunResults {
   readonly sketched: readonly Sketched[];
   /** Where the model says how sure its numbers are, but no draws were asked for. */
   readonly notDrawn?: true;
+  /** Absent where no precision was asked for. */
+  readonly precision?: ReachedPrecision;
   /** Draws of what is not known: absent where none were asked for. */
   readonly draws?: Draws;
   /** Runs that had to be stopped, with the reason; they are in no other number. */
@@ -148,6 +160,26 @@ export interface RunResults {
   /** Where places are hidden: the hash then leaves them out. */
   readonly places?: 'shifted' | 'schematic';
   readonly cautions: readonly string[];
+}
+
+/** How numbers change in the long run near zero where years differ by chance. */
+export interface LongRunGrowth {
+  /** exp of `logGrowth`. */
+  readonly growthRate: number;
+  /** Mean yearly change of the natural logarithm of numbers (ln λ_s), and its standard error. */
+  readonly logGrowth: number;
+  readonly standardError: number;
+  /** That were simulated, all courses together. */
+  readonly years: number;
+}
+
+/** Near zero, where neither crowding nor ceilings matter, with the rates of the first year. */
+export interface PathGrowth {
+  /** Of a year in which everything that varies is at its mean. */
+  readonly withoutChance: number;
+  readonly withChance: LongRunGrowth | null;
+  /** Why there is none; null where there is one. */
+  readonly reason: string | null;
 }
 
 export interface PathResults {
@@ -164,6 +196,7 @@ export interface PathResults {
     readonly class: string;
     readonly animals: number;
   }[];
+  readonly growth: PathGrowth;
   /** Where places are hidden: the hash then leaves them out. */
   readonly places?: 'shifted' | 'schematic';
   readonly cautions: readonly string[];

@@ -4,15 +4,17 @@ import { isHandling } from '../compile/image/handling.ts';
 import type { Model } from '../model/model.ts';
 import { summariseHandled } from './handled.ts';
 import { summariseOutcome } from './outcome.ts';
+import { mostReplicates } from './precision.ts';
 import type { Provenance } from './provenance.ts';
 import { exactBelow, relativeError } from './reduction/bins.ts';
 import type { Counts } from './reduction/counts.ts';
 import { Reduction } from './reduction/reduction.ts';
-import type { PathResults, RunResults, Sketched, YearSummary } from './results.ts';
+import type { OutcomeResult, PathGrowth, PathResults, RunResults, Sketched, YearSummary } from './results.ts';
 
-/** For as many replicates as the model asks for. */
+/** For as many replicates as can come. */
 export function openReduction(model: Model): Reduction {
-  const { patches, steps, replicates, outcomes } = model;
+  const { patches, steps, outcomes } = model;
+  const replicates = mostReplicates(model);
   const handled = model.phases.filter(isHandling).length;
   return new Reduction({ patches: patches.length, steps, replicates, outcomes, handled });
 }
@@ -27,6 +29,7 @@ export interface RunToSummarise {
 export function summariseRun({ model, reduction, provenance, cautions }: RunToSummarise): RunResults {
   const { runs, stopped } = reduction;
   const { firstYear } = model;
+  const outcomes = summariseOutcomes(model, reduction);
   return {
     format: 'skein-run/1',
     ...provenance,
@@ -38,10 +41,7 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
       whole: counts(model).map((t) => yearSummary(model, t, reduction.whole.summary(t, runs))),
       patches: inFileOrder(model).map((p) => patchCourse(model, reduction, p)),
     },
-    outcomes: model.outcomes.flatMap((rule, k) => {
-      const hits = reduction.hits[k];
-      return hits === undefined ? [] : [summariseOutcome({ rule, hits, runs, firstYear })];
-    }),
+    outcomes,
     handled: summariseHandled(model, reduction),
     meanLowestCount: lowestCount(reduction),
     patchesInUse: patchesInUse(model, reduction),
@@ -52,14 +52,25 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
   };
 }
 
+export function summariseOutcomes(
+  { outcomes, firstYear }: Model,
+  { hits: all, runs }: Reduction,
+): readonly OutcomeResult[] {
+  return outcomes.flatMap((rule, k) => {
+    const hits = all[k];
+    return hits === undefined ? [] : [summariseOutcome({ rule, hits, runs, firstYear })];
+  });
+}
+
 export interface PathToSummarise {
   readonly model: Model;
   readonly raw: RawPath;
+  readonly growth: PathGrowth;
   readonly provenance: Provenance;
   readonly cautions: readonly string[];
 }
 
-export function summarisePath({ model, raw, provenance, cautions }: PathToSummarise): PathResults {
+export function summarisePath({ model, raw, growth, provenance, cautions }: PathToSummarise): PathResults {
   const { patches, classes, firstYear } = model;
   const order = inFileOrder(model);
   const abundance = Array.from({ length: raw.steps + 1 }, (_, t) =>
@@ -72,7 +83,7 @@ export function summarisePath({ model, raw, provenance, cautions }: PathToSummar
       })),
     ),
   ).flat();
-  return { format: 'skein-path/1', ...provenance, years: model.steps, firstYear, abundance, cautions };
+  return { format: 'skein-path/1', ...provenance, years: model.steps, firstYear, abundance, growth, cautions };
 }
 
 /** Indices of the patches in the order of the author's list. */

@@ -7,6 +7,8 @@ export interface Settings {
   readonly replicates?: number;
   readonly seed?: number;
   readonly draws?: number;
+  readonly precision?: number;
+  readonly atMost?: number;
   /** Named parameters with their new numbers or expressions. */
   readonly set?: readonly { readonly name: string; readonly value: string }[];
 }
@@ -30,7 +32,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
     const expression = value.trim() !== '' && Number.isFinite(number) ? number : value;
     parameters[name] = typeof before === 'object' ? { ...before, value: expression } : expression;
   }
-  const { years, replicates, seed, draws } = settings;
+  const { years, replicates, seed, draws, precision, atMost } = settings;
   // What the author named stays last, so that the spec reads back from its JSON with its keys in the same order.
   const { named, ...core } = spec;
   return {
@@ -44,6 +46,8 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
         ...(replicates === undefined ? {} : { replicates }),
         ...(seed === undefined ? {} : { seed }),
         ...(draws === undefined ? {} : { draws }),
+        ...(precision === undefined ? {} : { precision }),
+        ...(atMost === undefined ? {} : { 'at-most': atMost }),
       },
       named,
     },

@@ -24,6 +24,16 @@ describe('skein run --again', () => {
     }
   });
 
+  test('goes on again to the precision that was asked for', () => {
+    const cwd = folder();
+    const run = ['run', ponds, '--years', '3', '--replicates', '50', '--precision', '2 %', '--quiet', '--json'];
+    const first = skein([...run, '--out', 'out', '--threads', '1'], { cwd });
+    expect(first.code).toBe(0);
+    expect(JSON.parse(first.out)).toMatchObject({ precision: { asked: 0.02, reached: true } });
+    const again = skein(['run', '--again', 'out/run.json', '--quiet', '--json', '--threads', '2'], { cwd });
+    expect(again).toEqual(first);
+  });
+
   test.each(modelNames)('can read %s back with the same hash', (name) => {
     const compiled = compileModel(name, { replicates: 24 });
     const { document } = readSpec(JSON.stringify(specJson(compiled.spec)), 'run.json');

@@ -189,7 +189,18 @@ function fixturePath(model: Model): PathResults {
     ),
   ).flat();
   const tool = { name: 'skein', version: '0.1.0', kernel: '1' } as const;
-  return { format: 'skein-path/1', tool, model: model.title, hash, years: steps, firstYear, abundance, cautions: [] };
+  const growth = { withoutChance: 1.1, withChance: null, reason: 'Nothing varies.' };
+  return {
+    format: 'skein-path/1',
+    tool,
+    model: model.title,
+    hash,
+    years: steps,
+    firstYear,
+    abundance,
+    growth,
+    cautions: [],
+  };
 }
 
 const hash = '5f0c2b7e9d41a8360b7c55e1f2a94d3386be07c19af2d64e8b1039c7ad5520ef';

@@ -1,5 +1,6 @@
 // Rates that read drivers or the year and vary by chance as well, and drivers whose years are drawn. Bounds are 5.8 standard errors.
 import { expect, test } from 'vitest';
+import { modelYears } from '../../src/analysis/chance/model-years.ts';
 import { runYear } from '../../src/compile/year-map.ts';
 import { compileText, tryText } from '../pipeline/compile-text.ts';
 import { correlationOf, meanOf, runWeather, sdOf } from './weather.ts';
@@ -149,4 +150,13 @@ test('a rate that is 0 at the means and above it in other years is refused, sinc
   expect(diagnostics.map(({ message }) => message)).toContain(
     'In a rare year births of adult in A is not possible: it is 0 at the means, and above it in other years',
   );
+});
+
+test('growth where years differ reads the driver of the first year', () => {
+  const variation = '  s: { sd: 0.05 }\n  between-patches: 0.5';
+  const alone = (survival: string): string =>
+    text({ survival, variation }).replace('  - { name: B, depth: 2 }\n', '').replace(', B: { adult: 100 }', '');
+  const [driven, plain] = ['s * rain', 's * 0.6'].map((one) => modelYears(compileText(alone(one))).value);
+  expect(driven).not.toBeNull();
+  expect(driven!.logGrowth).toBeCloseTo(plain!.logGrowth, 12);
 });

@@ -20,6 +20,8 @@ export function modelYears(compiled: Compiled): Answer<SmallNoise> {
   const { model, landscape } = compiled;
   const { variation } = model;
   if (variation === null) return because('Nothing varies from year to year in this model.');
+  if (variation.resampled !== null)
+    return because('Years of drivers are drawn, which the approximation does not follow; `skein path` simulates them.');
   if (dependsOnMakeUp(model))
     return because('Births depend on who meets whom, so the years are no products of matrices.');
   const rates = variedRates(variation, model.firstYear);

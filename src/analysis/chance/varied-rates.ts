@@ -126,7 +126,7 @@ function valueAt(
     if (name === given?.[0]) return given[1];
     const varied = variation.varied.find((one) => one.name === name && one.of.kind === 'parameter');
     if (varied !== undefined) return first(varied.mean, patch);
-    return name === 'year' ? firstYear : variation.attributes.get(name)?.[patch];
+    return name === 'year' ? firstYear : (variation.dated.get(name)?.[0] ?? variation.attributes.get(name)?.[patch]);
   };
   const found = evaluate(expression, scope, pinned);
   if (!found.ok) return 0;

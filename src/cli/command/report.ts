@@ -19,7 +19,8 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
   const { compiled, cutShort, ...ran } = await runReplicates(loaded.compiled, options);
   const hidden = askedHiding(compiled, { ...options, path, written: true });
   const results = withHiding(ran.results, hidden);
-  const done = cutShort === null ? options : { ...options, ...finishedOf(results) };
+  const done =
+    cutShort === null ? options : { ...options, precision: undefined, atMost: undefined, ...finishedOf(results) };
   const page = buildReport({
     results,
     path: followPath(compiled),
@@ -47,7 +48,7 @@ function finishedOf({ replicates, draws }: RunResults): Pick<CommonOptions, 'rep
 
 /** As it can be typed again. */
 function commandLineOf(first: readonly string[], options: CommonOptions, last: readonly string[]): string {
-  const { years, replicates, seed, draws, set, allow, places } = options;
+  const { years, replicates, seed, draws, precision, atMost, set, allow, places } = options;
   const words = ['skein', ...first];
   for (const { name, value } of set ?? []) words.push('--set', `${name}=${value}`);
   for (const folder of allow ?? []) words.push('--allow', folder);
@@ -55,6 +56,8 @@ function commandLineOf(first: readonly string[], options: CommonOptions, last: r
   if (replicates !== undefined) words.push('--replicates', String(replicates));
   if (seed !== undefined) words.push('--seed', String(seed));
   if (draws !== undefined) words.push('--draws', String(draws));
+  if (precision !== undefined) words.push('--precision', String(precision));
+  if (atMost !== undefined) words.push('--at-most', String(atMost));
   if (places !== undefined) words.push('--places', places);
   return [...words, ...last].map(quoted).join(' ');
 }

@@ -163,6 +163,26 @@ export const Run = Type.Object(
         default: 0,
       }),
     ),
+    precision: Type.Optional(
+      Type.Number({
+        exclusiveMinimum: 0,
+        exclusiveMaximum: 0.5,
+        description:
+          'Goes on after the first replicates until the 95 % interval that comes from the number of runs reaches no further than this to either side, for every chance of every outcome.',
+        examples: [0.01],
+        'x-unit': 'share',
+      }),
+    ),
+    'at-most': Type.Optional(
+      Type.Integer({
+        minimum: 1,
+        maximum: 100_000_000,
+        description:
+          'Replicates, those of all draws together, after which a run ends that is not yet as precise as asked.',
+        examples: [200000],
+        default: 100_000,
+      }),
+    ),
     seed: Type.Optional(
       Type.Integer({
         minimum: 0,

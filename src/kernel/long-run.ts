@@ -1,0 +1,65 @@
+// Growth in the long run: few animals as real numbers, year after year under the conditions that chance brings.
+import * as layout from '../../assembly/layout.ts';
+import { headerOf } from '../compile/image/read.ts';
+import { openOwnImage } from './open.ts';
+
+export interface LongRunRequest {
+  /** Years that are forgotten first, and then those that are kept, of each of the sixteen courses. */
+  readonly settling: number;
+  readonly years: number;
+  /** A whole number below 2^53. */
+  readonly seed: number;
+}
+
+const mostYears = 5000;
+const fewestYears = 500;
+/** Multiplications that a look at growth may take. */
+const mostWork = 4e8;
+
+/** Years of each course, by the size of the model alone: the same on every machine. */
+export function yearsThatPay(image: ArrayBuffer, { phases, settling }: { phases: number; settling: number }): number {
+  const header = headerOf(image);
+  const word = (index: number): number => header[index] ?? 0;
+  const inPatches = word(layout.headerPatches) * (word(layout.headerClasses) * phases + word(layout.headerSlots));
+  const work = Math.max(1, inPatches + word(layout.headerWays));
+  return Math.max(fewestYears, Math.min(mostYears, Math.floor(mostWork / (layout.lanes * work)) - settling));
+}
+
+/** So few that neither crowding nor ceilings matter. */
+const few = 1e-12;
+const wordSize = 4294967296;
+
+/**
+ * Mean yearly change of the natural logarithm of all animals, one number a course; −∞ where a year leaves nobody. The courses
+ * are independent; within each the years follow on one another, with their autocorrelation and waits. Rates are those of the
+ * first year.
+ */
+export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRunRequest): Float64Array {
+  const machine = openOwnImage(image);
+  const header = headerOf(image);
+  const cells = (header[layout.headerPatches] ?? 0) * (header[layout.headerClasses] ?? 0);
+  const numbers = new Uint32Array(machine.memory.buffer, machine.replicates(), layout.lanes);
+  numbers.forEach((_, lane) => (numbers[lane] = lane));
+  machine.start(layout.lanes, seed % wordSize, Math.floor(seed / wordSize));
+  const states = new Float64Array(layout.lanes * cells).fill(few / cells);
+  const sums = new Float64Array(layout.lanes);
+  const here = new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells);
+  for (let year = 0; year < settling + years; year++) {
+    machine.stepWeather();
+    for (let lane = 0; lane < layout.lanes; lane++) {
+      const state = states.subarray(lane * cells, (lane + 1) * cells);
+      here.set(state);
+      machine.stepPathUnder(lane);
+      const total = sumOf(here);
+      if (year >= settling) sums[lane] = (sums[lane] ?? 0) + (total > 0 ? machine.log(total / few) : -Infinity);
+      if (total > 0) for (let i = 0; i < cells; i++) state[i] = ((here[i] ?? 0) / total) * few;
+    }
+  }
+  return sums.map((sum) => sum / years);
+}
+
+function sumOf(numbers: Float64Array): number {
+  let sum = 0;
+  for (const number of numbers) sum += number;
+  return sum;
+}
