@@ -40,9 +40,25 @@ function removeOthers(folder, made) {
     if (!kept.has(name)) rmSync(join(folder, name), { force: true, recursive: true });
 }
 
+const shared = { absWorkingDir: root, bundle: true, format: 'esm', target: 'es2023', logLevel: 'warning' };
+
+/** The script of a thread, as text. */
+async function threadScript(name, from, constant) {
+  const { build } = await import('esbuild');
+  const script = {
+    entryPoints: [from],
+    format: 'cjs',
+    platform: 'node',
+    packages: 'bundle',
+    minify: true,
+    write: false,
+  };
+  const { outputFiles } = await build({ ...shared, ...script });
+  writeScript(name, from, `${constant}: string =\n  ${JSON.stringify(outputFiles[0].text)}`);
+}
+
 async function bundle() {
   const { build } = await import('esbuild');
-  const shared = { absWorkingDir: root, bundle: true, format: 'esm', target: 'es2023', logLevel: 'warning' };
   // The page goes into the command line as text, so it is built first.
   if (existsSync(at('src/page/main.ts'))) {
     await build({
@@ -58,15 +74,8 @@ async function bundle() {
     writeScript('page-script.ts', 'src/page/', `pageScript: string =\n  ${JSON.stringify(script)}`);
   }
   // The script of a thread goes into the command line and the library as text, so that both find it wherever they are put.
-  const { outputFiles } = await build({
-    ...shared,
-    entryPoints: ['src/threads/worker.ts'],
-    format: 'cjs',
-    platform: 'node',
-    minify: true,
-    write: false,
-  });
-  writeScript('worker-script.ts', 'src/threads/', `workerScript: string =\n  ${JSON.stringify(outputFiles[0].text)}`);
+  await threadScript('worker-script.ts', 'src/threads/worker.ts', 'workerScript');
+  await threadScript('sweep-worker-script.ts', 'src/cli/sweep/worker.ts', 'sweepWorkerScript');
   const node = { ...shared, platform: 'node', packages: 'bundle', minifySyntax: true };
   const banner = {
     js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",

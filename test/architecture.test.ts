@@ -68,6 +68,7 @@ function allowedOutside(from: string, to: string): boolean {
   if (to === '../assembly/layout.ts') return ['machine', 'compile', 'kernel', 'threads'].includes(placeOf(from));
   if (to === '../build/kernel.ts') return placeOf(from) === 'machine';
   if (to === '../build/worker-script.ts') return placeOf(from) === 'threads';
+  if (to === '../build/sweep-worker-script.ts') return placeOf(from) === 'cli';
   if (to === '../build/page-script.ts') return placeOf(from) === 'cli';
   return false;
 }

@@ -7,6 +7,7 @@ import { compileSpec, type CompiledModel } from '../pipeline.ts';
 import type { SpecDocument } from '../spec/document.ts';
 import { locateFinding } from '../spec/finding.ts';
 import { readSpec } from '../spec/read.ts';
+import { sweepFindings } from '../sweep/findings.ts';
 import { applySettings, type Settings } from '../spec/settings.ts';
 import { readDataFiles } from './data-files.ts';
 import { Ending, exitCodes } from './exit.ts';
@@ -59,9 +60,11 @@ export function readModel(path: string, settings: Settings, { allow = [] }: Pick
     throw new Ending(exitCodes.usage, `--set ${unknown}: the model has no parameter \`${unknown}\`.${hint}`);
   }
   const { compiled, findings } = compileSpec(applied.spec);
-  const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];
+  const ofSweep = compiled === null ? [] : sweepFindings(compiled);
+  const all = [...findings, ...ofSweep, ...(compiled === null ? [] : constructionFindings(compiled))];
   const located = all.map((finding) => locateFinding(document, finding));
-  return { document, files: alone.wants, compiled, diagnostics: inFileOrder([...diagnostics, ...located]) };
+  const told = inFileOrder([...diagnostics, ...located]);
+  return { document, files: alone.wants, compiled: ofSweep.length > 0 ? null : compiled, diagnostics: told };
 }
 
 export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {

@@ -4,6 +4,7 @@ import { toolVersion } from '../results/provenance.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
 import { writeError, writeOut } from './output.ts';
+import { addSweepOptions } from './sweep/flags.ts';
 
 type Handler<Path, Options> = (path: Path, options: Options) => void | Promise<void>;
 
@@ -13,6 +14,7 @@ function buildProgram(): Command {
     .version(toolVersion, '--version', 'print the version')
     .helpOption('--help', 'show this help')
     .helpCommand(false)
+    .enablePositionalOptions()
     .exitOverride()
     .configureOutput({ writeOut, writeErr: writeError })
     .showHelpAfterError('(--help shows what it takes)');
@@ -35,6 +37,7 @@ function buildProgram(): Command {
   addCompile(program);
   addAnalyse(program);
   addRuns(program);
+  addSweep(program);
   addSchema(program);
   return program;
 }
@@ -48,6 +51,35 @@ function addShow(program: Command): void {
     .action(async (path: string, stage: string, options: CommonOptions) => {
       (await import('./command/show.ts')).showStage(path, stage, options);
     });
+}
+
+function addSweep(program: Command): void {
+  const sweep = model(program, 'sweep', 'run the model at very many points, into a folder that survives anything', [
+    ...(['set', 'years', 'replicates', 'seed', 'threads', 'json', 'out', 'quiet'] as const),
+  ]);
+  addSweepOptions(sweep)
+    .enablePositionalOptions()
+    .addHelpText(
+      'after',
+      '\nExample:\n  skein sweep models/reed-hare.yaml --over adult_survival=0.4:0.7 --over natal_leaving=0.05,0.2 --out sweep',
+    )
+    .action(run(async () => (await import('./command/sweep.ts')).sweepCommand));
+  sweep
+    .command('merge')
+    .argument('<folders...>', 'folders that shards of one sweep were written to')
+    .description('join what the shards of a sweep made, and name what is missing')
+    .requiredOption('--out <folder>', 'where the whole sweep is to be')
+    .option('--json', 'print one JSON object instead of text')
+    .option('--quiet', 'print nothing')
+    .addHelpText('after', '\nExample:\n  skein sweep merge shard-1 shard-2 --out whole')
+    .action(run(async () => (await import('./command/sweep-merge.ts')).mergeSweeps));
+  sweep
+    .command('summary')
+    .argument('<folder>', 'the folder of a whole sweep')
+    .description('say what matters most, and how each measure answers each number')
+    .option('--json', 'print one JSON object instead of text')
+    .addHelpText('after', '\nExample:\n  skein sweep summary sweep')
+    .action(run(async () => (await import('./command/sweep-summary.ts')).summariseFolder));
 }
 
 function addSchema(program: Command): void {

@@ -44,6 +44,8 @@ const reasons: Readonly<Record<string, string>> = {
   EPERM: 'permission denied',
   EROFS: 'the disk is read-only',
   ENOSPC: 'no space left on the disk',
+  EFBIG: 'a file may not be as large here',
+  EDQUOT: 'you may not take more space on this disk',
   EISDIR: 'it is a folder',
   ENOTDIR: 'a part of its path is not a folder',
   ELOOP: 'its links lead in a circle',

@@ -8,6 +8,7 @@ import { openThreads, ThreadsFailure } from '../threads/threads.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { writeError } from './output.ts';
 import { showProgress } from './progress.ts';
+import { stopSignal } from './stop.ts';
 
 /** Animals of one class in one patch, year and replicate: below so many a run ends before a thread has started. */
 const smallWork = 1e7;
@@ -83,21 +84,6 @@ function checked({ compiled, results }: FinishedRun, model: CompiledModel['model
 
 function drawsAsked({ draws, uncertainty }: CompiledModel['model']): number {
   return Math.min(draws, uncertainty?.table?.length ?? draws);
-}
-
-/** The first Ctrl-C (or SIGTERM) lets what was begun be finished; the second ends at once. */
-function stopSignal(): { readonly signal: AbortSignal; close(): void } {
-  const controller = new AbortController();
-  const stop = (): void => {
-    controller.abort();
-    close();
-    writeError('\nStopping; what is finished is kept. Once more to end at once.\n');
-  };
-  const close = (): void => {
-    process.off('SIGINT', stop).off('SIGTERM', stop);
-  };
-  process.on('SIGINT', stop).on('SIGTERM', stop);
-  return { signal: controller.signal, close };
 }
 
 function tellDeath(reason: string): void {

@@ -75,6 +75,12 @@ export const modelCodes = {
   'handling-shape': 'A take, a move or a release says too little or too much.',
   'year-outside': 'Something is to be done in years that are not looked at.',
 
+  // Sweeps
+  'unknown-number': 'A sweep is over a number that the model does not have.',
+  'sweep-range': 'The values of a number in a sweep cannot be.',
+  'sweep-shape': 'A sweep says too little or too much.',
+  'sweep-size': 'A sweep is larger than can be done.',
+
   // What a careful reader asks of a model without a mistake
   'births-of-both-sexes': 'Births of both sexes may be counted as females.',
   'newborn-unsurvived': 'Young reach the next class before any survival.',

@@ -4,6 +4,7 @@ import { analysisJsonSchema } from '../analysis/schema.ts';
 import { writeSchema } from '../spec/publish.ts';
 import { PathSchema, RunSchema } from './results.ts';
 import { LandscapeSchema, MatrixSchema, ModelSchema, ModuleSchema, PackedSchema } from './stages.ts';
+import { SweepSchema, SweepSummarySchema } from './sweep.ts';
 import { CheckSchema, InputsSchema, LogSchema } from './work.ts';
 
 const own: Readonly<Record<string, readonly [title: string, schema: TSchema]>> = {
@@ -16,6 +17,11 @@ const own: Readonly<Record<string, readonly [title: string, schema: TSchema]>> =
   module: ['The custom section `skein-model` of `skein compile -o FILE.wasm`', ModuleSchema],
   packed: ['What `skein show MODEL packed --json` prints', PackedSchema],
   path: ['What `skein path --json` prints', PathSchema],
+  sweep: ['manifest.json: what a sweep is', SweepSchema],
+  'sweep-summary': [
+    'What `skein sweep --json` and `skein sweep summary --json` print, and summary.json',
+    SweepSummarySchema,
+  ],
   run: ['What `skein run --json` prints, and results.json', RunSchema],
 };
 

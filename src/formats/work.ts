@@ -56,6 +56,7 @@ export const CheckSchema = Type.Object({
 });
 
 const command = Type.Union([Type.Literal('run'), Type.Literal('path'), Type.Literal('analyse')]);
+const logged = Type.Union([...command.anyOf, Type.Literal('sweep'), Type.Literal('sweep merge')]);
 
 export const InputsSchema = Type.Object({
   format: Type.Literal('skein-inputs/1'),
@@ -67,7 +68,7 @@ export const InputsSchema = Type.Object({
 
 export const LogSchema = Type.Object({
   format: Type.Literal('skein-log/1'),
-  command,
+  command: logged,
   hash: part.provenance.hash,
   version: part.text('Of skein.'),
   started: Type.String({ description: 'ISO 8601, UTC.' }),

@@ -15,6 +15,10 @@ export interface Call {
   readonly env?: Readonly<Record<string, string>>;
   /** File descriptor of standard output, instead of a pipe that is read. */
   readonly stdout?: number;
+  /** No file can grow beyond so many bytes, as if the disk were full. */
+  readonly mostBytes?: number;
+  /** Milliseconds after which it is taken to hang. */
+  readonly patience?: number;
 }
 
 export interface Ended {
@@ -23,21 +27,31 @@ export interface Ended {
   readonly err: string;
 }
 
-export function skein(words: readonly string[], { cwd = root, input = '', env = {}, stdout }: Call = {}): Ended {
+export function skein(
+  words: readonly string[],
+  { cwd = root, input = '', env = {}, stdout, mostBytes, patience = 50_000 }: Call = {},
+): Ended {
   const {
     status,
     stdout: out,
     stderr,
-  } = spawnSync(process.execPath, [command, ...words], {
+  } = spawnSync(...limited([command, ...words], mostBytes), {
     cwd,
     input,
     env: { PATH: process.env['PATH'], HOME: process.env['HOME'], ...env },
     encoding: 'utf8',
     stdio: ['pipe', stdout ?? 'pipe', 'pipe'],
-    timeout: 50_000,
+    timeout: patience,
     maxBuffer: 256 * 1024 * 1024,
   });
   return { code: status, out: out ?? '', err: stderr };
+}
+
+/** The shell counts in blocks of 512 bytes. */
+function limited(words: readonly string[], mostBytes: number | undefined): [string, readonly string[]] {
+  if (mostBytes === undefined) return [process.execPath, words];
+  const blocks = String(Math.floor(mostBytes / 512));
+  return ['/bin/sh', ['-c', 'ulimit -f "$0" && exec "$@"', blocks, process.execPath, ...words]];
 }
 
 /** An empty folder with the examples beside it as `models`, gone after the test. */

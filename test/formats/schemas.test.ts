@@ -68,6 +68,24 @@ test.each(['run', 'path', 'analyse'])('what %s --out writes fits the schemas', (
   expectFits(command === 'analyse' ? 'analysis' : command, read('results.json'));
 });
 
+test.each(['grid', 'latin hypercube', 'sobol indices', 'morris', 'one at a time'])(
+  'a sweep fits its schemas: %s',
+  (design) => {
+    const cwd = folder();
+    const over = ['--over', 'survival.adult=0.5:0.8:4', '--over', 'wandering.leaving=0.1,0.2'];
+    const runs = ['--measure', 'growth,chance', '--replicates', '8', '--years', '5'];
+    const points = design === 'grid' || design === 'one at a time' ? [] : ['--points', '8'];
+    const words = ['sweep', 'models/two-ponds.yaml', ...over, '--design', design, ...points, ...runs];
+    const { code, out } = skein([...words, '--quiet', '--json', '--out', 'out'], { cwd });
+    expect(code).toBe(0);
+    const read = (name: string): unknown => JSON.parse(readFileSync(join(cwd, 'out', name), 'utf8'));
+    expectFits('sweep', read('manifest.json'));
+    expectFits('sweep-summary', read('summary.json'));
+    expectFits('sweep-summary', JSON.parse(out));
+    expectFits('log', read('log.json'));
+  },
+);
+
 test('the section of a module fits its schema', () => {
   const made = new WebAssembly.Module(modelModule(compileModel('reed-hare')));
   const [section] = WebAssembly.Module.customSections(made, sectionName);

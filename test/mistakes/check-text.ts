@@ -5,12 +5,14 @@ import { inFileOrder } from '../../src/diagnostic/tell.ts';
 import { compileSpec } from '../../src/pipeline.ts';
 import type { DataFiles } from '../../src/spec/data/files.ts';
 import { locateFinding } from '../../src/spec/finding.ts';
+import { sweepFindings } from '../../src/sweep/findings.ts';
 import { readSpec } from '../../src/spec/read.ts';
 
 export function checkText(text: string, file: string, files: DataFiles = new Map()): readonly Diagnostic[] {
   const { document, diagnostics } = readSpec(text, file, files);
   if (document === undefined) return diagnostics;
   const { compiled, findings } = compileSpec(document.spec);
-  const all = [...findings, ...(compiled === null ? [] : constructionFindings(compiled))];
+  const made = compiled === null ? [] : [...sweepFindings(compiled), ...constructionFindings(compiled)];
+  const all = [...findings, ...made];
   return inFileOrder([...diagnostics, ...all.map((finding) => locateFinding(document, finding))]);
 }

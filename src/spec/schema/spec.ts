@@ -11,6 +11,7 @@ import { Ceiling, Crowding, Dispersal, NamedCrowding } from './phases.ts';
 import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival } from './rates.ts';
 import type { ScheduleRef } from './schedule.ts';
 import { Study } from './study.ts';
+import { Sweep } from './sweep.ts';
 import { type Uncertain, Uncertainty } from './uncertainty.ts';
 import { fileName, Name, type FileRef } from './values.ts';
 import { type Varied, Variation } from './variation.ts';
@@ -87,6 +88,7 @@ export const CoreSchema = Type.Object(
     observed: Type.Optional(Observed),
     outcomes: Type.Optional(Outcomes),
     run: Type.Optional(Run),
+    sweep: Type.Optional(Sweep),
   },
   { additionalProperties: false },
 );
@@ -108,6 +110,7 @@ export type DispersalSpec = Inline<Static<typeof Dispersal>>;
 export type CeilingSpec = Inline<Static<typeof Ceiling>>;
 export type CrowdingSpec = Inline<Static<typeof Crowding>>;
 export type OutcomeSpec = Inline<Static<typeof Outcome>>;
+export type SweepSpec = Inline<Static<typeof Sweep>>;
 export type UncertainSpec = Inline<Static<typeof Uncertain>>;
 export type VariedSpec = Inline<Static<typeof Varied>>;
 export type SurvivalSpec = Inline<Static<typeof NamedSurvival>>;

@@ -1,0 +1,98 @@
+// skein sweep: very many points of one model, in a folder that survives anything.
+import { availableParallelism } from 'node:os';
+import { join } from 'node:path';
+import { sweepText } from '../../report/sweep-text.ts';
+import { locateFinding, type Finding } from '../../spec/finding.ts';
+import type { Spec } from '../../spec/schema/spec.ts';
+import { manifestOf, type Manifest } from '../../sweep/manifest.ts';
+import { planSweep, type SweepPlan } from '../../sweep/request.ts';
+import { Ending, exitCodes } from '../exit.ts';
+import { pendingFile } from '../files.ts';
+import { loadModel, tellDiagnostics, toldAlready, type LoadedModel } from '../load.ts';
+import { logOf } from '../log.ts';
+import { settingsOf } from '../options.ts';
+import { writeError, writeOut } from '../output.ts';
+import { specJson } from '../spec-json.ts';
+import { fillStore, msAPoint } from '../sweep/fill.ts';
+import { finishSweep } from '../sweep/finish.ts';
+import { askedOf, type SweepOptions } from '../sweep/flags.ts';
+import { costText, planText } from '../sweep/plan-text.ts';
+import { openStore, type Store } from '../sweep/store.ts';
+import { terminalOf } from '../terminal.ts';
+
+export async function sweepCommand(path: string, options: SweepOptions): Promise<void> {
+  const loaded = loadModel(path, settingsOf(options), options);
+  const spec = withoutSweep(loaded.compiled.spec);
+  const manifest = manifestOf({ ...loaded.compiled, spec }, planOf(loaded, options), specJson(spec));
+  const { quiet = false, threads = availableParallelism() } = options;
+  if (!quiet) writeError(`${planText(manifest)}\n`);
+  if (options.plan === true) {
+    writeError(`${costText(msAPoint(spec, manifest), { left: manifest.points, threads })}\n`);
+    return;
+  }
+  if (options.out === undefined) throw new Ending(exitCodes.usage, 'Name a folder for the results with --out.');
+  const store = openStore(options.out, manifest);
+  try {
+    await fillStore(store, { spec, manifest, threads, shard: options.shard, quiet });
+    await finish(store, { manifest, threads }, options);
+  } catch (error) {
+    throw error instanceof Ending ? withGoOn(error) : error;
+  } finally {
+    store.close();
+  }
+}
+
+interface Done {
+  readonly manifest: Manifest;
+  readonly threads: number;
+}
+
+async function finish(store: Store, { manifest, threads }: Done, { quiet, json }: SweepOptions): Promise<void> {
+  const started = new Date();
+  const missing = manifest.parts - store.finished().size;
+  if (missing > 0) {
+    const others = `${missing} of ${manifest.parts} parts are for others`;
+    if (quiet !== true) writeError(`This shard is done. ${others}; \`skein sweep merge\` joins them.\n`);
+    return;
+  }
+  const summary = await finishSweep(store.folder, manifest);
+  const log = logOf({ command: 'sweep', hash: manifest.hash, started, threads });
+  pendingFile(join(store.folder, 'log.json')).finish(`${JSON.stringify(log, null, 2)}\n`);
+  if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
+  else writeOut(`${sweepText(summary, terminalOf(process.stdout)).trimEnd()}\n`);
+}
+
+function withoutSweep({ named, ...core }: Spec): Spec {
+  const kept = { ...core };
+  delete kept.sweep;
+  return { ...kept, named };
+}
+
+/** An ending after all that stands against the sweep was told: at its place in the model, or for the command line. */
+function planOf({ document, compiled }: LoadedModel, options: SweepOptions): SweepPlan {
+  const { plan, findings } = planSweep(askedOf(compiled.spec.sweep, options), compiled);
+  if (plan !== null) return plan;
+  if (compiled.spec.sweep !== undefined && options.over === undefined && options.list === undefined) {
+    tellDiagnostics(findings.map((finding) => locateFinding(document, finding)));
+    throw toldAlready();
+  }
+  throw new Ending(exitCodes.usage, findings.map(plainText).join('\n'));
+}
+
+function plainText({ message, details = {} }: Finding): string {
+  const { expected, nearest, fix } = details;
+  const more = [
+    ...(expected === undefined ? [] : [`expected ${expected}`]),
+    ...(nearest === undefined ? [] : [`did you mean \`${nearest}\`?`]),
+    ...(fix === undefined ? [] : [fix]),
+  ];
+  return `${message}${more.length === 0 ? '' : `: ${more.join('; ')}`}`;
+}
+
+/** With the command that goes on. */
+function withGoOn({ exitCode, message }: Ending): Ending {
+  const plain = /^[\w./:=,+@%-]+$/u;
+  const words = process.argv.slice(2).map((word) => (plain.test(word) ? word : `'${word.replaceAll("'", "'\\''")}'`));
+  const goOn = `What is finished is kept. The same command goes on:\n  skein ${words.join(' ')}`;
+  return new Ending(exitCode, `${message} ${goOn}`);
+}

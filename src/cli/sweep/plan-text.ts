@@ -1,0 +1,38 @@
+// What a sweep will do, in words, before it begins.
+import { openDesign } from '../../sweep/design/design.ts';
+import type { Manifest } from '../../sweep/manifest.ts';
+
+const counted = (n: number, one: string, more = `${one}s`): string =>
+  `${n.toLocaleString('en')} ${n === 1 ? one : more}`;
+
+export function planText({ model, design, measures, points, parts, runs }: Manifest): string {
+  const names = design.factors.map(({ name }) => name);
+  const first = openDesign(design).at(0);
+  const asked =
+    runs === null
+      ? ''
+      : `, from ${counted(runs.replicates, 'run')} of ${counted(runs.years, 'year')} each (seed ${runs.seed})`;
+  return [
+    `${model}: ${counted(points, 'point')} (${design.design}) in ${counted(parts, 'part')}`,
+    `  over      ${names.join(', ')}`,
+    `  begins    ${names.map((name, k) => `${name} ${String(first[k])}`).join(', ')}`,
+    `  measures  ${measures.join(', ')}${asked}`,
+  ].join('\n');
+}
+
+export function costText(
+  msAPoint: number,
+  { left, threads }: { readonly left: number; readonly threads: number },
+): string {
+  const seconds = Math.ceil((msAPoint * left) / 1000 / threads);
+  const each = msAPoint < 1 ? `${(msAPoint * 1000).toFixed(0)} µs` : `${msAPoint.toPrecision(2)} ms`;
+  return `  cost      ${each} a point, tried at some: about ${timeWords(seconds)} in ${counted(threads, 'thread')}`;
+}
+
+function timeWords(seconds: number): string {
+  if (seconds < 90) return `${seconds} s`;
+  if (seconds < 5400) return `${Math.round(seconds / 60)} min`;
+  return seconds < 172_800
+    ? `${(seconds / 3600).toFixed(1)} h`
+    : `${Math.round(seconds / 86_400).toLocaleString('en')} days`;
+}

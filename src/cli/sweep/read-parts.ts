@@ -1,0 +1,66 @@
+// Reads the parts of a sweep back, one after the other.
+import { readFileSync } from 'node:fs';
+import { parquetRead } from 'hyparquet';
+import type { Manifest } from '../../sweep/manifest.ts';
+import { isText, placeOfPart } from '../../sweep/manifest.ts';
+import type { Swept } from '../../sweep/summary/swept.ts';
+import { Ending, exitCodes } from '../exit.ts';
+import { reasonOf } from '../output.ts';
+import { partPath } from './store.ts';
+
+/** Cells of one column of a part; null for what is missing. */
+export type PartColumns = ReadonlyMap<string, ArrayLike<unknown>>;
+
+export async function readPart(folder: string, part: number): Promise<PartColumns> {
+  const path = partPath(folder, part);
+  const columns = new Map<string, unknown[]>();
+  try {
+    const bytes = readFileSync(path);
+    const file = bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.byteLength);
+    await parquetRead({
+      file,
+      onChunk: ({ columnName, columnData }) => {
+        const before = columns.get(columnName) ?? [];
+        for (let i = 0; i < columnData.length; i++) before.push(columnData[i]);
+        columns.set(columnName, before);
+      },
+    });
+  } catch (error) {
+    throw new Ending(
+      exitCodes.work,
+      `Cannot read ${path}: ${reasonOf(error)}. Remove it, and the same sweep makes it again.`,
+    );
+  }
+  return columns;
+}
+
+/** All parts, which must be there. */
+export async function readSwept(folder: string, manifest: Manifest): Promise<Swept> {
+  const { design, columns, points, parts } = manifest;
+  const { factors } = design;
+  const values = factors.map((factor) =>
+    isText(factor) ? new Array<string>(points).fill('') : new Float64Array(points),
+  );
+  const named = columns
+    .slice(1 + factors.length, -1)
+    .map(({ name }) => [name, new Float64Array(points).fill(NaN)] as const);
+  const failures = new Map<string, number>();
+  for (let part = 0; part < parts; part++) {
+    const read = await readPart(folder, part);
+    const { first, count } = placeOfPart(manifest, part);
+    factors.forEach(({ name }, k) => {
+      for (let i = 0; i < count; i++) setAt(values[k], first + i, read.get(name)?.[i]);
+    });
+    for (const [name, into] of named) for (let i = 0; i < count; i++) setAt(into, first + i, read.get(name)?.[i]);
+    for (let i = 0; i < count; i++) {
+      const reason = read.get('failure')?.[i];
+      if (typeof reason === 'string') failures.set(reason, (failures.get(reason) ?? 0) + 1);
+    }
+  }
+  return { manifest, values, numbers: new Map(named), failures };
+}
+
+function setAt(into: Float64Array | string[] | undefined, row: number, cell: unknown): void {
+  if (into instanceof Float64Array) into[row] = typeof cell === 'number' ? cell : NaN;
+  else if (into !== undefined) into[row] = typeof cell === 'string' ? cell : '';
+}

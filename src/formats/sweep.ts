@@ -1,0 +1,143 @@
+// The manifest of a sweep, and what a sweep says.
+import { Type } from 'typebox';
+import * as part from './parts.ts';
+
+const Value = Type.Union([Type.Number(), Type.String()], { description: 'A number in its base unit, or a name.' });
+
+const Range = Type.Union([
+  Type.Object({
+    by: Type.Literal('from to'),
+    from: Type.Number(),
+    to: Type.Number(),
+    scale: Type.Union([Type.Literal('even'), Type.Literal('ratio')]),
+    steps: Type.Integer({ minimum: 1 }),
+  }),
+  Type.Object({ by: Type.Literal('values'), values: Type.Array(Value) }),
+  Type.Object({
+    by: Type.Literal('how sure it is'),
+    distribution: Type.Record(Type.String(), Type.Unknown()),
+    steps: Type.Integer({ minimum: 1 }),
+  }),
+]);
+
+const Factor = Type.Object({
+  name: part.text('A named parameter, or a place of the model.'),
+  base: Value,
+  range: Range,
+});
+
+const designName = Type.Union([
+  Type.Literal('grid'),
+  Type.Literal('list'),
+  Type.Literal('latin hypercube'),
+  Type.Literal('sobol'),
+  Type.Literal('one at a time'),
+  Type.Literal('sobol indices'),
+  Type.Literal('morris'),
+]);
+
+const Design = Type.Object({
+  design: designName,
+  factors: Type.Array(Factor),
+  points: Type.Optional(part.whole('Points, rows of shares of variance, or walks.')),
+  seed: Type.Optional(part.whole('Decides where sampled points lie.')),
+  scrambled: Type.Optional(Type.Boolean()),
+  rows: Type.Optional(Type.Array(Type.Array(Value), { description: 'Points of a list, in the order of the factors.' })),
+});
+
+const runs = part.orNull(
+  Type.Object(
+    { replicates: part.whole('At each point.'), years: part.years, seed: part.seed },
+    { description: 'Null where no measure asks for runs.' },
+  ),
+);
+
+const Column = Type.Object({
+  name: Type.String(),
+  type: Type.Union([Type.Literal('integer'), Type.Literal('number'), Type.Literal('text')]),
+  unit: Type.String(),
+  meaning: Type.String(),
+});
+
+export const SweepSchema = Type.Object({
+  format: Type.Literal('skein-sweep/1'),
+  ...part.provenance,
+  design: Design,
+  measures: Type.Array(Type.String()),
+  points: part.whole('Of the whole design.'),
+  pointsInPart: Type.Integer({ minimum: 1, description: 'Each part holds so many points, the last perhaps fewer.' }),
+  parts: Type.Integer({ minimum: 1 }),
+  runs,
+  columns: Type.Array(Column, { description: 'Of the parts and of points.csv, in their order.' }),
+  spec: Type.Object({}, { description: 'The model with all its inputs, as the language has it.' }),
+});
+
+const Band = Type.Object({ lower: part.maybe('95 %.'), upper: part.maybe('95 %.') });
+
+const FactorSummary = Type.Object({
+  name: Type.String(),
+  response: Type.Object({
+    groups: Type.Array(
+      Type.Object({
+        from: Value,
+        to: Value,
+        points: part.whole('At this value, or in this slice of the values.'),
+        mean: part.maybe('Of the measure.'),
+        lower: part.maybe('Value that 5 % of the points do not exceed.'),
+        upper: part.maybe('Value that 95 % of the points do not exceed.'),
+      }),
+    ),
+    explained: part.maybe('Share of the variance of the measure between the values of the number.'),
+  }),
+  throughOne: part.orNull(
+    Type.Array(Type.Number(), { description: 'Where the mean growth over the other numbers goes through 1.' }),
+  ),
+  shares: part.orNull(
+    Type.Object({
+      first: part.maybe('Share of the variance by the number alone (Saltelli et al. 2010).'),
+      firstBand: Band,
+      firstByDifferences: part.maybe('The same by differences (Jansen 1999).'),
+      total: part.maybe('Share with all that it does together with others (Jansen 1999).'),
+      totalBand: Band,
+    }),
+  ),
+  screen: part.orNull(
+    Type.Object({
+      meanSize: part.maybe('Mean size of the effects over the whole range (Campolongo et al. 2007).'),
+      mean: part.maybe('Mean effect, with its sign.'),
+      spread: part.maybe('Standard deviation of the effects.'),
+      standardError: part.maybe('Of the mean size.'),
+      noise: part.maybe('Size of effects from the number of replicates alone.'),
+      effects: part.whole('That were whole.'),
+    }),
+  ),
+  rankCorrelation: part.orNull(Type.Object({ correlation: part.maybe('Partial, of ranks.'), band: Band })),
+});
+
+export const SweepSummarySchema = Type.Object({
+  format: Type.Literal('skein-sweep-summary/1'),
+  ...part.provenance,
+  design: designName,
+  points: part.whole('Of the design.'),
+  runs,
+  failed: Type.Object({
+    points: part.whole('Points that no model can have.'),
+    reasons: Type.Array(Type.Object({ reason: Type.String(), points: part.whole('With this reason.') })),
+  }),
+  factors: Type.Array(Type.Object({ name: Type.String(), base: Value })),
+  quantities: Type.Array(
+    Type.Object({
+      name: Type.String(),
+      unit: Type.String(),
+      meaning: Type.String(),
+      least: part.maybe('Over the points.'),
+      greatest: part.maybe('Over the points.'),
+      mean: part.maybe('Over the points.'),
+      noise: part.maybe('Share of the variance over the points that comes from the number of replicates.'),
+      variance: part.maybe('Over the points, without that noise; of shares of variance only.'),
+      factors: Type.Array(FactorSummary, { description: 'What matters most first.' }),
+      orderedBy: Type.String(),
+    }),
+  ),
+  assumptions: Type.Array(Type.String(), { description: 'What each number of sensitivity takes for granted.' }),
+});

@@ -1,0 +1,119 @@
+// What a sweep says in a terminal: for each measure its range, and what matters most first.
+import type { SweepSummary, FactorSummary, QuantitySummary } from '../sweep/summary/summarise.ts';
+import { percent } from '../view/number.ts';
+import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from './terminal.ts';
+
+export function sweepText(summary: SweepSummary, style: TextStyle): string {
+  const { model, points, design, failed, quantities, assumptions, runs } = summary;
+  const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years each`;
+  return joinBlocks([
+    bold(printable(model), style),
+    `${points.toLocaleString('en')} points (${design})${of}`,
+    failed.points === 0 ? '' : failedText(summary, style),
+    ...quantities.map((quantity) => quantityText(quantity, summary, style)),
+    ...assumptions.map((text) => wrap(text, style)),
+    dim(`skein ${summary.tool.version}, kernel ${summary.tool.kernel}, hash ${summary.hash.slice(0, 12)}`, style),
+  ]);
+}
+
+function failedText({ failed, points }: SweepSummary, style: TextStyle): string {
+  const most = failed.reasons.toSorted((a, b) => b.points - a.points).slice(0, 5);
+  const head = `${failed.points.toLocaleString('en')} of ${points.toLocaleString('en')} points are models that cannot be, and have no numbers:`;
+  return [
+    wrap(head, style),
+    ...most.map((one) => wrap(`${one.reason} (${one.points.toLocaleString('en')})`, style, '  ')),
+  ].join('\n');
+}
+
+function quantityText(quantity: QuantitySummary, summary: SweepSummary, style: TextStyle): string {
+  const { name, unit, least, greatest, mean, noise, orderedBy, factors } = quantity;
+  if (!Number.isFinite(least)) return `${bold(printable(name), style)}: no point has a number`;
+  const shown = (value: number): string => numberText(value, unit);
+  const from = unit === 'share' ? '' : ` ${unit}`;
+  const range = `${shown(least)} to ${shown(greatest)}${from}, mean ${shown(mean)}`;
+  const noisy = noise === null ? '' : `; ${percent(noise)} of its variance comes from the number of runs`;
+  const { head, cells } = tableOf(summary, quantity);
+  return [
+    wrap(`${bold(printable(name), style)}: ${range}${noisy}`, style),
+    `what matters most, by ${orderedBy}:`,
+    columnsOf(
+      ['number', ...head],
+      factors.map((factor) => [factor.name, ...cells(factor)]),
+      style,
+    ),
+    ...throughOne(factors).map((text) => wrap(text, style)),
+  ].join('\n');
+}
+
+interface FactorTable {
+  readonly head: readonly string[];
+  cells(factor: FactorSummary): readonly string[];
+}
+
+function tableOf({ design }: SweepSummary, { unit }: QuantitySummary): FactorTable {
+  const shown = (value: number): string => numberText(value, unit);
+  const span = ({ response }: FactorSummary): readonly string[] => {
+    const [first, last] = [response.groups[0], response.groups.at(-1)];
+    return first === undefined || last === undefined ? ['', ''] : [shown(first.mean), shown(last.mean)];
+  };
+  switch (design) {
+    case 'sobol indices':
+      return {
+        head: ['alone', '95 %', 'in all', '95 %'],
+        cells: ({ shares }) =>
+          shares === null
+            ? ['', '', '', '']
+            : [two(shares.first), bandText(shares.firstBand), two(shares.total), bandText(shares.totalBand)],
+      };
+    case 'morris':
+      return {
+        head: ['mean size', '± error', 'mean', 'spread', 'noise'],
+        cells: ({ screen }) =>
+          screen === null
+            ? ['', '', '', '', '']
+            : [screen.meanSize, screen.standardError, screen.mean, screen.spread, screen.noise].map((value) =>
+                three(value),
+              ),
+      };
+    case 'one at a time':
+      return { head: ['at its least', 'at its most'], cells: span };
+    default:
+      return {
+        head: ['of variance', 'rank correlation', '95 %', 'at its least', 'at its most'],
+        cells: (factor) => [
+          factor.response.explained === null ? '' : percent(factor.response.explained),
+          factor.rankCorrelation === null ? '' : two(factor.rankCorrelation.correlation),
+          factor.rankCorrelation === null ? '' : bandText(factor.rankCorrelation.band),
+          ...span(factor),
+        ],
+      };
+  }
+}
+
+function throughOne(factors: readonly FactorSummary[]): readonly string[] {
+  return factors.flatMap(({ name, throughOne: at }) =>
+    at === null || at.length === 0
+      ? []
+      : [`growth goes through 1, in the mean over the other numbers, at ${name} ${at.map(three).join(', ')}`],
+  );
+}
+
+function bandText({ lower, upper }: { readonly lower: number; readonly upper: number }): string {
+  return `${two(lower)} to ${two(upper)}`;
+}
+
+function numberText(value: number, unit: string): string {
+  return unit === 'share'
+    ? percent(value)
+    : Math.abs(value) >= 100
+      ? Math.round(value).toLocaleString('en')
+      : three(value);
+}
+
+function two(value: number): string {
+  return value.toFixed(2).replace(/^-0\.00$/u, '0.00');
+}
+
+function three(value: number): string {
+  return String(Number(value.toPrecision(4)));
+}

@@ -1,0 +1,109 @@
+// What a sweep is, whole: two folders with the same manifest hold parts of the same sweep, to the last byte.
+import type { CompiledModel } from '../pipeline.ts';
+import { provenanceOf } from '../results/provenance.ts';
+import { openDesign } from './design/design.ts';
+import { valuesOf, type Factor } from './design/factor.ts';
+import { columnsOf, isOfRuns, quantitiesOf, type MeasureName, type NumberColumn, type Quantity } from './measures.ts';
+import type { DesignPlan } from './design/design.ts';
+import type { SweepPlan } from './request.ts';
+
+export interface SweepColumn {
+  readonly name: string;
+  readonly type: 'integer' | 'number' | 'text';
+  readonly unit: string;
+  readonly meaning: string;
+}
+
+export interface Manifest {
+  readonly format: 'skein-sweep/1';
+  readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
+  readonly model: string;
+  /** SHA-256 of the model, the design and the measures, and of the major version of the kernel. */
+  readonly hash: string;
+  readonly design: DesignPlan;
+  readonly measures: readonly MeasureName[];
+  readonly points: number;
+  /** Each part holds so many points, the last perhaps fewer. */
+  readonly pointsInPart: number;
+  readonly parts: number;
+  /** Null where no measure asks for runs. */
+  readonly runs: { readonly replicates: number; readonly years: number; readonly seed: number } | null;
+  /** Of the parts, in their order. */
+  readonly columns: readonly SweepColumn[];
+  /** The model with all its inputs, as the language has it. */
+  readonly spec: unknown;
+}
+
+/** `spec` as it is to be printed. */
+export function manifestOf({ spec, model }: CompiledModel, plan: SweepPlan, printed: unknown): Manifest {
+  const { design, measures } = plan;
+  const { tool, model: title, hash } = provenanceOf(model.title, { spec, plan });
+  const points = openDesign(design).size;
+  const ofRuns = measures.some(isOfRuns);
+  const cells = model.replicates * model.steps * model.patches.length * model.classes.length;
+  const pointsInPart = partSize({ points, cells: ofRuns ? cells : 0, measures });
+  const { replicates, steps: years, seed } = model;
+  return {
+    format: 'skein-sweep/1',
+    tool,
+    model: title,
+    hash,
+    design,
+    measures,
+    points,
+    pointsInPart,
+    parts: Math.ceil(points / pointsInPart),
+    runs: ofRuns ? { replicates, years, seed } : null,
+    columns: sweepColumns(design.factors, quantitiesOf(measures, model)),
+    spec: printed,
+  };
+}
+
+interface PartSize {
+  readonly points: number;
+  /** Animals of one class in one patch, year and replicate of a point. */
+  readonly cells: number;
+  readonly measures: readonly MeasureName[];
+}
+
+/** About a second of work, and enough parts for many threads: by the request alone, never by the machine. */
+function partSize({ points, cells, measures }: PartSize): number {
+  const quick = measures.every((one) => one === 'growth');
+  const fitting = cells > 0 ? Math.floor(2e7 / cells) : quick ? 4096 : 256;
+  const few = Math.max(cells > 0 ? 1 : 64, Math.ceil(points / 16));
+  return Math.max(1, Math.min(fitting, few, 4096));
+}
+
+function sweepColumns(factors: readonly Factor[], quantities: readonly Quantity[]): readonly SweepColumn[] {
+  const number = ({ name, unit, meaning }: NumberColumn): SweepColumn => ({ name, type: 'number', unit, meaning });
+  return [
+    { name: 'point', type: 'integer', unit: '', meaning: 'Number of the point in the design, from 0.' },
+    ...factors.map((factor): SweepColumn => ({
+      name: factor.name,
+      type: isText(factor) ? 'text' : 'number',
+      unit: isText(factor) ? '' : 'as in the model',
+      meaning: 'Value of this number at the point, in its base unit.',
+    })),
+    ...quantities.flatMap(columnsOf).map(number),
+    { name: 'failure', type: 'text', unit: '', meaning: 'Why no model can have these values; empty where one can.' },
+  ];
+}
+
+/** Whether a factor has values that are no numbers. */
+export function isText(factor: Factor): boolean {
+  return valuesOf(factor).some((value) => typeof value === 'string');
+}
+
+export interface PartPlace {
+  readonly first: number;
+  readonly count: number;
+}
+
+/** Parts count from 0. */
+export function placeOfPart(
+  { points, pointsInPart }: Pick<Manifest, 'points' | 'pointsInPart'>,
+  part: number,
+): PartPlace {
+  const first = part * pointsInPart;
+  return { first, count: Math.min(pointsInPart, points - first) };
+}

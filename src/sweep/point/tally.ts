@@ -1,0 +1,101 @@
+// What the measures need of the runs of a point, kept apart for the two halves of the replicates. Exact sums of whole numbers:
+// the same as those of a run with the same settings.
+import { lanes } from '../../kernel/batch.ts';
+import type { BatchCounts } from '../../kernel/output.ts';
+import type { Model } from '../../model/model.ts';
+import { Hits } from '../../results/reduction/hits.ts';
+import { isOfRuns, type Quantity } from '../measures.ts';
+
+const wholeColumn = 0;
+const firstPatchColumn = 1;
+
+/** Number, sum and sum of squares of what is asked of the finished runs. */
+interface Sum {
+  readonly n: number;
+  readonly sum: number;
+  readonly squares: number;
+}
+
+export class Tally {
+  readonly #model: Model;
+  readonly #halves: readonly [Half, Half];
+
+  constructor(model: Model, quantities: readonly Quantity[]) {
+    this.#model = model;
+    const ofRuns = quantities.filter(({ measure }) => isOfRuns(measure));
+    this.#halves = [new Half(model, ofRuns), new Half(model, ofRuns)];
+  }
+
+  take(batch: BatchCounts): void {
+    const stopped = new Set(batch.stopped.map(({ replicate }) => replicate - batch.first));
+    const first = Math.floor(this.#model.replicates / 2);
+    for (let lane = 0; lane < batch.lanes; lane++) {
+      if (!stopped.has(lane)) this.#halves[batch.first + lane < first ? 0 : 1].take(batch, lane);
+    }
+  }
+
+  /** Value, standard error, first half, second half of a quantity; NaN where no run was finished. */
+  numbersOf(quantity: Quantity): readonly [number, number, number, number] {
+    const [first, second] = [this.#halves[0].sumOf(quantity), this.#halves[1].sumOf(quantity)];
+    const n = first.n + second.n;
+    const mean = (first.sum + second.sum) / n;
+    const spread = Math.max(0, (first.squares + second.squares) / n - mean * mean);
+    return [mean, Math.sqrt(spread / n), first.sum / first.n, second.sum / second.n];
+  }
+}
+
+class Half {
+  readonly #model: Model;
+  /** By outcome; null where no quantity asks for it. */
+  readonly #hits: readonly (Hits | null)[];
+  /** By quantity that is no chance. */
+  readonly #sums: ReadonlyMap<string, { sum: number; squares: number }>;
+  #runs = 0;
+
+  constructor(model: Model, quantities: readonly Quantity[]) {
+    const { steps, replicates, outcomes } = model;
+    this.#model = model;
+    this.#hits = outcomes.map(({ event, counts }, k) =>
+      quantities.some(({ outcome }) => outcome === k) ? new Hits({ event, counts, steps, replicates }) : null,
+    );
+    const others = quantities.filter(({ outcome }) => outcome === undefined);
+    this.#sums = new Map(others.map(({ measure }) => [measure, { sum: 0, squares: 0 }]));
+  }
+
+  take({ first, counts }: BatchCounts, lane: number): void {
+    const { steps, patches } = this.#model;
+    const columns = counts.length / (steps + 1);
+    this.#runs++;
+    this.#hits.forEach((hits, k) => {
+      if (hits === null) return;
+      const place = (firstPatchColumn + patches.length + k) * lanes + lane;
+      for (let t = 0; t <= steps; t++) hits.add(t, first + lane, counts[t * columns + place] ?? 0);
+    });
+    for (const [measure, sums] of this.#sums) {
+      const value = this.#valueOf(measure, counts.subarray(lane), columns);
+      sums.sum += value;
+      sums.squares += value * value;
+    }
+  }
+
+  /** Of one lane, whose numbers stand sixteen apart. */
+  #valueOf(measure: string, counts: Float64Array, columns: number): number {
+    const { steps, patches } = this.#model;
+    const atEnd = (column: number): number => counts[steps * columns + column * lanes] ?? 0;
+    if (measure === 'animals') return atEnd(wholeColumn);
+    if (measure === 'patches-in-use') {
+      return patches.reduce((used, _, p) => used + (atEnd(firstPatchColumn + p) > 0 ? 1 : 0), 0);
+    }
+    let lowest = Infinity;
+    for (let t = 0; t <= steps; t++) lowest = Math.min(lowest, counts[t * columns + wholeColumn * lanes] ?? 0);
+    return lowest;
+  }
+
+  sumOf({ measure, outcome }: Quantity): Sum {
+    const hits = outcome === undefined ? null : this.#hits[outcome];
+    if (hits === null || hits === undefined)
+      return { n: this.#runs, ...(this.#sums.get(measure) ?? { sum: NaN, squares: NaN }) };
+    const came = measure === 'chance' ? hits.firstAt.reduce((sum, runs) => sum + runs, 0) : (hits.nowAt.at(-1) ?? 0);
+    return { n: this.#runs, sum: came, squares: came };
+  }
+}

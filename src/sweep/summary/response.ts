@@ -1,0 +1,122 @@
+// How a measure answers one factor: its mean and spread at each value, or in slices of equally many points.
+import type { Value } from '../design/factor.ts';
+
+export interface ResponseGroup {
+  /** The value, or the least and greatest of the slice. */
+  readonly from: Value;
+  readonly to: Value;
+  readonly points: number;
+  readonly mean: number;
+  /** Values that 5 and 95 % of the points do not exceed: what the other factors do. */
+  readonly lower: number;
+  readonly upper: number;
+}
+
+export interface Response {
+  readonly groups: readonly ResponseGroup[];
+  /** Share of the variance of the measure that lies between the groups; of sampled points, less what chance alone would put there. */
+  readonly explained: number | null;
+}
+
+const mostValues = 60;
+const slices = 20;
+
+export interface RowsAsked {
+  readonly rows: readonly number[];
+  /** Points of a grid are balanced: nothing between its values is chance. */
+  readonly sampled: boolean;
+}
+
+/** Over the points `rows`; those without a measure are left out. */
+export function responseTo(
+  values: Float64Array | readonly string[],
+  measure: Float64Array,
+  { rows, sampled }: RowsAsked,
+): Response {
+  const known = rows.filter((row) => !Number.isNaN(measure[row] ?? NaN));
+  const groups = groupsOf(values, known);
+  return {
+    groups: groups.map((own) => groupOf(values, measure, own)),
+    explained: explainedBy(groups, measure, sampled),
+  };
+}
+
+function groupsOf(values: Float64Array | readonly string[], rows: readonly number[]): readonly (readonly number[])[] {
+  const byValue = new Map<Value, number[]>();
+  for (const row of rows) {
+    const value = values[row] ?? NaN;
+    const own = byValue.get(value);
+    if (own !== undefined) own.push(row);
+    else if (byValue.size < mostValues) byValue.set(value, [row]);
+    else return slicesOf(values, rows);
+  }
+  const all = [...byValue.entries()];
+  if (values instanceof Float64Array) all.sort(([a], [b]) => Number(a) - Number(b));
+  return all.map(([, own]) => own);
+}
+
+function slicesOf(values: Float64Array | readonly string[], rows: readonly number[]): readonly (readonly number[])[] {
+  const sorted = rows.toSorted((a, b) => Number(values[a]) - Number(values[b]));
+  return Array.from({ length: slices }, (_, s) =>
+    sorted.slice(Math.round((s * sorted.length) / slices), Math.round(((s + 1) * sorted.length) / slices)),
+  );
+}
+
+function groupOf(
+  values: Float64Array | readonly string[],
+  measure: Float64Array,
+  rows: readonly number[],
+): ResponseGroup {
+  const sorted = Float64Array.from(rows, (row) => measure[row] ?? NaN).sort();
+  const at = (share: number): number => {
+    const place = share * (sorted.length - 1);
+    const [low = NaN, high = low] = [sorted[Math.floor(place)], sorted[Math.ceil(place)]];
+    return low + (place - Math.floor(place)) * (high - low);
+  };
+  const [first = 0, last = first] = [rows[0], rows.at(-1)];
+  return {
+    from: values[first] ?? NaN,
+    to: values[last] ?? NaN,
+    points: rows.length,
+    mean: meanOf(sorted),
+    lower: at(0.05),
+    upper: at(0.95),
+  };
+}
+
+function meanOf(values: Float64Array): number {
+  return values.reduce((sum, value) => sum + value, 0) / values.length;
+}
+
+/**
+ * Between / total; of sampled points ε² (Kelley 1935), (between − (g − 1) · within mean square) / total. Null with fewer than two
+ * groups, or with a point in each.
+ */
+function explainedBy(groups: readonly (readonly number[])[], measure: Float64Array, sampled: boolean): number | null {
+  const n = groups.reduce((sum, own) => sum + own.length, 0);
+  if (groups.length < 2 || n <= groups.length) return null;
+  const values = groups.map((own) => Float64Array.from(own, (row) => measure[row] ?? NaN));
+  const mean = values.reduce((sum, own) => sum + meanOf(own) * own.length, 0) / n;
+  let [between, within] = [0, 0];
+  for (const own of values) {
+    const middle = meanOf(own);
+    between += own.length * (middle - mean) * (middle - mean);
+    for (const value of own) within += (value - middle) * (value - middle);
+  }
+  const total = between + within;
+  if (!(total > 0)) return null;
+  const byChance = sampled ? ((groups.length - 1) * within) / (n - groups.length) : 0;
+  return Math.min(1, Math.max(0, (between - byChance) / total));
+}
+
+/** Values of a factor at which the mean of the groups goes through a level, between neighbours by a straight line. */
+export function crossings({ groups }: Response, level: number): readonly number[] {
+  return groups.flatMap((group, i) => {
+    const before = groups[i - 1];
+    if (before === undefined || typeof group.from !== 'number' || typeof before.from !== 'number') return [];
+    const [low, high] = [before.mean - level, group.mean - level];
+    if (!(low * high < 0) && !(low === 0 && high !== 0)) return [];
+    const [x0, x1] = [(before.from + Number(before.to)) / 2, (group.from + Number(group.to)) / 2];
+    return [x0 + (x1 - x0) * (low / (low - high))];
+  });
+}

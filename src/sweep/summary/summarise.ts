@@ -1,0 +1,200 @@
+// What a sweep says: the response to each factor with its spread, what matters most and by which measure of it, and where growth
+// goes through 1.
+import type { DesignName } from '../design/design.ts';
+import { levelsOf, type Value } from '../design/factor.ts';
+import { isText } from '../manifest.ts';
+import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
+import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
+import { screening, type FactorScreen } from '../sensitivity/screening.ts';
+import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
+import { crossings, responseTo, type Response } from './response.ts';
+import type { Swept } from './swept.ts';
+
+export interface SweepSummary {
+  readonly format: 'skein-sweep-summary/1';
+  readonly tool: { readonly name: 'skein'; readonly version: string; readonly kernel: string };
+  readonly model: string;
+  readonly hash: string;
+  readonly design: DesignName;
+  readonly points: number;
+  readonly runs: { readonly replicates: number; readonly years: number; readonly seed: number } | null;
+  readonly failed: {
+    readonly points: number;
+    readonly reasons: readonly { readonly reason: string; readonly points: number }[];
+  };
+  readonly factors: readonly { readonly name: string; readonly base: Value }[];
+  readonly quantities: readonly QuantitySummary[];
+  /** What each number of sensitivity assumes. */
+  readonly assumptions: readonly string[];
+}
+
+export interface QuantitySummary {
+  readonly name: string;
+  readonly unit: string;
+  readonly meaning: string;
+  readonly least: number;
+  readonly greatest: number;
+  readonly mean: number;
+  /** Of the variance over the points, what comes from the number of replicates; null without chance. */
+  readonly noise: number | null;
+  /** Without that noise; null but for the design `sobol indices`. */
+  readonly variance: number | null;
+  /** The factors, what matters most first. */
+  readonly factors: readonly FactorSummary[];
+  /** What the order of the factors is by. */
+  readonly orderedBy: string;
+}
+
+export interface FactorSummary {
+  readonly name: string;
+  readonly response: Response;
+  /** Where the mean response goes through 1; null but for growth. */
+  readonly throughOne: readonly number[] | null;
+  readonly shares: FactorShares | null;
+  readonly screen: FactorScreen | null;
+  readonly rankCorrelation: RankCorrelation | null;
+}
+
+export function summariseSweep(swept: Swept): SweepSummary {
+  const { manifest, failures } = swept;
+  const { tool, model, hash, design, points, runs } = manifest;
+  const failed = [...failures].map(([reason, count]) => ({ reason, points: count }));
+  return {
+    format: 'skein-sweep-summary/1',
+    tool,
+    model,
+    hash,
+    design: design.design,
+    points,
+    runs,
+    failed: { points: failed.reduce((sum, one) => sum + one.points, 0), reasons: failed },
+    factors: design.factors.map(({ name, base }) => ({ name, base })),
+    quantities: quantityColumns(swept).map((column) => summariseQuantity(swept, column)),
+    assumptions: assumptionsOf(design.design, runs !== null),
+  };
+}
+
+interface QuantityColumn {
+  readonly name: string;
+  readonly unit: string;
+  readonly meaning: string;
+  readonly observed: Observed;
+}
+
+/** Columns that are no part of another one. */
+function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
+  return manifest.columns.slice(1 + manifest.design.factors.length, -1).flatMap(({ name, unit, meaning }) => {
+    const whole = numbers.get(name);
+    if (whole === undefined || / \((standard error|first half|second half)\)$/u.test(name)) return [];
+    const first = numbers.get(`${name} (first half)`) ?? whole;
+    const second = numbers.get(`${name} (second half)`) ?? whole;
+    return [{ name, unit, meaning, observed: { first, second } }];
+  });
+}
+
+function summariseQuantity(swept: Swept, { name, unit, meaning, observed }: QuantityColumn): QuantitySummary {
+  const { design, runs } = swept.manifest;
+  const whole = swept.numbers.get(name) ?? observed.first;
+  const known = whole.filter((value) => !Number.isNaN(value));
+  const count = design.factors.length;
+  const shares = design.design === 'sobol indices' ? sharesOfVariance(observed, count) : null;
+  const screens = design.design === 'morris' ? screening(observed, count, design.seed) : [];
+  const ranks = ranked(design.design) ? rankCorrelations(swept, observed) : [];
+  const factors = design.factors.map((factor, k): FactorSummary => {
+    const response = responseTo(swept.values[k] ?? [], whole, {
+      rows: rowsOf(swept, k),
+      sampled: design.design !== 'grid',
+    });
+    return {
+      name: factor.name,
+      response,
+      throughOne: name === 'growth' ? crossings(response, 1) : null,
+      shares: shares?.factors[k] ?? null,
+      screen: screens[k] ?? null,
+      rankCorrelation: ranks[k] ?? null,
+    };
+  });
+  const { by, weight } = order(design.design);
+  return {
+    name,
+    unit,
+    meaning,
+    least: known.reduce((least, value) => Math.min(least, value), Infinity),
+    greatest: known.reduce((most, value) => Math.max(most, value), -Infinity),
+    mean: known.reduce((sum, value) => sum + value, 0) / known.length,
+    noise: runs === null || observed.first === observed.second ? null : noiseShare(observed),
+    variance: shares?.variance ?? null,
+    factors: factors.toSorted((a, b) => weight(b) - weight(a)),
+    orderedBy: by,
+  };
+}
+
+/** Where one number at a time changes, the points at which the others are as in the model. */
+function rowsOf({ manifest: { design, points } }: Swept, k: number): readonly number[] {
+  if (design.design !== 'one at a time') return Array.from({ length: points }, (_, row) => row);
+  const sizes = design.factors.map((factor) => levelsOf(factor).length);
+  const first = 1 + sizes.slice(0, k).reduce((sum, size) => sum + size, 0);
+  return Array.from({ length: sizes[k] ?? 0 }, (_, i) => first + i);
+}
+
+function ranked(design: DesignName): boolean {
+  return design === 'grid' || design === 'list' || design === 'latin hypercube' || design === 'sobol';
+}
+
+/** Over the points with a measure, by the factors that are numbers. */
+function rankCorrelations({ manifest, values }: Swept, observed: Observed): readonly (RankCorrelation | null)[] {
+  const rows = [...observed.first.keys()].filter((row) => !Number.isNaN(wholeAt(observed, row)));
+  const measure = Float64Array.from(rows, (row) => wholeAt(observed, row));
+  const { factors } = manifest.design;
+  const columns = factors.map((factor, k) =>
+    Float64Array.from(rows, (row) => (isText(factor) ? 0 : Number(values[k]?.[row]))),
+  );
+  return partialRankCorrelations(columns, measure);
+}
+
+function order(design: DesignName): { readonly by: string; readonly weight: (factor: FactorSummary) => number } {
+  switch (design) {
+    case 'sobol indices':
+      return { by: 'share of the variance in all', weight: ({ shares }) => shares?.total ?? -1 };
+    case 'morris':
+      return { by: 'mean size of the effects', weight: ({ screen }) => screen?.meanSize ?? -1 };
+    case 'one at a time':
+      return { by: 'how far the measure goes', weight: ({ response }) => spanOf(response) };
+    default:
+      return {
+        by: 'share of the variance between the values of the number',
+        weight: ({ response }) => response.explained ?? -1,
+      };
+  }
+}
+
+function spanOf({ groups }: Response): number {
+  const means = groups.map(({ mean }) => mean);
+  return Math.max(...means) - Math.min(...means);
+}
+
+function assumptionsOf(design: DesignName, withRuns: boolean): readonly string[] {
+  const own: Readonly<Record<DesignName, readonly string[]>> = {
+    grid: [ranksAssume, explainedAssumes],
+    list: [ranksAssume, explainedAssumes],
+    'latin hypercube': [ranksAssume, explainedAssumes],
+    sobol: [ranksAssume, explainedAssumes],
+    'one at a time': [
+      'One number at a time says nothing of what two do together, and holds around the model as it stands only.',
+    ],
+    'sobol indices': [
+      'Shares of the variance (Saltelli et al. 2010, Jansen 1999) take the numbers as independent of each other and every value of their ranges as it is drawn; they answer to the ranges that were given. Bands are from drawing the rows again (95 %).',
+    ],
+    morris: [
+      'Screening (Morris 1991) ranks; it does not share out a variance. Effects are over the whole range of a number. A spread as large as the mean size says that the number acts together with others or not along a line.',
+    ],
+  };
+  const noise =
+    'Every point has the same futures (common random numbers). What comes from the number of replicates is told apart by running each point in two halves: products of one half with the other hold no noise on average.';
+  return withRuns ? [...own[design], noise] : own[design];
+}
+
+const ranksAssume =
+  'Partial rank correlations hold where the measure only rises or only falls with a number; noise of replicates draws them towards 0.';
+const explainedAssumes =
+  'The share of the variance between the values of one number takes the numbers as independent of each other, and leaves out what they do together.';
