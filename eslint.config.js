@@ -19,6 +19,7 @@ export default tseslint.config(
       '@typescript-eslint/switch-exhaustiveness-check': 'off',
       'max-params': ['error', 4],
       eqeqeq: 'error',
+      '@typescript-eslint/no-unused-vars': ['error', { ignoreRestSiblings: true }],
     },
   },
   {

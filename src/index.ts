@@ -5,6 +5,8 @@ export { readSpec, type ReadSpec } from './spec/read.ts';
 export type { SpecDocument } from './spec/document.ts';
 export { locateFinding, type Finding } from './spec/finding.ts';
 export { applySettings, type Settings } from './spec/settings.ts';
+export { asNow } from './spec/plans/lay.ts';
+export { scenariosOf, type Scenario, type ScenarioAction } from './spec/plans/scenarios.ts';
 export { printSpec } from './spec/print.ts';
 export type { Spec } from './spec/schema/spec.ts';
 export {
@@ -22,6 +24,8 @@ export { buildBlock } from './compile/block.ts';
 export type { BlockMatrix } from './compile/block-matrix.ts';
 export { leading, type Leading } from './numeric/leading.ts';
 export type { SparseMatrix } from './numeric/sparse.ts';
+export { totalCost, type CostRange, type HandledIn, type TotalCost } from './results/costs.ts';
+export type { PlanCost } from './model/costs.ts';
 export type { PathResults, RunResults } from './results/results.ts';
 export { openManySolver, type ManyGrowths, type ManyRequest, type ManySolver } from './kernel/many-growths.ts';
 export type { Crew, Job, JobOptions } from './kernel/crew.ts';

@@ -1,25 +1,20 @@
 // The story of the tool: from a spec to a model, its landscape, its compiled year and image, and to what a run says.
 import { buildBlock } from './compile/block.ts';
-import { solveCapacities } from './compile/capacity.ts';
+import { compileSpec, type CompiledModel } from './compilation.ts';
 import { growingOnly } from './compile/handling.ts';
 import { buildImage } from './compile/image/build.ts';
-import { solveStages } from './compile/stage-advance.ts';
-import { startAnimals } from './compile/start.ts';
-import type { Compiled } from './compile/year-map.ts';
 import { runLongRun } from './kernel/long-run.ts';
 import { runPath } from './kernel/path.ts';
 import { batchesOf } from './kernel/batch.ts';
 import type { Crew } from './kernel/crew.ts';
 import type { BatchCounts } from './kernel/output.ts';
 import { openRunner } from './kernel/run.ts';
-import { buildLandscape } from './landscape/build.ts';
 import type { Model } from './model/model.ts';
-import { resolveModel } from './model/resolve.ts';
 import { leading } from './numeric/leading.ts';
 import { standingCautions } from './results/cautions.ts';
 import { DrawCollector } from './results/draws/collect.ts';
 import { drawnValues, seedOfDraw, withValues, type DrawnValues } from './results/draws/plan.ts';
-import { provenanceOf, type Provenance } from './results/provenance.ts';
+import { provenanceOf } from './results/provenance.ts';
 import type { Reduction } from './results/reduction/reduction.ts';
 import { longRunGrowth, longRunRequest, yearsDiffer } from './results/long-run.ts';
 import {
@@ -32,38 +27,8 @@ import {
 } from './results/precision.ts';
 import type { PathGrowth, PathResults, ReachedPrecision, RunResults } from './results/results.ts';
 import { openReduction, summariseOutcomes, summarisePath, summariseRun } from './results/summarise.ts';
-import type { Finding } from './spec/finding.ts';
-import type { Spec } from './spec/schema/spec.ts';
 
-/** Everything that is made from a spec before the first year is run. */
-export interface CompiledModel extends Compiled {
-  readonly spec: Spec;
-  /** Whole animals at count 0, P·C. */
-  readonly startAnimals: Float64Array;
-  readonly image: ArrayBuffer;
-  readonly provenance: Provenance;
-}
-
-export interface Compilation {
-  /** Null where a mistake stands in the way. */
-  readonly compiled: CompiledModel | null;
-  /** Errors, warnings and notes. */
-  readonly findings: readonly Finding[];
-}
-
-export function compileSpec(spec: Spec): Compilation {
-  const resolved = resolveModel(spec);
-  if (resolved.model === null) return { compiled: null, findings: resolved.findings };
-  const { landscape, findings: ofLandscape } = buildLandscape(resolved.model);
-  const { model, findings: ofStages } = solveStages(resolved.model, landscape);
-  const { coefficients, findings: ofCapacities } = solveCapacities(model);
-  const { animals, findings: ofStart } = startAnimals({ model, landscape, coefficients });
-  const findings = [...resolved.findings, ...ofLandscape, ...ofStages, ...ofCapacities, ...ofStart];
-  if (findings.some((finding) => finding.severity === 'error')) return { compiled: null, findings };
-  const image = buildImage({ model, landscape, coefficients, startAnimals: animals });
-  const provenance = provenanceOf(model.title, spec);
-  return { compiled: { spec, model, landscape, coefficients, startAnimals: animals, image, provenance }, findings };
-}
+export { compileSpec, type Compilation, type CompiledModel } from './compilation.ts';
 
 export interface RunOptions {
   /** Told after each batch how many replicates are done. */

@@ -19,6 +19,7 @@ const ranks: Readonly<Record<string, number>> = {
   kernel: 6,
   results: 7,
   threads: 7,
+  'compilation.ts': 7.5,
   'pipeline.ts': 8,
   analysis: 9,
   compare: 10,

@@ -13,7 +13,7 @@ export function meanBreeding(record: usize): void {
   const into = section(operand(record, layout.breedingInto));
   const lists = section(operand(record, layout.breedingSlots));
   const waiting = section(operand(record, layout.breedingWaitCounted));
-  const places = section(operand(record, layout.breedingWaitCapacity));
+  const places = sectionAt(operand(record, layout.breedingWaitCapacity), step);
   for (let patch = 0; patch < patches; patch++) {
     let young: f64 = 0;
     const mated = matedShare(record, patch);
@@ -97,7 +97,7 @@ function shareWithin(counted: usize, capacity: f64, patch: i32): f64 {
 
 export function meanCeiling(record: usize): void {
   const counted = section(operand(record, layout.ceilingCounted));
-  const capacities = section(operand(record, layout.ceilingCapacity));
+  const capacities = sectionAt(operand(record, layout.ceilingCapacity), step);
   const takes = operand(record, layout.ceilingTakes);
   if (takes === layout.takesNobody) return;
   for (let patch = 0; patch < patches; patch++) {
@@ -129,7 +129,7 @@ function takeYoungest(counted: usize, capacity: f64, patch: i32): void {
 export function meanCrowding(record: usize): void {
   const weights = section(operand(record, layout.crowdingWeights));
   const forms = section(operand(record, layout.crowdingForms));
-  const coefficients = section(operand(record, layout.crowdingCoefficients));
+  const coefficients = sectionAt(operand(record, layout.crowdingCoefficients), step);
   const halves = section(operand(record, layout.crowdingAlleeHalf));
   const shape = crowdingShapeOf(record);
   const slot = operand(record, layout.crowdingSlot);

@@ -55,7 +55,7 @@ export function breed(record: usize): void {
 function breedingRow(record: usize, patch: i32, row: usize): usize {
   const counted = section(operand(record, layout.breedingWaitCounted));
   if (counted === 0) return row;
-  const capacity = f64At(section(operand(record, layout.breedingWaitCapacity)), patch);
+  const capacity = f64At(sectionAt(operand(record, layout.breedingWaitCapacity), step), patch);
   fillRooms(operand(record, layout.breedingWaitRoom), patch);
   if (!exceeds(row, counted, capacity)) return row;
   memory.copy(arrivals, row, rowBytes());

@@ -6,7 +6,7 @@ import { addCell } from '../cells';
 import { hypergeometric } from '../draws/hypergeometric';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf, unit } from '../draws/stream';
-import { classes, classKeys, operand, patches, patchKeys, section } from '../image';
+import { classes, classKeys, operand, patches, patchKeys, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { fillRooms } from '../weather/room';
 
@@ -14,7 +14,7 @@ export function limit(record: usize): void {
   const takes = operand(record, layout.ceilingTakes);
   if (takes === layout.takesNobody) return;
   const counted = section(operand(record, layout.ceilingCounted));
-  const capacities = section(operand(record, layout.ceilingCapacity));
+  const capacities = sectionAt(operand(record, layout.ceilingCapacity), step);
   for (let patch = 0; patch < patches; patch++) {
     const row = animals + <usize>patch * rowBytes();
     const capacity = f64At(capacities, patch);

@@ -1,7 +1,7 @@
 // Crowding: reads N = Σ weight × animals in each patch and writes the multiplier g(N) × N / (N + h) into its slot.
 import { f64At, i32At } from '../arrays';
-import { animals, cellBytes, laneNumbers, rooms, rowBytes, slotValues } from '../batch';
-import { classes, operand, patches, section } from '../image';
+import { animals, cellBytes, laneNumbers, rooms, rowBytes, slotValues, step } from '../batch';
+import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { exp, pow } from '../mathematics';
 import { fillRooms } from '../weather/room';
@@ -9,7 +9,7 @@ import { fillRooms } from '../weather/room';
 export function readCrowding(record: usize): void {
   const weights = section(operand(record, layout.crowdingWeights));
   const forms = section(operand(record, layout.crowdingForms));
-  const coefficients = section(operand(record, layout.crowdingCoefficients));
+  const coefficients = sectionAt(operand(record, layout.crowdingCoefficients), step);
   const halves = section(operand(record, layout.crowdingAlleeHalf));
   const shape = crowdingShapeOf(record);
   const slot = slotValues + <usize>operand(record, layout.crowdingSlot) * patches * laneNumbers;

@@ -22,7 +22,7 @@ export interface ParameterTangents {
  * slope is not known. Numbers that move nothing are left out.
  */
 export function parameterTangents(base: CompiledModel, block: BlockMatrix, state: Float64Array): ParameterTangents {
-  const read = slopesOf(base.spec);
+  const read = slopesOf(base.laid);
   const crowded = base.model.crowding.length > 0 && state.some((animals) => animals > 0);
   const withoutTangent: string[] = [];
   const parameterTangents = base.model.parameters.flatMap(({ name, value }): ParameterTangent[] => {

@@ -3,10 +3,13 @@ import { constructionFindings } from '../analysis/construction/construction.ts';
 import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { renderDiagnostics } from '../diagnostic/render.ts';
 import { inFileOrder } from '../diagnostic/tell.ts';
-import { compileSpec, type CompiledModel } from '../pipeline.ts';
+import { wrongNames } from '../model/wrong-names.ts';
+import { compileSpec, type Compilation, type CompiledModel } from '../pipeline.ts';
 import type { SpecDocument } from '../spec/document.ts';
 import { locateFinding } from '../spec/finding.ts';
+import { nearestScenario, scenariosOf } from '../spec/plans/scenarios.ts';
 import { readSpec } from '../spec/read.ts';
+import type { Spec } from '../spec/schema/spec.ts';
 import { sweepFindings } from '../sweep/findings.ts';
 import { applySettings, type Settings } from '../spec/settings.ts';
 import { readDataFiles } from './data-files.ts';
@@ -35,6 +38,8 @@ interface ReadOptions {
   readonly quiet?: boolean | undefined;
   /** Folders besides that of the spec from which its data files may come. */
   readonly allow?: readonly string[] | undefined;
+  /** Look for mistakes in all scenarios, not only in the one that is asked for. */
+  readonly everyScenario?: boolean;
 }
 
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
@@ -46,25 +51,56 @@ export function loadModel(path: string, settings: Settings, { quiet, allow }: Re
   return { document, files, compiled };
 }
 
-export function readModel(path: string, settings: Settings, { allow = [] }: Pick<ReadOptions, 'allow'> = {}): Loaded {
+export function readModel(
+  path: string,
+  settings: Settings,
+  { allow = [], everyScenario = false }: Omit<ReadOptions, 'quiet'> = {},
+): Loaded {
   const name = path === '-' ? 'standard input' : path;
   const text = readText(path);
   const alone = readSpec(text, name);
   const files = readDataFiles(alone.wants, { spec: path, allow });
-  const { document, diagnostics } = files.size === 0 ? alone : readSpec(text, name, files);
-  if (document === undefined) return { document: null, files: alone.wants, compiled: null, diagnostics };
+  const { document, readable, diagnostics } = files.size === 0 ? alone : readSpec(text, name, files);
+  if (document === undefined) {
+    const names = readable === undefined ? [] : wrongNames(readable);
+    const told = inFileOrder([...diagnostics, ...names]);
+    return { document: null, files: alone.wants, compiled: null, diagnostics: told };
+  }
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) {
     const { name: unknown, nearest } = applied.unknown;
     const hint = nearest === undefined ? '' : ` Did you mean \`${nearest}\`?`;
     throw new Ending(exitCodes.usage, `--set ${unknown}: the model has no parameter \`${unknown}\`.${hint}`);
   }
-  const { compiled, findings } = compileSpec(applied.spec);
+  refuseUnknownScenario(applied.spec, settings);
+  const { compiled, findings } = everyScenario ? compileEvery(applied.spec) : compileSpec(applied.spec);
   const ofSweep = compiled === null ? [] : sweepFindings(compiled);
   const all = [...findings, ...ofSweep, ...(compiled === null ? [] : constructionFindings(compiled))];
   const located = all.map((finding) => locateFinding(document, finding));
   const told = inFileOrder([...diagnostics, ...located]);
   return { document, files: alone.wants, compiled: ofSweep.length > 0 ? null : compiled, diagnostics: told };
+}
+
+function refuseUnknownScenario(spec: Spec, { scenario }: Settings): void {
+  if (scenario === undefined || scenariosOf(spec).some(({ name }) => name === scenario)) return;
+  const nearest = nearestScenario(spec, scenario);
+  const hint = nearest === undefined ? '' : ` Did you mean \`${nearest}\`?`;
+  throw new Ending(exitCodes.usage, `--scenario ${scenario}: the model has no scenario \`${scenario}\`.${hint}`);
+}
+
+/** The scenario that is asked for, and what is wrong with any. */
+function compileEvery(spec: Spec): Compilation {
+  const { compiled, findings } = compileSpec(spec);
+  const all = [...findings];
+  const told = new Set(all.map((one) => JSON.stringify(one)));
+  for (const scenario of scenariosOf(spec)) {
+    for (const one of compileSpec(scenario.spec).findings) {
+      if (told.has(JSON.stringify(one))) continue;
+      told.add(JSON.stringify(one));
+      all.push(one);
+    }
+  }
+  return { compiled: all.some(({ severity }) => severity === 'error') ? null : compiled, findings: all };
 }
 
 export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {

@@ -27,7 +27,12 @@ function buildProgram(): Command {
     .action(async (folder: string, options: { readonly example?: string }) => {
       (await import('./command/new.ts')).newModel(folder, options);
     });
-  model(program, 'check', 'tell all mistakes, every default used, and what was understood', ['set', 'years', 'json'])
+  model(program, 'check', 'tell all mistakes, every default used, and what was understood', [
+    'set',
+    'scenario',
+    'years',
+    'json',
+  ])
     .option('--strict', 'let warnings fail')
     .addHelpText('after', '\nExample:\n  skein check models/reed-hare.yaml')
     .action(async (path: string, options: CommonOptions & { readonly strict?: boolean }) => {
@@ -43,7 +48,7 @@ function buildProgram(): Command {
 }
 
 function addShow(program: Command): void {
-  addOptions(program.command('show'), ['set', 'years', 'json', 'allow'])
+  addOptions(program.command('show'), ['set', 'scenario', 'years', 'json', 'allow'])
     .argument('<model>', 'a model file, or - for standard input')
     .argument('<stage>', 'spec, model, landscape, matrix or packed')
     .description('print what a stage of the work makes of a model')
@@ -96,6 +101,7 @@ function addSchema(program: Command): void {
 function addCompile(program: Command): void {
   model(program, 'compile', 'write the model as one file for other programs', [
     'set',
+    'scenario',
     'years',
     'replicates',
     'seed',
@@ -112,6 +118,7 @@ function addAnalyse(program: Command): void {
     .default('zero');
   model(program, 'analyse', 'say what drives growth, and which patches feed the others', [
     'set',
+    'scenario',
     'json',
     'out',
     'quiet',
@@ -125,6 +132,7 @@ function addAnalyse(program: Command): void {
 function addRuns(program: Command): void {
   model(program, 'path', 'follow the path without chance, year by year', [
     'set',
+    'scenario',
     'years',
     'json',
     'out',
@@ -133,7 +141,17 @@ function addRuns(program: Command): void {
   ])
     .addHelpText('after', '\nExample:\n  skein path models/reed-hare.yaml --years 20')
     .action(run(async () => (await import('./command/path.ts')).pathCommand));
-  const chance = ['set', 'years', 'replicates', 'seed', 'draws', 'precision', 'at-most', 'threads'] as const;
+  const chance = [
+    'set',
+    'scenario',
+    'years',
+    'replicates',
+    'seed',
+    'draws',
+    'precision',
+    'at-most',
+    'threads',
+  ] as const;
   addOptions(program.command('run'), [...chance, 'json', 'out', 'places', 'quiet', 'allow'])
     .argument('[model]', 'a model file, or - for standard input')
     .description('run the model many times with chance')

@@ -11,6 +11,7 @@ export interface CommonOptions {
   readonly draws?: number;
   readonly precision?: number | undefined;
   readonly atMost?: number | undefined;
+  readonly scenario?: string;
   readonly threads?: number;
   readonly json?: boolean;
   readonly out?: string;
@@ -27,6 +28,7 @@ type Shared =
   | 'draws'
   | 'precision'
   | 'at-most'
+  | 'scenario'
   | 'threads'
   | 'json'
   | 'out'
@@ -48,6 +50,7 @@ const options: Readonly<Record<Shared, () => Option>> = {
     ).argParser(readPrecision),
   'at-most': () =>
     new Option('--at-most <n>', 'replicates after which --precision gives up').argParser(wholeFrom(1, 100_000_000)),
+  scenario: () => new Option('--scenario <name>', 'the scenario to take; `as now` is the model without actions'),
   threads: () =>
     new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),
@@ -67,7 +70,16 @@ export function addOptions(command: Command, wanted: readonly Shared[]): Command
   return wanted.reduce((one, name) => one.addOption(options[name]()), command);
 }
 
-export function settingsOf({ set, years, replicates, seed, draws, precision, atMost }: CommonOptions): Settings {
+export function settingsOf({
+  set,
+  years,
+  replicates,
+  seed,
+  draws,
+  scenario,
+  precision,
+  atMost,
+}: CommonOptions): Settings {
   return {
     ...(set === undefined ? {} : { set }),
     ...(years === undefined ? {} : { years }),
@@ -76,6 +88,7 @@ export function settingsOf({ set, years, replicates, seed, draws, precision, atM
     ...(draws === undefined ? {} : { draws }),
     ...(precision === undefined ? {} : { precision }),
     ...(atMost === undefined ? {} : { atMost }),
+    ...(scenario === undefined ? {} : { scenario }),
   };
 }
 

@@ -1,7 +1,8 @@
 // The strength of crowding in each patch, so that the patch alone stands still at its capacity.
 // Solves ρ(A(g*)) = 1 for the multiplier g* of all rates that the crowding changes, then sets the coefficient so that
 // g(K) = g*, the Allee factor included. Of several crowdings each is solved by itself: of the others only the Allee factors act,
-// so that their order does not matter. Solved once, from the base model, and held under every plan.
+// so that their order does not matter. Solved once, from the base model, and held under every plan: under one that raises survival
+// a patch holds more animals than its capacity says, and only another capacity is another K.
 import type { Finding } from '../spec/finding.ts';
 import type { Crowding, Model } from '../model/model.ts';
 import type { CrowdingCoefficients, CrowdingForm } from './coefficients.ts';
@@ -15,9 +16,13 @@ export interface SolvedCapacities {
   readonly findings: readonly Finding[];
 }
 
-export function solveCapacities(model: Model): SolvedCapacities {
+/**
+ * `base` is the model that crowding is solved from: of `model` only the capacities and the Allee factors count. Both have the
+ * same patches and crowdings in the same order.
+ */
+export function solveCapacities(model: Model, base: Model = model): SolvedCapacities {
   const findings: Finding[] = [];
-  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ model, crowding, k, findings }));
+  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ model: base, crowding, k, findings }));
   return { coefficients, findings };
 }
 
@@ -42,19 +47,33 @@ function solveCrowding(request: Request): CrowdingCoefficients {
   const standstills = model.patches.map((_, p) => {
     const year = patchYear({ model, patch: p, multipliers: unitMultipliers(model) }).join();
     const others = model.crowding.map(({ alleeHalf }, j) => (j === k ? 0 : (alleeHalf[p] ?? 0)));
-    const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${crowding.capacity[p]}` : year;
+    const own = model.crowding[k]?.capacity[p];
+    const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${own}` : year;
     const known = solved.get(key) ?? standstill({ model, k, patch: p });
     solved.set(key, known);
     return known;
   });
-  const form: CrowdingForm[] = [];
-  const coefficient = new Float64Array(model.patches.length);
-  standstills.forEach((own, p) => {
-    const chosen = choose(request, { own, p, standstills });
-    form.push(chosen.form);
-    coefficient[p] = chosen.coefficient;
-  });
-  return { form, coefficient, ...shapeless(held) };
+  const byCapacity = (crowded: Crowding): readonly Chosen[] =>
+    standstills.map((own, p) => choose({ ...request, crowding: crowded }, { own, p, standstills }));
+  const first = byCapacity(crowding);
+  const later = crowding.capacityByYear;
+  return {
+    form: first.map((chosen) => chosen.form),
+    coefficient: coefficientsOf(first),
+    ...(later === undefined
+      ? {}
+      : {
+          coefficientByYear: {
+            epochs: later.epochs.map((capacity) => coefficientsOf(byCapacity({ ...crowding, capacity }))),
+            epochOf: later.epochOf,
+          },
+        }),
+    ...shapeless(held),
+  };
+}
+
+function coefficientsOf(chosen: readonly Chosen[]): Float64Array {
+  return Float64Array.from(chosen, ({ coefficient }) => coefficient);
 }
 
 /** Leaves out a shape number that there is not. */

@@ -2,6 +2,7 @@
 import { exp, log, pow } from '../machine/pinned.ts';
 import type { Crowding } from '../model/model.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
+import { tableAt } from './rates.ts';
 
 /** g(N) of one patch; where only a share of the room is left, g(N / room), the Allee factor as before. */
 export function multiplierAt(own: CrowdingCoefficients, p: number, animals: number, room = 1): number {
@@ -22,6 +23,12 @@ export function multiplierAt(own: CrowdingCoefficients, p: number, animals: numb
     case 'ceiling':
       return allee * (count > coefficient ? coefficient / count : 1);
   }
+}
+
+/** The coefficients that hold in a step. */
+export function coefficientsIn(own: CrowdingCoefficients, step: number): CrowdingCoefficients {
+  const { coefficientByYear } = own;
+  return coefficientByYear === undefined ? own : { ...own, coefficient: tableAt(coefficientByYear, step) };
 }
 
 /** a or b such that the form, without its Allee factor, gives this share (above 0, at most 1) at the capacity. */

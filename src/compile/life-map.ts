@@ -73,9 +73,9 @@ export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array 
 }
 
 /** Of a class, the share that breeds: below 1 only where the surplus over a ceiling waits. */
-function breedingShare({ waits }: BreedingPhase, { patch, animals, room = 1 }: LifeRequest, c: number): number {
+function breedingShare({ waits }: BreedingPhase, { patch, animals, room = 1, step }: LifeRequest, c: number): number {
   if (waits === undefined || animals === undefined || waits.counted[c] !== 1) return 1;
-  return shareWithin(waits, { patch, animals, room });
+  return shareWithin(waits, { patch, animals, room, step });
 }
 
 function factor({ model, phase, patch, multipliers }: LifeRequest, part: ScaledPart, c: number): number {

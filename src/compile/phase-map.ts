@@ -1,5 +1,5 @@
 // The map of one phase over all patches and classes, at given multipliers and a given state.
-import type { Landscape } from '../landscape/landscape.ts';
+import { chancesIn, type Landscape } from '../landscape/landscape.ts';
 import type { CeilingPhase, DispersalPhase, Model, MovePhase, Phase, TakePhase } from '../model/model.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
 import { keptShares } from './ceiling.ts';
@@ -113,6 +113,7 @@ function fillDispersal(triplets: TripletList, fillRequest: FillRequest & { reado
   if (request.part === 'births') return;
   const movement = landscape.movements[index];
   const leaving = tableAt(phase.leaving, step);
+  const chances = movement === null || movement === undefined ? new Float64Array(0) : chancesIn(movement, step);
   const n = model.classes.length;
   for (let p = 0; p < model.patches.length; p++) {
     for (let c = 0; c < n; c++) {
@@ -121,7 +122,7 @@ function fillDispersal(triplets: TripletList, fillRequest: FillRequest & { reado
       triplets.add(p * n + c, p * n + c, 1 - share);
       if (share === 0 || movement === null || movement === undefined) continue;
       for (let k = movement.start[p] ?? 0; k < (movement.start[p + 1] ?? 0); k++) {
-        triplets.add((movement.destinations[k] ?? 0) * n + c, p * n + c, share * (movement.chance[k] ?? 0));
+        triplets.add((movement.destinations[k] ?? 0) * n + c, p * n + c, share * (chances[k] ?? 0));
       }
     }
   }
@@ -143,12 +144,12 @@ function fillHandling(
 }
 
 function fillCeiling(triplets: TripletList, phase: CeilingPhase, request: MapRequest): void {
-  const { model, landscape, state, part } = request;
+  const { model, landscape, state, part, step } = request;
   if (part === 'births') return;
   const n = model.classes.length;
   for (let p = 0; p < model.patches.length; p++) {
     const animals = state?.subarray(p * n, p * n + n) ?? new Float64Array(n);
-    const kept = keptShares(phase, { patch: p, animals, room: roomOf(model, landscape, p) });
+    const kept = keptShares(phase, { patch: p, animals, room: roomOf(model, landscape, p), step });
     for (let c = 0; c < n; c++) triplets.add(p * n + c, p * n + c, kept[c] ?? 1);
   }
 }

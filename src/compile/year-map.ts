@@ -4,7 +4,7 @@ import type { Model } from '../model/model.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
 import { multiply, product } from '../numeric/sparse-product.ts';
 import type { CrowdingCoefficients } from './coefficients.ts';
-import { multiplierAt } from './crowding-form.ts';
+import { coefficientsIn, multiplierAt } from './crowding-form.ts';
 import { addedAnimals, lastingOnly } from './handling.ts';
 import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
 import { readingPhase, unitMultipliers, type Multipliers } from './multipliers.ts';
@@ -38,7 +38,7 @@ export function runYear({ model, landscape, coefficients }: Compiled, before: Fl
     readAt.forEach((reading, k) => {
       const own = coefficients[k];
       if (reading === index && own !== undefined)
-        readMultipliers({ model, landscape, k, own, into: multipliers[k] }, state);
+        readMultipliers({ model, landscape, k, own: coefficientsIn(own, step), into: multipliers[k] }, state);
     });
     states.push(state);
     const map = phaseMap(index, { model, landscape, step, multipliers, state });

@@ -75,6 +75,15 @@ export const modelCodes = {
   'handling-shape': 'A take, a move or a release says too little or too much.',
   'year-outside': 'Something is to be done in years that are not looked at.',
 
+  // Plans
+  'plan-shape': 'An action says too little or too much.',
+  'unknown-action': 'A scenario names an action that does not exist.',
+  'unknown-scenario': 'There is no scenario of this name.',
+  'contradicting-sets': 'Two actions of a scenario set one thing in the same year.',
+  'missing-currency': 'Costs are given, but no currency.',
+  'empty-scenario': 'A scenario has no action.',
+  'unused-action': 'No scenario names an action.',
+
   // Sweeps
   'unknown-number': 'A sweep is over a number that the model does not have.',
   'sweep-range': 'The values of a number in a sweep cannot be.',
@@ -84,6 +93,9 @@ export const modelCodes = {
   // What a careful reader asks of a model without a mistake
   'births-of-both-sexes': 'Births of both sexes may be counted as females.',
   'newborn-unsurvived': 'Young reach the next class before any survival.',
+  'birthday-dispersal': 'Young set out on the day they are born.',
+  'overlapping-patches': 'Patches lie over each other.',
+  'sampling-spread': 'A spread between years may hold the error of measuring.',
   'too-long-lived': 'Animals of the oldest class live longer than is known of any.',
   'too-fast-growth': 'A patch grows faster than its life history can.',
   'apparent-survival': 'A survival from marked animals stands beside emigration.',

@@ -4,6 +4,7 @@ import type { DispersalPhase, Model } from '../model/model.ts';
 import { kernelMovement } from './kernel-movement.ts';
 import type { Landscape, Movement } from './landscape.ts';
 import { sharesMovement } from './shares-movement.ts';
+import { movementByYear } from './ways.ts';
 import { strikesOf } from './strikes.ts';
 import { patchCorrelation } from './weather.ts';
 
@@ -26,6 +27,19 @@ export function buildLandscape(model: Model): BuiltLandscape {
 }
 
 function movementOf(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {
+  const { byYear } = phase;
+  if (byYear === undefined) return movementIn(model, phase, findings);
+  const movements = byYear.epochs.map((ways, i) => {
+    // Whoever has nowhere to go in some years only is told of the first.
+    const own: Finding[] = [];
+    const movement = movementIn(model, { ...phase, ...ways }, own);
+    findings.push(...own.filter(({ severity }) => i === 0 || severity === 'error'));
+    return movement;
+  });
+  return movementByYear(movements, byYear.epochOf) ?? movementIn(model, phase, findings);
+}
+
+function movementIn(model: Model, phase: DispersalPhase, findings: Finding[]): Movement {
   const { rule } = phase;
   return rule.by === 'shares'
     ? sharesMovement(model, phase, rule.shares)

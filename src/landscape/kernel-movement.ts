@@ -22,7 +22,7 @@ export function kernelMovement(request: KernelRequest): Movement {
   const { reachKm } = rule.kernel;
   const near = neighboursWithin({ patches: model.patches, reachKm, between: rule.between });
   const ways = near.map((straight, from) => {
-    const others = withLinkDistances({ phase, reachKm }, from, straight);
+    const others = withLinkDistances({ patches: model.patches, phase, reachKm }, from, straight);
     const aiming = rule.leavers === 'all arrive' ? sharedOut(rule, others) : meeting(model, rule, others);
     if (!aiming.some((one) => one > 0)) {
       tellNoTarget(request, from);
@@ -55,7 +55,7 @@ function sharedOut(rule: KernelRule, others: readonly Neighbour[]): readonly num
 /** The density of the kernel at the distance times the area of the patch: good while patches are small beside the kernel. */
 function meeting(model: Model, rule: KernelRule, others: readonly Neighbour[]): readonly number[] {
   return others.map(({ patch, km }) => {
-    const areaKm2 = model.patches[patch]?.areaKm2 ?? 0;
+    const areaKm2 = rule.areaKm2?.[patch] ?? model.patches[patch]?.areaKm2 ?? 0;
     return (rule.attraction[patch] ?? 0) * areaKm2 * densityPerKm2(rule.kernel, km);
   });
 }

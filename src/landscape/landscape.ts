@@ -10,7 +10,12 @@ export interface Movement {
   readonly start: Int32Array;
   readonly destinations: Int32Array;
   readonly chance: Float64Array;
-  /** Kilometres of each of these ways, rounded to 1 mm; null where no distance is used. */
+  /**
+   * Where they change with the years, the chances of the same ways in each stretch of steps; `epochOf[t - 1]` is the stretch of
+   * step t, and `chance` is that of the first. A way that nobody takes in some years has the chance 0 in them.
+   */
+  readonly byYear?: { readonly chances: readonly Float64Array[]; readonly epochOf: Int32Array };
+  /** Kilometres of each of these ways in the first year in which it is taken, rounded to 1 mm; null where no distance is used. */
   readonly lengthKm: Float64Array | null;
 }
 
@@ -21,4 +26,9 @@ export interface Landscape {
   readonly weather?: Correlation;
   /** One for each catastrophe of the model. */
   readonly strikes?: readonly Strike[];
+}
+
+/** The chances of the ways in a step (1-based). */
+export function chancesIn({ chance, byYear }: Movement, step: number): Float64Array {
+  return byYear?.chances[byYear.epochOf[step - 1] ?? 0] ?? chance;
 }

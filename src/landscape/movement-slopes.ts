@@ -52,8 +52,8 @@ export function movementSlopes(
   const { reachKm } = rule.kernel;
   const near = neighboursWithin({ patches: model.patches, reachKm, between: rule.between });
   return near.map((straight, from) => {
-    const others = withLinkDistances({ phase, reachKm }, from, straight);
-    const ends = others.map((end) => ({ ...end, kmSlope: linkOf(slopes, from, end.patch)?.distanceKm ?? 0 }));
+    const others = withLinkDistances({ patches: model.patches, phase, reachKm }, from, straight);
+    const ends = others.map((end) => ({ ...end, kmSlope: distanceSlope({ phase, slopes, from }, end) }));
     const aimed = rule.leavers === 'all arrive' ? weights(rule, of, ends) : meetings(model, { rule, of }, ends);
     if (!aimed.some(({ value, slope }) => value > 0 || slope !== 0)) return [];
     const chances = rule.leavers === 'all arrive' ? sharedOut(aimed) : aimed;
@@ -69,6 +69,15 @@ export function movementSlopes(
 
 interface End extends Neighbour {
   readonly kmSlope: number;
+}
+
+/** km = measured · times + add. */
+function distanceSlope({ phase, slopes, from }: Origin, { patch, km }: Neighbour): number {
+  const [link, of] = [linkOf(phase, from, patch), linkOf(slopes, from, patch)];
+  if (link === undefined || of === undefined) return 0;
+  const { distanceTimes = 1, distanceAddKm = 0 } = link;
+  const measured = distanceTimes === 0 ? 0 : (km - distanceAddKm) / distanceTimes;
+  return (of.distanceKm ?? 0) * distanceTimes + measured * (of.distanceTimes ?? 0) + (of.distanceAddKm ?? 0);
 }
 
 /** Relative to the nearest, which cancels when they are divided by their sum. */
@@ -89,7 +98,7 @@ function meetings(
   ends: readonly End[],
 ): readonly Moving[] {
   return ends.map((end) => {
-    const areaKm2 = model.patches[end.patch]?.areaKm2 ?? 0;
+    const areaKm2 = rule.areaKm2?.[end.patch] ?? model.patches[end.patch]?.areaKm2 ?? 0;
     const value = areaKm2 * densityPerKm2(rule.kernel, end.km);
     const attraction = { value: rule.attraction[end.patch] ?? 0, slope: of.attraction[end.patch] ?? 0 };
     return times(attraction, { value, slope: value * logDensitySlope(rule, of, end) });

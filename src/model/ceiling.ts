@@ -6,8 +6,14 @@ import type { CeilingPhase, Phase } from './model.ts';
 
 export function resolveCeiling(context: Context, name: string, spec: CeilingSpec): CeilingPhase {
   const counted = classMask(context, spec.counted, [name, 'counted']);
-  const capacity = resolveCapacities(context, spec.capacity, [name, 'capacity']);
-  return { kind: 'ceiling', name, counted, capacity, ...(spec.takes === 'at random' ? {} : { takes: spec.takes }) };
+  const capacities = resolveCapacities(context, spec.capacity, [name, 'capacity']);
+  return {
+    kind: 'ceiling',
+    name,
+    counted,
+    ...capacities,
+    ...(spec.takes === 'at random' ? {} : { takes: spec.takes }),
+  };
 }
 
 /** Gives each breeding the ceiling under which the surplus waits: the last such one before it, round the year. */

@@ -5,7 +5,7 @@ import type { SpecPath } from '../spec/document.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Patch, Sex } from './model.ts';
-import type { Drivers, Numbers } from './numbers.ts';
+import type { Attributes, Drivers, Numbers } from './numbers.ts';
 
 export interface Names {
   readonly patches: ReadonlyMap<string, number>;
@@ -22,7 +22,7 @@ export interface Context {
   readonly numbers: Numbers;
   readonly drivers: Drivers;
   /** By patch, for expressions. */
-  readonly attributes: readonly ReadonlyMap<string, number>[];
+  readonly attributes: readonly Attributes[];
   readonly time: { readonly firstYear: number; readonly steps: number };
   /** Places whose numbers were already told to be out of bounds. */
   readonly toldBounds: Set<string>;

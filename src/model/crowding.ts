@@ -3,7 +3,7 @@ import type { SpecPath } from '../spec/document.ts';
 import type { CrowdingSpec } from '../spec/schema/spec.ts';
 import { classWeights } from './class-weights.ts';
 import { classMask, fail, patchIndex, type Context } from './context.ts';
-import { resolveCapacities } from './capacities.ts';
+import { resolveCapacities, type Capacities } from './capacities.ts';
 import type { Crowding, Phase } from './model.ts';
 import { rateCalled } from './named-rates.ts';
 import { whereIn, withinBounds } from './rates.ts';
@@ -31,7 +31,7 @@ function resolveOne(context: Context, { name, spec, phases }: Named): Crowding {
     ...(shapeNumber === null ? {} : { shapeNumber }),
     counted: classWeights(context, spec.counted, [...path, 'counted']),
     changes: changedRates(context, { spec, path, phases }),
-    capacity: capacityOf(context, spec, path),
+    ...capacityOf(context, spec, path),
     alleeHalf: alleeHalves(context, spec, path),
     whereDeclining: whereDeclining(context, spec, path),
   };
@@ -65,7 +65,7 @@ function shapeNumberOf(context: Context, spec: CrowdingSpec, path: SpecPath): nu
   return null;
 }
 
-function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Float64Array {
+function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Capacities {
   if (spec.form === 'allee') {
     for (const key of ['capacity', 'where-declining'] as const) {
       if (spec[key] === undefined) continue;
@@ -81,7 +81,7 @@ function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Float
         details: { expected: 'the number at which rates fall to half, such as `allee-half: 4`' },
       });
     }
-    return new Float64Array(context.patches.length).fill(NaN);
+    return { capacity: new Float64Array(context.patches.length).fill(NaN) };
   }
   if (spec.capacity !== undefined) return resolveCapacities(context, spec.capacity, [...path, 'capacity']);
   fail(context, 'crowding-shape', path, {
@@ -89,7 +89,7 @@ function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Float
     part: 'key',
     details: { expected: 'the number at which a patch alone stands still, such as `capacity: capacity`' },
   });
-  return new Float64Array(context.patches.length).fill(NaN);
+  return { capacity: new Float64Array(context.patches.length).fill(NaN) };
 }
 
 interface Changes {

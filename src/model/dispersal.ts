@@ -8,15 +8,23 @@ import type { DispersalPhase, DispersalRule, RateTable } from './model.ts';
 import type { Where } from './numbers.ts';
 import { buildTable, whereIn, withinBounds } from './rates.ts';
 import { requirePlaces } from './places.ts';
+import { isThere, waysByYear, type WaysByYear } from './ways.ts';
 
 export function resolveDispersal(context: Context, name: string, spec: DispersalSpec): DispersalPhase | null {
   const moves = classMask(context, spec.classes, [name, 'classes']);
   if (spec.shares !== undefined) return bySharesTable(context, { name, spec, moves, shares: spec.shares });
   if (!hasKernelParts(context, name, spec)) return null;
   const leaving = leavingTable(context, { name, spec, moves });
-  const rule = kernelRule(context, name, spec);
-  const links = resolveLinks(context, name, spec);
-  return rule === null ? null : { kind: 'dispersal', name, moves, leaving, rule, links };
+  const ways = waysByYear(context, { name, spec }, (there) => {
+    const rule = kernelRule(there, name, spec);
+    const links = resolveLinks(there, name, spec);
+    return rule === null ? null : { rule, links };
+  });
+  return ways === null ? null : { kind: 'dispersal', name, moves, leaving, ...ways.first, ...byYearOf(ways) };
+}
+
+function byYearOf({ byYear }: WaysByYear): Pick<DispersalPhase, 'byYear'> {
+  return byYear === undefined ? {} : { byYear };
 }
 
 interface Named {
@@ -39,7 +47,7 @@ const notWithShares = [
 function bySharesTable(
   context: Context,
   { name, spec, moves, shares }: Named & { readonly shares: NonNullable<DispersalSpec['shares']> },
-): DispersalPhase {
+): DispersalPhase | null {
   for (const key of notWithShares) {
     if (spec[key] !== undefined) {
       fail(context, 'dispersal-shape', [name, key], {
@@ -50,6 +58,27 @@ function bySharesTable(
     }
   }
   refuseOwnLeaving(context, name);
+  const ways = waysByYear(context, { name, spec }, (there) => {
+    const table = sharesTable(there, name, shares);
+    return { rule: { by: 'shares', shares: table }, links: resolveLinks(there, name, spec) };
+  });
+  if (ways === null) return null;
+  const { epochs = [ways.first], epochOf = new Int32Array(0) } = ways.byYear ?? {};
+  const leaving = epochs.map(({ rule }) =>
+    rule.by === 'shares' ? sumOfShares(context, { name, moves, table: rule.shares }) : new Float64Array(0),
+  );
+  return {
+    kind: 'dispersal',
+    name,
+    moves,
+    leaving: { epochs: leaving, epochOf },
+    ...ways.first,
+    ...byYearOf(ways),
+  };
+}
+
+/** Share that goes from p to q at q * P + p, as it is in the first year of the context. */
+function sharesTable(context: Context, name: string, shares: NonNullable<DispersalSpec['shares']>): Float64Array {
   const patchCount = context.patches.length;
   const table = new Float64Array(patchCount * patchCount);
   for (const [from, row] of Object.entries(shares)) {
@@ -61,12 +90,11 @@ function bySharesTable(
       if (p === q) tellSelf(context, path);
       const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
       const told = { expression, path, what: `share that goes to ${to}` };
-      if (withinBounds(context, told, { value, bounds: 'share', patch: from })) table[q * patchCount + p] = value;
+      const open = withinBounds(context, told, { value, bounds: 'share', patch: from }) && isThere(context, q);
+      if (open) table[q * patchCount + p] = value;
     }
   }
-  const leaving = sumOfShares(context, { name, moves, table });
-  const links = resolveLinks(context, name, spec);
-  return { kind: 'dispersal', name, moves, leaving, rule: { by: 'shares', shares: table }, links };
+  return table;
 }
 
 /** Shares say for every patch who leaves it, so nothing can be different under `in`. */
@@ -92,7 +120,7 @@ function tellSelf(context: Context, path: readonly string[]): void {
 function sumOfShares(
   context: Context,
   { name, moves, table }: { readonly name: string; readonly moves: Uint8Array; readonly table: Float64Array },
-): RateTable {
+): Float64Array {
   const [patchCount, classCount] = [context.patches.length, context.classes.length];
   const leaving = new Float64Array(patchCount * classCount);
   for (let p = 0; p < patchCount; p++) {
@@ -108,7 +136,7 @@ function sumOfShares(
     }
     for (let c = 0; c < classCount; c++) if (moves[c] === 1) leaving[p * classCount + c] = Math.min(1, sum);
   }
-  return { epochs: [leaving], epochOf: new Int32Array(0) };
+  return leaving;
 }
 
 function hasKernelParts(context: Context, name: string, spec: DispersalSpec): boolean {
@@ -204,7 +232,17 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
     leavers,
     hazardPerKm,
     survivalOnTheWay,
+    ...(leavers === 'may miss' ? areasOf(context) : {}),
   };
+}
+
+/** Areas as they are in this year, where they are not the same in all. */
+function areasOf(context: Context): { readonly areaKm2?: Float64Array } {
+  const { firstYear } = context.time;
+  const areas = context.patches.map(
+    (patch, p) => context.numbers.attribute('area', whereIn(context, p, firstYear)) ?? patch.areaKm2 ?? NaN,
+  );
+  return areas.every((area, p) => area === context.patches[p]?.areaKm2) ? {} : { areaKm2: Float64Array.from(areas) };
 }
 
 function attractionOf(context: Context, name: string, spec: DispersalSpec): Float64Array {
@@ -213,7 +251,7 @@ function attractionOf(context: Context, name: string, spec: DispersalSpec): Floa
   return Float64Array.from(context.patches, (patch, p) => {
     const value = context.numbers.value(expression, path, whereIn(context, p, context.time.firstYear));
     withinBounds(context, { expression, path, what: 'attraction' }, { value, bounds: 'from zero', patch: patch.name });
-    return value;
+    return isThere(context, p) ? value : 0;
   });
 }
 

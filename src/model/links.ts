@@ -21,19 +21,53 @@ export function resolveLinks(context: Context, name: string, spec: DispersalSpec
       });
     }
     seen.add(pair);
-    if (link.distance !== undefined && spec.shares !== undefined) {
-      fail(context, 'dispersal-shape', [...path, 'distance'], {
+    const distance = (['distance', 'distance-times', 'distance-add'] as const).find((key) => link[key] !== undefined);
+    if (distance !== undefined && spec.shares !== undefined) {
+      fail(context, 'dispersal-shape', [...path, distance], {
         message: 'A table of shares uses no distance',
         part: 'key',
         details: { fix: 'Remove the distance: the shares already say how many go.' },
       });
     }
     const distanceKm = link.distance === undefined ? null : positiveKm(context, link.distance, [...path, 'distance']);
+    const factors = distanceFactors(context, link, path);
     const share = (key: 'crossing-death' | 'turn-back') => shareOf(context, link[key], [...path, key]);
     return [
-      { between: [a, b] as const, distanceKm, crossingDeath: share('crossing-death'), turnBack: share('turn-back') },
+      {
+        between: [a, b] as const,
+        distanceKm,
+        ...factors,
+        crossingDeath: share('crossing-death'),
+        turnBack: share('turn-back'),
+      },
     ];
   });
+}
+
+type LinkSpec = NonNullable<DispersalSpec['links']>[number];
+
+function distanceFactors(
+  context: Context,
+  link: LinkSpec,
+  path: SpecPath,
+): Pick<Link, 'distanceTimes' | 'distanceAddKm'> {
+  const { 'distance-times': times, 'distance-add': add } = link;
+  const year = context.time.firstYear;
+  const [timesPath, addPath] = [
+    [...path, 'distance-times'],
+    [...path, 'distance-add'],
+  ];
+  const bounded = (expression: number | string, at: SpecPath, value: number): number => {
+    const told = { expression, path: at, what: 'factor of the distance' };
+    withinBounds(context, told, { value, bounds: 'from zero', patch: undefined });
+    return value;
+  };
+  return {
+    ...(times === undefined
+      ? {}
+      : { distanceTimes: bounded(times, timesPath, context.numbers.value(times, timesPath, { year })) }),
+    ...(add === undefined ? {} : { distanceAddKm: context.numbers.value(add, addPath, { year, dimension: 'length' }) }),
+  };
 }
 
 function shareOf(context: Context, expression: number | string | undefined, path: SpecPath): number {

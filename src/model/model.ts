@@ -14,8 +14,12 @@ export interface Patch {
   readonly outline?: Outline;
   /** The outline in degrees, where it is given so. */
   readonly degreesOutline?: Outline;
+  /** In the first year. */
   readonly areaKm2: number | null;
+  /** In the first year. */
   readonly capacity: number | null;
+  /** The calendar years in which there is this patch, where it comes or goes. */
+  readonly exists?: { readonly from?: number | undefined; readonly until?: number | undefined };
   /** Position in the author's list, for printing. */
   readonly fileOrder: number;
 }
@@ -103,12 +107,18 @@ export interface DemographyPhase extends PhaseBase {
   readonly fates: PatchMatrices;
   readonly births: PatchMatrices;
 }
-export interface DispersalPhase extends PhaseBase {
+export interface DispersalPhase extends PhaseBase, Ways {
   readonly kind: 'dispersal';
   /** Class c disperses in this phase. */
   readonly moves: Uint8Array;
   /** Share that sets out, P×C; where `shares` is given, the sum of the shares. */
   readonly leaving: RateTable;
+  /** The rule and the links of each stretch of steps in which they are constant, where they change with the years. */
+  readonly byYear?: { readonly epochs: readonly Ways[]; readonly epochOf: Int32Array };
+}
+
+/** Who of the leavers goes where; of a phase, in the first year. */
+export interface Ways {
   readonly rule: DispersalRule;
   readonly links?: readonly Link[];
 }
@@ -119,6 +129,9 @@ export interface Link {
   readonly between: readonly [number, number];
   /** Null for the distance of all others. */
   readonly distanceKm: number | null;
+  /** Factor of the distance, and what is added to it then; 1 and 0 where they are missing. */
+  readonly distanceTimes?: number;
+  readonly distanceAddKm?: number;
   readonly crossingDeath: number;
   readonly turnBack: number;
 }
@@ -131,6 +144,8 @@ export type DispersalRule =
       /** A factor of the weight of each target patch. */
       readonly attraction: Float64Array;
       readonly leavers: 'all arrive' | 'may miss';
+      /** Areas of the patches where they differ from those of the first year. */
+      readonly areaKm2?: Float64Array;
       readonly hazardPerKm: number;
       readonly survivalOnTheWay: number;
     }
@@ -140,7 +155,10 @@ export type DispersalRule =
 export interface CeilingPhase extends PhaseBase {
   readonly kind: 'ceiling';
   readonly counted: Uint8Array;
+  /** In the first year. */
   readonly capacity: Float64Array;
+  /** One number a patch, where it changes with the years. */
+  readonly capacityByYear?: RateTable;
   /** Where nobody is taken the surplus waits: see `waits` of a breeding. At random where it is missing. */
   readonly takes?: 'at random' | 'youngest first' | 'nobody';
 }
@@ -207,7 +225,10 @@ export interface Crowding {
   readonly counted: Float64Array;
   /** Rates by phase (an index into `phases`), part and class. */
   readonly changes: readonly { readonly phase: number; readonly part: RatePart; readonly classes: Uint8Array }[];
+  /** In the first year. */
   readonly capacity: Float64Array;
+  /** One number a patch, where it changes with the years. */
+  readonly capacityByYear?: RateTable;
   /** Half-saturation of the Allee factor N / (N + h) in each patch; 0 where there is none. */
   readonly alleeHalf: Float64Array;
   readonly whereDeclining: 'none' | 'ceiling' | { readonly as: number } | null;

@@ -12,10 +12,16 @@ import { readMeasure, type Dimension } from '../spec/quantity.ts';
 import type { Resampled } from './chance.ts';
 import { ResampledYears } from './resampled.ts';
 
+/** A number of a patch, or the expression that it is written as. */
+export type Attribute =
+  number | { readonly expression: string; readonly path: SpecPath; readonly dimension: Dimension };
+
+export type Attributes = ReadonlyMap<string, Attribute>;
+
 /** Where an expression is evaluated. `attributes` are those of the patch at hand. */
 export interface Where {
   readonly year: number;
-  readonly attributes?: ReadonlyMap<string, number>;
+  readonly attributes?: Attributes;
   /** How to call the patch in an error. */
   readonly patch?: string;
   /** What a unit behind the number may measure; plain numbers and shares take `%`. */
@@ -43,7 +49,8 @@ export interface Drivers {
 
 /** What expressions read besides named numbers, and where mistakes are told. */
 export interface Surroundings {
-  readonly attributeNames: ReadonlySet<string>;
+  /** By patch. */
+  readonly attributes: readonly Attributes[];
   readonly drivers: Drivers;
   readonly findings: Finding[];
 }
@@ -55,6 +62,10 @@ export class Numbers {
   readonly #told = new Set<string>();
   readonly #findings: Finding[];
   readonly #attributeNames: ReadonlySet<string>;
+  /** By name what patches write that is more than a number. */
+  readonly #writtenAttributes = new Map<string, Ast[]>();
+  /** Attributes that are being worked out, to see one that is made from itself. */
+  readonly #open = new Set<string>();
   readonly #uses = new Map<string, Use>();
   readonly #drivers: Drivers['dated'];
   readonly #resampled: ResampledYears;
@@ -64,11 +75,16 @@ export class Numbers {
   #year = NaN;
   #memo = new Map<string, number | undefined>();
 
-  constructor(parameters: readonly NamedExpression[], { attributeNames, drivers, findings }: Surroundings) {
+  constructor(parameters: readonly NamedExpression[], { attributes, drivers, findings }: Surroundings) {
     this.#findings = findings;
-    this.#attributeNames = attributeNames;
+    this.#attributeNames = new Set(attributes.flatMap((own) => [...own.keys()]));
     this.#drivers = drivers.dated;
     this.#resampled = new ResampledYears(drivers.resampled);
+    for (const [name, one] of attributes.flatMap((own) => [...own])) {
+      if (typeof one === 'number') continue;
+      const ast = this.#parse(one.expression, one.path, one.dimension);
+      if (ast !== null) this.#writtenAttributes.set(name, [...(this.#writtenAttributes.get(name) ?? []), ast]);
+    }
     for (const { name, expression, path } of parameters) {
       const ast = this.#parse(expression, path);
       if (ast !== null) this.#parameters.set(name, { ast, path });
@@ -81,7 +97,7 @@ export class Numbers {
     if (typeof expression === 'number') return expression;
     this.#uses.set(path.join('\0'), { expression, path, dimension: where.dimension ?? 'share' });
     const ast = this.#parse(expression, path, where.dimension);
-    if (ast === null || this.#isDatedWrongly(ast, path)) return NaN;
+    if (ast === null || this.#isDatedWrongly(ast, path, where.attributes)) return NaN;
     return this.#overYears(ast, () => {
       const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
       if (result.ok) return result.value;
@@ -109,8 +125,8 @@ export class Numbers {
   }
 
   /** The name by which an expression depends on the year, if it does. */
-  #dated(ast: Ast): string | undefined {
-    return [...this.#namesBehind(ast)].find((name) => name === 'year' || this.#drivers.has(name));
+  #dated(ast: Ast, attributes?: Attributes): string | undefined {
+    return [...this.#namesBehind(ast, attributes)].find((name) => name === 'year' || this.#drivers.has(name));
   }
 
   /** Every place where an expression was asked for its value. */
@@ -124,10 +140,19 @@ export class Numbers {
     return ast === null ? [] : [...this.#namesBehind(ast)];
   }
 
-  /** The expression with every parameter but those kept replaced by what it stands for; null where it cannot be read. */
-  expanded(expression: number | string, path: SpecPath, keep: ReadonlySet<string>): Ast | null {
+  /**
+   * The expression with every parameter but those kept replaced by what it stands for, and every attribute that the patch writes
+   * as an expression; null where it cannot be read.
+   */
+  expanded(
+    expression: number | string,
+    path: SpecPath,
+    { keep, attributes }: { readonly keep: ReadonlySet<string>; readonly attributes: Attributes | undefined },
+  ): Ast | null {
     const ast = this.#parse(expression, path);
     const replace = (name: string): Ast | null => {
+      const [written] = attributes === undefined ? [] : this.#attributesCalled(name, attributes);
+      if (written !== undefined) return replaceNames(written, replace);
       const parameter = keep.has(name) ? undefined : this.#parameters.get(name);
       return parameter === undefined ? null : replaceNames(parameter.ast, replace);
     };
@@ -135,12 +160,13 @@ export class Numbers {
   }
 
   /** A number that is read once cannot change with the year: better told than frozen in its first year. */
-  #isDatedWrongly(ast: Ast, path: SpecPath): boolean {
+  #isDatedWrongly(ast: Ast, path: SpecPath, attributes: Attributes | undefined): boolean {
     const key = JSON.stringify(path);
     if (this.#yearly.has(key)) return false;
-    const name = this.#dated(ast);
+    const name = this.#dated(ast, attributes);
     if (name === undefined) {
-      this.#yearly.add(key);
+      // With attributes the next patch may be another matter.
+      if (attributes === undefined || this.#writtenAttributes.size === 0) this.#yearly.add(key);
       return false;
     }
     if (this.#told.has(key)) return true;
@@ -175,7 +201,11 @@ export class Numbers {
   }
 
   #slopeOfName(name: string, where: Where, parameter: string): number {
-    if (name === 'year' || where.attributes?.has(name) === true) return 0;
+    if (name === 'year') return 0;
+    const attribute = where.attributes?.get(name);
+    if (typeof attribute === 'number') return 0;
+    if (attribute !== undefined)
+      return this.slope(attribute.expression, attribute.path, { ...where, ...attribute }, parameter);
     if (name === parameter) return 1;
     const made = this.#parameters.get(name);
     if (made === undefined || !this.#namesBehind(made.ast).has(parameter)) return 0;
@@ -210,8 +240,24 @@ export class Numbers {
     const resampled = this.#resampled.value(name);
     if (resampled !== undefined) return resampled;
     const attribute = where.attributes?.get(name);
-    if (attribute !== undefined) return attribute;
+    if (attribute !== undefined) return typeof attribute === 'number' ? attribute : this.attribute(name, where);
     return this.#parameter(name, where.year);
+  }
+
+  /** The number of a patch called so, if it has one. */
+  attribute(name: string, where: Where): number | undefined {
+    const attribute = where.attributes?.get(name);
+    if (typeof attribute !== 'object') return attribute;
+    if (this.#open.has(name)) {
+      this.#tellCycle(name, attribute.path, [...this.#open]);
+      return NaN;
+    }
+    this.#open.add(name);
+    const ast = this.#parse(attribute.expression, attribute.path, attribute.dimension);
+    const result = ast === null ? null : evaluate(ast, (inner) => this.#lookUp(inner, where), pinned);
+    this.#open.delete(name);
+    if (result?.ok === false) this.#tell(result.fault, attribute.path, where);
+    return result?.ok === true ? result.value : NaN;
   }
 
   #parameter(name: string, year: number): number | undefined {
@@ -229,7 +275,8 @@ export class Numbers {
     return value;
   }
 
-  #namesBehind(ast: Ast): ReadonlySet<string> {
+  /** With the attributes of one patch, or whatever any patch has. */
+  #namesBehind(ast: Ast, attributes?: Attributes): ReadonlySet<string> {
     const found = new Set<string>();
     const open = [...namesIn(ast)];
     for (let name = open.pop(); name !== undefined; name = open.pop()) {
@@ -237,22 +284,42 @@ export class Numbers {
       found.add(name);
       const parameter = this.#parameters.get(name);
       if (parameter !== undefined) open.push(...namesIn(parameter.ast));
+      for (const written of this.#attributesCalled(name, attributes)) open.push(...namesIn(written));
     }
     return found;
+  }
+
+  #attributesCalled(name: string, attributes: Attributes | undefined): readonly Ast[] {
+    if (attributes === undefined) return this.#writtenAttributes.get(name) ?? [];
+    const own = attributes.get(name);
+    if (typeof own !== 'object') return [];
+    const ast = this.#parse(own.expression, own.path, own.dimension);
+    return ast === null ? [] : [ast];
   }
 
   #refuseCycles(): void {
     const cyclic = [...this.#parameters].filter(([name, { ast }]) => this.#namesBehind(ast).has(name));
     for (const [name, { path }] of cyclic) {
-      this.#findings.push({
-        severity: 'error',
-        code: 'parameter-cycle',
-        message: `The parameter \`${name}\` is made from itself`,
+      this.#tellCycle(
+        name,
         path,
-        details: { found: cyclic.map(([one]) => one).join(', '), fix: 'Give one of them a number of its own.' },
-      });
+        cyclic.map(([one]) => one),
+      );
       this.#parameters.set(name, { ast: { kind: 'number', value: 1, span: { offset: 0, length: 0 } }, path });
     }
+  }
+
+  #tellCycle(name: string, path: SpecPath, names: readonly string[]): void {
+    const key = JSON.stringify(path);
+    if (this.#told.has(key)) return;
+    this.#told.add(key);
+    this.#findings.push({
+      severity: 'error',
+      code: 'parameter-cycle',
+      message: `The ${path[0] === 'parameters' ? 'parameter' : 'attribute'} \`${name}\` is made from itself`,
+      path,
+      details: { found: names.join(', '), fix: 'Give one of them a number of its own.' },
+    });
   }
 
   #tell(fault: Fault, path: SpecPath, where: Where): void {

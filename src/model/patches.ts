@@ -1,18 +1,23 @@
 // Patches in the order of their names, in kilometres and square kilometres, with their attributes for expressions.
-import { readQuantity } from '../spec/quantity.ts';
+import { readMeasure, readQuantity } from '../spec/quantity.ts';
+import { namesIn } from '../spec/expression/names.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { InlinePatchSpec, Spec } from '../spec/schema/spec.ts';
 import { onEllipsoid, onPlane, type Ground } from './geography.ts';
 import type { Patch } from './model.ts';
+import type { Attribute, Attributes, Numbers } from './numbers.ts';
 import { readOutline } from './outline.ts';
 import { areDegrees, readPosition, warnOfDegrees, type Places } from './position.ts';
 
 export interface ResolvedPatches {
+  /** Without numbers that are expressions. */
   readonly patches: readonly Patch[];
   /** By patch, in the same order. */
-  readonly attributes: readonly ReadonlyMap<string, number>[];
-  readonly attributeNames: ReadonlySet<string>;
+  readonly attributes: readonly Attributes[];
 }
+
+/** What the area of the outline is called, where the area of a patch is written as an expression. */
+export const measuredArea = 'measured_area';
 
 /** Order of names by code units, the same on every machine. */
 export function byName(a: { readonly name: string }, b: { readonly name: string }): number {
@@ -21,11 +26,35 @@ export function byName(a: { readonly name: string }, b: { readonly name: string 
 
 export function resolvePatches(spec: Spec, findings: Finding[]): ResolvedPatches {
   refuseRepeats(spec, findings);
-  const written = spec.patches.map((inline, fileOrder) => ({ inline, fileOrder, name: inline.name })).sort(byName);
+  const written = spec.patches.map((inline, fileOrder) => ({ inline, fileOrder, name: inline.name })).sort(firstToLast);
   const grounds = groundsOf(spec, written, findings);
   const both = written.map((one, p) => resolvePatch(one, { ground: grounds[p] ?? nowhere, findings }));
-  const attributeNames = new Set(both.flatMap(({ attributes }) => [...attributes.keys()]));
-  return { patches: both.map((one) => one.patch), attributes: both.map((one) => one.attributes), attributeNames };
+  return { patches: both.map((one) => one.patch), attributes: both.map((one) => one.attributes) };
+}
+
+/** Patches that come later stand after all others, so that they move nobody's luck. */
+function firstToLast(a: Written & { readonly name: string }, b: Written & { readonly name: string }): number {
+  const later = ({ inline }: Written): number => (inline.exists?.from === undefined ? 0 : 1);
+  return later(a) - later(b) || byName(a, b);
+}
+
+/** Areas and capacities that are expressions, as they are in the first year. */
+export function withFirstNumbers(
+  { patches, attributes }: ResolvedPatches,
+  numbers: Numbers,
+  firstYear: number,
+): readonly Patch[] {
+  return patches.map((patch, p) => {
+    const own = attributes[p] ?? new Map<string, Attribute>();
+    const first = (name: 'area' | 'capacity', known: number | null): number | null => {
+      const written = own.get(name);
+      if (typeof written !== 'object') return known;
+      numbers.varies(written.expression, written.path, written.dimension);
+      const where = { year: firstYear, attributes: own, patch: patch.name, dimension: written.dimension };
+      return numbers.value(written.expression, written.path, where);
+    };
+    return { ...patch, areaKm2: first('area', patch.areaKm2), capacity: first('capacity', patch.capacity) };
+  });
 }
 
 interface Written {
@@ -71,14 +100,26 @@ function resolvePatch({ inline, fileOrder }: Written, { ground, findings }: Patc
   const { name, area, capacity } = inline;
   const given = area === undefined ? null : areaOf(area, { i: fileOrder, findings });
   const { areaKm2: measured, ...places } = ground;
-  if (given !== null && measured !== null) warnOfArea({ name, given, measured, fileOrder }, findings);
-  const areaKm2 = measured ?? given;
-  const patch: Patch = { name, ...places, areaKm2, capacity: capacity ?? null, fileOrder };
-  const attributes = new Map<string, number>();
+  if (typeof given === 'number' && measured !== null) warnOfArea({ name, given, measured, fileOrder }, findings);
+  // Written as an expression it may rest on the measured area itself; else what is measured is right.
+  const areaKm2 = given !== null && typeof given === 'object' ? given : (measured ?? given);
+  const patch: Patch = {
+    name,
+    ...places,
+    areaKm2: typeof areaKm2 === 'number' ? areaKm2 : null,
+    capacity: typeof capacity === 'number' ? capacity : null,
+    fileOrder,
+    ...(inline.exists === undefined ? {} : { exists: inline.exists }),
+  };
+  const attributes = new Map<string, Attribute>();
   if (areaKm2 !== null) attributes.set('area', areaKm2);
-  // All other keys that hold a number are attributes; `at` and `outline` are lists.
+  if (areaKm2 !== null && typeof areaKm2 === 'object' && measured !== null) attributes.set(measuredArea, measured);
   for (const [key, value] of Object.entries(inline)) {
-    if (typeof value === 'number' && key !== 'area') attributes.set(key, value);
+    if (key === 'name' || key === 'area') continue;
+    if (typeof value === 'number') attributes.set(key, value);
+    if (typeof value === 'string') {
+      attributes.set(key, { expression: value, path: ['patches', fileOrder, key], dimension: 'share' });
+    }
   }
   return { patch, attributes };
 }
@@ -110,7 +151,11 @@ function warnOfArea({ name, given, measured, fileOrder }: TwoAreas, findings: Fi
 function areaOf(
   area: number | string,
   { i, findings }: { readonly i: number; readonly findings: Finding[] },
-): number | null {
+): Exclude<Attribute, string> | null {
+  const measure = readMeasure(area, 'area');
+  if (typeof area === 'string' && measure.ok && namesIn(measure.ast).length > 0) {
+    return { expression: area, path: ['patches', i, 'area'], dimension: 'area' };
+  }
   const read = readQuantity(area, 'area');
   if (read.ok && read.value > 0) return read.value;
   const path = ['patches', i, 'area'];

@@ -1,6 +1,7 @@
 // Rates by patch and class, for each stretch of steps in which they are constant.
 import type { SpecPath } from '../spec/document.ts';
 import { fail, type Context } from './context.ts';
+import { byYears } from './epochs.ts';
 import type { RateTable } from './model.ts';
 import type { Where } from './numbers.ts';
 
@@ -25,17 +26,8 @@ export interface TableRequest {
 /** Evaluates a table for every patch, and for every year where an expression reads `year`. */
 export function buildTable(context: Context, request: TableRequest): RateTable {
   const varies = tableVaries(context, request);
-  const { steps, firstYear } = context.time;
-  const years = varies ? Array.from({ length: steps }, (_, t) => firstYear + t) : [firstYear];
-  const epochs: Float64Array[] = [];
-  const epochOf = new Int32Array(varies ? steps : 0);
-  years.forEach((year, t) => {
-    const table = fillTable(context, request, year);
-    const last = epochs.at(-1);
-    if (last === undefined || !sameNumbers(last, table)) epochs.push(table);
-    if (varies) epochOf[t] = epochs.length - 1;
-  });
-  return { epochs, epochOf: epochs.length === 1 ? new Int32Array(0) : epochOf, ...writtenOf(context, request) };
+  const { epochs, epochOf } = byYears(context, varies, (year) => fillTable(context, request, year));
+  return { epochs, epochOf, ...writtenOf(context, request) };
 }
 
 /** Kept where any number is an expression: parameters that vary are looked for there. */
@@ -111,8 +103,4 @@ export function withinBounds(context: Context, written: Written, { value, bounds
     },
   });
   return false;
-}
-
-function sameNumbers(a: Float64Array, b: Float64Array): boolean {
-  return a.every((value, i) => value === b[i]);
 }

@@ -10,7 +10,7 @@ import { resolveDrivers } from './drivers.ts';
 import { resolveObserved } from './observed.ts';
 import { resolveOutcomes } from './outcomes.ts';
 import { checkNames, namedExpressions, resolveParameters } from './parameters.ts';
-import { resolvePatches } from './patches.ts';
+import { resolvePatches, withFirstNumbers } from './patches.ts';
 import { resolvePhases } from './phases.ts';
 import { runSettings } from './run-settings.ts';
 import { resolveStart } from './start.ts';
@@ -56,10 +56,12 @@ function observedIn(context: Context): Pick<Model, 'observed'> {
 }
 
 function contextOf(spec: Spec, findings: Finding[]): Context {
-  const { patches, attributes, attributeNames } = resolvePatches(spec, findings);
+  const resolved = resolvePatches(spec, findings);
+  const { attributes } = resolved;
   const time = { firstYear: spec['first-year'] ?? 1, steps: spec.years };
   const drivers = resolveDrivers(spec, time, findings);
-  const numbers = new Numbers(namedExpressions(spec), { attributeNames, drivers, findings });
+  const numbers = new Numbers(namedExpressions(spec), { attributes, drivers, findings });
+  const patches = withFirstNumbers(resolved, numbers, time.firstYear);
   const defaults: string[] = [];
   const classes = resolveClasses(spec, findings);
   if (spec['first-year'] === undefined)

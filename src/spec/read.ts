@@ -6,6 +6,7 @@ import type { DataFiles } from './data/files.ts';
 import { joinFiles } from './data/join.ts';
 import type { SpecDocument } from './document.ts';
 import { CoreSchema, namedSchemas, type Spec } from './schema/spec.ts';
+import { soundPart } from './shape/sound.ts';
 import { checkTop } from './shape/top.ts';
 import type { Report } from './shape/report.ts';
 import { knownKeys, type Shape } from './shape/shape.ts';
@@ -18,10 +19,19 @@ import { shapedValueOf } from './value.ts';
 export interface ReadSpec {
   /** Missing where there is any error. */
   readonly document?: SpecDocument;
+  /** Where there is an error, what can be read all the same, as far as it is enough to know which names there are. */
+  readonly readable?: Readable;
   /** Files that the spec names, as it names them. */
   readonly wants: readonly string[];
   /** Errors and warnings in the order of the file. */
   readonly diagnostics: readonly Diagnostic[];
+}
+
+/** A document without the parts that have mistakes. */
+export interface Readable {
+  readonly document: SpecDocument;
+  /** Every word of the parts that were left out. */
+  readonly lost: ReadonlySet<string>;
 }
 
 /**
@@ -35,11 +45,22 @@ export function readSpec(text: string, file: string, files: DataFiles = new Map(
   found.add(...tree.diagnostics);
   const report: Report = { source, found };
   const top = tree.root === undefined ? undefined : checkTop(tree.root, report);
-  if (top === undefined || found.errors > 0) return { diagnostics: found.told(), wants: [] };
+  if (top === undefined) return { diagnostics: found.told(), wants: [] };
+  if (found.errors > 0) return { ...readablePart(top, files, report), diagnostics: found.told() };
   const { root, wants } = joinFiles(top, files, report);
   const diagnostics = found.told();
   if (found.errors > 0) return { diagnostics, wants };
   return { document: documentOf(root, source, found), diagnostics, wants };
+}
+
+/** Names can stand in data files, too, so that those are wanted. */
+function readablePart(top: SourceMap, files: DataFiles, { source }: Report): Omit<ReadSpec, 'diagnostics'> {
+  const report: Report = { source, found: new Collector() };
+  const sound = soundPart(top, source, report);
+  if (sound === null) return { wants: [] };
+  const { root, wants } = joinFiles(sound.root, files, report);
+  if (report.found.errors > 0) return { wants };
+  return { readable: { document: documentOf(root, source, report.found), lost: sound.lost }, wants };
 }
 
 function documentOf(root: SourceMap, source: SourceText, found: Collector): SpecDocument {

@@ -1,4 +1,5 @@
 // The reference of the language for the README: every key, what it is, its unit and default, and an example.
+import { actionSchemas } from './schema/actions.ts';
 import { CoreSchema, namedSchemas } from './schema/spec.ts';
 import { branchesOf, isSeveral, knownKeys, shapeOfOthers, sortOf, type Shape } from './shape/shape.ts';
 import { expectationOf } from './shape/words.ts';
@@ -16,7 +17,11 @@ export function writeReference(): string {
     const intro = `### \`kind: ${kind}\`\n\n${shape.description ?? ''}\n`;
     return `${intro}\n${table(rowsOf(shape, ''))}`;
   });
-  return [table(rowsOf(core, '')), ...kinds].join('\n');
+  const actions = Object.entries<Shape>(actionSchemas).map(([kind, shape]) => {
+    const intro = `### An action of \`kind: ${kind}\`\n\n${shape.description ?? ''}\n`;
+    return `${intro}\n${table(rowsOf(shape, ''))}`;
+  });
+  return [table(rowsOf(core, '')), ...kinds, ...actions].join('\n');
 }
 
 function table(rows: readonly Row[]): string {

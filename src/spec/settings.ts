@@ -9,6 +9,7 @@ export interface Settings {
   readonly draws?: number;
   readonly precision?: number;
   readonly atMost?: number;
+  readonly scenario?: string;
   /** Named parameters with their new numbers or expressions. */
   readonly set?: readonly { readonly name: string; readonly value: string }[];
 }
@@ -32,7 +33,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
     const expression = value.trim() !== '' && Number.isFinite(number) ? number : value;
     parameters[name] = typeof before === 'object' ? { ...before, value: expression } : expression;
   }
-  const { years, replicates, seed, draws, precision, atMost } = settings;
+  const { years, replicates, seed, draws, scenario, precision, atMost } = settings;
   // What the author named stays last, so that the spec reads back from its JSON with its keys in the same order.
   const { named, ...core } = spec;
   return {
@@ -48,6 +49,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
         ...(draws === undefined ? {} : { draws }),
         ...(precision === undefined ? {} : { precision }),
         ...(atMost === undefined ? {} : { 'at-most': atMost }),
+        ...(scenario === undefined ? {} : { scenario }),
       },
       named,
     },

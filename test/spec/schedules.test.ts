@@ -87,7 +87,8 @@ test('a driver must not share its name with anything else', () => {
 });
 
 test('what is read once must not change with the year, not even through a named number', () => {
-  const crowding = '{ form: ricker, changes: { survival: [newborn] }, counted: [adult], capacity: room }';
-  expect(errorsOf(model({ crowding, parameters: '{ room: 40 + year / 1000 }' }))).toEqual(['fixed-in-time']);
-  expect(errorsOf(model({ crowding, parameters: '{ room: 40 }' }))).toEqual([]);
+  const crowding =
+    '{ form: ricker, changes: { survival: [newborn] }, counted: [adult], capacity: 40, allee-half: few }';
+  expect(errorsOf(model({ crowding, parameters: '{ few: 4 + year / 1000 }' }))).toEqual(['fixed-in-time']);
+  expect(errorsOf(model({ crowding, parameters: '{ few: 4 }' }))).toEqual([]);
 });

@@ -12,7 +12,7 @@ import { writeOut } from '../output.ts';
 import { terminalOf } from '../terminal.ts';
 
 export function checkModel(path: string, options: CommonOptions & { readonly strict?: boolean }): void {
-  const loaded = readModel(path, settingsOf(options), options);
+  const loaded = readModel(path, settingsOf(options), { ...options, everyScenario: true });
   const understood = loaded.compiled === null ? null : understand(loaded.compiled);
   if (options.json === true) writeOut(`${JSON.stringify(checkJson(loaded, understood), null, 2)}\n`);
   else {

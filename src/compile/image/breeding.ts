@@ -6,7 +6,7 @@ import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
 import { plain, type SectionList } from './section.ts';
 import { addRooms, addSlotLists } from './slot-lists.ts';
-import { addTable } from './table.ts';
+import { addPatchTable, addTable } from './table.ts';
 
 export function breedingRecord(phase: BreedingPhase, { list, model, index, key }: PhasePlace): Int32Array {
   const words = [
@@ -38,7 +38,7 @@ function waitingRows(list: SectionList, waits: CeilingPhase | undefined): readon
   if (waits === undefined) return [layout.none, layout.none];
   return [
     list.add(plain(layout.kindClassMask, Int32Array.from(waits.counted), `counted of ${waits.name}`)),
-    list.add(plain(layout.kindPatchNumbers, waits.capacity, `capacity of ${waits.name}`)),
+    addPatchTable(list, waits.capacity, waits.capacityByYear, `capacity of ${waits.name}`),
   ];
 }
 

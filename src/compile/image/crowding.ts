@@ -5,6 +5,7 @@ import type { CrowdingCoefficients, CrowdingForm } from '../coefficients.ts';
 import { record } from './record.ts';
 import { addRooms } from './slot-lists.ts';
 import { plain, type SectionList } from './section.ts';
+import { addPatchTable } from './table.ts';
 
 const formCodes: Readonly<Record<CrowdingForm, number>> = {
   none: layout.formNone,
@@ -31,7 +32,7 @@ export function crowdingRecord(list: SectionList, crowded: CrowdingRecord): Int3
   return record(layout.opCrowding, key, slot, [
     list.add(plain(layout.kindClassWeights, crowding.counted, reads)),
     list.add(plain(layout.kindPatchForms, forms, `coefficients of ${reads}`)),
-    list.add(plain(layout.kindPatchNumbers, coefficients.coefficient, `coefficients of ${reads}`)),
+    addPatchTable(list, coefficients.coefficient, coefficients.coefficientByYear, `coefficients of ${reads}`),
     list.add(plain(layout.kindPatchNumbers, coefficients.alleeHalf, `coefficients of ${reads}`)),
     slot,
     coefficients.shapeNumber === undefined

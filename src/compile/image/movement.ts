@@ -11,23 +11,29 @@ const roundingOfOne = 1e-12;
 export function addMovement(list: SectionList, movement: Movement, reads: string): number {
   const start = list.add(plain(layout.kindMovementStart, movement.start, reads));
   const to = list.add(plain(layout.kindMovementTo, movement.destinations, reads));
+  const { byYear } = movement;
+  const chances = byYear?.chances ?? [movement.chance];
+  const rows = chances.flatMap((chance) => [start, to, ...addChances(list, { ...movement, chance }, reads)]);
+  const epochOf = byYear === undefined ? layout.none : list.add(plain(layout.kindEpochOf, byYear.epochOf, reads));
+  const section = plain(layout.kindMovement, Int32Array.from(rows), reads);
+  return list.add(byYear === undefined ? section : { ...section, columns: layout.movementWords, epochOf });
+}
+
+function addChances(list: SectionList, movement: Movement, reads: string): readonly number[] {
   const chance = list.add(plain(layout.kindMovementChance, movement.chance, reads));
   const onward = list.add(plain(layout.kindMovementOnward, onwardChances(movement), reads));
   const alias = aliasTables(movement);
   const aliasStart = list.add(plain(layout.kindAliasStart, alias.start, reads));
   const keep = list.add(plain(layout.kindAliasKeep, alias.keep, reads));
   list.add(plain(layout.kindAliasEnds, alias.ends, reads));
-  const rows = Int32Array.of(start, to, chance, onward, aliasStart, keep);
-  return list.add(plain(layout.kindMovement, rows, reads));
+  return [chance, onward, aliasStart, keep];
 }
 
 function entriesOf(movement: Movement, patch: number): { readonly ways: number[]; readonly chances: number[] } {
   const from = movement.start[patch] ?? 0;
   const until = movement.start[patch + 1] ?? from;
-  return {
-    ways: Array.from({ length: until - from }, (_, i) => from + i),
-    chances: Array.from(movement.chance.subarray(from, until)),
-  };
+  const ways = Array.from({ length: until - from }, (_, i) => from + i);
+  return { ways, chances: Array.from(movement.chance.subarray(from, until)) };
 }
 
 /** Chance to die on the way, from the chances to arrive. */
@@ -63,7 +69,10 @@ function aliasTables(movement: Movement): AliasTables {
   const keep: number[] = [];
   const ends: number[] = [];
   for (let patch = 0; patch + 1 < movement.start.length; patch++) {
-    const origin = entriesOf(movement, patch);
+    const all = entriesOf(movement, patch);
+    // A way that is closed in these years must not shift the columns of the others.
+    const open = (i: number): boolean => (all.chances[i] ?? 0) > 0;
+    const origin = { ways: all.ways.filter((_, i) => open(i)), chances: all.chances.filter((_, i) => open(i)) };
     const death = deathChance(origin.chances);
     if (death > 0 && origin.ways.length > 0) {
       origin.ways.push(layout.none);

@@ -8,7 +8,7 @@ import { handlingRecord } from './handling.ts';
 import { addMovement } from './movement.ts';
 import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
-import { addTable } from './table.ts';
+import { addPatchTable, addTable } from './table.ts';
 import { plain } from './section.ts';
 
 export function phaseRecord(phase: M.Phase, place: PhasePlace): Int32Array {
@@ -75,7 +75,7 @@ function dispersalRecord(phase: M.DispersalPhase, place: PhasePlace): Int32Array
 function ceilingRecord(phase: M.CeilingPhase, { list, model, index, key }: PhasePlace): Int32Array {
   return record(layout.opCeiling, key, index, [
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.counted), `counted of ${phase.name}`)),
-    list.add(plain(layout.kindPatchNumbers, phase.capacity, `capacity of ${phase.name}`)),
+    addPatchTable(list, phase.capacity, phase.capacityByYear, `capacity of ${phase.name}`),
     takesCodes[phase.takes ?? 'at random'],
     addRooms(list, model),
   ]);

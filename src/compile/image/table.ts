@@ -12,3 +12,14 @@ export function addTable(list: SectionList, kind: number, table: M.RateTable, re
   const epochOf = many ? list.add(plain(layout.kindEpochOf, table.epochOf, reads)) : layout.none;
   return list.add({ kind, data, columns, epochOf, reads });
 }
+
+/** One number a patch: as it always is, or by year. */
+export function addPatchTable(
+  list: SectionList,
+  always: Float64Array,
+  byYear: M.RateTable | undefined,
+  reads: string,
+): number {
+  if (byYear === undefined) return list.add(plain(layout.kindPatchNumbers, always, reads));
+  return addTable(list, layout.kindPatchNumbers, byYear, reads);
+}

@@ -16,11 +16,15 @@ export function dispersalSlopes(reader: SlopeReader, model: Model, phase: Disper
 
 function anyMoves({ leaving, rule, links }: DispersalPhase): boolean {
   const some = (values: Float64Array | undefined): boolean => values?.some((slope) => slope !== 0) ?? false;
-  const ofLinks = (links ?? []).flatMap(({ distanceKm, crossingDeath, turnBack }) => [
-    distanceKm ?? 0,
-    crossingDeath,
-    turnBack,
-  ]);
+  const ofLinks = (links ?? []).flatMap(
+    ({ distanceKm, distanceTimes = 0, distanceAddKm = 0, crossingDeath, turnBack }) => [
+      distanceKm ?? 0,
+      distanceTimes,
+      distanceAddKm,
+      crossingDeath,
+      turnBack,
+    ],
+  );
   if (some(leaving.epochs[0]) || some(Float64Array.from(ofLinks))) return true;
   if (rule.by === 'shares') return some(rule.shares);
   const { kernel, attraction, hazardPerKm, survivalOnTheWay } = rule;
@@ -92,6 +96,8 @@ function linkSlopes(reader: SlopeReader, spec: DispersalSpec, { name, links = []
       distanceKm: link.distanceKm === null ? null : reader.one(written?.distance, at('distance'), 'length'),
       crossingDeath: reader.one(written?.['crossing-death'], at('crossing-death')),
       turnBack: reader.one(written?.['turn-back'], at('turn-back')),
+      distanceTimes: reader.one(written?.['distance-times'], at('distance-times')),
+      distanceAddKm: reader.one(written?.['distance-add'], at('distance-add'), 'length'),
     };
   });
 }

@@ -4,6 +4,7 @@ import { evaluate } from '../../spec/expression/evaluate.ts';
 import { namesIn } from '../../spec/expression/names.ts';
 import type { Response, Varied } from '../chance.ts';
 import { fail, type Context } from '../context.ts';
+import { whereIn } from '../rates.ts';
 import { distributionOf, numberAt } from './distribution.ts';
 
 /** How far out, in SDs of the normal numbers, a rate must stay within its bounds; beyond it the kernel holds it to them. */
@@ -78,7 +79,7 @@ function valueOf(context: Context, { moving, situation, corner, patch }: Look, n
   const { dated, resampled } = context.drivers;
   const driver = resampled?.names.indexOf(name) ?? -1;
   if (resampled !== null && driver >= 0) return resampled.values[driver * resampled.years.length + situation.row];
-  return dated.get(name)?.(year) ?? context.attributes[patch]?.get(name);
+  return dated.get(name)?.(year) ?? context.numbers.attribute(name, whereIn(context, patch, year));
 }
 
 function extreme({ shape, mean, sd }: Varied, step: number, side: number): number {

@@ -1,6 +1,7 @@
 // Which rates are expressions over parameters that vary or over drivers whose years are drawn, and what they are made of.
 import type { Ast } from '../../spec/expression/ast.ts';
 import { namesIn } from '../../spec/expression/names.ts';
+import { printExpression } from '../../spec/expression/print.ts';
 import type { SpecPath } from '../../spec/document.ts';
 import type { PatchNumbers, Response, ScaledPart, Varied, Variation } from '../chance.ts';
 import type { Context } from '../context.ts';
@@ -42,7 +43,10 @@ export function resolveResponses(context: Context, phases: readonly Phase[], var
     else
       attributes.set(
         name,
-        Float64Array.from(context.attributes, (own) => own.get(name) ?? 0),
+        Float64Array.from(
+          context.patches,
+          (_, p) => context.numbers.attribute(name, whereIn(context, p, firstYear)) ?? 0,
+        ),
       );
   }
   return { responses, attributes, dated };
@@ -67,13 +71,17 @@ function responsesOf(context: Context, { phase, index, part, changing, places }:
     context.patches.forEach((_patch, p) => {
       const own = written[p * classes + c] ?? null;
       if (own === null) return;
-      const expression = context.numbers.expanded(own.expression, own.path, changing);
+      const expression = context.numbers.expanded(own.expression, own.path, {
+        keep: changing,
+        attributes: context.attributes[p],
+      });
       if (expression === null || !namesIn(expression).some((name) => changing.has(name))) return;
       places.add(own.path.join('\0'));
-      const text = String(own.expression);
-      const group = groups.get(text) ?? { expression, text, path: own.path, patches: [] };
+      // Attributes that are expressions may make one text another expression in another patch.
+      const key = printExpression(expression);
+      const group = groups.get(key) ?? { expression, text: String(own.expression), path: own.path, patches: [] };
       group.patches.push(p);
-      groups.set(text, group);
+      groups.set(key, group);
     });
     const name = rateWords(context, phase.name === 'breeding' ? 'births' : phase.name, c);
     return [...groups.values()].map((group): Response => {

@@ -192,6 +192,15 @@ export const Run = Type.Object(
         default: 1,
       }),
     ),
+    scenario: Type.Optional(
+      Type.String({
+        ...Name,
+        title: 'a scenario',
+        description: 'The scenario that is run, by its name.',
+        examples: ['hedge only'],
+        default: 'as now',
+      }),
+    ),
   },
   { additionalProperties: false, description: 'How the model is run unless the command says otherwise.' },
 );

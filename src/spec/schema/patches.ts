@@ -13,6 +13,29 @@ const PatchOutline = Type.Array(Type.Array(Type.Array(Place, { title: 'a ring: a
   examples: ['[[[[0, 0], [2, 0], [2, 1], [0, 1]]]]'],
 });
 
+const Exists = Type.Object(
+  {
+    from: Type.Optional(
+      Type.Integer({ description: 'The first year in which there is this patch.', examples: [2031] }),
+    ),
+    until: Type.Optional(
+      Type.Integer({ description: 'The last year in which there is this patch.', examples: [2040] }),
+    ),
+  },
+  {
+    additionalProperties: false,
+    title: '{ from: …, until: … }',
+    description:
+      'In which years there is this patch. Before and after them nobody goes there; who is there when it is lost dies at the start of the next year.',
+    examples: ['{ from: 2031 }'],
+  },
+);
+
+export const PatchAttribute = timed({
+  description: 'Any other key is an attribute of the patch that expressions may use by its name.',
+  examples: [0.4],
+});
+
 export const InlinePatch = Type.Object(
   {
     name: Type.String({ ...Name, description: 'What the patch is called.', examples: ['North fen'] }),
@@ -28,19 +51,16 @@ export const InlinePatch = Type.Object(
     outline: Type.Optional(PatchOutline),
     area: Type.Optional(quantity('area', { description: 'Size of the patch.', examples: ['140 ha'] })),
     capacity: Type.Optional(
-      Type.Number({
-        minimum: 0,
+      timed({
         description: 'How many animals the patch has room for, in the count of the crowding or ceiling that uses it.',
         examples: [260],
         'x-unit': 'animals',
       }),
     ),
+    exists: Type.Optional(Exists),
   },
   {
-    additionalProperties: Type.Number({
-      description: 'Any other key is an attribute of the patch that expressions may use by its name.',
-      examples: [0.4],
-    }),
+    additionalProperties: PatchAttribute,
     propertyNames: { format: 'identifier' },
     'x-key': 'ATTRIBUTE',
     title: 'a patch: { name: …, at: […], … }',

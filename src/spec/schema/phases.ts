@@ -64,6 +64,20 @@ const CrossingLink = Type.Object(
         examples: ['6 km'],
       }),
     ),
+    'distance-times': Type.Optional(
+      expression({
+        description: 'The distance times this is the length of this way.',
+        examples: [0.6],
+        default: 1,
+      }),
+    ),
+    'distance-add': Type.Optional(
+      quantity('length', {
+        description: 'So much longer is this way than the distance, once that is multiplied.',
+        examples: ['1 km'],
+        default: 0,
+      }),
+    ),
     'crossing-death': Type.Optional(
       expression({
         description: 'Of those that cross, the share that dies of it (a road), besides all other dangers of the way.',

@@ -1,5 +1,6 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
+import { Actions, Money, Scenarios, type Action } from './actions.ts';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Duration, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';
@@ -87,6 +88,9 @@ export const CoreSchema = Type.Object(
     start: Start,
     observed: Type.Optional(Observed),
     outcomes: Type.Optional(Outcomes),
+    money: Type.Optional(Money),
+    actions: Type.Optional(Actions),
+    scenarios: Type.Optional(Scenarios),
     run: Type.Optional(Run),
     sweep: Type.Optional(Sweep),
   },
@@ -120,6 +124,7 @@ export type CatastropheSpec = Inline<Static<typeof Catastrophe>>;
 export type TakeSpec = Inline<Static<typeof Take>>;
 export type MoveSpec = Inline<Static<typeof Move>>;
 export type AddSpec = Inline<Static<typeof Add>>;
+export type ActionSpec = Inline<Static<typeof Action>>;
 export type NamedSpec =
   | CatastropheSpec
   | SurvivalSpec

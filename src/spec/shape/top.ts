@@ -1,12 +1,11 @@
 // The top of a spec: keys of the language, and beside them the sections that the author names, each with a kind.
-import { nearestName } from '../../diagnostic/nearest.ts';
 import { CoreSchema, namedSchemas } from '../schema/spec.ts';
-import type { SourceEntry, SourceMap, SourceNode, SourceScalar } from '../text/source.ts';
+import type { SourceEntry, SourceMap, SourceNode } from '../text/source.ts';
 import { checkMap, subjectOf, tellUnknownKey } from './check.ts';
 import { checkName } from './format.ts';
+import { kindEntry, kindWords, shapeOfKind } from './kinds.ts';
 import { put, type Report } from './report.ts';
 import type { Shape } from './shape.ts';
-import { either } from './words.ts';
 
 const core: Shape = CoreSchema;
 const kinds: Readonly<Record<string, Shape>> = namedSchemas;
@@ -47,21 +46,15 @@ function phasesOf(root: SourceMap): ReadonlySet<string> {
 
 function checkOwnSection(entry: SourceEntry, year: ReadonlySet<string>, report: Report): void {
   const { key, keySpan, plain, value } = entry;
-  const kind = value.kind === 'map' ? value.entries.find((one) => one.key === 'kind') : undefined;
+  const kind = value.kind === 'map' ? kindEntry(value) : undefined;
   if (value.kind !== 'map' || kind === undefined) {
     if (value.kind === 'map' && year.has(key)) tellMissingKind(entry, report);
     else tellUnknownKey(entry, Object.keys(CoreSchema.properties), report);
     return;
   }
   checkName({ kind: 'scalar', value: key, source: key, plain, span: keySpan }, report);
-  const word = kind.value.kind === 'scalar' ? kind.value : undefined;
-  const shape = word !== undefined && Object.hasOwn(kinds, word.source) ? kinds[word.source] : undefined;
-  if (shape === undefined) tellUnknownKind(kind, word, report);
-  else checkMap(value, shape, subjectOf(entry), report);
-}
-
-function kindWords(): string {
-  return either(Object.keys(kinds).map((kind) => `\`${kind}\``));
+  const shape = shapeOfKind(value, kinds, subjectOf(entry), report);
+  if (shape !== undefined) checkMap(value, shape, subjectOf(entry), report);
 }
 
 function tellMissingKind(entry: SourceEntry, report: Report): void {
@@ -72,18 +65,6 @@ function tellMissingKind(entry: SourceEntry, report: Report): void {
       message: `\`${entry.key}\` stands in the year and does not say its kind`,
       span: entry.keySpan,
     },
-    { expected: kindWords(), fix: 'Add a line such as `kind: dispersal`.' },
-  );
-}
-
-function tellUnknownKind(kind: SourceEntry, word: SourceScalar | undefined, report: Report): void {
-  put(
-    report,
-    { code: 'unknown-kind', message: 'There is no such kind', span: word?.span ?? kind.keySpan },
-    {
-      found: word?.source === '' ? undefined : word?.source,
-      expected: kindWords(),
-      nearest: word === undefined ? undefined : nearestName(word.source, Object.keys(kinds)),
-    },
+    { expected: kindWords(kinds), fix: 'Add a line such as `kind: dispersal`.' },
   );
 }

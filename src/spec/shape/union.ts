@@ -1,5 +1,6 @@
 // A value that may have several shapes: found wrong, it is judged by the one that its author meant.
 import type { SourceNode } from '../text/source.ts';
+import { kindsOf, shapeOfKind } from './kinds.ts';
 import { trial, type Report, type Subject } from './report.ts';
 import { checkWord, tellWrongType } from './scalar.ts';
 import { branchesOf, knownKeys, sortOf, type Shape, type Sort } from './shape.ts';
@@ -9,6 +10,12 @@ type Check = (node: SourceNode, shape: Shape, subject: Subject, report: Report) 
 /** `check` is the check of any shape, handed in since the two call each other. */
 export function checkUnion(node: SourceNode, shape: Shape, { subject, report, check }: UnionContext): void {
   const branches = branchesOf(shape);
+  const kinds = node.kind === 'map' ? kindsOf(branches) : null;
+  if (node.kind === 'map' && kinds !== null) {
+    const meantKind = shapeOfKind(node, kinds, subject, report);
+    if (meantKind !== undefined) check(node, meantKind, subject, report);
+    return;
+  }
   const tried = branches.map((branch) => {
     const own = trial(report);
     check(node, branch, subject, own);
