@@ -5,6 +5,7 @@
 // a patch holds more animals than its capacity says, and only another capacity is another K.
 import type { Finding } from '../spec/finding.ts';
 import type { Crowding, Model } from '../model/model.ts';
+import { asIfAlwaysThere } from '../model/patches-lost.ts';
 import type { CrowdingCoefficients, CrowdingForm } from './coefficients.ts';
 import { coefficientAt } from './crowding-form.ts';
 import { unitMultipliers } from './multipliers.ts';
@@ -22,7 +23,8 @@ export interface SolvedCapacities {
  */
 export function solveCapacities(model: Model, base: Model = model): SolvedCapacities {
   const findings: Finding[] = [];
-  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ model: base, crowding, k, findings }));
+  const always = asIfAlwaysThere(base);
+  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ model: always, crowding, k, findings }));
   return { coefficients, findings };
 }
 

@@ -10,6 +10,7 @@ import { resolveAdd, resolveMove, resolveTake } from './handling.ts';
 import { resolveAgeing, resolveNamedSurvival, resolveSurvival } from './life-phases.ts';
 import { resolveTaking } from './variation/catastrophe.ts';
 import type { Phase } from './model.ts';
+import { patchesLost, resolvePatchesLost } from './patches-lost.ts';
 import { refuseIdleStages } from './stages.ts';
 
 /** The phases that every study can use without naming them itself. */
@@ -30,10 +31,8 @@ export function resolvePhases(context: Context): readonly Phase[] {
     });
   }
   const turned = [...year.keys()].map((i) => (count + 1 + i) % year.length);
-  return withWaiting(
-    context,
-    turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []),
-  );
+  const phases = turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []);
+  return withWaiting(context, [...resolvePatchesLost(context), ...phases]);
 }
 
 function resolvePhase(context: Context, name: string, index: number): Phase | null {
@@ -113,7 +112,7 @@ function tellUnused(context: Context): void {
     if (spec[key] !== undefined && !spec.year.includes(owners[key])) tellUnusedKey(context, key, owners[key]);
   }
   for (const name of Object.keys(spec.named)) {
-    if (ownPhases.some((own) => own === name)) {
+    if (name === patchesLost || ownPhases.some((own) => own === name)) {
       fail(context, 'reserved-name', [name], {
         message: `\`${name}\` is a phase of the language`,
         part: 'key',

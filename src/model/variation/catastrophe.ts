@@ -47,11 +47,15 @@ function resolveOne(context: Context, { name, spec, phases }: Request): Catastro
       details: { expected: '`multiplies`, `takes` (with a place in `year`) or `capacity`' },
     });
   }
+  const chance = chanceOf(context, name, spec.chance);
+  const reach = reachOf(context, name, spec.reach);
+  // A further place where it may begin would move the luck of all others.
+  const byItself = chance.over === 'patch' && reach === 'one patch';
   return {
     name,
-    ...chanceOf(context, name, spec.chance),
-    origins: originsOf(context, name, spec['begins-in']),
-    reach: reachOf(context, name, spec.reach),
+    ...chance,
+    origins: originsOf(context, name, { list: spec['begins-in'], byItself }),
+    reach,
     multiplies,
     lasts,
     wait,
@@ -77,8 +81,16 @@ function number(context: Context, expression: number | string, path: SpecPath): 
   return context.numbers.value(expression, path, { year: context.time.firstYear });
 }
 
-function originsOf(context: Context, name: string, list: readonly string[] | undefined): readonly number[] {
-  if (list === undefined) return context.patches.map((_, p) => p);
+interface Origins {
+  readonly list: readonly string[] | undefined;
+  /** Whether it strikes each patch for itself, so that patches that come later may be among them. */
+  readonly byItself: boolean;
+}
+
+function originsOf(context: Context, name: string, { list, byItself }: Origins): readonly number[] {
+  if (list === undefined) {
+    return context.patches.flatMap(({ exists }, p) => (byItself || exists?.from === undefined ? [p] : []));
+  }
   return list
     .map((patch, i) => patchIndex(context, patch, [name, 'begins-in', i], 'value'))
     .filter((p) => p >= 0)
