@@ -22,7 +22,8 @@ export function resolveDemography(context: Context): DemographyPhase | null {
   const general = readEntries(context, spec.demography, ['demography']);
   const own = patches.map(({ name }) => {
     const demography = spec.in?.[name]?.demography;
-    return demography === undefined ? general : readEntries(context, demography, ['in', name, 'demography']);
+    if (demography === undefined) return general;
+    return withGeneral(readEntries(context, demography, ['in', name, 'demography']), demography, general);
   });
   const table = (part: 'fates' | 'births'): RateTable => matrices(context, part, own);
   const phase: DemographyPhase = {
@@ -33,6 +34,13 @@ export function resolveDemography(context: Context): DemographyPhase | null {
   };
   checkColumns(context, phase.fates);
   return phase;
+}
+
+/** What a patch does not write of its own, all fates or all births, is as everywhere. */
+function withGeneral(own: Entry | null, demography: DemographySpec, general: Entry | null): Entry | null {
+  if ('survival' in demography || own === null) return own;
+  return (part, to, from) =>
+    demography[part] === undefined ? (general?.(part, to, from) ?? null) : own(part, to, from);
 }
 
 function matrices(context: Context, part: 'fates' | 'births', own: readonly (Entry | null)[]): RateTable {

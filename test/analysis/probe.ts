@@ -27,8 +27,20 @@ const withoutRates = new Set([
   'patches',
   'counts',
 ]);
-for (const key of ['classes', 'oldest', 'parameters', 'year', 'start', 'outcomes', 'run', 'variation'])
-  withoutRates.add(key);
+const alsoWithout = [
+  'classes',
+  'oldest',
+  'parameters',
+  'year',
+  'start',
+  'outcomes',
+  'run',
+  'variation',
+  'drivers',
+  'observed',
+  'uncertainty',
+];
+for (const key of alsoWithout) withoutRates.add(key);
 
 export function probed(spec: Spec): Spec {
   const parameters = { ...spec.parameters, probe: 1 };

@@ -169,3 +169,28 @@ start: { total: 100 }
     ]);
   });
 });
+
+test('what a patch does not write of its own matrix, fates or births, is as everywhere', () => {
+  const text = (own: string) =>
+    framed(
+      `classes: [young, old]
+demography: { fates: [[0, 0], [0.3, 0.8]], births: [[0, 1.2], [0, 0]] }
+in: { B: { demography: { ${own} } } }
+year: [count, demography]
+start: { total: 50 }
+`,
+      { patches: '[{ name: A }, { name: B }]' },
+    );
+  const ofB = (own: string) =>
+    blockRows(compileText(text(own)))
+      .slice(2)
+      .map((row) => row.slice(2));
+  expect(ofB('births: [[0, 0.9], [0, 0]]')).toEqual([
+    [0, 0.9],
+    [0.3, 0.8],
+  ]);
+  expect(ofB('fates: [[0, 0], [0.2, 0.7]]')).toEqual([
+    [0, 1.2],
+    [0.2, 0.7],
+  ]);
+});

@@ -111,10 +111,16 @@ test('every key says what it is, and every single value has an example', () => {
   expect(single.filter(([, shape]) => shape.examples === undefined).map(([key]) => key)).toEqual([]);
 });
 
-test('the reference holds every key and is a table', () => {
+test('the reference holds every key with an example and is a table', () => {
   const reference = writeReference();
   const missing = allKeys.map(([key]) => key.split('.').at(-1) ?? '').filter((key) => !reference.includes(key));
   expect(missing).toEqual([]);
   const rows = reference.split('\n').filter((line) => line.startsWith('|'));
   expect(rows.filter((row) => row.replaceAll('\\|', '').split('|').length !== 8)).toEqual([]);
+  const cells = (row: string) =>
+    row
+      .replaceAll('\\|', '')
+      .split('|')
+      .map((cell) => cell.trim());
+  expect(rows.filter((row) => cells(row)[6] === '').map((row) => cells(row)[1])).toEqual([]);
 });

@@ -56,6 +56,7 @@ export const Offspring = Type.Object(
   {
     additionalProperties: false,
     description: 'How the young of one animal vary with chance; the mean stays that of `births`.',
+    examples: ['{ distribution: binomial, largest-litter: 6 }'],
   },
 );
 
@@ -85,5 +86,6 @@ export const Mating = Type.Object(
   {
     additionalProperties: false,
     description: 'Who must find whom in the phase, where classes are given for both sexes. It must then be said.',
+    examples: ['{ form: harmonic mean, males: [bull], females-per-male: 4 }'],
   },
 );

@@ -30,7 +30,11 @@ export const Observed = Type.Object(
       }),
     ),
   },
-  { additionalProperties: false, description: 'Counts of the past, drawn beside what the model says.' },
+  {
+    additionalProperties: false,
+    description: 'Counts of the past, drawn beside what the model says.',
+    examples: ['{ counts: past.csv, error: 15 % }'],
+  },
 );
 
 const DriverValues = Type.Record(
@@ -55,5 +59,9 @@ export const Drivers = Type.Object(
       examples: ['as-dated'],
     }),
   },
-  { additionalProperties: false, description: 'Yearly numbers from outside the model.' },
+  {
+    additionalProperties: false,
+    description: 'Yearly numbers from outside the model.',
+    examples: ['{ values: rain.csv, future: resample-years }'],
+  },
 );

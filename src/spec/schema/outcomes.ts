@@ -202,5 +202,9 @@ export const Run = Type.Object(
       }),
     ),
   },
-  { additionalProperties: false, description: 'How the model is run unless the command says otherwise.' },
+  {
+    additionalProperties: false,
+    description: 'How the model is run unless the command says otherwise.',
+    examples: ['{ replicates: 2000, seed: 2026 }'],
+  },
 );

@@ -114,7 +114,11 @@ const Source = Type.Object(
       ),
     ),
   },
-  { additionalProperties: false, description: 'Where the number is from and how it is known; the report shows it.' },
+  {
+    additionalProperties: false,
+    description: 'Where the number is from and how it is known; the report shows it.',
+    examples: ['{ text: "three fens, 2021", basis: measured elsewhere }'],
+  },
 );
 
 export const Parameter = Type.Union([

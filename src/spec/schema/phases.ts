@@ -29,7 +29,11 @@ export const Kernel = Type.Object(
     ),
     reach: Type.Optional(quantity('length', { description: 'Nobody moves further than this.', examples: ['25 km'] })),
   },
-  { additionalProperties: false, description: 'How likely a patch is reached by its distance.' },
+  {
+    additionalProperties: false,
+    description: 'How likely a patch is reached by its distance.',
+    examples: ['{ shape: exponential, mean: 4 km, reach: 25 km }'],
+  },
 );
 
 /** From patch to patch: the share of the animals present that goes there. */
@@ -277,6 +281,7 @@ const crowdingKeys = {
 export const Crowding = Type.Object(crowdingKeys, {
   additionalProperties: false,
   description: 'Rates that fall where animals are many.',
+  examples: ['{ form: beverton-holt, changes: { survival: [newborn] }, counted: [adult], capacity: capacity }'],
 });
 
 /** A second crowding and more, each under a name of its own. It is a condition and does not stand in the year. */

@@ -30,6 +30,7 @@ const birthsWords = { description: young, examples: ['0.4 * litter'], 'x-unit': 
 export const Births = Type.Record(Type.String(), Type.Union([expression(birthsWords), classList(birthsWords)]), {
   title: 'classes with their young',
   description: young,
+  examples: ['{ yearling: 0.4 * litter, adult: litter, female-share: 0.5 }'],
   'x-key': 'CLASS',
   'x-keys': { 'female-share': FemaleShare, into: Into },
   'x-others': timed(birthsWords),
@@ -129,7 +130,8 @@ export const PatchRates = Type.Object(
 
 export const InPatches = Type.Record(Type.String(), PatchRates, {
   title: 'patches with their own rates',
-  description: 'Rates that are different in one patch; what is not written here is as everywhere.',
+  description:
+    'Rates that are different in one patch; what is not written here (of a matrix all fates, or all births) is as everywhere.',
   examples: ['Saltmarsh: { survival: { adult: adult_survival * 0.9 } }'],
   'x-key': 'PATCH',
 });

@@ -23,5 +23,9 @@ export const Study = Type.Object(
       Type.Boolean({ description: 'True where the places and numbers are made up.', examples: [true] }),
     ),
   },
-  { additionalProperties: false, description: 'What the study is, for whom, and by whom.' },
+  {
+    additionalProperties: false,
+    description: 'What the study is, for whom, and by whom.',
+    examples: ['{ title: Reed hare on the Harrow Levels, by: Fen office }'],
+  },
 );

@@ -49,6 +49,7 @@ export const Uncertain = Type.Object(
     additionalProperties: false,
     title: 'how sure a number is: { standard-error: … }, { interval: […] }, { uniform: […] } or { triangular: […] }',
     description: 'How exactly the number is known. `run --draws` draws it once for each set of replicates.',
+    examples: ['{ standard-error: 0.04 }'],
   },
 );
 
@@ -89,5 +90,9 @@ export const Uncertainty = Type.Object(
       ),
     ),
   },
-  { additionalProperties: false, description: 'What the errors of several parameters have to do with one another.' },
+  {
+    additionalProperties: false,
+    description: 'What the errors of several parameters have to do with one another.',
+    examples: ['{ correlations: { adult_survival: { newborn_survival: -0.3 } } }'],
+  },
 );

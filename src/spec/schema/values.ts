@@ -50,6 +50,7 @@ export function byClass(words: KeyWords) {
   return Type.Record(Type.String(), timed(words), {
     title: 'classes with a number or an expression each',
     description: words.description,
+    examples: [`{ adult: ${String(words.examples[0])} }`],
     'x-key': 'CLASS',
   });
 }
@@ -71,6 +72,7 @@ export function byNumber(words: KeyWords, key: string) {
   return Type.Record(Type.String(), Type.Number({ minimum: 0, ...words }), {
     title: 'names with a number each',
     description: words.description,
+    examples: [`{ ${key === 'CLASS' ? 'adult' : 'North fen'}: ${String(words.examples[0])} }`],
     'x-key': key,
   });
 }

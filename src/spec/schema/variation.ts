@@ -106,6 +106,7 @@ const others = Type.Union([Varied, byRate], {
 export const Variation = Type.Record(Type.String(), Type.Union([others, BetweenRates, BetweenPatches]), {
   title: 'rates and parameters that vary from year to year',
   description: 'Real differences between years. What is not exactly known is another thing: see `uncertainty`.',
+  examples: ['{ litter: { sd: 0.7 }, between-patches: 0.5 }'],
   'x-key': 'RATE OR PARAMETER',
   'x-keys': { 'between-rates': BetweenRates, 'between-patches': BetweenPatches, autocorrelation: Autocorrelation },
   'x-others': others,
