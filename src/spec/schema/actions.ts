@@ -305,5 +305,9 @@ export const Money = Type.Object(
       }),
     ),
   },
-  { additionalProperties: false, description: 'What costs are told in. Needed where an action has a cost.' },
+  {
+    additionalProperties: false,
+    description: 'What costs are told in. Needed where an action has a cost.',
+    examples: ['{ currency: crowns, price-year: 2026, discount: 3 % }'],
+  },
 );

@@ -135,5 +135,9 @@ export const Sweep = Type.Object(
       ),
     ),
   },
-  { additionalProperties: false, description: 'What `skein sweep` does unless the command says otherwise.' },
+  {
+    additionalProperties: false,
+    description: 'What `skein sweep` does unless the command says otherwise.',
+    examples: ['{ over: { adult_survival: { from: 0.45, to: 0.7 } }, points: 4096 }'],
+  },
 );
