@@ -1,4 +1,5 @@
 // What is kept of every future of a plan, so that it can be set beside the same future of another plan.
+import { firstHandledColumn } from '../compile/image/count.ts';
 import { isHandling } from '../compile/image/handling.ts';
 import { lanes } from '../kernel/batch.ts';
 import type { BatchCounts } from '../kernel/output.ts';
@@ -30,7 +31,7 @@ export class Ledger {
     this.undiscounted = new Float64Array(futures);
     const handling = model.phases.filter(isHandling);
     this.#takes = handling.flatMap(({ kind }, h) => (kind === 'take' ? [h] : []));
-    this.#firstHandled = 1 + model.patches.length + model.outcomes.length;
+    this.#firstHandled = firstHandledColumn(model);
     this.#columns = this.#firstHandled + handling.length * handledParts.length;
   }
 

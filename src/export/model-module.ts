@@ -3,6 +3,7 @@ import { isHandling } from '../compile/image/handling.ts';
 import { lanes } from '../kernel/batch.ts';
 import { kernelBytes, loadMachine } from '../machine/machine.ts';
 import type { Model } from '../model/model.ts';
+import { watchedCounts } from '../model/watched.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import { writeModule } from './module.ts';
 
@@ -33,8 +34,15 @@ function describeModule({ model, provenance, image }: CompiledModel, address: nu
     patches,
     classes,
     outcomes,
-    columns: ['all', ...patches, ...outcomes.map(({ name }) => name), ...handledNames(model)],
+    columns: ['all', ...patches, ...outcomes.map(({ name }) => name), ...watchedNames(model), ...handledNames(model)],
   };
+}
+
+/** Animals of the classes that counts of the past hold. */
+function watchedNames(model: Model): readonly string[] {
+  return watchedCounts(model).map(
+    ({ patch }) => `counted: ${patch === null ? 'all' : (model.patches[patch]?.name ?? '')}`,
+  );
 }
 
 /** Animals taken, moved or released by each such phase, those of them that died, and what was wanted and not there. */

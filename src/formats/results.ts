@@ -59,6 +59,7 @@ const Sketched = Type.Object({
     Type.Literal('abundance.whole'),
     Type.Literal('abundance.patches'),
     Type.Literal('patchesInUse'),
+    Type.Literal('observed.abundance'),
   ]),
   exactBelow: part.whole('Counts below this are exact all the same.'),
   relativeError: part.share('How far a quantile of larger counts can be off, as a share of itself.'),
@@ -77,6 +78,36 @@ const Handled = Type.Object({
   does: Type.Union([Type.Literal('take'), Type.Literal('move'), Type.Literal('add')]),
   byYear: Type.Array(Type.Object({ year: part.year, ...amounts })),
   inAll: Type.Object(amounts, { description: 'Over all years.' }),
+});
+
+const maybePatch = part.maybeText('Name of the patch; null for all counted patches together.');
+
+const Observed = Type.Object({
+  classes: Type.Array(part.className, { description: 'That the counts hold.' }),
+  error: part.maybe('Standard error of a count as a share of it; null where it is not known.'),
+  abundance: Type.Array(Type.Object({ patch: maybePatch, byYear: Type.Array(YearSummary) }), {
+    description: 'Of these classes in the runs: first all counted patches together, then each.',
+  }),
+  counts: Type.Array(
+    Type.Object({
+      patch: maybePatch,
+      year: part.year,
+      animals: part.number('That were counted.'),
+      lies: Type.Union([Type.Literal('below'), Type.Literal('within'), Type.Literal('above'), Type.Null()], {
+        description:
+          'Against the band from the 0.05 to the 0.95 quantile of the runs; null where the model does not run through the year.',
+      }),
+      beyondError: Type.Union([Type.Boolean(), Type.Null()], {
+        description:
+          'Whether the 95 % interval of the count itself lies outside, too; null where its error is not known.',
+      }),
+    }),
+  ),
+  compared: part.whole('Counts of single patches in years of the model.'),
+  outside: part.whole('Those of them that lie outside the band.'),
+  beyondError: part.maybe(
+    'Those that lie outside with all of their own 95 % interval; null where errors are not known.',
+  ),
 });
 
 const Draws = Type.Object({
@@ -134,6 +165,7 @@ export const RunSchema = Type.Object({
     standardError: part.maybe('Of the mean, from the number of runs; null where that cannot be told.'),
   }),
   patchesInUse: Type.Array(Type.Object({ year: part.year, mean: Type.Number(), quantiles: part.Quantiles })),
+  observed: Type.Optional(Observed),
   sketched: Type.Array(Sketched, { description: 'Empty where every quantile is a count that some run had.' }),
   notDrawn: Type.Optional(
     Type.Literal(true, { description: 'The model says how sure its numbers are, but no draws were asked for.' }),

@@ -5,6 +5,7 @@ import type { ReportView, Size } from '../view/contract.ts';
 import { drawMap } from '../view/map/draw.ts';
 import { layOut, type Layout } from '../view/map/sheet.ts';
 import type { Markup } from '../view/markup.ts';
+import { drawObserved } from '../view/observed.ts';
 import { pick } from '../view/series.ts';
 import { drawSmallFan } from '../view/small-fan.ts';
 import { morph } from './morph.ts';
@@ -49,6 +50,12 @@ function draw(
       return drawChance({ outcome: pick(view.outcomes, index), years: view.years, marked }, sizeOf(holder));
     case 'fan':
       return drawAbundance(view, marked, sizeOf(holder));
+    case 'observed':
+      return view.observed === undefined ? null : drawObserved(view, view.observed, marked, sizeOf(holder));
+    case 'observed-small': {
+      const patch = view.observed?.patches[index];
+      return patch === undefined ? null : drawSmallFan(patch, view.years, state.marked, sizeOf(holder));
+    }
     case 'small':
       return drawSmallFan(pick(view.patches, index), view.years, state.marked, sizeOf(holder));
     default:

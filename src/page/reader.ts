@@ -1,13 +1,15 @@
 // Charts that can be read year by year: each is a slider for the keyboard, and follows the pointer or the finger.
 import type { ReportView } from '../view/contract.ts';
-import { readAbundance, readChance, readPatches } from '../view/reading.ts';
+import { readAbundance, readChance, readObserved, readPatches } from '../view/reading.ts';
 import { pick } from '../view/series.ts';
 import { sizeOf } from './figures.ts';
 import type { PageState, Store } from './state.ts';
 
 export function mountReaders(view: ReportView, store: Store): void {
   for (const figure of document.querySelectorAll<HTMLElement>('figure.chart, .smalls')) {
-    const drawn = [...figure.querySelectorAll<HTMLElement>('[data-figure=fan], [data-figure=chance]')];
+    const drawn = [
+      ...figure.querySelectorAll<HTMLElement>('[data-figure=fan], [data-figure=chance], [data-figure=observed]'),
+    ];
     const readout = document.createElement('p');
     readout.className = 'readout';
     readout.textContent = 'Point, tap, or use the arrow keys to read a year.';
@@ -79,6 +81,9 @@ function tell(holder: HTMLElement, readout: HTMLElement, view: ReportView, { mar
 
 function sentence(holder: HTMLElement, view: ReportView, marked: number): string {
   if (holder.dataset['figure'] === 'fan') return readAbundance(view, marked);
+  if (holder.dataset['figure'] === 'observed' && view.observed !== undefined) {
+    return readObserved(view, view.observed, marked);
+  }
   if (holder.dataset['figure'] !== 'chance') return readPatches(view, marked);
   return readChance(view, pick(view.outcomes, Number(holder.dataset['index'] ?? 0)), marked);
 }

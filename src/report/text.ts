@@ -3,6 +3,7 @@ import type { Chance, RunResults } from '../results/results.ts';
 import { decimal, percent, plain } from '../view/number.ts';
 import { answer, finished, lastYear } from './answer.ts';
 import { handledWords } from './handled-words.ts';
+import { outsideWords } from './section/counted.ts';
 import { lowestWords } from './lowest-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { whenWords } from './when-words.ts';
@@ -75,8 +76,10 @@ function numbers(results: RunResults, animals: string, style: TextStyle): string
   const stopped =
     runs === 0 ? '' : `${plain(runs)} runs had to be stopped and are in no number here: ${reasons.join('; ')}`;
   const precise = precisionWords(results);
+  const { observed } = results;
+  const counted = observed === undefined ? '' : outsideWords(observed);
   const handled = handledWords(results, animals).map(([name, words]) => `${name}: ${words}`);
-  return [precise, lowest, inUse, ...handled, stopped]
+  return [precise, lowest, inUse, counted, ...handled, stopped]
     .filter((text) => text !== '')
     .map((text) => wrap(text, style))
     .join('\n');

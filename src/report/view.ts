@@ -1,7 +1,16 @@
 // From results and model to what the figures are drawn from. Patches return to the order of their author's list.
-import type { OutcomeResult, YearSummary } from '../results/results.ts';
+import type { ComparedCount, OutcomeResult, YearSummary } from '../results/results.ts';
 import { inFileOrder } from '../results/summarise.ts';
-import type { Fan, LinkView, OutcomeView, OutlineView, PatchView, ReportView, WorthView } from '../view/contract.ts';
+import type {
+  CountedView,
+  Fan,
+  LinkView,
+  OutcomeView,
+  OutlineView,
+  PatchView,
+  ReportView,
+  WorthView,
+} from '../view/contract.ts';
 import { thinOutlines } from '../view/map/thin.ts';
 import { coarseMovement } from './hiding/coarse-movement.ts';
 import type { ReportInput } from './input.ts';
@@ -32,6 +41,7 @@ export function summariseForView(input: ReportInput): ReportView {
     linksLeftOut: exact.length - links.length,
     ...(input.hiding === undefined ? {} : { places: input.hiding.places }),
     outcomes: results.outcomes.map((outcome) => outcomeView(outcome, results.abundance.whole)),
+    ...observedView(input),
     worthAt: (input.patchValues?.value ?? null) === null ? null : worthAt,
   };
 }
@@ -70,6 +80,28 @@ function worthView({ patchValues }: ReportInput, p: number): WorthView | null {
   const found = patchValues?.value?.patches[p];
   if (found === undefined || found.role === null || found.contribution === null) return null;
   return { role: found.role, contribution: short(found.contribution), growthAlone: short(found.growthAlone) };
+}
+
+function observedView({ results: { observed } }: ReportInput): Pick<ReportView, 'observed'> {
+  if (observed === undefined) return {};
+  const { classes, error, counts } = observed;
+  const [together, ...patches] = observed.abundance.map(({ patch, byYear }) => ({
+    name: patch ?? 'All counted patches',
+    fan: fan(byYear),
+    counts: counts.filter((one) => one.patch === patch).map((one) => countedView(one, error)),
+  }));
+  if (together === undefined) return {};
+  return { observed: { classes: classes.join(', '), together, patches } };
+}
+
+function countedView({ year, animals, lies }: ComparedCount, error: number | null): CountedView {
+  const reach = 1.96 * (error ?? 0) * animals;
+  return {
+    year,
+    animals,
+    bar: error === null ? null : [short(Math.max(0, animals - reach)), short(animals + reach)],
+    lies,
+  };
 }
 
 function fan(byYear: readonly Pick<YearSummary, 'mean' | 'quantiles'>[]): Fan {

@@ -85,9 +85,35 @@ export interface Amounts {
   readonly quantiles: Quantiles;
 }
 
+/** A count of the past. */
+export interface ComparedCount {
+  /** Null for all counted patches together, in the years in which each of them was counted. */
+  readonly patch: string | null;
+  readonly year: number;
+  readonly animals: number;
+  /** Against the band from the 0.05 to the 0.95 quantile; null where the year is none that the model runs through. */
+  readonly lies: 'below' | 'within' | 'above' | null;
+  /** Whether the 95 % interval of the count itself leaves the band, too; null where its error is not known. */
+  readonly beyondError: boolean | null;
+}
+
+/** Counts of the past beside the same classes and patches in the runs. */
+export interface ObservedResult {
+  readonly classes: readonly string[];
+  /** Standard error of a count as a share of it; null where it is not known. */
+  readonly error: number | null;
+  /** First of all counted patches together (`patch` is null), then of each. */
+  readonly abundance: readonly { readonly patch: string | null; readonly byYear: readonly YearSummary[] }[];
+  readonly counts: readonly ComparedCount[];
+  /** Counts of single patches in years of the model, and those of them that lie outside the band. */
+  readonly compared: number;
+  readonly outside: number;
+  readonly beyondError: number | null;
+}
+
 /** Quantiles that were read from counts in fixed bins, since there were too many to keep each. */
 export interface Sketched {
-  readonly quantilesOf: 'abundance.whole' | 'abundance.patches' | 'patchesInUse';
+  readonly quantilesOf: 'abundance.whole' | 'abundance.patches' | 'patchesInUse' | 'observed.abundance';
   /** Counts below this are exact all the same. */
   readonly exactBelow: number;
   /** How far a quantile of larger counts can be off, as a share of itself. */
@@ -147,6 +173,8 @@ export interface RunResults {
   readonly handled: readonly HandledResult[];
   readonly meanLowestCount: { readonly mean: number; readonly sd: number; readonly standardError: number };
   readonly patchesInUse: readonly { readonly year: number; readonly mean: number; readonly quantiles: Quantiles }[];
+  /** Absent where the model gives no counts of the past. */
+  readonly observed?: ObservedResult;
   /** Empty where every quantile is a count that some run had. */
   readonly sketched: readonly Sketched[];
   /** Where the model says how sure its numbers are, but no draws were asked for. */

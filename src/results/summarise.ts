@@ -2,7 +2,9 @@
 import type { RawPath } from '../kernel/output.ts';
 import { isHandling } from '../compile/image/handling.ts';
 import type { Model } from '../model/model.ts';
+import { watchedCounts } from '../model/watched.ts';
 import { summariseHandled } from './handled.ts';
+import { summariseObserved } from './observed.ts';
 import { summariseOutcome } from './outcome.ts';
 import { mostReplicates } from './precision.ts';
 import type { Provenance } from './provenance.ts';
@@ -15,8 +17,9 @@ import type { OutcomeResult, PathGrowth, PathResults, RunResults, Sketched, Year
 export function openReduction(model: Model): Reduction {
   const { patches, steps, outcomes } = model;
   const replicates = mostReplicates(model);
+  const watched = watchedCounts(model).length;
   const handled = model.phases.filter(isHandling).length;
-  return new Reduction({ patches: patches.length, steps, replicates, outcomes, handled });
+  return new Reduction({ patches: patches.length, steps, replicates, outcomes, watched, handled });
 }
 
 export interface RunToSummarise {
@@ -30,6 +33,7 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
   const { runs, stopped } = reduction;
   const { firstYear } = model;
   const outcomes = summariseOutcomes(model, reduction);
+  const observed = summariseObserved(model, reduction);
   return {
     format: 'skein-run/1',
     ...provenance,
@@ -45,6 +49,7 @@ export function summariseRun({ model, reduction, provenance, cautions }: RunToSu
     handled: summariseHandled(model, reduction),
     meanLowestCount: lowestCount(reduction),
     patchesInUse: patchesInUse(model, reduction),
+    ...(observed === undefined ? {} : { observed }),
     sketched: sketchedQuantiles(reduction),
     ...(model.uncertainty !== null && model.draws === 0 ? { notDrawn: true as const } : {}),
     stopped: { runs: stopped.length, reasons: [...new Set(stopped.map(({ reason }) => reason))] },
@@ -126,11 +131,12 @@ function patchesInUse(model: Model, { inUse, runs }: Reduction): RunResults['pat
   });
 }
 
-function sketchedQuantiles({ whole, patches, inUse }: Reduction): readonly Sketched[] {
+function sketchedQuantiles({ whole, patches, inUse, watched }: Reduction): readonly Sketched[] {
   const all = [
     ['abundance.whole', whole],
     ['abundance.patches', patches],
     ['patchesInUse', inUse],
+    ...(watched === null ? [] : [['observed.abundance', watched] as const]),
   ] as const;
   return all.flatMap(([quantilesOf, { exact }]) => (exact ? [] : [{ quantilesOf, exactBelow, relativeError }]));
 }

@@ -43,6 +43,29 @@ export interface PatchView {
   readonly worth: WorthView | null;
 }
 
+/** A count of the past; the bar is the 95 % interval of the count itself, null where its error is not known. */
+export interface CountedView {
+  readonly year: number;
+  readonly animals: number;
+  readonly bar: readonly [number, number] | null;
+  /** Against the band of 90 of 100 futures; null where the year is none that the model runs through. */
+  readonly lies: 'below' | 'within' | 'above' | null;
+}
+
+/** What was counted, over what the futures have of the same classes and patches. */
+export interface CountedFanView {
+  readonly name: string;
+  readonly fan: Fan;
+  readonly counts: readonly CountedView[];
+}
+
+export interface ObservedView {
+  /** Such as 'adult'. */
+  readonly classes: string;
+  readonly together: CountedFanView;
+  readonly patches: readonly CountedFanView[];
+}
+
 export interface LinkView {
   /** Index into `patches`. */
   readonly from: number;
@@ -82,6 +105,8 @@ export interface ReportView {
   /** Absent where patches stand where they are. */
   readonly places?: 'shifted' | 'schematic';
   readonly outcomes: readonly OutcomeView[];
+  /** Absent where the model gives no counts of the past. */
+  readonly observed?: ObservedView;
   /** Where the worth of patches was taken, to follow 'taken'; null where it is not told. */
   readonly worthAt: string | null;
 }

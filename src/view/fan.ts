@@ -1,7 +1,8 @@
 // Abundance over many futures: nine in ten lie in the light band, half in the darker one, the line is the middle.
 import { area, line } from 'd3';
-import type { Fan, Series, Size } from './contract.ts';
+import type { CountedView, Fan, Series, Size } from './contract.ts';
 import { axes, cursor, plot, type Plot } from './axes.ts';
+import { countedEntries, dots, mostCounted, yearsWith } from './counted.ts';
 import { figure, type FigureWords } from './figure.ts';
 import { key } from './key.ts';
 import { mark, type Markup } from './markup.ts';
@@ -18,16 +19,24 @@ export interface FanChart {
   /** A year to mark, where the chart is live. */
   readonly marked: number | null;
   readonly write?: (value: number) => string;
+  /** What was counted, to be drawn over the fan. */
+  readonly counts?: readonly CountedView[];
 }
 
 export function drawFan(chart: FanChart, size: Size): Markup {
-  const legend = key(entries, 0, 4, size.width);
+  const { years, fan, counts = [] } = chart;
+  const legend = key([...entries, ...(counts.length > 0 ? countedEntries(counts) : [])], 0, 4, size.width);
   const margins = { top: legend.height + 32, right: 16, bottom: 28, left: 52 };
-  const place = plot(size, margins, chart.years, largest(chart.fan.p95));
+  const place = plot(size, margins, yearsWith(years, counts), Math.max(largest(fan.p95), mostCounted(counts)));
   const title = mark`<text x="0" y="${legend.height + 20}" fill="${softInk}">${chart.axis}</text>`;
-  const inside = mark`${bands(place, chart.years, chart.fan)}${cursor(place, chart.marked)}`;
+  const inside = mark`${bands(place, years, fan)}${dots(place, counts, 3.5)}${cursor(place, chart.marked)}`;
   const content = mark`${legend.markup}${title}${axes(place, chart.write ?? plain)}${inside}`;
-  return figure(size, chart.words, content, { years: [place.left, place.right] });
+  return figure(size, chart.words, content, { years: spanOf(place, years) });
+}
+
+/** Where the first and the last year of the futures stand. */
+export function spanOf(place: Plot, years: Series): readonly [number, number] {
+  return [place.x(pick(years, 0)), place.x(pick(years, years.length - 1))];
 }
 
 /** The two bands and the line of the middle. */

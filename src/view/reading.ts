@@ -1,13 +1,23 @@
 // The numbers of a chart at one year, as a sentence.
-import type { OutcomeView, ReportView } from './contract.ts';
+import type { Fan, ObservedView, OutcomeView, ReportView } from './contract.ts';
 import { of100, whole } from './number.ts';
 import { pick } from './series.ts';
 
 export function readAbundance(view: ReportView, count: number): string {
-  const { median, p25, p75, p05, p95 } = view.whole;
+  return readFan(view, view.whole, view.animals, count);
+}
+
+function readFan({ years }: ReportView, { median, p25, p75, p05, p95 }: Fan, what: string, count: number): string {
   const half = `half of the futures ${whole(pick(p25, count))} to ${whole(pick(p75, count))}`;
   const most = `90 of 100 ${whole(pick(p05, count))} to ${whole(pick(p95, count))}`;
-  return `${pick(view.years, count)}: ${whole(pick(median, count))} ${view.animals} in the middle; ${half}; ${most}.`;
+  return `${pick(years, count)}: ${whole(pick(median, count))} ${what} in the middle; ${half}; ${most}.`;
+}
+
+/** Of the counted classes in the counted patches; what was counted that year behind it. */
+export function readObserved(view: ReportView, { together, classes }: ObservedView, count: number): string {
+  const counted = together.counts.find(({ year }) => year === pick(view.years, count));
+  const said = counted === undefined ? '' : ` Counted: ${whole(counted.animals)}.`;
+  return `${readFan(view, together.fan, classes, count)}${said}`;
 }
 
 export function readChance(view: ReportView, outcome: OutcomeView, count: number): string {

@@ -2,14 +2,19 @@
 import axe from 'axe-core';
 import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { compileModel } from '../golden/models.ts';
 import { launch, open } from './browser.ts';
-import { reportPage } from './report-page.ts';
+import { reportOf } from './report-of.ts';
+import { pageScript, reportPage } from './report-page.ts';
 
 let browser: Browser;
 let html: string;
+let counts: string;
 
 beforeAll(async () => {
   [browser, html] = await Promise.all([launch(), reportPage()]);
+  const compiled = compileModel('held-against-counts', { replicates: 64 });
+  counts = reportOf(compiled, { pageScript: await pageScript() });
 });
 afterAll(() => browser.close());
 
@@ -18,6 +23,8 @@ interface State {
   readonly context?: BrowserContextOptions;
   readonly reach?: (page: Page) => Promise<void>;
   readonly scripts?: false;
+  /** Which page; the usual one where it is missing. */
+  readonly of?: 'counts';
 }
 
 const states: readonly State[] = [
@@ -25,10 +32,23 @@ const states: readonly State[] = [
   { name: 'with every table open on a phone', context: { viewport: { width: 380, height: 700 } }, reach: openTables },
   { name: 'switched over, with the numbers of a patch shown and a year marked', reach: useAll },
   { name: 'where scripts do not run', scripts: false },
+  { name: 'with counts of the past, a year of them marked', of: 'counts', reach: markCounted },
 ];
 
 async function openTables(page: Page): Promise<void> {
   for (const summary of await page.locator('summary').all()) await summary.click();
+}
+
+async function markCounted(page: Page): Promise<void> {
+  await openTables(page);
+  const counted = page.locator('[data-figure=observed]:visible');
+  await counted.focus();
+  await page.keyboard.press('Home');
+  await page.keyboard.press('ArrowRight');
+  await page.keyboard.press('ArrowRight');
+  expect(await counted.getAttribute('aria-valuetext')).toMatch(/^2017: \d+ breeder in the middle; .* Counted: 80\.$/);
+  expect(await counted.locator('circle').count()).toBeGreaterThan(6);
+  await page.evaluate(() => window.scrollTo({ top: 0, behavior: 'instant' }));
 }
 
 async function useAll(page: Page): Promise<void> {
@@ -41,8 +61,9 @@ async function useAll(page: Page): Promise<void> {
 }
 
 describe('the accessibility checker', () => {
-  it.each(states)('has nothing against the page $name', async ({ context, reach, scripts }) => {
-    const text = scripts === false ? html.slice(0, html.lastIndexOf('<script>')) : html;
+  it.each(states)('has nothing against the page $name', async ({ context, reach, scripts, of }) => {
+    const whole = of === 'counts' ? counts : html;
+    const text = scripts === false ? whole.slice(0, whole.lastIndexOf('<script>')) : whole;
     const { page, close } = await open(browser, text, context);
     await reach?.(page);
     expect(await violations(page)).toEqual([]);

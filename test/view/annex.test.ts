@@ -1,29 +1,17 @@
 // The annex says what comes from outside, what chance does and what is not known, of real models.
 import { expect, test } from 'vitest';
-import { followPath, runModel } from '../../src/pipeline.ts';
-import { buildReport } from '../../src/report/report.ts';
+import type { CompiledModel } from '../../src/pipeline.ts';
 import { printSpec } from '../../src/spec/print.ts';
 import { compileModel, modelText } from '../golden/models.ts';
+import { reportOf } from '../page/report-of.ts';
 import { compileText } from '../pipeline/compile-text.ts';
-import type { CompiledModel } from '../../src/pipeline.ts';
 
 const few = { replicates: 8, years: 6 };
 
 /** What a reader sees of the page, without the data and the script. */
 function pageOf(compiled: CompiledModel, files: readonly string[] = []): string {
-  const { model, landscape, coefficients, spec } = compiled;
-  const html = buildReport({
-    results: runModel(compiled),
-    path: followPath(compiled),
-    model,
-    landscape,
-    coefficients,
-    specText: 'as written',
-    data: { files, drivers: spec.drivers, wholeText: printSpec(spec) },
-    commandLine: 'skein report model.yaml -o model.html',
-    runLine: 'skein run model.yaml --out results',
-    pageScript: '',
-  });
+  const { spec } = compiled;
+  const html = reportOf(compiled, { data: { files, drivers: spec.drivers, wholeText: printSpec(spec) } });
   const body = html.slice(html.indexOf('<body>'), html.indexOf('<script'));
   return body.replace(/<[^>]*>/g, ' ').replace(/\s+/g, ' ');
 }

@@ -7,7 +7,7 @@ import { settingsOf, type CommonOptions } from '../options.ts';
 import { openOutFolder } from '../out-folder.ts';
 import { writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
-import { pathTables } from '../tables.ts';
+import { pathTables } from '../run-tables.ts';
 import { terminalOf } from '../terminal.ts';
 
 export function pathCommand(path: string, options: CommonOptions): void {

@@ -10,7 +10,7 @@ import { settingsOf, type CommonOptions } from '../options.ts';
 import { writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
 import { runReplicates } from '../replicates.ts';
-import { runTables } from '../tables.ts';
+import { runTables } from '../run-tables.ts';
 import { terminalOf } from '../terminal.ts';
 
 export interface RunCommandOptions extends CommonOptions {

@@ -6,6 +6,7 @@ import type { CrowdingCoefficients } from '../coefficients.ts';
 import { readingPhase } from '../multipliers.ts';
 import { catastropheRecords } from './catastrophes.ts';
 import { crowdingRecord } from './crowding.ts';
+import { firstHandledColumn } from './count.ts';
 import { handledColumns } from './handling.ts';
 import { keysOfNames } from './keys.ts';
 import { phaseRecord } from './phases.ts';
@@ -44,7 +45,7 @@ export function buildImage(input: ImageInput): ArrayBuffer {
     [layout.headerClasses, model.classes.length],
     [layout.headerSteps, model.steps],
     [layout.headerSlots, slots.count],
-    [layout.headerColumns, 1 + model.patches.length + model.outcomes.length + handledColumns(model)],
+    [layout.headerColumns, firstHandledColumn(model) + handledColumns(model)],
     [layout.headerWays, waysBefore(input.landscape, model.phases.length)],
   ]);
   const names = namesOf(model);

@@ -1,6 +1,7 @@
 // The records of takes, moves and releases, and the columns in which they report.
 import * as layout from '../../../assembly/layout.ts';
 import type { AddPhase, Model, MovePhase, Phase, TakePhase } from '../../model/model.ts';
+import { firstHandledColumn } from './count.ts';
 import type { PhasePlace } from './place.ts';
 import { record } from './record.ts';
 import { plain } from './section.ts';
@@ -26,7 +27,7 @@ export function handlingRecord(phase: HandlingPhase, { list, model, index, key }
   const survival = phase.kind === 'take' ? null : phase.survival;
   return record(opcodes[phase.kind], key, index, [
     active === null ? layout.none : list.add(plain(layout.kindEpochOf, active, `years of ${name}`)),
-    1 + model.patches.length + model.outcomes.length + handledColumns(model, index),
+    firstHandledColumn(model) + handledColumns(model, index),
     list.add(plain(layout.kindPatchForms, Int32Array.from(phase.patches), `patches of ${name}`)),
     list.add(plain(layout.kindClassMask, Int32Array.from(phase.classes), `classes of ${name}`)),
     addTable(list, layout.kindRates, phase.amounts, `amounts of ${name}`),

@@ -8,6 +8,7 @@ import { decimal, plain, whole } from '../../view/number.ts';
 import { pick } from '../../view/series.ts';
 import { drawSmallFan } from '../../view/small-fan.ts';
 import { drawTable, type Row, type Table } from '../../view/table.ts';
+import { countedPart } from './counted.ts';
 import { section } from './section.ts';
 
 const sizes = {
@@ -48,6 +49,7 @@ export function abundanceSection(view: ReportView, results: RunResults): Markup 
 single future follows it. Single futures swing more than the bands.</figcaption></figure>
 <h3>Patch by patch</h3><p>Each patch has its own scale; the number at its top right is the upper end.</p>
 <div class="smalls">${view.patches.map((_, p) => smallFan(view, p))}</div>
+${countedPart(view, results.observed)}
 ${folded('Abundance by year as a table', yearTable(view, results))}
 ${folded('The middle of each patch by year as a table', patchTable(view))}`,
   );

@@ -13,11 +13,13 @@ export interface ReductionShape {
   /** The largest number of replicates that can come. */
   readonly replicates: number;
   readonly outcomes: readonly Asked[];
+  /** Counts that are kept to be compared with those of the past; none where it is missing. */
+  readonly watched?: number;
   /** Takes, moves and releases of the model. */
   readonly handled: number;
 }
 
-/** Columns of a batch: the whole, then each patch, then each outcome, then those of what people do with animals. */
+/** Columns of a batch: the whole, then each patch, then each outcome, then what is watched, then those of what people do with animals. */
 const wholeColumn = 0;
 const firstPatchColumn = 1;
 
@@ -30,6 +32,8 @@ export class Reduction {
   /** Patches with at least one animal; cell t. */
   readonly inUse: Counts;
   readonly hits: readonly Hits[];
+  /** Cell w * (steps + 1) + t; null where nothing is watched. */
+  readonly watched: Counts | null;
   readonly handled: readonly HandledTotals[];
   /** Of each replicate the lowest count of all animals, the start included; −1 for those that did not come or were stopped. */
   readonly lowest: Int32Array;
@@ -40,12 +44,13 @@ export class Reduction {
   readonly #used = new Float64Array(lanes);
 
   constructor(shape: ReductionShape) {
-    const { patches, steps, replicates, outcomes, handled } = shape;
+    const { patches, steps, replicates, outcomes, watched = 0, handled } = shape;
     this.shape = shape;
     this.whole = new Counts(steps + 1, replicates);
     this.patches = new Counts((steps + 1) * patches, replicates);
     this.inUse = new Counts(steps + 1, replicates);
     this.hits = outcomes.map(({ event, counts }) => new Hits({ event, counts, steps, replicates }));
+    this.watched = watched === 0 ? null : new Counts((steps + 1) * watched, replicates);
     this.handled = Array.from({ length: handled }, () => new HandledTotals(steps, replicates, lanes));
     this.lowest = new Int32Array(replicates).fill(-1);
   }
@@ -92,6 +97,10 @@ export class Reduction {
         hits.add(t, batch.first + lane, values[i] ?? 0);
       });
     });
+    for (let w = 0; w < this.#watchedColumns; w++) {
+      this.#read(batch, kept, t, firstPatchColumn + patches + this.hits.length + w);
+      this.watched?.add(w * (this.shape.steps + 1) + t, values, count);
+    }
   }
 
   /** Puts one column of the kept lanes into `#values`. */
@@ -101,8 +110,12 @@ export class Reduction {
     for (let i = 0; i < kept.length; i++) this.#values[i] = counts[at + (kept[i] ?? 0)] ?? 0;
   }
 
+  get #watchedColumns(): number {
+    return this.shape.watched ?? 0;
+  }
+
   get #firstHandled(): number {
-    return firstPatchColumn + this.shape.patches + this.hits.length;
+    return firstPatchColumn + this.shape.patches + this.hits.length + this.#watchedColumns;
   }
 
   #takeHandled(batch: BatchCounts, kept: readonly number[]): void {
