@@ -7,7 +7,7 @@ import { annexSection, limitsSection } from './section/annex.ts';
 import { abundanceSection, chancesSection } from './section/courses.ts';
 import { answerSection, headSection } from './section/head.ts';
 import { mapSection } from './section/map.ts';
-import { outcomesSection } from './section/outcomes.ts';
+import { laterOutcomes, outcomesSection } from './section/outcomes.ts';
 import { styleSheet } from './style.ts';
 import { hidingWords } from './hiding/hiding-words.ts';
 import { summariseForView } from './view.ts';
@@ -31,7 +31,7 @@ export function buildReport(input: ReportInput): string {
     style: styleSheet(foot),
     script: input.pageScript,
     data: view,
-    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${rest}</div><footer>${foot}</footer>`,
+    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${laterOutcomes(results)}${rest}</div><footer>${foot}</footer>`,
   });
 }
 

@@ -37,7 +37,7 @@ figcaption,.note,.definition{color:var(--soft);font-size:.95rem;line-height:1.45
 figure{margin:1rem 0 1.5rem}
 figure svg{display:block;max-width:100%;height:auto}
 figcaption{margin-top:.5rem}
-.narrow{display:none}
+.narrow,.paper{display:none}
 .scroll{overflow-x:auto;margin:.8rem 0}
 table{border-collapse:collapse;font-size:.95rem;line-height:1.35;font-variant-numeric:tabular-nums}
 caption{text-align:left;color:var(--soft);padding:0 0 .35rem}

@@ -9,7 +9,8 @@ html,body{background:#fff}
 body{font-size:9.6pt;line-height:1.42}
 main{padding:0;border:0;max-width:none;background:#fff}
 nav,.controls,.save,.skip,.readout,.tip,footer{display:none!important}
-.wide{display:block!important}.narrow{display:none!important}
+.wide,.paper{display:block!important}.narrow{display:none!important}
+#outcomes tbody:nth-of-type(n+5){display:none}
 h1{font-size:22pt;margin:.2rem 0}h3{font-size:11pt;margin:.8rem 0 .3rem}h4,h5{font-size:9.8pt;margin:.6rem 0 .2rem}h2{font-size:14.5pt;margin:1.1rem 0 .4rem;padding-top:.45rem;break-after:avoid}h3,h4,h5{break-after:avoid}
 .question{font-size:12.5pt;margin:.1rem 0 .3rem}.lead{font-size:14pt;margin-bottom:.4rem}
 p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max-width:none}
@@ -21,7 +22,7 @@ figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
 
 .map svg{max-height:112mm;width:auto;margin:0 auto}
 .chart .wide svg{max-height:62mm;width:auto}
-.beside{grid-template-columns:repeat(auto-fit,minmax(54mm,1fr));gap:0 1rem}.beside figure{margin:.2rem 0}.beside h3{margin:.3rem 0 0;font-size:10.5pt}.beside .definition{margin:0;font-size:8.4pt;line-height:1.3}
+.beside{grid-template-columns:repeat(auto-fit,minmax(54mm,1fr));gap:0 1rem}.beside figure{margin:.2rem 0}.beside figure:nth-child(4){break-before:page}.beside h3{margin:.3rem 0 0;font-size:10.5pt}.beside .definition{margin:0;font-size:8.4pt;line-height:1.3}
 svg>rect:first-of-type{fill:#fff}
 .pages{break-before:page}.more{break-before:auto}
 .smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}

@@ -2,7 +2,10 @@
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launch, open } from './browser.ts';
-import { reportPage } from './report-page.ts';
+import { modelText } from '../golden/models.ts';
+import { compileText } from '../pipeline/compile-text.ts';
+import { reportOf } from './report-of.ts';
+import { pageScript, reportPage } from './report-page.ts';
 
 let browser: Browser;
 let html: string;
@@ -33,6 +36,41 @@ describe('the report on paper', () => {
     expect(header + answer + outcomes).toBeLessThan(1001);
     expect(map + chances).toBeLessThan(1001);
     await close();
+  });
+
+  it('keeps the summary on two sheets with eight outcomes: four of them first, three curves, and all others behind', async () => {
+    const more = ['adult', 'yearling', 'newborn', '[yearling, adult]', 'all'].map(
+      (of, k) =>
+        `  another outcome of this model, number ${k + 4}: { of: ${of.startsWith('[') ? of : `[${of}]`}, below: ${30 + k} }\n`,
+    );
+    const text = modelText('reed-hare').replace('\nrun: {', `${more.join('').replace('[all]', 'all')}\nrun: {`);
+    const compiled = compileText(text, { replicates: 64 });
+    expect(compiled.model.outcomes.length).toBe(8);
+    const { page, close } = await open(browser, reportOf(compiled, { pageScript: await pageScript() }));
+    const [header = 0, answer = 0, outcomes = 0] = await pagesOf(page, ['header', '#answer', '#outcomes']);
+    expect(header + answer + outcomes).toBeLessThan(1001);
+    expect(await page.locator('#outcomes tbody:visible').count()).toBe(4);
+    expect(await page.locator('.pages .outcomes tbody:visible').count()).toBe(4);
+    expect(await page.locator('#outcomes .note').textContent()).toBe(
+      'The other 4 outcomes stand behind the map and the chances.',
+    );
+    const figures = await page.evaluate(() => {
+      const top = document.querySelector('#map')!.getBoundingClientRect().top;
+      return [...document.querySelectorAll('#chances figure')].map((one) => one.getBoundingClientRect().bottom - top);
+    });
+    expect(figures.length).toBe(8);
+    for (const bottom of figures.slice(0, 3)) expect(bottom).toBeLessThan(1001);
+    expect(
+      await page
+        .locator('#chances figure')
+        .nth(3)
+        .evaluate((one) => getComputedStyle(one).breakBefore),
+    ).toBe('page');
+    await close();
+    const screen = await open(browser, reportOf(compiled));
+    expect(await screen.page.locator('.outcomes tbody:visible').count()).toBe(8);
+    expect(await screen.page.locator('.paper:visible').count()).toBe(0);
+    await screen.close();
   });
 
   it('prints what is folded away on a screen, and no controls', async () => {

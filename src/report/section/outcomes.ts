@@ -11,8 +11,22 @@ import { whenWords } from '../when-words.ts';
 import { list, section } from './section.ts';
 
 export function outcomesSection(model: Model, results: RunResults): Markup {
-  const table = results.outcomes.length === 0 ? mark`<p>The model names no outcome.</p>` : outcomeTable(results);
-  return section('outcomes', 'Outcomes', mark`${table}${others(model, results)}`);
+  const { outcomes } = results;
+  const table = outcomes.length === 0 ? mark`<p>The model names no outcome.</p>` : outcomeTable(results, outcomes);
+  const more = outcomes.length - onFirstSheet;
+  const note = `The other ${plain(more)} ${more === 1 ? 'outcome stands' : 'outcomes stand'} behind the map and the chances.`;
+  const onPaper = more > 0 ? mark`<p class="paper note">${note}</p>` : null;
+  return section('outcomes', 'Outcomes', mark`${table}${onPaper}${others(model, results)}`);
+}
+
+/** So many fit on the first sheet of paper beside question and answer; the style of the page hides the others there. */
+const onFirstSheet = 4;
+
+/** Those that do not, for paper alone. */
+export function laterOutcomes(results: RunResults): Markup | null {
+  const later = results.outcomes.slice(onFirstSheet);
+  if (later.length === 0) return null;
+  return mark`<div class="paper" aria-hidden="true">${outcomeTable(results, later)}</div>`;
 }
 
 const heads = [
@@ -23,12 +37,12 @@ const heads = [
   'interval from what is not known',
 ];
 
-function outcomeTable(results: RunResults): Markup {
+function outcomeTable(results: RunResults, outcomes: readonly OutcomeResult[]): Markup {
   const end = lastYear(results);
   const caption = `Chances over ${plain(finished(results))} futures, from ${results.firstYear} to ${end}`;
   const unknown = results.notDrawn ? 'not drawn' : 'no uncertainty was given';
   const head = heads.map((name) => mark`<th scope="col">${name}</th>`);
-  const bodies = results.outcomes.map((outcome) => outcomeRows(outcome, end, unknown));
+  const bodies = outcomes.map((outcome) => outcomeRows(outcome, end, unknown));
   return scrolling(
     caption,
     mark`<table class="outcomes"><caption>${caption}</caption><thead><tr>${head}</tr></thead>${bodies}</table>`,
