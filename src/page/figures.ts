@@ -18,7 +18,10 @@ function holders(): readonly HTMLElement[] {
 /** Redraws what can be seen, or everything. */
 export type Redraw = (state: PageState, all?: boolean) => void;
 
-/** The layout of a map does not change from year to year; it is worked out once. */
+/**
+ * A figure is drawn again only where what it shows has changed, and only once it can be seen: a page of hundreds of patches
+ * answers as quickly as one of eight. The layout of a map does not change from year to year; it is worked out once.
+ */
 export function mountFigures(view: ReportView): Redraw {
   const layouts = new Map<number, Layout>();
   const layoutFor = (width: number): Layout => {
@@ -26,13 +29,44 @@ export function mountFigures(view: ReportView): Redraw {
     layouts.set(width, layout);
     return layout;
   };
-  return (state, all = false) => {
-    for (const holder of holders()) {
-      if (!all && holder.getClientRects().length === 0) continue;
-      const markup = draw(view, state, holder, layoutFor);
-      if (markup !== null) morph(holder, markup);
-    }
+  const asWritten = { count: view.years.length - 1, show: 'abundance', focus: null, marked: null } as const;
+  const drawn = new Map(holders().map((holder) => [holder, dependsOn(holder, asWritten)]));
+  let now: PageState = asWritten;
+  const refresh = (holder: HTMLElement): void => {
+    const wanted = dependsOn(holder, now);
+    if (drawn.get(holder) === wanted) return;
+    drawn.set(holder, wanted);
+    const markup = draw(view, now, holder, layoutFor);
+    if (markup !== null) morph(holder, markup);
   };
+  const inSight = observeSight(refresh);
+  return (state, all = false) => {
+    now = state;
+    for (const holder of drawn.keys()) if (all || inSight(holder)) refresh(holder);
+  };
+}
+
+/** What of the state a figure shows. */
+function dependsOn(holder: HTMLElement, { count, show, focus, marked }: PageState): string {
+  return holder.dataset['figure'] === 'map' ? `${count} ${show} ${String(focus)}` : String(marked);
+}
+
+/** Calls for each small figure that comes into sight; tells whether one is. All others are drawn where they have a size. */
+function observeSight(appear: (holder: HTMLElement) => void): (holder: HTMLElement) => boolean {
+  const seen = new Set<Element>();
+  const observer = new IntersectionObserver(
+    (entries) => {
+      for (const { target, isIntersecting } of entries) {
+        if (isIntersecting) seen.add(target);
+        else seen.delete(target);
+        if (isIntersecting && target instanceof HTMLElement) appear(target);
+      }
+    },
+    { rootMargin: '300px' },
+  );
+  const small = new Set<Element>(document.querySelectorAll('.smalls [data-figure]'));
+  for (const holder of small) observer.observe(holder);
+  return (holder) => (small.has(holder) ? seen.has(holder) : holder.getClientRects().length > 0);
 }
 
 function draw(

@@ -14,7 +14,7 @@ function start(view: ReportView): void {
   store.onChange((state) => redraw(state));
   mountYear(view, store);
   mountReaders(view, store);
-  mountSave(view);
+  mountSave(view, () => redraw(store.get(), true));
   mountTip(view, store);
   mountWalk(store);
   window.matchMedia('(max-width: 40rem)').addEventListener('change', () => redraw(store.get()));

@@ -2,11 +2,16 @@
 import type { ReportView } from '../view/contract.ts';
 import { paper } from '../view/palette.ts';
 
-export function mountSave(view: ReportView): void {
+/** `refresh` draws again what has changed out of sight. */
+export function mountSave(view: ReportView, refresh: () => void): void {
   for (const figure of document.querySelectorAll<HTMLElement>('figure, .smalls')) {
     const row = document.createElement('div');
     row.className = 'save';
-    row.append(button('Save as SVG', figure, view, saveSvg), button('Save as PNG', figure, view, savePng));
+    const take = (save: Save) => () => {
+      refresh();
+      save(picture(figure, view));
+    };
+    row.append(button('Save as SVG', take(saveSvg)), button('Save as PNG', take(savePng)));
     if (figure.tagName === 'FIGURE') figure.append(row);
     else (figure.nextElementSibling ?? figure).after(row);
   }
@@ -21,11 +26,11 @@ interface Picture {
   readonly height: number;
 }
 
-function button(words: string, figure: HTMLElement, view: ReportView, save: Save): HTMLButtonElement {
+function button(words: string, click: () => void): HTMLButtonElement {
   const made = document.createElement('button');
   made.type = 'button';
   made.textContent = words;
-  made.addEventListener('click', () => save(picture(figure, view)));
+  made.addEventListener('click', click);
   return made;
 }
 

@@ -28,8 +28,18 @@ export function mountYear(view: ReportView, store: Store): void {
     slider.value = String(state.count);
     slider.setAttribute('aria-valuetext', readAbundance(view, state.count));
     shown.textContent = String(pick(view.years, state.count));
-    morph(tables, mapTables(view, state.count));
+    refreshTables();
   });
+  // Tables of hundreds of patches are drawn again only where they can be seen.
+  let told = view.years.length - 1;
+  const folder = tables.closest('details');
+  const refreshTables = (): void => {
+    const { count } = store.get();
+    if (count === told || folder?.open === false) return;
+    told = count;
+    morph(tables, mapTables(view, count));
+  };
+  folder?.addEventListener('toggle', refreshTables);
 }
 
 function createPlayer(store: Store, last: number, button: HTMLButtonElement) {

@@ -64,6 +64,7 @@ code{font:0.92em ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monosp
 .beside figure{display:flex;flex-direction:column;margin:0 0 1.5rem}.beside figure svg{width:100%;max-width:26rem}.beside .definition{flex:1}.beside h3{margin-top:1rem}
 .smalls{display:grid;grid-template-columns:repeat(auto-fill,minmax(10.2rem,1fr));gap:1rem;margin:1rem 0}
 .smalls svg{width:100%;height:auto;display:block}
+.smalls>div{content-visibility:auto;contain-intrinsic-size:auto 172px auto 130px}
 .limits li{margin:.5rem 0;max-width:42rem}
 .controls{display:flex;flex-wrap:wrap;gap:.6rem 2rem;align-items:center;margin:.8rem 0}
 .controls[hidden]{display:none}

@@ -25,7 +25,7 @@ figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
 .beside{grid-template-columns:repeat(auto-fit,minmax(54mm,1fr));gap:0 1rem}.beside figure{margin:.2rem 0}.beside figure:nth-child(4){break-before:page}.beside h3{margin:.3rem 0 0;font-size:10.5pt}.beside .definition{margin:0;font-size:8.4pt;line-height:1.3}
 svg>rect:first-of-type{fill:#fff}
 .pages{break-before:page}.more{break-before:auto}
-.smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}
+.smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}.smalls>div{content-visibility:visible}
 dl{margin:.4rem 0}.numbers div,.concepts div{grid-template-columns:11rem 1fr;padding:.1rem 0}
 details::details-content{content-visibility:visible!important;display:block!important;height:auto!important}
 summary{list-style:none;color:var(--ink);font-weight:600}

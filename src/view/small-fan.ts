@@ -23,9 +23,25 @@ export function drawSmallFan(patch: SmallFan, years: Series, marked: number | nu
   const most = Math.max(largest(fan.p95), mostCounted(counts));
   const place = plot(size, { top: 44, right: 32, bottom: 22, left: 6 }, span, most);
   const year = marked === null ? null : pick(years, marked);
-  const content = mark`${frame(place)}${bands(place, years, fan)}${dots(place, counts, 2.5)}${labels(patch, span, place)}
+  const content = mark`${frame(place)}${bands(place, thinned(years, years), thinnedFan(fan, years))}${dots(place, counts, 2.5)}${labels(patch, span, place)}
 ${cursor(place, year)}${reading(patch, years, marked, place)}`;
   return figure(size, words(patch, years), content, { years: spanOf(place, years) });
+}
+
+/** More points than this cannot be told apart in so small a picture, and hundreds of them make a page heavy. */
+const mostPoints = 52;
+
+/** Every so many-th of a series by year, the first and the last among them. */
+function thinned(series: Series, years: Series): Series {
+  const last = years.length - 1;
+  const apart = Math.ceil(last / (mostPoints - 1));
+  return apart <= 1 ? series : series.filter((_, i) => i % apart === 0 || i === last);
+}
+
+function thinnedFan(fan: Fan, years: Series): Fan {
+  const thin = (series: Series) => thinned(series, years);
+  const { mean, p05, p25, median, p75, p95 } = fan;
+  return { mean: thin(mean), p05: thin(p05), p25: thin(p25), median: thin(median), p75: thin(p75), p95: thin(p95) };
 }
 
 function frame({ left, right, top, bottom }: Plot): Markup {

@@ -1,6 +1,6 @@
 // The report in a real browser: offline, by keyboard, by pointer, narrow, printed, and with nothing but its own words.
 import { readFileSync } from 'node:fs';
-import type { Browser } from 'playwright-core';
+import type { Browser, Locator } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launch, open } from './browser.ts';
 import { reportPage } from './report-page.ts';
@@ -26,6 +26,7 @@ describe('the report in a browser', () => {
 
   it('moves the map, its table and its label with the year slider, by keyboard alone', async () => {
     const { page, complaints, close } = await open(browser, html);
+    await page.locator('summary', { hasText: 'numbers of the map' }).click();
     await page.locator('#year').focus();
     await page.keyboard.press('Home');
     expect(await page.locator(yearIn).first().textContent()).toBe('2026');
@@ -126,21 +127,34 @@ describe('the report in a browser', () => {
     await close();
   });
 
-  it('saves a figure as SVG with its origin, and as PNG', async () => {
+  it('saves every figure as SVG with its origin and as PNG, also what has not been in sight', async () => {
     const { page, complaints, close } = await open(browser, html);
-    const save = async (words: string) => {
-      const [download] = await Promise.all([
-        page.waitForEvent('download'),
-        page.locator('#map').getByText(words).click(),
-      ]);
+    await page.locator('#chances [role=slider]').first().focus();
+    await page.keyboard.press('Home');
+    const save = async (button: Locator) => {
+      const [download] = await Promise.all([page.waitForEvent('download'), button.click()]);
       return { name: download.suggestedFilename(), bytes: readFileSync(await download.path()) };
     };
-    const svg = await save('Save as SVG');
-    expect(svg.name).toBe('reed-hare-on-the-harrow-levels-map.svg');
-    expect(svg.bytes.toString()).toMatch(/^<svg xmlns=.*Drawn from the run with hash 5f0c2b7e/);
-    const png = await save('Save as PNG');
-    expect(png.bytes.subarray(1, 4).toString()).toBe('PNG');
-    expect(png.bytes.readUInt32BE(16)).toBe(1520);
+    const rows = await page.locator('.save').all();
+    const names: string[] = [];
+    for (const row of rows) {
+      const svg = await save(row.getByText('Save as SVG'));
+      expect(svg.bytes.toString()).toMatch(/^<svg xmlns=.*Drawn from the run with hash 5f0c2b7e/);
+      const [, width = ''] = /viewBox="0 0 ([\d.]+) /.exec(svg.bytes.toString()) ?? [];
+      const png = await save(row.getByText('Save as PNG'));
+      expect(png.bytes.subarray(1, 4).toString()).toBe('PNG');
+      expect(png.bytes.readUInt32BE(16)).toBe(2 * Number(width));
+      expect(png.bytes.length).toBeGreaterThan(2000);
+      expect(png.name).toBe(svg.name.replace('.svg', '.png'));
+      names.push(svg.name);
+      // The patches, far below, are those of the year that was marked above.
+      if (svg.name.includes('abundance-1')) expect(svg.bytes.toString().match(/ in 2026</g)).toHaveLength(8);
+    }
+    const title = 'reed-hare-on-the-harrow-levels';
+    expect(names).toEqual(
+      ['answer', 'map', 'chances-1', 'chances-2', 'abundance', 'abundance-1'].map((part) => `${title}-${part}.svg`),
+    );
+    expect(await page.locator('figure, .smalls').count()).toBe(rows.length);
     expect(complaints).toEqual([]);
     await close();
   });

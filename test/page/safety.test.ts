@@ -29,6 +29,7 @@ describe('hostile text in a model', () => {
 
   it('stays text when the script draws it again', async () => {
     const { page, complaints, close } = await open(browser, html);
+    await page.locator('summary', { hasText: 'numbers of the map' }).click();
     await page.locator('#year').focus();
     await page.keyboard.press('Home');
     await page.locator('.wide [data-patch][tabindex="0"]').focus();
