@@ -25,7 +25,8 @@ import {
   precisionOf,
   withPrecision,
 } from './results/precision.ts';
-import type { PathGrowth, PathResults, ReachedPrecision, RunResults } from './results/results.ts';
+import { rareResults } from './results/rare/splitting.ts';
+import type { PathGrowth, PathResults, RareResult, ReachedPrecision, RunResults } from './results/results.ts';
 import { openReduction, summariseOutcomes, summarisePath, summariseRun } from './results/summarise.ts';
 
 export { compileSpec, type Compilation, type CompiledModel } from './compilation.ts';
@@ -57,7 +58,17 @@ export function runModel(compiled: CompiledModel, options: RunOptions = {}): Run
     if (reached?.reached !== false) break;
     expected = expectedReplicates(done, reached);
   }
-  return withPrecision(model, summarise({ ...compiled, model: { ...model, replicates: done } }, reduction));
+  const results = withPrecision(model, summarise({ ...compiled, model: { ...model, replicates: done } }, reduction));
+  return model.rare === true ? { ...results, rare: splitAll(compiled) } : results;
+}
+
+/** The outcomes by splitting, in this thread. */
+function splitAll({ model, image }: CompiledModel): readonly RareResult[] {
+  const work = rareResults(model, image);
+  for (;;) {
+    const { done, value } = work.next();
+    if (done === true) return value;
+  }
 }
 
 /** Null where no precision was asked for. */
@@ -103,18 +114,38 @@ export async function runModelWith(
     expected = expectedReplicates(done, reached);
   }
   const results = summarise({ ...compiled, model: { ...model, replicates: done } }, reduction);
-  return { compiled, results: withPrecision(model, results) };
+  const plain = withPrecision(model, results);
+  if (model.rare !== true) return { compiled, results: plain };
+  const rare = await splitUnlessStopped(compiled, options);
+  if (rare === null) return { compiled: withSettings(compiled, { replicates: done }), results: plain };
+  return { compiled, results: { ...plain, rare } };
+}
+
+/** Null where it was told to stop before all repeats were done. */
+async function splitUnlessStopped(
+  { model, image }: CompiledModel,
+  { signal, onProgress }: CrewOptions,
+): Promise<readonly RareResult[] | null> {
+  const work = rareResults(model, image);
+  for (;;) {
+    const { done, value } = work.next();
+    if (done === true) return value;
+    onProgress?.(Math.round(value * model.replicates), model.replicates);
+    await new Promise((resolve) => setTimeout(resolve));
+    if (signal?.aborted === true) return null;
+  }
 }
 
 /** As if less had been asked for: what was finished of a run. */
 export function withSettings(compiled: CompiledModel, done: { replicates: number } | { draws: number }): CompiledModel {
   const { named, ...core } = compiled.spec;
   const run = { ...core.run, ...done };
-  // What is left was not to be precise.
+  // What is left was not to be precise, nor to be split.
   delete run.precision;
   delete run['at-most'];
+  delete run.rare;
   const spec = { ...core, run, named };
-  const model = { ...compiled.model, ...done, precision: undefined };
+  const model = { ...compiled.model, ...done, precision: undefined, rare: undefined };
   return { ...compiled, spec, model, provenance: provenanceOf(model.title, spec) };
 }
 

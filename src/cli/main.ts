@@ -152,7 +152,7 @@ function addRuns(program: Command): void {
     'at-most',
     'threads',
   ] as const;
-  addOptions(program.command('run'), [...chance, 'json', 'out', 'places', 'quiet', 'allow'])
+  addOptions(program.command('run'), [...chance, 'rare', 'json', 'out', 'places', 'quiet', 'allow'])
     .argument('[model]', 'a model file, or - for standard input')
     .description('run the model many times with chance')
     .option('--again <file>', 'run what a run.json of `--out` holds, to the last byte')

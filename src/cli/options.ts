@@ -9,6 +9,7 @@ export interface CommonOptions {
   readonly replicates?: number;
   readonly seed?: number;
   readonly draws?: number;
+  readonly rare?: boolean;
   readonly precision?: number | undefined;
   readonly atMost?: number | undefined;
   readonly scenario?: string;
@@ -26,6 +27,7 @@ type Shared =
   | 'replicates'
   | 'seed'
   | 'draws'
+  | 'rare'
   | 'precision'
   | 'at-most'
   | 'scenario'
@@ -43,6 +45,7 @@ const options: Readonly<Record<Shared, () => Option>> = {
   seed: () =>
     new Option('--seed <n>', 'the number that decides all chance').argParser(wholeFrom(0, Number.MAX_SAFE_INTEGER)),
   draws: () => new Option('--draws <n>', 'how often to draw what is not known').argParser(wholeFrom(0, 100_000)),
+  rare: () => new Option('--rare', 'estimate rare outcomes by splitting, too'),
   precision: () =>
     new Option(
       '--precision <share>',
@@ -76,6 +79,7 @@ export function settingsOf({
   replicates,
   seed,
   draws,
+  rare,
   scenario,
   precision,
   atMost,
@@ -86,6 +90,7 @@ export function settingsOf({
     ...(replicates === undefined ? {} : { replicates }),
     ...(seed === undefined ? {} : { seed }),
     ...(draws === undefined ? {} : { draws }),
+    ...(rare === undefined ? {} : { rare }),
     ...(precision === undefined ? {} : { precision }),
     ...(atMost === undefined ? {} : { atMost }),
     ...(scenario === undefined ? {} : { scenario }),

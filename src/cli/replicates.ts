@@ -64,15 +64,16 @@ function checked({ compiled, results }: FinishedRun, model: CompiledModel['model
     throw new Ending(exitCodes.work, `Stopped before the first of ${asked} replicates was finished.`);
   }
   const cutShort = (done: number, of: string, what: string, option: string): Ending => {
-    const whole =
+    const early =
       model.precision === undefined ? `of ${of} ${what}` : `${what}, before the chances were known as well as asked`;
+    const whole = model.rare === true && done >= model.replicates ? `${what}, before the outcomes were split` : early;
     return new Ending(
       exitCodes.work,
       `Stopped after ${done.toLocaleString('en')} ${whole}; the results are those of \`--${option} ${done}\`.`,
     );
   };
   // What is left of a run that was to be precise asks for no precision.
-  const stopped = compiled.model.precision !== model.precision;
+  const stopped = compiled.model.precision !== model.precision || compiled.model.rare !== model.rare;
   const draws = drawsAsked(model);
   if (results.draws !== undefined && (stopped || results.draws.number < draws)) {
     return { compiled, results, cutShort: cutShort(results.draws.number, String(draws), 'draws', 'draws') };

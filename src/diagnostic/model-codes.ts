@@ -106,6 +106,7 @@ export const modelCodes = {
   // Start and outcomes
   'start-empty-class': 'The start has animals of a class that is always empty at the count.',
   'start-needs-spread': 'A stable spread does not exist here.',
+  'rare-shape': 'Splitting is asked for where it does not hold.',
   'precision-shape': 'A run is to be precise in a way that cannot be.',
   'start-nobody': 'The start has no animals.',
   'already-so': 'An outcome is so from the start, or can never be.',

@@ -126,6 +126,24 @@ const Draws = Type.Object({
   ),
 });
 
+const Rare = Type.Object({
+  outcome: part.text("The author's name."),
+  definition: part.text('In words, from the rule itself.'),
+  reason: part.maybeText('Why there is no estimate; null where there is one.'),
+  probability: part.orNull(part.share('Of having ever been below.')),
+  standardError: part.maybe('From how far the repeats lie apart.'),
+  interval: part.orNull(Interval),
+  levels: Type.Array(
+    Type.Object({
+      below: part.number('A level; the last is the threshold of the outcome.'),
+      passed: part.share('Of the trials from the level before, in the mean over the repeats.'),
+    }),
+  ),
+  repeats: part.whole('Independent ones of the whole.'),
+  trials: part.whole('Of each level in each repeat.'),
+  replicateYears: part.whole('Years of replicates that it took.'),
+});
+
 const Precision = Type.Object(
   {
     asked: part.share('Half the width of a 95 % interval from the number of runs that was asked for.'),
@@ -171,6 +189,7 @@ export const RunSchema = Type.Object({
     Type.Literal(true, { description: 'The model says how sure its numbers are, but no draws were asked for.' }),
   ),
   precision: Type.Optional(Precision),
+  rare: Type.Optional(Type.Array(Rare, { description: 'By splitting; absent where it was not asked for.' })),
   draws: Type.Optional(Draws),
   stopped: Type.Object({
     runs: part.whole('Runs that had to be stopped; they are in no other number.'),

@@ -327,6 +327,8 @@ export interface Model {
   readonly replicates: number;
   /** Absent where just the replicates are run. */
   readonly precision?: Precision | undefined;
+  /** Whether chances are estimated by splitting, too. */
+  readonly rare?: true | undefined;
   readonly seed: number;
   /** Every default that was used, in words. */
   readonly defaults: readonly string[];

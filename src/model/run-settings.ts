@@ -6,13 +6,48 @@ const defaultReplicates = 1000;
 const defaultSeed = 1;
 const defaultAtMost = 100_000;
 
-export function runSettings(context: Context): Pick<Model, 'replicates' | 'seed' | 'draws' | 'precision'> {
+export function runSettings(context: Context): Pick<Model, 'replicates' | 'seed' | 'draws' | 'precision' | 'rare'> {
   const { spec, defaults } = context;
   const { seed, draws = 0, replicates = defaultReplicates } = spec.run ?? {};
   if (spec.run?.replicates === undefined) defaults.push(`A run has ${defaultReplicates} replicates.`);
   if (seed === undefined) defaults.push(`The seed is ${defaultSeed}.`);
   const precision = precisionOf(context, replicates * Math.max(1, draws));
-  return { replicates, seed: seed ?? defaultSeed, draws, ...(precision === null ? {} : { precision }) };
+  return {
+    replicates,
+    seed: seed ?? defaultSeed,
+    draws,
+    ...(precision === null ? {} : { precision }),
+    ...(rareAsked(context) ? { rare: true } : {}),
+  };
+}
+
+function rareAsked(context: Context): boolean {
+  const { rare, draws = 0 } = context.spec.run ?? {};
+  if (rare !== true) return false;
+  const path = ['run', 'rare'];
+  if (draws > 0) {
+    fail(context, 'rare-shape', path, {
+      message: 'Splitting is of one model, and `draws` makes many',
+      part: 'key',
+      details: {
+        expected: 'either `rare` or `draws`',
+        reason:
+          'Over draws the rarest risks come from the draws with the worst numbers, which plain runs of each draw find.',
+      },
+    });
+  }
+  const rules = Object.values(context.spec.outcomes ?? {});
+  if (!rules.some((rule) => rule.below !== undefined && rule.for === undefined)) {
+    fail(context, 'rare-shape', path, {
+      message: 'There is no outcome that can be split',
+      part: 'key',
+      details: {
+        expected: 'an outcome with `below` and without `for`',
+        reason: 'Only a count that ever lies below a number can be come to level by level.',
+      },
+    });
+  }
+  return true;
 }
 
 function precisionOf(context: Context, first: number): Precision | null {

@@ -5,6 +5,7 @@ import { answer, finished, lastYear } from './answer.ts';
 import { handledWords } from './handled-words.ts';
 import { outsideWords } from './section/counted.ts';
 import { lowestWords } from './lowest-words.ts';
+import { rareWords } from './rare-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { whenWords } from './when-words.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
@@ -23,6 +24,9 @@ export function runText(results: RunResults, style: RunTextStyle): string {
       text === null ? '' : wrap(text, style),
     ),
     outcomeTable(results, style),
+    rareWords(results)
+      .map((text) => wrap(text, style))
+      .join('\n'),
     course(results, animals, style),
     numbers(results, animals, style),
     cautionList(results.cautions, style),

@@ -120,6 +120,25 @@ export interface Sketched {
   readonly relativeError: number;
 }
 
+/** The chance of an outcome by splitting, for those too rare for plain runs; or why there is none. */
+export interface RareResult {
+  readonly outcome: string;
+  readonly definition: string;
+  /** Null where there is an estimate. */
+  readonly reason: string | null;
+  /** Of having ever been below, as in plain runs. */
+  readonly probability: number | null;
+  readonly standardError: number | null;
+  readonly interval: Interval | null;
+  /** From high to low, the threshold of the outcome last, with the share of the trials from the level before that passed. */
+  readonly levels: readonly { readonly below: number; readonly passed: number }[];
+  readonly repeats: number;
+  /** Of each level in each repeat. */
+  readonly trials: number;
+  /** Years of replicates that it took, those of the pilot among them. */
+  readonly replicateYears: number;
+}
+
 /** What a run that goes on until it is precise came to. */
 export interface ReachedPrecision {
   /** Half the width of a 95 % interval from the number of runs: what was asked for, and the widest of any outcome. */
@@ -179,6 +198,8 @@ export interface RunResults {
   readonly sketched: readonly Sketched[];
   /** Where the model says how sure its numbers are, but no draws were asked for. */
   readonly notDrawn?: true;
+  /** One an outcome; absent where it was not asked for. */
+  readonly rare?: readonly RareResult[];
   /** Absent where no precision was asked for. */
   readonly precision?: ReachedPrecision;
   /** Draws of what is not known: absent where none were asked for. */

@@ -7,6 +7,7 @@ export interface Settings {
   readonly replicates?: number;
   readonly seed?: number;
   readonly draws?: number;
+  readonly rare?: boolean;
   readonly precision?: number;
   readonly atMost?: number;
   readonly scenario?: string;
@@ -33,7 +34,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
     const expression = value.trim() !== '' && Number.isFinite(number) ? number : value;
     parameters[name] = typeof before === 'object' ? { ...before, value: expression } : expression;
   }
-  const { years, replicates, seed, draws, scenario, precision, atMost } = settings;
+  const { years, replicates, seed, draws, scenario, rare, precision, atMost } = settings;
   // What the author named stays last, so that the spec reads back from its JSON with its keys in the same order.
   const { named, ...core } = spec;
   return {
@@ -47,6 +48,7 @@ export function applySettings(spec: Spec, settings: Settings): Applied {
         ...(replicates === undefined ? {} : { replicates }),
         ...(seed === undefined ? {} : { seed }),
         ...(draws === undefined ? {} : { draws }),
+        ...(rare === undefined ? {} : { rare }),
         ...(precision === undefined ? {} : { precision }),
         ...(atMost === undefined ? {} : { 'at-most': atMost }),
         ...(scenario === undefined ? {} : { scenario }),

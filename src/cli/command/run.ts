@@ -35,14 +35,14 @@ export async function runCommand(path: string | undefined, options: RunCommandOp
 }
 
 function load(path: string | undefined, options: RunCommandOptions): CompiledModel {
-  const { again, set, scenario, years, replicates, seed, draws, precision, atMost } = options;
+  const { again, set, scenario, years, replicates, seed, draws, rare, precision, atMost } = options;
   if (again === undefined) {
     if (path === undefined) throw new Ending(exitCodes.usage, 'Name a model, or a run.json with --again.');
     return loadModel(path, settingsOf(options), options).compiled;
   }
-  if ([path, set, scenario, years, replicates, seed, draws, precision, atMost].some((one) => one !== undefined)) {
+  if ([path, set, scenario, years, replicates, seed, draws, rare, precision, atMost].some((one) => one !== undefined)) {
     const why =
-      '--again takes the model and all that decides the result (--set, --scenario, --years, --replicates, --seed, --draws, --precision, --at-most) from its file; leave them out.';
+      '--again takes the model and all that decides the result (--set, --scenario, --years, --replicates, --seed, --draws, --rare, --precision, --at-most) from its file; leave them out.';
     throw new Ending(exitCodes.usage, why);
   }
   return loadAgain(again);

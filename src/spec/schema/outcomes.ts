@@ -173,6 +173,14 @@ export const Run = Type.Object(
         'x-unit': 'share',
       }),
     ),
+    rare: Type.Optional(
+      Type.Boolean({
+        description:
+          'Estimates the chances of outcomes that are too rare for plain runs as well, by splitting futures that come near; each of 24 repeats takes so many replicates for each level.',
+        examples: [true],
+        default: false,
+      }),
+    ),
     'at-most': Type.Optional(
       Type.Integer({
         minimum: 1,
