@@ -1,4 +1,5 @@
 // From a spec to a model: names resolved, defaults filled, one unit system. Every mistake is found, not only the first.
+import { expandStages } from '../spec/expand-stages.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Context } from './context.ts';
@@ -30,8 +31,9 @@ export function resolveModel(spec: Spec): Resolved {
 
 /** With what it was resolved from, for those who ask further. */
 export function resolveWithContext(spec: Spec): Resolved & { readonly context: Context } {
-  const findings: Finding[] = [];
-  const context = contextOf(spec, findings);
+  const expanded = expandStages(spec);
+  const findings: Finding[] = [...expanded.findings];
+  const context = contextOf(expanded.spec, findings);
   checkNames(context);
   const phases = resolvePhases(context);
   const parts = {

@@ -17,6 +17,8 @@ export function resolveStages(context: Context, next: Int32Array): readonly Stag
       return [];
     }
     const years = context.numbers.value(written, [...path, 'years'], { year: context.time.firstYear });
+    // Those that could not be written year by year were told already.
+    if (as === 'expanded') return [];
     if (years >= 1 && Number.isFinite(years)) return [{ class: c, years, as }];
     if (!Number.isNaN(years)) {
       fail(context, 'stage-duration', [...path, 'years'], {

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { buildBlock } from '../../src/compile/block.ts';
 import { leading } from '../../src/numeric/leading.ts';
 import { toDense } from '../../src/numeric/sparse.ts';
-import type { CompiledModel } from '../../src/pipeline.ts';
+import { followPath, type CompiledModel } from '../../src/pipeline.ts';
 import { compileText } from '../pipeline/compile-text.ts';
 
 interface Life {
@@ -88,6 +88,72 @@ start: { total: 80 }
 `);
     // Young are born into the first year and age at once: the stage lasts five ageings for them, too.
     expect(stage).toBeCloseTo(growthOf(years), 10);
+  });
+});
+
+describe('a stage that is followed year by year', () => {
+  const expanded = (births: number) =>
+    compileText(text({ survival: 0.8, duration: '{ years: 5, as: expanded }', births }));
+
+  test('is that many classes, of the same rates', () => {
+    const { model } = expanded(3);
+    expect(model.classes).toEqual(['juvenile 1', 'juvenile 2', 'juvenile 3', 'juvenile 4', 'juvenile 5', 'adult']);
+    const survival = model.phases.flatMap((phase) => (phase.kind === 'survival' ? [...phase.survival.epochs[0]!] : []));
+    expect(survival).toEqual([0.8, 0.8, 0.8, 0.8, 0.8, 0.5]);
+  });
+
+  test.each([0.4, 3, 40])('grows as a fixed one with %s births', (births) => {
+    const fixed = compileText(text({ survival: 0.8, duration: '{ years: 5, as: fixed }', births }));
+    expect(growthOf(expanded(births))).toBeCloseTo(growthOf(fixed), 10);
+  });
+
+  test('nobody leaves it before its time; from a fixed one the first are gone after a year', () => {
+    const start = (as: string, young: string) =>
+      compileText(
+        text({ survival: 0.8, duration: `{ years: 5, as: ${as} }`, births: 3 })
+          .replace('start: { total: 80 }', `start: { table: { Scrub: { ${young}: 100 } } }`)
+          .replace('years: 3\n', 'years: 6\n'),
+      );
+    const adults = (compiled: CompiledModel) =>
+      followPath(compiled)
+        .abundance.filter((one) => one.class === 'adult')
+        .map(({ animals }) => animals);
+    // Those born age at once, so that nobody is in the first year at the count.
+    expect(adults(start('expanded', 'juvenile 2')).slice(0, 4)).toEqual([0, 0, 0, 0]);
+    expect(adults(start('expanded', 'juvenile 2'))[4]).toBeCloseTo(100 * 0.8 ** 4, 10);
+    expect(adults(start('fixed', 'juvenile'))[1]).toBeGreaterThan(1);
+  });
+
+  test('its name stands for all its years in lists, by class and in `into`', () => {
+    const { model } = compileText(`
+skein: 1
+study: { title: Names of stages (invented) }
+years: 3
+patches: [{ name: Scrub, room: 40 }, { name: Dunes, room: 20 }]
+counts: females
+classes: [egg, juvenile, adult]
+oldest: open-ended
+duration: { juvenile: { years: 3, as: expanded } }
+survival: { egg: 0.3, juvenile: 0.7, adult: 0.9 }
+births: { adult: 4, into: juvenile }
+in: { Dunes: { survival: { juvenile: 0.6 } } }
+year: [count, breeding, survival, roaming, bag, ageing]
+roaming: { kind: dispersal, classes: [juvenile], shares: { Scrub: { Dunes: 0.1 }, Dunes: { Scrub: 0.1 } } }
+bag: { kind: take, in: Scrub, classes: [juvenile, adult], number: 2 }
+crowding: { form: ricker, changes: { survival: [juvenile] }, counted: { juvenile: 0.5, adult: 1 }, capacity: room }
+start: { counted: { Scrub: 20, Dunes: 9 }, of: [juvenile, adult], rest: none }
+outcomes: { few: { of: { juvenile: 0.25, adult: 1 }, below: 3 } }
+`);
+    const dispersal = model.phases.find((phase) => phase.kind === 'dispersal')!;
+    expect([...dispersal.moves]).toEqual([0, 1, 1, 1, 0]);
+    expect([...model.phases.find((phase) => phase.kind === 'breeding')!.into]).toEqual([0, 1, 0, 0, 0]);
+    expect([...model.phases.find((phase) => phase.kind === 'take')!.classes]).toEqual([0, 1, 1, 1, 1]);
+    expect([...model.crowding[0]!.counted]).toEqual([0, 0.5, 0.5, 0.5, 1]);
+    expect([...model.crowding[0]!.changes[0]!.classes]).toEqual([0, 1, 1, 1, 0]);
+    expect([...model.outcomes[0]!.weights[0]!]).toEqual([0, 0.25, 0.25, 0.25, 1]);
+    const survival = model.phases.find((phase) => phase.kind === 'survival')!.survival.epochs[0]!;
+    // Patches stand in the order of their names.
+    expect([...survival.subarray(0, 5)]).toEqual([0.3, 0.6, 0.6, 0.6, 0.9]);
   });
 });
 

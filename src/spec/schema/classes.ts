@@ -60,9 +60,9 @@ export const Duration = Type.Record(
         examples: [7],
         'x-unit': 'years',
       }),
-      as: Type.Union([Type.Literal('fixed'), Type.Literal('geometric')], {
+      as: Type.Union([Type.Literal('fixed'), Type.Literal('geometric'), Type.Literal('expanded')], {
         description:
-          'How it lasts. `fixed`: for all animals alike; the share that goes on each year is that of a stable make-up of ages within the stage. `geometric`: a share of 1/years goes on each year, however long an animal has been there.',
+          'How it lasts. `fixed`: for all animals alike; the share that goes on each year is that of a stable make-up of ages within the stage. `geometric`: a share of 1/years goes on each year, however long an animal has been there. `expanded`: each year is a class of its own, `juvenile 1`, `juvenile 2` and so on, and the name of the stage stands for all of them.',
         examples: ['fixed'],
       }),
     },

@@ -20,6 +20,7 @@ const FemaleShare = expression({
 const Into = Type.String({
   ...Name,
   title: 'a class',
+  'x-classes': true,
   description: 'Class that the young enter; without it, the first class.',
   examples: ['newborn'],
 });

@@ -56,7 +56,7 @@ export function byClass(words: KeyWords) {
 }
 
 export function classList(words: KeyWords) {
-  return Type.Union([Type.Array(Name, { minItems: 1, uniqueItems: true }), Type.Literal('all')], {
+  return Type.Union([Type.Array(Name, { minItems: 1, uniqueItems: true, 'x-classes': true }), Type.Literal('all')], {
     title: 'a list of classes, or `all`',
     ...words,
   });

@@ -28,6 +28,8 @@ export interface Shape {
   readonly 'x-unit'?: string;
   /** What the keys that the author chooses are, such as CLASS. */
   readonly 'x-key'?: string;
+  /** A list of names of classes, or one such name. */
+  readonly 'x-classes'?: boolean;
   /** Its keys are described elsewhere. */
   readonly 'x-brief'?: boolean;
   /** Years with numbers, which becomes an expression. */
