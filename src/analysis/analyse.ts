@@ -13,7 +13,14 @@ import {
   transientsAnswer,
   worthAnswer,
 } from './answer-growth.ts';
-import { capacityAnswer, differenceAnswer, linksAnswer, patchesAnswer, spreadAnswer } from './answer-landscape.ts';
+import {
+  capacityAnswer,
+  differenceAnswer,
+  linksAnswer,
+  patchesAnswer,
+  removalsOf,
+  spreadAnswer,
+} from './answer-landscape.ts';
 import { cautionsFor } from './cautions.ts';
 import type { AnalysisInput } from './input.ts';
 import type { Analysis } from './schema.ts';
@@ -29,6 +36,7 @@ export function analyse(input: AnalysisInput): Analysis {
   const withVectors = <T>(ask: (vectors: Vectors) => Answer<T>): Answer<T> =>
     vectors ? ask(vectors) : because(found.reason ?? 'There is no single stable distribution.');
   const plain = <T>(ask: (vectors: Vectors) => T): Answer<T> => withVectors((given) => ({ value: ask(given) }));
+  const around = vectors && removalsOf(input, vectors);
   const all = spectrum(block.matrix, found);
   const tooLarge = `A block has more than ${largestDenseBlock} states.`;
   const life = lifeAnswers(block, input.split, vectors);
@@ -69,11 +77,11 @@ export function analyse(input: AnalysisInput): Analysis {
     ),
     patches: take(
       'patches',
-      plain((given) => patchesAnswer(input, given)),
+      plain((given) => patchesAnswer(input, { vectors: given, around })),
     ),
     links: take(
       'links',
-      plain((given) => linksAnswer(input, given)),
+      plain((given) => linksAnswer(input, { vectors: given, around })),
     ),
     transients: take(
       'transients',

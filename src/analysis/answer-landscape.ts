@@ -1,4 +1,5 @@
 // The parts of the analysis about patches, links, the network and the spread.
+import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 import { because, type Answer } from './answer.ts';
 import { growthDifference } from './difference.ts';
 import type { AnalysisInput } from './input.ts';
@@ -6,11 +7,32 @@ import { placesOf, stateName } from './label.ts';
 import { metapopulationCapacity } from './metapopulation-capacity.ts';
 import { patchRoles } from './patches.ts';
 import { phaseSensitivities } from './phase-sensitivity.ts';
-import { linkValues, patchRemovalLosses } from './removal.ts';
+import { linkValues, patchRemovalLosses, sharedInverse } from './removal.ts';
 import type { Analysis } from './schema.ts';
 import type { Vectors } from './sensitivity.ts';
+import type { Around } from './without.ts';
 
-export function patchesAnswer({ block, start }: AnalysisInput, vectors: Vectors): NonNullable<Analysis['patches']> {
+/** For all patches and links together; null where they are few. */
+export function removalsOf({ block }: AnalysisInput, vectors: Vectors): Around | null {
+  const ways = block.phaseMaps.reduce((sum, { map }) => sum + waysBetween(map, block.classes.length), 0);
+  return sharedInverse(block.matrix, vectors, block.patches.length + ways);
+}
+
+function waysBetween(map: SparseMatrix, classes: number): number {
+  let ways = 0;
+  forEachEntry(map, (row, column) => (ways += Math.floor(row / classes) === Math.floor(column / classes) ? 0 : 1));
+  return ways;
+}
+
+export interface WithAround {
+  readonly vectors: Vectors;
+  readonly around: Around | null;
+}
+
+export function patchesAnswer(
+  { block, start }: AnalysisInput,
+  { vectors, around }: WithAround,
+): NonNullable<Analysis['patches']> {
   const { matrix, states, patches } = block;
   const [share, importance] = [new Float64Array(patches.length), new Float64Array(patches.length)];
   states.forEach(({ patch }, s) => {
@@ -20,7 +42,7 @@ export function patchesAnswer({ block, start }: AnalysisInput, vectors: Vectors)
   });
   const roles = patchRoles(matrix, states, vectors.right, patches.length);
   const now = start && patchRoles(matrix, states, start, patches.length);
-  const losses = patchRemovalLosses(matrix, states, vectors, importance);
+  const losses = patchRemovalLosses({ matrix, states, vectors, importance, around });
   return roles.map((role, p) => ({
     patch: patches[p] ?? '?',
     share: share[p] ?? 0,
@@ -30,7 +52,7 @@ export function patchesAnswer({ block, start }: AnalysisInput, vectors: Vectors)
   }));
 }
 
-export function linksAnswer({ block }: AnalysisInput, vectors: Vectors): NonNullable<Analysis['links']> {
+export function linksAnswer({ block }: AnalysisInput, { vectors, around }: WithAround): NonNullable<Analysis['links']> {
   const places = placesOf(block);
   const phases = phaseSensitivities(block.phaseMaps, places, vectors);
   const links = linkValues({
@@ -39,6 +61,7 @@ export function linksAnswer({ block }: AnalysisInput, vectors: Vectors): NonNull
     phases,
     places,
     classCount: block.classes.length,
+    around,
   });
   return links.map((link) => ({
     ...link,
@@ -63,8 +86,10 @@ export function spreadAnswer({ spread }: AnalysisInput): Answer<NonNullable<Anal
   return { value: spread.value.map(({ parameters, ...land }) => ({ ...land, parameters: [...parameters] })) };
 }
 
-export function differenceAnswer({ block, reference }: AnalysisInput): Answer<NonNullable<Analysis['ltre']>> {
-  if (!reference) return because('Nothing was given to compare with.');
+export function differenceAnswer({ block, against }: AnalysisInput): Answer<NonNullable<Analysis['ltre']>> {
+  if (!against) return because('Nothing was given to compare with.');
+  if (against.value === null) return against;
+  const { name, matrix: reference, parameters } = against.value;
   const found = growthDifference(block.matrix, reference);
   if (!found) return because('The matrix half-way between the two has no single stable distribution.');
   const contributions = found.contributions.map(({ row, column, difference, contribution }) => ({
@@ -73,5 +98,15 @@ export function differenceAnswer({ block, reference }: AnalysisInput): Answer<No
     difference,
     contribution,
   }));
-  return { value: { difference: found.difference, unexplained: found.unexplained, contributions } };
+  const explained = (parameters.value ?? []).reduce((sum, { contribution }) => sum + contribution, 0);
+  const byParameter =
+    parameters.value === null
+      ? { parameters: null, unexplainedByParameters: null, whyNoParameters: parameters.reason }
+      : {
+          parameters: parameters.value.map((one) => ({ ...one })),
+          unexplainedByParameters: found.difference - explained,
+          whyNoParameters: null,
+        };
+  const { difference, unexplained } = found;
+  return { value: { against: name, difference, unexplained, contributions, ...byParameter } };
 }

@@ -1,5 +1,5 @@
 // Which entries make two matrices grow differently: a life table response experiment with fixed treatments.
-import { leading } from '../numeric/leading.ts';
+import { growthRateOf, leading } from '../numeric/leading.ts';
 import { weightedSum } from '../numeric/sparse-product.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 import { dot, vectorsOf } from './sensitivity.ts';
@@ -35,6 +35,6 @@ export function growthDifference(treated: SparseMatrix, reference: SparseMatrix)
     explained += contribution;
     contributions.push({ row, column, difference, contribution });
   });
-  const difference = leading(treated).growthRate - leading(reference).growthRate;
+  const difference = growthRateOf(treated) - growthRateOf(reference);
   return { difference, contributions, unexplained: difference - explained };
 }

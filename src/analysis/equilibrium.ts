@@ -2,7 +2,7 @@
 import { exp, log } from '../machine/pinned.ts';
 import { solveDense } from '../numeric/dense-solve.ts';
 import { eigenvalues, modulus } from '../numeric/eigenvalues.ts';
-import { leading } from '../numeric/leading.ts';
+import { growthRateOf } from '../numeric/leading.ts';
 import type { DenseMatrix } from '../numeric/sparse.ts';
 import { jacobianOf, type YearMap } from './year-map.ts';
 
@@ -19,7 +19,7 @@ const settledShare = 1e-12;
 
 /** Growth from almost nobody: the growth rate of the matrix at zero, above 1 where the species can come in. */
 export function invasionGrowth(map: YearMap): number {
-  return leading(map.matrixAt(new Float64Array(map.states))).growthRate;
+  return growthRateOf(map.matrixAt(new Float64Array(map.states)));
 }
 
 /**
@@ -39,6 +39,19 @@ export function equilibriumFrom(map: YearMap, start: Float64Array, longest = 20_
   }
   const sharp = sharpen(map, animals);
   return sharp && describe(map, sharp);
+}
+
+/** Where the years end that lead from a start, whether numbers would come back to it or not; null where they still move. */
+export function settledFrom(apply: YearMap['apply'], start: Float64Array, longest: number): Float64Array | null {
+  let animals = start;
+  for (let year = 0; year < longest; year++) {
+    const next = apply(animals);
+    const change = distance(next, animals);
+    animals = next;
+    if (size(animals) < 1e-9 * Math.max(1, size(start))) return new Float64Array(animals.length);
+    if (!(change > 1e-10 * size(animals))) return animals;
+  }
+  return null;
 }
 
 /** The stable equilibrium within a tenth of where numbers are, if Newton's method finds one: slow approaches end early. */

@@ -2,6 +2,7 @@
 import type { BlockMatrix } from '../compile/block-matrix.ts';
 import type { DenseMatrix, SparseMatrix } from '../numeric/sparse.ts';
 import type { Answer } from './answer.ts';
+import type { Against } from './difference-input.ts';
 import type { LifeSplit } from './life-history.ts';
 import type { Network } from './metapopulation-capacity.ts';
 import type { SmallNoise } from './small-noise.ts';
@@ -45,8 +46,7 @@ export interface AnalysisInput {
   readonly uncertainty?: Answer<NamedCovariance>;
   readonly network?: Answer<Network>;
   readonly spread?: Answer<readonly LandSpeed[]>;
-  /** What the growth is compared with, over the same states. */
-  readonly reference?: SparseMatrix;
+  readonly against?: Answer<Against>;
   /** Nobody dies on the way in any dispersal. */
   readonly losslessDispersal?: boolean;
   /** The matrix is that of small changes around a make-up of the sexes. */

@@ -4,7 +4,7 @@ import type { AtState, BlockMatrix } from '../compile/block-matrix.ts';
 import { phaseMap } from '../compile/phase-map.ts';
 import { linearisedBlock } from '../compile/slopes/linearised.ts';
 import { yearJacobian } from '../compile/slopes/year-jacobian.ts';
-import { nearZero, productOf, runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
+import { nearZero, productOf, runYear, type Compiled } from '../compile/year-map.ts';
 import type { Model } from '../model/model.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
@@ -13,12 +13,13 @@ import type { CompiledModel } from '../pipeline.ts';
 import { because, type Answer } from './answer.ts';
 import { estimateErrors } from './chance/estimate-errors.ts';
 import { modelYears } from './chance/model-years.ts';
-import { equilibriumFrom } from './equilibrium.ts';
 import type { AnalysisInput, NamedCovariance } from './input.ts';
 import { placesOf } from './label.ts';
 import type { LifeSplit } from './life-history.ts';
 import { networkOf } from './network.ts';
+import { quickYear } from './quick-year.ts';
 import { parameterTangents } from './parameter-tangents.ts';
+import { dependsOnNumbers, stateAt } from './state-at.ts';
 import { modelSpread } from './spread/model-spread.ts';
 import type { YearMap } from './year-map.ts';
 
@@ -69,26 +70,14 @@ function apart({ matrix }: BlockMatrix, { fates }: LifeSplit): LifeSplit {
   return { fates, births: { ...births, values: births.values.map((young) => Math.max(0, young)) } };
 }
 
-function stateAt(compiled: CompiledModel, at: AtState): Float64Array | null {
-  const { startAnimals } = compiled;
-  if (at === 'zero') return nearZero(compiled);
-  if (at === 'start') return startAnimals;
-  if (!dependsOnNumbers(compiled.model)) return null;
-  return equilibriumFrom(wholeYear(compiled), startAnimals)?.animals ?? null;
-}
-
 function needsBoth({ phases }: Model): boolean {
   return phases.some(
     (phase) => phase.kind === 'breeding' && (phase.mating?.form ?? 'female-dominant') !== 'female-dominant',
   );
 }
 
-function dependsOnNumbers(model: Model): boolean {
-  return model.crowding.length > 0 || model.phases.some(({ kind }) => kind === 'ceiling');
-}
-
 function yearOver(compiled: Compiled, places: readonly number[]): YearMap {
-  const whole = wholeYear(compiled);
+  const whole = quickYear(compiled);
   const spread = (animals: Float64Array): Float64Array => {
     const all = new Float64Array(whole.states);
     places.forEach((place, s) => (all[place] = animals[s] ?? 0));

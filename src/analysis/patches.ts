@@ -1,5 +1,5 @@
 // What each patch is to the whole: growth alone, contribution, self-recruitment, source or sink.
-import { leading } from '../numeric/leading.ts';
+import { growthRateOf } from '../numeric/leading.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 
@@ -42,7 +42,7 @@ export function patchRoles(
     const present = animals[p] ?? 0;
     const contribution = present > 0 ? (anywhere[p] ?? 0) / present : null;
     return {
-      growthAlone: group.length > 0 ? leading(principalPart(matrix, group)).growthRate : 0,
+      growthAlone: group.length > 0 ? growthRateOf(principalPart(matrix, group)) : 0,
       contribution,
       selfRecruitment: present > 0 ? (here[p] ?? 0) / present : null,
       role: contribution === null ? null : roleOf(contribution, [contribution, contribution]),

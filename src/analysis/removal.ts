@@ -1,11 +1,12 @@
 // What the growth rate loses when a patch or a link is taken away.
 import { irreducibleGrowth } from '../numeric/irreducible-pair.ts';
-import { leading } from '../numeric/leading.ts';
+import { growthRateOf } from '../numeric/leading.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
 import { entryAt, forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 import { statesByPatch, type PatchState } from './patches.ts';
 import type { Vectors } from './sensitivity.ts';
+import { aroundGrowth, lossWithout, lossWithoutStates, responseTo, type Around, type FewEntries } from './without.ts';
 import {
   firstOrderLoss,
   movedInsteadOfStaying,
@@ -13,8 +14,10 @@ import {
   type PhaseSensitivity,
 } from './phase-sensitivity.ts';
 
-/** Work that exact removals may take, in about a nanosecond each: seconds. */
-const workLimit = { patches: 9e9, links: 2.5e9 } as const;
+/** Work that removals one by one may take, in about a nanosecond each: seconds. */
+const workLimit = { patches: 4e9, links: 2.5e9 } as const;
+/** Below this all are quickest one by one. */
+const quickWork = 2e8;
 
 function workOf(matrix: SparseMatrix): number {
   const n = matrix.columns;
@@ -27,29 +30,61 @@ function growthOf(rest: SparseMatrix, vectors: Vectors, states: ArrayLike<number
   const quick = right.every((share) => share > 0)
     ? irreducibleGrowth(rest, { growthRate: vectors.growthRate, right })
     : null;
-  return quick ?? leading(rest).growthRate;
+  return quick ?? growthRateOf(rest);
+}
+
+/** One inverse for all losses, where there are too many to take them one by one. */
+export function sharedInverse(matrix: SparseMatrix, vectors: Vectors, removals: number): Around | null {
+  return removals * workOf(matrix) <= quickWork ? null : aroundGrowth(matrix, vectors);
+}
+
+export interface PatchRemovals {
+  readonly matrix: SparseMatrix;
+  readonly states: readonly PatchState[];
+  readonly vectors: Vectors;
+  /** By patch. */
+  readonly importance: Float64Array;
+  readonly around: Around | null;
 }
 
 /**
- * λ − λ without each patch, all animals of which are lost; recomputed whole. Where that would take longer than seconds, only
- * for the patches with the largest share of `importance`; the others are null.
+ * λ − λ without each patch, all animals of which are lost. What the shared inverse cannot tell is recomputed whole; where that would
+ * take longer than seconds, only for the patches with the largest share of `importance`; the others are null.
  */
-export function patchRemovalLosses(
-  matrix: SparseMatrix,
-  states: readonly PatchState[],
-  vectors: Vectors,
-  importance: Float64Array,
-): (number | null)[] {
+export function patchRemovalLosses({ matrix, states, vectors, importance, around }: PatchRemovals): (number | null)[] {
   const groups = statesByPatch(states, importance.length);
+  const quick = around === null ? groups.map(() => null) : quickLosses(around, groups, states);
   const affordable = Math.max(10, Math.floor(workLimit.patches / workOf(matrix)));
-  const order = groups.map((_, p) => p).sort((a, b) => (importance[b] ?? 0) - (importance[a] ?? 0) || a - b);
+  const order = groups
+    .flatMap((_, p) => (quick[p] === null ? [p] : []))
+    .sort((a, b) => (importance[b] ?? 0) - (importance[a] ?? 0) || a - b);
   const chosen = new Set(order.slice(0, affordable));
   return groups.map((_, patch) => {
-    if (!chosen.has(patch)) return null;
+    const known = quick[patch] ?? null;
+    if (known !== null || !chosen.has(patch)) return known;
     const rest = states.flatMap((state, s) => (state.patch === patch ? [] : [s]));
     const without = rest.length > 0 ? growthOf(principalPart(matrix, rest), vectors, rest) : 0;
     return Math.max(0, vectors.growthRate - without);
   });
+}
+
+/** Where the states that the inverse folds away are entered from their own patch alone, and so go with it. */
+function quickLosses(
+  around: Around,
+  groups: readonly (readonly number[])[],
+  states: readonly PatchState[],
+): (number | null)[] {
+  const { folding, matrix } = around.resolvent;
+  const folded = new Uint8Array(states.length);
+  for (const state of folding.folded) folded[state] = 1;
+  const open = new Uint8Array(groups.length);
+  forEachEntry(matrix, (row, column) => {
+    const [to, from] = [states[row]?.patch ?? 0, states[column]?.patch ?? 0];
+    if (folded[row] === 1 && to !== from) open[to] = 1;
+  });
+  const kept: number[][] = groups.map(() => []);
+  for (const state of folding.kept) kept[states[state]?.patch ?? 0]?.push(state);
+  return kept.map((own, patch) => (open[patch] === 1 ? null : lossWithoutStates(around, own)));
 }
 
 /** One way from a patch to another for one class in one phase. */
@@ -77,6 +112,7 @@ export interface LinkInput {
   /** Place of state s of the matrix among all states of the phase maps. */
   readonly places: readonly number[];
   readonly classCount: number;
+  readonly around: Around | null;
 }
 
 /**
@@ -86,16 +122,71 @@ export interface LinkInput {
  */
 export function linkValues(input: LinkInput): LinkValue[] {
   const links = input.phases.flatMap((phase, index) => linksOf(phase, input.classCount, index));
+  const quick = quickLinks(input, links);
   const affordable = Math.floor(workLimit.links / workOf(input.matrix));
   const order = links
-    .map((_, k) => k)
+    .flatMap((_, k) => (quick[k] === null ? [k] : []))
     .sort((a, b) => (links[b]?.firstOrder ?? 0) - (links[a]?.firstOrder ?? 0) || a - b);
   const chosen = new Set(order.slice(0, affordable));
   return links.map(({ link, firstOrder, row, column, index }, k) => {
-    const exact = chosen.has(k);
-    const removalLoss = exact ? exactLoss(input, index, { row, column }) : firstOrder;
+    const known = quick[k] ?? null;
+    const exact = known !== null || chosen.has(k);
+    const removalLoss = known ?? (exact ? exactLoss(input, index, { row, column }) : firstOrder);
     return { ...link, removalLoss: Math.max(0, removalLoss), exact };
   });
+}
+
+/** Work that the shared inverse may take for links. */
+const mostQuick = 6e9;
+
+/** Those that arrive in one place together: what an animal there becomes is asked for once. */
+function quickLinks({ matrix, phases, places, around }: LinkInput, links: readonly FoundLink[]): (number | null)[] {
+  const losses: (number | null)[] = links.map(() => null);
+  const byArrival = new Map<string, number[]>();
+  links.forEach(({ index, row }, k) => {
+    const key = `${index} ${row}`;
+    const same = byArrival.get(key);
+    if (same === undefined) byArrival.set(key, [k]);
+    else same.push(k);
+  });
+  if (around === null || byArrival.size * 8 * matrix.values.length > mostQuick) return losses;
+  const size = matrixSize(phases);
+  const departures = new Map<string, FewEntries>();
+  const departing = ({ index, column }: FoundLink): FewEntries => {
+    const key = `${index} ${column}`;
+    const earlier = phases.slice(0, index).reverse();
+    const made =
+      departures.get(key) ??
+      fewOf(
+        earlier.reduce((x, { map }) => multiplyTransposed(map, x), unit(size, column)),
+        places,
+      );
+    departures.set(key, made);
+    return made;
+  };
+  for (const same of byArrival.values()) {
+    const first = links[same[0] ?? 0];
+    if (first === undefined) continue;
+    const after = phases.slice(first.index + 1).reduce((x, { map }) => multiply(map, x), unit(size, first.row));
+    const arrived = Float64Array.from(places, (place) => after[place] ?? 0);
+    const from = responseTo(around, arrived);
+    for (const k of same) {
+      const link = links[k];
+      if (link !== undefined) losses[k] = lossWithout(around, from, departing(link), link.link.share);
+    }
+  }
+  return losses;
+}
+
+function fewOf(x: Float64Array, places: readonly number[]): FewEntries {
+  const found: { places: number[]; values: number[] } = { places: [], values: [] };
+  places.forEach((place, s) => {
+    const value = x[place] ?? 0;
+    if (value === 0) return;
+    found.places.push(s);
+    found.values.push(value);
+  });
+  return found;
 }
 
 interface FoundLink {

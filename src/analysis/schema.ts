@@ -187,8 +187,21 @@ export const AnalysisSchema = closed({
   spread: orNull(Type.Array(SpreadSchema)),
   ltre: orNull(
     closed({
+      against: Type.String({ description: 'Title of the model, or name of the scenario, that it is compared with.' }),
       difference: number('Growth rate less that of the reference.'),
-      unexplained: Type.Number(),
+      unexplained: number('What the entries leave of the difference.'),
+      parameters: orNull(
+        Type.Array(
+          closed({
+            name: Type.String(),
+            value: Type.Number(),
+            reference: Type.Number(),
+            contribution: number('What the difference of this number adds to that of the growth rate.'),
+          }),
+        ),
+      ),
+      unexplainedByParameters: maybe('What the named numbers leave of the difference.'),
+      whyNoParameters: orNull(Type.String()),
       contributions: Type.Array(
         closed({ from: State, to: State, difference: Type.Number(), contribution: Type.Number() }),
       ),

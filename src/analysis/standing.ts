@@ -1,12 +1,14 @@
 // Where each patch stands still, alone and linked, and how far leavers really go: what `check` tells about a model.
-import { unitMultipliers } from '../compile/multipliers.ts';
+import { multipliersAtRest } from '../compile/multipliers.ts';
 import { patchYear } from '../compile/patch-year.ts';
 import { runYear, wholeYear, type Compiled } from '../compile/year-map.ts';
 import type { Landscape } from '../landscape/landscape.ts';
-import type { CeilingPhase, Model } from '../model/model.ts';
-import { leading } from '../numeric/leading.ts';
+import type { Model } from '../model/model.ts';
+import { growthRateOf } from '../numeric/leading.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
-import { equilibriumFrom } from './equilibrium.ts';
+import { onePatch, settledApart } from './apart.ts';
+import { equilibriumFrom, largestJacobian, settledFrom } from './equilibrium.ts';
+import { quickYear } from './quick-year.ts';
 
 export interface PatchStanding {
   readonly patch: string;
@@ -22,39 +24,54 @@ export interface PatchStanding {
 export function standingOf(compiled: Compiled, start: Float64Array): readonly PatchStanding[] {
   const { model } = compiled;
   const linked = linkedTotals(compiled, start);
+  const alone = aloneTotals(compiled, start);
   return model.patches.map((patch, p) => ({
     patch: patch.name,
     growthAlone: growthAlone(model, p),
-    alone: aloneTotal(compiled, p, start),
+    alone: alone[p] ?? null,
     linked: linked?.[p] ?? null,
   }));
 }
 
 function growthAlone(model: Model, patch: number): number {
   const n = model.classes.length;
-  const values = patchYear({ model, patch, multipliers: unitMultipliers(model) });
-  return leading(sparseFromDense({ rows: n, columns: n, values })).growthRate;
+  const values = patchYear({ model, patch, multipliers: multipliersAtRest(model) });
+  return growthRateOf(sparseFromDense({ rows: n, columns: n, values }));
 }
 
 const settleYears = 3000;
-const largestLinked = 2000;
+/** Cells times years that are followed to see where the linked system settles: seconds. */
+const mostFollowed = 4e8;
 
 function linkedTotals(compiled: Compiled, start: Float64Array): readonly number[] | null {
-  const year = wholeYear(compiled);
-  if (!selfLimiting(compiled) || year.states > largestLinked) return null;
-  const found = equilibriumFrom(year, start, settleYears);
-  return found === null ? null : patchTotals(compiled.model, found.animals);
+  const { model } = compiled;
+  if (!selfLimiting(compiled)) return null;
+  const { states, apply, matrixAt } = quickYear(compiled);
+  if (states <= largestJacobian) {
+    const found = equilibriumFrom({ states, apply, matrixAt }, start, settleYears);
+    return found === null ? null : patchTotals(model, found.animals);
+  }
+  const found = settledFrom(apply, start, Math.min(settleYears, Math.floor(mostFollowed / states)));
+  return found === null ? null : patchTotals(model, found);
 }
 
-/** The patch with nobody elsewhere and no dispersal. */
-function aloneTotal(compiled: Compiled, patch: number, start: Float64Array): number | null {
-  if (!selfLimiting(compiled)) return null;
-  const alone = isolated(compiled, patch);
-  const n = compiled.model.classes.length;
-  const own = start.subarray(patch * n, patch * n + n);
-  const from = own.some((value) => value > 0) ? Float64Array.from(own) : new Float64Array(n).fill(1);
-  const found = equilibriumFrom(wholeYear(alone), from, settleYears);
-  return found === null ? null : (patchTotals(alone.model, found.animals)[0] ?? null);
+/** Each patch with nobody elsewhere and no dispersal; null for those that never stand still. */
+function aloneTotals(compiled: Compiled, start: Float64Array): readonly (number | null)[] {
+  const { model } = compiled;
+  if (!selfLimiting(compiled)) return model.patches.map(() => null);
+  const n = model.classes.length;
+  const from = start.slice();
+  model.patches.forEach((_, p) => {
+    const own = from.subarray(p * n, p * n + n);
+    if (own.every((value) => value === 0)) own.fill(1);
+  });
+  const { animals, still } = settledApart(compiled, from);
+  return model.patches.map((_, p) => {
+    const own = animals.slice(p * n, p * n + n);
+    if (still[p] === 1) return own.reduce((sum, value) => sum + value, 0);
+    const found = equilibriumFrom(wholeYear(onePatch(compiled, p)), own, settleYears);
+    return found === null ? null : found.animals.reduce((sum, value) => sum + value, 0);
+  });
 }
 
 function selfLimiting({ model }: Compiled): boolean {
@@ -64,52 +81,6 @@ function selfLimiting({ model }: Compiled): boolean {
 function patchTotals(model: Model, animals: Float64Array): readonly number[] {
   const n = model.classes.length;
   return model.patches.map((_, p) => animals.subarray(p * n, p * n + n).reduce((sum, value) => sum + value, 0));
-}
-
-/** A compiled model of one patch, whose dispersal moves nobody, and where nobody is taken, brought or released. */
-function isolated({ model, coefficients }: Compiled, p: number): Compiled {
-  const n = model.classes.length;
-  const pick = (values: Float64Array, size: number): Float64Array => values.slice(p * size, p * size + size);
-  const table = (rates: { readonly epochs: readonly Float64Array[]; readonly epochOf: Int32Array }, size: number) => ({
-    epochs: rates.epochs.map((epoch) => pick(epoch, size)),
-    epochOf: rates.epochOf,
-  });
-  const never = new Int32Array(model.steps);
-  const waitsOf = (waits: CeilingPhase | undefined) =>
-    waits === undefined ? {} : { waits: { ...waits, capacity: pick(waits.capacity, 1) } };
-  const phases = model.phases.map((phase) => {
-    switch (phase.kind) {
-      case 'survival':
-        return { ...phase, survival: table(phase.survival, n) };
-      case 'breeding':
-        return { ...phase, births: table(phase.births, n), ...waitsOf(phase.waits) };
-      case 'demography':
-        return { ...phase, fates: table(phase.fates, n * n), births: table(phase.births, n * n) };
-      case 'ceiling':
-        return { ...phase, capacity: pick(phase.capacity, 1) };
-      case 'dispersal':
-        return { ...phase, moves: new Uint8Array(n) };
-      case 'take':
-      case 'move':
-        return { ...phase, active: never, patches: new Uint8Array(1), levels: pick(phase.levels, 1), to: 0 };
-      case 'add':
-        return { ...phase, active: never, amounts: table(phase.amounts, n) };
-      case 'ageing':
-        return phase.advanceIn === undefined ? phase : { ...phase, advanceIn: pick(phase.advanceIn, n) };
-      case 'count':
-        return phase;
-    }
-  });
-  return {
-    model: { ...model, patches: model.patches.slice(p, p + 1), phases },
-    landscape: { movements: phases.map(() => null) },
-    coefficients: coefficients.map(({ form, coefficient, alleeHalf, ...others }) => ({
-      ...others,
-      form: form.slice(p, p + 1),
-      coefficient: pick(coefficient, 1),
-      alleeHalf: pick(alleeHalf, 1),
-    })),
-  };
 }
 
 export interface DispersalReach {

@@ -124,6 +124,7 @@ function addAnalyse(program: Command): void {
     'quiet',
   ])
     .addOption(states)
+    .option('--against <model>', 'say what makes it grow otherwise than another model, or than a scenario of its own')
     .option('--eigenvalues', 'list all eigenvalues')
     .addHelpText('after', '\nExample:\n  skein analyse models/reed-hare.yaml --at start')
     .action(run(async () => (await import('./command/analyse.ts')).analyseCommand));

@@ -8,7 +8,7 @@ import type { Crowding, Model } from '../model/model.ts';
 import { asIfAlwaysThere } from '../model/patches-lost.ts';
 import type { CrowdingCoefficients, CrowdingForm } from './coefficients.ts';
 import { coefficientAt } from './crowding-form.ts';
-import { unitMultipliers } from './multipliers.ts';
+import { multipliersAtRest } from './multipliers.ts';
 import { patchYear } from './patch-year.ts';
 import { standstill, type Standstill } from './standstill.ts';
 
@@ -47,7 +47,7 @@ function solveCrowding(request: Request): CrowdingCoefficients {
   }
   const solved = new Map<string, Standstill>();
   const standstills = model.patches.map((_, p) => {
-    const year = patchYear({ model, patch: p, multipliers: unitMultipliers(model) }).join();
+    const year = patchYear({ model, patch: p, multipliers: multipliersAtRest(model) }).join();
     const others = model.crowding.map(({ alleeHalf }, j) => (j === k ? 0 : (alleeHalf[p] ?? 0)));
     const own = model.crowding[k]?.capacity[p];
     const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${own}` : year;

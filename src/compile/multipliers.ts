@@ -13,6 +13,15 @@ export function unitMultipliers(model: Model): Multipliers {
   return [...model.crowding.map(() => every(1)), ...model.catastrophes.map(() => every(0))];
 }
 
+const atRest = new WeakMap<Model, Multipliers>();
+
+/** Those of nobody, made once for a model: not to be written to. */
+export function multipliersAtRest(model: Model): Multipliers {
+  const made = atRest.get(model) ?? unitMultipliers(model);
+  atRest.set(model, made);
+  return made;
+}
+
 export interface RateOf {
   readonly phase: number;
   readonly part: ScaledPart;

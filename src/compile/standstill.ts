@@ -1,7 +1,7 @@
 // What the multiplier of a crowding must be for a patch alone to stand still at its capacity: ρ(A(g*)) = 1, where of all other
 // conditions only Allee factors act, each at the number that it then counts.
 import type { Model } from '../model/model.ts';
-import { leading } from '../numeric/leading.ts';
+import { growthRateOf, leading } from '../numeric/leading.ts';
 import { findRoot } from '../numeric/root.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
 import { unitMultipliers, type Multipliers } from './multipliers.ts';
@@ -35,14 +35,14 @@ export function standstill(asked: Asked): Standstill {
   return found;
 }
 
-function growthAt({ model, k, patch }: Asked, multipliers: Multipliers, multiplier: number) {
+function yearAt({ model, k, patch }: Asked, multipliers: Multipliers, multiplier: number) {
   const n = model.classes.length;
-  multipliers[k]?.fill(multiplier);
-  return leading(sparseFromDense({ rows: n, columns: n, values: patchYear({ model, patch, multipliers }) }));
+  multipliers[k]?.fill(multiplier, patch, patch + 1);
+  return sparseFromDense({ rows: n, columns: n, values: patchYear({ model, patch, multipliers }) });
 }
 
 function solve(asked: Asked, multipliers: Multipliers): Standstill {
-  const growth = (multiplier: number): number => growthAt(asked, multipliers, multiplier).growthRate;
+  const growth = (multiplier: number): number => growthRateOf(yearAt(asked, multipliers, multiplier));
   const highest = growth(1);
   if (highest <= 1) return { kind: 'declines', growth: highest };
   const lowest = growth(0);
@@ -54,7 +54,7 @@ function solve(asked: Asked, multipliers: Multipliers): Standstill {
 /** Sets the Allee factors of the other crowdings to those of the patch at its capacity; how much they changed, null where nobody is counted. */
 function readAllee(asked: Asked, multipliers: Multipliers, multiplier: number): number | null {
   const { model, k, patch } = asked;
-  const { right } = growthAt(asked, multipliers, multiplier);
+  const { right } = leading(yearAt(asked, multipliers, multiplier));
   if (right === null) return null;
   const counts = countsAlone({ model, patch, multipliers }, right);
   const scale = (model.crowding[k]?.capacity[patch] ?? NaN) / (counts[k] ?? 0);

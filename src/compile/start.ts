@@ -4,7 +4,7 @@ import type { Model } from '../model/model.ts';
 import { leading, type Leading } from '../numeric/leading.ts';
 import { sparseFromDense } from '../numeric/sparse.ts';
 import { buildBlock } from './block.ts';
-import { unitMultipliers } from './multipliers.ts';
+import { multipliersAtRest } from './multipliers.ts';
 import { patchYear } from './patch-year.ts';
 import { presentClasses } from './present-classes.ts';
 import { wholeAnimals } from './whole-animals.ts';
@@ -84,7 +84,7 @@ function fromPatchTotals(model: Model, totals: Float64Array, { findings, of, res
 /** Near zero, without dispersal. */
 function stableWithin(model: Model, patch: number): Pick<Leading, 'right' | 'reason'> {
   const n = model.classes.length;
-  const values = patchYear({ model, patch, multipliers: unitMultipliers(model) });
+  const values = patchYear({ model, patch, multipliers: multipliersAtRest(model) });
   const { right, reason } = leading(sparseFromDense({ rows: n, columns: n, values }));
   const present = presentClasses(model);
   const shares = right?.map((value, c) => (present[c] === 1 ? value : 0)) ?? null;

@@ -1,7 +1,7 @@
 // Solves (I − U)x = b again and again for one nonnegative U whose powers fade: what b comes to, summed over all time.
 import { strongComponents } from './components.ts';
 import { solveBelow } from './downstream.ts';
-import { leading } from './leading.ts';
+import { growthRateOf } from './leading.ts';
 import { principalPart } from './principal-part.ts';
 import { transpose } from './sparse-product.ts';
 import type { SparseMatrix } from './sparse.ts';
@@ -18,7 +18,7 @@ export interface Fading {
  * costs one pass a solve. Null where the powers of U do not fade (growth of 1 or more).
  */
 export function fadingSums(matrix: SparseMatrix): Fading | null {
-  if (!(leading(matrix).growthRate < 1)) return null;
+  if (!(growthRateOf(matrix) < 1)) return null;
   const forward = blocksOf(matrix);
   const turned = transpose(matrix);
   const backward = forward.map(({ states }) => ({ states, part: principalPart(turned, states) })).reverse();

@@ -47,6 +47,11 @@ export function foldedGrowth(block: SparseMatrix, guess: Guess, tolerance: numbe
   return foldAndMatch(block, { guess, tolerance }).shift;
 }
 
+/** The growth alone. `tolerance` is relative. */
+export function rateOfFolded(block: SparseMatrix, tolerance: number): number {
+  return foldAndMatch(block, { guess: null, tolerance }).shift;
+}
+
 interface Wanted {
   readonly guess: Guess | null;
   readonly tolerance: number;

@@ -1,6 +1,6 @@
 // Growth and both positive vectors of one irreducible nonnegative block, by the method that suits its size.
 import { strongComponents } from './components.ts';
-import { foldedGrowth, foldedPair, type Guess, type IrreduciblePair } from './folded-pair.ts';
+import { foldedGrowth, foldedPair, rateOfFolded, type Guess, type IrreduciblePair } from './folded-pair.ts';
 import { denseLimit } from './kernel-pair.ts';
 import { positivePair } from './positive-pair.ts';
 import { transpose } from './sparse-product.ts';
@@ -13,6 +13,12 @@ export function irreduciblePair(block: SparseMatrix): IrreduciblePair {
   if (size > denseLimit) return foldedPair(block);
   const right = positivePair(toDense(block));
   return { growthRate: right.growthRate, right: right.vector, left: positivePair(toDense(transpose(block))).vector };
+}
+
+/** Growth alone of one irreducible block. */
+export function irreducibleRate(block: SparseMatrix): number {
+  if (block.columns === 1) return block.values[0] ?? 0;
+  return block.columns > denseLimit ? rateOfFolded(block, 2e-13) : positivePair(toDense(block)).growthRate;
 }
 
 /**

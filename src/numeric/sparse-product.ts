@@ -57,28 +57,44 @@ export function transpose(matrix: SparseMatrix): SparseMatrix {
 /** A B, column by column; entries that come out as exactly 0 are left out. Cost: Σ over entries of B of the column of A it meets. */
 export function product(a: SparseMatrix, b: SparseMatrix): SparseMatrix {
   if (a.columns !== b.rows) throw new RangeError(`Cannot multiply ${shapeOf(a)} by ${shapeOf(b)}.`);
-  const sum = new Float64Array(a.rows);
-  const seenIn = new Int32Array(a.rows).fill(-1);
+  const work = {
+    a,
+    b,
+    sum: new Float64Array(a.rows),
+    seenIn: new Int32Array(a.rows).fill(-1),
+    touched: new Int32Array(a.rows),
+  };
   const columnStart = new Int32Array(b.columns + 1);
-  const rowIndex: number[] = [];
-  const values: number[] = [];
+  const room = a.values.length + b.values.length + a.rows;
+  let [rowIndex, values] = [new Int32Array(room), new Float64Array(room)];
+  let filled = 0;
   for (let j = 0; j < b.columns; j++) {
-    const touched = addColumn({ a, b, sum, seenIn }, j).sort((left, right) => left - right);
-    for (const i of touched) {
-      const value = sum[i] ?? 0;
-      if (value === 0) continue;
-      rowIndex.push(i);
-      values.push(value);
+    const count = addColumn(work, j);
+    if (filled + count > rowIndex.length) {
+      const more = Math.max(2 * rowIndex.length, filled + count);
+      [rowIndex, values] = [widened(rowIndex, new Int32Array(more)), widened(values, new Float64Array(more))];
     }
-    columnStart[j + 1] = values.length;
+    for (let k = 0; k < count; k++) {
+      const i = work.touched[k] ?? 0;
+      const value = work.sum[i] ?? 0;
+      if (value === 0) continue;
+      rowIndex[filled] = i;
+      values[filled++] = value;
+    }
+    columnStart[j + 1] = filled;
   }
   return {
     rows: a.rows,
     columns: b.columns,
     columnStart,
-    rowIndex: Int32Array.from(rowIndex),
-    values: Float64Array.from(values),
+    rowIndex: rowIndex.slice(0, filled),
+    values: values.slice(0, filled),
   };
+}
+
+function widened<T extends Int32Array | Float64Array>(from: T, into: T): T {
+  into.set(from);
+  return into;
 }
 
 interface ProductWork {
@@ -86,10 +102,12 @@ interface ProductWork {
   readonly b: SparseMatrix;
   readonly sum: Float64Array;
   readonly seenIn: Int32Array;
+  /** Rows of the column, ascending, as many as were told. */
+  readonly touched: Int32Array;
 }
 
-function addColumn({ a, b, sum, seenIn }: ProductWork, j: number): number[] {
-  const touched: number[] = [];
+function addColumn({ a, b, sum, seenIn, touched }: ProductWork, j: number): number {
+  let count = 0;
   const end = b.columnStart[j + 1] ?? 0;
   for (let k = b.columnStart[j] ?? 0; k < end; k++) {
     const factor = b.values[k] ?? 0;
@@ -100,12 +118,27 @@ function addColumn({ a, b, sum, seenIn }: ProductWork, j: number): number[] {
       if (seenIn[i] !== j) {
         seenIn[i] = j;
         sum[i] = 0;
-        touched.push(i);
+        touched[count++] = i;
       }
       sum[i] = (sum[i] ?? 0) + (a.values[m] ?? 0) * factor;
     }
   }
-  return touched;
+  sortFirst(touched, count);
+  return count;
+}
+
+/** Few rows mostly stand in order already. */
+function sortFirst(rows: Int32Array, count: number): void {
+  if (count > 48) {
+    rows.subarray(0, count).sort();
+    return;
+  }
+  for (let k = 1; k < count; k++) {
+    const row = rows[k] ?? 0;
+    let place = k;
+    for (; place > 0 && (rows[place - 1] ?? 0) > row; place--) rows[place] = rows[place - 1] ?? 0;
+    rows[place] = row;
+  }
 }
 
 /** factorA · A + factorB · B. */

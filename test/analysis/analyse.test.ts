@@ -55,7 +55,13 @@ function everything(): AnalysisInput {
       },
     },
     spread: { value: [{ patch: 'patch 001', speedKm: 2, theta: 0.3, parameters: [] }] },
-    reference: weightedSum([0.9, block.matrix], [0, block.matrix]),
+    against: {
+      value: {
+        name: 'a poor year',
+        matrix: weightedSum([0.9, block.matrix], [0, block.matrix]),
+        parameters: { value: [{ name: 'everything', value: 1, reference: 0.9, contribution: 0.1 }] },
+      },
+    },
     losslessDispersal: true,
     wantEigenvalues: true,
   };

@@ -170,7 +170,7 @@ describe('three patches from a kernel (derived, with independent arithmetic)', (
       return leading(product(sparseFromRows(rows), demography)).growthRate;
     };
     const h = 1e-6;
-    const links = linkValues({ matrix, vectors, phases, places, classCount: 2 });
+    const links = linkValues({ matrix, vectors, phases, places, classCount: 2, around: null });
     expect(links).toHaveLength(6);
     for (const link of links) {
       const [i, j] = [link.to * 2 + link.class, link.from * 2 + link.class];
@@ -193,7 +193,13 @@ describe('three patches from a kernel (derived, with independent arithmetic)', (
   });
 
   test('without a patch the growth is that of the other two', () => {
-    const losses = patchRemovalLosses(matrix, states, vectors, new Float64Array(3).fill(1));
+    const losses = patchRemovalLosses({
+      matrix,
+      states,
+      vectors,
+      importance: new Float64Array(3).fill(1),
+      around: null,
+    });
     const dense = toDense(matrix).values;
     [0, 1, 2].forEach((gone) => {
       const kept = [0, 1, 2, 3, 4, 5].filter((s) => Math.floor(s / 2) !== gone);

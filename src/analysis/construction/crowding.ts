@@ -1,5 +1,5 @@
 // Crowding that can never act, since it counts nobody where it is read.
-import { readingPhase, unitMultipliers } from '../../compile/multipliers.ts';
+import { readingPhase, multipliersAtRest } from '../../compile/multipliers.ts';
 import { patchYear } from '../../compile/patch-year.ts';
 import type { Compiled } from '../../compile/year-map.ts';
 import type { Model } from '../../model/model.ts';
@@ -36,7 +36,7 @@ interface Place {
 /** Whether animals of every class that the count can hold bring anyone counted to the phase where crowding is read. */
 function counts(model: Model, { k, reading, patch }: Place): boolean {
   const n = model.classes.length;
-  const before = patchYear({ model, patch, multipliers: unitMultipliers(model) }, reading);
+  const before = patchYear({ model, patch, multipliers: multipliersAtRest(model) }, reading);
   const present = presentClasses(model);
   const weights = model.crowding[k]?.counted;
   for (let to = 0; to < n; to++) {

@@ -1,10 +1,10 @@
 // Growth that no life history of that pace is known to have.
 import type { CompiledModel } from '../../pipeline.ts';
-import { unitMultipliers } from '../../compile/multipliers.ts';
+import { multipliersAtRest } from '../../compile/multipliers.ts';
 import { patchYear } from '../../compile/patch-year.ts';
 import { pinned } from '../../machine/pinned.ts';
 import type { Model } from '../../model/model.ts';
-import { leading } from '../../numeric/leading.ts';
+import { growthRateOf } from '../../numeric/leading.ts';
 import { sparseFromDense } from '../../numeric/sparse.ts';
 import type { Finding } from '../../spec/finding.ts';
 
@@ -16,8 +16,8 @@ export function fastGrowth({ model }: CompiledModel): readonly Finding[] {
   if (pace === null) return [];
   const n = model.classes.length;
   const growths = model.patches.map((patch, p) => {
-    const values = patchYear({ model, patch: p, multipliers: unitMultipliers(model) });
-    return { patch: patch.name, growth: leading(sparseFromDense({ rows: n, columns: n, values })).growthRate };
+    const values = patchYear({ model, patch: p, multipliers: multipliersAtRest(model) });
+    return { patch: patch.name, growth: growthRateOf(sparseFromDense({ rows: n, columns: n, values })) };
   });
   const fastest = growths.reduce((most, one) => (one.growth > most.growth ? one : most));
   const limit = fastestGrowth(pace);

@@ -1,7 +1,7 @@
 // Life cycles whose long run depends on the start, or that never settle. Each patch is looked at alone: which patches reach which
 // others is told by an analysis.
 import type { CompiledModel } from '../../pipeline.ts';
-import { unitMultipliers } from '../../compile/multipliers.ts';
+import { multipliersAtRest } from '../../compile/multipliers.ts';
 import { patchYear } from '../../compile/patch-year.ts';
 import { presentClasses } from '../../compile/present-classes.ts';
 import type { Model } from '../../model/model.ts';
@@ -21,7 +21,7 @@ export function lifeCycle({ model }: CompiledModel): readonly Finding[] {
 
 function cycleIn(model: Model, patch: number): Leading {
   const n = model.classes.length;
-  const values = patchYear({ model, patch, multipliers: unitMultipliers(model) });
+  const values = patchYear({ model, patch, multipliers: multipliersAtRest(model) });
   const present = presentClasses(model);
   const kept = model.classes.flatMap((_, c) => (present[c] === 1 ? [c] : []));
   return leading(principalPart(sparseFromDense({ rows: n, columns: n, values }), kept));

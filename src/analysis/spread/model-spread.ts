@@ -2,7 +2,7 @@
 import { dependsOnMakeUp } from '../../compile/make-up.ts';
 import { exp, log } from '../../machine/pinned.ts';
 import { slopesOf } from '../../model/slopes/slopes.ts';
-import { leading } from '../../numeric/leading.ts';
+import { growthRateOf, leading } from '../../numeric/leading.ts';
 import { sparseFromDense, type DenseMatrix } from '../../numeric/sparse.ts';
 import type { CompiledModel } from '../../pipeline.ts';
 import { because, type Answer } from '../answer.ts';
@@ -27,7 +27,7 @@ const mostPatches = 100;
  * For patches whose land lets a population grow; null where nothing moves by a kernel, or its tail is so heavy that a front only gets faster.
  */
 export function modelSpread(compiled: CompiledModel): Answer<readonly LandSpeed[]> {
-  const { model, spec } = compiled;
+  const { model, laid } = compiled;
   if (dependsOnMakeUp(model)) return because('Births depend on who meets whom, and at a front few meet.');
   const ways = waysOf(model.phases);
   if (ways === null)
@@ -41,7 +41,7 @@ export function modelSpread(compiled: CompiledModel): Answer<readonly LandSpeed[
   }
   if (model.patches.length > mostPatches) return because(`It is told for up to ${mostPatches} patches.`);
   const scale = Math.max(...ways.map(({ kernel }) => Math.min(kernel.scaleKm, kernel.reachKm ?? Infinity)));
-  const slopes = slopesOf(spec);
+  const slopes = slopesOf(laid);
   const found = model.patches.flatMap(({ name }, patch): LandSpeed[] => {
     const land: Land = { compiled, patch };
     if (!(growthOf(seenByFront(land, 0)) > 1)) return [];
@@ -65,5 +65,5 @@ export function modelSpread(compiled: CompiledModel): Answer<readonly LandSpeed[
 }
 
 function growthOf(map: DenseMatrix): number {
-  return leading(sparseFromDense(map)).growthRate;
+  return growthRateOf(sparseFromDense(map));
 }

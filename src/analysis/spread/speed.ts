@@ -1,6 +1,6 @@
 // How fast a growing population spreads over empty land of one quality.
 import { exp, log, pow } from '../../machine/pinned.ts';
-import { leading } from '../../numeric/leading.ts';
+import { growthRateOf, leading } from '../../numeric/leading.ts';
 import { forEachEntry, sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
 import { dot, vectorsOf } from '../sensitivity.ts';
 
@@ -65,8 +65,8 @@ export interface SpreadInput {
  */
 export function spreadSpeed(input: SpreadInput): Spread | null {
   const range = thetaRange(input);
-  if (!range || !(leading(input.matrix).growthRate > 1)) return null;
-  const speedAt = (theta: number): number => log(leading(movedBy(input, theta)).growthRate) / theta;
+  if (!range || !(growthRateOf(input.matrix) > 1)) return null;
+  const speedAt = (theta: number): number => log(growthRateOf(movedBy(input, theta))) / theta;
   const logTheta = goldenMinimum((x) => speedAt(exp(x)), [log(range.low), log(range.high)]);
   const theta = exp(logTheta);
   return { speedKm: speedAt(theta), theta, sensitivity: sensitivitiesAt(input, theta) };

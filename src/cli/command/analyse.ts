@@ -1,7 +1,10 @@
 // skein analyse: what drives growth, which patches feed the others, and whether the matrix says what was meant.
+import type { Compared } from '../../analysis/against.ts';
 import { analyseModel } from '../../analysis/analyse-model.ts';
 import type { AtState } from '../../compile/block-matrix.ts';
+import type { CompiledModel } from '../../pipeline.ts';
 import { analysisText } from '../../report/analysis/analysis-text.ts';
+import { scenariosOf } from '../../spec/plans/scenarios.ts';
 import { analysisTables } from '../analysis-tables.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
@@ -13,14 +16,27 @@ import { terminalOf } from '../terminal.ts';
 export interface AnalyseCommandOptions extends CommonOptions {
   readonly at: AtState;
   readonly eigenvalues?: boolean;
+  readonly against?: string;
 }
 
 export function analyseCommand(path: string, options: AnalyseCommandOptions): void {
   const { compiled } = loadModel(path, settingsOf(options), options);
+  const against =
+    options.against === undefined ? {} : { against: comparedWith(path, options.against, options, compiled) };
   const folder = options.out === undefined ? null : openOutFolder(options.out);
-  const found = analyseModel(compiled, { at: options.at, wantEigenvalues: options.eigenvalues === true });
+  const found = analyseModel(compiled, { at: options.at, ...against, wantEigenvalues: options.eigenvalues === true });
   if (found.value === null) throw new Ending(exitCodes.work, `--at ${options.at}: ${found.reason}`);
   folder?.write(compiled, { command: 'analyse', results: found.value, tables: analysisTables(found.value) });
   if (options.json === true) writeOut(`${JSON.stringify(found.value, null, 2)}\n`);
   else writeOut(analysisText(found.value, terminalOf(process.stdout)));
+}
+
+/** A scenario of the same model, else another model. */
+function comparedWith(path: string, other: string, options: AnalyseCommandOptions, compiled: CompiledModel): Compared {
+  const quietly = { ...options, quiet: true };
+  if (scenariosOf(compiled.spec).some(({ name }) => name === other)) {
+    return { name: other, compiled: loadModel(path, { ...settingsOf(options), scenario: other }, quietly).compiled };
+  }
+  const found = loadModel(other, {}, quietly).compiled;
+  return { name: found.model.title, compiled: found };
 }

@@ -2,7 +2,7 @@
 import { dispersalReach, standingOf } from '../../analysis/standing.ts';
 import { weatherFacts } from '../../analysis/weather.ts';
 import { buildBlock } from '../../compile/block.ts';
-import { leading } from '../../numeric/leading.ts';
+import { growthRateOf } from '../../numeric/leading.ts';
 import type { CompiledModel } from '../../pipeline.ts';
 import { checkText, type Understood } from '../../report/check-text.ts';
 import { Ending, exitCodes } from '../exit.ts';
@@ -37,7 +37,7 @@ export function understand(compiled: CompiledModel): Understood {
     startAnimals: startAnimals.reduce((sum, value) => sum + value, 0),
     standing: standingOf(compiled, startAnimals),
     reach: dispersalReach(compiled, startAnimals),
-    growthRate: leading(buildBlock(compiled, 'zero').matrix).growthRate,
+    growthRate: growthRateOf(buildBlock(compiled, 'zero').matrix),
     weather: model.variation === null ? null : weatherFacts(model.variation, compiled.landscape),
   };
 }

@@ -1,11 +1,11 @@
 // How the solved strengths of crowding move with a number of the model.
 import type { Crowding, Model } from '../../model/model.ts';
 import type { CrowdingSlopes, ModelSlopes } from '../../model/slopes/slopes.ts';
-import { leading } from '../../numeric/leading.ts';
+import { growthRateOf } from '../../numeric/leading.ts';
 import { sparseFromDense } from '../../numeric/sparse.ts';
 import type { CrowdingCoefficients } from '../coefficients.ts';
 import { multiplierAt } from '../crowding-form.ts';
-import { unitMultipliers } from '../multipliers.ts';
+import { multipliersAtRest } from '../multipliers.ts';
 import { patchYear } from '../patch-year.ts';
 import { coefficientSlope } from './crowding-slope.ts';
 import { standstillSlope } from './patch-slope.ts';
@@ -77,6 +77,6 @@ function multiplierSlopeAt({ model, crowding, k, patch, slopes }: Place, multipl
 
 function growthAlone(model: Model, patch: number): number {
   const n = model.classes.length;
-  const values = patchYear({ model, patch, multipliers: unitMultipliers(model) });
-  return leading(sparseFromDense({ rows: n, columns: n, values })).growthRate;
+  const values = patchYear({ model, patch, multipliers: multipliersAtRest(model) });
+  return growthRateOf(sparseFromDense({ rows: n, columns: n, values }));
 }

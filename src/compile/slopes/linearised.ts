@@ -5,7 +5,7 @@ import { sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
 import type { BlockMatrix } from '../block-matrix.ts';
 import { buildBlock } from '../block.ts';
 import { dependsOnMakeUp } from '../make-up.ts';
-import { unitMultipliers } from '../multipliers.ts';
+import { multipliersAtRest } from '../multipliers.ts';
 import { nearZero, productOf, type Compiled } from '../year-map.ts';
 import { birthFactorSlope } from './birth-factors.ts';
 
@@ -39,7 +39,7 @@ function meetingSlope({ model }: Compiled, index: number, state: Float64Array): 
     const animals = state.subarray(patch * n, patch * n + n);
     const animalSlopes = new Float64Array(n);
     animalSlopes[column % n] = 1;
-    const request = { model, phase: index, patch, step: 1, multipliers: unitMultipliers(model), animals };
+    const request = { model, phase: index, patch, step: 1, multipliers: multipliersAtRest(model), animals };
     const slope = birthFactorSlope({ phase, request, animalSlopes, slopes: [] });
     for (let to = 0; to < n; to++) {
       let young = 0;

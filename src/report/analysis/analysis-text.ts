@@ -4,7 +4,15 @@ import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } fro
 import { cautionList } from '../text.ts';
 import { answerWords } from './answer.ts';
 import { chanceWords, equilibriumWords, firstYears, groupWords, lifeWords, networkWords } from './sections.ts';
-import { dependenceTable, differenceTable, eigenvalueTable, linkTable, patchTable, type TextTable } from './tables.ts';
+import {
+  dependenceTable,
+  differenceTable,
+  eigenvalueTable,
+  linkTable,
+  numberDifferenceTable,
+  patchTable,
+  type TextTable,
+} from './tables.ts';
 
 /** Rows of the lists of the largest. */
 const most = 10;
@@ -19,7 +27,8 @@ export function analysisText(analysis: Analysis, style: TextStyle): string {
     tableOf('Patches', patchTable(analysis), style),
     tableOf('What the growth depends on most', dependenceTable(analysis, most), style),
     tableOf('Links', linkTable(analysis, most), style),
-    tableOf('What makes the difference', differenceTable(analysis, most), style),
+    tableOf('What makes the difference, by named number', numberDifferenceTable(analysis, most), style),
+    tableOf('What makes the difference, by entry', differenceTable(analysis, most), style),
     section('The first years', firstYears(analysis), style),
     section('Lives', lifeWords(analysis), style),
     section('Chance, and what is not known', chanceWords(analysis), style),

@@ -95,6 +95,19 @@ export function linkTable({ links }: Analysis, most: number): TextTable | null {
   };
 }
 
+/** By named numbers, where they differ. */
+export function numberDifferenceTable({ ltre }: Analysis, most: number): TextTable | null {
+  if (ltre === null || ltre.parameters === null) return null;
+  const largest = [...ltre.parameters].sort((a, b) => Math.abs(b.contribution) - Math.abs(a.contribution));
+  return {
+    head: ['number', 'here', ltre.against, 'adds to the growth rate'],
+    rows: largest
+      .slice(0, most)
+      .map(({ name, value, reference, contribution }) => [name, ...[value, reference, contribution].map(told)]),
+    below: [`The named numbers leave ${told(ltre.unexplainedByParameters ?? 0)} of the difference unexplained.`],
+  };
+}
+
 export function differenceTable({ ltre }: Analysis, most: number): TextTable | null {
   if (ltre === null) return null;
   const largest = [...ltre.contributions].sort((a, b) => Math.abs(b.contribution) - Math.abs(a.contribution));
@@ -108,7 +121,8 @@ export function differenceTable({ ltre }: Analysis, most: number): TextTable | n
         told(contribution),
       ]),
     below: [
-      `The growth rate differs by ${told(ltre.difference)}; the parts leave ${told(ltre.unexplained)} unexplained.`,
+      `The growth rate differs by ${told(ltre.difference)} from that of ${ltre.against}; the entries leave ${told(ltre.unexplained)} ` +
+        'unexplained. Each part is the difference times the slope half-way between the two.',
     ],
   };
 }
