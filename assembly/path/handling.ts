@@ -46,12 +46,17 @@ function takeIn(record: usize, patch: i32, first: i32, end: i32, share: f64): vo
   if (share <= 0 || i32At(section(operand(record, layout.handledPatches)), patch) === 0) return;
   const inClasses = section(operand(record, layout.handledClasses));
   const moving = operand(record, layout.recordOpcode) === layout.opMove;
-  const survival = moving ? f64At(section(operand(record, layout.handledSurvival)), 0) : 0;
+  const survival = section(operand(record, layout.handledSurvival));
+  const homing = operand(record, layout.handledHoming);
+  const back = homing < 0 ? 0 : f64At(section(homing), 0);
   for (let c = first; c < end; c++) {
     if (i32At(inClasses, c) === 0) continue;
     const taken = animalsIn(patch, c) * share;
     add(animals, patch, c, -taken);
-    if (moving) add(animals, operand(record, layout.handledTo), c, taken * survival);
+    if (!moving) continue;
+    const alive = taken * f64At(survival, c);
+    add(animals, operand(record, layout.handledTo), c, alive * (1 - back));
+    if (back > 0) add(animals, patch, c, alive * back);
   }
 }
 
@@ -59,9 +64,9 @@ export function meanRelease(record: usize): void {
   if (!isActive(record, step)) return;
   const amounts = sectionAt(operand(record, layout.handledAmounts), step);
   const inPatches = section(operand(record, layout.handledPatches));
-  const survival = f64At(section(operand(record, layout.handledSurvival)), 0);
+  const survival = section(operand(record, layout.handledSurvival));
   for (let patch = 0; patch < patches; patch++) {
     if (i32At(inPatches, patch) === 0) continue;
-    for (let c = 0; c < classes; c++) add(animals, patch, c, f64At(amounts, patch * classes + c) * survival);
+    for (let c = 0; c < classes; c++) add(animals, patch, c, f64At(amounts, patch * classes + c) * f64At(survival, c));
   }
 }

@@ -1,7 +1,7 @@
 // Taking and moving animals: a quota of a group of cells, drawn without replacement, never more than there are.
 import { f64At, i32At, putF64, putU32, u32At } from '../arrays';
 import * as batch from '../batch';
-import { drawCell, occupied, scaledRates } from '../cells';
+import { addCell, drawCell, occupied, scaledRates, subtractCell } from '../cells';
 import { hypergeometric } from '../draws/hypergeometric';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf, unit } from '../draws/stream';
@@ -138,17 +138,24 @@ function takeCell(record: usize, cell: usize, c: i32): void {
     putU32(cell, lane, n - taken);
     putU32(batch.counts, lane, taken);
   }
-  if (operand(record, layout.recordOpcode) === layout.opMove) bring(record, c);
+  if (operand(record, layout.recordOpcode) === layout.opMove) bring(record, cell, c);
 }
 
-/** Those in `counts` enter their new patch as far as they survive it. */
-function bring(record: usize, c: i32): void {
+/** Those in `counts` enter their new patch as far as they survive it and stay; the others go back to the cell. */
+function bring(record: usize, cell: usize, c: i32): void {
   const row = batch.animals + <usize>operand(record, layout.handledTo) * batch.rowBytes();
-  surviveHandling(record, row + <usize>c * batch.cellBytes, c);
+  const target = row + <usize>c * batch.cellBytes;
+  surviveHandling(record, target, c);
+  const homing = operand(record, layout.handledHoming);
+  if (homing < 0) return;
+  scaledRates(batch.rates, f64At(section(homing), 0), 0, c, 0);
+  drawCell(batch.counts, batch.moreCounts, streamOf(u32At(classKeys, c), layout.useHoming));
+  subtractCell(target, batch.counts);
+  addCell(cell, batch.counts);
 }
 
 export function surviveHandling(record: usize, target: usize, c: i32): void {
-  const survival = f64At(section(operand(record, layout.handledSurvival)), 0);
+  const survival = f64At(section(operand(record, layout.handledSurvival)), c);
   scaledRates(batch.rates, survival, 0, c, 0);
   drawCell(batch.moreCounts, batch.counts, streamOf(u32At(classKeys, c), layout.useHandling));
   const died = columnOf(record, 1);

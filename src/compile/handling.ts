@@ -60,7 +60,8 @@ function groupsOf(
 /** P·C animals that are there from now on. */
 export function addedAnimals(phase: AddPhase, step: number): Float64Array {
   const amounts = tableAt(phase.amounts, step);
-  return amounts.map((number) => (isActive(phase, step) ? number * phase.survival : 0));
+  const n = phase.survival.length;
+  return amounts.map((number, i) => (isActive(phase, step) ? number * (phase.survival[i % n] ?? 0) : 0));
 }
 
 /** The model of a year that goes on: what people do in some years only is left out. */

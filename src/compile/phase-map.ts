@@ -139,7 +139,10 @@ function fillHandling(
   const taken = takenShares(phase, { animals: state ?? new Float64Array(model.patches.length * n), classes: n, step });
   taken.forEach((share, i) => {
     triplets.add(i, i, 1 - share);
-    if (phase.kind === 'move') triplets.add(phase.to * n + (i % n), i, share * phase.survival);
+    if (phase.kind !== 'move') return;
+    const alive = share * (phase.survival[i % n] ?? 0);
+    triplets.add(phase.to * n + (i % n), i, alive * (1 - phase.homing));
+    triplets.add(i, i, alive * phase.homing);
   });
 }
 

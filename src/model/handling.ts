@@ -26,7 +26,12 @@ export function resolveMove(context: Context, name: string, spec: MoveSpec): Mov
   const quota = quotaOf(context, { name, spec, patches });
   if (quota === null || to < 0) return null;
   const active = activeYears(context, spec.years, [name, 'years']);
-  return { kind: 'move', name, patches, active, ...quota, to, survival: survivalOf(context, name, spec) };
+  const homing = shareOf(context, {
+    expression: spec.homing ?? 0,
+    path: [name, 'homing'],
+    what: 'share that goes back',
+  });
+  return { kind: 'move', name, patches, active, ...quota, to, survival: survivalOf(context, name, spec), homing };
 }
 
 export function resolveAdd(context: Context, name: string, spec: AddSpec): AddPhase {
@@ -74,9 +79,15 @@ const rules = { number: 'number', share: 'share', 'share-of-excess': 'excess' } 
 
 /** Null after telling what is missing or too much. */
 function quotaOf(context: Context, { name, spec, patches }: QuotaRequest): Quota | null {
+  const all = wholeShare(context, name, spec.number);
+  if (all === null) return null;
+  if (all !== undefined && spec.share !== undefined) {
+    tellRule(context, name, ['number', 'share']);
+    return null;
+  }
   const given = {
-    number: spec.number,
-    share: spec.share,
+    number: all === undefined ? spec.number : undefined,
+    share: all ?? spec.share,
     'share-of-excess': 'share-of-excess' in spec ? spec['share-of-excess'] : undefined,
   };
   const keys = (['number', 'share', 'share-of-excess'] as const).filter((key) => given[key] !== undefined);
@@ -105,7 +116,7 @@ function quotaOf(context: Context, { name, spec, patches }: QuotaRequest): Quota
     return null;
   }
   const together = isTogether(context, { name, spec, patches });
-  const path = [name, key];
+  const path = [name, all === undefined ? key : 'number'];
   const classes = byClass
     ? namedClasses(context, amount, path)
     : classMask(context, spec.classes ?? 'all', [name, 'classes']);
@@ -195,17 +206,38 @@ function levelsOf(
   });
 }
 
-/** Handling and the first year at once. */
-function survivalOf(context: Context, name: string, spec: MoveSpec | AddSpec): number {
-  return (['handling-survival', 'first-year-survival'] as const).reduce((product, key) => {
-    const expression = spec[key] ?? 1;
-    const path = [name, key];
-    const value = context.numbers.value(expression, path, { year: context.time.firstYear });
-    withinBounds(
-      context,
-      { expression, path, what: key.replaceAll('-', ' ') },
-      { value, bounds: 'share', patch: undefined },
-    );
-    return product * value;
-  }, 1);
+/** By class, handling and the first year at once. */
+function survivalOf(context: Context, name: string, spec: MoveSpec | AddSpec): Float64Array {
+  const product = new Float64Array(context.classes.length).fill(1);
+  for (const key of ['handling-survival', 'first-year-survival'] as const) {
+    const written = spec[key] ?? 1;
+    if (typeof written === 'object') namedClasses(context, written, [name, key]);
+    product.forEach((share, c) => {
+      const one = context.classes[c] ?? '';
+      const expression = typeof written === 'object' ? (written[one] ?? 1) : written;
+      const path = typeof written === 'object' ? [name, key, one] : [name, key];
+      product[c] = share * shareOf(context, { expression, path, what: key.replaceAll('-', ' ') });
+    });
+  }
+  return product;
+}
+
+function shareOf(context: Context, written: Written): number {
+  const value = context.numbers.value(written.expression, written.path, { year: context.time.firstYear });
+  withinBounds(context, written, { value, bounds: 'share', patch: undefined });
+  return value;
+}
+
+/** A number that is `all` is a share of 1; null after telling of one that is so for some classes only. */
+function wholeShare(context: Context, name: string, number: Amount | undefined): Amount | undefined | null {
+  if (number === 'all') return 1;
+  if (typeof number !== 'object') return undefined;
+  const all = Object.keys(number).filter((one) => number[one] === 'all');
+  if (all.length === 0) return undefined;
+  if (all.length === Object.keys(number).length) return Object.fromEntries(all.map((one) => [one, 1]));
+  fail(context, 'handling-shape', [name, 'number', all[0] ?? ''], {
+    message: '`all` of some classes and numbers of others do not go together',
+    details: { fix: 'Write two phases or actions, one with `all` and one with numbers.' },
+  });
+  return null;
 }

@@ -189,12 +189,15 @@ export interface TakePhase extends QuotaBase {
 export interface MovePhase extends QuotaBase {
   readonly kind: 'move';
   readonly to: number;
-  /** Of handling and of the first year, at once. */
-  readonly survival: number;
+  /** By class, of handling and of the first year, at once. */
+  readonly survival: Float64Array;
+  /** Of those that survive, the share that goes back to where it came from. */
+  readonly homing: number;
 }
 export interface AddPhase extends HandledBase {
   readonly kind: 'add';
-  readonly survival: number;
+  /** By class. */
+  readonly survival: Float64Array;
 }
 
 export type Phase =

@@ -12,10 +12,10 @@ function actWords(phase: TakePhase | MovePhase | AddPhase, model: Model): string
       return `${quotaWords(phase, model)} are taken${where === '' ? '' : ` in ${where}`}`;
     case 'move': {
       const to = model.patches[phase.to]?.name ?? '';
-      return `${quotaWords(phase, model)} are moved from ${where} to ${to}${survivalWords(phase.survival)}`;
+      return `${quotaWords(phase, model)} are moved from ${where} to ${to}${survivalWords(phase.survival, model)}${homingWords(phase.homing)}`;
     }
     case 'add':
-      return `${numbersOf(phase, model)} are released in ${where === '' ? 'every patch' : where}${survivalWords(phase.survival)}`;
+      return `${numbersOf(phase, model)} are released in ${where === '' ? 'every patch' : where}${survivalWords(phase.survival, model)}`;
   }
 }
 
@@ -56,8 +56,18 @@ function placeWords(patches: Uint8Array, model: Model): string {
   return model.patches.flatMap(({ name }, p) => (patches[p] === 1 ? [name] : [])).join(', ');
 }
 
-function survivalWords(survival: number): string {
-  return survival === 1 ? '' : `, of whom a share of ${Number(survival.toPrecision(4))} lives through it`;
+function survivalWords(survival: Float64Array, { classes }: Model): string {
+  const [first = 1] = survival;
+  const digits = (share: number): string => String(Number(share.toPrecision(4)));
+  if (survival.every((share) => share === first)) {
+    return first === 1 ? '' : `, of whom a share of ${digits(first)} lives through it`;
+  }
+  const each = classes.map((name, c) => `${digits(survival[c] ?? 1)} of ${name}`);
+  return `, of whom these shares live through it: ${each.join(', ')}`;
+}
+
+function homingWords(homing: number): string {
+  return homing === 0 ? '' : `; of these a share of ${Number(homing.toPrecision(4))} goes back`;
 }
 
 function yearWords(active: Int32Array | null, { firstYear }: Model): string {

@@ -97,11 +97,20 @@ function handlingOf(P: number, C: number): fc.Arbitrary<Phase> {
       const phase = { name: 'x', active: years, patches, classes, amounts };
       if (what === 'add') {
         const there = epochsIn(amounts, { patches, classes });
-        return { kind: 'add', ...phase, amounts: there, survival };
+        return { kind: 'add', ...phase, amounts: there, survival: new Float64Array(C).fill(survival) };
       }
       const levelled = { ...phase, ...quota, levels: Float64Array.from(level) };
       if (what === 'take') return { kind: 'take', ...levelled };
-      return { kind: 'move', ...levelled, patches: patches.map((one, p) => (p === 0 ? 0 : one)), to: 0, survival };
+      const from = patches.map((one, p) => (p === 0 ? 0 : one));
+      const living = new Float64Array(C).fill(survival);
+      return {
+        kind: 'move',
+        ...levelled,
+        patches: from,
+        to: 0,
+        survival: living,
+        homing: survival < 0.5 ? survival : 0,
+      };
     });
 }
 

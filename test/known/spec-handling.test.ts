@@ -41,6 +41,12 @@ describe('the path without chance', () => {
       'deed: { kind: move, from: [A, B], to: C, classes: [young], share: 0.5, counted: each patch }',
       [6, 30, 2, 2, 8, 0],
     ],
+    ['deed: { kind: take, classes: [adult], number: all, in: A }', [12, 0, 4, 2, 0, 0]],
+    ['deed: { kind: take, number: { young: all, adult: all }, counted: each patch }', [0, 0, 0, 0, 0, 0]],
+    [
+      'deed: { kind: move, from: A, to: C, classes: all, number: 21, handling-survival: { adult: 0.5 }, homing: 0.2 }',
+      [6 + 1.2, 15 + 1.5, 4, 2, 4.8, 6],
+    ],
     ['deed: { kind: add, in: [B, C], number: { adult: 4 }, first-year-survival: 0.75 }', [12, 30, 4, 5, 0, 3]],
   ])('%s', (section, wanted) => {
     expect(largestDifference(firstYear(section), wanted)).toBeLessThan(1e-12);

@@ -127,7 +127,8 @@ describe('a move', () => {
       kind: 'move',
       name: 'moves',
       to: 1,
-      survival: 0.8,
+      survival: Float64Array.of(0.8, 0.8),
+      homing: 0,
     };
     // 6 of 12, and all 30 of the 40 wanted; each arrives with chance 0.8.
     const covariances = zeros(4);
@@ -135,6 +136,28 @@ describe('a move', () => {
     covariances[3]![3] = 30 * 0.16;
     const states = sampleStates({ ...herd, phases: [move] }, replicates);
     expectMoments(states, [6, 0, 4 + 4.8, 2 + 24], covariances);
+  });
+
+  it('lets classes differ in what they live through, and a share go back', () => {
+    const move: MovePhase = {
+      ...take({ patches: Uint8Array.of(1, 0), byClass: true, amounts: everywhere(2, [6, 40]) }),
+      kind: 'move',
+      name: 'moves',
+      to: 1,
+      survival: Float64Array.of(0.8, 0.5),
+      homing: 0.25,
+    };
+    // Each of the 6 stays there with chance 0.6, is back with 0.2; each of the 30 with 0.375 and 0.125.
+    const covariances = zeros(4);
+    const set = (source: number, target: number, [n, back, there]: readonly [number, number, number]) => {
+      covariances[source]![source] = n * back * (1 - back);
+      covariances[target]![target] = n * there * (1 - there);
+      covariances[source]![target] = covariances[target]![source] = -n * back * there;
+    };
+    set(0, 2, [6, 0.2, 0.6]);
+    set(1, 3, [30, 0.125, 0.375]);
+    const states = sampleStates({ ...herd, phases: [move] }, replicates);
+    expectMoments(states, [6 + 1.2, 3.75, 4 + 3.6, 2 + 11.25], covariances);
   });
 });
 
@@ -147,7 +170,7 @@ describe('a release', () => {
       patches: Uint8Array.of(0, 1),
       classes: Uint8Array.of(0, 1),
       amounts: table([0, 0, 0, 7.25]),
-      survival: 0.6,
+      survival: Float64Array.of(0.6, 0.6),
     };
     const covariances = zeros(4);
     covariances[3]![3] = 7.25 * 0.24 + 0.36 * 0.25 * 0.75;

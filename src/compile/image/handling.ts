@@ -25,6 +25,7 @@ export function handlingRecord(phase: HandlingPhase, { list, model, index, key }
   const { name, active } = phase;
   const quota = phase.kind === 'add' ? null : phase;
   const survival = phase.kind === 'take' ? null : phase.survival;
+  const homing = phase.kind === 'move' ? phase.homing : 0;
   return record(opcodes[phase.kind], key, index, [
     active === null ? layout.none : list.add(plain(layout.kindEpochOf, active, `years of ${name}`)),
     firstHandledColumn(model) + handledColumns(model, index),
@@ -36,8 +37,7 @@ export function handlingRecord(phase: HandlingPhase, { list, model, index, key }
     quota?.byClass === true ? 1 : 0,
     quota === null ? layout.none : list.add(plain(layout.kindPatchNumbers, quota.levels, `levels of ${name}`)),
     phase.kind === 'move' ? phase.to : layout.none,
-    survival === null
-      ? layout.none
-      : list.add(plain(layout.kindPatchNumbers, Float64Array.of(survival), `survival of ${name}`)),
+    survival === null ? layout.none : list.add(plain(layout.kindClassWeights, survival, `survival of ${name}`)),
+    homing === 0 ? layout.none : list.add(plain(layout.kindPatchNumbers, Float64Array.of(homing), `homing of ${name}`)),
   ]);
 }

@@ -56,6 +56,7 @@ const handled = [
   'levels',
   'to',
   'survival',
+  'homing',
 ];
 
 /** For each opcode its word, then the words of its operands in order. */

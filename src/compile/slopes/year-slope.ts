@@ -164,7 +164,10 @@ function addHandling(
   const classes = compiled.model.classes.length;
   takenSlope(phase, { state, stateSlope, classes }).forEach((slope, i) => {
     entries.add(i, i, -slope);
-    if (phase.kind === 'move') entries.add(phase.to * classes + (i % classes), i, slope * phase.survival);
+    if (phase.kind !== 'move') return;
+    const alive = slope * (phase.survival[i % classes] ?? 0);
+    entries.add(phase.to * classes + (i % classes), i, alive * (1 - phase.homing));
+    entries.add(i, i, alive * phase.homing);
   });
 }
 

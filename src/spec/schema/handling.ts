@@ -1,6 +1,6 @@
 // What people do with animals at a place in the year: take, move, release. Each stands under a name of its own.
 import { Type } from 'typebox';
-import { byClass, classList, expression, Name } from './values.ts';
+import { byClass, classList, expression, Name, type KeyWords } from './values.ts';
 
 const patchList = {
   title: 'a patch or a list of patches',
@@ -53,7 +53,7 @@ const quota = {
       examples: ['[adult]'],
     }),
   ),
-  number: amount('How many animals, together or by class.', 'adult: 6', 'animals'),
+  number: amount('How many animals, together or by class; `all` for all that are there.', 'adult: 6', 'animals'),
   share: amount('Which share of the animals, together or by class.', 0.1, 'share'),
   counted: Type.Optional(
     Type.Union([Type.Literal('each patch'), Type.Literal('as a whole')], {
@@ -65,21 +65,36 @@ const quota = {
   years: Type.Optional(Years),
 };
 
-const survival = {
-  'handling-survival': Type.Optional(
-    expression({
-      description: 'Share that survives being caught and brought.',
-      examples: [0.95],
-      default: 1,
-      'x-unit': 'share',
+const living = (words: KeyWords) =>
+  Type.Optional(
+    Type.Union([expression(words), byClass(words)], {
+      title: 'a number, an expression, or classes with one each',
+      ...words,
     }),
-  ),
-  'first-year-survival': Type.Optional(
+  );
+
+const survival = {
+  'handling-survival': living({
+    description: 'Share that survives being caught and brought, of all or by class; classes that are not named have 1.',
+    examples: [0.95],
+    default: 1,
+    'x-unit': 'share',
+  }),
+  'first-year-survival': living({
+    description:
+      'Share of those brought that does not die of being new, beside all usual deaths, of all or by class. It is taken away at once, since animals are not followed one by one.',
+    examples: [0.8],
+    default: 1,
+    'x-unit': 'share',
+  }),
+};
+
+const homing = {
+  homing: Type.Optional(
     expression({
-      description:
-        'Share of those brought that does not die of being new, beside all usual deaths. It is taken away at once, since animals are not followed one by one.',
-      examples: [0.8],
-      default: 1,
+      description: 'Of those that live through it, the share that goes back at once to where it was caught.',
+      examples: [0.2],
+      default: 0,
       'x-unit': 'share',
     }),
   ),
@@ -120,6 +135,7 @@ export const Move = Type.Object(
     to: Type.String({ ...Name, title: 'a patch', description: 'Where they are set free.', examples: ['North fen'] }),
     ...quota,
     ...survival,
+    ...homing,
   },
   {
     additionalProperties: false,
