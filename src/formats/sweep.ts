@@ -64,6 +64,16 @@ export const SweepSchema = Type.Object({
   ...part.provenance,
   design: Design,
   measures: Type.Array(Type.String()),
+  scenarios: Type.Array(Type.String(), { description: 'Set beside each other at every point; empty for none.' }),
+  quantities: Type.Array(
+    Type.Object({
+      name: Type.String(),
+      scenario: part.maybeText('Null where none are compared.'),
+      better: Type.Union([Type.Literal('less'), Type.Literal('more'), Type.Null()], {
+        description: 'What makes one scenario better than another by it.',
+      }),
+    }),
+  ),
   points: part.whole('Of the whole design.'),
   pointsInPart: Type.Integer({ minimum: 1, description: 'Each part holds so many points, the last perhaps fewer.' }),
   parts: Type.Integer({ minimum: 1 }),
@@ -138,6 +148,40 @@ export const SweepSummarySchema = Type.Object({
       factors: Type.Array(FactorSummary, { description: 'What matters most first.' }),
       orderedBy: Type.String(),
     }),
+  ),
+  rankings: Type.Array(
+    Type.Object({
+      quantity: Type.String(),
+      better: Type.Union([Type.Literal('less'), Type.Literal('more')]),
+      scenarios: Type.Array(
+        Type.Object({ name: Type.String(), best: part.maybe('Share of the points at which it is best.') }),
+      ),
+      agree: part.maybe('Share of the points at which both halves of the replicates name the same scenario.'),
+      factors: Type.Array(
+        Type.Object({
+          name: Type.String(),
+          groups: Type.Array(
+            Type.Object({
+              from: Value,
+              to: Value,
+              points: part.whole('At this value, or in this slice of the values.'),
+              best: Type.Array(part.maybe('By scenario, the share of these points at which it is best.')),
+              preferred: part.text('Best in the mean over these points.'),
+            }),
+          ),
+          switches: Type.Array(
+            Type.Object({
+              at: part.maybe('Between two neighbouring values; null where they are no numbers.'),
+              from: Type.String(),
+              to: Type.String(),
+            }),
+          ),
+          decides: part.maybe('How much of which scenario is best the number decides by itself, 0 to 1.'),
+        }),
+        { description: 'What decides most first.' },
+      ),
+    }),
+    { description: 'Which scenario is best where; empty where none are compared.' },
   ),
   assumptions: Type.Array(Type.String(), { description: 'What each number of sensitivity takes for granted.' }),
 });

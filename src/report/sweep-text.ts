@@ -1,15 +1,22 @@
 // What a sweep says in a terminal: for each measure its range, and what matters most first.
-import type { SweepSummary, FactorSummary, QuantitySummary } from '../sweep/summary/summarise.ts';
+import {
+  differenceOfShares,
+  type SweepSummary,
+  type FactorSummary,
+  type QuantitySummary,
+} from '../sweep/summary/summarise.ts';
+import type { Ranking } from '../sweep/summary/ranking.ts';
 import { percent } from '../view/number.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from './terminal.ts';
 
 export function sweepText(summary: SweepSummary, style: TextStyle): string {
-  const { model, points, design, failed, quantities, assumptions, runs } = summary;
+  const { model, points, design, failed, quantities, rankings, assumptions, runs } = summary;
   const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years each`;
   return joinBlocks([
     bold(printable(model), style),
     `${points.toLocaleString('en')} points (${design})${of}`,
     failed.points === 0 ? '' : failedText(summary, style),
+    ...rankings.map((ranking) => rankingText(ranking, style)),
     ...quantities.map((quantity) => quantityText(quantity, summary, style)),
     ...assumptions.map((text) => wrap(text, style)),
     dim(`skein ${summary.tool.version}, kernel ${summary.tool.kernel}, hash ${summary.hash.slice(0, 12)}`, style),
@@ -29,7 +36,7 @@ function quantityText(quantity: QuantitySummary, summary: SweepSummary, style: T
   const { name, unit, least, greatest, mean, noise, orderedBy, factors } = quantity;
   if (!Number.isFinite(least)) return `${bold(printable(name), style)}: no point has a number`;
   const shown = (value: number): string => numberText(value, unit);
-  const from = unit === 'share' ? '' : ` ${unit}`;
+  const from = unit === 'share' || unit === differenceOfShares ? '' : ` ${unit}`;
   const range = `${shown(least)} to ${shown(greatest)}${from}, mean ${shown(mean)}`;
   const noisy = noise === null ? '' : `; ${percent(noise)} of its variance comes from the number of runs`;
   const { head, cells } = tableOf(summary, quantity);
@@ -90,6 +97,31 @@ function tableOf({ design }: SweepSummary, { unit }: QuantitySummary): FactorTab
   }
 }
 
+function rankingText({ quantity, better, scenarios, agree, factors }: Ranking, style: TextStyle): string {
+  const sure = agree === null ? '' : `; both halves of the runs name the same one at ${percent(agree)} of the points`;
+  return [
+    wrap(`${bold(`best by ${printable(quantity)}`, style)} (${better} is better)${sure}`, style),
+    columnsOf(
+      ['scenario', 'best at'],
+      scenarios.map(({ name, best }) => [name, percent(best)]),
+      style,
+    ),
+    columnsOf(
+      ['number', 'decides', 'where the preferred scenario changes'],
+      factors.map(({ name, decides, switches }) => [
+        name,
+        decides === null ? '' : percent(decides),
+        switches.length === 0 ? 'nowhere' : switches.map(switchText).join('; '),
+      ]),
+      style,
+    ),
+  ].join('\n');
+}
+
+function switchText({ at, from, to }: Ranking['factors'][number]['switches'][number]): string {
+  return `${at === null ? '' : `${three(at)}: `}${from} to ${to}`;
+}
+
 function throughOne(factors: readonly FactorSummary[]): readonly string[] {
   return factors.flatMap(({ name, throughOne: at }) =>
     at === null || at.length === 0
@@ -103,6 +135,7 @@ function bandText({ lower, upper }: { readonly lower: number; readonly upper: nu
 }
 
 function numberText(value: number, unit: string): string {
+  if (unit === differenceOfShares) return `${(100 * value).toFixed(1).replace(/^-0\.0$/u, '0.0')} points`;
   return unit === 'share'
     ? percent(value)
     : Math.abs(value) >= 100

@@ -3,7 +3,15 @@ import type { CompiledModel } from '../pipeline.ts';
 import { provenanceOf } from '../results/provenance.ts';
 import { openDesign } from './design/design.ts';
 import { valuesOf, type Factor } from './design/factor.ts';
-import { columnsOf, isOfRuns, quantitiesOf, type MeasureName, type NumberColumn, type Quantity } from './measures.ts';
+import {
+  columnsOf,
+  inScenarios,
+  isOfRuns,
+  quantitiesOf,
+  type MeasureName,
+  type NumberColumn,
+  type Quantity,
+} from './measures.ts';
 import type { DesignPlan } from './design/design.ts';
 import type { SweepPlan } from './request.ts';
 
@@ -22,6 +30,13 @@ export interface Manifest {
   readonly hash: string;
   readonly design: DesignPlan;
   readonly measures: readonly MeasureName[];
+  readonly scenarios: readonly string[];
+  /** Numbers that each point answers with, and which scenario is better by them. */
+  readonly quantities: readonly {
+    readonly name: string;
+    readonly scenario: string | null;
+    readonly better: Quantity['better'];
+  }[];
   readonly points: number;
   /** Each part holds so many points, the last perhaps fewer. */
   readonly pointsInPart: number;
@@ -36,12 +51,13 @@ export interface Manifest {
 
 /** `spec` as it is to be printed. */
 export function manifestOf({ spec, model }: CompiledModel, plan: SweepPlan, printed: unknown): Manifest {
-  const { design, measures } = plan;
+  const { design, measures, scenarios } = plan;
+  const asked = quantitiesOf(measures, model);
   const { tool, model: title, hash } = provenanceOf(model.title, { spec, plan });
   const points = openDesign(design).size;
   const ofRuns = measures.some(isOfRuns);
   const cells = model.replicates * model.steps * model.patches.length * model.classes.length;
-  const pointsInPart = partSize({ points, cells: ofRuns ? cells : 0, measures });
+  const pointsInPart = partSize({ points, cells: ofRuns ? cells * Math.max(1, scenarios.length) : 0, measures });
   const { replicates, steps: years, seed } = model;
   return {
     format: 'skein-sweep/1',
@@ -50,13 +66,20 @@ export function manifestOf({ spec, model }: CompiledModel, plan: SweepPlan, prin
     hash,
     design,
     measures,
+    scenarios,
+    quantities: placedQuantities(asked, scenarios),
     points,
     pointsInPart,
     parts: Math.ceil(points / pointsInPart),
     runs: ofRuns ? { replicates, years, seed } : null,
-    columns: sweepColumns(design.factors, quantitiesOf(measures, model)),
+    columns: sweepColumns(design.factors, inScenarios(asked, scenarios)),
     spec: printed,
   };
+}
+
+function placedQuantities(asked: readonly Quantity[], scenarios: readonly string[]): Manifest['quantities'] {
+  const named: readonly (string | null)[] = scenarios.length === 0 ? [null] : scenarios;
+  return named.flatMap((scenario) => asked.map(({ name, better }) => ({ name, scenario, better })));
 }
 
 interface PartSize {

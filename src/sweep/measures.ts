@@ -14,28 +14,49 @@ export interface Quantity {
   readonly chance: boolean;
   /** Index of the outcome, where it is of one. */
   readonly outcome?: number;
+  /** Which of two scenarios is better by it; null where neither is. */
+  readonly better: 'less' | 'more' | null;
 }
 
 const plain: Readonly<Record<Exclude<MeasureName, 'chance' | 'chance-at-end'>, Omit<Quantity, 'name' | 'measure'>>> = {
   growth: {
+    better: 'more',
     unit: 'a year',
     chance: false,
     meaning: 'Factor by which numbers change in a year near zero, at mean rates.',
   },
-  damping: { unit: 'a year', chance: false, meaning: 'Factor by which what is out of stable proportion fades.' },
+  damping: {
+    better: null,
+    unit: 'a year',
+    chance: false,
+    meaning: 'Factor by which what is out of stable proportion fades.',
+  },
   standing: {
+    better: 'more',
     unit: 'animals',
     chance: false,
     meaning: 'Animals where numbers come to stand still from the start; missing where they never do.',
   },
-  'path-end': { unit: 'animals', chance: false, meaning: 'Animals at the last count of the path without chance.' },
+  'path-end': {
+    better: 'more',
+    unit: 'animals',
+    chance: false,
+    meaning: 'Animals at the last count of the path without chance.',
+  },
   lowest: {
+    better: 'more',
     unit: 'animals',
     chance: true,
     meaning: 'Mean over the runs of the lowest count of all animals, the start included.',
   },
-  animals: { unit: 'animals', chance: true, meaning: 'Mean number of animals at the last count.' },
+  animals: {
+    better: 'more',
+    unit: 'animals',
+    chance: true,
+    meaning: 'Mean number of animals at the last count.',
+  },
   'patches-in-use': {
+    better: 'more',
     unit: 'patches',
     chance: true,
     meaning: 'Mean number of patches with at least one animal at the last count.',
@@ -50,13 +71,14 @@ export function quantitiesOf(
   return measures.flatMap((measure): readonly Quantity[] => {
     if (measure !== 'chance' && measure !== 'chance-at-end') return [{ name: measure, measure, ...plain[measure] }];
     const when = measure === 'chance' ? 'at some count' : 'at the last count';
-    return outcomes.map(({ name, definition }, outcome) => ({
+    return outcomes.map(({ name, definition, event }, outcome) => ({
       name: `${measure}: ${name}`,
       measure,
       unit: 'share',
       chance: true,
       meaning: `Share of the runs with this ${when}: ${definition}.`,
       outcome,
+      better: event.is === 'above' ? 'more' : 'less',
     }));
   });
 }
@@ -81,6 +103,18 @@ export function columnsOf({ name, unit, meaning, chance }: Quantity): readonly N
     { name: `${name} (first half)`, unit, meaning: 'The same from the first half of the replicates.' },
     { name: `${name} (second half)`, unit, meaning: 'The same from the second half of the replicates.' },
   ];
+}
+
+/** The same for one of several scenarios. */
+function inScenario(quantity: Quantity, scenario: string): Quantity {
+  const { name, meaning } = quantity;
+  return { ...quantity, name: `${name} [${scenario}]`, meaning: `${meaning} Scenario: ${scenario}.` };
+}
+
+/** Scenario by scenario. */
+export function inScenarios(quantities: readonly Quantity[], scenarios: readonly string[]): readonly Quantity[] {
+  if (scenarios.length === 0) return quantities;
+  return scenarios.flatMap((name) => quantities.map((quantity) => inScenario(quantity, name)));
 }
 
 /** Whether it is asked of runs with chance. */

@@ -4,8 +4,20 @@ import { readQuantity, type Dimension } from '../spec/quantity.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Value } from './design/factor.ts';
 
+/** Stands for the scenario that is run. */
+export const scenarioName = 'scenario';
+
 /** Sections whose numbers are no part of the model, or have names of their own. */
-const left: ReadonlySet<string> = new Set(['skein', 'study', 'sweep', 'run', 'year', 'observed', 'uncertainty']);
+const left: ReadonlySet<string> = new Set([
+  'skein',
+  'study',
+  'sweep',
+  'run',
+  'year',
+  'observed',
+  'uncertainty',
+  'scenarios',
+]);
 const leftToo: ReadonlySet<string> = new Set(['parameters', 'classes', 'counts', 'position', 'unit', 'step']);
 
 export interface PlacedNumber {

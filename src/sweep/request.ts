@@ -4,16 +4,19 @@ import type { DiagnosticCode } from '../diagnostic/codes.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { SpecPath } from '../spec/document.ts';
 import type { Finding } from '../spec/finding.ts';
+import { scenarioOf, scenariosOf } from '../spec/plans/scenarios.ts';
 import type { SweepSpec } from '../spec/schema/spec.ts';
 import { openDesign, type DesignPlan } from './design/design.ts';
 import type { Factor, Range, Value } from './design/factor.ts';
 import { mostDimensions } from './design/sobol.ts';
 import { isOfRuns, type MeasureName } from './measures.ts';
-import { numberIn, placesIn } from './places.ts';
+import { numberIn, placesIn, scenarioName } from './places.ts';
 
 export interface SweepPlan {
   readonly design: DesignPlan;
   readonly measures: readonly MeasureName[];
+  /** Set beside each other at every point; empty where the model is run as it stands. */
+  readonly scenarios: readonly string[];
 }
 
 export interface PlannedSweep {
@@ -38,9 +41,10 @@ export function planSweep(asked: SweepSpec, compiled: CompiledModel): PlannedSwe
   const told = new Told(findings);
   const factors = asked.list === undefined ? factorsOf(asked, compiled, told) : listFactors(asked.list, compiled, told);
   const measures = measuresOf(asked, compiled, told);
+  const scenarios = scenariosCompared(asked, compiled, told);
   const design = factors.length === 0 || findings.length > 0 ? null : designOf(asked, factors, told);
-  if (design !== null) weigh({ design, measures }, compiled, told);
-  return { plan: design === null || findings.length > 0 ? null : { design, measures }, findings };
+  if (design !== null) weigh({ design, measures, scenarios }, compiled, told);
+  return { plan: design === null || findings.length > 0 ? null : { design, measures, scenarios }, findings };
 }
 
 class Told {
@@ -77,8 +81,32 @@ function uncertainOnes({ model }: CompiledModel): Ranges {
   return Object.fromEntries(names.map((name) => [name, { 'as-uncertain': true }]));
 }
 
+/** Every scenario, or those that are named. */
+function scenariosCompared({ compare, over }: SweepSpec, { spec }: CompiledModel, told: Told): readonly string[] {
+  if (compare === undefined) return [];
+  const known = scenariosOf(spec).map(({ name }) => name);
+  if (over?.[scenarioName] !== undefined) {
+    told.fail('sweep-shape', ['compare'], 'Scenarios are compared at every point, and are swept over as well', {
+      fix: 'Remove `scenario` from `over`.',
+    });
+  }
+  if (compare !== 'all') {
+    compare.forEach((name, i) => {
+      if (!known.includes(name)) tellScenario(name, known, told, ['compare', i]);
+    });
+    return compare;
+  }
+  if (known.length < 2) told.fail('sweep-shape', ['compare'], 'The model has no scenarios to compare');
+  return known;
+}
+
+function tellScenario(name: Value, known: readonly string[], told: Told, path: SpecPath): void {
+  told.fail('sweep-range', path, `There is no scenario \`${name}\``, { expected: `one of ${known.join(', ')}` });
+}
+
 /** The value in the model; null after telling that there is no such number. */
 function baseOf(name: string, { spec, model }: CompiledModel, told: Told, path: SpecPath): Value | null {
+  if (name === scenarioName) return scenarioOf(spec);
   const parameter = model.parameters.find((one) => one.name === name);
   if (parameter !== undefined) return parameter.value;
   const places = placesIn(spec);
@@ -100,8 +128,14 @@ interface Ranged {
   readonly base: Value;
 }
 
-function rangeOf({ name, range }: Ranged, { model }: CompiledModel, told: Told): Range | null {
+function rangeOf({ name, range }: Ranged, { spec, model }: CompiledModel, told: Told): Range | null {
   const path = ['over', name];
+  if (name === scenarioName)
+    return scenarioRange(
+      range,
+      scenariosOf(spec).map((one) => one.name),
+      told,
+    );
   if (isList(range)) {
     const values = range.map((value) => numberIn(value) ?? value);
     const text = values.find((value) => typeof value === 'string');
@@ -126,6 +160,17 @@ function rangeOf({ name, range }: Ranged, { model }: CompiledModel, told: Told):
     expected: from < to ? 'such as { from: 0.1, to: 10, scale: ratio }' : 'the lower number first',
   });
   return null;
+}
+
+function scenarioRange(range: Ranges[string], known: readonly string[], told: Told): Range | null {
+  const path = ['over', scenarioName];
+  if (!isList(range)) {
+    told.fail('sweep-range', path, 'Scenarios have names', { expected: `a list of ${known.join(', ')}` });
+    return null;
+  }
+  const unknown = range.filter((name) => !known.includes(String(name)));
+  for (const name of unknown) tellScenario(name, known, told, path);
+  return unknown.length > 0 ? null : { by: 'values', values: range };
 }
 
 function isList(range: Ranges[string]): range is Extract<Ranges[string], readonly Value[]> {
@@ -197,10 +242,12 @@ function designOf(asked: SweepSpec, factors: readonly Factor[], told: Told): Des
 }
 
 /** Refuses what would surely never end. */
-function weigh({ design, measures }: SweepPlan, { model }: CompiledModel, told: Told): void {
+function weigh({ design, measures, scenarios }: SweepPlan, { model }: CompiledModel, told: Told): void {
   const { size } = openDesign(design);
   const { replicates, steps, patches, classes } = model;
-  const runs = measures.some(isOfRuns) ? replicates * steps * patches.length * classes.length : 0;
+  const runs = measures.some(isOfRuns)
+    ? replicates * steps * patches.length * classes.length * Math.max(1, scenarios.length)
+    : 0;
   if (size > mostPoints) {
     told.fail('sweep-size', ['design'], `This sweep has ${size.toLocaleString('en')} points`, {
       expected: `at most ${mostPoints.toLocaleString('en')}`,

@@ -46,6 +46,7 @@ export interface SweepOptions extends CommonOptions {
   readonly designSeed?: number;
   readonly plain?: boolean;
   readonly measure?: readonly MeasureWord[];
+  readonly compare?: 'all' | string[];
   readonly shard?: Shard;
   readonly plan?: boolean;
 }
@@ -72,6 +73,11 @@ export function addSweepOptions(command: Command): Command {
       new Option('--design-seed <n>', 'decides where the points of a sampled design lie').argParser(wholeFrom(0)),
     )
     .option('--plain', 'Sobol points as they are, not scrambled')
+    .addOption(
+      new Option('--compare <names>', 'set scenarios beside each other at every point: all, or a,b,c').argParser(
+        (text: string) => (text === 'all' ? text : text.split(',').map((name) => name.trim())),
+      ),
+    )
     .addOption(
       new Option('--shard <i/n>', 'do only the i-th of n shards, for `skein sweep merge`').argParser(readShard),
     )
@@ -126,7 +132,7 @@ function readShard(text: string): Shard {
 
 /** Flags stand above the section; a list of points takes the place of numbers to sweep over, and the other way round. */
 export function askedOf(section: SweepSpec | undefined, options: SweepOptions): SweepSpec {
-  const { over, design, list, points, designSeed, plain, measure } = options;
+  const { over, design, list, points, designSeed, plain, measure, compare } = options;
   const named: SweepSpec = { ...section };
   if (over !== undefined || list !== undefined) {
     delete named.list;
@@ -140,6 +146,7 @@ export function askedOf(section: SweepSpec | undefined, options: SweepOptions): 
     ...(points === undefined ? {} : { points }),
     ...(designSeed === undefined ? {} : { seed: designSeed }),
     ...(plain === true ? { scrambled: false } : {}),
+    ...(compare === undefined ? {} : { compare }),
     ...(measure === undefined ? {} : { measures: [...measure] }),
   };
 }

@@ -111,6 +111,14 @@ export const Sweep = Type.Object(
         default: 'true',
       }),
     ),
+    compare: Type.Optional(
+      Type.Union([Type.Literal('all'), Type.Array(Type.String({ minLength: 1 }), { minItems: 2, uniqueItems: true })], {
+        title: '`all`, or a list of scenarios',
+        description:
+          'Scenarios that are set beside each other at every point, in the same futures: which of them is best where.',
+        examples: ['all'],
+      }),
+    ),
     measures: Type.Optional(
       Type.Array(
         Type.Union([

@@ -2,7 +2,8 @@
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { SpecPath } from '../../spec/document.ts';
 import type { Factor, Value } from '../design/factor.ts';
-import { placesIn, withValueAt } from '../places.ts';
+import { withScenario } from '../../spec/plans/scenarios.ts';
+import { placesIn, scenarioName, withValueAt } from '../places.ts';
 
 /** Gives the spec with the values of the factors, in their order; what is swept is then taken as known. */
 export function openChange(spec: Spec, factors: readonly Factor[]): (values: readonly Value[]) => Spec {
@@ -15,13 +16,19 @@ export function openChange(spec: Spec, factors: readonly Factor[]): (values: rea
   return (values) => {
     const given: Record<string, Value> = {};
     let changed = base;
+    let scenario: string | null = null;
     factors.forEach(({ name }, k) => {
       const [path, value] = [targets[k], values[k]];
       if (value === undefined) return;
+      if (name === scenarioName) {
+        scenario = String(value);
+        return;
+      }
       if (path === null || path === undefined) given[name] = value;
       else changed = withValueAt(changed, path, value);
     });
-    return { ...changed, parameters: { ...changed.parameters, ...given } };
+    const whole = { ...changed, parameters: { ...changed.parameters, ...given } };
+    return scenario === null ? whole : withScenario(whole, scenario);
   };
 }
 

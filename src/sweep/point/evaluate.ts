@@ -17,9 +17,11 @@ import { compileSpec } from '../../pipeline.ts';
 import { resolveModel } from '../../model/resolve.ts';
 import { leading } from '../../numeric/leading.ts';
 import type { Finding } from '../../spec/finding.ts';
+import { asNow } from '../../spec/plans/lay.ts';
+import { scenarioOf, withScenario } from '../../spec/plans/scenarios.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { Value } from '../design/factor.ts';
-import { columnsOf, isOfRuns, quantitiesOf, type Quantity } from '../measures.ts';
+import { columnsOf, inScenarios, isOfRuns, quantitiesOf, type Quantity } from '../measures.ts';
 import type { SweepPlan } from '../request.ts';
 import { openChange } from './change.ts';
 import { Tally } from './tally.ts';
@@ -38,19 +40,26 @@ export interface Evaluator {
 }
 
 /** The base spec compiles. A point is the model as `--set` would have it: with its own capacities, and the same seed. */
-export function openEvaluator(spec: Spec, { design, measures }: SweepPlan): Evaluator {
+export function openEvaluator(spec: Spec, { design, measures, scenarios }: SweepPlan): Evaluator {
   const change = openChange(spec, design.factors);
   const base = resolveModel(change([])).model;
   if (base === null) throw new Error('The base model of a sweep has a mistake.');
-  const quantities = quantitiesOf(measures, base);
+  const asked = quantitiesOf(measures, base);
+  const quantities = inScenarios(asked, scenarios);
   const width = quantities.flatMap(columnsOf).length;
   const machine = measures.some(isOfRuns) ? loadMachine() : null;
   return {
     quantities,
     at: (values) => {
-      const compiled = compilePoint(change(values), quantities);
-      if (typeof compiled === 'string') return { numbers: new Float64Array(width).fill(NaN), failure: compiled };
-      return { numbers: measure(compiled, quantities, machine), failure: '' };
+      const changed = change(values);
+      const specs = scenarios.length === 0 ? [changed] : scenarios.map((name) => withScenario(changed, name));
+      const numbers = new Float64Array(width).fill(NaN);
+      for (const [s, own] of specs.entries()) {
+        const compiled = compilePoint(own, asked);
+        if (typeof compiled === 'string') return { numbers: numbers.fill(NaN), failure: compiled };
+        numbers.set(measure(compiled, asked, machine), (s * width) / specs.length);
+      }
+      return { numbers, failure: '' };
     },
   };
 }
@@ -64,7 +73,7 @@ interface CompiledPoint extends Compiled {
 /** A text says why there is no such model. */
 function compilePoint(spec: Spec, quantities: readonly Quantity[]): CompiledPoint | string {
   const nearZeroOnly = quantities.every(({ measure }) => measure === 'growth' || measure === 'damping');
-  if (nearZeroOnly) {
+  if (nearZeroOnly && scenarioOf(spec) === asNow) {
     const near = compileNearZero(spec);
     if (near !== null) return near;
   }

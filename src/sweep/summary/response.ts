@@ -41,7 +41,11 @@ export function responseTo(
   };
 }
 
-function groupsOf(values: Float64Array | readonly string[], rows: readonly number[]): readonly (readonly number[])[] {
+/** Rows by value, or in slices of equally many where there are many values. */
+export function groupsOf(
+  values: Float64Array | readonly string[],
+  rows: readonly number[],
+): readonly (readonly number[])[] {
   const byValue = new Map<Value, number[]>();
   for (const row of rows) {
     const value = values[row] ?? NaN;

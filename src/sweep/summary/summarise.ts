@@ -7,8 +7,12 @@ import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
 import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
 import { screening, type FactorScreen } from '../sensitivity/screening.ts';
 import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
+import { rankScenarios, type Ranking } from './ranking.ts';
 import { crossings, responseTo, type Response } from './response.ts';
 import type { Swept } from './swept.ts';
+
+/** Unit of a chance less another one. */
+export const differenceOfShares = 'difference of shares';
 
 export interface SweepSummary {
   readonly format: 'skein-sweep-summary/1';
@@ -24,6 +28,8 @@ export interface SweepSummary {
   };
   readonly factors: readonly { readonly name: string; readonly base: Value }[];
   readonly quantities: readonly QuantitySummary[];
+  /** Which scenario is best where; empty where none are compared. */
+  readonly rankings: readonly Ranking[];
   /** What each number of sensitivity assumes. */
   readonly assumptions: readonly string[];
 }
@@ -69,7 +75,8 @@ export function summariseSweep(swept: Swept): SweepSummary {
     runs,
     failed: { points: failed.reduce((sum, one) => sum + one.points, 0), reasons: failed },
     factors: design.factors.map(({ name, base }) => ({ name, base })),
-    quantities: quantityColumns(swept).map((column) => summariseQuantity(swept, column)),
+    quantities: [...quantityColumns(swept), ...differenceColumns(swept)].map((one) => summariseQuantity(swept, one)),
+    rankings: rankingsOf(swept),
     assumptions: assumptionsOf(design.design, runs !== null),
   };
 }
@@ -81,20 +88,62 @@ interface QuantityColumn {
   readonly observed: Observed;
 }
 
-/** Columns that are no part of another one. */
 function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
-  return manifest.columns.slice(1 + manifest.design.factors.length, -1).flatMap(({ name, unit, meaning }) => {
-    const whole = numbers.get(name);
-    if (whole === undefined || / \((standard error|first half|second half)\)$/u.test(name)) return [];
-    const first = numbers.get(`${name} (first half)`) ?? whole;
-    const second = numbers.get(`${name} (second half)`) ?? whole;
-    return [{ name, unit, meaning, observed: { first, second } }];
+  return manifest.quantities.flatMap((quantity) => {
+    const column = manifest.columns.find(({ name }) => name === columnOf(quantity.name, quantity.scenario));
+    const observed = column === undefined ? null : observedOf(numbers, column.name);
+    return column === undefined || observed === null ? [] : [{ ...column, observed }];
+  });
+}
+
+function columnOf(name: string, scenario: string | null): string {
+  return scenario === null ? name : `${name} [${scenario}]`;
+}
+
+function observedOf(numbers: Swept['numbers'], name: string): Observed | null {
+  const whole = numbers.get(name);
+  if (whole === undefined) return null;
+  return { first: numbers.get(`${name} (first half)`) ?? whole, second: numbers.get(`${name} (second half)`) ?? whole };
+}
+
+/** Of each scenario that is compared against the first, in the same futures. */
+function differenceColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
+  const [base] = manifest.scenarios;
+  if (base === undefined) return [];
+  return manifest.quantities.flatMap(({ name, scenario }) => {
+    const own = scenario === null || scenario === base ? null : observedOf(numbers, columnOf(name, scenario));
+    const first = observedOf(numbers, columnOf(name, base));
+    const column = manifest.columns.find((one) => one.name === columnOf(name, base));
+    if (own === null || first === null || column === undefined) return [];
+    const half = own.first === own.second;
+    const less = (a: Float64Array, b: Float64Array) => a.map((value, i) => value - (b[i] ?? NaN));
+    const one = less(own.first, first.first);
+    const observed = { first: one, second: half ? one : less(own.second, first.second) };
+    const unit = column.unit === 'share' ? differenceOfShares : column.unit;
+    const meaning = `${name} of ${String(scenario)} less that of ${base}, in the same futures.`;
+    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed }];
+  });
+}
+
+function rankingsOf(swept: Swept): readonly Ranking[] {
+  const { manifest, numbers, values } = swept;
+  const { scenarios, design } = manifest;
+  const [base] = scenarios;
+  if (base === undefined) return [];
+  const factors = design.factors.map(({ name }, k) => ({ name, values: values[k] ?? [], rows: rowsOf(swept, k) }));
+  return manifest.quantities.flatMap(({ name, scenario, better }) => {
+    if (scenario !== base || better === null) return [];
+    const ranked = scenarios.flatMap((one) => {
+      const observed = observedOf(numbers, columnOf(name, one));
+      return observed === null ? [] : [{ name: one, observed }];
+    });
+    return [rankScenarios({ quantity: name, better, scenarios: ranked, factors })];
   });
 }
 
 function summariseQuantity(swept: Swept, { name, unit, meaning, observed }: QuantityColumn): QuantitySummary {
   const { design, runs } = swept.manifest;
-  const whole = swept.numbers.get(name) ?? observed.first;
+  const whole = swept.numbers.get(name) ?? observed.first.map((_, row) => wholeAt(observed, row));
   const known = whole.filter((value) => !Number.isNaN(value));
   const count = design.factors.length;
   const shares = design.design === 'sobol indices' ? sharesOfVariance(observed, count) : null;
@@ -108,7 +157,7 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed }: Quan
     return {
       name: factor.name,
       response,
-      throughOne: name === 'growth' ? crossings(response, 1) : null,
+      throughOne: name.startsWith('growth') && !name.includes(' less ') ? crossings(response, 1) : null,
       shares: shares?.factors[k] ?? null,
       screen: screens[k] ?? null,
       rankCorrelation: ranks[k] ?? null,

@@ -1,0 +1,150 @@
+// Which scenario is best at each point, and what that depends on: the sensitivity of the ranking, not only of a number.
+import type { Value } from '../design/factor.ts';
+import type { Observed } from '../sensitivity/observed.ts';
+import { groupsOf } from './response.ts';
+
+export interface RankedScenario {
+  readonly name: string;
+  readonly observed: Observed;
+}
+
+export interface RankingGroup {
+  readonly from: Value;
+  readonly to: Value;
+  readonly points: number;
+  /** By scenario, the share of these points at which it is best; what is equal shares the point. */
+  readonly best: readonly number[];
+  /** Best in the mean over these points. */
+  readonly preferred: string;
+}
+
+export interface FactorRanking {
+  readonly name: string;
+  readonly groups: readonly RankingGroup[];
+  /** Between which neighbouring values the preferred scenario changes. */
+  readonly switches: readonly { readonly at: number | null; readonly from: string; readonly to: string }[];
+  /** How much of which scenario is best the number decides by itself: 0 nothing, 1 all of it. */
+  readonly decides: number | null;
+}
+
+export interface Ranking {
+  readonly quantity: string;
+  readonly better: 'less' | 'more';
+  readonly scenarios: readonly { readonly name: string; readonly best: number }[];
+  /** Share of the points at which both halves of the replicates name the same scenario; null without chance. */
+  readonly agree: number | null;
+  /** What decides most first. */
+  readonly factors: readonly FactorRanking[];
+}
+
+export interface RankingRequest {
+  readonly quantity: string;
+  readonly better: 'less' | 'more';
+  readonly scenarios: readonly RankedScenario[];
+  /** By factor its values and the points at which it is looked at. */
+  readonly factors: readonly {
+    readonly name: string;
+    readonly values: Float64Array | readonly string[];
+    readonly rows: readonly number[];
+  }[];
+}
+
+export function rankScenarios({ quantity, better, scenarios, factors }: RankingRequest): Ranking {
+  const sign = better === 'less' ? 1 : -1;
+  const half = (pick: (observed: Observed) => Float64Array) => scenarios.map(({ observed }) => pick(observed));
+  const [first, second] = [half((observed) => observed.first), half((observed) => observed.second)];
+  const points = first[0]?.length ?? 0;
+  const worst = scenarios.map((_, s) =>
+    Float64Array.from(
+      { length: points },
+      (_unused, row) => sign * ((first[s]?.[row] ?? NaN) + (second[s]?.[row] ?? NaN)),
+    ),
+  );
+  const known = Array.from({ length: points }, (_, row) => row).filter((row) => !Number.isNaN(worst[0]?.[row] ?? NaN));
+  const noisy = scenarios.some(({ observed }) => observed.first !== observed.second);
+  const best = bestShares(worst, known);
+  return {
+    quantity,
+    better,
+    scenarios: scenarios.map(({ name }, s) => ({ name, best: best[s] ?? NaN })),
+    agree: noisy ? agreement(first, second, { known, sign }) : null,
+    factors: factors
+      .map(({ name, values, rows }) => {
+        const whole = rows.filter((row) => !Number.isNaN(worst[0]?.[row] ?? NaN));
+        return factorRanking(name, values, { worst, scenarios, rows: whole, best });
+      })
+      .toSorted((a, b) => (b.decides ?? -1) - (a.decides ?? -1)),
+  };
+}
+
+/** By scenario, the share of rows at which it is best. */
+function bestShares(worst: readonly Float64Array[], rows: readonly number[]): readonly number[] {
+  const shares = worst.map(() => 0);
+  for (const row of rows) {
+    const least = Math.min(...worst.map((values) => values[row] ?? NaN));
+    const ties = worst.filter((values) => values[row] === least).length;
+    worst.forEach((values, s) => {
+      if (values[row] === least) shares[s] = (shares[s] ?? 0) + 1 / ties;
+    });
+  }
+  return shares.map((share) => share / rows.length);
+}
+
+interface Known {
+  readonly known: readonly number[];
+  readonly sign: number;
+}
+
+function agreement(first: readonly Float64Array[], second: readonly Float64Array[], { known, sign }: Known): number {
+  const bestOf = (values: readonly Float64Array[], row: number): number =>
+    values.reduce((top, own, s) => (sign * (own[row] ?? 0) < sign * (values[top]?.[row] ?? 0) ? s : top), 0);
+  return known.filter((row) => bestOf(first, row) === bestOf(second, row)).length / known.length;
+}
+
+interface Ranked {
+  readonly worst: readonly Float64Array[];
+  readonly scenarios: readonly RankedScenario[];
+  readonly rows: readonly number[];
+  readonly best: readonly number[];
+}
+
+function factorRanking(name: string, values: Float64Array | readonly string[], ranked: Ranked): FactorRanking {
+  const { worst, scenarios, rows, best } = ranked;
+  const groups = groupsOf(values, rows).map((own): RankingGroup => {
+    const [first = 0, last = first] = [own[0], own.at(-1)];
+    const means = worst.map((one) => own.reduce((sum, row) => sum + (one[row] ?? 0), 0));
+    const preferred = scenarios[means.indexOf(Math.min(...means))]?.name ?? '';
+    return {
+      from: values[first] ?? NaN,
+      to: values[last] ?? NaN,
+      points: own.length,
+      best: bestShares(worst, own),
+      preferred,
+    };
+  });
+  return { name, groups, switches: switchesOf(groups), decides: decided(groups, best) };
+}
+
+function switchesOf(groups: readonly RankingGroup[]): FactorRanking['switches'] {
+  return groups.flatMap((group, i) => {
+    const before = groups[i - 1];
+    if (before === undefined || before.preferred === group.preferred) return [];
+    const at = typeof before.to === 'number' && typeof group.from === 'number' ? (before.to + group.from) / 2 : null;
+    return [{ at, from: before.preferred, to: group.preferred }];
+  });
+}
+
+/** Of the variance of being best, the share between the values of the number, all scenarios together (a correlation ratio). */
+function decided(groups: readonly RankingGroup[], best: readonly number[]): number | null {
+  const points = groups.reduce((sum, group) => sum + group.points, 0);
+  const total = best.reduce((sum, share) => sum + share * (1 - share), 0);
+  if (!(total > 0)) return null;
+  const between = groups.reduce(
+    (sum, group) =>
+      sum +
+      group.points *
+        best.reduce((inner, share, s) => inner + ((group.best[s] ?? 0) - share) * ((group.best[s] ?? 0) - share), 0),
+    0,
+  );
+  return between / points / total;
+}
