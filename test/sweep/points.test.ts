@@ -7,6 +7,14 @@ import { readSpec } from '../../src/spec/read.ts';
 import type { Spec, SweepSpec } from '../../src/spec/schema/spec.ts';
 import { applySettings, type Settings } from '../../src/spec/settings.ts';
 import { openEvaluator } from '../../src/sweep/point/evaluate.ts';
+import { buildBlock } from '../../src/compile/block.ts';
+import type { Compiled } from '../../src/compile/year-map.ts';
+import { buildLandscape } from '../../src/landscape/build.ts';
+import { resolveModel } from '../../src/model/resolve.ts';
+import { leading } from '../../src/numeric/leading.ts';
+import { openDesign } from '../../src/sweep/design/design.ts';
+import type { Factor } from '../../src/sweep/design/factor.ts';
+import { manyPoints } from '../../src/sweep/point/many-points.ts';
 import { columnsOf } from '../../src/sweep/measures.ts';
 import { planSweep } from '../../src/sweep/request.ts';
 
@@ -26,6 +34,15 @@ function evaluatorOf(spec: Spec, asked: SweepSpec) {
     const { numbers, failure } = evaluator.at(values);
     return { failure, numbers: Object.fromEntries(names.map((name, i) => [name, numbers[i] ?? NaN])) };
   };
+}
+
+function nobodyCrowds(model: Compiled['model']): Compiled['coefficients'] {
+  const { length } = model.patches;
+  return model.crowding.map(({ alleeHalf }) => ({
+    form: new Array(length).fill('none'),
+    coefficient: new Float64Array(length),
+    alleeHalf,
+  }));
 }
 
 const over = { adult_survival: { from: 0.4, to: 0.7 }, natal_leaving: [0.05, 0.3] };
@@ -101,4 +118,52 @@ test('a point that no model can have has its reason, and no numbers', () => {
   const at = evaluatorOf(specOf('reed-hare'), { over: { adult_survival: { from: 0.5, to: 2 } }, measures: ['growth'] });
   expect(at([1.5])).toEqual({ failure: "The survival of adult in Abbot's wash is 1.5", numbers: { growth: NaN } });
   expect(at([0.5]).failure).toBe('');
+});
+
+test('many growth rates at a time are those of points compiled one by one', () => {
+  const spec = specOf('reed-hare');
+  const named = ['adult_survival', 'newborn_survival', 'litter', 'natal_leaving'] as const;
+  const ranges = { adult_survival: [0.3, 0.8], newborn_survival: [0.2, 0.6], litter: [1, 4], natal_leaving: [0, 0.5] };
+  const factors = named.map((name): Factor => {
+    const [from = 0, to = 1] = ranges[name];
+    const base = spec.parameters![name];
+    return {
+      name,
+      base: (base as { readonly value: number }).value,
+      range: { by: 'from to', from, to, scale: 'even', steps: 2 },
+    };
+  });
+  const design = openDesign({ design: 'sobol', factors, points: 300, seed: 1, scrambled: true });
+  const many = manyPoints(spec, factors, nobodyCrowds)!;
+  expect(many).not.toBeNull();
+  const points = Array.from({ length: design.size }, (_, i) => design.at(i));
+  const growth = many.growthAt([...points, [1.2, 0.4, 2, 0.1]]);
+  expect(growth.at(-1)).toBeNaN();
+  points
+    .filter((_, i) => i % 10 === 0)
+    .forEach((values, i) => {
+      const set = named.map((name, k) => ({ name, value: String(values[k]) }));
+      const applied = applySettings(spec, { set });
+      const model = resolveModel((applied as { readonly spec: Spec }).spec).model!;
+      const { landscape } = buildLandscape(model);
+      const alone = leading(
+        buildBlock({ model, landscape, coefficients: nobodyCrowds(model) }, 'zero').matrix,
+      ).growthRate;
+      expect(Math.abs((growth[i * 10] ?? 0) / alone - 1)).toBeLessThan(1e-11);
+    });
+});
+
+test('what moves more than rates is compiled point by point', () => {
+  const one = (name: string): Factor[] => [{ name, base: 1, range: { by: 'values', values: [1, 2] } }];
+  const pond = specOf('two-ponds');
+  const moved: Spec = {
+    ...pond,
+    parameters: { far: 1 },
+    named: {
+      ...pond.named,
+      wandering: { ...pond.named['wandering'], kernel: { shape: 'exponential', mean: 'far' } } as never,
+    },
+  };
+  expect(manyPoints(moved, one('far'), nobodyCrowds)).toBeNull();
+  expect(manyPoints(pond, one('survival.adult'), nobodyCrowds)).toBeNull();
 });

@@ -24,6 +24,7 @@ import type { Value } from '../design/factor.ts';
 import { columnsOf, inScenarios, isOfRuns, quantitiesOf, type Quantity } from '../measures.ts';
 import type { SweepPlan } from '../request.ts';
 import { openChange } from './change.ts';
+import { manyPoints } from './many-points.ts';
 import { Tally } from './tally.ts';
 
 /** What a point came to. */
@@ -37,6 +38,8 @@ export interface PointResult {
 export interface Evaluator {
   readonly quantities: readonly Quantity[];
   at(values: readonly Value[]): PointResult;
+  /** The same for many points, which may be faster together. */
+  all(points: readonly (readonly Value[])[]): readonly PointResult[];
 }
 
 /** The base spec compiles. A point is the model as `--set` would have it: with its own capacities, and the same seed. */
@@ -48,20 +51,29 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
   const quantities = inScenarios(asked, scenarios);
   const width = quantities.flatMap(columnsOf).length;
   const machine = measures.some(isOfRuns) ? loadMachine() : null;
-  return {
-    quantities,
-    at: (values) => {
-      const changed = change(values);
-      const specs = scenarios.length === 0 ? [changed] : scenarios.map((name) => withScenario(changed, name));
-      const numbers = new Float64Array(width).fill(NaN);
-      for (const [s, own] of specs.entries()) {
-        const compiled = compilePoint(own, asked);
-        if (typeof compiled === 'string') return { numbers: numbers.fill(NaN), failure: compiled };
-        numbers.set(measure(compiled, asked, machine), (s * width) / specs.length);
-      }
-      return { numbers, failure: '' };
-    },
+  const at = (values: readonly Value[]): PointResult => {
+    const changed = change(values);
+    const specs = scenarios.length === 0 ? [changed] : scenarios.map((name) => withScenario(changed, name));
+    const numbers = new Float64Array(width).fill(NaN);
+    for (const [s, own] of specs.entries()) {
+      const compiled = compilePoint(own, asked);
+      if (typeof compiled === 'string') return { numbers: numbers.fill(NaN), failure: compiled };
+      numbers.set(measure(compiled, asked, machine), (s * width) / specs.length);
+    }
+    return { numbers, failure: '' };
   };
+  const growthOnly = measures.every((name) => name === 'growth') && scenarios.length === 0;
+  const inBase = change(design.factors.map((factor) => factor.base));
+  const many = growthOnly && scenarioOf(inBase) === asNow ? manyPoints(inBase, design.factors, withoutCrowding) : null;
+  if (many === null) return { quantities, at, all: (points) => points.map(at) };
+  const all = (points: readonly (readonly Value[])[]): readonly PointResult[] => {
+    const growth = many.growthAt(points);
+    return points.map((values, i) => {
+      const own = growth[i] ?? NaN;
+      return Number.isNaN(own) ? at(values) : { numbers: Float64Array.of(own), failure: '' };
+    });
+  };
+  return { quantities, at: (values) => all([values])[0] ?? at(values), all };
 }
 
 interface CompiledPoint extends Compiled {

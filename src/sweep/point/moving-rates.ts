@@ -1,0 +1,186 @@
+// Rates that move with what is swept: where they stand in the tables of the phases, and how they are worked out anew. Null where
+// anything else of the model moves, too: then every point is compiled from its spec.
+import { pinned } from '../../machine/pinned.ts';
+import type { Model, Phase, RateTable } from '../../model/model.ts';
+import { resolveWithContext } from '../../model/resolve.ts';
+import type { Context } from '../../model/context.ts';
+import { evaluate } from '../../spec/expression/evaluate.ts';
+import { namesIn } from '../../spec/expression/names.ts';
+import type { Ast } from '../../spec/expression/ast.ts';
+import type { Spec } from '../../spec/schema/spec.ts';
+import type { Factor } from '../design/factor.ts';
+
+type RateField = 'births' | 'survival' | 'leaving';
+
+/** One number of a table. */
+export interface MovingRate {
+  readonly phase: number;
+  readonly field: RateField;
+  readonly index: number;
+  /** Which of the numbers of `valuesAt` it is. */
+  readonly source: number;
+}
+
+export interface MovingRates {
+  readonly model: Model;
+  readonly rates: readonly MovingRate[];
+  /** In the order of `source`; null where one is no rate, so that the whole compiler has to say why. */
+  valuesAt(values: readonly number[]): Float64Array | null;
+}
+
+/** `spec` with the base values of the factors, all of them named parameters. */
+export function movingRates(spec: Spec, factors: readonly Factor[]): MovingRates | null {
+  const { model, context } = resolveWithContext(spec);
+  const names = new Set(factors.map(({ name }) => name));
+  if (model === null || !isPlain(model, context, names)) return null;
+  const found = collect(model, context, names);
+  return found === null || movesElsewhere(context, names, found.paths) ? null : { model, ...found };
+}
+
+/** Nothing but tables of rates can move: no weather, no stages that rest on growth, no attributes that are worked out. */
+function isPlain(model: Model, { spec, attributes }: Context, names: ReadonlySet<string>): boolean {
+  if (model.variation !== null || model.catastrophes.length > 0) return false;
+  if ([...names].some((name) => spec.parameters?.[name] === undefined)) return false;
+  if (attributes.some((own) => [...own.values()].some((value) => typeof value !== 'number'))) return false;
+  return model.phases.every(
+    (phase) =>
+      !(phase.kind === 'breeding' && (phase.offspring !== undefined || phase.mating !== undefined)) &&
+      !(phase.kind === 'ageing' && phase.stages !== undefined) &&
+      phase.kind !== 'demography',
+  );
+}
+
+interface Collected {
+  readonly rates: readonly MovingRate[];
+  readonly paths: ReadonlySet<string>;
+  valuesAt(values: readonly number[]): Float64Array | null;
+}
+
+interface Source {
+  readonly ast: Ast;
+  readonly attributes: ReadonlyMap<string, unknown> | undefined;
+  readonly scale: number;
+  readonly mostOne: boolean;
+}
+
+function collect(model: Model, context: Context, names: ReadonlySet<string>): Collected | null {
+  const sources = new Map<string, { readonly source: Source; readonly at: number }>();
+  const rates: MovingRate[] = [];
+  const paths = new Set<string>();
+  for (const [phase, own] of model.phases.entries()) {
+    const table = tableOf(own);
+    if (table === null || table.table.written === undefined) continue;
+    const size = (table.table.epochs[0]?.length ?? 0) / model.patches.length;
+    for (const [index, written] of table.table.written.entries()) {
+      const patch = Math.floor(index / size);
+      const attributes = context.attributes[patch];
+      const ast =
+        written === null
+          ? null
+          : context.numbers.expanded(written.expression, [...written.path], { keep: names, attributes });
+      if (written === null || ast === null || !namesIn(ast).some((name) => names.has(name))) continue;
+      if (table.table.epochs.length !== 1 || namesIn(ast).includes('year')) return null;
+      const scale = scaleOf(own, context);
+      const local = namesIn(ast).some((name) => attributes?.has(name) === true);
+      const key = JSON.stringify([written.expression, scale, local ? patch : -1, table.field === 'births']);
+      const known = sources.get(key) ?? {
+        source: { ast, attributes, scale, mostOne: table.field !== 'births' },
+        at: sources.size,
+      };
+      sources.set(key, known);
+      rates.push({ phase, field: table.field, index, source: known.at });
+      paths.add(written.path.join('\0'));
+    }
+  }
+  const order = [...sources.values()].map(({ source }) => source);
+  const places = new Map([...names].map((name, k) => [name, k]));
+  const valuesAt = (values: readonly number[]): Float64Array | null => valuesOf(order, places, values);
+  const base = valuesAt([...names].map((name) => valueOf(context.spec, name)));
+  const same = rates.every(
+    (rate) => base?.[rate.source] === tableOf(model.phases[rate.phase])?.table.epochs[0]?.[rate.index],
+  );
+  return base !== null && same ? { rates, paths, valuesAt } : null;
+}
+
+function valueOf(spec: Spec, name: string): number {
+  const written = spec.parameters?.[name];
+  const value = typeof written === 'object' ? written.value : written;
+  return typeof value === 'number' ? value : NaN;
+}
+
+function valuesOf(
+  sources: readonly Source[],
+  places: ReadonlyMap<string, number>,
+  values: readonly number[],
+): Float64Array | null {
+  const out = new Float64Array(sources.length);
+  for (const [s, { ast, attributes, scale, mostOne }] of sources.entries()) {
+    const lookUp = (name: string): number | undefined => {
+      const own = attributes?.get(name);
+      return typeof own === 'number' ? own : values[places.get(name) ?? -1];
+    };
+    const found = evaluate(ast, lookUp, pinned);
+    if (!found.ok || !(found.value >= 0) || (mostOne && found.value > 1)) return null;
+    out[s] = found.value * scale;
+  }
+  return out;
+}
+
+function tableOf(phase: Phase | undefined): { readonly table: RateTable; readonly field: RateField } | null {
+  switch (phase?.kind) {
+    case 'breeding':
+      return { table: phase.births, field: 'births' };
+    case 'survival':
+      return { table: phase.survival, field: 'survival' };
+    case 'dispersal':
+      return { table: phase.leaving, field: 'leaving' };
+    default:
+      return null;
+  }
+}
+
+/** Births of one sex are written as young of both. */
+function scaleOf(phase: Phase, { spec, sexes }: Context): number {
+  if (phase.kind !== 'breeding' || sexes !== null) return 1;
+  const named = spec.named[phase.name];
+  const births = phase.name === 'breeding' ? spec.births : named?.kind === 'breeding' ? named.births : undefined;
+  const share = births?.['female-share'];
+  return typeof share === 'number' ? share : share === undefined ? 1 : NaN;
+}
+
+/** Whether a place that is no such table reads what is swept. */
+function movesElsewhere({ numbers }: Context, names: ReadonlySet<string>, paths: ReadonlySet<string>): boolean {
+  return numbers.uses().some((use) => {
+    if (use.path[0] === 'parameters' || paths.has(use.path.join('\0'))) return false;
+    return numbers.behind(use).some((name) => names.has(name));
+  });
+}
+
+/** The model with the rates of one point. */
+export function withRates(model: Model, rates: readonly MovingRate[], values: Float64Array): Model {
+  const tables = new Map<number, Float64Array>();
+  for (const { phase, index, source } of rates) {
+    const table = tables.get(phase) ?? (tableOf(model.phases[phase])?.table.epochs[0] ?? new Float64Array(0)).slice();
+    table[index] = values[source] ?? NaN;
+    tables.set(phase, table);
+  }
+  const phases = model.phases.map((phase, p): Phase => {
+    const own = tables.get(p);
+    return own === undefined ? phase : withTable(phase, own);
+  });
+  return { ...model, phases };
+}
+
+function withTable(phase: Phase, epoch: Float64Array): Phase {
+  const changed = (table: RateTable): RateTable => ({ ...table, epochs: [epoch] });
+  switch (phase.kind) {
+    case 'breeding':
+      return { ...phase, births: changed(phase.births) };
+    case 'survival':
+      return { ...phase, survival: changed(phase.survival) };
+    case 'dispersal':
+      return { ...phase, leaving: changed(phase.leaving) };
+    default:
+      return phase;
+  }
+}
