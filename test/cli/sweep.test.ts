@@ -212,3 +212,25 @@ test('the plan says what would be done and what it costs, and writes nothing', (
   expect(err).toMatch(/cost .* a point/);
   expect(filesIn(cwd)).toEqual([]);
 });
+
+test('scenarios are set beside each other in the same futures, and which is best where is said', () => {
+  const cwd = folder();
+  const words = ['sweep', 'models/which-plan-where.yaml', '--replicates', '60', '--quiet', '--json', '--out', 'out'];
+  const { code, out } = skein(words, { cwd });
+  expect(code).toBe(0);
+  const { rankings } = JSON.parse(out) as {
+    readonly rankings: readonly {
+      readonly quantity: string;
+      readonly scenarios: readonly { readonly name: string; readonly best: number }[];
+      readonly factors: readonly {
+        readonly name: string;
+        readonly switches: readonly { readonly from: string; readonly to: string }[];
+      }[];
+    }[];
+  };
+  const animals = rankings.find(({ quantity }) => quantity === 'animals');
+  expect(animals?.scenarios.map(({ name }) => name)).toEqual(['as now', 'larger bank', 'safe ford']);
+  expect(animals?.scenarios.reduce((sum, { best }) => sum + best, 0)).toBeCloseTo(1, 12);
+  const drowned = animals?.factors.find(({ name }) => name === 'drowned');
+  expect(drowned?.switches).toEqual([expect.objectContaining({ from: 'larger bank', to: 'safe ford' })]);
+});
