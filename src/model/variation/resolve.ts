@@ -9,6 +9,7 @@ import type { Phase } from '../model.ts';
 import { requirePlaces } from '../places.ts';
 import { correlationTable, evenCorrelation, type Pairs } from './correlation.ts';
 import { distributionOf, largestSd } from './distribution.ts';
+import { refuseBeyondLitters } from './litter-bounds.ts';
 import { mapNumbers, patchNumbers } from './patch-numbers.ts';
 import { findRates, meanRate, rateWords, tableOf, tellNoRates } from './rate-name.ts';
 import { resolveResponses } from './response.ts';
@@ -27,6 +28,7 @@ export function resolveVariation(context: Context, phases: readonly Phase[]): Va
     .filter(([key]) => !settings.has(key))
     .flatMap(([key, entry]) => resolveEntry(context, { key, entry, phases }))
     .sort((a, b) => (a.name < b.name ? -1 : a.name > b.name ? 1 : 0));
+  refuseBeyondLitters(context, phases, varied);
   if (varied.length === 0 && context.spec.variation !== undefined) {
     if (!context.findings.some(({ severity }) => severity === 'error')) tellNothing(context);
     return null;

@@ -4,8 +4,10 @@ import { evaluate } from '../../spec/expression/evaluate.ts';
 import { namesIn } from '../../spec/expression/names.ts';
 import type { Response, Varied } from '../chance.ts';
 import { fail, type Context } from '../context.ts';
+import type { Phase } from '../model.ts';
 import { whereIn } from '../rates.ts';
 import { distributionOf, numberAt } from './distribution.ts';
+import { largestLitter } from './litter-bounds.ts';
 
 /** How far out, in SDs of the normal numbers, a rate must stay within its bounds; beyond it the kernel holds it to them. */
 const lookedAt = 4;
@@ -22,6 +24,8 @@ interface Situation {
 
 interface Look {
   readonly response: Response;
+  /** The most that it may be. */
+  readonly most: number;
   /** Parameters that vary and stand in the response. */
   readonly moving: readonly Varied[];
   readonly situation: Situation;
@@ -31,14 +35,18 @@ interface Look {
 }
 
 /** Looks where all parameters that vary are low, high, or some low and some high, in all years and given years. */
-export function refuseOutOfBounds(context: Context, response: Response, varied: readonly Varied[]): void {
+export function refuseOutOfBounds(
+  context: Context,
+  { response, phases, varied }: { response: Response; phases: readonly Phase[]; varied: readonly Varied[] },
+): void {
+  const most = response.bounds === 'share' ? 1 : largestLitter(phases[response.phase], response.part);
   const names = namesIn(response.expression);
   const moving = varied.filter(({ name, of }) => of.kind === 'parameter' && names.includes(name));
   const corners = 1 << Math.min(moving.length, mostHighAndLow);
   for (const situation of situationsOf(context, names, moving)) {
     for (let corner = 0; corner < corners; corner++) {
       for (const patch of response.patches) {
-        if (!staysPossible(context, { response, moving, situation, corner, patch })) return;
+        if (!staysPossible(context, { response, most, moving, situation, corner, patch })) return;
       }
     }
   }
@@ -57,11 +65,11 @@ function situationsOf(context: Context, names: readonly string[], moving: readon
 }
 
 function staysPossible(context: Context, look: Look): boolean {
-  const { response, patch, situation } = look;
+  const { response, most, patch, situation } = look;
   const result = evaluate(response.expression, (name) => valueOf(context, look, name), pinned);
   if (!result.ok) return refused(context, look, result.fault.message);
   const { value } = result;
-  if (value < 0 || (response.bounds === 'share' && value > 1)) {
+  if (value < 0 || value > most) {
     return refused(context, look, `it is ${Number(value.toPrecision(4))}`);
   }
   // The kernel scales the value at the means.
@@ -88,7 +96,7 @@ function extreme({ shape, mean, sd }: Varied, step: number, side: number): numbe
   return found === null ? NaN : numberAt(found, side * lookedAt);
 }
 
-function refused(context: Context, { response, moving, situation, patch }: Look, found: string): false {
+function refused(context: Context, { response, most, moving, situation, patch }: Look, found: string): false {
   const [first] = moving;
   const { resampled } = context.drivers;
   const driver = namesIn(response.expression).find((name) => resampled?.names.includes(name) === true);
@@ -106,7 +114,12 @@ function refused(context: Context, { response, moving, situation, patch }: Look,
     message: `In ${first === undefined ? 'such a' : 'a rare'} year ${response.name} in ${context.patches[patch]?.name ?? ''} is not possible: ${found}`,
     part: 'key',
     details: {
-      expected: response.bounds === 'share' ? 'a share between 0 and 1' : 'a number from 0',
+      expected:
+        response.bounds === 'share'
+          ? 'a share between 0 and 1'
+          : most < Infinity
+            ? `at most the largest litter of ${most}`
+            : 'a number from 0',
       reason: reasons.join(' '),
       fix: `${first === undefined ? 'Correct the value' : 'Make the variation smaller, choose another shape'}, or write the rate with \`min\` or \`max\`.`,
     },

@@ -26,7 +26,7 @@ export function resolveResponses(context: Context, phases: readonly Phase[], var
     parts.flatMap((part) => responsesOf(context, { phase, index, part, changing, places })),
   );
   refuseElsewhere(context, changing, places);
-  for (const response of responses) refuseOutOfBounds(context, response, varied);
+  for (const response of responses) refuseOutOfBounds(context, { response, phases, varied });
   refuseTwice(context, responses, varied);
   const read = new Set(responses.flatMap((one) => namesIn(one.expression)));
   const attributes = new Map<string, Float64Array>();
