@@ -13,6 +13,11 @@ export interface ManyRequest {
   readonly elasticities?: boolean;
   /** Vectors of a matrix that resembles all of them, positive, `order` numbers each: halves the time. */
   readonly start?: { readonly right: Float64Array; readonly left: Float64Array };
+  /**
+   * Results of an earlier request of the same size and wishes, whose arrays are written over. Fresh memory costs more than
+   * the solution of small matrices does, since the system hands it out page by page.
+   */
+  readonly reuse?: ManyGrowths;
 }
 
 export interface ManyGrowths {
@@ -88,13 +93,15 @@ function checkLengths({ matrices, order, start }: ManyRequest): number {
   return count;
 }
 
-function emptyResults({ order, vectors, elasticities }: ManyRequest, count: number): Writable {
+function emptyResults({ order, vectors, elasticities, reuse }: ManyRequest, count: number): Writable {
+  const numbers = (before: Float64Array | undefined, size: number): Float64Array =>
+    before?.length === size ? before : new Float64Array(size);
   return {
-    growthRate: new Float64Array(count),
-    error: new Float64Array(count),
-    period: new Int32Array(count),
-    ...(vectors ? { right: new Float64Array(count * order), left: new Float64Array(count * order) } : {}),
-    ...(elasticities ? { elasticities: new Float64Array(count * order * order) } : {}),
+    growthRate: numbers(reuse?.growthRate, count),
+    error: numbers(reuse?.error, count),
+    period: reuse?.period.length === count ? reuse.period : new Int32Array(count),
+    ...(vectors ? { right: numbers(reuse?.right, count * order), left: numbers(reuse?.left, count * order) } : {}),
+    ...(elasticities ? { elasticities: numbers(reuse?.elasticities, count * order * order) } : {}),
     without: new Map(),
   };
 }

@@ -228,6 +228,18 @@ describe('many at a time', () => {
     });
   });
 
+  test('arrays of an earlier request are written over where they fit', () => {
+    const wishes = { order, vectors: true, elasticities: true };
+    const before = solver.solve({ ...wishes, matrices: flat(all) });
+    const turned = flat(all.toReversed());
+    const fresh = solver.solve({ ...wishes, matrices: turned });
+    const again = solver.solve({ ...wishes, matrices: turned, reuse: before });
+    expect(again).toEqual(fresh);
+    expect(again.elasticities).toBe(before.elasticities);
+    const fewer = solver.solve({ ...wishes, matrices: flat(all.slice(0, 3)), reuse: before });
+    expect(fewer.growthRate.length).toBe(3);
+  });
+
   test('none are none', () => {
     expect(solver.solve({ matrices: new Float64Array(0), order: 3, vectors: true }).growthRate.length).toBe(0);
   });

@@ -1,0 +1,43 @@
+# What a practitioner would write in NumPy for runs with weather and whole animals: arrays over replicates, patches and classes, and
+# the generator's own samplers.   animals.py NUMBERS REPLICATES SEED: animals at the end a line, then seconds of processor time
+import sys
+import time
+
+import numpy as np
+
+lines = open(sys.argv[1]).read().split("\n")
+given = {lines[i].split()[0]: np.array(lines[i + 1].split(), float) for i in range(0, len(lines) - 1, 2)}
+replicates, rng = int(sys.argv[2]), np.random.default_rng(int(sys.argv[3]))
+P, C, years = given["shape"].astype(int)
+survival = given["survival"].reshape(P, C)
+births = given["births"].reshape(P, C)
+leaving = given["leaving"].reshape(P, C)
+ways, ends = given["ways"].astype(int), given["ends"].astype(int)
+chances = [given["chances"][ways[p] : ways[p + 1]] for p in range(P)]
+with_death = [np.append(c, max(0.0, 1 - c.sum())) for c in chances]
+factor = np.zeros((P, P))
+starts = given["factor-start"].astype(int)
+for p in range(P):
+    here = slice(starts[p], starts[p + 1])
+    factor[p, given["factor-column"][here].astype(int)] = given["factor-weight"][here]
+tables = given["distributions"].reshape(C, P, 4)
+a, b, scale = (tables[:, :, k].T for k in (1, 2, 3))
+
+began = time.process_time()
+n = np.tile(given["start"].astype(np.int64).reshape(P, C), (replicates, 1, 1))
+for year in range(years):
+    weather = rng.standard_normal((replicates, P)) @ factor.T
+    lives = survival * scale / (1 + np.exp(-a - b * weather[:, :, None]))
+    lives[:, :, 0] /= 1 + given["crowding"] * n.sum(axis=2)
+    n = rng.binomial(n, lives)
+    leavers = rng.binomial(n, leaving)
+    n -= leavers
+    for p in range(P):
+        arrived = rng.multinomial(leavers[:, p, :], with_death[p])
+        n[:, ends[ways[p] : ways[p + 1]], :] += arrived[:, :, :-1].transpose(0, 2, 1)
+    n[:, :, -1] += n[:, :, -2]
+    n[:, :, 1:-1] = n[:, :, :-2].copy()
+    n[:, :, 0] = rng.poisson(births[:, 2:] * n[:, :, 2:]).sum(axis=2)
+seconds = time.process_time() - began
+print("\n".join(str(total) for total in n.sum(axis=(1, 2))))
+print("seconds", seconds)

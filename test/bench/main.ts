@@ -1,0 +1,109 @@
+// npm run bench: figures to read, asserted nowhere but for agreement on the answer, without which no time counts.
+import { mkdirSync, writeFileSync } from 'node:fs';
+import { cpus } from 'node:os';
+import { join } from 'node:path';
+import { parseArgs } from 'node:util';
+import { compareAnimals } from './animals.ts';
+import { measureFlagship } from './flagship.ts';
+import { compareLifeCycles, compareSweep } from './many.ts';
+import type { Comparison, Options } from './options.ts';
+import { plotScaling } from './plot.ts';
+import { measureScaling } from './scaling.ts';
+import { measureStart, measureThreads } from './start.ts';
+import { missingTools, work } from './tools.ts';
+
+const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = {
+  w3: (options) => ({
+    ...compareAnimals('w3', options),
+    floors: { 'C, same width': 0.95, 'C, widest': 0.5, NumPy: 3.5 },
+  }),
+  w4: (options) => ({ ...compareAnimals('w4', options), floors: { 'C, same width': 1, 'C, widest': 0.5, NumPy: 3 } }),
+  lifecycles: compareLifeCycles,
+  sweep: compareSweep,
+};
+const others = ['flagship', 'start', 'threads', 'scaling'];
+
+const { values, positionals } = parseArgs({
+  allowPositionals: true,
+  options: { quick: { type: 'boolean', default: false }, rounds: { type: 'string' }, out: { type: 'string' } },
+});
+const options: Options = { quick: values.quick, rounds: Number(values.rounds ?? (values.quick ? 3 : 7)) };
+const known = [...Object.keys(comparisons), ...others];
+const unknown = positionals.find((name) => !known.includes(name));
+if (unknown !== undefined || !(options.rounds >= 1)) {
+  console.error(`Benches are ${known.join(', ')}; --rounds takes a number from 1.`);
+  process.exit(2);
+}
+const chosen = new Set(positionals.length === 0 ? known : positionals);
+const report: Record<string, unknown> = {
+  format: 'skein-bench/1',
+  node: process.version,
+  processor: cpus()[0]?.model ?? 'unknown',
+  ...options,
+};
+
+const compared: Comparison[] = [];
+for (const [name, compare] of Object.entries(comparisons)) {
+  if (!chosen.has(name)) continue;
+  console.error(`${name} ...`);
+  const found = compare(options);
+  compared.push(found);
+  printComparison(found);
+}
+report['comparisons'] = compared;
+
+if (chosen.has('flagship')) {
+  const times = measureFlagship(options);
+  report['flagship'] = times;
+  console.log(
+    `The flagship, 1000 replicates of 50 years: compiled in ${ms(times.compile)}, run in ${ms(times.run)}, whole command ${ms(times.command)}`,
+  );
+}
+if (chosen.has('start')) {
+  const { nothing, help, smallest } = measureStart(options);
+  report['start'] = { nothing, help, smallest };
+  console.log(
+    `Above node -e 0 (${ms(nothing)}): skein --help ${ms(help - nothing)}, aim 60; run of the smallest model ${ms(smallest - nothing)}, aim 150`,
+  );
+}
+if (chosen.has('threads')) {
+  const gains = Object.fromEntries(['w3', 'w4'].map((name) => [name, measureThreads(name, options)]));
+  report['threads'] = gains;
+  for (const [name, gain] of Object.entries(gains))
+    console.log(`Two threads against one, ${name.toUpperCase()}: ${gain.toFixed(2)} times, aim 1.9`);
+}
+if (chosen.has('scaling')) {
+  const scaling = measureScaling(options);
+  report['scaling'] = scaling;
+  for (const { over, points } of scaling) {
+    console.log(
+      `ns a cell over ${over}: ${points.map(({ at, nanosecondsACell }) => `${at} ${nanosecondsACell.toFixed(0)}`).join(', ')}`,
+    );
+  }
+  mkdirSync(work, { recursive: true });
+  writeFileSync(join(work, 'scaling.svg'), plotScaling(scaling));
+  console.log(`The plot: ${join(work, 'scaling.svg')}`);
+}
+
+report['missing'] = missingTools();
+for (const told of missingTools()) console.log(`not compared: ${told}`);
+mkdirSync(work, { recursive: true });
+const target = values.out ?? join(work, 'bench.json');
+writeFileSync(target, `${JSON.stringify(report, null, 2)}\n`);
+console.log(`All of it as JSON: ${target}`);
+
+function ms(value: number): string {
+  return `${value.toFixed(1)} ms`;
+}
+
+function printComparison({ name, cells, seconds, agreement, floors = {} }: Comparison): void {
+  console.log(name);
+  const ours = seconds['skein'] ?? NaN;
+  for (const [who, time] of Object.entries(seconds)) {
+    const floor = floors[who] === undefined ? '' : `  floor ${floors[who]}`;
+    console.log(
+      `  ${who.padEnd(16)}${((time / cells) * 1e9).toFixed(1).padStart(12)} ns each  ${(time / ours).toFixed(2).padStart(8)} times ours${floor}`,
+    );
+  }
+  for (const told of agreement) console.log(`  agreed: ${told}`);
+}
