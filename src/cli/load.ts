@@ -43,8 +43,12 @@ interface ReadOptions {
 }
 
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
-export function loadModel(path: string, settings: Settings, { quiet, allow }: ReadOptions): LoadedModel {
-  const { document, files, compiled, diagnostics } = readModel(path, settings, { allow });
+export function loadModel(
+  path: string,
+  settings: Settings,
+  { quiet, allow, everyScenario = false }: ReadOptions,
+): LoadedModel {
+  const { document, files, compiled, diagnostics } = readModel(path, settings, { allow, everyScenario });
   const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && quiet !== true));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
   if (document === null || compiled === null) throw toldAlready();

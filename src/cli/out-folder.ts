@@ -2,6 +2,7 @@
 // is written whole under another name first; only then do all of them get theirs, one after the other.
 import { join } from 'node:path';
 import type { Analysis } from '../analysis/schema.ts';
+import type { Comparison } from '../compare/results.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { Hidden } from '../report/hiding/hide.ts';
 import type { PathResults, RunResults } from '../results/results.ts';
@@ -12,8 +13,8 @@ import { specJson } from './spec-json.ts';
 import { csvText, dictionaryText, type Table } from './tables.ts';
 
 export interface OutContent {
-  readonly command: 'run' | 'path' | 'analyse';
-  readonly results: RunResults | PathResults | Analysis;
+  readonly command: 'run' | 'path' | 'analyse' | 'compare';
+  readonly results: RunResults | PathResults | Analysis | Comparison;
   readonly tables: readonly Table[];
   /** 1 where it is not said. */
   readonly threads?: number;

@@ -29,32 +29,43 @@ export interface DoneReplicates {
 }
 
 export async function runReplicates(compiled: CompiledModel, options: ReplicatesOptions): Promise<DoneReplicates> {
-  const threads = options.threads ?? threadsFor(compiled);
-  const progress = showProgress('Replicates', options.quiet === true);
+  const threads = options.threads ?? threadsFor([compiled]);
+  const done = await withCrew({ ...options, threads }, (crew, crewOptions) =>
+    runModelWith(crew, compiled, crewOptions),
+  );
+  return { ...checked(done, compiled.model), threads };
+}
+
+/** As many as pay. */
+export function threadsFor(plans: readonly CompiledModel[]): number {
+  const work = plans.reduce(
+    (sum, { model: { replicates, draws, steps, patches, classes } }) =>
+      sum + replicates * Math.max(1, draws) * steps * patches.length * classes.length,
+    0,
+  );
+  return work < smallWork ? 1 : availableParallelism();
+}
+
+type Work<Done> = (crew: Crew, options: Required<Pick<CrewOptions, 'onProgress' | 'signal'>>) => Promise<Done>;
+
+/** Does the work with a crew of so many, with progress, and with a clean end when told to stop. */
+export async function withCrew<Done>(
+  { threads, quiet }: ReplicatesOptions & { readonly threads: number },
+  work: Work<Done>,
+): Promise<Done> {
+  const progress = showProgress('Replicates', quiet === true);
   const stop = stopSignal();
   const crew = threads === 1 ? alone : openThreads({ threads, onDeath: tellDeath });
   try {
-    const done = await attempt(crew, compiled, { onProgress: progress.update, signal: stop.signal });
+    const done = await work(crew, { onProgress: progress.update, signal: stop.signal });
     progress.finish();
-    return { ...checked(done, compiled.model), threads };
-  } finally {
-    stop.close();
-    await crew.close();
-  }
-}
-
-function threadsFor({ model: { replicates, draws, steps, patches, classes } }: CompiledModel): number {
-  return replicates * Math.max(1, draws) * steps * patches.length * classes.length < smallWork
-    ? 1
-    : availableParallelism();
-}
-
-async function attempt(crew: Crew, compiled: CompiledModel, options: CrewOptions): Promise<FinishedRun> {
-  try {
-    return await runModelWith(crew, compiled, options);
+    return done;
   } catch (error) {
     if (error instanceof ThreadsFailure) throw new Ending(exitCodes.work, error.message);
     throw error;
+  } finally {
+    stop.close();
+    await crew.close();
   }
 }
 

@@ -5,7 +5,7 @@ import { comparedPlans } from './compared-plan.ts';
 import { endedTogether, objectivesOf, unitsOf, unitSums, type Objective } from './objectives.ts';
 import { patchChanges, sourceRisks, type MoveOfPlan } from './patches.ts';
 import type { BestPlan, Comparison, ObjectiveWords, OverBoth, PlanDifference, Robustness } from './results.ts';
-import type { PlansRun } from './run-plans.ts';
+import type { PlansRun } from './plans-run.ts';
 import { statementOf } from './statement.ts';
 
 export interface ToCompare {
@@ -52,6 +52,7 @@ export function comparePlans({ run, hash, money, moves, robustness, cautions }: 
     ...(draws === undefined
       ? {}
       : { draws: { number: draws.number, failed: draws.failed, replicatesEach: draws.replicatesEach } }),
+    ...(run.precision === null ? {} : { precision: run.precision }),
     stopped,
     cautions,
   };

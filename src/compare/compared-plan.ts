@@ -1,8 +1,8 @@
 // One plan by itself, with what it costs and whether another is at least as good in everything.
 import { meanOf, varianceOf } from './paired-mean.ts';
 import type { Objective } from './objectives.ts';
-import type { Amount, ComparedPlan, OverBoth, PlanDifference, RiskPrice } from './results.ts';
-import type { PlanRun, PlansRun } from './run-plans.ts';
+import type { Amount, ComparedPlan, OverBoth, PlanCost, PlanDifference, RiskPrice } from './results.ts';
+import type { PlanRun, PlansRun } from './plans-run.ts';
 import { costPerRisk } from './worth-the-money.ts';
 
 interface Beside {
@@ -19,9 +19,7 @@ export function comparedPlans(run: PlansRun, beside: Beside): readonly ComparedP
   const free = notBeatenIn(beside);
   return run.runs.map((one, p) => {
     const { results, plan, ledger } = one;
-    const cost = beside.money
-      ? { presentValue: amountOf(ledger.presentValue, one), undiscounted: amountOf(ledger.undiscounted, one) }
-      : null;
+    const cost = beside.money ? costOf(one) : null;
     return {
       name: plan.name,
       actions: plan.actions,
@@ -45,10 +43,23 @@ export function comparedPlans(run: PlansRun, beside: Beside): readonly ComparedP
   });
 }
 
+function costOf(run: PlanRun): PlanCost {
+  const discounted = amountOf(run.ledger.presentValue, run);
+  const plain = amountOf(run.ledger.undiscounted, run);
+  return {
+    presentValue: discounted.mean,
+    presentValueSd: discounted.sd,
+    undiscounted: plain.mean,
+    undiscountedSd: plain.sd,
+    least: amountOf(run.ledger.least, run).mean,
+    most: amountOf(run.ledger.most, run).mean,
+  };
+}
+
 /** Over the futures that came to their end. */
 function amountOf(values: Float64Array, { ledger }: PlanRun): Amount {
   const kept = values.filter((_, i) => ledger.ended[i] === 1);
-  return { mean: meanOf(kept), sd: kept.length < 2 ? 0 : Math.sqrt(varianceOf(kept)) };
+  return { mean: meanOf(kept), sd: kept.length < 2 ? null : Math.sqrt(varianceOf(kept)) };
 }
 
 function lastYear({ results }: PlanRun): ComparedPlan['animalsAtEnd'] {

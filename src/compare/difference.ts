@@ -16,7 +16,7 @@ import {
   type PairedCounts,
 } from './paired-share.ts';
 import type { PlanDifference } from './results.ts';
-import type { PlansRun } from './run-plans.ts';
+import type { PlansRun } from './plans-run.ts';
 
 export interface Pair {
   readonly objective: Objective;

@@ -5,7 +5,7 @@ import { lanes } from '../kernel/batch.ts';
 import type { BatchCounts } from '../kernel/output.ts';
 import type { Model } from '../model/model.ts';
 import { handledParts } from '../results/reduction/handled.ts';
-import type { Money, HandledAnimals } from './plan.ts';
+import type { HandledAnimals, MoneyOf } from './plan.ts';
 
 /** Each by future. */
 export class Ledger {
@@ -17,6 +17,9 @@ export class Ledger {
   readonly taken: Float64Array;
   readonly presentValue: Float64Array;
   readonly undiscounted: Float64Array;
+  /** Present value at the least and the most of prices that are ranges. */
+  readonly least: Float64Array;
+  readonly most: Float64Array;
   readonly #model: Model;
   readonly #takes: readonly number[];
   readonly #columns: number;
@@ -29,6 +32,8 @@ export class Ledger {
     this.taken = new Float64Array(futures);
     this.presentValue = new Float64Array(futures);
     this.undiscounted = new Float64Array(futures);
+    this.least = new Float64Array(futures);
+    this.most = new Float64Array(futures);
     const handling = model.phases.filter(isHandling);
     this.#takes = handling.flatMap(({ kind }, h) => (kind === 'take' ? [h] : []));
     this.#firstHandled = firstHandledColumn(model);
@@ -36,7 +41,7 @@ export class Ledger {
   }
 
   /** `first` is the place of lane 0 among all futures. */
-  take(batch: BatchCounts, first: number, moneyOf: ((handled: HandledAnimals) => Money) | null): void {
+  take(batch: BatchCounts, first: number, moneyOf: MoneyOf | null): void {
     const gone = new Set(batch.stopped.map(({ replicate }) => replicate - batch.first));
     const { steps } = this.#model;
     const at = (t: number, column: number, lane: number): number =>
@@ -51,9 +56,11 @@ export class Ledger {
       for (const h of this.#takes) for (let t = 1; t <= steps; t++) taken += handled(h, t);
       this.taken[future] = taken;
       if (moneyOf === null) continue;
-      const { presentValue, undiscounted } = moneyOf(handled);
+      const { presentValue, undiscounted, least, most } = moneyOf(handled);
       this.presentValue[future] = presentValue;
       this.undiscounted[future] = undiscounted;
+      this.least[future] = least;
+      this.most[future] = most;
     }
   }
 

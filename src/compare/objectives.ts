@@ -1,7 +1,7 @@
 // What plans are set side by side in: chances, animals and money, one number for every future of every plan.
 import type { Better } from './best.ts';
 import type { UnitSums } from './best.ts';
-import type { PlanRun, PlansRun } from './run-plans.ts';
+import type { PlanRun, PlansRun } from './plans-run.ts';
 
 export interface Objective {
   readonly name: string;

@@ -3,7 +3,7 @@ import { student95 } from '../numeric/student.ts';
 import { pairedShareDifference } from './paired-share.ts';
 import type { PatchPair } from './patch-pairs.ts';
 import type { PatchChange, SourceRisk } from './results.ts';
-import type { PlanRun, PlansRun } from './run-plans.ts';
+import type { PlanRun, PlansRun } from './plans-run.ts';
 
 export function patchChanges({ runs }: PlansRun): readonly PatchChange[] {
   return runs

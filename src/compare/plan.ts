@@ -16,18 +16,23 @@ export interface Money {
   /** Discounted to the first year. */
   readonly presentValue: number;
   readonly undiscounted: number;
+  /** The present value where every price that is given as a range is at its lower end, and at its upper end. */
+  readonly least: number;
+  readonly most: number;
 }
 
-export type PlanModel = { readonly compiled: CompiledModel } | { readonly compiled: null; readonly failure: string };
+export type MoneyOf = (handled: HandledAnimals) => Money;
+
+export type PlanModel =
+  | { readonly compiled: CompiledModel; readonly moneyOf: MoneyOf | null }
+  | { readonly compiled: null; readonly failure: string; readonly moneyOf: null };
 
 export interface PlanToRun {
   readonly name: string;
   readonly actions: readonly PlanAction[];
   readonly compiled: CompiledModel;
   /** The plan where what is not known has these values. */
-  readonly under: (
-    values: DrawnValues,
-  ) => PlanModel & { readonly moneyOf: ((handled: HandledAnimals) => Money) | null };
+  readonly under: (values: DrawnValues) => PlanModel;
   /** Of one future; null where the model knows no costs. */
-  readonly moneyOf: ((handled: HandledAnimals) => Money) | null;
+  readonly moneyOf: MoneyOf | null;
 }

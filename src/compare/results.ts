@@ -1,12 +1,13 @@
 // What a comparison says, as data: printed by `--json` and read by the page.
-import type { Chance, Interval, Quantiles, RunResults } from '../results/results.ts';
+import type { Chance, Interval, Quantiles, ReachedPrecision, RunResults } from '../results/results.ts';
 import type { Better } from './best.ts';
 import type { PairedCounts } from './paired-share.ts';
 import type { PlanAction } from './plan.ts';
 
+/** Over futures; the spread is null for a single one. */
 export interface Amount {
   readonly mean: number;
-  readonly sd: number;
+  readonly sd: number | null;
 }
 
 export interface AmountWithRange extends Amount {
@@ -18,6 +19,17 @@ export interface OverBoth {
   readonly runs: number;
   /** Null where nothing was drawn. */
   readonly draws: number | null;
+}
+
+/** The mean over the futures, and how far these lie apart. */
+export interface PlanCost {
+  readonly presentValue: number;
+  readonly presentValueSd: number | null;
+  readonly undiscounted: number;
+  readonly undiscountedSd: number | null;
+  /** Present value at the lower and at the upper ends of prices that are ranges. */
+  readonly least: number;
+  readonly most: number;
 }
 
 export interface PlanOutcome {
@@ -41,7 +53,7 @@ export interface ComparedPlan {
   readonly name: string;
   readonly actions: readonly PlanAction[];
   /** Null where the model knows no money. */
-  readonly cost: { readonly presentValue: Amount; readonly undiscounted: Amount } | null;
+  readonly cost: PlanCost | null;
   readonly outcomes: readonly PlanOutcome[];
   readonly animalsAtEnd: AmountWithRange;
   readonly meanLowestCount: number;
@@ -113,17 +125,26 @@ export interface Robustness {
   readonly notRun: string | null;
   /** Plans by the first objective, the best first; empty where it was not run. */
   readonly order: readonly string[];
-  readonly best: string | null;
-  /** Null where it was not run. No pair of plans that the model tells apart stands the other way round. */
+  /** Plans that the rule of the statement leaves here; empty where it supports none over the first. */
+  readonly supports: readonly string[];
+  /** Every pair of plans that the model tells apart stands the same way round; null where it was not run. */
   readonly holds: boolean | null;
-  /** Pairs that stand the other way round, and whether this variant tells them apart. */
-  readonly reversed: readonly { readonly better: string; readonly worse: string; readonly toldApart: boolean }[];
+  /** Pairs that do not: better here, worse here; or equal. */
+  readonly reversed: readonly {
+    readonly better: string;
+    readonly worse: string;
+    readonly toldApart: boolean;
+    readonly equal: boolean;
+  }[];
 }
 
 export type Strength = 'clear' | 'limited' | 'none';
 
 export interface Statement {
+  /** One sentence. */
   readonly text: string;
+  /** What stands against it, in sentences. */
+  readonly reservations: readonly string[];
   readonly rule: string;
   readonly strength: Strength;
   /** Plans that the rule leaves. */
@@ -163,6 +184,8 @@ export interface Comparison {
   readonly afterHorizon: string;
   readonly notDrawn?: true;
   readonly draws?: { readonly number: number; readonly failed: number; readonly replicatesEach: number };
+  /** How sharp the differences of chances came to be, where it was asked for. */
+  readonly precision?: ReachedPrecision;
   readonly stopped: RunResults['stopped'];
   readonly cautions: readonly string[];
 }

@@ -25,7 +25,13 @@ export function statementOf(to: ToState): Statement {
   const order = objective === undefined ? [] : planOrder(to, objective);
   const [best] = order;
   if (objective === undefined || best === undefined) {
-    return { text: 'There is nothing to decide between.', rule: ruleOf(to, ''), strength: 'none', plans: [] };
+    return {
+      text: 'There is nothing to decide between.',
+      reservations: [],
+      rule: ruleOf(to, ''),
+      strength: 'none',
+      plans: [],
+    };
   }
   const apart = (other: ComparedPlan): boolean => between(to, objective, best, other)?.toldApart === true;
   const close = order.filter((plan) => plan === best || !apart(plan));
@@ -34,7 +40,8 @@ export function statementOf(to: ToState): Statement {
   const left = to.money === null ? gaining : cheapest(gaining);
   const strength = strengthOf(to, { gains: now !== undefined && now !== best && apart(now), left });
   const text = textOf(to, { objective, best, close, left });
-  return { text, rule: ruleOf(to, objective.name), strength, plans: left.map(({ name }) => name) };
+  const reservations = reservationsOf(to, best, close);
+  return { text, reservations, rule: ruleOf(to, objective.name), strength, plans: left.map(({ name }) => name) };
 }
 
 /** The best first; plans that are equally good in the order of the text. */
@@ -62,7 +69,7 @@ function between(
 }
 
 function cheapest(plans: readonly ComparedPlan[]): readonly ComparedPlan[] {
-  const cost = (plan: ComparedPlan): number => plan.cost?.presentValue.mean ?? 0;
+  const cost = (plan: ComparedPlan): number => plan.cost?.presentValue ?? 0;
   const least = Math.min(...plans.map(cost));
   return plans.filter((plan) => cost(plan) === least);
 }
@@ -97,13 +104,10 @@ interface Told {
 
 function textOf(to: ToState, { objective, best, close, left }: Told): string {
   const now = to.plans[0];
-  const rest = close.filter((plan) => plan !== best);
   if (now !== undefined && (best === now || close.includes(now))) return noneText(to, { objective, best, close, left });
   const names = namesWords(left.map(({ name }) => name));
-  const chosen = left[0] ?? best;
-  const gain = now === undefined ? '' : gainWords(to, { objective, now, chosen });
-  const others = rest.length === 0 ? '' : ` ${closeWords(best, rest)}`;
-  return `The results support ${names}: ${gain}.${others}${reservations(to)}`;
+  const gain = now === undefined ? '' : gainWords(to, { objective, now, chosen: left[0] ?? best });
+  return `The results support ${names}: ${gain}.`;
 }
 
 /** No plan is told apart from doing nothing new. */
@@ -129,9 +133,7 @@ function gainWords(to: ToState, { objective, now, chosen }: Gain): string {
     found === undefined ? [0, 0] : [found.interval.lower, found.interval.upper].map(Math.abs).sort((a, b) => a - b);
   const [least = 0, most = 0] = ends;
   const cost =
-    chosen.cost === null || to.money === null
-      ? ''
-      : `, for ${moneyWords(chosen.cost.presentValue.mean, to.money.currency)}`;
+    chosen.cost === null || to.money === null ? '' : `, for ${moneyWords(chosen.cost.presentValue, to.money.currency)}`;
   if (objective.of !== 'chance') {
     const fewer = Math.round(Math.abs(after - before));
     return `${fewer} animals ${after > before ? 'more' : 'fewer'} at the end than under “${now.name}” (95 %: ${Math.round(least)} to ${Math.round(most)})${cost}`;
@@ -139,14 +141,14 @@ function gainWords(to: ToState, { objective, now, chosen }: Gain): string {
   return `a chance of “${objective.name}” of ${percentWords(after)} against ${percentWords(before)} under “${now.name}”, ${pointsWords(after - before)} ${after < before ? 'less' : 'more'} (95 %: ${(least * 100).toFixed(1)} to ${(most * 100).toFixed(1)})${cost}`;
 }
 
-function closeWords(best: ComparedPlan, rest: readonly ComparedPlan[]): string {
-  return `${namesWords([best, ...rest].map(({ name }) => name))} cannot be told apart.`;
-}
-
-function reservations({ drawn, robustness }: ToState): string {
-  const reversed = robustness.filter(({ holds }) => holds === false).map(({ variant }) => variant);
-  const unknown = drawn ? '' : ' What is not known about the numbers of the model was not drawn and could change this.';
-  const turned =
-    reversed.length === 0 ? '' : ` Another sound model would reverse some of the order: ${reversed.join('; ')}.`;
-  return `${unknown}${turned}`;
+function reservationsOf(to: ToState, best: ComparedPlan, close: readonly ComparedPlan[]): readonly string[] {
+  const together = [best, ...close.filter((plan) => plan !== best)].map(({ name }) => name);
+  const reversed = to.robustness.filter(({ holds }) => holds === false).map(({ variant }) => variant);
+  return [
+    ...(together.length < 2 ? [] : [`${namesWords(together)} cannot be told apart.`]),
+    ...(to.drawn ? [] : ['What is not known about the numbers of the model was not drawn and could change this.']),
+    ...(reversed.length === 0
+      ? []
+      : [`Another sound model would not keep the whole order of the plans: ${reversed.join('; ')}.`]),
+  ];
 }

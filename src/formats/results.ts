@@ -2,7 +2,7 @@
 import { Type } from 'typebox';
 import * as part from './parts.ts';
 
-const Interval = Type.Object({
+export const Interval = Type.Object({
   lower: part.share('Lower end.'),
   upper: part.share('Upper end.'),
   level: part.share('Such as 0.95.'),
@@ -10,7 +10,7 @@ const Interval = Type.Object({
   from: Type.Union([Type.Literal('the number of runs'), Type.Literal('what is not known')]),
 });
 
-const Chance = Type.Object({
+export const Chance = Type.Object({
   probability: part.maybeShare('Share of the finished runs.'),
   interval: Interval,
   intervalFromUnknown: Type.Union([Interval, Type.Null()], {
@@ -73,7 +73,7 @@ const Amounts = Type.Object({
 
 const amounts = { handled: Amounts, died: Amounts, shortfall: Amounts };
 
-const Handled = Type.Object({
+export const Handled = Type.Object({
   phase: part.text('Name of the phase.'),
   does: Type.Union([Type.Literal('take'), Type.Literal('move'), Type.Literal('add')]),
   byYear: Type.Array(Type.Object({ year: part.year, ...amounts })),
@@ -144,7 +144,7 @@ const Rare = Type.Object({
   replicateYears: part.whole('Years of replicates that it took.'),
 });
 
-const Precision = Type.Object(
+export const Precision = Type.Object(
   {
     asked: part.share('Half the width of a 95 % interval from the number of runs that was asked for.'),
     halfWidth: part.share('The widest of any outcome.'),

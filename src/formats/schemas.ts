@@ -3,12 +3,14 @@ import type { TSchema } from 'typebox';
 import { analysisJsonSchema } from '../analysis/schema.ts';
 import { writeSchema } from '../spec/publish.ts';
 import { PathSchema, RunSchema } from './results.ts';
+import { CompareSchema } from './compare.ts';
 import { LandscapeSchema, MatrixSchema, ModelSchema, ModuleSchema, PackedSchema } from './stages.ts';
 import { SweepSchema, SweepSummarySchema } from './sweep.ts';
 import { CheckSchema, InputsSchema, LogSchema } from './work.ts';
 
 const own: Readonly<Record<string, readonly [title: string, schema: TSchema]>> = {
   check: ['What `skein check --json` prints', CheckSchema],
+  compare: ['What `skein compare --json` prints, and results.json of it', CompareSchema],
   inputs: ['run.json: everything that decides a result', InputsSchema],
   landscape: ['What `skein show MODEL landscape --json` prints', LandscapeSchema],
   log: ['log.json: how the work went', LogSchema],

@@ -55,7 +55,12 @@ export const CheckSchema = Type.Object({
   ),
 });
 
-const command = Type.Union([Type.Literal('run'), Type.Literal('path'), Type.Literal('analyse')]);
+const command = Type.Union([
+  Type.Literal('run'),
+  Type.Literal('path'),
+  Type.Literal('analyse'),
+  Type.Literal('compare'),
+]);
 const logged = Type.Union([...command.anyOf, Type.Literal('sweep'), Type.Literal('sweep merge')]);
 
 export const InputsSchema = Type.Object({

@@ -7,6 +7,7 @@ import { layOut, type Layout } from '../view/map/sheet.ts';
 import type { Markup } from '../view/markup.ts';
 import { drawObserved } from '../view/observed.ts';
 import { pick } from '../view/series.ts';
+import { drawSmallChance, smallChanceOf } from '../view/plans/small-chance.ts';
 import { drawSmallFan } from '../view/small-fan.ts';
 import { morph } from './morph.ts';
 import type { PageState } from './state.ts';
@@ -23,10 +24,11 @@ export type Redraw = (state: PageState, all?: boolean) => void;
  * answers as quickly as one of eight. The layout of a map does not change from year to year; it is worked out once.
  */
 export function mountFigures(view: ReportView): Redraw {
-  const layouts = new Map<number, Layout>();
-  const layoutFor = (width: number): Layout => {
-    const layout = layouts.get(width) ?? layOut(view, width);
-    layouts.set(width, layout);
+  const layouts = new Map<string, Layout>();
+  const layoutFor = (width: number, plan: string | undefined): Layout => {
+    const key = `${width} ${plan ?? ''}`;
+    const layout = layouts.get(key) ?? layOut(viewOf(view, plan), width);
+    layouts.set(key, layout);
     return layout;
   };
   const asWritten = { count: view.years.length - 1, show: 'abundance', focus: null, marked: null } as const;
@@ -48,7 +50,8 @@ export function mountFigures(view: ReportView): Redraw {
 
 /** What of the state a figure shows. */
 function dependsOn(holder: HTMLElement, { count, show, focus, marked }: PageState): string {
-  return holder.dataset['figure'] === 'map' ? `${count} ${show} ${String(focus)}` : String(marked);
+  const plan = holder.dataset['plan'] ?? '';
+  return holder.dataset['figure'] === 'map' ? `${count} ${show} ${String(focus)} ${plan}` : String(marked);
 }
 
 /** Calls for each small figure that comes into sight; tells whether one is. All others are drawn where they have a size. */
@@ -73,13 +76,15 @@ function draw(
   view: ReportView,
   state: PageState,
   holder: HTMLElement,
-  layoutFor: (width: number) => Layout,
+  layoutFor: (width: number, plan: string | undefined) => Layout,
 ): Markup | null {
   const index = Number(holder.dataset['index'] ?? 0);
   const marked = state.marked === null ? null : pick(view.years, state.marked);
   switch (holder.dataset['figure']) {
     case 'map':
-      return drawMap(state, layoutFor(Number(holder.dataset['width'])));
+      return drawMap(mapState(state, holder), layoutFor(Number(holder.dataset['width']), holder.dataset['plan']));
+    case 'small-chance':
+      return smallChance(view, holder, state);
     case 'chance':
       return drawChance({ outcome: pick(view.outcomes, index), years: view.years, marked }, sizeOf(holder));
     case 'fan':
@@ -95,6 +100,26 @@ function draw(
     default:
       return null;
   }
+}
+
+/** Of a plan by its place, or of its difference from another, such as '2-0'. */
+function viewOf(view: ReportView, plan: string | undefined): ReportView {
+  if (plan === undefined) return view;
+  const [own, minus] = plan.split('-').map((place) => view.plans?.[Number(place)]);
+  return { ...(own?.view ?? view), ...(minus === undefined ? {} : { minus }) };
+}
+
+/** Maps of plans stand still beside the one that the keyboard walks on. */
+function mapState(state: PageState, holder: HTMLElement): PageState {
+  const plan = holder.dataset['plan'];
+  if (plan === undefined) return state;
+  return { ...state, focus: null, show: plan.includes('-') ? 'difference' : state.show };
+}
+
+function smallChance(view: ReportView, holder: HTMLElement, { marked }: PageState): Markup | null {
+  if (view.plans === undefined) return null;
+  const [plan, outcome] = [Number(holder.dataset['index'] ?? 0), Number(holder.dataset['outcome'] ?? 0)];
+  return drawSmallChance(smallChanceOf(view, view.plans, { plan, outcome, marked }), sizeOf(holder));
 }
 
 /** As it was drawn in the report. */

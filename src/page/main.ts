@@ -3,6 +3,7 @@ import type { ReportView } from '../view/contract.ts';
 import { mountFigures } from './figures.ts';
 import { mountReaders } from './reader.ts';
 import { mountSave } from './save.ts';
+import { mountPlans } from './plans.ts';
 import { createStore } from './state.ts';
 import { mountTip } from './tip.ts';
 import { mountWalk } from './walk.ts';
@@ -15,6 +16,7 @@ function start(view: ReportView): void {
   mountYear(view, store);
   mountReaders(view, store);
   mountSave(view, () => redraw(store.get(), true));
+  mountPlans(view, store);
   mountTip(view, store);
   mountWalk(store);
   window.matchMedia('(max-width: 40rem)').addEventListener('change', () => redraw(store.get()));

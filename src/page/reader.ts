@@ -1,6 +1,6 @@
 // Charts that can be read year by year: each is a slider for the keyboard, and follows the pointer or the finger.
 import type { ReportView } from '../view/contract.ts';
-import { readAbundance, readChance, readObserved, readPatches } from '../view/reading.ts';
+import { readAbundance, readChance, readObserved, readPatches, readPlans } from '../view/reading.ts';
 import { pick } from '../view/series.ts';
 import { sizeOf } from './figures.ts';
 import type { PageState, Store } from './state.ts';
@@ -40,10 +40,15 @@ function makeSlider(holder: HTMLElement, last: number): void {
   const name = holder.querySelector('svg title')?.textContent ?? '';
   holder.tabIndex = 0;
   holder.setAttribute('role', 'slider');
-  holder.setAttribute('aria-label', holder.classList.contains('smalls') ? 'Abundance patch by patch' : name);
+  holder.setAttribute('aria-label', labelOf(holder.classList) ?? name);
   holder.setAttribute('aria-valuemin', '0');
   holder.setAttribute('aria-valuemax', String(last));
   holder.setAttribute('aria-valuenow', String(last));
+}
+
+function labelOf(classes: DOMTokenList): string | null {
+  if (classes.contains('plans')) return 'Chance under each plan';
+  return classes.contains('smalls') ? 'Abundance patch by patch' : null;
 }
 
 function moved(key: string, from: number, last: number): number | null {
@@ -84,6 +89,7 @@ function sentence(holder: HTMLElement, view: ReportView, marked: number): string
   if (holder.dataset['figure'] === 'observed' && view.observed !== undefined) {
     return readObserved(view, view.observed, marked);
   }
+  if (holder.classList.contains('plans')) return readPlans(view, 0, marked);
   if (holder.dataset['figure'] !== 'chance') return readPatches(view, marked);
   return readChance(view, pick(view.outcomes, Number(holder.dataset['index'] ?? 0)), marked);
 }

@@ -21,10 +21,11 @@ tr,figure,dl div{break-inside:avoid}
 figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
 
 .map svg{max-height:112mm;width:auto;margin:0 auto}
-.chart .wide svg{max-height:62mm;width:auto}
+.chart .wide svg,.still .wide svg{max-height:62mm;width:auto}
 .beside{grid-template-columns:repeat(auto-fit,minmax(54mm,1fr));gap:0 1rem}.beside figure{margin:.2rem 0}.beside figure:nth-child(4){break-before:page}.beside h3{margin:.3rem 0 0;font-size:10.5pt}.beside .definition{margin:0;font-size:8.4pt;line-height:1.3}
 svg>rect:first-of-type{fill:#fff}
 .pages{break-before:page}.more{break-before:auto}
+.summary .lead{font-size:12pt;line-height:1.25}.summary .sure p{font-size:8.8pt;margin:.15rem 0}.summary .actions{display:none}.paper{display:block}.summary .plans th,.summary .plans td{font-size:8.2pt;padding:.1rem .5rem .1rem 0}.summary .plans small{font-size:7.4pt;line-height:1.2}.summary .plans .more{display:none}.summary h2{margin:.5rem 0 .2rem}.summary #map-figure,.summary #side-by-side{display:none}.summary figure.futures{margin:.1rem 0;max-width:9.5rem}.summary .answer p{margin:.2rem 0}.summary .answer .note{max-width:9.5rem}.pair{grid-template-columns:1fr 1fr}.pair svg{max-height:82mm}.plans td small{white-space:normal;font-size:8.2pt}.smalls.plans{grid-template-columns:repeat(3,1fr)!important}
 .smalls{grid-template-columns:repeat(4,1fr);gap:.5rem}.smalls>div{content-visibility:visible}
 dl{margin:.4rem 0}.numbers div,.concepts div{grid-template-columns:11rem 1fr;padding:.1rem 0}
 details::details-content{content-visibility:visible!important;display:block!important;height:auto!important}

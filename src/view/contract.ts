@@ -109,11 +109,21 @@ export interface ReportView {
   readonly observed?: ObservedView;
   /** Where the worth of patches was taken, to follow 'taken'; null where it is not told. */
   readonly worthAt: string | null;
+  /** Every plan of a comparison, this one first; absent where there is none, or where so much would make the page heavy. */
+  readonly plans?: readonly PlanView[];
+  /** The view that a map of differences takes away from this one. */
+  readonly minus?: PlanView;
+}
+
+export interface PlanView {
+  readonly name: string;
+  readonly view: ReportView;
 }
 
 /** What the map can show; outlines tell source or sink in each. */
 export const mapShows = ['abundance', 'empty', 'contribution', 'role'] as const;
-export type MapShow = (typeof mapShows)[number];
+/** Differences are shown where there is a view to take away. */
+export type MapShow = (typeof mapShows)[number] | 'difference';
 
 /** What the map shows at a moment. */
 export interface MapState {

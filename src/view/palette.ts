@@ -21,7 +21,16 @@ export const ramp: (share: number) => string = interpolateRgbBasis([
   '#0d3a4e',
 ]);
 
-/** Ink that can be read on the ramp. */
+/** The same lightness for losses, whose numbers carry a minus: no sign is told by hue alone. */
+export const lossRamp: (share: number) => string = interpolateRgbBasis([
+  '#f9f6f1',
+  '#e6d3bf',
+  '#c79b71',
+  '#94602f',
+  '#5b2f0e',
+]);
+
+/** Ink that can be read on the ramps. */
 export function inkOn(share: number): string {
   return share > 0.55 ? '#ffffff' : ink;
 }

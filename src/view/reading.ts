@@ -32,3 +32,11 @@ export function readPatches(view: ReportView, count: number): string {
   const all = view.patches.map((patch) => `${patch.name} ${whole(pick(patch.fan.median, count))}`);
   return `${pick(view.years, count)}, the middle of each patch: ${all.join(', ')}.`;
 }
+
+/** The chance of one outcome under every plan. */
+export function readPlans(view: ReportView, outcome: number, count: number): string {
+  const plans = view.plans ?? [];
+  const all = plans.map(({ name, view: own }) => `${name} ${of100(pick(pick(own.outcomes, outcome).ever, count))}`);
+  const what = plans[0] === undefined ? '' : pick(plans[0].view.outcomes, outcome).name;
+  return `By ${pick(view.years, count)}, of 100 futures have come to ${what}: ${all.join(', ')}.`;
+}

@@ -99,7 +99,7 @@ test('the statement says what is supported, under which rule, and that nothing u
   expect(statement.strength).toBe('limited');
   expect(statement.text).toMatch(/^The results support “fence”: a chance of “few” of .* against .* under “as now”/);
   expect(statement.text).toContain('for 1,000 crowns');
-  expect(statement.text).toContain('was not drawn');
+  expect(statement.reservations.join(' ')).toContain('was not drawn');
   expect(statement.rule).toContain('“few”');
 });
 

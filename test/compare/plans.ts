@@ -14,7 +14,8 @@ export interface PlanText {
 
 export function planOf({ name, text, cost }: PlanText, settings: Settings = {}): PlanToRun {
   const compiled = compileText(text, settings);
-  const moneyOf = cost === undefined ? null : () => ({ presentValue: cost, undiscounted: cost });
+  const moneyOf =
+    cost === undefined ? null : () => ({ presentValue: cost, undiscounted: cost, least: cost, most: cost });
   return {
     name,
     actions: [],
@@ -23,7 +24,7 @@ export function planOf({ name, text, cost }: PlanText, settings: Settings = {}):
     under: (values) => {
       const { compiled: drawn, findings } = compileSpec(withValues(compiled.spec, values));
       if (drawn !== null) return { compiled: drawn, moneyOf };
-      return { compiled: null, failure: findings[0]?.message ?? '', moneyOf };
+      return { compiled: null, failure: findings[0]?.message ?? '', moneyOf: null };
     },
   };
 }

@@ -86,6 +86,18 @@ test.each(['grid', 'latin hypercube', 'sobol indices', 'morris', 'one at a time'
   },
 );
 
+test('a comparison with draws and other models fits its schema, and what it writes', () => {
+  const words = ['compare', 'models/reed-hare.yaml', '--replicates', '8', '--years', '6', '--draws', '4', '--robust'];
+  const cwd = folder();
+  const { code, out } = skein([...words, '--json', '--quiet', '--out', 'out'], { cwd });
+  expect(code).toBe(0);
+  expectFits('compare', JSON.parse(out));
+  expectFits('compare', JSON.parse(skein([...words.slice(0, 6), '--replicates', '1', '--json', '--quiet']).out));
+  const read = (name: string): unknown => JSON.parse(readFileSync(join(cwd, 'out', name), 'utf8'));
+  expectFits('inputs', read('run.json'));
+  expectFits('log', read('log.json'));
+});
+
 test('the section of a module fits its schema', () => {
   const made = new WebAssembly.Module(modelModule(compileModel('reed-hare')));
   const [section] = WebAssembly.Module.customSections(made, sectionName);

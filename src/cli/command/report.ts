@@ -12,9 +12,17 @@ import { pendingFile } from '../files.ts';
 import { writeError, writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
 import { runReplicates } from '../replicates.ts';
+import { commandLineOf } from '../words.ts';
+import { reportPlans } from './report-plans.ts';
 
 export async function reportCommand(path: string, options: CommonOptions & { readonly output: string }): Promise<void> {
-  const { document, files, ...loaded } = loadModel(path, settingsOf(options), options);
+  const { document, files, ...loaded } = loadModel(path, settingsOf(options), {
+    ...options,
+    everyScenario: options.scenario === undefined,
+  });
+  if (options.scenario === undefined && Object.keys(loaded.compiled.spec.scenarios ?? {}).length > 0) {
+    return reportPlans({ document, files, ...loaded, path, options });
+  }
   const file = options.output === '-' ? null : pendingFile(options.output);
   const { compiled, cutShort, ...ran } = await runReplicates(loaded.compiled, options);
   const hidden = askedHiding(compiled, { ...options, path, written: true });
@@ -44,24 +52,4 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
 /** What would have had to be asked for. */
 function finishedOf({ replicates, draws }: RunResults): Pick<CommonOptions, 'replicates' | 'draws'> {
   return draws === undefined ? { replicates } : { replicates: draws.replicatesEach, draws: draws.number };
-}
-
-/** As it can be typed again. */
-function commandLineOf(first: readonly string[], options: CommonOptions, last: readonly string[]): string {
-  const { years, replicates, seed, draws, precision, atMost, set, allow, places } = options;
-  const words = ['skein', ...first];
-  for (const { name, value } of set ?? []) words.push('--set', `${name}=${value}`);
-  for (const folder of allow ?? []) words.push('--allow', folder);
-  if (years !== undefined) words.push('--years', String(years));
-  if (replicates !== undefined) words.push('--replicates', String(replicates));
-  if (seed !== undefined) words.push('--seed', String(seed));
-  if (draws !== undefined) words.push('--draws', String(draws));
-  if (precision !== undefined) words.push('--precision', String(precision));
-  if (atMost !== undefined) words.push('--at-most', String(atMost));
-  if (places !== undefined) words.push('--places', places);
-  return [...words, ...last].map(quoted).join(' ');
-}
-
-function quoted(word: string): string {
-  return /^[\w./=:,+-]+$/.test(word) ? word : `'${word.replaceAll("'", `'\\''`)}'`;
 }

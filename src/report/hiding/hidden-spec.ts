@@ -10,8 +10,24 @@ export function withoutPlaces(spec: Spec): Spec {
   return {
     ...core,
     patches: spec.patches.map((patch) => hiddenPatch(patch, words)),
+    ...(core.actions === undefined ? {} : { actions: hiddenActions(core.actions, words) }),
     named: Object.fromEntries(Object.entries(named).map(([name, section]) => [name, hiddenSection(section)])),
   };
+}
+
+/** Patches that plans make, and lengths of ways that they lay. */
+function hiddenActions(
+  actions: NonNullable<Spec['actions']>,
+  words: ReadonlySet<string>,
+): NonNullable<Spec['actions']> {
+  const hidden = Object.entries(actions).map(([name, action]): [string, typeof action] => {
+    if (action.kind === 'habitat' && action.new !== undefined) {
+      return [name, { ...action, new: hiddenPatch(action.new, words) }];
+    }
+    const tells = action.kind === 'link' && (action.distance?.set ?? action.distance?.add) !== undefined;
+    return [name, tells ? without(action, ['distance']) : action];
+  });
+  return Object.fromEntries(hidden);
 }
 
 /** For people, who must not take it for the whole. */

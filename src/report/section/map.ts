@@ -1,9 +1,9 @@
 // The map at the last count. The page's script brings the slider, the switch and the tooltips to life.
-import { mapShows, type MapShow, type MapState, type ReportView } from '../../view/contract.ts';
+import { mapShows, type MapState, type ReportView } from '../../view/contract.ts';
 import { drawMap } from '../../view/map/draw.ts';
 import { mapTables } from '../../view/map/table.ts';
 import { layOut } from '../../view/map/sheet.ts';
-import { mark, Markup } from '../../view/markup.ts';
+import { mark, Markup, type Content } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { section } from './section.ts';
 
@@ -15,6 +15,8 @@ interface MapNotes {
   readonly worth: string;
   /** How places are hidden; null where they are not. */
   readonly hidden: string | null;
+  /** What stands beneath the map. */
+  readonly more?: Content;
 }
 
 export function mapSection(view: ReportView, notes: MapNotes): Markup {
@@ -28,7 +30,7 @@ export function mapSection(view: ReportView, notes: MapNotes): Markup {
     mark`${controls(view)}
 <figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, notes)}</figcaption></figure>
 <details class="tables"><summary>The numbers of the map as tables</summary>
-<div id="map-tables">${mapTables(view, last)}</div></details>`,
+<div id="map-tables">${mapTables(view, last)}</div></details>${notes.more ?? null}`,
   );
 }
 
@@ -50,15 +52,17 @@ ${choices.length > 1 ? choice : null}
 </div>`;
 }
 
-const choiceWords: Readonly<Record<MapShow, string>> = {
+type Choice = (typeof mapShows)[number];
+
+const choiceWords: Readonly<Record<Choice, string>> = {
   abundance: 'the middle abundance',
   empty: 'the chance of being empty',
   contribution: 'the contribution',
   role: 'source or sink',
 };
 
-function choicesFor({ patches, worthAt }: ReportView): readonly MapShow[] {
-  const known: Readonly<Record<MapShow, boolean>> = {
+function choicesFor({ patches, worthAt }: ReportView): readonly Choice[] {
+  const known: Readonly<Record<Choice, boolean>> = {
     abundance: true,
     empty: patches.some((patch) => patch.empty !== null),
     contribution: worthAt !== null,

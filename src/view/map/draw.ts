@@ -51,6 +51,7 @@ function headings(view: ReportView): Readonly<Record<MapShow, string>> {
     empty: 'empty in so many of 100 futures',
     contribution: `${view.animals} a year later, anywhere, for each one there`,
     role: 'source or sink, the same in every year',
+    difference: `mean difference from ${fitText(view.minus?.name ?? '', 13, 110)}`,
   };
 }
 
@@ -84,6 +85,7 @@ function words({ view, state }: Sheet) {
     empty: 'chance of being empty',
     contribution: 'contribution of each patch',
     role: 'sources and sinks',
+    difference: `mean difference from ${view.minus?.name ?? ''}`,
   }[state.show];
   const most = view.patches
     .map((one) => ({ name: one.name, median: pick(one.fan.median, state.count) }))

@@ -2,12 +2,12 @@
 import type { KeyEntry } from '../key.ts';
 import { mark, type Markup } from '../markup.ts';
 import { decimal, plain, roundDown } from '../number.ts';
-import { deep, ramp, rule, softInk, umber } from '../palette.ts';
+import { deep, lossRamp, ramp, rule, softInk, umber } from '../palette.ts';
 import { bandPath } from './band.ts';
 import type { Marks } from './marks.ts';
 import { circleShape, drawShape, drawTicks, edgeOf } from './shape.ts';
 import type { Sheet } from './sheet.ts';
-import { contributionRange } from './shown.ts';
+import { contributionRange, mostDifferent } from './shown.ts';
 
 export function legendEntries(sheet: Sheet): readonly KeyEntry[] {
   const entries = [...shownEntries(sheet), ...roleEntries(sheet)];
@@ -26,6 +26,10 @@ function shownEntries(sheet: Sheet): readonly KeyEntry[] {
     }
     case 'role':
       return [];
+    case 'difference': {
+      const most = plain(mostDifferent(sheet.view, sheet.state.count));
+      return [rampEntry(`up to ${most} more`), rampEntry(`up to ${most} fewer, with a minus`, lossRamp)];
+    }
   }
 }
 
@@ -77,14 +81,14 @@ export function perDotWords(perDot: number, animals: string): string {
   return `one dot is ${plain(perDot)} ${animals}`;
 }
 
-function rampEntry(words: string): KeyEntry {
-  const steps = Array.from({ length: 10 }, (_, i) => step(i));
+function rampEntry(words: string, colour = ramp): KeyEntry {
+  const steps = Array.from({ length: 10 }, (_, i) => step(i, colour));
   const frame = mark`<rect y="-6" width="100" height="12" fill="none" stroke="${rule}" stroke-width="0.75"/>`;
   return { sample: mark`${steps}${frame}`, width: 100, words };
 }
 
-function step(i: number): Markup {
-  return mark`<rect x="${i * 10}" y="-6" width="10.2" height="12" fill="${ramp((i + 0.5) / 10)}"/>`;
+function step(i: number, colour: (share: number) => string): Markup {
+  return mark`<rect x="${i * 10}" y="-6" width="10.2" height="12" fill="${colour((i + 0.5) / 10)}"/>`;
 }
 
 function bandEntry({ view, flows }: Sheet): readonly KeyEntry[] {

@@ -1,10 +1,10 @@
 // The patches of the map with counted dots, or on the ramp. Large ones lie beneath, so that none is hidden.
 import { mark, type Markup } from '../markup.ts';
-import { deep, inkOn, ramp } from '../palette.ts';
+import { deep, inkOn, lossRamp, ramp } from '../palette.ts';
 import { pick } from '../series.ts';
 import { drawShape, drawTicks, edgeOf, type Shape } from './shape.ts';
 import type { Sheet } from './sheet.ts';
-import { shownIn } from './shown.ts';
+import { differenceOf, shownIn } from './shown.ts';
 import { patchLines } from './words.ts';
 
 export function drawPatches(sheet: Sheet): Markup {
@@ -42,7 +42,9 @@ function drawn(sheet: Sheet, p: number): Markup {
 
 function fillOf(sheet: Sheet, p: number): string {
   const { share } = shownIn(sheet.view, sheet.state, p);
-  return share === null || hasDots(sheet) ? '#ffffff' : ramp(share);
+  if (share === null || hasDots(sheet)) return '#ffffff';
+  const fewer = sheet.state.show === 'difference' && differenceOf(sheet.view, sheet.state.count, p) < 0;
+  return fewer ? lossRamp(share) : ramp(share);
 }
 
 function hasDots({ state, marks }: Sheet): boolean {

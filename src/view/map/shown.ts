@@ -1,6 +1,6 @@
 // What each patch shows at a choice of the switch: a step on the ramp, and a number or word that says the same.
 import type { MapState, PatchView, ReportView } from '../contract.ts';
-import { decimal, of100 } from '../number.ts';
+import { decimal, of100, plain, roundUp } from '../number.ts';
 import { largest, pick } from '../series.ts';
 
 export interface Shown {
@@ -22,7 +22,28 @@ export function shownIn(view: ReportView, state: MapState, p: number): Shown {
       return worth === null ? unknown : contribution(view, worth.contribution);
     case 'role':
       return worth === null ? unknown : { share: null, text: worth.role };
+    case 'difference': {
+      const more = differenceOf(view, state.count, p);
+      return { share: Math.abs(more) / mostDifferent(view, state.count), text: signed(more) };
+    }
   }
+}
+
+/** Mean animals at a count, more or fewer than under the view that is taken away; a patch that is not there has none. */
+export function differenceOf({ patches, minus }: ReportView, count: number, p: number): number {
+  const patch = pick(patches, p);
+  const before = minus?.view.patches.find(({ name }) => name === patch.name);
+  return pick(patch.fan.mean, count) - (before === undefined ? 0 : pick(before.fan.mean, count));
+}
+
+/** The end of the ramp, at least one animal. */
+export function mostDifferent(view: ReportView, count: number): number {
+  return roundUp(Math.max(1, ...view.patches.map((_, p) => Math.abs(differenceOf(view, count, p)))));
+}
+
+function signed(more: number): string {
+  const size = Math.abs(more) < 0.05 ? '0' : Math.abs(more) < 9.95 ? Math.abs(more).toFixed(1) : plain(Math.abs(more));
+  return size === '0' ? size : `${more < 0 ? '−' : '+'}${size}`;
 }
 
 const unknown: Shown = { share: null, text: 'not known' };

@@ -1,0 +1,91 @@
+// skein report of a model with plans: the page of their comparison.
+import { pageScript } from '../../../build/page-script.ts';
+import { patchValues } from '../../analysis/patch-values.ts';
+import { compareSpec } from '../../compare/compare-spec.ts';
+import { plansOf } from '../../compare/plans-of.ts';
+import type { PlanRun } from '../../compare/plans-run.ts';
+import type { Comparison } from '../../compare/results.ts';
+import type { Model } from '../../model/model.ts';
+import { followPath } from '../../pipeline.ts';
+import { withHiding, type Hidden } from '../../report/hiding/hide.ts';
+import type { PlanReport } from '../../report/plans/input.ts';
+import { buildPlansReport } from '../../report/plans/report.ts';
+import { printSpec } from '../../spec/print.ts';
+import { actionsOf } from '../../spec/plans/scenarios.ts';
+import { Ending, exitCodes } from '../exit.ts';
+import { pendingFile } from '../files.ts';
+import type { LoadedModel } from '../load.ts';
+import type { CommonOptions } from '../options.ts';
+import { writeError, writeOut } from '../output.ts';
+import { askedHiding } from '../places.ts';
+import { threadsFor, withCrew } from '../replicates.ts';
+import { commandLineOf } from '../words.ts';
+import { cutShort, plansToCompare } from './compare.ts';
+
+export interface PlansReportRequest extends LoadedModel {
+  readonly path: string;
+  readonly options: CommonOptions & { readonly output: string; readonly robust?: boolean };
+}
+
+export async function reportPlans({ document, files, compiled, path, options }: PlansReportRequest): Promise<void> {
+  const { spec } = compiled;
+  const plans = plansToCompare(plansOf(spec).plans);
+  const file = options.output === '-' ? null : pendingFile(options.output);
+  const threads = options.threads ?? threadsFor(plans.map((plan) => plan.compiled));
+  const robust = options.robust === true;
+  const done = await withCrew({ ...options, threads }, (crew, own) =>
+    compareSpec(crew, { spec, plans }, { ...own, robust }),
+  );
+  const [first] = done?.run.runs ?? [];
+  if (done === null || first === undefined) {
+    throw new Ending(exitCodes.work, 'Stopped before the first futures of all plans were finished.');
+  }
+  const hidden = askedHiding(first.compiled, { ...options, path, written: true });
+  const cut = cutShort(done.run, plans);
+  const { replicates, draws } = first.compiled.model;
+  const asked = cut === null ? options : { ...options, precision: undefined, atMost: undefined, replicates, draws };
+  const last = [...(robust ? ['--robust'] : []), '-o', options.output];
+  const page = buildPlansReport({
+    ...planInput(first, hidden),
+    specText: hidden?.specText ?? document.text,
+    data: { files, drivers: spec.drivers, wholeText: hidden === null ? printSpec(spec) : null },
+    commandLine: commandLineOf(['report', path], asked, last),
+    runLine: commandLineOf(['compare', path], asked, ['--out', 'results']),
+    ...(hidden === null ? {} : { hiding: hidden }),
+    pageScript,
+    comparison: hiddenComparison(done.comparison, hidden),
+    plans: done.run.runs.map((run) => ({ name: run.plan.name, input: planInput(run, hidden) })),
+  });
+  if (file === null) writeOut(page);
+  else file.finish(page);
+  if (file !== null && options.quiet !== true) writeError(`Wrote ${options.output}\n`);
+  if (cut !== null) throw cut;
+}
+
+function planInput({ compiled, results }: PlanRun, hidden: Hidden | null): PlanReport['input'] {
+  return {
+    results: withHiding(results, hidden),
+    path: followPath(compiled),
+    model: hidden === null ? compiled.model : withPlacesOf(compiled.model, hidden.model),
+    landscape: compiled.landscape,
+    coefficients: compiled.coefficients,
+    patchValues: patchValues(compiled),
+    ...(hidden === null ? {} : { hiding: hidden }),
+  };
+}
+
+/** All plans are drawn where the first one is: places that are moved twice could be averaged. A new patch has no place then. */
+function withPlacesOf(model: Model, hidden: Model): Model {
+  const patches = model.patches.map(({ name, capacity, fileOrder }) => {
+    const known = hidden.patches.find((patch) => patch.name === name);
+    return { name, at: null, areaKm2: null, ...known, capacity, fileOrder };
+  });
+  return { ...hidden, ...model, patches, phases: model.phases };
+}
+
+function hiddenComparison(comparison: Comparison, hidden: Hidden | null): Comparison {
+  if (hidden === null) return comparison;
+  const { spec, hash } = hidden;
+  const scenarios = comparison.scenarios.map((plan) => ({ ...plan, actions: actionsOf(spec, plan.name) }));
+  return { ...comparison, hash, scenarios };
+}

@@ -1,0 +1,67 @@
+// The plans of a spec as they are run: `as now`, which is always there, and each scenario that the spec names.
+import { isHandling } from '../compile/image/handling.ts';
+import { compileSpec, type CompiledModel } from '../pipeline.ts';
+import { totalCost } from '../results/costs.ts';
+import { withValues } from '../results/draws/plan.ts';
+import { scenariosOf } from '../spec/plans/scenarios.ts';
+import type { Finding } from '../spec/finding.ts';
+import type { Spec } from '../spec/schema/spec.ts';
+import type { MoveOfPlan } from './patches.ts';
+import type { MoneyOf, PlanToRun } from './plan.ts';
+
+export interface PlansOfSpec {
+  /** Null where a mistake stands in the way. */
+  readonly plans: readonly PlanToRun[] | null;
+  readonly findings: readonly Finding[];
+}
+
+export function plansOf(spec: Spec): PlansOfSpec {
+  const made = scenariosOf(spec).map(({ name, spec: own }) => ({ name, own, ...compileSpec(own) }));
+  const findings = made.flatMap((one) => one.findings);
+  const plans = made.flatMap(({ name, own, compiled }): readonly PlanToRun[] =>
+    compiled === null ? [] : [planOf(name, own, compiled)],
+  );
+  return { plans: plans.length < made.length ? null : plans, findings };
+}
+
+function planOf(name: string, spec: Spec, compiled: CompiledModel): PlanToRun {
+  return {
+    name,
+    actions: compiled.actions,
+    compiled,
+    moneyOf: moneyIn(compiled),
+    under: (values) => {
+      const { compiled: drawn, findings } = compileSpec(withValues(spec, values));
+      if (drawn !== null) return { compiled: drawn, moneyOf: moneyIn(drawn) };
+      const failure = findings.find(({ severity }) => severity === 'error')?.message ?? '';
+      return { compiled: null, failure, moneyOf: null };
+    },
+  };
+}
+
+/** An action that handles animals is a phase of its own name. */
+function moneyIn({ model, cost }: CompiledModel): MoneyOf | null {
+  if (cost.money === null) return null;
+  const phases = model.phases.filter(isHandling).map(({ name }) => name);
+  return (handled) => {
+    const total = totalCost(cost, (action, step) => {
+      const phase = phases.indexOf(action);
+      return phase < 0 ? 0 : handled(phase, step);
+    });
+    const { least, middle, most } = total.presentValue;
+    return { presentValue: middle, undiscounted: total.undiscounted.middle, least, most };
+  };
+}
+
+/** Every move of a plan, those that the model itself has left out: they are no part of a choice. */
+export function movesOf(spec: Spec, plans: readonly PlanToRun[]): readonly MoveOfPlan[] {
+  return plans.flatMap(({ name: scenario, actions, compiled: { model } }) =>
+    actions.flatMap(({ name: action }): readonly MoveOfPlan[] => {
+      const own = spec.actions?.[action];
+      if (own?.kind !== 'move') return [];
+      const { years } = own;
+      const firstYear = Array.isArray(years) ? Math.min(...years) : (years?.from ?? model.firstYear);
+      return [{ scenario, action, sources: [own.from].flat(), firstYear }];
+    }),
+  );
+}

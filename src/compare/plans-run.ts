@@ -1,0 +1,103 @@
+// What the runs of all plans are collected in, and what comes of it.
+import type { Crew } from '../kernel/crew.ts';
+import type { BatchCounts } from '../kernel/output.ts';
+import type { CompiledModel } from '../pipeline.ts';
+import type { Reduction } from '../results/reduction/reduction.ts';
+import type { ReachedPrecision, RunResults } from '../results/results.ts';
+import { Ledger } from './ledger.ts';
+import { PatchPairs, type PatchPair } from './patch-pairs.ts';
+import type { MoneyOf, PlanToRun } from './plan.ts';
+
+export interface PlanRun {
+  readonly plan: PlanToRun;
+  /** With as many replicates as were finished. */
+  readonly compiled: CompiledModel;
+  readonly results: RunResults;
+  readonly ledger: Ledger;
+  readonly reduction: Reduction;
+  /** Against the first plan. */
+  readonly patches: readonly PatchPair[];
+}
+
+/** First future of each finished draw and how many futures it has. */
+export type DrawPlaces = readonly { readonly first: number; readonly futures: number }[];
+
+export interface PlansRun {
+  readonly runs: readonly PlanRun[];
+  /** Empty where nothing was drawn. */
+  readonly draws: DrawPlaces;
+  readonly futures: number;
+  /** Null where no precision was asked for. */
+  readonly precision: ReachedPrecision | null;
+}
+
+/** One plan under way. */
+export interface OpenPlan {
+  readonly plan: PlanToRun;
+  readonly reduction: Reduction;
+  readonly ledger: Ledger;
+  readonly patches: PatchPairs;
+}
+
+/** `futures` is the largest number that can come. */
+export function openPlans(
+  plans: readonly PlanToRun[],
+  futures: number,
+  reductionOf: (model: CompiledModel['model']) => Reduction,
+): readonly OpenPlan[] {
+  const base = plans[0]?.compiled.model;
+  return plans.map((plan) => {
+    const { model } = plan.compiled;
+    return {
+      plan,
+      reduction: reductionOf(model),
+      ledger: new Ledger(model, futures),
+      patches: new PatchPairs(base ?? model, model),
+    };
+  });
+}
+
+export interface PartOptions {
+  readonly signal: AbortSignal | undefined;
+  readonly onBatch: (lanes: number) => void;
+}
+
+/** Some batches of one plan, in their order; null where the work was stopped before all were done. */
+export async function runPart(
+  crew: Crew,
+  job: Parameters<Crew['run']>[0],
+  { signal, onBatch }: PartOptions,
+): Promise<readonly BatchCounts[] | null> {
+  const taken: BatchCounts[] = [];
+  const take = (batch: BatchCounts): void => {
+    taken.push(batch);
+    onBatch(batch.lanes);
+  };
+  const finished = await crew.run(job, take, signal === undefined ? {} : { signal });
+  return finished < job.batches.length ? null : taken.sort((a, b) => a.first - b.first);
+}
+
+export interface FinishedPart {
+  /** The same batches of the first plan. */
+  readonly base: readonly BatchCounts[];
+  readonly own: readonly BatchCounts[];
+  /** Place of replicate 0 among all futures. */
+  readonly offset: number;
+  readonly moneyOf: MoneyOf | null;
+}
+
+export function keepPart({ ledger, patches }: OpenPlan, { base, own, offset, moneyOf }: FinishedPart): void {
+  own.forEach((batch, i) => {
+    ledger.take(batch, offset + batch.first, moneyOf);
+    const beside = base[i];
+    if (beside !== undefined) patches.take(beside, batch);
+  });
+}
+
+export function finishPlan(
+  { plan, reduction, ledger, patches }: OpenPlan,
+  compiled: CompiledModel,
+  results: RunResults,
+): PlanRun {
+  return { plan, compiled, results, ledger, reduction, patches: patches.pairs };
+}

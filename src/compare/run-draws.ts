@@ -1,0 +1,99 @@
+// Runs all plans under the same draws of what is not known: for each draw every plan, in the same futures.
+import { batchesOf } from '../kernel/batch.ts';
+import type { Crew } from '../kernel/crew.ts';
+import type { BatchCounts } from '../kernel/output.ts';
+import { openPooled, summarise, withSettings, type CrewOptions } from '../pipeline.ts';
+import { DrawCollector } from '../results/draws/collect.ts';
+import { drawnValues, seedOfDraw, type DrawnValues } from '../results/draws/plan.ts';
+import { endsBlockOfDraws, mostDraws } from '../results/precision.ts';
+import type { ReachedPrecision } from '../results/results.ts';
+import type { PlanModel, PlanToRun } from './plan.ts';
+import {
+  finishPlan,
+  keepPart,
+  openPlans,
+  runPart,
+  type OpenPlan,
+  type PartOptions,
+  type PlansRun,
+} from './plans-run.ts';
+import { precisionSoFar } from './sharpness.ts';
+
+interface OpenDraws {
+  readonly opened: readonly OpenPlan[];
+  readonly collectors: readonly DrawCollector[];
+  readonly finished: { first: number; futures: number }[];
+}
+
+/** A draw that one plan cannot have is left out of all. */
+export async function runDraws(
+  crew: Crew,
+  plans: readonly PlanToRun[],
+  options: CrewOptions,
+): Promise<PlansRun | null> {
+  const base = plans[0]?.compiled.model;
+  if (base === undefined || base.uncertainty === null) return null;
+  const { uncertainty, seed, replicates } = base;
+  const most = mostDraws(base);
+  const number = uncertainty.table === null ? most : Math.min(most, uncertainty.table.length);
+  const opened = openPlans(plans, replicates * number, openPooled);
+  const collectors = opened.map(({ plan, reduction }) => new DrawCollector(plan.compiled.model, reduction));
+  const open: OpenDraws = { opened, collectors, finished: [] };
+  let [told, done, stopped] = [0, 0, false];
+  let precision: ReachedPrecision | null = null;
+  const onBatch = (count: number): void =>
+    options.onProgress?.((told += count), replicates * base.draws * plans.length);
+  for (let draw = 0; draw < number; draw++) {
+    const values = drawnValues(uncertainty, seed, draw);
+    stopped = !(await runDraw(crew, open, { draw, values, options: { signal: options.signal, onBatch } }));
+    if (stopped) break;
+    done = draw + 1;
+    const { finished } = open;
+    if (!endsBlockOfDraws(base, done) || finished.length === 0) continue;
+    precision = precisionSoFar(base, opened, { futures: finished.length * replicates, draws: finished });
+    if (precision?.reached === true) break;
+  }
+  if (open.finished.length === 0) return null;
+  const runs = opened.flatMap((one, i) => {
+    const compiled = stopped ? withSettings(one.plan.compiled, { draws: done }) : one.plan.compiled;
+    const results = collectors[i]?.withDraws(summarise(compiled, one.reduction));
+    return results === undefined ? [] : [finishPlan(one, compiled, results)];
+  });
+  const futures = open.finished.length * replicates;
+  return { runs, draws: open.finished, futures, precision: stopped ? null : precision };
+}
+
+interface Draw {
+  readonly draw: number;
+  readonly values: DrawnValues;
+  readonly options: PartOptions;
+}
+
+/** Whether it was finished, be it by telling that it cannot be had. */
+async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: Draw): Promise<boolean> {
+  const { opened, collectors, finished } = open;
+  const own = opened.map(({ plan }) => plan.under(values));
+  const failed = own.find((one): one is PlanModel & { compiled: null } => one.compiled === null);
+  if (failed !== undefined) {
+    for (const collector of collectors) collector.fail(draw, values, failed.failure);
+    return true;
+  }
+  const parts: (readonly BatchCounts[])[] = [];
+  for (const { compiled } of own) {
+    if (compiled === null) return false;
+    const { model, image } = compiled;
+    const request = { steps: model.steps, seed: seedOfDraw(model.seed, draw) };
+    const part = await runPart(crew, { image, request, batches: batchesOf(model.replicates) }, options);
+    if (part === null) return false;
+    parts.push(part);
+  }
+  const futures = opened[0]?.plan.compiled.model.replicates ?? 0;
+  const offset = finished.length * futures;
+  opened.forEach((one, i) => {
+    for (const batch of parts[i] ?? []) collectors[i]?.take(batch);
+    collectors[i]?.finish(draw, values);
+    keepPart(one, { base: parts[0] ?? [], own: parts[i] ?? [], offset, moneyOf: own[i]?.moneyOf ?? null });
+  });
+  finished.push({ first: offset, futures });
+  return true;
+}

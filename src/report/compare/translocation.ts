@@ -1,0 +1,39 @@
+// What must be said of every plan that handles animals: the steps before a translocation, the source's own risk, when to stop,
+// and who decides on a take.
+import type { Comparison, SourceRisk } from '../../compare/results.ts';
+import { percent, whole } from '../../view/number.ts';
+import { between, change } from './words.ts';
+
+/** After the guidelines of IUCN/SSC (2013), in our own words and from memory. */
+export const translocationSteps: readonly string[] = [
+  'Ask first whether moving animals is the right thing at all: what causes the decline, and what else would help.',
+  'Write down the goal, the objectives, and how anyone will see that they are reached.',
+  'Look at what it needs: habitat and climate at the release site, founders that the source can spare, health and welfare of the animals, people who live there, law, money.',
+  'Weigh the risks: to the source, to the release site and what lives there, of disease, of genes, to people, of money lost.',
+  'Plan release and transport: who, how many, when, where, in what state.',
+  'Write an exit rule before the first animal is caught: at what sight the work stops or is turned back.',
+  'Watch both places long enough to know, go on caring for them, and publish what came of it.',
+];
+
+/** Of each move, for its source. */
+export function sourceWords(
+  { scenario, action, source, change: found, stopBelow, year }: SourceRisk,
+  animals: string,
+): readonly string[] {
+  const { before, after } = found.everEmpty;
+  return [
+    `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${percent(after)} with the plan and ${percent(before)} without it (${change({ of: 'chance', estimate: found.everEmptyChange.estimate })} points, 95 %: ${between('chance', found.everEmptyChange)}).`,
+    `An exit rule to start from: stop catching when fewer than ${whole(Math.max(1, stopBelow))} ${animals} are counted in ${source}. Without the plan 95 of 100 futures count more there in ${year}, so fewer is no bad luck that the model foresees. The rule is for the permit and the people responsible to set.`,
+  ];
+}
+
+export function hasMoves({ scenarios }: Comparison): boolean {
+  return scenarios.some(({ handled }) => handled.some(({ does }) => does === 'move' || does === 'add'));
+}
+
+export function hasTakes({ scenarios }: Comparison): boolean {
+  return scenarios.some(({ handled }) => handled.some(({ does }) => does === 'take'));
+}
+
+export const takeWords =
+  'How many animals may be taken, by whom and when, is decided by the wildlife authority under the law of the place, from counts made there; a quota of this model is an input to that decision and no licence.';

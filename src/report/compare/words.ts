@@ -1,0 +1,57 @@
+// Numbers of a comparison as readers meet them, the same in a terminal and on the page.
+import type { Comparison, ComparedPlan, PlanCost, PlanDifference, RiskPrice } from '../../compare/results.ts';
+import { plain, whole } from '../../view/number.ts';
+
+export function moneyOf(amount: number, { money }: Pick<Comparison, 'money'>): string {
+  return `${amount < 0 ? '−' : ''}${plain(Math.abs(amount))}${money === null ? '' : ` ${money.currency}`}`;
+}
+
+/** The middle, and the range where prices are ranges. */
+export function costWords({ presentValue, least, most }: PlanCost): string {
+  return least === most ? plain(presentValue) : `${plain(presentValue)} (${plain(least)} to ${plain(most)})`;
+}
+
+/** More or less, with its sign; `points` for chances. */
+export function change({ of, estimate }: Pick<PlanDifference, 'of' | 'estimate'>): string {
+  if (estimate === 0) return 'none';
+  return `${estimate < 0 ? '−' : '+'}${amount(of, Math.abs(estimate))}`;
+}
+
+function amount(of: PlanDifference['of'], value: number): string {
+  if (of === 'chance') return `${(value * 100).toFixed(1)}`;
+  return of === 'money' ? plain(value) : whole(value);
+}
+
+export function between(
+  of: PlanDifference['of'],
+  { lower, upper }: { readonly lower: number; readonly upper: number },
+): string {
+  if (!Number.isFinite(lower) || !Number.isFinite(upper)) return 'not known';
+  return `${signed(of, lower)} to ${signed(of, upper)}`;
+}
+
+function signed(of: PlanDifference['of'], value: number): string {
+  const rounded = amount(of, Math.abs(value));
+  return /^0(\.0+)?$/.test(rounded) ? rounded : `${value < 0 ? '−' : '+'}${rounded}`;
+}
+
+/** For a chance of one in a hundred less, which is a step that a reader can picture. */
+export function priceWords({ costPerRisk, why }: RiskPrice, comparison: Pick<Comparison, 'money'>): string {
+  if (costPerRisk === null) return why;
+  const [least, most] = [costPerRisk.lower / 100, costPerRisk.upper / 100];
+  return `${moneyOf(costPerRisk.estimate / 100, comparison)} (${plain(least)} to ${plain(most)})`;
+}
+
+export function shareOf100(share: number): string {
+  const futures = share * 100;
+  if (futures > 0 && futures < 0.5) return 'fewer than 1';
+  if (futures < 100 && futures > 99.5) return 'more than 99';
+  return String(Math.round(futures));
+}
+
+/** Whether it is rising or falling when the run ends. */
+export function courseWords({ changeAtEnd, animalsAtEnd }: ComparedPlan): string {
+  const share = animalsAtEnd.mean === 0 ? 0 : changeAtEnd / animalsAtEnd.mean;
+  if (Math.abs(share) < 0.001) return 'steady';
+  return `${share < 0 ? 'falling' : 'rising'} by ${(Math.abs(share) * 100).toFixed(1)}\u00a0% a year`;
+}

@@ -1,0 +1,177 @@
+// skein compare as it is typed: its text, its JSON, its tables, and what it says where there is nothing to compare.
+import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, describe, expect, test } from 'vitest';
+import { folder, skein } from './skein.ts';
+
+const text = `skein: 1
+study: { title: Two ponds, invented: true }
+years: 12
+first-year: 2027
+patches: [{ name: Pond, capacity: 30 }, { name: Marsh, capacity: 20 }]
+counts: females
+classes: [newborn, adult]
+oldest: open-ended
+survival: { newborn: 0.3, adult: 0.6 }
+births: { adult: 2.4, female-share: 0.5 }
+year: [count, breeding, survival, ageing]
+crowding: { form: beverton-holt, changes: { survival: [newborn] }, counted: { adult: 1 }, capacity: capacity, where-declining: ceiling }
+start: { table: { Pond: { adult: 12 }, Marsh: { adult: 9 } } }
+outcomes: { few: { of: [adult], below: 6 } }
+money: { currency: crowns, discount: 3 % }
+actions:
+  fence: { kind: change, in: Pond, rates: { survival: { newborn: { times: 1.2 } } }, cost: { once: 1000, yearly: 100 } }
+  moves: { kind: move, from: Pond, to: Marsh, number: { adult: 2 }, after: survival, years: [2028], cost: { per-animal: 50 } }
+  posters: { kind: change, rates: { survival: { adult: { times: 1 } } }, cost: { once: [400, 600] } }
+  quota: { kind: take, share: 0.02, classes: [adult], counted: each patch, before: breeding }
+scenarios:
+  fence: [fence]
+  fence and moves: [fence, moves]
+  posters: [posters]
+  quota: [quota]
+run: { replicates: 400, seed: 5 }
+`;
+
+const place = mkdtempSync(join(tmpdir(), 'skein-plans-'));
+const model = join(place, 'ponds.yaml');
+writeFileSync(model, text);
+afterAll(() => rmSync(place, { recursive: true, force: true }));
+
+interface Compared {
+  readonly scenarios: readonly {
+    readonly name: string;
+    readonly cost: {
+      readonly presentValue: number;
+      readonly undiscounted: number;
+      readonly least: number;
+      readonly most: number;
+    };
+    readonly notBeaten: boolean;
+    readonly prices: readonly { readonly why: string }[];
+  }[];
+  readonly differences: readonly {
+    readonly outcome: string;
+    readonly from: string;
+    readonly to: string;
+    readonly estimate: number;
+    readonly interval: { readonly lower: number; readonly upper: number };
+  }[];
+  readonly robustness: readonly {
+    readonly variant: string;
+    readonly notRun: string | null;
+    readonly holds: boolean | null;
+  }[];
+  readonly sources: readonly { readonly source: string; readonly stopBelow: number }[];
+  readonly precision?: { readonly halfWidth: number; readonly reached: boolean };
+  readonly replicates: number;
+}
+
+function compared(...words: readonly string[]): Compared {
+  const { code, out, err } = skein(['compare', model, '--json', '--quiet', ...words]);
+  expect([code, err]).toEqual([0, '']);
+  return JSON.parse(out) as Compared;
+}
+
+describe('skein compare', () => {
+  test('begins with what the results support, and warns where animals are moved or taken', () => {
+    const { code, out } = skein(['compare', model, '--quiet']);
+    expect(code).toBe(0);
+    const words = out.replace(/\s+/g, ' ');
+    expect(words).toMatch(/^Two ponds The results support “fence”: a chance of “few” of/);
+    expect(words).toContain('Strength: limited');
+    expect(words).toContain('posters no reliable gain');
+    expect(words).toContain('takes animals from Pond (“moves”)');
+    expect(words).toContain('An exit rule to start from: stop catching when fewer than');
+    expect(words).toContain('after IUCN/SSC 2013');
+    expect(words).toContain('is decided by the wildlife authority');
+    expect(words).toContain('Nothing is counted after 2038');
+  });
+
+  // By hand: 1000 + 100 Σ 1.03^-t for t from 0 to 11.
+  test('tells money now and undiscounted, with the range of prices', () => {
+    const { scenarios } = compared();
+    const [now, fence, , posters] = scenarios;
+    expect(now!.cost).toMatchObject({ presentValue: 0, undiscounted: 0 });
+    expect(fence!.cost.undiscounted).toBeCloseTo(2200, 9);
+    expect(fence!.cost.presentValue).toBeCloseTo((100 * (1 - 1.03 ** -12)) / (1 - 1 / 1.03) + 1000, 6);
+    expect(posters!.cost).toMatchObject({ presentValue: 500, least: 400, most: 600 });
+    expect(posters!.notBeaten).toBe(false);
+  });
+
+  test('a plan without effect differs by exactly zero', () => {
+    const found = compared().differences.filter(({ from, to }) => from === 'as now' && to === 'posters');
+    for (const one of found.filter(({ outcome }) => outcome !== 'cost')) expect(one.estimate).toBe(0);
+    expect(found.find(({ outcome }) => outcome === 'few')!.interval).toMatchObject({ lower: 0, upper: 0 });
+  });
+
+  test('says what a move does to its source', () => {
+    const { sources } = compared();
+    expect(sources).toHaveLength(1);
+    expect(sources[0]!.source).toBe('Pond');
+    expect(sources[0]!.stopBelow).toBeGreaterThan(0);
+  });
+
+  test('gives the same bytes for any number of threads', () => {
+    const run = (threads: string) => skein(['compare', model, '--json', '--quiet', '--threads', threads]).out;
+    expect(run('2')).toBe(run('1'));
+  });
+
+  test('--precision goes on until differences are that sharp', () => {
+    const { precision, replicates, differences } = compared('--precision', '0.02');
+    expect(precision).toMatchObject({ reached: true });
+    expect(replicates).toBeGreaterThan(400);
+    for (const { interval } of differences.filter(({ outcome }) => outcome === 'few')) {
+      expect((interval.upper - interval.lower) / 2).toBeLessThanOrEqual(0.02);
+    }
+    const short = compared('--precision', '0.001', '--at-most', '1000');
+    expect(short.precision).toMatchObject({ reached: false });
+    expect(short.replicates).toBe(1000);
+  });
+
+  test('--robust asks other models, and names those that do not apply', () => {
+    const { robustness } = compared('--robust');
+    expect(robustness.map(({ variant, holds }) => [variant, holds !== null])).toEqual([
+      ['the other answer to where leavers end', false],
+      ['half the correlation between patches', false],
+      ['double the correlation between patches', false],
+      ['another form of crowding', true],
+      ['a second threshold', true],
+      ['plans with half their effect', true],
+      ['plans without any effect', true],
+    ]);
+    expect(robustness.at(-1)!.holds).toBe(false);
+    for (const { notRun, holds } of robustness) expect(notRun === null).toBe(holds !== null);
+  });
+
+  test('--out writes tables with a dictionary', () => {
+    const cwd = folder();
+    expect(skein(['compare', model, '--quiet', '--out', 'out'], { cwd }).code).toBe(0);
+    const files = readdirSync(join(cwd, 'out'));
+    expect(files).toEqual(
+      expect.arrayContaining(['plans.csv', 'plan_differences.parquet', 'dictionary.csv', 'run.json']),
+    );
+    const [head, ...rows] = readFileSync(join(cwd, 'out/plan_differences.csv'), 'utf8').trim().split('\n');
+    expect(head).toMatch(/^outcome,from,to,difference,lower,upper/);
+    expect(rows.length).toBe(10 * 5);
+  });
+
+  test('a model without plans is told what to write', () => {
+    const { code, err } = skein(['compare', 'models/two-ponds.yaml', '--quiet']);
+    expect(code).toBe(1);
+    expect(err).toContain('name some under `scenarios`');
+  });
+});
+
+test('skein report of a model with plans writes the page of their comparison', () => {
+  const cwd = folder();
+  const { code } = skein(['report', model, '-o', 'page.html', '--replicates', '100', '--quiet'], { cwd });
+  expect(code).toBe(0);
+  const page = readFileSync(join(cwd, 'page.html'), 'utf8');
+  expect(page).toContain('Who signs');
+  expect(page).toContain('Would another sound model reverse it?');
+  expect(
+    skein(['report', model, '-o', 'one.html', '--scenario', 'fence', '--replicates', '50', '--quiet'], { cwd }).code,
+  ).toBe(0);
+  expect(readFileSync(join(cwd, 'one.html'), 'utf8')).not.toContain('Who signs');
+});
