@@ -54,7 +54,7 @@ export function compileSpec(spec: Spec): Compilation {
     return { compiled: finish(spec, { parts: base.parts, laid: spec, cost }), findings };
   }
   const laid = layActions(spec, new Set(spec.scenarios?.[scenario] ?? []));
-  const plan = compilePlan(base.parts, laid);
+  const plan = compilePlan(base.parts, laid, scenario);
   const known = new Set(findings.map(keyOf));
   findings.push(...laid.findings);
   for (const found of plan.findings) {
@@ -96,12 +96,17 @@ function compileAlone(spec: Spec): Made & { readonly context: Context } {
 }
 
 /** A plan: its own model, with crowding as strong as the base has it and the same animals at count 0. */
-function compilePlan(base: Parts, laid: Laid): Made {
+function compilePlan(base: Parts, laid: Laid, scenario: string): Made {
   const extended = laid.base === null ? { model: base.model, findings: [] } : resolveStaged(laid.base);
   const resolved = resolveModel(laid.spec);
   const found = [...resolved.findings, ...extended.findings];
   if (resolved.model === null || extended.model === null) return { parts: null, findings: found };
-  const model = withStagesOf(extended.model, { ...resolved.model, uncertainty: base.model.uncertainty });
+  const model = withStagesOf(extended.model, {
+    ...resolved.model,
+    // Every output of the plan says so.
+    title: `${base.model.title}, plan: ${scenario}`,
+    uncertainty: base.model.uncertainty,
+  });
   const { landscape, findings: ofLandscape } = buildLandscape(model);
   const { coefficients, findings: ofCapacities } = solveCapacities(model, extended.model);
   const findings = [...found, ...ofLandscape, ...ofCapacities];

@@ -7,6 +7,7 @@ import { slopesOf, type ModelSlopes } from '../model/slopes/slopes.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
 import type { CompiledModel } from '../pipeline.ts';
+import { asNow } from '../spec/plans/lay.ts';
 import type { ParameterTangent } from './input.ts';
 import { placesOf } from './label.ts';
 import { differenceTangent } from './parameter-differences.ts';
@@ -56,6 +57,8 @@ interface Along {
 /** Null where the slopes do not tell all, or do not exist. */
 function exactTangent({ base, block, state, slopes }: Along, rule: CrowdingRule): SparseMatrix | null {
   if (slopes === null || slopes.missed.length > 0) return null;
+  // Under a plan crowding is solved from another model than the one whose slopes these are.
+  if (rule === 'solved anew' && base.scenario !== asNow) return null;
   const solved = coefficientSlopes(base, slopes, rule);
   if (solved === null) return null;
   const whole = yearSlope({ compiled: base, slopes, coefficientSlopes: solved }, state);
