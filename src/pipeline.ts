@@ -10,7 +10,7 @@ import type { Crew } from './kernel/crew.ts';
 import type { BatchCounts } from './kernel/output.ts';
 import { openRunner } from './kernel/run.ts';
 import type { Model } from './model/model.ts';
-import { leading } from './numeric/leading.ts';
+import { growthRateOf } from './numeric/leading.ts';
 import { standingCautions } from './results/cautions.ts';
 import { DrawCollector } from './results/draws/collect.ts';
 import { drawnValues, seedOfDraw, withValues, type DrawnValues } from './results/draws/plan.ts';
@@ -246,11 +246,18 @@ async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOp
 export function followPath(compiled: CompiledModel): PathResults {
   const { model, image, provenance } = compiled;
   const raw = runPath(image, { steps: model.steps });
-  return summarisePath({ model, raw, growth: growthOf(compiled), provenance, cautions: standingCautions(model) });
+  return summarisePath({
+    model,
+    raw,
+    growth: growthWithChance(compiled),
+    provenance,
+    cautions: standingCautions(model),
+  });
 }
 
-function growthOf(compiled: CompiledModel): PathGrowth {
-  const withoutChance = leading(buildBlock(compiled, 'zero').matrix).growthRate;
+/** Near zero: of an average year, and in the long run of years that differ. */
+export function growthWithChance(compiled: CompiledModel): PathGrowth {
+  const withoutChance = growthRateOf(buildBlock(compiled, 'zero').matrix);
   const none = (reason: string): PathGrowth => ({ withoutChance, withChance: null, reason });
   if (!yearsDiffer(compiled.model)) return none('No rate varies from year to year and no catastrophe strikes.');
   const model = growingOnly(compiled.model);

@@ -42,6 +42,11 @@ export function analyse(input: AnalysisInput): Analysis {
   const life = lifeAnswers(block, input.split, vectors);
   const fromSpectrum = (value: number | null | undefined, without: string): Answer<number> =>
     value === null || value === undefined ? because(all ? without : tooLarge) : { value };
+  const patches = take(
+    'patches',
+    plain((given) => patchesAnswer(input, { vectors: given, around })),
+  );
+  if (patches?.some(({ removalLoss }) => removalLoss === null) === true) take('patches.removalLoss', because(tooMany));
   return {
     format: 'skein-analysis/1',
     at: block.at,
@@ -75,10 +80,7 @@ export function analyse(input: AnalysisInput): Analysis {
       'parameters',
       plain((given) => parametersAnswer(input.parameterTangents ?? [], given)),
     ),
-    patches: take(
-      'patches',
-      plain((given) => patchesAnswer(input, { vectors: given, around })),
-    ),
+    patches,
     links: take(
       'links',
       plain((given) => linksAnswer(input, { vectors: given, around })),
@@ -87,7 +89,7 @@ export function analyse(input: AnalysisInput): Analysis {
       'transients',
       plain((given) => transientsAnswer(input, given, settles(found))),
     ),
-    stochasticGrowth: take('stochasticGrowth', stochasticAnswer(input)),
+    stochasticGrowth: take('stochasticGrowth', stochasticAnswer(input, take)),
     growthStandardError: take(
       'growthStandardError',
       withVectors((given) => standardErrorAnswer(input, given)),
@@ -97,6 +99,7 @@ export function analyse(input: AnalysisInput): Analysis {
     spread: take('spread', spreadAnswer(input)),
     ltre: take('ltre', differenceAnswer(input)),
     cautions: cautionsFor({
+      changesByYear: input.changesByYear ?? false,
       patches: block.patches.length,
       losslessDispersal: input.losslessDispersal ?? false,
       irreducible: found.irreducible,
@@ -107,6 +110,9 @@ export function analyse(input: AnalysisInput): Analysis {
     reasons: told,
   };
 }
+
+const tooMany =
+  'Taking every patch away would take minutes for so many states; it was done for those that matter most to the growth.';
 
 /** Numbers come to a steady growth: no part of the life cycle that grows as fast as the whole swings for ever. */
 function settles({ blocks, growthRate }: Leading): boolean {

@@ -4,7 +4,8 @@ import { exp } from '../machine/pinned.ts';
 import { fadingSums } from '../numeric/fading.ts';
 import type { Leading } from '../numeric/leading.ts';
 import { forEachEntry } from '../numeric/sparse.ts';
-import { because, type Answer } from './answer.ts';
+import type { LongRunGrowth } from '../results/results.ts';
+import { because, type Answer, type Reasons } from './answer.ts';
 import { mostEntries } from './cautions.ts';
 import { growthStandardError } from './growth-error.ts';
 import type { AnalysisInput, ParameterTangent } from './input.ts';
@@ -108,9 +109,21 @@ export function transientsAnswer(
   return { ...bounds, fromStart: path && { ...path, times: [...path.times] } };
 }
 
-export function stochasticAnswer(input: AnalysisInput): Answer<NonNullable<Analysis['stochasticGrowth']>> {
+/** By approximation, and by simulation. */
+export function stochasticAnswer(
+  input: AnalysisInput,
+  take: Reasons['take'],
+): Answer<NonNullable<Analysis['stochasticGrowth']>> {
   const approximation = approximateGrowth(input);
-  return approximation.value === null ? approximation : { value: { approximation: approximation.value } };
+  const simulated: Answer<LongRunGrowth> =
+    input.simulatedGrowth ?? because('The matrix was given without a model to simulate.');
+  if (approximation.value === null && simulated.value === null) return approximation;
+  return {
+    value: {
+      approximation: take('stochasticGrowth.approximation', approximation),
+      simulated: take('stochasticGrowth.simulated', simulated),
+    },
+  };
 }
 
 function approximateGrowth({ noise, noiseLeavesOut = [] }: AnalysisInput): Answer<ApproximateGrowth> {

@@ -6,6 +6,15 @@ export const corridorParadox =
   'rate, whatever links are added (Karlin 1982; Altenberg 2012): do not judge corridors by it. Their benefit shows in runs with ' +
   'chance: refilling empty patches, years that differ between patches, crowding.';
 
+/** The same where some die on the way. */
+export const linksByGrowth =
+  'This analysis knows neither chance nor crowding. Judged by growth alone, mixing patches lowers it wherever nobody is lost on the ' +
+  'way (Karlin 1982; Altenberg 2012), and a link or a plan seems to help only by what it saves of those that travel. What links are ' +
+  'worth otherwise (empty patches refilled, years that differ between patches, crowding) shows in runs with chance.';
+
+export const firstYearOnly =
+  'Rates, ways or actions change with the year. The matrix is that of the first year: what comes later shows in `path` and `run`.';
+
 /** Entries listed; of a larger matrix those with the largest elasticities. */
 export const mostEntries = 10_000;
 
@@ -27,6 +36,8 @@ export interface CautionFacts {
   readonly period: number;
   /** Of the matrix. */
   readonly entries: number;
+  /** Rates or ways are not the same in every year. */
+  readonly changesByYear: boolean;
   /** The matrix is that of small changes around the make-up of the sexes that few animals settle to. */
   readonly linearised: boolean;
 }
@@ -37,11 +48,12 @@ export const bothSexes =
   'tells what one more animal adds, and births stand with males too where females need them.';
 
 export function cautionsFor(facts: CautionFacts): string[] {
-  const { patches, losslessDispersal, irreducible, period, entries, linearised } = facts;
+  const { patches, losslessDispersal, irreducible, period, entries, linearised, changesByYear } = facts;
   const cautions = [meanYear, smallChanges];
   if (linearised) cautions.push(bothSexes);
   if (patches > 1) cautions.push(apparentSurvival);
-  if (patches > 1 && losslessDispersal) cautions.push(corridorParadox);
+  if (changesByYear) cautions.push(firstYearOnly);
+  if (patches > 1) cautions.push(losslessDispersal ? corridorParadox : linksByGrowth);
   if (!irreducible) {
     cautions.push(
       'Some states cannot be reached from all others (one-way patches, or classes past breeding). What happens in the long run can ' +

@@ -5,6 +5,7 @@ import type { Answer } from './answer.ts';
 import type { Against } from './difference-input.ts';
 import type { LifeSplit } from './life-history.ts';
 import type { Network } from './metapopulation-capacity.ts';
+import type { LongRunGrowth } from '../results/results.ts';
 import type { SmallNoise } from './small-noise.ts';
 import type { LandSpeed } from './spread/model-spread.ts';
 import type { YearMap } from './year-map.ts';
@@ -42,6 +43,10 @@ export interface AnalysisInput {
   readonly noise?: Answer<SmallNoise>;
   /** What is in the mean year, but not in the variation of the approximation. */
   readonly noiseLeavesOut?: readonly string[];
+  /** Long-run growth near zero, simulated. */
+  readonly simulatedGrowth?: Answer<LongRunGrowth>;
+  /** Rates or ways that are not those of the first year in every year. */
+  readonly changesByYear?: boolean;
   /** Of what is not known. */
   readonly uncertainty?: Answer<NamedCovariance>;
   readonly network?: Answer<Network>;

@@ -5,11 +5,12 @@ import { phaseMap } from '../compile/phase-map.ts';
 import { linearisedBlock } from '../compile/slopes/linearised.ts';
 import { yearJacobian } from '../compile/slopes/year-jacobian.ts';
 import { nearZero, productOf, runYear, type Compiled } from '../compile/year-map.ts';
-import type { Model } from '../model/model.ts';
+import type { Model, Phase, RateTable } from '../model/model.ts';
 import { principalPart } from '../numeric/principal-part.ts';
 import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
 import { sparseFromDense, type SparseMatrix } from '../numeric/sparse.ts';
-import type { CompiledModel } from '../pipeline.ts';
+import { growthWithChance, type CompiledModel } from '../pipeline.ts';
+import type { LongRunGrowth } from '../results/results.ts';
 import { because, type Answer } from './answer.ts';
 import { estimateErrors } from './chance/estimate-errors.ts';
 import { modelYears } from './chance/model-years.ts';
@@ -40,6 +41,8 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
       ...parameterTangents(compiled, block, state),
       noise: noiseAt(compiled, at),
       noiseLeavesOut: model.catastrophes.map(({ name }) => name),
+      simulatedGrowth: simulatedAt(compiled, at),
+      changesByYear: changesByYear(compiled),
       uncertainty: uncertaintyOf(model),
       network: networkOf(model),
       spread: modelSpread(compiled),
@@ -56,6 +59,39 @@ function noiseAt(compiled: CompiledModel, at: AtState): AnalysisInput['noise'] &
     return because('Where numbers are held by crowding there is no long-run growth; it is told near zero.');
   }
   return modelYears(compiled);
+}
+
+function simulatedAt(compiled: CompiledModel, at: AtState): Answer<LongRunGrowth> {
+  if (at !== 'zero') return because('It is told near zero.');
+  const { withChance, reason } = growthWithChance(compiled);
+  return withChance === null ? because(reason ?? 'There is none.') : { value: withChance };
+}
+
+function changesByYear({ model, landscape }: Compiled): boolean {
+  const moves = landscape.movements.some((movement) => (movement?.byYear?.chances.length ?? 1) > 1);
+  return (
+    moves ||
+    model.phases.some((phase) => doneInSomeYears(phase) || tablesOf(phase).some(({ epochs }) => epochs.length > 1))
+  );
+}
+
+function doneInSomeYears(phase: Phase): boolean {
+  return 'active' in phase && phase.active !== null;
+}
+
+function tablesOf(phase: Phase): readonly RateTable[] {
+  switch (phase.kind) {
+    case 'survival':
+      return [phase.survival];
+    case 'breeding':
+      return [phase.births];
+    case 'demography':
+      return [phase.fates, phase.births];
+    case 'dispersal':
+      return [phase.leaving];
+    default:
+      return [];
+  }
 }
 
 function uncertaintyOf({ uncertainty }: Model): Answer<NamedCovariance> {

@@ -113,6 +113,14 @@ export const StochasticGrowthSchema = closed({
       leftOut: Type.Array(Type.String(), { description: 'What acts in the mean year only.' }),
     }),
   ),
+  simulated: orNull(
+    closed({
+      growthRate: number('e to the mean yearly change of ln numbers.'),
+      logGrowth: Type.Number(),
+      standardError: number('Of `logGrowth`, from independent courses.'),
+      years: number('That were simulated, all courses together.'),
+    }),
+  ),
 });
 
 export const SpreadSchema = closed(

@@ -45,6 +45,7 @@ function everything(): AnalysisInput {
     start: new Float64Array(block.states.length).fill(4),
     parameterTangents: [{ name: 'everything', value: 1, matrixTangent: births }],
     noise: { value: { logGrowth: 0.05, lost: 0.005, yearlyVariance: 0.01 } },
+    simulatedGrowth: { value: { growthRate: 1.05, logGrowth: Math.log(1.05), standardError: 0.001, years: 4000 } },
     uncertainty: {
       value: { names: ['everything'], covariance: { rows: 1, columns: 1, values: Float64Array.of(0.0004) } },
     },

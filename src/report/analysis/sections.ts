@@ -90,13 +90,21 @@ export function chanceWords({ stochasticGrowth, growthStandardError, growthRate 
   return lines;
 }
 
-function longRun({ approximation }: NonNullable<Analysis['stochasticGrowth']>): readonly string[] {
-  if (approximation === null) return [];
+function longRun({ approximation, simulated }: NonNullable<Analysis['stochasticGrowth']>): readonly string[] {
+  const measured =
+    simulated === null
+      ? []
+      : [
+          `Simulated over ${told(simulated.years)} years, it ${change(simulated.growthRate)} in the long run (ln of the growth rate ` +
+            `${told(simulated.logGrowth)} ± ${told(simulated.standardError)}).`,
+        ];
+  if (approximation === null) return measured;
   const { growthRate, yearlyVariance, method, leftOut } = approximation;
   const without = leftOut.length === 0 ? '' : ` What ${listed(leftOut)} takes is in the mean year only.`;
   return [
     `With years that differ, a few animals usually come to a population that ${change(growthRate)} (${method}); the logarithm of ` +
       `numbers strays by ${told(Math.sqrt(yearlyVariance))} times the root of the years.${without}`,
+    ...measured,
   ];
 }
 
