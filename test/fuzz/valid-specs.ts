@@ -67,6 +67,18 @@ function dispersalIn({ classes, patches }: Frame) {
   return fc.oneof(byKernel, fc.constant(shares));
 }
 
+function outcomesIn({ classes, patches }: Frame) {
+  const last = classes.at(-1) ?? '';
+  const of = fc.constantFrom<string[] | 'all' | Record<string, number>>([last], 'all', { [last]: 0.5 });
+  const counted = fc.constantFrom('as a whole' as const, 'in each patch' as const, 'in any patch' as const);
+  const asked = { of, counted, in: fc.constant(patches.slice(0, 2)), for: fc.constant('1 year') };
+  return fc.record({
+    'few #1': fc.record({ ...asked, below: fc.integer({ min: 1, max: 9 }) }),
+    many: fc.record({ ...asked, above: fc.integer({ min: 0, max: 90 }) }),
+    fallen: fc.record({ of, 'fallen-by': fc.constantFrom('50 %', 0.9) }),
+  });
+}
+
 function specIn(frame: Frame): fc.Arbitrary<Spec> {
   const { patches, classes } = frame;
   const place = fc.integer({ min: 0, max: 30 });
@@ -100,6 +112,12 @@ function specIn(frame: Frame): fc.Arbitrary<Spec> {
     counts: fc.constantFrom('females' as const, 'both sexes' as const),
     classes: fc.constant([...classes]),
     oldest: fc.constantFrom('open-ended' as const, 'terminal' as const),
+    duration: fc.record({
+      [classes[0] ?? '']: fc.record({
+        years: fc.integer({ min: 1, max: 6 }),
+        as: fc.constantFrom('fixed' as const, 'geometric' as const, 'expanded' as const),
+      }),
+    }),
     parameters: fc.record({ good: anyShare, brood: fc.record({ value: fc.constantFrom(2, '1 + good', '2.5') }) }),
     survival: byName(classes, anyRate),
     births: byName(classes, fc.constantFrom<number | string>('brood', 0.4, 'brood * cover', '2 * brood / 3')),
@@ -112,7 +130,7 @@ function specIn(frame: Frame): fc.Arbitrary<Spec> {
     crowding,
     start: fc.constant({ table: { [patches[0] ?? '']: { [classes.at(-1) ?? '']: 40 } } }),
     observed: fc.constant({ counts: { [patches[0] ?? '']: { 1999: 12, 2001: 31 } } }),
-    outcomes: fc.constant({ 'few #1': { of: [classes.at(-1) ?? ''], below: 5 } }),
+    outcomes: outcomesIn(frame),
     run: fc.record({ replicates: fc.integer({ min: 1, max: 9 }), seed: fc.maxSafeNat() }),
     named: dispersalIn(frame).map((roaming) => ({ roaming })),
   });

@@ -21,6 +21,7 @@ patches:
 counts: females
 classes: [newborn, yearling, adult]
 oldest: open-ended
+duration: { newborn: { years: 1, as: geometric }, yearling: { years: 2 * 2, as: fixed } }
 parameters:
   adult_survival:
     value: 0.74
@@ -62,6 +63,9 @@ start: { counted: { North fen: 120 }, of: [yearling, adult], rest: stable within
 outcomes:
   lost hares: { of: [adult], below: 40 }
   north empty: { of: all, in: [North fen], below: 0.5 }
+  recovered: { of: { yearling: 0.5, adult: 1 }, counted: in each patch, above: 20, for: 5 years }
+  halved: { of: [adult], fallen-by: 50 % }
+  alone: { of: all, lacking: one sex }
 observed: { counts: { North fen: { 2024: 71, 2025: 64 } }, of: [adult], error: 15 % }
 drivers: { values: { rain: { 2027: 0.8, 2028: 1.1 } }, future: repeat }
 run: { replicates: 2000, seed: 2026, draws: 200 }
