@@ -37,6 +37,9 @@ test('a spec that uses every key comes back', () => {
     counts: females
     classes: [newborn, yearling, adult]
     oldest: open-ended
+    duration:
+      newborn: { years: 1, as: geometric }
+      yearling: { years: 2 * 2, as: fixed }
     parameters:
       adult_survival:
         value: 0.74
@@ -179,6 +182,13 @@ test('a spec that uses every key comes back', () => {
     outcomes:
       lost hares: { of: [adult], below: 40 }
       north empty: { of: all, in: [North fen], below: 0.5 }
+      recovered:
+        of: { yearling: 0.5, adult: 1 }
+        counted: in each patch
+        above: 20
+        for: 5 years
+      halved: { of: [adult], fallen-by: 50 % }
+      alone: { of: all, lacking: one sex }
     run: { replicates: 2000, seed: 2026, draws: 200 }
     "
   `);
