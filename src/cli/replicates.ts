@@ -70,9 +70,10 @@ export async function withCrew<Done>(
 }
 
 function checked({ compiled, results }: FinishedRun, model: CompiledModel['model']): Omit<DoneReplicates, 'threads'> {
-  const asked = model.replicates.toLocaleString('en');
+  // Only where it is needed: the first number written so loads tables for a tenth of the start of a command.
+  const asked = (): string => model.replicates.toLocaleString('en');
   if (results === null) {
-    throw new Ending(exitCodes.work, `Stopped before the first of ${asked} replicates was finished.`);
+    throw new Ending(exitCodes.work, `Stopped before the first of ${asked()} replicates was finished.`);
   }
   const cutShort = (done: number, of: string, what: string, option: string): Ending => {
     const early =
@@ -91,7 +92,7 @@ function checked({ compiled, results }: FinishedRun, model: CompiledModel['model
   }
   const done = compiled.model.replicates;
   if (done === model.replicates && !stopped) return { compiled, results, cutShort: null };
-  return { compiled, results, cutShort: cutShort(done, asked, 'replicates', 'replicates') };
+  return { compiled, results, cutShort: cutShort(done, asked(), 'replicates', 'replicates') };
 }
 
 function drawsAsked({ draws, uncertainty }: CompiledModel['model']): number {

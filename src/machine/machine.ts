@@ -12,6 +12,10 @@ export function loadMachine(): Machine {
   return instantiate(kernelModule);
 }
 
+/** Letter by letter: made from an iterator, it would take a good part of the start of a command. */
 function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
-  return Uint8Array.from(atob(base64), (letter) => letter.charCodeAt(0));
+  const letters = atob(base64);
+  const bytes = new Uint8Array(letters.length);
+  for (let i = 0; i < bytes.length; i++) bytes[i] = letters.charCodeAt(i);
+  return bytes;
 }

@@ -7,12 +7,14 @@ import { compareAnimals } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
 import { compareLifeCycles, compareSweep } from './many.ts';
 import type { Comparison, Options } from './options.ts';
+import { comparePaths } from './path.ts';
 import { plotScaling } from './plot.ts';
 import { measureScaling } from './scaling.ts';
 import { measureStart, measureThreads } from './start.ts';
 import { missingTools, work } from './tools.ts';
 
 const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = {
+  w1: (options) => ({ ...comparePaths(options), floors: { 'C, same width': 1.5, 'C, widest': 0.7, NumPy: 10 } }),
   w3: (options) => ({
     ...compareAnimals('w3', options),
     floors: { 'C, same width': 0.95, 'C, widest': 0.5, NumPy: 3.5 },
