@@ -126,6 +126,36 @@ const Draws = Type.Object({
   ),
 });
 
+const Criterion = Type.Object(
+  {
+    outcome: part.text('The outcome that nobody is left anywhere.'),
+    generationLength: part.number('Mean age of mothers in the stable population near zero, in years.'),
+    windows: Type.Array(
+      Type.Object({
+        category: part.text('Whose threshold it is.'),
+        years: part.whole('Within these.'),
+        chance: part.share('Of extinction, at least.'),
+        found: part.orNull(
+          Type.Object({
+            probability: part.maybeShare('Of extinction within these years.'),
+            lower: part.maybeShare('Lower edge of the band.'),
+            upper: part.maybeShare('Upper edge.'),
+          }),
+        ),
+        says: Type.Union([
+          Type.Literal('consistent with'),
+          Type.Literal('not consistent with'),
+          Type.Literal('undecided'),
+          Type.Literal('looks less far ahead'),
+        ]),
+      }),
+    ),
+  },
+  {
+    description: 'Windows of criterion E of the IUCN Red List; never a listing. Absent where no outcome is extinction.',
+  },
+);
+
 const Rare = Type.Object({
   outcome: part.text("The author's name."),
   definition: part.text('In words, from the rule itself.'),
@@ -189,6 +219,7 @@ export const RunSchema = Type.Object({
     Type.Literal(true, { description: 'The model says how sure its numbers are, but no draws were asked for.' }),
   ),
   precision: Type.Optional(Precision),
+  criterionE: Type.Optional(Criterion),
   rare: Type.Optional(Type.Array(Rare, { description: 'By splitting; absent where it was not asked for.' })),
   draws: Type.Optional(Draws),
   stopped: Type.Object({

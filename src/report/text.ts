@@ -5,6 +5,7 @@ import { answer, finished, lastYear } from './answer.ts';
 import { handledWords } from './handled-words.ts';
 import { outsideWords } from './section/counted.ts';
 import { lowestWords } from './lowest-words.ts';
+import { criterionWords } from './criterion-words.ts';
 import { rareWords } from './rare-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { whenWords } from './when-words.ts';
@@ -24,6 +25,9 @@ export function runText(results: RunResults, style: RunTextStyle): string {
       text === null ? '' : wrap(text, style),
     ),
     outcomeTable(results, style),
+    criterionWords(results)
+      .map((text) => wrap(text, style))
+      .join('\n'),
     rareWords(results)
       .map((text) => wrap(text, style))
       .join('\n'),

@@ -120,6 +120,25 @@ export interface Sketched {
   readonly relativeError: number;
 }
 
+/** One window of criterion E of the IUCN Red List, and what a run says of it; never a listing. */
+export interface CriterionWindow {
+  readonly category: 'Critically Endangered' | 'Endangered' | 'Vulnerable';
+  readonly years: number;
+  /** Of extinction within these years, at least. */
+  readonly chance: number;
+  /** With the band that holds for the whole curve; null where the run looks less far ahead. */
+  readonly found: { readonly probability: number; readonly lower: number; readonly upper: number } | null;
+  readonly says: 'consistent with' | 'not consistent with' | 'undecided' | 'looks less far ahead';
+}
+
+export interface CriterionE {
+  /** The outcome that nobody is left anywhere. */
+  readonly outcome: string;
+  /** Mean age of mothers in the stable population near zero, in years. */
+  readonly generationLength: number;
+  readonly windows: readonly CriterionWindow[];
+}
+
 /** The chance of an outcome by splitting, for those too rare for plain runs; or why there is none. */
 export interface RareResult {
   readonly outcome: string;
@@ -198,6 +217,8 @@ export interface RunResults {
   readonly sketched: readonly Sketched[];
   /** Where the model says how sure its numbers are, but no draws were asked for. */
   readonly notDrawn?: true;
+  /** Absent where no outcome is that nobody is left anywhere. */
+  readonly criterionE?: CriterionE;
   /** One an outcome; absent where it was not asked for. */
   readonly rare?: readonly RareResult[];
   /** Absent where no precision was asked for. */

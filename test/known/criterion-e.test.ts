@@ -1,0 +1,58 @@
+// Windows of criterion E of the IUCN Red List (2012, version 3.1; thresholds from memory), and what a run says of them.
+import { expect, test } from 'vitest';
+import { criterionE, criterionWindows } from '../../src/analysis/criterion-e.ts';
+import { runModel } from '../../src/pipeline.ts';
+import { criterionWords } from '../../src/report/criterion-words.ts';
+import { compileText } from '../pipeline/compile-text.ts';
+import { framed } from '../pipeline/frame.ts';
+
+test.each([
+  [2, [10, 20, 100]],
+  [4, [12, 20, 100]],
+  [10, [30, 50, 100]],
+  [25, [75, 100, 100]],
+  [40, [100, 100, 100]],
+])('a generation of %d years has the windows %j', (generation, years) => {
+  const windows = criterionWindows(generation);
+  expect(windows.map((one) => one.years)).toEqual(years);
+  expect(windows.map((one) => one.chance)).toEqual([0.5, 0.2, 0.1]);
+});
+
+/** Young are born once a year and all animals live on with the same survival: a generation of 1 / (1 − 0.6) years or so. */
+const text = (outcome: string, years = 40): string =>
+  framed(
+    `classes: [young, adult]
+oldest: open-ended
+survival: { young: 0.4, adult: 0.6 }
+births: { adult: 0.7 }
+year: [count, breeding, survival, ageing]
+start: { table: { Meadow: { adult: 12 } } }
+outcomes: { gone: ${outcome} }
+run: { replicates: 400, seed: 3 }
+`,
+    { years },
+  );
+
+test('a run says what its chances are consistent with, and where it looks less far ahead', () => {
+  const compiled = compileText(text('{ of: all, below: 1 }'));
+  const results = runModel(compiled);
+  const found = criterionE(compiled, results)!;
+  expect(found.generationLength).toBeGreaterThan(1);
+  expect(found.windows.map(({ says }) => says)).toEqual([
+    'not consistent with',
+    'consistent with',
+    'looks less far ahead',
+  ]);
+  const [first] = found.windows;
+  expect(first!.found!.probability).toBe(results.outcomes[0]!.byYear[first!.years - 1]!.ever);
+  const words = criterionWords({ criterionE: found }).join(' ');
+  expect(words).toContain('consistent with the threshold of Endangered');
+  expect(words).not.toMatch(/is listed as (?:Critically|Endangered|Vulnerable)/u);
+});
+
+test('other outcomes are no extinction', () => {
+  for (const outcome of ['{ of: [adult], below: 1 }', '{ of: all, below: 5 }', '{ of: all, below: 1, for: 3 years }']) {
+    const compiled = compileText(text(outcome));
+    expect(criterionE(compiled, runModel(compiled))).toBeNull();
+  }
+});
