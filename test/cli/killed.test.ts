@@ -1,6 +1,6 @@
 // Killed at any moment, an output folder holds whole files or none of that name.
 import { spawn } from 'node:child_process';
-import { readFileSync, watch } from 'node:fs';
+import { mkdirSync, readFileSync, rmSync, watch } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
 import { filesIn, folder, root, skein } from './skein.ts';
@@ -31,6 +31,27 @@ function killAfter(changes: number, cwd: string): Promise<boolean> {
   });
 }
 
+test('killed at any moment, a new folder holds whole files or none of that name', async () => {
+  const cwd = folder();
+  expect(skein([...words(2), '--quiet', '--out', 'whole'], { cwd }).code).toBe(0);
+  const names = filesIn(join(cwd, 'whole'));
+  const held: number[] = [];
+  for (const changes of [1, 6, 20, 32, 38, 44]) {
+    rmSync(join(cwd, 'out'), { recursive: true, force: true });
+    mkdirSync(join(cwd, 'out'));
+    await killAfter(changes, cwd);
+    const found = filesIn(join(cwd, 'out')).filter((name) => !name.endsWith('.tmp'));
+    expect(names).toEqual(expect.arrayContaining(found));
+    for (const name of found.filter((one) => one !== 'log.json')) {
+      const [out, whole] = ['out', 'whole'].map((where) => readFileSync(join(cwd, where, name)));
+      expect(out?.equals(whole ?? Buffer.of()), name).toBe(true);
+    }
+    held.push(found.length);
+  }
+  // Some were killed before the first name was given.
+  expect(held.filter((count) => count === 0).length).toBeGreaterThan(1);
+}, 180_000);
+
 test('killed at any moment, every file is whole', async () => {
   const cwd = folder();
   const read = (where: string, name: string): Buffer => readFileSync(join(cwd, where, name));
@@ -55,4 +76,4 @@ test('killed at any moment, every file is whole', async () => {
     expect(log).toMatchObject({ format: 'skein-log/1', command: 'run', threads: 1, version: '0.1.0' });
   }
   expect(killed).toBeGreaterThan(2);
-});
+}, 180_000);
