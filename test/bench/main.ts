@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { compareAnimals } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
+import { measureLarge } from './large.ts';
 import { compareLifeCycles, compareSweep } from './many.ts';
 import type { Comparison, Options } from './options.ts';
 import { comparePaths } from './path.ts';
@@ -23,7 +24,7 @@ const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = 
   lifecycles: compareLifeCycles,
   sweep: compareSweep,
 };
-const others = ['flagship', 'start', 'threads', 'scaling'];
+const others = ['flagship', 'start', 'threads', 'large', 'scaling'];
 
 const { values, positionals } = parseArgs({
   allowPositionals: true,
@@ -73,6 +74,15 @@ if (chosen.has('threads')) {
   report['threads'] = gains;
   for (const [name, gain] of Object.entries(gains))
     console.log(`Two threads against one, ${name.toUpperCase()}: ${gain.toFixed(2)} times, aim 1.9`);
+}
+if (chosen.has('large')) {
+  const large = measureLarge(options);
+  report['large'] = large;
+  const { seconds, memory, memoryReplicates, page } = large;
+  console.log(
+    `400 patches x 6 classes x 100 years: 100 replicates in two threads ${seconds.toFixed(1)} s, aim 5; ` +
+      `${memoryReplicates} replicates with quantiles ${memory.toFixed(0)} MB, aim 300; page ${page.toFixed(2)} MB, aim 5`,
+  );
 }
 if (chosen.has('scaling')) {
   const scaling = measureScaling(options);

@@ -5,7 +5,7 @@ import { drawChance } from '../../view/chance.ts';
 import type { ReportView } from '../../view/contract.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { decimal, plain, whole } from '../../view/number.ts';
-import { pick } from '../../view/series.ts';
+import { largest, pick } from '../../view/series.ts';
 import { drawSmallFan } from '../../view/small-fan.ts';
 import { drawTable, type Row, type Table } from '../../view/table.ts';
 import { countedPart } from './counted.ts';
@@ -41,18 +41,37 @@ ${view.outcomes.length > 1 ? one : both('chance', draw)}</figure>`;
 }
 
 export function abundanceSection(view: ReportView, results: RunResults): Markup {
+  const shown = mostAnimals(view);
   const fan = both('fan', (size) => drawAbundance(view, null, sizes.fan[size]));
   return section(
     'abundance',
     'Abundance by year',
     mark`<figure class="chart">${fan}<figcaption>The line is the middle of ${plain(view.futures)} futures in each year; no
 single future follows it. Single futures swing more than the bands.</figcaption></figure>
-<h3>Patch by patch</h3><p>Each patch has its own scale; the number at its top right is the upper end.</p>
-<div class="smalls">${view.patches.map((_, p) => smallFan(view, p))}</div>
+<h3>Patch by patch</h3><p>Each patch has its own scale; the number at its top right is the upper end.${leftOut(view, shown)}</p>
+<div class="smalls">${shown.map((p) => smallFan(view, p))}</div>
 ${countedPart(view, results.observed)}
 ${folded('Abundance by year as a table', yearTable(view, results))}
-${folded('The middle of each patch by year as a table', patchTable(view))}`,
+${folded('The middle of each patch by year as a table', patchTable(view, shown))}`,
   );
+}
+
+/** More would make the page too heavy to open. */
+const mostPatches = 400;
+
+/** Indices of the patches that are shown one by one, in the order of the model: all, or those with the most animals. */
+function mostAnimals({ patches }: ReportView): readonly number[] {
+  const all = [...patches.keys()];
+  if (all.length <= mostPatches) return all;
+  const most = patches.map(({ fan: { mean } }) => largest(mean));
+  const ranked = all.toSorted((a, b) => pick(most, b) - pick(most, a) || a - b);
+  return ranked.slice(0, mostPatches).sort((a, b) => a - b);
+}
+
+function leftOut({ patches }: ReportView, shown: readonly number[]): string {
+  if (shown.length === patches.length) return '';
+  return ` These are the ${plain(shown.length)} of ${plain(patches.length)} patches with the most animals in the mean; all others stand in
+the tables that --out writes.`.replaceAll('\n', ' ');
 }
 
 function smallFan(view: ReportView, p: number): Markup {
@@ -81,10 +100,10 @@ function yearTable(view: ReportView, results: RunResults): Table {
   return { caption: `All patches (${view.animals})`, head, rows };
 }
 
-function patchTable(view: ReportView): Table {
+function patchTable(view: ReportView, shown: readonly number[]): Table {
   const rows = view.years.map((year, i): Row => {
-    return [String(year), ...view.patches.map((patch) => whole(pick(patch.fan.median, i)))];
+    return [String(year), ...shown.map((p) => whole(pick(pick(view.patches, p).fan.median, i)))];
   });
-  const head = ['year', ...view.patches.map((patch) => patch.name)];
+  const head = ['year', ...shown.map((p) => pick(view.patches, p).name)];
   return { caption: `Middle future in each patch (${view.animals})`, head, rows };
 }

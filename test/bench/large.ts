@@ -1,0 +1,52 @@
+// How long and how large: a landscape of 400 patches and six classes over a hundred years, as whole commands.
+import { spawnSync } from 'node:child_process';
+import { mkdirSync, statSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { largeModel } from '../large/landscape.ts';
+import { median } from './measure.ts';
+import type { Options } from './options.ts';
+import { work } from './tools.ts';
+
+export interface LargeFigures {
+  /** Wall-clock seconds of 100 replicates in two threads, start and reading included. */
+  readonly seconds: number;
+  /** The most memory that a run with quantiles for each patch and year takes, in MB, of so many replicates. */
+  readonly memory: number;
+  readonly memoryReplicates: number;
+  /** Of the report, in MB. */
+  readonly page: number;
+}
+
+const skein = join('bin', 'skein.mjs');
+const telling = 'process.on("exit",()=>process.stderr.write(`maxRSS ${process.resourceUsage().maxRSS}\\n`))';
+
+export function measureLarge({ quick, rounds }: Options): LargeFigures {
+  const folder = join(work, 'large');
+  mkdirSync(folder, { recursive: true });
+  const model = join(folder, 'model.yaml');
+  const { text, patches } = largeModel({ patches: 400, classes: 6 });
+  writeFileSync(model, text);
+  writeFileSync(join(folder, 'patches.geojson'), patches);
+  const run = (replicates: number): readonly string[] => {
+    return ['run', model, '--years', '100', '--replicates', String(replicates), '--threads', '2', '--quiet'];
+  };
+  const seconds = Array.from({ length: rounds }, () => {
+    const began = performance.now();
+    command(run(100));
+    return (performance.now() - began) / 1000;
+  });
+  const memoryReplicates = quick ? 1000 : 10_000;
+  const told = command(run(memoryReplicates));
+  const page = join(folder, 'page.html');
+  command(['report', model, '--years', '100', '--quiet', '-o', page]);
+  const kilobytes = Number(/maxRSS (\d+)/.exec(told)?.[1] ?? NaN);
+  return { seconds: median(seconds), memory: kilobytes / 1024, memoryReplicates, page: statSync(page).size / 1e6 };
+}
+
+/** What it says on standard error. */
+function command(words: readonly string[]): string {
+  const inside = ['--import', `data:text/javascript,${encodeURIComponent(telling)}`, skein];
+  const { status, stderr } = spawnSync(process.execPath, [...inside, ...words], { encoding: 'utf8', maxBuffer: 1e9 });
+  if (status !== 0) throw new Error(`skein ${words.join(' ')} failed: ${stderr}`);
+  return stderr;
+}
