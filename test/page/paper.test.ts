@@ -39,11 +39,14 @@ describe('the report on paper', () => {
   });
 
   it('keeps the summary on two sheets with eight outcomes: four of them first, three curves, and all others behind', async () => {
-    const more = ['adult', 'yearling', 'newborn', '[yearling, adult]', 'all'].map(
+    const more = ['adult', 'yearling', 'newborn', 'all'].map(
       (of, k) =>
         `  another outcome of this model, number ${k + 4}: { of: ${of.startsWith('[') ? of : `[${of}]`}, below: ${30 + k} }\n`,
     );
-    const text = modelText('reed-hare').replace('\nrun: {', `${more.join('').replace('[all]', 'all')}\nrun: {`);
+    const text = modelText('reed-hare').replace(
+      '\noutcomes:\n',
+      `\noutcomes:\n${more.join('').replace('[all]', 'all')}`,
+    );
     const compiled = compileText(text, { replicates: 64 });
     expect(compiled.model.outcomes.length).toBe(8);
     const { page, close } = await open(browser, reportOf(compiled, { pageScript: await pageScript() }));
