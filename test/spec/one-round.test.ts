@@ -61,7 +61,7 @@ describe('what is cut out is not missed', () => {
   });
 
   test('a patch without a sense', () => {
-    expect(told(['{ name: Holm, capacity: 20 }', '{ name: Holm, capacity: few }']).map(([, code]) => code)).toEqual([
+    expect(told(['{ name: Holm, capacity: 20 }', '{ name: Holm, at: here }']).map(([, code]) => code)).toEqual([
       'wrong-type',
     ]);
   });
