@@ -9,6 +9,7 @@ import { measureLarge } from './large.ts';
 import { compareLifeCycles, compareSweep } from './many.ts';
 import type { Comparison, Options } from './options.ts';
 import { comparePaths } from './path.ts';
+import { measurePlans } from './plans.ts';
 import { plotScaling } from './plot.ts';
 import { measureScaling } from './scaling.ts';
 import { measureStart, measureThreads } from './start.ts';
@@ -24,7 +25,7 @@ const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = 
   lifecycles: compareLifeCycles,
   sweep: compareSweep,
 };
-const others = ['flagship', 'start', 'threads', 'large', 'scaling'];
+const others = ['flagship', 'plans', 'start', 'threads', 'large', 'scaling'];
 
 const { values, positionals } = parseArgs({
   allowPositionals: true,
@@ -61,6 +62,15 @@ if (chosen.has('flagship')) {
   console.log(
     `The flagship, 1000 replicates of 50 years: compiled in ${ms(times.compile)}, run in ${ms(times.run)}, whole command ${ms(times.command)}`,
   );
+}
+if (chosen.has('plans')) {
+  const plans = await measurePlans(options);
+  report['plans'] = plans;
+  for (const { plans: names, difference, common, apart, fewest, milliseconds } of plans) {
+    console.log(
+      `${names}: ${(difference * 100).toFixed(1)} points apart, known to one point with ${common} futures each in ${ms(milliseconds)} of processor time; with chance of their own ${apart} (${(apart / common).toFixed(1)} times as many, at best ${(apart / fewest).toFixed(1)})`,
+    );
+  }
 }
 if (chosen.has('start')) {
   const { nothing, help, smallest } = measureStart(options);
