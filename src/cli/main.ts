@@ -83,7 +83,8 @@ function addSweep(program: Command): void {
     .argument('<folder>', 'the folder of a whole sweep')
     .description('say what matters most, and how each measure answers each number')
     .option('--json', 'print one JSON object instead of text')
-    .addHelpText('after', '\nExample:\n  skein sweep summary sweep')
+    .option('--page <file>', 'write it as one HTML page with response curves, maps over two numbers and bars')
+    .addHelpText('after', '\nExample:\n  skein sweep summary sweep --page sweep.html')
     .action(run(async () => (await import('./command/sweep-summary.ts')).summariseFolder));
 }
 

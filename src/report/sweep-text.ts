@@ -134,7 +134,8 @@ function bandText({ lower, upper }: { readonly lower: number; readonly upper: nu
   return `${two(lower)} to ${two(upper)}`;
 }
 
-function numberText(value: number, unit: string): string {
+/** A number of a measure, for readers. */
+export function numberText(value: number, unit: string): string {
   if (unit === differenceOfShares) return `${(100 * value).toFixed(1).replace(/^-0\.0$/u, '0.0')} points`;
   return unit === 'share'
     ? percent(value)
@@ -147,6 +148,7 @@ function two(value: number): string {
   return value.toFixed(2).replace(/^-0\.00$/u, '0.00');
 }
 
-function three(value: number): string {
+/** Four digits that count. */
+export function three(value: number): string {
   return String(Number(value.toPrecision(4)));
 }

@@ -231,6 +231,11 @@ test('scenarios are set beside each other in the same futures, and which is best
   const animals = rankings.find(({ quantity }) => quantity === 'animals');
   expect(animals?.scenarios.map(({ name }) => name)).toEqual(['as now', 'larger bank', 'safe ford']);
   expect(animals?.scenarios.reduce((sum, { best }) => sum + best, 0)).toBeCloseTo(1, 12);
+  const page = skein(['sweep', 'summary', 'out', '--page', 'page.html'], { cwd });
+  expect(page).toMatchObject({ code: 0, err: '' });
+  const html = readFileSync(join(cwd, 'page.html'), 'utf8');
+  expect(html).toContain('<h2>Which plan is best by animals</h2><figure><svg');
+  expect(html).toMatch(/<script>\s*<\/script>/);
   const drowned = animals?.factors.find(({ name }) => name === 'drowned');
   expect(drowned?.switches).toEqual([expect.objectContaining({ from: 'larger bank', to: 'safe ford' })]);
 });

@@ -1,7 +1,9 @@
 // skein sweep summary: what a whole sweep says.
+import { sweepPage } from '../../report/sweep-page.ts';
 import { sweepText } from '../../report/sweep-text.ts';
 import { summariseSweep } from '../../sweep/summary/summarise.ts';
 import { Ending, exitCodes } from '../exit.ts';
+import { pendingFile } from '../files.ts';
 import { writeOut } from '../output.ts';
 import { missingWords } from '../sweep/missing.ts';
 import { openSweep } from '../sweep/opened.ts';
@@ -11,13 +13,18 @@ import { terminalOf } from '../terminal.ts';
 
 export interface SummaryOptions {
   readonly json?: boolean;
+  /** An HTML file to write. */
+  readonly page?: string;
 }
 
-export async function summariseFolder(folder: string, { json }: SummaryOptions): Promise<void> {
+export async function summariseFolder(folder: string, { json, page }: SummaryOptions): Promise<void> {
   const { manifest } = openSweep(folder);
   const missing = missingWords(manifest.parts, finishedParts(folder));
   if (missing !== null) throw new Ending(exitCodes.work, `The sweep in ${folder} is not whole: ${missing}.`);
-  const summary = summariseSweep(await readSwept(folder, manifest));
+  const file = page === undefined ? null : pendingFile(page);
+  const swept = await readSwept(folder, manifest);
+  const summary = summariseSweep(swept);
+  file?.finish(sweepPage(swept, summary));
   if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
   else writeOut(`${sweepText(summary, terminalOf(process.stdout)).trimEnd()}\n`);
 }

@@ -14,7 +14,7 @@ export interface RankingGroup {
   readonly points: number;
   /** By scenario, the share of these points at which it is best; what is equal shares the point. */
   readonly best: readonly number[];
-  /** Best in the mean over these points. */
+  /** Best in the mean over these points; `equal` where several are. */
   readonly preferred: string;
 }
 
@@ -113,7 +113,9 @@ function factorRanking(name: string, values: Float64Array | readonly string[], r
   const groups = groupsOf(values, rows).map((own): RankingGroup => {
     const [first = 0, last = first] = [own[0], own.at(-1)];
     const means = worst.map((one) => own.reduce((sum, row) => sum + (one[row] ?? 0), 0));
-    const preferred = scenarios[means.indexOf(Math.min(...means))]?.name ?? '';
+    const least = Math.min(...means);
+    const equal = means.filter((mean) => mean === least).length > 1;
+    const preferred = equal ? 'equal' : (scenarios[means.indexOf(least)]?.name ?? '');
     return {
       from: values[first] ?? NaN,
       to: values[last] ?? NaN,

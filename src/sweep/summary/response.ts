@@ -19,7 +19,7 @@ export interface Response {
 }
 
 const mostValues = 60;
-const slices = 20;
+const usualSlices = 20;
 
 export interface RowsAsked {
   readonly rows: readonly number[];
@@ -45,6 +45,7 @@ export function responseTo(
 export function groupsOf(
   values: Float64Array | readonly string[],
   rows: readonly number[],
+  slices = usualSlices,
 ): readonly (readonly number[])[] {
   const byValue = new Map<Value, number[]>();
   for (const row of rows) {
@@ -52,14 +53,18 @@ export function groupsOf(
     const own = byValue.get(value);
     if (own !== undefined) own.push(row);
     else if (byValue.size < mostValues) byValue.set(value, [row]);
-    else return slicesOf(values, rows);
+    else return slicesOf(values, rows, slices);
   }
   const all = [...byValue.entries()];
   if (values instanceof Float64Array) all.sort(([a], [b]) => Number(a) - Number(b));
   return all.map(([, own]) => own);
 }
 
-function slicesOf(values: Float64Array | readonly string[], rows: readonly number[]): readonly (readonly number[])[] {
+function slicesOf(
+  values: Float64Array | readonly string[],
+  rows: readonly number[],
+  slices: number,
+): readonly (readonly number[])[] {
   const sorted = rows.toSorted((a, b) => Number(values[a]) - Number(values[b]));
   return Array.from({ length: slices }, (_, s) =>
     sorted.slice(Math.round((s * sorted.length) / slices), Math.round(((s + 1) * sorted.length) / slices)),

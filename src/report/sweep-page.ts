@@ -1,0 +1,143 @@
+// What a sweep says as one page: what matters most, how each measure answers each number, and where growth goes through 1 or the
+// preferred plan changes. It has no script, and its tables hold what the figures show.
+import { heatMaps, preferredMaps, type HeatAxis, type HeatMap, type PreferredMap } from '../sweep/summary/heat.ts';
+import type { FactorSummary, QuantitySummary, SweepSummary } from '../sweep/summary/summarise.ts';
+import type { Swept } from '../sweep/summary/swept.ts';
+import { mark, type Markup } from '../view/markup.ts';
+import { percent } from '../view/number.ts';
+import { drawBars, type SensitivityBars } from '../view/sweep/bars.ts';
+import { drawCells, type Cell } from '../view/sweep/cell-map.ts';
+import { drawResponse } from '../view/sweep/response-curve.ts';
+import { writeDocument } from './document.ts';
+import { styleSheet } from './style.ts';
+import { numberText, three } from './sweep-text.ts';
+
+export function sweepPage(swept: Swept, summary: SweepSummary): string {
+  const maps = heatMaps(swept, summary);
+  const preferred = preferredMaps(swept, summary);
+  const { model, points, design, runs, assumptions, tool, hash } = summary;
+  const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years at each`;
+  const body = mark`<h1>${model}</h1>
+<p id="answer">${points.toLocaleString('en')} points (${design})${of}.</p>
+${preferred.map((map) => mark`<h2>Which plan is best by ${map.quantity}</h2>${preferredFigure(map)}`)}
+${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))}
+<h2>What these numbers take for granted</h2>
+<ul>${assumptions.map((text) => mark`<li>${text}</li>`)}</ul>
+<p>Rank plans rather than trust absolute risks. Moving or taking animals needs permits, the law of the place and qualified people.</p>`;
+  const foot = `skein ${tool.version}, kernel ${tool.kernel}, hash ${hash.slice(0, 12)}`;
+  return writeDocument({
+    title: `Sweep: ${model}`,
+    style: styleSheet(foot),
+    script: '',
+    data: null,
+    body: mark`${body}<p>${foot}</p>`,
+  });
+}
+
+function quantitySection(quantity: QuantitySummary, summary: SweepSummary, maps: readonly HeatMap[]): Markup | null {
+  const { name, unit, meaning, least, greatest, mean, factors, orderedBy } = quantity;
+  if (!Number.isFinite(least)) return null;
+  const write = (value: number): string => numberText(value, unit);
+  const bars = barsOf(quantity, summary);
+  const map = maps.find((one) => one.quantity === name);
+  return mark`<section><h2>${name}</h2>
+<p>${meaning} From ${write(least)} to ${write(greatest)}, ${write(mean)} in the mean.</p>
+${bars === null ? null : mark`<h3>What matters most</h3><figure>${drawBars(bars)}</figure>`}
+${map === undefined ? null : mark`<h3>Over two numbers</h3><figure>${heatFigure(map, write)}</figure>`}
+<h3>Over one number</h3><div>${factors.map((factor) => responseFigure(factor, name, write))}</div>
+<details><summary>The same as a table, by ${orderedBy}</summary>${responseTable(factors, write)}</details></section>`;
+}
+
+function barsOf({ name, factors, orderedBy }: QuantitySummary, { design }: SweepSummary): SensitivityBars | null {
+  const bars = factors.flatMap((factor): SensitivityBars['bars'] => {
+    const { shares, screen, response } = factor;
+    if (shares !== null) return [bar(factor, shares.total, shares.totalBand, percentOf(shares.total))];
+    if (screen !== null) {
+      const band = {
+        lower: screen.meanSize - 2 * screen.standardError,
+        upper: screen.meanSize + 2 * screen.standardError,
+      };
+      return [bar(factor, screen.meanSize, band, three(screen.meanSize))];
+    }
+    if (design === 'one at a time' || response.explained === null) return [];
+    return [bar(factor, response.explained, null, percentOf(response.explained))];
+  });
+  return bars.length === 0 ? null : { title: `What matters most for ${name}`, by: orderedBy, bars };
+}
+
+type Bar = SensitivityBars['bars'][number];
+
+function bar({ name }: FactorSummary, value: number, band: Bar['band'], words: string): Bar {
+  return { name, value, band, words };
+}
+
+function percentOf(share: number): string {
+  return percent(Math.min(1, Math.max(0, share)));
+}
+
+function responseFigure(
+  { name, response }: FactorSummary,
+  measure: string,
+  write: (value: number) => string,
+): Markup | null {
+  const points = response.groups.flatMap(({ from, to, mean, lower, upper }) =>
+    typeof from === 'number' && typeof to === 'number' ? [{ at: (from + to) / 2, mean, lower, upper }] : [],
+  );
+  if (points.length < 2) return null;
+  const level = measure.startsWith('growth') && !measure.includes(' less ') ? 1 : null;
+  return drawResponse({ measure, number: name, points, level, write });
+}
+
+function responseTable(factors: readonly FactorSummary[], write: (value: number) => string): Markup {
+  const rows = factors.flatMap(({ name, response }) =>
+    response.groups.map(
+      ({ from, to, points, mean, lower, upper }) =>
+        mark`<tr><th scope="row">${name}</th><td>${rangeText([from, to])}</td><td>${String(points)}</td><td>${write(mean)}</td><td>${write(lower)} to ${write(upper)}</td></tr>`,
+    ),
+  );
+  return mark`<table><thead><tr><th>number</th><th>value</th><th>points</th><th>mean</th><th>middle 90 %</th></tr></thead><tbody>${rows}</tbody></table>`;
+}
+
+function rangeText([from, to]: HeatAxis['groups'][number]): string {
+  const short = (value: number | string): string => (typeof value === 'number' ? three(value) : value);
+  return from === to ? short(from) : `${short(from)} to ${short(to)}`;
+}
+
+function axisOf({ name, groups }: HeatAxis) {
+  return { name, labels: groups.map(rangeText) };
+}
+
+function heatFigure({ quantity, x, y, cells }: HeatMap, write: (value: number) => string): Markup {
+  const known = cells.filter((value) => !Number.isNaN(value));
+  const [least, most] = [Math.min(...known), Math.max(...known)];
+  const growth = quantity.startsWith('growth') && !quantity.includes(' less ');
+  const drawn = Array.from(cells, (value): Cell | null =>
+    Number.isNaN(value)
+      ? null
+      : {
+          shade: most > least ? (value - least) / (most - least) : 0,
+          words: write(value),
+          side: growth && value < 1 ? 0 : 1,
+        },
+  );
+  const line = growth ? ' The line is where growth goes through 1.' : '';
+  const description = `From ${write(least)} (light) to ${write(most)} (dark), the other numbers taken together.${line}`;
+  return drawCells({
+    title: `${quantity} over ${x.name} and ${y.name}`,
+    description,
+    x: axisOf(x),
+    y: axisOf(y),
+    cells: drawn,
+  });
+}
+
+function preferredFigure({ quantity, scenarios, x, y, cells }: PreferredMap): Markup {
+  const drawn = Array.from(cells, (best): Cell | null => {
+    if (best === -1) return null;
+    if (best < 0) return { shade: 0, words: 'equal', side: best };
+    return { shade: (0.2 + 0.6 * best) / Math.max(1, scenarios.length - 1), words: scenarios[best] ?? '', side: best };
+  });
+  const description =
+    'Each cell names the plan that is best in the mean there, or that several are equal; the line is where the preferred plan changes.';
+  return mark`<figure>${drawCells({ title: `Best by ${quantity}`, description, x: axisOf(x), y: axisOf(y), cells: drawn })}</figure>`;
+}
