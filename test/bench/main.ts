@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { compareAnimals } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
+import { measureLargest, measureLosses } from './landscapes.ts';
 import { measureLarge } from './large.ts';
 import { compareLifeCycles, compareSweep } from './many.ts';
 import type { Comparison, Options } from './options.ts';
@@ -25,7 +26,7 @@ const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = 
   lifecycles: compareLifeCycles,
   sweep: compareSweep,
 };
-const others = ['flagship', 'plans', 'start', 'threads', 'large', 'scaling'];
+const others = ['flagship', 'plans', 'start', 'threads', 'large', 'landscapes', 'scaling'];
 
 const { values, positionals } = parseArgs({
   allowPositionals: true,
@@ -105,6 +106,18 @@ if (chosen.has('scaling')) {
   mkdirSync(work, { recursive: true });
   writeFileSync(join(work, 'scaling.svg'), plotScaling(scaling));
   console.log(`The plot: ${join(work, 'scaling.svg')}`);
+}
+
+if (chosen.has('landscapes')) {
+  const [losses, largest] = [measureLosses(options), measureLargest(options)];
+  report['landscapes'] = { losses, largest };
+  console.log(
+    `${losses.patches} patches of 8 classes: all losses (${losses.links} links; ${losses.exact} losses exact) in ${losses.seconds.toFixed(1)} s, aim 5`,
+  );
+  console.log(
+    `${largest.patches} patches of 8 classes: read ${largest.read.toFixed(1)} s, compiled ${largest.compile.toFixed(1)} s, checked ${largest.check.toFixed(1)} s in all; ` +
+      `growth and both vectors ${largest.vectors.toFixed(1)} s, aim 10`,
+  );
 }
 
 report['missing'] = missingTools();
