@@ -71,7 +71,7 @@ function names(sheet: Sheet): Markup {
 
 function foot({ view, width, height, placing }: Sheet): Markup {
   const moved = view.places === 'shifted' ? 'places moved · ' : '';
-  const origin = `${moved}${fitText(view.title, 11, width * 0.4)} · ${view.hash.slice(0, 8)}`;
+  const origin = `${fitText(`${moved}${view.title}`, 11, width * 0.4)} · ${view.hash.slice(0, 8)}`;
   const stamp = mark`<text x="${width - 14}" y="${height - 13}" font-size="11" text-anchor="end" fill="${softInk}">${origin}</text>`;
   if (placing.pixelsPerKm !== null) {
     return mark`${stamp}${scaleBar(placing.pixelsPerKm, 18, height - 30, Math.min(150, width * 0.26))}`;
