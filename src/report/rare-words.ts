@@ -24,6 +24,5 @@ function range({ lower, upper }: { readonly lower: number; readonly upper: numbe
 function oneIn(chance: number): string {
   if (chance > 0.05) return `${percent(chance)} of futures`;
   const many = 1 / chance;
-  const digits = 10 ** Math.max(0, Math.floor(Math.log10(many)) - 2);
-  return `1 future in ${plain(Math.round(many / digits) * digits)}`;
+  return `1 future in ${plain(many < 100 ? Math.round(many) : Number(many.toPrecision(3)))}`;
 }
