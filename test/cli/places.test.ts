@@ -15,6 +15,8 @@ function study(): string {
     cpSync(join(root, 'models', name), join(cwd, name), { recursive: true });
   const map = join(cwd, 'dune-toad/slacks.geojson');
   writeFileSync(map, readFileSync(map, 'utf8').replaceAll('"properties": {', '"properties": { "easting": 431277.25,'));
+  // A secret of its own, so that no digits of a moved place are those of a true one by chance.
+  writeFileSync(join(cwd, 'dune-toad.places-key'), `${'0123456789abcdef'.repeat(4)}\n`);
   appendFileSync(join(cwd, 'dune-toad.yaml'), '# The den lies at 431277.25, under the third dune.\n');
   return cwd;
 }

@@ -89,15 +89,15 @@ test('a value is found at its place, a key at its own', () => {
   expect(shown(locate(['patches', 0, 'area'], 'key'))).toEqual([16, 'area']);
   expect(shown(locate(['patches', 0, 'at', 1]))).toEqual([16, '9.1']);
   expect(shown(locate(['patches', 1, 'name']))).toEqual([17, 'Saltmarsh']);
-  expect(shown(locate(['natal', 'kernel', 'mean']))).toEqual([42, '4 km']);
-  expect(shown(locate(['named', 'natal', 'kernel', 'mean']))).toEqual([42, '4 km']);
-  expect(shown(locate(['demography', 'fates', 2, 1]))).toEqual([31, '"min(0.5, cover)"']);
+  expect(shown(locate(['natal', 'kernel', 'mean']))).toEqual([43, '4 km']);
+  expect(shown(locate(['named', 'natal', 'kernel', 'mean']))).toEqual([43, '4 km']);
+  expect(shown(locate(['demography', 'fates', 2, 1]))).toEqual([32, '"min(0.5, cover)"']);
 });
 
 test('a section is shown by its key, and what is not in the text by what encloses it', () => {
   const { locate } = read(wholeText);
-  expect(shown(locate(['natal']))).toEqual([36, 'natal']);
-  expect(shown(locate(['natal', 'kernel', 'scale']))).toEqual([42, 'kernel']);
+  expect(shown(locate(['natal']))).toEqual([37, 'natal']);
+  expect(shown(locate(['natal', 'kernel', 'scale']))).toEqual([43, 'kernel']);
   expect(locate(['nowhere', 'at', 'all'])).toMatchObject({ line: 1, column: 1 });
   expect(locate([])).toMatchObject({ line: 1, column: 1 });
 });
@@ -110,17 +110,17 @@ test('all mistakes of a file come at once, in its order', () => {
     .replace('kind: ceiling', 'kind: roof')
     .replace('status: draft', 'status: drafted');
   expect(told(text)).toEqual([
-    ...['8 unknown-word', '11 out-of-range', '28 expression-character', '52 unknown-kind', '66 unknown-key'],
+    ...['8 unknown-word', '11 out-of-range', '29 expression-character', '53 unknown-kind', '70 unknown-key'],
   ]);
 });
 
 test('a mistake in a section that may look in several ways is told for the one that is meant', () => {
   const start = (line: string): readonly string[] => told(wholeText.replace(/^start: .*$/mu, line));
-  expect(start('start: { total: -1 }')).toEqual(['60 out-of-range']);
-  expect(start('start: { counted: { North fen: 1 }, of: [adult], rest: some }')).toEqual(['60 unknown-word']);
-  expect(start('start: { table: { North fen: { adult: many } } }')).toEqual(['60 wrong-type']);
-  expect(start('start: 80')).toEqual(['60 wrong-type']);
-  expect(start('start:')).toEqual(['60 missing-value']);
+  expect(start('start: { total: -1 }')).toEqual(['61 out-of-range']);
+  expect(start('start: { counted: { North fen: 1 }, of: [adult], rest: some }')).toEqual(['61 unknown-word']);
+  expect(start('start: { table: { North fen: { adult: many } } }')).toEqual(['61 wrong-type']);
+  expect(start('start: 80')).toEqual(['61 wrong-type']);
+  expect(start('start:')).toEqual(['61 missing-value']);
 });
 
 test('an expression in quotes has its mistake at the right character', () => {

@@ -121,7 +121,10 @@ test('a point that no model can have has its reason, and no numbers', () => {
 });
 
 test('many growth rates at a time are those of points compiled one by one', () => {
-  const spec = specOf('reed-hare');
+  const { variation, named: phases, ...hare } = specOf('reed-hare');
+  const { flood, ...others } = phases;
+  expect([variation, flood]).not.toContain(undefined);
+  const spec: Spec = { ...hare, named: others };
   const named = ['adult_survival', 'newborn_survival', 'litter', 'natal_leaving'] as const;
   const ranges = { adult_survival: [0.3, 0.8], newborn_survival: [0.2, 0.6], litter: [1, 4], natal_leaving: [0, 0.5] };
   const factors = named.map((name): Factor => {
