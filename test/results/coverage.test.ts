@@ -1,6 +1,8 @@
 // Whether 95 % intervals hold what they claim, over 2,000 small studies with a known truth (that of the model, not of nature).
 import { expect, test } from 'vitest';
+import { readSections } from '../../src/compile/image/read.ts';
 import { uniformAt } from '../../src/machine/random.ts';
+import { fromStandardError, valueAt } from '../../src/model/uncertainty/distribution.ts';
 import { normalBelow } from '../../src/numeric/normal.ts';
 import { normalQuantile } from '../../src/numeric/normal-quantile.ts';
 import { intervalFromRuns, intervalFromUnknown } from '../../src/results/draws/intervals.ts';
@@ -88,6 +90,56 @@ test('intervals from what is not known, and what pooled runs would have claimed'
   }
   between(held / studies);
   expect(pooled / studies).toBeLessThan(0.3);
+});
+
+/** The draws of a study are patches without links, each with a survival of its own, which is put into the image for each study. */
+function manyDraws(draws: number): { readonly image: ArrayBuffer; readonly survival: Float64Array } {
+  const names = Array.from({ length: draws }, (_, d) => `D${d}`);
+  const { image } = compileText(`skein: 1
+study: { title: Draws side by side }
+years: ${years}
+patches: [${names.map((name) => `{ name: ${name} }`).join(', ')}]
+counts: females
+classes: [adult]
+oldest: open-ended
+survival: { adult: 0.625 }
+year: [count, survival]
+start: { table: { ${names.map((name) => `${name}: { adult: ${animals} }`).join(', ')} } }
+`);
+  const tables = readSections(image).filter(({ data }) => data.length === draws && data.every((one) => one === 0.625));
+  expect(tables).toHaveLength(1);
+  return { image, survival: tables[0]!.data as Float64Array };
+}
+
+const [animals, years] = [3, 4];
+
+// Each study marks 80 animals, whose true survival lies between 0.6 and 0.85, and takes the share that lived with its standard
+// error. Draws are of the beta distribution with that mean and SD, and the kernel runs each draw. The truth is that of the model:
+// with the true survival s, 3 animals that die alone are all gone by year 4 with the chance (1 − s^4)^3.
+test('intervals from what is not known, over draws that the kernel runs', () => {
+  const [draws, runs, marked] = [79, 64, 80];
+  const { image, survival } = manyDraws(draws);
+  const gone = (s: number): number => (1 - s ** years) ** animals;
+  let [held, sum, expected, variance] = [0, 0, 0, 0];
+  for (let study = 0; study < studies; study++) {
+    const truth = 0.6 + 0.25 * uniformAt({ seed: 79, words: [study, 7, 1] }, 0);
+    const seen = binomial(marked, truth, uniformAt({ seed: 79, words: [study, 8, 1] }, 0)) / marked;
+    const known = fromStandardError({ value: seen, kind: 'share' }, Math.sqrt((seen * (1 - seen)) / marked))!;
+    for (let d = 0; d < draws; d++) survival[d] = valueAt(known, normal(study, d, 9));
+    const { counts, columns } = runReplicates(image, { replicates: runs, steps: years, seed: study });
+    const hits = Array.from(survival, (s, d) => {
+      const from = (years * columns + 1 + d) * runs;
+      const here = counts.subarray(from, from + runs).reduce((all, n) => all + (n === 0 ? 1 : 0), 0);
+      sum += here;
+      expected += runs * gone(s);
+      variance += runs * gone(s) * (1 - gone(s));
+      return here;
+    });
+    const { lower, upper } = intervalFromUnknown(hits.map((one) => ({ hits: one, runs })))!;
+    if (lower <= gone(truth) && gone(truth) <= upper) held++;
+  }
+  expect(Math.abs(sum - expected)).toBeLessThan(5.5 * Math.sqrt(variance));
+  between(held / studies);
 });
 
 // The mean chance over all draws that there could be, here with 60 draws of 30 runs.
