@@ -43,6 +43,12 @@ export function criterionE(compiled: CompiledModel, results: RunResults): Criter
   return { outcome: outcome.name, generationLength: generation, windows };
 }
 
+/** The results with what they say of the windows, where there is anything to say. */
+export function withCriterionE(compiled: CompiledModel, results: RunResults): RunResults {
+  const found = criterionE(compiled, results);
+  return found === null ? results : { ...results, criterionE: found };
+}
+
 function isExtinction(
   { weights, patches, over, event, counts }: Model['outcomes'][number],
   { classes }: Model,

@@ -1,10 +1,12 @@
 // The decision report: one page that answers, shows, warns and can be run again.
+import type { RunResults } from '../results/results.ts';
 import { mark, type Markup } from '../view/markup.ts';
 import { answer } from './answer.ts';
 import { writeDocument } from './document.ts';
 import type { ReportInput } from './input.ts';
 import { annexSection, limitsSection } from './section/annex.ts';
 import { abundanceSection, chancesSection } from './section/courses.ts';
+import { criterionId, criterionSection } from './section/criterion.ts';
 import { answerSection, headSection } from './section/head.ts';
 import { mapSection } from './section/map.ts';
 import { laterOutcomes, outcomesSection } from './section/outcomes.ts';
@@ -24,24 +26,25 @@ export function buildReport(input: ReportInput): string {
     mapSection(view, { worth: worthNote(input), hidden: hidingWords(input) }),
     chancesSection(view),
   ];
-  const rest = [abundanceSection(view, results), limitsSection(input), annexSection(input)];
+  const rest = [abundanceSection(view, results), criterionSection(results), limitsSection(input), annexSection(input)];
   const foot = `skein ${results.tool.version} · ${results.hash.slice(0, 16)} · ${model.date ?? 'no date given'}`;
   return writeDocument({
     title: `${model.title}: decision report`,
     style: styleSheet(foot),
     script: input.pageScript,
     data: view,
-    body: mark`${headSection(model, results)}${contents(view.outcomes.length > 0)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${laterOutcomes(results)}${rest}</div><footer>${foot}</footer>`,
+    body: mark`${headSection(model, results)}${contents(results)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${laterOutcomes(results)}${rest}</div><footer>${foot}</footer>`,
   });
 }
 
-function contents(chances: boolean): Markup {
+function contents({ outcomes, criterionE }: RunResults): Markup {
   const places = [
     ['answer', 'Answer'],
     ['outcomes', 'Outcomes'],
     ['map', 'Map'],
-    ...(chances ? [['chances', 'Chances by year']] : []),
+    ...(outcomes.length > 0 ? [['chances', 'Chances by year']] : []),
     ['abundance', 'Abundance'],
+    ...(criterionE === undefined ? [] : [[criterionId, 'Criterion E']]),
     ['limits', 'Limits'],
     ['annex', 'Annex'],
   ];

@@ -1,8 +1,9 @@
 // Windows of criterion E of the IUCN Red List (2012, version 3.1; thresholds from memory), and what a run says of them.
 import { expect, test } from 'vitest';
-import { criterionE, criterionWindows } from '../../src/analysis/criterion-e.ts';
+import { criterionE, criterionWindows, withCriterionE } from '../../src/analysis/criterion-e.ts';
 import { runModel } from '../../src/pipeline.ts';
 import { criterionWords } from '../../src/report/criterion-words.ts';
+import { reportOf } from '../page/report-of.ts';
 import { compileText } from '../pipeline/compile-text.ts';
 import { framed } from '../pipeline/frame.ts';
 
@@ -48,6 +49,37 @@ test('a run says what its chances are consistent with, and where it looks less f
   const words = criterionWords({ criterionE: found }).join(' ');
   expect(words).toContain('consistent with the threshold of Endangered');
   expect(words).not.toMatch(/is listed as (?:Critically|Endangered|Vulnerable)/u);
+});
+
+/** What the report page holds before its data and script. */
+function bodyOf(spec: string): string {
+  const compiled = compileText(spec);
+  const html = reportOf(compiled, { results: withCriterionE(compiled, runModel(compiled)) });
+  return html.slice(html.indexOf('<body>'), html.indexOf('<script'));
+}
+
+test('the report page says the same, as text, and names no listing', () => {
+  const nasty = '</p><img src=x onerror=alert(1)>';
+  const spec = text('{ of: all, below: 1 }').replace('gone:', `'${nasty}':`);
+  const body = bodyOf(spec);
+  const part = /<section id="criterion-e".*?<\/section>/su.exec(body)?.[0] ?? '';
+  const compiled = compileText(spec);
+  const words = criterionWords(withCriterionE(compiled, runModel(compiled)));
+  const shown = part
+    .replace(/<[^>]*>/gu, ' ')
+    .replaceAll('&lt;', '<')
+    .replaceAll('&gt;', '>');
+  expect(words).toHaveLength(5);
+  for (const one of words) expect(shown).toContain(one.replace(/^- /u, ''));
+  expect(part).toContain('consistent with the threshold of Endangered');
+  expect(part).toContain('&lt;/p&gt;&lt;img src=x onerror=alert(1)&gt;');
+  expect(part).not.toContain('<img');
+  expect(part).not.toMatch(/\b(?:is|are|as|listed) (?:Critically|Endangered|Vulnerable)/u);
+  expect(body).toContain('<a href="#criterion-e">');
+});
+
+test('a page without such an outcome has no such part', () => {
+  expect(bodyOf(text('{ of: [adult], below: 1 }'))).not.toMatch(/criterion/iu);
 });
 
 test('other outcomes are no extinction', () => {

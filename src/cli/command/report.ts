@@ -1,5 +1,6 @@
 // skein report: one page that an agency can read.
 import { pageScript } from '../../../build/page-script.ts';
+import { withCriterionE } from '../../analysis/criterion-e.ts';
 import { patchValues } from '../../analysis/patch-values.ts';
 import { followPath } from '../../pipeline.ts';
 import { withHiding } from '../../report/hiding/hide.ts';
@@ -26,7 +27,7 @@ export async function reportCommand(path: string, options: CommonOptions & { rea
   const file = options.output === '-' ? null : pendingFile(options.output);
   const { compiled, cutShort, ...ran } = await runReplicates(loaded.compiled, options);
   const hidden = askedHiding(compiled, { ...options, path, written: true });
-  const results = withHiding(ran.results, hidden);
+  const results = withHiding(withCriterionE(compiled, ran.results), hidden);
   const done =
     cutShort === null ? options : { ...options, precision: undefined, atMost: undefined, ...finishedOf(results) };
   const page = buildReport({

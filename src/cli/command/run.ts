@@ -1,5 +1,5 @@
 // skein run: stochastic replicates of one scenario.
-import { criterionE } from '../../analysis/criterion-e.ts';
+import { withCriterionE } from '../../analysis/criterion-e.ts';
 import type { CompiledModel } from '../../pipeline.ts';
 import { withHiding } from '../../report/hiding/hide.ts';
 import { runText } from '../../report/text.ts';
@@ -24,9 +24,7 @@ export async function runCommand(path: string | undefined, options: RunCommandOp
   const folder: OutFolder | null = options.out === undefined ? null : openOutFolder(options.out);
   const { compiled, threads, cutShort, ...done } = await runReplicates(asked, options);
   const hidden = askedHiding(compiled, { ...options, path: path ?? options.again ?? '-', written: folder !== null });
-  const extinction = criterionE(compiled, done.results);
-  const found = extinction === null ? done.results : { ...done.results, criterionE: extinction };
-  const results = withHiding(found, hidden);
+  const results = withHiding(withCriterionE(compiled, done.results), hidden);
   const tables = runTables(hidden?.model ?? compiled.model, results);
   folder?.write(compiled, { command: 'run', results, tables, threads, hidden });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
