@@ -12,12 +12,62 @@ interface Case {
   /** Column of the count after one year: 0 for all, then each patch. */
   readonly column?: number;
   readonly patches?: string;
+  /** Instead of females of one class, all 40 adult. */
+  readonly animals?: { readonly sexes: string; readonly start: string };
   readonly mean: number;
   readonly variance: number;
 }
 
 /** p varies with mean p and SD s: n p (1 − p) − n s² + n² s². */
 const share = (p: number, s: number): number => n * p * (1 - p) - n * s * s + n * n * s * s;
+
+const horses = {
+  sexes: 'counts: both sexes\nclasses: { females: [filly, mare], males: [colt, stallion] }',
+  start: `{ mare: ${n}, stallion: 15 }`,
+};
+
+/** The mean of a function of a lognormal number with mean 1 and this SD, by the midpoint rule. */
+function overLognormal(sd: number, value: (s: number) => number): number {
+  const variance = Math.log(1 + sd * sd);
+  const step = 1e-4;
+  let sum = 0;
+  for (let z = -9 + step / 2; z < 9; z += step) {
+    sum += value(Math.exp(Math.sqrt(variance) * z - variance / 2)) * Math.exp((-z * z) / 2);
+  }
+  return (sum * step) / Math.sqrt(2 * Math.PI);
+}
+
+/** Chances of 0 to `trials` survivors whose survival varies by a beta distribution with this mean and SD. */
+function betaBinomial(trials: number, mean: number, sd: number): readonly number[] {
+  const all = (mean * (1 - mean)) / (sd * sd) - 1;
+  const [a, b] = [mean * all, (1 - mean) * all];
+  const chances = [1];
+  for (let k = 0; k < trials; k++) {
+    chances.push((chances[k]! * (trials - k) * (k + a)) / ((k + 1) * (trials - k - 1 + b)));
+  }
+  const sum = chances.reduce((x, y) => x + y, 0);
+  return chances.map((one) => one / sum);
+}
+
+/**
+ * 15 stallions survive with 0.4 and an SD of 0.15 between years, then 40 mares have 1.5 young times `mated` of the stallions
+ * left: the young are Poisson given those.
+ */
+function mares(mated: (stallions: number) => number): Pick<Case, 'mean' | 'variance'> {
+  const chances = betaBinomial(15, 0.4, 0.15);
+  const over = (value: (stallions: number) => number): number =>
+    chances.reduce((sum, chance, stallions) => sum + chance * value(stallions), 0);
+  const young = (stallions: number): number => n * 1.5 * mated(stallions);
+  const mean = n + over((stallions) => stallions + young(stallions));
+  return { mean, variance: over(young) + over((stallions) => (n + stallions + young(stallions) - mean) ** 2) };
+}
+
+const mating = (form: string): string => `survival: { filly: 1, mare: 1, colt: 1, stallion: 0.4 }
+births: { mare: 1.5, female-share: 0.5 }
+oldest: open-ended
+mating: { form: ${form}, males: [stallion], females-per-male: 5 }
+year: [count, survival, breeding]
+variation: { survival: { stallion: { sd: 0.15 } } }`;
 
 const cases: Readonly<Record<string, Case>> = {
   'survivors, beta': {
@@ -80,17 +130,72 @@ variation: { births: { adult: { sd: 0.3, shape: lognormal } } }`,
     mean: n + n * 1.2,
     variance: n * (1.2 - (1.44 + 0.09) / 4) + n * n * 0.09,
   },
+  // Negative binomial litters of size k given the year: m + m²/k for each, so n (m + (m² + s²)/k) + n² s².
+  'negative binomial litters, whose mean varies': {
+    essence: `births: { adult: 1.6 }
+offspring: { distribution: negative binomial, size: 0.8 }
+oldest: open-ended
+year: [count, breeding]
+variation: { births: { adult: { sd: 0.4, shape: gamma } } }`,
+    mean: n + n * 1.6,
+    variance: n * (1.6 + (2.56 + 0.16) / 0.8) + n * n * 0.16,
+  },
+  // Litters with mean 1.1 and variance 1.9 − 1.21 of those S that survive: E S · 0.69 + 2.1² Var S.
+  'a table of litters, of survivors that vary': {
+    essence: `survival: { adult: 0.6 }
+births: {}
+offspring: { distribution: table of chances, chances: { adult: [0.3, 0.3, 0.4] } }
+oldest: open-ended
+year: [count, survival, breeding]
+variation: { survival: { adult: { sd: 0.12 } } }`,
+    mean: n * 0.6 * 2.1,
+    variance: n * 0.6 * 0.69 + 2.1 ** 2 * share(0.6, 0.12),
+  },
+  // Given that years give s times the young of the table: whole copies and a share f of them, so that each litter of mean m and
+  // variance v becomes one of s m and s² v + f (1 − f) m.
+  'a table of litters, whose mean varies': {
+    essence: `births: {}
+offspring: { distribution: table of chances, chances: { adult: [0.3, 0.3, 0.4] } }
+oldest: open-ended
+year: [count, breeding]
+variation: { births: { adult: { sd: 0.44, shape: lognormal } } }`,
+    mean: n + n * 1.1,
+    variance:
+      n * overLognormal(0.4, (s) => s * s * 0.69 + (s - Math.floor(s)) * (1 - (s - Math.floor(s))) * 1.1) +
+      n * n * 0.44 ** 2,
+  },
+  // All others die: Poisson given the year, of which a share f are females, so n m f + n² f² s².
+  'the females among the young of two sexes': {
+    animals: horses,
+    essence: `survival: { filly: 1, mare: 0, colt: 0, stallion: 0 }
+births: { mare: 1.4, female-share: 0.4 }
+oldest: open-ended
+mating: { form: female-dominant }
+year: [count, breeding, survival]
+variation: { births: { mare: { sd: 0.5, shape: lognormal } } }`,
+    mean: n * 1.4 * 0.4,
+    variance: n * 1.4 * 0.4 + n * n * 0.16 * 0.25,
+  },
+  'two sexes, where the survival of males varies and each mates with so many females at most': {
+    animals: horses,
+    essence: mating('minimum'),
+    ...mares((stallions) => Math.min(1, (5 * stallions) / n)),
+  },
+  'two sexes, where the survival of males varies, by the harmonic mean': {
+    animals: horses,
+    essence: mating('harmonic mean'),
+    ...mares((stallions) => (2 * 5 * stallions) / (n + 5 * stallions)),
+  },
 };
 
-test.each(Object.entries(cases))('%s', (_, { essence, patches, column = 0, mean, variance }) => {
+test.each(Object.entries(cases))('%s', (_, { essence, patches, animals, column = 0, mean, variance }) => {
   const { image } = compileText(`skein: 1
 study: { title: Total variance }
 years: 1
 ${patches ?? 'patches: [{ name: A }]'}
-counts: females
-classes: [adult]
+${animals?.sexes ?? 'counts: females\nclasses: [adult]'}
 ${essence}
-start: { table: { A: { adult: ${n} } } }
+start: { table: { A: ${animals?.start ?? `{ adult: ${n} }`} } }
 `);
   const { counts, columns } = runReplicates(image, { replicates, steps: 1, seed: 31 });
   const at = (columns + column) * replicates;
