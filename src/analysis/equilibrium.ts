@@ -73,7 +73,8 @@ export function sharpen(map: YearMap, guess: Float64Array): Float64Array | null 
     const step = solveDense(minusIdentity(jacobianOf(map, animals)), miss);
     if (!step) return null;
     animals = animals.map((value, i) => value - (step[i] ?? 0));
-    if (!animals.every((value) => value > -1e-9 * size(animals))) return null;
+    const least = -1e-9 * size(animals);
+    if (!animals.every((value) => value > least)) return null;
   }
   const left = map.apply(animals);
   return distance(left, animals) <= 1e-8 * size(animals) ? animals : null;
@@ -102,10 +103,11 @@ function disturbanceGrowth(map: YearMap, animals: Float64Array): number {
     const ahead = map.apply(animals.map((value, i) => value + step * (direction[i] ?? 0)));
     const behind = map.apply(animals.map((value, i) => Math.max(0, value - step * (direction[i] ?? 0))));
     const next = ahead.map((value, i) => (value - (behind[i] ?? 0)) / (2 * step));
-    const growth = size(next) / size(direction);
+    const nextSize = size(next);
+    const growth = nextSize / size(direction);
     if (growth === 0) return 0;
     if (year >= 400) logSize += log(growth);
-    direction = next.map((value) => value / size(next));
+    direction = next.map((value) => value / nextSize);
   }
   return exp(logSize / 200);
 }
