@@ -16,6 +16,12 @@ export interface Equilibrium {
 /** Largest number of states for which the Jacobian is handled whole. */
 export const largestJacobian = 400;
 const settledShare = 1e-12;
+/** Years that are followed unless less is asked for. */
+export const longestFollowed = 20_000;
+/** Newton's method is tried early after so many years, and each time that they have doubled since. */
+const firstTry = 100;
+/** With more states than this, to go on for years is cheaper than to try Newton's method early. */
+const largestTried = 100;
 
 /** Growth from almost nobody: the growth rate of the matrix at zero, above 1 where the species can come in. */
 export function invasionGrowth(map: YearMap): number {
@@ -26,19 +32,32 @@ export function invasionGrowth(map: YearMap): number {
  * The equilibrium that a start leads to: years are run until they change nothing, then Newton steps on apply(n) − n sharpen
  * it. Null where numbers still move after `longest` years: they cycle or wander.
  */
-export function equilibriumFrom(map: YearMap, start: Float64Array, longest = 20_000): Equilibrium | null {
+export function equilibriumFrom(map: YearMap, start: Float64Array, longest = longestFollowed): Equilibrium | null {
+  return reachedFrom(map, start, { longest, seen: [] });
+}
+
+interface Search {
+  readonly longest: number;
+  /** All that were met on the way, stable or not: to describe one is dear. */
+  readonly seen: Equilibrium[];
+}
+
+function reachedFrom(map: YearMap, start: Float64Array, { longest, seen }: Search): Equilibrium | null {
   let animals = start;
-  for (let year = 0; year < longest; year++) {
+  let tryIn = firstTry;
+  for (let year = 1; year <= longest; year++) {
     const next = map.apply(animals);
     const change = distance(next, animals);
     animals = next;
     if (!(change > settledShare * size(animals))) break;
-    if (size(animals) < 1e-9 * Math.max(1, size(start))) return describe(map, new Float64Array(map.states));
-    const early = (year + 1) % 100 === 0 ? nearbyStable(map, animals) : null;
+    if (size(animals) < 1e-9 * Math.max(1, size(start))) return describeOnce(map, new Float64Array(map.states), seen);
+    if (year !== tryIn || map.states > largestTried) continue;
+    tryIn *= 2;
+    const early = nearbyStable(map, animals, seen);
     if (early) return early;
   }
   const sharp = sharpen(map, animals);
-  return sharp && describe(map, sharp);
+  return sharp && describeOnce(map, sharp, seen);
 }
 
 /** Where the years end that lead from a start, whether numbers would come back to it or not; null where they still move. */
@@ -55,11 +74,19 @@ export function settledFrom(apply: YearMap['apply'], start: Float64Array, longes
 }
 
 /** The stable equilibrium within a tenth of where numbers are, if Newton's method finds one: slow approaches end early. */
-function nearbyStable(map: YearMap, animals: Float64Array): Equilibrium | null {
-  const sharp = map.states <= largestJacobian ? sharpen(map, animals) : null;
+function nearbyStable(map: YearMap, animals: Float64Array, seen: Equilibrium[]): Equilibrium | null {
+  const sharp = sharpen(map, animals);
   if (!sharp || distance(sharp, animals) > 0.1 * size(animals)) return null;
-  const found = describe(map, sharp);
+  const found = describeOnce(map, sharp, seen);
   return found.stable ? found : null;
+}
+
+function describeOnce(map: YearMap, animals: Float64Array, seen: Equilibrium[]): Equilibrium {
+  const before = seen.find((other) => distance(other.animals, animals) < 1e-6 * (1 + size(animals)));
+  if (before) return before;
+  const found = describe(map, animals);
+  seen.push(found);
+  return found;
 }
 
 /** Newton's method for apply(n) = n from a guess near by, stable or not. Null where it leaves or does not settle. */
@@ -113,15 +140,14 @@ function disturbanceGrowth(map: YearMap, animals: Float64Array): number {
 }
 
 /** Different equilibria that different starts lead to, largest first. */
-export function equilibriaFrom(map: YearMap, starts: readonly Float64Array[]): Equilibrium[] {
-  const found: Equilibrium[] = [];
-  for (const start of starts) {
-    const here = equilibriumFrom(map, start);
-    if (here && !found.some((other) => distance(other.animals, here.animals) < 1e-6 * (1 + size(here.animals)))) {
-      found.push(here);
-    }
-  }
-  return found.sort((a, b) => size(b.animals) - size(a.animals));
+export function equilibriaFrom(
+  map: YearMap,
+  starts: readonly Float64Array[],
+  longest = longestFollowed,
+): readonly Equilibrium[] {
+  const seen: Equilibrium[] = [];
+  const reached = starts.flatMap((start) => reachedFrom(map, start, { longest, seen }) ?? []);
+  return [...new Set(reached)].sort((a, b) => size(b.animals) - size(a.animals));
 }
 
 export interface StartThreshold {

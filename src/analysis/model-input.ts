@@ -123,7 +123,9 @@ function yearOver(compiled: Compiled, places: readonly number[]): YearMap {
     states: places.length,
     apply: (animals) => {
       const after = whole.apply(spread(animals));
-      return Float64Array.from(places, (place) => after[place] ?? 0);
+      const kept = new Float64Array(places.length);
+      places.forEach((place, s) => (kept[s] = after[place] ?? 0));
+      return kept;
     },
     matrixAt: (animals) => principalPart(whole.matrixAt(spread(animals)), places),
     jacobianAt: (animals) => {

@@ -1,5 +1,5 @@
 // How the animals after a year move with each animal before it: exact, one direction after the other.
-import type { DenseMatrix } from '../../numeric/sparse.ts';
+import type { DenseMatrix, SparseMatrix } from '../../numeric/sparse.ts';
 import type { Compiled } from '../year-map.ts';
 import { walkYear } from './year-slope.ts';
 
@@ -22,10 +22,14 @@ export function yearJacobian(compiled: Compiled, animals: Float64Array, places: 
   };
   const size = places.length;
   const values = new Float64Array(size * size);
+  let maps: readonly SparseMatrix[] | undefined;
   places.forEach((place, j) => {
     const slopes = new Float64Array(animals.length);
     slopes[place] = 1;
-    const after = walkYear(request, { animals, slopes }, () => undefined).slopes;
+    const walked: SparseMatrix[] = [];
+    const known = maps === undefined ? request : { ...request, maps };
+    const after = walkYear(known, { animals, slopes }, (map) => walked.push(map)).slopes;
+    maps ??= walked;
     places.forEach((to, i) => (values[i * size + j] = after[to] ?? 0));
   });
   return { rows: size, columns: size, values };

@@ -22,6 +22,8 @@ export interface YearSlopeRequest {
   readonly slopes: ModelSlopes;
   /** By crowding and patch. */
   readonly coefficientSlopes: readonly Float64Array[];
+  /** Of the phases, where an earlier walk from the same animals has told them. */
+  readonly maps?: readonly SparseMatrix[];
 }
 
 /** P·C × P·C. The animals at the count are held; those within the year move, and with them crowding and ceilings. */
@@ -54,7 +56,7 @@ export function walkYear(
   let [state, stateSlope] = [animals, slopes];
   model.phases.forEach((phase, index) => {
     readCrowding(request, { index, multipliers, multiplierSlopes, state, stateSlope });
-    const map = phaseMap(index, { model, landscape, step: 1, multipliers, state });
+    const map = request.maps?.[index] ?? phaseMap(index, { model, landscape, step: 1, multipliers, state });
     const moved = phaseSlope(request, { phase, index, multipliers, multiplierSlopes, state, stateSlope });
     visit(map, moved);
     const carried = multiply(map, stateSlope);
