@@ -23,6 +23,8 @@ export function analysisTables(analysis: Analysis): readonly Table[] {
     entryTable(analysis),
     parameterTable(analysis),
     linkTable(analysis),
+    entryDifferenceTable(analysis),
+    numberDifferenceTable(analysis),
   ].filter(({ rows }) => rows.length > 0);
 }
 
@@ -170,6 +172,36 @@ function linkTable({ links }: Analysis): Table {
       ...[link.phase, link.from, link.to, link.class],
       ...[link.share, link.sensitivity, link.sensitivityInsteadOfStaying, link.removalLoss],
       String(link.exact),
+    ]),
+  };
+}
+
+function entryDifferenceTable({ ltre }: Analysis): Table {
+  return {
+    name: 'entry-differences',
+    columns: [
+      ...fromTo,
+      column('difference', 'animals', 'Entry of the model less that of what it is compared with.'),
+      column('contribution', perYear, 'What it adds to the growth rate less that of what it is compared with.'),
+    ],
+    rows: (ltre?.contributions ?? []).map(({ from, to, difference, contribution }): readonly Cell[] => [
+      ...[from.patch, from.class, to.patch, to.class],
+      ...[difference, contribution],
+    ]),
+  };
+}
+
+function numberDifferenceTable({ ltre }: Analysis): Table {
+  return {
+    name: 'number-differences',
+    columns: [
+      column('parameter', '', 'Name of a parameter that differs.'),
+      column('value', 'as in the model', 'Value in the model.'),
+      column('reference', 'as in the model', 'Value in what it is compared with.'),
+      column('contribution', perYear, 'What it adds to the growth rate less that of what it is compared with.'),
+    ],
+    rows: (ltre?.parameters ?? []).map((one): readonly Cell[] => [
+      ...[one.name, one.value, one.reference, one.contribution],
     ]),
   };
 }

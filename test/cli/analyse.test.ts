@@ -1,5 +1,5 @@
 // skein analyse: the answer first, one JSON object of the published form, tables, and the state it is asked for.
-import { readFileSync } from 'node:fs';
+import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import Ajv from 'ajv/dist/2020.js';
 import { describe, expect, test } from 'vitest';
@@ -93,4 +93,58 @@ test('--out writes a table for each list, with a dictionary of every column', ()
   }
   const results = JSON.parse(readFileSync(join(cwd, 'here/results.json'), 'utf8'));
   expect(fits(results)).toBe(true);
+});
+
+describe('--against', () => {
+  const text = readFileSync('models/drought.yaml', 'utf8');
+
+  function dryAndWet(): string {
+    const cwd = folder();
+    writeFileSync(join(cwd, 'dry.yaml'), text);
+    writeFileSync(join(cwd, 'wet.yaml'), text.replace('metamorphosis: 0.055', 'metamorphosis: 0.06'));
+    return cwd;
+  }
+
+  function wetFound(...words: readonly string[]) {
+    const { code, out, err } = skein(['analyse', 'wet.yaml', '--json', ...words], { cwd: dryAndWet() });
+    expect({ code, err }).toEqual({ code: 0, err: '' });
+    return JSON.parse(out);
+  }
+
+  test('another file is told apart by its numbers and by the entries', () => {
+    const { ltre, growthRate } = wetFound('--against', 'dry.yaml');
+    const { growthRate: before } = wetFound('--set', 'metamorphosis=0.055');
+    expect(ltre.difference).toBeCloseTo(growthRate - before, 12);
+    expect(ltre.difference).toBeGreaterThan(0.001);
+    expect(ltre.parameters).toMatchObject([{ name: 'metamorphosis', value: 0.06, reference: 0.055 }]);
+    const parts: number[] = ltre.contributions.map((one: { contribution: number }) => one.contribution);
+    expect(parts.reduce((sum, part) => sum + part, ltre.unexplained)).toBeCloseTo(ltre.difference, 12);
+    expect(Math.abs(ltre.unexplained)).toBeLessThan(0.01 * ltre.difference);
+  });
+
+  test('its parts are tables of --out', () => {
+    const cwd = dryAndWet();
+    const { code } = skein(['analyse', 'wet.yaml', '--against', 'dry.yaml', '--out', 'here', '--quiet'], { cwd });
+    expect(code).toBe(0);
+    const rowsOf = (name: string) =>
+      readFileSync(join(cwd, `here/${name}.csv`), 'utf8')
+        .trimEnd()
+        .split('\n');
+    const { ltre } = JSON.parse(readFileSync(join(cwd, 'here/results.json'), 'utf8'));
+    const [number] = ltre.parameters;
+    expect(rowsOf('number-differences')).toEqual([
+      'parameter,value,reference,contribution',
+      `metamorphosis,0.06,0.055,${number.contribution}`,
+    ]);
+    const [head, ...rows] = rowsOf('entry-differences');
+    expect(head).toBe('from_patch,from_class,to_patch,to_class,difference,contribution');
+    expect(rows).toHaveLength(ltre.contributions.length);
+  });
+
+  test('a file that is not there is the reason to fail', () => {
+    const { code, out, err } = skein(['analyse', 'wet.yaml', '--against', 'gone.yaml'], { cwd: dryAndWet() });
+    expect(code).not.toBe(0);
+    expect(out).toBe('');
+    expect(err).toContain('gone.yaml');
+  });
 });

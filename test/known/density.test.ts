@@ -145,3 +145,37 @@ test('many states: the return rate is found without the whole Jacobian', () => {
   const found = equilibriumFrom(map, new Float64Array(size).fill(1))!;
   expect(found.leadingModulus).toBeCloseTo(1 / 1.5, 6);
 });
+
+describe('many patches without links, each Beverton-Holt with R = 2 (analytic)', () => {
+  const states = 120;
+  const rate = (p: number, n: number): number => 2 / (1 + n / (50 + p));
+  const many: YearMap = {
+    states,
+    apply: (n) => n.map((own, p) => own * rate(p, own)),
+    matrixAt: (n) => sparseFromRows(Array.from(n, (own, p) => Array.from(n, (_, q) => (p === q ? rate(p, own) : 0)))),
+  };
+  const start = new Float64Array(states).fill(10);
+
+  test('stand still at their own capacities, once, whichever starts lead there', () => {
+    const found = equilibriaFrom(many, [start, start.map((n) => 20 * n)]);
+    expect(found).toHaveLength(1);
+    found[0]!.animals.forEach((n, p) => expect(n).toBeCloseTo(50 + p, 8));
+    expect(found[0]!.leadingModulus).toBeCloseTo(0.5, 8);
+  });
+});
+
+test('two years that swing are followed no longer than asked', () => {
+  let years = 0;
+  const states = 500;
+  const swing: YearMap = {
+    states,
+    apply: (n) => {
+      years++;
+      return n.map((own) => own * Math.exp(2.2 * (1 - own)));
+    },
+    matrixAt: () => sparseFromRows([[1]]),
+  };
+  const starts = [0.3, 0.6].map((n) => new Float64Array(states).fill(n));
+  expect(equilibriaFrom(swing, starts, 50)).toEqual([]);
+  expect(years).toBeLessThanOrEqual(2 * 51);
+});
