@@ -23,6 +23,7 @@ describe('skein run --out', () => {
       'parameters',
       'patches',
       'patches_in_use',
+      'when_first',
     ];
     expect(names).toEqual(
       [
