@@ -14,9 +14,12 @@ export function differenceOf(before: string, now: Manifest): string {
   if (now.runs !== null && runsBefore['seed'] !== undefined && runsBefore['seed'] !== now.runs.seed) {
     return `its seed is ${String(runsBefore['seed'])}`;
   }
-  if (differs('runs')) return 'it has other replicates or years';
-  if (differs('measures')) return 'it has other measures';
-  if (differs('design')) return 'it has another design';
+  const other = [
+    differs('runs') ? 'other replicates or years' : null,
+    differs('measures') ? 'other measures' : null,
+    differs('design') ? 'another design' : null,
+  ].filter((what) => what !== null);
+  if (other.length > 0) return `it has ${other.join(', ')}`;
   if (differs('spec')) return 'it is of another model';
   return 'it is of another shape';
 }

@@ -187,7 +187,7 @@ function robustness(all: readonly Robustness[], style: TextStyle): string {
 
 function handling(comparison: Comparison, style: CompareTextStyle): string {
   const { sources } = comparison;
-  const said = sources.flatMap((source) => sourceWords(source, style.animals));
+  const said = sources.flatMap((source) => sourceWords(source, style.animals, comparison.replicates));
   const steps = hasMoves(comparison)
     ? [
         'Before any animal is moved or released (after IUCN/SSC 2013):',

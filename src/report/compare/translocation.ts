@@ -1,8 +1,8 @@
 // What must be said of every plan that handles animals: the steps before a translocation, the source's own risk, when to stop,
 // and who decides on a take.
 import type { Comparison, SourceRisk } from '../../compare/results.ts';
-import { percent, whole } from '../../view/number.ts';
-import { between, change } from './words.ts';
+import { whole } from '../../view/number.ts';
+import { between, change, seenChance } from './words.ts';
 
 /** After the guidelines of IUCN/SSC (2013), in our own words and from memory. */
 export const translocationSteps: readonly string[] = [
@@ -11,18 +11,19 @@ export const translocationSteps: readonly string[] = [
   'Look at what it needs: habitat and climate at the release site, founders that the source can spare, health and welfare of the animals, people who live there, law, money.',
   'Weigh the risks: to the source, to the release site and what lives there, of disease, of genes, to people, of money lost.',
   'Plan release and transport: who, how many, when, where, in what state.',
-  'Write an exit rule before the first animal is caught: at what sight the work stops or is turned back.',
+  'Write an exit rule before the first animal is caught: at what signs the work stops or is turned back.',
   'Watch both places long enough to know, go on caring for them, and publish what came of it.',
 ];
 
-/** Of each move, for its source. */
+/** Of each move, for its source; `futures` are those of each plan. */
 export function sourceWords(
   { scenario, action, source, change: found, stopBelow, year }: SourceRisk,
   animals: string,
+  futures: number,
 ): readonly string[] {
   const { before, after } = found.everEmpty;
   return [
-    `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${percent(after)} with the plan and ${percent(before)} without it (${change({ of: 'chance', estimate: found.everEmptyChange.estimate })} points, 95 %: ${between('chance', found.everEmptyChange)}).`,
+    `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${seenChance(after, futures)} with the plan and ${seenChance(before, futures)} without it (difference in points: ${change({ of: 'chance', estimate: found.everEmptyChange.estimate })}, 95 %: ${between('chance', found.everEmptyChange)}).`,
     `An exit rule to start from: stop catching when fewer than ${whole(Math.max(1, stopBelow))} ${animals} are counted in ${source}. Without the plan 95 of 100 futures count more there in ${year}, so fewer is no bad luck that the model foresees. The rule is for the permit and the people responsible to set.`,
   ];
 }

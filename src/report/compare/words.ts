@@ -1,6 +1,7 @@
 // Numbers of a comparison as readers meet them, the same in a terminal and on the page.
 import type { Comparison, ComparedPlan, PlanCost, PlanDifference, RiskPrice } from '../../compare/results.ts';
-import { plain, whole } from '../../view/number.ts';
+import { wilson } from '../../results/wilson.ts';
+import { percent, plain, whole } from '../../view/number.ts';
 
 export function moneyOf(amount: number, { money }: Pick<Comparison, 'money'>): string {
   return `${amount < 0 ? '−' : ''}${plain(Math.abs(amount))}${money === null ? '' : ` ${money.currency}`}`;
@@ -14,7 +15,13 @@ export function costWords({ presentValue, least, most }: PlanCost): string {
 /** More or less, with its sign; `points` for chances. */
 export function change({ of, estimate }: Pick<PlanDifference, 'of' | 'estimate'>): string {
   if (estimate === 0) return 'none';
+  if (of === 'animals' && Math.abs(estimate) < 0.5) return `${estimate < 0 ? 'less' : 'more'} by fewer than 1`;
   return `${estimate < 0 ? '−' : '+'}${amount(of, Math.abs(estimate))}`;
+}
+
+/** A chance seen in so many futures; where none showed it, how far it may still reach (95 %, Wilson 1927). */
+export function seenChance(chance: number, futures: number): string {
+  return chance === 0 ? `0\u00a0% (at most ${percent(wilson(0, futures).upper)})` : percent(chance);
 }
 
 function amount(of: PlanDifference['of'], value: number): string {

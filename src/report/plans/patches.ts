@@ -1,10 +1,10 @@
 // Who gains and who loses among the patches under a plan.
-import type { Comparison, PatchChange } from '../../compare/results.ts';
+import type { Comparison } from '../../compare/results.ts';
 import { mark, type Markup } from '../../view/markup.ts';
-import { percent, plain } from '../../view/number.ts';
+import { plain } from '../../view/number.ts';
 import { drawWhiskers } from '../../view/plans/whiskers.ts';
 import { drawTable, type Row } from '../../view/table.ts';
-import { between, change } from '../compare/words.ts';
+import { between, change, seenChance } from '../compare/words.ts';
 import { section } from '../section/section.ts';
 
 const widths = { wide: 720, narrow: 340 } as const;
@@ -35,18 +35,18 @@ export function patchesSection(comparison: Comparison, chosen: string, animals: 
     'Who gains and who loses',
     mark`<figure class="still"><div class="wide">${drawWhiskers(chart, widths.wide)}</div><div class="narrow">${drawWhiskers(chart, widths.narrow)}</div>
 <figcaption>“<bdi>${chosen}</bdi>” less “<bdi>${base}</bdi>” at the last count, in the same futures, with 95\u00a0% intervals from the number of runs.${left}</figcaption></figure>
-<details class="tables"><summary>Every plan and patch as a table</summary>${table(comparison.patches)}</details>`,
+<details class="tables"><summary>Every plan and patch as a table</summary>${table(comparison)}</details>`,
   );
 }
 
-function table(patches: readonly PatchChange[]): Markup {
+function table({ patches, replicates }: Pick<Comparison, 'patches' | 'replicates'>): Markup {
   const rows = patches.map(({ patch, scenario, animals, everEmpty, everEmptyChange }): Row => [
     patch,
     mark`<bdi>${scenario}</bdi>`,
     change({ of: 'animals', estimate: animals.estimate }),
     between('animals', animals),
-    percent(everEmpty.before),
-    percent(everEmpty.after),
+    seenChance(everEmpty.before, replicates),
+    seenChance(everEmpty.after, replicates),
     between('chance', everEmptyChange),
   ]);
   const head = [

@@ -6,7 +6,7 @@ import { section } from '../section/section.ts';
 
 export function signsSection(comparison: Comparison, animals: string): Markup {
   const sources = comparison.sources
-    .flatMap((source) => sourceWords(source, animals))
+    .flatMap((source) => sourceWords(source, animals, comparison.replicates))
     .map((text) => mark`<p>${text}</p>`);
   const steps = hasMoves(comparison)
     ? mark`<h3>Before any animal is moved or released</h3>${sources}<p>In the order of the guidelines of IUCN/SSC (2013):</p><ol>${translocationSteps.map((step) => mark`<li>${step}</li>`)}</ol>`
