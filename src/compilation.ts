@@ -59,6 +59,7 @@ export function compileSpec(spec: Spec): Compilation {
   findings.push(...laid.findings);
   for (const found of plan.findings) {
     if (known.has(keyOf(found))) continue;
+    known.add(keyOf(found));
     const path = laid.originOf(found.path);
     // A stretch inside an expression that was laid is nowhere in the text.
     const { span, ...whole } = found;

@@ -98,7 +98,7 @@ function refuseShape(draft: Draft, { name, spec }: NamedAction<'habitat'>): void
     tell(`\`${name}\` changes nothing`, 'one or more of `capacity`, `area`, `quality`, `lost` and `new`');
   }
   if (changes && spec.in === undefined) tell(`\`${name}\` does not say where`, '`in` with one patch or several');
-  if (spec.in !== undefined && !changes)
+  if (spec.new !== undefined && spec.in !== undefined && !changes)
     tell('Nothing changes in these patches', '`capacity`, `area`, `quality` or `lost`', 'in');
   if (spec.like !== undefined && spec.new === undefined)
     tell('Only a new patch is like another', '`new` with a patch', 'like');

@@ -111,9 +111,8 @@ function layDistance(draft: Draft, { at, link, words, name, spec }: Distance): v
     addEffect(draft, [...at, 'distance'], { target: target('distance', link.distance), effect, place });
     return;
   }
-  const { set, times, add } = effect;
+  const { set, times } = effect;
   const factor = { ...(set === undefined ? {} : { set: 0 }), ...(times === undefined ? {} : { times }) };
-  const more = { ...effect, ...(add === undefined ? {} : { add }) };
   addEffect(draft, [...at, 'distance-times'], {
     target: target('distance-times', link['distance-times'] ?? 1),
     effect: factor,
@@ -121,7 +120,7 @@ function layDistance(draft: Draft, { at, link, words, name, spec }: Distance): v
   });
   addEffect(draft, [...at, 'distance-add'], {
     target: target('distance-add', link['distance-add'] ?? 0),
-    effect: more,
+    effect,
     place,
   });
 }

@@ -8,12 +8,15 @@ interface Found {
   readonly findings: Finding[];
 }
 
+/** The same mistake of the same place is told once, however many patches and dispersals meet it. */
 export function tellMistake(
   { findings }: Found,
   code: DiagnosticCode,
   path: SpecPath,
   told: Omit<Finding, 'severity' | 'code' | 'path'>,
 ): void {
+  const place = path.join('\0');
+  if (findings.some((one) => one.code === code && one.path.join('\0') === place)) return;
   findings.push({ severity: 'error', code, path, ...told });
 }
 
