@@ -1,8 +1,9 @@
 // Which entries make two matrices grow differently: a life table response experiment with fixed treatments.
+import { dot } from '../numeric/dot.ts';
 import { growthRateOf, leading } from '../numeric/leading.ts';
 import { weightedSum } from '../numeric/sparse-product.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
-import { dot, vectorsOf } from './sensitivity.ts';
+import { vectorsOf } from './sensitivity.ts';
 
 export interface EntryContribution {
   readonly row: number;

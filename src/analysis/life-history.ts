@@ -1,10 +1,11 @@
 // Lifetimes, young in a lifetime, and generation times, from the split of a matrix into fates and births.
+import { dot } from '../numeric/dot.ts';
 import { log } from '../machine/pinned.ts';
 import { fadingSums, type Fading } from '../numeric/fading.ts';
 import { leading } from '../numeric/leading.ts';
 import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
 import { sparseFromTriplets, type SparseMatrix } from '../numeric/sparse.ts';
-import { dot, type Vectors } from './sensitivity.ts';
+import type { Vectors } from './sensitivity.ts';
 
 /** A = U + F: what becomes of the animals themselves, and their young. */
 export interface LifeSplit {

@@ -1,7 +1,8 @@
 // How much the growth rate changes with each entry of each phase of the year: the chain rule through the product.
+import { dot } from '../numeric/dot.ts';
 import { multiply, multiplyTransposed } from '../numeric/sparse-product.ts';
 import { entryAt, forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
-import { dot, type Vectors } from './sensitivity.ts';
+import type { Vectors } from './sensitivity.ts';
 
 export interface PhaseMap {
   readonly phase: string;

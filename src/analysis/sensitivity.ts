@@ -1,4 +1,5 @@
 // How much the growth rate changes with each entry of a matrix.
+import { dot } from '../numeric/dot.ts';
 import type { Leading } from '../numeric/leading.ts';
 import { forEachEntry, type SparseMatrix } from '../numeric/sparse.ts';
 
@@ -43,10 +44,4 @@ export function sensitivityAlong(tangent: SparseMatrix, { right, left }: Vectors
   let sum = 0;
   forEachEntry(tangent, (row, column, value) => (sum += (left[row] ?? 0) * value * (right[column] ?? 0)));
   return sum / dot(left, right);
-}
-
-export function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] ?? 0) * (b[i] ?? 0);
-  return sum;
 }

@@ -1,9 +1,10 @@
 // The first years: how far numbers can leave the path of steady growth, and for good.
+import { dot } from '../numeric/dot.ts';
 import { solveBelow } from '../numeric/downstream.ts';
 import { leading } from '../numeric/leading.ts';
 import { multiply, multiplyTransposed, product, transpose } from '../numeric/sparse-product.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
-import { dot, type Vectors } from './sensitivity.ts';
+import type { Vectors } from './sensitivity.ts';
 
 /** All against a population of the same size that grows steadily by λ from the start (1 = no difference). */
 export interface TransientBounds {

@@ -1,9 +1,10 @@
 // What the growth loses without many things one by one, each a small part of the whole: exact, from one inverse for all.
+import { dot } from '../numeric/dot.ts';
 import { solveDense } from '../numeric/dense-solve.ts';
 import { applyResolvent, resolventAt, type Resolvent } from '../numeric/resolvent.ts';
 import { seriesValue } from '../numeric/series.ts';
 import type { SparseMatrix } from '../numeric/sparse.ts';
-import { dot, type Vectors } from './sensitivity.ts';
+import type { Vectors } from './sensitivity.ts';
 
 /** How far above the growth the inverse is taken, as a share of it. */
 const above = 1e-6;

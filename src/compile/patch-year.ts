@@ -1,5 +1,6 @@
 // One patch alone for a whole year: no dispersal, no ceiling, nobody who takes, moves or releases animals. What capacities and stable spreads within a patch rest on.
 import type { Model } from '../model/model.ts';
+import { identity, times } from '../numeric/square.ts';
 import { lifeMap } from './life-map.ts';
 import { readingPhase, type Multipliers } from './multipliers.ts';
 import { dependsOnMakeUp, settledMakeUp } from './make-up.ts';
@@ -63,24 +64,6 @@ function applied(map: Float64Array, animals: Float64Array): Float64Array {
   for (let i = 0; i < n * n; i++) {
     const to = Math.floor(i / n);
     out[to] = (out[to] ?? 0) + (map[i] ?? 0) * (animals[i % n] ?? 0);
-  }
-  return out;
-}
-
-function identity(n: number): Float64Array {
-  const map = new Float64Array(n * n);
-  for (let c = 0; c < n; c++) map[c * n + c] = 1;
-  return map;
-}
-
-function times(a: Float64Array, b: Float64Array, n: number): Float64Array {
-  const out = new Float64Array(n * n);
-  for (let i = 0; i < n; i++) {
-    for (let k = 0; k < n; k++) {
-      const factor = a[i * n + k] ?? 0;
-      if (factor === 0) continue;
-      for (let j = 0; j < n; j++) out[i * n + j] = (out[i * n + j] ?? 0) + factor * (b[k * n + j] ?? 0);
-    }
   }
   return out;
 }

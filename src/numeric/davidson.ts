@@ -1,4 +1,5 @@
 // Growth and positive vector of a large sparse nonnegative matrix, from a small space that is improved step by step.
+import { dot } from './dot.ts';
 import { eigenPairs } from './eigenvalues.ts';
 
 export interface LargeProblem {
@@ -169,12 +170,6 @@ function weighted(vectors: readonly Float64Array[], weights: readonly number[]):
 
 function addTimes(into: Float64Array, factor: number, x: ArrayLike<number>): void {
   for (let i = 0; i < into.length; i++) into[i] = (into[i] ?? 0) + factor * (x[i] ?? 0);
-}
-
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] ?? 0) * (b[i] ?? 0);
-  return sum;
 }
 
 function norm(x: Float64Array): number {

@@ -1,4 +1,5 @@
 // Solves (σI − B)x = b ≥ 0 for one nonnegative block B that grows more slowly than σ.
+import { dot } from './dot.ts';
 import { applyIncomplete, incompleteFactor } from './incomplete.ts';
 import { factorShifted, solveShifted } from './shifted.ts';
 import { toDense, type SparseMatrix } from './sparse.ts';
@@ -74,10 +75,4 @@ function plus(a: Float64Array, factor: number, b: Float64Array): Float64Array {
 
 function minus(a: Float64Array, factor: number, b: Float64Array): Float64Array {
   return plus(a, -factor, b);
-}
-
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] ?? 0) * (b[i] ?? 0);
-  return sum;
 }

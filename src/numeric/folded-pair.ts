@@ -1,6 +1,7 @@
 // Growth and both positive vectors of a large irreducible block: fold, match the shift, unfold.
 import { condensedAt, foldingOf, largestStay, unfold, type Folding } from './condense.ts';
-import { dot, kernelPair, polish, settle } from './kernel-pair.ts';
+import { dot } from './dot.ts';
+import { kernelPair, polish, settle } from './kernel-pair.ts';
 import { toShares } from './positive-pair.ts';
 import type { SparseMatrix } from './sparse.ts';
 import { multiply, transpose } from './sparse-product.ts';

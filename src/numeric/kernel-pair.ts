@@ -1,5 +1,6 @@
 // Growth and positive vector of what is left of a large life cycle after folding.
 import { davidson } from './davidson.ts';
+import { dot } from './dot.ts';
 import { applyIncomplete, incompleteFactor } from './incomplete.ts';
 import { positivePair, toShares, type PositivePair } from './positive-pair.ts';
 import { toDense, type SparseMatrix } from './sparse.ts';
@@ -95,10 +96,4 @@ function eliminationCost(block: SparseMatrix): number {
     cost += length * length;
   }
   return cost;
-}
-
-export function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] ?? 0) * (b[i] ?? 0);
-  return sum;
 }

@@ -1,10 +1,11 @@
 // Long-run growth when years differ a little, from the rates that vary and how they go together: within a year, between patches and
 // from year to year.
+import { dot } from '../../numeric/dot.ts';
 import { log } from '../../machine/pinned.ts';
 import { multiply, multiplyTransposed } from '../../numeric/sparse-product.ts';
 import type { SparseMatrix } from '../../numeric/sparse.ts';
 import { phaseSensitivities, type PhaseSensitivity } from '../phase-sensitivity.ts';
-import { dot, type Vectors } from '../sensitivity.ts';
+import type { Vectors } from '../sensitivity.ts';
 import type { SmallNoise } from '../small-noise.ts';
 import type { RateColumn } from './rate-columns.ts';
 

@@ -7,7 +7,7 @@ import type { Compiled } from '../../compile/year-map.ts';
 import type { DispersalPhase, Phase } from '../../model/model.ts';
 import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import type { DenseMatrix } from '../../numeric/sparse.ts';
-import { identity, plus, times } from './small.ts';
+import { identity, plus, times } from '../../numeric/square.ts';
 import { planeMoment, type Ways } from './plane-moment.ts';
 
 export interface Land {

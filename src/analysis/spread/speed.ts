@@ -1,8 +1,9 @@
 // How fast a growing population spreads over empty land of one quality.
+import { dot } from '../../numeric/dot.ts';
 import { exp, log, pow } from '../../machine/pinned.ts';
 import { growthRateOf, leading } from '../../numeric/leading.ts';
 import { forEachEntry, sparseFromTriplets, type SparseMatrix } from '../../numeric/sparse.ts';
-import { dot, vectorsOf } from '../sensitivity.ts';
+import { vectorsOf } from '../sensitivity.ts';
 
 /** How far a transition moves along one line, in km. The last two are what kernels in the plane look like from the side. */
 export type LineKernel =

@@ -3,6 +3,7 @@ import type { Model, Phase } from '../../model/model.ts';
 import type { ModelSlopes } from '../../model/slopes/slopes.ts';
 import { leading } from '../../numeric/leading.ts';
 import { sparseFromDense } from '../../numeric/sparse.ts';
+import { identity, plus, times } from '../../numeric/square.ts';
 import { lifeMap, type LifePhase } from '../life-map.ts';
 import { dependsOnMakeUp } from '../make-up.ts';
 import { unitMultipliers, type Multipliers } from '../multipliers.ts';
@@ -50,8 +51,7 @@ function patchYearSlope({ model, slopes, patch, multipliers, multiplierSlopes }:
     const request = { model, phase: index, patch, step: 1, multipliers };
     const map = lifeMap(own, request);
     const moved = lifeSlope({ phase: own, slopes: slopes?.phases[index] ?? null, request, multiplierSlopes });
-    const [first, second] = [times(moved, year, n), times(map, slope, n)];
-    slope = first.map((value, i) => value + (second[i] ?? 0));
+    slope = plus(times(moved, year, n), times(map, slope, n));
     year = times(map, year, n);
   });
   return slope;
@@ -73,18 +73,6 @@ function lifePhase(phase: Phase): LifePhase | null {
     case 'add':
       return null;
   }
-}
-
-function identity(n: number): Float64Array {
-  return Float64Array.from({ length: n * n }, (_, i) => (i % (n + 1) === 0 ? 1 : 0));
-}
-
-function times(a: Float64Array, b: Float64Array, n: number): Float64Array {
-  return Float64Array.from({ length: n * n }, (_, i) => {
-    let sum = 0;
-    for (let k = 0; k < n; k++) sum += (a[Math.floor(i / n) * n + k] ?? 0) * (b[k * n + (i % n)] ?? 0);
-    return sum;
-  });
 }
 
 function between(left: Float64Array, matrix: Float64Array, right: Float64Array): number {

@@ -1,6 +1,7 @@
 // Partial rank correlation: how closely a measure follows one factor up or down, the others taken out.
 import { pinned } from '../../machine/pinned.ts';
 import { invertDense } from '../../numeric/dense-solve.ts';
+import { dot } from '../../numeric/dot.ts';
 import type { DenseMatrix } from '../../numeric/sparse.ts';
 import type { Band } from './again.ts';
 
@@ -60,12 +61,6 @@ function standardRanks(values: Float64Array): Float64Array | null {
   }
   const length = Math.sqrt(dot(ranks, ranks));
   return length === 0 ? null : ranks.map((rank) => rank / length);
-}
-
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] ?? 0) * (b[i] ?? 0);
-  return sum;
 }
 
 /** Null where a row follows from the others, or as good as. */
