@@ -1,18 +1,6 @@
 // What people do with animals at a place in the year: take, move, release. Each stands under a name of its own.
 import { Type } from 'typebox';
-import { byClass, classList, expression, Name, type KeyWords } from './values.ts';
-
-const patchList = {
-  title: 'a patch or a list of patches',
-};
-
-function onePatchOrMore(description: string, example: string) {
-  return Type.Union([Name, Type.Array(Name, { minItems: 1, uniqueItems: true })], {
-    ...patchList,
-    description,
-    examples: [example],
-  });
-}
+import { byClass, classList, expression, Name, patchOrMore, type KeyWords } from './values.ts';
 
 const Years = Type.Union(
   [
@@ -118,7 +106,7 @@ export const Take = Type.Object(
         'x-unit': 'animals',
       }),
     ),
-    in: Type.Optional(onePatchOrMore('Patches where animals are taken; without it, all.', 'North fen')),
+    in: Type.Optional(patchOrMore('Patches where animals are taken; without it, all.', 'North fen')),
   },
   {
     additionalProperties: false,
@@ -131,7 +119,7 @@ export const Take = Type.Object(
 export const Move = Type.Object(
   {
     kind: Type.Literal('move', { description: 'People bring animals from patch to patch.', examples: ['move'] }),
-    from: onePatchOrMore('Where they are caught.', 'Long holm'),
+    from: patchOrMore('Where they are caught.', 'Long holm'),
     to: Type.String({ ...Name, title: 'a patch', description: 'Where they are set free.', examples: ['North fen'] }),
     ...quota,
     ...survival,
@@ -147,7 +135,7 @@ export const Move = Type.Object(
 export const Add = Type.Object(
   {
     kind: Type.Literal('add', { description: 'People release animals from outside.', examples: ['add'] }),
-    in: onePatchOrMore('Where they are released.', 'Saltmarsh'),
+    in: patchOrMore('Where they are released.', 'Saltmarsh'),
     number: byClass({
       description: 'How many of each class, in each of these patches.',
       examples: [10],

@@ -1,6 +1,7 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
 import { Type, type Static } from 'typebox';
-import { Actions, Money, Scenarios, type Action } from './actions.ts';
+import { Actions, Scenarios, type Action } from './actions.ts';
+import { Money } from './cost.ts';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Duration, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';

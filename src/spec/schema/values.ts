@@ -45,6 +45,14 @@ export function quantity(dimension: Dimension, words: KeyWords) {
 /** A name that the author chooses or uses. */
 export const Name = Type.String({ minLength: 1, format: 'name', title: 'a name' });
 
+export function patchOrMore(description: string, example: string) {
+  return Type.Union([Name, Type.Array(Name, { minItems: 1, uniqueItems: true })], {
+    title: 'a patch or a list of patches',
+    description,
+    examples: [example],
+  });
+}
+
 /** Class name to expression. */
 export function byClass(words: KeyWords) {
   return Type.Record(Type.String(), timed(words), {
