@@ -5,7 +5,8 @@ import type { SpecPath } from '../spec/document.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Patch, Sex } from './model.ts';
-import type { Attributes, Drivers, Numbers } from './numbers.ts';
+import type { Attributes } from './definitions.ts';
+import type { Drivers, Numbers } from './numbers.ts';
 
 export interface Names {
   readonly patches: ReadonlyMap<string, number>;

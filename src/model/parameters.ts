@@ -2,7 +2,7 @@
 import type { Spec } from '../spec/schema/spec.ts';
 import { fail, type Context } from './context.ts';
 import type { NamedNumber } from './model.ts';
-import type { NamedExpression } from './numbers.ts';
+import type { NamedExpression } from './definitions.ts';
 
 type ParameterSpec = NonNullable<Spec['parameters']>[string];
 

@@ -5,7 +5,8 @@ import type { Finding } from '../spec/finding.ts';
 import type { InlinePatchSpec, Spec } from '../spec/schema/spec.ts';
 import { onEllipsoid, onPlane, type Ground } from './geography.ts';
 import type { Patch } from './model.ts';
-import type { Attribute, Attributes, Numbers } from './numbers.ts';
+import type { Attribute, Attributes } from './definitions.ts';
+import type { Numbers } from './numbers.ts';
 import { readOutline } from './outline.ts';
 import { areDegrees, readPosition, warnOfDegrees, type Places } from './position.ts';
 
