@@ -81,7 +81,9 @@ export class Numbers {
 
   /** The mean over all resampled years where the expression rests on them, else what it is. */
   #overYears(ast: Ast, valueInYear: () => number): number {
-    if (!this.#resampled.names.some((name) => this.#definitions.namesBehind(ast).has(name))) return valueInYear();
+    const { names } = this.#resampled;
+    const behind = names.length > 0 ? this.#definitions.namesBehind(ast) : null;
+    if (!names.some((name) => behind?.has(name))) return valueInYear();
     const mean = this.#resampled.mean(() => {
       this.#memo = new Map();
       return valueInYear();
@@ -157,8 +159,12 @@ export class Numbers {
     if (name === 'year') return 0;
     const attribute = where.attributes?.get(name);
     if (typeof attribute === 'number') return 0;
-    if (attribute !== undefined)
-      return this.slope(attribute.expression, attribute.path, { ...where, ...attribute }, parameter);
+    if (attribute !== undefined) {
+      // Within the year at hand: the mean over all years is taken around the whole.
+      const ast = this.#definitions.parse(attribute.expression, attribute.path, attribute.dimension);
+      const rests = ast !== null && this.#definitions.namesBehind(ast).has(parameter);
+      return rests ? this.#slopeOf(ast, where, parameter) : 0;
+    }
     if (name === parameter) return 1;
     const made = this.#definitions.parameter(name);
     if (made === undefined || !this.#definitions.namesBehind(made.ast).has(parameter)) return 0;

@@ -119,6 +119,28 @@ natal:
   });
 });
 
+test('rates and attributes over drivers whose years are drawn', () => {
+  const compiled = compileText(`
+skein: 1
+study: { title: Slopes over drawn years, invented: true }
+first-year: 2027
+years: 3
+patches:
+  - { name: A, cover: "0.4 + wet * rain" }
+  - { name: B, cover: "0.9 - wet * rain ^ 2" }
+counts: females
+classes: [adult]
+oldest: open-ended
+parameters: { wet: 0.2, s: 0.7 }
+drivers: { values: { rain: { 2020: 0.6, 2021: 1.1, 2022: 1.5 } }, future: resample-years }
+survival: { adult: "s ^ rain * cover" }
+births: { adult: 2 * cover * rain }
+year: [count, breeding, survival, ageing]
+start: { table: { A: { adult: 100 }, B: { adult: 100 } } }
+`);
+  expect(compare(compiled, new Float64Array(2))).toEqual(['wet', 's']);
+});
+
 test('a table of shares, a survival on the way, and nested phases', () => {
   const compiled = compileText(
     frame(`
