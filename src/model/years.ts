@@ -1,7 +1,7 @@
 // Years that are written, as steps.
 import type { SpecPath } from '../spec/document.ts';
 import type { TakeSpec } from '../spec/schema/spec.ts';
-import { readQuantity } from '../spec/quantity.ts';
+import { readWholeYears } from '../spec/quantity.ts';
 import { fail, type Context } from './context.ts';
 
 type YearsSpec = TakeSpec['years'];
@@ -37,9 +37,8 @@ function tellOutside(context: Context, path: SpecPath, found: string): void {
 /** A length of time in whole steps, 1 where none is given. */
 export function wholeYears(context: Context, quantity: number | string | undefined, path: SpecPath): number {
   if (quantity === undefined) return 1;
-  const read = readQuantity(quantity, 'time');
-  const years = read.ok ? read.value : NaN;
-  if (Number.isInteger(years) && years >= 1) return years;
+  const years = readWholeYears(quantity);
+  if (years !== null) return years;
   fail(context, 'out-of-range', path, {
     message: 'A step is a year, so this is a whole number of years',
     details: { found: String(quantity), expected: 'such as `2 years`' },

@@ -57,6 +57,12 @@ export function readQuantity(text: string | number, dimension: Dimension): Quant
   return unitError({ message, span: ast.span, found: String(text), expected: dimensionWords[dimension] });
 }
 
+/** A length of time in years, null where it is not a whole number of them from 1. */
+export function readWholeYears(text: string | number): number | null {
+  const read = readQuantity(text, 'time');
+  return read.ok && Number.isInteger(read.value) && read.value >= 1 ? read.value : null;
+}
+
 /** An expression with or without a unit, as an expression in the base unit of its dimension. */
 export function readMeasure(text: string | number, dimension: Dimension): Measured {
   const parts = typeof text === 'number' ? undefined : splitUnit(text);

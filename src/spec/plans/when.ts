@@ -1,6 +1,6 @@
 // The years of an effect.
 import type { SpecPath } from '../document.ts';
-import { readQuantity } from '../quantity.ts';
+import { readWholeYears } from '../quantity.ts';
 import type { When } from './compose.ts';
 import type { Draft } from './draft.ts';
 import { tellMistake } from './tell.ts';
@@ -32,9 +32,8 @@ export function whenOf(draft: Draft, { from, until, over }: WhenSpec, path: Spec
 
 function yearsOf(draft: Draft, over: number | string | undefined, path: SpecPath): number {
   if (over === undefined) return 1;
-  const read = readQuantity(over, 'time');
-  const years = read.ok ? read.value : NaN;
-  if (Number.isInteger(years) && years >= 1) return years;
+  const years = readWholeYears(over);
+  if (years !== null) return years;
   tellMistake(draft, 'plan-shape', path, {
     message: 'An effect grows over a whole number of years',
     details: { found: String(over), expected: 'such as `8 years`' },
