@@ -4,8 +4,8 @@ import { fail, type Context } from '../context.ts';
 import type { Phase } from '../model.ts';
 import { distributionOf, numberAt } from './distribution.ts';
 
-/** How far out, in SDs of the normal numbers, births must stay within the largest litter; beyond it the kernel holds them to it. */
-const lookedAt = 4;
+/** How far out, in SDs of the normal numbers, a rate must stay within its bounds; beyond it the kernel holds it to them. */
+export const lookedAt = 4;
 
 /** Rates that vary by themselves; what is worked out from parameters is looked at with its bounds. */
 export function refuseBeyondLitters(context: Context, phases: readonly Phase[], varied: readonly Varied[]): void {

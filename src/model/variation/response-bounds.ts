@@ -7,10 +7,8 @@ import { fail, type Context } from '../context.ts';
 import type { Phase } from '../model.ts';
 import { whereIn } from '../rates.ts';
 import { distributionOf, numberAt } from './distribution.ts';
-import { largestLitter } from './litter-bounds.ts';
+import { largestLitter, lookedAt } from './litter-bounds.ts';
 
-/** How far out, in SDs of the normal numbers, a rate must stay within its bounds; beyond it the kernel holds it to them. */
-const lookedAt = 4;
 /** So many parameters are looked at high and low. */
 const mostHighAndLow = 6;
 const mostYears = 200;
