@@ -2,6 +2,7 @@
 import type { Interval } from '../results/results.ts';
 import type { Objective } from './objectives.ts';
 import {
+  meanDifferenceFromRuns,
   meanDifferenceFromUnknown,
   overDrawsMethod,
   shareDifferenceFromRuns,
@@ -86,7 +87,7 @@ function ofMeans({ draws, futures }: PlansRun, { objective, from, to }: Pair, en
     return { estimate, interval: named(ends, pairedMeanMethod), intervalFromUnknown: null, futures: null };
   }
   const each = draws.map((draw) => differences(draw.first, draw.futures));
-  const { estimate, ...ends } = meanDifference(Float64Array.from(each, (draw) => meanDifference(draw).estimate));
+  const { estimate, ...ends } = meanDifferenceFromRuns(each);
   const interval = named(ends, overDrawsMethod);
   return { estimate, interval, intervalFromUnknown: meanDifferenceFromUnknown(each), futures: null };
 }

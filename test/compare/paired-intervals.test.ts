@@ -1,7 +1,12 @@
 // Whether paired intervals hold what they claim: 95 of 100 of the time, over futures and over draws.
 import { expect, test } from 'vitest';
 import { meanDifference } from '../../src/compare/paired-mean.ts';
-import { shareDifferenceFromRuns, shareDifferenceFromUnknown } from '../../src/compare/over-draws.ts';
+import {
+  meanDifferenceFromRuns,
+  meanDifferenceFromUnknown,
+  shareDifferenceFromRuns,
+  shareDifferenceFromUnknown,
+} from '../../src/compare/over-draws.ts';
 import { countPairs, pairedShareDifference, type PairedCounts } from '../../src/compare/paired-share.ts';
 import { uniformAt } from '../../src/machine/random.ts';
 import { normalQuantile } from '../../src/numeric/normal-quantile.ts';
@@ -188,4 +193,15 @@ test('draws that all agree leave as much room as so many futures would', () => {
   const { estimate, lower, upper } = shareDifferenceFromRuns(draws);
   expect([estimate, upper > 0.05, lower < -0.05]).toEqual([0, true, true]);
   expect(shareDifferenceFromUnknown(draws)).toMatchObject({ lower: 0, upper: 0, from: 'what is not known' });
+});
+
+test('a draw of which no future came to its end changes nothing', () => {
+  const draws = [3, 5, 4].map((onlyFrom) => ({ both: 2, onlyFrom, onlyTo: 1, neither: 9 }));
+  const none = { both: 0, onlyFrom: 0, onlyTo: 0, neither: 0 };
+  expect(shareDifferenceFromRuns([...draws, none])).toEqual(shareDifferenceFromRuns(draws));
+  expect(shareDifferenceFromUnknown([...draws, none])).toEqual(shareDifferenceFromUnknown(draws));
+  const means = [Float64Array.of(1, 2), Float64Array.of(3, 5)];
+  expect(meanDifferenceFromRuns(means).estimate).toBe(2.75);
+  expect(meanDifferenceFromRuns([...means, new Float64Array(0)])).toEqual(meanDifferenceFromRuns(means));
+  expect(meanDifferenceFromUnknown([...means, new Float64Array(0)])).toEqual(meanDifferenceFromUnknown(means));
 });
