@@ -60,7 +60,9 @@ export function rankScenarios({ quantity, better, scenarios, factors }: RankingR
       (_unused, row) => sign * ((first[s]?.[row] ?? NaN) + (second[s]?.[row] ?? NaN)),
     ),
   );
-  const known = Array.from({ length: points }, (_, row) => row).filter((row) => !Number.isNaN(worst[0]?.[row] ?? NaN));
+  // A measure may be missing under one scenario only, such as animals that stand still.
+  const isKnown = (row: number): boolean => worst.every((values) => !Number.isNaN(values[row] ?? NaN));
+  const known = Array.from({ length: points }, (_, row) => row).filter(isKnown);
   const noisy = scenarios.some(({ observed }) => observed.first !== observed.second);
   const best = bestShares(worst, known);
   return {
@@ -70,8 +72,7 @@ export function rankScenarios({ quantity, better, scenarios, factors }: RankingR
     agree: noisy ? agreement(first, second, { known, sign }) : null,
     factors: factors
       .map(({ name, values, rows }) => {
-        const whole = rows.filter((row) => !Number.isNaN(worst[0]?.[row] ?? NaN));
-        return factorRanking(name, values, { worst, scenarios, rows: whole, best });
+        return factorRanking(name, values, { worst, scenarios, rows: rows.filter(isKnown), best });
       })
       .toSorted((a, b) => (b.decides ?? -1) - (a.decides ?? -1)),
   };

@@ -86,13 +86,17 @@ interface QuantityColumn {
   readonly unit: string;
   readonly meaning: string;
   readonly observed: Observed;
+  /** Whether it is the growth of the model, of which it matters where it goes through 1. */
+  readonly growth: boolean;
 }
 
 function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
   return manifest.quantities.flatMap((quantity) => {
     const column = manifest.columns.find(({ name }) => name === columnOf(quantity.name, quantity.scenario));
     const observed = column === undefined ? null : observedOf(numbers, column.name);
-    return column === undefined || observed === null ? [] : [{ ...column, observed }];
+    return column === undefined || observed === null
+      ? []
+      : [{ ...column, observed, growth: quantity.name === 'growth' }];
   });
 }
 
@@ -121,7 +125,7 @@ function differenceColumns({ manifest, numbers }: Swept): readonly QuantityColum
     const observed = { first: one, second: half ? one : less(own.second, first.second) };
     const unit = column.unit === 'share' ? differenceOfShares : column.unit;
     const meaning = `${name} of ${String(scenario)} less that of ${base}, in the same futures.`;
-    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed }];
+    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed, growth: false }];
   });
 }
 
@@ -141,7 +145,7 @@ function rankingsOf(swept: Swept): readonly Ranking[] {
   });
 }
 
-function summariseQuantity(swept: Swept, { name, unit, meaning, observed }: QuantityColumn): QuantitySummary {
+function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth }: QuantityColumn): QuantitySummary {
   const { design, runs } = swept.manifest;
   const whole = swept.numbers.get(name) ?? observed.first.map((_, row) => wholeAt(observed, row));
   const known = whole.filter((value) => !Number.isNaN(value));
@@ -157,7 +161,7 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed }: Quan
     return {
       name: factor.name,
       response,
-      throughOne: name.startsWith('growth') && !name.includes(' less ') ? crossings(response, 1) : null,
+      throughOne: growth ? crossings(response, 1) : null,
       shares: shares?.factors[k] ?? null,
       screen: screens[k] ?? null,
       rankCorrelation: ranks[k] ?? null,
