@@ -57,7 +57,7 @@ function correlation(spec: Spec, times: number): Variant {
     return without(variant, 'no rate varies from year to year in several patches');
   }
   const scaled = scaledCorrelation(between, times);
-  if (scaled === null) return without(variant, 'the correlation is 0, and stays so');
+  if (scaled === null) return without(variant, 'the correlation is 0 or 1, and stays so');
   return made(variant, scaled.words, { ...spec, variation: { ...spec.variation, 'between-patches': scaled.value } });
 }
 
@@ -68,7 +68,9 @@ function scaledCorrelation(
 ): { readonly value: Between; readonly words: string } | null {
   const of = (value: number): number => Math.max(-1, Math.min(1, value * times));
   if (typeof between === 'number') {
-    return between === 0 ? null : { value: of(between), words: `a correlation of ${of(between)} between patches` };
+    return of(between) === between
+      ? null
+      : { value: of(between), words: `a correlation of ${of(between)} between patches` };
   }
   const range = Object.entries(between).find(([key]) => key === 'range')?.[1];
   if (typeof range === 'number' || typeof range === 'string') {
@@ -120,6 +122,8 @@ function threshold(spec: Spec): Variant {
   if (first === undefined) return without(variant, 'the model names no outcome');
   const [name, outcome] = first;
   const half = (value: number): number => Math.max(1, value / 2);
+  if ((outcome.below ?? outcome.above) === 1)
+    return without(variant, `“${name}” is at 1 animal, of which there is no half`);
   const changed =
     outcome.below !== undefined
       ? { ...outcome, below: half(outcome.below) }

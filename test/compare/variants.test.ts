@@ -83,6 +83,14 @@ describe('the variants of a model', () => {
     const why = Object.fromEntries(variantsOf(plain).map(({ variant, notRun }) => [variant, notRun]));
     expect(why['half the correlation between patches']).toContain('no rate varies');
     expect(why['a second threshold']).toContain('no threshold in animals');
+    const ends = specOf(dig, [
+      ['{ range: 10 km }', '1'],
+      ['below: 6', 'below: 1'],
+    ]);
+    const atEnds = Object.fromEntries(variantsOf(ends).map(({ variant, notRun }) => [variant, notRun]));
+    expect(atEnds['half the correlation between patches']).toBeNull();
+    expect(atEnds['double the correlation between patches']).toBe('the correlation is 0 or 1, and stays so');
+    expect(atEnds['a second threshold']).toBe('“few” is at 1 animal, of which there is no half');
     const without = { ...plain, actions: {}, scenarios: {} };
     expect(variantsOf(without).at(-1)!.notRun).toBe('no plan has an action');
   });
