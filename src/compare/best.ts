@@ -40,8 +40,8 @@ export function sharesBeaten(objectives: readonly ObjectiveRows[]): Float64Array
   return shares.map((rows) => rows / (first?.rows.length ?? 1));
 }
 
-/** Less is better in all. */
-function isBeaten(values: readonly (Float64Array | undefined)[], plan: number): boolean {
+/** Whether some other plan is at least as good in every row and better in one; less is better in all. */
+export function isBeaten(values: readonly (ArrayLike<number> | undefined)[], plan: number): boolean {
   const plans = values[0]?.length ?? 0;
   for (let other = 0; other < plans; other++) {
     const steps = values.map((row) => (row?.[other] ?? 0) - (row?.[plan] ?? 0));

@@ -1,4 +1,5 @@
 // One plan by itself, with what it costs and whether another is at least as good in everything.
+import { isBeaten } from './best.ts';
 import { meanOf, varianceOf } from './paired-mean.ts';
 import type { Objective } from './objectives.ts';
 import type { Amount, ComparedPlan, OverBoth, PlanCost, PlanDifference, RiskPrice } from './results.ts';
@@ -84,13 +85,7 @@ function notBeatenIn({ objectives, ended }: Beside): readonly boolean[] {
       (plan) => (better === 'less' ? 1 : -1) * meanOf(Float64Array.from(plan).filter((_, i) => ended[i] === 1)),
     ),
   );
-  return Array.from({ length: plans }, (_, p) => {
-    const beats = (other: number): boolean => {
-      const steps = means.map((row) => (row[other] ?? 0) - (row[p] ?? 0));
-      return steps.every((step) => step <= 0) && steps.some((step) => step < 0);
-    };
-    return !Array.from({ length: plans }, (_, other) => other).some((other) => other !== p && beats(other));
-  });
+  return Array.from({ length: plans }, (_, p) => !isBeaten(means, p));
 }
 
 function pricesOf({ runs }: PlansRun, p: number, { differences }: Beside): readonly RiskPrice[] {

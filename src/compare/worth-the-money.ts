@@ -1,4 +1,5 @@
 // Money against risk: which plans are not beaten in both, what a further step costs, and what risk less costs.
+import { isBeaten } from './best.ts';
 
 export interface CostAndRisk {
   readonly cost: number;
@@ -7,13 +8,8 @@ export interface CostAndRisk {
 
 /** Plans that no other plan beats: none costs at most as much with at most the risk, one of the two truly less. */
 export function notBeaten(plans: readonly CostAndRisk[]): readonly boolean[] {
-  return plans.map(
-    (plan) =>
-      !plans.some(
-        (other) =>
-          other.cost <= plan.cost && other.risk <= plan.risk && (other.cost < plan.cost || other.risk < plan.risk),
-      ),
-  );
+  const values = [plans.map(({ cost }) => cost), plans.map(({ risk }) => risk)];
+  return plans.map((_, plan) => !isBeaten(values, plan));
 }
 
 export interface Step {

@@ -71,7 +71,9 @@ test('differences are those of the same futures, and chances of being best share
 
 test('a plan without effect differs by exactly zero, and what it costs buys no reliable gain', async () => {
   const { differences, scenarios, best } = await compared(plans());
-  for (const one of differences.filter(({ from, to, of }) => from === 'as now' && to === 'posters' && of !== 'money')) {
+  const same = differences.filter(({ from, to, of }) => from === 'as now' && to === 'posters' && of !== 'money');
+  expect(same.map(({ outcome }) => outcome)).toEqual(['few', 'animals at the end', 'lowest count']);
+  for (const one of same) {
     expect([one.estimate, one.interval.lower, one.interval.upper, one.toldApart]).toEqual([0, 0, 0, false]);
   }
   const [, fence, posters] = scenarios;
