@@ -118,6 +118,16 @@ describe.each(['shifted', 'schematic'])('--places %s', (places) => {
     const page = written(cwd, 'page.html');
     expect(page).not.toMatch(/the way is|distance: /);
     expect(page).toMatch(/a share of [\d.]+ turns back/);
+    const plan = `actions:
+  larger copse: { kind: habitat, in: Mill copse, capacity: { add: 20 } }
+scenarios: { larger: [larger copse] }
+`;
+    appendFileSync(join(cwd, 'road.yaml'), plan);
+    skein(['report', 'road.yaml', ...few, '-o', 'plans.html', '--places', places, '--quiet'], { cwd });
+    const plans = written(cwd, 'plans.html');
+    expect(plans).toContain('larger copse');
+    expect(plans).not.toMatch(/the way is|distance: /);
+    expect(plans).toMatch(/a share of [\d.]+ turns back/);
   });
 });
 

@@ -5,9 +5,8 @@ import { compareSpec } from '../../compare/compare-spec.ts';
 import { plansOf } from '../../compare/plans-of.ts';
 import type { PlanRun } from '../../compare/plans-run.ts';
 import type { Comparison } from '../../compare/results.ts';
-import type { Model } from '../../model/model.ts';
 import { followPath } from '../../pipeline.ts';
-import { withHiding, type Hidden } from '../../report/hiding/hide.ts';
+import { hiddenPlan, withHiding, type Hidden } from '../../report/hiding/hide.ts';
 import type { PlanReport } from '../../report/plans/input.ts';
 import { buildPlansReport } from '../../report/plans/report.ts';
 import { printSpec } from '../../spec/print.ts';
@@ -66,21 +65,12 @@ function planInput({ compiled, results }: PlanRun, hidden: Hidden | null): PlanR
   return {
     results: withHiding(results, hidden),
     path: followPath(compiled),
-    model: hidden === null ? compiled.model : withPlacesOf(compiled.model, hidden.model),
+    model: hidden === null ? compiled.model : hiddenPlan(compiled.model, hidden),
     landscape: compiled.landscape,
     coefficients: compiled.coefficients,
     patchValues: patchValues(compiled),
     ...(hidden === null ? {} : { hiding: hidden }),
   };
-}
-
-/** All plans are drawn where the first one is: places that are moved twice could be averaged. A new patch has no place then. */
-function withPlacesOf(model: Model, hidden: Model): Model {
-  const patches = model.patches.map(({ name, capacity, fileOrder }) => {
-    const known = hidden.patches.find((patch) => patch.name === name);
-    return { name, at: null, areaKm2: null, ...known, capacity, fileOrder };
-  });
-  return { ...hidden, ...model, patches, phases: model.phases };
 }
 
 function hiddenComparison(comparison: Comparison, hidden: Hidden | null): Comparison {

@@ -42,6 +42,15 @@ export function hidePlaces({ model, spec }: Pick<CompiledModel, 'model' | 'spec'
   };
 }
 
+/** All plans are drawn where the first one is: places that are moved twice could be averaged. A new patch has no place then. */
+export function hiddenPlan(plan: Model, { model: hidden }: Pick<Hidden, 'model'>): Model {
+  const patches = plan.patches.map(({ name, capacity, fileOrder }): Patch => {
+    const known = hidden.patches.find((patch) => patch.name === name);
+    return { name, at: null, areaKm2: null, ...known, capacity, fileOrder };
+  });
+  return { ...plan, patches, phases: plan.phases.map(hiddenPhase) };
+}
+
 function hiddenPatch({ name, areaKm2, capacity, fileOrder }: Patch, at: Patch['at']): Patch {
   return { name, at, areaKm2: areaKm2 === null ? null : coarse(areaKm2), capacity, fileOrder };
 }
