@@ -1,17 +1,12 @@
 // skein sweep merge: joins what shards of one sweep made.
 import { readFileSync } from 'node:fs';
-import { join } from 'node:path';
-import { sweepText } from '../../report/sweep-text.ts';
 import { Ending, exitCodes } from '../exit.ts';
-import { writeOut } from '../output.ts';
 import { finishSweep } from '../sweep/finish.ts';
 import { differenceOf } from '../sweep/difference.ts';
 import { openSweep, type OpenedSweep } from '../sweep/opened.ts';
 import { finishedParts, openStore, partPath, type Store } from '../sweep/store.ts';
-import { terminalOf } from '../terminal.ts';
+import { tellSweep, writeLog } from '../sweep/tell.ts';
 import { missingWords } from '../sweep/missing.ts';
-import { pendingFile } from '../files.ts';
-import { logOf } from '../log.ts';
 
 export interface MergeOptions {
   readonly out: string;
@@ -37,10 +32,8 @@ export async function mergeSweeps(folders: readonly string[], { out, json, quiet
     if (missing !== null)
       throw new Ending(exitCodes.work, `${out} is not complete: ${missing}. What is there is kept.`);
     const summary = await finishSweep(out, manifest);
-    const log = logOf({ command: 'sweep merge', hash: manifest.hash, started, threads: 1 });
-    pendingFile(join(out, 'log.json')).finish(`${JSON.stringify(log, null, 2)}\n`);
-    if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
-    else if (quiet !== true) writeOut(`${sweepText(summary, terminalOf(process.stdout)).trimEnd()}\n`);
+    writeLog(out, { command: 'sweep merge', hash: manifest.hash, started, threads: 1 });
+    if (json === true || quiet !== true) tellSweep(summary, json);
   } finally {
     store.close();
   }

@@ -1,15 +1,13 @@
 // skein sweep summary: what a whole sweep says.
 import { sweepPage } from '../../report/sweep-page.ts';
-import { sweepText } from '../../report/sweep-text.ts';
 import { summariseSweep } from '../../sweep/summary/summarise.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { pendingFile } from '../files.ts';
-import { writeOut } from '../output.ts';
 import { missingWords } from '../sweep/missing.ts';
 import { openSweep } from '../sweep/opened.ts';
 import { readSwept } from '../sweep/read-parts.ts';
 import { finishedParts } from '../sweep/store.ts';
-import { terminalOf } from '../terminal.ts';
+import { tellSweep } from '../sweep/tell.ts';
 
 export interface SummaryOptions {
   readonly json?: boolean;
@@ -25,6 +23,5 @@ export async function summariseFolder(folder: string, { json, page }: SummaryOpt
   const swept = await readSwept(folder, manifest);
   const summary = summariseSweep(swept);
   file?.finish(sweepPage(swept, summary));
-  if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
-  else writeOut(`${sweepText(summary, terminalOf(process.stdout)).trimEnd()}\n`);
+  tellSweep(summary, json);
 }

@@ -1,26 +1,23 @@
 // skein sweep: very many points of one model, in a folder that survives anything.
 import { availableParallelism } from 'node:os';
-import { join } from 'node:path';
-import { sweepText } from '../../report/sweep-text.ts';
 import { locateFinding, type Finding } from '../../spec/finding.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import { manifestOf, type Manifest } from '../../sweep/manifest.ts';
 import { planSweep, type SweepPlan } from '../../sweep/request.ts';
 import { Ending, exitCodes } from '../exit.ts';
-import { pendingFile } from '../files.ts';
 import { loadModel, tellDiagnostics, toldAlready, type LoadedModel } from '../load.ts';
-import { logOf } from '../log.ts';
 import { settingsOf } from '../options.ts';
-import { writeError, writeOut } from '../output.ts';
+import { writeError } from '../output.ts';
 import { specJson } from '../spec-json.ts';
 import { fillStore, msAPoint } from '../sweep/fill.ts';
 import { finishSweep } from '../sweep/finish.ts';
 import { askedOf, type SweepOptions } from '../sweep/flags.ts';
 import { costText, planText } from '../sweep/plan-text.ts';
 import { openStore, type Store } from '../sweep/store.ts';
-import { terminalOf } from '../terminal.ts';
+import { tellSweep, writeLog } from '../sweep/tell.ts';
 
 export async function sweepCommand(path: string, options: SweepOptions): Promise<void> {
+  const started = new Date();
   const loaded = loadModel(path, settingsOf(options), options);
   const spec = withoutSweep(loaded.compiled.spec);
   const manifest = manifestOf({ ...loaded.compiled, spec }, planOf(loaded, options), specJson(spec));
@@ -34,7 +31,7 @@ export async function sweepCommand(path: string, options: SweepOptions): Promise
   const store = openStore(options.out, manifest);
   try {
     await fillStore(store, { spec, manifest, threads, shard: options.shard, quiet });
-    await finish(store, { manifest, threads }, options);
+    await finish(store, { manifest, threads, started }, options);
   } catch (error) {
     throw error instanceof Ending ? withGoOn(error) : error;
   } finally {
@@ -45,10 +42,14 @@ export async function sweepCommand(path: string, options: SweepOptions): Promise
 interface Done {
   readonly manifest: Manifest;
   readonly threads: number;
+  readonly started: Date;
 }
 
-async function finish(store: Store, { manifest, threads }: Done, { quiet, json }: SweepOptions): Promise<void> {
-  const started = new Date();
+async function finish(
+  store: Store,
+  { manifest, threads, started }: Done,
+  { quiet, json }: SweepOptions,
+): Promise<void> {
   const missing = manifest.parts - store.finished().size;
   if (missing > 0) {
     const others = `${missing} of ${manifest.parts} parts are for others`;
@@ -56,10 +57,8 @@ async function finish(store: Store, { manifest, threads }: Done, { quiet, json }
     return;
   }
   const summary = await finishSweep(store.folder, manifest);
-  const log = logOf({ command: 'sweep', hash: manifest.hash, started, threads });
-  pendingFile(join(store.folder, 'log.json')).finish(`${JSON.stringify(log, null, 2)}\n`);
-  if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
-  else writeOut(`${sweepText(summary, terminalOf(process.stdout)).trimEnd()}\n`);
+  writeLog(store.folder, { command: 'sweep', hash: manifest.hash, started, threads });
+  tellSweep(summary, json);
 }
 
 function withoutSweep({ named, ...core }: Spec): Spec {
