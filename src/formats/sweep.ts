@@ -1,5 +1,6 @@
 // The manifest of a sweep, and what a sweep says.
 import { Type } from 'typebox';
+import { designNames } from '../spec/schema/sweep.ts';
 import * as part from './parts.ts';
 
 const Value = Type.Union([Type.Number(), Type.String()], { description: 'A number in its base unit, or a name.' });
@@ -26,15 +27,7 @@ const Factor = Type.Object({
   range: Range,
 });
 
-const designName = Type.Union([
-  Type.Literal('grid'),
-  Type.Literal('list'),
-  Type.Literal('latin hypercube'),
-  Type.Literal('sobol'),
-  Type.Literal('one at a time'),
-  Type.Literal('sobol indices'),
-  Type.Literal('morris'),
-]);
+const designName = Type.Union([...designNames]);
 
 const Design = Type.Object({
   design: designName,

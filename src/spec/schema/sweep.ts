@@ -49,26 +49,26 @@ const Swept = Type.Union([Type.Array(SweptValue, { minItems: 1, uniqueItems: tru
   examples: ['{ from: 0.45, to: 0.7 }'],
 });
 
+/** The names of designs. */
+export const designNames = [
+  Type.Literal('grid'),
+  Type.Literal('list'),
+  Type.Literal('latin hypercube'),
+  Type.Literal('sobol'),
+  Type.Literal('one at a time'),
+  Type.Literal('sobol indices'),
+  Type.Literal('morris'),
+] as const;
+
 export const Sweep = Type.Object(
   {
     design: Type.Optional(
-      Type.Union(
-        [
-          Type.Literal('grid'),
-          Type.Literal('list'),
-          Type.Literal('latin hypercube'),
-          Type.Literal('sobol'),
-          Type.Literal('one at a time'),
-          Type.Literal('sobol indices'),
-          Type.Literal('morris'),
-        ],
-        {
-          description:
-            'Which points: every combination; a list; a Latin hypercube; Sobol points; one number after the other; rows for shares of variance; walks for screening.',
-          examples: ['latin hypercube'],
-          default: 'grid',
-        },
-      ),
+      Type.Union([...designNames], {
+        description:
+          'Which points: every combination; a list; a Latin hypercube; Sobol points; one number after the other; rows for shares of variance; walks for screening.',
+        examples: ['latin hypercube'],
+        default: 'grid',
+      }),
     ),
     over: Type.Optional(
       Type.Record(Type.String(), Swept, {
