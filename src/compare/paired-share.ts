@@ -1,4 +1,5 @@
 // The difference between two shares that were counted in the same futures.
+import { z975 as z } from '../numeric/normal-quantile.ts';
 
 /** Futures by what became of them under two plans that met the same chance. */
 export interface PairedCounts {
@@ -13,9 +14,6 @@ export interface Estimate {
   readonly lower: number;
   readonly upper: number;
 }
-
-/** Standard normal quantile of 0.975. */
-const z = 1.959963984540054;
 
 export const pairedShareMethod = 'paired shares, Bonett & Price 2012';
 

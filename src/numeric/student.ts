@@ -2,9 +2,8 @@
 import { exp, log } from '../machine/pinned.ts';
 import { betaTails } from './chance/beta.ts';
 import { findRoot } from './root.ts';
+import { z975 as z } from './normal-quantile.ts';
 
-/** z with Φ(z) = 0.975. */
-const z = 1.959963984540054;
 /** From here on the expansion around the normal curve is exact to about 1e-10. */
 const manyDegrees = 2000;
 

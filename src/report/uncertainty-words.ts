@@ -1,8 +1,7 @@
 // What is not known, in words: each uncertain parameter with the middle 95 % of its draws.
 import type { Uncertainty } from '../model/chance.ts';
 import { valueAt } from '../model/uncertainty/distribution.ts';
-
-const z975 = 1.959963984540054;
+import { z975 } from '../numeric/normal-quantile.ts';
 
 export function uncertaintyWords(uncertainty: Uncertainty | null): readonly string[] {
   if (uncertainty === null) return [];

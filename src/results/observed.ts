@@ -3,9 +3,7 @@ import type { Model, ObservedCounts } from '../model/model.ts';
 import { watchedCounts } from '../model/watched.ts';
 import type { Reduction } from './reduction/reduction.ts';
 import type { ComparedCount, ObservedResult, YearSummary } from './results.ts';
-
-/** Half of a 95 % interval of a normal error. */
-const z975 = 1.959963984540054;
+import { z975 } from '../numeric/normal-quantile.ts';
 
 /** Undefined where nothing was counted. */
 export function summariseObserved(model: Model, reduction: Reduction): ObservedResult | undefined {

@@ -1,9 +1,7 @@
 // Intervals of a chance from a number of runs.
 import { pinned } from '../machine/pinned.ts';
 import type { Interval } from './results.ts';
-
-/** Standard normal quantile of 0.975. */
-const z = 1.959963984540054;
+import { z975 as z } from '../numeric/normal-quantile.ts';
 
 /** 95 % interval of Wilson (1927) for `hits` of `runs`: within 0 to 1, and of use for no hit and for nothing but hits. */
 export function wilson(hits: number, runs: number): Interval {

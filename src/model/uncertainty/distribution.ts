@@ -4,6 +4,7 @@ import { exp } from '../../machine/pinned.ts';
 import { logitNormalMoments } from '../../numeric/chance/logit-normal.ts';
 import { findRoot } from '../../numeric/root.ts';
 import { distributionOf, largestSd, numberAt, type Distribution } from '../variation/distribution.ts';
+import { z975 } from '../../numeric/normal-quantile.ts';
 
 export type UncertainDistribution =
   | Distribution
@@ -12,9 +13,6 @@ export type UncertainDistribution =
   | { readonly shape: 'triangular'; readonly low: number; readonly mode: number; readonly high: number };
 
 export type NumberKind = 'share' | 'positive number' | 'number';
-
-/** Standard normal quantile of 0.975. */
-const z975 = 1.959963984540054;
 
 export interface Estimate {
   readonly value: number;

@@ -4,6 +4,7 @@ import { invertDense } from '../../numeric/dense-solve.ts';
 import { dot } from '../../numeric/dot.ts';
 import type { DenseMatrix } from '../../numeric/sparse.ts';
 import type { Band } from './again.ts';
+import { z975 } from '../../numeric/normal-quantile.ts';
 
 export interface RankCorrelation {
   /** From −1 to 1. */
@@ -76,7 +77,7 @@ function inverseOf(matrix: DenseMatrix): DenseMatrix | null {
 function fisherBand(correlation: number, m: number): Band {
   if (Math.abs(correlation) >= 1 - 1e-12) return { lower: correlation, upper: correlation };
   const z = pinned.log((1 + correlation) / (1 - correlation)) / 2;
-  const half = 1.959963984540054 / Math.sqrt(Math.max(1, m - 3));
+  const half = z975 / Math.sqrt(Math.max(1, m - 3));
   const back = (x: number): number => {
     const e = pinned.exp(2 * x);
     return (e - 1) / (e + 1);
