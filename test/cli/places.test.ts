@@ -41,6 +41,37 @@ function written(cwd: string, path: string): string {
   return texts.join('\n').replace(/"(started|seconds)": [^\n]+/gu, '');
 }
 
+/** A link with a length of its own, and a plan that tells another one, an area, and what a kilometre costs. */
+const dens = `skein: 1
+study: { title: Two dens, invented: true }
+first-year: 2027
+years: 4
+position: plane
+unit: km
+patches: [{ name: Low bank, at: [0, 0], capacity: 40, area: 51 ha }, { name: High bank, at: [3, 2], capacity: 50, area: 61 ha }]
+counts: females
+classes: [young, adult]
+oldest: open-ended
+survival: { young: 0.5, adult: 0.7 }
+births: { adult: 1.2 }
+year: [count, breeding, survival, roaming, ageing]
+roaming:
+  kind: dispersal
+  classes: [young]
+  leaving: 0.2
+  kernel: { shape: exponential, mean: 3 km }
+  leavers: all arrive
+  links: [{ between: [Low bank, High bank], crossing-death: 0.1, distance: 6.487 km }]
+start: { total: 60 }
+outcomes: { few: { of: [adult], below: 10 } }
+money: { currency: crowns }
+actions:
+  way: { kind: link, between: [Low bank, High bank], distance: { set: 4.771 km }, from: 2027, cost: { once: 150, per-km: 1000 } }
+  land: { kind: habitat, in: Low bank, area: { set: 7.3119 ha }, from: 2027 }
+scenarios: { plan: [way, land] }
+run: { replicates: 32, seed: 1 }
+`;
+
 interface View {
   readonly places?: string;
   readonly patches: readonly {
@@ -128,6 +159,23 @@ scenarios: { larger: [larger copse] }
     expect(plans).toContain('larger copse');
     expect(plans).not.toMatch(/the way is|distance: /);
     expect(plans).toMatch(/a share of [\d.]+ turns back/);
+  });
+
+  test('and those that plans lay, with exact areas and the price of a kilometre, wherever plans are compared', () => {
+    const cwd = folder();
+    writeFileSync(join(cwd, 'dens.yaml'), dens);
+    const secret = /6\.487|4\.771|7\.3119|per-km/u;
+    const hide = ['--places', places, '--quiet'];
+    expect(skein(['compare', 'dens.yaml', '--quiet'], { cwd }).out).toMatch(secret);
+    const told = skein(['compare', 'dens.yaml', '--out', 'compared', ...hide], { cwd });
+    const json = skein(['compare', 'dens.yaml', '--json', ...hide], { cwd });
+    skein(['report', 'dens.yaml', '-o', 'page.html', ...hide], { cwd });
+    const { hash } = JSON.parse(written(cwd, 'compared/run.json')) as { readonly hash: string };
+    for (const text of [told.out, json.out, written(cwd, 'compared'), written(cwd, 'page.html')]) {
+      expect(text).not.toMatch(secret);
+      expect(text).toContain(hash.slice(0, 16));
+    }
+    expect(told.out).toContain('the way between Low bank and High bank changes, from 2027');
   });
 });
 

@@ -4,6 +4,7 @@ import { plansOf } from '../../compare/plans-of.ts';
 import type { PlanToRun } from '../../compare/plan.ts';
 import type { PlansRun } from '../../compare/plans-run.ts';
 import { compareText } from '../../report/compare/compare-text.ts';
+import { hiddenComparison } from '../../report/hiding/hidden-comparison.ts';
 import { compareTables } from '../compare-tables.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
@@ -32,12 +33,12 @@ export async function compareCommand(path: string, options: CompareCommandOption
   const { comparison, run } = done;
   const first = run.runs[0]?.compiled ?? compiled;
   const hidden = askedHiding(first, { ...options, path, written: folder !== null });
-  const results = hidden === null ? comparison : { ...comparison, hash: hidden.hash };
-  folder?.write(first, { command: 'compare', results, tables: compareTables(comparison), threads, hidden });
-  if (options.json === true) writeOut(`${JSON.stringify(comparison, null, 2)}\n`);
+  const results = hiddenComparison(comparison, hidden);
+  folder?.write(first, { command: 'compare', results, tables: compareTables(results), threads, hidden });
+  if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
   else {
     const animals = compiled.model.counts === 'females' ? 'females' : 'animals';
-    writeOut(`${compareText(comparison, { ...terminalOf(process.stdout), animals }).trimEnd()}\n`);
+    writeOut(`${compareText(results, { ...terminalOf(process.stdout), animals }).trimEnd()}\n`);
   }
   const cut = cutShort(run, plans);
   if (cut !== null) throw cut;

@@ -4,13 +4,12 @@ import { patchValues } from '../../analysis/patch-values.ts';
 import { compareSpec } from '../../compare/compare-spec.ts';
 import { plansOf } from '../../compare/plans-of.ts';
 import type { PlanRun } from '../../compare/plans-run.ts';
-import type { Comparison } from '../../compare/results.ts';
 import { followPath } from '../../pipeline.ts';
+import { hiddenComparison } from '../../report/hiding/hidden-comparison.ts';
 import { hiddenPlan, withHiding, type Hidden } from '../../report/hiding/hide.ts';
 import type { PlanReport } from '../../report/plans/input.ts';
 import { buildPlansReport } from '../../report/plans/report.ts';
 import { printSpec } from '../../spec/print.ts';
-import { actionsOf } from '../../spec/plans/scenarios.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { pendingFile } from '../files.ts';
 import type { LoadedModel } from '../load.ts';
@@ -72,10 +71,4 @@ function planInput({ compiled, results }: PlanRun, hidden: Hidden | null): PlanR
     ...(hidden === null ? {} : { hiding: hidden }),
   };
 }
-
-function hiddenComparison(comparison: Comparison, hidden: Hidden | null): Comparison {
-  if (hidden === null) return comparison;
-  const { spec, hash } = hidden;
-  const scenarios = comparison.scenarios.map((plan) => ({ ...plan, actions: actionsOf(spec, plan.name) }));
-  return { ...comparison, hash, scenarios };
 }

@@ -2,7 +2,7 @@
 // that nothing in the model reads (maps come with columns such as a longitude).
 import { printSpec } from '../../spec/print.ts';
 import { readQuantity } from '../../spec/quantity.ts';
-import type { InlinePatchSpec, NamedSpec, Spec } from '../../spec/schema/spec.ts';
+import type { ActionSpec, InlinePatchSpec, NamedSpec, Spec } from '../../spec/schema/spec.ts';
 
 export function withoutPlaces(spec: Spec): Spec {
   const { named, ...core } = without(spec, ['position', 'unit']);
@@ -15,19 +15,30 @@ export function withoutPlaces(spec: Spec): Spec {
   };
 }
 
-/** Patches that plans make, and lengths of ways that they lay. */
+/** Without the places of patches that plans make, exact areas, the lengths of ways and prices by which a sum of money would tell them. */
 function hiddenActions(
   actions: NonNullable<Spec['actions']>,
   words: ReadonlySet<string>,
 ): NonNullable<Spec['actions']> {
   const hidden = Object.entries(actions).map(([name, action]): [string, typeof action] => {
-    if (action.kind === 'habitat' && action.new !== undefined) {
-      return [name, { ...action, new: hiddenPatch(action.new, words) }];
-    }
-    const tells = action.kind === 'link' && (action.distance?.set ?? action.distance?.add) !== undefined;
-    return [name, tells ? without(action, ['distance']) : action];
+    const told = action.cost === undefined ? action : { ...action, cost: without(action.cost, ['per-km']) };
+    return [name, hiddenEffects(told, words)];
   });
   return Object.fromEntries(hidden);
+}
+
+function hiddenEffects(action: ActionSpec, words: ReadonlySet<string>): ActionSpec {
+  if (action.kind === 'habitat') {
+    const { new: made } = action;
+    const rest = isAbsolute(action.area) ? without(action, ['area']) : action;
+    return made === undefined ? rest : { ...rest, new: hiddenPatch(made, words) };
+  }
+  if (action.kind === 'link') return isAbsolute(action.distance) ? without(action, ['distance']) : action;
+  return action;
+}
+
+function isAbsolute(effect: { readonly set?: unknown; readonly add?: unknown } | undefined): boolean {
+  return (effect?.set ?? effect?.add) !== undefined;
 }
 
 /** For people, who must not take it for the whole. */

@@ -13,7 +13,7 @@ function deedOf(spec: ActionSpec): string {
       const effects = (['crossing-death', 'turn-back', 'distance', 'share'] as const).flatMap((key) =>
         spec[key] === undefined ? [] : [`${key.replaceAll('-', ' ')} ${effectWords(spec[key])}`],
       );
-      return `the way${ways} between ${spec.between[0]} and ${spec.between[1]}: ${effects.join(', ')}`;
+      return `the way${ways} between ${spec.between[0]} and ${spec.between[1]}${effects.length === 0 ? ' changes' : `: ${effects.join(', ')}`}`;
     }
     case 'habitat':
       return habitatWords(spec);
@@ -43,7 +43,7 @@ function habitatWords({
       effect === undefined ? [] : [`${key} of ${listOf(where ?? [])} ${effectWords(effect)}`],
     ),
   ];
-  return effects.join(', ');
+  return effects.length === 0 ? `${listOf(where ?? [])} changes` : effects.join(', ');
 }
 
 function changeWords({ parameters = {}, rates = {}, in: where }: Extract<ActionSpec, { kind: 'change' }>): string {
