@@ -29,7 +29,6 @@ const ranks: Readonly<Record<string, number>> = {
   report: 13,
   page: 13,
   formats: 13,
-  server: 14,
   cli: 15,
   'index.ts': 16,
 };

@@ -20,7 +20,7 @@ function expectGrowth(found: ReturnType<typeof growth>, logGrowth: number, known
   expect(Math.abs(found.logGrowth - logGrowth)).toBeLessThan(5 * Math.hypot(found.standardError, known));
 }
 
-// The mean matrix and the noise are chosen; the values were simulated over 3.2 million steps by another program and lie
+// The mean matrix and the noise are chosen; the values were simulated over 3.2 million steps outside this project and lie
 // within 1e-4 of Tuljapurkar's small-noise approximation (1982, from memory).
 test.each([
   [0, 0.112246],

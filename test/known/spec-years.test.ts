@@ -30,7 +30,7 @@ variation: ${variation}
   return value!;
 }
 
-// Tuljapurkar (1982) from memory; the approximate values derived, and simulated over 3.2 million years.
+// Tuljapurkar (1982) from memory; the approximate values derived; the others simulated over 3.2 million years outside this project.
 test.each([
   [0, 0.1121694, 0.112246],
   [0.5, 0.1112045, 0.111284],

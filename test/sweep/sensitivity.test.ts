@@ -35,7 +35,7 @@ function ishigami(b: number) {
     Math.sin(x) + 7 * Math.sin(y) ** 2 + b * z ** 4 * Math.sin(x);
 }
 
-// Ishigami & Homma 1990; indices from the closed form (derived): with a = 7 and b = 0.1 published as .3139, .4424, 0.
+// Ishigami & Homma 1990; indices from the closed form (derived): for a = 7 and b = 0.1 often printed as .3139, .4424, 0 (from memory).
 test.each([
   [0.1, 13.8445879, [0.3139052, 0.4424111, 0], [0.5575889, 0.4424111, 0.2436837]],
   [0.05, 8.9169424, [0.2185186, 0.6868947, 0], [0.3131053, 0.6868947, 0.0945868]],
@@ -53,7 +53,7 @@ test.each([
   });
 });
 
-// Sobol's g function (Saltelli & Sobol' 1995), a = 0, 1, 4.5, 9, 99, 99, 99, 99; closed form: V_i = 1 / (3 (1 + a_i)²).
+// Sobol's g function (Saltelli & Sobol' 1995), a = 0, 1, 4.5, 9, 99, 99, 99, 99; numbers derived from V_i = 1 / (3 (1 + a_i)²).
 test("shares of variance of Sobol's g function", () => {
   const a = [0, 1, 4.5, 9, 99, 99, 99, 99];
   const g = (x: readonly number[]) =>
