@@ -41,6 +41,7 @@ export interface Compilation {
   readonly findings: readonly Finding[];
 }
 
+/** Of the scenario under `run`. Mistakes are findings, all of them in one round, never thrown. */
 export function compileSpec(spec: Spec): Compilation {
   const ofPlans = checkPlans(spec);
   const base = compileAlone(spec);

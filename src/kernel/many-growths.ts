@@ -57,6 +57,7 @@ const wantElasticities = 2;
 const coldMultiplications = 6;
 const warmMultiplications = 1;
 
+/** Opens an instance of the kernel module, which is kept until nobody holds the solver. Errors: those of `solve`. */
 export function openManySolver(machine: Machine = loadMachine()): ManySolver {
   let opened = 0;
   return {

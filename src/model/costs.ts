@@ -12,7 +12,7 @@ export interface Money {
   readonly discount: number;
 }
 
-/** Sums by step, at t − 1. The middle is halfway between the least and the most, and all three are alike where no range is given. */
+/** Sums of money by step, at t − 1. The middle is halfway between the least and the most, and all three are alike where no range is given. */
 export interface Sums {
   readonly least: Float64Array;
   readonly middle: Float64Array;
@@ -28,6 +28,7 @@ export interface ActionCost {
   readonly perAnimal: Sums | null;
 }
 
+/** Of all actions of a scenario, in the currency of `money`, undiscounted. */
 export interface PlanCost {
   /** Null where the spec has no `money`, and no action a cost. */
   readonly money: Money | null;

@@ -17,6 +17,7 @@ import { worthNote } from './worth.ts';
 
 export type { ReportInput } from './input.ts';
 
+/** The decision report of a model without plans, as one HTML page that needs no other file. */
 export function buildReport(input: ReportInput): string {
   const { model, results } = input;
   const view = summariseForView(input);

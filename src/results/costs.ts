@@ -4,6 +4,7 @@ import type { PlanCost, Sums } from '../model/costs.ts';
 /** How many animals an action handled in a step (1-based), in one future or as a mean over futures. */
 export type HandledIn = (action: string, step: number) => number;
 
+/** Money, in the currency of the spec. */
 export interface CostRange {
   readonly least: number;
   readonly middle: number;

@@ -24,6 +24,7 @@ export interface UnknownSetting {
 export type Applied =
   { readonly ok: true; readonly spec: Spec } | { readonly ok: false; readonly unknown: UnknownSetting };
 
+/** Not applied where a name is unknown; what is wrong with values is told by compiling. */
 export function applySettings(spec: Spec, settings: Settings): Applied {
   const known = spec.parameters ?? {};
   const parameters = { ...known };
