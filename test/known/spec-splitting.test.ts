@@ -7,6 +7,7 @@ import { oneRepeat } from '../../src/results/rare/splitting.ts';
 import type { RareResult } from '../../src/results/results.ts';
 import { alone } from '../../src/threads/alone.ts';
 import { openThreads } from '../../src/threads/threads.ts';
+import { compileModel } from '../golden/models.ts';
 import { compileText, errorsOf } from '../pipeline/compile-text.ts';
 import { framed } from '../pipeline/frame.ts';
 
@@ -94,6 +95,14 @@ test('a chance of 1 in 11,000 is known to a tenth of itself from at least twenty
   expect(found.standardError! / exact).toBeLessThan(0.1);
   const plainYears = ((1 - exact) / (exact * 0.1 * 0.1)) * 30;
   expect(plainYears / found.replicateYears).toBeGreaterThan(20);
+});
+
+test('the rare loss of the model that shows it is known to a tenth of itself from thirty times fewer years', () => {
+  const { probability, standardError, replicateYears } = runModel(compileModel('seldom-lost')).rare![0]!;
+  const share = standardError! / probability!;
+  expect(probability).toBeLessThan(2e-4);
+  expect(share).toBeLessThan(0.1);
+  expect((25 * (1 - probability!)) / (probability! * share * share) / replicateYears).toBeGreaterThan(30);
 });
 
 /** Weather that goes on from year to year, a catastrophe that lasts and waits, crowding, movement: all that a state holds. */
