@@ -1,5 +1,5 @@
 // The command line: which commands there are. Each is loaded only when it is called.
-import { Command, CommanderError, Option } from 'commander';
+import { Command, CommanderError, InvalidArgumentError, Option } from 'commander';
 import { toolVersion } from '../results/provenance.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
@@ -63,6 +63,7 @@ function addSweep(program: Command): void {
     ...(['set', 'years', 'replicates', 'seed', 'threads', 'json', 'out', 'quiet'] as const),
   ]);
   addSweepOptions(sweep)
+    .addOption(refused('--scenario <name>', 'Write `--over scenario=NAME`, or `--compare all`.'))
     .enablePositionalOptions()
     .addHelpText(
       'after',
@@ -177,8 +178,16 @@ function addCompare(program: Command, chance: Parameters<typeof addOptions>[1]):
     'quiet',
   ])
     .option('--robust', 'ask other sound models whether they reverse the order')
+    .addOption(refused('--scenario <name>', '`compare` sets all scenarios of the model side by side; `run` takes one.'))
     .addHelpText('after', '\nExample:\n  skein compare models/reed-hare.yaml --replicates 500')
     .action(run(async () => (await import('./command/compare.ts')).compareCommand));
+}
+
+/** An option of other commands, with what to write instead. */
+function refused(flags: string, instead: string): Option {
+  return new Option(flags).hideHelp().argParser(() => {
+    throw new InvalidArgumentError(instead);
+  });
 }
 
 function model(program: Command, name: string, what: string, shared: Parameters<typeof addOptions>[1]): Command {

@@ -22,13 +22,17 @@ export async function sweepCommand(path: string, options: SweepOptions): Promise
   const spec = withoutSweep(loaded.compiled.spec);
   const manifest = manifestOf({ ...loaded.compiled, spec }, planOf(loaded, options), specJson(spec));
   const { quiet = false, threads = availableParallelism() } = options;
-  if (!quiet) writeError(`${planText(manifest)}\n`);
+  const tell = (): void => {
+    if (!quiet) writeError(`${planText(manifest)}\n`);
+  };
   if (options.plan === true) {
+    tell();
     writeError(`${costText(msAPoint(spec, manifest), { left: manifest.points, threads })}\n`);
     return;
   }
   if (options.out === undefined) throw new Ending(exitCodes.usage, 'Name a folder for the results with --out.');
   const store = openStore(options.out, manifest);
+  tell();
   try {
     await fillStore(store, { spec, manifest, threads, shard: options.shard, quiet });
     await finish(store, { manifest, threads, started }, options);

@@ -15,10 +15,11 @@ export function whenOf(draft: Draft, { from, until, over }: WhenSpec, path: Spec
   const { firstYear, lastYear } = draft;
   const [first, last] = [from ?? firstYear, until ?? lastYear];
   if (first > last || first > lastYear || last < firstYear) {
+    const [message, found] = whatIsWrong(draft, from, until);
     tellMistake(draft, 'year-outside', [...path, from === undefined ? 'until' : 'from'], {
-      message: first > last ? 'The effect ends before it begins' : 'These years are not looked at',
+      message,
       details: {
-        found: `${String(first)} to ${String(last)}`,
+        found,
         expected: `years from ${String(firstYear)} to ${String(lastYear)}`,
         fix: 'Correct them, or look further with `years` and `first-year`.',
       },
@@ -28,6 +29,14 @@ export function whenOf(draft: Draft, { from, until, over }: WhenSpec, path: Spec
   // What holds from the first year on needs no condition, unless it grows.
   const begins = first <= firstYear && growing <= 1 ? null : first;
   return { from: begins, until: last >= lastYear ? null : last, over: growing };
+}
+
+function whatIsWrong({ firstYear, lastYear }: Draft, from?: number, until?: number): readonly [string, string] {
+  if (from !== undefined && until !== undefined && from > until)
+    return ['The effect ends before it begins', `${String(from)} to ${String(until)}`];
+  if (from !== undefined && from > lastYear)
+    return ['The effect begins after the last year', `${String(from)}; the last year is ${String(lastYear)}`];
+  return ['The effect ends before the first year', `${String(until)}; the first year is ${String(firstYear)}`];
 }
 
 function yearsOf(draft: Draft, over: number | string | undefined, path: SpecPath): number {
