@@ -7,7 +7,8 @@ import {
 } from '../sweep/summary/summarise.ts';
 import type { Ranking } from '../sweep/summary/ranking.ts';
 import { percent } from '../view/number.ts';
-import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from './terminal.ts';
+import { fittedColumns } from './fitted-columns.ts';
+import { bold, dim, joinBlocks, printable, wrap, type TextStyle } from './terminal.ts';
 
 export function sweepText(summary: SweepSummary, style: TextStyle): string {
   const { model, points, design, failed, quantities, rankings, assumptions, runs } = summary;
@@ -43,7 +44,7 @@ function quantityText(quantity: QuantitySummary, summary: SweepSummary, style: T
   return [
     wrap(`${bold(printable(name), style)}: ${range}${noisy}`, style),
     `what matters most, by ${orderedBy}:`,
-    columnsOf(
+    fittedColumns(
       ['number', ...head],
       factors.map((factor) => [factor.name, ...cells(factor)]),
       style,
@@ -101,12 +102,12 @@ function rankingText({ quantity, better, scenarios, agree, factors }: Ranking, s
   const sure = agree === null ? '' : `; both halves of the runs name the same one at ${percent(agree)} of the points`;
   return [
     wrap(`${bold(`best by ${printable(quantity)}`, style)} (${better} is better)${sure}`, style),
-    columnsOf(
+    fittedColumns(
       ['scenario', 'best at'],
       scenarios.map(({ name, best }) => [name, percent(best)]),
       style,
     ),
-    columnsOf(
+    fittedColumns(
       ['number', 'decides', 'where the preferred scenario changes'],
       factors.map(({ name, decides, switches }) => [
         name,

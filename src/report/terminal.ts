@@ -21,27 +21,43 @@ export function dim(text: string, { colour }: TextStyle): string {
 
 /** Breaks at spaces; a word longer than the line stands alone. */
 export function wrap(text: string, style: TextStyle, indent = ''): string {
+  return brokenTo(printable(text), room(style) - wide(indent))
+    .map((line) => indent + line)
+    .join('\n');
+}
+
+/** Lines no wider than this, where no single word is. */
+export function brokenTo(text: string, width: number): readonly string[] {
   const lines: string[] = [];
   let line = '';
-  for (const word of printable(text).split(' ')) {
-    if (line !== '' && wide(indent) + wide(line) + 1 + wide(word) > room(style)) {
+  for (const word of text.split(' ')) {
+    if (line !== '' && wide(line) + 1 + wide(word) > width) {
       lines.push(line);
       line = word;
     } else line = line === '' ? word : `${line} ${word}`;
   }
-  return [...lines, line].map((one) => indent + one).join('\n');
+  return [...lines, line];
 }
 
 /** Columns as wide as their contents, the first to the left, the others to the right; the first is cut when all is too wide. */
 export function columnsOf(head: readonly string[], rows: readonly (readonly string[])[], style: TextStyle): string {
-  const table = [head, ...rows].map((row) => row.map(printable));
-  const widths = head.map((_, c) => Math.max(...table.map((row) => wide(row[c] ?? ''))));
+  return columnsUnder([head], rows, style);
+}
+
+/** The same under a head of several lines. */
+export function columnsUnder(
+  heads: readonly (readonly string[])[],
+  rows: readonly (readonly string[])[],
+  style: TextStyle,
+): string {
+  const table = [...heads, ...rows].map((row) => row.map(printable));
+  const widths = (table[0] ?? []).map((_, c) => Math.max(...table.map((row) => wide(row[c] ?? ''))));
   const others = widths.slice(1).reduce((sum, width) => sum + width + 2, 0);
   const first = Math.max(8, Math.min(widths[0] ?? 0, room(style) - others));
   return table
     .map((row, r) => {
       const cells = row.map((cell, c) => (c === 0 ? padEnd(cut(cell, first), first) : padStart(cell, widths[c] ?? 0)));
-      return r === 0 ? dim(cells.join('  ').trimEnd(), style) : cells.join('  ').trimEnd();
+      return r < heads.length ? dim(cells.join('  ').trimEnd(), style) : cells.join('  ').trimEnd();
     })
     .join('\n');
 }
@@ -71,7 +87,7 @@ function padStart(text: string, width: number): string {
 }
 
 /** Cells that a text takes: marks that combine take none, wide scripts two. */
-function wide(text: string): number {
+export function wide(text: string): number {
   let cells = 0;
   for (const character of text) {
     if (/\p{M}/u.test(character)) continue;

@@ -9,7 +9,8 @@ import { criterionWords } from './criterion-words.ts';
 import { rareWords } from './rare-words.ts';
 import { sparkLine } from './spark-line.ts';
 import { whenWords } from './when-words.ts';
-import { bold, columnsOf, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
+import { fittedColumns } from './fitted-columns.ts';
+import { bold, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
 
 export interface RunTextStyle extends TextStyle {
   /** What one individual is called: 'females' or 'animals'. */
@@ -52,7 +53,7 @@ function outcomeTable(results: RunResults, style: TextStyle): string {
     const told = [...(k === 0 ? [] : [outcome.definition]), ...(when === null ? [] : [when])];
     return told.length === 0 ? [] : [wrap(`${outcome.name}: ${told.join('; ')}`, style)];
   });
-  const table = columnsOf(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
+  const table = fittedColumns(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
   return [table, ...(definitions.length > 0 ? ['', ...definitions] : [])].join('\n');
 }
 
