@@ -38,10 +38,7 @@ function plansTable({ scenarios, money }: Comparison): Table {
         unit: 'animals a year',
         meaning: 'Change of the mean count over the last fifth of the years.',
       },
-      text(
-        'beaten',
-        '`by none`, or `in all` where another plan is at least as good in everything and better in something.',
-      ),
+      text('beaten', '`yes` where another plan is at least as good in everything and better in something, else `no`.'),
       share('chance_beaten', 'Chance of being beaten in everything, with other futures of the same number.'),
       share(
         'chance_beaten_draws',
@@ -59,7 +56,7 @@ function plansTable({ scenarios, money }: Comparison): Table {
       one.meanLowestCount,
       one.animalsTaken?.mean ?? null,
       one.changeAtEnd,
-      one.notBeaten ? 'by none' : 'in all',
+      one.notBeaten ? 'no' : 'yes',
       one.beaten.runs,
       one.beaten.draws,
     ]),
@@ -82,7 +79,8 @@ function chancesTable({ scenarios }: Comparison): Table {
       {
         name: 'cost_per_chance',
         unit: 'money',
-        meaning: 'Money for a chance less by 1 than under the first plan; empty where nothing is gained for sure.',
+        meaning:
+          'Money for a chance better by 1 than under the first plan (less of what is feared, more of what is hoped for); empty where nothing is gained for sure.',
       },
       { name: 'cost_per_chance_lower', unit: 'money', meaning: 'Lower end, from the interval of the difference.' },
       { name: 'cost_per_chance_upper', unit: 'money', meaning: 'Upper end.' },

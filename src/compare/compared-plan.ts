@@ -88,7 +88,7 @@ function notBeatenIn({ objectives, ended }: Beside): readonly boolean[] {
   return Array.from({ length: plans }, (_, p) => !isBeaten(means, p));
 }
 
-function pricesOf({ runs }: PlansRun, p: number, { differences }: Beside): readonly RiskPrice[] {
+function pricesOf({ runs }: PlansRun, p: number, { differences, objectives }: Beside): readonly RiskPrice[] {
   const [now, own] = [runs[0], runs[p]];
   if (now === undefined || own === undefined) return [];
   const [from, to] = [now.plan.name, own.plan.name];
@@ -96,8 +96,9 @@ function pricesOf({ runs }: PlansRun, p: number, { differences }: Beside): reado
   return differences
     .filter((one) => one.of === 'chance' && one.from === from && one.to === to)
     .map(({ outcome, estimate, interval, toldApart }): RiskPrice => {
-      const removed = { estimate: -estimate, lower: -interval.upper, upper: -interval.lower };
-      const price = toldApart ? costPerRisk(more, removed) : null;
+      const hoped = objectives.find(({ name }) => name === outcome)?.better === 'more';
+      const less = { estimate: -estimate, lower: -interval.upper, upper: -interval.lower };
+      const price = toldApart ? costPerRisk(more, hoped ? { estimate, ...interval } : less) : null;
       if (price === null) return { outcome, costPerRisk: null, why: 'no reliable gain' };
       if (!(more > 0)) return { outcome, costPerRisk: null, why: 'costs no more' };
       return { outcome, costPerRisk: price, why: 'priced' };

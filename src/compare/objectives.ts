@@ -18,11 +18,12 @@ export interface Objective {
 /** The first one decides the order of the plans. */
 export function objectivesOf({ runs }: PlansRun): readonly Objective[] {
   const rules = runs[0]?.compiled.model.outcomes ?? [];
-  const chances = rules.map(({ name, definition }, k): Objective => ({
+  const chances = rules.map(({ name, definition, event }, k): Objective => ({
     name,
     definition,
     of: 'chance',
-    better: 'less',
+    // To be above is what is hoped for; all else is feared.
+    better: event.is === 'above' ? 'more' : 'less',
     decides: true,
     values: runs.map((run) => hits(run, k)),
   }));

@@ -41,10 +41,10 @@ export interface PlanOutcome {
   readonly atEnd: Chance;
 }
 
-/** Money for each unit of chance less, against the first plan. */
+/** Money for each unit of chance bettered (less of what is feared, more of what is hoped for), against the first plan. */
 export interface RiskPrice {
   readonly outcome: string;
-  /** Null where the plan removes no risk for sure, or costs no more. */
+  /** Null where the plan betters no chance for sure, or costs no more. */
   readonly costPerRisk: { readonly estimate: number; readonly lower: number; readonly upper: number } | null;
   readonly why: 'priced' | 'no reliable gain' | 'costs no more';
 }

@@ -73,7 +73,10 @@ const Plan = Type.Object({
       costPerRisk: part.orNull(Ends),
       why: Type.Union([Type.Literal('priced'), Type.Literal('no reliable gain'), Type.Literal('costs no more')]),
     }),
-    { description: 'Money for each unit of chance less than under the first plan; empty without money.' },
+    {
+      description:
+        'Money for each unit of chance better than under the first plan (less of what is feared, more of what is hoped for); empty without money.',
+    },
   ),
   handled: Type.Array(Handled),
 });

@@ -87,6 +87,26 @@ test('a plan without effect differs by exactly zero, and what it costs buys no r
   expect(scenarios.slice(0, 2).map(({ notBeaten }) => notBeaten)).toEqual([true, true]);
 });
 
+test('to be above is what is hoped for: more of it is best, and is what a price is of', async () => {
+  const hopeful = (inPond: number): string =>
+    text(inPond).replace('few: { of: [adult], below: 6 }', 'many: { of: [adult], above: 30 }');
+  const found = await compared([
+    planOf({ name: 'as now', text: hopeful(0.3), cost: 0 }),
+    planOf({ name: 'fence', text: hopeful(0.36), cost: 1000 }),
+    planOf({ name: 'fewer young', text: hopeful(0.24), cost: 500 }),
+  ]);
+  const [now, fence, fewer] = found.scenarios;
+  const chance = (plan: typeof now): number => plan!.outcomes[0]!.probability;
+  expect(chance(fence)).toBeGreaterThan(chance(now));
+  expect(chance(fewer)).toBeLessThan(chance(now));
+  expect(found.objectives[0]).toMatchObject({ name: 'many', better: 'more' });
+  expect(found.best.find(({ outcome, scenario }) => outcome === 'many' && scenario === 'fence')!.probability).toBe(1);
+  expect(found.statement.plans).toEqual(['fence']);
+  expect([fence!.notBeaten, fewer!.notBeaten]).toEqual([true, false]);
+  expect(fewer!.prices[0]!.why).toBe('no reliable gain');
+  expect(fence!.prices[0]!.costPerRisk!.estimate).toBeCloseTo(1000 / (chance(fence) - chance(now)), 6);
+});
+
 test('only the patch in which something is done gains', async () => {
   const { patches } = await compared(plans());
   const of = (patch: string) => patches.find((one) => one.patch === patch && one.scenario === 'fence')!;

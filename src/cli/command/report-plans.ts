@@ -71,4 +71,3 @@ function planInput({ compiled, results }: PlanRun, hidden: Hidden | null): PlanR
     ...(hidden === null ? {} : { hiding: hidden }),
   };
 }
-}

@@ -1,11 +1,12 @@
 // What a comparison says in a terminal: the statement first, then the plans, then what tells them apart.
 import type { Comparison, ComparedPlan, ObjectiveWords, PlanDifference, Robustness } from '../../compare/results.ts';
 import { percent, plain, whole } from '../../view/number.ts';
-import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from '../terminal.ts';
+import { fittedColumns } from '../fitted-columns.ts';
+import { bold, dim, joinBlocks, printable, wrap, type TextStyle } from '../terminal.ts';
 import { cautionList } from '../text.ts';
 import { robustWords, variantWords } from './robust-words.ts';
 import { hasMoves, hasTakes, sourceWords, takeWords, translocationSteps } from './translocation.ts';
-import { between, change, costWords, courseWords, priceWords, shareOf100 } from './words.ts';
+import { between, change, costWords, courseWords, priceOfWords, priceWords, shareOf100 } from './words.ts';
 
 export interface CompareTextStyle extends TextStyle {
   readonly animals: string;
@@ -40,18 +41,23 @@ function statement({ statement: { text, reservations, rule, strength } }: Compar
 function plans(comparison: Comparison, style: CompareTextStyle): string {
   const { scenarios, objectives, money } = comparison;
   const chances = objectives.filter(({ of }) => of === 'chance');
-  const risks = columnsOf(
+  const risks = fittedColumns(
     ['chance of', ...chances.map(({ name }) => name)],
     scenarios.map((plan) => [plan.name, ...plan.outcomes.map(({ probability }) => percent(probability))]),
     style,
   );
-  const others = columnsOf(
-    ['plan', `${style.animals} at the end`, ...(money === null ? [] : ['cost now', 'undiscounted']), 'beaten'],
+  const others = fittedColumns(
+    [
+      'plan',
+      `${style.animals} at the end`,
+      ...(money === null ? [] : ['cost now', 'undiscounted']),
+      'beaten in everything',
+    ],
     scenarios.map((plan) => [
       plan.name,
       whole(plan.animalsAtEnd.mean),
       ...(plan.cost === null ? [] : [plain(plan.cost.presentValue), plain(plan.cost.undiscounted)]),
-      plan.notBeaten ? 'by none' : 'in all',
+      plan.notBeaten ? 'no' : 'yes',
     ]),
     style,
   );
@@ -118,7 +124,7 @@ function differences(
     apart(one),
   ]);
   const head = [`${name}, ${unit}`, 'differs by', '95 % from runs', ...(drawn ? ['from unknown'] : []), 'told apart'];
-  return columnsOf(head, rows, style);
+  return fittedColumns(head, rows, style);
 }
 
 function apart({ toldApart, estimate, interval }: PlanDifference): string {
@@ -144,8 +150,8 @@ function best({ best: all, objectives, scenarios, draws }: Comparison, style: Te
       ? 'with as many other futures'
       : 'with as many other futures / over the draws of what is not known';
   return [
-    wrap(`Of 100, best in, and beaten in everything by another (${over}; equals share):`, style),
-    columnsOf(['plan', ...asked.map(({ name }) => name), 'beaten'], rows, style),
+    wrap(`Of 100, how often best in, and beaten in everything by another (${over}; equals share):`, style),
+    fittedColumns(['plan', ...asked.map(({ name }) => name), 'beaten in everything'], rows, style),
   ].join('\n');
 }
 
@@ -157,11 +163,7 @@ function prices(comparison: Comparison, style: TextStyle): string {
     .slice(1)
     .map(({ name, prices: own }) => [name, ...own.map((price) => priceWords(price, comparison))]);
   if (rows.length === 0 || outcomes.length === 0) return '';
-  const base = scenarios[0]?.name ?? '';
-  return [
-    wrap(`What one chance in a hundred less than under “${base}” costs now, in ${money.currency}:`, style),
-    columnsOf(['plan', ...outcomes], rows, style),
-  ].join('\n');
+  return [wrap(`${priceOfWords(comparison)}:`, style), fittedColumns(['plan', ...outcomes], rows, style)].join('\n');
 }
 
 /** Patches that surely gain or lose. */

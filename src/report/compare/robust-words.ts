@@ -6,7 +6,7 @@ export function robustWords(all: readonly Robustness[]): string {
   const held = ran.filter(({ holds }) => holds === true).length;
   const left = all.length - ran.length;
   const apart = left === 0 ? '' : ` ${left} more ${left === 1 ? 'does' : 'do'} not apply.`;
-  return `The order holds in ${held} of ${ran.length} other models.${apart}`;
+  return `Plans that the model tells apart keep their order in ${held} of ${ran.length} other models.${apart}`;
 }
 
 export function variantWords({ notRun, holds, reversed, order, supports }: Robustness): string {
@@ -18,5 +18,5 @@ export function variantWords({ notRun, holds, reversed, order, supports }: Robus
     supports.length === 0
       ? 'supports no plan over the first'
       : `supports ${supports.map((name) => `“${name}”`).join(', ')}`;
-  return `${holds === true ? 'the order holds' : `the order does not hold: ${pairs.join(', ')}`}; ${chosen}; order: ${order.join(', ')}`;
+  return `${holds === true ? 'plans told apart keep their order' : `plans told apart do not keep their order: ${pairs.join(', ')}`}; ${chosen}; order: ${order.join(', ')}`;
 }

@@ -38,7 +38,8 @@ export function between(
 }
 
 function signed(of: PlanDifference['of'], value: number): string {
-  const rounded = amount(of, Math.abs(value));
+  const small = of === 'animals' && Math.abs(value) < 0.5;
+  const rounded = small ? Math.abs(value).toFixed(1) : amount(of, Math.abs(value));
   return /^0(\.0+)?$/.test(rounded) ? rounded : `${value < 0 ? '−' : '+'}${rounded}`;
 }
 
@@ -47,6 +48,16 @@ export function priceWords({ costPerRisk, why }: RiskPrice, comparison: Pick<Com
   if (costPerRisk === null) return why;
   const [least, most] = [costPerRisk.lower / 100, costPerRisk.upper / 100];
   return `${moneyOf(costPerRisk.estimate / 100, comparison)} (${plain(least)} to ${plain(most)})`;
+}
+
+/** What such a price is of: less of what is feared, more of what is hoped for. */
+export function priceOfWords({ scenarios, objectives, money }: Comparison): string {
+  const hoped = objectives
+    .filter(({ of, better }) => of === 'chance' && better === 'more')
+    .map(({ name }) => `“${name}”`);
+  const feared = objectives.some(({ of, better }) => of === 'chance' && better === 'less');
+  const what = !feared ? 'more' : hoped.length === 0 ? 'less' : `less (in ${hoped.join(', ')}: more)`;
+  return `What one chance in a hundred ${what} than under “${scenarios[0]?.name ?? ''}” costs now, in ${money?.currency ?? ''}`;
 }
 
 export function shareOf100(share: number): string {

@@ -13,7 +13,8 @@ const sizes = { wide: { width: 720, height: 330 }, narrow: { width: 340, height:
 export function moneySection(comparison: Comparison): Markup | null {
   const { money, objectives, scenarios } = comparison;
   const [objective] = objectives;
-  if (money === null || objective?.of !== 'chance' || objective.better !== 'less') return null;
+  if (money === null || objective?.of !== 'chance') return null;
+  if (objective.better !== 'less') return section('money', 'What a gain costs', priceTable(comparison));
   const both = scenarios.map((plan) => ({ cost: plan.cost?.presentValue ?? 0, risk: chanceOf(plan, objective.name) }));
   const free = notBeaten(both);
   const plans = scenarios.map((plan, i) => {

@@ -3,7 +3,7 @@ import type { Comparison, ComparedPlan } from '../../compare/results.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { percent, plain, whole } from '../../view/number.ts';
 import { drawTable, scrolling, type Row } from '../../view/table.ts';
-import { between, change, costWords, courseWords, priceWords, shareOf100 } from '../compare/words.ts';
+import { between, change, costWords, courseWords, priceOfWords, priceWords, shareOf100 } from '../compare/words.ts';
 import { section } from '../section/section.ts';
 
 export function plansSection(comparison: Comparison, animals: string): Markup {
@@ -125,7 +125,7 @@ function sureTable(comparison: Comparison): Markup {
   return drawTable({ caption, head: ['plan', ...asked.map(({ name }) => name)], rows });
 }
 
-/** Money for one chance in a hundred less. */
+/** Money for one chance in a hundred bettered. */
 export function priceTable(comparison: Comparison): Markup | null {
   const { scenarios, money } = comparison;
   const outcomes = scenarios.at(-1)?.prices.map(({ outcome }) => outcome) ?? [];
@@ -133,6 +133,6 @@ export function priceTable(comparison: Comparison): Markup | null {
   const rows = scenarios
     .slice(1)
     .map(({ name, prices }): Row => [name, ...prices.map((price) => priceWords(price, comparison))]);
-  const caption = `What one chance in a hundred less than under “${scenarios[0]?.name ?? ''}” costs now, in ${money.currency}, with the 95 % interval of the difference`;
+  const caption = `${priceOfWords(comparison)}, with the 95 % interval of the difference`;
   return drawTable({ caption, head: ['plan', ...outcomes], rows });
 }

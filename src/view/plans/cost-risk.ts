@@ -92,7 +92,7 @@ function names(plans: readonly PlanDot[], at: (plan: PlanDot) => readonly [numbe
 function wordsOf({ outcome, currency, plans }: CostRiskChart) {
   const each = plans.map(
     ({ name, cost, risk, notBeaten }) =>
-      `${name}: ${plain(cost)} ${currency}, ${plain(risk * 100)} of 100${notBeaten ? ', beaten by none' : ''}`,
+      `${name}: ${plain(cost)} ${currency}, ${plain(risk * 100)} of 100${notBeaten ? ', no other plan both cheaper and safer' : ''}`,
   );
   return { title: `Cost and chance of ${outcome} of each plan`, description: `${each.join('; ')}.` };
 }
