@@ -66,8 +66,12 @@ export function onePatch({ model, coefficients }: Compiled, p: number): Compiled
     epochOf: rates.epochOf,
   });
   const never = new Int32Array(model.steps);
-  const waitsOf = (waits: CeilingPhase | undefined) =>
-    waits === undefined ? {} : { waits: { ...waits, capacity: pick(waits.capacity, 1) } };
+  // Years that follow change nothing here: what is asked for is the first year again and again.
+  const ceilingOf = ({ capacityByYear, ...phase }: CeilingPhase): CeilingPhase => ({
+    ...phase,
+    capacity: pick(phase.capacity, 1),
+  });
+  const waitsOf = (waits: CeilingPhase | undefined) => (waits === undefined ? {} : { waits: ceilingOf(waits) });
   const phases = model.phases.map((phase) => {
     switch (phase.kind) {
       case 'survival':
@@ -77,7 +81,7 @@ export function onePatch({ model, coefficients }: Compiled, p: number): Compiled
       case 'demography':
         return { ...phase, fates: table(phase.fates, n * n), births: table(phase.births, n * n) };
       case 'ceiling':
-        return { ...phase, capacity: pick(phase.capacity, 1) };
+        return ceilingOf(phase);
       case 'dispersal':
         return { ...phase, moves: new Uint8Array(n) };
       case 'take':
@@ -94,7 +98,7 @@ export function onePatch({ model, coefficients }: Compiled, p: number): Compiled
   return {
     model: { ...model, patches: model.patches.slice(p, p + 1), phases },
     landscape: { movements: phases.map(() => null) },
-    coefficients: coefficients.map(({ form, coefficient, alleeHalf, ...others }) => ({
+    coefficients: coefficients.map(({ form, coefficient, coefficientByYear, alleeHalf, ...others }) => ({
       ...others,
       form: form.slice(p, p + 1),
       coefficient: pick(coefficient, 1),
