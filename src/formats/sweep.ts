@@ -127,7 +127,13 @@ export const SweepSummarySchema = Type.Object({
     points: part.whole('Points that no model can have.'),
     reasons: Type.Array(Type.Object({ reason: Type.String(), points: part.whole('With this reason.') })),
   }),
-  factors: Type.Array(Type.Object({ name: Type.String(), base: Value })),
+  factors: Type.Array(
+    Type.Object({
+      name: Type.String(),
+      base: Value,
+      unit: Type.String({ description: 'Empty where the language has none for it.' }),
+    }),
+  ),
   quantities: Type.Array(
     Type.Object({
       name: Type.String(),

@@ -10,7 +10,7 @@ import { drawCells, type Cell } from '../view/sweep/cell-map.ts';
 import { drawResponse } from '../view/sweep/response-curve.ts';
 import { writeDocument } from './document.ts';
 import { styleSheet } from './style.ts';
-import { numberText, three } from './sweep-text.ts';
+import { noneSeen, numberText, three, withUnit } from './sweep-text.ts';
 
 export function sweepPage(swept: Swept, summary: SweepSummary): string {
   const maps = heatMaps(swept, summary);
@@ -18,8 +18,8 @@ export function sweepPage(swept: Swept, summary: SweepSummary): string {
   const { model, points, design, runs, assumptions, tool, hash } = summary;
   const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years at each`;
   const body = mark`<h1>${model}</h1>
-<p id="answer">${points.toLocaleString('en')} points (${design})${of}.</p>
-${preferred.map((map) => mark`<h2>Which plan is best by ${map.quantity}</h2>${preferredFigure(map)}`)}
+<p id="answer">${points.toLocaleString('en')} points (${design})${of}, over ${summary.factors.map(({ name }) => withUnit(name, summary)).join(', ')}.</p>
+${preferred.map((map) => mark`<h2>Which plan is best by ${map.quantity}</h2>${preferredFigure(labelled(map, summary))}`)}
 ${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))}
 <h2>What these numbers take for granted</h2>
 <ul>${assumptions.map((text) => mark`<li>${text}</li>`)}</ul>
@@ -41,10 +41,10 @@ function quantitySection(quantity: QuantitySummary, summary: SweepSummary, maps:
   const bars = barsOf(quantity, summary);
   const map = maps.find((one) => one.quantity === name);
   return mark`<section><h2>${name}</h2>
-<p>${meaning} From ${write(least)} to ${write(greatest)}, ${write(mean)} in the mean.</p>
+<p>${meaning} From ${write(least)} to ${write(greatest)}, ${write(mean)} in the mean${noneSeen(quantity, summary)}.</p>
 ${bars === null ? null : mark`<h3>What matters most</h3><figure>${drawBars(bars)}</figure>`}
-${map === undefined ? null : mark`<h3>Over two numbers</h3><figure>${heatFigure(map, write)}</figure>`}
-<h3>Over one number</h3><div>${factors.map((factor) => responseFigure(factor, name, write))}</div>
+${map === undefined ? null : mark`<h3>Over two numbers</h3><figure>${heatFigure(labelled(map, summary), write)}</figure>`}
+<h3>Over one number</h3><div>${factors.map((factor) => responseFigure({ ...factor, name: withUnit(factor.name, summary) }, name, write))}</div>
 <details><summary>The same as a table, by ${orderedBy}</summary>${responseTable(factors, write)}</details></section>`;
 }
 
@@ -101,6 +101,11 @@ function responseTable(factors: readonly FactorSummary[], write: (value: number)
 function rangeText([from, to]: HeatAxis['groups'][number]): string {
   const short = (value: number | string): string => (typeof value === 'number' ? three(value) : value);
   return from === to ? short(from) : `${short(from)} to ${short(to)}`;
+}
+
+function labelled<M extends HeatMap | PreferredMap>(map: M, summary: SweepSummary): M {
+  const own = (axis: HeatAxis): HeatAxis => ({ ...axis, name: withUnit(axis.name, summary) });
+  return { ...map, x: own(map.x), y: own(map.y) };
 }
 
 function axisOf({ name, groups }: HeatAxis) {

@@ -6,6 +6,7 @@ import {
   type QuantitySummary,
 } from '../sweep/summary/summarise.ts';
 import type { Ranking } from '../sweep/summary/ranking.ts';
+import { wilson } from '../results/wilson.ts';
 import { percent } from '../view/number.ts';
 import { fittedColumns } from './fitted-columns.ts';
 import { bold, dim, joinBlocks, printable, wrap, type TextStyle } from './terminal.ts';
@@ -13,15 +14,29 @@ import { bold, dim, joinBlocks, printable, wrap, type TextStyle } from './termin
 export function sweepText(summary: SweepSummary, style: TextStyle): string {
   const { model, points, design, failed, quantities, rankings, assumptions, runs } = summary;
   const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years each`;
+  const swept = summary.factors.map(({ name }) => withUnit(name, summary));
   return joinBlocks([
     bold(printable(model), style),
-    `${points.toLocaleString('en')} points (${design})${of}`,
+    wrap(`${points.toLocaleString('en')} points (${design})${of}, over ${swept.join(', ')}`, style),
     failed.points === 0 ? '' : failedText(summary, style),
     ...rankings.map((ranking) => rankingText(ranking, style)),
     ...quantities.map((quantity) => quantityText(quantity, summary, style)),
     ...assumptions.map((text) => wrap(text, style)),
     dim(`skein ${summary.tool.version}, kernel ${summary.tool.kernel}, hash ${summary.hash.slice(0, 12)}`, style),
   ]);
+}
+
+/** A swept number as readers meet it, such as `patches.Pond.capacity (animals)`. */
+export function withUnit(name: string, { factors }: SweepSummary): string {
+  const unit = factors.find((one) => one.name === name)?.unit ?? '';
+  return unit === '' ? name : `${name} (${unit})`;
+}
+
+/** What a chance of nothing seen may still be. */
+export function noneSeen({ unit, least }: QuantitySummary, { runs }: SweepSummary): string {
+  if (unit !== 'share' || least !== 0 || runs === null) return '';
+  const most = percent(wilson(0, runs.replicates).upper);
+  return `; 0\u00a0% of ${runs.replicates.toLocaleString('en')} runs of a point means at most ${most} (95\u00a0%)`;
 }
 
 function failedText({ failed, points }: SweepSummary, style: TextStyle): string {
@@ -38,7 +53,7 @@ function quantityText(quantity: QuantitySummary, summary: SweepSummary, style: T
   if (!Number.isFinite(least)) return `${bold(printable(name), style)}: no point has a number`;
   const shown = (value: number): string => numberText(value, unit);
   const from = unit === 'share' || unit === differenceOfShares ? '' : ` ${unit}`;
-  const range = `${shown(least)} to ${shown(greatest)}${from}, mean ${shown(mean)}`;
+  const range = `${shown(least)} to ${shown(greatest)}${from}, mean ${shown(mean)}${noneSeen(quantity, summary)}`;
   const noisy = noise === null ? '' : `; ${percent(noise)} of its variance comes from the number of runs`;
   const { head, cells } = tableOf(summary, quantity);
   return [

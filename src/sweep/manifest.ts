@@ -13,6 +13,8 @@ import {
   type Quantity,
 } from './measures.ts';
 import type { DesignPlan } from './design/design.ts';
+import type { Spec } from '../spec/schema/spec.ts';
+import { unitOfPlace } from './places.ts';
 import type { SweepPlan } from './request.ts';
 
 export interface SweepColumn {
@@ -72,7 +74,7 @@ export function manifestOf({ spec, model }: CompiledModel, plan: SweepPlan, prin
     pointsInPart,
     parts: Math.ceil(points / pointsInPart),
     runs: ofRuns ? { replicates, years, seed } : null,
-    columns: sweepColumns(design.factors, inScenarios(asked, scenarios)),
+    columns: sweepColumns(spec, design.factors, inScenarios(asked, scenarios)),
     spec: printed,
   };
 }
@@ -97,14 +99,17 @@ function partSize({ points, cells, measures }: PartSize): number {
   return Math.max(1, Math.min(fitting, few, 4096));
 }
 
-function sweepColumns(factors: readonly Factor[], quantities: readonly Quantity[]): readonly SweepColumn[] {
+/** What a number of a model is in that has no unit in the language: whatever its author gave it in. */
+export const ownUnit = 'as in the model';
+
+function sweepColumns(spec: Spec, factors: readonly Factor[], quantities: readonly Quantity[]): readonly SweepColumn[] {
   const number = ({ name, unit, meaning }: NumberColumn): SweepColumn => ({ name, type: 'number', unit, meaning });
   return [
     { name: 'point', type: 'integer', unit: '', meaning: 'Number of the point in the design, from 0.' },
     ...factors.map((factor): SweepColumn => ({
       name: factor.name,
       type: isText(factor) ? 'text' : 'number',
-      unit: isText(factor) ? '' : 'as in the model',
+      unit: isText(factor) ? '' : unitOfPlace(spec, factor.name) || ownUnit,
       meaning: 'Value of this number at the point, in its base unit.',
     })),
     ...quantities.flatMap(columnsOf).map(number),

@@ -2,6 +2,7 @@
 import type { SpecPath } from '../spec/document.ts';
 import { readQuantity, type Dimension } from '../spec/quantity.ts';
 import type { Spec } from '../spec/schema/spec.ts';
+import { unitAt } from '../spec/shape/unit-at.ts';
 import type { Value } from './design/factor.ts';
 
 /** Stands for the scenario that is run. */
@@ -35,6 +36,20 @@ export function placesIn(spec: Spec): readonly PlacedNumber[] {
     ...kept.flatMap(([key, value]) => below(value, { name: key, path: [key], known })),
     ...Object.entries(named).flatMap(([key, value]) => below(value, { name: key, path: ['named', key], known })),
   ];
+}
+
+/** Of a place, as the language has it; empty for named parameters and for what has none. */
+export function unitOfPlace(spec: Spec, name: string): string {
+  const place = placesIn(spec).find((one) => one.name === name);
+  if (place === undefined || Object.hasOwn(spec.parameters ?? {}, name)) return '';
+  const inWords: Readonly<Record<string, string>> = {
+    'the currency': spec.money?.currency ?? '',
+    'that of the number': '',
+    'the `unit` of the plane, or degrees': spec.unit ?? 'degrees',
+    times: '',
+  };
+  const unit = unitAt(spec, place.path);
+  return inWords[unit] ?? unit;
 }
 
 interface At {

@@ -1,11 +1,11 @@
 // What a sweep will do, in words, before it begins.
 import { openDesign } from '../../sweep/design/design.ts';
-import type { Manifest } from '../../sweep/manifest.ts';
+import { ownUnit, type Manifest } from '../../sweep/manifest.ts';
 
 const counted = (n: number, one: string, more = `${one}s`): string =>
   `${n.toLocaleString('en')} ${n === 1 ? one : more}`;
 
-export function planText({ model, design, measures, points, parts, runs }: Manifest): string {
+export function planText({ model, design, measures, points, parts, runs, columns }: Manifest): string {
   const names = design.factors.map(({ name }) => name);
   const first = openDesign(design).at(0);
   const asked =
@@ -14,10 +14,15 @@ export function planText({ model, design, measures, points, parts, runs }: Manif
       : `, from ${counted(runs.replicates, 'run')} of ${counted(runs.years, 'year')} each (seed ${runs.seed})`;
   return [
     `${model}: ${counted(points, 'point')} (${design.design}) in ${counted(parts, 'part')}`,
-    `  over      ${names.join(', ')}`,
+    `  over      ${names.map((name) => name + unitIn(columns, name)).join(', ')}`,
     `  begins    ${names.map((name, k) => `${name} ${String(first[k])}`).join(', ')}`,
     `  measures  ${measures.join(', ')}${asked}`,
   ].join('\n');
+}
+
+function unitIn(columns: Manifest['columns'], name: string): string {
+  const unit = columns.find((one) => one.name === name)?.unit ?? '';
+  return unit === '' || unit === ownUnit ? '' : ` (${unit})`;
 }
 
 export function costText(

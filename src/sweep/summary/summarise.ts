@@ -2,7 +2,7 @@
 // goes through 1.
 import type { DesignName } from '../design/design.ts';
 import { levelsOf, type Value } from '../design/factor.ts';
-import { isText } from '../manifest.ts';
+import { isText, ownUnit } from '../manifest.ts';
 import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
 import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
 import { screening, type FactorScreen } from '../sensitivity/screening.ts';
@@ -26,7 +26,8 @@ export interface SweepSummary {
     readonly points: number;
     readonly reasons: readonly { readonly reason: string; readonly points: number }[];
   };
-  readonly factors: readonly { readonly name: string; readonly base: Value }[];
+  /** The unit is empty where the language has none for it. */
+  readonly factors: readonly { readonly name: string; readonly base: Value; readonly unit: string }[];
   readonly quantities: readonly QuantitySummary[];
   /** Which scenario is best where; empty where none are compared. */
   readonly rankings: readonly Ranking[];
@@ -74,11 +75,16 @@ export function summariseSweep(swept: Swept): SweepSummary {
     points,
     runs,
     failed: { points: failed.reduce((sum, one) => sum + one.points, 0), reasons: failed },
-    factors: design.factors.map(({ name, base }) => ({ name, base })),
+    factors: design.factors.map(({ name, base }) => ({ name, base, unit: unitOf(manifest, name) })),
     quantities: [...quantityColumns(swept), ...differenceColumns(swept)].map((one) => summariseQuantity(swept, one)),
     rankings: rankingsOf(swept),
     assumptions: assumptionsOf(design.design, runs !== null),
   };
+}
+
+function unitOf({ columns }: Swept['manifest'], name: string): string {
+  const unit = columns.find((one) => one.name === name)?.unit ?? '';
+  return unit === ownUnit ? '' : unit;
 }
 
 interface QuantityColumn {
