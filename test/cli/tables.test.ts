@@ -28,6 +28,9 @@ const calls = [
   ['analyse', hare],
   // Without positions, without parameters that have a source, without a threshold that is fallen below.
   ['run', 'models/ageing-only.yaml', '--replicates', '20'],
+  // With the author's own counts, some of them missing.
+  ['run', 'models/held-against-counts.yaml', '--replicates', '20'],
+  ['compare', 'models/borrowed-newts.yaml', '--replicates', '40', '--years', '10'],
 ];
 
 describe.each(calls)('skein %s %s --out', (...words) => {
