@@ -2,6 +2,7 @@
 import { leading, type Leading } from '../numeric/leading.ts';
 import { because, collectReasons, type Answer } from './answer.ts';
 import { equilibriumAnswer } from './answer-equilibrium.ts';
+import { fallingAnswer } from './answer-falling.ts';
 import {
   blocksAnswer,
   distributionAnswer,
@@ -13,6 +14,7 @@ import {
   transientsAnswer,
   worthAnswer,
 } from './answer-growth.ts';
+import { invasionAnswer } from './answer-invasion.ts';
 import {
   capacityAnswer,
   differenceAnswer,
@@ -47,6 +49,10 @@ export function analyse(input: AnalysisInput): Analysis {
     plain((given) => patchesAnswer(input, { vectors: given, around })),
   );
   if (patches?.some(({ removalLoss }) => removalLoss === null) === true) take('patches.removalLoss', because(tooMany));
+  const links = take(
+    'links',
+    plain((given) => linksAnswer(input, { vectors: given, around })),
+  );
   return {
     format: 'skein-analysis/1',
     at: block.at,
@@ -81,19 +87,18 @@ export function analyse(input: AnalysisInput): Analysis {
       plain((given) => parametersAnswer(input.parameterTangents ?? [], given)),
     ),
     patches,
-    links: take(
-      'links',
-      plain((given) => linksAnswer(input, { vectors: given, around })),
-    ),
+    links,
     transients: take(
       'transients',
       plain((given) => transientsAnswer(input, given, settles(found))),
     ),
     stochasticGrowth: take('stochasticGrowth', stochasticAnswer(input, take)),
+    fallingBelow: take('fallingBelow', fallingAnswer(input, vectors, take)),
     growthStandardError: take(
       'growthStandardError',
       withVectors((given) => standardErrorAnswer(input, given)),
     ),
+    invasion: take('invasion', invasionAnswer(input)),
     equilibrium: take('equilibrium', equilibriumAnswer(input)),
     metapopulationCapacity: take('metapopulationCapacity', capacityAnswer(input)),
     spread: take('spread', spreadAnswer(input)),
@@ -105,6 +110,8 @@ export function analyse(input: AnalysisInput): Analysis {
       irreducible: found.irreducible,
       period: found.period,
       entries: block.matrix.values.length,
+      links: links?.length ?? 0,
+      linksAbout: links?.filter(({ exact }) => !exact).length ?? 0,
       linearised: input.linearised ?? false,
     }),
     reasons: told,

@@ -36,6 +36,9 @@ export interface CautionFacts {
   readonly period: number;
   /** Of the matrix. */
   readonly entries: number;
+  /** Listed, and those of them whose loss is share times sensitivity. */
+  readonly links: number;
+  readonly linksAbout: number;
   /** Rates or ways are not the same in every year. */
   readonly changesByYear: boolean;
   /** The matrix is that of small changes around the make-up of the sexes that few animals settle to. */
@@ -49,6 +52,7 @@ export const bothSexes =
 
 export function cautionsFor(facts: CautionFacts): string[] {
   const { patches, losslessDispersal, irreducible, period, entries, linearised, changesByYear } = facts;
+  const { links, linksAbout } = facts;
   const cautions = [meanYear, smallChanges];
   if (linearised) cautions.push(bothSexes);
   if (patches > 1) cautions.push(apparentSurvival);
@@ -67,6 +71,12 @@ export function cautionsFor(facts: CautionFacts): string[] {
   }
   if (entries > mostEntries) {
     cautions.push(`Of ${entries} entries only the ${mostEntries} with the largest elasticities are listed.`);
+  }
+  if (linksAbout > 0) {
+    cautions.push(
+      `The matrix is too large to take every link away by itself: the growth lost without ${linksAbout} of ${links} links is the share ` +
+        'that arrives times its sensitivity. That holds for small shares, and says too much or too little of a link that much depends on.',
+    );
   }
   return cautions;
 }

@@ -3,6 +3,7 @@ import type { BlockMatrix } from '../compile/block-matrix.ts';
 import type { DenseMatrix, SparseMatrix } from '../numeric/sparse.ts';
 import type { Answer } from './answer.ts';
 import type { Against } from './difference-input.ts';
+import type { SimulatedFall } from './falling.ts';
 import type { LifeSplit } from './life-history.ts';
 import type { Network } from './metapopulation-capacity.ts';
 import type { LongRunGrowth } from '../results/results.ts';
@@ -28,6 +29,13 @@ export interface NamedCovariance {
   readonly covariance: DenseMatrix;
 }
 
+/** Of a condition that depends on numbers: the least and the most over the patches. */
+export interface FactorAtZero {
+  readonly crowding: string;
+  readonly least: number;
+  readonly most: number;
+}
+
 /** All but the matrix may be missing; what then cannot be said comes out as null with the reason. */
 export interface AnalysisInput {
   readonly block: BlockMatrix;
@@ -45,6 +53,10 @@ export interface AnalysisInput {
   readonly noiseLeavesOut?: readonly string[];
   /** Long-run growth near zero, simulated. */
   readonly simulatedGrowth?: Answer<LongRunGrowth>;
+  /** Outcomes that are falls of freely drifting numbers, as runs found them. */
+  readonly falls?: Answer<readonly SimulatedFall[]>;
+  /** What conditions leave of the rates they act on near zero. */
+  readonly factorsAtZero?: readonly FactorAtZero[];
   /** Rates or ways that are not those of the first year in every year. */
   readonly changesByYear?: boolean;
   /** Of what is not known. */

@@ -13,8 +13,9 @@ import { growthWithChance, type CompiledModel } from '../pipeline.ts';
 import type { LongRunGrowth } from '../results/results.ts';
 import { because, type Answer } from './answer.ts';
 import { estimateErrors } from './chance/estimate-errors.ts';
+import { modelFalls } from './chance/model-falls.ts';
 import { modelYears } from './chance/model-years.ts';
-import type { AnalysisInput, NamedCovariance } from './input.ts';
+import type { AnalysisInput, FactorAtZero, NamedCovariance } from './input.ts';
 import { placesOf } from './label.ts';
 import type { LifeSplit } from './life-history.ts';
 import { networkOf } from './network.ts';
@@ -32,7 +33,10 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
   const linearised = at === 'zero' ? linearisedBlock(compiled) : null;
   const block = linearised ?? buildBlock(compiled, at, state);
   const places = placesOf(block);
-  const yearMap = dependsOnNumbers(model) ? { yearMap: yearOver(compiled, places) } : {};
+  const crowded = dependsOnNumbers(model)
+    ? { yearMap: yearOver(compiled, places), factorsAtZero: factorsAtZero(compiled) }
+    : {};
+  const changing = changesByYear(compiled);
   return {
     value: {
       block,
@@ -42,13 +46,14 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
       noise: noiseAt(compiled, at),
       noiseLeavesOut: model.catastrophes.map(({ name }) => name),
       simulatedGrowth: simulatedAt(compiled, at),
-      changesByYear: changesByYear(compiled),
+      falls: modelFalls(compiled, { at, changesByYear: changing, places }),
+      changesByYear: changing,
       uncertainty: uncertaintyOf(model),
       network: networkOf(model),
       spread: modelSpread(compiled),
       losslessDispersal: nobodyIsLost(compiled),
       linearised: linearised !== null && needsBoth(model),
-      ...yearMap,
+      ...crowded,
     },
   };
 }
@@ -110,6 +115,14 @@ function needsBoth({ phases }: Model): boolean {
   return phases.some(
     (phase) => phase.kind === 'breeding' && (phase.mating?.form ?? 'female-dominant') !== 'female-dominant',
   );
+}
+
+function factorsAtZero(compiled: Compiled): readonly FactorAtZero[] {
+  const { multipliers } = runYear(compiled, nearZero(compiled));
+  return compiled.model.crowding.map(({ name }, k) => {
+    const factors = multipliers[k] ?? Float64Array.of(1);
+    return { crowding: name, least: Math.min(...factors), most: Math.max(...factors) };
+  });
 }
 
 function yearOver(compiled: Compiled, places: readonly number[]): YearMap {

@@ -118,10 +118,61 @@ export const StochasticGrowthSchema = closed({
       growthRate: number('e to the mean yearly change of ln numbers.'),
       logGrowth: Type.Number(),
       standardError: number('Of `logGrowth`, from independent courses.'),
+      yearlyVariance: number('Variance that a year adds to ln numbers in the long run.'),
       years: number('That were simulated, all courses together.'),
     }),
   ),
 });
+
+export const FallingSchema = closed(
+  {
+    outcome: Type.String({ description: "The author's name." }),
+    definition: Type.String({ description: 'In words, from the rule itself.' }),
+    threshold: number('Below so many of those that are counted it has come.'),
+    logDistance: number(
+      'ln of the count at the start over the threshold, with each animal of the start counted by its worth.',
+    ),
+    drift: number('Mean yearly change of ln numbers, simulated (as in stochasticGrowth).'),
+    variance: number('Variance that a year adds to ln numbers, simulated.'),
+    replicates: Type.Integer({ minimum: 1, description: 'Runs that the simulated shares are of.' }),
+    years: Type.Array(
+      closed({
+        year: Type.Integer({ description: 'Calendar year of the count.' }),
+        diffusion: number('Chance of having fallen by then, for numbers that are counted once a year.'),
+        simulated: number('Share of the runs that had fallen by then.'),
+        lower: number('Of a band that holds for the whole simulated curve at once (95 %).'),
+        upper: number('Of the same band.'),
+      }),
+    ),
+  },
+  'An outcome that comes when freely drifting numbers fall.',
+);
+
+export const InvasionSchema = closed(
+  {
+    growthRate: number('Growth rate of a few animals: above 1 the species can come in.'),
+    factors: Type.Array(
+      closed({
+        crowding: Type.String({ description: 'Name of the condition.' }),
+        least: number('Of its factors over the patches, near zero.'),
+        most: number('Of the same.'),
+      }),
+      { description: 'What conditions leave of the rates they act on where almost nobody is.' },
+    ),
+    patches: Type.Array(
+      closed({ patch, growthAlone: number('Growth rate if all that leave were lost and nobody came.') }),
+    ),
+    makeUp: orNull(
+      Type.Array(closed({ patch, class: className, share: Type.Number() }), {
+        description: 'What few animals come to be made up of; null where there is no single such make-up.',
+      }),
+    ),
+    entries: Type.Array(closed({ from: State, to: State, value: number('Animals next year for each animal now.') }), {
+      description: 'Of the matrix near zero; of many, those with the largest values.',
+    }),
+  },
+  'The matrix that a few newcomers grow by.',
+);
 
 export const SpreadSchema = closed(
   {
@@ -184,7 +235,9 @@ export const AnalysisSchema = closed({
   links: orNull(Type.Array(LinkSchema)),
   transients: orNull(TransientsSchema),
   stochasticGrowth: orNull(StochasticGrowthSchema),
+  fallingBelow: orNull(Type.Array(FallingSchema)),
   growthStandardError: maybe('Standard error of the growth rate from those of the parameters.'),
+  invasion: orNull(InvasionSchema),
   equilibrium: orNull(EquilibriumSchema),
   metapopulationCapacity: orNull(
     closed({

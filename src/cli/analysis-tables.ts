@@ -23,6 +23,8 @@ export function analysisTables(analysis: Analysis): readonly Table[] {
     entryTable(analysis),
     parameterTable(analysis),
     linkTable(analysis),
+    fallingTable(analysis),
+    invasionTable(analysis),
     entryDifferenceTable(analysis),
     numberDifferenceTable(analysis),
   ].filter(({ rows }) => rows.length > 0);
@@ -172,6 +174,37 @@ function linkTable({ links }: Analysis): Table {
       ...[link.phase, link.from, link.to, link.class],
       ...[link.share, link.sensitivity, link.sensitivityInsteadOfStaying, link.removalLoss],
       String(link.exact),
+    ]),
+  };
+}
+
+function fallingTable({ fallingBelow }: Analysis): Table {
+  return {
+    name: 'falling-below',
+    columns: [
+      column('outcome', '', "The author's name."),
+      column('year', 'calendar year', 'Of the count.'),
+      column('diffusion', 'chance', 'Of having fallen below by then, by the diffusion curve for yearly counts.'),
+      column('simulated', 'share', 'Of the runs that had fallen below by then.'),
+      column('lower', 'share', 'Of a 95 % band that holds for the whole simulated curve at once.'),
+      column('upper', 'share', 'Of the same band.'),
+    ],
+    rows: (fallingBelow ?? []).flatMap(({ outcome, years }) =>
+      years.map(({ year, diffusion, simulated, lower, upper }): readonly Cell[] => [
+        ...[outcome, year, diffusion],
+        ...[simulated, lower, upper],
+      ]),
+    ),
+  };
+}
+
+function invasionTable({ invasion }: Analysis): Table {
+  return {
+    name: 'invasion',
+    columns: [...fromTo, column('value', 'animals', 'Next year for each animal now, where almost nobody is.')],
+    rows: (invasion?.entries ?? []).map(({ from, to, value }): readonly Cell[] => [
+      ...[from.patch, from.class, to.patch, to.class],
+      value,
     ]),
   };
 }

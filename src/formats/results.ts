@@ -252,6 +252,7 @@ export const PathSchema = Type.Object({
             growthRate: part.number('exp of the mean yearly change of the logarithm.'),
             logGrowth: part.number('Mean yearly change of the natural logarithm of numbers.'),
             standardError: part.number('Of that mean.'),
+            yearlyVariance: part.number('Variance that a year adds to the logarithm in the long run.'),
             years: part.whole('That were simulated, all courses together.'),
           },
           { description: 'Growth in the long run where years differ by chance.' },

@@ -11,6 +11,17 @@ export interface LongRunRequest {
   readonly seed: number;
 }
 
+/** Changes of the natural logarithm of all animals; −∞ where a year leaves nobody. */
+export interface LongRun {
+  /** Mean of a year, one number a course. */
+  readonly courses: Float64Array;
+  /** Sums over stretches of `stretch` years, course by course; years left over are in none. */
+  readonly stretches: Float64Array;
+}
+
+/** Long enough that what one year leaves to the next hardly reaches out of it. */
+export const stretch = 50;
+
 const mostYears = 5000;
 const fewestYears = 500;
 /** Multiplications that a look at growth may take. */
@@ -22,7 +33,8 @@ export function yearsThatPay(image: ArrayBuffer, { phases, settling }: { phases:
   const word = (index: number): number => header[index] ?? 0;
   const inPatches = word(layout.headerPatches) * (word(layout.headerClasses) * phases + word(layout.headerSlots));
   const work = Math.max(1, inPatches + word(layout.headerWays));
-  return Math.max(fewestYears, Math.min(mostYears, Math.floor(mostWork / (layout.lanes * work)) - settling));
+  const years = Math.floor(mostWork / (layout.lanes * work)) - settling;
+  return Math.max(fewestYears, Math.min(mostYears, years - (years % stretch)));
 }
 
 /** So few that neither crowding nor ceilings matter. */
@@ -30,11 +42,10 @@ const few = 1e-12;
 const wordSize = 4294967296;
 
 /**
- * Mean yearly change of the natural logarithm of all animals, one number a course; −∞ where a year leaves nobody. The courses
- * are independent; within each the years follow on one another, with their autocorrelation and waits. Rates are those of the
- * first year.
+ * The courses are independent; within each the years follow on one another, with their autocorrelation and waits. Rates are
+ * those of the first year.
  */
-export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRunRequest): Float64Array {
+export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRunRequest): LongRun {
   const machine = openOwnImage(image);
   const header = headerOf(image);
   const cells = (header[layout.headerPatches] ?? 0) * (header[layout.headerClasses] ?? 0);
@@ -43,6 +54,8 @@ export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRu
   machine.start(layout.lanes, seed % wordSize, Math.floor(seed / wordSize));
   const states = new Float64Array(layout.lanes * cells).fill(few / cells);
   const sums = new Float64Array(layout.lanes);
+  const perCourse = Math.floor(years / stretch);
+  const stretches = new Float64Array(layout.lanes * perCourse);
   const here = new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells);
   for (let year = 0; year < settling + years; year++) {
     machine.stepWeather();
@@ -51,11 +64,16 @@ export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRu
       here.set(state);
       machine.stepPathUnder(lane);
       const total = sumOf(here);
-      if (year >= settling) sums[lane] = (sums[lane] ?? 0) + (total > 0 ? machine.log(total / few) : -Infinity);
+      if (year >= settling) {
+        const change = total > 0 ? machine.log(total / few) : -Infinity;
+        const [at, own] = [lane * perCourse, Math.floor((year - settling) / stretch)];
+        sums[lane] = (sums[lane] ?? 0) + change;
+        if (own < perCourse) stretches[at + own] = (stretches[at + own] ?? 0) + change;
+      }
       if (total > 0) for (let i = 0; i < cells; i++) state[i] = ((here[i] ?? 0) / total) * few;
     }
   }
-  return sums.map((sum) => sum / years);
+  return { courses: sums.map((sum) => sum / years), stretches };
 }
 
 function sumOf(numbers: Float64Array): number {

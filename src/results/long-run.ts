@@ -1,5 +1,5 @@
 // Growth in the long run: near zero, where years differ by chance, beside the growth of an average year.
-import { yearsThatPay, type LongRunRequest } from '../kernel/long-run.ts';
+import { stretch, yearsThatPay, type LongRun, type LongRunRequest } from '../kernel/long-run.ts';
 import { pinned } from '../machine/pinned.ts';
 import { seedOf } from '../machine/random.ts';
 import { keyOfName } from '../compile/image/keys.ts';
@@ -21,18 +21,23 @@ export function longRunRequest({ seed, phases }: Model, image: ArrayBuffer): Lon
 }
 
 /**
- * From the mean yearly change of the logarithm in each of several independent courses: their mean, and its standard error
- * from how far they lie apart. Null where some year left nobody.
+ * From several independent courses: their mean, its standard error from how far they lie apart, and the variance that a year
+ * adds in the long run, from how far sums over stretches of years lie apart. Null where some year left nobody.
  */
-export function longRunGrowth(courses: Float64Array, years: number): LongRunGrowth | null {
+export function longRunGrowth({ courses, stretches }: LongRun, years: number): LongRunGrowth | null {
   const n = courses.length;
   const mean = courses.reduce((a, b) => a + b, 0) / n;
   if (!Number.isFinite(mean)) return null;
-  const squares = courses.reduce((sum, one) => sum + (one - mean) * (one - mean), 0);
   return {
     growthRate: pinned.exp(mean),
     logGrowth: mean,
-    standardError: Math.sqrt(squares / (n - 1) / n),
+    standardError: Math.sqrt(varianceOf(courses) / n),
+    yearlyVariance: varianceOf(stretches) / stretch,
     years: years * n,
   };
+}
+
+function varianceOf(values: Float64Array): number {
+  const mean = values.reduce((a, b) => a + b, 0) / values.length;
+  return values.reduce((sum, one) => sum + (one - mean) * (one - mean), 0) / (values.length - 1);
 }

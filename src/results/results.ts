@@ -239,6 +239,8 @@ export interface LongRunGrowth {
   /** Mean yearly change of the natural logarithm of numbers (ln λ_s), and its standard error. */
   readonly logGrowth: number;
   readonly standardError: number;
+  /** Variance that a year adds to the logarithm in the long run. */
+  readonly yearlyVariance: number;
   /** That were simulated, all courses together. */
   readonly years: number;
 }

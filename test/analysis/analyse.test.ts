@@ -1,7 +1,7 @@
 import Ajv from 'ajv/dist/2020.js';
 import { describe, expect, test } from 'vitest';
 import { analyse } from '../../src/analysis/analyse.ts';
-import { corridorParadox } from '../../src/analysis/cautions.ts';
+import { cautionsFor, corridorParadox } from '../../src/analysis/cautions.ts';
 import type { AnalysisInput } from '../../src/analysis/input.ts';
 import { analysisText } from '../../src/report/analysis/analysis-text.ts';
 import { AnalysisSchema, analysisJsonSchema, type Analysis } from '../../src/analysis/schema.ts';
@@ -45,7 +45,18 @@ function everything(): AnalysisInput {
     start: new Float64Array(block.states.length).fill(4),
     parameterTangents: [{ name: 'everything', value: 1, matrixTangent: births }],
     noise: { value: { logGrowth: 0.05, lost: 0.005, yearlyVariance: 0.01 } },
-    simulatedGrowth: { value: { growthRate: 1.05, logGrowth: Math.log(1.05), standardError: 0.001, years: 4000 } },
+    simulatedGrowth: {
+      value: { growthRate: 1.05, logGrowth: Math.log(1.05), standardError: 0.001, yearlyVariance: 0.04, years: 4000 },
+    },
+    falls: {
+      value: [
+        {
+          ...{ outcome: 'few', definition: 'fewer than 5 animals', threshold: 5, replicates: 200 },
+          counted: new Float64Array(block.states.length).fill(1),
+          byYear: [2030, 2031, 2032].map((year) => ({ year, ever: 0.1, lower: 0.05, upper: 0.15 })),
+        },
+      ],
+    },
     uncertainty: {
       value: { names: ['everything'], covariance: { rows: 1, columns: 1, values: Float64Array.of(0.0004) } },
     },
@@ -123,6 +134,21 @@ describe('a whole analysis', () => {
     expect(text).not.toMatch(/NaN|undefined|Infinity|null/);
     expect(text.endsWith('\n')).toBe(true);
   });
+});
+
+test('losses of links that were not taken away by themselves carry a caution that counts them', () => {
+  const facts = {
+    patches: 2,
+    losslessDispersal: false,
+    irreducible: true,
+    period: 1,
+    entries: 4,
+    changesByYear: false,
+  };
+  const withLinks = (linksAbout: number): string =>
+    cautionsFor({ ...facts, linearised: false, links: 2200, linksAbout }).join(' ');
+  expect(withLinks(1700)).toContain('1700 of 2200 links');
+  expect(withLinks(0)).not.toContain('2200');
 });
 
 describe('what does not apply', () => {

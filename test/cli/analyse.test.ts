@@ -79,7 +79,7 @@ test('--set moves the growth rate by the sensitivity', () => {
 test('--out writes a table for each list, with a dictionary of every column', () => {
   const cwd = folder();
   expect(skein(['analyse', ponds, '--out', 'here', '--quiet'], { cwd }).code).toBe(0);
-  const tables = ['entries', 'growth', 'links', 'patches', 'states'];
+  const tables = ['entries', 'growth', 'invasion', 'links', 'patches', 'states'];
   expect(filesIn(join(cwd, 'here'))).toEqual(
     [
       ...['dictionary.csv', 'log.json', 'results.json', 'run.json'],
@@ -93,6 +93,22 @@ test('--out writes a table for each list, with a dictionary of every column', ()
   }
   const results = JSON.parse(readFileSync(join(cwd, 'here/results.json'), 'utf8'));
   expect(fits(results)).toBe(true);
+});
+
+test('the curve of falls and its simulated shares are a table of --out', () => {
+  const cwd = folder();
+  const drifting = `${process.cwd()}/models/drifting.yaml`;
+  expect(skein(['analyse', drifting, '--out', 'here', '--quiet'], { cwd }).code).toBe(0);
+  const rows = readFileSync(join(cwd, 'here/falling-below.csv'), 'utf8').trim().split('\n');
+  expect(rows[0]).toBe('outcome,year,diffusion,simulated,lower,upper');
+  expect(rows).toHaveLength(1 + 2 * 40);
+  const { fallingBelow } = JSON.parse(readFileSync(join(cwd, 'here/results.json'), 'utf8'));
+  const [outcome, year, diffusion, simulated] = rows[40]!.split(',');
+  const last = fallingBelow[0].years.at(-1);
+  expect([outcome, Number(year), Number(diffusion), Number(simulated)]).toEqual([
+    'few nannies',
+    ...[last.year, last.diffusion, last.simulated],
+  ]);
 });
 
 describe('--against', () => {

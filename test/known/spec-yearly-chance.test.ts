@@ -1,6 +1,8 @@
 // Numbers that grow by chance alone, counted once a year, from a spec to the results; and what plans that share their weather
 // share. So many animals that the luck of single ones hardly counts. Seeds are fixed; bounds are 4.5 standard errors.
 import { describe, expect, test } from 'vitest';
+import { analyseModel } from '../../src/analysis/analyse-model.ts';
+import { chanceFallenBy } from '../../src/analysis/diffusion.ts';
 import { runModel } from '../../src/pipeline.ts';
 import { runReplicates } from '../kernel/collect.ts';
 import { compileText } from '../pipeline/compile-text.ts';
@@ -60,6 +62,32 @@ describe.each([
     const bound = 4.5 * (meanLowestCount.standardError / animals) + 1e-3;
     expect(Math.abs(meanLowestCount.mean / animals - lowest)).toBeLessThan(bound);
   });
+});
+
+// Derived: the diffusion curve of Lande & Orzack (1988) with the shift of 0.5826 standard deviations for yearly counts (Broadie,
+// Glasserman & Kou 1997, from memory); drift and variance are those of the simulated long run, so that both come with their errors.
+test.each([
+  [-0.02, 0.24557, 0.24761],
+  [0, 0.08716, 0.087965],
+  [0.02, 0.02186, 0.02205],
+])('drift %d: the analysis sets the curve for yearly counts beside the simulated one', (drift, curve, truth) => {
+  const compiled = compileText(walk({ drift, variance: 0.04, animals })(`replicates: 3000, seed: 12`));
+  const { value } = analyseModel(compiled, { at: 'zero' });
+  const [fall] = value!.fallingBelow!;
+  expect(fall!.logDistance).toBeCloseTo(Math.log(10), 12);
+  // 1600 stretches tell the variance to 3.5 %, 80,000 years the drift to 0.0007.
+  expect(Math.abs(fall!.drift - drift)).toBeLessThan(4.5 * 0.0007);
+  expect(Math.abs(fall!.variance / 0.04 - 1)).toBeLessThan(4.5 * 0.0354);
+  const last = fall!.years.at(-1)!;
+  const given = (by: number, from: number) =>
+    chanceFallenBy(50, Math.log(10), { drift: drift + by, variance: 0.04 + from }, 'once a year') - curve;
+  const bound = Math.hypot(given(0.0007, 0), given(0, 0.04 * 0.0354)) * 4.5;
+  expect(Math.abs(last.diffusion - curve)).toBeLessThan(bound);
+  expect(Math.abs(last.simulated - truth)).toBeLessThan(4.5 * Math.sqrt((truth * (1 - truth)) / 3000));
+  // The very runs of `skein run`.
+  expect(fall!.years.map(({ simulated }) => simulated)).toEqual(
+    runModel(compiled).outcomes[0]!.byYear.map(({ ever }) => ever),
+  );
 });
 
 // Derived: mean 10 · 1.2^10, variance 10 · 1.2^9 (1.2^10 − 1)/(1.2 − 1) · 1.2 of ten families.

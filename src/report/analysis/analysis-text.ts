@@ -3,11 +3,20 @@ import type { Analysis } from '../../analysis/schema.ts';
 import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from '../terminal.ts';
 import { cautionList } from '../text.ts';
 import { answerWords } from './answer.ts';
-import { chanceWords, equilibriumWords, firstYears, groupWords, lifeWords, networkWords } from './sections.ts';
+import {
+  chanceWords,
+  equilibriumWords,
+  firstYears,
+  groupWords,
+  invasionWords,
+  lifeWords,
+  networkWords,
+} from './sections.ts';
 import {
   dependenceTable,
   differenceTable,
   eigenvalueTable,
+  fallingTables,
   linkTable,
   numberDifferenceTable,
   patchTable,
@@ -32,6 +41,8 @@ export function analysisText(analysis: Analysis, style: TextStyle): string {
     section('The first years', firstYears(analysis), style),
     section('Lives', lifeWords(analysis), style),
     section('Chance, and what is not known', chanceWords(analysis), style),
+    ...fallingTables(analysis).map((table) => tableOf(table.title, table, style)),
+    section('From almost nobody', invasionWords(analysis), style),
     section('At capacity', equilibriumWords(analysis), style),
     section('The network and its edge', networkWords(analysis), style),
     section('Groups of states that cannot all reach one another', groupWords(analysis), style),
@@ -50,7 +61,14 @@ function section(title: string, lines: readonly string[], style: TextStyle): str
 function tableOf(title: string, table: TextTable | null, style: TextStyle): string {
   if (table === null) return '';
   const { head, rows, below } = table;
-  const parts = [bold(title, style), columnsOf(head, rows, style), ...below.map((line) => wrap(line, style, '  '))];
+  const parts = [
+    wrap(title, style)
+      .split('\n')
+      .map((line) => bold(line, style))
+      .join('\n'),
+    columnsOf(head, rows, style),
+    ...below.map((line) => wrap(line, style, '  ')),
+  ];
   return parts.join('\n');
 }
 

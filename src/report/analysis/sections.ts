@@ -108,6 +108,45 @@ function longRun({ approximation, simulated }: NonNullable<Analysis['stochasticG
   ];
 }
 
+/** Patches named in a list of a terminal. */
+const mostPatches = 6;
+
+export function invasionWords({ invasion, stochasticGrowth, blocks }: Analysis): readonly string[] {
+  if (invasion === null) return [];
+  const { growthRate, factors, patches, makeUp } = invasion;
+  const withChance = stochasticGrowth?.simulated?.growthRate ?? null;
+  const lines = [
+    `A few newcomers, where nobody is: their number ${change(growthRate)} in mean years (invasion growth rate ` +
+      `${told(growthRate)})${fateOf(growthRate, withChance)}.`,
+    ...factors.map((one) => `Among so few, ${one.crowding} ${leaves(one)} the rates it acts on.`),
+  ];
+  const lasting = patches.filter((patch) => patch.growthAlone > 1).map(({ patch }) => patch);
+  if (patches.length > 1) {
+    lines.push(
+      `In one patch alone, with whoever leaves lost, a few would increase in mean years in ${listed(lasting, mostPatches)} ` +
+        `(${lasting.length} of ${patches.length} patches).`,
+    );
+  }
+  if (makeUp === null && blocks.length > 1) {
+    lines.push('What they come to be made up of depends on where they come in: not every state can reach every other.');
+  }
+  return [...lines, 'The matrix they grow by (invasion matrix) is listed under `invasion` with --json and --out.'];
+}
+
+/** Chance decides where it is known. */
+function fateOf(growthRate: number, withChance: number | null): string {
+  if (growthRate > 1 && withChance !== null && withChance < 1)
+    return `; but with years that differ it ${change(withChance)} in the long run, so most that come in die out`;
+  if (growthRate > 1) return ', so the species can come in, and come back after a loss';
+  return growthRate < 1 ? ', so a few die out by themselves' : '';
+}
+
+function leaves({ least, most }: { readonly least: number; readonly most: number }): string {
+  if (least === most && least === 1) return 'takes nothing from';
+  if (least === most && least === 0) return 'leaves nothing of';
+  return `leaves ${least === most ? told(least) : `${told(least)} to ${told(most)}`} of`;
+}
+
 export function equilibriumWords({ equilibrium }: Analysis): readonly string[] {
   if (equilibrium === null) return [];
   const lines = equilibrium.states.map(({ total, stable, leadingModulus }) => {
@@ -115,7 +154,6 @@ export function equilibriumWords({ equilibrium }: Analysis): readonly string[] {
     const back = stable ? 'numbers come back to it' : 'numbers leave it';
     return `Numbers stand still at ${told(total)}; ${back} (a small disturbance is ${told(leadingModulus)} of itself a year later).`;
   });
-  lines.push(`From almost nobody, the population ${change(equilibrium.invasionGrowth)}.`);
   if (equilibrium.startThreshold !== null) {
     lines.push(
       `With fewer than ${told(equilibrium.startThreshold.lastsAbove)} animals, made up as at the start, it dies out.`,

@@ -91,8 +91,49 @@ export function linkTable({ links }: Analysis, most: number): TextTable | null {
     below: [
       'Instead of staying: growth per share of the animals that goes there and would otherwise have stayed. Without: those who ' +
         'would have arrived are lost.',
+      ...(largest.some(({ exact }) => !exact) ? ['About: the share that arrives times its sensitivity.'] : []),
     ],
   };
+}
+
+/** Years shown of a curve. */
+const mostYears = 5;
+
+export interface FallingTable extends TextTable {
+  readonly title: string;
+}
+
+export function fallingTables({ fallingBelow }: Analysis): readonly FallingTable[] {
+  return (fallingBelow ?? []).map(({ outcome, definition, drift, variance, replicates, years }, k, all) => ({
+    title: `${outcome}: chance of having come to ${definition}`,
+    head: ['by', 'diffusion curve', 'simulated', '95 % band'],
+    rows: spread(years, mostYears).map(({ year, diffusion, simulated, lower, upper }) => [
+      String(year),
+      percent(diffusion),
+      percent(simulated),
+      `${percent(lower)} to ${percent(upper)}`,
+    ]),
+    below:
+      k < all.length - 1
+        ? []
+        : [
+            `Diffusion curve: ln of numbers drifts by ${told(drift)} a year and a year adds ${told(variance)} to its variance (from the ` +
+              'simulated long run), counted once a year (Lande & Orzack 1988; the correction for yearly counts Broadie, Glasserman & Kou ' +
+              `1997). It leaves out the luck of single animals and the waves between classes. Simulated: share of ${replicates} runs, with a band for the whole curve.`,
+          ],
+  }));
+}
+
+/** So many, evenly, the last among them. */
+function spread<T>(all: readonly T[], most: number): readonly T[] {
+  const count = Math.min(most, all.length);
+  return Array.from({ length: count }, (_, i) => all[Math.ceil(((i + 1) * all.length) / count) - 1]).filter(
+    (one) => one !== undefined,
+  );
+}
+
+function percent(share: number): string {
+  return `${told(Number((share * 100).toFixed(2)))}\u00a0%`;
 }
 
 /** By named numbers, where they differ. */
