@@ -1,8 +1,7 @@
 // The same plans with only a part of what their actions are hoped to do.
 import { printExpression } from '../spec/expression/print.ts';
 import { readMeasure, type Dimension } from '../spec/quantity.ts';
-import type { Effect } from '../spec/schema/effect.ts';
-import type { ActionSpec, Spec } from '../spec/schema/spec.ts';
+import type { ActionSpec, EffectSpec, Spec } from '../spec/schema/spec.ts';
 
 /** A share of 0 leaves plans that do nothing; what cannot be done in part, such as the loss of a patch, stays whole. */
 export function withScaledEffects(spec: Spec, share: number): Spec {
@@ -46,12 +45,12 @@ function scale(action: ActionSpec, share: number): void {
   }
 }
 
-function scaleAll(effects: Record<string, Effect>, share: number): void {
+function scaleAll(effects: Record<string, EffectSpec>, share: number): void {
   for (const [key, effect] of Object.entries(effects)) effects[key] = partOf(effect, 'share', share);
 }
 
 /** Of E(x) = set·times + add, or x·times + add where nothing is set: (1 − share) x + share E(x). */
-function partOf({ set, times: factor, add }: Effect, dimension: Dimension, share: number): Effect {
+function partOf({ set, times: factor, add }: EffectSpec, dimension: Dimension, share: number): EffectSpec {
   const [whole, more] = [baseUnits(factor ?? 1, 'share'), baseUnits(add ?? 0, dimension)];
   const rest = 1 - share;
   if (set !== undefined) {

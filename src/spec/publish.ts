@@ -1,5 +1,6 @@
 // The published JSON Schema (2020-12) of the language, for editors and other programs: made from the schema that the reader uses.
 import { CoreSchema, namedSchemas } from './schema/spec.ts';
+import { unsure, unsureFormats } from './schema/unsure.ts';
 import { sectionOf } from './text/value.ts';
 import { isSeveral, knownKeys, shapeOfOthers, sortOf, type Shape } from './shape/shape.ts';
 
@@ -18,6 +19,7 @@ export function writeSchema(): string {
     ],
     ...Object.entries(publish(core)).filter(([key]) => key !== 'additionalProperties'),
     ['additionalProperties', ownSections()],
+    ['$defs', Object.fromEntries(unsureFormats.map((format) => [shared(format), publishHere(unsure(format))]))],
   ]);
   return `${JSON.stringify(published, null, 2)}\n`;
 }
@@ -40,7 +42,17 @@ const copied = ['title', 'description', 'default', 'examples', 'const', 'format'
 const limits = ['minItems', 'maxItems', 'uniqueItems', 'minLength', 'minimum', 'maximum'] as const;
 const others = ['exclusiveMinimum', 'exclusiveMaximum', 'x-unit', 'x-key'] as const;
 
+/** What stands under very many keys is published once. */
 function publish(shape: Shape): Published {
+  const format = shape['x-unsure'];
+  return format === undefined ? publishHere(shape) : { $ref: `#/$defs/${shared(format)}` };
+}
+
+function shared(format: string): string {
+  return `unsure-${format}`;
+}
+
+function publishHere(shape: Shape): Published {
   const kept = [...copied, ...limits, ...others].flatMap((key) =>
     shape[key] === undefined ? [] : [[key, shape[key]]],
   );

@@ -86,6 +86,12 @@ function unitError(details: Omit<UnitError, 'code'>): { readonly ok: false; read
 const unitAtEnd = /(?<=[^\s/])\s{0,9}((?:per\s{1,9}|\/\s{0,9})?[\p{L}%°][\p{L}²]{0,19}(?:\^?2)?)$/u;
 const longestUnit = 60;
 
+/** A number or expression and the unit behind it, which is empty where it has none. */
+export function amountAndUnit(text: string): { readonly amount: string; readonly unit: string } {
+  const parts = parseExpression(text).ok ? undefined : splitUnit(text);
+  return parts === undefined ? { amount: text, unit: '' } : { amount: parts.amount.trim(), unit: parts.unit };
+}
+
 interface UnitSplit {
   readonly amount: string;
   readonly unit: string;

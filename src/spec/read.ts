@@ -6,6 +6,7 @@ import type { DataFiles } from './data/files.ts';
 import { joinFiles } from './data/join.ts';
 import type { SpecDocument } from './document.ts';
 import { CoreSchema, namedSchemas, type Spec } from './schema/spec.ts';
+import { nameUnsureNumbers } from './unsure.ts';
 import { soundPart } from './shape/sound.ts';
 import { checkTop } from './shape/top.ts';
 import type { Report } from './shape/report.ts';
@@ -47,7 +48,8 @@ export function readSpec(text: string, file: string, files: DataFiles = new Map(
   const top = tree.root === undefined ? undefined : checkTop(tree.root, report);
   if (top === undefined) return { diagnostics: found.told(), wants: [] };
   if (found.errors > 0) return { ...readablePart(top, files, report), diagnostics: found.told() };
-  const { root, wants } = joinFiles(top, files, report);
+  const { root: joined, wants } = joinFiles(top, files, report);
+  const root = nameUnsureNumbers(joined, report);
   const diagnostics = found.told();
   if (found.errors > 0) return { diagnostics, wants };
   return { document: documentOf(root, source, found), diagnostics, wants };
@@ -58,7 +60,8 @@ function readablePart(top: SourceMap, files: DataFiles, { source }: Report): Omi
   const report: Report = { source, found: new Collector() };
   const sound = soundPart(top, source, report);
   if (sound === null) return { wants: [] };
-  const { root, wants } = joinFiles(sound.root, files, report);
+  const { root: joined, wants } = joinFiles(sound.root, files, report);
+  const root = nameUnsureNumbers(joined, report);
   if (report.found.errors > 0) return { wants };
   return { readable: { document: documentOf(root, source, report.found), lost: sound.lost }, wants };
 }

@@ -1,6 +1,6 @@
 // The tree of a spec as plain data, with each schedule as the expression that it stands for.
 import { expressionOf, isSchedule } from './schedule.ts';
-import { branchesOf, isSeveral, shapeOfKey, sortOf, type Shape } from './shape/shape.ts';
+import { branchesOf, isSeveral, shapeBelow, together, type Shape } from './shape/shape.ts';
 import type { SourceNode } from './text/source.ts';
 import { sectionOf } from './text/value.ts';
 
@@ -16,7 +16,7 @@ export function shapedValueOf(node: SourceNode, shape: Shape | undefined): unkno
     case 'map':
       if (isSchedule(node) && branches(shape).some((branch) => branch['x-schedule'] === true))
         return expressionOf(node);
-      return sectionOf(node.entries.map(({ key, value }) => [key, shapedValueOf(value, keyShape(shape, key))]));
+      return sectionOf(node.entries.map(({ key, value }) => [key, shapedValueOf(value, shapeBelow(shape, key))]));
   }
 }
 
@@ -24,17 +24,6 @@ function branches(shape: Shape | undefined): readonly Shape[] {
   return shape === undefined ? [] : branchesOf(shape);
 }
 
-/** A key may stand in several branches of a union: then all that it may be there. */
-function keyShape(shape: Shape | undefined, key: string): Shape | undefined {
-  return together(
-    branches(shape).flatMap((branch) => (sortOf(branch) === 'map' ? (shapeOfKey(branch, key) ?? []) : [])),
-  );
-}
-
 function itemShape(shape: Shape | undefined, index: number): Shape | undefined {
   return together(branches(shape).flatMap(({ items }) => (isSeveral(items) ? (items[index] ?? []) : (items ?? []))));
-}
-
-function together(found: readonly Shape[]): Shape | undefined {
-  return found.length > 1 ? { anyOf: found } : found[0];
 }

@@ -1,6 +1,6 @@
 // Rates or named numbers that change.
+import type { EffectSpec } from '../schema/spec.ts';
 import type { SpecPath } from '../document.ts';
-import type { Effect } from '../schema/effect.ts';
 import type { Draft, NamedAction } from './draft.ts';
 import { addEffect } from './targets.ts';
 import { rateSection, type RateSection } from './rate-section.ts';
@@ -38,7 +38,7 @@ export function layChange(draft: Draft, { name, spec }: NamedAction<'change'>): 
 }
 
 interface Placed {
-  readonly effect: Effect;
+  readonly effect: EffectSpec;
   readonly place: { readonly when: ReturnType<typeof whenOf>; readonly path: SpecPath };
 }
 
@@ -84,7 +84,7 @@ interface RateChange {
   /** A class. */
   readonly one: string;
   readonly patches: readonly string[] | null;
-  readonly effect: Effect;
+  readonly effect: EffectSpec;
   readonly when: ReturnType<typeof whenOf>;
   readonly path: SpecPath;
 }

@@ -4,7 +4,7 @@ import type { Finding } from '../finding.ts';
 import type { ActionSpec, Spec } from '../schema/spec.ts';
 import { asNow } from './lay.ts';
 import { tellMistake, tellUnknown } from './tell.ts';
-import { wordsOf } from './words.ts';
+import { sayNumbers, wordsOf } from './words.ts';
 
 export interface ScenarioAction {
   readonly name: string;
@@ -41,8 +41,9 @@ export function withScenario(spec: Spec, name: string): Spec {
 
 export function actionsOf(spec: Spec, scenario: string): readonly ScenarioAction[] {
   const chosen = new Set(spec.scenarios?.[scenario] ?? []);
+  const say = sayNumbers(spec);
   return Object.entries(spec.actions ?? {}).flatMap(([name, action]) =>
-    chosen.has(name) ? [{ name, kind: action.kind, words: wordsOf(action) }] : [],
+    chosen.has(name) ? [{ name, kind: action.kind, words: wordsOf(action, say) }] : [],
   );
 }
 

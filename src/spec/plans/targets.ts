@@ -1,10 +1,10 @@
 // Collects the effects on each number, and writes what they make of it together.
+import type { EffectSpec } from '../schema/spec.ts';
 import type { SpecPath } from '../document.ts';
 import type { Ast } from '../expression/ast.ts';
 import { number } from '../expression/build.ts';
 import { printExpression } from '../expression/print.ts';
 import { readMeasure, type Dimension } from '../quantity.ts';
-import type { Effect } from '../schema/effect.ts';
 import { composed, meet, type TimedEffect, type When } from './compose.ts';
 import { originOf, type Draft, type Target } from './draft.ts';
 import { tellMistake } from './tell.ts';
@@ -23,7 +23,7 @@ export function addEffect(
     target,
     effect,
     place,
-  }: { readonly target: () => Omit<Target, 'effects'>; readonly effect: Effect; readonly place: EffectPlace },
+  }: { readonly target: () => Omit<Target, 'effects'>; readonly effect: EffectSpec; readonly place: EffectPlace },
 ): void {
   const key = JSON.stringify(at);
   const known = draft.targets.get(key) ?? { ...target(), effects: [] };
@@ -31,7 +31,7 @@ export function addEffect(
   known.effects.push({ effect: readEffect(effect, known.dimension, place.when), path: place.path });
 }
 
-export function readEffect({ set, times, add }: Effect, dimension: Dimension, when: When): TimedEffect {
+export function readEffect({ set, times, add }: EffectSpec, dimension: Dimension, when: When): TimedEffect {
   return { when, set: measure(set, dimension), times: measure(times, 'share'), add: measure(add, dimension) };
 }
 

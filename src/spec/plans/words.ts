@@ -1,85 +1,99 @@
 // What an action does, in one phrase.
-import type { ActionSpec } from '../schema/spec.ts';
-import type { Effect } from '../schema/effect.ts';
+import { amountAndUnit } from '../quantity.ts';
+import type { ActionSpec, EffectSpec, Spec, UncertainSpec } from '../schema/spec.ts';
 
-export function wordsOf(spec: ActionSpec): string {
-  return `${deedOf(spec)}${yearsOf(spec)}`;
+type Say = (number: number | string) => string;
+
+/** Numbers that are not exactly known with what is said of them, not by a name. */
+export function sayNumbers({ parameters = {} }: Spec): Say {
+  return (number) => {
+    const { amount, unit } = amountAndUnit(String(number));
+    const named = Object.hasOwn(parameters, amount) ? parameters[amount] : undefined;
+    if (typeof named !== 'object' || named.uncertainty === undefined) return String(number);
+    return `${named.value}${unit === '' ? '' : ` ${unit}`} (${doubtWords(named.uncertainty)})`;
+  };
 }
 
-function deedOf(spec: ActionSpec): string {
+function doubtWords({ 'standard-error': error, interval, uniform, triangular }: UncertainSpec): string {
+  if (error !== undefined) return `standard error ${error}`;
+  const [low = NaN, high = NaN] = interval ?? uniform ?? triangular ?? [];
+  return `${interval === undefined ? 'somewhere from' : '95 % interval'} ${low} to ${high}`;
+}
+
+/** `say` gives a number of the action in words. */
+export function wordsOf(spec: ActionSpec, say: Say): string {
+  return `${deedOf(spec, say)}${yearsOf(spec)}`;
+}
+
+function deedOf(spec: ActionSpec, say: Say): string {
   switch (spec.kind) {
     case 'link': {
       const ways = spec.dispersal === undefined ? '' : ` of ${spec.dispersal}`;
       const effects = (['crossing-death', 'turn-back', 'distance', 'share'] as const).flatMap((key) =>
-        spec[key] === undefined ? [] : [`${key.replaceAll('-', ' ')} ${effectWords(spec[key])}`],
+        spec[key] === undefined ? [] : [`${key.replaceAll('-', ' ')} ${effectWords(spec[key], say)}`],
       );
       return `the way${ways} between ${spec.between[0]} and ${spec.between[1]}${effects.length === 0 ? ' changes' : `: ${effects.join(', ')}`}`;
     }
     case 'habitat':
-      return habitatWords(spec);
+      return habitatWords(spec, say);
     case 'change':
-      return changeWords(spec);
+      return changeWords(spec, say);
     case 'take':
-      return `${amountWords(spec)} taken${spec.in === undefined ? '' : ` in ${listOf(spec.in)}`}`;
+      return `${amountWords(spec, say)} taken${spec.in === undefined ? '' : ` in ${listOf(spec.in)}`}`;
     case 'move':
-      return `${amountWords(spec)} moved from ${listOf(spec.from)} to ${spec.to}`;
+      return `${amountWords(spec, say)} moved from ${listOf(spec.from)} to ${spec.to}`;
     case 'add':
-      return `${byClassWords(spec.number)} released in ${listOf(spec.in)}`;
+      return `${byClassWords(spec.number, say)} released in ${listOf(spec.in)}`;
   }
 }
 
-function habitatWords({
-  in: where,
-  new: made,
-  lost,
-  capacity,
-  area,
-  quality,
-}: Extract<ActionSpec, { kind: 'habitat' }>): string {
+function habitatWords(spec: Extract<ActionSpec, { kind: 'habitat' }>, say: Say): string {
+  const { in: where, new: made, lost, capacity, area, quality } = spec;
   const effects = [
     ...(made === undefined ? [] : [`${made.name} is made`]),
     ...(lost === true ? [`${listOf(where ?? [])} is lost`] : []),
     ...Object.entries({ capacity, area, ...quality }).flatMap(([key, effect]) =>
-      effect === undefined ? [] : [`${key} of ${listOf(where ?? [])} ${effectWords(effect)}`],
+      effect === undefined ? [] : [`${key} of ${listOf(where ?? [])} ${effectWords(effect, say)}`],
     ),
   ];
   return effects.length === 0 ? `${listOf(where ?? [])} changes` : effects.join(', ');
 }
 
-function changeWords({ parameters = {}, rates = {}, in: where }: Extract<ActionSpec, { kind: 'change' }>): string {
-  const named = Object.entries(parameters).map(([key, effect]) => `${key} ${effectWords(effect)}`);
+function changeWords(spec: Extract<ActionSpec, { kind: 'change' }>, say: Say): string {
+  const { parameters = {}, rates = {}, in: where } = spec;
+  const named = Object.entries(parameters).map(([key, effect]) => `${key} ${effectWords(effect, say)}`);
   const place = where === undefined ? '' : ` in ${listOf(where)}`;
   const rated = Object.entries(rates).flatMap(([phase, classes]) =>
-    Object.entries(classes).map(([one, effect]) => `${phase} of ${one}${place} ${effectWords(effect)}`),
+    Object.entries(classes).map(([one, effect]) => `${phase} of ${one}${place} ${effectWords(effect, say)}`),
   );
   return [...named, ...rated].join(', ');
 }
 
-function effectWords({ set, times, add }: Effect): string {
+function effectWords({ set, times, add }: EffectSpec, say: Say): string {
   const parts = [
-    ...(set === undefined ? [] : [`to ${String(set)}`]),
-    ...(times === undefined ? [] : [`times ${String(times)}`]),
-    ...(add === undefined ? [] : [`plus ${String(add)}`]),
+    ...(set === undefined ? [] : [`to ${say(set)}`]),
+    ...(times === undefined ? [] : [`times ${say(times)}`]),
+    ...(add === undefined ? [] : [`plus ${say(add)}`]),
   ];
   return parts.join(' ');
 }
 
 type Amounts = number | string | Readonly<Record<string, number | string>>;
 
-function amountWords(spec: Extract<ActionSpec, { kind: 'take' | 'move' }>): string {
+function amountWords(spec: Extract<ActionSpec, { kind: 'take' | 'move' }>, say: Say): string {
   const classes = spec.classes === undefined || spec.classes === 'all' ? '' : ` ${spec.classes.join(', ')}`;
-  if (spec.number !== undefined) return `${byClassWords(spec.number)}${classes}`;
-  if (spec.share !== undefined) return `a share of ${byClassWords(spec.share)}${classes}`;
+  if (spec.number !== undefined) return `${byClassWords(spec.number, say)}${classes}`;
+  if (spec.share !== undefined) return `a share of ${byClassWords(spec.share, say)}${classes}`;
   if (spec.kind === 'take' && spec['share-of-excess'] !== undefined) {
-    return `a share of ${String(spec['share-of-excess'])} of what exceeds ${String(spec.over ?? '')}${classes}`;
+    return `a share of ${say(spec['share-of-excess'])} of what exceeds ${say(spec.over ?? '')}${classes}`;
   }
   return 'animals';
 }
 
-function byClassWords(amounts: Amounts): string {
-  if (typeof amounts !== 'object') return String(amounts);
+function byClassWords(amounts: Amounts, say: Say): string {
+  if (typeof amounts !== 'object') return say(amounts);
   return Object.entries(amounts)
-    .map(([one, amount]) => `${String(amount)} ${one}`)
+    .map(([one, amount]) => `${say(amount)} ${one}`)
     .join(', ');
 }
 

@@ -1,7 +1,7 @@
 // What an action makes of one number: another number, a multiple of it, so much more, or several of these in this order.
-import { Type, type Static } from 'typebox';
-import type { Dimension } from '../quantity.ts';
-import { expression, quantity, type KeyWords } from './values.ts';
+import { Type } from 'typebox';
+import { unsureExpression, unsureQuantity, type Measured } from './unsure.ts';
+import type { KeyWords } from './values.ts';
 
 const parts = {
   set: 'The number becomes this.',
@@ -9,27 +9,32 @@ const parts = {
   add: 'So much is added to the number, once it was set and multiplied.',
 } as const;
 
-const Plain = effectOf((description, example) => expression({ description, examples: [example] }), [0.12, 1.2, 0.05]);
-export type Effect = Static<typeof Plain>;
+export const Effect = effectOf(
+  (description, example) => unsureExpression({ description, examples: [example] }),
+  [0.12, 1.2, 0.05],
+);
 
 /** An effect on a plain number or share. */
 export function effect(words: KeyWords) {
-  return { ...Plain, ...words };
+  return { ...Effect, ...words };
 }
 
 /** An effect on a number with a unit; `times` is a plain factor. */
-export function measuredEffect(dimension: Dimension, words: KeyWords, [set, add]: readonly [string, string]) {
+export function measuredEffect(dimension: Measured, words: KeyWords, [set, add]: readonly [string, string]) {
   const shape = effectOf(
     (description, example) =>
       typeof example === 'string'
-        ? quantity(dimension, { description, examples: [example] })
-        : expression({ description, examples: [example] }),
+        ? unsureQuantity(dimension, { description, examples: [example] })
+        : unsureExpression({ description, examples: [example] }),
     [set, 0.6, add],
   );
   return { ...shape, ...words };
 }
 
-type Number = (description: string, example: number | string) => ReturnType<typeof expression>;
+type Number = (
+  description: string,
+  example: number | string,
+) => ReturnType<typeof unsureExpression> | ReturnType<typeof unsureQuantity>;
 
 function effectOf(number: Number, [set, times, add]: readonly (number | string)[]) {
   return Type.Object(

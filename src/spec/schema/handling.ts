@@ -1,6 +1,7 @@
 // What people do with animals at a place in the year: take, move, release. Each stands under a name of its own.
 import { Type } from 'typebox';
-import { byClass, classList, expression, Name, patchOrMore, type KeyWords } from './values.ts';
+import { unsureByClass, unsureExpression } from './unsure.ts';
+import { classList, expression, Name, patchOrMore, type KeyWords } from './values.ts';
 
 const Years = Type.Union(
   [
@@ -27,7 +28,7 @@ const Years = Type.Union(
 const amount = (what: string, example: string | number, unit: string) => {
   const words = { description: what, examples: [example], 'x-unit': unit };
   return Type.Optional(
-    Type.Union([expression(words), byClass(words)], {
+    Type.Union([unsureExpression(words), unsureByClass(words)], {
       title: 'a number, an expression, or classes with one each',
       ...words,
     }),
@@ -55,7 +56,7 @@ const quota = {
 
 const living = (words: KeyWords) =>
   Type.Optional(
-    Type.Union([expression(words), byClass(words)], {
+    Type.Union([unsureExpression(words), unsureByClass(words)], {
       title: 'a number, an expression, or classes with one each',
       ...words,
     }),
@@ -79,7 +80,7 @@ const survival = {
 
 const homing = {
   homing: Type.Optional(
-    expression({
+    unsureExpression({
       description: 'Of those that live through it, the share that goes back at once to where it was caught.',
       examples: [0.2],
       default: 0,
@@ -93,7 +94,7 @@ export const Take = Type.Object(
     kind: Type.Literal('take', { description: 'People take animals out.', examples: ['take'] }),
     ...quota,
     'share-of-excess': Type.Optional(
-      expression({
+      unsureExpression({
         description: 'Which share of the animals above a level, given by `over`.',
         examples: [0.25],
         'x-unit': 'share',
@@ -136,7 +137,7 @@ export const Add = Type.Object(
   {
     kind: Type.Literal('add', { description: 'People release animals from outside.', examples: ['add'] }),
     in: patchOrMore('Where they are released.', 'Saltmarsh'),
-    number: byClass({
+    number: unsureByClass({
       description: 'How many of each class, in each of these patches.',
       examples: [10],
       'x-unit': 'animals',

@@ -1,4 +1,5 @@
 import { Type, type Static } from 'typebox';
+import { Source } from './source.ts';
 import { Uncertain } from './uncertainty.ts';
 import { fileName, Name, quantity, text, timed } from './values.ts';
 
@@ -96,30 +97,6 @@ export const Patches = Type.Union([InlinePatches, fileName(), PatchFile], {
     'The habitat patches, or the GeoJSON file (points, polygons, multipolygons) that holds them; numbers among the properties of a feature are attributes of its patch. Their order changes nothing.',
   examples: ['- { name: North fen, at: [3.2, 9.1], area: 140 ha, capacity: 260 }'],
 });
-
-const Source = Type.Object(
-  {
-    text: Type.Optional(
-      text({ description: 'Where the number is from.', examples: ['radio-tracking 2019-2024, 61 hares'] }),
-    ),
-    basis: Type.Optional(
-      Type.Union(
-        [
-          Type.Literal('measured here'),
-          Type.Literal('measured elsewhere'),
-          Type.Literal('expert'),
-          Type.Literal('assumed'),
-        ],
-        { description: 'How the number is known.', examples: ['measured here'] },
-      ),
-    ),
-  },
-  {
-    additionalProperties: false,
-    description: 'Where the number is from and how it is known; the report shows it.',
-    examples: ['{ text: "three fens, 2021", basis: measured elsewhere }'],
-  },
-);
 
 export const Parameter = Type.Union([
   timed({ description: 'A number of its own name.', examples: [0.22] }),

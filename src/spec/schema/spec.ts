@@ -2,6 +2,7 @@
 import { Type, type Static } from 'typebox';
 import { Actions, Scenarios, type Action } from './actions.ts';
 import { Money } from './cost.ts';
+import type { Effect } from './effect.ts';
 import { Mating, Offspring } from './breeding.ts';
 import { Classes, Duration, Oldest } from './classes.ts';
 import { Catastrophe } from './catastrophe.ts';
@@ -14,6 +15,7 @@ import { Births, Demography, InPatches, NamedBreeding, NamedSurvival, Survival }
 import type { ScheduleRef } from './schedule.ts';
 import { Study } from './study.ts';
 import { Sweep } from './sweep.ts';
+import type { UnsureRef } from './unsure.ts';
 import { type Uncertain, Uncertainty } from './uncertainty.ts';
 import { fileName, Name, type FileRef } from './values.ts';
 import { type Varied, Variation } from './variation.ts';
@@ -125,6 +127,7 @@ export type CatastropheSpec = Inline<Static<typeof Catastrophe>>;
 export type TakeSpec = Inline<Static<typeof Take>>;
 export type MoveSpec = Inline<Static<typeof Move>>;
 export type AddSpec = Inline<Static<typeof Add>>;
+export type EffectSpec = Inline<Static<typeof Effect>>;
 export type ActionSpec = Inline<Static<typeof Action>>;
 export type NamedSpec =
   | CatastropheSpec
@@ -140,8 +143,8 @@ export type NamedSpec =
 /** A model as its author wrote it, checked for shape only. `named` holds the phases that the study names itself. */
 type WrittenSpec = Static<typeof CoreSchema> & { readonly named: Readonly<Record<string, NamedSpec>> };
 
-/** Without the names of files, and with schedules as the expressions that they stand for. */
-type Inline<Value> = Value extends FileRef | PatchFileRef | ScheduleRef
+/** Without the names of files, with schedules as the expressions that they stand for, and unsure numbers as names of parameters. */
+type Inline<Value> = Value extends FileRef | PatchFileRef | ScheduleRef | UnsureRef
   ? never
   : Value extends object
     ? { [Key in keyof Value]: Inline<Value[Key]> }

@@ -28,7 +28,7 @@ export function timed(words: KeyWords) {
   return Type.Union([...branches], { title, ...words });
 }
 
-const baseUnits: Readonly<Record<Dimension, string>> = {
+export const baseUnits: Readonly<Record<Dimension, string>> = {
   length: 'km',
   area: 'km2',
   share: 'share',
@@ -55,7 +55,11 @@ export function patchOrMore(description: string, example: string) {
 
 /** Class name to expression. */
 export function byClass(words: KeyWords) {
-  return Type.Record(Type.String(), timed(words), {
+  return byClassOf(timed(words), words);
+}
+
+export function byClassOf<Value extends TSchema>(value: Value, words: KeyWords) {
+  return Type.Record(Type.String(), value, {
     title: 'classes with a number or an expression each',
     description: words.description,
     examples: [`{ adult: ${String(words.examples[0])} }`],

@@ -34,6 +34,8 @@ export interface Shape {
   readonly 'x-brief'?: boolean;
   /** Years with numbers, which becomes an expression. */
   readonly 'x-schedule'?: boolean;
+  /** A number with how sure it is, which becomes the name of a parameter; by the format of the number. */
+  readonly 'x-unsure'?: string;
   /** Keys with a meaning of their own among those that the author chooses, which TypeScript has no type for. */
   readonly 'x-keys'?: Readonly<Record<string, Shape>>;
   /** All other keys beside those. */
@@ -70,6 +72,16 @@ export function knownKeys(shape: Shape): Readonly<Record<string, Shape>> {
 export function shapeOfKey(shape: Shape, key: string): Shape | undefined {
   const known = knownKeys(shape);
   return Object.hasOwn(known, key) ? known[key] : shapeOfOthers(shape);
+}
+
+/** A key may stand in several branches of a union: then all that it may be there. */
+export function shapeBelow(shape: Shape | undefined, key: string): Shape | undefined {
+  if (shape === undefined) return undefined;
+  return together(branchesOf(shape).flatMap((one) => (sortOf(one) === 'map' ? (shapeOfKey(one, key) ?? []) : [])));
+}
+
+export function together(found: readonly Shape[]): Shape | undefined {
+  return found.length > 1 ? { anyOf: found } : found[0];
 }
 
 export function shapeOfOthers(shape: Shape): Shape | undefined {
