@@ -34,17 +34,17 @@ export function mountFigures(view: ReportView): Redraw {
   const asWritten = { count: view.years.length - 1, show: 'abundance', focus: null, marked: null } as const;
   const drawn = new Map(holders().map((holder) => [holder, dependsOn(holder, asWritten)]));
   let now: PageState = asWritten;
+  const isStale = (holder: HTMLElement): boolean => drawn.get(holder) !== dependsOn(holder, now);
   const refresh = (holder: HTMLElement): void => {
-    const wanted = dependsOn(holder, now);
-    if (drawn.get(holder) === wanted) return;
-    drawn.set(holder, wanted);
+    if (!isStale(holder)) return;
+    drawn.set(holder, dependsOn(holder, now));
     const markup = draw(view, now, holder, layoutFor);
     if (markup !== null) morph(holder, markup);
   };
   const inSight = observeSight(refresh);
   return (state, all = false) => {
     now = state;
-    for (const holder of drawn.keys()) if (all || inSight(holder)) refresh(holder);
+    for (const holder of drawn.keys()) if (isStale(holder) && (all || inSight(holder))) refresh(holder);
   };
 }
 

@@ -16,6 +16,7 @@ await bundle({
   logLevel: 'warning',
   entryPoints: ['test/bench/main.ts'],
   outfile,
+  external: ['playwright-core'],
   banner: {
     js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",
   },

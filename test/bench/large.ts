@@ -4,6 +4,7 @@ import { mkdirSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { largeModel } from '../large/landscape.ts';
 import { median } from './measure.ts';
+import { measureOpening, type OpeningTimes } from './opening.ts';
 import type { Options } from './options.ts';
 import { work } from './tools.ts';
 
@@ -15,12 +16,14 @@ export interface LargeFigures {
   readonly memoryReplicates: number;
   /** Of the report, in MB. */
   readonly page: number;
+  /** Of the report, in a browser. */
+  readonly browser: OpeningTimes;
 }
 
 const skein = join('bin', 'skein.mjs');
 const telling = 'process.on("exit",()=>process.stderr.write(`maxRSS ${process.resourceUsage().maxRSS}\\n`))';
 
-export function measureLarge({ quick, rounds }: Options): LargeFigures {
+export async function measureLarge({ quick, rounds }: Options): Promise<LargeFigures> {
   const folder = join(work, 'large');
   mkdirSync(folder, { recursive: true });
   const model = join(folder, 'model.yaml');
@@ -40,7 +43,14 @@ export function measureLarge({ quick, rounds }: Options): LargeFigures {
   const page = join(folder, 'page.html');
   command(['report', model, '--years', '100', '--quiet', '-o', page]);
   const kilobytes = Number(/maxRSS (\d+)/.exec(told)?.[1] ?? NaN);
-  return { seconds: median(seconds), memory: kilobytes / 1024, memoryReplicates, page: statSync(page).size / 1e6 };
+  const browser = await measureOpening(page, rounds);
+  return {
+    seconds: median(seconds),
+    memory: kilobytes / 1024,
+    memoryReplicates,
+    page: statSync(page).size / 1e6,
+    browser,
+  };
 }
 
 /** What it says on standard error. */
