@@ -55,6 +55,28 @@ test('tables keep mean and SD, also of shapes with most of their weight at the e
   expectMoments(gammaTable({ shape: 0.25, scale: 8 }, 4), 2, 4);
 });
 
+// Held against the inversion of the distribution at every node, which is another way to the same numbers.
+test.each([
+  { shape: 'beta', mean: 0.8, sd: 0.1 },
+  { shape: 'beta', mean: 0.999, sd: 0.001 },
+  { shape: 'beta', mean: 0.3, sd: 0.4 },
+  { shape: 'beta', mean: 0.9999, sd: 0.009 },
+  { shape: 'gamma', mean: 2, sd: 0.5 },
+  { shape: 'gamma', mean: 1, sd: 10 },
+] as const)('the nodes of tables are quantiles: $shape of mean $mean and SD $sd', ({ shape, mean, sd }) => {
+  const found = distributionOf(shape, { mean, sd });
+  const table =
+    found?.shape === 'beta' ? betaTable(found, sd) : gammaTable({ shape: (mean / sd) ** 2, scale: sd ** 2 / mean }, sd);
+  const { nodes, perUnit } = table;
+  const tiny = 1e-5;
+  for (let i = 0; 2 * i < nodes.length; i++) {
+    const z = i / perUnit - 9;
+    expect(Math.abs(nodes[2 * i]! - numberAt(found!, z)) / sd).toBeLessThan(1e-8);
+    const slope = (numberAt(found!, z + tiny) - numberAt(found!, z - tiny)) / (2 * tiny);
+    expect(Math.abs(nodes[2 * i + 1]! * perUnit - slope) / sd).toBeLessThan(2e-5 * (1 + slope / sd));
+  }
+});
+
 function expectMoments(table: ReturnType<typeof betaTable>, mean: number, sd: number): void {
   let [weights, sum, squares] = [0, 0, 0];
   for (let z = -9; z <= 9; z += 1 / 128) {

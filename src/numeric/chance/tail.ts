@@ -30,7 +30,9 @@ export function quantileAt(tails: Tails, z: number, near: number): QuantilePoint
       y /= 2;
       continue;
     }
-    y += step;
+    // Where a tail is flat yet, its tangent points far beyond everything.
+    const most = 4 + Math.abs(y) / 2;
+    y += Math.max(-most, Math.min(most, step));
     if (Math.abs(step) <= 1e-13 * Math.max(1, Math.abs(y))) break;
   }
   const logNormal = (-z * z) / 2 - 0.9189385332046728;
