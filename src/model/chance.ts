@@ -88,6 +88,8 @@ export interface Catastrophe {
   /** A step: that one begins in a given patch, or somewhere in the landscape. */
   readonly chance: number;
   readonly over: 'patch' | 'landscape';
+  /** The chance as it was given, of at least one in so many years; absent where it was given a year. */
+  readonly stated?: { readonly chance: number; readonly years: number };
   /** Patches in which it can begin. */
   readonly origins: readonly number[];
   readonly reach: 'everywhere' | 'one patch' | { readonly radiusKm: number };

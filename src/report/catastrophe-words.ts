@@ -13,12 +13,11 @@ export function catastropheWords(model: Model, { strikes = [] }: Landscape): rea
   });
 }
 
-function beginning(model: Model, { chance, over, reach, origins, lasts, wait }: Catastrophe): string {
+function beginning(model: Model, { chance, over, stated, reach, origins, lasts, wait }: Catastrophe): string {
   const where = origins.length === model.patches.length ? '' : ` (in ${namesOf(model, origins)} only)`;
-  const begins =
-    over === 'patch'
-      ? `begins in a given patch with a chance of ${digits(chance)} a year${where}`
-      : `begins somewhere with a chance of ${digits(chance)} a year${where}`;
+  const from =
+    stated === undefined ? '' : `, from ${digits(stated.chance * 100)} % a generation of ${digits(stated.years)} years`;
+  const begins = `begins ${over === 'patch' ? 'in a given patch' : 'somewhere'} with a chance of ${digits(chance)} a year${from}${where}`;
   const reaching =
     reach === 'everywhere'
       ? 'strikes all patches'

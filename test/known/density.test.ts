@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import {
+  describe as describeState,
   equilibriaFrom,
   equilibriumFrom,
   invasionGrowth,
@@ -7,6 +8,7 @@ import {
   startThreshold,
 } from '../../src/analysis/equilibrium.ts';
 import type { YearMap } from '../../src/analysis/year-map.ts';
+import { findRoot } from '../../src/numeric/root.ts';
 import { sparseFromRows } from '../../src/numeric/sparse.ts';
 
 /** One class whose multiplier is a function of its number. */
@@ -73,6 +75,36 @@ describe('Ricker (Ricker 1954; May 1974 from memory; cycles derived)', () => {
     for (let t = 0; t < 4000; t++) n = map.apply(n);
     const cycle = [0, 1, 2, 3].map(() => (n = map.apply(n))[0]!).sort((a, b) => a - b);
     [0.181222, 0.390846, 1.523166, 1.904765].forEach((value, k) => expect(cycle[k]).toBeCloseTo(value, 6));
+  });
+});
+
+// Derived: 1 ∓ δ are the two ends of the swing over two years where r = ln((1 + δ)/(1 − δ))/δ. A page of a public gallery prints 7.25 for
+// the first threshold; e² = 7.389 is right.
+describe('Ricker: where it stops to stand still, and where a swing of two years becomes one of four (May 1974 from memory; derived)', () => {
+  const growing = (r: number) => (n: number) => n * Math.exp(r * (1 - n));
+
+  test('the standstill stops to be stable at r = 2, a growth of 7.389', () => {
+    const modulus = (r: number): number =>
+      describeState(
+        oneClass((n) => Math.exp(r * (1 - n))),
+        one(1),
+      ).leadingModulus;
+    const threshold = findRoot((r) => modulus(r) - 1, { low: 1.5, high: 2.5 })!;
+    expect(threshold).toBeCloseTo(2, 7);
+    expect(Math.exp(threshold)).toBeCloseTo(7.3890561, 5);
+  });
+
+  test('the swing of two years at r = 2.526467726, a growth of 12.509', () => {
+    const modulus = (r: number): number => {
+      const delta = findRoot((d) => Math.log((1 + d) / (1 - d)) / d - r, { low: 1e-6, high: 1 - 1e-9 })!;
+      const year = growing(r);
+      const twoYears = oneClass((n) => year(year(n)) / n);
+      expect(year(year(1 - delta))).toBeCloseTo(1 - delta, 9);
+      return describeState(twoYears, one(1 - delta)).leadingModulus;
+    };
+    const threshold = findRoot((r) => modulus(r) - 1, { low: 2.4, high: 2.6 })!;
+    expect(threshold).toBeCloseTo(2.526467726, 6);
+    expect(Math.exp(threshold)).toBeCloseTo(12.5092419, 4);
   });
 });
 

@@ -1,5 +1,6 @@
 // Distributions of litters, from a spec to chances of dying out and to the spread of young.
 import { describe, expect, test } from 'vitest';
+import { findRoot } from '../../src/numeric/root.ts';
 import { runModel } from '../../src/pipeline.ts';
 import { compileText, errorsOf } from '../pipeline/compile-text.ts';
 import { framed } from '../pipeline/frame.ts';
@@ -70,6 +71,9 @@ describe('families die out with the chance q = f(q) (branching process, derived)
 
   test('ten founders with Poisson litters of 1.1 all fail as often as one to the tenth power', () => {
     const gone = goneBy(family('births: { adult: 1.1 }', { start: 10, years: 150 }), 4000);
+    const root = findRoot((q) => q - Math.exp(1.1 * (q - 1)), { low: 0.1, high: 0.95 })!;
+    expect(root).toBeCloseTo(0.8238658564, 10);
+    expect(root ** 10).toBeCloseTo(0.1440672, 7);
     expectShare(gone.at(-1)!, 0.1440672, 4000);
   });
 });

@@ -2,6 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { cholesky } from '../../src/numeric/cholesky.ts';
 import { strongComponents } from '../../src/numeric/components.ts';
 import { factor, invertDense, solveDense } from '../../src/numeric/dense-solve.ts';
+import { symmetricEigen } from '../../src/numeric/eigenvalues.ts';
 import { nearestCorrelation } from '../../src/numeric/nearest-correlation.ts';
 import { findRoot } from '../../src/numeric/root.ts';
 import { principalPart } from '../../src/numeric/principal-part.ts';
@@ -183,6 +184,8 @@ describe('nearest correlation matrix', () => {
       [1, 2],
     ]);
     [0.6942185, 0.5258644, -0.247144].forEach((value, k) => expect(found[k]).toBeCloseTo(value, 5));
+    expect(symmetricEigen(dense(rows)).values[0]).toBeCloseTo(-0.353636, 6);
+    expect(nearestCorrelation(dense(rows)).distance).toBeCloseTo(0.4382561, 5);
   });
 
   test('a possible one stays as it is', () => {

@@ -4,7 +4,8 @@ import { expect, test } from 'vitest';
 import { buildBlock } from '../../src/compile/block.ts';
 import { planSlots } from '../../src/compile/weather/slots.ts';
 import { openOwnImage } from '../../src/kernel/open.ts';
-import { followPath, type CompiledModel } from '../../src/pipeline.ts';
+import { followPath, runModel, type CompiledModel } from '../../src/pipeline.ts';
+import { catastropheWords } from '../../src/report/catastrophe-words.ts';
 import { compileText, errorsOf } from '../pipeline/compile-text.ts';
 
 function text(own: string, { years = 400, year = '[count, breeding, survival, ageing]', crowding = '' } = {}): string {
@@ -114,6 +115,37 @@ test('at least one in 100 years', () => {
     hit += fallen.reduce((a, b) => a + b, 0);
   }
   expect(Math.abs(hit / 8000 - 0.8673804)).toBeLessThan(6 * Math.sqrt((0.867 * 0.133) / 8000));
+});
+
+// Reed et al. 2003: about 14 % of the generations of vertebrates have a year in which half or more die. Derived: 1 − 0.86^(1/5) a year.
+test('14 % a generation of five years is 2.97 % a year, and 14 % within five years of the runs', () => {
+  const compiled = compileText(
+    text(
+      `die off: { kind: catastrophe, chance: 14 % per landscape, generation: 5 years, reach: everywhere, takes: { adult: 1, young: 1 } }
+outcomes: { gone: { of: all, below: 1 } }
+run: { replicates: 40000, seed: 9 }`,
+      { years: 5, year: '[count, breeding, survival, die off, ageing]' },
+    ),
+  );
+  expect(compiled.model.catastrophes[0]!.chance).toBeCloseTo(0.0297142, 7);
+  expect(catastropheWords(compiled.model, compiled.landscape)[0]).toContain(
+    'with a chance of 0.0297 a year, from 14 % a generation of 5 years',
+  );
+  const { byYear } = runModel(compiled).outcomes[0]!;
+  byYear.forEach(({ ever }, t) => {
+    const chance = 1 - 0.86 ** ((t + 1) / 5);
+    expect(Math.abs(ever - chance)).toBeLessThan(5 * Math.sqrt((chance * (1 - chance)) / 40_000));
+  });
+  expect(Math.abs(byYear.at(-1)!.ever - 0.14)).toBeLessThan(0.009);
+});
+
+test('a generation is at least a year, and its chance a share', () => {
+  const stated = (words: string) =>
+    errorsOf(text(`flood: { kind: catastrophe, ${words}, reach: everywhere, ${effects} }`));
+  expect(stated('chance: 0.14 per landscape, generation: 0.5')).toEqual(['out-of-range']);
+  expect(stated('chance: 0.14 per landscape, generation: 3 km')).toEqual(['wrong-unit']);
+  expect(stated('chance: 1.4 per landscape, generation: 3 years')).toEqual(['share-out-of-range']);
+  expect(stated('chance: 0.14 per landscape, generation: 4.5 years')).toEqual([]);
 });
 
 test('the map of one year uses the long-run frequency, and so does the path', () => {

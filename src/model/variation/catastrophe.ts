@@ -1,4 +1,5 @@
 // Catastrophes: where and how often they begin, how far they reach, and what they multiply.
+import { pinned } from '../../machine/pinned.ts';
 import { readChance } from '../../spec/chance.ts';
 import type { SpecPath } from '../../spec/document.ts';
 import { readQuantity } from '../../spec/quantity.ts';
@@ -47,7 +48,7 @@ function resolveOne(context: Context, { name, spec, phases }: Request): Catastro
       details: { expected: '`multiplies`, `takes` (with a place in `year`) or `capacity`' },
     });
   }
-  const chance = chanceOf(context, name, spec.chance);
+  const chance = chanceOf(context, name, spec);
   const reach = reachOf(context, name, spec.reach);
   // A further place where it may begin would move the luck of all others.
   const byItself = chance.over === 'patch' && reach === 'one patch';
@@ -63,18 +64,40 @@ function resolveOne(context: Context, { name, spec, phases }: Request): Catastro
   };
 }
 
-function chanceOf(context: Context, name: string, text: string): Pick<Catastrophe, 'chance' | 'over'> {
+function chanceOf(
+  context: Context,
+  name: string,
+  { chance: text, generation }: CatastropheSpec,
+): Pick<Catastrophe, 'chance' | 'over' | 'stated'> {
   const path = [name, 'chance'];
   const read = readChance(text);
-  const value =
+  const given =
     read === null ? NaN : number(context, /^[\d.]+$/u.test(read.amount) ? Number(read.amount) : read.amount, path);
-  if (!(value >= 0 && value <= 1) && !Number.isNaN(value)) {
+  const years = generation === undefined ? null : generationOf(context, name, generation);
+  if (!(given >= 0 && given <= 1) && !Number.isNaN(given)) {
     fail(context, 'share-out-of-range', path, {
-      message: `The chance of \`${name}\` is ${value} a year`,
+      message: `The chance of \`${name}\` is ${given} ${years === null ? 'a year' : 'a generation'}`,
       details: { expected: 'a share between 0 and 1' },
     });
   }
-  return { chance: value, over: read?.per ?? 'landscape' };
+  const over = read?.per ?? 'landscape';
+  if (years === null) return { chance: given, over };
+  return { chance: yearly(given, years), over, stated: { chance: given, years } };
+}
+
+/** The chance a year that comes to at least one with this chance in so many years: 1 − (1 − p)^(1/G). */
+function yearly(chance: number, years: number): number {
+  return 1 - pinned.pow(1 - Math.min(1, chance), 1 / years);
+}
+
+function generationOf(context: Context, name: string, generation: number | string): number {
+  const read = readQuantity(generation, 'time');
+  if (read.ok && read.value >= 1) return read.value;
+  fail(context, 'out-of-range', [name, 'generation'], {
+    message: `A generation of \`${name}\` is at least a year`,
+    details: { found: String(generation), expected: 'a time such as `5 years` or `4.5 years`' },
+  });
+  return 1;
 }
 
 function number(context: Context, expression: number | string, path: SpecPath): number {

@@ -15,9 +15,17 @@ export const Catastrophe = Type.Object(
       format: 'chance',
       title: 'a chance per patch or per landscape',
       description:
-        'Chance a year. `per patch`: that one begins in a given patch; `per landscape`: that one begins somewhere, each patch being as likely.',
+        'Chance a year, or in a `generation`. `per patch`: that one begins in a given patch; `per landscape`: that one begins somewhere, each patch being as likely.',
       examples: ['0.04 per patch'],
     }),
+    generation: Type.Optional(
+      quantity('time', {
+        description:
+          'The chance is that of at least one in so long a time, as studies of many species state it: a year has 1 - (1 - chance)^(1 / years).',
+        examples: ['5 years'],
+        default: '1 year',
+      }),
+    ),
     reach: Type.Union(
       [
         Type.Literal('everywhere'),
