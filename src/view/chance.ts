@@ -1,9 +1,8 @@
 // The chance that an outcome has come by each year, with the band that holds for the whole curve at once.
-import { line } from 'd3';
 import type { OutcomeView, Series, Size } from './contract.ts';
 import { axes, cursor, plot, type Plot } from './axes.ts';
 import { figure } from './figure.ts';
-import { ribbon } from './fan.ts';
+import { course, ribbon } from './fan.ts';
 import { key } from './key.ts';
 import { mark, type Markup } from './markup.ts';
 import { of100, plain } from './number.ts';
@@ -35,14 +34,6 @@ function curves(place: Plot, outcome: OutcomeView, years: Series): Markup {
   return mark`<path d="${band}" fill="${tint}"/>
 <path d="${now}" fill="none" stroke="${umber}" stroke-width="1.75" stroke-dasharray="2 3.5"/>
 <path d="${ever}" fill="none" stroke="${deep}" stroke-width="2.5"/>`;
-}
-
-function course(place: Plot, years: Series, values: Series): string {
-  const draw = line<number>()
-    .x((_, i) => place.x(pick(years, i)))
-    .y((value) => place.y(value))
-    .digits(1);
-  return draw([...values]) ?? '';
 }
 
 function words(outcome: OutcomeView, years: Series) {

@@ -43,12 +43,17 @@ export function spanOf(place: Plot, years: Series): readonly [number, number] {
 export function bands(place: Plot, years: Series, fan: Fan): Markup {
   const outer = ribbon(place, years, fan.p05, fan.p95);
   const inner = ribbon(place, years, fan.p25, fan.p75);
-  const course = line<number>()
+  return mark`<path d="${outer}" fill="${tint}"/><path d="${inner}" fill="${middle}"/>
+<path d="${course(place, years, fan.median)}" fill="none" stroke="${deep}" stroke-width="2.5" stroke-linejoin="round"/>`;
+}
+
+/** One value a year. */
+export function course(place: Plot, years: Series, values: Series): string {
+  const draw = line<number>()
     .x((_, i) => place.x(pick(years, i)))
     .y((value) => place.y(value))
     .digits(1);
-  return mark`<path d="${outer}" fill="${tint}"/><path d="${inner}" fill="${middle}"/>
-<path d="${course([...fan.median]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5" stroke-linejoin="round"/>`;
+  return draw([...values]) ?? '';
 }
 
 export function ribbon(place: Plot, years: Series, lower: Series, upper: Series): string {

@@ -9,17 +9,12 @@ import {
 } from '../../src/compare/over-draws.ts';
 import { countPairs, pairedShareDifference, type PairedCounts } from '../../src/compare/paired-share.ts';
 import { uniformAt } from '../../src/machine/random.ts';
-import { normalQuantile } from '../../src/numeric/normal-quantile.ts';
 import { normalBelow } from '../../src/numeric/normal.ts';
 import { runReplicates } from '../kernel/collect.ts';
 import { compileText } from '../pipeline/compile-text.ts';
+import { between, binomial, normals, studies } from '../results/small-studies.ts';
 
-const studies = 2000;
-
-function between(share: number): void {
-  expect(share).toBeGreaterThan(0.925);
-  expect(share).toBeLessThan(0.975);
-}
+const normal = normals(91);
 
 // Derived by hand from the formula of Bonett & Price 2012: p₁ = 5/102, p₂ = 13/102, se = √((18/102 − (8/102)²)/102).
 test('the interval of two shares that were counted in the same futures', () => {
@@ -114,23 +109,6 @@ test('paired intervals over 2,000 studies of 200 futures under common chance', (
   between(shares / studies);
   between(means / studies);
 });
-
-function normal(study: number, draw: number, what: number): number {
-  return normalQuantile(uniformAt({ seed: 91, words: [study, what, 1] }, draw));
-}
-
-/** Successes of n, by inversion. */
-function binomial(n: number, p: number, u: number): number {
-  let chance = (1 - p) ** n;
-  let k = 0;
-  let sum = chance;
-  while (u > sum && k < n) {
-    k++;
-    chance *= ((n - k + 1) / k) * (p / (1 - p));
-    sum += chance;
-  }
-  return k;
-}
 
 /** Risks of two plans at a value of the one parameter; wherever the second fails, so does the first. */
 function risks(theta: number): readonly [number, number] {

@@ -1,11 +1,11 @@
 // An accessibility checker finds nothing wrong with the page, in any state that a reader can bring it to.
-import axe from 'axe-core';
 import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { compileModel } from '../golden/models.ts';
 import { launch, open } from './browser.ts';
 import { reportOf } from './report-of.ts';
 import { pageScript, reportPage } from './report-page.ts';
+import { violations } from './violations.ts';
 
 let browser: Browser;
 let html: string;
@@ -77,13 +77,3 @@ describe('the accessibility checker', () => {
     await close();
   });
 });
-
-/** Each as rule, place and reason. The checker speaks to the page through the browser, past the page's own policy. */
-async function violations(page: Page): Promise<readonly string[]> {
-  return page.evaluate(`(async () => {
-    ${axe.source}
-    const found = await axe.run(document, { runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'] });
-    return found.violations.flatMap((rule) =>
-      rule.nodes.map((node) => rule.id + ' at ' + node.target.join(' ') + ': ' + node.failureSummary));
-  })()`);
-}

@@ -1,9 +1,9 @@
 // The report of a comparison in a real browser, without scripts, on paper, and before an accessibility checker.
-import axe from 'axe-core';
-import type { Browser, Page } from 'playwright-core';
+import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { launch, open } from './browser.ts';
 import { plansPage } from './plans-page.ts';
+import { violations } from './violations.ts';
 
 let browser: Browser;
 let html: string;
@@ -90,12 +90,3 @@ describe('the report of a comparison', () => {
     await wide.close();
   });
 });
-
-async function violations(page: Page): Promise<readonly string[]> {
-  return page.evaluate(`(async () => {
-    ${axe.source}
-    const found = await axe.run(document, { runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'] });
-    return found.violations.flatMap((rule) =>
-      rule.nodes.map((node) => rule.id + ' at ' + node.target.join(' ') + ': ' + node.failureSummary));
-  })()`);
-}

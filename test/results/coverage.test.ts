@@ -4,18 +4,13 @@ import { readSections } from '../../src/compile/image/read.ts';
 import { uniformAt } from '../../src/machine/random.ts';
 import { fromStandardError, valueAt } from '../../src/model/uncertainty/distribution.ts';
 import { normalBelow } from '../../src/numeric/normal.ts';
-import { normalQuantile } from '../../src/numeric/normal-quantile.ts';
 import { intervalFromRuns, intervalFromUnknown } from '../../src/results/draws/intervals.ts';
 import { wilson } from '../../src/results/wilson.ts';
 import { runReplicates } from '../kernel/collect.ts';
 import { compileText } from '../pipeline/compile-text.ts';
+import { between, binomial, normals, studies } from './small-studies.ts';
 
-const studies = 2000;
-
-function between(share: number): void {
-  expect(share).toBeGreaterThan(0.925);
-  expect(share).toBeLessThan(0.975);
-}
+const normal = normals(77);
 
 // Derived: 20 animals that die alone, survival 0.8: all gone by year 10 with the chance (1 − 0.8^10)^20 = 0.1031309.
 test('intervals from the number of runs', () => {
@@ -47,24 +42,6 @@ start: { table: { A: { adult: 20 } } }
   );
   between(held / studies);
 });
-
-/** A normal number of its own for each study, draw and purpose. */
-function normal(study: number, draw: number, what: number): number {
-  return normalQuantile(uniformAt({ seed: 77, words: [study, what, 1] }, draw));
-}
-
-/** Successes of n, by inversion. */
-function binomial(n: number, p: number, u: number): number {
-  let chance = (1 - p) ** n;
-  let k = 0;
-  let sum = chance;
-  while (u > sum && k < n) {
-    k++;
-    chance *= ((n - k + 1) / k) * (p / (1 - p));
-    sum += chance;
-  }
-  return k;
-}
 
 /** The risk of a study whose one parameter is θ. */
 function riskOf(theta: number): number {

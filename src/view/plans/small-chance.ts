@@ -1,8 +1,7 @@
 // The chance of one plan by year, small, over that of the plan which all are set beside, on one scale for all plans.
-import { line } from 'd3';
 import type { OutcomeView, PlanView, ReportView, Series, Size } from '../contract.ts';
-import { cursor, plot, type Plot } from '../axes.ts';
-import { ribbon } from '../fan.ts';
+import { cursor, plot, } from '../axes.ts';
+import { course, ribbon } from '../fan.ts';
 import { figure, fitText } from '../figure.ts';
 import { mark, type Markup } from '../markup.ts';
 import { of100, plain } from '../number.ts';
@@ -71,12 +70,4 @@ export function drawSmallChance(chart: SmallChance, size: Size): Markup {
   return figure(size, words, mark`${frame}${curves}${labels}${cursor(place, marked === null ? null : year)}`, {
     years: [left, right],
   });
-}
-
-function course(place: Plot, years: Series, values: Series): string {
-  const draw = line<number>()
-    .x((_, i) => place.x(pick(years, i)))
-    .y((value) => place.y(value))
-    .digits(1);
-  return draw([...values]) ?? '';
 }
