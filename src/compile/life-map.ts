@@ -24,6 +24,7 @@ export interface LifeRequest {
 /** C×C, at to * C + from: animals of `to` after the phase for each of `from` before it. */
 export function lifeMap(phase: LifePhase, request: LifeRequest): Float64Array {
   const fates = fatesMap(phase, request);
+  if (phase.kind === 'survival' || phase.kind === 'ageing') return fates;
   const births = birthsMap(phase, request);
   return fates.map((value, i) => value + (births[i] ?? 0));
 }
@@ -60,10 +61,10 @@ export function birthsMap(phase: LifePhase, request: LifeRequest): Float64Array 
   if (phase.kind === 'breeding') {
     const table = tableAt(phase.births, request.step);
     const mated = phase.mating === undefined ? 1 : matingFactor(phase.mating, request.animals);
-    for (let i = 0; i < n * n; i++) {
-      const [to, from] = [Math.floor(i / n), i % n];
+    for (let from = 0; from < n; from++) {
       const young = (table[request.patch * n + from] ?? 0) * factor(request, 'births', from);
-      map[i] = (phase.into[to] ?? 0) * young * breedingShare(phase, request, from) * mated;
+      const share = breedingShare(phase, request, from);
+      for (let to = 0; to < n; to++) map[to * n + from] = (phase.into[to] ?? 0) * young * share * mated;
     }
   } else if (phase.kind === 'demography') {
     const table = tableAt(phase.births, request.step);

@@ -58,10 +58,11 @@ interface Spreading {
 function fromPatchTotals(model: Model, totals: Float64Array, { findings, of, rest }: Spreading): Float64Array {
   const n = model.classes.length;
   const animals = new Float64Array(model.patches.length * n);
+  const stableOf = stableIn(model);
   for (let p = 0; p < model.patches.length; p++) {
     const total = totals[p] ?? 0;
     if (total === 0) continue;
-    const stable = stableWithin(model, p);
+    const stable = stableOf(p);
     if (stable.right === null) {
       tellNoSpread(
         findings,
@@ -81,14 +82,25 @@ function fromPatchTotals(model: Model, totals: Float64Array, { findings, of, res
   return animals;
 }
 
-/** Near zero, without dispersal. */
-function stableWithin(model: Model, patch: number): Pick<Leading, 'right' | 'reason'> {
+type Stable = Pick<Leading, 'right' | 'reason'>;
+
+/** By patch, near zero and without dispersal; once for patches that are alike. */
+function stableIn(model: Model): (patch: number) => Stable {
   const n = model.classes.length;
-  const values = patchYear({ model, patch, multipliers: multipliersAtRest(model) });
-  const { right, reason } = leading(sparseFromDense({ rows: n, columns: n, values }));
+  const multipliers = multipliersAtRest(model);
   const present = presentClasses(model);
-  const shares = right?.map((value, c) => (present[c] === 1 ? value : 0)) ?? null;
-  return { right: shares, ...(reason === undefined ? {} : { reason }) };
+  const known = new Map<string, Stable>();
+  return (patch) => {
+    const values = patchYear({ model, patch, multipliers });
+    const key = values.join();
+    const before = known.get(key);
+    if (before !== undefined) return before;
+    const { right, reason } = leading(sparseFromDense({ rows: n, columns: n, values }));
+    const shares = right?.map((value, c) => (present[c] === 1 ? value : 0)) ?? null;
+    const found = { right: shares, ...(reason === undefined ? {} : { reason }) };
+    known.set(key, found);
+    return found;
+  };
 }
 
 function stableOverAll(compiled: Compiled, total: number, findings: Finding[]): Float64Array {

@@ -16,6 +16,8 @@ export interface RunRequest {
   readonly firstReplicate?: number;
   /** Whether animals that move are counted for each way and step. */
   readonly keepMoved?: boolean;
+  /** Whether the counts of a batch may be written over by the next: fresh memory costs more than it takes to fill it. */
+  readonly reuse?: boolean;
 }
 
 /** Replicates side by side, at most. */
@@ -42,8 +44,10 @@ export function runnerOn(machine: Machine, image: ArrayBuffer, request: RunReque
   const columns = header[layout.headerColumns] ?? 0;
   const ways = request.keepMoved === true ? (header[layout.headerWays] ?? 0) : null;
   const { phases } = readNames(image);
+  const size = (request.steps + 1) * columns * layout.lanes;
+  const shared = request.reuse === true ? new Float64Array(size) : null;
   return (batch) => {
-    const counts = new Float64Array((request.steps + 1) * columns * layout.lanes);
+    const counts = shared ?? new Float64Array(size);
     const movedSoFar = new Float64Array((request.steps + 1) * (ways ?? 0));
     startBatch(machine, request, batch);
     counts.set(observedIn(machine, columns));

@@ -3,11 +3,12 @@
 
 const offsetBasis = 0x811c9dc5;
 const fnvPrime = 0x01000193;
+const encoder = new TextEncoder();
 
 /** FNV-1a over UTF-8, then the 32-bit finaliser of MurmurHash3. */
 export function keyOfName(name: string): number {
   let hash = offsetBasis;
-  for (const byte of new TextEncoder().encode(name)) hash = Math.imul(hash ^ byte, fnvPrime);
+  for (const byte of encoder.encode(name)) hash = Math.imul(hash ^ byte, fnvPrime);
   hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
   hash = Math.imul(hash ^ (hash >>> 13), 0xc2b2ae35);
   return (hash ^ (hash >>> 16)) >>> 0;

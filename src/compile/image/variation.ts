@@ -87,21 +87,23 @@ function addFactor(list: SectionList, { start, column, weight }: Factor, reads: 
 /** Quantile tables, each once however many patches have it. */
 class Tables {
   readonly #known = new Map<string, { readonly first: number; readonly table: QuantileTable }>();
-  readonly #numbers: number[] = [];
+  #size = 0;
 
   place(key: string, make: () => QuantileTable): readonly [number, number] {
     const known = this.#known.get(key);
     if (known !== undefined) return [known.first, known.table.perUnit];
     const table = make();
     if (quantileReach !== layout.tableReach) throw new Error('Quantile tables have another reach than the kernel.');
-    const first = this.#numbers.length;
-    for (const number of table.nodes) this.#numbers.push(number);
+    const first = this.#size;
+    this.#size += table.nodes.length;
     this.#known.set(key, { first, table });
     return [first, table.perUnit];
   }
 
   numbers(): Float64Array {
-    return Float64Array.from(this.#numbers);
+    const numbers = new Float64Array(this.#size);
+    for (const { first, table } of this.#known.values()) numbers.set(table.nodes, first);
+    return numbers;
   }
 }
 

@@ -11,7 +11,7 @@ export const lookedAt = 4;
 export function refuseBeyondLitters(context: Context, phases: readonly Phase[], varied: readonly Varied[]): void {
   for (const one of varied) {
     const most = one.of.kind === 'rate' ? largestLitter(phases[one.of.phase], one.of.part) : Infinity;
-    const patch = context.patches.findIndex((_, p) => highest(one, p) > most);
+    const patch = most === Infinity ? -1 : context.patches.findIndex((_, p) => highest(one, p) > most);
     if (patch < 0) continue;
     const births = Number(highest(one, patch).toPrecision(4));
     fail(context, 'impossible-variation', ['variation'], {

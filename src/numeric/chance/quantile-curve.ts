@@ -1,4 +1,4 @@
-// Quantiles of a distribution over the normal numbers as a curve: exact at whole numbers, and between them by Taylor series of
+// Quantiles of a distribution over the normal numbers as a curve: exact at some places, and between them by Taylor series of
 // the differential equation that quantiles follow. Far cheaper than an inversion at every place where they are wanted.
 import { quantileAt, type QuantilePoint, type Tails } from './tail.ts';
 
@@ -29,25 +29,34 @@ export interface CurveSide {
 export type QuantileCurve = (distance: number, out: Float64Array) => void;
 
 const order = 12;
-const coarsest = 4;
-const finest = 32;
+/** From one exact place to the next. */
+const stretch = 3;
+/** Series over one stretch. */
+const coarsest = 12;
+const finest = 96;
 
-/** From the median to `reach`, a whole number, outwards. */
+/** From the median to `reach`, a multiple of 3, outwards. */
 export function quantileCurve(side: CurveSide, reach: number): QuantileCurve {
-  const anchors = anchorsOf(side, reach);
+  const anchors = anchorsOf(side, reach / stretch);
   const series = new Series(side.law);
-  const pieces = anchors.slice(1).map((from, unit) => pieceOf(side, series, { unit, from, to: anchors[unit] ?? from }));
-  return (distance, out) => pieces[Math.min(Math.floor(distance), pieces.length - 1)]?.(distance, out);
+  const size = coarsest * (order + 1);
+  // One piece of memory for all: many small ones cost more than what is worked out in them.
+  const room = new Float64Array((anchors.length - 1) * size);
+  const pieces = anchors.slice(1).map((from, k) => {
+    const own = room.subarray(k * size, (k + 1) * size);
+    return pieceOf(side, series, { inner: k * stretch, from, to: anchors[k] ?? from, room: own });
+  });
+  return (distance, out) => pieces[Math.min(Math.floor(distance / stretch), pieces.length - 1)]?.(distance, out);
 }
 
-/** The exact points at 0, 1, … outwards. */
-function anchorsOf({ tails, direction, near }: CurveSide, reach: number): readonly QuantilePoint[] {
+/** The exact points from the median outwards, a stretch apart. */
+function anchorsOf({ tails, direction, near }: CurveSide, stretches: number): readonly QuantilePoint[] {
   const anchors: QuantilePoint[] = [];
   let guess = near;
-  for (let distance = 0; distance <= reach; distance++) {
-    const point = quantileAt(tails, direction * distance, guess);
+  for (let k = 0; k <= stretches; k++) {
+    const point = quantileAt(tails, direction * k * stretch, guess);
     anchors.push(point);
-    guess = point.y + direction * point.slope;
+    guess = point.y + direction * point.slope * stretch;
   }
   return anchors;
 }
@@ -55,21 +64,23 @@ function anchorsOf({ tails, direction, near }: CurveSide, reach: number): readon
 /** Between two of them. */
 interface Stretch {
   /** Distance of the inner one. */
-  readonly unit: number;
+  readonly inner: number;
   /** The outer one, from which the series go inwards: errors fade on the way, which would grow outwards. */
   readonly from: QuantilePoint;
   readonly to: QuantilePoint;
+  /** For the coefficients at the coarsest steps. */
+  readonly room: Float64Array;
 }
 
 /** Where the series miss the inner end at the finest steps, every place is inverted by itself. */
-function pieceOf(side: CurveSide, series: Series, stretch: Stretch): QuantileCurve {
+function pieceOf(side: CurveSide, series: Series, between: Stretch): QuantileCurve {
   for (let steps = coarsest; steps <= finest; steps *= 2) {
-    const piece = seriesOf(side, series, { ...stretch, steps });
+    const piece = seriesOf(side, series, { ...between, steps });
     if (piece !== null) return piece;
   }
   const { tails, direction, quantile, law } = side;
   return (distance, out) => {
-    const near = stretch.to.y + direction * (distance - stretch.unit) * stretch.to.slope;
+    const near = between.to.y + direction * (distance - between.inner) * between.to.slope;
     const point = quantileAt(tails, direction * distance, near);
     out[0] = quantile(point.y);
     out[1] = direction * slopeOf(law, out[0], point.slope);
@@ -80,24 +91,25 @@ function pieceOf(side: CurveSide, series: Series, stretch: Stretch): QuantileCur
 function seriesOf(
   { law, direction, quantile, wanted }: CurveSide,
   series: Series,
-  { unit, from, to, steps }: Stretch & { readonly steps: number },
+  { inner, from, to, room, steps }: Stretch & { readonly steps: number },
 ): QuantileCurve | null {
-  const coefficients = new Float64Array(steps * (order + 1));
-  const inwards = -direction / steps;
+  const coefficients = steps === coarsest ? room : new Float64Array(steps * (order + 1));
+  const size = stretch / steps;
+  const outer = inner + stretch;
   let [x, p] = [quantile(from.y), from.slope];
   for (let step = 0; step < steps; step++) {
-    series.open(x, p, direction * (unit + 1 - step / steps));
+    series.open(x, p, direction * (outer - step * size));
     coefficients.set(series.x, step * (order + 1));
-    x = valueOf(series.x, 0, inwards);
-    p = valueOf(series.p, 0, inwards);
+    x = valueOf(series.x, 0, -direction * size);
+    p = valueOf(series.p, 0, -direction * size);
   }
   const end = quantile(to.y);
   const missed = Math.abs(x - end) + Math.abs(slopeOf(law, x, p) - slopeOf(law, end, to.slope));
   if (!(missed <= wanted)) return null;
   return (distance, out) => {
-    const inner = (unit + 1 - distance) * steps;
-    const step = Math.min(steps - 1, Math.floor(inner));
-    const away = (inner - step) * inwards;
+    const inwards = outer - distance;
+    const step = Math.min(steps - 1, Math.floor(inwards / size));
+    const away = direction * (step * size - inwards);
     out[0] = valueOf(coefficients, step * (order + 1), away);
     out[1] = direction * changeOf(coefficients, step * (order + 1), away);
   };

@@ -25,6 +25,7 @@ import { columnsOf, inScenarios, isOfRuns, quantitiesOf, type Quantity } from '.
 import type { SweepPlan } from '../request.ts';
 import { openChange } from './change.ts';
 import { manyPoints } from './many-points.ts';
+import { movingModel } from './moving-model.ts';
 import { Tally } from './tally.ts';
 
 /** What a point came to. */
@@ -51,7 +52,12 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
   const quantities = inScenarios(asked, scenarios);
   const width = quantities.flatMap(columnsOf).length;
   const machine = measures.some(isOfRuns) ? loadMachine() : null;
+  const inBase = change(design.factors.map((factor) => factor.base));
+  const asNowOnly = scenarios.length === 0 && scenarioOf(inBase) === asNow;
+  const moving = asNowOnly && !asked.every(isNearZero) ? movingModel(inBase, design.factors) : null;
   const at = (values: readonly Value[]): PointResult => {
+    const moved = moving?.(values) ?? null;
+    if (moved !== null) return { numbers: measure(moved, asked, machine), failure: '' };
     const changed = change(values);
     const specs = scenarios.length === 0 ? [changed] : scenarios.map((name) => withScenario(changed, name));
     const numbers = new Float64Array(width).fill(NaN);
@@ -62,9 +68,8 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
     }
     return { numbers, failure: '' };
   };
-  const growthOnly = measures.every((name) => name === 'growth') && scenarios.length === 0;
-  const inBase = change(design.factors.map((factor) => factor.base));
-  const many = growthOnly && scenarioOf(inBase) === asNow ? manyPoints(inBase, design.factors, withoutCrowding) : null;
+  const growthOnly = measures.every((name) => name === 'growth') && asNowOnly;
+  const many = growthOnly ? manyPoints(inBase, design.factors, withoutCrowding) : null;
   if (many === null) return { quantities, at, all: (points) => points.map(at) };
   const all = (points: readonly (readonly Value[])[]): readonly PointResult[] => {
     const growth = many.growthAt(points);
@@ -84,13 +89,17 @@ interface CompiledPoint extends Compiled {
 
 /** A text says why there is no such model. */
 function compilePoint(spec: Spec, quantities: readonly Quantity[]): CompiledPoint | string {
-  const nearZeroOnly = quantities.every(({ measure }) => measure === 'growth' || measure === 'damping');
-  if (nearZeroOnly && scenarioOf(spec) === asNow) {
+  if (quantities.every(isNearZero) && scenarioOf(spec) === asNow) {
     const near = compileNearZero(spec);
     if (near !== null) return near;
   }
   const { compiled, findings } = compileSpec(spec);
   return compiled ?? reasonOf(findings);
+}
+
+/** Whether it needs neither capacities nor a start. */
+function isNearZero({ measure }: Quantity): boolean {
+  return measure === 'growth' || measure === 'damping';
 }
 
 /** Growth needs neither capacities nor a start, and there is growth where these cannot be. Null where more must be solved. */
@@ -137,7 +146,7 @@ interface Tallying {
 
 function tallied(machine: Machine, image: ArrayBuffer, { model, quantities }: Tallying): Tally {
   openNext(machine, image);
-  const run = runnerOn(machine, image, { steps: model.steps, seed: model.seed });
+  const run = runnerOn(machine, image, { steps: model.steps, seed: model.seed, reuse: true });
   const tally = new Tally(model, quantities);
   for (const batch of batchesOf(model.replicates)) tally.take(run(batch));
   return tally;

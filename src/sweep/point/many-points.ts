@@ -27,7 +27,7 @@ export function manyPoints(
   coefficientsOf: (model: Compiled['model']) => Compiled['coefficients'],
 ): ManyPoints | null {
   const moving = movingRates(spec, factors);
-  if (moving === null) return null;
+  if (moving === null || !isSame(moving.model)) return null;
   const { landscape } = buildLandscape(moving.model);
   const compiled = { model: moving.model, landscape, coefficients: coefficientsOf(moving.model) };
   const plan = planYear(moving, compiled);
@@ -55,6 +55,12 @@ export function manyPoints(
     return out;
   };
   return { growthAt };
+}
+
+/** Whether every year is the same, and no share of its own rests on growth. */
+function isSame({ variation, catastrophes, phases }: Compiled['model']): boolean {
+  if (variation !== null || catastrophes.length > 0) return false;
+  return phases.every((phase) => phase.kind !== 'ageing' || phase.stages === undefined);
 }
 
 /** Vectors of the base matrix, where both are positive throughout. */

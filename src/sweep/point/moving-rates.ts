@@ -23,6 +23,8 @@ export interface MovingRate {
 
 export interface MovingRates {
   readonly model: Model;
+  /** What the model was resolved from. */
+  readonly context: Context;
   readonly rates: readonly MovingRate[];
   /** In the order of `source`; null where one is no rate, so that the whole compiler has to say why. */
   valuesAt(values: readonly number[]): Float64Array | null;
@@ -34,18 +36,16 @@ export function movingRates(spec: Spec, factors: readonly Factor[]): MovingRates
   const names = new Set(factors.map(({ name }) => name));
   if (model === null || !isPlain(model, context, names)) return null;
   const found = collect(model, context, names);
-  return found === null || movesElsewhere(context, names, found.paths) ? null : { model, ...found };
+  return found === null || movesElsewhere(context, names, found.paths) ? null : { model, context, ...found };
 }
 
-/** Nothing but tables of rates can move: no weather, no stages that rest on growth, no attributes that are worked out. */
+/** Nothing but tables of rates can move: no broods with a size each, no attributes that are worked out. */
 function isPlain(model: Model, { spec, attributes }: Context, names: ReadonlySet<string>): boolean {
-  if (model.variation !== null || model.catastrophes.length > 0) return false;
   if ([...names].some((name) => spec.parameters?.[name] === undefined)) return false;
   if (attributes.some((own) => [...own.values()].some((value) => typeof value !== 'number'))) return false;
   return model.phases.every(
     (phase) =>
       !(phase.kind === 'breeding' && (phase.offspring !== undefined || phase.mating !== undefined)) &&
-      !(phase.kind === 'ageing' && phase.stages !== undefined) &&
       phase.kind !== 'demography',
   );
 }
