@@ -162,23 +162,31 @@ function addRuns(program: Command): void {
     .addHelpText('after', '\nExample:\n  skein run models/reed-hare.yaml --replicates 500 --seed 7')
     .action(run(async () => (await import('./command/run.ts')).runCommand));
   addCompare(program, chance);
-  model(program, 'report', 'run the model and write one page that an agency can read', [...chance, 'places', 'quiet'])
+  model(program, 'report', 'run the model and write one page that an agency can read', [
+    ...chance,
+    'only',
+    'robust',
+    'places',
+    'quiet',
+  ])
     .requiredOption('-o, --output <file>', 'the HTML file to write (- for standard output)')
-    .option('--robust', 'where the model has plans: ask other sound models whether they reverse the order')
     .addHelpText('after', '\nExample:\n  skein report models/reed-hare.yaml -o reed-hare.html')
     .action(run(async () => (await import('./command/report.ts')).reportCommand));
 }
 
 function addCompare(program: Command, chance: Parameters<typeof addOptions>[1]): void {
-  model(program, 'compare', 'set the plans of a model side by side, in the same futures', [
-    ...chance.filter((name) => name !== 'scenario'),
-    'json',
-    'out',
-    'places',
-    'quiet',
-  ])
-    .option('--robust', 'ask other sound models whether they reverse the order')
-    .addOption(refused('--scenario <name>', '`compare` sets all scenarios of the model side by side; `run` takes one.'))
+  const own = ['only', ...chance.filter((name) => name !== 'scenario'), 'robust'] as const;
+  addOptions(program.command('compare'), [...own, 'json', 'out', 'places', 'quiet', 'allow'])
+    .argument('[model]', 'a model file, or - for standard input')
+    .description('set the plans of a model side by side, in the same futures')
+    .option('--details', 'print all pairs of plans in all outcomes, chances of being best, and patches, too')
+    .option('--again <file>', 'compare what a run.json of `--out` holds, to the last byte')
+    .addOption(
+      refused(
+        '--scenario <name>',
+        '`compare` sets all scenarios of the model side by side, or those of `--only`; `run` takes one.',
+      ),
+    )
     .addHelpText('after', '\nExample:\n  skein compare models/reed-hare.yaml --replicates 500')
     .action(run(async () => (await import('./command/compare.ts')).compareCommand));
 }

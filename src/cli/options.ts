@@ -13,6 +13,9 @@ export interface CommonOptions {
   readonly precision?: number | undefined;
   readonly atMost?: number | undefined;
   readonly scenario?: string;
+  /** Names of plans to compare; all where it is not said. */
+  readonly only?: readonly string[];
+  readonly robust?: boolean;
   readonly threads?: number;
   readonly json?: boolean;
   readonly out?: string;
@@ -31,6 +34,8 @@ type Shared =
   | 'precision'
   | 'at-most'
   | 'scenario'
+  | 'only'
+  | 'robust'
   | 'threads'
   | 'json'
   | 'out'
@@ -54,6 +59,12 @@ const options: Readonly<Record<Shared, () => Option>> = {
   'at-most': () =>
     new Option('--at-most <n>', 'replicates after which --precision gives up').argParser(wholeFrom(1, 100_000_000)),
   scenario: () => new Option('--scenario <name>', 'the scenario to take; `as now` is the model without actions'),
+  only: () =>
+    new Option('--only <name>', 'compare this plan only, with `as now` (repeatable)').argParser(
+      (name: string, before: readonly string[] | undefined) => [...(before ?? []), name],
+    ),
+  robust: () =>
+    new Option('--robust', 'where plans are compared: ask other sound models whether they reverse the order'),
   threads: () =>
     new Option('--threads <n>', 'threads to run in; all cores where it pays').argParser(wholeFrom(1, 1024)),
   json: () => new Option('--json', 'print one JSON object instead of text'),

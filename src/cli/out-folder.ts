@@ -18,6 +18,8 @@ export interface OutContent {
   readonly tables: readonly Table[];
   /** 1 where it is not said. */
   readonly threads?: number;
+  /** Whether a comparison asked other sound models. */
+  readonly robust?: boolean;
   /** Takes the place of everything that tells where patches are. */
   readonly hidden?: Hidden | null;
 }
@@ -32,7 +34,7 @@ export function openOutFolder(folder: string): OutFolder {
   makeFolder(folder);
   pendingFile(join(folder, 'results.json'));
   return {
-    write: ({ spec, provenance }, { command, results, tables, threads = 1, hidden = null }) => {
+    write: ({ spec, provenance }, { command, results, tables, threads = 1, robust = false, hidden = null }) => {
       const { hash } = hidden ?? provenance;
       const places = hidden === null ? {} : { places: hidden.places };
       const inputs = {
@@ -41,6 +43,7 @@ export function openOutFolder(folder: string): OutFolder {
         ...provenance,
         hash,
         ...places,
+        ...(robust ? { robust } : {}),
         spec: specJson(hidden?.spec ?? spec),
       };
       writeTogether(folder, [

@@ -68,6 +68,7 @@ export const InputsSchema = Type.Object({
   command,
   ...part.provenance,
   places: part.places,
+  robust: Type.Optional(Type.Literal(true, { description: 'Of a comparison: other sound models were asked, too.' })),
   spec: Type.Object({}, { description: 'The model with all its inputs, as the language has it.' }),
 });
 

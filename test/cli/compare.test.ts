@@ -3,7 +3,9 @@ import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'n
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, test } from 'vitest';
-import { folder, skein } from './skein.ts';
+import type { Comparison } from '../../src/compare/results.ts';
+import { compareText } from '../../src/report/compare/compare-text.ts';
+import { filesIn, folder, skein } from './skein.ts';
 
 const text = `skein: 1
 study: { title: Two ponds, invented: true }
@@ -80,12 +82,60 @@ describe('skein compare', () => {
     const words = out.replace(/\s+/g, ' ');
     expect(words).toMatch(/^Two ponds The results support “fence”: a chance of “few” of/);
     expect(words).toContain('Strength: limited');
-    expect(words).toContain('posters no reliable gain');
+    expect(words).toMatch(/posters none 0\.0 to 0\.0 the same no reliable gain/);
     expect(words).toContain('takes animals from Pond (“moves”)');
     expect(words).toContain('An exit rule to start from: stop catching when fewer than');
     expect(words).toContain('after IUCN/SSC 2013');
     expect(words).toContain('is decided by the wildlife authority');
     expect(words).toContain('Nothing is counted after 2038');
+  });
+
+  test('tells pairs, other outcomes and patches only where they are asked for', () => {
+    const [short, long] = [[], ['--details']].map((more) => skein(['compare', model, '--quiet', ...more]).out);
+    const kept = short!.split('\n').filter((line) => !line.startsWith('With `--details`'));
+    expect(long!.split('\n')).toEqual(expect.arrayContaining(kept));
+    for (const told of [
+      'quota against posters',
+      'fence against as now',
+      'how often best in',
+      'Patches that gain or lose',
+      'lowest count',
+    ]) {
+      expect(short).not.toContain(told);
+      expect(long).toContain(told);
+    }
+  });
+
+  test.each([80, 100])('no line of it is wider than %i', (width) => {
+    const { out } = skein(['compare', 'models/reed-hare.yaml', '--json', '--quiet', '--replicates', '60', '--draws', '3']);
+    for (const details of [true, false]) {
+      const told = compareText(JSON.parse(out) as Comparison, { colour: false, animals: 'females', width, details });
+      expect(Math.max(...told.split('\n').map((line) => line.length))).toBeLessThanOrEqual(width);
+    }
+  });
+
+  test('--only takes some of the plans, which differ as they do among all', () => {
+    const few = compared('--only', 'quota', '--only', 'fence');
+    expect(few.scenarios.map(({ name }) => name)).toEqual(['as now', 'fence', 'quota']);
+    const all = compared().differences.filter(({ from, to }) => ![from, to].some((one) => /posters|moves/.test(one)));
+    expect(few.differences).toEqual(all);
+    const { code, err } = skein(['compare', model, '--only', 'fance']);
+    expect([code, err]).toEqual([2, '--only fance: the model has no plan `fance`. Did you mean `fence`?\n']);
+  });
+
+  test('--again gives the same bytes in every file but the log', () => {
+    const cwd = folder();
+    const few = ['--only', 'fence', '--only', 'posters', '--replicates', '60', '--seed', '8', '--robust'];
+    const first = skein(['compare', model, ...few, '--quiet', '--out', 'out'], { cwd });
+    expect(first.code).toBe(0);
+    expect(first.out).toContain('Would another sound model reverse the order?');
+    expect(skein(['compare', '--again', 'out/run.json', '--quiet', '--out', 'again'], { cwd })).toEqual(first);
+    for (const file of filesIn(join(cwd, 'out')).filter((one) => one !== 'log.json')) {
+      expect(readFileSync(join(cwd, 'again', file)), file).toEqual(readFileSync(join(cwd, 'out', file)));
+    }
+    for (const words of [[model], ['--only', 'fence'], ['--robust']])
+      expect(skein(['compare', '--again', 'out/run.json', ...words], { cwd }).code).toBe(2);
+    expect(skein(['run', '--again', 'out/run.json'], { cwd }).err).toContain('it belongs to `skein compare`');
   });
 
   // By hand: 1000 + 100 Σ 1.03^-t for t from 0 to 11.

@@ -5,6 +5,7 @@ import type { PlanToRun } from '../../compare/plan.ts';
 import type { PlansRun } from '../../compare/plans-run.ts';
 import { compareText } from '../../report/compare/compare-text.ts';
 import { hiddenComparison } from '../../report/hiding/hidden-comparison.ts';
+import { loadAgain, refuseBesideAgain, type LoadedAgain } from '../again.ts';
 import { compareTables } from '../compare-tables.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
@@ -12,36 +13,47 @@ import { settingsOf, type CommonOptions } from '../options.ts';
 import { openOutFolder } from '../out-folder.ts';
 import { writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
+import { chosenPlans } from '../plans.ts';
 import { threadsFor, withCrew } from '../replicates.ts';
 import { terminalOf } from '../terminal.ts';
 
 export interface CompareCommandOptions extends CommonOptions {
-  readonly robust?: boolean;
+  /** A run.json. */
+  readonly again?: string;
+  readonly details?: boolean;
 }
 
-export async function compareCommand(path: string, options: CompareCommandOptions): Promise<void> {
-  const { compiled } = loadModel(path, settingsOf(options), { ...options, everyScenario: true });
-  const { spec } = compiled;
+export async function compareCommand(path: string | undefined, options: CompareCommandOptions): Promise<void> {
+  const { compiled, robust } = load(path, options);
+  const spec = chosenPlans(compiled.spec, options.only);
   const plans = plansToCompare(plansOf(spec).plans);
   const folder = options.out === undefined ? null : openOutFolder(options.out);
   const threads = options.threads ?? threadsFor(plans.map((plan) => plan.compiled));
-  const robust = options.robust === true;
   const done = await withCrew({ ...options, threads }, (crew, own) =>
     compareSpec(crew, { spec, plans }, { ...own, robust }),
   );
   if (done === null) throw new Ending(exitCodes.work, 'Stopped before the first futures of all plans were finished.');
   const { comparison, run } = done;
   const first = run.runs[0]?.compiled ?? compiled;
-  const hidden = askedHiding(first, { ...options, path, written: folder !== null });
+  const hidden = askedHiding(first, { ...options, path: path ?? options.again ?? '-', written: folder !== null });
   const results = hiddenComparison(comparison, hidden);
-  folder?.write(first, { command: 'compare', results, tables: compareTables(results), threads, hidden });
+  folder?.write(first, { command: 'compare', results, tables: compareTables(results), threads, robust, hidden });
   if (options.json === true) writeOut(`${JSON.stringify(results, null, 2)}\n`);
   else {
     const animals = compiled.model.counts === 'females' ? 'females' : 'animals';
-    writeOut(`${compareText(results, { ...terminalOf(process.stdout), animals }).trimEnd()}\n`);
+    writeOut(
+      `${compareText(results, { ...terminalOf(process.stdout), animals, details: options.details === true }).trimEnd()}\n`,
+    );
   }
   const cut = cutShort(run, plans);
   if (cut !== null) throw cut;
+}
+
+function load(path: string | undefined, options: CompareCommandOptions): LoadedAgain {
+  refuseBesideAgain(path, options);
+  if (options.again !== undefined) return loadAgain(options.again, 'compare');
+  const { compiled } = loadModel(path ?? '-', settingsOf(options), { ...options, everyScenario: true });
+  return { compiled, robust: options.robust === true };
 }
 
 /** The plans were compiled once already, so nothing can be wrong with them. */

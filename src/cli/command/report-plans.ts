@@ -16,17 +16,18 @@ import type { LoadedModel } from '../load.ts';
 import type { CommonOptions } from '../options.ts';
 import { writeError, writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
+import { chosenPlans } from '../plans.ts';
 import { threadsFor, withCrew } from '../replicates.ts';
 import { commandLineOf } from '../words.ts';
 import { cutShort, plansToCompare } from './compare.ts';
 
 export interface PlansReportRequest extends LoadedModel {
   readonly path: string;
-  readonly options: CommonOptions & { readonly output: string; readonly robust?: boolean };
+  readonly options: CommonOptions & { readonly output: string };
 }
 
 export async function reportPlans({ document, files, compiled, path, options }: PlansReportRequest): Promise<void> {
-  const { spec } = compiled;
+  const spec = chosenPlans(compiled.spec, options.only);
   const plans = plansToCompare(plansOf(spec).plans);
   const file = options.output === '-' ? null : pendingFile(options.output);
   const threads = options.threads ?? threadsFor(plans.map((plan) => plan.compiled));
@@ -42,12 +43,11 @@ export async function reportPlans({ document, files, compiled, path, options }: 
   const cut = cutShort(done.run, plans);
   const { replicates, draws } = first.compiled.model;
   const asked = cut === null ? options : { ...options, precision: undefined, atMost: undefined, replicates, draws };
-  const last = [...(robust ? ['--robust'] : []), '-o', options.output];
   const page = buildPlansReport({
     ...planInput(first, hidden),
     specText: hidden?.specText ?? document.text,
     data: { files, drivers: spec.drivers, wholeText: hidden === null ? printSpec(spec) : null },
-    commandLine: commandLineOf(['report', path], asked, last),
+    commandLine: commandLineOf(['report', path], asked, ['-o', options.output]),
     runLine: commandLineOf(['compare', path], asked, ['--out', 'results']),
     ...(hidden === null ? {} : { hiding: hidden }),
     pageScript,

@@ -3,8 +3,7 @@ import { withCriterionE } from '../../analysis/criterion-e.ts';
 import type { CompiledModel } from '../../pipeline.ts';
 import { withHiding } from '../../report/hiding/hide.ts';
 import { runText } from '../../report/text.ts';
-import { loadAgain } from '../again.ts';
-import { Ending, exitCodes } from '../exit.ts';
+import { loadAgain, refuseBesideAgain } from '../again.ts';
 import { openOutFolder, type OutFolder } from '../out-folder.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
@@ -36,15 +35,7 @@ export async function runCommand(path: string | undefined, options: RunCommandOp
 }
 
 function load(path: string | undefined, options: RunCommandOptions): CompiledModel {
-  const { again, set, scenario, years, replicates, seed, draws, rare, precision, atMost } = options;
-  if (again === undefined) {
-    if (path === undefined) throw new Ending(exitCodes.usage, 'Name a model, or a run.json with --again.');
-    return loadModel(path, settingsOf(options), options).compiled;
-  }
-  if ([path, set, scenario, years, replicates, seed, draws, rare, precision, atMost].some((one) => one !== undefined)) {
-    const why =
-      '--again takes the model and all that decides the result (--set, --scenario, --years, --replicates, --seed, --draws, --rare, --precision, --at-most) from its file; leave them out.';
-    throw new Ending(exitCodes.usage, why);
-  }
-  return loadAgain(again);
+  refuseBesideAgain(path, options);
+  if (options.again !== undefined) return loadAgain(options.again, 'run').compiled;
+  return loadModel(path ?? '-', settingsOf(options), options).compiled;
 }

@@ -15,17 +15,32 @@ export const translocationSteps: readonly string[] = [
   'Watch both places long enough to know, go on caring for them, and publish what came of it.',
 ];
 
-/** Of each move, for its source; `futures` are those of each plan. */
-export function sourceWords(
-  { scenario, action, source, change: found, stopBelow, year }: SourceRisk,
+/** Of each move, for its source: what each plan with it does there, and then when to stop. */
+export function sourcesWords({ sources, replicates }: Comparison, animals: string): readonly string[] {
+  const moves = new Map<string, SourceRisk[]>();
+  for (const one of sources) {
+    const key = JSON.stringify([one.action, one.source]);
+    moves.set(key, [...(moves.get(key) ?? []), one]);
+  }
+  return [...moves.values()].flatMap((plans) => [
+    ...plans.map((one) => sourceWords(one, animals, replicates)),
+    ...plans.slice(0, 1).map((one) => exitWords(one, animals)),
+  ]);
+}
+
+/** `futures` are those of each plan. */
+function sourceWords(
+  { scenario, action, source, change: found }: SourceRisk,
   animals: string,
   futures: number,
-): readonly string[] {
+): string {
   const { before, after } = found.everEmpty;
-  return [
-    `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${seenChance(after, futures)} with the plan and ${seenChance(before, futures)} without it (difference in points: ${change({ of: 'chance', estimate: found.everEmptyChange.estimate })}, 95 %: ${between('chance', found.everEmptyChange)}).`,
-    `An exit rule to start from: stop catching when fewer than ${whole(Math.max(1, stopBelow))} ${animals} are counted in ${source}. Without the plan 95 of 100 futures count more there in ${year}, so fewer is no bad luck that the model foresees. The rule is for the permit and the people responsible to set.`,
-  ];
+  return `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${seenChance(after, futures)} with the plan and ${seenChance(before, futures)} without it (difference in points: ${change({ of: 'chance', estimate: found.everEmptyChange.estimate })}, 95 %: ${between('chance', found.everEmptyChange)}).`;
+}
+
+/** The same for every plan with the move, since it rests on futures without it. */
+function exitWords({ source, stopBelow, year }: SourceRisk, animals: string): string {
+  return `An exit rule to start from: stop catching when fewer than ${whole(Math.max(1, stopBelow))} ${animals} are counted in ${source}. Without the plan 95 of 100 futures count more there in ${year}, so fewer is no bad luck that the model foresees. The rule is for the permit and the people responsible to set.`;
 }
 
 export function hasMoves({ scenarios }: Comparison): boolean {

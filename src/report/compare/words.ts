@@ -19,6 +19,26 @@ export function change({ of, estimate }: Pick<PlanDifference, 'of' | 'estimate'>
   return `${estimate < 0 ? '−' : '+'}${amount(of, Math.abs(estimate))}`;
 }
 
+/** A chance and its interval, of a hundred futures; of one that was never seen, how far it may still reach. */
+export function chanceWords(probability: number, runs: { readonly lower: number; readonly upper: number }): string {
+  if (probability === 0) return `0 (at most ${bare(runs.upper)})`;
+  return `${bare(probability)} (${rangeWords(runs)})`;
+}
+
+export function rangeWords({ lower, upper }: { readonly lower: number; readonly upper: number }): string {
+  return `${bare(lower)}–${bare(upper)}`;
+}
+
+function bare(share: number): string {
+  return percent(share).replace(/\s?%$/u, '');
+}
+
+/** In which money costs are, and what 'now' means. */
+export function moneyWords({ currency, priceYear, discount }: NonNullable<Comparison['money']>): string {
+  const prices = priceYear === null ? '' : ` at prices of ${priceYear}`;
+  return `Costs are in ${currency}${prices}, means over the futures; 'cost now' is discounted by ${percent(discount)} a year, the first year not.`;
+}
+
 /** A chance seen in so many futures; where none showed it, how far it may still reach (95 %, Wilson 1927). */
 export function seenChance(chance: number, futures: number): string {
   return chance === 0 ? `0\u00a0% (at most ${percent(wilson(0, futures).upper)})` : percent(chance);
@@ -72,4 +92,12 @@ export function courseWords({ changeAtEnd, animalsAtEnd }: ComparedPlan): string
   const share = animalsAtEnd.mean === 0 ? 0 : changeAtEnd / animalsAtEnd.mean;
   if (Math.abs(share) < 0.001) return 'steady';
   return `${share < 0 ? 'falling' : 'rising'} by ${(Math.abs(share) * 100).toFixed(1)}\u00a0% a year`;
+}
+
+/** Of 100, how often a plan is best in an outcome: with other futures, and over the draws where there are any. */
+export function bestWords({ best }: Comparison, outcome: string, plan: string): string {
+  const found = best.find((one) => one.outcome === outcome && one.scenario === plan);
+  if (found === undefined) return '';
+  const over = found.probabilityOverDraws === null ? '' : ` / ${shareOf100(found.probabilityOverDraws)}`;
+  return `${shareOf100(found.probability)}${over}`;
 }

@@ -1,13 +1,11 @@
 // Before anything is done: what handling animals asks for, and who signs.
 import type { Comparison } from '../../compare/results.ts';
 import { mark, type Markup } from '../../view/markup.ts';
-import { hasMoves, hasTakes, sourceWords, takeWords, translocationSteps } from '../compare/translocation.ts';
+import { hasMoves, hasTakes, sourcesWords, takeWords, translocationSteps } from '../compare/translocation.ts';
 import { section } from '../section/section.ts';
 
 export function signsSection(comparison: Comparison, animals: string): Markup {
-  const sources = comparison.sources
-    .flatMap((source) => sourceWords(source, animals, comparison.replicates))
-    .map((text) => mark`<p>${text}</p>`);
+  const sources = sourcesWords(comparison, animals).map((text) => mark`<p>${text}</p>`);
   const steps = hasMoves(comparison)
     ? mark`<h3>Before any animal is moved or released</h3>${sources}<p>In the order of the guidelines of IUCN/SSC (2013):</p><ol>${translocationSteps.map((step) => mark`<li>${step}</li>`)}</ol>`
     : null;

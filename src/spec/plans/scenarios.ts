@@ -39,6 +39,13 @@ export function withScenario(spec: Spec, name: string): Spec {
   return { ...core, run: name === asNow ? run : { ...run, scenario: name }, named };
 }
 
+/** The same spec with no plans but these. */
+export function onlyPlans(spec: Spec, names: ReadonlySet<string>): Spec {
+  const { named, ...core } = spec;
+  const kept = Object.entries(spec.scenarios ?? {}).filter(([name]) => names.has(name));
+  return { ...core, scenarios: Object.fromEntries(kept), named };
+}
+
 export function actionsOf(spec: Spec, scenario: string): readonly ScenarioAction[] {
   const chosen = new Set(spec.scenarios?.[scenario] ?? []);
   const say = sayNumbers(spec);
