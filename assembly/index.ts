@@ -21,7 +21,9 @@ export {
   restoreLane,
   setBatchStep,
 } from './lanes';
-export { startPath, stepPath, stepPathUnder, pathAnimals, pathMoved } from './path/program';
+export { openPath, pathAnimals, readPath, writePath, openCourses, courseTotals } from './path/state';
+export { startPath, rewindPath, stepPath, stepCourses } from './path/program';
+export { startCourses, fillCourses, holdCourses, sumCourses, scaleCourses } from './path/courses';
 export {
   openMany,
   manyInputs,

@@ -4,14 +4,15 @@ import * as batch from './batch';
 import { setSeed } from './draws/philox';
 import { faultDetail, header, openImage, patches, slots } from './image';
 import { faultMemory, faultNone, headerWeather, lanes } from './layout';
-import { reservePath } from './path/state';
+import { closePath } from './path/state';
 import { advance, advanceWeather, countStart } from './program';
 
 /** Opens the image at this address, in memory that was reserved; a fault code where it cannot be run. */
 export function open(address: usize, size: i32): i32 {
   const fault = openImage(address, size);
   if (fault !== faultNone) return fault;
-  return batch.reserveBatch() && reservePath() ? faultNone : faultMemory;
+  closePath();
+  return batch.reserveBatch() ? faultNone : faultMemory;
 }
 
 export function faultSubject(): i32 {

@@ -3,13 +3,20 @@ import { f64At, i32At } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { isActive, wantedOf } from '../phases/handling';
-import { add, animals, animalsIn, step } from './state';
+import { cellAt, step, width } from './state';
 
 /** Fewer are nobody. */
 const nobody: f64 = 1e-9;
 
+/** The course at hand: a column of each patch. */
+let course: i32 = 0;
+
 export function meanHandling(record: usize): void {
   if (!isActive(record, step)) return;
+  for (course = 0; course < width; course++) handleCourse(record);
+}
+
+function handleCourse(record: usize): void {
   const inPatches = section(operand(record, layout.handledPatches));
   const together = operand(record, layout.handledTogether) !== 0;
   const groups = together ? 1 : patches;
@@ -38,7 +45,7 @@ function countIn(record: usize, patch: i32, first: i32, end: i32): f64 {
   if (i32At(section(operand(record, layout.handledPatches)), patch) === 0) return 0;
   const inClasses = section(operand(record, layout.handledClasses));
   let all: f64 = 0;
-  for (let c = first; c < end; c++) if (i32At(inClasses, c) !== 0) all += animalsIn(patch, c);
+  for (let c = first; c < end; c++) if (i32At(inClasses, c) !== 0) all += load<f64>(here(patch, c));
   return all;
 }
 
@@ -51,12 +58,12 @@ function takeIn(record: usize, patch: i32, first: i32, end: i32, share: f64): vo
   const back = homing < 0 ? 0 : f64At(section(homing), 0);
   for (let c = first; c < end; c++) {
     if (i32At(inClasses, c) === 0) continue;
-    const taken = animalsIn(patch, c) * share;
-    add(animals, patch, c, -taken);
+    const taken = load<f64>(here(patch, c)) * share;
+    add(patch, c, -taken);
     if (!moving) continue;
     const alive = taken * f64At(survival, c);
-    add(animals, operand(record, layout.handledTo), c, alive * (1 - back));
-    if (back > 0) add(animals, patch, c, alive * back);
+    add(operand(record, layout.handledTo), c, alive * (1 - back));
+    if (back > 0) add(patch, c, alive * back);
   }
 }
 
@@ -67,6 +74,17 @@ export function meanRelease(record: usize): void {
   const survival = section(operand(record, layout.handledSurvival));
   for (let patch = 0; patch < patches; patch++) {
     if (i32At(inPatches, patch) === 0) continue;
-    for (let c = 0; c < classes; c++) add(animals, patch, c, f64At(amounts, patch * classes + c) * f64At(survival, c));
+    for (let c = 0; c < classes; c++) {
+      const released = f64At(amounts, patch * classes + c) * f64At(survival, c);
+      for (course = 0; course < width; course++) add(patch, c, released);
+    }
   }
+}
+
+function here(patch: i32, c: i32): usize {
+  return cellAt(c, patch * width + course);
+}
+
+function add(patch: i32, c: i32, n: f64): void {
+  store<f64>(here(patch, c), load<f64>(here(patch, c)) + n);
 }

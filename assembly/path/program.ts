@@ -1,62 +1,93 @@
-// Runs the programs of the open image without chance.
+// Runs the programs of the open image without chance: on the path, and on sixteen courses at a time under the conditions of the batch.
 import { entries, header, operand, section } from '../image';
 import * as layout from '../layout';
-import { meanAgeing, meanBreeding, meanCeiling, meanCrowding, meanDemography, meanSurvival } from './maps';
+import { meanAgeing } from './ageing';
+import { meanBreeding } from './breeding';
+import { meanCeiling } from './ceiling';
+import { meanCrowding } from './crowding';
+import { meanDemography } from './demography';
 import { meanHandling, meanRelease } from './handling';
 import { meanDispersal } from './movement';
+import { fillStart, useCourses, usePath } from './state';
+import { meanSurvival } from './survival';
+import { forgetTables } from './tables';
 import { meanCatastrophe, meanResponse, meanVariation } from './weather';
-import { animals, fillPath, moved, setStep, step, takeConditions } from './state';
 
-/** Puts the start into the path. */
+let stepOfPath: i32 = 0;
+
+/** Puts the start into the path; the tables of the image are read anew. */
 export function startPath(): void {
-  fillPath();
+  forgetTables();
+  rewindPath();
+  usePath(0);
+  fillStart();
+}
+
+/** The next step is the first. */
+export function rewindPath(): void {
+  stepOfPath = 0;
 }
 
 /** From one count to the next. */
 export function stepPath(): void {
-  setStep(step + 1);
-  runProgram(header(layout.headerYearProgram));
-  runProgram(header(layout.headerPhaseProgram));
+  stepOfPath += 1;
+  usePath(stepOfPath);
+  setWeather();
+  runPhases<f64>();
 }
 
-/** The phases of the first year alone, on the animals of the path, under the conditions that a lane of the batch has now. */
-export function stepPathUnder(lane: i32): void {
-  setStep(1);
-  takeConditions(lane);
-  runProgram(header(layout.headerPhaseProgram));
+/** The phases of the first year on all courses, each under the conditions that a lane of the batch has now. */
+export function stepCourses(): void {
+  useCourses();
+  runPhases<v128>();
 }
 
-/** Where the animals of the path stand. */
-export function pathAnimals(): usize {
-  return animals;
-}
-
-/** Where the animals that moved stand. */
-export function pathMoved(): usize {
-  return moved;
-}
-
-function runProgram(row: i32): void {
+function setWeather(): void {
+  const row = header(layout.headerYearProgram);
   const end = section(row) + ((<usize>entries(row)) << 2);
-  for (let record = section(row); record < end; record += layout.recordBytes) runRecord(record);
+  for (let record = section(row); record < end; record += layout.recordBytes) {
+    switch (operand(record, layout.recordOpcode)) {
+      case layout.opVariation:
+        meanVariation(record);
+        break;
+      case layout.opResponse:
+        meanResponse(record);
+        break;
+      case layout.opCatastrophe:
+        meanCatastrophe(record);
+        break;
+    }
+  }
 }
 
-function runRecord(record: usize): void {
+function runPhases<N>(): void {
+  const row = header(layout.headerPhaseProgram);
+  const end = section(row) + ((<usize>entries(row)) << 2);
+  for (let record = section(row); record < end; record += layout.recordBytes) runPhase<N>(record);
+}
+
+function runPhase<N>(record: usize): void {
   switch (operand(record, layout.recordOpcode)) {
     case layout.opBreeding:
-      meanBreeding(record);
+      meanBreeding<N>(record);
       break;
     case layout.opSurvival:
-      meanSurvival(record);
+      meanSurvival<N>(record);
       break;
     case layout.opAgeing:
-      meanAgeing(record);
+      meanAgeing<N>(record);
       break;
     case layout.opDemography:
-      meanDemography(record);
+      meanDemography<N>(record);
       break;
     case layout.opDispersal:
-      meanDispersal(record);
+      meanDispersal<N>(record);
+      break;
+    case layout.opCeiling:
+      meanCeiling<N>(record);
+      break;
+    case layout.opCrowding:
+      meanCrowding<N>(record);
       break;
     case layout.opTake:
     case layout.opMove:
@@ -64,21 +95,6 @@ function runRecord(record: usize): void {
       break;
     case layout.opAdd:
       meanRelease(record);
-      break;
-    case layout.opCeiling:
-      meanCeiling(record);
-      break;
-    case layout.opCrowding:
-      meanCrowding(record);
-      break;
-    case layout.opVariation:
-      meanVariation(record);
-      break;
-    case layout.opResponse:
-      meanResponse(record);
-      break;
-    case layout.opCatastrophe:
-      meanCatastrophe(record);
       break;
   }
 }

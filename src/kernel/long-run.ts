@@ -1,7 +1,8 @@
 // Growth in the long run: few animals as real numbers, year after year under the conditions that chance brings.
 import * as layout from '../../assembly/layout.ts';
 import { headerOf } from '../compile/image/read.ts';
-import { openOwnImage } from './open.ts';
+import type { Machine } from '../machine/instance.ts';
+import { cellsOf, openOwnCourses } from './open-path.ts';
 
 export interface LongRunRequest {
   /** Years that are forgotten first, and then those that are kept, of each of the sixteen courses. */
@@ -46,38 +47,37 @@ const wordSize = 4294967296;
  * those of the first year.
  */
 export function runLongRun(image: ArrayBuffer, { settling, years, seed }: LongRunRequest): LongRun {
-  const machine = openOwnImage(image);
-  const header = headerOf(image);
-  const cells = (header[layout.headerPatches] ?? 0) * (header[layout.headerClasses] ?? 0);
+  const machine = openOwnCourses(image);
+  const cells = cellsOf(image);
   const numbers = new Uint32Array(machine.memory.buffer, machine.replicates(), layout.lanes);
   numbers.forEach((_, lane) => (numbers[lane] = lane));
   machine.start(layout.lanes, seed % wordSize, Math.floor(seed / wordSize));
-  const states = new Float64Array(layout.lanes * cells).fill(few / cells);
+  machine.startCourses();
+  machine.fillCourses(few / cells);
+  const totals = new Float64Array(machine.memory.buffer, machine.courseTotals(), layout.lanes);
   const sums = new Float64Array(layout.lanes);
   const perCourse = Math.floor(years / stretch);
   const stretches = new Float64Array(layout.lanes * perCourse);
-  const here = new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells);
   for (let year = 0; year < settling + years; year++) {
     machine.stepWeather();
-    for (let lane = 0; lane < layout.lanes; lane++) {
-      const state = states.subarray(lane * cells, (lane + 1) * cells);
-      here.set(state);
-      machine.stepPathUnder(lane);
-      const total = sumOf(here);
-      if (year >= settling) {
-        const change = total > 0 ? machine.log(total / few) : -Infinity;
-        const [at, own] = [lane * perCourse, Math.floor((year - settling) / stretch)];
-        sums[lane] = (sums[lane] ?? 0) + change;
-        if (own < perCourse) stretches[at + own] = (stretches[at + own] ?? 0) + change;
-      }
-      if (total > 0) for (let i = 0; i < cells; i++) state[i] = ((here[i] ?? 0) / total) * few;
+    machine.holdCourses();
+    machine.stepCourses();
+    machine.sumCourses();
+    if (year >= settling) {
+      const own = Math.floor((year - settling) / stretch);
+      totals.forEach((total, lane) => {
+        const more = change(machine, total);
+        const at = lane * perCourse + own;
+        sums[lane] = (sums[lane] ?? 0) + more;
+        if (own < perCourse) stretches[at] = (stretches[at] ?? 0) + more;
+      });
     }
+    machine.scaleCourses(few);
   }
   return { courses: sums.map((sum) => sum / years), stretches };
 }
 
-function sumOf(numbers: Float64Array): number {
-  let sum = 0;
-  for (const number of numbers) sum += number;
-  return sum;
+/** Of the logarithm, from `few` animals. */
+function change({ log }: Machine, total: number): number {
+  return total > 0 ? log(total / few) : -Infinity;
 }

@@ -26,7 +26,6 @@ export interface BatchCounts {
 export interface RawPath {
   readonly steps: number;
   readonly animals: Float64Array;
-  readonly moved?: Moved;
 }
 
 /**

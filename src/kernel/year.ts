@@ -1,17 +1,17 @@
 // The first year of a model as a function of its animals, without chance, as the kernel follows it: for models of any size.
-import * as layout from '../../assembly/layout.ts';
-import { headerOf } from '../compile/image/read.ts';
-import { openOwnImage } from './open.ts';
+import { openOwnPath, pathOf } from './open-path.ts';
 
 /** P·C animals at a count, at p * C + c, to those a year later. */
 export function openYear(image: ArrayBuffer): (animals: Float64Array) => Float64Array {
-  const machine = openOwnImage(image);
-  const header = headerOf(image);
-  const cells = (header[layout.headerPatches] ?? 0) * (header[layout.headerClasses] ?? 0);
+  const machine = openOwnPath(image);
+  const here = pathOf(machine, image);
+  machine.startPath();
   return (animals) => {
-    machine.startPath();
-    new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells).set(animals);
+    here.set(animals);
+    machine.writePath();
+    machine.rewindPath();
     machine.stepPath();
-    return new Float64Array(machine.memory.buffer, machine.pathAnimals(), cells).slice();
+    machine.readPath();
+    return here.slice();
   };
 }

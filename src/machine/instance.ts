@@ -31,14 +31,33 @@ export interface MachineFunctions {
   /** 0 where the lane was saved at another step than the batch is at. */
   readonly restoreLane: (lane: number, source: number) => number;
   readonly setBatchStep: (step: number) => void;
+  /** Room for the path without chance of the open image; 0 where the memory cannot grow so far. */
+  readonly openPath: () => number;
+  /** The start; the tables of the image are read anew. */
   readonly startPath: () => void;
   readonly stepPath: () => void;
-  /** The phases of the first year on the animals of the path, under the conditions of a lane. */
-  readonly stepPathUnder: (lane: number) => void;
-  /** Address: f64 [patch][class]. */
+  /** The next step is the first. */
+  readonly rewindPath: () => void;
+  /** Address: f64 [patch][class], where the animals stand once `readPath` put them there, and from where `writePath` takes them. */
   readonly pathAnimals: () => number;
-  /** Address: f64 [way], since `startPath`. */
-  readonly pathMoved: () => number;
+  readonly readPath: () => void;
+  readonly writePath: () => void;
+  /** Room for sixteen courses of mean animals side by side; 0 where the memory cannot grow so far. */
+  readonly openCourses: () => number;
+  /** The start in each; the tables of the image are read anew. */
+  readonly startCourses: () => void;
+  /** So many animals in each patch and class. */
+  readonly fillCourses: (each: number) => void;
+  /** The phases of the first year on all courses, each under the conditions of its lane of the batch. */
+  readonly stepCourses: () => void;
+  /** Puts the courses aside as they are. */
+  readonly holdCourses: () => void;
+  /** Sums all animals of each course into `courseTotals`. */
+  readonly sumCourses: () => void;
+  /** From these sums to so many animals in each course; one of nobody goes back to what was put aside. */
+  readonly scaleCourses: (wanted: number) => void;
+  /** Address: f64 [course]. */
+  readonly courseTotals: () => number;
   /** Room for so many matrices of an order at a time; 0 where the memory cannot grow so far. Addresses follow. */
   readonly openMany: (order: number, most: number) => number;
   /** f64 [matrix][row][column]; where elasticities are wanted, they take the place of the entries. */
@@ -90,11 +109,21 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   saveLane: true,
   restoreLane: true,
   setBatchStep: true,
+  openPath: true,
   startPath: true,
   stepPath: true,
-  stepPathUnder: true,
+  rewindPath: true,
   pathAnimals: true,
-  pathMoved: true,
+  readPath: true,
+  writePath: true,
+  openCourses: true,
+  startCourses: true,
+  fillCourses: true,
+  stepCourses: true,
+  holdCourses: true,
+  sumCourses: true,
+  scaleCourses: true,
+  courseTotals: true,
   openMany: true,
   manyInputs: true,
   manyGrowths: true,

@@ -40,6 +40,7 @@ function pathRunner({ image, patches, classes, years }: Workload): (sets: number
   const at = machine.reserve(image.byteLength);
   new Uint8Array(machine.memory.buffer, at, image.byteLength).set(new Uint8Array(image));
   if (machine.open(at, image.byteLength) !== layout.faultNone) throw new Error('The kernel does not open the image.');
+  if (machine.openPath() === 0) throw new Error('The kernel has no room for the path.');
   const sections = readSections(image);
   const records = recordsOf(image);
   const rowOf = (opcode: number, word: number): number => records.get(opcode)?.[word] ?? -1;
@@ -65,6 +66,7 @@ function pathRunner({ image, patches, classes, years }: Workload): (sets: number
       }
       machine.startPath();
       for (let year = 0; year < years; year++) machine.stepPath();
+      machine.readPath();
       return animals.reduce((a, b) => a + b, 0);
     });
 }

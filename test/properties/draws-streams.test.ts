@@ -1,6 +1,5 @@
 // What a replicate gives depends on the seed, its number and the names, on nothing else.
 import { describe, expect, it } from 'vitest';
-import { runPath } from '../../src/kernel/path.ts';
 import { runReplicates } from '../kernel/collect.ts';
 import { openOwnImage } from '../../src/kernel/open.ts';
 import type { Phase } from '../../src/model/model.ts';
@@ -90,10 +89,6 @@ describe('animals that moved', () => {
     expect(Math.abs(eastward - 32_000)).toBeLessThan(5 * Math.sqrt(80_000 * 0.4 * 0.6));
     expect(Math.abs(westward - 2000)).toBeLessThan(5 * Math.sqrt(10_000 * 0.2 * 0.8));
     expect(sum(2)).toBe(200 * 50 + eastward - westward);
-  });
-
-  it('are the means in the path without chance', () => {
-    expect(Array.from(runPath(moving, { steps: 1 }).moved?.animals ?? [])).toEqual([160, 10]);
   });
 });
 
