@@ -14,8 +14,8 @@ export interface ManyPoints {
   growthAt(points: readonly (readonly Value[])[]): Float64Array;
 }
 
-/** Points of one request to the kernel. */
-const atATime = 512;
+/** Numbers of the matrices of one request to the kernel: they stay in the cache next to the cores. */
+const numbersAtATime = 1 << 16;
 
 /**
  * `spec` has the base values of the factors. Null where what is swept moves more than rates. Every matrix starts from the
@@ -35,23 +35,25 @@ export function manyPoints(
   const { order } = plan;
   const start = startOf(compiled, order);
   const solver = openManySolver();
+  const size = order * order;
+  const atATime = Math.max(2, Math.floor(numbersAtATime / size) & ~1);
+  // Every point writes the same cells, and no other is ever written.
+  const matrices = new Float64Array(atATime * size);
   const growthAt = (points: readonly (readonly Value[])[]): Float64Array => {
     const out = new Float64Array(points.length).fill(NaN);
-    for (let from = 0; from < points.length; from += atATime) {
-      const known: number[] = [];
-      const matrices = new Float64Array(Math.min(atATime, points.length - from) * order * order);
-      points.slice(from, from + atATime).forEach((values, i) => {
-        const rates = moving.valuesAt(values.map(Number));
-        if (rates === null) return;
-        const place = known.length * order * order;
-        plan.fill(rates, matrices.subarray(place, place + order * order));
-        known.push(from + i);
-      });
-      if (known.length === 0) continue;
-      const request = { matrices: matrices.subarray(0, known.length * order * order), order, ...start };
-      const { growthRate } = solver.solve(request);
+    const known: number[] = [];
+    const solve = (): void => {
+      const { growthRate } = solver.solve({ matrices: matrices.subarray(0, known.length * size), order, ...start });
       known.forEach((point, k) => (out[point] = growthRate[k] ?? NaN));
+      known.length = 0;
+    };
+    for (const [point, values] of points.entries()) {
+      const rates = moving.valuesAt(values);
+      if (rates === null) continue;
+      plan.fill(rates, matrices.subarray(known.length * size, (known.length + 1) * size));
+      if (known.push(point) === atATime) solve();
     }
+    if (known.length > 0) solve();
     return out;
   };
   return { growthAt };

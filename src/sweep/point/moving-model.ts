@@ -29,7 +29,7 @@ export function movingModel(spec: Spec, factors: readonly Factor[]): MovingModel
   if (moving === null || !meansFollowTables(moving.model)) return null;
   const { landscape } = buildLandscape(moving.model);
   return (values) => {
-    const rates = moving.valuesAt(values.map(Number));
+    const rates = moving.valuesAt(values);
     const resolved = rates === null ? null : withChance(moving.context, withRates(moving.model, moving.rates, rates));
     if (resolved === null) return null;
     const { model, findings } = solveStages(resolved, landscape);

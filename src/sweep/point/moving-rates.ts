@@ -8,7 +8,7 @@ import { evaluate } from '../../spec/expression/evaluate.ts';
 import { namesIn } from '../../spec/expression/names.ts';
 import type { Ast } from '../../spec/expression/ast.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
-import type { Factor } from '../design/factor.ts';
+import type { Factor, Value } from '../design/factor.ts';
 
 type RateField = 'births' | 'survival' | 'leaving';
 
@@ -27,7 +27,7 @@ export interface MovingRates {
   readonly context: Context;
   readonly rates: readonly MovingRate[];
   /** In the order of `source`; null where one is no rate, so that the whole compiler has to say why. */
-  valuesAt(values: readonly number[]): Float64Array | null;
+  valuesAt(values: readonly Value[]): Float64Array | null;
 }
 
 /** `spec` with the base values of the factors, all of them named parameters. */
@@ -53,7 +53,7 @@ function isPlain(model: Model, { spec, attributes }: Context, names: ReadonlySet
 interface Collected {
   readonly rates: readonly MovingRate[];
   readonly paths: ReadonlySet<string>;
-  valuesAt(values: readonly number[]): Float64Array | null;
+  valuesAt(values: readonly Value[]): Float64Array | null;
 }
 
 interface Source {
@@ -94,7 +94,7 @@ function collect(model: Model, context: Context, names: ReadonlySet<string>): Co
   }
   const order = [...sources.values()].map(({ source }) => source);
   const places = new Map([...names].map((name, k) => [name, k]));
-  const valuesAt = (values: readonly number[]): Float64Array | null => valuesOf(order, places, values);
+  const valuesAt = (values: readonly Value[]): Float64Array | null => valuesOf(order, places, values);
   const base = valuesAt([...names].map((name) => valueOf(context.spec, name)));
   const same = rates.every(
     (rate) => base?.[rate.source] === tableOf(model.phases[rate.phase])?.table.epochs[0]?.[rate.index],
@@ -111,13 +111,15 @@ function valueOf(spec: Spec, name: string): number {
 function valuesOf(
   sources: readonly Source[],
   places: ReadonlyMap<string, number>,
-  values: readonly number[],
+  values: readonly Value[],
 ): Float64Array | null {
   const out = new Float64Array(sources.length);
   for (const [s, { ast, attributes, scale, mostOne }] of sources.entries()) {
     const lookUp = (name: string): number | undefined => {
       const own = attributes?.get(name);
-      return typeof own === 'number' ? own : values[places.get(name) ?? -1];
+      if (typeof own === 'number') return own;
+      const swept = values[places.get(name) ?? -1];
+      return swept === undefined ? undefined : Number(swept);
     };
     const found = evaluate(ast, lookUp, pinned);
     if (!found.ok || !(found.value >= 0) || (mostOne && found.value > 1)) return null;

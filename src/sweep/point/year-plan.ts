@@ -83,109 +83,110 @@ function cellsOf({ columns, columnStart, rowIndex, values }: SparseMatrix, size:
   return cells;
 }
 
-/** out[target[i]] += left[from[i]] · right[with[i]]. */
-interface Products {
-  readonly left: Int32Array;
-  readonly right: Int32Array;
-  readonly target: Int32Array;
-  readonly count: number;
+/**
+ * Numbers stand on one tape: first the entries of all phases, then what is multiplied from them. A product is written to its place,
+ * or added to what is there already; one with an entry that is always 1 needs no place of its own.
+ */
+class Tape {
+  readonly start: number[] = [];
+  readonly moving: { readonly at: number; readonly constant: number; readonly slope: number; readonly source: number }[] =
+    [];
+  readonly left: number[] = [];
+  readonly right: number[] = [];
+  readonly target: number[] = [];
+  readonly adds: number[] = [];
+
+  /** Places of the entries of a phase. */
+  put({ constant, slope, source }: PhaseEntries): Int32Array {
+    return Int32Array.from(constant, (value, i) => {
+      const at = this.start.push(value) - 1;
+      const own = { at, constant: value, slope: slope[i] ?? 0, source: source[i] ?? -1 };
+      if (own.source >= 0) this.moving.push(own);
+      else this.#fixed.add(at);
+      return at;
+    });
+  }
+
+  readonly #fixed = new Set<number>();
+
+  /** Place of the sum of products of two places each. */
+  sum(products: readonly (readonly [left: number, right: number])[]): number {
+    const [only] = products;
+    if (products.length === 1 && only !== undefined) {
+      const [left, right] = only;
+      if (this.#isOne(left)) return right;
+      if (this.#isOne(right)) return left;
+    }
+    const target = this.start.push(0) - 1;
+    products.forEach(([left, right], i) => {
+      this.left.push(left);
+      this.right.push(right);
+      this.target.push(target);
+      this.adds.push(i === 0 ? 0 : 1);
+    });
+    return target;
+  }
+
+  #isOne(at: number): boolean {
+    return this.start[at] === 1 && this.#fixed.has(at);
+  }
+}
+
+interface Cells {
+  readonly rows: Int32Array;
+  readonly columns: Int32Array;
+  /** Where each stands on the tape. */
+  readonly places: Int32Array;
 }
 
 function planned(phases: readonly PhaseEntries[], kept: readonly number[], size: number): YearPlan {
-  const [first, ...others] = phases;
+  const tape = new Tape();
+  const [first, ...others] = phases.map((phase): Cells => ({ ...phase, places: tape.put(phase) }));
   if (first === undefined) throw new RangeError('A year has at least one phase.');
-  let pattern: Pattern = first;
-  const steps = others.map((phase) => {
-    const { products, result } = multiplied(phase, pattern, size);
-    pattern = result;
-    return products;
-  });
+  const year = others.reduce((before, phase) => multiplied(tape, phase, before, size), first);
   const place = new Map(kept.map((state, i) => [state, i]));
   const order = kept.length;
-  const cells = Array.from(pattern.rows, (row, i) => {
-    const [r, c] = [place.get(row), place.get(pattern.columns[i] ?? -1)];
-    return r === undefined || c === undefined ? -1 : r * order + c;
-  });
-  const buffers = phases.map(({ rows }) => new Float64Array(rows.length));
-  const results = steps.map(({ count }) => new Float64Array(count));
-  return {
-    order,
-    fill: (values, out) => {
-      phases.forEach((phase, p) => {
-        fillPhase(phase, values, buffers[p]);
-      });
-      let right = buffers[0];
-      steps.forEach((step, s) => {
-        const into = results[s];
-        multiplyBy(step, { left: buffers[s + 1], right, into });
-        right = into;
-      });
-      for (let i = 0; i < cells.length; i++) {
-        const cell = cells[i] ?? -1;
-        if (cell >= 0) out[cell] = right?.[i] ?? 0;
-      }
-    },
-  };
+  const written = Array.from(year.rows, (row, i) => {
+    const [r, c] = [place.get(row), place.get(year.columns[i] ?? -1)];
+    return { from: year.places[i] ?? 0, cell: r === undefined || c === undefined ? -1 : r * order + c };
+  }).filter(({ cell }) => cell >= 0);
+  return { order, fill: filling(tape, written) };
 }
 
-interface Pattern {
-  readonly rows: Int32Array;
-  readonly columns: Int32Array;
+function filling(tape: Tape, written: readonly { readonly from: number; readonly cell: number }[]): YearPlan['fill'] {
+  const { moving } = tape;
+  const numbers = Float64Array.from(tape.start);
+  const [left, right, target] = [Int32Array.from(tape.left), Int32Array.from(tape.right), Int32Array.from(tape.target)];
+  const adds = Int32Array.from(tape.adds);
+  const [from, cell] = [Int32Array.from(written, (one) => one.from), Int32Array.from(written, (one) => one.cell)];
+  return (values, out) => {
+    for (const { at, constant, slope, source } of moving) numbers[at] = constant + slope * (values[source] ?? 0);
+    for (let i = 0; i < target.length; i++) {
+      const product = (numbers[left[i] ?? 0] ?? 0) * (numbers[right[i] ?? 0] ?? 0);
+      const at = target[i] ?? 0;
+      numbers[at] = adds[i] === 1 ? (numbers[at] ?? 0) + product : product;
+    }
+    for (let i = 0; i < cell.length; i++) out[cell[i] ?? 0] = numbers[from[i] ?? 0] ?? 0;
+  };
 }
 
 /** Left · right, both column by column. */
-function multiplied(
-  left: Pattern,
-  right: Pattern,
-  size: number,
-): { readonly products: Products; readonly result: Pattern } {
+function multiplied(tape: Tape, left: Cells, right: Cells, size: number): Cells {
   const byColumn = Array.from({ length: size }, (): number[] => []);
   left.columns.forEach((column, i) => byColumn[column]?.push(i));
-  const targets = new Map<number, number>();
-  const made: [number, number, number][] = [];
+  const sums = new Map<number, (readonly [number, number])[]>();
   right.rows.forEach((row, r) => {
     for (const l of byColumn[row] ?? []) {
       const cell = (right.columns[r] ?? 0) * size + (left.rows[l] ?? 0);
-      const target = targets.get(cell) ?? targets.size;
-      targets.set(cell, target);
-      made.push([l, r, target]);
+      const products = sums.get(cell) ?? [];
+      products.push([left.places[l] ?? 0, right.places[r] ?? 0]);
+      sums.set(cell, products);
     }
   });
-  const cells = [...targets.keys()];
-  const pick = (k: 0 | 1 | 2): Int32Array => Int32Array.from(made, (one) => one[k]);
+  const cells = [...sums];
   return {
-    products: { left: pick(0), right: pick(1), target: pick(2), count: cells.length },
-    result: {
-      rows: Int32Array.from(cells, (cell) => cell % size),
-      columns: Int32Array.from(cells, (cell) => Math.floor(cell / size)),
-    },
+    rows: Int32Array.from(cells, ([cell]) => cell % size),
+    columns: Int32Array.from(cells, ([cell]) => Math.floor(cell / size)),
+    places: Int32Array.from(cells, ([, products]) => tape.sum(products)),
   };
-}
-
-function fillPhase(
-  { constant, slope, source }: PhaseEntries,
-  values: Float64Array,
-  into: Float64Array | undefined,
-): void {
-  if (into === undefined) return;
-  for (let i = 0; i < constant.length; i++) {
-    const from = source[i] ?? -1;
-    into[i] = (constant[i] ?? 0) + (from < 0 ? 0 : (slope[i] ?? 0) * (values[from] ?? 0));
-  }
-}
-
-interface Factors {
-  readonly left: Float64Array | undefined;
-  readonly right: Float64Array | undefined;
-  readonly into: Float64Array | undefined;
-}
-
-function multiplyBy({ left, right, target }: Products, factors: Factors): void {
-  const [a, b, out] = [factors.left, factors.right, factors.into];
-  if (a === undefined || b === undefined || out === undefined) return;
-  out.fill(0);
-  for (let i = 0; i < target.length; i++) {
-    const at = target[i] ?? 0;
-    out[at] = (out[at] ?? 0) + (a[left[i] ?? 0] ?? 0) * (b[right[i] ?? 0] ?? 0);
-  }
 }
