@@ -24,7 +24,14 @@ export function typeOf({ type, unit }: Column): ColumnType {
 
 /** RFC 4180, with a line feed; what is missing is empty. */
 export function csvText({ columns, rows }: Pick<Table, 'columns' | 'rows'>): string {
-  return [columns.map((column) => column.name), ...rows].map((row) => `${row.map(csvCell).join(',')}\n`).join('');
+  return rowsText([columns.map((column) => column.name), ...rows]);
+}
+
+/** The same without the line of names. */
+export function rowsText(rows: Table['rows']): string {
+  let text = '';
+  for (const row of rows) text += `${row.map(csvCell).join(',')}\n`;
+  return text;
 }
 
 export function dictionaryText(tables: readonly Table[]): string {
@@ -42,6 +49,6 @@ export function isMissing(cell: Cell): cell is null {
 
 function csvCell(cell: Cell): string {
   if (isMissing(cell)) return '';
-  const text = String(cell);
-  return /[",\n\r]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text;
+  if (typeof cell === 'number') return String(cell);
+  return /[",\n\r]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell;
 }

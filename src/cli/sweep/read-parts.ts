@@ -11,7 +11,7 @@ import { partPath } from './store.ts';
 /** Cells of one column of a part; null for what is missing. */
 export type PartColumns = ReadonlyMap<string, ArrayLike<unknown>>;
 
-export async function readPart(folder: string, part: number): Promise<PartColumns> {
+async function readPart(folder: string, part: number): Promise<PartColumns> {
   const path = partPath(folder, part);
   const columns = new Map<string, unknown[]>();
   try {
@@ -34,8 +34,12 @@ export async function readPart(folder: string, part: number): Promise<PartColumn
   return columns;
 }
 
-/** All parts, which must be there. */
-export async function readSwept(folder: string, manifest: Manifest): Promise<Swept> {
+/** All parts, which must be there; `also` is shown each as it is read, in their order. */
+export async function readSwept(
+  folder: string,
+  manifest: Manifest,
+  also?: (part: PartColumns, count: number) => void,
+): Promise<Swept> {
   const { design, columns, points, parts } = manifest;
   const { factors } = design;
   const values = factors.map((factor) =>
@@ -48,6 +52,7 @@ export async function readSwept(folder: string, manifest: Manifest): Promise<Swe
   for (let part = 0; part < parts; part++) {
     const read = await readPart(folder, part);
     const { first, count } = placeOfPart(manifest, part);
+    also?.(read, count);
     factors.forEach(({ name }, k) => {
       for (let i = 0; i < count; i++) setAt(values[k], first + i, read.get(name)?.[i]);
     });

@@ -2,6 +2,7 @@
 import { pinned } from '../../machine/pinned.ts';
 import { invertDense } from '../../numeric/dense-solve.ts';
 import { dot } from '../../numeric/dot.ts';
+import { ascendingOrder } from '../../numeric/order.ts';
 import type { DenseMatrix } from '../../numeric/sparse.ts';
 import type { Band } from './again.ts';
 import { z975 } from '../../numeric/normal-quantile.ts';
@@ -52,7 +53,7 @@ export function partialRankCorrelations(
 
 /** Ranks with mean 0 and length 1; null where all are equal. */
 function standardRanks(values: Float64Array): Float64Array | null {
-  const order = Array.from(values.keys()).sort((a, b) => (values[a] ?? 0) - (values[b] ?? 0));
+  const order = ascendingOrder(values);
   const ranks = new Float64Array(values.length);
   for (let i = 0; i < order.length;) {
     let end = i;

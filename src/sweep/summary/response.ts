@@ -1,4 +1,5 @@
 // How a measure answers one factor: its mean and spread at each value, or in slices of equally many points.
+import { ascendingOrder } from '../../numeric/order.ts';
 import type { Value } from '../design/factor.ts';
 
 export interface ResponseGroup {
@@ -65,7 +66,8 @@ function slicesOf(
   rows: readonly number[],
   slices: number,
 ): readonly (readonly number[])[] {
-  const sorted = rows.toSorted((a, b) => Number(values[a]) - Number(values[b]));
+  const order = ascendingOrder(Float64Array.from(rows, (row) => Number(values[row])));
+  const sorted = Array.from(order, (i) => rows[i] ?? 0);
   return Array.from({ length: slices }, (_, s) =>
     sorted.slice(Math.round((s * sorted.length) / slices), Math.round(((s + 1) * sorted.length) / slices)),
   );
