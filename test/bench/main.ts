@@ -67,9 +67,14 @@ if (chosen.has('flagship')) {
 if (chosen.has('plans')) {
   const plans = await measurePlans(options);
   report['plans'] = plans;
-  for (const { plans: names, difference, common, apart, fewest, milliseconds } of plans) {
+  for (const { plans: names, difference, common, apart, fewest, seconds } of plans) {
     console.log(
-      `${names}: ${(difference * 100).toFixed(1)} points apart, known to one point with ${common} futures each in ${ms(milliseconds)} of processor time; with chance of their own ${apart} (${(apart / common).toFixed(1)} times as many, at best ${(apart / fewest).toFixed(1)})`,
+      `${names}: ${(difference * 100).toFixed(1)} points apart, known to one point with ${common} futures each; with chance of their own ${apart} (${(apart / common).toFixed(1)} times as many, at best ${(apart / fewest).toFixed(1)})`,
+    );
+    if (seconds === null) continue;
+    const { ours, numpy, command, processes } = seconds;
+    console.log(
+      `  in the run itself ${ours.toFixed(2)} s of the processor against ${numpy.toFixed(2)} s in NumPy: ${(numpy / ours).toFixed(1)} times faster, aim 12; whole processes on the clock ${command.toFixed(2)} s against ${processes.toFixed(2)} s: ${(processes / command).toFixed(1)} times`,
     );
   }
 }
