@@ -2,6 +2,7 @@
 // crowding is solved from and who is there at count 0 come from the base, and all plans share them.
 import { solveCapacities } from './compile/capacity.ts';
 import { buildImage } from './compile/image/build.ts';
+import { nobodyThere } from './compile/nobody-there.ts';
 import { solveStages } from './compile/stage-advance.ts';
 import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
@@ -92,7 +93,14 @@ function compileAlone(spec: Spec): Made & { readonly context: Context } {
   const { model, findings: ofStages } = solveStages(resolved.model, landscape);
   const { coefficients, findings: ofCapacities } = solveCapacities(model);
   const { animals, findings: ofStart } = startAnimals({ model, landscape, coefficients });
-  const findings = [...resolved.findings, ...ofLandscape, ...ofStages, ...ofCapacities, ...ofStart];
+  const findings = [
+    ...resolved.findings,
+    ...ofLandscape,
+    ...ofStages,
+    ...ofCapacities,
+    ...ofStart,
+    ...nobodyThere(model),
+  ];
   if (hasError(findings)) return { parts: null, findings, context };
   return { parts: { model, landscape, coefficients, startAnimals: animals }, findings, context };
 }
@@ -111,7 +119,7 @@ function compilePlan(base: Parts, laid: Laid, scenario: string): Made {
   });
   const { landscape, findings: ofLandscape } = buildLandscape(model);
   const { coefficients, findings: ofCapacities } = solveCapacities(model, extended.model);
-  const findings = [...found, ...ofLandscape, ...ofCapacities];
+  const findings = [...found, ...ofLandscape, ...ofCapacities, ...nobodyThere(model)];
   const startAnimals = sameStart(base, model);
   return { parts: hasError(findings) ? null : { model, landscape, coefficients, startAnimals }, findings };
 }

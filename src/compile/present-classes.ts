@@ -11,6 +11,17 @@ export function presentClasses(model: Model): Uint8Array {
   return there.map((present, c) => (present === 1 || born[c] === 0 ? 1 : 0));
 }
 
+/** For each phase the classes of which somebody can be there when it begins. */
+export function classesByPhase(model: Model): readonly Uint8Array[] {
+  const born = new Uint8Array(model.classes.length);
+  let there = presentClasses(model);
+  return model.phases.map((phase) => {
+    const before = there;
+    there = after(model, { phase, there, born });
+    return before;
+  });
+}
+
 interface Passing {
   readonly phase: Phase;
   readonly there: Uint8Array;

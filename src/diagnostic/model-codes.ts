@@ -73,6 +73,7 @@ export const modelCodes = {
 
   // What people do with animals
   'handling-shape': 'A take, a move or a release says too little or too much.',
+  'nobody-there': 'Animals are looked for, or brought, where and when there can be none.',
   'year-outside': 'Something is to be done in years that are not looked at.',
 
   // Plans
