@@ -13,7 +13,11 @@ export interface Table {
 export type Row = readonly [name: string, ...cells: Content[]];
 
 export function drawTable({ caption, head, rows, words = [] }: Table): Markup {
-  const heads = head.map((name) => mark`<th scope="col"><bdi>${name}</bdi></th>`);
+  const heads = head.map((name, i) =>
+    words.includes(i)
+      ? mark`<th scope="col" class="words"><bdi>${name}</bdi></th>`
+      : mark`<th scope="col"><bdi>${name}</bdi></th>`,
+  );
   const body = rows.map(([name, ...cells]) => {
     const drawn = cells.map((cell, i) =>
       words.includes(i + 1) ? mark`<td class="words">${cell}</td>` : mark`<td>${cell}</td>`,

@@ -107,7 +107,16 @@ describe('skein compare', () => {
   });
 
   test.each([80, 100])('no line of it is wider than %i', (width) => {
-    const { out } = skein(['compare', 'models/reed-hare.yaml', '--json', '--quiet', '--replicates', '60', '--draws', '3']);
+    const { out } = skein([
+      'compare',
+      'models/reed-hare.yaml',
+      '--json',
+      '--quiet',
+      '--replicates',
+      '60',
+      '--draws',
+      '3',
+    ]);
     for (const details of [true, false]) {
       const told = compareText(JSON.parse(out) as Comparison, { colour: false, animals: 'females', width, details });
       expect(Math.max(...told.split('\n').map((line) => line.length))).toBeLessThanOrEqual(width);
@@ -226,4 +235,18 @@ test('skein report of a model with plans writes the page of their comparison', (
     skein(['report', model, '-o', 'one.html', '--scenario', 'fence', '--replicates', '50', '--quiet'], { cwd }).code,
   ).toBe(0);
   expect(readFileSync(join(cwd, 'one.html'), 'utf8')).not.toContain('Who signs');
+  expect(page).not.toContain('Windows of criterion E');
+  const gone = text
+    .replace('outcomes: {', 'outcomes: { gone: { of: [newborn, adult], below: 1 },')
+    .replace('years: 12', 'years: 40');
+  writeFileSync(join(cwd, 'gone.yaml'), gone);
+  expect(skein(['report', 'gone.yaml', '-o', 'gone.html', '--replicates', '60', '--quiet'], { cwd }).code).toBe(0);
+  const told = /<section[^>]*id="criterion-e".*?<\/section>/su.exec(readFileSync(join(cwd, 'gone.html'), 'utf8'))?.[0];
+  // Elsewhere two patches without dispersal are alike, so that neither leads.
+  expect([...(told ?? '').matchAll(/<h3><bdi>(.*?)<\/bdi>/gu)].map(([, name]) => name)).toEqual([
+    'fence',
+    'fence and moves',
+  ]);
+  expect(told?.match(/the threshold of Endangered/gu)).toHaveLength(2);
+  expect(told).toContain('there are no windows: “as now”, “posters”, “quota”.');
 });

@@ -78,6 +78,36 @@ describe('the report of a comparison', () => {
     await close();
   });
 
+  it('shows every plan on a phone, each number beside the name of its plan', async () => {
+    const { page, close } = await open(browser, html, { viewport: { width: 380, height: 700 } });
+    const cells = await page.evaluate(() =>
+      [...document.querySelectorAll('table.plans tbody tr:first-child td')].map((cell) => ({
+        name: getComputedStyle(cell, '::before').content.split('"')[1],
+        right: cell.getBoundingClientRect().right,
+        height: cell.getBoundingClientRect().height,
+      })),
+    );
+    expect(cells.map(({ name }) => name)).toEqual([
+      'as now',
+      'rewet the wash',
+      'mow later',
+      'hedge and moves',
+      'hedge, moves and mowing',
+    ]);
+    for (const { right, height } of cells) {
+      expect(right).toBeLessThanOrEqual(380);
+      expect(height).toBeGreaterThan(15);
+    }
+    await close();
+  });
+
+  it('says whose the map and the abundance are', async () => {
+    const { page, close } = await open(browser, html);
+    expect(await page.locator('#map-figure figcaption').textContent()).toMatch(/^The map is of “as now”\./);
+    expect(await page.locator('#abundance p').first().textContent()).toBe('Under “as now”.');
+    await close();
+  });
+
   it('fits a phone, and stands before an accessibility checker', async () => {
     const { page, close } = await open(browser, html, { viewport: { width: 380, height: 700 } });
     await page.locator('#year').waitFor();

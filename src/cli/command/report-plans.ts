@@ -1,5 +1,6 @@
 // skein report of a model with plans: the page of their comparison.
 import { pageScript } from '../../../build/page-script.ts';
+import { withCriterionE } from '../../analysis/criterion-e.ts';
 import { patchValues } from '../../analysis/patch-values.ts';
 import { compareSpec } from '../../compare/compare-spec.ts';
 import { plansOf } from '../../compare/plans-of.ts';
@@ -62,7 +63,7 @@ export async function reportPlans({ document, files, compiled, path, options }: 
 
 function planInput({ compiled, results }: PlanRun, hidden: Hidden | null): PlanReport['input'] {
   return {
-    results: withHiding(results, hidden),
+    results: withHiding(withCriterionE(compiled, results), hidden),
     path: followPath(compiled),
     model: hidden === null ? compiled.model : hiddenPlan(compiled.model, hidden),
     landscape: compiled.landscape,

@@ -4,6 +4,7 @@ import { mark, type Markup } from '../../view/markup.ts';
 import type { PlanView, ReportView } from '../../view/contract.ts';
 import { writeDocument } from '../document.ts';
 import { annexSection, limitsSection } from '../section/annex.ts';
+import { criterionId } from '../section/criterion.ts';
 import { abundanceSection } from '../section/courses.ts';
 import { hidingWords } from '../hiding/hiding-words.ts';
 import { headSection } from '../section/head.ts';
@@ -12,6 +13,7 @@ import { styleSheet } from '../style.ts';
 import { summariseForView } from '../view.ts';
 import { worthNote } from '../worth.ts';
 import { plansAnswer } from './answer.ts';
+import { criteriaSection, saysCriteria } from './criteria.ts';
 import { planCourses } from './courses.ts';
 import { differencesSection, moreDifferences } from './differences.ts';
 import type { PlansReportInput } from './input.ts';
@@ -30,10 +32,16 @@ export function buildPlansReport(input: PlansReportInput): string {
   const view = withPlans(input);
   const chosen = shownPlan(input);
   const name = comparison.scenarios[chosen]?.name ?? '';
+  const base = comparison.scenarios[0]?.name ?? '';
   const summary = [
     plansAnswer(comparison),
     plansSection(comparison, view.animals),
-    mapSection(view, { worth: worthNote(input), hidden: hidingWords(input), more: pairOfMaps(view, chosen) }),
+    mapSection(view, {
+      worth: worthNote(input),
+      hidden: hidingWords(input),
+      plan: base,
+      more: pairOfMaps(view, chosen),
+    }),
     differencesSection(comparison),
   ];
   const rest = [
@@ -44,7 +52,8 @@ export function buildPlansReport(input: PlansReportInput): string {
     patchesSection(comparison, name, view.animals),
     robustSection(comparison),
     signsSection(comparison, view.animals),
-    abundanceSection(view, results),
+    abundanceSection(view, results, base),
+    criteriaSection(input.plans),
     limitsSection({ ...input, results: { ...results, cautions: comparison.cautions } }),
     annexSection(input),
   ];
@@ -54,7 +63,7 @@ export function buildPlansReport(input: PlansReportInput): string {
     style: styleSheet(foot),
     script: input.pageScript,
     data: view,
-    body: mark`${headSection(model, results)}${contents(view, comparison.money !== null)}<div class="summary">${summary}</div><div class="pages plans-rest">${rest}</div><footer>${foot}</footer>`,
+    body: mark`${headSection(model, results)}${contents(view, { money: comparison.money !== null, criteria: saysCriteria(input.plans) })}<div class="summary">${summary}</div><div class="pages plans-rest">${rest}</div><footer>${foot}</footer>`,
   });
 }
 
@@ -80,7 +89,12 @@ function shownPlan({ comparison: { scenarios, statement, objectives } }: PlansRe
   return Math.max(1, worth.slice(1).indexOf(Math.max(...worth.slice(1))) + 1);
 }
 
-function contents({ plans, outcomes }: ReportView, money: boolean): Markup {
+interface Parts {
+  readonly money: boolean;
+  readonly criteria: boolean;
+}
+
+function contents({ plans, outcomes }: ReportView, { money, criteria }: Parts): Markup {
   const places = [
     ['answer', 'Answer'],
     ['plans', 'Plans'],
@@ -92,6 +106,7 @@ function contents({ plans, outcomes }: ReportView, money: boolean): Markup {
     ['robust', 'Other models'],
     ['signs', 'Who signs'],
     ['abundance', 'Abundance'],
+    ...(criteria ? [[criterionId, 'Criterion E']] : []),
     ['limits', 'Limits'],
     ['annex', 'Annex'],
   ];

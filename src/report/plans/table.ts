@@ -27,7 +27,7 @@ function plansTable(comparison: Comparison, animals: string): Markup {
     return mark`<th scope="col"><bdi>${name}</bdi>${flag}</th>`;
   });
   const row = (name: Content, cell: (plan: ComparedPlan) => Content): Markup =>
-    mark`<tr><th scope="row">${name}</th>${scenarios.map((plan) => mark`<td>${cell(plan)}</td>`)}</tr>`;
+    mark`<tr><th scope="row">${name}</th>${scenarios.map((plan) => mark`<td data-plan="${plan.name}">${cell(plan)}</td>`)}</tr>`;
   const chances = objectives
     .filter(({ of }) => of === 'chance')
     .map(({ name }) => row(mark`chance of “<bdi>${name}</bdi>”`, (plan) => chanceCell(comparison, plan, name)));

@@ -40,13 +40,14 @@ function chanceFigure(view: ReportView, k: number): Markup {
 ${view.outcomes.length > 1 ? one : both('chance', draw)}</figure>`;
 }
 
-export function abundanceSection(view: ReportView, results: RunResults): Markup {
+/** `plan` is whose numbers they are, where there are several. */
+export function abundanceSection(view: ReportView, results: RunResults, plan?: string): Markup {
   const shown = mostAnimals(view);
   const fan = both('fan', (size) => drawAbundance(view, null, sizes.fan[size]));
   return section(
     'abundance',
     'Abundance by year',
-    mark`<figure class="chart">${fan}<figcaption>The line is the middle of ${plain(view.futures)} futures in each year; no
+    mark`${plan === undefined ? null : mark`<p>Under “<bdi>${plan}</bdi>”.</p>`}<figure class="chart">${fan}<figcaption>The line is the middle of ${plain(view.futures)} futures in each year; no
 single future follows it. Single futures swing more than the bands.</figcaption></figure>
 <h3>Patch by patch</h3><p>Each patch has its own scale; the number at its top right is the upper end.${leftOut(view, shown)}</p>
 <div class="smalls">${shown.map((p) => smallFan(view, p))}</div>

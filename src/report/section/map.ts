@@ -15,6 +15,8 @@ interface MapNotes {
   readonly worth: string;
   /** How places are hidden; null where they are not. */
   readonly hidden: string | null;
+  /** The plan that the map is of, where there are several. */
+  readonly plan?: string;
   /** What stands beneath the map. */
   readonly more?: Content;
 }
@@ -71,8 +73,9 @@ function choicesFor({ patches, worthAt }: ReportView): readonly Choice[] {
   return mapShows.filter((show) => known[show]);
 }
 
-function caption(view: ReportView, { worth, hidden }: MapNotes): Markup {
-  return mark`${hidden ?? placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
+function caption(view: ReportView, { worth, hidden, plan }: MapNotes): Markup {
+  const of = plan === undefined ? null : mark`The map is of “<bdi>${plan}</bdi>”. `;
+  return mark`${of}${hidden ?? placeWords(view)} ${movementWords(view)} The middle of the futures is taken in each patch and year by itself,
 so the patches together are no single future. ${worth}`;
 }
 

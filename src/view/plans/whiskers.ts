@@ -63,9 +63,15 @@ function axis(x: Scale, { foot, write }: { readonly foot: number; readonly write
 
 function directions({ less, more }: WhiskerChart, x: Scale, width: number): Markup {
   const zero = x(0);
-  const left = mark`<text x="${zero - 8}" y="20" text-anchor="end" fill="${softInk}">← ${fitText(less, 13, zero - 30)}</text>`;
-  const right = mark`<text x="${zero + 8}" y="20" fill="${softInk}">${fitText(more, 13, width - zero - 40)} →</text>`;
+  const [before, after] = [zero - 30, width - zero - 40];
+  const left = mark`<text x="${zero - 8}" y="20" text-anchor="end" fill="${softInk}">← ${wholeOrFirst(less, before)}</text>`;
+  const right = mark`<text x="${zero + 8}" y="20" fill="${softInk}">${wholeOrFirst(more, after)} →</text>`;
   return mark`${zero > 90 ? left : null}${width - zero > 90 ? right : null}`;
+}
+
+/** Where not all of it has room, its first word, which says the direction. */
+function wholeOrFirst(text: string, room: number): string {
+  return fitText(text, 13, room) === text ? text : fitText(text.split(' ')[0] ?? '', 13, room);
 }
 
 function whisker(
