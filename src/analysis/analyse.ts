@@ -44,15 +44,16 @@ export function analyse(input: AnalysisInput): Analysis {
   const life = lifeAnswers(block, input.split, vectors);
   const fromSpectrum = (value: number | null | undefined, without: string): Answer<number> =>
     value === null || value === undefined ? because(all ? without : tooLarge) : { value };
+  // Patches use what links have asked of the inverse.
+  const links = take(
+    'links',
+    plain((given) => linksAnswer(input, { vectors: given, around })),
+  );
   const patches = take(
     'patches',
     plain((given) => patchesAnswer(input, { vectors: given, around })),
   );
   if (patches?.some(({ removalLoss }) => removalLoss === null) === true) take('patches.removalLoss', because(tooMany));
-  const links = take(
-    'links',
-    plain((given) => linksAnswer(input, { vectors: given, around })),
-  );
   return {
     format: 'skein-analysis/1',
     at: block.at,

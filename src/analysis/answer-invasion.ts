@@ -14,7 +14,7 @@ export type Invasion = NonNullable<Analysis['invasion']>;
 export function invasionAnswer({ yearMap, block, factorsAtZero = [] }: AnalysisInput): Answer<Invasion> {
   if (!yearMap)
     return because(
-      'No rate depends on numbers: a few animals grow by the same matrix as many, which is the one analysed.',
+      'No rate depends on numbers, so a few animals grow by the same matrix as many, which is the one analysed.',
     );
   const nobody = new Float64Array(yearMap.states);
   const matrix = yearMap.matrixAt(nobody);

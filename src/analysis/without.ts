@@ -8,8 +8,8 @@ import type { Vectors } from './sensitivity.ts';
 
 /** How far above the growth the inverse is taken, as a share of it. */
 const above = 1e-6;
-/** Terms of the series from there downwards. */
-const terms = 8;
+/** Terms of the series from there downwards: few first, since each costs a multiplication by the inverse; then more. */
+const terms = [5, 8] as const;
 /** States left after folding; the inverse grows with the cube. */
 const mostKept = 1000;
 /** A loss is told where the last two terms move it by no more than this share. */
@@ -19,6 +19,10 @@ const trusted = 1e-7;
 export interface Around {
   readonly vectors: Vectors;
   readonly resolvent: Resolvent;
+  /** Place of each state among the kept ones; −1 for the folded. */
+  readonly keptPlace: Int32Array;
+  /** Responses to one animal in a kept state: patches ask again for what links asked. Only entries over kept states are held. */
+  readonly known: Map<number, readonly Float64Array[]>;
 }
 
 /** Null where the matrix is too large, or its vectors are not positive everywhere. */
@@ -26,28 +30,75 @@ export function aroundGrowth(matrix: SparseMatrix, vectors: Vectors): Around | n
   const { growthRate, right, left } = vectors;
   if (!right.every((share) => share > 0) || !left.every((value) => value > 0)) return null;
   const resolvent = resolventAt(matrix, growthRate * (1 + above), mostKept);
-  return resolvent && { vectors, resolvent };
+  if (resolvent === null) return null;
+  const keptPlace = new Int32Array(matrix.columns).fill(-1);
+  resolvent.folding.kept.forEach((state, place) => (keptPlace[state] = place));
+  return { vectors, resolvent, keptPlace, known: new Map() };
 }
 
 /** What a vector leads to: its part along the stable distribution, and S u, S²u, … for the rest. */
 export interface Response {
   /** vᵀu. */
   readonly worth: number;
-  readonly powers: readonly Float64Array[];
+  /** So many of them; worked out when first asked for. */
+  readonly powers: (count: number) => readonly Float64Array[];
 }
 
 /** S(σ) = R(σ) − w vᵀ/(⟨v, w⟩(σ − λ)) has no pole at λ: R applied to what is left without the part along w. */
-export function responseTo({ vectors, resolvent }: Around, u: Float64Array): Response {
+export function responseTo(around: Around, u: Float64Array): Response {
+  const { vectors, resolvent } = around;
   const { right, left } = vectors;
   const scale = dot(left, right);
-  const rest = (x: Float64Array): Float64Array => {
+  const withoutGrowth = (x: Float64Array): Float64Array => {
     const along = dot(left, x) / scale;
-    return x.map((value, i) => value - along * (right[i] ?? 0));
+    for (let i = 0; i < x.length; i++) x[i] = (x[i] ?? 0) - along * (right[i] ?? 0);
+    return x;
   };
-  const powers: Float64Array[] = [];
-  let x = rest(u);
-  for (let k = 0; k < terms; k++) powers.push((x = rest(applyResolvent(resolvent, x))));
-  return { worth: dot(left, u), powers };
+  const made: Float64Array[] = [];
+  const only = onlyKept(around, u);
+  return {
+    worth: dot(left, u),
+    powers: (count) => {
+      while (made.length < count) {
+        const last = made.at(-1) ?? withoutGrowth(u.slice());
+        made.push(withoutGrowth(applyResolvent(resolvent, last)));
+      }
+      if (only !== null && made.length > (around.known.get(only)?.length ?? 0)) {
+        remember(around, only, { powers: made, animals: u[only] ?? 1 });
+      }
+      return made;
+    },
+  };
+}
+
+/** The kept state that is the only one of which there is something; null where there is none. */
+function onlyKept({ keptPlace }: Around, u: Float64Array): number | null {
+  const first = u.findIndex((value) => value !== 0);
+  const alone = first >= 0 && u.findLastIndex((value) => value !== 0) === first;
+  return alone && (keptPlace[first] ?? -1) >= 0 ? first : null;
+}
+
+interface Remembered {
+  readonly powers: readonly Float64Array[];
+  readonly animals: number;
+}
+
+function remember({ resolvent, known }: Around, state: number, { powers, animals }: Remembered): void {
+  const { kept } = resolvent.folding;
+  known.set(
+    state,
+    powers.map((power) => Float64Array.from(kept, (one) => (power[one] ?? 0) / animals)),
+  );
+}
+
+/** Over the kept states, of one animal in one of them. */
+function powersFrom(around: Around, state: number, count: number): readonly Float64Array[] {
+  const known = around.known.get(state);
+  if (known !== undefined && known.length >= count) return known;
+  const u = new Float64Array(around.keptPlace.length);
+  u[state] = 1;
+  responseTo(around, u).powers(count);
+  return around.known.get(state) ?? [];
 }
 
 /** A few entries of a vector. */
@@ -63,12 +114,22 @@ export interface FewEntries {
 export function lossWithout({ vectors }: Around, { worth, powers }: Response, b: FewEntries, m: number): number | null {
   const { growthRate, right, left } = vectors;
   const rho = (over(b, right) * worth) / dot(left, right);
-  const series = powers.map((power) => over(b, power));
-  return settled(growthRate, (from) => {
-    const { value, change } = seriesValue(series, from);
-    const delta = (m * rho) / (1 + m * value);
-    return { delta, change: Math.abs((delta * m * change) / (1 + m * value)) };
+  return firstOf(terms, (count) => {
+    const series = powers(count).map((power) => over(b, power));
+    return settled(growthRate, (from) => {
+      const { value, change } = seriesValue(series, from);
+      const delta = (m * rho) / (1 + m * value);
+      return { delta, change: Math.abs((delta * m * change) / (1 + m * value)) };
+    });
   });
+}
+
+function firstOf(counts: readonly number[], attempt: (count: number) => number | null): number | null {
+  for (const count of counts) {
+    const found = attempt(count);
+    if (found !== null) return found;
+  }
+  return null;
 }
 
 /**
@@ -77,15 +138,17 @@ export function lossWithout({ vectors }: Around, { worth, powers }: Response, b:
  */
 export function lossWithoutStates(around: Around, kept: readonly number[]): number | null {
   if (kept.length === 0) return 0;
+  return firstOf(terms, (count) => lossOfStates(around, kept, count));
+}
+
+function lossOfStates(around: Around, kept: readonly number[], count: number): number | null {
   const { growthRate, right, left } = around.vectors;
   const scale = dot(left, right);
   const size = kept.length;
   const [w, v] = [Float64Array.from(kept, (s) => right[s] ?? 0), Float64Array.from(kept, (s) => left[s] ?? 0)];
   const series = kept.map((column) => {
-    const u = new Float64Array(right.length);
-    u[column] = 1;
-    const { powers } = responseTo(around, u);
-    return kept.map((row) => powers.map((power) => power[row] ?? 0));
+    const powers = powersFrom(around, column, count);
+    return kept.map((row) => powers.map((power) => power[around.keptPlace[row] ?? 0] ?? 0));
   });
   const lossFrom = (entries: Float64Array): number => {
     const solved = solveDense({ rows: size, columns: size, values: entries }, w);

@@ -44,9 +44,10 @@ function after(model: Model, { phase, there, born }: Passing): Uint8Array {
       there.forEach((present, c) => {
         if (present === 0) return;
         const to = phase.next[c] ?? -1;
-        const shares = model.patches.map((_, patch) => advanceAt(phase, { patch, class: c }));
-        if (shares.some((share) => share < 1)) next[c] = 1;
-        if (to >= 0 && shares.some((share) => share > 0)) next[to] = 1;
+        const somewhere = (is: (share: number) => boolean): boolean =>
+          model.patches.some((_, patch) => is(advanceAt(phase, { patch, class: c })));
+        if (somewhere((share) => share < 1)) next[c] = 1;
+        if (to >= 0 && somewhere((share) => share > 0)) next[to] = 1;
       });
       return next;
     case 'demography':

@@ -15,6 +15,11 @@ const densePolishLimit = 450;
 /** And above it with at most so many multiplications. */
 const polishWork = 4e8;
 
+/** Multiplications of an elimination without fill. */
+const mostElimination = 1e9;
+/** Largest change of any entry, as a share of it. */
+const settledChange = 1e-13;
+
 /** The right pair. Errors: throws where a matrix of more than 2500 states does not settle to 1e-9. */
 export function kernelPair(kernel: SparseMatrix, start: Float64Array | null): PositivePair {
   const size = kernel.columns;
@@ -35,15 +40,58 @@ export function kernelPair(kernel: SparseMatrix, start: Float64Array | null): Po
 }
 
 /**
- * Makes small entries as accurate as large ones, which a method that watches the whole vector leaves in the noise:
- * x_i ← Σ_{j≠i} q_ij x_j / (ρ − q_ii), forwards and backwards, where every number added is positive (Gauss-Seidel).
+ * Makes small entries as accurate as large ones, which a method that watches the whole vector leaves in the noise. Where elimination
+ * without fill is cheap, x ← x + M⁻¹(Qx − ρx) with M near σI − Q, σ just above ρ: the residual of a row is as accurate as the entry
+ * of that row, and M⁻¹ ≥ 0 carries it to the ends of the landscape at once. Entries below the noise begin at 0. Else Gauss-Seidel.
  */
 export function polish(kernel: SparseMatrix, turned: SparseMatrix, x: Float64Array): Float64Array {
   const size = kernel.columns;
   if (size <= densePolishLimit) return positivePair(toDense(kernel), x).vector;
   const growthRate = dot(x, multiply(kernel, x)) / dot(x, x);
+  const near = eliminationCost(kernel) > mostElimination ? null : corrected(kernel, growthRate, x);
+  if (near !== null) return near;
+  const y = swept(turned, growthRate, x);
+  return y.every((value) => value > 0 && value < Infinity) ? y : x;
+}
+
+/** σ of the elimination above the growth, as a share of it. */
+const clearance = 1e-4;
+/** Smaller shares of the largest entry are noise. */
+const noise = 1e-11;
+const mostCorrections = 400;
+/** Below this largest change, as a share of an entry, one that no longer falls is that of rounding. */
+const nearlySettled = 1e-10;
+
+/** Null where it does not settle on a positive vector. */
+function corrected(kernel: SparseMatrix, growthRate: number, x: Float64Array): Float64Array | null {
+  const factor = incompleteFactor(kernel, growthRate * (1 + clearance));
+  const least = noise * x.reduce((most, value) => Math.max(most, value), 0);
+  const y = x.map((value) => (value < least ? 0 : value));
+  let before = Infinity;
+  for (let round = 0; round < mostCorrections; round++) {
+    const residual = multiply(kernel, y);
+    for (let i = 0; i < y.length; i++) residual[i] = (residual[i] ?? 0) - growthRate * (y[i] ?? 0);
+    const step = applyIncomplete(factor, residual);
+    let change = 0;
+    for (let i = 0; i < y.length; i++) {
+      const next = (y[i] ?? 0) + (step[i] ?? 0);
+      y[i] = next;
+      const share = Math.abs(step[i] ?? 0) / next;
+      if (!(share <= change)) change = share >= 0 ? share : Infinity;
+    }
+    if (change <= settledChange || (change <= nearlySettled && change > 0.95 * before)) {
+      return y.every((value) => value > 0 && value < Infinity) ? y : null;
+    }
+    before = change;
+  }
+  return null;
+}
+
+/** x_i ← Σ_{j≠i} q_ij x_j / (ρ − q_ii), forwards and backwards, where every number added is positive. */
+function swept(turned: SparseMatrix, growthRate: number, x: Float64Array): Float64Array {
+  const size = turned.columns;
   const y = x.slice();
-  const sweeps = Math.min(2000, Math.ceil(polishWork / kernel.values.length));
+  const sweeps = Math.min(2000, Math.ceil(polishWork / turned.values.length));
   for (let sweep = 0; sweep < sweeps; sweep++) {
     let change = 0;
     for (let place = 0; place < size; place++) {
@@ -52,9 +100,9 @@ export function polish(kernel: SparseMatrix, turned: SparseMatrix, x: Float64Arr
       change = Math.max(change, Math.abs(value - (y[i] ?? 0)) / value);
       y[i] = value;
     }
-    if (!(change > 1e-13)) break;
+    if (!(change > settledChange)) break;
   }
-  return y.every((value) => value > 0 && value < Infinity) ? y : x;
+  return y;
 }
 
 /** `turned` holds the rows of the kernel as columns. */
@@ -84,7 +132,7 @@ export function settle(block: SparseMatrix, start: Float64Array, steps: number):
 
 /** Incomplete elimination where it is cheap, else none. */
 function preconditionerFor(block: SparseMatrix, shift: number): (r: Float64Array) => Float64Array {
-  if (eliminationCost(block) > 1e9) return (r) => r.slice();
+  if (eliminationCost(block) > mostElimination) return (r) => r.slice();
   const factor = incompleteFactor(block, shift);
   return (r) => applyIncomplete(factor, r);
 }

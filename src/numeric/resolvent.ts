@@ -1,6 +1,6 @@
 // (σI − B)⁻¹ of a large nonnegative matrix for σ above its growth, whole: for many right sides, or many entries.
 import { condensedAt, foldingOf, type Folding } from './condense.ts';
-import type { SparseMatrix } from './sparse.ts';
+import { forEachEntry, type SparseMatrix } from './sparse.ts';
 
 export interface Resolvent {
   readonly shift: number;
@@ -8,7 +8,10 @@ export interface Resolvent {
   /** The inverse over the kept states of the folding, entry (i, j) at i * kept + j. */
   readonly overKept: Float64Array;
   readonly matrix: SparseMatrix;
-  readonly offDiagonal: SparseMatrix;
+  /** What any state sends to folded ones, but to itself. */
+  readonly toFolded: SparseMatrix;
+  /** What folded states send to kept ones, by their place among the kept. */
+  readonly toKept: SparseMatrix;
   /** σ less what stays in each state. */
   readonly clearance: Float64Array;
 }
@@ -18,7 +21,7 @@ export function resolventAt(matrix: SparseMatrix, shift: number, mostKept: numbe
   const folding = foldingOf(matrix);
   if (folding.kept.length > mostKept || folding.kept.length === 0) return null;
   const overKept = inverseOfShifted(condensedAt(matrix, folding, shift), shift);
-  return { shift, folding, overKept, matrix, ...apart(matrix, shift) };
+  return { shift, folding, overKept, matrix, ...apart(matrix, folding, shift) };
 }
 
 /** (σI − Q)⁻¹ by Gauss-Jordan elimination in place; such a matrix needs no row exchanges. */
@@ -49,66 +52,101 @@ function inverseOfShifted(q: SparseMatrix, shift: number): Float64Array {
   return a;
 }
 
-/** (σI − B)⁻¹ u over all states: folded into the kept ones, solved there, and unfolded. */
+/**
+ * (σI − B)⁻¹ u over all states: what the folded ones make of it is sent to the kept ones, solved there, and unfolded again, for which
+ * only what goes to folded states is needed.
+ */
 export function applyResolvent(resolvent: Resolvent, u: Float64Array): Float64Array {
-  const { folding, overKept } = resolvent;
-  const { kept } = folding;
-  const inflow = u.slice();
+  const { folding, overKept, toKept } = resolvent;
+  const { kept, folded } = folding;
+  const size = kept.length;
   const x = new Float64Array(u.length);
-  unfold(resolvent, inflow, x);
-  const right = Float64Array.from(kept, (state) => inflow[state] ?? 0);
-  inflow.set(u);
-  for (let i = 0; i < kept.length; i++) {
-    let value = 0;
-    const start = i * kept.length;
-    for (let j = 0; j < kept.length; j++) value += (overKept[start + j] ?? 0) * (right[j] ?? 0);
+  unfold(resolvent, u.slice(), x);
+  const right = new Float64Array(size);
+  for (let j = 0; j < size; j++) right[j] = u[kept[j] ?? 0] ?? 0;
+  for (const state of folded) send(toKept, state, x[state] ?? 0, right);
+  const inflow = u.slice();
+  for (let i = 0; i < size; i++) {
     const state = kept[i] ?? 0;
-    x[state] = value;
-    send(resolvent.offDiagonal, { state, value, inflow });
+    x[state] = rowTimes(overKept, i * size, right);
+    send(resolvent.toFolded, state, x[state] ?? 0, inflow);
   }
   unfold(resolvent, inflow, x);
   return x;
 }
 
-/** Fills x over the folded states, one after the other, and adds what they send to the inflow of others. */
-function unfold({ folding, offDiagonal, clearance }: Resolvent, inflow: Float64Array, x: Float64Array): void {
+/** Four sums side by side, so that none waits for the last. */
+function rowTimes(matrix: Float64Array, start: number, x: Float64Array): number {
+  const size = x.length;
+  let [one, two, three, four] = [0, 0, 0, 0];
+  let j = 0;
+  for (; j + 3 < size; j += 4) {
+    one += (matrix[start + j] ?? 0) * (x[j] ?? 0);
+    two += (matrix[start + j + 1] ?? 0) * (x[j + 1] ?? 0);
+    three += (matrix[start + j + 2] ?? 0) * (x[j + 2] ?? 0);
+    four += (matrix[start + j + 3] ?? 0) * (x[j + 3] ?? 0);
+  }
+  for (; j < size; j++) one += (matrix[start + j] ?? 0) * (x[j] ?? 0);
+  return one + two + (three + four);
+}
+
+/** Fills x over the folded states, one after the other, and adds what they send to the inflow of folded ones. */
+function unfold({ folding, toFolded, clearance }: Resolvent, inflow: Float64Array, x: Float64Array): void {
   for (const state of folding.folded) {
     const value = (inflow[state] ?? 0) / (clearance[state] ?? 1);
     x[state] = value;
-    if (value !== 0) send(offDiagonal, { state, value, inflow });
+    send(toFolded, state, value, inflow);
   }
 }
 
-interface Sent {
-  readonly state: number;
-  readonly value: number;
-  readonly inflow: Float64Array;
-}
-
-function send({ columnStart, rowIndex, values }: SparseMatrix, { state, value, inflow }: Sent): void {
+function send({ columnStart, rowIndex, values }: SparseMatrix, state: number, value: number, into: Float64Array): void {
+  if (value === 0) return;
   const end = columnStart[state + 1] ?? 0;
   for (let k = columnStart[state] ?? 0; k < end; k++) {
     const to = rowIndex[k] ?? 0;
-    inflow[to] = (inflow[to] ?? 0) + (values[k] ?? 0) * value;
+    into[to] = (into[to] ?? 0) + (values[k] ?? 0) * value;
   }
 }
 
-/** The matrix without its diagonal, and σ less the diagonal. */
-function apart(matrix: SparseMatrix, shift: number): Pick<Resolvent, 'offDiagonal' | 'clearance'> {
+/** Entries by where they lead, and σ less the diagonal. */
+function apart(
+  matrix: SparseMatrix,
+  { kept }: Folding,
+  shift: number,
+): Pick<Resolvent, 'toFolded' | 'toKept' | 'clearance'> {
   const clearance = new Float64Array(matrix.columns).fill(shift);
+  const place = new Int32Array(matrix.columns).fill(-1);
+  kept.forEach((state, k) => (place[state] = k));
+  forEachEntry(matrix, (row, column, value) => {
+    if (row === column) clearance[row] = shift - value;
+  });
+  const toFolded = entriesOf(matrix, matrix.columns, (row, column) =>
+    row !== column && (place[row] ?? -1) < 0 ? row : -1,
+  );
+  const toKept = entriesOf(matrix, kept.length, (row, column) => ((place[column] ?? -1) < 0 ? (place[row] ?? -1) : -1));
+  return { toFolded, toKept, clearance };
+}
+
+/** Those entries that get a row; −1 leaves an entry out. */
+function entriesOf(matrix: SparseMatrix, rows: number, rowOf: (row: number, column: number) => number): SparseMatrix {
   const columnStart = new Int32Array(matrix.columns + 1);
-  const [rowIndex, values] = [matrix.rowIndex.slice(), matrix.values.slice()];
+  const rowIndex = new Int32Array(matrix.values.length);
+  const values = new Float64Array(matrix.values.length);
   let filled = 0;
-  for (let j = 0; j < matrix.columns; j++) {
-    for (let k = matrix.columnStart[j] ?? 0; k < (matrix.columnStart[j + 1] ?? 0); k++) {
-      const [row, value] = [matrix.rowIndex[k] ?? 0, matrix.values[k] ?? 0];
-      if (row === j) clearance[j] = shift - value;
-      else {
-        rowIndex[filled] = row;
-        values[filled++] = value;
-      }
+  forEachEntry(matrix, (row, column, value) => {
+    const at = rowOf(row, column);
+    if (at >= 0) {
+      rowIndex[filled] = at;
+      values[filled++] = value;
     }
-    columnStart[j + 1] = filled;
-  }
-  return { offDiagonal: { ...matrix, columnStart, rowIndex, values }, clearance };
+    columnStart[column + 1] = filled;
+  });
+  for (let j = 0; j < matrix.columns; j++) columnStart[j + 1] = Math.max(columnStart[j + 1] ?? 0, columnStart[j] ?? 0);
+  return {
+    rows,
+    columns: matrix.columns,
+    columnStart,
+    rowIndex: rowIndex.slice(0, filled),
+    values: values.slice(0, filled),
+  };
 }

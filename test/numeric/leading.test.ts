@@ -199,3 +199,35 @@ test('weak links between many patches do not hide the best one', () => {
   expect(found.growthRate).toBeGreaterThan(fastest * (1 - 1e-5));
   expect(found.growthRate).toBeLessThanOrEqual(fastest * (1 + 1e-12));
 });
+
+// Derived: away from the patch that grows, (ρ − s) w_i = m (w_{i−1} + w_{i+1}), so w falls by r with (ρ − s) r = m (1 + r²) from patch
+// to patch, and m (r − 1/r) + 1.2 − s = 0 at the patch itself.
+test('a line of 700 patches: entries far below rounding are as accurate as large ones', () => {
+  const [size, source, here, stay, moved] = [700, 200, 1.2, 0.8, 0.05];
+  const [rowIndex, columnIndex, values]: [number[], number[], number[]] = [[], [], []];
+  const put = (row: number, column: number, value: number): void => {
+    if (row < 0 || row >= size) return;
+    rowIndex.push(row);
+    columnIndex.push(column);
+    values.push(value);
+  };
+  for (let i = 0; i < size; i++) {
+    put(i, i, i === source ? here : stay);
+    put(i - 1, i, moved);
+    put(i + 1, i, moved);
+  }
+  const { growthRate, right, left } = leading(
+    sparseFromTriplets({ rows: size, columns: size, rowIndex, columnIndex, values }),
+  );
+  const half = (here - stay) / moved / 2;
+  const r = Math.sqrt(half * half + 1) - half;
+  expect(growthRate).toBeCloseTo(stay + moved * (r + 1 / r), 12);
+  for (const vector of [right!, left!]) {
+    for (const distance of [1, 3, 10, 40, 100, 180]) {
+      for (const place of [source - distance, source + distance]) {
+        expect(Math.log(vector[place]! / vector[source]!) / Math.log(r) / distance).toBeCloseTo(1, 9);
+        expect(vector[place + 1]! / vector[place]! / (place < source ? 1 / r : r)).toBeCloseTo(1, 9);
+      }
+    }
+  }
+});

@@ -22,6 +22,7 @@ import {
   patchTable,
   type TextTable,
 } from './tables.ts';
+import { unanswered } from './unanswered.ts';
 
 /** Rows of the lists of the largest. */
 const most = 10;
@@ -70,15 +71,4 @@ function tableOf(title: string, table: TextTable | null, style: TextStyle): stri
     ...below.map((line) => wrap(line, style, '  ')),
   ];
   return parts.join('\n');
-}
-
-/** What is missing since nobody asked, or since there is nothing of it, needs no line. */
-const quiet: ReadonlySet<string> = new Set(['eigenvalues', 'ltre', 'period']);
-
-function unanswered({ reasons }: Analysis): readonly string[] {
-  const fields = new Map<string, string[]>();
-  for (const [field, reason] of Object.entries(reasons)) {
-    if (!quiet.has(field)) fields.set(reason, [...(fields.get(reason) ?? []), field]);
-  }
-  return [...fields].map(([reason, names]) => `${names.join(', ')}: ${reason}`);
 }

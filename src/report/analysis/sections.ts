@@ -82,7 +82,9 @@ export function chanceWords({ stochasticGrowth, growthStandardError, growthRate 
   if (stochasticGrowth !== null) {
     lines.push(...longRun(stochasticGrowth));
   }
-  if (growthStandardError !== null) {
+  if (growthStandardError === 0) {
+    lines.push('None of the numbers that are not exactly known moves the growth rate.');
+  } else if (growthStandardError !== null) {
     lines.push(
       `From what is not known, the growth rate is ${told(growthRate)} give or take ${told(growthStandardError)} (one standard error).`,
     );
