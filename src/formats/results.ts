@@ -160,12 +160,13 @@ const Rare = Type.Object({
   outcome: part.text("The author's name."),
   definition: part.text('In words, from the rule itself.'),
   reason: part.maybeText('Why there is no estimate; null where there is one.'),
-  probability: part.orNull(part.share('Of having ever been below.')),
+  probability: part.orNull(part.share('Of having ever come to it.')),
   standardError: part.maybe('From how far the repeats lie apart.'),
   interval: part.orNull(Interval),
   levels: Type.Array(
     Type.Object({
-      below: part.number('A level; the last is the threshold of the outcome.'),
+      below: Type.Optional(part.number('A level of a fall; the last is the threshold of the outcome.')),
+      above: Type.Optional(part.number('A level of a rise.')),
       passed: part.share('Of the trials from the level before, in the mean over the repeats.'),
     }),
   ),

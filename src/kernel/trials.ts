@@ -20,6 +20,8 @@ export interface TrialRequest {
   readonly level: number;
   /** Of the outcome whose count it is, from 0. */
   readonly outcome: number;
+  /** Counts are taken as less than nothing, −N, so that a rise falls below a level. */
+  readonly rising?: boolean;
   readonly steps: number;
   readonly seed: number;
   /** Trial i is replicate `firstReplicate` + i: from its entrance on it meets a chance of its own. */
@@ -50,6 +52,14 @@ export class Trials {
     this.#firstColumn = 1 + (header[layout.headerPatches] ?? 0);
     this.#room = this.#machine.reserve(this.#machine.laneBytes());
     if (this.#room === 0) throw new Error('There is no memory for the state of a replicate.');
+  }
+
+  /** The count of an outcome at the start, which is the same in every replicate. */
+  startCount(outcome: number): number {
+    const machine = this.#machine;
+    machine.start(1, 0, 0);
+    const at = machine.observed() + (this.#firstColumn + outcome) * layout.lanes * 8;
+    return new Float64Array(machine.memory.buffer, at, 1)[0] ?? 0;
   }
 
   /** One trial from each entrance. A trial whose entrance lies below the level already has come there by a jump. */
@@ -83,7 +93,8 @@ export class Trials {
       const values = new Float64Array(machine.memory.buffer, machine.observed() + column * 8, layout.lanes);
       const stops = new Int32Array(machine.memory.buffer, machine.stops(), layout.lanes * 3);
       for (const lane of open) {
-        const [i, value] = [lanes[lane] ?? 0, values[lane] ?? 0];
+        const [i, count] = [lanes[lane] ?? 0, values[lane] ?? 0];
+        const value = request.rising === true ? -count : count;
         if (stops[lane * 3] !== layout.faultNone) {
           stopped++;
           open.delete(lane);

@@ -37,13 +37,13 @@ function rareAsked(context: Context): boolean {
     });
   }
   const rules = Object.values(context.spec.outcomes ?? {});
-  if (!rules.some((rule) => rule.below !== undefined && rule.for === undefined)) {
+  if (!rules.some((rule) => rule.for === undefined)) {
     fail(context, 'rare-shape', path, {
       message: 'There is no outcome that can be split',
       part: 'key',
       details: {
-        expected: 'an outcome with `below` and without `for`',
-        reason: 'Only a count that ever lies below a number can be come to level by level.',
+        expected: 'an outcome without `for`',
+        reason: 'Futures come level by level to a single count, not to several one after the other.',
       },
     });
   }

@@ -13,8 +13,14 @@ function ofOne({ reason, probability, interval, ...one }: RareResult, years: num
   const relative = (standardError ?? 0) / probability;
   // Plain runs know a chance p from n runs to √((1 − p) / (n p)) of itself.
   const plainRuns = (1 - probability) / (probability * relative * relative);
-  const passed = levels.map((level) => `${level.below} (${percent(level.passed)})`).join(', ');
+  const passed = levels
+    .map(({ below, above, passed: share }) => `${level(below ?? above ?? 0)} (${percent(share)})`)
+    .join(', ');
   return `${oneIn(probability)} ever comes to it (95 % ${range(interval)}, from the number of runs, ${interval.method}). Levels, and the share that passed each: ${passed}. It took ${repeats} repeats of ${plain(trials)} replicates a level, ${plain(replicateYears / years)} whole futures in all; plain runs as exact would be about ${plain(plainRuns)}.`;
+}
+
+function level(count: number): string {
+  return String(Number(count.toPrecision(6)));
 }
 
 function range({ lower, upper }: { readonly lower: number; readonly upper: number }): string {

@@ -145,12 +145,12 @@ export interface RareResult {
   readonly definition: string;
   /** Null where there is an estimate. */
   readonly reason: string | null;
-  /** Of having ever been below, as in plain runs. */
+  /** Of having ever come to it, as in plain runs. */
   readonly probability: number | null;
   readonly standardError: number | null;
   readonly interval: Interval | null;
-  /** From high to low, the threshold of the outcome last, with the share of the trials from the level before that passed. */
-  readonly levels: readonly { readonly below: number; readonly passed: number }[];
+  /** Of a rise `above`, else `below`; the threshold last, with the share of the trials from the level before that passed. */
+  readonly levels: readonly { readonly below?: number; readonly above?: number; readonly passed: number }[];
   readonly repeats: number;
   /** Of each level in each repeat. */
   readonly trials: number;

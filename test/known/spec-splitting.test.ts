@@ -164,13 +164,120 @@ test('every entrance has the same expected number of trials', () => {
   }
 });
 
-test('where it does not hold it is refused with the reason', () => {
-  expect(errorsOf(families('replicates: 100, rare: true').replace('below: 1', 'above: 3'))).toEqual(['rare-shape']);
-  expect(errorsOf(families('replicates: 100, rare: true, draws: 5'))).toContain('rare-shape');
-  const both = families('replicates: 100, rare: true').replace('lost:', 'many: { of: all, above: 30 }, lost:');
-  const [many, lost] = runModel(compileText(both)).rare!;
-  expect(many).toMatchObject({ probability: null, interval: null, reason: expect.stringContaining('ever lies below') });
-  expect(lost!.probability).toBeGreaterThan(0);
+/** The chance that a branching process with Poisson young of this mean ever comes to a count that is `so`, by the exact chain. */
+function everSo(start: number, mean: number, { years, so }: { years: number; so: (n: number) => boolean }): number {
+  const most = 400;
+  let chances = new Float64Array(most + 1);
+  chances[start] = 1;
+  let come = 0;
+  for (let year = 0; year < years; year++) {
+    const next = new Float64Array(most + 1);
+    chances.forEach((chance, n) => {
+      if (chance === 0) return;
+      let term = chance * Math.exp(-mean * n);
+      let left = chance;
+      for (let young = 0; young <= most; young++) {
+        if (young > 0) term *= (mean * n) / young;
+        if (so(young)) come += term;
+        else next[young] = next[young]! + term;
+        left -= term;
+      }
+      if (left > 0 && so(most + 1)) come += left;
+    });
+    chances = next;
+  }
+  return come;
+}
+
+// Derived by the exact chain over whole counts, without simulation.
+test.each([
+  { what: 'a rise', outcome: 'above: 55', mean: 0.9, so: (n: number) => n > 55 },
+  { what: 'a fall by a share of the start', outcome: 'fallen-by: 90 %', mean: 1.25, so: (n: number) => n <= 2 },
+])('$what is split, too: its chance is that of the exact chain', ({ outcome, mean, so }) => {
+  const exact = everSo(20, mean, { years: 12, so });
+  expect(exact).toBeGreaterThan(1e-5);
+  expect(exact).toBeLessThan(2e-3);
+  const text = families('replicates: 800, rare: true')
+    .replace('[[1.5]]', `[[${mean}]]`)
+    .replace('animal: 10 }', 'animal: 20 }')
+    .replace('below: 1', outcome);
+  const found = splitOf(text, 4);
+  expect(Math.abs(found.probability! - exact)).toBeLessThan(4.5 * found.standardError!);
+  expect(found.standardError! / exact).toBeLessThan(0.12);
+  const last = found.levels.at(-1)!;
+  if (outcome.startsWith('above')) expect(last).toMatchObject({ above: 55 });
+  else expect(last.below).toBeCloseTo(2, 6);
+});
+
+test('the loss of one sex is split: its chance is that of plain runs', () => {
+  const pairs = (run: string): string => `skein: 1
+study: { title: Pairs }
+years: 12
+patches: [{ name: A }]
+counts: both sexes
+classes: { females: [girl, woman], males: [boy, man] }
+oldest: { females: open-ended, males: open-ended }
+survival: { girl: 0.6, woman: 0.75, boy: 0.6, man: 0.75 }
+births: { woman: 0.9, female-share: 0.5 }
+mating: { form: harmonic mean, males: [man], females-per-male: 1 }
+year: [count, breeding, survival, ageing]
+start: { table: { A: { woman: 14, man: 14 } } }
+outcomes: { one sex gone: { of: [woman, man], lacking: one sex } }
+run: { ${run} }
+`;
+  const found = splitOf(pairs('replicates: 1000, rare: true'), 6);
+  const plain = runModel(compileText(pairs('replicates: 40000'), { seed: 60 })).outcomes[0]!.ever.probability;
+  expect(plain).toBeGreaterThan(1e-3);
+  expect(plain).toBeLessThan(0.05);
+  const error = Math.hypot(found.standardError!, Math.sqrt(plain / 40_000));
+  expect(Math.abs(found.probability! - plain)).toBeLessThan(4.5 * error);
+});
+
+describe('where it does not hold it is refused with the reason', () => {
+  test('before the run: over draws, and where every outcome asks for several counts', () => {
+    expect(errorsOf(families('replicates: 100, rare: true').replace('below: 1', 'below: 1, for: 3'))).toEqual([
+      'rare-shape',
+    ]);
+    expect(errorsOf(families('replicates: 100, rare: true').replace(/outcomes:.*/u, ''))).toEqual(['rare-shape']);
+    expect(errorsOf(families('replicates: 100, rare: true, draws: 5'))).toContain('rare-shape');
+  });
+
+  test('in the results: several counts beside an outcome that is split', () => {
+    const both = families('replicates: 100, rare: true').replace('lost:', 'long: { of: all, below: 3, for: 2 }, lost:');
+    const [long, lost] = runModel(compileText(both)).rare!;
+    expect(long).toMatchObject({
+      probability: null,
+      interval: null,
+      reason: expect.stringContaining('one after the other'),
+    });
+    expect(lost!.probability).toBeGreaterThan(0);
+  });
+
+  test('in the results: a fall from nobody', () => {
+    const young = framed(`classes: [young, adult]
+oldest: open-ended
+survival: { young: 0.5, adult: 0.5 }
+births: { adult: 0.9 }
+year: [breeding, count, survival, ageing]
+start: { table: { Meadow: { adult: 10 } } }
+outcomes: { fewer young: { of: [young], fallen-by: 50 % } }
+run: { replicates: 100, rare: true }
+`);
+    expect(splitOf(young)).toMatchObject({
+      probability: null,
+      reason: expect.stringContaining('there can be no fall'),
+    });
+  });
+
+  test('in the results: runs that had to be stopped', () => {
+    const many = families('replicates: 100, rare: true')
+      .replace('[[1.5]]', '[[40]]')
+      .replace('animal: 10 }', 'animal: 1000 }');
+    expect(splitOf(many.replace('below: 1', 'below: 900'))).toMatchObject({
+      probability: null,
+      reason: expect.stringContaining('too many animals'),
+    });
+  });
 });
 
 test('where numbers do not fall level by level it says so', () => {

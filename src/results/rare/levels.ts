@@ -7,6 +7,8 @@ export interface PilotRequest {
   readonly outcome: number;
   /** The threshold of the outcome: the last level. */
   readonly below: number;
+  /** Counts and levels are −N, of an outcome that is a rise. */
+  readonly rising: boolean;
   readonly steps: number;
   readonly seed: number;
   readonly trials: number;
@@ -23,13 +25,13 @@ export interface Pilot {
 const passing = 0.2;
 const mostLevels = 40;
 
-export function pilotLevels(runner: Trials, { outcome, below, steps, seed, trials }: PilotRequest): Pilot {
+export function pilotLevels(runner: Trials, { outcome, below, rising, steps, seed, trials }: PilotRequest): Pilot {
   const levels: number[] = [];
   let entrances: readonly Entrance[] = [atStart];
   let [replicateYears, stopped] = [0, 0];
   for (let stage = 0; stage < mostLevels; stage++) {
     const chosen = assigned(entrances, { trials, seed, words: [stage, outcome] });
-    const request = { outcome, steps, seed, firstReplicate: stage * trials };
+    const request = { outcome, rising, steps, seed, firstReplicate: stage * trials };
     const whole = runner.run(chosen, { ...request, level: -Infinity });
     const level = nextLevel(whole.lowest, levels.at(-1) ?? Infinity);
     replicateYears += whole.replicateYears;

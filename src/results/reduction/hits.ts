@@ -16,6 +16,11 @@ export interface HitsShape extends Asked {
 /** Shares of whole counts do not always come out whole. */
 const rounding = 1e-9;
 
+/** At most so many are left when those at the start have fallen by this share. */
+export function leftAfterFall(start: number, by: number): number {
+  return start * (1 - by) + start * rounding;
+}
+
 export class Hits {
   readonly #event: OutcomeEvent;
   readonly #counts: number;
@@ -48,7 +53,7 @@ export class Hits {
 
   #start(replicate: number, value: number): void {
     if (this.#event.is !== 'fallen') return;
-    this.#left[replicate] = value > 0 ? value * (1 - this.#event.by) + value * rounding : -1;
+    this.#left[replicate] = value > 0 ? leftAfterFall(value, this.#event.by) : -1;
   }
 
   #isSo(replicate: number, value: number): boolean {
