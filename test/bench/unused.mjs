@@ -1,12 +1,13 @@
 // What a model does not use costs nothing: ratios of one run of a model to the same model with sections of chance that no rate
-// reads, and, to compare, with ones that it does. Rounds of all follow one another, so that a busy machine is busy for all.
+// reads, and, to compare, with ones that it does. Times are of the processor. Each run stands between two of the model itself, and is
+// held against their mean, so that a machine that grows busy is busy for both; the model against itself shows what is noise.
 import { build, installPackages } from '../../bin/setup.mjs';
 
 installPackages();
 build();
 const { compileSpec, readSpec, runModel } = await import('../../build/index.js');
 
-const rounds = 9;
+const rounds = Number(process.argv[2] ?? 25);
 const years = Array.from({ length: 20 }, (_, i) => `${2000 + i}: ${0.5 + (i % 7) / 6}`).join(', ');
 
 function compiled(more, survival = '0.74') {
@@ -42,8 +43,9 @@ ${more}`;
 }
 
 const drivers = `drivers: { values: { rain: { ${years} } }, future: resample-years }`;
+const base = compiled('');
 const cases = [
-  ['the model', compiled('')],
+  ['the model itself (noise)', base],
   ['drivers by the calendar that nothing reads', compiled(drivers.replace('resample-years', 'repeat'))],
   ['drawn drivers that nothing reads', compiled(drivers)],
   ['uncertainty that is not drawn', compiled('', '{ value: 0.74, uncertainty: { standard-error: 0.03 } }')],
@@ -56,15 +58,39 @@ const cases = [
   ],
 ];
 
-const times = cases.map(() => []);
-for (let round = 0; round <= rounds; round++) {
-  cases.forEach(([, model], i) => {
-    const started = performance.now();
-    runModel(model);
-    if (round > 0) times[i].push(performance.now() - started);
-  });
+function seconds(model) {
+  const before = process.cpuUsage();
+  runModel(model);
+  const { user, system } = process.cpuUsage(before);
+  return (user + system) / 1e6;
 }
-const median = (values) => values.toSorted((a, b) => a - b)[Math.floor(values.length / 2)];
-const ratios = times.map((own) => median(own.map((ms, round) => ms / times[0][round])));
-console.log(`Time of a run as a multiple of that of the model, medians of ${rounds} rounds, Node ${process.version}`);
-cases.forEach(([what], i) => console.log(`${what.padEnd(48)} ${ratios[i].toFixed(2)}`));
+
+/** What nothing reads draws nothing: the same runs, to the last animal. */
+function sameRuns(model) {
+  const told = ({ abundance, outcomes }) => JSON.stringify([abundance, outcomes]);
+  return told(runModel(model)) === told(runModel(base));
+}
+
+const ratios = cases.map(() => []);
+for (const [, model] of cases) seconds(model);
+for (let round = 0; round < rounds; round++) {
+  // From another case on in each round, so that none always comes after the same one.
+  for (let k = 0; k < cases.length; k++) {
+    const i = (k + round) % cases.length;
+    const before = seconds(base);
+    const own = seconds(cases[i][1]);
+    ratios[i].push((2 * own) / (before + seconds(base)));
+  }
+}
+
+function quantile(values, share) {
+  const sorted = values.toSorted((a, b) => a - b);
+  return sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))];
+}
+
+console.log(`Processor time of a run as a multiple of that of the model, ${rounds} rounds, Node ${process.version}`);
+console.log(`${''.padEnd(46)} median   middle half    same runs`);
+cases.forEach(([what, model], i) => {
+  const [low, middle, high] = [0.25, 0.5, 0.75].map((share) => quantile(ratios[i], share).toFixed(3));
+  console.log(`${what.padEnd(46)}  ${middle}   ${low} to ${high}  ${sameRuns(model) ? 'yes' : 'no'}`);
+});
