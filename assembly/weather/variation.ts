@@ -7,7 +7,7 @@ import { finalise, firstWord, streamOf } from '../draws/stream';
 import { entries, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { distribute } from './distribution';
-import { normalOf } from './normal';
+import { normalTwo } from './normal';
 
 export function vary(record: usize): void {
   const first = weather + <usize>operand(record, layout.variationWeather) * laneNumbers;
@@ -64,11 +64,17 @@ function drawColumns(record: usize, first: usize, patchColumns: i32, quantityCol
 }
 
 function renew(target: usize, stream: u64, kept: f64, fresh: f64): void {
-  for (let at: usize = 0; at < laneNumbers; at += 8) {
-    const word = firstWord(finalise(load<u64>(words + at) + stream), finalise(load<u64>(words + at, 128) + stream));
-    const normal = normalOf(word);
-    store<f64>(target + at, kept === 0 ? fresh * normal : kept * load<f64>(target + at) + fresh * normal);
+  const before = f64x2.splat(kept);
+  const share = f64x2.splat(fresh);
+  for (let at: usize = 0; at < laneNumbers; at += 16) {
+    const normals = f64x2.mul(share, normalTwo(wordAt(at, stream), wordAt(at + 8, stream)));
+    const all = kept === 0 ? normals : f64x2.add(f64x2.mul(before, v128.load(target + at)), normals);
+    v128.store(target + at, all);
   }
+}
+
+function wordAt(at: usize, stream: u64): u64 {
+  return firstWord(finalise(load<u64>(words + at) + stream), finalise(load<u64>(words + at, 128) + stream));
 }
 
 /** target[lane] = Σ weight × numbers of a row of a factor; the numbers of column j stand j numbers after `from`. */

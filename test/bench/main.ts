@@ -3,7 +3,7 @@ import { mkdirSync, writeFileSync } from 'node:fs';
 import { cpus } from 'node:os';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
-import { compareAnimals } from './animals.ts';
+import { compareAnimals, compareCourses } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
 import { measureLargest, measureLosses } from './landscapes.ts';
 import { measureLarge } from './large.ts';
@@ -18,6 +18,10 @@ import { missingTools, work } from './tools.ts';
 
 const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = {
   w1: (options) => ({ ...comparePaths(options), floors: { 'C, same width': 1.5, 'C, widest': 0.7, NumPy: 10 } }),
+  w2: (options) => ({
+    ...compareCourses('w2', options),
+    floors: { 'C, same width': 0.85, 'C, widest': 0.2, NumPy: 4.5 },
+  }),
   w3: (options) => ({
     ...compareAnimals('w3', options),
     floors: { 'C, same width': 0.95, 'C, widest': 0.5, NumPy: 3.5 },
