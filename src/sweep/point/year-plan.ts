@@ -89,8 +89,12 @@ function cellsOf({ columns, columnStart, rowIndex, values }: SparseMatrix, size:
  */
 class Tape {
   readonly start: number[] = [];
-  readonly moving: { readonly at: number; readonly constant: number; readonly slope: number; readonly source: number }[] =
-    [];
+  readonly moving: {
+    readonly at: number;
+    readonly constant: number;
+    readonly slope: number;
+    readonly source: number;
+  }[] = [];
   readonly left: number[] = [];
   readonly right: number[] = [];
   readonly target: number[] = [];

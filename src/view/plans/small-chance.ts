@@ -1,6 +1,6 @@
 // The chance of one plan by year, small, over that of the plan which all are set beside, on one scale for all plans.
 import type { OutcomeView, PlanView, ReportView, Series, Size } from '../contract.ts';
-import { cursor, plot, } from '../axes.ts';
+import { cursor, plot } from '../axes.ts';
 import { course, ribbon } from '../fan.ts';
 import { figure, fitText } from '../figure.ts';
 import { mark, type Markup } from '../markup.ts';
