@@ -4,9 +4,9 @@ import { classes, operand, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { matingFactor } from '../phases/mating';
 import { readShares } from './ceiling';
-import { addRow, addScaled, fillRow, multiplyRow, scaleByPatch, scaleOf } from './rows';
-import { rowAt, rowBytes, step, workRow } from './state';
-import { hasAny, rowOf, tableOf } from './tables';
+import { addRow, besides, fillRow, first, fourth, multiplyRow, scaleByPatch, scaleOf, second, third } from './rows';
+import { blockBytes, rowAt, rowBytes, step, workRow } from './state';
+import { hasAny, patchRow, rowOf, tableOf } from './tables';
 
 /** Rows for the phase at hand; `readShares` has those from 3 on. */
 const young: i32 = 0;
@@ -22,23 +22,44 @@ export function meanBreeding<N>(record: usize): void {
   if (mating) readMated(record);
   const shares: usize = waiting === 0 ? 0 : readWaiting<N>(record, waiting);
   const all = workRow(young);
-  let first = true;
-  for (let c = 0; c < classes; c++) {
-    if (!hasAny(table, c)) continue;
-    const waits = shares !== 0 && i32At(waiting, c) !== 0;
-    const scale = scaleOf(lists, c, workRow(scales));
-    if (!first && !mating && !waits) {
-      addScaled<N>(all, rowAt(c), rowOf(table, c), scale);
-      continue;
+  if (!mating && shares === 0 && lists === 0) {
+    sumBirths<N>(all, table);
+  } else {
+    fillRow(all, 0);
+    for (let c = 0; c < classes; c++) {
+      if (!hasAny(table, c)) continue;
+      const own = workRow(born);
+      scaleByPatch<N>(own, rowAt(c), rowOf(table, c), scaleOf(lists, c, workRow(scales)));
+      if (mating) multiplyRow(own, workRow(mated));
+      if (shares !== 0 && i32At(waiting, c) !== 0) multiplyRow(own, shares);
+      addRow(all, own);
     }
-    const own = first ? all : workRow(born);
-    scaleByPatch<N>(own, rowAt(c), rowOf(table, c), scale);
-    if (mating) multiplyRow(own, workRow(mated));
-    if (waits) multiplyRow(own, shares);
-    if (!first) addRow(all, own);
-    first = false;
   }
-  if (!first) addYoung(all, section(operand(record, layout.breedingInto)));
+  addYoung(all, section(operand(record, layout.breedingInto)));
+}
+
+/** Young of all classes where nothing else decides how many there are. */
+function sumBirths<N>(target: usize, table: usize): void {
+  const rates = rowOf(table, 0);
+  for (let at: usize = 0; at < rowBytes; at += blockBytes) {
+    let s0 = f64x2.splat(0);
+    let s1 = s0;
+    let s2 = s0;
+    let s3 = s0;
+    for (let c = 0; c < classes; c++) {
+      if (!hasAny(table, c)) continue;
+      const n = rowAt(c) + at;
+      const r = besides<N>(rates + <usize>c * patchRow, at);
+      s0 = f64x2.add(s0, f64x2.mul(v128.load(n), first<N>(r)));
+      s1 = f64x2.add(s1, f64x2.mul(v128.load(n, 16), second<N>(r)));
+      s2 = f64x2.add(s2, f64x2.mul(v128.load(n, 32), third<N>(r)));
+      s3 = f64x2.add(s3, f64x2.mul(v128.load(n, 48), fourth<N>(r)));
+    }
+    v128.store(target + at, s0);
+    v128.store(target + at, s1, 16);
+    v128.store(target + at, s2, 32);
+    v128.store(target + at, s3, 48);
+  }
 }
 
 function readWaiting<N>(record: usize, waiting: usize): usize {

@@ -3,7 +3,7 @@ import { f64At, i32At } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { crowdingFactor, crowdingShapeOf } from '../phases/crowding';
-import { divideRow, ofPatches, roomOf, slotRow } from './rows';
+import { besides, divideRow, first, fourth, roomOf, second, slotRow, third } from './rows';
 import { blockBytes, rowAt, rowBytes, rowOfOnes, step, width, workRow } from './state';
 import { hasAny, rowOf, tableOf } from './tables';
 
@@ -32,11 +32,13 @@ function allHave(forms: usize, form: i32): bool {
 /** From counts over what is left of a capacity to 1 / (1 + k n), where nobody needs others. */
 function bevertonHolt<N>(target: usize, coefficients: usize): void {
   const one = f64x2.splat(1);
-  for (let at: usize = 0; at < rowBytes; at += 32) {
-    const first = f64x2.mul(ofPatches<N>(coefficients, at), v128.load(target + at));
-    const second = f64x2.mul(ofPatches<N>(coefficients, at + 16), v128.load(target + at, 16));
-    v128.store(target + at, f64x2.div(one, f64x2.add(one, first)));
-    v128.store(target + at, f64x2.div(one, f64x2.add(one, second)), 16);
+  for (let at: usize = 0; at < rowBytes; at += blockBytes) {
+    const k = besides<N>(coefficients, at);
+    const n = target + at;
+    v128.store(n, f64x2.div(one, f64x2.add(one, f64x2.mul(first<N>(k), v128.load(n)))));
+    v128.store(n, f64x2.div(one, f64x2.add(one, f64x2.mul(second<N>(k), v128.load(n, 16)))), 16);
+    v128.store(n, f64x2.div(one, f64x2.add(one, f64x2.mul(third<N>(k), v128.load(n, 32)))), 32);
+    v128.store(n, f64x2.div(one, f64x2.add(one, f64x2.mul(fourth<N>(k), v128.load(n, 48)))), 48);
   }
 }
 

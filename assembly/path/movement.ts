@@ -2,8 +2,8 @@
 import { f64At, i32At, putF64 } from '../arrays';
 import { classes, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
-import { rowAt, rowBytes, step, workRow } from './state';
-import { addRow, scaleByPatch, scaleOf } from './rows';
+import { blockBytes, rowAt, rowBytes, rowOfOnes, step, workRow } from './state';
+import { addRow, besides, first, fourth, scaleOf, second, third } from './rows';
 import { sumOverPairs } from './pairs';
 import { hasAny, placeAt, rowOf, tableOf } from './tables';
 import { chancesOf, originsOf, pairsOf, readLists, readPairs, startsOf } from './ways';
@@ -19,8 +19,8 @@ export function meanDispersal<N>(record: usize): void {
   const lists = section(operand(record, layout.dispersalSlots));
   for (let c = 0; c < classes; c++) {
     if (i32At(moves, c) === 0 || !hasAny(table, c)) continue;
-    scaleByPatch<N>(workRow(leavers), rowAt(c), rowOf(table, c), scaleOf(lists, c, workRow(scales)));
-    const finite = leave(rowAt(c), workRow(leavers));
+    const scale = scaleOf(lists, c, workRow(scales));
+    const finite = leave<N>(rowAt(c), workRow(leavers), rowOf(table, c), scale === 0 ? workRow(rowOfOnes) : scale);
     if (isVector<N>()) arriveInCourses(listsOf(record, movement));
     // Nobody times a number without end would be no number.
     else if (finite && placeAt(record, 2) !== 0)
@@ -41,12 +41,26 @@ function pairsIn(record: usize, movement: usize): usize {
 }
 
 /** Takes those that leave; whether all their numbers are finite. */
-function leave(row: usize, leaving: usize): bool {
+function leave<N>(row: usize, leaving: usize, rates: usize, scale: usize): bool {
   let sum = f64x2.splat(0);
-  for (let at: usize = 0; at < rowBytes; at += 16) {
-    const n = v128.load(leaving + at);
-    sum = f64x2.add(sum, n);
-    v128.store(row + at, f64x2.sub(v128.load(row + at), n));
+  for (let at: usize = 0; at < rowBytes; at += blockBytes) {
+    const n = row + at;
+    const r = besides<N>(rates, at);
+    const s = scale + at;
+    const l = leaving + at;
+    const l0 = f64x2.mul(f64x2.mul(v128.load(n), first<N>(r)), v128.load(s));
+    const l1 = f64x2.mul(f64x2.mul(v128.load(n, 16), second<N>(r)), v128.load(s, 16));
+    const l2 = f64x2.mul(f64x2.mul(v128.load(n, 32), third<N>(r)), v128.load(s, 32));
+    const l3 = f64x2.mul(f64x2.mul(v128.load(n, 48), fourth<N>(r)), v128.load(s, 48));
+    v128.store(n, f64x2.sub(v128.load(n), l0));
+    v128.store(n, f64x2.sub(v128.load(n, 16), l1), 16);
+    v128.store(n, f64x2.sub(v128.load(n, 32), l2), 32);
+    v128.store(n, f64x2.sub(v128.load(n, 48), l3), 48);
+    v128.store(l, l0);
+    v128.store(l, l1, 16);
+    v128.store(l, l2, 32);
+    v128.store(l, l3, 48);
+    sum = f64x2.add(sum, f64x2.add(f64x2.add(l0, l1), f64x2.add(l2, l3)));
   }
   const all = f64x2.extract_lane(sum, 0) + f64x2.extract_lane(sum, 1);
   return all - all === 0;

@@ -5,8 +5,33 @@ import { blockBytes, rowAt, rowBytes, slotValues } from './state';
 
 /** Of a row of numbers by patch, those of the two columns at these bytes. */
 export function ofPatches<N>(row: usize, at: usize): v128 {
-  if (isVector<N>()) return v128.load64_splat(row + ((at >> 7) << 3));
-  return v128.load(row + at);
+  return first<N>(besides<N>(row, at));
+}
+
+/** Where a row by patch has what belongs to the block of columns at these bytes; the four pairs of the block follow. */
+export function besides<N>(row: usize, at: usize): usize {
+  if (isVector<N>()) return row + ((at >> 7) << 3);
+  return row + at;
+}
+
+export function first<N>(block: usize): v128 {
+  if (isVector<N>()) return v128.load64_splat(block);
+  return v128.load(block);
+}
+
+export function second<N>(block: usize): v128 {
+  if (isVector<N>()) return v128.load64_splat(block);
+  return v128.load(block, 16);
+}
+
+export function third<N>(block: usize): v128 {
+  if (isVector<N>()) return v128.load64_splat(block);
+  return v128.load(block, 32);
+}
+
+export function fourth<N>(block: usize): v128 {
+  if (isVector<N>()) return v128.load64_splat(block);
+  return v128.load(block, 48);
 }
 
 export function fillRow(target: usize, value: f64): void {
@@ -62,37 +87,26 @@ export function divideRow(target: usize, source: usize): void {
 export function scaleByPatch<N>(target: usize, numbers: usize, rate: usize, scale: usize): void {
   const end = rowBytes;
   if (scale === 0) {
-    for (let at: usize = 0; at < end; at += 64) {
-      v128.store(target + at, f64x2.mul(v128.load(numbers + at), ofPatches<N>(rate, at)));
-      v128.store(target + at, f64x2.mul(v128.load(numbers + at, 16), ofPatches<N>(rate, at + 16)), 16);
-      v128.store(target + at, f64x2.mul(v128.load(numbers + at, 32), ofPatches<N>(rate, at + 32)), 32);
-      v128.store(target + at, f64x2.mul(v128.load(numbers + at, 48), ofPatches<N>(rate, at + 48)), 48);
+    for (let at: usize = 0; at < end; at += blockBytes) {
+      const n = numbers + at;
+      const r = besides<N>(rate, at);
+      const t = target + at;
+      v128.store(t, f64x2.mul(v128.load(n), first<N>(r)));
+      v128.store(t, f64x2.mul(v128.load(n, 16), second<N>(r)), 16);
+      v128.store(t, f64x2.mul(v128.load(n, 32), third<N>(r)), 32);
+      v128.store(t, f64x2.mul(v128.load(n, 48), fourth<N>(r)), 48);
     }
     return;
   }
-  for (let at: usize = 0; at < end; at += 32) {
-    const first = f64x2.mul(v128.load(numbers + at), ofPatches<N>(rate, at));
-    const second = f64x2.mul(v128.load(numbers + at, 16), ofPatches<N>(rate, at + 16));
-    v128.store(target + at, f64x2.mul(first, v128.load(scale + at)));
-    v128.store(target + at, f64x2.mul(second, v128.load(scale + at, 16)), 16);
-  }
-}
-
-/** target += numbers × rate, by patch, times `scale` after that, where there is one. */
-export function addScaled<N>(target: usize, numbers: usize, rate: usize, scale: usize): void {
-  const end = rowBytes;
-  if (scale === 0) {
-    for (let at: usize = 0; at < end; at += 32) {
-      const first = f64x2.mul(v128.load(numbers + at), ofPatches<N>(rate, at));
-      const second = f64x2.mul(v128.load(numbers + at, 16), ofPatches<N>(rate, at + 16));
-      v128.store(target + at, f64x2.add(v128.load(target + at), first));
-      v128.store(target + at, f64x2.add(v128.load(target + at, 16), second), 16);
-    }
-    return;
-  }
-  for (let at: usize = 0; at < end; at += 16) {
-    const own = f64x2.mul(f64x2.mul(v128.load(numbers + at), ofPatches<N>(rate, at)), v128.load(scale + at));
-    v128.store(target + at, f64x2.add(v128.load(target + at), own));
+  for (let at: usize = 0; at < end; at += blockBytes) {
+    const n = numbers + at;
+    const r = besides<N>(rate, at);
+    const s = scale + at;
+    const t = target + at;
+    v128.store(t, f64x2.mul(f64x2.mul(v128.load(n), first<N>(r)), v128.load(s)));
+    v128.store(t, f64x2.mul(f64x2.mul(v128.load(n, 16), second<N>(r)), v128.load(s, 16)), 16);
+    v128.store(t, f64x2.mul(f64x2.mul(v128.load(n, 32), third<N>(r)), v128.load(s, 32)), 32);
+    v128.store(t, f64x2.mul(f64x2.mul(v128.load(n, 48), fourth<N>(r)), v128.load(s, 48)), 48);
   }
 }
 
