@@ -53,6 +53,25 @@ test('a spec that uses every key comes back', () => {
           triangular: [4, 5]
           as: positive number
       natal_leaving: 22 %
+      hedgerow_distance_set:
+        value: 4
+        uncertainty: { standard-error: 0.3 }
+      hunt_share_of_excess:
+        value: 0.25
+        uncertainty: { uniform: [0.2, 0.3] }
+      rescue_number_adult:
+        value: 6
+        uncertainty: { interval: [4, 8] }
+        source: { basis: expert }
+      bred_first_year_survival:
+        value: 0.5
+        uncertainty: { triangular: [0.3, 0.7] }
+      rewet_capacity_add:
+        value: 80
+        uncertainty: { standard-error: 20, as: positive number }
+      mowing_survival_newborn_times:
+        value: 1.05
+        uncertainty: { interval: [0.99, 1.11] }
     survival: { newborn: 0.38, yearling: 0.62, adult: adult_survival }
     births: { yearling: 0.4 * litter, adult: litter, female-share: 0.5, into: newborn }
     offspring: { distribution: binomial, largest-litter: 6 }
@@ -189,6 +208,64 @@ test('a spec that uses every key comes back', () => {
         for: 5 years
       halved: { of: [adult], fallen-by: 50 % }
       alone: { of: all, lacking: one sex }
+    money: { currency: crowns, price-year: 2026, discount: 3 % }
+    actions:
+      hedgerow:
+        kind: link
+        between: [North fen, Saltmarsh]
+        dispersal: wandering
+        crossing-death: { set: 0.12 }
+        turn-back: { times: 0.5 }
+        distance: { set: hedgerow_distance_set km }
+        share: { add: 0.05 }
+        from: 2029
+        cost: { once: 120000, yearly: 3000, per-km: 20000 }
+      hunt:
+        kind: take
+        classes: [adult]
+        share-of-excess: hunt_share_of_excess
+        over: 200
+        counted: each patch
+        before: breeding
+      rescue:
+        kind: move
+        from: North fen
+        to: Saltmarsh
+        number: { adult: rescue_number_adult }
+        after: natal
+        years: [2028]
+        homing: 0.1
+        cost: { per-animal: [800, 900] }
+      bred:
+        kind: add
+        in: Saltmarsh
+        number: { yearling: 4 }
+        first-year-survival: bred_first_year_survival
+        after: natal
+      rewet:
+        kind: habitat
+        in: Saltmarsh
+        capacity: { add: rewet_capacity_add }
+        area: { times: 1.2 }
+        quality:
+          cover: { set: 0.8 }
+        from: 2028
+        over: 8 years
+      mere:
+        kind: habitat
+        new: { name: New mere, at: [11.8, 8.4], area: 60 ha, capacity: 40 }
+        like: Saltmarsh
+        from: 2031
+      drained: { kind: habitat, in: Saltmarsh, lost: true, from: 2040 }
+      mowing:
+        kind: change
+        parameters:
+          litter: { times: 1.1 }
+        rates:
+          survival:
+            newborn: { times: mowing_survival_newborn_times }
+        until: 2040
+    scenarios: { all of it: [hedgerow, hunt, rescue, bred, rewet, mere, mowing], drained: [drained] }
     run: { replicates: 2000, seed: 2026, draws: 200 }
     "
   `);

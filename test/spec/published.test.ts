@@ -34,6 +34,19 @@ test('the schema takes a spec that uses every key, and any spec', () => {
   );
 });
 
+test('the schema takes numbers with how sure they are where an action stands in a file, and nothing half said', () => {
+  const { document } = readSpec(wholeText, 'hare.yaml');
+  const { actions, ...rest } = flat(document!.spec);
+  const of = (add: unknown) => {
+    const rewet = { kind: 'habitat', in: 'Saltmarsh', capacity: { add } };
+    return validate(JSON.parse(JSON.stringify({ ...rest, scenarios: {}, actions: { rewet } })));
+  };
+  expect(actions).toMatchObject({ rewet: { capacity: { add: 'rewet_capacity_add' } } });
+  expect(of({ value: 80, uncertainty: { interval: [60, 100] }, source: { basis: 'expert' } })).toBe(true);
+  for (const wrong of [{ value: 80 }, { uncertainty: { interval: [60, 100] } }, { value: 80, uncertainty: { sd: 2 } }])
+    expect(of(wrong)).toBe(false);
+});
+
 /** Mistakes that a schema cannot see: of the text, of names and of expressions. */
 const beyondSchema =
   /^(?:expression-|data-missing|unusable-name|number-format|relative-change|wrong-unit|duplicate-key|division|not-a|inf)/u;

@@ -105,4 +105,17 @@ flood:
   capacity: { times: 0.4, for: 5 years }
   lasts: 2 years
   wait: 10 years
+money: { currency: crowns, price-year: 2026, discount: 3 % }
+actions:
+  hedgerow: { kind: link, between: [North fen, Saltmarsh], dispersal: wandering, crossing-death: { set: 0.12 }, turn-back: { times: 0.5 }, distance: { set: { value: 4 km, uncertainty: { standard-error: 0.3 } } }, share: { add: 0.05 }, from: 2029, cost: { once: 120000, yearly: 3000, per-km: 20000 } }
+  hunt: { kind: take, classes: [adult], share-of-excess: { value: 0.25, uncertainty: { uniform: [0.2, 0.3] } }, over: 200, counted: each patch, before: breeding }
+  rescue: { kind: move, from: North fen, to: Saltmarsh, number: { adult: { value: 6, uncertainty: { interval: [4, 8] }, source: { basis: expert } } }, after: natal, years: [2028], homing: 0.1, cost: { per-animal: [800, 900] } }
+  bred: { kind: add, in: Saltmarsh, number: { yearling: 4 }, first-year-survival: { value: 0.5, uncertainty: { triangular: [0.3, 0.7] } }, after: natal }
+  rewet: { kind: habitat, in: Saltmarsh, capacity: { add: { value: 80, uncertainty: { standard-error: 20, as: positive number } } }, area: { times: 1.2 }, quality: { cover: { set: 0.8 } }, from: 2028, over: 8 years }
+  mere: { kind: habitat, new: { name: New mere, at: [11.8, 8.4], area: 60 ha, capacity: 40 }, like: Saltmarsh, from: 2031 }
+  drained: { kind: habitat, in: Saltmarsh, lost: true, from: 2040 }
+  mowing: { kind: change, parameters: { litter: { times: 1.1 } }, rates: { survival: { newborn: { times: { value: 1.05, uncertainty: { interval: [0.99, 1.11] } } } } }, until: 2040 }
+scenarios:
+  all of it: [hedgerow, hunt, rescue, bred, rewet, mere, mowing]
+  drained: [drained]
 `;
