@@ -56,21 +56,31 @@ export interface UnitSums {
   readonly futures: number;
 }
 
-/** What the mean of each plan could have been with other futures: units drawn again with replacement, 2,000 times. */
-export function resampledMeans(units: readonly UnitSums[]): readonly Float64Array[] {
+/**
+ * What the mean of each plan could have been with other futures, by objective: units drawn again with replacement, 2,000 times, the same
+ * ones for all objectives, which have the same units.
+ */
+export function resampledMeans(objectives: readonly (readonly UnitSums[])[]): readonly (readonly Float64Array[])[] {
+  const units = objectives[0]?.length ?? 0;
+  const found = objectives.map((): Float64Array[] => []);
+  for (let b = 0; b < resamples; b++) {
+    const weights = resampled(units, b);
+    objectives.forEach((own, k) => found[k]?.push(weightedMeans(own, weights)));
+  }
+  return found;
+}
+
+function weightedMeans(units: readonly UnitSums[], weights: Float64Array): Float64Array {
   const plans = units[0]?.sums.length ?? 0;
-  return Array.from({ length: resamples }, (_, b) => {
-    const weights = resampled(units.length, b);
-    const means = new Float64Array(plans);
-    let all = 0;
-    units.forEach(({ sums, futures }, u) => {
-      const weight = weights[u] ?? 0;
-      if (weight === 0) return;
-      all += weight * futures;
-      for (let plan = 0; plan < plans; plan++) means[plan] = (means[plan] ?? 0) + weight * (sums[plan] ?? 0);
-    });
-    return means.map((sum) => sum / all);
+  const means = new Float64Array(plans);
+  let all = 0;
+  units.forEach(({ sums, futures }, u) => {
+    const weight = weights[u] ?? 0;
+    if (weight === 0) return;
+    all += weight * futures;
+    for (let plan = 0; plan < plans; plan++) means[plan] = (means[plan] ?? 0) + weight * (sums[plan] ?? 0);
   });
+  return means.map((sum) => sum / all);
 }
 
 /** Each unit by itself. */

@@ -87,10 +87,12 @@ interface Rows {
 
 function rowsOf(run: PlansRun, objectives: readonly Objective[], ended: Uint8Array): readonly Rows[] {
   const units = unitsOf(run);
-  return objectives.map((objective) => {
-    const sums: readonly UnitSums[] = unitSums(objective, units, ended);
-    return { again: resampledMeans(sums), draws: run.draws.length === 0 ? null : meansOfUnits(sums) };
-  });
+  const sums = objectives.map((objective): readonly UnitSums[] => unitSums(objective, units, ended));
+  const again = resampledMeans(sums);
+  return sums.map((own, k) => ({
+    again: again[k] ?? [],
+    draws: run.draws.length === 0 ? null : meansOfUnits(own),
+  }));
 }
 
 function beatenOf(objectives: readonly Objective[], rows: readonly Rows[]): readonly OverBoth[] {

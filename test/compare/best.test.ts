@@ -24,11 +24,13 @@ test('futures drawn again tell how far the order rests on chance', () => {
     sums: Float64Array.of(10, u % 2 === 0 ? 9 : 11),
     futures: 100,
   }));
-  const [first = 0, second = 0] = sharesOfBest(resampledMeans(even), 'less');
+  const [first = 0, second = 0] = sharesOfBest(resampledMeans([even])[0]!, 'less');
   expect(first + second).toBeCloseTo(1, 9);
   expect(Math.abs(first - 0.5)).toBeLessThan(0.06);
   const clear = even.map(({ futures }) => ({ sums: Float64Array.of(10, 4), futures }));
-  expect(sharesOfBest(resampledMeans(clear), 'less')[1]).toBeCloseTo(1, 9);
+  const both = resampledMeans([even, clear]);
+  expect(sharesOfBest(both[1]!, 'less')[1]).toBeCloseTo(1, 9);
+  expect(both[0]).toEqual(resampledMeans([even])[0]);
   expect(
     meansOfUnits([
       { sums: Float64Array.of(10, 4), futures: 20 },

@@ -7,9 +7,10 @@ type Say = (number: number | string) => string;
 /** Numbers that are not exactly known with what is said of them, not by a name. */
 export function sayNumbers({ parameters = {} }: Spec): Say {
   return (number) => {
-    const { amount, unit } = amountAndUnit(String(number));
+    if (typeof number === 'number') return String(number);
+    const { amount, unit } = amountAndUnit(number);
     const named = Object.hasOwn(parameters, amount) ? parameters[amount] : undefined;
-    if (typeof named !== 'object' || named.uncertainty === undefined) return String(number);
+    if (typeof named !== 'object' || named.uncertainty === undefined) return number;
     return `${named.value}${unit === '' ? '' : ` ${unit}`} (${doubtWords(named.uncertainty)})`;
   };
 }
