@@ -3,23 +3,7 @@
 import { expect, test } from 'vitest';
 import { runReplicates } from '../kernel/collect.ts';
 import { compileText, errorsOf } from '../pipeline/compile-text.ts';
-
-const replicates = 40_000;
-const n = 40;
-
-interface Case {
-  readonly essence: string;
-  /** Column of the count after one year: 0 for all, then each patch. */
-  readonly column?: number;
-  readonly patches?: string;
-  /** Instead of females of one class, all 40 adult. */
-  readonly animals?: { readonly sexes: string; readonly start: string };
-  readonly mean: number;
-  readonly variance: number;
-}
-
-/** p varies with mean p and SD s: n p (1 − p) − n s² + n² s². */
-const share = (p: number, s: number): number => n * p * (1 - p) - n * s * s + n * n * s * s;
+import { expectYear, n, share, type Case } from './one-year.ts';
 
 const horses = {
   sexes: 'counts: both sexes\nclasses: { females: [filly, mare], males: [colt, stallion] }',
@@ -188,24 +172,8 @@ variation: { births: { mare: { sd: 0.5, shape: lognormal } } }`,
   },
 };
 
-test.each(Object.entries(cases))('%s', (_, { essence, patches, animals, column = 0, mean, variance }) => {
-  const { image } = compileText(`skein: 1
-study: { title: Total variance }
-years: 1
-${patches ?? 'patches: [{ name: A }]'}
-${animals?.sexes ?? 'counts: females\nclasses: [adult]'}
-${essence}
-start: { table: { A: ${animals?.start ?? `{ adult: ${n} }`} } }
-`);
-  const { counts, columns } = runReplicates(image, { replicates, steps: 1, seed: 31 });
-  const at = (columns + column) * replicates;
-  const values = counts.slice(at, at + replicates);
-  const found = values.reduce((a, b) => a + b, 0) / replicates;
-  expect(Math.abs(found - mean)).toBeLessThan(5.5 * Math.sqrt(variance / replicates));
-  const squares = values.map((value) => (value - mean) ** 2);
-  const spread = squares.reduce((a, b) => a + b, 0) / replicates;
-  const error = Math.sqrt(squares.reduce((sum, one) => sum + (one - spread) ** 2, 0) / replicates / replicates);
-  expect(Math.abs(spread - variance)).toBeLessThan(5.5 * error);
+test.each(Object.entries(cases))('%s', (_, one) => {
+  expectYear(one);
 });
 
 test.each([
