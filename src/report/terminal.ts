@@ -26,11 +26,11 @@ export function wrap(text: string, style: TextStyle, indent = ''): string {
     .join('\n');
 }
 
-/** Lines no wider than this, where no single word is. */
+/** Lines no wider than this, where no single word is; a number and its % are one word. */
 export function brokenTo(text: string, width: number): readonly string[] {
   const lines: string[] = [];
   let line = '';
-  for (const word of text.split(' ')) {
+  for (const word of text.split(/ (?!%)/u)) {
     if (line !== '' && wide(line) + 1 + wide(word) > width) {
       lines.push(line);
       line = word;

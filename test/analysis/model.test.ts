@@ -63,6 +63,18 @@ describe('named numbers', () => {
   });
 });
 
+test.each([60, 80, 100])(
+  'in %d columns no name is cut, no line runs on, and no number is parted from its percent sign',
+  (width) => {
+    const { value } = analyseModel(compileModel('reed-hare'), { at: 'zero' });
+    const text = analysisText(value!, { colour: false, width });
+    expect(text).not.toContain('…');
+    expect(text).not.toMatch(/\d\n\s*%/u);
+    for (const line of text.split('\n')) expect([...line].length, line).toBeLessThanOrEqual(width);
+    expect(text).toContain('Mill reach → North fen');
+  },
+);
+
 test('where numbers stand still, the growth rate is 1', () => {
   const { value: analysis } = analyseModel(compileModel('two-ponds'), { at: 'equilibrium' });
   expect(analysis!.growthRate).toBeCloseTo(1, 9);

@@ -20,7 +20,7 @@ test('text leads with the answer in words, below the title', () => {
   const [title, blank, answer] = out.split('\n');
   expect([title, blank]).toEqual(['Reed hare on the Harrow Levels', '']);
   expect(answer).toMatch(/^With almost nobody there and in mean years, the population grows by /);
-  expect(out).toMatch(/\nSinks, which would empty without arrivals: Crane pool and Saltmarsh\.\n/);
+  expect(out).toMatch(/\nSinks, whose animals leave less than one each: Crane pool and Saltmarsh\.\n/);
 });
 
 describe('--json', () => {

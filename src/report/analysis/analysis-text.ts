@@ -1,6 +1,7 @@
 // What `skein analyse` says in a terminal: the answer in words, then what it rests on, and last what limits it.
 import type { Analysis } from '../../analysis/schema.ts';
-import { bold, columnsOf, dim, joinBlocks, printable, wrap, type TextStyle } from '../terminal.ts';
+import { fittedColumns } from '../fitted-columns.ts';
+import { bold, dim, joinBlocks, printable, wrap, type TextStyle } from '../terminal.ts';
 import { cautionList } from '../text.ts';
 import { answerWords } from './answer.ts';
 import {
@@ -67,7 +68,7 @@ function tableOf(title: string, table: TextTable | null, style: TextStyle): stri
       .split('\n')
       .map((line) => bold(line, style))
       .join('\n'),
-    columnsOf(head, rows, style),
+    fittedColumns(head, rows, style),
     ...below.map((line) => wrap(line, style, '  ')),
   ];
   return parts.join('\n');

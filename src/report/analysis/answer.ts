@@ -32,10 +32,13 @@ function roles({ patches, growthRate }: Analysis): readonly string[] {
     (patches ?? []).filter((patch) => patch.role === role).map(({ patch }) => patch);
   const lines = [
     `Sources, whose animals leave more than one animal each a year later, anywhere: ${listed(having('source'))}.`,
-    `Sinks, which would empty without arrivals: ${listed(having('sink'))}.`,
+    `Sinks, whose animals leave less than one each: ${listed(having('sink'))}.`,
   ];
   const undecided = having('undecided');
   if (undecided.length > 0) lines.push(`Neither, within rounding: ${listed(undecided)}.`);
+  if (growthRate > 1 && (patches ?? []).every(({ growthAlone }) => growthAlone < 1)) {
+    lines.push('No patch would last alone, with whoever leaves it lost: they hold one another up.');
+  }
   const dearest = [...(patches ?? [])].sort((a, b) => (b.removalLoss ?? 0) - (a.removalLoss ?? 0))[0];
   if (dearest?.removalLoss) {
     const without = growthRate - dearest.removalLoss;

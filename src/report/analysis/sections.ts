@@ -104,8 +104,8 @@ function longRun({ approximation, simulated }: NonNullable<Analysis['stochasticG
   const { growthRate, yearlyVariance, method, leftOut } = approximation;
   const without = leftOut.length === 0 ? '' : ` What ${listed(leftOut)} takes is in the mean year only.`;
   return [
-    `With years that differ, a few animals usually come to a population that ${change(growthRate)} (${method}); the logarithm of ` +
-      `numbers strays by ${told(Math.sqrt(yearlyVariance))} times the root of the years.${without}`,
+    `With years that differ, a population of few usually ${change(growthRate)} in the long run (by approximation: ${method}); the ` +
+      `logarithm of numbers strays by ${told(Math.sqrt(yearlyVariance))} times the root of the years.${without}`,
     ...measured,
   ];
 }
