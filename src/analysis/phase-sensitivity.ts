@@ -86,12 +86,17 @@ export function phaseElasticitySum(phase: PhaseSensitivity, growthRate: number):
   return sum / growthRate;
 }
 
+/** A difference of two sensitivities that is a smaller share of them is what rounding leaves of none. */
+const rounding = 1e-12;
+
 /**
  * Along the constraint that animals which go cannot also stay: what λ gains per share moved from staying in `column` to
- * going to `row`.
+ * going to `row`. Exactly 0 where both places are worth the same within rounding.
  */
 export function movedInsteadOfStaying(phase: PhaseSensitivity, row: number, column: number): number {
-  return phaseEntrySensitivity(phase, row, column) - phaseEntrySensitivity(phase, column, column);
+  const [going, staying] = [phaseEntrySensitivity(phase, row, column), phaseEntrySensitivity(phase, column, column)];
+  const gain = going - staying;
+  return Math.abs(gain) <= rounding * Math.max(going, staying) ? 0 : gain;
 }
 
 /** What λ loses to first order when nobody arrives over this entry and those who would have come are lost. */

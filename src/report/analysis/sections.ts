@@ -154,7 +154,8 @@ export function equilibriumWords({ equilibrium }: Analysis): readonly string[] {
   const lines = equilibrium.states.map(({ total, stable, leadingModulus }) => {
     if (total === 0) return `With nobody: ${stable ? 'a few that come do not stay' : 'a few that come can settle'}.`;
     const back = stable ? 'numbers come back to it' : 'numbers leave it';
-    return `Numbers stand still at ${told(total)}; ${back} (a small disturbance is ${told(leadingModulus)} of itself a year later).`;
+    const left = leadingModulus < 1e-9 ? 'gone' : `${told(leadingModulus)} of itself`;
+    return `Numbers stand still at ${told(total)}; ${back} (a small disturbance is ${left} a year later).`;
   });
   if (equilibrium.startThreshold !== null) {
     lines.push(

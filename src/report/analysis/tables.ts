@@ -168,13 +168,14 @@ export function differenceTable({ ltre }: Analysis, most: number): TextTable | n
   };
 }
 
+/** Beside the largest eigenvalue. */
+const noise = 1e-13;
+
 export function eigenvalueTable({ eigenvalues }: Analysis): TextTable | null {
   if (eigenvalues === null) return null;
-  const rows = eigenvalues.map(({ re, im }, k) => [
-    String(k + 1),
-    told(re),
-    told(im),
-    told(Math.sqrt(re * re + im * im)),
-  ]);
+  const sizes = eigenvalues.map(({ re, im }) => Math.sqrt(re * re + im * im));
+  const least = noise * Math.max(...sizes);
+  const shown = (value: number): string => told(Math.abs(value) < least ? 0 : value);
+  const rows = eigenvalues.map(({ re, im }, k) => [String(k + 1), ...[re, im, sizes[k] ?? 0].map(shown)]);
   return { head: ['', 'real', 'imaginary', 'size'], rows, below: [] };
 }
