@@ -1,8 +1,8 @@
 // How long and how large: a landscape of 400 patches and six classes over a hundred years, as whole commands.
-import { spawnSync } from 'node:child_process';
 import { mkdirSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { largeModel } from '../large/landscape.ts';
+import { command } from './command.ts';
 import { median } from './measure.ts';
 import { measureOpening, type OpeningTimes } from './opening.ts';
 import type { Options } from './options.ts';
@@ -20,9 +20,6 @@ export interface LargeFigures {
   readonly browser: OpeningTimes;
 }
 
-const skein = join('bin', 'skein.mjs');
-const telling = 'process.on("exit",()=>process.stderr.write(`maxRSS ${process.resourceUsage().maxRSS}\\n`))';
-
 export async function measureLarge({ quick, rounds }: Options): Promise<LargeFigures> {
   const folder = join(work, 'large');
   mkdirSync(folder, { recursive: true });
@@ -39,24 +36,15 @@ export async function measureLarge({ quick, rounds }: Options): Promise<LargeFig
     return (performance.now() - began) / 1000;
   });
   const memoryReplicates = quick ? 1000 : 10_000;
-  const told = command(run(memoryReplicates));
+  const { megabytes } = command(run(memoryReplicates));
   const page = join(folder, 'page.html');
   command(['report', model, '--years', '100', '--quiet', '-o', page]);
-  const kilobytes = Number(/maxRSS (\d+)/.exec(told)?.[1] ?? NaN);
   const browser = await measureOpening(page, rounds);
   return {
     seconds: median(seconds),
-    memory: kilobytes / 1024,
+    memory: megabytes,
     memoryReplicates,
     page: statSync(page).size / 1e6,
     browser,
   };
-}
-
-/** What it says on standard error. */
-function command(words: readonly string[]): string {
-  const inside = ['--import', `data:text/javascript,${encodeURIComponent(telling)}`, skein];
-  const { status, stderr } = spawnSync(process.execPath, [...inside, ...words], { encoding: 'utf8', maxBuffer: 1e9 });
-  if (status !== 0) throw new Error(`skein ${words.join(' ')} failed: ${stderr}`);
-  return stderr;
 }

@@ -7,13 +7,15 @@ import { compareAnimals, compareCourses } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
 import { measureLargest, measureLosses } from './landscapes.ts';
 import { measureLarge } from './large.ts';
-import { compareLifeCycles, compareSweep } from './many.ts';
+import { compareSweep } from './growth-sweep.ts';
+import { compareLifeCycles } from './many.ts';
 import type { Comparison, Options } from './options.ts';
 import { comparePaths } from './path.ts';
 import { measurePlans } from './plans.ts';
 import { plotScaling } from './plot.ts';
 import { measureScaling } from './scaling.ts';
 import { measureStart, measureThreads } from './start.ts';
+import { measureSweeps } from './sweeps.ts';
 import { missingTools, work } from './tools.ts';
 
 const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = {
@@ -30,7 +32,7 @@ const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = 
   lifecycles: compareLifeCycles,
   sweep: compareSweep,
 };
-const others = ['flagship', 'plans', 'start', 'threads', 'large', 'landscapes', 'scaling'];
+const others = ['flagship', 'sweeps', 'plans', 'start', 'threads', 'large', 'landscapes', 'scaling'];
 
 const { values, positionals } = parseArgs({
   allowPositionals: true,
@@ -67,6 +69,19 @@ if (chosen.has('flagship')) {
   console.log(
     `The flagship, 1000 replicates of 50 years: compiled in ${ms(times.compile)}, run in ${ms(times.run)}, whole command ${ms(times.command)}`,
   );
+}
+if (chosen.has('sweeps')) {
+  const sweeps = measureSweeps(options);
+  report['sweeps'] = sweeps;
+  const { runs, writing, memory } = sweeps;
+  console.log(
+    `${runs.points} points of 200 replicates of the flagship take ${runs.overKernel.toFixed(2)} times the kernel alone, aim 1.15`,
+  );
+  console.log(
+    `${writing.rows} growth rates with their rows written take ${writing.parts.toFixed(2)} times those without, aim 1.10; ` +
+      `with table and summary ${writing.all.toFixed(2)}`,
+  );
+  console.log(`A sweep of ${memory.points} points takes ${memory.megabytes.toFixed(0)} MB, aim 500`);
 }
 if (chosen.has('plans')) {
   const plans = await measurePlans(options);

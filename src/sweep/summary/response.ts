@@ -66,8 +66,11 @@ function slicesOf(
   rows: readonly number[],
   slices: number,
 ): readonly (readonly number[])[] {
-  const order = ascendingOrder(Float64Array.from(rows, (row) => Number(values[row])));
-  const sorted = Array.from(order, (i) => rows[i] ?? 0);
+  const keys = new Float64Array(rows.length);
+  for (let i = 0; i < keys.length; i++) keys[i] = Number(values[rows[i] ?? 0]);
+  const order = ascendingOrder(keys);
+  const sorted = new Array<number>(order.length);
+  for (let i = 0; i < order.length; i++) sorted[i] = rows[order[i] ?? 0] ?? 0;
   return Array.from({ length: slices }, (_, s) =>
     sorted.slice(Math.round((s * sorted.length) / slices), Math.round(((s + 1) * sorted.length) / slices)),
   );
@@ -78,7 +81,7 @@ function groupOf(
   measure: Float64Array,
   rows: readonly number[],
 ): ResponseGroup {
-  const sorted = Float64Array.from(rows, (row) => measure[row] ?? NaN).sort();
+  const sorted = measuredAt(measure, rows).sort();
   const at = (share: number): number => {
     const place = share * (sorted.length - 1);
     const [low = NaN, high = low] = [sorted[Math.floor(place)], sorted[Math.ceil(place)]];
@@ -95,6 +98,12 @@ function groupOf(
   };
 }
 
+function measuredAt(measure: Float64Array, rows: readonly number[]): Float64Array {
+  const values = new Float64Array(rows.length);
+  for (let i = 0; i < values.length; i++) values[i] = measure[rows[i] ?? 0] ?? NaN;
+  return values;
+}
+
 function meanOf(values: Float64Array): number {
   return values.reduce((sum, value) => sum + value, 0) / values.length;
 }
@@ -106,7 +115,7 @@ function meanOf(values: Float64Array): number {
 function explainedBy(groups: readonly (readonly number[])[], measure: Float64Array, sampled: boolean): number | null {
   const n = groups.reduce((sum, own) => sum + own.length, 0);
   if (groups.length < 2 || n <= groups.length) return null;
-  const values = groups.map((own) => Float64Array.from(own, (row) => measure[row] ?? NaN));
+  const values = groups.map((own) => measuredAt(measure, own));
   const mean = values.reduce((sum, own) => sum + meanOf(own) * own.length, 0) / n;
   let [between, within] = [0, 0];
   for (const own of values) {

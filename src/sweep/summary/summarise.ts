@@ -158,7 +158,7 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth
   const count = design.factors.length;
   const shares = design.design === 'sobol indices' ? sharesOfVariance(observed, count) : null;
   const screens = design.design === 'morris' ? screening(observed, count, design.seed) : [];
-  const ranks = ranked(design.design) ? rankCorrelations(swept, observed) : [];
+  const ranks = ranked(design.design) ? rankCorrelations(swept, { whole, known }) : [];
   const factors = design.factors.map((factor, k): FactorSummary => {
     const response = responseTo(swept.values[k] ?? [], whole, {
       rows: rowsOf(swept, k),
@@ -201,14 +201,17 @@ function ranked(design: DesignName): boolean {
 }
 
 /** Over the points with a measure, by the factors that are numbers. */
-function rankCorrelations({ manifest, values }: Swept, observed: Observed): readonly (RankCorrelation | null)[] {
-  const rows = [...observed.first.keys()].filter((row) => !Number.isNaN(wholeAt(observed, row)));
-  const measure = Float64Array.from(rows, (row) => wholeAt(observed, row));
+function rankCorrelations(
+  { manifest, values }: Swept,
+  { whole, known }: { readonly whole: Float64Array; readonly known: Float64Array },
+): readonly (RankCorrelation | null)[] {
   const { factors } = manifest.design;
-  const columns = factors.map((factor, k) =>
-    Float64Array.from(rows, (row) => (isText(factor) ? 0 : Number(values[k]?.[row]))),
-  );
-  return partialRankCorrelations(columns, measure);
+  const columns = factors.map((factor, k) => {
+    const own = values[k];
+    if (isText(factor) || !(own instanceof Float64Array)) return new Float64Array(known.length);
+    return known.length === whole.length ? own : own.filter((_, row) => !Number.isNaN(whole[row]));
+  });
+  return partialRankCorrelations(columns, known);
 }
 
 function order(design: DesignName): { readonly by: string; readonly weight: (factor: FactorSummary) => number } {
