@@ -58,7 +58,8 @@ class Pool {
       }
       this.#workers.delete(worker);
       worker = null;
-      this.#mourn(part, bytes);
+      // Where all is over, it was ended on purpose.
+      if (!this.#failed) this.#mourn(part, bytes);
     }
   }
 
