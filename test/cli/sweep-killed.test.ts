@@ -8,7 +8,7 @@ import { isLong } from '../fuzz/length.ts';
 import { filesIn, folder, root, skein } from './skein.ts';
 
 const kills = isLong ? 200 : 20;
-const points = isLong ? 40_000 : 1600;
+const points = isLong ? 6000 : 1600;
 const over = ['--over', 'survival.adult=0.5:0.8', '--over', 'wandering.leaving=0.02:0.3'];
 const runs = ['--measure', 'growth,chance', '--replicates', '100', '--years', '20', '--threads', '2', '--quiet'];
 const words = ['sweep', 'models/two-ponds.yaml', ...over, '--design', 'sobol', '--points', String(points), ...runs];
