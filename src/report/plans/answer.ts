@@ -3,7 +3,7 @@ import type { Comparison, ComparedPlan } from '../../compare/results.ts';
 import { drawFutures } from '../../view/futures.ts';
 import { mark, type Markup } from '../../view/markup.ts';
 import { percent, plain } from '../../view/number.ts';
-import { paragraph, section } from '../section/section.ts';
+import { paragraph, prose, section } from '../section/section.ts';
 
 export function plansAnswer(comparison: Comparison): Markup {
   const { statement, objectives } = comparison;
@@ -13,9 +13,9 @@ export function plansAnswer(comparison: Comparison): Markup {
     'answer',
     'The answer',
     mark`<div class="answer"><div>
-<p class="lead">${statement.text}</p>
+<p class="lead">${prose(statement.text)}</p>
 ${paragraph(meaning)}${statement.reservations.length === 0 ? null : paragraph(statement.reservations.join(' '))}</div>${futures(comparison)}</div>
-<div class="sure"><p>The rule: ${statement.rule}. ${strengthWords[statement.strength]}</p>
+<div class="sure"><p>The rule: ${prose(statement.rule)}. ${strengthWords[statement.strength]}</p>
 ${paragraph(sureness(comparison))}
 <p>Another rule may choose another plan. How much risk is acceptable, and what it may cost, is not a matter of calculation: it is for those who decide.</p></div>`,
   );

@@ -4,7 +4,7 @@ import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { percent, plain, whole } from '../../view/number.ts';
 import { drawTable, scrolling, type Row } from '../../view/table.ts';
 import { between, change, costWords, courseWords, priceOfWords, priceWords, shareOf100 } from '../compare/words.ts';
-import { section } from '../section/section.ts';
+import { prose, section } from '../section/section.ts';
 
 export function plansSection(comparison: Comparison, animals: string): Markup {
   return section('plans', 'The plans', mark`${plansTable(comparison, animals)}${actionList(comparison)}`);
@@ -105,7 +105,7 @@ function notes({ objectives, money, afterHorizon }: Comparison): Markup {
       : `Costs are means over the futures in ${money.currency}${money.priceYear === null ? '' : ` at prices of ${money.priceYear}`}, discounted by ${percent(money.discount)} a year, the first year not. `;
   const beaten =
     'A plan is beaten in everything where another is at least as good in every chance and in cost, and better in one; the small numbers say how often that is so with as many other futures. ';
-  return mark`<p>${definitions}${prices}${beaten}${afterHorizon}</p>`;
+  return mark`<p>${definitions}${prices}${beaten}${prose(afterHorizon)}</p>`;
 }
 
 /** How sure it is which plan is best in what, and what a gain costs. */

@@ -8,13 +8,13 @@ import type { InputData, ReportInput } from '../input.ts';
 import { placesCaution } from '../hiding/hiding-words.ts';
 import { oddSection } from '../odd/odd.ts';
 import { digits } from '../odd/rates.ts';
-import { list, section } from './section.ts';
+import { list, prose, section } from './section.ts';
 
 /** Stands before the annex: nobody should read the answer without it. */
 export function limitsSection(input: ReportInput): Markup {
   const places = placesCaution(input);
   const cautions = [...(places === null ? [] : [places]), ...input.results.cautions];
-  const items = cautions.map((text) => mark`<li>${text}</li>`);
+  const items = cautions.map((text) => mark`<li>${prose(text)}</li>`);
   return section('limits', 'Limits and cautions', mark`<ul class="limits">${items}</ul>`);
 }
 
@@ -35,7 +35,7 @@ function parameters(model: Model): Markup {
 }
 
 function defaults(model: Model): Markup {
-  const items = model.defaults.map((text) => mark`<li>${text}</li>`);
+  const items = model.defaults.map((text) => mark`<li>${prose(text)}</li>`);
   const none = mark`<p>No default was used: everything is said in the text of the model.</p>`;
   return mark`<h3 id="defaults">Defaults that were used</h3>${items.length === 0 ? none : mark`<ul>${items}</ul>`}`;
 }

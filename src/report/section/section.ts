@@ -15,7 +15,13 @@ export function list(kind: 'numbers' | 'concepts', items: readonly (readonly [st
 }
 
 export function paragraph(text: string | null): Markup | null {
-  return text === null ? null : mark`<p>${text}</p>`;
+  return text === null ? null : mark`<p>${prose(text)}</p>`;
+}
+
+/** Sentences that a terminal may show as they are: what stands in backticks is typed, and no number is parted from its percent sign. */
+export function prose(text: string): readonly Content[] {
+  const parts = text.replace(/(?<=\d) (?=%)/g, '\u00a0').split('`');
+  return parts.map((part, i) => (i % 2 === 1 ? mark`<code>${part}</code>` : part));
 }
 
 /** Names set apart, with commas between. */
