@@ -98,13 +98,13 @@ class Crewed {
   #give(worker: Worker, task: Task): void {
     const finished = (batches: FromWorker): void => {
       leave();
-      this.#take(batches);
+      // The worker goes on while this thread takes what it has done.
       const next = this.#next();
       if (next !== null) this.#give(worker, next);
-      else {
-        this.#idle.push(worker);
-        this.#rest();
-      }
+      this.#take(batches);
+      if (next !== null) return;
+      this.#idle.push(worker);
+      this.#rest();
     };
     const died = (reason: unknown): void => {
       leave();
