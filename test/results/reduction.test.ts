@@ -144,6 +144,20 @@ describe('sketched quantiles', () => {
     expect(read(values.toReversed())).toEqual(read(values));
   });
 
+  test.each([1, 2, 60, 1000, 1e9])('that are exact are those of the values in order, of numbers below %d', (below) => {
+    const draw = numbers(7);
+    const exact = new ExactValues(2, 160);
+    const all: number[] = [];
+    for (let round = 0; round < 6; round++) {
+      const values = Float64Array.from({ length: 16 }, () => draw(below));
+      exact.add(1, values, 16);
+      all.push(...values);
+    }
+    all.sort((a, b) => a - b);
+    expect(exact.at(1, [...all.keys(), 96, 159])).toEqual([...all, 0, 0]);
+    expect(exact.at(0, [0, 3])).toEqual([0, 0]);
+  });
+
   test('are taken by the size of the request alone', () => {
     expect(isExact(mostExactValues / 64, 64)).toBe(true);
     expect(isExact(mostExactValues / 64 + 1, 64)).toBe(false);
