@@ -14,7 +14,19 @@ export function answerWords(analysis: Analysis): readonly string[] {
     return [`${where[at]}, the population dies out: no animal leaves young that come back to breed.`];
   }
   const rate = `${where[at]} and in mean years, the population ${change(growthRate)} (growth rate ${told(growthRate)}).`;
-  return [rate, ...depends(analysis), ...(patches === null || patches.length < 2 ? [] : roles(analysis))];
+  return [
+    rate,
+    ...held(analysis),
+    ...depends(analysis),
+    ...(patches === null || patches.length < 2 ? [] : roles(analysis)),
+  ];
+}
+
+/** A few die out, but more hold: then what is told near zero is not the whole answer. */
+function held({ at, growthRate, equilibrium }: Analysis): readonly string[] {
+  const level = (equilibrium?.states ?? []).find(({ stable, total }) => stable && total > 0);
+  if (at !== 'zero' || growthRate >= 1 || level === undefined) return [];
+  return [`More of them hold all the same, at ${told(level.total)} animals: \`--at equilibrium\` analyses that.`];
 }
 
 function depends({ parameters }: Analysis): readonly string[] {

@@ -25,6 +25,7 @@ export function firstYears({ transients, dampingRatio, period }: Analysis): read
 
 /** What is only approached, for good, has no year. */
 function extreme({ times: size, step }: { readonly times: number; readonly step: number }, forGood = NaN): string {
+  if (size < 1e-9) return 'hardly any left in the long run';
   const when = Math.abs(size - forGood) <= 1e-3 * size ? 'in the long run' : `after ${years(step)}`;
   return `${times(size)} as many ${when}`;
 }
@@ -155,7 +156,7 @@ export function equilibriumWords({ equilibrium }: Analysis): readonly string[] {
     if (total === 0) return `With nobody: ${stable ? 'a few that come do not stay' : 'a few that come can settle'}.`;
     const back = stable ? 'numbers come back to it' : 'numbers leave it';
     const left = leadingModulus < 1e-9 ? 'gone' : `${told(leadingModulus)} of itself`;
-    return `Numbers stand still at ${told(total)}; ${back} (a small disturbance is ${left} a year later).`;
+    return `Numbers stand still at ${told(total)} animals; ${back} (a small disturbance is ${left} a year later).`;
   });
   if (equilibrium.startThreshold !== null) {
     lines.push(
