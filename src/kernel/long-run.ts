@@ -34,8 +34,7 @@ export function yearsThatPay(image: ArrayBuffer, { phases, settling }: { phases:
   const word = (index: number): number => header[index] ?? 0;
   const inPatches = word(layout.headerPatches) * (word(layout.headerClasses) * phases + word(layout.headerSlots));
   const work = Math.max(1, inPatches + word(layout.headerWays));
-  const years = Math.floor(mostWork / (layout.lanes * work)) - settling;
-  return Math.max(fewestYears, Math.min(mostYears, years - (years % stretch)));
+  return Math.max(fewestYears, Math.min(mostYears, Math.floor(mostWork / (layout.lanes * work)) - settling));
 }
 
 /** So few that neither crowding nor ceilings matter. */
