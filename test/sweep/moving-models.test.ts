@@ -6,6 +6,7 @@ import { readSpec } from '../../src/spec/read.ts';
 import type { Spec } from '../../src/spec/schema/spec.ts';
 import type { Factor } from '../../src/sweep/design/factor.ts';
 import { openChange } from '../../src/sweep/point/change.ts';
+import { placesIn } from '../../src/sweep/places.ts';
 import { movingModel } from '../../src/sweep/point/moving-model.ts';
 
 function specOf(text: string): Spec {
@@ -18,8 +19,9 @@ function numberOf(spec: Spec, name: string): number {
 }
 
 function factorsOf(spec: Spec, names: readonly string[]): readonly Factor[] {
+  const places = new Map(placesIn(spec).map(({ name, value }) => [name, value] as const));
   return names.map((name) => {
-    const base = numberOf(spec, name);
+    const base = places.has(name) ? Number(places.get(name)) : numberOf(spec, name);
     return { name, base, range: { by: 'values', values: [base] } };
   });
 }
@@ -68,6 +70,21 @@ test('every model, each of its named numbers alone', () => {
     'tortoise-sites.yaml': expect.any(Array),
     'survival-and-leaving.yaml': ['adult_survival', 'leaving_share', 'young_survival'],
   });
+});
+
+test('every model, each of its numbers at a place alone', () => {
+  const taken = new Set<string>();
+  for (const file of readdirSync('models').filter((name) => name.endsWith('.yaml'))) {
+    const text = readFileSync(`models/${file}`, 'utf8');
+    if (/\.(csv|geojson)$/mu.test(text)) continue;
+    const spec = specOf(text);
+    for (const { name, value } of placesIn(spec)) {
+      const [kind = ''] = name.split('.');
+      if (typeof value !== 'number' || !(value > 0) || ['patches', 'start', 'money'].includes(kind)) continue;
+      if ((heldAgainstCompiler(spec, [name], [1, 0.9, 1.1]) ?? 0) > 0) taken.add(kind);
+    }
+  }
+  expect([...taken]).toEqual(expect.arrayContaining(['survival', 'births', 'in']));
 });
 
 const pair = `skein: 1

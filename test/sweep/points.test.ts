@@ -168,5 +168,6 @@ test('what moves more than rates is compiled point by point', () => {
     },
   };
   expect(manyPoints(moved, one('far'), nobodyCrowds)).toBeNull();
-  expect(manyPoints(pond, one('survival.adult'), nobodyCrowds)).toBeNull();
+  expect(manyPoints(pond, one('wandering.kernel.mean'), nobodyCrowds)).toBeNull();
+  expect(manyPoints(pond, one('survival.adult'), nobodyCrowds)).not.toBeNull();
 });

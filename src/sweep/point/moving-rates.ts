@@ -9,6 +9,7 @@ import { namesIn } from '../../spec/expression/names.ts';
 import type { Ast } from '../../spec/expression/ast.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { Factor, Value } from '../design/factor.ts';
+import { namedPlaces } from './named-places.ts';
 
 type RateField = 'births' | 'survival' | 'leaving';
 
@@ -30,13 +31,18 @@ export interface MovingRates {
   valuesAt(values: readonly Value[]): Float64Array | null;
 }
 
-/** `spec` with the base values of the factors, all of them named parameters. */
+/** `spec` has the base values of the factors, which are named parameters or numbers at places. */
 export function movingRates(spec: Spec, factors: readonly Factor[]): MovingRates | null {
-  const { model, context } = resolveWithContext(spec);
-  const names = new Set(factors.map(({ name }) => name));
+  const named = namedPlaces(spec, factors);
+  if (named === null) return null;
+  const { model, context } = resolveWithContext(named.spec);
+  const names = new Set(named.names);
   if (model === null || !isPlain(model, context, names)) return null;
   const found = collect(model, context, names);
-  return found === null || movesElsewhere(context, names, found.paths) ? null : { model, context, ...found };
+  if (found === null || movesElsewhere(context, names, found.paths)) return null;
+  // A place that is no expression of the language is not worked out as one.
+  if (named.fresh.some((name) => !found.read.has(name))) return null;
+  return { model, context, ...found };
 }
 
 /** Nothing but tables of rates can move: no broods with a size each, no attributes that are worked out. */
@@ -53,6 +59,8 @@ function isPlain(model: Model, { spec, attributes }: Context, names: ReadonlySet
 interface Collected {
   readonly rates: readonly MovingRate[];
   readonly paths: ReadonlySet<string>;
+  /** Names that the rates read. */
+  readonly read: ReadonlySet<string>;
   valuesAt(values: readonly Value[]): Float64Array | null;
 }
 
@@ -67,6 +75,7 @@ function collect(model: Model, context: Context, names: ReadonlySet<string>): Co
   const sources = new Map<string, { readonly source: Source; readonly at: number }>();
   const rates: MovingRate[] = [];
   const paths = new Set<string>();
+  const read = new Set<string>();
   for (const [phase, own] of model.phases.entries()) {
     const table = tableOf(own);
     if (table === null || table.table.written === undefined) continue;
@@ -90,6 +99,7 @@ function collect(model: Model, context: Context, names: ReadonlySet<string>): Co
       sources.set(key, known);
       rates.push({ phase, field: table.field, index, source: known.at });
       paths.add(written.path.join('\0'));
+      for (const name of namesIn(ast)) read.add(name);
     }
   }
   const order = [...sources.values()].map(({ source }) => source);
@@ -99,7 +109,7 @@ function collect(model: Model, context: Context, names: ReadonlySet<string>): Co
   const same = rates.every(
     (rate) => base?.[rate.source] === tableOf(model.phases[rate.phase])?.table.epochs[0]?.[rate.index],
   );
-  return base !== null && same ? { rates, paths, valuesAt } : null;
+  return base !== null && same ? { rates, paths, read, valuesAt } : null;
 }
 
 function valueOf(spec: Spec, name: string): number {
