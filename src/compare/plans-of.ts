@@ -39,8 +39,8 @@ function planOf(name: string, spec: Spec, compiled: CompiledModel): PlanToRun {
   };
 }
 
-/** An action that handles animals is a phase of its own name. */
-function moneyIn({ model, cost }: CompiledModel): MoneyOf | null {
+/** What the actions cost in one future; null where the model knows no money. An action that handles animals is a phase of its own name. */
+export function moneyIn({ model, cost }: Pick<CompiledModel, 'model' | 'cost'>): MoneyOf | null {
   if (cost.money === null) return null;
   const phases = model.phases.filter(isHandling).map(({ name }) => name);
   return (handled) => {

@@ -7,6 +7,7 @@ import {
   columnsOf,
   inScenarios,
   isOfRuns,
+  moneyUnit,
   quantitiesOf,
   type MeasureName,
   type NumberColumn,
@@ -103,7 +104,13 @@ function partSize({ points, cells, measures }: PartSize): number {
 export const ownUnit = 'as in the model';
 
 function sweepColumns(spec: Spec, factors: readonly Factor[], quantities: readonly Quantity[]): readonly SweepColumn[] {
-  const number = ({ name, unit, meaning }: NumberColumn): SweepColumn => ({ name, type: 'number', unit, meaning });
+  const currency = spec.money?.currency ?? moneyUnit;
+  const number = ({ name, unit, meaning }: NumberColumn): SweepColumn => ({
+    name,
+    type: 'number',
+    unit: unit === moneyUnit ? currency : unit,
+    meaning,
+  });
   return [
     { name: 'point', type: 'integer', unit: '', meaning: 'Number of the point in the design, from 0.' },
     ...factors.map((factor): SweepColumn => ({

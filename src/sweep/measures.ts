@@ -18,6 +18,9 @@ export interface Quantity {
   readonly better: 'less' | 'more' | null;
 }
 
+/** Stands for the currency of the model. */
+export const moneyUnit = 'money';
+
 const plain: Readonly<Record<Exclude<MeasureName, 'chance' | 'chance-at-end'>, Omit<Quantity, 'name' | 'measure'>>> = {
   growth: {
     better: 'more',
@@ -60,6 +63,12 @@ const plain: Readonly<Record<Exclude<MeasureName, 'chance' | 'chance-at-end'>, O
     unit: 'patches',
     chance: true,
     meaning: 'Mean number of patches with at least one animal at the last count.',
+  },
+  cost: {
+    better: 'less',
+    unit: moneyUnit,
+    chance: true,
+    meaning: 'Mean money spent over all years, discounted to the first, with prices that are ranges at their middle.',
   },
 };
 

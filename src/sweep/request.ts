@@ -188,18 +188,27 @@ function listFactors(list: NonNullable<SweepSpec['list']>, compiled: CompiledMod
   });
 }
 
-function measuresOf(
-  { measures = ['growth'] }: SweepSpec,
-  { model }: CompiledModel,
-  told: Told,
-): readonly MeasureName[] {
+function measuresOf(asked: SweepSpec, compiled: CompiledModel, told: Told): readonly MeasureName[] {
+  const { model } = compiled;
+  const measures = asked.measures ?? usualMeasures(asked, compiled);
   const wanted = measures.find((one) => one === 'chance' || one === 'chance-at-end');
   if (wanted !== undefined && model.outcomes.length === 0) {
     told.fail('sweep-shape', ['measures'], `The model has no outcomes, so there is no ${wanted}`, {
       fix: 'Say under `outcomes` what is looked for.',
     });
   }
+  if (measures.includes('cost') && compiled.cost.money === null) {
+    told.fail('sweep-shape', ['measures'], 'The model knows no money, so there is no cost', {
+      fix: 'Give the actions a `cost`, and say under `money` what it is in.',
+    });
+  }
   return measures;
+}
+
+/** Growth; of plans that are compared what a comparison goes by. */
+function usualMeasures({ compare }: SweepSpec, { model, cost }: CompiledModel): readonly MeasureName[] {
+  if (compare === undefined) return ['growth'];
+  return [model.outcomes.length > 0 ? 'chance' : 'animals', ...(cost.money === null ? [] : ['cost' as const])];
 }
 
 function designOf(asked: SweepSpec, factors: readonly Factor[], told: Told): DesignPlan | null {

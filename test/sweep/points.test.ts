@@ -2,6 +2,8 @@
 import { readFileSync } from 'node:fs';
 import { expect, test } from 'vitest';
 import { analyseModel } from '../../src/analysis/analyse-model.ts';
+import { compareSpec } from '../../src/compare/compare-spec.ts';
+import { plansOf } from '../../src/compare/plans-of.ts';
 import { compileSpec, followPath, runModel } from '../../src/pipeline.ts';
 import { readSpec } from '../../src/spec/read.ts';
 import type { Spec, SweepSpec } from '../../src/spec/schema/spec.ts';
@@ -17,6 +19,7 @@ import type { Factor } from '../../src/sweep/design/factor.ts';
 import { manyPoints } from '../../src/sweep/point/many-points.ts';
 import { columnsOf } from '../../src/sweep/measures.ts';
 import { planSweep } from '../../src/sweep/request.ts';
+import { alone } from '../../src/threads/alone.ts';
 
 function specOf(model: string, settings: Settings = {}): Spec {
   const { document } = readSpec(readFileSync(new URL(`../../models/${model}.yaml`, import.meta.url), 'utf8'), model);
@@ -96,6 +99,30 @@ test('answers with chance are those of a run with the same seed, one point after
     expect(numbers['animals']).toBeCloseTo(run.abundance.whole.at(-1)!.mean, 10);
     expect(numbers['patches-in-use']).toBeCloseTo(run.patchesInUse.at(-1)!.mean, 10);
   }
+});
+
+test('a point that is a whole comparison has the chances and the cost of every plan that the comparison has', async () => {
+  const spec = specOf('reed-hare', { years: 12, replicates: 40 });
+  const at = evaluatorOf(spec, { over: { adult_survival: { from: 0.5, to: 0.6 } }, compare: 'all' });
+  const { numbers } = at([0.57]);
+  const compared = await compareSpec(alone, { spec, plans: plansOf(spec).plans! });
+  const { scenarios: plans } = compared!.comparison;
+  expect(plans.map(({ name }) => name)).toHaveLength(5);
+  for (const { name, cost, outcomes } of plans) {
+    expect(numbers[`cost [${name}]`]).toBeCloseTo(cost!.presentValue, 6);
+    for (const one of outcomes) expect(numbers[`chance: ${one.name} [${name}]`]).toBe(one.probability);
+  }
+  // Derived: 150,000 to 210,000 crowns once in the third year, at 3 % a year.
+  expect(numbers['cost [rewet the wash]']).toBeCloseTo(180_000 / 1.03 ** 2, 6);
+  expect(numbers['cost [as now]']).toBe(0);
+});
+
+test('a model without money has no cost', () => {
+  const { findings } = planSweep(
+    { over: { 'survival.adult': [0.5, 0.6] }, measures: ['cost'] },
+    compileSpec(specOf('two-ponds')).compiled!,
+  );
+  expect(findings.map(({ message }) => message)).toEqual(['The model knows no money, so there is no cost']);
 });
 
 test('places of the model can be swept as well as named parameters', () => {

@@ -30,6 +30,7 @@ const measures: readonly MeasureWord[] = [
   'lowest',
   'animals',
   'patches-in-use',
+  'cost',
 ];
 
 export interface Shard {

@@ -131,13 +131,14 @@ export const Sweep = Type.Object(
           Type.Literal('lowest'),
           Type.Literal('animals'),
           Type.Literal('patches-in-use'),
+          Type.Literal('cost'),
         ]),
         {
           minItems: 1,
           uniqueItems: true,
           title: 'a list of measures',
           description:
-            'What is asked at each point. Without chance: growth near zero, damping, animals standing still, animals at the end of the path. From runs: chances of the outcomes, mean lowest count, animals and patches in use at the end.',
+            'What is asked at each point. Without chance: growth near zero, damping, animals standing still, animals at the end of the path. From runs: chances of the outcomes, mean lowest count, animals and patches in use at the end, and what the actions cost. Without it, growth; where scenarios are compared, chance (or animals) and cost.',
           examples: ['[growth, chance]'],
         },
       ),

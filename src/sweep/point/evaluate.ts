@@ -2,6 +2,7 @@
 import { equilibriumFrom } from '../../analysis/equilibrium.ts';
 import { spectrum } from '../../analysis/spectrum.ts';
 import { buildBlock } from '../../compile/block.ts';
+import { moneyIn } from '../../compare/plans-of.ts';
 import { dependsOnMakeUp } from '../../compile/make-up.ts';
 import { linearisedBlock } from '../../compile/slopes/linearised.ts';
 import { solveStages } from '../../compile/stage-advance.ts';
@@ -12,6 +13,7 @@ import { openNext } from '../../kernel/reuse.ts';
 import { buildLandscape } from '../../landscape/build.ts';
 import type { Machine } from '../../machine/instance.ts';
 import { loadMachine } from '../../machine/machine.ts';
+import type { PlanCost } from '../../model/costs.ts';
 import type { Model } from '../../model/model.ts';
 import { compileSpec } from '../../pipeline.ts';
 import { resolveModel } from '../../model/resolve.ts';
@@ -85,6 +87,8 @@ interface CompiledPoint extends Compiled {
   /** Absent where no measure needs them. */
   readonly startAnimals?: Float64Array;
   readonly image?: ArrayBuffer;
+  /** Of the plan; absent where there is none. */
+  readonly cost?: PlanCost;
 }
 
 /** A text says why there is no such model. */
@@ -132,7 +136,8 @@ function reasonOf(findings: readonly Finding[]): string {
 
 function measure(point: CompiledPoint, quantities: readonly Quantity[], machine: Machine | null): Float64Array {
   const { model, image } = point;
-  const runs = machine === null || image === undefined ? null : tallied(machine, image, { model, quantities });
+  const runs =
+    machine === null || image === undefined ? null : tallied(machine, image, { model, cost: point.cost, quantities });
   const plain = new PlainAnswers(point);
   return Float64Array.from(
     quantities.flatMap((quantity) => (quantity.chance ? [...(runs?.numbersOf(quantity) ?? [])] : [plain.of(quantity)])),
@@ -141,13 +146,15 @@ function measure(point: CompiledPoint, quantities: readonly Quantity[], machine:
 
 interface Tallying {
   readonly model: Model;
+  readonly cost: PlanCost | undefined;
   readonly quantities: readonly Quantity[];
 }
 
-function tallied(machine: Machine, image: ArrayBuffer, { model, quantities }: Tallying): Tally {
+function tallied(machine: Machine, image: ArrayBuffer, { model, cost, quantities }: Tallying): Tally {
   openNext(machine, image);
   const run = runnerOn(machine, image, { steps: model.steps, seed: model.seed, reuse: true });
-  const tally = new Tally(model, quantities);
+  const moneyOf = cost === undefined ? null : moneyIn({ model, cost });
+  const tally = new Tally(model, quantities, moneyOf);
   for (const batch of batchesOf(model.replicates)) tally.take(run(batch));
   return tally;
 }

@@ -1,8 +1,11 @@
-// What the measures need of the runs of a point, kept apart for the two halves of the replicates. Exact sums of whole numbers:
+// What the measures need of the runs of a point, kept apart for the two halves of the replicates. Exact sums of whole numbers (of money as it comes):
 // the same as those of a run with the same settings.
+import { firstHandledColumn } from '../../compile/image/count.ts';
+import type { MoneyOf } from '../../compare/plan.ts';
 import { lanes } from '../../kernel/batch.ts';
 import type { BatchCounts } from '../../kernel/output.ts';
 import type { Model } from '../../model/model.ts';
+import { handledParts } from '../../results/reduction/handled.ts';
 import { Hits } from '../../results/reduction/hits.ts';
 import { isOfRuns, type Quantity } from '../measures.ts';
 
@@ -20,10 +23,11 @@ export class Tally {
   readonly #model: Model;
   readonly #halves: readonly [Half, Half];
 
-  constructor(model: Model, quantities: readonly Quantity[]) {
+  /** `moneyOf` of the plan; null where it costs nothing. */
+  constructor(model: Model, quantities: readonly Quantity[], moneyOf: MoneyOf | null) {
     this.#model = model;
     const ofRuns = quantities.filter(({ measure }) => isOfRuns(measure));
-    this.#halves = [new Half(model, ofRuns), new Half(model, ofRuns)];
+    this.#halves = [new Half(model, ofRuns, moneyOf), new Half(model, ofRuns, moneyOf)];
   }
 
   take(batch: BatchCounts): void {
@@ -50,11 +54,15 @@ class Half {
   readonly #hits: readonly (Hits | null)[];
   /** By quantity that is no chance. */
   readonly #sums: ReadonlyMap<string, { sum: number; squares: number }>;
+  readonly #moneyOf: MoneyOf | null;
+  readonly #firstHandled: number;
   #runs = 0;
 
-  constructor(model: Model, quantities: readonly Quantity[]) {
+  constructor(model: Model, quantities: readonly Quantity[], moneyOf: MoneyOf | null) {
     const { steps, replicates, outcomes } = model;
     this.#model = model;
+    this.#moneyOf = moneyOf;
+    this.#firstHandled = firstHandledColumn(model);
     this.#hits = outcomes.map(({ event, counts }, k) =>
       quantities.some(({ outcome }) => outcome === k) ? new Hits({ event, counts, steps, replicates }) : null,
     );
@@ -85,6 +93,11 @@ class Half {
     if (measure === 'animals') return atEnd(wholeColumn);
     if (measure === 'patches-in-use') {
       return patches.reduce((used, _, p) => used + (atEnd(firstPatchColumn + p) > 0 ? 1 : 0), 0);
+    }
+    if (measure === 'cost') {
+      const handled = (phase: number, step: number): number =>
+        counts[step * columns + (this.#firstHandled + phase * handledParts.length) * lanes] ?? 0;
+      return this.#moneyOf?.(handled).presentValue ?? 0;
     }
     let lowest = Infinity;
     for (let t = 0; t <= steps; t++) lowest = Math.min(lowest, counts[t * columns + wholeColumn * lanes] ?? 0);
