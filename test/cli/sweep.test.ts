@@ -204,6 +204,30 @@ test('a list of points is read from a table, and a point that cannot be is a row
   expect(lines[3]).toMatch(/^2,0\.6,0\.2,[\d.]+,$/);
 });
 
+test('a list of points in the model may stand in a table, whose mistakes are told at their place in it', () => {
+  const cwd = folder();
+  const model = readFileSync(join(cwd, ponds), 'utf8');
+  writeFileSync(join(cwd, 'pond.yaml'), `${model}\nsweep: { list: points.csv, measures: [growth] }\n`);
+  writeFileSync(join(cwd, 'points.csv'), 'survival.adult,wandering.leaving\n0.5,0.1\n0.7,\n');
+  expect(skein(['sweep', 'pond.yaml', '--out', 'out', '--quiet'], { cwd }).code).toBe(0);
+  const words = ['sweep', ponds, '--list', 'points.csv', '--measure', 'growth', '--out', 'same', '--quiet'];
+  expect(skein(words, { cwd }).code).toBe(0);
+  const points = (name: string) => readFileSync(join(cwd, name, 'points.csv'), 'utf8');
+  expect(points('out')).toBe(points('same'));
+  expect(points('out').split('\n')[2]).toMatch(/^1,0\.7,0\.08,[\d.]+,$/u);
+  writeFileSync(join(cwd, 'points.csv'), 'survival.adlt\n0.5\n');
+  const wrong = skein(['sweep', 'pond.yaml', '--out', 'wrong', '--quiet'], { cwd });
+  expect(wrong.code).toBe(1);
+  expect(wrong.err).toContain('points.csv:1:1');
+  expect(wrong.err).toMatch(/nearest +survival\.adult/u);
+  writeFileSync(join(cwd, 'points.csv'), 'survival.adult,wandering.leaving\n0.5\n');
+  expect(skein(['sweep', 'pond.yaml', '--out', 'wrong', '--quiet'], { cwd })).toMatchObject({
+    code: 1,
+    err: expect.stringContaining('points.csv:2:1'),
+  });
+  expect(existsSync(join(cwd, 'wrong'))).toBe(false);
+});
+
 test('the plan says what would be done and what it costs, and writes nothing', () => {
   const cwd = folder();
   const { code, out, err } = skein(['sweep', ponds, ...over, '--plan'], { cwd });

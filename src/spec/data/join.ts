@@ -10,7 +10,7 @@ import { readJsonFile } from './json-file.ts';
 import { mergeSections } from './merge.ts';
 import { FileReader } from './reader.ts';
 import { readTable, type Table } from './table.ts';
-import { classesSection, driversSection, longSection, matrixRows, ratesSection } from './tables.ts';
+import { classesSection, driversSection, longSection, matrixRows, pointsList, ratesSection } from './tables.ts';
 
 export interface Joined {
   readonly root: SourceMap;
@@ -42,6 +42,7 @@ export function joinFiles(root: SourceMap, files: DataFiles, report: Report): Jo
         'counts',
         table((one) => longSection(one, ['patch', 'year', 'animals'])),
       ),
+    sweep: (node) => changed(node, 'list', table(pointsList)),
     drivers: (node) => changed(node, 'values', table(driversSection)),
   };
   const shares = table((one) => longSection(one, ['from', 'to', 'share']));

@@ -1,6 +1,6 @@
 // The tables that may stand in files, each as the section that would stand in the spec instead.
 import { put } from '../shape/report.ts';
-import type { SourceList, SourceMap, SourceNode, SourceScalar } from '../text/source.ts';
+import type { SourceEntry, SourceList, SourceMap, SourceNode, SourceScalar } from '../text/source.ts';
 import { Section } from './section.ts';
 import { columnsOf, type Table } from './table.ts';
 
@@ -105,6 +105,21 @@ export function matrixRows(table: Table, classes: readonly string[]): SourceList
     return { kind: 'list', items: cells, span: row[0]?.span ?? corner.span };
   });
   return { kind: 'list', items, span: corner.span, file: report.source };
+}
+
+/** A column a number, a row a point; an empty cell is not said. */
+export function pointsList({ header, rows, report }: Table): SourceList {
+  const span = header[0]?.span ?? { offset: 0, length: 1 };
+  const items = rows.map((row): SourceNode => {
+    const entries = row.flatMap((value, i): SourceEntry[] => {
+      const name = header[i];
+      return name === undefined || value.source === ''
+        ? []
+        : [{ key: name.source, keySpan: name.span, plain: true, value }];
+    });
+    return { kind: 'map', entries, span: row[0]?.span ?? span };
+  });
+  return { kind: 'list', items, span, file: report.source };
 }
 
 function firstDifference(

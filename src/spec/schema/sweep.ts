@@ -1,5 +1,6 @@
 // Sweeps: the same model at very many points.
 import { Type } from 'typebox';
+import { orFile } from './values.ts';
 
 const steps = Type.Optional(
   Type.Integer({
@@ -49,6 +50,11 @@ const Swept = Type.Union([Type.Array(SweptValue, { minItems: 1, uniqueItems: tru
   examples: ['{ from: 0.45, to: 0.7 }'],
 });
 
+const Points = Type.Array(
+  Type.Record(Type.String(), SweptValue, { title: 'numbers with a value each', 'x-key': 'NUMBER' }),
+  { minItems: 1, title: 'a list of points' },
+);
+
 /** The names of designs. */
 export const designNames = [
   Type.Literal('grid'),
@@ -79,11 +85,10 @@ export const Sweep = Type.Object(
       }),
     ),
     list: Type.Optional(
-      Type.Array(Type.Record(Type.String(), SweptValue, { title: 'numbers with a value each', 'x-key': 'NUMBER' }), {
-        minItems: 1,
-        title: 'a list of points',
+      orFile(Points, {
+        title: 'a list of points, or a CSV file with a column a number and a row a point',
         description: 'Points of your own; a number that a point does not name is that of the model.',
-        examples: ['- { adult_survival: 0.6, natal_leaving: 0.1 }'],
+        examples: ['points.csv'],
       }),
     ),
     points: Type.Optional(
