@@ -42,15 +42,28 @@ export interface Compilation {
   readonly findings: readonly Finding[];
 }
 
+/** What all scenarios of a spec are compiled from. */
+export interface CompiledBase {
+  readonly alone: Alone;
+}
+
+export function compileBase(spec: Spec): CompiledBase {
+  return { alone: compileAlone(spec) };
+}
+
 /** Of the scenario under `run`. Mistakes are findings, all of them in one round, never thrown. */
 export function compileSpec(spec: Spec): Compilation {
+  return compileScenario(compileBase(spec), spec);
+}
+
+/** The same of a spec that differs from that of the base in its scenario alone. */
+export function compileScenario({ alone: base }: CompiledBase, spec: Spec): Compilation {
   const ofPlans = checkPlans(spec);
-  const base = compileAlone(spec);
   const findings = [...ofPlans, ...base.findings];
   if (base.parts === null || hasError(findings)) return { compiled: null, findings };
   const scenario = scenarioOf(spec);
   if (scenario === asNow) {
-    const { cost, findings: ofCosts } = costsOf(base.context, base.parts.model, []);
+    const { cost, findings: ofCosts } = costsOf(base, base.parts.model, []);
     findings.push(...ofCosts);
     if (hasError(ofCosts)) return { compiled: null, findings };
     return { compiled: finish(spec, { parts: base.parts, laid: spec, cost }), findings };
@@ -69,7 +82,7 @@ export function compileSpec(spec: Spec): Compilation {
   }
   if (plan.parts === null || hasError(findings)) return { compiled: null, findings };
   const chosen = actionsOf(spec, scenario).map(({ name }) => name);
-  const { cost, findings: ofCosts } = costsOf(base.context, plan.parts.model, chosen);
+  const { cost, findings: ofCosts } = costsOf(base, plan.parts.model, chosen);
   findings.push(...ofCosts);
   if (hasError(ofCosts)) return { compiled: null, findings };
   return { compiled: finish(spec, { parts: plan.parts, laid: laid.spec, cost }), findings };
@@ -84,11 +97,18 @@ interface Made {
   readonly findings: readonly Finding[];
 }
 
+interface Alone extends Made {
+  readonly context: Context;
+  /** Findings of the context when the model was resolved. */
+  readonly resolved: number;
+}
+
 /** A spec without regard to its actions. */
-function compileAlone(spec: Spec): Made & { readonly context: Context } {
+function compileAlone(spec: Spec): Alone {
   const resolved = resolveWithContext(spec);
   const { context } = resolved;
-  if (resolved.model === null) return { parts: null, findings: resolved.findings, context };
+  const found = { context, resolved: context.findings.length };
+  if (resolved.model === null) return { parts: null, findings: resolved.findings, ...found };
   const { landscape, findings: ofLandscape } = buildLandscape(resolved.model);
   const { model, findings: ofStages } = solveStages(resolved.model, landscape);
   const { coefficients, findings: ofCapacities } = solveCapacities(model);
@@ -101,8 +121,8 @@ function compileAlone(spec: Spec): Made & { readonly context: Context } {
     ...ofStart,
     ...nobodyThere(model),
   ];
-  if (hasError(findings)) return { parts: null, findings, context };
-  return { parts: { model, landscape, coefficients, startAnimals: animals }, findings, context };
+  if (hasError(findings)) return { parts: null, findings, ...found };
+  return { parts: { model, landscape, coefficients, startAnimals: animals }, findings, ...found };
 }
 
 /** A plan: its own model, with crowding as strong as the base has it and the same animals at count 0. */
@@ -150,11 +170,16 @@ interface Costed {
   readonly findings: readonly Finding[];
 }
 
-/** Costs are expressions over the numbers of the base. */
-function costsOf(context: Context, model: Model, actions: readonly string[]): Costed {
-  const before = context.findings.length;
+/**
+ * Costs are expressions over the numbers of the base. A mistake in a number is told once for each base, so that what is wrong here
+ * may have been told of an earlier scenario.
+ */
+function costsOf({ context, resolved }: Alone, model: Model, actions: readonly string[]): Costed {
   const cost = resolveCosts(context, actions, (action) => kilometresOf(context.spec, model, action));
-  return { cost, findings: context.findings.slice(before) };
+  const told = context.findings
+    .slice(resolved)
+    .filter(({ path }) => path[0] !== 'actions' || actions.includes(String(path[1])));
+  return { cost, findings: [...new Map(told.map((one) => [keyOf(one), one])).values()] };
 }
 
 /** Of a link, the length of its way in the last year, when all effects are there. */

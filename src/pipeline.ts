@@ -29,7 +29,14 @@ import { rareResults } from './results/rare/splitting.ts';
 import type { PathGrowth, PathResults, RareResult, ReachedPrecision, RunResults } from './results/results.ts';
 import { openReduction, summariseOutcomes, summarisePath, summariseRun } from './results/summarise.ts';
 
-export { compileSpec, type Compilation, type CompiledModel } from './compilation.ts';
+export {
+  compileBase,
+  compileScenario,
+  compileSpec,
+  type Compilation,
+  type CompiledBase,
+  type CompiledModel,
+} from './compilation.ts';
 
 export interface RunOptions {
   /** Told after each batch how many replicates are done. */

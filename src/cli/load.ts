@@ -4,7 +4,7 @@ import type { Diagnostic } from '../diagnostic/diagnostic.ts';
 import { renderDiagnostics } from '../diagnostic/render.ts';
 import { inFileOrder } from '../diagnostic/tell.ts';
 import { wrongNames } from '../model/wrong-names.ts';
-import { compileSpec, type Compilation, type CompiledModel } from '../pipeline.ts';
+import { compileBase, compileScenario, compileSpec, type Compilation, type CompiledModel } from '../pipeline.ts';
 import type { SpecDocument } from '../spec/document.ts';
 import { locateFinding } from '../spec/finding.ts';
 import { nearestScenario, scenariosOf } from '../spec/plans/scenarios.ts';
@@ -94,11 +94,12 @@ function refuseUnknownScenario(spec: Spec, { scenario }: Settings): void {
 
 /** The scenario that is asked for, and what is wrong with any. */
 function compileEvery(spec: Spec): Compilation {
-  const { compiled, findings } = compileSpec(spec);
+  const base = compileBase(spec);
+  const { compiled, findings } = compileScenario(base, spec);
   const all = [...findings];
   const told = new Set(all.map((one) => JSON.stringify(one)));
   for (const scenario of scenariosOf(spec)) {
-    for (const one of compileSpec(scenario.spec).findings) {
+    for (const one of compileScenario(base, scenario.spec).findings) {
       if (told.has(JSON.stringify(one))) continue;
       told.add(JSON.stringify(one));
       all.push(one);

@@ -1,8 +1,8 @@
 // The plans of a spec as they are run: `as now`, which is always there, and each scenario that the spec names.
 import { isHandling } from '../compile/image/handling.ts';
-import { compileSpec, type CompiledModel } from '../pipeline.ts';
+import { compileBase, compileScenario, type CompiledBase, type CompiledModel } from '../pipeline.ts';
 import { totalCost } from '../results/costs.ts';
-import { withValues } from '../results/draws/plan.ts';
+import { withValues, type DrawnValues } from '../results/draws/plan.ts';
 import { scenariosOf } from '../spec/plans/scenarios.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
@@ -16,22 +16,40 @@ export interface PlansOfSpec {
 }
 
 export function plansOf(spec: Spec): PlansOfSpec {
-  const made = scenariosOf(spec).map(({ name, spec: own }) => ({ name, own, ...compileSpec(own) }));
+  const base = compileBase(spec);
+  const made = scenariosOf(spec).map(({ name, spec: own }) => ({ name, own, ...compileScenario(base, own) }));
+  const drawnBase = lastOf((values: DrawnValues) => compileBase(withValues(spec, values)));
   const findings = made.flatMap((one) => one.findings);
   const plans = made.flatMap(({ name, own, compiled }): readonly PlanToRun[] =>
-    compiled === null ? [] : [planOf(name, own, compiled)],
+    compiled === null ? [] : [planOf(name, { spec: own, compiled, drawnBase })],
   );
   return { plans: plans.length < made.length ? null : plans, findings };
 }
 
-function planOf(name: string, spec: Spec, compiled: CompiledModel): PlanToRun {
+interface Made {
+  readonly spec: Spec;
+  readonly compiled: CompiledModel;
+  /** All plans of a draw are compiled from one base. */
+  readonly drawnBase: (values: DrawnValues) => CompiledBase;
+}
+
+/** Keeps what it made last, for callers that ask for the same again. */
+function lastOf<Key extends object, Value>(make: (key: Key) => Value): (key: Key) => Value {
+  let last: { readonly key: Key; readonly value: Value } | null = null;
+  return (key) => {
+    if (last?.key !== key) last = { key, value: make(key) };
+    return last.value;
+  };
+}
+
+function planOf(name: string, { spec, compiled, drawnBase }: Made): PlanToRun {
   return {
     name,
     actions: compiled.actions,
     compiled,
     moneyOf: moneyIn(compiled),
     under: (values) => {
-      const { compiled: drawn, findings } = compileSpec(withValues(spec, values));
+      const { compiled: drawn, findings } = compileScenario(drawnBase(values), withValues(spec, values));
       if (drawn !== null) return { compiled: drawn, moneyOf: moneyIn(drawn) };
       const failure = findings.find(({ severity }) => severity === 'error')?.message ?? '';
       return { compiled: null, failure, moneyOf: null };
