@@ -38,13 +38,21 @@ export function measureScaling({ quick, rounds }: Options): readonly Scaling[] {
   }));
 }
 
+const fewestCells = 2e6;
+
 function costOf(size: Size, rounds: number): number {
   const workload = workloadOf('scaling', modelText(size));
   const run = kernelRunner(workload);
-  run(16);
   const cells = size.patches * size.classes * size.replicates * size.years;
-  const times = Array.from({ length: rounds }, () => processorSeconds(() => void run(size.replicates)));
-  return (median(times) / cells) * 1e9;
+  // Small ones again and again: until the kernel is compiled for speed, and for longer than the clock ticks.
+  const turns = Math.ceil(fewestCells / cells);
+  const work = (): void => {
+    for (let turn = 0; turn < turns; turn++) run(size.replicates);
+  };
+  if (turns === 1) run(16);
+  else work();
+  const times = Array.from({ length: rounds }, () => processorSeconds(work));
+  return (median(times) / (cells * turns)) * 1e9;
 }
 
 /** Patches in a square with ways to the next ones, weather the same everywhere, about 20 animals a patch and class. */
