@@ -18,7 +18,7 @@ export interface FlagshipTimes {
 }
 
 export function measureFlagship({ rounds }: Options): FlagshipTimes {
-  const compiled = compileText(readFileSync(file, 'utf8'), { replicates, years });
+  const compiled = compileText(readFileSync(file, 'utf8'), { settings: { replicates, years } });
   const time = (action: () => void): number => {
     action();
     return median(

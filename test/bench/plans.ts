@@ -71,7 +71,7 @@ export async function measurePlans({ quick, rounds }: Options): Promise<readonly
 }
 
 function plansIn(replicates: number): readonly PlanToRun[] {
-  return plansOf(compileText(readFileSync(file, 'utf8'), { replicates }).spec).plans ?? [];
+  return plansOf(compileText(readFileSync(file, 'utf8'), { settings: { replicates } }).spec).plans ?? [];
 }
 
 function riskOf(scenarios: readonly { name: string; outcomes: readonly { probability: number }[] }[], name: string) {

@@ -41,7 +41,7 @@ export function measureScaling({ quick, rounds }: Options): readonly Scaling[] {
 const fewestCells = 2e6;
 
 function costOf(size: Size, rounds: number): number {
-  const workload = workloadOf('scaling', modelText(size));
+  const workload = workloadOf('scaling', modelText(size), { files: new Map([[mapFile, mapOf(size)]]) });
   const run = kernelRunner(workload);
   const cells = size.patches * size.classes * size.replicates * size.years;
   // Small ones again and again: until the kernel is compiled for speed, and for longer than the clock ticks.
@@ -55,16 +55,24 @@ function costOf(size: Size, rounds: number): number {
   return (median(times) / (cells * turns)) * 1e9;
 }
 
-/** Patches in a square with ways to the next ones, weather the same everywhere, about 20 animals a patch and class. */
-function modelText({ patches, classes, years, replicates }: Size): string {
+const mapFile = 'patches.geojson';
+
+/** Patches in a square, in a file of their own: a spec holds no ten thousand. */
+function mapOf({ patches }: Size) {
   const width = Math.ceil(Math.sqrt(patches));
+  const features = Array.from({ length: patches }, (_, p) => ({
+    type: 'Feature',
+    geometry: { type: 'Point', coordinates: [p % width, Math.floor(p / width)] },
+    properties: { name: `P${p}` },
+  }));
+  return { ok: true as const, text: JSON.stringify({ type: 'FeatureCollection', features }) };
+}
+
+/** Ways to the patches next to each, weather the same everywhere, about 20 animals a patch and class. */
+function modelText({ patches, classes, years, replicates }: Size): string {
   const names = Array.from({ length: classes }, (_, c) => `age ${c}`);
   const all = (value: (name: string, c: number) => string): string =>
     names.map((name, c) => `${name}: ${value(name, c)}`).join(', ');
-  const places = Array.from(
-    { length: patches },
-    (_, p) => `  - { name: P${p}, at: [${p % width}, ${Math.floor(p / width)}] }`,
-  );
   const young = Math.max(1, classes - 2);
   return `skein: 1
 study: { title: Sizes, invented: true }
@@ -72,8 +80,7 @@ first-year: 1
 years: ${years}
 position: plane
 unit: km
-patches:
-${places.join('\n')}
+patches: ${mapFile}
 counts: females
 classes: [${names.join(', ')}]
 oldest: open-ended

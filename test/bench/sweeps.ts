@@ -61,7 +61,7 @@ const years = 50;
 
 function measureRuns({ quick, rounds }: Options): SweepFigures['runs'] {
   const points = quick ? 40 : 1000;
-  const hare = compileText(readFileSync('models/reed-hare.yaml', 'utf8'), { replicates, years });
+  const hare = compileText(readFileSync('models/reed-hare.yaml', 'utf8'), { settings: { replicates, years } });
   const over = {
     adult_survival: { from: 0.5, to: 0.64 },
     newborn_survival: { from: 0.42, to: 0.58 },

@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import * as layout from '../../assembly/layout.ts';
 import { headerOf, readSections } from '../../src/compile/image/read.ts';
 import { compileSpec, type CompiledModel } from '../../src/pipeline.ts';
+import type { DataFiles } from '../../src/spec/data/files.ts';
 import { readSpec } from '../../src/spec/read.ts';
 import { applySettings, type Settings } from '../../src/spec/settings.ts';
 import { work } from './tools.ts';
@@ -25,9 +26,14 @@ export function openWorkload(name: string): Workload {
   return workloadOf(name, readFileSync(file, 'utf8'));
 }
 
+interface Around {
+  readonly settings?: Settings;
+  readonly files?: DataFiles;
+}
+
 /** Errors: throws where the model has a mistake. */
-export function compileText(text: string, settings: Settings = {}): CompiledModel {
-  const { document, diagnostics } = readSpec(text, 'model.yaml');
+export function compileText(text: string, { settings = {}, files }: Around = {}): CompiledModel {
+  const { document, diagnostics } = readSpec(text, 'model.yaml', files);
   if (document === undefined) throw new Error(diagnostics.map(({ message }) => message).join('\n'));
   const applied = applySettings(document.spec, settings);
   if (!applied.ok) throw new Error(`The model has no ${applied.unknown.name}.`);
@@ -37,8 +43,8 @@ export function compileText(text: string, settings: Settings = {}): CompiledMode
 }
 
 /** From the text of a model. */
-export function workloadOf(name: string, text: string): Workload {
-  const compiled = compileText(text);
+export function workloadOf(name: string, text: string, around: Around = {}): Workload {
+  const compiled = compileText(text, around);
   const header = headerOf(compiled.image);
   mkdirSync(work, { recursive: true });
   const [imageFile, numbersFile] = [join(work, `${name}.image`), join(work, `${name}.txt`)];
