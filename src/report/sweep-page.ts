@@ -8,6 +8,7 @@ import { percent } from '../view/number.ts';
 import { drawBars, type SensitivityBars } from '../view/sweep/bars.ts';
 import { drawCells, type Cell } from '../view/sweep/cell-map.ts';
 import { drawResponse } from '../view/sweep/response-curve.ts';
+import { scrolling } from '../view/table.ts';
 import { writeDocument } from './document.ts';
 import { styleSheet } from './style.ts';
 import { noneSeen, numberText, three, withUnit } from './sweep-text.ts';
@@ -42,10 +43,15 @@ function quantitySection(quantity: QuantitySummary, summary: SweepSummary, maps:
   const map = maps.find((one) => one.quantity === name);
   return mark`<section><h2>${name}</h2>
 <p>${meaning} From ${write(least)} to ${write(greatest)}, ${write(mean)} in the mean${noneSeen(quantity, summary)}.</p>
-${bars === null ? null : mark`<h3>What matters most</h3><figure>${drawBars(bars)}</figure>`}
-${map === undefined ? null : mark`<h3>Over two numbers</h3><figure>${heatFigure(labelled(map, summary), write)}</figure>`}
+${bars === null ? null : mark`<h3>What matters most</h3>${wide(bars.title, drawBars(bars))}`}
+${map === undefined ? null : mark`<h3>Over two numbers</h3>${wide(`${name} over two numbers`, heatFigure(labelled(map, summary), write))}`}
 <h3>Over one number</h3><div>${factors.map((factor) => responseFigure({ ...factor, name: withUnit(factor.name, summary) }, name, write))}</div>
-<details><summary>The same as a table, by ${orderedBy}</summary>${responseTable(factors, write)}</details></section>`;
+<details><summary>The same as a table, by ${orderedBy}</summary>${scrolling(`${name}, by number and value`, responseTable(factors, write))}</details></section>`;
+}
+
+/** On a phone it keeps its size, and is scrolled. */
+function wide(label: string, drawn: Markup): Markup {
+  return mark`<figure class="steady">${scrolling(label, drawn)}</figure>`;
 }
 
 function barsOf({ name, factors, orderedBy }: QuantitySummary, { design }: SweepSummary): SensitivityBars | null {
@@ -84,8 +90,10 @@ function responseFigure(
     typeof from === 'number' && typeof to === 'number' ? [{ at: (from + to) / 2, mean, lower, upper }] : [],
   );
   if (points.length < 2) return null;
+  const sliced = response.groups.some(({ from, to }) => from !== to);
+  const at = sliced ? 'the middle of each slice of equally many points' : 'each value that was run';
   const level = measure.startsWith('growth') && !measure.includes(' less ') ? 1 : null;
-  return drawResponse({ measure, number: name, points, level, write });
+  return drawResponse({ measure, number: name, points, at, level, write });
 }
 
 function responseTable(factors: readonly FactorSummary[], write: (value: number) => string): Markup {
@@ -144,5 +152,6 @@ function preferredFigure({ quantity, scenarios, x, y, cells }: PreferredMap): Ma
   });
   const description =
     'Each cell names the plan that is best in the mean there, or that several are equal; the line is where the preferred plan changes.';
-  return mark`<figure>${drawCells({ title: `Best by ${quantity}`, description, x: axisOf(x), y: axisOf(y), cells: drawn })}</figure>`;
+  const title = `Best by ${quantity}`;
+  return wide(title, drawCells({ title, description, x: axisOf(x), y: axisOf(y), cells: drawn }));
 }

@@ -2,7 +2,7 @@
 import { area, line, scaleLinear } from 'd3';
 import { figure } from '../figure.ts';
 import { mark, type Markup } from '../markup.ts';
-import { deep, hairline, ink, softInk, tint, umber } from '../palette.ts';
+import { deep, hairline, ink, paper, softInk, tint, umber } from '../palette.ts';
 
 export interface ResponseCurve {
   readonly measure: string;
@@ -14,14 +14,18 @@ export interface ResponseCurve {
     readonly lower: number;
     readonly upper: number;
   }[];
+  /** What a mark stands for, such as `each value that was run`. */
+  readonly at: string;
   /** A level that matters, such as growth of 1; null for none. */
   readonly level: number | null;
   readonly write: (value: number) => string;
 }
 
 const size = { width: 360, height: 250 };
+/** More of them would run into each other. */
+const mostMarks = 40;
 
-export function drawResponse({ measure, number, points, level, write }: ResponseCurve): Markup {
+export function drawResponse({ measure, number, points, at, level, write }: ResponseCurve): Markup {
   const values = points.flatMap(({ lower, upper }) => [lower, upper]).concat(level ?? []);
   const [least, most] = [Math.min(...values), Math.max(...values)];
   const x = scaleLinear([points[0]?.at ?? 0, points.at(-1)?.at ?? 1], [62, size.width - 14]);
@@ -50,15 +54,22 @@ export function drawResponse({ measure, number, points, level, write }: Response
     level === null
       ? null
       : mark`<line x1="62" x2="${size.width - 14}" y1="${y(level)}" y2="${y(level)}" stroke="${umber}" stroke-dasharray="6 3"/>`;
+  const marks =
+    points.length > mostMarks
+      ? null
+      : points.map(
+          (one) => mark`<circle cx="${x(one.at)}" cy="${y(one.mean)}" r="3.2" fill="${deep}" stroke="${paper}"/>`,
+        );
   const content = mark`<text x="0" y="16" fill="${ink}">${measure}</text>${rules}${foot}
 <path d="${band([...points]) ?? ''}" fill="${tint}"/>${levelLine}
-<path d="${mean([...points]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5"/>
+<path d="${mean([...points]) ?? ''}" fill="none" stroke="${deep}" stroke-width="2.5"/>${marks}
 <text x="${(62 + size.width) / 2}" y="${size.height - 6}" text-anchor="middle" fill="${ink}">${number}</text>`;
   const [first, last] = [points[0], points.at(-1)];
   const ends =
     first === undefined || last === undefined
       ? ''
       : `From ${write(first.mean)} at ${String(first.at)} to ${write(last.mean)} at ${String(last.at)}. `;
-  const description = `${ends}The line is the mean, the band holds the middle 90 % of the points.`;
+  const marked = marks === null ? '' : `, marked at ${at}`;
+  const description = `${ends}The line is the mean${marked}, the band holds the middle 90 % of the points.`;
   return figure(size, { title: `${measure} over ${number}`, description }, content);
 }
