@@ -116,8 +116,13 @@ function labelled<M extends HeatMap | PreferredMap>(map: M, summary: SweepSummar
   return { ...map, x: own(map.x), y: own(map.y) };
 }
 
+/** A slice of values is told by its middle: there is no room for both ends. */
 function axisOf({ name, groups }: HeatAxis) {
-  return { name, labels: groups.map(rangeText) };
+  const sliced = groups.some(([from, to]) => from !== to);
+  const labels = groups.map(([from, to]) =>
+    typeof from === 'number' && typeof to === 'number' ? String(Number(((from + to) / 2).toPrecision(3))) : from,
+  );
+  return { name: sliced ? `${name} (middles of slices)` : name, labels: labels.map(String) };
 }
 
 function heatFigure({ quantity, x, y, cells }: HeatMap, write: (value: number) => string): Markup {
