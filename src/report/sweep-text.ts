@@ -115,27 +115,44 @@ function tableOf({ design }: SweepSummary, { unit }: QuantitySummary): FactorTab
 
 function rankingText({ quantity, better, scenarios, agree, factors }: Ranking, style: TextStyle): string {
   const sure = agree === null ? '' : `; both halves of the runs name the same one at ${percent(agree)} of the points`;
+  const head = `${bold(`best by ${printable(quantity)}`, style)} (${better} is better)`;
+  if (factors.every(({ groups }) => groups.every(({ best }) => allEqual(best))))
+    return wrap(`${head}: no scenario differs from another by it`, style);
   return [
-    wrap(`${bold(`best by ${printable(quantity)}`, style)} (${better} is better)${sure}`, style),
+    wrap(`${head}${sure}`, style),
     fittedColumns(
       ['scenario', 'best at'],
       scenarios.map(({ name, best }) => [name, percent(best)]),
       style,
     ),
     fittedColumns(
-      ['number', 'decides', 'where the preferred scenario changes'],
-      factors.map(({ name, decides, switches }) => [
-        name,
-        decides === null ? '' : percent(decides),
-        switches.length === 0 ? 'nowhere' : switches.map(switchText).join('; '),
-      ]),
+      ['number', 'decides'],
+      factors.map(({ name, decides }) => [name, decides === null ? '' : percent(decides)]),
       style,
     ),
+    ...factors.map((factor) => wrap(preferredText(factor), style)),
   ].join('\n');
 }
 
-function switchText({ at, from, to }: Ranking['factors'][number]['switches'][number]): string {
-  return `${at === null ? '' : `${three(at)}: `}${from} to ${to}`;
+/** Which scenario is best in the mean, from the least value of a number to its greatest. */
+function preferredText({ name, groups, switches }: Ranking['factors'][number]): string {
+  const [first] = groups;
+  if (first === undefined) return '';
+  if (switches.length === 0) return `over ${printable(name)}: ${preferredName(first.preferred)} all along`;
+  const changed = groups.filter(({ preferred }, i) => i > 0 && groups[i - 1]?.preferred !== preferred);
+  const later = changed.map(({ from, preferred }, i) => {
+    const at = switches[i]?.at ?? null;
+    return `${at === null ? `at ${printable(String(from))}` : `from ${three(at)}`} ${preferredName(preferred)}`;
+  });
+  return `over ${printable(name)}: first ${[preferredName(first.preferred), ...later].join('; ')}`;
+}
+
+function preferredName(preferred: string): string {
+  return preferred === 'equal' ? 'several alike' : `“${printable(preferred)}”`;
+}
+
+function allEqual(shares: readonly number[]): boolean {
+  return shares.every((share) => Math.abs(share * shares.length - 1) < 1e-9);
 }
 
 function throughOne(factors: readonly FactorSummary[]): readonly string[] {

@@ -140,7 +140,9 @@ function rangeOf({ name, range }: Ranged, { spec, model }: CompiledModel, told: 
     const values = range.map((value) => numberIn(value) ?? value);
     const text = values.find((value) => typeof value === 'string');
     if (text === undefined) return { by: 'values', values };
-    told.fail('sweep-range', path, `\`${text}\` is no number`, { expected: 'numbers' });
+    told.fail('sweep-range', path, `\`${text}\` is no number`, {
+      expected: `numbers for \`${name}\`, or a range from the lower to the upper one (with --over, \`${name}=from:to\`)`,
+    });
     return null;
   }
   const steps = range.steps ?? usualSteps;

@@ -193,6 +193,12 @@ test('what is asked wrongly is told with how to mend it', () => {
   expect(existsSync(join(cwd, 'out'))).toBe(false);
 });
 
+test('--points is refused where the design has no use for it', () => {
+  const { code, err } = skein(['sweep', ponds, ...over, '--points', '500', '--plan']);
+  expect(code).toBe(2);
+  expect(err).toContain('--points says nothing of the design `grid`: give each number its steps');
+});
+
 test('a list of points is read from a table, and a point that cannot be is a row with its reason', () => {
   const cwd = folder();
   writeFileSync(join(cwd, 'points.csv'), 'survival.adult,wandering.leaving\n0.5,0.1\n1.5,\n0.6,0.2\n');

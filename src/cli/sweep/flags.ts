@@ -139,6 +139,11 @@ export function askedOf(section: SweepSpec | undefined, options: SweepOptions): 
     delete named.list;
     delete named.over;
   }
+  const whole = list === undefined ? (design ?? named.design ?? 'grid') : 'list';
+  if (points !== undefined && (whole === 'grid' || whole === 'one at a time' || whole === 'list')) {
+    const other = 'give each number its steps (name=from:to:steps), or take another --design';
+    throw new Ending(exitCodes.usage, `--points says nothing of the design \`${whole}\`: ${other}.`);
+  }
   return {
     ...named,
     ...(over === undefined ? {} : { over }),

@@ -1,5 +1,6 @@
 // What a sweep will do, in words, before it begins.
 import { openDesign } from '../../sweep/design/design.ts';
+import type { Value } from '../../sweep/design/factor.ts';
 import { ownUnit, type Manifest } from '../../sweep/manifest.ts';
 
 const counted = (n: number, one: string, more = `${one}s`): string =>
@@ -15,9 +16,13 @@ export function planText({ model, design, measures, points, parts, runs, columns
   return [
     `${model}: ${counted(points, 'point')} (${design.design}) in ${counted(parts, 'part')}`,
     `  over      ${names.map((name) => name + unitIn(columns, name)).join(', ')}`,
-    `  begins    ${names.map((name, k) => `${name} ${String(first[k])}`).join(', ')}`,
+    `  begins    ${names.map((name, k) => `${name} ${shown(first[k])}`).join(', ')}`,
     `  measures  ${measures.join(', ')}${asked}`,
   ].join('\n');
+}
+
+function shown(value: Value | undefined): string {
+  return typeof value === 'number' ? String(Number(value.toPrecision(4))) : String(value);
 }
 
 function unitIn(columns: Manifest['columns'], name: string): string {
@@ -30,7 +35,10 @@ export function costText(
   { left, threads }: { readonly left: number; readonly threads: number },
 ): string {
   const seconds = Math.ceil((msAPoint * left) / 1000 / threads);
-  const each = msAPoint < 1 ? `${(msAPoint * 1000).toFixed(0)} µs` : `${msAPoint.toPrecision(2)} ms`;
+  const each =
+    msAPoint < 1
+      ? `${(msAPoint * 1000).toFixed(0)} µs`
+      : `${msAPoint < 10 ? msAPoint.toFixed(1) : msAPoint.toFixed(0)} ms`;
   return `  cost      ${each} a point, tried at some: about ${timeWords(seconds)} in ${counted(threads, 'thread')}`;
 }
 

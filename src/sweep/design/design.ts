@@ -40,6 +40,11 @@ export type DesignPlan =
 
 export type DesignName = DesignPlan['design'];
 
+/** Whether the other numbers differ by chance between points with different values of one. */
+export function isSampled({ design, factors }: DesignPlan): boolean {
+  return design !== 'grid' && design !== 'one at a time' && factors.length > 1;
+}
+
 export interface Design {
   readonly plan: DesignPlan;
   /** May be beyond what can be run: check before. */

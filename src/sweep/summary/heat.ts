@@ -1,4 +1,5 @@
 // A measure over two numbers at a time: its mean in each cell, the other numbers taken together.
+import { isSampled } from '../design/design.ts';
 import type { Value } from '../design/factor.ts';
 import { groupsOf } from './response.ts';
 import type { SweepSummary } from './summarise.ts';
@@ -41,7 +42,7 @@ interface Grouped {
 
 function axisOf({ manifest, values }: Swept, k: number, rows: readonly number[]): Grouped {
   const own = values[k] ?? [];
-  const groups = groupsOf(own, rows, 10);
+  const groups = groupsOf(own, { rows, sampled: isSampled(manifest.design) }, 10);
   const of = new Int32Array(manifest.points).fill(-1);
   groups.forEach((group, g) => {
     for (const row of group) of[row] = g;

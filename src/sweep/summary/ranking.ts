@@ -47,9 +47,11 @@ export interface RankingRequest {
     readonly values: Float64Array | readonly string[];
     readonly rows: readonly number[];
   }[];
+  /** As of a response. */
+  readonly sampled: boolean;
 }
 
-export function rankScenarios({ quantity, better, scenarios, factors }: RankingRequest): Ranking {
+export function rankScenarios({ quantity, better, scenarios, factors, sampled }: RankingRequest): Ranking {
   const sign = better === 'less' ? 1 : -1;
   const half = (pick: (observed: Observed) => Float64Array) => scenarios.map(({ observed }) => pick(observed));
   const [first, second] = [half((observed) => observed.first), half((observed) => observed.second)];
@@ -72,7 +74,7 @@ export function rankScenarios({ quantity, better, scenarios, factors }: RankingR
     agree: noisy ? agreement(first, second, { known, sign }) : null,
     factors: factors
       .map(({ name, values, rows }) => {
-        return factorRanking(name, values, { worst, scenarios, rows: rows.filter(isKnown), best });
+        return factorRanking(name, values, { worst, scenarios, rows: rows.filter(isKnown), best, sampled });
       })
       .toSorted((a, b) => (b.decides ?? -1) - (a.decides ?? -1)),
   };
@@ -107,11 +109,12 @@ interface Ranked {
   readonly scenarios: readonly RankedScenario[];
   readonly rows: readonly number[];
   readonly best: readonly number[];
+  readonly sampled: boolean;
 }
 
 function factorRanking(name: string, values: Float64Array | readonly string[], ranked: Ranked): FactorRanking {
-  const { worst, scenarios, rows, best } = ranked;
-  const groups = groupsOf(values, rows).map((own): RankingGroup => {
+  const { worst, scenarios, rows, best, sampled } = ranked;
+  const groups = groupsOf(values, { rows, sampled }).map((own): RankingGroup => {
     const [first = 0, last = first] = [own[0], own.at(-1)];
     const means = worst.map((one) => own.reduce((sum, row) => sum + (one[row] ?? 0), 0));
     const least = Math.min(...means);
@@ -125,7 +128,7 @@ function factorRanking(name: string, values: Float64Array | readonly string[], r
       preferred,
     };
   });
-  return { name, groups, switches: switchesOf(groups), decides: decided(groups, best) };
+  return { name, groups, switches: switchesOf(groups), decides: decided(groups, { best, sampled }) };
 }
 
 function switchesOf(groups: readonly RankingGroup[]): FactorRanking['switches'] {
@@ -137,8 +140,11 @@ function switchesOf(groups: readonly RankingGroup[]): FactorRanking['switches'] 
   });
 }
 
-/** Of the variance of being best, the share between the values of the number, all scenarios together (a correlation ratio). */
-function decided(groups: readonly RankingGroup[], best: readonly number[]): number | null {
+/**
+ * Of the variance of being best, the share between the values of the number, all scenarios together: a correlation ratio, of
+ * sampled points ε² (Kelley 1935), which is 0 in the mean where the number decides nothing. Null where nothing differs.
+ */
+function decided(groups: readonly RankingGroup[], { best, sampled }: Pick<Ranked, 'best' | 'sampled'>): number | null {
   const points = groups.reduce((sum, group) => sum + group.points, 0);
   const total = best.reduce((sum, share) => sum + share * (1 - share), 0);
   if (!(total > 0)) return null;
@@ -149,5 +155,7 @@ function decided(groups: readonly RankingGroup[], best: readonly number[]): numb
         best.reduce((inner, share, s) => inner + ((group.best[s] ?? 0) - share) * ((group.best[s] ?? 0) - share), 0),
     0,
   );
-  return between / points / total;
+  const share = between / points / total;
+  if (!sampled) return share;
+  return points > groups.length ? Math.max(0, 1 - ((1 - share) * (points - 1)) / (points - groups.length)) : null;
 }

@@ -21,10 +21,12 @@ export interface Response {
 
 const mostValues = 60;
 const usualSlices = 20;
+/** Points of a sampled design that a group holds at least, so that its mean is not that of one point's other numbers. */
+const fewestInSlice = 5;
 
 export interface RowsAsked {
   readonly rows: readonly number[];
-  /** Points of a grid are balanced: nothing between its values is chance. */
+  /** Whether the other numbers differ between the points by chance: those of a grid are balanced, and one at a time they stay. */
   readonly sampled: boolean;
 }
 
@@ -35,17 +37,17 @@ export function responseTo(
   { rows, sampled }: RowsAsked,
 ): Response {
   const known = rows.filter((row) => !Number.isNaN(measure[row] ?? NaN));
-  const groups = groupsOf(values, known);
+  const groups = groupsOf(values, { rows: known, sampled });
   return {
     groups: groups.map((own) => groupOf(values, measure, own)),
     explained: explainedBy(groups, measure, sampled),
   };
 }
 
-/** Rows by value, or in slices of equally many where there are many values. */
+/** Rows by value, or in slices of equally many where there are many values, or too few points a value to say anything of it. */
 export function groupsOf(
   values: Float64Array | readonly string[],
-  rows: readonly number[],
+  { rows, sampled }: RowsAsked,
   slices = usualSlices,
 ): readonly (readonly number[])[] {
   const byValue = new Map<Value, number[]>();
@@ -56,6 +58,8 @@ export function groupsOf(
     else if (byValue.size < mostValues) byValue.set(value, [row]);
     else return slicesOf(values, rows, slices);
   }
+  if (sampled && values instanceof Float64Array && rows.length < 2 * byValue.size)
+    return slicesOf(values, rows, Math.min(slices, Math.max(1, Math.floor(rows.length / fewestInSlice))));
   const all = [...byValue.entries()];
   if (values instanceof Float64Array) all.sort(([a], [b]) => Number(a) - Number(b));
   return all.map(([, own]) => own);

@@ -1,6 +1,6 @@
 // What a sweep says: the response to each factor with its spread, what matters most and by which measure of it, and where growth
 // goes through 1.
-import type { DesignName } from '../design/design.ts';
+import { isSampled, type DesignName } from '../design/design.ts';
 import { levelsOf, type Value } from '../design/factor.ts';
 import { isText, ownUnit } from '../manifest.ts';
 import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
@@ -147,7 +147,7 @@ function rankingsOf(swept: Swept): readonly Ranking[] {
       const observed = observedOf(numbers, columnOf(name, one));
       return observed === null ? [] : [{ name: one, observed }];
     });
-    return [rankScenarios({ quantity: name, better, scenarios: ranked, factors })];
+    return [rankScenarios({ quantity: name, better, scenarios: ranked, factors, sampled: isSampled(design) })];
   });
 }
 
@@ -162,7 +162,7 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth
   const factors = design.factors.map((factor, k): FactorSummary => {
     const response = responseTo(swept.values[k] ?? [], whole, {
       rows: rowsOf(swept, k),
-      sampled: design.design !== 'grid',
+      sampled: isSampled(design),
     });
     return {
       name: factor.name,
