@@ -6,7 +6,7 @@ import { inFileOrder } from '../diagnostic/tell.ts';
 import { wrongNames } from '../model/wrong-names.ts';
 import { compileBase, compileScenario, compileSpec, type Compilation, type CompiledModel } from '../pipeline.ts';
 import type { SpecDocument } from '../spec/document.ts';
-import { locateFinding } from '../spec/finding.ts';
+import { locateFinding, type Finding } from '../spec/finding.ts';
 import { nearestScenario, scenariosOf } from '../spec/plans/scenarios.ts';
 import { readSpec } from '../spec/read.ts';
 import type { Spec } from '../spec/schema/spec.ts';
@@ -102,10 +102,17 @@ function compileEvery(spec: Spec): Compilation {
     for (const one of compileScenario(base, scenario.spec).findings) {
       if (told.has(JSON.stringify(one))) continue;
       told.add(JSON.stringify(one));
-      all.push(one);
+      all.push(underScenario(one, scenario.name));
     }
   }
   return { compiled: all.some(({ severity }) => severity === 'error') ? null : compiled, findings: all };
+}
+
+/** A mistake of a plan that is told at a place of the model names the plan. */
+function underScenario(finding: Finding, scenario: string): Finding {
+  const { path, details = {} } = finding;
+  if (path[0] === 'actions' || path[0] === 'scenarios' || details.reason !== undefined) return finding;
+  return { ...finding, details: { ...details, reason: `So under the plan \`${scenario}\`.` } };
 }
 
 export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {

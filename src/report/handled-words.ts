@@ -5,8 +5,11 @@ import { decimal, whole } from '../view/number.ts';
 const did = { take: 'taken', move: 'moved', add: 'released' } as const;
 
 /** For each of them its name and what came of it. */
-export function handledWords(results: RunResults, animals: string): readonly (readonly [string, string])[] {
-  return results.handled.map((one) => [one.phase, sentence(one, { animals, years: results.years })]);
+export function handledWords(
+  { handled, years }: Pick<RunResults, 'handled' | 'years'>,
+  animals: string,
+): readonly (readonly [string, string])[] {
+  return handled.map((one) => [one.phase, sentence(one, { animals, years })]);
 }
 
 interface Told {

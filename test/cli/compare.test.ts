@@ -84,6 +84,7 @@ describe('skein compare', () => {
     expect(words).toContain('Strength: limited');
     expect(words).toMatch(/posters none 0\.0 to 0\.0 the same no reliable gain/);
     expect(words).toContain('takes animals from Pond (“moves”)');
+    expect(words).toMatch(/“[^”]+”, moves: \d+\.\d \w+ moved over \d+ years in the mean/);
     expect(words).toContain('An exit rule to start from: stop catching when fewer than');
     expect(words).toContain('after IUCN/SSC 2013');
     expect(words).toContain('is decided by the wildlife authority');
@@ -230,6 +231,7 @@ test('skein report of a model with plans writes the page of their comparison', (
   expect(code).toBe(0);
   const page = readFileSync(join(cwd, 'page.html'), 'utf8');
   expect(page).toContain('Who signs');
+  expect(page).toContain('What handling animals comes to');
   expect(page).toContain('Would another sound model reverse it?');
   expect(
     skein(['report', model, '-o', 'one.html', '--scenario', 'fence', '--replicates', '50', '--quiet'], { cwd }).code,

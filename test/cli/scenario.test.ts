@@ -1,5 +1,5 @@
 // --scenario takes a plan with any command.
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, expect, test } from 'vitest';
@@ -33,6 +33,17 @@ test('as now is the model without its actions', () => {
   const now = skein(['path', bags, '--scenario', 'as now', '--json', '--quiet']);
   const abundance = (out: string): unknown => JSON.parse(out).abundance;
   expect(abundance(now.out)).toEqual(abundance(plain.out));
+});
+
+test('a mistake that only a plan makes names the plan where it is told at a place of the model', () => {
+  const path = join(folder, 'drained.yaml');
+  const hares = readFileSync('models/reed-hare.yaml', 'utf8');
+  writeFileSync(path, hares.replace('capacity: { add: 70 }', 'capacity: { add: -200 }'));
+  const { code, err } = skein(['check', path]);
+  expect(code).toBe(1);
+  expect(err).toMatch(
+    /The capacity of Abbot's wash is -?\d.* in \d{4}\.[^]*because {3}So under the plan `rewet the wash`\./u,
+  );
 });
 
 test('a wrong name gets the nearest', () => {

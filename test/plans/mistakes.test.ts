@@ -57,6 +57,16 @@ test('a mistake in what an action lays is told at the action', () => {
   expect(renderDiagnostics([found!], { colour: false, width: 100 })).toContain(`test.yaml:${String(line)}:`);
 });
 
+test('a price with commas between its digits, and a discount in percent that is written as a number, are told how to be written', () => {
+  const deed = '{ kind: habitat, in: North fen, capacity: { add: 5 }, cost: { once: 90,000 } }';
+  const more = 'money: { currency: crowns, price-year: 2026, discount: 3 }\n';
+  const { diagnostics } = tryText(fens({ actions: `  deed: ${deed}\n`, scenarios: '  plan: [deed]\n', more }));
+  expect(diagnostics.map(({ code, fix }) => [code, fix])).toEqual([
+    ['out-of-range', 'If percent was meant, write 3 % or 0.03.'],
+    ['unknown-key', 'If it ends a number, write that without commas between its digits.'],
+  ]);
+});
+
 test('a scenario must not be called as today is', () => {
   expect(errorsOf(fens({ scenarios: '  as now: []\n' }))).toContain('reserved-name');
 });

@@ -107,6 +107,7 @@ test.each([
     'uncertainty',
   ],
   ['times: { value: 2 * litter, uncertainty: { standard-error: 0.1 } }', 'impossible-uncertainty', 'uncertainty'],
+  ['times: { value: 1.05, uncertainty: { standard-error: -0.1 } }', 'impossible-uncertainty', '-0.1'],
   ['times: { value: 1.05 }', 'missing-key', 'times'],
   ['times: { value: 1.05, uncertainty: { sd: 0.1 } }', 'unknown-key', 'sd'],
 ])('a mistake is told where the number stands: %s', (effect, code, word) => {

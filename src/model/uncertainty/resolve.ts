@@ -73,7 +73,14 @@ function distributionIn(context: Context, { spec, path, value, kind }: Asked): U
   const error = spec['standard-error'];
   if (error !== undefined) {
     const size = context.numbers.value(error, [...path, 'standard-error'], { year: context.time.firstYear });
-    return size >= 0 ? fromStandardError({ value, kind }, size) : null;
+    if (size >= 0) return fromStandardError({ value, kind }, size);
+    if (size < 0) {
+      fail(context, 'impossible-uncertainty', [...path, 'standard-error'], {
+        message: 'A standard error is never below zero',
+        details: { found: String(size) },
+      });
+    }
+    return null;
   }
   const key = given[0] ?? 'interval';
   const ends = spec.interval ?? spec.uniform ?? spec.triangular ?? [];

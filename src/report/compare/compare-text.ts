@@ -6,7 +6,7 @@ import { detailsText, differencesTable } from './details-text.ts';
 import { amountsText, chancesText, meaningsText } from './plans-text.ts';
 import { robustWords, variantWords } from './robust-words.ts';
 import type { CompareTextStyle } from './style.ts';
-import { hasMoves, hasTakes, sourcesWords, takeWords, translocationSteps } from './translocation.ts';
+import { handledByPlan, hasMoves, hasTakes, sourcesWords, takeWords, translocationSteps } from './translocation.ts';
 import { priceWords } from './words.ts';
 
 export function compareText(comparison: Comparison, style: CompareTextStyle): string {
@@ -68,7 +68,7 @@ function robustness(all: readonly Robustness[], style: TextStyle): string {
 }
 
 function handling(comparison: Comparison, style: CompareTextStyle): string {
-  const said = sourcesWords(comparison, style.animals);
+  const said = [...handledByPlan(comparison, style.animals), ...sourcesWords(comparison, style.animals)];
   const steps = hasMoves(comparison)
     ? [
         'Before any animal is moved or released (after IUCN/SSC 2013):',

@@ -2,6 +2,7 @@
 // and who decides on a take.
 import type { Comparison, SourceRisk } from '../../compare/results.ts';
 import { whole } from '../../view/number.ts';
+import { handledWords } from '../handled-words.ts';
 import { between, change, seenChance } from './words.ts';
 
 /** After the guidelines of IUCN/SSC (2013), in our own words and from memory. */
@@ -14,6 +15,13 @@ export const translocationSteps: readonly string[] = [
   'Write an exit rule before the first animal is caught: at what signs the work stops or is turned back.',
   'Watch both places long enough to know, go on caring for them, and publish what came of it.',
 ];
+
+/** Of each plan, what its takes, moves and releases came to, and how many animals they looked for in vain. */
+export function handledByPlan({ scenarios, years }: Comparison, animals: string): readonly string[] {
+  return scenarios.flatMap(({ name, handled }) =>
+    handledWords({ handled, years }, animals).map(([phase, words]) => `“${name}”, ${phase}: ${words}.`),
+  );
+}
 
 /** Of each move, for its source: what each plan with it does there, and then when to stop. */
 export function sourcesWords({ sources, replicates }: Comparison, animals: string): readonly string[] {

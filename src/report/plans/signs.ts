@@ -1,10 +1,19 @@
 // Before anything is done: what handling animals asks for, and who signs.
 import type { Comparison } from '../../compare/results.ts';
 import { mark, type Markup } from '../../view/markup.ts';
-import { hasMoves, hasTakes, sourcesWords, takeWords, translocationSteps } from '../compare/translocation.ts';
+import {
+  handledByPlan,
+  hasMoves,
+  hasTakes,
+  sourcesWords,
+  takeWords,
+  translocationSteps,
+} from '../compare/translocation.ts';
 import { section } from '../section/section.ts';
 
 export function signsSection(comparison: Comparison, animals: string): Markup {
+  const handled = handledByPlan(comparison, animals).map((text) => mark`<li>${text}</li>`);
+  const came = handled.length === 0 ? null : mark`<h3>What handling animals comes to</h3><ul>${handled}</ul>`;
   const sources = sourcesWords(comparison, animals).map((text) => mark`<p>${text}</p>`);
   const steps = hasMoves(comparison)
     ? mark`<h3>Before any animal is moved or released</h3>${sources}<p>In the order of the guidelines of IUCN/SSC (2013):</p><ol>${translocationSteps.map((step) => mark`<li>${step}</li>`)}</ol>`
@@ -22,6 +31,6 @@ export function signsSection(comparison: Comparison, animals: string): Markup {
     'signs',
     'Who signs',
     mark`<p>The model is one input. Permits, local law, the rights of those who live there and the judgement of qualified people come before it.</p>
-${steps}${take}<dl class="numbers signs">${blanks}</dl>`,
+${came}${steps}${take}<dl class="numbers signs">${blanks}</dl>`,
   );
 }

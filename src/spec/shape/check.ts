@@ -67,7 +67,14 @@ export function tellUnknownKey(entry: SourceEntry, known: readonly string[], rep
   put(
     report,
     { code: 'unknown-key', message: `\`${entry.key}\` is not a key of this section`, span: entry.keySpan },
-    { nearest, expected: nearest === undefined ? few : undefined },
+    {
+      nearest,
+      expected: nearest === undefined ? few : undefined,
+      // `{ once: 90,000 }` is the key `once` and a key `000`.
+      fix: /^\d{3}$/u.test(entry.key)
+        ? 'If it ends a number, write that without commas between its digits.'
+        : undefined,
+    },
   );
 }
 

@@ -71,8 +71,13 @@ function checkNumber(scalar: SourceScalar, shape: Shape, subject: Subject, repor
   put(
     report,
     { code: 'out-of-range', message: `\`${subject.label}\` is outside its limits`, span: scalar.span },
-    { found: scalar.source, expected: expectationOf(shape) },
+    { found: scalar.source, expected: expectationOf(shape), fix: percentInstead(value, shape) },
   );
+}
+
+function percentInstead(value: number, { minimum, maximum }: Shape): string | undefined {
+  if (minimum !== 0 || maximum !== 1 || !(value > 1 && value <= 100)) return undefined;
+  return `If percent was meant, write ${value} % or ${value / 100}.`;
 }
 
 function within(value: number, shape: Shape): boolean {
