@@ -67,7 +67,7 @@ class Names {
     let [unit, span] = ['', node.span];
     const entries = node.entries.map((entry): SourceEntry => {
       if (entry.key !== 'value' || entry.value.kind !== 'scalar') return entry;
-      const split = amountAndUnit(entry.value.source);
+      const split = amountOf(entry.value.source);
       [unit, span] = [split.unit, entry.value.span];
       const number = Number(split.amount);
       const value = Number.isFinite(number) ? number : split.amount;
@@ -83,6 +83,13 @@ class Names {
     const fix = 'Rename the action or the other number.';
     put(this.#report, { code: 'ambiguous-name', message, span: keySpan }, { fix });
   }
+}
+
+/** Percent become a share, as in any other number: the standard error beside them is one of a share, and may be in percent, too. */
+function amountOf(source: string): ReturnType<typeof amountAndUnit> {
+  const split = amountAndUnit(source);
+  const share = Number(split.amount) / 100;
+  return split.unit === '%' && Number.isFinite(share) ? { amount: String(share), unit: '' } : split;
 }
 
 function nameOf(path: readonly string[]): string {

@@ -120,6 +120,21 @@ test.each([
   expect(place.text.slice(place.column - 1).startsWith(word)).toBe(true);
 });
 
+test('percent are a share, whose standard error is one of a share', () => {
+  const moves =
+    'moves: { kind: move, from: North fen, to: South fen, number: { adult: 6 }, after: natal, handling-survival: ';
+  const told = [
+    '{ value: 95 %, uncertainty: { standard-error: 2 % } }',
+    '{ value: 0.95, uncertainty: { standard-error: 0.02 } }',
+  ];
+  const [percent, share] = told.map((number) => {
+    const { model } = compiledOf(fens({ actions: `  ${moves}${number} }\n`, scenarios: '  plan: [moves]\n' }), 'plan');
+    return model.uncertainty!.parameters;
+  });
+  expect(share![0]).toMatchObject({ name: 'moves_handling_survival', value: 0.95, distribution: { shape: 'beta' } });
+  expect(percent).toEqual(share);
+});
+
 test('a name that is taken is told', () => {
   const text = inPlace.replace('litter: 2.6 }', 'litter: 2.6, rewet_area_add: 4 }');
   const { diagnostics } = readSpec(text, 'test.yaml');
