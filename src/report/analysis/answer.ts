@@ -51,10 +51,20 @@ function roles({ patches, growthRate }: Analysis): readonly string[] {
   if (growthRate > 1 && (patches ?? []).every(({ growthAlone }) => growthAlone < 1)) {
     lines.push('No patch would last alone, with whoever leaves it lost: they hold one another up.');
   }
-  const dearest = [...(patches ?? [])].sort((a, b) => (b.removalLoss ?? 0) - (a.removalLoss ?? 0))[0];
-  if (dearest?.removalLoss) {
-    const without = growthRate - dearest.removalLoss;
-    lines.push(`The growth rests most on ${dearest.patch}: without it the rest ${change(without)}.`);
-  }
-  return lines;
+  return [...lines, ...restsOn(patches ?? [], growthRate)];
+}
+
+/** Beside the growth rate, what losses that differ in rounding alone may lie apart. */
+const rounding = 1e-9;
+
+/** The patch without which most is lost, or those that are alike in this. */
+function restsOn(patches: NonNullable<Analysis['patches']>, growthRate: number): readonly string[] {
+  const most = patches.reduce((loss, { removalLoss }) => Math.max(loss, removalLoss ?? 0), 0);
+  if (!(most > 0)) return [];
+  const dearest = patches.filter(({ removalLoss }) => most - (removalLoss ?? 0) <= rounding * growthRate);
+  const names = listed(dearest.map(({ patch }) => patch));
+  const without = change(growthRate - most);
+  if (dearest.length === 1) return [`The growth rests most on ${names}: without it the rest ${without}.`];
+  const on = dearest.length < patches.length ? 'most on' : 'on';
+  return [`The growth rests ${on} ${names} alike: without one of them the rest ${without}.`];
 }
