@@ -119,10 +119,12 @@ function labelled<M extends HeatMap | PreferredMap>(map: M, summary: SweepSummar
 /** A slice of values is told by its middle: there is no room for both ends. */
 function axisOf({ name, groups }: HeatAxis) {
   const sliced = groups.some(([from, to]) => from !== to);
-  const labels = groups.map(([from, to]) =>
-    typeof from === 'number' && typeof to === 'number' ? String(Number(((from + to) / 2).toPrecision(3))) : from,
-  );
-  return { name: sliced ? `${name} (middles of slices)` : name, labels: labels.map(String) };
+  const labels = groups.map((group) => {
+    const [from, to] = group;
+    const one = from === to || typeof from !== 'number' || typeof to !== 'number';
+    return one ? rangeText(group) : String(Number(((from + to) / 2).toPrecision(3)));
+  });
+  return { name: sliced ? `${name} (middles of slices)` : name, labels };
 }
 
 function heatFigure({ quantity, x, y, cells }: HeatMap, write: (value: number) => string): Markup {
@@ -150,6 +152,7 @@ function heatFigure({ quantity, x, y, cells }: HeatMap, write: (value: number) =
 }
 
 function preferredFigure({ quantity, scenarios, x, y, cells }: PreferredMap): Markup {
+  if (cells.every((best) => best < 0)) return mark`<p>No plan differs from another by it.</p>`;
   const drawn = Array.from(cells, (best): Cell | null => {
     if (best === -1) return null;
     if (best < 0) return { shade: 0, words: 'equal', side: best };

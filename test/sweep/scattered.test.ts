@@ -1,6 +1,7 @@
 // Few points of a sampled design: what one number does is told from what the others did at the same points, and changes of the
 // preferred scenario are told in lines that a terminal holds.
 import { expect, test } from 'vitest';
+import { sweepPage } from '../../src/report/sweep-page.ts';
 import { sweepText } from '../../src/report/sweep-text.ts';
 import { openDesign, type DesignPlan } from '../../src/sweep/design/design.ts';
 import type { Factor } from '../../src/sweep/design/factor.ts';
@@ -61,6 +62,17 @@ test('cells of a map hold points', () => {
   const scattered = swept((survival) => 0.8 + 0.4 * survival);
   const [map] = preferredMaps(scattered, summariseSweep(scattered));
   expect(map!.cells).toHaveLength(64);
+});
+
+test('the page writes the middle of a slice beside its cells, and draws no map where no plan differs', () => {
+  const page = (plan: (survival: number) => number): string => {
+    const scattered = swept(plan);
+    return sweepPage(scattered, summariseSweep(scattered));
+  };
+  const drawn = page((survival) => 0.8 + 0.4 * survival);
+  expect(drawn).toContain('survival (middles of slices)');
+  expect(drawn).not.toMatch(/>0\.\d+ to[^<]*…</u);
+  expect(page((survival) => 0.9 + 0.2 * survival)).toContain('No plan differs from another by it.');
 });
 
 test('what changes the preferred scenario is told in lines of the width', () => {

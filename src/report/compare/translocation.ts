@@ -43,7 +43,7 @@ function sourceWords(
   futures: number,
 ): string {
   const { before, after } = found.everEmpty;
-  return `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95 %: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${seenChance(after, futures)} with the plan and ${seenChance(before, futures)} without it (difference in points: ${change({ of: 'chance', estimate: found.everEmptyChange.estimate })}, 95 %: ${between('chance', found.everEmptyChange)}).`;
+  return `“${scenario}” takes animals from ${source} (“${action}”): at the end ${change({ of: 'animals', estimate: found.animals.estimate })} ${animals} there (95\u00a0%: ${between('animals', found.animals)}); the chance that ${source} stands empty at some count is ${seenChance(after, futures)} with the plan and ${seenChance(before, futures)} without it (difference in points: ${change({ of: 'chance', estimate: found.everEmptyChange.estimate })}, 95\u00a0%: ${between('chance', found.everEmptyChange)}).`;
 }
 
 /** The same for every plan with the move, since it rests on futures without it. */
