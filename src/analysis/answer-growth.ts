@@ -10,6 +10,7 @@ import { mostEntries } from './cautions.ts';
 import { growthStandardError } from './growth-error.ts';
 import type { AnalysisInput, ParameterTangent } from './input.ts';
 import { stateName } from './label.ts';
+import { amongLargest } from './largest.ts';
 import { generationTimes, lifetimes, nextGeneration, type LifeSplit } from './life-history.ts';
 import type { Analysis } from './schema.ts';
 import { entrySensitivities, sensitivityAlong, type Vectors } from './sensitivity.ts';
@@ -37,10 +38,10 @@ export function worthAnswer(block: BlockMatrix, { left }: Vectors): NonNullable<
 
 export function entriesAnswer(block: BlockMatrix, vectors: Vectors): NonNullable<Analysis['entries']> {
   const { sensitivity, elasticity } = entrySensitivities(block.matrix, vectors);
-  const least = elasticity.length > mostEntries ? (elasticity.slice().sort()[elasticity.length - mostEntries] ?? 0) : 0;
+  const kept = amongLargest(elasticity, mostEntries);
   const entries: NonNullable<Analysis['entries']> = [];
   forEachEntry(block.matrix, (row, column, value, k) => {
-    if ((elasticity[k] ?? 0) < least || entries.length >= mostEntries) return;
+    if (!kept(elasticity[k] ?? 0)) return;
     entries.push({
       from: stateName(block, column),
       to: stateName(block, row),

@@ -5,6 +5,7 @@ import { because, type Answer } from './answer.ts';
 import { mostEntries } from './cautions.ts';
 import type { AnalysisInput } from './input.ts';
 import { stateName } from './label.ts';
+import { amongLargest } from './largest.ts';
 import { patchRoles } from './patches.ts';
 import type { Analysis } from './schema.ts';
 
@@ -20,12 +21,10 @@ export function invasionAnswer({ yearMap, block, factorsAtZero = [] }: AnalysisI
   const matrix = yearMap.matrixAt(nobody);
   const found = leading(matrix);
   const alone = patchRoles(matrix, block.states, nobody, block.patches.length);
-  const values = matrix.values.length > mostEntries ? matrix.values.slice().sort() : null;
-  const least = values?.[values.length - mostEntries] ?? 0;
+  const kept = amongLargest(matrix.values, mostEntries);
   const entries: Invasion['entries'] = [];
   forEachEntry(matrix, (row, column, value) => {
-    if (value < least || entries.length >= mostEntries) return;
-    entries.push({ from: stateName(block, column), to: stateName(block, row), value });
+    if (kept(value)) entries.push({ from: stateName(block, column), to: stateName(block, row), value });
   });
   return {
     value: {
