@@ -6,7 +6,7 @@ import { meanOverScale, shareBeyond, weightRatio } from '../model/kernel-shape.t
 import { advanceAt } from '../compile/advance.ts';
 import type { AgeingPhase, BreedingPhase, DispersalPhase, Model, Phase } from '../model/model.ts';
 import { percent } from '../view/number.ts';
-import { placesWords } from './places-text.ts';
+import { areaWords, placesWords } from './places-text.ts';
 import { litterWords, matingWords } from './breeding-words.ts';
 import { handlingWords } from './handling-words.ts';
 import { fixed } from './rounded.ts';
@@ -168,11 +168,15 @@ function standingTable({ model, standing }: Understood, style: TextStyle): strin
     (a, b) => (model.patches[a]?.fileOrder ?? 0) - (model.patches[b]?.fileOrder ?? 0),
   );
   const number = (value: number | null): string => (value === null ? '-' : fixed(value, 1));
+  const withAreas = model.patches.some(({ areaKm2 }) => areaKm2 !== null);
   const rows = order.flatMap((p) => {
     const one = standing[p];
-    return one === undefined ? [] : [[one.patch, fixed(one.growthAlone, 4), number(one.alone), number(one.linked)]];
+    if (one === undefined) return [];
+    const area = model.patches[p]?.areaKm2 ?? null;
+    const standsAt = [fixed(one.growthAlone, 4), number(one.alone), number(one.linked)];
+    return [[one.patch, ...(withAreas ? [area === null ? '-' : areaWords(area)] : []), ...standsAt]];
   });
-  const head = ['patch', 'growth alone', 'stands still alone at', 'linked at'];
+  const head = ['patch', ...(withAreas ? ['area'] : []), 'growth alone', 'stands still alone at', 'linked at'];
   const table = columnsOf(head, rows.slice(0, 60), style);
   const more = rows.length > 60 ? `\n  and ${rows.length - 60} more patches` : '';
   return `${bold('Patches (all classes, at the count, without chance)', style)}\n${table}${more}`;

@@ -14,21 +14,22 @@ export function placesWords({ patches }: Model): readonly string[] {
     inDegrees
       ? 'Places are longitude and latitude; distances and areas are measured on the WGS84 ellipsoid.'
       : 'Places lie on a plane.',
-    ...areaWords(outlined),
+    ...outlineWords(outlined),
     ...pairWords(patches),
   ];
 }
 
-function areaWords(outlined: readonly Patch[]): readonly string[] {
+function outlineWords(outlined: readonly Patch[]): readonly string[] {
   const [first, ...others] = outlined.toSorted((a, b) => (a.areaKm2 ?? 0) - (b.areaKm2 ?? 0));
   const last = others.at(-1);
   if (first === undefined) return [];
-  const words = (patch: Patch): string => `${hectares(patch.areaKm2 ?? 0)} (${patch.name})`;
+  const words = (patch: Patch): string => `${areaWords(patch.areaKm2 ?? 0)} (${patch.name})`;
   if (last === undefined) return [`The outline measures ${words(first)}.`];
   return [`The outlines of ${String(outlined.length)} patches measure from ${words(first)} to ${words(last)}.`];
 }
 
-function hectares(areaKm2: number): string {
+/** Small ones in hectares. */
+export function areaWords(areaKm2: number): string {
   return areaKm2 < 10 ? `${Number((areaKm2 * 100).toPrecision(3))} ha` : `${Number(areaKm2.toPrecision(4))} km2`;
 }
 

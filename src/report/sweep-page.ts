@@ -156,10 +156,17 @@ function preferredFigure({ quantity, scenarios, x, y, cells }: PreferredMap): Ma
   const drawn = Array.from(cells, (best): Cell | null => {
     if (best === -1) return null;
     if (best < 0) return { shade: 0, words: 'equal', side: best };
-    return { shade: (0.2 + 0.6 * best) / Math.max(1, scenarios.length - 1), words: scenarios[best] ?? '', side: best };
+    const shade = (0.2 + 0.6 * best) / Math.max(1, scenarios.length - 1);
+    return { shade, words: scenarios[best] ?? '', short: letterOf(best), side: best };
   });
+  const legend = scenarios.map((name, place) => `${letterOf(place)}: ${name}`);
   const description =
-    'Each cell names the plan that is best in the mean there, or that several are equal; the line is where the preferred plan changes.';
+    'Each cell has the letter of the plan that is best in the mean there, or says that several are equal; the line is where the preferred plan changes.';
   const title = `Best by ${quantity}`;
-  return wide(title, drawCells({ title, description, x: axisOf(x), y: axisOf(y), cells: drawn }));
+  return wide(title, drawCells({ title, description, x: axisOf(x), y: axisOf(y), cells: drawn, legend }));
+}
+
+/** A, B, …; numbers beyond Z. */
+function letterOf(place: number): string {
+  return place < 26 ? String.fromCharCode(65 + place) : String(place + 1);
 }

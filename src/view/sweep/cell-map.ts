@@ -10,12 +10,16 @@ export interface CellMap {
   readonly y: { readonly name: string; readonly labels: readonly string[] };
   /** At y * columns + x; null where nothing is known. */
   readonly cells: readonly (Cell | null)[];
+  /** What short words in the cells stand for, a line each. */
+  readonly legend?: readonly string[];
 }
 
 export interface Cell {
   /** 0 to 1, light to dark. */
   readonly shade: number;
   readonly words: string;
+  /** Stands in the cell where the words have no room. */
+  readonly short?: string;
   /** Cells of different sides have a line between them. */
   readonly side: number;
 }
@@ -23,17 +27,17 @@ export interface Cell {
 const left = 84;
 const top = 12;
 
-export function drawCells({ title, description, x, y, cells }: CellMap): Markup {
+export function drawCells({ title, description, x, y, cells, legend = [] }: CellMap): Markup {
   const [columns, rows] = [x.labels.length, y.labels.length];
   const wide = Math.max(26, Math.min(64, Math.floor(620 / columns)));
   const high = Math.max(22, Math.min(40, Math.floor(400 / rows)));
-  const size = { width: left + columns * wide + 12, height: top + rows * high + 58 };
+  const size = { width: left + columns * wide + 12, height: top + rows * high + 58 + legend.length * 17 };
   const at = (column: number, row: number) => ({ cx: left + column * wide, cy: top + (rows - 1 - row) * high });
   const drawn = cells.map((cell, i) => {
     const { cx, cy } = at(i % columns, Math.floor(i / columns));
     if (cell === null) return null;
     return mark`<g><title>${cell.words}</title><rect x="${cx}" y="${cy}" width="${wide}" height="${high}" fill="${ramp(cell.shade)}" stroke="${paper}"/>
-<text x="${cx + wide / 2}" y="${cy + high / 2 + 4}" text-anchor="middle" font-size="11" fill="${inkOn(cell.shade)}">${fitText(cell.words, 11, wide - 4)}</text></g>`;
+<text x="${cx + wide / 2}" y="${cy + high / 2 + 4}" text-anchor="middle" font-size="11" fill="${inkOn(cell.shade)}">${fitText(cell.short ?? cell.words, 11, wide - 4)}</text></g>`;
   });
   const lines = cells.flatMap((cell, i) => {
     const [column, row] = [i % columns, Math.floor(i / columns)];
@@ -58,5 +62,9 @@ export function drawCells({ title, description, x, y, cells }: CellMap): Markup 
   );
   const names = mark`<text x="${left + (columns * wide) / 2}" y="${foot + 40}" text-anchor="middle" fill="${ink}">${x.name}</text>
 <text x="14" y="${top + (rows * high) / 2}" text-anchor="middle" fill="${ink}" transform="rotate(-90 14 ${top + (rows * high) / 2})">${y.name}</text>`;
-  return figure(size, { title, description }, mark`${drawn}${lines}${xs}${ys}${names}`);
+  const told = legend.map(
+    (line, i) =>
+      mark`<text x="${left}" y="${foot + 64 + i * 17}" font-size="12" fill="${ink}">${fitText(line, 12, size.width - left - 4)}</text>`,
+  );
+  return figure(size, { title, description }, mark`${drawn}${lines}${xs}${ys}${names}${told}`);
 }
