@@ -32,7 +32,6 @@ export function comparePlans({ run, hash, money, moves, robustness, cautions }: 
     money: money !== null,
   });
   const patches = patchChanges(run);
-  const drawn = run.draws.length > 0;
   const results = run.runs[0]?.results;
   if (results === undefined) throw new RangeError('There is no plan to compare.');
   const { tool, model, seed, replicates, years, firstYear, draws, stopped, notDrawn } = results;
@@ -46,7 +45,7 @@ export function comparePlans({ run, hash, money, moves, robustness, cautions }: 
     patches,
     sources: sourceRisks(run, moves, patches),
     robustness,
-    statement: statementOf({ objectives: words, plans, differences, robustness, money, drawn }),
+    statement: statementOf({ objectives: words, plans, differences, robustness, money, draws: run.draws.length }),
     afterHorizon: afterHorizon(firstYear + years - 1, money !== null),
     ...(notDrawn === true ? { notDrawn } : {}),
     ...(draws === undefined

@@ -16,9 +16,12 @@ export interface ToState {
   readonly differences: readonly PlanDifference[];
   readonly robustness: readonly Robustness[];
   readonly money: Comparison['money'];
-  /** Whether what is not known was drawn. */
-  readonly drawn: boolean;
+  /** Of what is not known; 0 where it was not drawn. */
+  readonly draws: number;
 }
+
+/** Of fewer draws the middle 95 % cannot be told from all of them: each end leaves out one in forty. */
+const enoughDraws = 39;
 
 export function statementOf(to: ToState): Statement {
   const [objective] = to.objectives;
@@ -87,11 +90,11 @@ interface Standing {
   readonly left: readonly ComparedPlan[];
 }
 
-function strengthOf({ plans, drawn, robustness }: ToState, { gains, left }: Standing): Strength {
+function strengthOf({ plans, draws, robustness }: ToState, { gains, left }: Standing): Strength {
   const now = plans[0];
   const idle = now !== undefined && left.includes(now);
   if (!gains || idle) return 'none';
-  const whole = drawn && left.length === 1 && robustness.every(({ holds }) => holds !== false);
+  const whole = draws >= enoughDraws && left.length === 1 && robustness.every(({ holds }) => holds !== false);
   return whole ? 'clear' : 'limited';
 }
 
@@ -146,9 +149,17 @@ function reservationsOf(to: ToState, best: ComparedPlan, close: readonly Compare
   const reversed = to.robustness.filter(({ holds }) => holds === false).map(({ variant }) => variant);
   return [
     ...(together.length < 2 ? [] : [`${namesWords(together)} cannot be told apart.`]),
-    ...(to.drawn ? [] : ['What is not known about the numbers of the model was not drawn and could change this.']),
+    ...unknownReservation(to.draws),
     ...(reversed.length === 0
       ? []
       : [`Another sound model would not keep the whole order of the plans: ${reversed.join('; ')}.`]),
+  ];
+}
+
+function unknownReservation(draws: number): readonly string[] {
+  if (draws >= enoughDraws) return [];
+  if (draws === 0) return ['What is not known about the numbers of the model was not drawn and could change this.'];
+  return [
+    `What is not known was drawn ${draws} times only; from ${enoughDraws} draws on the interval from it can be relied on.`,
   ];
 }

@@ -194,4 +194,10 @@ test('where what is not known is drawn, the draw is the unit and all plans meet 
   ).toBeCloseTo(1, 9);
   expect(draws).toEqual({ number: 40, failed: 0, replicatesEach: 60 });
   expect(statement.strength).toBe('clear');
+  const fewer = both.map(({ name }, p) =>
+    planOf({ name, text: drawn(p === 0 ? 'adults' : 'adults + 0.1').replace('draws: 40', 'draws: 10') }),
+  );
+  const rough = (await compared(fewer, { money: null })).statement;
+  expect(rough.strength).toBe('limited');
+  expect(rough.reservations).toEqual([expect.stringMatching(/^What is not known was drawn 10 times only/)]);
 });
