@@ -52,7 +52,7 @@ export function runModel(compiled: CompiledModel, options: RunOptions = {}): Run
   if (drawing(compiled)) return runDraws(compiled, options);
   const { onProgress } = options;
   const { model, image } = compiled;
-  const run = openRunner(image, { steps: model.steps, seed: model.seed });
+  const run = openRunner(image, { steps: model.steps, seed: model.seed, reuse: true });
   const reduction = openReduction(model);
   let [done, expected] = [0, model.replicates];
   for (const block of blocksOf(model)) {
@@ -107,6 +107,7 @@ export async function runModelWith(
   let [told, done, expected] = [0, 0, replicates];
   const take = (batch: BatchCounts): void => {
     reduction.take(batch);
+    crew.release?.(batch);
     options.onProgress?.((told += batch.lanes), expected);
   };
   for (const batches of blocksOf(model)) {
@@ -211,7 +212,7 @@ function runDraws(compiled: CompiledModel, { onProgress }: RunOptions): RunResul
   for (const { draw, values, image, failure } of drawsOf(compiled)) {
     if (image === null) collector.fail(draw, values, failure);
     else {
-      const run = openRunner(image, { steps: model.steps, seed: seedOfDraw(model.seed, draw) });
+      const run = openRunner(image, { steps: model.steps, seed: seedOfDraw(model.seed, draw), reuse: true });
       for (const batch of batchesOf(model.replicates)) collector.take(run(batch));
       collector.finish(draw, values);
     }

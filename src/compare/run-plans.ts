@@ -96,5 +96,6 @@ async function runAll(
     for (const batch of own) one.reduction.take(batch);
     keepPart(one, { base: parts[0] ?? [], own, offset: 0, moneyOf: one.plan.moneyOf });
   });
+  for (const batch of parts.flat()) crew.release?.(batch);
   return true;
 }

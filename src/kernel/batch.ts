@@ -38,8 +38,13 @@ export function batchesOf(replicates: number, sideBySide: number = lanes): reado
   }));
 }
 
-/** On an instance in which the image is open. */
-export function runnerOn(machine: Machine, image: ArrayBuffer, request: RunRequest): (batch: Batch) => BatchCounts {
+/** On an instance in which the image is open. Memory for counts is taken from `spare` as long as there is some. */
+export function runnerOn(
+  machine: Machine,
+  image: ArrayBuffer,
+  request: RunRequest,
+  spare: Float64Array<ArrayBuffer>[] = [],
+): (batch: Batch) => BatchCounts {
   const header = headerOf(image);
   const columns = header[layout.headerColumns] ?? 0;
   const ways = request.keepMoved === true ? (header[layout.headerWays] ?? 0) : null;
@@ -47,18 +52,25 @@ export function runnerOn(machine: Machine, image: ArrayBuffer, request: RunReque
   const size = (request.steps + 1) * columns * layout.lanes;
   const shared = request.reuse === true ? new Float64Array(size) : null;
   return (batch) => {
-    const counts = shared ?? new Float64Array(size);
+    const counts = shared ?? memoryOf(size, spare);
     const movedSoFar = new Float64Array((request.steps + 1) * (ways ?? 0));
     startBatch(machine, request, batch);
-    counts.set(observedIn(machine, columns));
+    const observed = observedIn(machine, columns);
+    counts.set(observed);
     for (let step = 1; step <= request.steps; step++) {
       machine.step();
-      counts.set(observedIn(machine, columns), step * columns * layout.lanes);
+      counts.set(observed, step * observed.length);
       if (ways !== null) movedSoFar.set(new Float64Array(machine.memory.buffer, machine.moved(), ways), step * ways);
     }
     const stopped = stopsOf(machine, batch, phases);
     return { ...batch, counts, stopped, moved: ways === null ? null : eachStep(movedSoFar, ways) };
   };
+}
+
+/** Everything in it is written over. */
+function memoryOf(size: number, spare: Float64Array<ArrayBuffer>[]): Float64Array<ArrayBuffer> {
+  const last = spare.pop();
+  return last?.length === size ? last : new Float64Array(size);
 }
 
 function startBatch(machine: Machine, { seed, firstReplicate = 0 }: RunRequest, { first, lanes }: Batch): void {

@@ -20,5 +20,7 @@ export interface Crew {
    * always the first ones.
    */
   run(job: Job, take: (batch: BatchCounts) => void, options?: JobOptions): Promise<number>;
+  /** The batch is done with, and its counts may be written over: fresh memory costs more than it takes to fill it. */
+  release?(batch: BatchCounts): void;
   close(): Promise<void>;
 }

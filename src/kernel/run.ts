@@ -6,6 +6,10 @@ import { runnerOn, type Batch, type RunRequest } from './batch.ts';
 export type BatchRunner = (batch: Batch) => BatchCounts;
 
 /** A runner on an instance of its own. */
-export function openRunner(image: ArrayBuffer, request: RunRequest): BatchRunner {
-  return runnerOn(openOwnImage(image), image, request);
+export function openRunner(
+  image: ArrayBuffer,
+  request: RunRequest,
+  spare: Float64Array<ArrayBuffer>[] = [],
+): BatchRunner {
+  return runnerOn(openOwnImage(image), image, request, spare);
 }

@@ -3,9 +3,13 @@ import { setImmediate } from 'node:timers/promises';
 import type { Crew } from '../kernel/crew.ts';
 import { openRunner } from '../kernel/run.ts';
 
+/** As many counts of batches are kept for the next ones, at most. */
+const mostSpare = 512;
+const spare: Float64Array<ArrayBuffer>[] = [];
+
 export const alone: Crew = {
   run: async ({ image, request, batches }, take, { signal } = {}) => {
-    const run = openRunner(image, request);
+    const run = openRunner(image, request, spare);
     let done = 0;
     for (const batch of batches) {
       if (signal?.aborted === true) break;
@@ -15,5 +19,11 @@ export const alone: Crew = {
     }
     return done;
   },
-  close: () => Promise.resolve(),
+  release: ({ counts }) => {
+    if (spare.length < mostSpare) spare.push(counts);
+  },
+  close: () => {
+    spare.length = 0;
+    return Promise.resolve();
+  },
 };
