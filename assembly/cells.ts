@@ -1,7 +1,7 @@
 // What every phase does with the sixteen counts of one patch and class.
 import { i32At } from './arrays';
-import { bitsFour } from './draws/bits';
 import { binomial } from './draws/binomial';
+import { bitsFour, bitsFourLarge, mostByBits } from './draws/bits';
 import { cellBytes, laneNumbers, rates, slotValues, words } from './batch';
 import { classes, patches } from './image';
 
@@ -72,8 +72,11 @@ export function drawCell(drawn: usize, n: usize, stream: u64): void {
     const counts = v128.load(n + four);
     const at = four << 1;
     if (!v128.any_true(counts)) v128.store(drawn + four, counts);
-    else if (v128.any_true(v128.and(counts, i32x4.splat(above63)))) drawSome(drawn + four, n + four, at, stream);
-    else bitsFour(drawn + four, n + four, rates + at, words + at, stream);
+    else if (!v128.any_true(v128.and(counts, i32x4.splat(above63)))) {
+      bitsFour(drawn + four, n + four, rates + at, words + at, stream);
+    } else if (!v128.any_true(i32x4.gt_u(counts, i32x4.splat(mostByBits)))) {
+      bitsFourLarge(drawn + four, n + four, rates + at, words + at, stream);
+    } else drawSome(drawn + four, n + four, at, stream);
   }
 }
 

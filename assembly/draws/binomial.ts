@@ -1,11 +1,9 @@
 // Binomial draws of any size: by bits up to 128 trials, else by inversion where n·p < 10, else by transformed rejection
 // (algorithm BTRS of Hörmann 1993, with the whole acceptance test).
 import { exp, log } from '../mathematics';
-import { bitsOf } from './bits';
+import { bitsOf, mostByBits } from './bits';
 import { stirlingTail } from './factorial';
 import { finalise, firstWord, unit } from './stream';
-
-const mostByBits: u32 = 128;
 
 /** Successes of n trials with chance p, from both words of the block of random bits and the constant of the stream. */
 export function binomial(n: u32, p: f64, w0: u64, w1: u64, stream: u64): u32 {

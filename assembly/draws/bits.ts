@@ -4,6 +4,8 @@
 import { u64At } from '../arrays';
 import { finalise } from './stream';
 
+export const mostByBits: u32 = 128;
+
 /** Four draws side by side, each the very number that it would be alone: counts of n trials with chances p (f64). */
 export function bitsFour(drawn: usize, n: usize, p: usize, words: usize, stream: u64): void {
   const onePlusA = f64x2.add(v128.load(p), f64x2.splat(1));
@@ -44,6 +46,28 @@ export function bitsFour(drawn: usize, n: usize, p: usize, words: usize, stream:
   }
   store<u64>(drawn, successesIn(successesA));
   store<u64>(drawn, successesIn(successesB), 8);
+}
+
+/** i32 [draw]: of four counts up to 128, those in the first block of 64 and those in the second. */
+const firstBlocks = memory.data(16, 16);
+const secondBlocks = memory.data(16, 16);
+
+/** The same of up to 128 trials; `drawn` may be `n`. */
+export function bitsFourLarge(drawn: usize, n: usize, p: usize, words: usize, stream: u64): void {
+  const counts = v128.load(n);
+  const first = i32x4.min_u(counts, i32x4.splat(64));
+  v128.store(firstBlocks, first);
+  v128.store(secondBlocks, i32x4.sub(counts, first));
+  bitsFour(drawn, firstBlocks, p, words, stream);
+  addSecondBlocks(drawn, 0, p, words, stream + secondBlock);
+  addSecondBlocks(drawn, 8, p + 16, words + 16, stream + secondBlock);
+}
+
+function addSecondBlocks(drawn: usize, pair: usize, p: usize, words: usize, stream: u64): void {
+  const n = secondBlocks + pair;
+  if (load<u64>(n) === 0) return;
+  const more = bitsCounts(trialsPair(n), v128.load(p), seedPairAt(words, stream), seedPairAt(words + 128, stream));
+  store<u64>(drawn + pair, load<u64>(drawn + pair) + more);
 }
 
 function successesIn(bits: v128): u64 {
