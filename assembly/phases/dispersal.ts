@@ -66,8 +66,10 @@ function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
   const width = i32At(aliasStart, patch + 1) - first;
   if (width === 0) return;
   const target = batch.arrivals + <usize>c * batch.cellBytes;
-  if (fewEach(manyPerColumn * width)) {
-    pickTogether(target, first, width, travel);
+  const largest = mostOfLanes();
+  if (largest === 0) return;
+  if (largest <= min<u32>(manyPerColumn * width, fewLeavers)) {
+    pickTogether(largest, target, first, width, travel);
     return;
   }
   for (let lane: usize = 0; lane < <usize>layout.lanes; lane++) {
@@ -84,23 +86,25 @@ function sendAll(patch: i32, c: i32, travel: u64, spreading: u64): void {
 }
 
 /** Leavers of a lane that `pickTogether` takes at most. */
-const fewLeavers: i32 = 8;
-/** i32 [pick]: the lane of each, with room for a last one's eight. u64 [lane][2]: states of the streams. */
-const pickLanes = memory.data(4 * (16 * 8 + 8), 16);
+const fewLeavers: u32 = 32;
+/** i32 [pick]: the lane of each, with room for a last one's. u64 [lane][2]: states of the streams. */
+const pickLanes = memory.data(4 * (16 * 32 + 32), 16);
 const pickStates = memory.data(16 * 16, 16);
 
-function fewEach(most: i32): bool {
-  const limit = i32x4.splat(min<i32>(most, fewLeavers));
+/** The largest number of leavers in a lane. */
+function mostOfLanes(): u32 {
   const low = i32x4.max_u(v128.load(batch.counts), v128.load(batch.counts, 16));
   const high = i32x4.max_u(v128.load(batch.counts, 32), v128.load(batch.counts, 48));
-  return !v128.any_true(i32x4.gt_u(i32x4.max_u(low, high), limit));
+  const four = i32x4.max_u(low, high);
+  const two = i32x4.max_u(four, i32x4.shuffle(four, four, 2, 3, 0, 1));
+  return max<u32>(i32x4.extract_lane(two, 0), i32x4.extract_lane(two, 1));
 }
 
 /**
  * The same picks as `pick`, those of all lanes in one list, without a branch that depends on chance: a processor that guesses
  * wrong loses more than a pick costs.
  */
-function pickTogether(target: usize, first: i32, width: i32, stream: u64): void {
+function pickTogether(largest: u32, target: usize, first: i32, width: i32, stream: u64): void {
   let end = pickLanes;
   for (let lane = 0; lane < layout.lanes; lane++) {
     const at = batch.words + ((<usize>lane) << 3);
@@ -108,8 +112,7 @@ function pickTogether(target: usize, first: i32, width: i32, stream: u64): void 
     store<u64>(state, finalise(load<u64>(at) + stream));
     store<u64>(state, finalise(load<u64>(at, 128) + stream), 8);
     const same = i32x4.splat(lane);
-    v128.store(end, same);
-    v128.store(end, same, 16);
+    for (let at: usize = 0; at < <usize>largest << 2; at += 16) v128.store(end + at, same);
     end += (<usize>load<u32>(batch.counts + ((<usize>lane) << 2))) << 2;
   }
   const keep = aliasKeep + ((<usize>first) << 3);
