@@ -1,35 +1,54 @@
 // Standard normal numbers, each from one random word.
+import { putF64, u64At } from '../arrays';
+import { lanes } from '../layout';
 import { log } from '../mathematics';
 
 const unit: f64 = 1.1102230246251565e-16; // 2^-53
+const largest: i64 = 9007199254740991; // 2^53 − 1
+
+/** u64 [lane]: top 53 bits of each word. i32 [place]: lanes that lie outside the middle, with room for one too many. */
+const tops = memory.data(8 * 16, 16);
+const outer = memory.data(4 * 18, 16);
 
 /**
- * Of two words side by side: the normal quantile of (k + ½) / 2^53, k the top 53 bits of the word: algorithm AS 241 (Wichura 1988),
- * relative accuracy about 1e-16. It never falls when the word rises, and both tails are as fine.
+ * target[lane] = the normal quantile of (k + ½) / 2^53, k the top 53 bits of word[lane] (u64): algorithm AS 241 (Wichura 1988),
+ * relative accuracy about 1e-16. It never falls when the word rises, and both tails are as fine. Three of twenty lie outside the
+ * middle; they are listed and done afterwards, since a processor that guesses wrong loses much of what one costs.
  */
-export function normalTwo(first: u64, second: u64): v128 {
-  const k0 = first >> 11;
-  const k1 = second >> 11;
-  const q0 = offCentre(k0);
-  const q1 = offCentre(k1);
-  let both = central(f64x2.replace_lane(f64x2.splat(q0), 1, q1));
-  if (!(abs<f64>(q0) <= widest)) both = f64x2.replace_lane(both, 0, outside(k0, q0));
-  if (!(abs<f64>(q1) <= widest)) both = f64x2.replace_lane(both, 1, outside(k1, q1));
-  return both;
+export function normalLanes(target: usize, words: usize): void {
+  let end = outer;
+  for (let lane = 0; lane < lanes; lane += 2) {
+    const at = (<usize>lane) << 3;
+    const k = i64x2.shr_u(v128.load(words + at), 11);
+    v128.store(tops + at, k);
+    const q = offCentre(k);
+    v128.store(target + at, central(q));
+    const beyond = i64x2.bitmask(f64x2.gt(f64x2.abs(q), f64x2.splat(0.425)));
+    store<i32>(end, lane);
+    end += (<usize>(beyond & 1)) << 2;
+    store<i32>(end, lane + 1);
+    end += (<usize>(beyond >> 1)) << 2;
+  }
+  for (let next = outer; next < end; next += 4) {
+    const lane = load<i32>(next);
+    putF64(target, lane, outside(i64(u64At(tops, lane))));
+  }
 }
 
-/** As far from the middle the chance is as the central formula reaches. */
-const widest: f64 = 0.425;
-
-function offCentre(k: u64): f64 {
-  return (f64(i64(k) - 4503599627370496) + 0.5) * unit;
+/** (k + ½) / 2^53 − ½ of two k. */
+function offCentre(k: v128): v128 {
+  const first = f64(i64x2.extract_lane(k, 0) - 4503599627370496);
+  const both = f64x2.replace_lane(f64x2.splat(first), 1, f64(i64x2.extract_lane(k, 1) - 4503599627370496));
+  return f64x2.mul(f64x2.add(both, f64x2.splat(0.5)), f64x2.splat(unit));
 }
 
-function outside(k: u64, q: f64): f64 {
-  const rare = q < 0 ? k : 9007199254740991 - k;
+function outside(k: i64): f64 {
+  // All bits where k lies in the upper half.
+  const upper = (4503599627370495 - k) >> 63;
+  const rare = k ^ (upper & largest);
   const r = sqrt<f64>(-log((f64(rare) + 0.5) * unit));
   const z = r <= 5 ? middle(r - 1.6) : far(r - 5);
-  return q < 0 ? -z : z;
+  return copysign<f64>(z, f64(<i64>-1 - upper * 2));
 }
 
 function central(q: v128): v128 {

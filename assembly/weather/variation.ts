@@ -1,13 +1,13 @@
 // Year-to-year variation: correlated normal numbers for each quantity and patch, and from them what the rates are multiplied by.
 // Z = A E Bᵀ: E holds independent normals, keyed by names; A mixes them over patches, B over quantities.
 import { f64At, i32At, u32At } from '../arrays';
-import { calendar, laneNumbers, replicates, slotValues, step, weather, words, work } from '../batch';
+import { calendar, laneNumbers, numbers, replicates, slotValues, step, weather, words, work } from '../batch';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf } from '../draws/stream';
 import { entries, operand, patches, section, sectionAt } from '../image';
 import * as layout from '../layout';
 import { distribute } from './distribution';
-import { normalTwo } from './normal';
+import { normalLanes } from './normal';
 
 export function vary(record: usize): void {
   const first = weather + <usize>operand(record, layout.variationWeather) * laneNumbers;
@@ -64,17 +64,19 @@ function drawColumns(record: usize, first: usize, patchColumns: i32, quantityCol
 }
 
 function renew(target: usize, stream: u64, kept: f64, fresh: f64): void {
+  for (let lane = 0; lane < layout.lanes; lane++) {
+    const at = (<usize>lane) << 3;
+    const word = firstWord(finalise(load<u64>(words + at) + stream), finalise(load<u64>(words + at, 128) + stream));
+    store<u64>(numbers + at, word);
+  }
+  normalLanes(numbers, numbers);
   const before = f64x2.splat(kept);
   const share = f64x2.splat(fresh);
   for (let at: usize = 0; at < laneNumbers; at += 16) {
-    const normals = f64x2.mul(share, normalTwo(wordAt(at, stream), wordAt(at + 8, stream)));
+    const normals = f64x2.mul(share, v128.load(numbers + at));
     const all = kept === 0 ? normals : f64x2.add(f64x2.mul(before, v128.load(target + at)), normals);
     v128.store(target + at, all);
   }
-}
-
-function wordAt(at: usize, stream: u64): u64 {
-  return firstWord(finalise(load<u64>(words + at) + stream), finalise(load<u64>(words + at, 128) + stream));
 }
 
 /** target[lane] = Σ weight × numbers of a row of a factor; the numbers of column j stand j numbers after `from`. */
