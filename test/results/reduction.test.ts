@@ -120,8 +120,8 @@ describe('sketched quantiles', () => {
       for (let cell = 0; cell < 5; cell++) {
         // Cells of quite different sizes, and one whose numbers grow out of its window again and again.
         const values = Float64Array.from({ length: 16 }, () => draw([2, 60, 500, 2e6, 10 * 40 ** round][cell]!));
-        sketch.add(cell, values, 16);
-        exact.add(cell, values, 16);
+        sketch.add(cell, values, 0, 16);
+        exact.add(cell, values, 0, 16);
       }
     }
     const ranks = [0, 4, 24, 48, 72, 95];
@@ -138,7 +138,7 @@ describe('sketched quantiles', () => {
     const values = Array.from({ length: 40 }, (_, i) => Float64Array.of(draw(10 ** (1 + (i % 8)))));
     const read = (order: readonly Float64Array[]) => {
       const sketch = new Sketches(1, 40);
-      for (const one of order) sketch.add(0, one, 1);
+      for (const one of order) sketch.add(0, one, 0, 1);
       return quantilesOf(sketch, 0, 40);
     };
     expect(read(values.toReversed())).toEqual(read(values));
@@ -150,7 +150,7 @@ describe('sketched quantiles', () => {
     const all: number[] = [];
     for (let round = 0; round < 6; round++) {
       const values = Float64Array.from({ length: 16 }, () => draw(below));
-      exact.add(1, values, 16);
+      exact.add(1, values, 0, 16);
       all.push(...values);
     }
     all.sort((a, b) => a - b);

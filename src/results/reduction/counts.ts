@@ -18,11 +18,12 @@ export class Counts {
     this.#empty = new Uint32Array(cells);
   }
 
-  add(cell: number, values: Float64Array, count: number): void {
-    this.#sums.add(cell, values, count);
-    this.#quantiles.add(cell, values, count);
+  /** Of `count` values from `from` on. */
+  add(cell: number, values: Float64Array, from: number, count: number): void {
+    this.#sums.add(cell, values, from, count);
+    this.#quantiles.add(cell, values, from, count);
     let empty = 0;
-    for (let i = 0; i < count; i++) if (values[i] === 0) empty++;
+    for (let i = from; i < from + count; i++) if (values[i] === 0) empty++;
     this.#empty[cell] = (this.#empty[cell] ?? 0) + empty;
   }
 

@@ -13,10 +13,10 @@ export class ExactValues implements QuantileStore {
     this.#filled = new Int32Array(cells);
   }
 
-  add(cell: number, values: Float64Array, count: number): void {
+  add(cell: number, values: Float64Array, from: number, count: number): void {
     const filled = this.#filled[cell] ?? 0;
     const start = cell * this.#replicates + filled;
-    for (let i = 0; i < count; i++) this.#values[start + i] = values[i] ?? 0;
+    for (let i = 0; i < count; i++) this.#values[start + i] = values[from + i] ?? 0;
     this.#filled[cell] = filled + count;
   }
 

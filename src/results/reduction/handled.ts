@@ -4,8 +4,12 @@ import { Counts } from './counts.ts';
 /** Its columns in a batch, in order. */
 export const handledParts = ['handled', 'died', 'shortfall'] as const;
 
-/** Reads column k of the phase at step t for the kept lanes. */
-export type ReadColumn = (t: number, k: number) => Float64Array;
+/** Where the columns of the phase stand among the counts of a batch: part k of step t for the first `count` lanes. */
+export interface HandledColumns {
+  readonly counts: Float64Array;
+  readonly place: (t: number, k: number) => number;
+  readonly count: number;
+}
 
 export class HandledTotals {
   readonly #steps: number;
@@ -22,15 +26,15 @@ export class HandledTotals {
     this.#sums = new Float64Array(lanes);
   }
 
-  take(read: ReadColumn, count: number): void {
+  take({ counts, place, count }: HandledColumns): void {
     handledParts.forEach((_, k) => {
       this.#sums.fill(0);
       for (let t = 1; t <= this.#steps; t++) {
-        const values = read(t, k);
-        this.byStep[k]?.add(t - 1, values, count);
-        for (let i = 0; i < count; i++) this.#sums[i] = (this.#sums[i] ?? 0) + (values[i] ?? 0);
+        const at = place(t, k);
+        this.byStep[k]?.add(t - 1, counts, at, count);
+        for (let i = 0; i < count; i++) this.#sums[i] = (this.#sums[i] ?? 0) + (counts[at + i] ?? 0);
       }
-      this.inAll[k]?.add(0, this.#sums, count);
+      this.inAll[k]?.add(0, this.#sums, 0, count);
     });
   }
 }

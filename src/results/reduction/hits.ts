@@ -51,6 +51,11 @@ export class Hits {
     else if (this.#counts > 1) this.#row[replicate] = 0;
   }
 
+  /** The same of many replicates: the value of each stands at its place from `from` on. */
+  addAll(step: number, replicates: Int32Array, values: Float64Array, from: number): void {
+    for (let i = 0; i < replicates.length; i++) this.add(step, replicates[i] ?? 0, values[from + i] ?? 0);
+  }
+
   #start(replicate: number, value: number): void {
     if (this.#event.is !== 'fallen') return;
     this.#left[replicate] = value > 0 ? leftAfterFall(value, this.#event.by) : -1;

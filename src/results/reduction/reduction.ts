@@ -40,8 +40,8 @@ export class Reduction {
   readonly #lowest = new Sums(1);
   readonly #stopped: Stop[] = [];
   #runs = 0;
-  readonly #values = new Float64Array(lanes);
   readonly #used = new Float64Array(lanes);
+  readonly #lowestOf = new Float64Array(lanes);
 
   constructor(shape: ReductionShape) {
     const { patches, steps, replicates, outcomes, watched = 0, handled } = shape;
@@ -70,44 +70,45 @@ export class Reduction {
   }
 
   take(batch: BatchCounts): void {
-    const gone = new Set(batch.stopped.map(({ replicate }) => replicate - batch.first));
-    const kept = Array.from({ length: batch.lanes }, (_, lane) => lane).filter((lane) => !gone.has(lane));
+    const kept = keptLanes(batch);
     this.#stopped.push(...batch.stopped);
-    this.#runs += kept.length;
-    for (let t = 0; t <= this.shape.steps; t++) this.#takeCount(batch, kept, t);
-    this.#takeLowest(batch, kept);
-    this.#takeHandled(batch, kept);
+    this.#runs += kept.replicates.length;
+    this.#lowestOf.fill(Infinity);
+    for (let t = 0; t <= this.shape.steps; t++) this.#takeCount(kept, t);
+    this.#takeLowest(kept);
+    this.#takeHandled(kept);
   }
 
-  #takeCount(batch: BatchCounts, kept: readonly number[], t: number): void {
+  #takeCount({ counts, replicates }: KeptLanes, t: number): void {
     const { patches } = this.shape;
-    const [values, used, count] = [this.#values, this.#used, kept.length];
-    this.#read(batch, kept, t, wholeColumn);
-    this.whole.add(t, values, count);
-    used.fill(0);
-    for (let p = 0; p < patches; p++) {
-      this.#read(batch, kept, t, firstPatchColumn + p);
-      this.patches.add(t * patches + p, values, count);
-      for (let i = 0; i < count; i++) used[i] = (used[i] ?? 0) + ((values[i] ?? 0) > 0 ? 1 : 0);
+    const [used, lowest, count] = [this.#used, this.#lowestOf, replicates.length];
+    let at = this.#place(t, wholeColumn);
+    this.whole.add(t, counts, at, count);
+    for (let i = 0; i < count; i++) {
+      const value = counts[at + i] ?? 0;
+      if (value < (lowest[i] ?? 0)) lowest[i] = value;
     }
-    this.inUse.add(t, used, count);
-    this.hits.forEach((hits, k) => {
-      this.#read(batch, kept, t, firstPatchColumn + patches + k);
-      kept.forEach((lane, i) => {
-        hits.add(t, batch.first + lane, values[i] ?? 0);
-      });
-    });
+    used.fill(0);
+    at = this.#place(t, firstPatchColumn);
+    for (let p = 0; p < patches; p++) {
+      this.patches.add(t * patches + p, counts, at, count);
+      for (let i = 0; i < count; i++) if ((counts[at + i] ?? 0) > 0) used[i] = (used[i] ?? 0) + 1;
+      at += lanes;
+    }
+    this.inUse.add(t, used, 0, count);
+    for (const hits of this.hits) {
+      hits.addAll(t, replicates, counts, at);
+      at += lanes;
+    }
     for (let w = 0; w < this.#watchedColumns; w++) {
-      this.#read(batch, kept, t, firstPatchColumn + patches + this.hits.length + w);
-      this.watched?.add(w * (this.shape.steps + 1) + t, values, count);
+      this.watched?.add(w * (this.shape.steps + 1) + t, counts, at, count);
+      at += lanes;
     }
   }
 
-  /** Puts one column of the kept lanes into `#values`. */
-  #read({ counts }: BatchCounts, kept: readonly number[], t: number, column: number): void {
-    const columns = this.#firstHandled + this.handled.length * handledParts.length;
-    const at = (t * columns + column) * lanes;
-    for (let i = 0; i < kept.length; i++) this.#values[i] = counts[at + (kept[i] ?? 0)] ?? 0;
+  /** Where a column of count t stands in a batch. */
+  #place(t: number, column: number): number {
+    return (t * (this.#firstHandled + this.handled.length * handledParts.length) + column) * lanes;
   }
 
   get #watchedColumns(): number {
@@ -118,23 +119,32 @@ export class Reduction {
     return firstPatchColumn + this.shape.patches + this.hits.length + this.#watchedColumns;
   }
 
-  #takeHandled(batch: BatchCounts, kept: readonly number[]): void {
+  #takeHandled({ counts, replicates }: KeptLanes): void {
     this.handled.forEach((totals, h) => {
       const first = this.#firstHandled + h * handledParts.length;
-      totals.take((t, k) => {
-        this.#read(batch, kept, t, first + k);
-        return this.#values;
-      }, kept.length);
+      totals.take({ counts, place: (t, k) => this.#place(t, first + k), count: replicates.length });
     });
   }
 
-  #takeLowest(batch: BatchCounts, kept: readonly number[]): void {
-    const lowest = this.#used.fill(Infinity);
-    for (let t = 0; t <= this.shape.steps; t++) {
-      this.#read(batch, kept, t, wholeColumn);
-      kept.forEach((_, i) => (lowest[i] = Math.min(lowest[i] ?? 0, this.#values[i] ?? 0)));
-    }
-    this.#lowest.add(0, lowest, kept.length);
-    kept.forEach((lane, i) => (this.lowest[batch.first + lane] = lowest[i] ?? 0));
+  #takeLowest({ replicates }: KeptLanes): void {
+    this.#lowest.add(0, this.#lowestOf, 0, replicates.length);
+    replicates.forEach((replicate, i) => (this.lowest[replicate] = this.#lowestOf[i] ?? 0));
   }
+}
+
+/** Counts of a batch with the lanes that came to their end as the first of their columns, and the replicate of each. */
+interface KeptLanes {
+  readonly counts: Float64Array;
+  readonly replicates: Int32Array;
+}
+
+function keptLanes({ first, lanes: count, counts, stopped }: BatchCounts): KeptLanes {
+  const gone = new Set(stopped.map(({ replicate }) => replicate));
+  const replicates = Int32Array.from({ length: count }, (_, lane) => first + lane).filter((one) => !gone.has(one));
+  if (gone.size === 0) return { counts, replicates };
+  const packed = new Float64Array(counts.length);
+  for (let row = 0; row < counts.length; row += lanes) {
+    replicates.forEach((replicate, i) => (packed[row + i] = counts[row + replicate - first] ?? 0));
+  }
+  return { counts: packed, replicates };
 }

@@ -28,9 +28,9 @@ export class Sketches implements QuantileStore {
     this.#place = new Float64Array(cells);
   }
 
-  add(cell: number, values: Float64Array, count: number): void {
+  add(cell: number, values: Float64Array, from: number, count: number): void {
     let [lowest, highest] = [Infinity, -1];
-    for (let i = 0; i < count; i++) {
+    for (let i = from; i < from + count; i++) {
       const bin = binOf(values[i] ?? 0);
       if (bin < lowest) lowest = bin;
       if (bin > highest) highest = bin;
@@ -39,7 +39,7 @@ export class Sketches implements QuantileStore {
     this.#cover(cell, lowest, highest);
     const [page, offset] = this.#locate(cell);
     const start = offset - (this.#lowest[cell] ?? 0);
-    for (let i = 0; i < count; i++) {
+    for (let i = from; i < from + count; i++) {
       const at = start + binOf(values[i] ?? 0);
       page[at] = (page[at] ?? 0) + 1;
     }

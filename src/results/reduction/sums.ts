@@ -17,9 +17,26 @@ export class Sums {
     this.#parts = new Float64Array(cells * 4);
   }
 
-  add(cell: number, values: Float64Array, count: number): void {
+  /** Of `count` values from `from` on. */
+  add(cell: number, values: Float64Array, from: number, count: number): void {
+    let [sum, squares, largest] = [0, 0, 0];
+    for (let i = from; i < from + count; i++) {
+      const value = values[i] ?? 0;
+      sum += value;
+      squares += value * value;
+      if (value > largest) largest = value;
+    }
+    if (largest >= half) this.#addLarge(cell, values, from, count);
+    else {
+      const [parts, at] = [this.#parts, cell * 4];
+      parts[at] = (parts[at] ?? 0) + sum;
+      parts[at + 3] = (parts[at + 3] ?? 0) + squares;
+    }
+  }
+
+  #addLarge(cell: number, values: Float64Array, from: number, count: number): void {
     let [sum, highs, mixed, lows] = [0, 0, 0, 0];
-    for (let i = 0; i < count; i++) {
+    for (let i = from; i < from + count; i++) {
       const value = values[i] ?? 0;
       const high = Math.floor(value / half);
       const low = value - high * half;
