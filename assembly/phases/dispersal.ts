@@ -112,7 +112,7 @@ function pickTogether(largest: u32, target: usize, first: i32, width: i32, strea
     store<u64>(state, finalise(load<u64>(at) + stream));
     store<u64>(state, finalise(load<u64>(at, 128) + stream), 8);
     const same = i32x4.splat(lane);
-    for (let at: usize = 0; at < <usize>largest << 2; at += 16) v128.store(end + at, same);
+    for (let at: usize = 0; at < (<usize>largest) << 2; at += 16) v128.store(end + at, same);
     end += (<usize>load<u32>(batch.counts + ((<usize>lane) << 2))) << 2;
   }
   const keep = aliasKeep + ((<usize>first) << 3);

@@ -18,11 +18,32 @@ export interface PatchPair {
   emptyPlan: number;
 }
 
+/** What a patch came to in the futures of a batch. */
+export interface PatchEnds {
+  readonly batch: BatchCounts;
+  /** Animals at the last count at p · lanes + lane. */
+  readonly last: Float64Array;
+  /** 1 where the patch stood empty at some count after the start; the same places. */
+  readonly emptied: Uint8Array;
+}
+
+export function patchEndsOf({ patches, steps }: Model, batch: BatchCounts): PatchEnds {
+  const { counts } = batch;
+  const [numbers, row] = [patches.length * lanes, counts.length / (steps + 1)];
+  const first = firstPatchColumn * lanes;
+  const emptied = new Uint8Array(numbers);
+  for (let t = 1; t <= steps; t++) {
+    const at = t * row + first;
+    for (let i = 0; i < numbers; i++) if (counts[at + i] === 0) emptied[i] = 1;
+  }
+  const last = counts.subarray(steps * row + first, steps * row + first + numbers);
+  return { batch, last, emptied };
+}
+
 /** The batches of one plan and of the base are those of the same futures. */
 export class PatchPairs {
   readonly pairs: readonly PatchPair[];
   readonly #places: readonly (readonly [base: number | null, plan: number | null])[];
-  readonly #steps: number;
 
   constructor(base: Model, plan: Model) {
     const names = [...new Set([...base.patches, ...plan.patches].map(({ name }) => name))];
@@ -30,7 +51,6 @@ export class PatchPairs {
       const p = patches.findIndex((patch) => patch.name === name);
       return p < 0 ? null : p;
     };
-    this.#steps = base.steps;
     this.#places = names.map((name) => [place(base, name), place(plan, name)] as const);
     this.pairs = names.map((patch) => ({
       patch,
@@ -43,31 +63,29 @@ export class PatchPairs {
     }));
   }
 
-  take(base: BatchCounts, plan: BatchCounts): void {
-    const gone = new Set([...base.stopped, ...plan.stopped].map(({ replicate }) => replicate - base.first));
-    const kept = Array.from({ length: base.lanes }, (_, lane) => lane).filter((lane) => !gone.has(lane));
+  take(base: PatchEnds, plan: PatchEnds): void {
+    const { first, lanes: count } = base.batch;
+    const gone = new Set([...base.batch.stopped, ...plan.batch.stopped].map(({ replicate }) => replicate - first));
     this.pairs.forEach((pair, i) => {
       const [inBase, inPlan] = this.#places[i] ?? [null, null];
-      for (const lane of kept) {
-        const [then, now] = [this.#read(base, inBase, lane), this.#read(plan, inPlan, lane)];
-        const difference = now.last - then.last;
+      for (let lane = 0; lane < count; lane++) {
+        if (gone.has(lane)) continue;
+        // A patch that is not there is empty and counts as never having been in use.
+        const [then, now] = [placeOf(inBase, lane), placeOf(inPlan, lane)];
+        const difference = (plan.last[now] ?? 0) - (base.last[then] ?? 0);
+        const [thenEmpty, nowEmpty] = [base.emptied[then] ?? 1, plan.emptied[now] ?? 1];
         pair.futures++;
         pair.difference += difference;
         pair.squares += difference * difference;
-        if (then.empty && now.empty) pair.emptyBoth++;
-        else if (then.empty) pair.emptyBase++;
-        else if (now.empty) pair.emptyPlan++;
+        if (thenEmpty === 1 && nowEmpty === 1) pair.emptyBoth++;
+        else if (thenEmpty === 1) pair.emptyBase++;
+        else if (nowEmpty === 1) pair.emptyPlan++;
       }
     });
   }
+}
 
-  /** A patch that is not there is empty and counts as never having been in use. */
-  #read({ counts }: BatchCounts, patch: number | null, lane: number): { last: number; empty: boolean } {
-    if (patch === null) return { last: 0, empty: true };
-    const columns = counts.length / (this.#steps + 1) / lanes;
-    const at = (t: number): number => counts[(t * columns + firstPatchColumn + patch) * lanes + lane] ?? 0;
-    let empty = false;
-    for (let t = 1; t <= this.#steps && !empty; t++) empty = at(t) === 0;
-    return { last: at(this.#steps), empty };
-  }
+/** −1 where there is no such patch. */
+function placeOf(patch: number | null, lane: number): number {
+  return patch === null ? -1 : patch * lanes + lane;
 }

@@ -61,7 +61,7 @@ function planOf(name: string, { spec, compiled, drawnBase }: Made): PlanToRun {
 export function moneyIn({ model, cost }: Pick<CompiledModel, 'model' | 'cost'>): MoneyOf | null {
   if (cost.money === null) return null;
   const phases = model.phases.filter(isHandling).map(({ name }) => name);
-  return (handled) => {
+  const moneyOf: MoneyOf = (handled) => {
     const total = totalCost(cost, (action, step) => {
       const phase = phases.indexOf(action);
       return phase < 0 ? 0 : handled(phase, step);
@@ -69,6 +69,10 @@ export function moneyIn({ model, cost }: Pick<CompiledModel, 'model' | 'cost'>):
     const { least, middle, most } = total.presentValue;
     return { presentValue: middle, undiscounted: total.undiscounted.middle, least, most };
   };
+  if (cost.actions.some(({ perAnimal }) => perAnimal !== null)) return moneyOf;
+  // The same in every future.
+  const always = moneyOf(() => 0);
+  return () => always;
 }
 
 /** Every move of a plan, those that the model itself has left out: they are no part of a choice. */

@@ -5,7 +5,7 @@ import type { CompiledModel } from '../pipeline.ts';
 import type { Reduction } from '../results/reduction/reduction.ts';
 import type { ReachedPrecision, RunResults } from '../results/results.ts';
 import { Ledger } from './ledger.ts';
-import { PatchPairs, type PatchPair } from './patch-pairs.ts';
+import { patchEndsOf, PatchPairs, type PatchEnds, type PatchPair } from './patch-pairs.ts';
 import type { MoneyOf, PlanToRun } from './plan.ts';
 
 export interface PlanRun {
@@ -77,20 +77,26 @@ export async function runPart(
   return finished < job.batches.length ? null : taken.sort((a, b) => a.first - b.first);
 }
 
+/** Of one plan. */
 export interface FinishedPart {
-  /** The same batches of the first plan. */
-  readonly base: readonly BatchCounts[];
   readonly own: readonly BatchCounts[];
   /** Place of replicate 0 among all futures. */
   readonly offset: number;
   readonly moneyOf: MoneyOf | null;
 }
 
-export function keepPart({ ledger, patches }: OpenPlan, { base, own, offset, moneyOf }: FinishedPart): void {
-  own.forEach((batch, i) => {
-    ledger.take(batch, offset + batch.first, moneyOf);
-    const beside = base[i];
-    if (beside !== undefined) patches.take(beside, batch);
+/** The same batches of all plans, which are set beside those of the first. */
+export function keepParts(plans: readonly OpenPlan[], parts: readonly FinishedPart[]): void {
+  let base: readonly PatchEnds[] | null = null;
+  plans.forEach(({ plan, ledger, patches }, i) => {
+    const { own, offset, moneyOf } = parts[i] ?? { own: [], offset: 0, moneyOf: null };
+    const ends = own.map((batch) => patchEndsOf(plan.compiled.model, batch));
+    base ??= ends;
+    for (const [k, end] of ends.entries()) {
+      ledger.take(end.batch, offset + end.batch.first, moneyOf);
+      const beside = base[k];
+      if (beside !== undefined) patches.take(beside, end);
+    }
   });
 }
 

@@ -10,7 +10,7 @@ import type { ReachedPrecision } from '../results/results.ts';
 import type { PlanModel, PlanToRun } from './plan.ts';
 import {
   finishPlan,
-  keepPart,
+  keepParts,
   openPlans,
   runPart,
   type OpenPlan,
@@ -89,11 +89,14 @@ async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: D
   }
   const futures = opened[0]?.plan.compiled.model.replicates ?? 0;
   const offset = finished.length * futures;
-  opened.forEach((one, i) => {
-    for (const batch of parts[i] ?? []) collectors[i]?.take(batch);
-    collectors[i]?.finish(draw, values);
-    keepPart(one, { base: parts[0] ?? [], own: parts[i] ?? [], offset, moneyOf: own[i]?.moneyOf ?? null });
+  collectors.forEach((collector, i) => {
+    for (const batch of parts[i] ?? []) collector.take(batch);
+    collector.finish(draw, values);
   });
+  keepParts(
+    opened,
+    own.map(({ moneyOf }, i) => ({ own: parts[i] ?? [], offset, moneyOf })),
+  );
   finished.push({ first: offset, futures });
   return true;
 }

@@ -10,7 +10,7 @@ import { openReduction } from '../results/summarise.ts';
 import type { PlanToRun } from './plan.ts';
 import {
   finishPlan,
-  keepPart,
+  keepParts,
   openPlans,
   runPart,
   type OpenPlan,
@@ -92,10 +92,12 @@ async function runAll(
     parts.push(part);
   }
   opened.forEach((one, i) => {
-    const own = parts[i] ?? [];
-    for (const batch of own) one.reduction.take(batch);
-    keepPart(one, { base: parts[0] ?? [], own, offset: 0, moneyOf: one.plan.moneyOf });
+    for (const batch of parts[i] ?? []) one.reduction.take(batch);
   });
+  keepParts(
+    opened,
+    opened.map(({ plan: { moneyOf } }, i) => ({ own: parts[i] ?? [], offset: 0, moneyOf })),
+  );
   for (const batch of parts.flat()) crew.release?.(batch);
   return true;
 }

@@ -23,8 +23,10 @@ export class ExactValues implements QuantileStore {
   at(cell: number, ranks: readonly number[]): readonly number[] {
     const start = cell * this.#replicates;
     const values = this.#values.subarray(start, start + (this.#filled[cell] ?? 0));
-    let [lowest, highest] = [Infinity, -Infinity];
-    for (const value of values) {
+    let lowest = Infinity;
+    let highest = -Infinity;
+    for (let i = 0; i < values.length; i++) {
+      const value = values[i] ?? 0;
       if (value < lowest) lowest = value;
       if (value > highest) highest = value;
     }
@@ -43,7 +45,10 @@ function counted(
   ranks: readonly number[],
 ): readonly number[] {
   const times = new Uint32Array(highest - lowest + 1);
-  for (const value of values) times[value - lowest] = (times[value - lowest] ?? 0) + 1;
+  for (let i = 0; i < values.length; i++) {
+    const at = (values[i] ?? 0) - lowest;
+    times[at] = (times[at] ?? 0) + 1;
+  }
   let [place, passed] = [0, times[0] ?? 0];
   return ranks.map((rank) => {
     if (rank >= values.length) return 0;
