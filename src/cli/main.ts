@@ -4,7 +4,7 @@ import { toolVersion } from '../results/provenance.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { addOptions, type CommonOptions } from './options.ts';
 import { writeError, writeOut } from './output.ts';
-import { addSweepOptions } from './sweep/flags.ts';
+import { addSweepOptions, detailsOfSweep } from './sweep/flags.ts';
 
 type Handler<Path, Options> = (path: Path, options: Options) => void | Promise<void>;
 
@@ -76,6 +76,7 @@ function addSweep(program: Command): void {
     .description('join what the shards of a sweep made, and name what is missing')
     .requiredOption('--out <folder>', 'where the whole sweep is to be')
     .option('--json', 'print one JSON object instead of text')
+    .option('--details', detailsOfSweep)
     .option('--quiet', 'print nothing')
     .addHelpText('after', '\nExample:\n  skein sweep merge shard-1 shard-2 --out whole')
     .action(run(async () => (await import('./command/sweep-merge.ts')).mergeSweeps));
@@ -84,6 +85,7 @@ function addSweep(program: Command): void {
     .argument('<folder>', 'the folder of a whole sweep')
     .description('say what matters most, and how each measure answers each number')
     .option('--json', 'print one JSON object instead of text')
+    .option('--details', detailsOfSweep)
     .option('--page <file>', 'write it as one HTML page with response curves, maps over two numbers and bars')
     .addHelpText('after', '\nExample:\n  skein sweep summary sweep --page sweep.html')
     .action(run(async () => (await import('./command/sweep-summary.ts')).summariseFolder));

@@ -88,6 +88,9 @@ const FactorSummary = Type.Object({
         mean: part.maybe('Of the measure.'),
         lower: part.maybe('Value that 5 % of the points do not exceed.'),
         upper: part.maybe('Value that 95 % of the points do not exceed.'),
+        told: Type.Optional(
+          part.maybe('Of a difference from runs, the share of these points that tell it from 0; absent of all else.'),
+        ),
       }),
     ),
     explained: part.maybe('Share of the variance of the measure between the values of the number.'),
@@ -144,6 +147,16 @@ export const SweepSummarySchema = Type.Object({
       mean: part.maybe('Over the points.'),
       noise: part.maybe('Share of the variance over the points that comes from the number of replicates.'),
       variance: part.maybe('Over the points, without that noise; of shares of variance only.'),
+      told: part.orNull(
+        Type.Object(
+          {
+            above: part.whole('Points at which its 95 % interval lies above 0.'),
+            below: part.whole('Points at which it lies below.'),
+            not: part.whole('Points at which it holds 0.'),
+          },
+          { description: 'Null but for a difference from runs.' },
+        ),
+      ),
       factors: Type.Array(FactorSummary, { description: 'What matters most first.' }),
       orderedBy: Type.String(),
     }),
@@ -153,8 +166,14 @@ export const SweepSummarySchema = Type.Object({
       quantity: Type.String(),
       better: Type.Union([Type.Literal('less'), Type.Literal('more')]),
       scenarios: Type.Array(
-        Type.Object({ name: Type.String(), best: part.maybe('Share of the points at which it is best.') }),
+        Type.Object({
+          name: Type.String(),
+          best: part.maybe('Share of the points at which it is best.'),
+          toldBest: part.maybe('Share of the points at which it is best, and told apart from all others.'),
+        }),
       ),
+      points: part.whole('Points at which every scenario has a number.'),
+      told: part.whole('Of them, points at which the best scenario is told apart from all others.'),
       agree: part.maybe('Share of the points at which both halves of the replicates name the same scenario.'),
       factors: Type.Array(
         Type.Object({
@@ -166,6 +185,7 @@ export const SweepSummarySchema = Type.Object({
               points: part.whole('At this value, or in this slice of the values.'),
               best: Type.Array(part.maybe('By scenario, the share of these points at which it is best.')),
               preferred: part.text('Best in the mean over these points.'),
+              told: part.maybe('Share of these points at which the best scenario is told apart from all others.'),
             }),
           ),
           switches: Type.Array(
@@ -173,6 +193,15 @@ export const SweepSummarySchema = Type.Object({
               at: part.maybe('Between two neighbouring values; null where they are no numbers.'),
               from: Type.String(),
               to: Type.String(),
+              untold: part.orNull(
+                Type.Object(
+                  { from: Value, to: Value },
+                  {
+                    description:
+                      'Values around it at which at half of the points or more the best scenario is not told apart; null where both neighbours are.',
+                  },
+                ),
+              ),
             }),
           ),
           decides: part.maybe('How much of which scenario is best the number decides by itself, 0 to 1.'),

@@ -8,6 +8,7 @@ import {
   inScenarios,
   isOfRuns,
   moneyUnit,
+  pairColumnsOf,
   quantitiesOf,
   type MeasureName,
   type NumberColumn,
@@ -75,7 +76,10 @@ export function manifestOf({ spec, model }: CompiledModel, plan: SweepPlan, prin
     pointsInPart,
     parts: Math.ceil(points / pointsInPart),
     runs: ofRuns ? { replicates, years, seed } : null,
-    columns: sweepColumns(spec, design.factors, inScenarios(asked, scenarios)),
+    columns: sweepColumns(spec, design.factors, [
+      ...inScenarios(asked, scenarios).flatMap(columnsOf),
+      ...pairColumnsOf(asked, scenarios),
+    ]),
     spec: printed,
   };
 }
@@ -103,11 +107,15 @@ function partSize({ points, cells, measures }: PartSize): number {
 /** What a number of a model is in that has no unit in the language: whatever its author gave it in. */
 export const ownUnit = 'as in the model';
 
-function sweepColumns(spec: Spec, factors: readonly Factor[], quantities: readonly Quantity[]): readonly SweepColumn[] {
+function sweepColumns(
+  spec: Spec,
+  factors: readonly Factor[],
+  numbers: readonly NumberColumn[],
+): readonly SweepColumn[] {
   const currency = spec.money?.currency ?? moneyUnit;
-  const number = ({ name, unit, meaning }: NumberColumn): SweepColumn => ({
+  const number = ({ name, type, unit, meaning }: NumberColumn): SweepColumn => ({
     name,
-    type: 'number',
+    type: type ?? 'number',
     unit: unit === moneyUnit ? currency : unit,
     meaning,
   });
@@ -119,7 +127,7 @@ function sweepColumns(spec: Spec, factors: readonly Factor[], quantities: readon
       unit: isText(factor) ? '' : unitOfPlace(spec, factor.name) || ownUnit,
       meaning: 'Value of this number at the point, in its base unit.',
     })),
-    ...quantities.flatMap(columnsOf).map(number),
+    ...numbers.map(number),
     { name: 'failure', type: 'text', unit: '', meaning: 'Why no model can have these values; empty where one can.' },
   ];
 }

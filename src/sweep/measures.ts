@@ -94,6 +94,8 @@ export function quantitiesOf(
 
 export interface NumberColumn {
   readonly name: string;
+  /** Absent where it need not be whole. */
+  readonly type?: 'integer';
   readonly unit: string;
   readonly meaning: string;
 }
@@ -124,6 +126,69 @@ function inScenario(quantity: Quantity, scenario: string): Quantity {
 export function inScenarios(quantities: readonly Quantity[], scenarios: readonly string[]): readonly Quantity[] {
   if (scenarios.length === 0) return quantities;
   return scenarios.flatMap((name) => quantities.map((quantity) => inScenario(quantity, name)));
+}
+
+/**
+ * Columns of plans set beside each other, quantity by quantity that is from runs: of each scenario but the first its difference to that,
+ * then of each scenario whether it may be the best. In the order of their numbers at a point.
+ */
+export function pairColumnsOf(quantities: readonly Quantity[], scenarios: readonly string[]): readonly NumberColumn[] {
+  const [base, ...others] = scenarios;
+  if (base === undefined) return [];
+  return quantities
+    .filter(isPaired)
+    .flatMap((quantity) => [
+      ...others.flatMap((name) => differenceColumns(inScenario(quantity, name), { name, base })),
+      ...(quantity.better === null ? [] : scenarios.map((name) => perhapsBestColumn(inScenario(quantity, name)))),
+    ]);
+}
+
+export function isPaired({ chance }: Quantity): boolean {
+  return chance;
+}
+
+function differenceColumns(
+  { name: column, unit }: Quantity,
+  { name, base }: { readonly name: string; readonly base: string },
+): readonly NumberColumn[] {
+  const less = `under ${name} less under ${base}, in the same futures`;
+  return [
+    { name: `${column} (difference)`, unit, meaning: `The measure ${less}.` },
+    {
+      name: `${column} (standard error of the difference)`,
+      unit,
+      meaning: 'How far the difference may be off from the number of runs: one standard error of paired values.',
+    },
+    {
+      name: lowerOf(column),
+      unit,
+      meaning: `Lower end of the 95 % interval of the difference, ${less}: of chances by Bonett & Price 2012, else by Student's t. The two are told apart where it does not hold 0.`,
+    },
+    { name: upperOf(column), unit, meaning: 'Upper end of it.' },
+  ];
+}
+
+function perhapsBestColumn({ name }: Quantity): NumberColumn {
+  return {
+    name: perhapsBestOf(name),
+    type: 'integer',
+    unit: '',
+    meaning:
+      '1 where this scenario is best by the measure, or the 95 % interval of the paired difference cannot tell it from the best one; else 0.',
+  };
+}
+
+/** Names of columns beside that of a measure under a scenario. */
+export function lowerOf(column: string): string {
+  return `${column} (lower end of the difference)`;
+}
+
+export function upperOf(column: string): string {
+  return `${column} (upper end of the difference)`;
+}
+
+export function perhapsBestOf(column: string): string {
+  return `${column} (perhaps best)`;
 }
 
 /** Whether it is asked of runs with chance. */

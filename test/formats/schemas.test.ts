@@ -86,6 +86,25 @@ test.each(['grid', 'latin hypercube', 'sobol indices', 'morris', 'one at a time'
   },
 );
 
+test('a sweep of plans fits its schemas', () => {
+  const cwd = folder();
+  const words = [
+    'sweep',
+    'models/which-plan-where.yaml',
+    '--replicates',
+    '8',
+    '--years',
+    '5',
+    '--quiet',
+    '--out',
+    'out',
+  ];
+  expect(skein(words, { cwd }).code).toBe(0);
+  const read = (name: string): unknown => JSON.parse(readFileSync(join(cwd, 'out', name), 'utf8'));
+  expectFits('sweep', read('manifest.json'));
+  expectFits('sweep-summary', read('summary.json'));
+});
+
 test('a comparison with draws and other models fits its schema, and what it writes', () => {
   const words = ['compare', 'models/reed-hare.yaml', '--replicates', '8', '--years', '6', '--draws', '4', '--robust'];
   const cwd = folder();

@@ -17,7 +17,7 @@ import { leading } from '../../src/numeric/leading.ts';
 import { openDesign } from '../../src/sweep/design/design.ts';
 import type { Factor } from '../../src/sweep/design/factor.ts';
 import { manyPoints } from '../../src/sweep/point/many-points.ts';
-import { columnsOf } from '../../src/sweep/measures.ts';
+import { columnsOf, pairColumnsOf, quantitiesOf } from '../../src/sweep/measures.ts';
 import { planSweep } from '../../src/sweep/request.ts';
 import { alone } from '../../src/threads/alone.ts';
 
@@ -32,7 +32,8 @@ function evaluatorOf(spec: Spec, asked: SweepSpec) {
   const { plan, findings } = planSweep(asked, compileSpec(spec).compiled!);
   expect(findings).toEqual([]);
   const evaluator = openEvaluator(spec, plan!);
-  const names = evaluator.quantities.flatMap(columnsOf).map(({ name }) => name);
+  const pairs = pairColumnsOf(quantitiesOf(plan!.measures, compileSpec(spec).compiled!.model), plan!.scenarios);
+  const names = [...evaluator.quantities.flatMap(columnsOf), ...pairs].map(({ name }) => name);
   return (values: readonly (number | string)[]) => {
     const { numbers, failure } = evaluator.at(values);
     return { failure, numbers: Object.fromEntries(names.map((name, i) => [name, numbers[i] ?? NaN])) };
@@ -115,6 +116,49 @@ test('a point that is a whole comparison has the chances and the cost of every p
   // Derived: 150,000 to 210,000 crowns once in the third year, at 3 % a year.
   expect(numbers['cost [rewet the wash]']).toBeCloseTo(180_000 / 1.03 ** 2, 6);
   expect(numbers['cost [as now]']).toBe(0);
+});
+
+test('plans are told apart at a point as a comparison tells them, and their differences have its intervals', async () => {
+  const spec = specOf('reed-hare', { years: 12, replicates: 40 });
+  const at = evaluatorOf(spec, {
+    over: { adult_survival: [0.5, 0.57] },
+    compare: 'all',
+    measures: ['chance', 'animals', 'cost'],
+  });
+  const { numbers } = at([0.57]);
+  const { comparison } = (await compareSpec(alone, { spec, plans: plansOf(spec).plans! }))!;
+  const columns = comparison.objectives.flatMap(({ name, of, better }) => {
+    const column = of === 'chance' ? `chance: ${name}` : name === 'animals at the end' ? 'animals' : name;
+    return column === 'animals taken' || column === 'lowest count' ? [] : [{ name, column, better }];
+  });
+  expect(columns.map(({ column }) => column)).toEqual(expect.arrayContaining(['animals', 'cost']));
+  const names = comparison.scenarios.map((plan) => plan.name);
+  for (const { name, column, better } of columns) {
+    const between = (a: string, b: string) =>
+      comparison.differences.find((one) => one.outcome === name && [a, b].every((x) => [one.from, one.to].includes(x)));
+    for (const plan of names.slice(1)) {
+      const { estimate, interval, method, futures } = between(names[0]!, plan)!;
+      const beside = `${column} [${plan}]`;
+      expect(numbers[`${beside} (difference)`]).toBeCloseTo(estimate, 9);
+      // Derived: differences are -1, 0 or 1, with the mean square (only under one + only under the other) / n.
+      if (futures !== null) {
+        const square = (futures.onlyFrom + futures.onlyTo) / 40;
+        const error = Math.sqrt((square - estimate * estimate) / 40);
+        expect(numbers[`${beside} (standard error of the difference)`]).toBeCloseTo(error, 12);
+      }
+      if (method === 'the two plans are one and the same model') continue;
+      expect(numbers[`${beside} (lower end of the difference)`]).toBeCloseTo(interval.lower, 9);
+      expect(numbers[`${beside} (upper end of the difference)`]).toBeCloseTo(interval.upper, 9);
+    }
+    const sign = better === 'less' ? 1 : -1;
+    const best = names.toSorted(
+      (a, b) => sign * ((numbers[`${column} [${a}]`] ?? NaN) - (numbers[`${column} [${b}]`] ?? NaN)),
+    )[0]!;
+    for (const plan of names) {
+      const may = plan === best || between(best, plan)?.toldApart === false;
+      expect([plan, numbers[`${column} [${plan}] (perhaps best)`]]).toEqual([plan, may ? 1 : 0]);
+    }
+  }
 });
 
 test('a model without money has no cost', () => {

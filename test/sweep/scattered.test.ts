@@ -1,8 +1,8 @@
 // Few points of a sampled design: what one number does is told from what the others did at the same points, and changes of the
 // preferred scenario are told in lines that a terminal holds.
 import { expect, test } from 'vitest';
-import { sweepPage } from '../../src/report/sweep-page.ts';
-import { sweepText } from '../../src/report/sweep-text.ts';
+import { sweepPage } from '../../src/report/sweep/sweep-page.ts';
+import { sweepText } from '../../src/report/sweep/sweep-text.ts';
 import { openDesign, type DesignPlan } from '../../src/sweep/design/design.ts';
 import type { Factor } from '../../src/sweep/design/factor.ts';
 import type { Manifest } from '../../src/sweep/manifest.ts';
@@ -42,7 +42,7 @@ function swept(plan: (survival: number) => number): Swept {
     ['growth [as now]', now],
     ['growth [hedges, moves and mowing]', Float64Array.from(rows, ([survival = NaN]) => plan(survival))],
   ]);
-  return { manifest, values, numbers, failures: new Map() };
+  return { manifest, values, numbers, told: new Map(), perhapsBest: new Map(), failures: new Map() };
 }
 
 test('a number that does nothing decides next to nothing, and one that does all decides most', () => {
@@ -77,13 +77,20 @@ test('the page writes the middle of a slice beside its cells, and draws no map w
 
 test('what changes the preferred scenario is told in lines of the width', () => {
   const back = (survival: number): number => 0.9 + 0.2 * survival + 0.01 * Math.sin(18 * survival);
-  const text = sweepText(summariseSweep(swept(back)), { colour: false, width: 80 });
+  const text = sweepText(summariseSweep(swept(back)), { colour: false, width: 80, details: false });
   expect(text.split('\n').filter((line) => line.length > 80)).toEqual([]);
-  expect(text).toMatch(/^over survival: first “hedges, moves and mowing”; from 0\.\d+ “as now”;/mu);
+  expect(text).toContain('over idle: it decides nothing by itself');
+  expect(text).toMatch(
+    /^over survival, which decides [\d.]+ % of it: first “hedges, moves and mowing”;\sfrom 0\.\d+ “as now”;/mu,
+  );
 });
 
 test('scenarios that are equal everywhere are said to be so, without shares of being best', () => {
-  const text = sweepText(summariseSweep(swept((survival) => 0.9 + 0.2 * survival)), { colour: false, width: 80 });
+  const text = sweepText(summariseSweep(swept((survival) => 0.9 + 0.2 * survival)), {
+    colour: false,
+    width: 80,
+    details: false,
+  });
   expect(text).toContain('best by growth (more is better): no scenario differs from another by it');
   expect(text).not.toContain('best at');
 });

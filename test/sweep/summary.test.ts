@@ -1,14 +1,19 @@
 // What a sweep says where a measure is missing under one scenario, and what a scenario's name may hold.
 import { expect, test } from 'vitest';
 import type { Manifest } from '../../src/sweep/manifest.ts';
+import { sweepText } from '../../src/report/sweep/sweep-text.ts';
 import { summariseSweep } from '../../src/sweep/summary/summarise.ts';
 import type { Swept } from '../../src/sweep/summary/swept.ts';
 
 const scenarios = ['as now', 'mow less often'];
 
-/** A grid of four points over one number, with one measure under both scenarios. */
-function sweptOf(name: string, [now, plan]: readonly [readonly number[], readonly number[]]): Swept {
-  const levels = [1, 2, 3, 4];
+/** A grid over one number, with one measure under both scenarios; `told` by point the sign of their difference, 0 where it is not known. */
+function sweptOf(
+  name: string,
+  [now, plan]: readonly [readonly number[], readonly number[]],
+  told?: readonly number[],
+): Swept {
+  const levels = now.map((_, i) => i + 1);
   const manifest: Manifest = {
     format: 'skein-sweep/1',
     tool: { name: 'skein', version: '0.1.0', kernel: '1' },
@@ -18,8 +23,8 @@ function sweptOf(name: string, [now, plan]: readonly [readonly number[], readonl
     measures: ['growth'],
     scenarios,
     quantities: scenarios.map((scenario) => ({ name, scenario, better: 'more' })),
-    points: 4,
-    pointsInPart: 4,
+    points: levels.length,
+    pointsInPart: levels.length,
     parts: 1,
     runs: null,
     columns: scenarios.map((scenario) => ({ name: `${name} [${scenario}]`, type: 'number', unit: '', meaning: '' })),
@@ -29,7 +34,17 @@ function sweptOf(name: string, [now, plan]: readonly [readonly number[], readonl
     [`${name} [as now]`, Float64Array.from(now)],
     [`${name} [mow less often]`, Float64Array.from(plan)],
   ]);
-  return { manifest, values: [Float64Array.from(levels)], numbers, failures: new Map() };
+  const whole = { manifest, values: [Float64Array.from(levels)], numbers, failures: new Map<string, number>() };
+  if (told === undefined) return { ...whole, told: new Map(), perhapsBest: new Map() };
+  const perhaps = (sign: number) => Int8Array.from(told, (own) => (own === sign || own === 0 ? 1 : 0));
+  return {
+    ...whole,
+    told: new Map([[`${name} [mow less often]`, Int8Array.from(told)]]),
+    perhapsBest: new Map([
+      [`${name} [as now]`, perhaps(-1)],
+      [`${name} [mow less often]`, perhaps(1)],
+    ]),
+  };
 }
 
 test('points at which a measure is missing under any scenario rank none', () => {
@@ -46,7 +61,39 @@ test('points at which a measure is missing under any scenario rank none', () => 
     [3, 'mow less often'],
     [4, 'mow less often'],
   ]);
-  expect(ranking!.factors[0]!.switches).toEqual([{ at: 2.5, from: 'as now', to: 'mow less often' }]);
+  expect(ranking!.factors[0]!.switches).toEqual([{ at: 2.5, from: 'as now', to: 'mow less often', untold: null }]);
+});
+
+test('where runs do not tell two plans apart, neither counts as told best, and a change is known no closer', () => {
+  const swept = sweptOf(
+    'animals',
+    [
+      [10, 10, 10, 10, 10, 10],
+      [7, 9, 9.5, 10.5, 13, 10.1],
+    ],
+    [-1, -1, 0, 0, 1, 0],
+  );
+  const { rankings, quantities } = summariseSweep(swept);
+  const [ranking] = rankings;
+  expect(ranking).toMatchObject({ points: 6, told: 3 });
+  expect(ranking!.scenarios).toEqual([
+    { name: 'as now', best: 0.5, toldBest: 2 / 6 },
+    { name: 'mow less often', best: 0.5, toldBest: 1 / 6 },
+  ]);
+  const [brood] = ranking!.factors;
+  expect(brood!.groups.map(({ told }) => told)).toEqual([1, 1, 0, 0, 1, 0]);
+  expect(brood!.switches).toEqual([{ at: 3.5, from: 'as now', to: 'mow less often', untold: { from: 3, to: 4 } }]);
+  const difference = quantities.find(({ name }) => name.endsWith('less as now]'))!;
+  expect(difference.told).toEqual({ above: 1, below: 2, not: 3 });
+  expect(difference.factors[0]!.response.groups.map(({ told }) => told)).toEqual([1, 1, 0, 0, 1, 0]);
+  const text = sweepText(summariseSweep(swept), { colour: false, width: 80, details: false });
+  expect(text.replaceAll('\n', ' ')).toContain(
+    '“as now” and “mow less often” each at 50.0 % of 6 points; at 3 of them the best is told apart',
+  );
+  expect(text.replaceAll('\n', ' ')).toContain(
+    'first “as now”; from 3.5 “mow less often” (not told apart from 3 to 4)',
+  );
+  expect(text.split('\n').filter((line) => line.length > 80)).toEqual([]);
 });
 
 test('growth goes through 1 under a scenario of any name, and a difference of growths does not', () => {

@@ -11,10 +11,14 @@ import { missingWords } from '../sweep/missing.ts';
 export interface MergeOptions {
   readonly out: string;
   readonly json?: boolean;
+  readonly details?: boolean;
   readonly quiet?: boolean;
 }
 
-export async function mergeSweeps(folders: readonly string[], { out, json, quiet }: MergeOptions): Promise<void> {
+export async function mergeSweeps(
+  folders: readonly string[],
+  { out, json, details, quiet }: MergeOptions,
+): Promise<void> {
   const started = new Date();
   const opened = folders.map(openSweep);
   const [first] = opened;
@@ -33,7 +37,7 @@ export async function mergeSweeps(folders: readonly string[], { out, json, quiet
       throw new Ending(exitCodes.work, `${out} is not complete: ${missing}. What is there is kept.`);
     const summary = await finishSweep(out, manifest);
     writeLog(out, { command: 'sweep merge', hash: manifest.hash, started, threads: 1 });
-    if (json === true || quiet !== true) tellSweep(summary, json);
+    if (json === true || quiet !== true) tellSweep(summary, { json: json === true, details: details === true });
   } finally {
     store.close();
   }

@@ -52,7 +52,7 @@ interface Done {
 async function finish(
   store: Store,
   { manifest, threads, started }: Done,
-  { quiet, json }: SweepOptions,
+  { quiet, json, details }: SweepOptions,
 ): Promise<void> {
   const missing = manifest.parts - store.finished().size;
   if (missing > 0) {
@@ -62,7 +62,7 @@ async function finish(
   }
   const summary = await finishSweep(store.folder, manifest);
   writeLog(store.folder, { command: 'sweep', hash: manifest.hash, started, threads });
-  tellSweep(summary, json);
+  tellSweep(summary, { json: json === true, details: details === true });
 }
 
 function withoutSweep({ named, ...core }: Spec): Spec {

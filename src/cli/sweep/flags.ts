@@ -50,7 +50,11 @@ export interface SweepOptions extends CommonOptions {
   readonly compare?: 'all' | string[];
   readonly shard?: Shard;
   readonly plan?: boolean;
+  readonly details?: boolean;
 }
+
+/** Of every command that tells of a sweep. */
+export const detailsOfSweep = 'print every measure under every plan and what matters for it, too';
 
 export function addSweepOptions(command: Command): Command {
   const over = '--over <name=values>';
@@ -82,7 +86,8 @@ export function addSweepOptions(command: Command): Command {
     .addOption(
       new Option('--shard <i/n>', 'do only the i-th of n shards, for `skein sweep merge`').argParser(readShard),
     )
-    .option('--plan', 'say what would be done and what it costs, and stop');
+    .option('--plan', 'say what would be done and what it costs, and stop')
+    .option('--details', detailsOfSweep);
 }
 
 function wholeFrom(lowest: number): (text: string) => number {

@@ -3,7 +3,7 @@ import { readFileSync } from 'node:fs';
 import { parquetRead } from 'hyparquet';
 import type { Manifest } from '../../sweep/manifest.ts';
 import { isText, placeOfPart } from '../../sweep/manifest.ts';
-import type { Swept } from '../../sweep/summary/swept.ts';
+import { SweptColumns, type Swept } from '../../sweep/summary/swept.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { reasonOf } from '../output.ts';
 import { partPath } from './store.ts';
@@ -40,14 +40,12 @@ export async function readSwept(
   manifest: Manifest,
   also?: (part: PartColumns, count: number) => void,
 ): Promise<Swept> {
-  const { design, columns, points, parts } = manifest;
+  const { design, points, parts } = manifest;
   const { factors } = design;
   const values = factors.map((factor) =>
     isText(factor) ? new Array<string>(points).fill('') : new Float64Array(points),
   );
-  const named = columns
-    .slice(1 + factors.length, -1)
-    .map(({ name }) => [name, new Float64Array(points).fill(NaN)] as const);
+  const columns = new SweptColumns(manifest);
   const failures = new Map<string, number>();
   for (let part = 0; part < parts; part++) {
     const read = await readPart(folder, part);
@@ -56,13 +54,14 @@ export async function readSwept(
     factors.forEach(({ name }, k) => {
       for (let i = 0; i < count; i++) setAt(values[k], first + i, read.get(name)?.[i]);
     });
-    for (const [name, into] of named) for (let i = 0; i < count; i++) setAt(into, first + i, read.get(name)?.[i]);
+    columns.take((name) => read.get(name), first, count);
     for (let i = 0; i < count; i++) {
       const reason = read.get('failure')?.[i];
       if (typeof reason === 'string') failures.set(reason, (failures.get(reason) ?? 0) + 1);
     }
   }
-  return { manifest, values, numbers: new Map(named), failures };
+  const { numbers, told, perhapsBest } = columns;
+  return { manifest, values, numbers, told, perhapsBest, failures };
 }
 
 function setAt(into: Float64Array | string[] | undefined, row: number, cell: unknown): void {

@@ -1,38 +1,27 @@
 // One point: its model, and what the measures say of it.
-import { equilibriumFrom } from '../../analysis/equilibrium.ts';
-import { spectrum } from '../../analysis/spectrum.ts';
-import { buildBlock } from '../../compile/block.ts';
-import { moneyIn } from '../../compare/plans-of.ts';
 import { dependsOnMakeUp } from '../../compile/make-up.ts';
-import { linearisedBlock } from '../../compile/slopes/linearised.ts';
 import { solveStages } from '../../compile/stage-advance.ts';
-import { wholeYear, type Compiled } from '../../compile/year-map.ts';
-import { batchesOf, runnerOn } from '../../kernel/batch.ts';
-import { runPath } from '../../kernel/path.ts';
-import { openNext } from '../../kernel/reuse.ts';
+import type { Compiled } from '../../compile/year-map.ts';
 import { buildLandscape } from '../../landscape/build.ts';
-import type { Machine } from '../../machine/instance.ts';
 import { loadMachine } from '../../machine/machine.ts';
-import type { PlanCost } from '../../model/costs.ts';
 import type { Model } from '../../model/model.ts';
 import { compileSpec } from '../../pipeline.ts';
 import { resolveModel } from '../../model/resolve.ts';
-import { leading } from '../../numeric/leading.ts';
 import type { Finding } from '../../spec/finding.ts';
 import { asNow } from '../../spec/plans/lay.ts';
 import { scenarioOf, withScenario } from '../../spec/plans/scenarios.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { Value } from '../design/factor.ts';
-import { columnsOf, inScenarios, isOfRuns, quantitiesOf, type Quantity } from '../measures.ts';
+import { columnsOf, inScenarios, isOfRuns, pairColumnsOf, quantitiesOf, type Quantity } from '../measures.ts';
 import type { SweepPlan } from '../request.ts';
+import { answerPoint, pairedAnswers, type Answered, type CompiledPoint } from './answers.ts';
 import { openChange } from './change.ts';
 import { manyPoints } from './many-points.ts';
 import { movingModel } from './moving-model.ts';
-import { Tally } from './tally.ts';
 
 /** What a point came to. */
 export interface PointResult {
-  /** In the order of the columns of the quantities; NaN for what is missing. */
+  /** In the order of the columns of the quantities, then of `pairColumnsOf`; NaN for what is missing. */
   readonly numbers: Float64Array;
   /** Why no model can have these values; empty where one can. */
   readonly failure: string;
@@ -52,23 +41,25 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
   if (base === null) throw new Error('The base model of a sweep has a mistake.');
   const asked = quantitiesOf(measures, base);
   const quantities = inScenarios(asked, scenarios);
-  const width = quantities.flatMap(columnsOf).length;
+  const width = [...quantities.flatMap(columnsOf), ...pairColumnsOf(asked, scenarios)].length;
   const machine = measures.some(isOfRuns) ? loadMachine() : null;
   const inBase = change(design.factors.map((factor) => factor.base));
   const asNowOnly = scenarios.length === 0 && scenarioOf(inBase) === asNow;
   const moving = asNowOnly && !asked.every(isNearZero) ? movingModel(inBase, design.factors) : null;
+  const asking = { quantities: asked, machine, paired: scenarios.length > 0 };
   const at = (values: readonly Value[]): PointResult => {
     const moved = moving?.(values) ?? null;
-    if (moved !== null) return { numbers: measure(moved, asked, machine), failure: '' };
+    if (moved !== null) return { numbers: Float64Array.from(answerPoint(moved, asking).numbers), failure: '' };
     const changed = change(values);
     const specs = scenarios.length === 0 ? [changed] : scenarios.map((name) => withScenario(changed, name));
-    const numbers = new Float64Array(width).fill(NaN);
-    for (const [s, own] of specs.entries()) {
+    const answers: Answered[] = [];
+    for (const own of specs) {
       const compiled = compilePoint(own, asked);
-      if (typeof compiled === 'string') return { numbers: numbers.fill(NaN), failure: compiled };
-      numbers.set(measure(compiled, asked, machine), (s * width) / specs.length);
+      if (typeof compiled === 'string') return { numbers: new Float64Array(width).fill(NaN), failure: compiled };
+      answers.push(answerPoint(compiled, asking));
     }
-    return { numbers, failure: '' };
+    const paired = asking.paired ? pairedAnswers(asked, answers) : [];
+    return { numbers: Float64Array.from([...answers.flatMap(({ numbers }) => numbers), ...paired]), failure: '' };
   };
   const growthOnly = measures.every((name) => name === 'growth') && asNowOnly;
   const many = growthOnly ? manyPoints(inBase, design.factors, withoutCrowding) : null;
@@ -81,14 +72,6 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
     });
   };
   return { quantities, at: (values) => all([values])[0] ?? at(values), all };
-}
-
-interface CompiledPoint extends Compiled {
-  /** Absent where no measure needs them. */
-  readonly startAnimals?: Float64Array;
-  readonly image?: ArrayBuffer;
-  /** Of the plan; absent where there is none. */
-  readonly cost?: PlanCost;
 }
 
 /** A text says why there is no such model. */
@@ -132,79 +115,4 @@ function anyError(findings: readonly Finding[]): boolean {
 
 function reasonOf(findings: readonly Finding[]): string {
   return findings.find(({ severity }) => severity === 'error')?.message ?? '';
-}
-
-function measure(point: CompiledPoint, quantities: readonly Quantity[], machine: Machine | null): Float64Array {
-  const { model, image } = point;
-  const runs =
-    machine === null || image === undefined ? null : tallied(machine, image, { model, cost: point.cost, quantities });
-  const plain = new PlainAnswers(point);
-  return Float64Array.from(
-    quantities.flatMap((quantity) => (quantity.chance ? [...(runs?.numbersOf(quantity) ?? [])] : [plain.of(quantity)])),
-  );
-}
-
-interface Tallying {
-  readonly model: Model;
-  readonly cost: PlanCost | undefined;
-  readonly quantities: readonly Quantity[];
-}
-
-function tallied(machine: Machine, image: ArrayBuffer, { model, cost, quantities }: Tallying): Tally {
-  openNext(machine, image);
-  const run = runnerOn(machine, image, { steps: model.steps, seed: model.seed, reuse: true });
-  const moneyOf = cost === undefined ? null : moneyIn({ model, cost });
-  const tally = new Tally(model, quantities, moneyOf);
-  for (const batch of batchesOf(model.replicates)) tally.take(run(batch));
-  return tally;
-}
-
-/** Answers without chance; the matrix near zero is built once for all that need it. */
-class PlainAnswers {
-  readonly #point: CompiledPoint;
-  #found: { readonly growth: number; readonly damping: () => number } | null = null;
-
-  constructor(point: CompiledPoint) {
-    this.#point = point;
-  }
-
-  of({ measure }: Quantity): number {
-    switch (measure) {
-      case 'growth':
-        return this.#nearZero().growth;
-      case 'damping':
-        return this.#nearZero().damping();
-      case 'standing':
-        return this.#standing();
-      case 'path-end':
-        return this.#pathEnd();
-      default:
-        return NaN;
-    }
-  }
-
-  #nearZero() {
-    if (this.#found !== null) return this.#found;
-    const { matrix } = linearisedBlock(this.#point) ?? buildBlock(this.#point, 'zero');
-    const found = leading(matrix);
-    this.#found = {
-      growth: found.growthRate,
-      damping: () => spectrum(matrix, found)?.dampingRatio ?? NaN,
-    };
-    return this.#found;
-  }
-
-  #standing(): number {
-    const { startAnimals: start } = this.#point;
-    const found = start === undefined ? null : equilibriumFrom(wholeYear(this.#point), start);
-    return found === null ? NaN : found.animals.reduce((sum, animals) => sum + animals, 0);
-  }
-
-  #pathEnd(): number {
-    const { model, image } = this.#point;
-    if (image === undefined) return NaN;
-    const { animals } = runPath(image, { steps: model.steps });
-    const cells = model.patches.length * model.classes.length;
-    return animals.subarray(model.steps * cells).reduce((sum, value) => sum + value, 0);
-  }
 }

@@ -1,5 +1,5 @@
 // What the measures need of the runs of a point, kept apart for the two halves of the replicates. Exact sums of whole numbers (of money as it comes):
-// the same as those of a run with the same settings.
+// the same as those of a run with the same settings. Where plans are set beside each other, also what every future came to.
 import { firstHandledColumn } from '../../compile/image/count.ts';
 import type { MoneyOf } from '../../compare/plan.ts';
 import { lanes } from '../../kernel/batch.ts';
@@ -19,15 +19,33 @@ interface Sum {
   readonly squares: number;
 }
 
+export interface TallyOptions {
+  /** Of the plan; null where it costs nothing. */
+  readonly moneyOf: MoneyOf | null;
+  /** Whether what every future came to is kept. */
+  readonly keepsFutures: boolean;
+}
+
 export class Tally {
   readonly #model: Model;
   readonly #halves: readonly [Half, Half];
+  /** By name of the quantity. */
+  readonly #futures: ReadonlyMap<string, Float64Array>;
 
-  /** `moneyOf` of the plan; null where it costs nothing. */
-  constructor(model: Model, quantities: readonly Quantity[], moneyOf: MoneyOf | null) {
+  constructor(model: Model, quantities: readonly Quantity[], { moneyOf, keepsFutures }: TallyOptions) {
     this.#model = model;
     const ofRuns = quantities.filter(({ measure }) => isOfRuns(measure));
-    this.#halves = [new Half(model, ofRuns, moneyOf), new Half(model, ofRuns, moneyOf)];
+    const kept = keepsFutures ? ofRuns : [];
+    this.#futures = new Map(kept.map(({ name }) => [name, new Float64Array(model.replicates).fill(NaN)]));
+    const half = (): Half => new Half(model, ofRuns, { moneyOf, futures: this.#futures });
+    this.#halves = [half(), half()];
+  }
+
+  /** By future; NaN for those that were stopped. */
+  futuresOf({ name }: Quantity): Float64Array {
+    const own = this.#futures.get(name);
+    if (own === undefined) throw new RangeError(`The futures of ${name} were not kept.`);
+    return own;
   }
 
   take(batch: BatchCounts): void {
@@ -48,8 +66,15 @@ export class Tally {
   }
 }
 
+interface HalfOptions {
+  readonly moneyOf: MoneyOf | null;
+  readonly futures: ReadonlyMap<string, Float64Array>;
+}
+
 class Half {
   readonly #model: Model;
+  readonly #quantities: readonly Quantity[];
+  readonly #futures: ReadonlyMap<string, Float64Array>;
   /** By outcome; null where no quantity asks for it. */
   readonly #hits: readonly (Hits | null)[];
   /** By quantity that is no chance. */
@@ -58,9 +83,11 @@ class Half {
   readonly #firstHandled: number;
   #runs = 0;
 
-  constructor(model: Model, quantities: readonly Quantity[], moneyOf: MoneyOf | null) {
+  constructor(model: Model, quantities: readonly Quantity[], { moneyOf, futures }: HalfOptions) {
     const { steps, replicates, outcomes } = model;
     this.#model = model;
+    this.#quantities = quantities;
+    this.#futures = futures;
     this.#moneyOf = moneyOf;
     this.#firstHandled = firstHandledColumn(model);
     this.#hits = outcomes.map(({ event, counts }, k) =>
@@ -77,12 +104,30 @@ class Half {
     this.#hits.forEach((hits, k) => {
       if (hits === null) return;
       const place = (firstPatchColumn + patches.length + k) * lanes + lane;
+      const before = hits.nowAt[steps] ?? 0;
       for (let t = 0; t <= steps; t++) hits.add(t, first + lane, counts[t * columns + place] ?? 0);
+      this.#keepHit(k, first + lane, {
+        ever: (hits.first[first + lane] ?? 0) > 0,
+        atEnd: hits.nowAt[steps] !== before,
+      });
     });
     for (const [measure, sums] of this.#sums) {
       const value = this.#valueOf(measure, counts.subarray(lane), columns);
       sums.sum += value;
       sums.squares += value * value;
+      this.#futures.get(measure)?.fill(value, first + lane, first + lane + 1);
+    }
+  }
+
+  #keepHit(
+    outcome: number,
+    future: number,
+    { ever, atEnd }: { readonly ever: boolean; readonly atEnd: boolean },
+  ): void {
+    if (this.#futures.size === 0) return;
+    for (const { name, measure, outcome: own } of this.#quantities) {
+      const values = own === outcome ? this.#futures.get(name) : undefined;
+      if (values !== undefined) values[future] = (measure === 'chance' ? ever : atEnd) ? 1 : 0;
     }
   }
 

@@ -1,9 +1,10 @@
 // A measure over two numbers at a time: its mean in each cell, the other numbers taken together.
 import { isSampled } from '../design/design.ts';
 import type { Value } from '../design/factor.ts';
+import { toldApart } from './ranking.ts';
 import { groupsOf } from './response.ts';
 import type { SweepSummary } from './summarise.ts';
-import type { Swept } from './swept.ts';
+import { columnOf, type Swept } from './swept.ts';
 
 export interface HeatMap {
   readonly quantity: string;
@@ -73,6 +74,8 @@ export interface PreferredMap {
   readonly y: HeatAxis;
   /** Index of the scenario that is best in the mean; −1 where no point lies, −2 where several are equally good. */
   readonly cells: Int32Array;
+  /** Share of the points of a cell at which the best scenario is told apart from all others; NaN where no point lies. */
+  readonly told: Float64Array;
 }
 
 /** Which scenario is best in each cell, from the maps of a quantity under each of them. */
@@ -81,7 +84,7 @@ export function preferredMaps(swept: Swept, summary: SweepSummary): readonly Pre
     const names = swept.manifest.design.factors.map(({ name }) => name);
     const [first, second] = factors.map((factor) => names.indexOf(factor.name));
     if (first === undefined || second === undefined || summary.design === 'one at a time') return [];
-    const measures = scenarios.map(({ name }) => swept.numbers.get(`${quantity} [${name}]`) ?? new Float64Array(0));
+    const measures = scenarios.map(({ name }) => swept.numbers.get(columnOf(quantity, name)) ?? new Float64Array(0));
     const rows = [...(measures[0]?.keys() ?? [])].filter((row) =>
       measures.every((one) => !Number.isNaN(one[row] ?? NaN)),
     );
@@ -94,6 +97,16 @@ export function preferredMaps(swept: Swept, summary: SweepSummary): readonly Pre
       const best = Math.min(...own);
       return own.filter((value) => value === best).length > 1 ? -2 : own.indexOf(best);
     });
-    return [{ quantity, scenarios: scenarios.map(({ name }) => name), x: axes[0].axis, y: axes[1].axis, cells }];
+    const perhaps = scenarios.map(({ name }) => swept.perhapsBest.get(columnOf(quantity, name)) ?? null);
+    const toldBest = toldApart(
+      measures.map((measure) => measure.map((value) => sign * value)),
+      perhaps,
+    );
+    const told = cellsOf(
+      Float64Array.from(toldBest, (best) => (best < 0 ? 0 : 1)),
+      rows,
+      axes,
+    );
+    return [{ quantity, scenarios: scenarios.map(({ name }) => name), x: axes[0].axis, y: axes[1].axis, cells, told }];
   });
 }

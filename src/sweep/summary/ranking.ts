@@ -6,6 +6,8 @@ import { groupsOf } from './response.ts';
 export interface RankedScenario {
   readonly name: string;
   readonly observed: Observed;
+  /** By point 1 where it is best or cannot be told from the best; null without chance, where numbers say it. */
+  readonly perhapsBest: Int8Array | null;
 }
 
 export interface RankingGroup {
@@ -16,13 +18,27 @@ export interface RankingGroup {
   readonly best: readonly number[];
   /** Best in the mean over these points; `equal` where several are. */
   readonly preferred: string;
+  /** Share of these points at which the best scenario is told apart from all others. */
+  readonly told: number;
+}
+
+export interface Switch {
+  /** Null where the values are no numbers. */
+  readonly at: number | null;
+  readonly from: string;
+  readonly to: string;
+  /**
+   * Values around it, its neighbours and on, at which at half of the points or more the best scenario is not told apart: where it changes
+   * is not known closer than that. Null where both neighbours are told apart.
+   */
+  readonly untold: { readonly from: Value; readonly to: Value } | null;
 }
 
 export interface FactorRanking {
   readonly name: string;
   readonly groups: readonly RankingGroup[];
   /** Between which neighbouring values the preferred scenario changes. */
-  readonly switches: readonly { readonly at: number | null; readonly from: string; readonly to: string }[];
+  readonly switches: readonly Switch[];
   /** How much of which scenario is best the number decides by itself: 0 nothing, 1 all of it. */
   readonly decides: number | null;
 }
@@ -30,7 +46,11 @@ export interface FactorRanking {
 export interface Ranking {
   readonly quantity: string;
   readonly better: 'less' | 'more';
-  readonly scenarios: readonly { readonly name: string; readonly best: number }[];
+  /** Shares of the points at which it is best, and at which it is so and told apart from all others. */
+  readonly scenarios: readonly { readonly name: string; readonly best: number; readonly toldBest: number }[];
+  /** Points at which every scenario has a number, and how many of them tell the best scenario apart from all others. */
+  readonly points: number;
+  readonly told: number;
   /** Share of the points at which both halves of the replicates name the same scenario; null without chance. */
   readonly agree: number | null;
   /** What decides most first. */
@@ -67,17 +87,40 @@ export function rankScenarios({ quantity, better, scenarios, factors, sampled }:
   const known = Array.from({ length: points }, (_, row) => row).filter(isKnown);
   const noisy = scenarios.some(({ observed }) => observed.first !== observed.second);
   const best = bestShares(worst, known);
+  const toldBest = toldApart(
+    worst,
+    scenarios.map(({ perhapsBest }) => perhapsBest),
+  );
+  const toldAt = scenarios.map((_, s) => known.filter((row) => toldBest[row] === s).length);
   return {
     quantity,
     better,
-    scenarios: scenarios.map(({ name }, s) => ({ name, best: best[s] ?? NaN })),
+    scenarios: scenarios.map(({ name }, s) => ({
+      name,
+      best: best[s] ?? NaN,
+      toldBest: (toldAt[s] ?? 0) / known.length,
+    })),
+    points: known.length,
+    told: toldAt.reduce((sum, own) => sum + own, 0),
     agree: noisy ? agreement(first, second, { known, sign }) : null,
     factors: factors
       .map(({ name, values, rows }) => {
-        return factorRanking(name, values, { worst, scenarios, rows: rows.filter(isKnown), best, sampled });
+        return factorRanking(name, values, { worst, toldBest, scenarios, rows: rows.filter(isKnown), best, sampled });
       })
       .toSorted((a, b) => (b.decides ?? -1) - (a.decides ?? -1)),
   };
+}
+
+/** By point, which scenario is told to be the best one; −1 where several may be. `worst` by scenario, less is better. */
+export function toldApart(
+  worst: readonly Float64Array[],
+  perhapsBest: readonly RankedScenario['perhapsBest'][],
+): Int32Array {
+  return Int32Array.from(worst[0] ?? [], (_, row) => {
+    const least = Math.min(...worst.map((values) => values[row] ?? NaN));
+    const may = perhapsBest.map((own, s) => (own === null ? worst[s]?.[row] === least : own[row] === 1));
+    return may.filter(Boolean).length === 1 ? may.indexOf(true) : -1;
+  });
 }
 
 /** By scenario, the share of rows at which it is best. */
@@ -106,6 +149,7 @@ function agreement(first: readonly Float64Array[], second: readonly Float64Array
 
 interface Ranked {
   readonly worst: readonly Float64Array[];
+  readonly toldBest: Int32Array;
   readonly scenarios: readonly RankedScenario[];
   readonly rows: readonly number[];
   readonly best: readonly number[];
@@ -113,7 +157,7 @@ interface Ranked {
 }
 
 function factorRanking(name: string, values: Float64Array | readonly string[], ranked: Ranked): FactorRanking {
-  const { worst, scenarios, rows, best, sampled } = ranked;
+  const { worst, toldBest, scenarios, rows, best, sampled } = ranked;
   const groups = groupsOf(values, { rows, sampled }).map((own): RankingGroup => {
     const [first = 0, last = first] = [own[0], own.at(-1)];
     const means = worst.map((one) => own.reduce((sum, row) => sum + (one[row] ?? 0), 0));
@@ -126,6 +170,7 @@ function factorRanking(name: string, values: Float64Array | readonly string[], r
       points: own.length,
       best: bestShares(worst, own),
       preferred,
+      told: own.filter((row) => (toldBest[row] ?? -1) >= 0).length / own.length,
     };
   });
   return { name, groups, switches: switchesOf(groups), decides: decided(groups, { best, sampled }) };
@@ -136,8 +181,18 @@ function switchesOf(groups: readonly RankingGroup[]): FactorRanking['switches'] 
     const before = groups[i - 1];
     if (before === undefined || before.preferred === group.preferred) return [];
     const at = typeof before.to === 'number' && typeof group.from === 'number' ? (before.to + group.from) / 2 : null;
-    return [{ at, from: before.preferred, to: group.preferred }];
+    return [{ at, from: before.preferred, to: group.preferred, untold: untoldAround(groups, i) }];
   });
+}
+
+/** Around the step from group i − 1 to group i. */
+function untoldAround(groups: readonly RankingGroup[], i: number): Switch['untold'] {
+  const isTold = (group: RankingGroup | undefined): boolean => group === undefined || group.told > 0.5;
+  let [first, last] = [i, i - 1];
+  while (!isTold(groups[first - 1])) first--;
+  while (!isTold(groups[last + 1])) last++;
+  const [from, to] = [groups[first], groups[last]];
+  return from === undefined || to === undefined || first > last ? null : { from: from.from, to: to.to };
 }
 
 /**

@@ -11,6 +11,8 @@ export interface ResponseGroup {
   /** Values that 5 and 95 % of the points do not exceed: what the other factors do. */
   readonly lower: number;
   readonly upper: number;
+  /** Of a difference from runs, the share of the points that tell it from 0; absent of all else. */
+  readonly told?: number;
 }
 
 export interface Response {
@@ -30,16 +32,25 @@ export interface RowsAsked {
   readonly sampled: boolean;
 }
 
+export interface ResponseAsked extends RowsAsked {
+  /** By point, 0 where a difference is not told from 0. */
+  readonly told?: Int8Array;
+}
+
 /** Over the points `rows`; those without a measure are left out. */
 export function responseTo(
   values: Float64Array | readonly string[],
   measure: Float64Array,
-  { rows, sampled }: RowsAsked,
+  { rows, sampled, told }: ResponseAsked,
 ): Response {
   const known = rows.filter((row) => !Number.isNaN(measure[row] ?? NaN));
   const groups = groupsOf(values, { rows: known, sampled });
   return {
-    groups: groups.map((own) => groupOf(values, measure, own)),
+    groups: groups.map((own) => {
+      const group = groupOf(values, measure, own);
+      if (told === undefined) return group;
+      return { ...group, told: own.filter((row) => told[row] !== 0).length / own.length };
+    }),
     explained: explainedBy(groups, measure, sampled),
   };
 }

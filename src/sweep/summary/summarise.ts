@@ -9,7 +9,7 @@ import { screening, type FactorScreen } from '../sensitivity/screening.ts';
 import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
 import { rankScenarios, type Ranking } from './ranking.ts';
 import { crossings, responseTo, type Response } from './response.ts';
-import type { Swept } from './swept.ts';
+import { columnOf, type Swept } from './swept.ts';
 
 /** Unit of a chance less another one. */
 export const differenceOfShares = 'difference of shares';
@@ -46,6 +46,8 @@ export interface QuantitySummary {
   readonly noise: number | null;
   /** Without that noise; null but for the design `sobol indices`. */
   readonly variance: number | null;
+  /** Of a difference from runs, at how many points its 95 % interval lies above 0, below, and at how many it holds 0; else null. */
+  readonly told: { readonly above: number; readonly below: number; readonly not: number } | null;
   /** The factors, what matters most first. */
   readonly factors: readonly FactorSummary[];
   /** What the order of the factors is by. */
@@ -78,7 +80,7 @@ export function summariseSweep(swept: Swept): SweepSummary {
     factors: design.factors.map(({ name, base }) => ({ name, base, unit: unitOf(manifest, name) })),
     quantities: [...quantityColumns(swept), ...differenceColumns(swept)].map((one) => summariseQuantity(swept, one)),
     rankings: rankingsOf(swept),
-    assumptions: assumptionsOf(design.design, runs !== null),
+    assumptions: assumptionsOf(design.design, { runs: runs !== null, told: swept.perhapsBest.size > 0 }),
   };
 }
 
@@ -92,6 +94,8 @@ interface QuantityColumn {
   readonly unit: string;
   readonly meaning: string;
   readonly observed: Observed;
+  /** Of a difference from runs: by point 1 where it is above 0 for sure, −1 below, else 0. */
+  readonly told: Int8Array | null;
   /** Whether it is the growth of the model, of which it matters where it goes through 1. */
   readonly growth: boolean;
 }
@@ -102,12 +106,8 @@ function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[
     const observed = column === undefined ? null : observedOf(numbers, column.name);
     return column === undefined || observed === null
       ? []
-      : [{ ...column, observed, growth: quantity.name === 'growth' }];
+      : [{ ...column, observed, told: null, growth: quantity.name === 'growth' }];
   });
-}
-
-function columnOf(name: string, scenario: string | null): string {
-  return scenario === null ? name : `${name} [${scenario}]`;
 }
 
 function observedOf(numbers: Swept['numbers'], name: string): Observed | null {
@@ -117,7 +117,8 @@ function observedOf(numbers: Swept['numbers'], name: string): Observed | null {
 }
 
 /** Of each scenario that is compared against the first, in the same futures. */
-function differenceColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
+function differenceColumns(swept: Swept): readonly QuantityColumn[] {
+  const { manifest, numbers } = swept;
   const [base] = manifest.scenarios;
   if (base === undefined) return [];
   return manifest.quantities.flatMap(({ name, scenario }) => {
@@ -131,7 +132,8 @@ function differenceColumns({ manifest, numbers }: Swept): readonly QuantityColum
     const observed = { first: one, second: half ? one : less(own.second, first.second) };
     const unit = column.unit === 'share' ? differenceOfShares : column.unit;
     const meaning = `${name} of ${String(scenario)} less that of ${base}, in the same futures.`;
-    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed, growth: false }];
+    const told = swept.told.get(columnOf(name, scenario)) ?? null;
+    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed, told, growth: false }];
   });
 }
 
@@ -145,13 +147,15 @@ function rankingsOf(swept: Swept): readonly Ranking[] {
     if (scenario !== base || better === null) return [];
     const ranked = scenarios.flatMap((one) => {
       const observed = observedOf(numbers, columnOf(name, one));
-      return observed === null ? [] : [{ name: one, observed }];
+      const perhapsBest = swept.perhapsBest.get(columnOf(name, one)) ?? null;
+      return observed === null ? [] : [{ name: one, observed, perhapsBest }];
     });
     return [rankScenarios({ quantity: name, better, scenarios: ranked, factors, sampled: isSampled(design) })];
   });
 }
 
-function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth }: QuantityColumn): QuantitySummary {
+function summariseQuantity(swept: Swept, column: QuantityColumn): QuantitySummary {
+  const { name, unit, meaning, observed, told, growth } = column;
   const { design, runs } = swept.manifest;
   const whole = swept.numbers.get(name) ?? observed.first.map((_, row) => wholeAt(observed, row));
   const known = whole.filter((value) => !Number.isNaN(value));
@@ -163,6 +167,7 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth
     const response = responseTo(swept.values[k] ?? [], whole, {
       rows: rowsOf(swept, k),
       sampled: isSampled(design),
+      ...(told === null ? {} : { told }),
     });
     return {
       name: factor.name,
@@ -183,9 +188,17 @@ function summariseQuantity(swept: Swept, { name, unit, meaning, observed, growth
     mean: known.reduce((sum, value) => sum + value, 0) / known.length,
     noise: runs === null || observed.first === observed.second ? null : noiseShare(observed),
     variance: shares?.variance ?? null,
+    told: told === null ? null : toldAt(told, whole),
     factors: factors.toSorted((a, b) => weight(b) - weight(a)),
     orderedBy: by,
   };
+}
+
+/** Over the points with a number. */
+function toldAt(told: Int8Array, whole: Float64Array): NonNullable<QuantitySummary['told']> {
+  const own = told.filter((_, row) => !Number.isNaN(whole[row] ?? NaN));
+  const [above, below] = [own.filter((sign) => sign > 0).length, own.filter((sign) => sign < 0).length];
+  return { above, below, not: own.length - above - below };
 }
 
 /** Where one number at a time changes, the points at which the others are as in the model. */
@@ -235,7 +248,13 @@ function spanOf({ groups }: Response): number {
   return Math.max(...means) - Math.min(...means);
 }
 
-function assumptionsOf(design: DesignName, withRuns: boolean): readonly string[] {
+interface Drawn {
+  readonly runs: boolean;
+  /** Whether plans are told apart. */
+  readonly told: boolean;
+}
+
+function assumptionsOf(design: DesignName, { runs, told }: Drawn): readonly string[] {
   const own: Readonly<Record<DesignName, readonly string[]>> = {
     grid: [ranksAssume, explainedAssumes],
     list: [ranksAssume, explainedAssumes],
@@ -253,9 +272,12 @@ function assumptionsOf(design: DesignName, withRuns: boolean): readonly string[]
   };
   const noise =
     'Every point has the same futures (common random numbers). What comes from the number of replicates is told apart by running each point in two halves: products of one half with the other hold no noise on average.';
-  return withRuns ? [...own[design], noise] : own[design];
+  return [...own[design], ...(runs ? [noise] : []), ...(told ? [toldAssumes] : [])];
 }
 
+/** What telling plans apart rests on. */
+export const toldAssumes =
+  'Plans are told apart at a point where the 95 % interval of their paired difference does not hold 0 (of chances by Bonett & Price 2012, else by Student’s t), at each point by itself: of a hundred points at which two plans are equally good about five tell them apart by chance.';
 const ranksAssume =
   'Partial rank correlations hold where the measure only rises or only falls with a number; noise of replicates draws them towards 0.';
 const explainedAssumes =

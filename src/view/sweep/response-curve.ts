@@ -13,6 +13,8 @@ export interface ResponseCurve {
     readonly mean: number;
     readonly lower: number;
     readonly upper: number;
+    /** Drawn open: at half of the points or more it is not told from 0. */
+    readonly open: boolean;
   }[];
   /** What a mark stands for, such as `each value that was run`. */
   readonly at: string;
@@ -58,7 +60,8 @@ export function drawResponse({ measure, number, points, at, level, write }: Resp
     points.length > mostMarks
       ? null
       : points.map(
-          (one) => mark`<circle cx="${x(one.at)}" cy="${y(one.mean)}" r="3.2" fill="${deep}" stroke="${paper}"/>`,
+          (one) =>
+            mark`<circle cx="${x(one.at)}" cy="${y(one.mean)}" r="3.2" fill="${one.open ? paper : deep}" stroke="${one.open ? deep : paper}"/>`,
         );
   const content = mark`<text x="0" y="16" fill="${ink}">${measure}</text>${rules}${foot}
 <path d="${band([...points]) ?? ''}" fill="${tint}"/>${levelLine}
@@ -69,7 +72,9 @@ export function drawResponse({ measure, number, points, at, level, write }: Resp
     first === undefined || last === undefined
       ? ''
       : `From ${write(first.mean)} at ${String(first.at)} to ${write(last.mean)} at ${String(last.at)}. `;
-  const marked = marks === null ? '' : `, marked at ${at}`;
+  const isOpen = marks !== null && points.some(({ open }) => open);
+  const told = isOpen ? ' (open where at half of the points or more it is not told from 0)' : '';
+  const marked = marks === null ? '' : `, marked at ${at}${told}`;
   const description = `${ends}The line is the mean${marked}, the band holds the middle 90 % of the points.`;
   return figure(size, { title: `${measure} over ${number}`, description }, content);
 }

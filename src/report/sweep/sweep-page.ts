@@ -1,17 +1,18 @@
 // What a sweep says as one page: what matters most, how each measure answers each number, and where growth goes through 1 or the
 // preferred plan changes. It has no script, and its tables hold what the figures show.
-import { heatMaps, preferredMaps, type HeatAxis, type HeatMap, type PreferredMap } from '../sweep/summary/heat.ts';
-import type { FactorSummary, QuantitySummary, SweepSummary } from '../sweep/summary/summarise.ts';
-import type { Swept } from '../sweep/summary/swept.ts';
-import { mark, type Markup } from '../view/markup.ts';
-import { percent } from '../view/number.ts';
-import { drawBars, type SensitivityBars } from '../view/sweep/bars.ts';
-import { drawCells, type Cell } from '../view/sweep/cell-map.ts';
-import { drawResponse } from '../view/sweep/response-curve.ts';
-import { scrolling } from '../view/table.ts';
-import { writeDocument } from './document.ts';
-import { styleSheet } from './style.ts';
-import { noneSeen, numberText, three, withUnit } from './sweep-text.ts';
+import { heatMaps, preferredMaps, type HeatAxis, type HeatMap, type PreferredMap } from '../../sweep/summary/heat.ts';
+import type { Ranking } from '../../sweep/summary/ranking.ts';
+import type { FactorSummary, QuantitySummary, SweepSummary } from '../../sweep/summary/summarise.ts';
+import type { Swept } from '../../sweep/summary/swept.ts';
+import { mark, type Markup } from '../../view/markup.ts';
+import { percent } from '../../view/number.ts';
+import { drawBars, type SensitivityBars } from '../../view/sweep/bars.ts';
+import { drawCells, type Cell } from '../../view/sweep/cell-map.ts';
+import { drawResponse } from '../../view/sweep/response-curve.ts';
+import { scrolling } from '../../view/table.ts';
+import { writeDocument } from '../document.ts';
+import { styleSheet } from '../style.ts';
+import { noneSeen, numberText, preferredWords, three, withUnit } from './words.ts';
 
 export function sweepPage(swept: Swept, summary: SweepSummary): string {
   const maps = heatMaps(swept, summary);
@@ -20,7 +21,7 @@ export function sweepPage(swept: Swept, summary: SweepSummary): string {
   const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years at each`;
   const body = mark`<h1>${model}</h1>
 <p id="answer">${points.toLocaleString('en')} points (${design})${of}, over ${summary.factors.map(({ name }) => withUnit(name, summary)).join(', ')}.</p>
-${preferred.map((map) => mark`<h2>Which plan is best by ${map.quantity}</h2>${preferredFigure(labelled(map, summary))}`)}
+${summary.rankings.map((ranking) => rankingSection(ranking, preferred, summary))}
 ${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))}
 <h2>What these numbers take for granted</h2>
 <ul>${assumptions.map((text) => mark`<li>${text}</li>`)}</ul>
@@ -33,6 +34,29 @@ ${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))
     data: null,
     body: mark`${body}<p>${foot}</p>`,
   });
+}
+
+function rankingSection(ranking: Ranking, maps: readonly PreferredMap[], summary: SweepSummary): Markup {
+  const { quantity, better, points, told, scenarios, factors } = ranking;
+  const map = maps.find((one) => one.quantity === quantity);
+  const shares = scenarios.map(
+    ({ name, best, toldBest }) =>
+      mark`<tr><th scope="row"><bdi>${name}</bdi></th><td>${percent(best)}</td><td>${percent(toldBest)}</td></tr>`,
+  );
+  const rows = factors.flatMap(({ name, groups }) =>
+    groups.map(
+      ({ from, to, points: own, preferred, told: share }) =>
+        mark`<tr><th scope="row">${withUnit(name, summary)}</th><td>${rangeText([from, to])}</td><td>${String(own)}</td><td><bdi>${preferred === 'equal' ? 'several alike' : preferred}</bdi></td><td>${percent(share)}</td></tr>`,
+    ),
+  );
+  const lines = factors.map(
+    (factor) => mark`<li>over ${withUnit(factor.name, summary)}: ${preferredWords(factor)}</li>`,
+  );
+  return mark`<section><h2>Which plan is best by ${quantity}</h2>${map === undefined ? null : preferredFigure(labelled(map, summary))}
+<p>${better === 'less' ? 'Less' : 'More'} is better. At ${told.toLocaleString('en')} of ${points.toLocaleString('en')} points the best plan is told apart from all others.</p>
+${scrolling(`Plans by ${quantity}`, mark`<table><thead><tr><th>plan</th><th>best at</th><th>told apart from all others at</th></tr></thead><tbody>${shares}</tbody></table>`)}
+<ul>${lines}</ul>
+<details><summary>The best plan by number and value</summary>${scrolling(`Best plan by ${quantity}, by number and value`, mark`<table><thead><tr><th>number</th><th>value</th><th>points</th><th>best in the mean</th><th>told apart at</th></tr></thead><tbody>${rows}</tbody></table>`)}</details></section>`;
 }
 
 function quantitySection(quantity: QuantitySummary, summary: SweepSummary, maps: readonly HeatMap[]): Markup | null {
@@ -86,8 +110,10 @@ function responseFigure(
   measure: string,
   write: (value: number) => string,
 ): Markup | null {
-  const points = response.groups.flatMap(({ from, to, mean, lower, upper }) =>
-    typeof from === 'number' && typeof to === 'number' ? [{ at: (from + to) / 2, mean, lower, upper }] : [],
+  const points = response.groups.flatMap(({ from, to, mean, lower, upper, told = 1 }) =>
+    typeof from === 'number' && typeof to === 'number'
+      ? [{ at: (from + to) / 2, mean, lower, upper, open: told <= 0.5 }]
+      : [],
   );
   if (points.length < 2) return null;
   const sliced = response.groups.some(({ from, to }) => from !== to);
@@ -151,17 +177,23 @@ function heatFigure({ quantity, x, y, cells }: HeatMap, write: (value: number) =
   });
 }
 
-function preferredFigure({ quantity, scenarios, x, y, cells }: PreferredMap): Markup {
+function preferredFigure({ quantity, scenarios, x, y, cells, told }: PreferredMap): Markup {
   if (cells.every((best) => best < 0)) return mark`<p>No plan differs from another by it.</p>`;
-  const drawn = Array.from(cells, (best): Cell | null => {
+  const drawn = Array.from(cells, (best, cell): Cell | null => {
     if (best === -1) return null;
     if (best < 0) return { shade: 0, words: 'equal', side: best };
     const shade = (0.2 + 0.6 * best) / Math.max(1, scenarios.length - 1);
-    return { shade, words: scenarios[best] ?? '', short: letterOf(best), side: best };
+    const name = scenarios[best] ?? '';
+    if ((told[cell] ?? 0) > 0.5) return { shade, words: name, short: letterOf(best), side: best };
+    return { shade, words: `${name}, not told apart`, short: `${letterOf(best)}?`, side: best };
   });
-  const legend = scenarios.map((name, place) => `${letterOf(place)}: ${name}`);
+  const isOpen = drawn.some((cell) => cell?.short?.endsWith('?') === true);
+  const legend = [
+    ...scenarios.map((name, place) => `${letterOf(place)}: ${name}`),
+    ...(isOpen ? ['?: at half of the points or more another plan may be as good'] : []),
+  ];
   const description =
-    'Each cell has the letter of the plan that is best in the mean there, or says that several are equal; the line is where the preferred plan changes.';
+    'Each cell has the letter of the plan that is best in the mean there, with a question mark where the runs do not tell it from another, or says that several are equal; the line is where the preferred plan changes.';
   const title = `Best by ${quantity}`;
   return wide(title, drawCells({ title, description, x: axisOf(x), y: axisOf(y), cells: drawn, legend }));
 }
