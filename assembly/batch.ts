@@ -35,6 +35,8 @@ export let moreCounts: usize = 0;
 /** f64 [lane]: how much of a capacity is left in the patch at hand */
 export let rooms: usize = 0;
 export let step: i32 = 0;
+/** Whether the numbers in `weather` are those of this step already: what is drawn for them is not drawn again. */
+export let weatherGiven: bool = false;
 /** The step whose tables hold: `step`, or 1 for good where years go on without the calendar. */
 export let calendar: i32 = 0;
 
@@ -101,6 +103,10 @@ export function setStep(t: i32): void {
 export function stepWithoutCalendar(): void {
   step += 1;
   calendar = 1;
+}
+
+export function giveWeather(given: bool): void {
+  weatherGiven = given;
 }
 
 let anyStopped: bool = false;

@@ -8,6 +8,7 @@ export {
   faultSubject,
   start,
   step,
+  stepUnder,
   stepWeather,
   run,
   replicates,
@@ -20,6 +21,7 @@ export {
   saveLane,
   restoreLane,
   setBatchStep,
+  weatherNumbers,
 } from './lanes';
 export { openPath, pathAnimals, readPath, writePath, openCourses, courseTotals } from './path/state';
 export { startPath, rewindPath, stepPath, stepCourses } from './path/program';

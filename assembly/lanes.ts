@@ -5,7 +5,7 @@ import { setSeed } from './draws/philox';
 import { faultDetail, header, openImage, patches, slots } from './image';
 import { faultMemory, faultNone, headerWeather, lanes } from './layout';
 import { closePath } from './path/state';
-import { advance, advanceWeather, countStart } from './program';
+import { advance, advanceUnder, advanceWeather, countStart } from './program';
 
 /** Opens the image at this address, in memory that was reserved; a fault code where it cannot be run. */
 export function open(address: usize, size: i32): i32 {
@@ -29,6 +29,16 @@ export function start(count: i32, seedLow: u32, seedHigh: u32): void {
 
 export function step(): void {
   advance();
+}
+
+/** A step under the weather whose numbers of this step were put at `weatherNumbers()`. */
+export function stepUnder(): void {
+  advanceUnder();
+}
+
+/** f64 [number][lane]: what lasts of the weather, as it is after a step. */
+export function weatherNumbers(): usize {
+  return batch.weather;
 }
 
 /** The conditions of one more year without its animals, tables as in the first year: for growth in the long run. */

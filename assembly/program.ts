@@ -1,5 +1,5 @@
 // Runs the programs of the open image: one record after the other, each over all patches and lanes.
-import { clearStopped, setStep, step, stepWithoutCalendar } from './batch';
+import { clearStopped, giveWeather, setStep, step, stepWithoutCalendar } from './batch';
 import { entries, header, operand, section } from './image';
 import * as layout from './layout';
 import { age } from './phases/ageing';
@@ -22,6 +22,13 @@ export function advance(): void {
   setStep(step + 1);
   runProgram(header(layout.headerYearProgram));
   runProgram(header(layout.headerPhaseProgram));
+}
+
+/** The same under weather whose numbers of this step stand there already, as a run of the same replicates left them. */
+export function advanceUnder(): void {
+  giveWeather(true);
+  advance();
+  giveWeather(false);
 }
 
 /** The conditions of one more year, as those of the first year are, however many years there are. */

@@ -111,7 +111,7 @@ export async function runModelWith(
     options.onProgress?.((told += batch.lanes), expected);
   };
   for (const batches of blocksOf(model)) {
-    const finished = await crew.run({ image, request: { steps, seed }, batches }, take, options);
+    const finished = await crew.run({ images: [image], request: { steps, seed }, batches }, take, options);
     done += batches.slice(0, finished).reduce((sum, { lanes }) => sum + lanes, 0);
     if (finished < batches.length) {
       const cut = withSettings(compiled, { replicates: done });
@@ -234,7 +234,7 @@ async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOp
     else {
       const taken: BatchCounts[] = [];
       const request = { steps: model.steps, seed: seedOfDraw(model.seed, draw) };
-      const finished = await crew.run({ image, request, batches }, (batch) => taken.push(batch), options);
+      const finished = await crew.run({ images: [image], request, batches }, (batch) => taken.push(batch), options);
       if (finished < batches.length) {
         cut = withSettings(compiled, { draws: draw });
         break;

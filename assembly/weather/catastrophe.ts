@@ -1,7 +1,7 @@
 // Catastrophes: whether one starts this year, where it is on, and what it multiplies rates and capacities by.
 // The weather keeps how many years ago one began, counted from 1: for each origin, or once for the landscape with its origin.
 import { f64At, i32At, putF64, u32At } from '../arrays';
-import { laneNumbers, replicates, slotValues, step, weather, words, work } from '../batch';
+import { laneNumbers, replicates, slotValues, step, weather, weatherGiven, words, work } from '../batch';
 import { philoxLanes } from '../draws/philox';
 import { entries, operand, patches, patchKeys, section } from '../image';
 import * as layout from '../layout';
@@ -32,21 +32,25 @@ function strikePatches(record: usize, ages: usize): void {
   for (let i = 0; i < entries(origins); i++) {
     const patch = i32At(section(origins), i);
     const age = ages + <usize>i * laneNumbers;
-    philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
-    for (let lane = 0; lane < layout.lanes; lane++) {
-      grow(age, lane);
-      mark(record, i, lane, f64At(age, lane));
+    if (!weatherGiven) {
+      philoxLanes(words, replicates, step, u32At(patchKeys, patch), operand(record, layout.recordKey));
+      for (let lane = 0; lane < layout.lanes; lane++) grow(age, lane);
     }
+    for (let lane = 0; lane < layout.lanes; lane++) mark(record, i, lane, f64At(age, lane));
   }
 }
 
 function strikeLandscape(record: usize, ages: usize): void {
   const origins = entries(operand(record, layout.strikeOrigins));
   const places = ages + laneNumbers;
-  const key = u32At(section(operand(record, layout.strikeColumn)), 0);
-  philoxLanes(words, replicates, step, key, operand(record, layout.recordKey));
+  if (!weatherGiven) {
+    const key = u32At(section(operand(record, layout.strikeColumn)), 0);
+    philoxLanes(words, replicates, step, key, operand(record, layout.recordKey));
+    for (let lane = 0; lane < layout.lanes; lane++) {
+      if (grow(ages, lane)) putF64(places, lane, floor<f64>(uniform(lane, layout.useOrigin) * f64(origins)));
+    }
+  }
   for (let lane = 0; lane < layout.lanes; lane++) {
-    if (grow(ages, lane)) putF64(places, lane, floor<f64>(uniform(lane, layout.useOrigin) * f64(origins)));
     mark(record, i32(f64At(places, lane)), lane, f64At(ages, lane));
   }
 }
@@ -89,9 +93,11 @@ function lowerCapacities(ages: usize): void {
   const flags = work + <usize>patches * laneNumbers;
   for (let at: usize = 0; at < <usize>patches * laneNumbers; at += 8) {
     let age = load<f64>(ages + at);
-    if (age > 0) age += 1;
-    if (load<f64>(flags + at) !== 0) age = 1;
-    store<f64>(ages + at, age);
+    if (!weatherGiven) {
+      if (age > 0) age += 1;
+      if (load<f64>(flags + at) !== 0) age = 1;
+      store<f64>(ages + at, age);
+    }
     store<f64>(flags + at, age > 0 && age <= lowered ? 1 : 0);
   }
 }

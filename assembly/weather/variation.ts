@@ -1,7 +1,18 @@
 // Year-to-year variation: correlated normal numbers for each quantity and patch, and from them what the rates are multiplied by.
 // Z = A E Bᵀ: E holds independent normals, keyed by names; A mixes them over patches, B over quantities.
 import { f64At, i32At, u32At } from '../arrays';
-import { calendar, laneNumbers, numbers, replicates, slotValues, step, weather, words, work } from '../batch';
+import {
+  calendar,
+  laneNumbers,
+  numbers,
+  replicates,
+  slotValues,
+  step,
+  weather,
+  weatherGiven,
+  words,
+  work,
+} from '../batch';
 import { philoxLanes } from '../draws/philox';
 import { finalise, firstWord, streamOf } from '../draws/stream';
 import { entries, operand, patches, section, sectionAt } from '../image';
@@ -14,7 +25,7 @@ export function vary(record: usize): void {
   const quantityColumns = entries(operand(record, layout.variationRateColumns));
   const quantities = entries(operand(record, layout.variationQuantities)) / layout.quantityWords;
   const patchColumns = entries(operand(record, layout.variationPatchColumns));
-  drawColumns(record, first, patchColumns, quantityColumns);
+  if (!weatherGiven) drawColumns(record, first, patchColumns, quantityColumns);
   const rateFactor = operand(record, layout.variationRateFactor);
   for (let k = 0; k < quantities; k++) {
     if (firstAlike(rateFactor, k) !== k) continue;

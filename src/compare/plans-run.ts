@@ -1,5 +1,5 @@
 // What the runs of all plans are collected in, and what comes of it.
-import type { Crew } from '../kernel/crew.ts';
+import type { Crew, Job } from '../kernel/crew.ts';
 import type { BatchCounts } from '../kernel/output.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { Reduction } from '../results/reduction/reduction.ts';
@@ -62,19 +62,19 @@ export interface PartOptions {
   readonly onBatch: (lanes: number) => void;
 }
 
-/** Some batches of one plan, in their order; null where the work was stopped before all were done. */
+/** Some batches of every plan, in their order; null where the work was stopped before all were done. */
 export async function runPart(
   crew: Crew,
-  job: Parameters<Crew['run']>[0],
+  job: Job,
   { signal, onBatch }: PartOptions,
-): Promise<readonly BatchCounts[] | null> {
-  const taken: BatchCounts[] = [];
-  const take = (batch: BatchCounts): void => {
-    taken.push(batch);
+): Promise<readonly (readonly BatchCounts[])[] | null> {
+  const taken = job.images.map((): BatchCounts[] => []);
+  const take = (batch: BatchCounts, plan: number): void => {
+    taken[plan]?.push(batch);
     onBatch(batch.lanes);
   };
   const finished = await crew.run(job, take, signal === undefined ? {} : { signal });
-  return finished < job.batches.length ? null : taken.sort((a, b) => a.first - b.first);
+  return finished < job.batches.length ? null : taken.map((own) => own.sort((a, b) => a.first - b.first));
 }
 
 /** Of one plan. */

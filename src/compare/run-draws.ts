@@ -1,7 +1,7 @@
 // Runs all plans under the same draws of what is not known: for each draw every plan, in the same futures.
 import { batchesOf } from '../kernel/batch.ts';
 import type { Crew } from '../kernel/crew.ts';
-import type { BatchCounts } from '../kernel/output.ts';
+import type { Model } from '../model/model.ts';
 import { openPooled, summarise, withSettings, type CrewOptions } from '../pipeline.ts';
 import { DrawCollector } from '../results/draws/collect.ts';
 import { drawnValues, seedOfDraw, type DrawnValues } from '../results/draws/plan.ts';
@@ -20,6 +20,8 @@ import {
 import { precisionSoFar } from './sharpness.ts';
 
 interface OpenDraws {
+  /** Its years, replicates and seed are those of all plans. */
+  readonly base: Model;
   readonly opened: readonly OpenPlan[];
   readonly collectors: readonly DrawCollector[];
   readonly finished: { first: number; futures: number }[];
@@ -38,7 +40,7 @@ export async function runDraws(
   const number = uncertainty.table === null ? most : Math.min(most, uncertainty.table.length);
   const opened = openPlans(plans, replicates * number, openPooled);
   const collectors = opened.map(({ plan, reduction }) => new DrawCollector(plan.compiled.model, reduction));
-  const open: OpenDraws = { opened, collectors, finished: [] };
+  const open: OpenDraws = { base, opened, collectors, finished: [] };
   let [told, done, stopped] = [0, 0, false];
   let precision: ReachedPrecision | null = null;
   const onBatch = (count: number): void =>
@@ -71,23 +73,18 @@ interface Draw {
 
 /** Whether it was finished, be it by telling that it cannot be had. */
 async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: Draw): Promise<boolean> {
-  const { opened, collectors, finished } = open;
+  const { base, opened, collectors, finished } = open;
   const own = opened.map(({ plan }) => plan.under(values));
   const failed = own.find((one): one is PlanModel & { compiled: null } => one.compiled === null);
   if (failed !== undefined) {
     for (const collector of collectors) collector.fail(draw, values, failed.failure);
     return true;
   }
-  const parts: (readonly BatchCounts[])[] = [];
-  for (const { compiled } of own) {
-    if (compiled === null) return false;
-    const { model, image } = compiled;
-    const request = { steps: model.steps, seed: seedOfDraw(model.seed, draw) };
-    const part = await runPart(crew, { image, request, batches: batchesOf(model.replicates) }, options);
-    if (part === null) return false;
-    parts.push(part);
-  }
-  const futures = opened[0]?.plan.compiled.model.replicates ?? 0;
+  const images = own.flatMap(({ compiled }) => (compiled === null ? [] : [compiled.image]));
+  const request = { steps: base.steps, seed: seedOfDraw(base.seed, draw) };
+  const parts = await runPart(crew, { images, request, batches: batchesOf(base.replicates) }, options);
+  if (parts === null) return false;
+  const futures = base.replicates;
   const offset = finished.length * futures;
   collectors.forEach((collector, i) => {
     for (const batch of parts[i] ?? []) collector.take(batch);

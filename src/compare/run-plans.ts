@@ -2,7 +2,7 @@
 // together part by part, so that what is finished when the work is stopped is finished for all of them.
 import { lanes, type Batch } from '../kernel/batch.ts';
 import type { Crew } from '../kernel/crew.ts';
-import type { BatchCounts } from '../kernel/output.ts';
+import type { Model } from '../model/model.ts';
 import { summarise, withSettings, type CrewOptions } from '../pipeline.ts';
 import { blocksOf, expectedReplicates, mostReplicates } from '../results/precision.ts';
 import type { ReachedPrecision } from '../results/results.ts';
@@ -44,7 +44,7 @@ async function runTogether(crew: Crew, plans: readonly PlanToRun[], options: Cre
   const onBatch = (count: number): void => options.onProgress?.((told += count), expected * plans.length);
   for (const block of blocksOf(base)) {
     for (const batches of partsOf(block, plans)) {
-      const finished = await runAll(crew, opened, batches, { signal: options.signal, onBatch });
+      const finished = await runAll(crew, { base, opened, batches }, { signal: options.signal, onBatch });
       stopped = !finished;
       if (stopped) break;
       done += batches.reduce((sum, batch) => sum + batch.lanes, 0);
@@ -77,20 +77,19 @@ function partsOf(batches: readonly Batch[], plans: readonly PlanToRun[]): readon
   return Array.from({ length: Math.ceil(batches.length / size) }, (_, i) => batches.slice(i * size, (i + 1) * size));
 }
 
+interface Part {
+  /** Its years and seed are those of all plans. */
+  readonly base: Model;
+  readonly opened: readonly OpenPlan[];
+  readonly batches: readonly Batch[];
+}
+
 /** Whether the part was finished for every plan; only then is it kept. */
-async function runAll(
-  crew: Crew,
-  opened: readonly OpenPlan[],
-  batches: readonly Batch[],
-  options: PartOptions,
-): Promise<boolean> {
-  const parts: (readonly BatchCounts[])[] = [];
-  for (const { plan } of opened) {
-    const { image, model } = plan.compiled;
-    const part = await runPart(crew, { image, request: { steps: model.steps, seed: model.seed }, batches }, options);
-    if (part === null) return false;
-    parts.push(part);
-  }
+async function runAll(crew: Crew, { base, opened, batches }: Part, options: PartOptions): Promise<boolean> {
+  const { steps, seed } = base;
+  const images = opened.map(({ plan }) => plan.compiled.image);
+  const parts = await runPart(crew, { images, request: { steps, seed }, batches }, options);
+  if (parts === null) return false;
   opened.forEach((one, i) => {
     for (const batch of parts[i] ?? []) one.reduction.take(batch);
   });

@@ -4,6 +4,7 @@ import { headerOf, readNames } from '../compile/image/read.ts';
 import type { Machine } from '../machine/instance.ts';
 import { eachStep } from './moved.ts';
 import type { BatchCounts, Stop } from './output.ts';
+import type { WeatherTape } from './weather-tape.ts';
 
 /** Numbers in 32 bits. */
 const wordSize = 4294967296;
@@ -45,20 +46,34 @@ export function runnerOn(
   request: RunRequest,
   spare: Float64Array<ArrayBuffer>[] = [],
 ): (batch: Batch) => BatchCounts {
+  const run = tapedRunnerOn(machine, image, request, spare);
+  return (batch) => run(batch, null);
+}
+
+/** Under a tape, its replicates are those of the batch, and the weather of the image is drawn from the same as that on it. */
+export type TapedRunner = (batch: Batch, tape: WeatherTape | null) => BatchCounts;
+
+export function tapedRunnerOn(
+  machine: Machine,
+  image: ArrayBuffer,
+  request: RunRequest,
+  spare: Float64Array<ArrayBuffer>[] = [],
+): TapedRunner {
   const header = headerOf(image);
   const columns = header[layout.headerColumns] ?? 0;
   const ways = request.keepMoved === true ? (header[layout.headerWays] ?? 0) : null;
   const { phases } = readNames(image);
   const size = (request.steps + 1) * columns * layout.lanes;
   const shared = request.reuse === true ? new Float64Array(size) : null;
-  return (batch) => {
+  return (batch, tape) => {
     const counts = shared ?? memoryOf(size, spare);
     const movedSoFar = new Float64Array((request.steps + 1) * (ways ?? 0));
     startBatch(machine, request, batch);
     const observed = observedIn(machine, columns);
     counts.set(observed);
     for (let step = 1; step <= request.steps; step++) {
-      machine.step();
+      if (tape === null) machine.step();
+      else tape.step(machine, step);
       counts.set(observed, step * observed.length);
       if (ways !== null) movedSoFar.set(new Float64Array(machine.memory.buffer, machine.moved(), ways), step * ways);
     }

@@ -14,6 +14,10 @@ export interface MachineFunctions {
   readonly faultSubject: () => number;
   readonly start: (count: number, seedLow: number, seedHigh: number) => void;
   readonly step: () => void;
+  /** A step under the weather whose numbers of this step stand at `weatherNumbers()`. */
+  readonly stepUnder: () => void;
+  /** Address: f64 [number][lane], what lasts of the weather, as it is after a step. */
+  readonly weatherNumbers: () => number;
   /** The conditions of one more year alone. */
   readonly stepWeather: () => void;
   readonly run: (steps: number) => void;
@@ -97,6 +101,8 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   faultSubject: true,
   start: true,
   step: true,
+  stepUnder: true,
+  weatherNumbers: true,
   stepWeather: true,
   run: true,
   replicates: true,

@@ -11,10 +11,10 @@ export type ToWorker =
   | {
       readonly kind: 'open';
       /** Memory that all threads share. */
-      readonly image: SharedArrayBuffer;
+      readonly images: readonly SharedArrayBuffer[];
       readonly request: RunRequest;
     }
   | { readonly kind: 'run'; readonly batches: readonly Batch[] };
 
-/** The batches of one task. */
-export type FromWorker = readonly BatchCounts[];
+/** The batches of one task, of each image. */
+export type FromWorker = readonly (readonly BatchCounts[])[];

@@ -41,7 +41,7 @@ interface Task {
 
 interface CrewedJob extends JobOptions {
   readonly job: Job;
-  readonly take: (batch: BatchCounts) => void;
+  readonly take: (batch: BatchCounts, image: number) => void;
 }
 
 /** One job and the workers that are at it. */
@@ -51,7 +51,7 @@ class Crewed {
   readonly #work: CrewedJob;
   readonly #options: ThreadsOptions;
   readonly #idle: Worker[];
-  readonly #image: SharedArrayBuffer;
+  readonly #images: readonly SharedArrayBuffer[];
   /** Not yet begun, and begun again. */
   readonly #waiting: Task[];
   readonly #again: Task[] = [];
@@ -62,9 +62,8 @@ class Crewed {
 
   constructor(work: CrewedJob, options: ThreadsOptions, idle: Worker[]) {
     [this.#work, this.#options, this.#idle] = [work, options, idle];
-    const { image, batches } = work.job;
-    this.#image = new SharedArrayBuffer(image.byteLength);
-    new Uint8Array(this.#image).set(new Uint8Array(image));
+    const { images, batches } = work.job;
+    this.#images = images.map(sharedCopy);
     const size = { threads: options.threads, numbersInBatch: numbersIn(work.job) };
     this.#waiting = tasksOf(batches, size).map((task) => ({ batches: task, deaths: 0 }));
     this.done = new Promise((resolve, reject) => {
@@ -84,7 +83,7 @@ class Crewed {
     const { script = workerScript } = this.#options;
     const worker = this.#idle.pop() ?? new Worker(script, { eval: true, workerData: { module: kernelModule } });
     this.#working++;
-    tell(worker, { kind: 'open', image: this.#image, request: this.#work.job.request });
+    tell(worker, { kind: 'open', images: this.#images, request: this.#work.job.request });
     this.#give(worker, task);
   }
 
@@ -123,7 +122,7 @@ class Crewed {
     if (this.#failure !== null) return;
     this.#finished += batches.length;
     try {
-      batches.forEach(this.#work.take);
+      for (const counts of batches) counts.forEach(this.#work.take);
     } catch (error) {
       this.#failure = error instanceof Error ? error : new Error(String(error));
     }
@@ -151,9 +150,18 @@ function tell(worker: Worker, message: ToWorker): void {
   worker.postMessage(message);
 }
 
-function numbersIn({ image, request }: Job): number {
-  const header = headerOf(image);
-  const columns =
-    (header[layout.headerColumns] ?? 0) + (request.keepMoved === true ? (header[layout.headerWays] ?? 0) : 0);
+function sharedCopy(image: ArrayBuffer): SharedArrayBuffer {
+  const shared = new SharedArrayBuffer(image.byteLength);
+  new Uint8Array(shared).set(new Uint8Array(image));
+  return shared;
+}
+
+/** Of a batch of all images. */
+function numbersIn({ images, request }: Job): number {
+  const columns = images.reduce((sum, image) => {
+    const header = headerOf(image);
+    const ways = request.keepMoved === true ? (header[layout.headerWays] ?? 0) : 0;
+    return sum + (header[layout.headerColumns] ?? 0) + ways;
+  }, 0);
   return (request.steps + 1) * columns * lanes;
 }
