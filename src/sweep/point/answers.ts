@@ -5,7 +5,7 @@ import { moneyIn } from '../../compare/plans-of.ts';
 import { buildBlock } from '../../compile/block.ts';
 import { linearisedBlock } from '../../compile/slopes/linearised.ts';
 import { wholeYear, type Compiled } from '../../compile/year-map.ts';
-import { batchesOf, runnerOn } from '../../kernel/batch.ts';
+import { batchesOf, tapedRunnerOn } from '../../kernel/batch.ts';
 import { runPath } from '../../kernel/path.ts';
 import { openNext } from '../../kernel/reuse.ts';
 import type { Machine } from '../../machine/instance.ts';
@@ -14,6 +14,7 @@ import { leading } from '../../numeric/leading.ts';
 import { isPaired, type Quantity } from '../measures.ts';
 import { pairedNumbers, perhapsBest, type Futures } from './paired.ts';
 import { Tally } from './tally.ts';
+import type { Tapes } from './tapes.ts';
 
 export interface CompiledPoint extends Compiled {
   /** Absent where no measure needs them. */
@@ -26,7 +27,7 @@ export interface CompiledPoint extends Compiled {
 export interface Asking {
   readonly quantities: readonly Quantity[];
   /** Null where no measure is from runs. */
-  readonly machine: Machine | null;
+  readonly runs: { readonly machine: Machine; readonly tapes: Tapes } | null;
   /** Whether the runs of each plan are set beside those of the others. */
   readonly paired: boolean;
 }
@@ -61,13 +62,18 @@ export function pairedAnswers(quantities: readonly Quantity[], plans: readonly A
   });
 }
 
-function tallied({ model, image, cost }: CompiledPoint, { quantities, machine, paired }: Asking): Tally | null {
-  if (machine === null || image === undefined) return null;
-  openNext(machine, image);
-  const run = runnerOn(machine, image, { steps: model.steps, seed: model.seed, reuse: true });
+function tallied({ model, image, cost }: CompiledPoint, { quantities, runs, paired }: Asking): Tally | null {
+  if (runs === null || image === undefined) return null;
+  const { steps, seed } = model;
+  openNext(runs.machine, image);
+  const run = tapedRunnerOn(runs.machine, image, { steps, seed, reuse: true });
   const moneyOf = cost === undefined ? null : moneyIn({ model, cost });
   const tally = new Tally(model, quantities, { moneyOf, keepsFutures: paired });
-  for (const batch of batchesOf(model.replicates)) tally.take(run(batch));
+  const batches = batchesOf(model.replicates);
+  const tapes = runs.tapes.of({ image, steps, seed, batches: batches.length });
+  batches.forEach((batch, i) => {
+    tally.take(run(batch, tapes[i] ?? null));
+  });
   return tally;
 }
 

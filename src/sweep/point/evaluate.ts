@@ -18,6 +18,7 @@ import { answerPoint, pairedAnswers, type Answered, type CompiledPoint } from '.
 import { openChange } from './change.ts';
 import { manyPoints } from './many-points.ts';
 import { movingModel } from './moving-model.ts';
+import { Tapes } from './tapes.ts';
 
 /** What a point came to. */
 export interface PointResult {
@@ -42,11 +43,11 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
   const asked = quantitiesOf(measures, base);
   const quantities = inScenarios(asked, scenarios);
   const width = [...quantities.flatMap(columnsOf), ...pairColumnsOf(asked, scenarios)].length;
-  const machine = measures.some(isOfRuns) ? loadMachine() : null;
+  const runs = measures.some(isOfRuns) ? { machine: loadMachine(), tapes: new Tapes() } : null;
   const inBase = change(design.factors.map((factor) => factor.base));
   const asNowOnly = scenarios.length === 0 && scenarioOf(inBase) === asNow;
   const moving = asNowOnly && !asked.every(isNearZero) ? movingModel(inBase, design.factors) : null;
-  const asking = { quantities: asked, machine, paired: scenarios.length > 0 };
+  const asking = { quantities: asked, runs, paired: scenarios.length > 0 };
   const at = (values: readonly Value[]): PointResult => {
     const moved = moving?.(values) ?? null;
     if (moved !== null) return { numbers: Float64Array.from(answerPoint(moved, asking).numbers), failure: '' };
