@@ -57,47 +57,52 @@ export function openPlans(
   });
 }
 
-export interface PartOptions {
+export interface BatchOptions {
   readonly signal: AbortSignal | undefined;
+  /** Replicates that are done more, of one plan. */
   readonly onBatch: (lanes: number) => void;
 }
 
-/** Some batches of every plan, in their order; null where the work was stopped before all were done. */
-export async function runPart(
+/** Gives every batch of a job as soon as it is done for all plans, in their order; resolves to how many there were. */
+export async function runBatches(
   crew: Crew,
   job: Job,
-  { signal, onBatch }: PartOptions,
-): Promise<readonly (readonly BatchCounts[])[] | null> {
-  const taken = job.images.map((): BatchCounts[] => []);
-  const take = (batch: BatchCounts, plan: number): void => {
-    taken[plan]?.push(batch);
+  take: (batch: readonly BatchCounts[]) => void,
+  { signal, onBatch }: BatchOptions,
+): Promise<number> {
+  let ofPlans: BatchCounts[] = [];
+  const takeOne = (batch: BatchCounts): void => {
+    ofPlans.push(batch);
     onBatch(batch.lanes);
+    if (ofPlans.length < job.images.length) return;
+    take(ofPlans);
+    ofPlans = [];
   };
-  const finished = await crew.run(job, take, signal === undefined ? {} : { signal });
-  return finished < job.batches.length ? null : taken.map((own) => own.sort((a, b) => a.first - b.first));
+  return crew.run(job, takeOne, signal === undefined ? {} : { signal });
 }
 
-/** Of one plan. */
-export interface FinishedPart {
-  readonly own: readonly BatchCounts[];
+export interface PlaceOfBatch {
   /** Place of replicate 0 among all futures. */
   readonly offset: number;
-  readonly moneyOf: MoneyOf | null;
+  /** By plan. */
+  readonly money: readonly (MoneyOf | null)[];
 }
 
-/** The same batches of all plans, which are set beside those of the first. */
-export function keepParts(plans: readonly OpenPlan[], parts: readonly FinishedPart[]): void {
-  let base: readonly PatchEnds[] | null = null;
-  plans.forEach(({ plan, ledger, patches }, i) => {
-    const { own, offset, moneyOf } = parts[i] ?? { own: [], offset: 0, moneyOf: null };
-    const ends = own.map((batch) => patchEndsOf(plan.compiled.model, batch));
+/** The same batch of all plans, which are set beside the first. */
+export function keepBatch(
+  plans: readonly OpenPlan[],
+  batches: readonly BatchCounts[],
+  { offset, money }: PlaceOfBatch,
+): void {
+  let base: PatchEnds | null = null;
+  for (const [i, { plan, ledger, patches }] of plans.entries()) {
+    const batch = batches[i];
+    if (batch === undefined) continue;
+    const ends = patchEndsOf(plan.compiled.model, batch);
     base ??= ends;
-    for (const [k, end] of ends.entries()) {
-      ledger.take(end.batch, offset + end.batch.first, moneyOf);
-      const beside = base[k];
-      if (beside !== undefined) patches.take(beside, end);
-    }
-  });
+    ledger.take(batch, offset + batch.first, money[i] ?? null);
+    patches.take(base, ends);
+  }
 }
 
 export function finishPlan(

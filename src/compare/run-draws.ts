@@ -1,6 +1,7 @@
 // Runs all plans under the same draws of what is not known: for each draw every plan, in the same futures.
 import { batchesOf } from '../kernel/batch.ts';
 import type { Crew } from '../kernel/crew.ts';
+import type { BatchCounts } from '../kernel/output.ts';
 import type { Model } from '../model/model.ts';
 import { openPooled, summarise, withSettings, type CrewOptions } from '../pipeline.ts';
 import { DrawCollector } from '../results/draws/collect.ts';
@@ -10,11 +11,11 @@ import type { ReachedPrecision } from '../results/results.ts';
 import type { PlanModel, PlanToRun } from './plan.ts';
 import {
   finishPlan,
-  keepParts,
+  keepBatch,
   openPlans,
-  runPart,
+  runBatches,
   type OpenPlan,
-  type PartOptions,
+  type BatchOptions,
   type PlansRun,
 } from './plans-run.ts';
 import { precisionSoFar } from './sharpness.ts';
@@ -68,7 +69,7 @@ export async function runDraws(
 interface Draw {
   readonly draw: number;
   readonly values: DrawnValues;
-  readonly options: PartOptions;
+  readonly options: BatchOptions;
 }
 
 /** Whether it was finished, be it by telling that it cannot be had. */
@@ -82,18 +83,19 @@ async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: D
   }
   const images = own.flatMap(({ compiled }) => (compiled === null ? [] : [compiled.image]));
   const request = { steps: base.steps, seed: seedOfDraw(base.seed, draw) };
-  const parts = await runPart(crew, { images, request, batches: batchesOf(base.replicates) }, options);
-  if (parts === null) return false;
+  const job = { images, request, batches: batchesOf(base.replicates) };
+  const taken: (readonly BatchCounts[])[] = [];
+  const done = await runBatches(crew, job, (ofPlans) => taken.push(ofPlans), options);
+  if (done < job.batches.length) return false;
   const futures = base.replicates;
   const offset = finished.length * futures;
-  collectors.forEach((collector, i) => {
-    for (const batch of parts[i] ?? []) collector.take(batch);
-    collector.finish(draw, values);
-  });
-  keepParts(
-    opened,
-    own.map(({ moneyOf }, i) => ({ own: parts[i] ?? [], offset, moneyOf })),
-  );
+  const money = own.map(({ moneyOf }) => moneyOf);
+  for (const ofPlans of taken) {
+    ofPlans.forEach((batch, i) => collectors[i]?.take(batch));
+    keepBatch(opened, ofPlans, { offset, money });
+    for (const batch of ofPlans) crew.release?.(batch);
+  }
+  for (const collector of collectors) collector.finish(draw, values);
   finished.push({ first: offset, futures });
   return true;
 }

@@ -14,9 +14,9 @@ export class ExactValues implements QuantileStore {
   }
 
   add(cell: number, values: Float64Array, from: number, count: number): void {
-    const filled = this.#filled[cell] ?? 0;
+    const [own, filled] = [this.#values, this.#filled[cell] ?? 0];
     const start = cell * this.#replicates + filled;
-    for (let i = 0; i < count; i++) this.#values[start + i] = values[from + i] ?? 0;
+    for (let i = 0; i < count; i++) own[start + i] = values[from + i] ?? 0;
     this.#filled[cell] = filled + count;
   }
 
