@@ -1,11 +1,12 @@
 // The windows of criterion E of the IUCN Red List (2012, version 3.1), and what a run says of them. Never a listing: that takes
 // the guidelines, all criteria and those who assess.
+import { nearZero } from '../compile/year-map.ts';
 import type { Model } from '../model/model.ts';
 import { leading } from '../numeric/leading.ts';
 import type { CompiledModel } from '../pipeline.ts';
 import type { CriterionE, CriterionWindow, RunResults } from '../results/results.ts';
-import { lifeAnswers } from './answer-growth.ts';
-import { analysisInputOf } from './model-input.ts';
+import { lifeAt } from './life-at.ts';
+import { generationTimes } from './life-history.ts';
 import { vectorsOf } from './sensitivity.ts';
 
 const mostYears = 100;
@@ -67,8 +68,7 @@ function isExtinction(
 
 /** Mean age of mothers in the stable population near zero, in years. */
 function generationLength(compiled: CompiledModel): number | null {
-  const { value: input } = analysisInputOf(compiled, 'zero');
-  if (input === null) return null;
-  const vectors = vectorsOf(leading(input.block.matrix));
-  return lifeAnswers(input.block, input.split, vectors).generationTime.value?.stable ?? null;
+  const { block, split } = lifeAt(compiled, 'zero', nearZero(compiled));
+  const vectors = vectorsOf(leading(block.matrix));
+  return vectors === null ? null : generationTimes(split, vectors, null).stable;
 }

@@ -1,14 +1,10 @@
 // What the analysis needs of a compiled model: its matrix at a state, births apart from fates, the year as a function.
-import { buildBlock } from '../compile/block.ts';
-import type { AtState, BlockMatrix } from '../compile/block-matrix.ts';
-import { phaseMap } from '../compile/phase-map.ts';
-import { linearisedBlock } from '../compile/slopes/linearised.ts';
+import type { AtState } from '../compile/block-matrix.ts';
 import { yearJacobian } from '../compile/slopes/year-jacobian.ts';
-import { nearZero, productOf, runYear, type Compiled } from '../compile/year-map.ts';
+import { nearZero, runYear, type Compiled } from '../compile/year-map.ts';
 import type { Model, Phase, RateTable } from '../model/model.ts';
 import { principalPart } from '../numeric/principal-part.ts';
-import { multiply, product, weightedSum } from '../numeric/sparse-product.ts';
-import { sparseFromDense, type SparseMatrix } from '../numeric/sparse.ts';
+import { sparseFromDense } from '../numeric/sparse.ts';
 import { growthWithChance, type CompiledModel } from '../pipeline.ts';
 import type { LongRunGrowth } from '../results/results.ts';
 import { because, type Answer } from './answer.ts';
@@ -17,7 +13,7 @@ import { modelFalls } from './chance/model-falls.ts';
 import { modelYears } from './chance/model-years.ts';
 import type { AnalysisInput, FactorAtZero, NamedCovariance } from './input.ts';
 import { placesOf } from './label.ts';
-import type { LifeSplit } from './life-history.ts';
+import { lifeAt } from './life-at.ts';
 import { networkOf } from './network.ts';
 import { quickYear } from './quick-year.ts';
 import { parameterTangents } from './parameter-tangents.ts';
@@ -30,8 +26,7 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
   const { model, startAnimals } = compiled;
   const state = stateAt(compiled, at);
   if (state === null) return because('Numbers do not come to stand still from the start of this model.');
-  const linearised = at === 'zero' ? linearisedBlock(compiled) : null;
-  const block = linearised ?? buildBlock(compiled, at, state);
+  const { block, split, linearised } = lifeAt(compiled, at, state);
   const places = placesOf(block);
   const crowded = dependsOnNumbers(model)
     ? { yearMap: yearOver(compiled, places), factorsAtZero: factorsAtZero(compiled) }
@@ -41,7 +36,7 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
     value: {
       block,
       start: Float64Array.from(places, (place) => startAnimals[place] ?? 0),
-      split: linearised === null ? splitAt(compiled, block, state) : apart(linearised, splitAt(compiled, block, state)),
+      split,
       ...parameterTangents(compiled, block, state),
       noise: noiseAt(compiled, at),
       noiseLeavesOut: model.catastrophes.map(({ name }) => name),
@@ -52,7 +47,7 @@ export function analysisInputOf(compiled: CompiledModel, at: AtState): Answer<An
       network: networkOf(model),
       spread: modelSpread(compiled),
       losslessDispersal: nobodyIsLost(compiled),
-      linearised: linearised !== null && needsBoth(model),
+      linearised: linearised && needsBoth(model),
       ...crowded,
     },
   };
@@ -105,12 +100,6 @@ function uncertaintyOf({ uncertainty }: Model): Answer<NamedCovariance> {
   return errors === null ? because('One draw does not tell how far a number can be off.') : { value: errors };
 }
 
-/** The young that one more animal brings are all that is not the animals themselves. */
-function apart({ matrix }: BlockMatrix, { fates }: LifeSplit): LifeSplit {
-  const births = weightedSum([1, matrix], [-1, fates]);
-  return { fates, births: { ...births, values: births.values.map((young) => Math.max(0, young)) } };
-}
-
 function needsBoth({ phases }: Model): boolean {
   return phases.some(
     (phase) => phase.kind === 'breeding' && (phase.mating?.form ?? 'female-dominant') !== 'female-dominant',
@@ -146,30 +135,6 @@ function yearOver(compiled: Compiled, places: readonly number[]): YearMap {
       return sparseFromDense(yearJacobian(compiled, all.some((count) => count > 0) ? all : nearZero(compiled), places));
     },
   };
-}
-
-/**
- * U is the product of what each phase does to the animals themselves; F sums, over the phases with births, what later phases
- * make of the young of animals that came through the earlier ones: A = U + F.
- */
-export function splitAt(compiled: Compiled, block: BlockMatrix, state: Float64Array): LifeSplit {
-  const { maps, multipliers } = runYear(compiled, state);
-  const { model, landscape } = compiled;
-  let here = state;
-  let fates: SparseMatrix | null = null;
-  let births: SparseMatrix | null = null;
-  maps.forEach((map, index) => {
-    const request = { model, landscape, step: 1, multipliers, state: here };
-    const young = phaseMap(index, { ...request, part: 'births' });
-    const own = phaseMap(index, { ...request, part: 'fates' });
-    const born: SparseMatrix = fates ? product(young, fates) : young;
-    births = births ? weightedSum([1, product(map, births)], [1, born]) : born;
-    fates = fates ? product(own, fates) : own;
-    here = multiply(map, here);
-  });
-  const places = placesOf(block);
-  const none = productOf(maps);
-  return { fates: principalPart(fates ?? none, places), births: principalPart(births ?? none, places) };
 }
 
 /** In every dispersal all that leave arrive alive. */

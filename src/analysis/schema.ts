@@ -1,5 +1,6 @@
 // What an analysis says, as data: the published schema, from which the types come.
-import { Type, type Static, type TSchema } from 'typebox';
+import * as Type from 'typebox';
+import type { Static, TSchema } from 'typebox';
 
 const orNull = <T extends TSchema>(schema: T) => Type.Union([schema, Type.Null()]);
 const closed = <T extends Record<string, TSchema>>(properties: T, description?: string) =>

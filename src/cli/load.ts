@@ -10,13 +10,12 @@ import { locateFinding, type Finding } from '../spec/finding.ts';
 import { nearestScenario, scenariosOf } from '../spec/plans/scenarios.ts';
 import { readSpec } from '../spec/read.ts';
 import type { Spec } from '../spec/schema/spec.ts';
-import { sweepFindings } from '../sweep/findings.ts';
 import { applySettings, type Settings } from '../spec/settings.ts';
 import { readDataFiles } from './data-files.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { readText } from './input.ts';
 import { writeError } from './output.ts';
-import { terminalOf } from './terminal.ts';
+import { terminalAt } from './terminal.ts';
 
 export interface Loaded {
   /** Null where the text cannot be read as a spec. */
@@ -43,23 +42,23 @@ interface ReadOptions {
 }
 
 /** A compiled model, or an ending after all mistakes were told. Warnings are told unless `quiet`. */
-export function loadModel(
+export async function loadModel(
   path: string,
   settings: Settings,
   { quiet, allow, everyScenario = false }: ReadOptions,
-): LoadedModel {
-  const { document, files, compiled, diagnostics } = readModel(path, settings, { allow, everyScenario });
+): Promise<LoadedModel> {
+  const { document, files, compiled, diagnostics } = await readModel(path, settings, { allow, everyScenario });
   const told = diagnostics.filter((one) => one.severity === 'error' || (one.severity === 'warning' && quiet !== true));
   tellDiagnostics(compiled === null ? told.filter((one) => one.severity === 'error') : told);
   if (document === null || compiled === null) throw toldAlready();
   return { document, files, compiled };
 }
 
-export function readModel(
+export async function readModel(
   path: string,
   settings: Settings,
   { allow = [], everyScenario = false }: Omit<ReadOptions, 'quiet'> = {},
-): Loaded {
+): Promise<Loaded> {
   const name = path === '-' ? 'standard input' : path;
   const text = readText(path);
   const alone = readSpec(text, name);
@@ -78,11 +77,16 @@ export function readModel(
   }
   refuseUnknownScenario(applied.spec, settings);
   const { compiled, findings } = everyScenario ? compileEvery(applied.spec) : compileSpec(applied.spec);
-  const ofSweep = compiled === null ? [] : sweepFindings(compiled);
+  const ofSweep = compiled === null ? [] : await findingsOfSweep(compiled);
   const all = [...findings, ...ofSweep, ...(compiled === null ? [] : constructionFindings(compiled))];
   const located = all.map((finding) => locateFinding(document, finding));
   const told = inFileOrder([...diagnostics, ...located]);
   return { document, files: alone.wants, compiled: ofSweep.length > 0 ? null : compiled, diagnostics: told };
+}
+
+/** What designs points is loaded only where the model asks for a sweep. */
+async function findingsOfSweep(compiled: CompiledModel): Promise<readonly Finding[]> {
+  return compiled.spec.sweep === undefined ? [] : (await import('../sweep/findings.ts')).sweepFindings(compiled);
 }
 
 function refuseUnknownScenario(spec: Spec, { scenario }: Settings): void {
@@ -116,7 +120,7 @@ function underScenario(finding: Finding, scenario: string): Finding {
 }
 
 export function tellDiagnostics(diagnostics: readonly Diagnostic[]): void {
-  if (diagnostics.length > 0) writeError(`${renderDiagnostics(diagnostics, terminalOf(process.stderr)).trimEnd()}\n`);
+  if (diagnostics.length > 0) writeError(`${renderDiagnostics(diagnostics, terminalAt('stderr')).trimEnd()}\n`);
 }
 
 /** The mistakes were told with their count; there is nothing to add. */

@@ -36,7 +36,7 @@ function buildProgram(): Command {
     .option('--strict', 'let warnings fail')
     .addHelpText('after', '\nExample:\n  skein check models/reed-hare.yaml')
     .action(async (path: string, options: CommonOptions & { readonly strict?: boolean }) => {
-      (await import('./command/check.ts')).checkModel(path, options);
+      await (await import('./command/check.ts')).checkModel(path, options);
     });
   addShow(program);
   addCompile(program);
@@ -54,7 +54,7 @@ function addShow(program: Command): void {
     .description('print what a stage of the work makes of a model')
     .addHelpText('after', '\nExample:\n  skein show models/reed-hare.yaml matrix')
     .action(async (path: string, stage: string, options: CommonOptions) => {
-      (await import('./command/show.ts')).showStage(path, stage, options);
+      await (await import('./command/show.ts')).showStage(path, stage, options);
     });
 }
 

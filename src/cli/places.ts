@@ -1,6 +1,5 @@
 // What the user wants to be told of places: as they are, moved with a secret, or not at all.
 import { chmodSync, readFileSync, writeFileSync } from 'node:fs';
-import { randomBytes } from 'node:crypto';
 import { basename, dirname, extname, join } from 'node:path';
 import type { CompiledModel } from '../pipeline.ts';
 import { hidePlaces, tellsPlaces, type Hidden } from '../report/hiding/hide.ts';
@@ -41,7 +40,7 @@ function secretKey(path: string, quiet: boolean): Uint8Array {
   const file = path === '-' ? `model${ending}` : join(dirname(path), `${basename(path, extname(path))}${ending}`);
   const known = readKey(file);
   if (known !== null) return known;
-  const key = randomBytes(keyBytes);
+  const key = Buffer.from(crypto.getRandomValues(new Uint8Array(keyBytes)));
   try {
     writeFileSync(file, `${key.toString('hex')}\n`, { flag: 'wx', mode: 0o600 });
     chmodSync(file, 0o600);

@@ -9,13 +9,15 @@ export interface Progress {
 const silentMs = 1000;
 
 export function showProgress(what: string, quiet: boolean): Progress {
-  const live = process.stderr.isTTY;
-  const started = performance.now();
+  const started = Date.now();
   let [last, shown] = [-Infinity, false];
   return {
     update: (done, of) => {
-      const now = performance.now();
-      if (quiet || done >= of || now - started < silentMs || now - last < (live ? 100 : 10_000)) return;
+      const now = Date.now();
+      if (quiet || done >= of || now - started < silentMs) return;
+      // Looked at late: it takes a good part of the start of a command.
+      const live = process.stderr.isTTY;
+      if (now - last < (live ? 100 : 10_000)) return;
       last = now;
       shown = true;
       const seconds = Math.ceil((((now - started) / 1000) * (of - done)) / done);
@@ -23,7 +25,7 @@ export function showProgress(what: string, quiet: boolean): Progress {
       writeError(live ? `\r\u001b[2K${line}` : `${line}\n`);
     },
     finish: () => {
-      if (shown && live) writeError('\r\u001b[2K');
+      if (shown && process.stderr.isTTY) writeError('\r\u001b[2K');
     },
   };
 }

@@ -4,7 +4,7 @@ import type { Crew } from '../kernel/crew.ts';
 import { runModelWith, type CompiledModel, type CrewOptions, type FinishedRun } from '../pipeline.ts';
 import type { RunResults } from '../results/results.ts';
 import { alone } from '../threads/alone.ts';
-import { openThreads, ThreadsFailure } from '../threads/threads.ts';
+import { ThreadsFailure } from '../threads/failure.ts';
 import { Ending, exitCodes } from './exit.ts';
 import { writeError } from './output.ts';
 import { showProgress } from './progress.ts';
@@ -55,7 +55,7 @@ export async function withCrew<Done>(
 ): Promise<Done> {
   const progress = showProgress('Replicates', quiet === true);
   const stop = stopSignal();
-  const crew = threads === 1 ? alone : openThreads({ threads, onDeath: tellDeath });
+  const crew = threads === 1 ? alone : await openedThreads(threads);
   try {
     const done = await work(crew, { onProgress: progress.update, signal: stop.signal });
     progress.finish();
@@ -97,6 +97,11 @@ function checked({ compiled, results }: FinishedRun, model: CompiledModel['model
 
 function drawsAsked({ draws, uncertainty }: CompiledModel['model']): number {
   return Math.min(draws, uncertainty?.table?.length ?? draws);
+}
+
+/** Loaded where they are wanted: a small run needs none. */
+async function openedThreads(threads: number): Promise<Crew> {
+  return (await import('../threads/threads.ts')).openThreads({ threads, onDeath: tellDeath });
 }
 
 function tellDeath(reason: string): void {

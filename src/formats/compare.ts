@@ -1,5 +1,5 @@
 // What `skein compare --json` prints.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import * as part from './parts.ts';
 import { Chance, Handled, Interval, Precision } from './results.ts';
 

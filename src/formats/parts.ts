@@ -1,5 +1,6 @@
 // Parts that several formats share. Objects stay open: within one number of a format, fields may be added.
-import { Type, type TSchema } from 'typebox';
+import * as Type from 'typebox';
+import type { TSchema } from 'typebox';
 
 export const text = (description: string) => Type.String({ description });
 export const number = (description: string) => Type.Number({ description });

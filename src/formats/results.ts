@@ -1,5 +1,5 @@
 // What `skein run --json` and `skein path --json` print.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import * as part from './parts.ts';
 
 export const Interval = Type.Object({

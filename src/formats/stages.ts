@@ -1,5 +1,5 @@
 // What `skein show STAGE --json` and `skein compile` print of the stages of the work.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import * as part from './parts.ts';
 
 const Named = Type.Object({ name: Type.String() });

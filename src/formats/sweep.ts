@@ -1,5 +1,5 @@
 // The manifest of a sweep, and what a sweep says.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { designNames } from '../spec/schema/sweep.ts';
 import * as part from './parts.ts';
 

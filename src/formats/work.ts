@@ -1,5 +1,5 @@
 // What `skein check --json` prints, and the run.json and log.json that `--out` writes.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import * as part from './parts.ts';
 
 const Place = Type.Object({

@@ -12,8 +12,13 @@ export function loadMachine(): Machine {
   return instantiate(kernelModule);
 }
 
-/** Letter by letter: made from an iterator, it would take a good part of the start of a command. */
+/** By Node's own reader, or else letter by letter: made from an iterator, it would take a good part of the start. */
 function bytesOf(base64: string): Uint8Array<ArrayBuffer> {
+  const { Buffer: buffers } = globalThis as { Buffer?: typeof Buffer };
+  if (buffers !== undefined) {
+    const { buffer, byteOffset, length } = buffers.from(base64, 'base64');
+    return new Uint8Array(buffer, byteOffset, length);
+  }
   const letters = atob(base64);
   const bytes = new Uint8Array(letters.length);
   for (let i = 0; i < bytes.length; i++) bytes[i] = letters.charCodeAt(i);

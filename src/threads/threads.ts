@@ -7,6 +7,7 @@ import { lanes, type Batch } from '../kernel/batch.ts';
 import type { Crew, Job, JobOptions } from '../kernel/crew.ts';
 import type { BatchCounts } from '../kernel/output.ts';
 import { kernelModule } from '../machine/machine.ts';
+import { ThreadsFailure } from './failure.ts';
 import type { FromWorker, ToWorker } from './message.ts';
 import { tasksOf } from './tasks.ts';
 
@@ -20,9 +21,6 @@ export interface ThreadsOptions {
   /** The script of a worker; another one in tests. */
   readonly script?: string;
 }
-
-/** The work could not be done since workers died again and again. */
-export class ThreadsFailure extends Error {}
 
 export function openThreads(options: ThreadsOptions): Crew {
   const idle: Worker[] = [];

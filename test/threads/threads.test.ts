@@ -8,7 +8,8 @@ import { batchesOf } from '../../src/kernel/batch.ts';
 import { runModel, runModelWith } from '../../src/pipeline.ts';
 import { alone } from '../../src/threads/alone.ts';
 import { tasksOf } from '../../src/threads/tasks.ts';
-import { openThreads, ThreadsFailure } from '../../src/threads/threads.ts';
+import { ThreadsFailure } from '../../src/threads/failure.ts';
+import { openThreads } from '../../src/threads/threads.ts';
 import { compileModel } from '../golden/models.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'skein-threads-'));

@@ -6,12 +6,12 @@ import type { CompiledModel } from '../../pipeline.ts';
 import { analysisText } from '../../report/analysis/analysis-text.ts';
 import { scenariosOf } from '../../spec/plans/scenarios.ts';
 import { analysisTables } from '../analysis-tables.ts';
+import { askedFolder } from '../asked-folder.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
-import { openOutFolder } from '../out-folder.ts';
 import { writeOut } from '../output.ts';
-import { terminalOf } from '../terminal.ts';
+import { terminalAt } from '../terminal.ts';
 
 export interface AnalyseCommandOptions extends CommonOptions {
   readonly at: AtState;
@@ -19,24 +19,30 @@ export interface AnalyseCommandOptions extends CommonOptions {
   readonly against?: string;
 }
 
-export function analyseCommand(path: string, options: AnalyseCommandOptions): void {
-  const { compiled } = loadModel(path, settingsOf(options), options);
+export async function analyseCommand(path: string, options: AnalyseCommandOptions): Promise<void> {
+  const { compiled } = await loadModel(path, settingsOf(options), options);
   const against =
-    options.against === undefined ? {} : { against: comparedWith(path, options.against, options, compiled) };
-  const folder = options.out === undefined ? null : openOutFolder(options.out);
+    options.against === undefined ? {} : { against: await comparedWith(path, options.against, options, compiled) };
+  const folder = await askedFolder(options);
   const found = analyseModel(compiled, { at: options.at, ...against, wantEigenvalues: options.eigenvalues === true });
   if (found.value === null) throw new Ending(exitCodes.work, `--at ${options.at}: ${found.reason}`);
   folder?.write(compiled, { command: 'analyse', results: found.value, tables: analysisTables(found.value) });
   if (options.json === true) writeOut(`${JSON.stringify(found.value, null, 2)}\n`);
-  else writeOut(analysisText(found.value, terminalOf(process.stdout)));
+  else writeOut(analysisText(found.value, terminalAt('stdout')));
 }
 
 /** A scenario of the same model, else another model. */
-function comparedWith(path: string, other: string, options: AnalyseCommandOptions, compiled: CompiledModel): Compared {
+async function comparedWith(
+  path: string,
+  other: string,
+  options: AnalyseCommandOptions,
+  compiled: CompiledModel,
+): Promise<Compared> {
   const quietly = { ...options, quiet: true };
   if (scenariosOf(compiled.spec).some(({ name }) => name === other)) {
-    return { name: other, compiled: loadModel(path, { ...settingsOf(options), scenario: other }, quietly).compiled };
+    const found = await loadModel(path, { ...settingsOf(options), scenario: other }, quietly);
+    return { name: other, compiled: found.compiled };
   }
-  const found = loadModel(other, {}, quietly).compiled;
+  const { compiled: found } = await loadModel(other, {}, quietly);
   return { name: found.model.title, compiled: found };
 }

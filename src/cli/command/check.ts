@@ -9,15 +9,15 @@ import { Ending, exitCodes } from '../exit.ts';
 import { readModel, tellDiagnostics, toldAlready, type Loaded } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
 import { writeOut } from '../output.ts';
-import { terminalOf } from '../terminal.ts';
+import { terminalAt } from '../terminal.ts';
 
-export function checkModel(path: string, options: CommonOptions & { readonly strict?: boolean }): void {
-  const loaded = readModel(path, settingsOf(options), { ...options, everyScenario: true });
+export async function checkModel(path: string, options: CommonOptions & { readonly strict?: boolean }): Promise<void> {
+  const loaded = await readModel(path, settingsOf(options), { ...options, everyScenario: true });
   const understood = loaded.compiled === null ? null : understand(loaded.compiled);
   if (options.json === true) writeOut(`${JSON.stringify(checkJson(loaded, understood), null, 2)}\n`);
   else {
     tellDiagnostics(loaded.diagnostics);
-    if (understood !== null) writeOut(`${checkText(understood, terminalOf(process.stdout)).trimEnd()}\n`);
+    if (understood !== null) writeOut(`${checkText(understood, terminalAt('stdout')).trimEnd()}\n`);
   }
   if (loaded.compiled === null) throw toldAlready();
   const warnings = loaded.diagnostics.filter((one) => one.severity === 'warning').length;

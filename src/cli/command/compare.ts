@@ -6,16 +6,16 @@ import type { PlansRun } from '../../compare/plans-run.ts';
 import { compareText } from '../../report/compare/compare-text.ts';
 import { hiddenComparison } from '../../report/hiding/hidden-comparison.ts';
 import { loadAgain, refuseBesideAgain, type LoadedAgain } from '../again.ts';
+import { askedFolder } from '../asked-folder.ts';
 import { compareTables } from '../compare-tables.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { loadModel } from '../load.ts';
 import { settingsOf, type CommonOptions } from '../options.ts';
-import { openOutFolder } from '../out-folder.ts';
 import { writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
 import { chosenPlans } from '../plans.ts';
 import { threadsFor, withCrew } from '../replicates.ts';
-import { terminalOf } from '../terminal.ts';
+import { terminalAt } from '../terminal.ts';
 
 export interface CompareCommandOptions extends CommonOptions {
   /** A run.json. */
@@ -24,10 +24,10 @@ export interface CompareCommandOptions extends CommonOptions {
 }
 
 export async function compareCommand(path: string | undefined, options: CompareCommandOptions): Promise<void> {
-  const { compiled, robust } = load(path, options);
+  const { compiled, robust } = await load(path, options);
   const spec = chosenPlans(compiled.spec, options.only);
   const plans = plansToCompare(plansOf(spec).plans);
-  const folder = options.out === undefined ? null : openOutFolder(options.out);
+  const folder = await askedFolder(options);
   const threads = options.threads ?? threadsFor(plans.map((plan) => plan.compiled));
   const done = await withCrew({ ...options, threads }, (crew, own) =>
     compareSpec(crew, { spec, plans }, { ...own, robust }),
@@ -42,17 +42,17 @@ export async function compareCommand(path: string | undefined, options: CompareC
   else {
     const animals = compiled.model.counts === 'females' ? 'females' : 'animals';
     writeOut(
-      `${compareText(results, { ...terminalOf(process.stdout), animals, details: options.details === true }).trimEnd()}\n`,
+      `${compareText(results, { ...terminalAt('stdout'), animals, details: options.details === true }).trimEnd()}\n`,
     );
   }
   const cut = cutShort(run, plans);
   if (cut !== null) throw cut;
 }
 
-function load(path: string | undefined, options: CompareCommandOptions): LoadedAgain {
+async function load(path: string | undefined, options: CompareCommandOptions): Promise<LoadedAgain> {
   refuseBesideAgain(path, options);
   if (options.again !== undefined) return loadAgain(options.again, 'compare');
-  const { compiled } = loadModel(path ?? '-', settingsOf(options), { ...options, everyScenario: true });
+  const { compiled } = await loadModel(path ?? '-', settingsOf(options), { ...options, everyScenario: true });
   return { compiled, robust: options.robust === true };
 }
 

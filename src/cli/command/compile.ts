@@ -22,14 +22,17 @@ const writers: Readonly<Record<string, (compiled: CompiledModel) => string | Uin
   '.wasm': modelModule,
 };
 
-export function compileCommand(path: string, options: CommonOptions & { readonly output: string }): void {
+export async function compileCommand(
+  path: string,
+  options: CommonOptions & { readonly output: string },
+): Promise<void> {
   const { output, quiet } = options;
   const ending = extname(output);
   const write = Object.hasOwn(writers, ending) ? writers[ending] : undefined;
   if (write === undefined) {
     throw new Ending(exitCodes.usage, `-o ${output}: the name of the file ends in ${Object.keys(writers).join(', ')}.`);
   }
-  const { compiled } = loadModel(path, settingsOf(options), options);
+  const { compiled } = await loadModel(path, settingsOf(options), options);
   pendingFile(output).finish(write(compiled));
   if (quiet !== true) writeError(`Wrote ${output}\n`);
 }

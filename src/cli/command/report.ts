@@ -17,7 +17,7 @@ import { commandLineOf } from '../words.ts';
 import { reportPlans } from './report-plans.ts';
 
 export async function reportCommand(path: string, options: CommonOptions & { readonly output: string }): Promise<void> {
-  const { document, files, ...loaded } = loadModel(path, settingsOf(options), {
+  const { document, files, ...loaded } = await loadModel(path, settingsOf(options), {
     ...options,
     everyScenario: options.scenario === undefined,
   });

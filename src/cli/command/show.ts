@@ -24,7 +24,7 @@ const printers: Readonly<Record<string, Printer>> = {
   packed: { text: ({ image }) => describeImage(image), json: ({ image }) => imageJson(image) },
 };
 
-export function showStage(path: string, stage: string, options: CommonOptions): void {
+export async function showStage(path: string, stage: string, options: CommonOptions): Promise<void> {
   const printer = Object.hasOwn(printers, stage) ? printers[stage] : undefined;
   if (printer === undefined) {
     throw new Ending(
@@ -32,7 +32,7 @@ export function showStage(path: string, stage: string, options: CommonOptions): 
       `There is no stage \`${stage}\`. There are: ${Object.keys(printers).join(', ')}.`,
     );
   }
-  const { compiled } = loadModel(path, settingsOf(options), options);
+  const { compiled } = await loadModel(path, settingsOf(options), options);
   writeOut(
     options.json === true
       ? `${JSON.stringify(printer.json(compiled), null, 2)}\n`

@@ -18,7 +18,7 @@ import { tellSweep, writeLog } from '../sweep/tell.ts';
 
 export async function sweepCommand(path: string, options: SweepOptions): Promise<void> {
   const started = new Date();
-  const loaded = loadModel(path, settingsOf(options), options);
+  const loaded = await loadModel(path, settingsOf(options), options);
   const spec = withoutSweep(loaded.compiled.spec);
   const manifest = manifestOf({ ...loaded.compiled, spec }, planOf(loaded, options), specJson(spec));
   const { quiet = false, threads = availableParallelism() } = options;

@@ -3,7 +3,7 @@ import type { Spec } from '../../spec/schema/spec.ts';
 import { openDesign } from '../../sweep/design/design.ts';
 import { placeOfPart, type Manifest } from '../../sweep/manifest.ts';
 import { openEvaluator } from '../../sweep/point/evaluate.ts';
-import { ThreadsFailure } from '../../threads/threads.ts';
+import { ThreadsFailure } from '../../threads/failure.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { writeError } from '../output.ts';
 import { showProgress } from '../progress.ts';

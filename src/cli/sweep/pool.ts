@@ -1,7 +1,7 @@
 // The threads of a sweep. Each works out a part at a time; a part whose thread dies is begun again in another.
 import { Worker } from 'node:worker_threads';
 import { sweepWorkerScript } from '../../../build/sweep-worker-script.ts';
-import { ThreadsFailure } from '../../threads/threads.ts';
+import { ThreadsFailure } from '../../threads/failure.ts';
 import type { SweepWorkerStart } from './worker.ts';
 
 /** A part that lost its thread so often is given up. */

@@ -5,7 +5,7 @@ import type { SweepSummary } from '../../sweep/summary/summarise.ts';
 import { pendingFile } from '../files.ts';
 import { logOf, type Work } from '../log.ts';
 import { writeOut } from '../output.ts';
-import { terminalOf } from '../terminal.ts';
+import { terminalAt } from '../terminal.ts';
 
 export interface TellingOptions {
   readonly json?: boolean;
@@ -15,7 +15,7 @@ export interface TellingOptions {
 
 export function tellSweep(summary: SweepSummary, { json, details }: TellingOptions): void {
   if (json === true) writeOut(`${JSON.stringify(summary, null, 2)}\n`);
-  else writeOut(`${sweepText(summary, { ...terminalOf(process.stdout), details: details === true }).trimEnd()}\n`);
+  else writeOut(`${sweepText(summary, { ...terminalAt('stdout'), details: details === true }).trimEnd()}\n`);
 }
 
 export function writeLog(folder: string, work: Work): void {

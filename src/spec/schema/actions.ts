@@ -1,6 +1,6 @@
 // What a plan may do. Actions change numbers of the model from a year on, or do something to animals at a
 // place in the year; a scenario is a list of them.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { ChangeAction } from './actions/change.ts';
 import { HabitatAction } from './actions/habitat.ts';
 import { AddAction, MoveAction, TakeAction } from './actions/handling.ts';

@@ -1,5 +1,5 @@
 // How young come about beside their number: how many at once, and who must find whom.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { classList, expression } from './values.ts';
 
 export const Offspring = Type.Object(

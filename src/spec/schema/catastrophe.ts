@@ -1,5 +1,5 @@
 // Catastrophes, and good years by the same means: rare events that strike some or all patches.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { byClass, expression, Name, quantity } from './values.ts';
 
 const reach = {

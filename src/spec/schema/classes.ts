@@ -1,5 +1,5 @@
 // Age or stage classes, of one sex or of both.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { expression, Name } from './values.ts';
 
 function namesOf(description: string, example: string) {

@@ -1,5 +1,5 @@
 // What actions cost, and what costs are told in.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { expression, text } from './values.ts';
 
 const money = (description: string, example: string | number) => {

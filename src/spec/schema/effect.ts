@@ -1,5 +1,5 @@
 // What an action makes of one number: another number, a multiple of it, so much more, or several of these in this order.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { unsureExpression, unsureQuantity, type Measured } from './unsure.ts';
 import type { KeyWords } from './values.ts';
 

@@ -1,5 +1,5 @@
 // What people do with animals at a place in the year: take, move, release. Each stands under a name of its own.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { unsureByClass, unsureExpression } from './unsure.ts';
 import { classList, expression, Name, patchOrMore, type KeyWords } from './values.ts';
 

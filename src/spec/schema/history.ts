@@ -1,5 +1,5 @@
 // What is known year by year: counts of the past, and what drives rates from outside.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { classList, expression, orFile } from './values.ts';
 
 const YearCounts = Type.Record(

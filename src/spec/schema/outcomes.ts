@@ -1,4 +1,4 @@
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { byNumber, classList, Name, orFile, quantity } from './values.ts';
 
 const counted = { description: 'Classes that are counted, alike or with a weight each.', examples: ['[adult]'] };

@@ -1,4 +1,5 @@
-import { Type, type Static } from 'typebox';
+import * as Type from 'typebox';
+import type { Static } from 'typebox';
 import { Source } from './source.ts';
 import { Uncertain } from './uncertainty.ts';
 import { fileName, Name, quantity, text, timed } from './values.ts';

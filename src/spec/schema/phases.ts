@@ -1,5 +1,5 @@
 // The phases that a study names itself: each stands at the top level under its own name with a `kind`.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { byClass, classList, expression, Name, orFile, quantity, timed } from './values.ts';
 
 export const Kernel = Type.Object(

@@ -1,4 +1,4 @@
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { Mating, Offspring } from './breeding.ts';
 import { byClass, classList, expression, Name, orFile, timed } from './values.ts';
 

@@ -1,5 +1,5 @@
 // Numbers that change with the calendar year, written as what they are from a year on.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 
 /** Becomes an expression over `year` before anyone looks at it. */
 export interface ScheduleRef {

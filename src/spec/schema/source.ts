@@ -1,5 +1,5 @@
 // Where a number is from.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { text } from './values.ts';
 
 export const Source = Type.Object(

@@ -1,5 +1,6 @@
 // The whole language. The published schema, the types, the checks and the reference in the README all come from here.
-import { Type, type Static } from 'typebox';
+import * as Type from 'typebox';
+import type { Static } from 'typebox';
 import { Actions, Scenarios, type Action } from './actions.ts';
 import { Money } from './cost.ts';
 import type { Effect } from './effect.ts';

@@ -1,4 +1,4 @@
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { text } from './values.ts';
 
 export const Study = Type.Object(

@@ -1,5 +1,5 @@
 // Sweeps: the same model at very many points.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { orFile } from './values.ts';
 
 const steps = Type.Optional(

@@ -1,5 +1,5 @@
 // What is not known: how sure a parameter is, and what the errors of several have to do with one another.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { expression } from './values.ts';
 
 const two = { minItems: 2, maxItems: 2 };

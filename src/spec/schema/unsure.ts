@@ -1,5 +1,5 @@
 // Numbers of actions that are not exactly known, written where they stand.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { dimensionWords } from '../quantity.ts';
 import { Source } from './source.ts';
 import { Uncertain } from './uncertainty.ts';

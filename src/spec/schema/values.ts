@@ -1,5 +1,6 @@
 // The small values that every section is made of.
-import { Type, type TSchema } from 'typebox';
+import * as Type from 'typebox';
+import type { TSchema } from 'typebox';
 import { dimensionWords, type Dimension } from '../quantity.ts';
 import { schedule } from './schedule.ts';
 

@@ -1,5 +1,5 @@
 // Year-to-year variation: what differs between years, by how much, and what differs together.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { expression, quantity } from './values.ts';
 
 /** By how much one number differs from year to year. */

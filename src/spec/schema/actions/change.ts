@@ -1,5 +1,5 @@
 // Rates or named numbers that change.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { cost } from '../cost.ts';
 import { effect } from '../effect.ts';
 import { patchOrMore } from '../values.ts';

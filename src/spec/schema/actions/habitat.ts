@@ -1,5 +1,5 @@
 // Habitat that is made better or worse, lost, or made anew.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { cost } from '../cost.ts';
 import { effect, measuredEffect } from '../effect.ts';
 import { InlinePatch, PatchAttribute } from '../patches.ts';

@@ -1,5 +1,5 @@
 // What is done to animals: the same as the phases of these kinds, with their place in the year and their cost.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { cost } from '../cost.ts';
 import { Add, Move, Take } from '../handling.ts';
 import { Name } from '../values.ts';

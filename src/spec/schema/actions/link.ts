@@ -1,5 +1,5 @@
 // A way between two patches that changes, or a new one.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { cost } from '../cost.ts';
 import { effect, measuredEffect } from '../effect.ts';
 import { Name } from '../values.ts';

@@ -1,5 +1,5 @@
 // The years of an effect.
-import { Type } from 'typebox';
+import * as Type from 'typebox';
 import { quantity } from '../values.ts';
 
 const Year = (description: string, example: number) =>

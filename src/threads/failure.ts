@@ -1,0 +1,2 @@
+/** The work could not be done since workers died again and again. */
+export class ThreadsFailure extends Error {}
