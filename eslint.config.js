@@ -35,4 +35,15 @@ export default tseslint.config(
   },
   { files: ['test/**/*.ts'], rules: { '@typescript-eslint/no-non-null-assertion': 'off' } },
   { files: ['bin/**/*.mjs'], languageOptions: { globals: { process: 'readonly', console: 'readonly' } } },
+  {
+    // Node starts a script sooner than a module.
+    files: ['bin/**/*.cjs'],
+    languageOptions: {
+      sourceType: 'commonjs',
+      globals: Object.fromEntries(
+        ['process', 'console', 'require', 'module', '__dirname'].map((name) => [name, 'readonly']),
+      ),
+    },
+    rules: { '@typescript-eslint/no-require-imports': 'off' },
+  },
 );

@@ -1,8 +1,9 @@
 // Builds everything that is made from the sources: the kernel, the command line, the page and the library.
 import { spawnSync } from 'node:child_process';
-import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
-import { basename, join } from 'node:path';
+import { existsSync, mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { buildCommandLine } from './command-line.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const at = (...parts) => join(root, ...parts);
@@ -31,13 +32,6 @@ function buildKernel() {
 
 function writeScript(name, from, content) {
   writeFileSync(at('build', name), `// Made by npm run build from ${from}.\nexport const ${content};\n`);
-}
-
-/** Parts of earlier builds carry other names and would pile up. */
-function removeOthers(folder, made) {
-  const kept = new Set(made.map((path) => basename(path)));
-  for (const name of readdirSync(folder))
-    if (!kept.has(name)) rmSync(join(folder, name), { force: true, recursive: true });
 }
 
 const shared = { absWorkingDir: root, bundle: true, format: 'esm', target: 'es2023', logLevel: 'warning' };
@@ -80,11 +74,7 @@ async function bundle() {
   const banner = {
     js: "import { createRequire as createRequireHere } from 'node:module'; const require = createRequireHere(import.meta.url);",
   };
-  if (existsSync(at('src/cli/main.ts'))) {
-    const options = { entryPoints: { skein: 'src/cli/main.ts' }, outdir: 'build/cli', splitting: true, metafile: true };
-    const { metafile } = await build({ ...node, ...options, banner });
-    removeOthers(at('build', 'cli'), Object.keys(metafile.outputs));
-  }
+  await buildCommandLine(shared, at('build', 'cli'));
   if (existsSync(at('src/index.ts'))) {
     await build({ ...node, banner, entryPoints: { index: 'src/index.ts' }, outdir: 'build' });
   }

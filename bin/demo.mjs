@@ -8,7 +8,7 @@ const page = join('build', 'reed-hare.html');
 
 installPackages();
 build();
-const skein = (...words) => run(process.execPath, ['bin/skein.mjs', ...words]);
+const skein = (...words) => run(process.execPath, ['bin/skein.cjs', ...words]);
 console.log(`\n$ skein check ${model}\n`);
 skein('check', model);
 console.log(`\n$ skein run ${model}\n`);

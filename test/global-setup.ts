@@ -5,7 +5,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
-const sources = ['src', 'assembly', 'bin/build.mjs', 'asconfig.json', 'package-lock.json'];
+const sources = ['src', 'assembly', 'bin', 'asconfig.json', 'package-lock.json'];
 
 export default function buildWhereStale(): void {
   const built = join(root, 'build/cli/skein.js');

@@ -30,7 +30,7 @@ describe('the five-minute tour', () => {
 
   test.each(blocks)('%s', (block) => {
     // `skein` and `npx skein` stand for the command that was built; the tour begins after installing.
-    const names = `skein() { node '${join(root, 'bin/skein.mjs')}' "$@"; }\nnpx() { "$@"; }\n`;
+    const names = `skein() { node '${join(root, 'bin/skein.cjs')}' "$@"; }\nnpx() { "$@"; }\n`;
     const { status, stderr } = spawnSync('sh', ['-euc', names + withoutInstalling(block)], {
       cwd: folder,
       encoding: 'utf8',

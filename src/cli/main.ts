@@ -233,12 +233,15 @@ function endingOf(error: unknown): number {
   return exitCodes.bug;
 }
 
-try {
-  await buildProgram().parseAsync();
-} catch (error) {
+/** Of the words that Node was called with; sets the exit code. */
+export async function main(words: readonly string[]): Promise<void> {
   try {
-    process.exitCode = endingOf(error);
-  } catch {
-    process.exitCode = exitCodes.work;
+    await buildProgram().parseAsync(words);
+  } catch (error) {
+    try {
+      process.exitCode = endingOf(error);
+    } catch {
+      process.exitCode = exitCodes.work;
+    }
   }
 }

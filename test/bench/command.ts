@@ -16,7 +16,7 @@ if (isMainThread) process.on('exit', () => {
 
 /** Errors: throws where the command fails. */
 export function command(words: readonly string[]): CommandFigures {
-  const inside = ['--import', `data:text/javascript,${encodeURIComponent(telling)}`, join('bin', 'skein.mjs')];
+  const inside = ['--import', `data:text/javascript,${encodeURIComponent(telling)}`, join('bin', 'skein.cjs')];
   const { status, stderr } = spawnSync(process.execPath, [...inside, ...words], { encoding: 'utf8', maxBuffer: 1e9 });
   const [seconds = NaN, megabytes = NaN] = /\ntook ([\d.]+) ([\d.]+)\n/.exec(stderr)?.slice(1).map(Number) ?? [];
   if (status !== 0 || Number.isNaN(megabytes)) throw new Error(`skein ${words.join(' ')} failed: ${stderr}`);

@@ -29,7 +29,7 @@ export function measureFlagship({ rounds }: Options): FlagshipTimes {
       }),
     );
   };
-  const words = ['bin/skein.mjs', 'run', file, '--replicates', String(replicates), '--years', String(years)];
+  const words = ['bin/skein.cjs', 'run', file, '--replicates', String(replicates), '--years', String(years)];
   return {
     compile: time(() => void compileSpec(compiled.spec)),
     run: time(() => void runModel(compiled)),

@@ -109,7 +109,7 @@ async function secondsOf({ risks, common, apart, rounds }: Asked): Promise<PlanS
     times.processes.push(await wallSeconds(baselines));
     const only = names.flatMap((name) => ['--only', name]);
     const words = ['compare', file, ...only, '--replicates', String(common), '--threads', '2', '--quiet'];
-    times.command.push(await wallSeconds([[process.execPath, 'bin/skein.mjs', ...words]]));
+    times.command.push(await wallSeconds([[process.execPath, 'bin/skein.cjs', ...words]]));
   }
   return {
     ours: median(times.ours),

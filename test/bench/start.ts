@@ -11,7 +11,7 @@ export interface StartTimes {
   readonly smallest: number;
 }
 
-const skein = join('bin', 'skein.mjs');
+const skein = join('bin', 'skein.cjs');
 
 export function measureStart({ rounds }: Options): StartTimes {
   const ways = [

@@ -101,7 +101,7 @@ describe('a file that cannot be read', () => {
   test('a named pipe is read to its end', () => {
     const cwd = folder();
     execFileSync('mkfifo', [join(cwd, 'pipe')]);
-    const line = `cat '${join(root, ponds)}' > pipe & '${process.execPath}' '${join(root, 'bin/skein.mjs')}' check pipe`;
+    const line = `cat '${join(root, ponds)}' > pipe & '${process.execPath}' '${join(root, 'bin/skein.cjs')}' check pipe`;
     expect(execFileSync('sh', ['-c', line], { cwd, encoding: 'utf8' })).toContain('Newts in two ponds');
   });
 });

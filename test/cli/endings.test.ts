@@ -1,6 +1,6 @@
 // How a command ends: the exit codes, warnings that may fail, readers that go away, and a bug in the tool itself.
 import { execFileSync, spawnSync } from 'node:child_process';
-import { cpSync, readFileSync, readdirSync, writeFileSync } from 'node:fs';
+import { cpSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
 import { folder, ponds, root, skein } from './skein.ts';
@@ -26,30 +26,30 @@ test('3: the work failed', () => {
 
 test('70: a bug in the tool asks for a report, and says nothing of the model', () => {
   const cwd = folder();
-  cpSync(join(root, 'build/cli'), join(cwd, 'cli'), { recursive: true });
+  for (const part of ['bin', 'build/cli']) cpSync(join(root, part), join(cwd, part), { recursive: true });
   // A kernel that is no program stands for any bug.
-  for (const file of readdirSync(join(cwd, 'cli'))) {
-    const text = readFileSync(join(cwd, 'cli', file), 'utf8');
-    writeFileSync(join(cwd, 'cli', file), text.replace(/AGFzbQEAAAA[\w+/=]+/, 'AAAA'));
-  }
-  const { status, stdout, stderr } = spawnSync(process.execPath, ['cli/skein.js', 'run', ponds], {
+  const script = join(cwd, 'build/cli/everyday.js');
+  writeFileSync(script, readFileSync(script, 'utf8').replace(/AGFzbQEAAAA[\w+/=]+/, 'AAAA'));
+  const { status, stdout, stderr } = spawnSync(process.execPath, ['bin/skein.cjs', 'run', ponds], {
     cwd,
     encoding: 'utf8',
   });
   expect({ status, stdout }).toEqual({ status: 70, stdout: '' });
   expect(stderr).toMatch(/^This is a bug in skein \d+\.\d+\.\d+, not a mistake of yours\. Please report it/);
   expect(stderr).toMatch(/^Node v\d+/m);
+  // Of the trace, functions by their names and short lines.
+  expect(stderr).toMatch(/^ {4}at [\w.-]+ \(.*everyday\.js:\d+:\d{1,3}\)$/m);
   expect(stderr).not.toContain('Newts');
 });
 
 test('a reader that has enough is no failure', () => {
-  const line = `'${process.execPath}' '${join(root, 'bin/skein.mjs')}' path models/reed-hare.yaml --years 5000 --json | head -c 100`;
+  const line = `'${process.execPath}' '${join(root, 'bin/skein.cjs')}' path models/reed-hare.yaml --years 5000 --json | head -c 100`;
   const out = execFileSync('bash', ['-c', `set -o pipefail; ${line}`], { cwd: folder(), encoding: 'utf8' });
   expect(out).toHaveLength(100);
 });
 
 test('mistakes that nobody reads still end with 1', () => {
-  const line = `'${process.execPath}' '${join(root, 'bin/skein.mjs')}' check none.yaml 2>/dev/full`;
+  const line = `'${process.execPath}' '${join(root, 'bin/skein.cjs')}' check none.yaml 2>/dev/full`;
   const { status } = spawnSync('sh', ['-c', line], { cwd: folder() });
   expect(status).toBe(1);
 });

@@ -18,7 +18,7 @@ const words = (seed: number) => [
 
 /** Kills the command when the folder has changed so many times; false where it ended before. */
 function killAfter(changes: number, cwd: string): Promise<boolean> {
-  const child = spawn(process.execPath, [join(root, 'bin/skein.mjs'), ...words(2), '--quiet', '--out', 'out'], { cwd });
+  const child = spawn(process.execPath, [join(root, 'bin/skein.cjs'), ...words(2), '--quiet', '--out', 'out'], { cwd });
   let seen = 0;
   const watcher = watch(join(cwd, 'out'), () => {
     if (++seen === changes) child.kill('SIGKILL');

@@ -7,7 +7,7 @@ import { fileURLToPath } from 'node:url';
 import { onTestFinished } from 'vitest';
 
 export const root = fileURLToPath(new URL('../..', import.meta.url));
-const command = join(root, 'bin/skein.mjs');
+const command = join(root, 'bin/skein.cjs');
 
 export interface Call {
   readonly cwd?: string;

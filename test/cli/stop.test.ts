@@ -19,7 +19,7 @@ interface Ended {
 
 /** Sends the signal as soon as the first line of progress comes. */
 function runUntilProgress(words: readonly string[], signal: NodeJS.Signals): Promise<Ended> {
-  const child = spawn(process.execPath, ['bin/skein.mjs', ...words], { cwd: root });
+  const child = spawn(process.execPath, ['bin/skein.cjs', ...words], { cwd: root });
   let [stdout, stderr, sent] = ['', '', false];
   child.stdout.on('data', (text: Buffer) => (stdout += text.toString()));
   child.stderr.on('data', (text: Buffer) => {

@@ -38,7 +38,7 @@ function partsIn(path: string): ReadonlyMap<string, number> {
 
 /** Dead by a kill that nothing can catch, unless it was done before. */
 async function killedAfter(milliseconds: number, cwd: string): Promise<void> {
-  const child = spawn(process.execPath, [join(root, 'bin/skein.mjs'), ...words, '--out', 'out'], {
+  const child = spawn(process.execPath, [join(root, 'bin/skein.cjs'), ...words, '--out', 'out'], {
     cwd,
     stdio: 'ignore',
   });

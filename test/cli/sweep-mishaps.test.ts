@@ -38,7 +38,7 @@ describe('a disk of so many KB that fills', () => {
     const cwd = folder();
     mkdirSync(join(cwd, 'disk'));
     const clean = undisturbed(cwd);
-    const command = [process.execPath, join(root, 'bin/skein.mjs'), ...words, '--out', 'disk/out'];
+    const command = [process.execPath, join(root, 'bin/skein.cjs'), ...words, '--out', 'disk/out'];
     const shell = ['sh', '-c', script, 'sh', String(kilobytes), ...command];
     const [program = 'sh', ...rest] = own ? ['unshare', '-rm', ...shell] : shell;
     spawnSync(program, rest, { cwd, encoding: 'utf8' });
@@ -93,7 +93,7 @@ describe('two processes on one folder', () => {
   }
 
   function begin(cwd: string): Begun {
-    const child = spawn(process.execPath, [join(root, 'bin/skein.mjs'), ...words, '--out', 'out'], { cwd });
+    const child = spawn(process.execPath, [join(root, 'bin/skein.cjs'), ...words, '--out', 'out'], { cwd });
     let err = '';
     child.stderr.on('data', (chunk: Buffer) => (err += chunk.toString()));
     return {

@@ -30,7 +30,7 @@ beforeAll(() => {
 
 /** What a command prints, as a hash: a page is too long to be told by a test. */
 function printed(node: string, words: readonly string[]): string {
-  const { status, stdout, stderr } = spawnSync(node, ['bin/skein.mjs', ...words], {
+  const { status, stdout, stderr } = spawnSync(node, ['bin/skein.cjs', ...words], {
     cwd: root,
     maxBuffer: 512 * 1024 * 1024,
   });

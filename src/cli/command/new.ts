@@ -1,7 +1,6 @@
 // skein new: a small working model to start from.
 import { existsSync, readFileSync, readdirSync } from 'node:fs';
 import { dirname, join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import { readSpec } from '../../spec/read.ts';
 import { Ending, exitCodes } from '../exit.ts';
 import { makeFolder, pendingFile } from '../files.ts';
@@ -44,6 +43,6 @@ function exampleNames(): readonly string[] {
 
 /** Beside the built command as well as beside the sources. */
 function examplesFolder(): string {
-  const places = ['../../models/', '../../../models/'].map((path) => fileURLToPath(new URL(path, import.meta.url)));
+  const places = ['../../models/', '../../../models/'].map((path) => join(import.meta.dirname, path));
   return places.find((place) => existsSync(place)) ?? '';
 }
