@@ -1,7 +1,7 @@
 // Diagnostics as text for a person: where, what, the line itself, and what to do about it.
-import { createColors } from 'picocolors';
 import type { Diagnostic, Severity } from './diagnostic.ts';
 import { excerptOf } from './excerpt.ts';
+import { paintsOf, type Paint, type Paints } from './paint.ts';
 import { visible, widthOf } from './visible.ts';
 
 export interface RenderOptions {
@@ -10,17 +10,15 @@ export interface RenderOptions {
   readonly width: number;
 }
 
-type Paint = ReturnType<typeof createColors>;
-
 /** All of a list, a blank line between them, and how many there are of each. */
 export function renderDiagnostics(list: readonly Diagnostic[], options: RenderOptions): string {
   if (list.length === 0) return '';
-  const paint = createColors(options.colour);
+  const paint = paintsOf(options.colour);
   const width = Math.max(40, options.width);
   return `${list.map((one) => renderOne(one, paint, width)).join('\n')}\n${countOf(list)}\n`;
 }
 
-function renderOne(one: Diagnostic, paint: Paint, width: number): string {
+function renderOne(one: Diagnostic, paint: Paints, width: number): string {
   const lines = [headerOf(one, paint), ...wrap(sentence(one.message), width, '  ')];
   if (one.place !== undefined) {
     const number = String(one.place.line);
@@ -41,19 +39,16 @@ function sentence(message: string): string {
   return /[.?!]$/u.test(message) ? message : `${message}.`;
 }
 
-function headerOf(one: Diagnostic, paint: Paint): string {
+function headerOf(one: Diagnostic, paint: Paints): string {
   const where =
     one.place === undefined ? [] : [`${one.place.file}:${String(one.place.line)}:${String(one.place.column)}`];
   return [...where.map(visible), inSeverity(one, paint)(one.severity), paint.dim(one.code)].join(' ');
 }
 
-function inSeverity(one: Diagnostic, paint: Paint): (text: string) => string {
-  const colours: Readonly<Record<Severity, (text: string) => string>> = {
-    error: (text) => paint.red(text),
-    warning: (text) => paint.yellow(text),
-    note: (text) => paint.cyan(text),
-  };
-  return colours[one.severity];
+const colours = { error: 'red', warning: 'yellow', note: 'cyan' } as const satisfies Record<Severity, keyof Paints>;
+
+function inSeverity(one: Diagnostic, paint: Paints): Paint {
+  return paint[colours[one.severity]];
 }
 
 function detailsOf(one: Diagnostic, width: number): readonly string[] {
