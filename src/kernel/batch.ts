@@ -71,9 +71,9 @@ export function tapedRunnerOn(
     startBatch(machine, request, batch);
     const observed = observedIn(machine, columns);
     counts.set(observed);
+    const go = tape === null ? machine.step : tape.stepsOn(machine);
     for (let step = 1; step <= request.steps; step++) {
-      if (tape === null) machine.step();
-      else tape.step(machine, step);
+      go(step);
       counts.set(observed, step * observed.length);
       if (ways !== null) movedSoFar.set(new Float64Array(machine.memory.buffer, machine.moved(), ways), step * ways);
     }
@@ -100,12 +100,15 @@ function observedIn(machine: Machine, columns: number): Float64Array {
 
 function stopsOf(machine: Machine, { first, lanes }: Batch, phases: readonly string[]): readonly Stop[] {
   const table = new Int32Array(machine.memory.buffer, machine.stops(), layout.lanes * 3);
-  return Array.from({ length: lanes }, (_, lane) => table.subarray(lane * 3, lane * 3 + 3)).flatMap(
-    ([code = 0, index = 0, step = 0], lane) =>
-      code === layout.faultNone
-        ? []
-        : [{ replicate: first + lane, step, reason: stopReason(code, phases[index] ?? `phase ${String(index)}`) }],
-  );
+  const stops: Stop[] = [];
+  for (let lane = 0; lane < lanes; lane++) {
+    const code = table[lane * 3] ?? 0;
+    if (code === layout.faultNone) continue;
+    const [index = 0, step = 0] = table.subarray(lane * 3 + 1, lane * 3 + 3);
+    const reason = stopReason(code, phases[index] ?? `phase ${String(index)}`);
+    stops.push({ replicate: first + lane, step, reason });
+  }
+  return stops;
 }
 
 function stopReason(code: number, phase: string): string {

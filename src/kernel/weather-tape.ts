@@ -14,14 +14,18 @@ export function bytesOfTape({ steps, weather }: TapeSize): number {
 }
 
 export class WeatherTape {
+  /** By step, each with the lanes of one number next to each other. */
+  readonly #steps: readonly Float64Array[];
   readonly #width: number;
-  readonly #numbers: Float64Array;
   /** Steps that were written from the first on. */
   #written = 0;
 
   constructor(size: TapeSize) {
     this.#width = size.weather * layout.lanes;
-    this.#numbers = new Float64Array(size.steps * this.#width);
+    const numbers = new Float64Array(size.steps * this.#width);
+    this.#steps = Array.from({ length: size.steps }, (_, i) =>
+      numbers.subarray(i * this.#width, (i + 1) * this.#width),
+    );
   }
 
   /** For other replicates. */
@@ -29,17 +33,20 @@ export class WeatherTape {
     this.#written = 0;
   }
 
-  /** Step t (from 1) of the batch that the machine is at, one after the other. */
-  step(machine: Machine, t: number): void {
+  /** What does step t (from 1) of the batch that the machine is at: one after the other. */
+  stepsOn(machine: Machine): (t: number) => void {
     const now = new Float64Array(machine.memory.buffer, machine.weatherNumbers(), this.#width);
-    const [start, end] = [(t - 1) * this.#width, t * this.#width];
-    if (t <= this.#written) {
-      now.set(this.#numbers.subarray(start, end));
-      machine.stepUnder();
-      return;
-    }
-    machine.step();
-    this.#numbers.set(now, start);
-    this.#written = t;
+    return (t) => {
+      const own = this.#steps[t - 1];
+      if (own === undefined) throw new RangeError(`The tape of the weather has no step ${t}.`);
+      if (t <= this.#written) {
+        now.set(own);
+        machine.stepUnder();
+      } else {
+        machine.step();
+        own.set(now);
+        this.#written = t;
+      }
+    };
   }
 }

@@ -139,9 +139,11 @@ interface KeptLanes {
 }
 
 function keptLanes({ first, lanes: count, counts, stopped }: BatchCounts): KeptLanes {
+  const all = new Int32Array(count);
+  for (let lane = 0; lane < count; lane++) all[lane] = first + lane;
+  if (stopped.length === 0) return { counts, replicates: all };
   const gone = new Set(stopped.map(({ replicate }) => replicate));
-  const replicates = Int32Array.from({ length: count }, (_, lane) => first + lane).filter((one) => !gone.has(one));
-  if (gone.size === 0) return { counts, replicates };
+  const replicates = all.filter((one) => !gone.has(one));
   const packed = new Float64Array(counts.length);
   for (let row = 0; row < counts.length; row += lanes) {
     replicates.forEach((replicate, i) => (packed[row + i] = counts[row + replicate - first] ?? 0));
