@@ -6,9 +6,12 @@ export interface TextStyle {
   readonly width: number;
 }
 
+/** Latin letters and the signs of print, each as wide as another: most text, and tables of all scripts take a while to load. */
+const plain = /^[ -~\u00a0-\u00ac\u00ae-\u02ff\u2010-\u2027]*$/;
+
 /** Control and formatting characters become visible marks, so that a name can neither hide nor repaint anything. */
 export function printable(text: string): string {
-  if (/^[ -~]*$/.test(text)) return text;
+  if (plain.test(text)) return text;
   return text.replace(/[\p{Cc}\p{Cf}\p{Cs}\u2028\u2029]/gu, '\uFFFD');
 }
 
@@ -89,8 +92,7 @@ function padStart(text: string, width: number): string {
 
 /** Cells that a text takes: marks that combine take none, wide scripts two. */
 export function wide(text: string): number {
-  // Most text is of this kind, and tables of all scripts take a while to load.
-  if (/^[ -~]*$/.test(text)) return text.length;
+  if (plain.test(text)) return text.length;
   let cells = 0;
   for (const character of text) {
     if (/\p{M}/u.test(character)) continue;
