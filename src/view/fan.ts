@@ -1,5 +1,4 @@
 // Abundance over many futures: nine in ten lie in the light band, half in the darker one, the line is the middle.
-import { area, line } from 'd3';
 import type { CountedView, Fan, Series, Size } from './contract.ts';
 import { axes, cursor, plot, type Plot } from './axes.ts';
 import { countedEntries, dots, mostCounted, yearsWith } from './counted.ts';
@@ -8,6 +7,7 @@ import { key } from './key.ts';
 import { mark, type Markup } from './markup.ts';
 import { plain } from './number.ts';
 import { deep, ink, middle, softInk, tint } from './palette.ts';
+import { areaWithin, pathThrough, type Place } from './path.ts';
 import { largest, pick } from './series.ts';
 
 export interface FanChart {
@@ -49,20 +49,13 @@ export function bands(place: Plot, years: Series, fan: Fan): Markup {
 
 /** One value a year. */
 export function course(place: Plot, years: Series, values: Series): string {
-  const draw = line<number>()
-    .x((_, i) => place.x(pick(years, i)))
-    .y((value) => place.y(value))
-    .digits(1);
-  return draw([...values]) ?? '';
+  return pathThrough(years.map((year, i): Place => [place.x(year), place.y(pick(values, i))]));
 }
 
 export function ribbon(place: Plot, years: Series, lower: Series, upper: Series): string {
-  const shape = area<number>()
-    .x((_, i) => place.x(pick(years, i)))
-    .y0((_, i) => place.y(pick(lower, i)))
-    .y1((_, i) => place.y(pick(upper, i)))
-    .digits(1);
-  return shape([...years]) ?? '';
+  const there = years.map((year, i): Place => [place.x(year), place.y(pick(upper, i))]);
+  const back = years.map((year, i): Place => [place.x(year), place.y(pick(lower, i))]).reverse();
+  return areaWithin([...there, ...back]);
 }
 
 const entries = [

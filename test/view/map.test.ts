@@ -6,6 +6,7 @@ import { dotPath, sizeDiscs } from '../../src/view/map/discs.ts';
 import { placeLabels } from '../../src/view/map/labels.ts';
 import { placePatches } from '../../src/view/map/place.ts';
 import { circleShape } from '../../src/view/map/shape.ts';
+import { placesOf } from './places-of.ts';
 
 const flat = [5, 5];
 const fan = { mean: flat, p05: flat, p25: flat, median: flat, p75: flat, p95: flat };
@@ -76,11 +77,9 @@ describe('circles', () => {
 
 describe('bands', () => {
   it('are as wide as asked at the origin and thin at the end', () => {
-    const corners = [
-      ...bandPath({ from: [0, 0], to: [100, 0], fromRadius: 0, toRadius: 0 }, 10, 0).matchAll(/(-?[\d.]+),(-?[\d.]+)/g),
-    ];
+    const corners = placesOf(bandPath({ from: [0, 0], to: [100, 0], fromRadius: 0, toRadius: 0 }, 10, 0));
     const widthAt = (x: number) => {
-      const ys = corners.filter((one) => Math.abs(Number(one[1]) - x) < 4).map((one) => Number(one[2]));
+      const ys = corners.filter((one) => Math.abs(one[0] - x) < 4).map((one) => one[1]);
       return Math.max(...ys) - Math.min(...ys);
     };
     expect(widthAt(0)).toBeCloseTo(10, 0);

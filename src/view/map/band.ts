@@ -1,5 +1,5 @@
 // Movement from one patch to another: a bent band, wide where animals set out and thin where they arrive.
-import { line } from 'd3';
+import { areaWithin } from '../path.ts';
 
 export interface Ends {
   readonly from: readonly [number, number];
@@ -8,8 +8,10 @@ export interface Ends {
   readonly toRadius: number;
 }
 
-const steps = 14;
-const shape = line().digits(1);
+/** Along a band: as many as a bend of this length (pixels) needs to look round. */
+function stepsFor(length: number): number {
+  return Math.max(4, Math.min(14, Math.round(length / 6)));
+}
 
 /** The outline of a band of this width (pixels) at its origin. It keeps to the right of the straight line. */
 export function bandPath(ends: Ends, width: number, bent = 0.16): string {
@@ -21,7 +23,7 @@ export function bandPath(ends: Ends, width: number, bent = 0.16): string {
   const middle: Point = [ends.from[0] + dx / 2 - uy * bend, ends.from[1] + dy / 2 + ux * bend];
   const start = towards(ends.from, middle, ends.fromRadius + 1.5);
   const end = towards(ends.to, middle, ends.toRadius + 2.5);
-  return `${shape(outline(start, middle, end, width)) ?? ''}Z`;
+  return areaWithin(outline(start, middle, end, width));
 }
 
 type Point = [number, number];
@@ -34,6 +36,7 @@ function towards(from: readonly [number, number], to: Point, away: number): Poin
 
 function outline(start: Point, middle: Point, end: Point, width: number): Point[] {
   const [there, back]: [Point[], Point[]] = [[], []];
+  const steps = stepsFor(Math.hypot(end[0] - start[0], end[1] - start[1]));
   for (let i = 0; i <= steps; i++) {
     const t = i / steps;
     const x = (1 - t) ** 2 * start[0] + 2 * t * (1 - t) * middle[0] + t ** 2 * end[0];
