@@ -12,6 +12,7 @@ function children(old: Element, fresh: ParentNode & Node): void {
   after.forEach((node, i) => {
     const there = before[i];
     if (there === undefined) old.append(node);
+    else if (there.isEqualNode(node)) return;
     else if (there instanceof Element && node instanceof Element && there.nodeName === node.nodeName) {
       attributes(there, node);
       children(there, node);
@@ -23,6 +24,11 @@ function children(old: Element, fresh: ParentNode & Node): void {
 }
 
 function attributes(old: Element, fresh: Element): void {
-  for (const { name, value } of fresh.attributes) if (old.getAttribute(name) !== value) old.setAttribute(name, value);
-  for (const { name } of [...old.attributes]) if (!fresh.hasAttribute(name)) old.removeAttribute(name);
+  const names = fresh.getAttributeNames();
+  for (const name of names) {
+    const value = fresh.getAttribute(name) ?? '';
+    if (old.getAttribute(name) !== value) old.setAttribute(name, value);
+  }
+  if (old.attributes.length === names.length) return;
+  for (const name of old.getAttributeNames()) if (!fresh.hasAttribute(name)) old.removeAttribute(name);
 }

@@ -1,6 +1,7 @@
 // Names beside their patches: for each, the free place that covers least; in a crowd only those that find one.
 import { fitText, textWidth } from '../figure.ts';
 import { pick } from '../series.ts';
+import { createCrowd, type Crowd } from './crowd.ts';
 import type { Box, Shape } from './shape.ts';
 
 export interface Label {
@@ -19,7 +20,8 @@ const fontSize = 13;
 
 export function placeLabels(names: readonly string[], shapes: readonly Shape[], frame: Box): readonly Label[] {
   const order = names.map((_, p) => p).sort((a, b) => pick(shapes, b).radius - pick(shapes, a).radius);
-  const taken: Box[] = shapes.map((shape) => shape.box);
+  const taken = createCrowd();
+  for (const { box } of shapes) taken.add(box);
   const crowd = names.length > 25;
   const labels: Label[] = [];
   for (const p of order) {
@@ -28,7 +30,7 @@ export function placeLabels(names: readonly string[], shapes: readonly Shape[], 
       .sort((a, b) => a.cost - b.cost);
     const best = pick(scored, 0);
     if (crowd && best.cost > 8) continue;
-    taken.push(best.label.box);
+    taken.add(best.label.box);
     labels.push(best.label);
   }
   return labels;
@@ -63,13 +65,8 @@ function candidates(patch: number, name: string, shape: Shape): Candidate[] {
   });
 }
 
-function cost(box: Box, taken: readonly Box[], frame: Box): number {
-  let covered = 0;
-  for (const other of taken) {
-    const wide = Math.min(box.right, other.right) - Math.max(box.left, other.left);
-    const high = Math.min(box.bottom, other.bottom) - Math.max(box.top, other.top);
-    if (wide > 0 && high > 0) covered += wide * high;
-  }
+function cost(box: Box, taken: Crowd, frame: Box): number {
+  const covered = taken.covered(box);
   const outside =
     Math.max(0, frame.left - box.left) +
     Math.max(0, box.right - frame.right) +

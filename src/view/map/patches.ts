@@ -17,12 +17,12 @@ export function drawPatches(sheet: Sheet): Markup {
 function patch(sheet: Sheet, p: number): Markup {
   const { view, state } = sheet;
   const said = [pick(view.patches, p).name, ...patchLines(view, p, state.count)].join('. ');
+  // Where the page's script draws it again, the title gives way to the halo and all else stays.
   if (state.focus === null) return mark`<g><title>${said}</title>${drawn(sheet, p)}</g>`;
   const shape = pick(sheet.marks.shapes, p);
   const [x, y] = shape.at;
   const stop = state.focus === p ? '0' : '-1';
-  return mark`<g class="patch" role="img" tabindex="${stop}" data-patch="${String(p)}" data-x="${x}" data-y="${y}" aria-label="${said}">
-${halo(shape)}${drawn(sheet, p)}</g>`;
+  return mark`<g class="patch" role="img" tabindex="${stop}" data-patch="${String(p)}" data-x="${x}" data-y="${y}" aria-label="${said}">${halo(shape)}${drawn(sheet, p)}</g>`;
 }
 
 /** Lies around a circle and beneath an outline. */

@@ -59,8 +59,17 @@ function briefly(chance: number): string {
   return { none: '0', all: '100', 'fewer than 1': '<1', 'more than 99': '>99' }[futures] ?? futures;
 }
 
-function fullness({ fan, capacity }: PatchView, count: number): number {
-  return Math.min(1, pick(fan.median, count) / Math.max(capacity ?? largest(fan.p95), 1e-9));
+function fullness(patch: PatchView, count: number): number {
+  return Math.min(1, pick(patch.fan.median, count) / fullAt(patch));
+}
+
+/** The same in every year. */
+const full = new WeakMap<PatchView, number>();
+
+function fullAt(patch: PatchView): number {
+  const known = full.get(patch) ?? Math.max(patch.capacity ?? largest(patch.fan.p95), 1e-9);
+  full.set(patch, known);
+  return known;
 }
 
 /** The ends of the ramp, in steps of 0.05 around all contributions. */

@@ -37,13 +37,32 @@ export function linkLine(view: ReportView, link: LinkView, count: number): strin
 }
 
 export function arriving(view: ReportView, patch: number, count: number): number {
-  return sum(view.links, (link) => (link.to === patch ? pick(link.animals, count) : 0));
+  return pick(sumsAt(view, count).arriving, patch);
 }
 
 export function leaving(view: ReportView, patch: number, count: number): number {
-  return sum(view.links, (link) => (link.from === patch ? pick(link.animals, count) : 0));
+  return pick(sumsAt(view, count).leaving, patch);
 }
 
-function sum(links: readonly LinkView[], part: (link: LinkView) => number): number {
-  return links.reduce((total, link) => total + part(link), 0);
+interface Sums {
+  readonly count: number;
+  /** By patch. */
+  readonly arriving: readonly number[];
+  readonly leaving: readonly number[];
+}
+
+/** Of the count that was asked for last: every patch asks for the same. */
+const lastSums = new WeakMap<ReportView, Sums>();
+
+function sumsAt(view: ReportView, count: number): Sums {
+  const last = lastSums.get(view);
+  if (last?.count === count) return last;
+  const [arriving, leaving] = [view.patches.map(() => 0), view.patches.map(() => 0)];
+  for (const { from, to, animals } of view.links) {
+    arriving[to] = pick(arriving, to) + pick(animals, count);
+    leaving[from] = pick(leaving, from) + pick(animals, count);
+  }
+  const sums = { count, arriving, leaving };
+  lastSums.set(view, sums);
+  return sums;
 }
