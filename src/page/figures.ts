@@ -9,12 +9,9 @@ import { drawObserved } from '../view/observed.ts';
 import { pick } from '../view/series.ts';
 import { drawSmallChance, smallChanceOf } from '../view/plans/small-chance.ts';
 import { drawSmallFan } from '../view/small-fan.ts';
+import { eachElement } from './arrival.ts';
 import { morph } from './morph.ts';
 import type { PageState } from './state.ts';
-
-function holders(): readonly HTMLElement[] {
-  return [...document.querySelectorAll<HTMLElement>('[data-figure]')];
-}
 
 /** Redraws what can be seen, or everything. */
 export type Redraw = (state: PageState, all?: boolean) => void;
@@ -32,7 +29,7 @@ export function mountFigures(view: ReportView): Redraw {
     return layout;
   };
   const asWritten = { count: view.years.length - 1, show: 'abundance', focus: null, marked: null } as const;
-  const drawn = new Map(holders().map((holder) => [holder, dependsOn(holder, asWritten)]));
+  const drawn = new Map<HTMLElement, string>();
   let now: PageState = asWritten;
   const isStale = (holder: HTMLElement): boolean => drawn.get(holder) !== dependsOn(holder, now);
   const refresh = (holder: HTMLElement): void => {
@@ -41,21 +38,33 @@ export function mountFigures(view: ReportView): Redraw {
     const markup = draw(view, now, holder, layoutFor);
     if (markup !== null) morph(holder, markup);
   };
-  const inSight = observeSight(refresh);
+  const sight = observeSight(refresh);
+  eachElement('[data-figure]', (holder) => {
+    drawn.set(holder, dependsOn(holder, asWritten));
+    sight.watch(holder);
+    if (sight.has(holder)) refresh(holder);
+  });
   return (state, all = false) => {
     now = state;
-    for (const holder of drawn.keys()) if (isStale(holder) && (all || inSight(holder))) refresh(holder);
+    for (const holder of drawn.keys()) if (isStale(holder) && (all || sight.has(holder))) refresh(holder);
   };
 }
 
 /** What of the state a figure shows. */
-function dependsOn(holder: HTMLElement, { count, show, focus, marked }: PageState): string {
-  const plan = holder.dataset['plan'] ?? '';
-  return holder.dataset['figure'] === 'map' ? `${count} ${show} ${String(focus)} ${plan}` : String(marked);
+function dependsOn(holder: HTMLElement, state: PageState): string {
+  if (holder.dataset['figure'] !== 'map') return String(state.marked);
+  const { count, show, focus } = mapState(state, holder);
+  return `${count} ${show} ${String(focus)} ${holder.dataset['plan'] ?? ''}`;
 }
 
-/** Calls for each small figure that comes into sight; tells whether one is. All others are drawn where they have a size. */
-function observeSight(appear: (holder: HTMLElement) => void): (holder: HTMLElement) => boolean {
+interface Sight {
+  watch(holder: HTMLElement): void;
+  has(holder: HTMLElement): boolean;
+}
+
+/** Calls for each small figure that comes into sight. All others are in sight where the style sheet shows them. */
+function observeSight(appear: (holder: HTMLElement) => void): Sight {
+  const small = new Set<Element>();
   const seen = new Set<Element>();
   const observer = new IntersectionObserver(
     (entries) => {
@@ -67,9 +76,15 @@ function observeSight(appear: (holder: HTMLElement) => void): (holder: HTMLEleme
     },
     { rootMargin: '300px' },
   );
-  const small = new Set<Element>(document.querySelectorAll('.smalls [data-figure]'));
-  for (const holder of small) observer.observe(holder);
-  return (holder) => (small.has(holder) ? seen.has(holder) : holder.getClientRects().length > 0);
+  return {
+    watch(holder) {
+      if (holder.closest('.smalls') === null) return;
+      small.add(holder);
+      observer.observe(holder);
+    },
+    // Asks for no box: the whole page would have to be laid out for it.
+    has: (holder) => (small.has(holder) ? seen.has(holder) : getComputedStyle(holder).display !== 'none'),
+  };
 }
 
 function draw(

@@ -1,8 +1,13 @@
 // The maps of two plans side by side: which plan each shows, or how the right one differs from the left.
 import type { ReportView } from '../view/contract.ts';
+import { whenWhole } from './arrival.ts';
 import type { Store } from './state.ts';
 
 export function mountPlans(view: ReportView, store: Store): void {
+  whenWhole(() => mountChoices(view, store));
+}
+
+function mountChoices(view: ReportView, store: Store): void {
   const [left, right] = [select('#left-plan'), select('#right-plan')];
   const difference = document.querySelector<HTMLInputElement>('#plan-difference');
   if (view.plans === undefined || left === null || right === null || difference === null) return;

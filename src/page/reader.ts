@@ -2,11 +2,12 @@
 import type { ReportView } from '../view/contract.ts';
 import { readAbundance, readChance, readObserved, readPatches, readPlans } from '../view/reading.ts';
 import { pick } from '../view/series.ts';
+import { eachElement } from './arrival.ts';
 import { sizeOf } from './figures.ts';
 import type { PageState, Store } from './state.ts';
 
 export function mountReaders(view: ReportView, store: Store): void {
-  for (const figure of document.querySelectorAll<HTMLElement>('figure.chart, .smalls')) {
+  eachElement('figure.chart, .smalls', (figure) => {
     const drawn = [
       ...figure.querySelectorAll<HTMLElement>('[data-figure=fan], [data-figure=chance], [data-figure=observed]'),
     ];
@@ -15,7 +16,7 @@ export function mountReaders(view: ReportView, store: Store): void {
     readout.textContent = 'Point, tap, or use the arrow keys to read a year.';
     (drawn[drawn.length - 1] ?? figure).after(readout);
     for (const holder of drawn.length > 0 ? drawn : [figure]) mountReader(holder, readout, view, store);
-  }
+  });
 }
 
 function mountReader(holder: HTMLElement, readout: HTMLElement, view: ReportView, store: Store): void {
@@ -34,6 +35,7 @@ function mountReader(holder: HTMLElement, readout: HTMLElement, view: ReportView
   holder.addEventListener('pointermove', follow);
   holder.addEventListener('pointerdown', follow);
   store.onChange((state) => tell(holder, readout, view, state));
+  tell(holder, readout, view, store.get());
 }
 
 function makeSlider(holder: HTMLElement, last: number): void {

@@ -1,10 +1,11 @@
 // Saving a figure as SVG or PNG. The picture carries the title and the hash of what it was drawn from.
 import type { ReportView } from '../view/contract.ts';
+import { eachElement } from './arrival.ts';
 import { paper } from '../view/palette.ts';
 
 /** `refresh` draws again what has changed out of sight. */
 export function mountSave(view: ReportView, refresh: () => void): void {
-  for (const figure of document.querySelectorAll<HTMLElement>('figure, .smalls')) {
+  eachElement('figure, .smalls', (figure) => {
     const row = document.createElement('div');
     row.className = 'save';
     const take = (save: Save) => () => {
@@ -14,7 +15,7 @@ export function mountSave(view: ReportView, refresh: () => void): void {
     row.append(button('Save as SVG', take(saveSvg)), button('Save as PNG', take(savePng)));
     if (figure.tagName === 'FIGURE') figure.append(row);
     else (figure.nextElementSibling ?? figure).after(row);
-  }
+  });
 }
 
 type Save = (picture: Picture) => void;

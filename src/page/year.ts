@@ -3,6 +3,7 @@ import { mapShows, type ReportView } from '../view/contract.ts';
 import { mapTables } from '../view/map/table.ts';
 import { pick } from '../view/series.ts';
 import { readAbundance } from '../view/reading.ts';
+import { eachElement } from './arrival.ts';
 import { morph } from './morph.ts';
 import type { PageState, Store } from './state.ts';
 
@@ -12,8 +13,7 @@ export function mountYear(view: ReportView, store: Store): void {
   const slider = document.querySelector<HTMLInputElement>('#year');
   const play = document.querySelector<HTMLButtonElement>('#play');
   const shown = document.querySelector<HTMLOutputElement>('#year-shown');
-  const tables = document.querySelector('#map-tables');
-  if (slider === null || play === null || shown === null || tables === null) return;
+  if (slider === null || play === null || shown === null) return;
   const player = createPlayer(store, view.years.length - 1, play);
   slider.addEventListener('input', () => {
     player.stop();
@@ -28,18 +28,23 @@ export function mountYear(view: ReportView, store: Store): void {
     slider.value = String(state.count);
     slider.setAttribute('aria-valuetext', readAbundance(view, state.count));
     shown.textContent = String(pick(view.years, state.count));
-    refreshTables();
   });
-  // Tables of hundreds of patches are drawn again only where they can be seen.
+  eachElement('#map-tables', (tables) => mountTables(tables, view, store));
+}
+
+/** Tables of hundreds of patches are drawn again only where they can be seen. */
+function mountTables(tables: HTMLElement, view: ReportView, store: Store): void {
   let told = view.years.length - 1;
   const folder = tables.closest('details');
-  const refreshTables = (): void => {
+  const refresh = (): void => {
     const { count } = store.get();
     if (count === told || folder?.open === false) return;
     told = count;
     morph(tables, mapTables(view, count));
   };
-  folder?.addEventListener('toggle', refreshTables);
+  folder?.addEventListener('toggle', refresh);
+  store.onChange(refresh);
+  refresh();
 }
 
 function createPlayer(store: Store, last: number, button: HTMLButtonElement) {

@@ -5,17 +5,26 @@ import { mark, Markup, type Content } from '../view/markup.ts';
 export interface Document {
   readonly title: string;
   readonly style: string;
+  /** Null where nothing in the page moves. */
+  readonly program: Program | null;
+  /**
+   * What stands in the page, given data and script, which it puts behind what readers first act on: they need not wait for
+   * the rest of a long page.
+   */
+  readonly body: (program: Markup) => Content;
+}
+
+export interface Program {
   readonly script: string;
   /** Goes into the page as JSON for the script. */
   readonly data: unknown;
-  readonly body: Content;
 }
 
-export function writeDocument({ title, style, script, data, body }: Document): string {
-  const code = script.replaceAll('</script', '<\\/script').replaceAll('<!--', '<\\!--');
+export function writeDocument({ title, style, program, body }: Document): string {
+  const code = program?.script.replaceAll('</script', '<\\/script').replaceAll('<!--', '<\\!--');
   const policy = [
     "default-src 'none'",
-    `script-src '${hash(code)}'`,
+    ...(code === undefined ? [] : [`script-src '${hash(code)}'`]),
     `style-src '${hash(style)}'`,
     'img-src data: blob:',
     "base-uri 'none'",
@@ -33,13 +42,18 @@ export function writeDocument({ title, style, script, data, body }: Document): s
 </head>
 <body>
 <a class="skip" href="#answer">Go to the answer</a>
-<main>${body}</main>
-<script type="application/json" id="view">${new Markup(inScript(data))}</script>
-<script>${new Markup(code)}</script>
+<main>${body(code === undefined ? new Markup('') : scripts(code, program?.data))}</main>
 </body>
 </html>
 `;
   return page.text;
+}
+
+function scripts(code: string, data: unknown): Markup {
+  return mark`
+<script type="application/json" id="view">${new Markup(inScript(data))}</script>
+<script>${new Markup(code)}</script>
+`;
 }
 
 /** JSON that no text inside can end or open a tag from. */

@@ -21,10 +21,10 @@ export type { ReportInput } from './input.ts';
 export function buildReport(input: ReportInput): string {
   const { model, results } = input;
   const view = summariseForView(input);
-  const summary = [
+  const summary = (program: Markup) => [
     answerSection(answer(results, view.animals), results),
     outcomesSection(model, results),
-    mapSection(view, { worth: worthNote(input), hidden: hidingWords(input) }),
+    mapSection(view, { worth: worthNote(input), hidden: hidingWords(input), program }),
     chancesSection(view),
   ];
   const rest = [abundanceSection(view, results), criterionSection(results), limitsSection(input), annexSection(input)];
@@ -32,9 +32,9 @@ export function buildReport(input: ReportInput): string {
   return writeDocument({
     title: `${model.title}: decision report`,
     style: styleSheet(foot),
-    script: input.pageScript,
-    data: view,
-    body: mark`${headSection(model, results)}${contents(results)}${summary}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${laterOutcomes(results)}${rest}</div><footer>${foot}</footer>`,
+    program: { script: input.pageScript, data: view },
+    body: (program) =>
+      mark`${headSection(model, results)}${contents(results)}${summary(program)}<div class="pages${view.outcomes.length > 3 ? ' more' : ''}">${laterOutcomes(results)}${rest}</div><footer>${foot}</footer>`,
   });
 }
 

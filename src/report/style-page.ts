@@ -39,6 +39,7 @@ figure svg{display:block;max-width:100%;height:auto}
 figcaption{margin-top:.5rem}
 .narrow,.paper{display:none}
 .scroll{overflow-x:auto;margin:.8rem 0}
+.long{content-visibility:auto;contain-intrinsic-block-size:auto 200rem}
 table{border-collapse:collapse;font-size:.95rem;line-height:1.35;font-variant-numeric:tabular-nums}
 caption{text-align:left;color:var(--soft);padding:0 0 .35rem}
 th,td{padding:.32rem .9rem .32rem 0;text-align:right;vertical-align:top;border-bottom:1px solid var(--hair)}
@@ -73,6 +74,7 @@ select{font:inherit;font-size:.95rem;max-width:14rem;min-height:1.9rem;color:var
 .limits li{margin:.5rem 0;max-width:42rem}
 .controls{display:flex;flex-wrap:wrap;gap:.6rem 2rem;align-items:center;margin:.8rem 0}
 .controls[hidden]{display:none}
+@media (scripting:enabled){.controls[hidden]{display:flex;visibility:hidden}}
 .year{display:flex;flex-wrap:wrap;align-items:center;gap:.7rem;flex:1 1 22rem}
 .year input{flex:1 1 8rem;min-width:8rem;height:1.75rem;accent-color:var(--deep)}
 .year output{font:1.25rem var(--serif);min-width:3.2rem}

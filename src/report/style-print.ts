@@ -16,7 +16,7 @@ h1{font-size:22pt;margin:.2rem 0}h3{font-size:11pt;margin:.8rem 0 .3rem}h4,h5{fo
 p{max-width:none;margin:.3rem 0}figcaption,.note,.definition{font-size:8.8pt;max-width:none}
 .answer{grid-template-columns:1fr auto;gap:1rem}.futures{max-width:13rem}.sure{margin-top:.4rem}
 .lead strong{text-decoration:underline;text-decoration-thickness:1.5pt;text-underline-offset:3pt;background:none}
-table,th small{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}th,td{padding:.12rem .6rem .12rem 0}
+table,th small{font-size:8.8pt}.scroll{overflow:visible;margin:.4rem 0}.long{content-visibility:visible}th,td{padding:.12rem .6rem .12rem 0}
 tr,figure,dl div{break-inside:avoid}
 figure{margin:.5rem 0 .7rem}#map{break-before:page}#map h2{margin-top:0}
 

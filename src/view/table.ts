@@ -25,9 +25,13 @@ export function drawTable({ caption, head, rows, words = [] }: Table): Markup {
     return mark`<tr><th scope="row"><bdi>${name}</bdi></th>${drawn}</tr>`;
   });
   const table = mark`<table><caption>${caption}</caption><thead><tr>${heads}</tr></thead><tbody>${body}</tbody></table>`;
-  return scrolling(caption, table);
+  return scrolling(caption, table, rows.length > mostRows);
 }
 
-export function scrolling(label: string, content: Content): Markup {
-  return mark`<div class="scroll" tabindex="0" role="region" aria-label="${label}">${content}</div>`;
+/** Longer tables are laid out only where they come near the window. */
+const mostRows = 100;
+
+export function scrolling(label: string, content: Content, long = false): Markup {
+  const kind = long ? 'scroll long' : 'scroll';
+  return mark`<div class="${kind}" tabindex="0" role="region" aria-label="${label}">${content}</div>`;
 }

@@ -4,6 +4,7 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { csvParse } from 'd3';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { withoutScripts } from '../page/without-scripts.ts';
 import { filesIn, folder, hare, skein } from './skein.ts';
 
 let database: DuckDBConnection;
@@ -94,7 +95,7 @@ describe('what is missing', () => {
     const results: unknown = JSON.parse(readFileSync(join(cwd, 'out/results.json'), 'utf8'));
     expect(results).toMatchObject({ meanLowestCount: { sd: null, standardError: null } });
     const page = skein(['report', hare, '--replicates', '1', '--years', '2', '-o', '-'], { cwd }).out;
-    const shown = page.slice(0, page.indexOf('<script'));
+    const shown = withoutScripts(page);
     expect(shown.match(/NaN|give or take/g)).toBe(null);
   });
 

@@ -4,6 +4,7 @@ import { criterionE, criterionWindows, withCriterionE } from '../../src/analysis
 import { runModel } from '../../src/pipeline.ts';
 import { criterionWords } from '../../src/report/criterion-words.ts';
 import { reportOf } from '../page/report-of.ts';
+import { withoutScripts } from '../page/without-scripts.ts';
 import { compileText } from '../pipeline/compile-text.ts';
 import { framed } from '../pipeline/frame.ts';
 
@@ -51,11 +52,11 @@ test('a run says what its chances are consistent with, and where it looks less f
   expect(words).not.toMatch(/is listed as (?:Critically|Endangered|Vulnerable)/u);
 });
 
-/** What the report page holds before its data and script. */
+/** What the report page holds but for its data and script. */
 function bodyOf(spec: string): string {
   const compiled = compileText(spec);
   const html = reportOf(compiled, { results: withCriterionE(compiled, runModel(compiled)) });
-  return html.slice(html.indexOf('<body>'), html.indexOf('<script'));
+  return withoutScripts(html.slice(html.indexOf('<body>')));
 }
 
 test('the report page says the same, as text, and names no listing', () => {

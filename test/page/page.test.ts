@@ -72,6 +72,7 @@ describe('the report in a browser', () => {
           edge.getAttribute('stroke-dasharray'),
         ),
       );
+    await page.locator('.wide [data-patch]').first().waitFor();
     const edges = await dashes();
     expect(edges.filter((dash) => dash === '6 4').length).toBe(3);
     expect(edges.filter((dash) => dash === '0.1 4.5').length).toBe(1);

@@ -4,6 +4,7 @@ import type { CompiledModel } from '../../src/pipeline.ts';
 import { printSpec } from '../../src/spec/print.ts';
 import { compileModel, modelText } from '../golden/models.ts';
 import { reportOf } from '../page/report-of.ts';
+import { withoutScripts } from '../page/without-scripts.ts';
 import { compileText } from '../pipeline/compile-text.ts';
 
 const few = { replicates: 8, years: 6 };
@@ -12,7 +13,7 @@ const few = { replicates: 8, years: 6 };
 function pageOf(compiled: CompiledModel, files: readonly string[] = []): string {
   const { spec } = compiled;
   const html = reportOf(compiled, { data: { files, drivers: spec.drivers, wholeText: printSpec(spec) } });
-  const body = html.slice(html.indexOf('<body>'), html.indexOf('<script'));
+  const body = withoutScripts(html.slice(html.indexOf('<body>')));
   return body.replace(/<[^>]*>/g, ' ').replace(/\s+/g, ' ');
 }
 

@@ -33,13 +33,14 @@ export function buildPlansReport(input: PlansReportInput): string {
   const chosen = shownPlan(input);
   const name = comparison.scenarios[chosen]?.name ?? '';
   const base = comparison.scenarios[0]?.name ?? '';
-  const summary = [
+  const summary = (program: Markup) => [
     plansAnswer(comparison),
     plansSection(comparison, view.animals),
     mapSection(view, {
       worth: worthNote(input),
       hidden: hidingWords(input),
       plan: base,
+      program,
       more: pairOfMaps(view, chosen),
     }),
     differencesSection(comparison),
@@ -61,9 +62,9 @@ export function buildPlansReport(input: PlansReportInput): string {
   return writeDocument({
     title: `${model.title}: decision report`,
     style: styleSheet(foot),
-    script: input.pageScript,
-    data: view,
-    body: mark`${headSection(model, results)}${contents(view, { money: comparison.money !== null, criteria: saysCriteria(input.plans) })}<div class="summary">${summary}</div><div class="pages plans-rest">${rest}</div><footer>${foot}</footer>`,
+    program: { script: input.pageScript, data: view },
+    body: (program) =>
+      mark`${headSection(model, results)}${contents(view, { money: comparison.money !== null, criteria: saysCriteria(input.plans) })}<div class="summary">${summary(program)}</div><div class="pages plans-rest">${rest}</div><footer>${foot}</footer>`,
   });
 }
 

@@ -17,6 +17,8 @@ interface MapNotes {
   readonly hidden: string | null;
   /** The plan that the map is of, where there are several. */
   readonly plan?: string;
+  /** Brings the map to life; stands right behind it. */
+  readonly program: Markup;
   /** What stands beneath the map. */
   readonly more?: Content;
 }
@@ -30,8 +32,7 @@ export function mapSection(view: ReportView, notes: MapNotes): Markup {
     'map',
     'The map',
     mark`${controls(view)}
-<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, notes)}</figcaption></figure>
-<details class="tables"><summary>The numbers of the map as tables</summary>
+<figure class="map" id="map-figure">${picture('wide')}${picture('narrow')}<figcaption>${caption(view, notes)}</figcaption></figure>${notes.program}<details class="tables"><summary>The numbers of the map as tables</summary>
 <div id="map-tables">${mapTables(view, last)}</div></details>${notes.more ?? null}`,
   );
 }

@@ -30,9 +30,8 @@ ${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))
   return writeDocument({
     title: `Sweep: ${model}`,
     style: styleSheet(foot),
-    script: '',
-    data: null,
-    body: mark`${body}<p>${foot}</p>`,
+    program: null,
+    body: () => mark`${body}<p>${foot}</p>`,
   });
 }
 
