@@ -37,3 +37,13 @@ export {
   manyStarts,
   solveMany,
 } from './many/many';
+export {
+  reserveAlike,
+  openAlike,
+  alikeProgram,
+  alikeNumbers,
+  alikeValues,
+  alikeGrowths,
+  solveAlike,
+} from './alike/alike';
+export { openLines, linePowers, lineCells, lineText, writeLines } from './text/lines';

@@ -47,7 +47,7 @@ export function isMissing(cell: Cell): cell is null {
   return cell === null || (typeof cell === 'number' && !Number.isFinite(cell));
 }
 
-function csvCell(cell: Cell): string {
+export function csvCell(cell: Cell): string {
   if (isMissing(cell)) return '';
   if (typeof cell === 'number') return String(cell);
   return /[",\n\r]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell;

@@ -78,6 +78,27 @@ export interface MachineFunctions {
   readonly manyStarts: () => number;
   /** Wanted: 1 vectors, 2 elasticities, 4 each from the vectors of the one two places before it. */
   readonly solveMany: (count: number, wanted: number, multiplications: number) => void;
+  /** Room for a program of so many words and so many numbers, to be written before `openAlike`; 0 without memory. */
+  readonly reserveAlike: (words: number, numbers: number) => number;
+  /** Addresses: i32 and f64, see `kernel/alike-program.ts`. */
+  readonly alikeProgram: () => number;
+  readonly alikeNumbers: () => number;
+  /** Room for so many points at a time, a multiple of eight; 0 without memory. */
+  readonly openAlike: (most: number) => number;
+  /** f64 [source][point], as many as there is room for. */
+  readonly alikeValues: () => number;
+  /** f64 [point] */
+  readonly alikeGrowths: () => number;
+  /** So many points, a multiple of eight. */
+  readonly solveAlike: (count: number) => void;
+  /** Room for so many lines of so many numbers at a time; 0 without memory. */
+  readonly openLines: (columns: number, most: number) => number;
+  /** Addresses: u64 [617][2] of powers of ten, f64 [column][row], bytes of the lines. */
+  readonly linePowers: () => number;
+  readonly lineCells: () => number;
+  readonly lineText: () => number;
+  /** So many rows; bytes that were written. */
+  readonly writeLines: (rows: number) => number;
   readonly probeExpTwo: (both: number) => void;
   readonly probePhilox: (block: number, seedLow: number, seedHigh: number) => void;
   readonly probePhiloxLanes: (words: number, replicates: number, counter: number) => void;
@@ -139,6 +160,18 @@ const functionNames: Readonly<Record<keyof MachineFunctions, true>> = {
   manyLefts: true,
   manyStarts: true,
   solveMany: true,
+  reserveAlike: true,
+  alikeProgram: true,
+  alikeNumbers: true,
+  openAlike: true,
+  alikeValues: true,
+  alikeGrowths: true,
+  solveAlike: true,
+  openLines: true,
+  linePowers: true,
+  lineCells: true,
+  lineText: true,
+  writeLines: true,
   probeExpTwo: true,
   probePhilox: true,
   probePhiloxLanes: true,

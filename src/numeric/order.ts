@@ -6,9 +6,66 @@ const digits = 1 << digitBits;
 /** Fewer than these are sorted faster by comparison. */
 const few = 5000;
 
+/** Numbers that a drawer may hold where they are laid out by size. */
+const mostInDrawer = 32;
+
 /** Indices from the least number to the greatest, those of equal ones in their order, NaN last. Both zeros are equal. */
 export function ascendingOrder(values: Float64Array): Uint32Array {
   if (values.length < few) return byComparison(values);
+  return byDrawers(values) ?? byDigits(values);
+}
+
+/**
+ * As many drawers as numbers, each for equally much of their range, and what lies in one put in order by hand: numbers that are spread
+ * over their range are then sorted on two ways through them. Null where they crowd, or are missing or infinite.
+ */
+function byDrawers(values: Float64Array): Uint32Array | null {
+  const count = values.length;
+  let [least, most] = [Infinity, -Infinity];
+  for (let i = 0; i < count; i++) {
+    const value = values[i] ?? NaN;
+    if (!(value >= least)) least = value;
+    if (!(value <= most)) most = value;
+  }
+  const scale = (count - 1) / (most - least);
+  if (!(scale > 0 && scale < Infinity)) return null;
+  const drawer = new Uint32Array(count);
+  const starts = new Uint32Array(count + 1);
+  for (let i = 0; i < count; i++) {
+    const own = ((values[i] ?? 0) - least) * scale;
+    if (Number.isNaN(own)) return null;
+    const place = Math.min(count - 1, Math.floor(own));
+    drawer[i] = place;
+    starts[place + 1] = (starts[place + 1] ?? 0) + 1;
+  }
+  for (let place = 0; place < count; place++) {
+    const held = starts[place + 1] ?? 0;
+    if (held > mostInDrawer) return null;
+    starts[place + 1] = held + (starts[place] ?? 0);
+  }
+  const order = new Uint32Array(count);
+  for (let i = 0; i < count; i++) {
+    const place = drawer[i] ?? 0;
+    const at = starts[place] ?? 0;
+    order[at] = i;
+    starts[place] = at + 1;
+  }
+  putInOrder(values, order);
+  return order;
+}
+
+/** Nothing is far from its place. What is equal stays in its order. */
+function putInOrder(values: Float64Array, order: Uint32Array): void {
+  for (let i = 1; i < order.length; i++) {
+    const index = order[i] ?? 0;
+    const value = values[index] ?? 0;
+    let at = i;
+    for (; at > 0 && (values[order[at - 1] ?? 0] ?? 0) > value; at--) order[at] = order[at - 1] ?? 0;
+    order[at] = index;
+  }
+}
+
+function byDigits(values: Float64Array): Uint32Array {
   const { low, high } = keysOf(values);
   let order = Uint32Array.from(values.keys());
   for (const [words, shift] of [

@@ -3,7 +3,7 @@ import { sha256 } from '@noble/hashes/sha2.js';
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js';
 
 /** Raised in its first part whenever the same inputs give other bytes. */
-export const kernelVersion = '2.0';
+export const kernelVersion = '3.0';
 export const toolVersion = '0.1.0';
 
 export interface Provenance {

@@ -2,7 +2,7 @@
 import type { CompiledModel } from '../pipeline.ts';
 import { provenanceOf } from '../results/provenance.ts';
 import { openDesign } from './design/design.ts';
-import { valuesOf, type Factor } from './design/factor.ts';
+import { isText, type Factor } from './design/factor.ts';
 import {
   columnsOf,
   inScenarios,
@@ -96,12 +96,12 @@ interface PartSize {
   readonly measures: readonly MeasureName[];
 }
 
-/** About a second of work, and enough parts for many threads: by the request alone, never by the machine. */
+/** At most about a second of work where points are run, and enough parts for many threads: by the request alone, never by the machine. */
 function partSize({ points, cells, measures }: PartSize): number {
   const quick = measures.every((one) => one === 'growth');
-  const fitting = cells > 0 ? Math.floor(2e7 / cells) : quick ? 4096 : 256;
+  const fitting = cells > 0 ? Math.min(4096, Math.floor(2e7 / cells)) : quick ? 16_384 : 256;
   const few = Math.max(cells > 0 ? 1 : 64, Math.ceil(points / 16));
-  return Math.max(1, Math.min(fitting, few, 4096));
+  return Math.max(1, Math.min(fitting, few));
 }
 
 /** What a number of a model is in that has no unit in the language: whatever its author gave it in. */
@@ -130,11 +130,6 @@ function sweepColumns(
     ...numbers.map(number),
     { name: 'failure', type: 'text', unit: '', meaning: 'Why no model can have these values; empty where one can.' },
   ];
-}
-
-/** Whether a factor has values that are no numbers. */
-export function isText(factor: Factor): boolean {
-  return valuesOf(factor).some((value) => typeof value === 'string');
 }
 
 export interface PartPlace {

@@ -1,7 +1,7 @@
 // Whole sweeps against what their kernel takes alone: how much stands between it and a folder of results.
-import { mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { closeSync, fsyncSync, mkdirSync, openSync, readFileSync, rmSync, writeSync } from 'node:fs';
 import { join } from 'node:path';
-import { makePart } from '../../src/cli/sweep/part-file.ts';
+import { partPieces } from '../../src/cli/sweep/part-file.ts';
 import { batchesOf } from '../../src/kernel/batch.ts';
 import { openNext } from '../../src/kernel/reuse.ts';
 import { loadMachine } from '../../src/machine/machine.ts';
@@ -11,6 +11,7 @@ import { openDesign, type Design } from '../../src/sweep/design/design.ts';
 import { manifestOf, placeOfPart, type Manifest } from '../../src/sweep/manifest.ts';
 import { openChange } from '../../src/sweep/point/change.ts';
 import { openEvaluator, type Evaluator } from '../../src/sweep/point/evaluate.ts';
+import { workPart } from '../../src/sweep/point/part.ts';
 import { planSweep } from '../../src/sweep/request.ts';
 import { command } from './command.ts';
 import { inTurns, median, processorSeconds } from './measure.ts';
@@ -106,9 +107,13 @@ function measureRuns({ quick, rounds }: Options): SweepFigures['runs'] {
   return { points, overKernel: median(ratios) };
 }
 
+function piecesOfPart(sweep: OpenedSweep, part: number): readonly Uint8Array[] {
+  return partPieces(sweep.manifest, workPart(sweep, placeOfPart(sweep.manifest, part)));
+}
+
 /** Every part as the bytes of its file. */
-function bytesOfAll(sweep: OpenedSweep): readonly Uint8Array[] {
-  return Array.from({ length: sweep.manifest.parts }, (_, part) => makePart(sweep, placeOfPart(sweep.manifest, part)));
+function bytesOfAll(sweep: OpenedSweep): readonly (readonly Uint8Array[])[] {
+  return Array.from({ length: sweep.manifest.parts }, (_, part) => piecesOfPart(sweep, part));
 }
 
 /** Of the same points: worked out alone; with their parts on the disk; and the command that leaves all of it. */
@@ -124,15 +129,16 @@ function measureWriting({ quick, rounds }: Options): SweepFigures['writing'] {
   const alone = (): number =>
     eachPart((part) => {
       const { first, count } = placeOfPart(sweep.manifest, part);
-      sweep.evaluator.all(Array.from({ length: count }, (_, i) => sweep.design.at(first + i)));
+      sweep.evaluator.all(sweep.design.columns(first, count), count);
     });
   const written = (): number => {
     rmSync(folder, { recursive: true, force: true });
     mkdirSync(folder, { recursive: true });
     return eachPart((part) => {
-      writeFileSync(join(folder, `${part}.parquet`), makePart(sweep, placeOfPart(sweep.manifest, part)), {
-        flush: true,
-      });
+      const descriptor = openSync(join(folder, `${part}.parquet`), 'w');
+      for (const piece of piecesOfPart(sweep, part)) writeSync(descriptor, piece);
+      fsyncSync(descriptor);
+      closeSync(descriptor);
     });
   };
   const times = inTurns(

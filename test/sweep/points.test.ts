@@ -211,8 +211,14 @@ test('many growth rates at a time are those of points compiled one by one', () =
   const many = manyPoints(spec, factors, nobodyCrowds)!;
   expect(many).not.toBeNull();
   const points = Array.from({ length: design.size }, (_, i) => design.at(i));
-  const growth = many.growthAt([...points, [1.2, 0.4, 2, 0.1]]);
-  expect(growth.at(-1)).toBeNaN();
+  const columns = design.columns(0, design.size);
+  const growth = many.growthAt(columns, design.size);
+  expect(
+    many.growthAt(
+      [1.2, 0.4, 2, 0.1].map((value) => Float64Array.of(value)),
+      1,
+    )[0],
+  ).toBeNaN();
   points
     .filter((_, i) => i % 10 === 0)
     .forEach((values, i) => {

@@ -49,7 +49,7 @@ function takeParts(store: Store, opened: readonly OpenedSweep[]): void {
   for (const { folder } of opened) {
     for (const part of [...finishedParts(folder)].sort((a, b) => a - b)) {
       const bytes = readFileSync(partPath(folder, part));
-      if (!there.has(part)) store.write(part, bytes);
+      if (!there.has(part)) store.write(part, [bytes]);
       else if (!bytes.equals(readFileSync(partPath(store.folder, part)))) {
         const why = 'one of them is damaged, or was changed';
         throw new Ending(exitCodes.work, `Part ${part + 1} in ${folder} differs from that in ${store.folder}: ${why}.`);

@@ -12,6 +12,7 @@ import { specJson } from '../spec-json.ts';
 import { fillStore, msAPoint } from '../sweep/fill.ts';
 import { finishSweep } from '../sweep/finish.ts';
 import { askedOf, type SweepOptions } from '../sweep/flags.ts';
+import { KeptParts } from '../sweep/kept-parts.ts';
 import { costText, planText } from '../sweep/plan-text.ts';
 import { openStore, type Store } from '../sweep/store.ts';
 import { tellSweep, writeLog } from '../sweep/tell.ts';
@@ -34,8 +35,10 @@ export async function sweepCommand(path: string, options: SweepOptions): Promise
   const store = openStore(options.out, manifest);
   tell();
   try {
-    await fillStore(store, { spec, manifest, threads, shard: options.shard, quiet });
-    await finish(store, { manifest, threads, started }, options);
+    const { shard } = options;
+    const kept = new KeptParts();
+    await fillStore(store, { spec, manifest, threads, shard, quiet, kept });
+    await finish(store, { manifest, threads, started, kept }, options);
   } catch (error) {
     throw error instanceof Ending ? withGoOn(error) : error;
   } finally {
@@ -47,11 +50,12 @@ interface Done {
   readonly manifest: Manifest;
   readonly threads: number;
   readonly started: Date;
+  readonly kept: KeptParts;
 }
 
 async function finish(
   store: Store,
-  { manifest, threads, started }: Done,
+  { manifest, threads, started, kept }: Done,
   { quiet, json, details }: SweepOptions,
 ): Promise<void> {
   const missing = manifest.parts - store.finished().size;
@@ -60,7 +64,7 @@ async function finish(
     if (quiet !== true) writeError(`This shard is done. ${others}; \`skein sweep merge\` joins them.\n`);
     return;
   }
-  const summary = await finishSweep(store.folder, manifest);
+  const summary = await finishSweep(store.folder, manifest, kept);
   writeLog(store.folder, { command: 'sweep', hash: manifest.hash, started, threads });
   tellSweep(summary, { json: json === true, details: details === true });
 }

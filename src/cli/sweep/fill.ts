@@ -9,9 +9,11 @@ import { writeError } from '../output.ts';
 import { showProgress } from '../progress.ts';
 import { stopSignal } from '../stop.ts';
 import type { Shard } from './flags.ts';
+import type { KeptParts } from './kept-parts.ts';
+import type { MadePart } from './make-part.ts';
 import { costText } from './plan-text.ts';
-import { runPool } from './pool.ts';
 import type { Store } from './store.ts';
+import { workHere } from './work-here.ts';
 
 export interface Filling {
   readonly spec: Spec;
@@ -19,10 +21,12 @@ export interface Filling {
   readonly threads: number;
   readonly shard: Shard | undefined;
   readonly quiet: boolean;
+  /** Takes what is made, too. */
+  readonly kept: KeptParts;
 }
 
 /** Those of the shard; an ending where it was cut short. */
-export async function fillStore(store: Store, { spec, manifest, threads, shard, quiet }: Filling): Promise<void> {
+export async function fillStore(store: Store, { spec, manifest, threads, shard, quiet, kept }: Filling): Promise<void> {
   const there = store.finished();
   const wanted = partsOfShard(manifest, shard);
   const parts = wanted.filter((part) => !there.has(part));
@@ -36,12 +40,15 @@ export async function fillStore(store: Store, { spec, manifest, threads, shard, 
   const progress = showProgress('Points', quiet);
   const stop = stopSignal();
   let made = 0;
-  const take = (part: number, bytes: Uint8Array): void => {
-    store.write(part, bytes);
+  const take = (part: number, { pieces, columns }: MadePart): void => {
+    store.write(part, pieces);
+    kept.take(part, columns);
     progress.update((made += placeOfPart(manifest, part).count), points);
   };
   try {
-    const done = await runPool({ start: { spec, manifest }, threads, parts, signal: stop.signal, take, onDeath });
+    const alone = Math.min(threads, parts.length) === 1;
+    const run = alone ? workHere : (await import('./pool.ts')).runPool;
+    const done = await run({ start: { spec, manifest }, threads, parts, signal: stop.signal, take, onDeath });
     if (done === parts.length) return;
     const kept = wanted.length - parts.length + done;
     throw new Ending(exitCodes.work, `Stopped with ${kept} of ${wanted.length} parts done.`);

@@ -2,27 +2,27 @@
 import { Worker } from 'node:worker_threads';
 import { sweepWorkerScript } from '../../../build/sweep-worker-script.ts';
 import { ThreadsFailure } from '../../threads/failure.ts';
-import type { SweepWorkerStart } from './worker.ts';
+import type { MadePart, PartsStart } from './make-part.ts';
 
 /** A part that lost its thread so often is given up. */
 const mostDeaths = 3;
 
 export interface PoolRequest {
-  readonly start: SweepWorkerStart;
+  readonly start: PartsStart;
   readonly threads: number;
   /** In the order in which they are begun. */
   readonly parts: readonly number[];
   /** Once it is aborted no further part is begun. */
   readonly signal: AbortSignal;
   /** Told every part when it is done, in any order; what it throws ends the sweep. */
-  readonly take: (part: number, bytes: Uint8Array) => void;
+  readonly take: (part: number, made: MadePart) => void;
   readonly onDeath: (reason: string) => void;
 }
 
 /** Settles when no thread is at work any more: with the number of parts that were done. */
 export async function runPool(request: PoolRequest): Promise<number> {
-  const pool = new Pool(request);
   const threads = Math.min(request.threads, request.parts.length);
+  const pool = new Pool(request);
   try {
     await Promise.all(Array.from({ length: threads }, () => pool.work()));
   } finally {
@@ -49,17 +49,17 @@ class Pool {
     let worker: Worker | null = null;
     for (let part = this.#next(); part !== undefined; part = this.#next()) {
       worker ??= this.#start();
-      const bytes = await answer(worker, part).catch((error: unknown) =>
+      const made = await answer(worker, part).catch((error: unknown) =>
         String(error instanceof Error ? error.message : error),
       );
-      if (typeof bytes !== 'string') {
-        this.#take(part, bytes);
+      if (typeof made !== 'string') {
+        this.#take(part, made);
         continue;
       }
       this.#workers.delete(worker);
       worker = null;
       // Where all is over, it was ended on purpose.
-      if (!this.#failed) this.#mourn(part, bytes);
+      if (!this.#failed) this.#mourn(part, made);
     }
   }
 
@@ -79,10 +79,10 @@ class Pool {
     return worker;
   }
 
-  #take(part: number, bytes: Uint8Array): void {
+  #take(part: number, made: MadePart): void {
     if (this.#failed) return;
     try {
-      this.#request.take(part, bytes);
+      this.#request.take(part, made);
       this.done++;
     } catch (error) {
       this.#failed = true;
@@ -102,15 +102,15 @@ class Pool {
   }
 }
 
-/** The bytes of a part; rejects where the thread dies over it. */
-function answer(worker: Worker, part: number): Promise<Uint8Array> {
+/** Rejects where the thread dies over it. */
+function answer(worker: Worker, part: number): Promise<MadePart> {
   return new Promise((resolve, reject) => {
     const leave = (): void => {
       worker.off('message', done).off('error', reject).off('exit', gone);
     };
-    const done = (bytes: Uint8Array): void => {
+    const done = (made: MadePart): void => {
       leave();
-      resolve(bytes);
+      resolve(made);
     };
     const gone = (code: number): void => {
       leave();

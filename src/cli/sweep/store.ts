@@ -28,7 +28,7 @@ export interface Store {
   readonly folder: string;
   /** Parts that are there whole. */
   finished(): ReadonlySet<number>;
-  write(part: number, bytes: Uint8Array): void;
+  write(part: number, pieces: readonly Uint8Array[]): void;
   /** Lets go of the folder. */
   close(): void;
 }
@@ -53,8 +53,8 @@ export function openStore(folder: string, manifest: Manifest): Store {
   return {
     folder,
     finished: () => finishedParts(folder),
-    write: (part, bytes) => {
-      writePart(folder, part, bytes);
+    write: (part, pieces) => {
+      writePart(folder, part, pieces);
     },
     close,
   };
@@ -120,13 +120,13 @@ function isWhole(path: string): boolean {
 }
 
 /** On the disk before it has its name: a machine that loses its power keeps whole parts or none. */
-function writePart(folder: string, part: number, bytes: Uint8Array): void {
+function writePart(folder: string, part: number, pieces: readonly Uint8Array[]): void {
   const path = partPath(folder, part);
   const unfinished = join(folder, partsName, `.skein-${process.pid}-${part}.tmp`);
   try {
     const descriptor = openSync(unfinished, 'w');
     try {
-      writeAll(descriptor, bytes, path);
+      for (const piece of pieces) writeAll(descriptor, piece, path);
       fsyncSync(descriptor);
     } finally {
       closeSync(descriptor);

@@ -1,7 +1,7 @@
 // Designs: which points of the space of all factors are looked at. Any point can be asked by its number, so that a million of
 // them take no memory and every thread works out its own.
 import { keyOfName } from '../../compile/image/keys.ts';
-import { levelsOf, valueAtShare, type Factor, type Value } from './factor.ts';
+import { isText, levelsOf, valueAtShare, type Columns, type Factor, type FactorColumn, type Value } from './factor.ts';
 import { shareOf, wordOf } from './hash.ts';
 import { morrisShare, morrisSize } from './morris.ts';
 import { shuffled } from './permutation.ts';
@@ -51,44 +51,73 @@ export interface Design {
   readonly size: number;
   /** Values in the order of the factors. */
   at(point: number): readonly Value[];
+  /** The same of so many points in a row. */
+  columns(first: number, count: number): Columns;
 }
+
+/** A sampled design has each number of a point by itself. */
+type Points = Pick<Design, 'size'> &
+  ({ readonly at: Design['at'] } | { readonly valueAt: (point: number, factor: number) => Value });
 
 export function openDesign(plan: DesignPlan): Design {
   const { factors } = plan;
+  const points = pointsOf(plan);
+  const at = 'at' in points ? points.at : (point: number) => factors.map((_, k) => points.valueAt(point, k));
+  const valueAt = 'valueAt' in points ? points.valueAt : null;
+  const columns = (first: number, count: number): Columns => {
+    if (valueAt === null) {
+      const own = Array.from({ length: count }, (_, i) => at(first + i));
+      return factors.map((factor, k) => columnOf(factor, count, (i) => own[i]?.[k] ?? NaN));
+    }
+    return factors.map((factor, k) => columnOf(factor, count, (i) => valueAt(first + i, k)));
+  };
+  return { plan, size: points.size, at, columns };
+}
+
+function columnOf(factor: Factor, count: number, valueAt: (i: number) => Value): FactorColumn {
+  if (isText(factor)) return Array.from({ length: count }, (_, i) => valueAt(i));
+  const column = new Float64Array(count);
+  for (let i = 0; i < count; i++) column[i] = Number(valueAt(i));
+  return column;
+}
+
+function pointsOf(plan: DesignPlan): Points {
+  const { factors } = plan;
   switch (plan.design) {
     case 'grid':
-      return { plan, ...grid(factors.map(levelsOf)) };
+      return grid(factors.map(levelsOf));
     case 'list':
-      return { plan, size: plan.rows.length, at: (point) => plan.rows[point] ?? [] };
+      return { size: plan.rows.length, at: (point) => plan.rows[point] ?? [] };
     case 'latin hypercube':
-      return {
-        plan,
-        size: plan.points,
-        at: (point) => factors.map((factor) => valueAtShare(factor, latinShare(plan, factor, point))),
-      };
+      return sampled(factors, plan.points, (point, _, factor) => latinShare(plan, factor, point));
     case 'sobol': {
       const share = sobolShares(factors.length, plan.scrambled ? plan.seed : null);
-      return {
-        plan,
-        size: plan.points,
-        at: (point) => factors.map((factor, k) => valueAtShare(factor, share(point, k))),
-      };
+      return sampled(factors, plan.points, share);
     }
     case 'one at a time':
-      return { plan, ...oneAtATime(factors) };
+      return oneAtATime(factors);
     case 'sobol indices':
-      return { plan, ...sharesOfVariance(plan) };
+      return sharesOfVariance(plan);
     case 'morris': {
       const { points, seed } = plan;
       const share = (point: number, k: number) => morrisShare(seed, factors.length, { point, factor: k });
       const size = points * morrisSize(factors.length);
-      const at = (point: number) => factors.map((factor, k) => valueAtShare(factor, inside(factor, share(point, k))));
-      return { plan, size, at };
+      return sampled(factors, size, (point, k, factor) => inside(factor, share(point, k)));
     }
   }
 }
 
-function grid(levels: readonly (readonly Value[])[]): Pick<Design, 'size' | 'at'> {
+type ShareAt = (point: number, k: number, factor: Factor) => number;
+
+function sampled(factors: readonly Factor[], size: number, shareAt: ShareAt): Points {
+  const valueAt = (point: number, k: number): Value => {
+    const factor = factors[k];
+    return factor === undefined ? NaN : valueAtShare(factor, shareAt(point, k, factor));
+  };
+  return { size, valueAt };
+}
+
+function grid(levels: readonly (readonly Value[])[]): Points {
   const size = levels.reduce((product, own) => product * own.length, 1);
   return {
     size,
@@ -130,7 +159,7 @@ function sobolShares(dimensions: number, seed: number | null): (point: number, d
   };
 }
 
-function oneAtATime(factors: readonly Factor[]): Pick<Design, 'size' | 'at'> {
+function oneAtATime(factors: readonly Factor[]): Points {
   const base = factors.map((factor) => factor.base);
   const steps = factors.flatMap((factor, k) => levelsOf(factor).map((value) => ({ k, value })));
   return {
@@ -143,18 +172,11 @@ function oneAtATime(factors: readonly Factor[]): Pick<Design, 'size' | 'at'> {
 }
 
 /** Point j (k + 2) is A_j, the next B_j, then A_j with column i of B_j; A and B are the halves of one scrambled Sobol' point. */
-function sharesOfVariance({
-  factors,
-  points,
-  seed,
-}: Extract<DesignPlan, { design: 'sobol indices' }>): Pick<Design, 'size' | 'at'> {
+function sharesOfVariance({ factors, points, seed }: Extract<DesignPlan, { design: 'sobol indices' }>): Points {
   const k = factors.length;
   const share = sobolShares(2 * k, seed);
-  return {
-    size: points * (k + 2),
-    at: (point) => {
-      const [row, column] = [Math.floor(point / (k + 2)), point % (k + 2)];
-      return factors.map((factor, i) => valueAtShare(factor, share(row, column === 1 || column === i + 2 ? k + i : i)));
-    },
-  };
+  return sampled(factors, points * (k + 2), (point, i) => {
+    const [row, column] = [Math.floor(point / (k + 2)), point % (k + 2)];
+    return share(row, column === 1 || column === i + 2 ? k + i : i);
+  });
 }

@@ -6,6 +6,17 @@ import { normalQuantile } from '../../numeric/normal-quantile.ts';
 /** Of a factor at a point; a scenario is named by a text. */
 export type Value = number | string;
 
+/** The values of one factor at points in a row; words where some of its values are none. */
+export type FactorColumn = Float64Array<ArrayBuffer> | readonly Value[];
+
+/** In the order of the factors. */
+export type Columns = readonly FactorColumn[];
+
+/** Of one point. */
+export function columnsOfPoint(values: readonly Value[]): Columns {
+  return values.map((value) => (typeof value === 'number' ? Float64Array.of(value) : [value]));
+}
+
 export type Range =
   | {
       readonly by: 'from to';
@@ -63,4 +74,9 @@ export function levelsOf(factor: Factor): readonly Value[] {
 /** Values that are given one by one, the base among them. */
 export function valuesOf({ base, range }: Factor): readonly Value[] {
   return range.by === 'values' ? [base, ...range.values] : [base];
+}
+
+/** Whether a factor has values that are no numbers. */
+export function isText(factor: Factor): boolean {
+  return valuesOf(factor).some((value) => typeof value === 'string');
 }

@@ -9,11 +9,19 @@ function mixed(x: number): number {
 
 /** Absorbs one word after the other. `seed` is a whole number below 2^53. */
 export function wordOf(seed: number, a: number, b = 0, c = 0): number {
+  return wordAfter(stateOf(seed, a), b, c);
+}
+
+/** What has absorbed the seed and the first word, for many others after it. */
+export function stateOf(seed: number, a: number): number {
   let state = mixed((seed >>> 0) ^ 0x9e3779b9);
   state = mixed(state ^ (Math.floor(seed / 4294967296) + 0x7f4a7c15));
-  state = mixed(Math.imul(state, 0x2c1b3c6d) ^ a);
-  state = mixed(Math.imul(state, 0x297a2d39) ^ b);
-  return mixed(Math.imul(state, 0x1b56c4e9) ^ c);
+  return mixed(Math.imul(state, 0x2c1b3c6d) ^ a);
+}
+
+export function wordAfter(state: number, b: number, c: number): number {
+  const next = mixed(Math.imul(state, 0x297a2d39) ^ b);
+  return mixed(Math.imul(next, 0x1b56c4e9) ^ c);
 }
 
 /** In (0, 1). */

@@ -1,6 +1,6 @@
 // Sobol' points (Sobol' 1967) in the order of the Gray code (Antonov & Saleev 1979), with the direction numbers of Joe & Kuo
 // (2008), to 1000 dimensions; scrambled on demand as Owen (1995) does, digit by digit.
-import { wordOf } from './hash.ts';
+import { stateOf, wordAfter } from './hash.ts';
 import { joeKuo } from './joe-kuo.ts';
 
 const bits = 32;
@@ -56,10 +56,11 @@ function directionsOf(token: string | null): Uint32Array {
  * above it. It keeps the evenness of the points and makes each of them uniform.
  */
 export function scrambledWord(word: number, seed: number, dimension: number): number {
+  const state = stateOf(seed, dimension);
   let out = 0;
   for (let bit = 0; bit < bits; bit++) {
     const above = bit === 0 ? 0 : word >>> (bits - bit);
-    const turn = wordOf(seed, dimension, above, bit) >>> 31;
+    const turn = wordAfter(state, above, bit) >>> 31;
     out = ((out << 1) | (((word >>> (bits - 1 - bit)) & 1) ^ turn)) >>> 0;
   }
   return out;

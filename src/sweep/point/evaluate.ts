@@ -11,7 +11,7 @@ import type { Finding } from '../../spec/finding.ts';
 import { asNow } from '../../spec/plans/lay.ts';
 import { scenarioOf, withScenario } from '../../spec/plans/scenarios.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
-import type { Value } from '../design/factor.ts';
+import { columnsOfPoint, type Columns, type Value } from '../design/factor.ts';
 import { columnsOf, inScenarios, isOfRuns, pairColumnsOf, quantitiesOf, type Quantity } from '../measures.ts';
 import type { SweepPlan } from '../request.ts';
 import { answerPoint, pairedAnswers, type Answered, type CompiledPoint } from './answers.ts';
@@ -28,11 +28,19 @@ export interface PointResult {
   readonly failure: string;
 }
 
+/** What many points came to. */
+export interface PointResults {
+  /** In the order of the columns of the quantities, each with a number a point. */
+  readonly numbers: readonly Float64Array<ArrayBuffer>[];
+  /** By point, only of those that no model can have. */
+  readonly failures: ReadonlyMap<number, string>;
+}
+
 export interface Evaluator {
   readonly quantities: readonly Quantity[];
   at(values: readonly Value[]): PointResult;
-  /** The same for many points, which may be faster together. */
-  all(points: readonly (readonly Value[])[]): readonly PointResult[];
+  /** The same for so many points, which may be faster together. */
+  all(columns: Columns, points: number): PointResults;
 }
 
 /** The base spec compiles. A point is the model as `--set` would have it: with its own capacities, and the same seed. */
@@ -64,15 +72,24 @@ export function openEvaluator(spec: Spec, { design, measures, scenarios }: Sweep
   };
   const growthOnly = measures.every((name) => name === 'growth') && asNowOnly;
   const many = growthOnly ? manyPoints(inBase, design.factors, withoutCrowding) : null;
-  if (many === null) return { quantities, at, all: (points) => points.map(at) };
-  const all = (points: readonly (readonly Value[])[]): readonly PointResult[] => {
-    const growth = many.growthAt(points);
-    return points.map((values, i) => {
-      const own = growth[i] ?? NaN;
-      return Number.isNaN(own) ? at(values) : { numbers: Float64Array.of(own), failure: '' };
-    });
+  const all = (columns: Columns, points: number): PointResults => {
+    const growth = many?.growthAt(columns, points) ?? null;
+    const numbers = growth === null ? Array.from({ length: width }, () => new Float64Array(points)) : [growth];
+    const failures = new Map<number, string>();
+    for (let point = 0; point < points; point++) {
+      if (growth !== null && !Number.isNaN(growth[point])) continue;
+      const own = at(columns.map((column) => column[point] ?? NaN));
+      numbers.forEach((column, k) => (column[point] = own.numbers[k] ?? NaN));
+      if (own.failure !== '') failures.set(point, own.failure);
+    }
+    return { numbers, failures };
   };
-  return { quantities, at: (values) => all([values])[0] ?? at(values), all };
+  if (many === null) return { quantities, at, all };
+  const alone = (values: readonly Value[]): PointResult => {
+    const { numbers, failures } = all(columnsOfPoint(values), 1);
+    return { numbers: Float64Array.from(numbers, (column) => column[0] ?? NaN), failure: failures.get(0) ?? '' };
+  };
+  return { quantities, at: alone, all };
 }
 
 /** A text says why there is no such model. */

@@ -13,7 +13,7 @@ import { resolveVariation } from '../../model/variation/resolve.ts';
 import type { Finding } from '../../spec/finding.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { Factor, Value } from '../design/factor.ts';
-import { movingRates, withRates } from './moving-rates.ts';
+import { movingRates, ratesOf, withRates } from './moving-rates.ts';
 
 export interface MovedModel extends Compiled {
   readonly startAnimals: Float64Array;
@@ -29,7 +29,7 @@ export function movingModel(spec: Spec, factors: readonly Factor[]): MovingModel
   if (moving === null || !meansFollowTables(moving.model)) return null;
   const { landscape } = buildLandscape(moving.model);
   return (values) => {
-    const rates = moving.valuesAt(values);
+    const rates = ratesOf(moving, values);
     const resolved = rates === null ? null : withChance(moving.context, withRates(moving.model, moving.rates, rates));
     if (resolved === null) return null;
     const { model, findings } = solveStages(resolved, landscape);

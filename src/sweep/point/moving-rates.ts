@@ -4,11 +4,11 @@ import { pinned } from '../../machine/pinned.ts';
 import type { Model, Phase, RateTable } from '../../model/model.ts';
 import { resolveWithContext } from '../../model/resolve.ts';
 import type { Context } from '../../model/context.ts';
-import { evaluate } from '../../spec/expression/evaluate.ts';
+import { evaluateColumns } from '../../spec/expression/evaluate-columns.ts';
 import { namesIn } from '../../spec/expression/names.ts';
 import type { Ast } from '../../spec/expression/ast.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
-import type { Factor, Value } from '../design/factor.ts';
+import { columnsOfPoint, type Columns, type Factor, type Value } from '../design/factor.ts';
 import { namedPlaces } from './named-places.ts';
 
 type RateField = 'births' | 'survival' | 'leaving';
@@ -18,7 +18,7 @@ export interface MovingRate {
   readonly phase: number;
   readonly field: RateField;
   readonly index: number;
-  /** Which of the numbers of `valuesAt` it is. */
+  /** Which of the numbers of `ratesAt` it is. */
   readonly source: number;
 }
 
@@ -27,8 +27,23 @@ export interface MovingRates {
   /** What the model was resolved from. */
   readonly context: Context;
   readonly rates: readonly MovingRate[];
-  /** In the order of `source`; null where one is no rate, so that the whole compiler has to say why. */
-  valuesAt(values: readonly Value[]): Float64Array | null;
+  /** How many different numbers they are. */
+  readonly sources: number;
+  /** Of the first so many rows of the columns of the factors. */
+  ratesAt(columns: Columns, rows: number): RateColumns;
+}
+
+export interface RateColumns {
+  /** In the order of `source`, each a number a row. */
+  readonly columns: readonly Float64Array[];
+  /** By row, 1 where all are rates; else the whole compiler has to say what stands against it. */
+  readonly fine: Uint8Array;
+}
+
+/** In the order of `source`; null where one is no rate. */
+export function ratesOf({ ratesAt }: Pick<MovingRates, 'ratesAt'>, values: readonly Value[]): Float64Array | null {
+  const { columns, fine } = ratesAt(columnsOfPoint(values), 1);
+  return fine[0] === 1 ? Float64Array.from(columns, (column) => column[0] ?? NaN) : null;
 }
 
 /** `spec` has the base values of the factors, which are named parameters or numbers at places. */
@@ -58,10 +73,11 @@ function isPlain(model: Model, { spec, attributes }: Context, names: ReadonlySet
 
 interface Collected {
   readonly rates: readonly MovingRate[];
+  readonly sources: number;
   readonly paths: ReadonlySet<string>;
   /** Names that the rates read. */
   readonly read: ReadonlySet<string>;
-  valuesAt(values: readonly Value[]): Float64Array | null;
+  readonly ratesAt: MovingRates['ratesAt'];
 }
 
 interface Source {
@@ -104,12 +120,15 @@ function collect(model: Model, context: Context, names: ReadonlySet<string>): Co
   }
   const order = [...sources.values()].map(({ source }) => source);
   const places = new Map([...names].map((name, k) => [name, k]));
-  const valuesAt = (values: readonly Value[]): Float64Array | null => valuesOf(order, places, values);
-  const base = valuesAt([...names].map((name) => valueOf(context.spec, name)));
+  const ratesAt: MovingRates['ratesAt'] = (columns, count) => ratesIn(order, places, { columns, count });
+  const base = ratesOf(
+    { ratesAt },
+    [...names].map((name) => valueOf(context.spec, name)),
+  );
   const same = rates.every(
     (rate) => base?.[rate.source] === tableOf(model.phases[rate.phase])?.table.epochs[0]?.[rate.index],
   );
-  return base !== null && same ? { rates, paths, read, valuesAt } : null;
+  return base !== null && same ? { rates, sources: order.length, paths, read, ratesAt } : null;
 }
 
 function valueOf(spec: Spec, name: string): number {
@@ -118,24 +137,29 @@ function valueOf(spec: Spec, name: string): number {
   return typeof value === 'number' ? value : NaN;
 }
 
-function valuesOf(
+function ratesIn(
   sources: readonly Source[],
   places: ReadonlyMap<string, number>,
-  values: readonly Value[],
-): Float64Array | null {
-  const out = new Float64Array(sources.length);
-  for (const [s, { ast, attributes, scale, mostOne }] of sources.entries()) {
-    const lookUp = (name: string): number | undefined => {
+  { columns, count }: { readonly columns: Columns; readonly count: number },
+): RateColumns {
+  const numbers = columns.map((column) =>
+    column instanceof Float64Array ? column : Float64Array.from(column, Number),
+  );
+  const fine = new Uint8Array(count).fill(1);
+  const rates = sources.map(({ ast, attributes, scale, mostOne }) => {
+    const lookUp = (name: string): Float64Array | number | undefined => {
       const own = attributes?.get(name);
-      if (typeof own === 'number') return own;
-      const swept = values[places.get(name) ?? -1];
-      return swept === undefined ? undefined : Number(swept);
+      return typeof own === 'number' ? own : numbers[places.get(name) ?? -1];
     };
-    const found = evaluate(ast, lookUp, pinned);
-    if (!found.ok || !(found.value >= 0) || (mostOne && found.value > 1)) return null;
-    out[s] = found.value * scale;
-  }
-  return out;
+    const found = evaluateColumns(ast, lookUp, pinned, count);
+    for (let row = 0; row < count; row++) {
+      const value = found[row] ?? NaN;
+      if (!(value >= 0) || (mostOne && value > 1)) fine[row] = 0;
+      found[row] = value * scale;
+    }
+    return found;
+  });
+  return { columns: rates, fine };
 }
 
 function tableOf(phase: Phase | undefined): { readonly table: RateTable; readonly field: RateField } | null {

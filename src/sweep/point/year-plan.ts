@@ -4,14 +4,13 @@ import { keptStates } from '../../compile/block.ts';
 import type { Multipliers } from '../../compile/multipliers.ts';
 import { phaseMap } from '../../compile/phase-map.ts';
 import { runYear, type Compiled } from '../../compile/year-map.ts';
+import type { AlikeMatrices } from '../../kernel/alike-program.ts';
 import type { SparseMatrix } from '../../numeric/sparse.ts';
 import { withRates, type MovingRates } from './moving-rates.ts';
 
-export interface YearPlan {
-  /** States of the matrix. */
-  readonly order: number;
-  /** Writes the matrix of the values of the rates, row by row, into `out`, which is 0 before. */
-  fill(values: Float64Array, out: Float64Array): void;
+export interface YearPlan extends AlikeMatrices {
+  /** Writes the matrix of a row of the columns of the rates, row by row, into `out`, which is 0 before. */
+  fill(rates: readonly Float64Array[], point: number, out: Float64Array): void;
 }
 
 /** Entry `at` of a phase is constant[at] + slope[at] · value[source[at]]; −1 for no source. */
@@ -33,7 +32,7 @@ export function planYear(moving: MovingRates, compiled: Compiled): YearPlan | nu
     if (entries === null) return null;
     phases.push(entries);
   }
-  return planned(phases, keptStates(compiled), size);
+  return planned({ phases, kept: keptStates(compiled), size, sources: moving.sources });
 }
 
 interface PhaseAt {
@@ -89,16 +88,8 @@ function cellsOf({ columns, columnStart, rowIndex, values }: SparseMatrix, size:
  */
 class Tape {
   readonly start: number[] = [];
-  readonly moving: {
-    readonly at: number;
-    readonly constant: number;
-    readonly slope: number;
-    readonly source: number;
-  }[] = [];
-  readonly left: number[] = [];
-  readonly right: number[] = [];
-  readonly target: number[] = [];
-  readonly adds: number[] = [];
+  readonly moving: AlikeMatrices['moving'][number][] = [];
+  readonly sums: AlikeMatrices['sums'][number][] = [];
 
   /** Places of the entries of a phase. */
   put({ constant, slope, source }: PhaseEntries): Int32Array {
@@ -122,13 +113,15 @@ class Tape {
       if (this.#isOne(right)) return left;
     }
     const target = this.start.push(0) - 1;
-    products.forEach(([left, right], i) => {
-      this.left.push(left);
-      this.right.push(right);
-      this.target.push(target);
-      this.adds.push(i === 0 ? 0 : 1);
-    });
+    const others = products.filter(([left, right]) => !this.isNothing(left) && !this.isNothing(right));
+    if (others.length === 0) this.#fixed.add(target);
+    else this.sums.push({ target, products: others });
     return target;
+  }
+
+  /** Whether it is 0 at every point. */
+  isNothing(at: number): boolean {
+    return this.start[at] === 0 && this.#fixed.has(at);
   }
 
   #isOne(at: number): boolean {
@@ -143,34 +136,42 @@ interface Cells {
   readonly places: Int32Array;
 }
 
-function planned(phases: readonly PhaseEntries[], kept: readonly number[], size: number): YearPlan {
+interface Planning {
+  readonly phases: readonly PhaseEntries[];
+  /** States of the matrix. */
+  readonly kept: readonly number[];
+  /** States in all. */
+  readonly size: number;
+  readonly sources: number;
+}
+
+function planned({ phases, kept, size, sources }: Planning): YearPlan {
   const tape = new Tape();
   const [first, ...others] = phases.map((phase): Cells => ({ ...phase, places: tape.put(phase) }));
   if (first === undefined) throw new RangeError('A year has at least one phase.');
   const year = others.reduce((before, phase) => multiplied(tape, phase, before, size), first);
-  const place = new Map(kept.map((state, i) => [state, i]));
-  const order = kept.length;
-  const written = Array.from(year.rows, (row, i) => {
-    const [r, c] = [place.get(row), place.get(year.columns[i] ?? -1)];
-    return { from: year.places[i] ?? 0, cell: r === undefined || c === undefined ? -1 : r * order + c };
-  }).filter(({ cell }) => cell >= 0);
-  return { order, fill: filling(tape, written) };
+  const at = new Map(kept.map((state, i) => [state, i]));
+  const entries = Array.from(year.rows, (own, i) => {
+    const [row = -1, column = -1] = [at.get(own), at.get(year.columns[i] ?? -1)];
+    return { row, column, place: year.places[i] ?? 0 };
+  }).filter(({ row, column, place }) => row >= 0 && column >= 0 && !tape.isNothing(place));
+  const { moving, sums } = tape;
+  const matrices = { order: kept.length, sources, start: Float64Array.from(tape.start), moving, sums, entries };
+  return { ...matrices, fill: filling(matrices) };
 }
 
-function filling(tape: Tape, written: readonly { readonly from: number; readonly cell: number }[]): YearPlan['fill'] {
-  const { moving } = tape;
-  const numbers = Float64Array.from(tape.start);
-  const [left, right, target] = [Int32Array.from(tape.left), Int32Array.from(tape.right), Int32Array.from(tape.target)];
-  const adds = Int32Array.from(tape.adds);
-  const [from, cell] = [Int32Array.from(written, (one) => one.from), Int32Array.from(written, (one) => one.cell)];
-  return (values, out) => {
-    for (const { at, constant, slope, source } of moving) numbers[at] = constant + slope * (values[source] ?? 0);
-    for (let i = 0; i < target.length; i++) {
-      const product = (numbers[left[i] ?? 0] ?? 0) * (numbers[right[i] ?? 0] ?? 0);
-      const at = target[i] ?? 0;
-      numbers[at] = adds[i] === 1 ? (numbers[at] ?? 0) + product : product;
+/** As the kernel does it, for the few points that it does not solve. */
+function filling({ order, start, moving, sums, entries }: AlikeMatrices): YearPlan['fill'] {
+  const numbers = start.slice();
+  return (rates, point, out) => {
+    for (const { at, constant, slope, source } of moving)
+      numbers[at] = constant + slope * (rates[source]?.[point] ?? 0);
+    for (const { target, products } of sums) {
+      let sum = 0;
+      for (const [left, right] of products) sum += (numbers[left] ?? 0) * (numbers[right] ?? 0);
+      numbers[target] = sum;
     }
-    for (let i = 0; i < cell.length; i++) out[cell[i] ?? 0] = numbers[from[i] ?? 0] ?? 0;
+    for (const { row, column, place } of entries) out[row * order + column] = numbers[place] ?? 0;
   };
 }
 

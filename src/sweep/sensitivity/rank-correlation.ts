@@ -23,10 +23,11 @@ export interface RankCorrelation {
 export function partialRankCorrelations(
   factors: readonly Float64Array[],
   measure: Float64Array,
+  orderOf: (values: Float64Array) => Uint32Array = ascendingOrder,
 ): readonly (RankCorrelation | null)[] {
   const rows = measure.length;
-  const y = standardRanks(measure);
-  const ranked = factors.map(standardRanks);
+  const y = standardRanks(measure, orderOf(measure));
+  const ranked = factors.map((values) => standardRanks(values, orderOf(values)));
   const used = ranked.flatMap((own, k) => (own === null ? [] : [{ own, k }]));
   const none = factors.map(() => null);
   if (y === null || rows < used.length + 4) return none;
@@ -52,8 +53,7 @@ export function partialRankCorrelations(
 }
 
 /** Ranks with mean 0 and length 1; null where all are equal. */
-function standardRanks(values: Float64Array): Float64Array | null {
-  const order = ascendingOrder(values);
+function standardRanks(values: Float64Array, order: Uint32Array): Float64Array | null {
   const ranks = new Float64Array(values.length);
   for (let i = 0; i < order.length;) {
     let end = i;
@@ -62,7 +62,9 @@ function standardRanks(values: Float64Array): Float64Array | null {
     i = end;
   }
   const length = Math.sqrt(dot(ranks, ranks));
-  return length === 0 ? null : ranks.map((rank) => rank / length);
+  if (length === 0) return null;
+  for (let i = 0; i < ranks.length; i++) ranks[i] = (ranks[i] ?? 0) / length;
+  return ranks;
 }
 
 /** Null where a row follows from the others, or as good as. */

@@ -1,4 +1,5 @@
 // A measure over two numbers at a time: its mean in each cell, the other numbers taken together.
+import { ascendingOrder } from '../../numeric/order.ts';
 import { isSampled } from '../design/design.ts';
 import type { Value } from '../design/factor.ts';
 import { toldApart } from './ranking.ts';
@@ -29,7 +30,7 @@ export function heatMaps(swept: Swept, { quantities, design }: SweepSummary): re
     const measure = swept.numbers.get(name);
     const [first, second] = factors.map((factor) => names.indexOf(factor.name));
     if (measure === undefined || first === undefined || second === undefined) return [];
-    const rows = [...measure.keys()].filter((row) => !Number.isNaN(measure[row] ?? NaN));
+    const rows = Uint32Array.from(measure.keys()).filter((row) => !Number.isNaN(measure[row] ?? NaN));
     const [x, y] = [axisOf(swept, first, rows), axisOf(swept, second, rows)];
     return [{ quantity: name, unit, x: x.axis, y: y.axis, cells: cellsOf(measure, rows, [x, y]) }];
   });
@@ -41,9 +42,9 @@ interface Grouped {
   readonly of: Int32Array;
 }
 
-function axisOf({ manifest, values }: Swept, k: number, rows: readonly number[]): Grouped {
+function axisOf({ manifest, values }: Swept, k: number, rows: Uint32Array): Grouped {
   const own = values[k] ?? [];
-  const groups = groupsOf(own, { rows, sampled: isSampled(manifest.design) }, 10);
+  const groups = groupsOf(own, { rows, sampled: isSampled(manifest.design), orderOf: ascendingOrder }, 10);
   const of = new Int32Array(manifest.points).fill(-1);
   groups.forEach((group, g) => {
     for (const row of group) of[row] = g;
@@ -55,7 +56,7 @@ function axisOf({ manifest, values }: Swept, k: number, rows: readonly number[])
   return { axis: { name: manifest.design.factors[k]?.name ?? '', groups: ends }, of };
 }
 
-function cellsOf(measure: Float64Array, rows: readonly number[], [x, y]: readonly [Grouped, Grouped]): Float64Array {
+function cellsOf(measure: Float64Array, rows: Uint32Array, [x, y]: readonly [Grouped, Grouped]): Float64Array {
   const width = x.axis.groups.length;
   const sums = new Float64Array(width * y.axis.groups.length);
   const counts = new Float64Array(sums.length);
@@ -85,7 +86,7 @@ export function preferredMaps(swept: Swept, summary: SweepSummary): readonly Pre
     const [first, second] = factors.map((factor) => names.indexOf(factor.name));
     if (first === undefined || second === undefined || summary.design === 'one at a time') return [];
     const measures = scenarios.map(({ name }) => swept.numbers.get(columnOf(quantity, name)) ?? new Float64Array(0));
-    const rows = [...(measures[0]?.keys() ?? [])].filter((row) =>
+    const rows = Uint32Array.from(measures[0]?.keys() ?? []).filter((row) =>
       measures.every((one) => !Number.isNaN(one[row] ?? NaN)),
     );
     const axes = [axisOf(swept, first, rows), axisOf(swept, second, rows)] as const;

@@ -1,7 +1,7 @@
 // Which scenario is best at each point, and what that depends on: the sensitivity of the ranking, not only of a number.
 import type { Value } from '../design/factor.ts';
 import type { Observed } from '../sensitivity/observed.ts';
-import { groupsOf } from './response.ts';
+import { groupsOf, type RowsAsked } from './response.ts';
 
 export interface RankedScenario {
   readonly name: string;
@@ -65,13 +65,14 @@ export interface RankingRequest {
   readonly factors: readonly {
     readonly name: string;
     readonly values: Float64Array | readonly string[];
-    readonly rows: readonly number[];
+    readonly rows: Uint32Array;
   }[];
   /** As of a response. */
   readonly sampled: boolean;
+  readonly orderOf: RowsAsked['orderOf'];
 }
 
-export function rankScenarios({ quantity, better, scenarios, factors, sampled }: RankingRequest): Ranking {
+export function rankScenarios({ quantity, better, scenarios, factors, sampled, orderOf }: RankingRequest): Ranking {
   const sign = better === 'less' ? 1 : -1;
   const half = (pick: (observed: Observed) => Float64Array) => scenarios.map(({ observed }) => pick(observed));
   const [first, second] = [half((observed) => observed.first), half((observed) => observed.second)];
@@ -84,7 +85,7 @@ export function rankScenarios({ quantity, better, scenarios, factors, sampled }:
   );
   // A measure may be missing under one scenario only, such as animals that stand still.
   const isKnown = (row: number): boolean => worst.every((values) => !Number.isNaN(values[row] ?? NaN));
-  const known = Array.from({ length: points }, (_, row) => row).filter(isKnown);
+  const known = Uint32Array.from({ length: points }, (_, row) => row).filter(isKnown);
   const noisy = scenarios.some(({ observed }) => observed.first !== observed.second);
   const best = bestShares(worst, known);
   const toldBest = toldApart(
@@ -105,7 +106,8 @@ export function rankScenarios({ quantity, better, scenarios, factors, sampled }:
     agree: noisy ? agreement(first, second, { known, sign }) : null,
     factors: factors
       .map(({ name, values, rows }) => {
-        return factorRanking(name, values, { worst, toldBest, scenarios, rows: rows.filter(isKnown), best, sampled });
+        const own = rows.filter(isKnown);
+        return factorRanking(name, values, { worst, toldBest, scenarios, rows: own, best, sampled, orderOf });
       })
       .toSorted((a, b) => (b.decides ?? -1) - (a.decides ?? -1)),
   };
@@ -124,7 +126,7 @@ export function toldApart(
 }
 
 /** By scenario, the share of rows at which it is best. */
-function bestShares(worst: readonly Float64Array[], rows: readonly number[]): readonly number[] {
+function bestShares(worst: readonly Float64Array[], rows: Uint32Array): readonly number[] {
   const shares = worst.map(() => 0);
   for (const row of rows) {
     const least = Math.min(...worst.map((values) => values[row] ?? NaN));
@@ -137,7 +139,7 @@ function bestShares(worst: readonly Float64Array[], rows: readonly number[]): re
 }
 
 interface Known {
-  readonly known: readonly number[];
+  readonly known: Uint32Array;
   readonly sign: number;
 }
 
@@ -151,14 +153,15 @@ interface Ranked {
   readonly worst: readonly Float64Array[];
   readonly toldBest: Int32Array;
   readonly scenarios: readonly RankedScenario[];
-  readonly rows: readonly number[];
+  readonly rows: Uint32Array;
   readonly best: readonly number[];
   readonly sampled: boolean;
+  readonly orderOf: RowsAsked['orderOf'];
 }
 
 function factorRanking(name: string, values: Float64Array | readonly string[], ranked: Ranked): FactorRanking {
-  const { worst, toldBest, scenarios, rows, best, sampled } = ranked;
-  const groups = groupsOf(values, { rows, sampled }).map((own): RankingGroup => {
+  const { worst, toldBest, scenarios, rows, best, sampled, orderOf } = ranked;
+  const groups = groupsOf(values, { rows, sampled, orderOf }).map((own): RankingGroup => {
     const [first = 0, last = first] = [own[0], own.at(-1)];
     const means = worst.map((one) => own.reduce((sum, row) => sum + (one[row] ?? 0), 0));
     const least = Math.min(...means);

@@ -1,14 +1,14 @@
 // What a sweep says: the response to each factor with its spread, what matters most and by which measure of it, and where growth
 // goes through 1.
 import { isSampled, type DesignName } from '../design/design.ts';
-import { levelsOf, type Value } from '../design/factor.ts';
-import { isText, ownUnit } from '../manifest.ts';
+import { isText, levelsOf, type Value } from '../design/factor.ts';
+import { ownUnit } from '../manifest.ts';
 import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
 import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
 import { screening, type FactorScreen } from '../sensitivity/screening.ts';
 import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
 import { rankScenarios, type Ranking } from './ranking.ts';
-import { crossings, responseTo, type Response } from './response.ts';
+import { crossings, openOrders, responseTo, type Response, type RowsAsked } from './response.ts';
 import { columnOf, type Swept } from './swept.ts';
 
 /** Unit of a chance less another one. */
@@ -67,6 +67,7 @@ export interface FactorSummary {
 export function summariseSweep(swept: Swept): SweepSummary {
   const { manifest, failures } = swept;
   const { tool, model, hash, design, points, runs } = manifest;
+  const orderOf = openOrders();
   const failed = [...failures].map(([reason, count]) => ({ reason, points: count }));
   return {
     format: 'skein-sweep-summary/1',
@@ -78,8 +79,10 @@ export function summariseSweep(swept: Swept): SweepSummary {
     runs,
     failed: { points: failed.reduce((sum, one) => sum + one.points, 0), reasons: failed },
     factors: design.factors.map(({ name, base }) => ({ name, base, unit: unitOf(manifest, name) })),
-    quantities: [...quantityColumns(swept), ...differenceColumns(swept)].map((one) => summariseQuantity(swept, one)),
-    rankings: rankingsOf(swept),
+    quantities: [...quantityColumns(swept), ...differenceColumns(swept)].map((one) =>
+      summariseQuantity(swept, one, orderOf),
+    ),
+    rankings: rankingsOf(swept, orderOf),
     assumptions: assumptionsOf(design.design, { runs: runs !== null, told: swept.perhapsBest.size > 0 }),
   };
 }
@@ -137,7 +140,9 @@ function differenceColumns(swept: Swept): readonly QuantityColumn[] {
   });
 }
 
-function rankingsOf(swept: Swept): readonly Ranking[] {
+type OrderOf = RowsAsked['orderOf'];
+
+function rankingsOf(swept: Swept, orderOf: OrderOf): readonly Ranking[] {
   const { manifest, numbers, values } = swept;
   const { scenarios, design } = manifest;
   const [base] = scenarios;
@@ -150,23 +155,24 @@ function rankingsOf(swept: Swept): readonly Ranking[] {
       const perhapsBest = swept.perhapsBest.get(columnOf(name, one)) ?? null;
       return observed === null ? [] : [{ name: one, observed, perhapsBest }];
     });
-    return [rankScenarios({ quantity: name, better, scenarios: ranked, factors, sampled: isSampled(design) })];
+    return [rankScenarios({ quantity: name, better, scenarios: ranked, factors, sampled: isSampled(design), orderOf })];
   });
 }
 
-function summariseQuantity(swept: Swept, column: QuantityColumn): QuantitySummary {
+function summariseQuantity(swept: Swept, column: QuantityColumn, orderOf: OrderOf): QuantitySummary {
   const { name, unit, meaning, observed, told, growth } = column;
   const { design, runs } = swept.manifest;
   const whole = swept.numbers.get(name) ?? observed.first.map((_, row) => wholeAt(observed, row));
-  const known = whole.filter((value) => !Number.isNaN(value));
+  const known = whole.some(Number.isNaN) ? whole.filter((value) => !Number.isNaN(value)) : whole;
   const count = design.factors.length;
   const shares = design.design === 'sobol indices' ? sharesOfVariance(observed, count) : null;
   const screens = design.design === 'morris' ? screening(observed, count, design.seed) : [];
-  const ranks = ranked(design.design) ? rankCorrelations(swept, { whole, known }) : [];
+  const ranks = ranked(design.design) ? rankCorrelations(swept, { whole, known, orderOf }) : [];
   const factors = design.factors.map((factor, k): FactorSummary => {
     const response = responseTo(swept.values[k] ?? [], whole, {
       rows: rowsOf(swept, k),
       sampled: isSampled(design),
+      orderOf,
       ...(told === null ? {} : { told }),
     });
     return {
@@ -183,9 +189,7 @@ function summariseQuantity(swept: Swept, column: QuantityColumn): QuantitySummar
     name,
     unit,
     meaning,
-    least: known.reduce((least, value) => Math.min(least, value), Infinity),
-    greatest: known.reduce((most, value) => Math.max(most, value), -Infinity),
-    mean: known.reduce((sum, value) => sum + value, 0) / known.length,
+    ...spanOf(known),
     noise: runs === null || observed.first === observed.second ? null : noiseShare(observed),
     variance: shares?.variance ?? null,
     told: told === null ? null : toldAt(told, whole),
@@ -201,12 +205,29 @@ function toldAt(told: Int8Array, whole: Float64Array): NonNullable<QuantitySumma
   return { above, below, not: own.length - above - below };
 }
 
+function spanOf(known: Float64Array): Pick<QuantitySummary, 'least' | 'greatest' | 'mean'> {
+  let [least, greatest, sum] = [Infinity, -Infinity, 0];
+  for (let i = 0; i < known.length; i++) {
+    const value = known[i] ?? NaN;
+    least = Math.min(least, value);
+    greatest = Math.max(greatest, value);
+    sum += value;
+  }
+  return { least, greatest, mean: sum / known.length };
+}
+
 /** Where one number at a time changes, the points at which the others are as in the model. */
-function rowsOf({ manifest: { design, points } }: Swept, k: number): readonly number[] {
-  if (design.design !== 'one at a time') return Array.from({ length: points }, (_, row) => row);
+function rowsOf({ manifest: { design, points } }: Swept, k: number): Uint32Array {
+  if (design.design !== 'one at a time') return ascending(0, points);
   const sizes = design.factors.map((factor) => levelsOf(factor).length);
   const first = 1 + sizes.slice(0, k).reduce((sum, size) => sum + size, 0);
-  return Array.from({ length: sizes[k] ?? 0 }, (_, i) => first + i);
+  return ascending(first, sizes[k] ?? 0);
+}
+
+function ascending(first: number, count: number): Uint32Array {
+  const rows = new Uint32Array(count);
+  for (let i = 0; i < count; i++) rows[i] = first + i;
+  return rows;
 }
 
 function ranked(design: DesignName): boolean {
@@ -216,7 +237,7 @@ function ranked(design: DesignName): boolean {
 /** Over the points with a measure, by the factors that are numbers. */
 function rankCorrelations(
   { manifest, values }: Swept,
-  { whole, known }: { readonly whole: Float64Array; readonly known: Float64Array },
+  { whole, known, orderOf }: { readonly whole: Float64Array; readonly known: Float64Array; readonly orderOf: OrderOf },
 ): readonly (RankCorrelation | null)[] {
   const { factors } = manifest.design;
   const columns = factors.map((factor, k) => {
@@ -224,7 +245,7 @@ function rankCorrelations(
     if (isText(factor) || !(own instanceof Float64Array)) return new Float64Array(known.length);
     return known.length === whole.length ? own : own.filter((_, row) => !Number.isNaN(whole[row]));
   });
-  return partialRankCorrelations(columns, known);
+  return partialRankCorrelations(columns, known, orderOf);
 }
 
 function order(design: DesignName): { readonly by: string; readonly weight: (factor: FactorSummary) => number } {
@@ -234,7 +255,7 @@ function order(design: DesignName): { readonly by: string; readonly weight: (fac
     case 'morris':
       return { by: 'mean size of the effects', weight: ({ screen }) => screen?.meanSize ?? -1 };
     case 'one at a time':
-      return { by: 'how far the measure goes', weight: ({ response }) => spanOf(response) };
+      return { by: 'how far the measure goes', weight: ({ response }) => reachOf(response) };
     default:
       return {
         by: 'share of the variance between the values of the number',
@@ -243,7 +264,7 @@ function order(design: DesignName): { readonly by: string; readonly weight: (fac
   }
 }
 
-function spanOf({ groups }: Response): number {
+function reachOf({ groups }: Response): number {
   const means = groups.map(({ mean }) => mean);
   return Math.max(...means) - Math.min(...means);
 }

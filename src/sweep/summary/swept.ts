@@ -21,7 +21,7 @@ export function columnOf(name: string, scenario: string | null): string {
   return scenario === null ? name : `${name} [${scenario}]`;
 }
 
-type Cells = ArrayLike<unknown> | undefined;
+type Cells = Float64Array | undefined;
 
 /** Fills the columns of a summary with the points of one part after the other. */
 export class SweptColumns {
@@ -46,7 +46,7 @@ export class SweptColumns {
   take(cells: (name: string) => Cells, first: number, count: number): void {
     for (const [name, into] of this.numbers) {
       const own = cells(name);
-      for (let i = 0; i < count; i++) into[first + i] = numberIn(own, i);
+      if (own !== undefined) into.set(own, first);
     }
     for (const [name, into] of this.told) {
       const [lower, upper] = [cells(lowerOf(name)), cells(upperOf(name))];
@@ -60,6 +60,5 @@ export class SweptColumns {
 }
 
 function numberIn(cells: Cells, i: number): number {
-  const cell = cells?.[i];
-  return typeof cell === 'number' ? cell : NaN;
+  return cells?.[i] ?? NaN;
 }
