@@ -8,8 +8,10 @@ import { startAnimals } from './compile/start.ts';
 import type { Compiled } from './compile/year-map.ts';
 import { buildLandscape } from './landscape/build.ts';
 import { lengthOfLink } from './landscape/links.ts';
+import type { LandscapeMemory } from './landscape/memory.ts';
 import type { Model } from './model/model.ts';
 import type { Context } from './model/context.ts';
+import type { ModelMemory } from './model/memory.ts';
 import { resolveCosts, type PlanCost } from './model/costs.ts';
 import { resolveModel, resolveWithContext } from './model/resolve.ts';
 import { provenanceOf, type Provenance } from './results/provenance.ts';
@@ -69,7 +71,7 @@ export function compileScenario({ alone: base }: CompiledBase, spec: Spec): Comp
     return { compiled: finish(spec, { parts: base.parts, laid: spec, cost }), findings };
   }
   const laid = layActions(spec, new Set(spec.scenarios?.[scenario] ?? []));
-  const plan = compilePlan(base.parts, laid, scenario);
+  const plan = compilePlan(base.parts, { laid, scenario });
   const known = new Set(findings.map(keyOf));
   findings.push(...laid.findings);
   for (const found of plan.findings) {
@@ -88,28 +90,40 @@ export function compileScenario({ alone: base }: CompiledBase, spec: Spec): Comp
   return { compiled: finish(spec, { parts: plan.parts, laid: laid.spec, cost }), findings };
 }
 
-interface Parts extends Compiled {
+/** A scenario as a spec of its own. */
+export interface LaidScenario {
+  readonly laid: Pick<Laid, 'spec' | 'base'>;
+  readonly scenario: string;
+}
+
+export interface Parts extends Compiled {
   readonly startAnimals: Float64Array;
 }
 
-interface Made {
+export interface Made {
   readonly parts: Parts | null;
   readonly findings: readonly Finding[];
 }
 
-interface Alone extends Made {
+export interface Alone extends Made {
   readonly context: Context;
   /** Findings of the context when the model was resolved. */
   readonly resolved: number;
 }
 
+/** What compiling one spec leaves for the next, which differs in the values of some parameters alone. */
+export interface CompileMemory {
+  readonly model: ModelMemory;
+  readonly landscape: LandscapeMemory;
+}
+
 /** A spec without regard to its actions. */
-function compileAlone(spec: Spec): Alone {
-  const resolved = resolveWithContext(spec);
+export function compileAlone(spec: Spec, memory?: CompileMemory): Alone {
+  const resolved = resolveWithContext(spec, memory?.model);
   const { context } = resolved;
   const found = { context, resolved: context.findings.length };
   if (resolved.model === null) return { parts: null, findings: resolved.findings, ...found };
-  const { landscape, findings: ofLandscape } = buildLandscape(resolved.model);
+  const { landscape, findings: ofLandscape } = buildLandscape(resolved.model, memory?.landscape);
   const { model, findings: ofStages } = solveStages(resolved.model, landscape);
   const { coefficients, findings: ofCapacities } = solveCapacities(model);
   const { animals, findings: ofStart } = startAnimals({ model, landscape, coefficients });
@@ -125,10 +139,17 @@ function compileAlone(spec: Spec): Alone {
   return { parts: { model, landscape, coefficients, startAnimals: animals }, findings, ...found };
 }
 
+export interface PlanMemory {
+  readonly own: CompileMemory;
+  /** Of the base with the patches that the plan adds. */
+  readonly extended: CompileMemory;
+}
+
 /** A plan: its own model, with crowding as strong as the base has it and the same animals at count 0. */
-function compilePlan(base: Parts, laid: Laid, scenario: string): Made {
-  const extended = laid.base === null ? { model: base.model, findings: [] } : resolveStaged(laid.base);
-  const resolved = resolveModel(laid.spec);
+export function compilePlan(base: Parts, { laid, scenario }: LaidScenario, memory?: PlanMemory): Made {
+  const extended =
+    laid.base === null ? { model: base.model, findings: [] } : resolveStaged(laid.base, memory?.extended);
+  const resolved = resolveModel(laid.spec, memory?.own.model);
   const found = [...resolved.findings, ...extended.findings];
   if (resolved.model === null || extended.model === null) return { parts: null, findings: found };
   const model = withStagesOf(extended.model, {
@@ -137,17 +158,20 @@ function compilePlan(base: Parts, laid: Laid, scenario: string): Made {
     title: `${base.model.title}, plan: ${scenario}`,
     uncertainty: base.model.uncertainty,
   });
-  const { landscape, findings: ofLandscape } = buildLandscape(model);
+  const { landscape, findings: ofLandscape } = buildLandscape(model, memory?.own.landscape);
   const { coefficients, findings: ofCapacities } = solveCapacities(model, extended.model);
   const findings = [...found, ...ofLandscape, ...ofCapacities, ...nobodyThere(model)];
   const startAnimals = sameStart(base, model);
   return { parts: hasError(findings) ? null : { model, landscape, coefficients, startAnimals }, findings };
 }
 
-function resolveStaged(spec: Spec): { readonly model: Model | null; readonly findings: readonly Finding[] } {
-  const { model, findings } = resolveModel(spec);
+function resolveStaged(
+  spec: Spec,
+  memory?: CompileMemory,
+): { readonly model: Model | null; readonly findings: readonly Finding[] } {
+  const { model, findings } = resolveModel(spec, memory?.model);
   if (model === null) return { model, findings };
-  const staged = solveStages(model, buildLandscape(model).landscape);
+  const staged = solveStages(model, buildLandscape(model, memory?.landscape).landscape);
   return { model: staged.model, findings: [...findings, ...staged.findings] };
 }
 
@@ -174,7 +198,7 @@ interface Costed {
  * Costs are expressions over the numbers of the base. A mistake in a number is told once for each base, so that what is wrong here
  * may have been told of an earlier scenario.
  */
-function costsOf({ context, resolved }: Alone, model: Model, actions: readonly string[]): Costed {
+export function costsOf({ context, resolved }: Alone, model: Model, actions: readonly string[]): Costed {
   const cost = resolveCosts(context, actions, (action) => kilometresOf(context.spec, model, action));
   const told = context.findings
     .slice(resolved)
@@ -215,7 +239,7 @@ function finish(spec: Spec, { parts, laid, cost }: Finishing): CompiledModel {
   };
 }
 
-function hasError(findings: readonly Finding[]): boolean {
+export function hasError(findings: readonly Finding[]): boolean {
   return findings.some(({ severity }) => severity === 'error');
 }
 

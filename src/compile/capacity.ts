@@ -23,13 +23,29 @@ export interface SolvedCapacities {
  */
 export function solveCapacities(model: Model, base: Model = model): SolvedCapacities {
   const findings: Finding[] = [];
-  const always = asIfAlwaysThere(base);
-  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ model: always, crowding, k, findings }));
+  const alone = standingAlone(base);
+  const coefficients = model.crowding.map((crowding, k) => solveCrowding({ ...alone, crowding, k, findings }));
   return { coefficients, findings };
 }
 
-interface Request {
+interface StandingAlone {
+  /** As if all its patches were always there. */
   readonly model: Model;
+  /** By crowding and patch; what was solved for one plan holds for all of the same base. */
+  readonly solved: Map<number, readonly Standstill[]>;
+}
+
+const known = new WeakMap<Model, StandingAlone>();
+
+function standingAlone(base: Model): StandingAlone {
+  const before = known.get(base);
+  if (before !== undefined) return before;
+  const alone = { model: asIfAlwaysThere(base), solved: new Map<number, readonly Standstill[]>() };
+  known.set(base, alone);
+  return alone;
+}
+
+interface Request extends StandingAlone {
   readonly crowding: Crowding;
   readonly k: number;
   readonly findings: Finding[];
@@ -45,16 +61,8 @@ function solveCrowding(request: Request): CrowdingCoefficients {
       ...shapeless(held),
     };
   }
-  const solved = new Map<string, Standstill>();
-  const standstills = model.patches.map((_, p) => {
-    const year = patchYear({ model, patch: p, multipliers: multipliersAtRest(model) }).join();
-    const others = model.crowding.map(({ alleeHalf }, j) => (j === k ? 0 : (alleeHalf[p] ?? 0)));
-    const own = model.crowding[k]?.capacity[p];
-    const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${own}` : year;
-    const known = solved.get(key) ?? standstill({ model, k, patch: p });
-    solved.set(key, known);
-    return known;
-  });
+  const standstills = request.solved.get(k) ?? standstillsOf(model, k);
+  request.solved.set(k, standstills);
   const byCapacity = (crowded: Crowding): readonly Chosen[] =>
     standstills.map((own, p) => choose({ ...request, crowding: crowded }, { own, p, standstills }));
   const first = byCapacity(crowding);
@@ -72,6 +80,19 @@ function solveCrowding(request: Request): CrowdingCoefficients {
         }),
     ...shapeless(held),
   };
+}
+
+function standstillsOf(model: Model, k: number): readonly Standstill[] {
+  const solved = new Map<string, Standstill>();
+  return model.patches.map((_, p) => {
+    const year = patchYear({ model, patch: p, multipliers: multipliersAtRest(model) }).join();
+    const others = model.crowding.map(({ alleeHalf }, j) => (j === k ? 0 : (alleeHalf[p] ?? 0)));
+    const own = model.crowding[k]?.capacity[p];
+    const key = others.some((half) => half > 0) ? `${year} ${others.join()} ${own}` : year;
+    const before = solved.get(key) ?? standstill({ model, k, patch: p });
+    solved.set(key, before);
+    return before;
+  });
 }
 
 function coefficientsOf(chosen: readonly Chosen[]): Float64Array {

@@ -3,6 +3,7 @@ import type { Finding } from '../spec/finding.ts';
 import type { DispersalPhase, Model } from '../model/model.ts';
 import { kernelMovement } from './kernel-movement.ts';
 import type { Landscape, Movement } from './landscape.ts';
+import type { BuiltMovement, LandscapeMemory } from './memory.ts';
 import { sharesMovement } from './shares-movement.ts';
 import { movementByYear } from './ways.ts';
 import { strikesOf } from './strikes.ts';
@@ -13,11 +14,19 @@ export interface BuiltLandscape {
   readonly findings: readonly Finding[];
 }
 
-export function buildLandscape(model: Model): BuiltLandscape {
+/** `memory` of models of the same spec at other values of some parameters. */
+export function buildLandscape(model: Model, memory?: LandscapeMemory): BuiltLandscape {
   const findings: Finding[] = [];
-  const movements = model.phases.map((phase) =>
-    phase.kind === 'dispersal' ? movementOf(model, phase, findings) : null,
-  );
+  const movements = model.phases.map((phase) => {
+    if (phase.kind !== 'dispersal') return null;
+    const make = (): BuiltMovement => {
+      const own: Finding[] = [];
+      return { movement: movementOf(model, phase, own), findings: own };
+    };
+    const built = memory === undefined ? make() : memory.of(phase, model.patches, make);
+    findings.push(...built.findings);
+    return built.movement;
+  });
   const strikes = strikesOf(model);
   const weather = patchCorrelation(model, model.variation, findings);
   return {

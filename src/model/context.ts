@@ -6,6 +6,7 @@ import type { Finding } from '../spec/finding.ts';
 import type { Spec } from '../spec/schema/spec.ts';
 import type { Patch, Sex } from './model.ts';
 import type { Attributes } from './definitions.ts';
+import type { ModelMemory } from './memory.ts';
 import type { Drivers, Numbers } from './numbers.ts';
 
 export interface Names {
@@ -29,6 +30,8 @@ export interface Context {
   readonly toldBounds: Set<string>;
   readonly findings: Finding[];
   readonly defaults: string[];
+  /** Of the same spec at other values of some parameters. */
+  readonly memory?: ModelMemory;
 }
 
 export function fail(

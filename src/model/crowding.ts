@@ -83,7 +83,12 @@ function capacityOf(context: Context, spec: CrowdingSpec, path: SpecPath): Capac
     }
     return { capacity: new Float64Array(context.patches.length).fill(NaN) };
   }
-  if (spec.capacity !== undefined) return resolveCapacities(context, spec.capacity, [...path, 'capacity']);
+  const { capacity } = spec;
+  if (capacity !== undefined) {
+    const make = (): Capacities => resolveCapacities(context, capacity, [...path, 'capacity']);
+    const { memory, numbers } = context;
+    return memory === undefined ? make() : memory.capacities.of(path.join('.'), numbers, make);
+  }
   fail(context, 'crowding-shape', path, {
     message: `The crowding \`${path.join('.')}\` needs a \`capacity\``,
     part: 'key',

@@ -4,17 +4,19 @@ import { checkOwnKeys, numbersIn } from './class-rates.ts';
 import { classIndex, classMask, fail, patchIndex, type Context } from './context.ts';
 import { resolveKernel } from './kernel.ts';
 import { resolveLinks } from './links.ts';
-import type { DispersalPhase, DispersalRule, RateTable } from './model.ts';
+import type { DispersalPhase, DispersalRule, RateTable, WaysByYear } from './model.ts';
 import type { Where } from './numbers.ts';
 import { buildTable, whereIn, withinBounds } from './rates.ts';
 import { requirePlaces } from './places.ts';
-import { isThere, waysByYear, type WaysByYear } from './ways.ts';
+import { isThere, waysByYear } from './ways.ts';
 
 export function resolveDispersal(context: Context, name: string, spec: DispersalSpec): DispersalPhase | null {
   const moves = classMask(context, spec.classes, [name, 'classes']);
   if (spec.shares !== undefined) return bySharesTable(context, { name, spec, moves, shares: spec.shares });
   if (!hasKernelParts(context, name, spec)) return null;
-  const leaving = leavingTable(context, { name, spec, moves });
+  const { memory, numbers } = context;
+  const toLeave = (): RateTable => leavingTable(context, { name, spec, moves });
+  const leaving = memory === undefined ? toLeave() : memory.leaving.of(name, numbers, toLeave);
   const ways = waysByYear(context, { name, spec }, (there) => {
     const rule = kernelRule(there, name, spec);
     const links = resolveLinks(there, name, spec);

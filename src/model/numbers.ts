@@ -55,6 +55,8 @@ export class Numbers {
   /** Numbers that are read once a year; all others are read once and for all. */
   readonly #yearly = new Set<string>();
   readonly #slopes = new Map<Ast, Map<string, Ast>>();
+  /** Names that values were asked to rest on, of each part that is traced. */
+  readonly #traces = new Set<Set<string>>();
   #year = NaN;
   #memo = new Map<string, number | undefined>();
 
@@ -70,6 +72,7 @@ export class Numbers {
     if (typeof expression === 'number') return expression;
     this.#uses.set(path.join('\0'), { expression, path, dimension: where.dimension ?? 'share' });
     const ast = this.#definitions.parse(expression, path, where.dimension);
+    if (ast !== null) this.#trace(ast);
     if (ast === null || this.#isDatedWrongly(ast, path, where.attributes)) return NaN;
     return this.#overYears(ast, () => {
       const result = evaluate(ast, (name) => this.#lookUp(name, where), pinned);
@@ -119,7 +122,24 @@ export class Numbers {
 
   /** See `Definitions`. */
   expanded(...asked: Parameters<Definitions['expanded']>): Ast | null {
+    const ast = this.#definitions.parse(asked[0], asked[1]);
+    if (ast !== null) this.#trace(ast);
     return this.#definitions.expanded(...asked);
+  }
+
+  /** With all names that the numbers rest on that were asked for meanwhile, whichever patch they were asked of. */
+  traced<T>(make: () => T): { readonly made: T; readonly names: ReadonlySet<string> } {
+    const names = new Set<string>();
+    this.#traces.add(names);
+    const made = make();
+    this.#traces.delete(names);
+    return { made, names };
+  }
+
+  #trace(ast: Ast): void {
+    if (this.#traces.size === 0) return;
+    const behind = this.#definitions.namesBehind(ast);
+    for (const names of this.#traces) for (const name of behind) names.add(name);
   }
 
   /** A number that is read once cannot change with the year: better told than frozen in its first year. */
@@ -140,6 +160,7 @@ export class Numbers {
   slope(expression: number | string, path: SpecPath, where: Where, parameter: string): number {
     if (typeof expression === 'number') return 0;
     const ast = this.#definitions.parse(expression, path, where.dimension);
+    if (ast !== null) this.#trace(ast);
     if (ast === null || !this.#definitions.namesBehind(ast).has(parameter)) return 0;
     return this.#overYears(ast, () => this.#slopeOf(ast, where, parameter));
   }
@@ -194,13 +215,14 @@ export class Numbers {
   attribute(name: string, where: Where): number | undefined {
     const attribute = where.attributes?.get(name);
     if (typeof attribute !== 'object') return attribute;
+    const written = this.#definitions.parse(attribute.expression, attribute.path, attribute.dimension);
+    if (written !== null) this.#trace(written);
     if (this.#open.has(name)) {
       this.#mistakes.tellCycle(name, attribute.path, [...this.#open]);
       return NaN;
     }
     this.#open.add(name);
-    const ast = this.#definitions.parse(attribute.expression, attribute.path, attribute.dimension);
-    const result = ast === null ? null : evaluate(ast, (inner) => this.#lookUp(inner, where), pinned);
+    const result = written === null ? null : evaluate(written, (inner) => this.#lookUp(inner, where), pinned);
     this.#open.delete(name);
     if (result?.ok === false) this.#tell(result.fault, attribute.path, where);
     return result?.ok === true ? result.value : NaN;

@@ -83,6 +83,12 @@ export interface Ways {
   readonly links?: readonly Link[];
 }
 
+/** In every stretch of years in which they stay the same; the first alone where they always do. */
+export interface WaysByYear {
+  readonly first: Ways;
+  readonly byYear?: { readonly epochs: readonly Ways[]; readonly epochOf: Int32Array };
+}
+
 /** Of those that take this way, in either direction, a share turns back and stays at home; of the others a share dies. */
 export interface Link {
   /** Indices of two patches, the lower first. */

@@ -31,8 +31,16 @@ export function resolvePhases(context: Context): readonly Phase[] {
     });
   }
   const turned = [...year.keys()].map((i) => (count + 1 + i) % year.length);
-  const phases = turned.flatMap((i) => resolvePhase(context, year[i] ?? '', i) ?? []);
+  const phases = turned.flatMap((i) => rememberedPhase(context, year[i] ?? '', i) ?? []);
   return withWaiting(context, [...resolvePatchesLost(context), ...phases]);
+}
+
+/** A dispersal remembers its parts each by itself. */
+function rememberedPhase(context: Context, name: string, index: number): Phase | null {
+  const make = (): Phase | null => resolvePhase(context, name, index);
+  const { memory, numbers } = context;
+  if (memory === undefined || context.spec.named[name]?.kind === 'dispersal') return make();
+  return memory.phases.of(name, numbers, make);
 }
 
 function resolvePhase(context: Context, name: string, index: number): Phase | null {

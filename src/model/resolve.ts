@@ -6,6 +6,7 @@ import type { Context } from './context.ts';
 import { resolveClasses } from './classes.ts';
 import { resolveCrowding } from './crowding.ts';
 import type { Model } from './model.ts';
+import type { ModelMemory } from './memory.ts';
 import { Numbers } from './numbers.ts';
 import { resolveDrivers } from './drivers.ts';
 import { resolveObserved } from './observed.ts';
@@ -25,15 +26,16 @@ export interface Resolved {
   readonly findings: readonly Finding[];
 }
 
-export function resolveModel(spec: Spec): Resolved {
-  return resolveWithContext(spec);
+export function resolveModel(spec: Spec, memory?: ModelMemory): Resolved {
+  return resolveWithContext(spec, memory);
 }
 
 /** With what it was resolved from, for those who ask further. */
-export function resolveWithContext(spec: Spec): Resolved & { readonly context: Context } {
+export function resolveWithContext(spec: Spec, memory?: ModelMemory): Resolved & { readonly context: Context } {
   const expanded = expandStages(spec);
   const findings: Finding[] = [...expanded.findings];
-  const context = contextOf(expanded.spec, findings);
+  const alone = contextOf(expanded.spec, findings);
+  const context = memory === undefined ? alone : { ...alone, memory };
   checkNames(context);
   const phases = resolvePhases(context);
   const parts = {

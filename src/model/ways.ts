@@ -4,11 +4,11 @@ import type { Finding } from '../spec/finding.ts';
 import type { Dimension } from '../spec/quantity.ts';
 import type { DispersalSpec } from '../spec/schema/spec.ts';
 import type { Context } from './context.ts';
-import type { Ways } from './model.ts';
+import type { Ways, WaysByYear } from './model.ts';
 
-export interface WaysByYear {
-  readonly first: Ways;
-  readonly byYear?: { readonly epochs: readonly Ways[]; readonly epochOf: Int32Array };
+interface OfDispersal {
+  readonly name: string;
+  readonly spec: DispersalSpec;
 }
 
 /**
@@ -17,7 +17,17 @@ export interface WaysByYear {
  */
 export function waysByYear(
   context: Context,
-  { name, spec }: { readonly name: string; readonly spec: DispersalSpec },
+  dispersal: OfDispersal,
+  waysIn: (context: Context) => Ways | null,
+): WaysByYear | null {
+  const make = (): WaysByYear | null => waysInYears(context, dispersal, waysIn);
+  const { memory, numbers } = context;
+  return memory === undefined ? make() : memory.ways.of(dispersal.name, numbers, make);
+}
+
+function waysInYears(
+  context: Context,
+  { name, spec }: OfDispersal,
   waysIn: (context: Context) => Ways | null,
 ): WaysByYear | null {
   const dated = numbersOf(name, spec).map(([expression, path, dimension]) =>

@@ -13,6 +13,7 @@ import type { Comparison, Options } from './options.ts';
 import { comparePaths } from './path.ts';
 import { measurePlans } from './plans.ts';
 import { plotScaling } from './plot.ts';
+import { measurePlanPoints } from './plan-points.ts';
 import { measureScaling } from './scaling.ts';
 import { measureStart, measureThreads } from './start.ts';
 import { measureSweeps } from './sweeps.ts';
@@ -71,7 +72,7 @@ if (chosen.has('flagship')) {
   );
 }
 if (chosen.has('sweeps')) {
-  const sweeps = measureSweeps(options);
+  const sweeps = { ...measureSweeps(options), planPoints: measurePlanPoints(options) };
   report['sweeps'] = sweeps;
   const { runs, writing, memory } = sweeps;
   console.log(
@@ -81,6 +82,8 @@ if (chosen.has('sweeps')) {
     `${writing.rows} growth rates with their rows written take ${writing.parts.toFixed(2)} times those without, aim 1.10; ` +
       `with table and summary ${writing.all.toFixed(2)}`,
   );
+  for (const { over, gain } of sweeps.planPoints)
+    console.log(`Every plan of the flagship over ${over}: ${gain.toFixed(1)} times faster than compiled whole`);
   console.log(`A sweep of ${memory.points} points takes ${memory.megabytes.toFixed(0)} MB, aim 500`);
 }
 if (chosen.has('plans')) {

@@ -84,15 +84,28 @@ function addFactor(list: SectionList, { start, column, weight }: Factor, reads: 
   return row;
 }
 
+/** Plans and points of a sweep ask for the same tables one after the other, and each takes long. */
+const recent = new Map<string, QuantileTable>();
+const mostRecent = 256;
+
+function recentTable(key: string, make: () => QuantileTable): QuantileTable {
+  const before = recent.get(key);
+  if (before !== undefined) return before;
+  const table = make();
+  if (recent.size >= mostRecent) recent.clear();
+  recent.set(key, table);
+  return table;
+}
+
 /** Quantile tables, each once however many patches have it. */
 class Tables {
   readonly #known = new Map<string, { readonly first: number; readonly table: QuantileTable }>();
   #size = 0;
 
-  place(key: string, make: () => QuantileTable): readonly [number, number] {
+  place(key: string, sd: number, make: () => QuantileTable): readonly [number, number] {
     const known = this.#known.get(key);
     if (known !== undefined) return [known.first, known.table.perUnit];
-    const table = make();
+    const table = recentTable(`${key} ${sd}`, make);
     if (quantileReach !== layout.tableReach) throw new Error('Quantile tables have another reach than the kernel.');
     const first = this.#size;
     this.#size += table.nodes.length;
@@ -138,12 +151,12 @@ function coded(found: Distribution, { sd, scale, tables }: Coding): readonly num
     case 'logit-normal':
       return [layout.distributionLogit, found.mu, found.sigma, scale];
     case 'beta': {
-      const place = tables.place(`beta ${found.a} ${found.b}`, () => betaTable(found, sd));
+      const place = tables.place(`beta ${found.a} ${found.b}`, sd, () => betaTable(found, sd));
       return [layout.distributionShareTable, ...place, scale];
     }
     case 'gamma': {
       const shape = { shape: found.k, scale: found.scale };
-      const place = tables.place(`gamma ${found.k} ${found.scale}`, () => gammaTable(shape, sd));
+      const place = tables.place(`gamma ${found.k} ${found.scale}`, sd, () => gammaTable(shape, sd));
       return [layout.distributionPositiveTable, ...place, scale];
     }
   }

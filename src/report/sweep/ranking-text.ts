@@ -31,8 +31,8 @@ function answer({ scenarios, points, told, agree }: Ranking, { details }: SweepT
   const each = first.length > 1 ? ' each' : '';
   const best = `${namesWords(first)}${each} at ${percent(most)} of ${points.toLocaleString('en')} points`;
   const sure =
-    told === points
-      ? 'at all of them the best is told apart from all others'
+    told === points || told === 0
+      ? `at ${told === 0 ? 'none' : 'all'} of them the best is told apart from all others`
       : `at ${told.toLocaleString('en')} of them the best is told apart from all others, at ${(points - told).toLocaleString('en')} it is not`;
   const halves = agree === null || !details ? '' : `; both halves of the runs name the same one at ${percent(agree)}`;
   return `${best}; ${sure}${halves}. Changes are against “${scenarios[0]?.name ?? ''}”`;

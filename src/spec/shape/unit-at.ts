@@ -1,4 +1,4 @@
-// The unit that the language gives a number of a spec, as the reference has it.
+// What the language says of a number at its place in a spec: its unit, as the reference has it, and whether a name may stand there.
 import { actionSchemas } from '../schema/actions.ts';
 import type { SpecPath } from '../document.ts';
 import { CoreSchema, namedSchemas, type Spec } from '../schema/spec.ts';
@@ -7,13 +7,25 @@ import { branchesOf, isSeveral, shapeOfKey, type Shape } from './shape.ts';
 /** Empty where it has none, or takes numbers of any. What multiplies a number has none either. */
 export function unitAt(spec: Spec, path: SpecPath): string {
   if (path.at(-1) === 'times') return '';
+  return shapesOnTheWay(spec, path).reduce(
+    (unit, shapes) => shapes.find((shape) => shape['x-unit'] !== undefined)?.['x-unit'] ?? unit,
+    '',
+  );
+}
+
+const formats: readonly string[] = ['expression', 'share', 'length', 'area', 'per-length', 'time'];
+
+/** Whether an expression may stand there, which may be a name. */
+export function takesExpression(spec: Spec, path: SpecPath): boolean {
+  const shapes = shapesOnTheWay(spec, path).at(-1) ?? [];
+  return shapes.flatMap(branchesOf).some(({ type, format }) => type === 'string' && formats.includes(format ?? ''));
+}
+
+/** What may stand at each step of a path. */
+function shapesOnTheWay(spec: Spec, path: SpecPath): readonly (readonly Shape[])[] {
   const [root, below] = rootOf(spec, path);
-  let [shapes, unit]: [readonly Shape[], string] = [root === undefined ? [] : [root], ''];
-  for (const key of below) {
-    shapes = shapes.flatMap(branchesOf).flatMap((shape) => under(shape, key));
-    unit = shapes.find((shape) => shape['x-unit'] !== undefined)?.['x-unit'] ?? unit;
-  }
-  return unit;
+  let shapes: readonly Shape[] = root === undefined ? [] : [root];
+  return below.map((key) => (shapes = shapes.flatMap(branchesOf).flatMap((shape) => under(shape, key))));
 }
 
 /** Sections that authors name, and actions, have the shape of their kind. */

@@ -31,7 +31,7 @@ export function namedPlaces(spec: Spec, factors: readonly Factor[]): Named | nul
   return { spec: named, names, fresh: names.filter((name) => !Object.hasOwn(spec.parameters ?? {}, name)) };
 }
 
-function freshName({ parameters = {} }: Spec): string {
+export function freshName({ parameters = {} }: Spec): string {
   let name = 'swept';
   while (Object.hasOwn(parameters, name)) name += '_';
   return name;
