@@ -214,7 +214,7 @@ function runDraws(compiled: CompiledModel, { onProgress }: RunOptions): RunResul
     else {
       const run = openRunner(image, { steps: model.steps, seed: seedOfDraw(model.seed, draw), reuse: true });
       for (const batch of batchesOf(model.replicates)) collector.take(run(batch));
-      collector.finish(draw, values);
+      collector.finish(draw, values, image);
     }
     onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
     if (isPrecise(compiled, { reduction, collector, draws: draw + 1 })) break;
@@ -240,7 +240,7 @@ async function runDrawsWith(crew: Crew, compiled: CompiledModel, options: CrewOp
         break;
       }
       for (const batch of taken) collector.take(batch);
-      collector.finish(draw, values);
+      collector.finish(draw, values, image);
     }
     options.onProgress?.((draw + 1) * model.replicates, model.draws * model.replicates);
     if (isPrecise(compiled, { reduction, collector, draws: draw + 1 })) break;

@@ -1,6 +1,6 @@
 // A comparison as tidy tables.
 import type { Comparison } from '../compare/results.ts';
-import type { Column, Table } from './tables.ts';
+import { noUnknownColumn, type Column, type Table } from './tables.ts';
 
 const text = (name: string, meaning: string): Column => ({ name, unit: '', meaning });
 const share = (name: string, meaning: string): Column => ({ name, unit: 'share', meaning });
@@ -73,8 +73,9 @@ function chancesTable({ scenarios }: Comparison): Table {
       share('probability', 'Share of the futures in which it happens at some count.'),
       share('lower', 'Lower end of the 95 % interval from the number of runs.'),
       share('upper', 'Upper end of it.'),
-      share('lower_unknown', 'Lower end of the 95 % interval from what is not known; empty where it was not drawn.'),
+      share('lower_unknown', 'Lower end of the 95 % interval from what is not known; empty where there is none.'),
       share('upper_unknown', 'Upper end of it.'),
+      noUnknownColumn,
       share('at_end', 'Share of the futures in which it is so at the last count.'),
       {
         name: 'cost_per_chance',
@@ -88,7 +89,7 @@ function chancesTable({ scenarios }: Comparison): Table {
     rows: scenarios.flatMap(({ name, outcomes, prices }) =>
       outcomes.map((one) => {
         const price = prices.find((own) => own.outcome === one.name)?.costPerRisk ?? null;
-        const { runs, unknown } = one.intervals;
+        const { runs, unknown, noUnknown } = one.intervals;
         return [
           name,
           one.name,
@@ -98,6 +99,7 @@ function chancesTable({ scenarios }: Comparison): Table {
           runs.upper,
           unknown?.lower ?? null,
           unknown?.upper ?? null,
+          noUnknown ?? null,
           one.atEnd.probability,
           price?.estimate ?? null,
           price?.lower ?? null,
@@ -122,9 +124,10 @@ function differencesTable({ differences }: Comparison): Table {
       {
         name: 'lower_unknown',
         unit: 'as the outcome',
-        meaning: 'Lower end of the 95 % interval from what is not known; empty where it was not drawn.',
+        meaning: 'Lower end of the 95 % interval from what is not known; empty where there is none.',
       },
       { name: 'upper_unknown', unit: 'as the outcome', meaning: 'Upper end of it.' },
+      noUnknownColumn,
       text('told_apart', '`yes` where no interval holds 0.'),
       futures('both', 'Futures in which it happens under both plans; empty for amounts.'),
       futures('only_from', 'Under `from` only.'),
@@ -141,6 +144,7 @@ function differencesTable({ differences }: Comparison): Table {
       one.interval.upper,
       one.intervalFromUnknown?.lower ?? null,
       one.intervalFromUnknown?.upper ?? null,
+      one.noUnknown ?? null,
       one.toldApart ? 'yes' : 'no',
       one.futures?.both ?? null,
       one.futures?.onlyFrom ?? null,

@@ -4,7 +4,7 @@ import type { Chance, PathResults, RunResults, YearSummary } from '../results/re
 import { inFileOrder } from '../results/summarise.ts';
 import { animals, levels, outcome, patch, quantileCells, quantileColumns, share, year } from './columns.ts';
 import { drawTable, handledTable, observedTable } from './more-run-tables.ts';
-import type { Cell, Column, Table } from './tables.ts';
+import { noUnknownColumn, type Cell, type Column, type Table } from './tables.ts';
 
 export function runTables(model: Model, results: RunResults): readonly Table[] {
   return [
@@ -72,8 +72,9 @@ function outcomeTable({ outcomes }: RunResults): Table {
       share('probability', 'Share of the runs.'),
       share('lower', 'Lower end of the 95 % interval from the number of runs.'),
       share('upper', 'Upper end of the 95 % interval from the number of runs.'),
-      share('lower_unknown', 'Lower end of the 95 % interval from what is not known; empty where it was not drawn.'),
-      share('upper_unknown', 'Upper end of the 95 % interval from what is not known; empty where it was not drawn.'),
+      share('lower_unknown', 'Lower end of the 95 % interval from what is not known; empty where there is none.'),
+      share('upper_unknown', 'Upper end of the 95 % interval from what is not known; empty where there is none.'),
+      noUnknownColumn,
     ],
     rows: outcomes.flatMap(({ name, definition, ever, atEnd }) => [
       [name, definition, 'ever', ...chanceCells(ever)],
@@ -82,8 +83,8 @@ function outcomeTable({ outcomes }: RunResults): Table {
   };
 }
 
-function chanceCells({ probability, interval, intervalFromUnknown }: Chance): readonly Cell[] {
-  const unknown = [intervalFromUnknown?.lower ?? null, intervalFromUnknown?.upper ?? null];
+function chanceCells({ probability, interval, intervalFromUnknown, noUnknown }: Chance): readonly Cell[] {
+  const unknown = [intervalFromUnknown?.lower ?? null, intervalFromUnknown?.upper ?? null, noUnknown ?? null];
   return [probability, interval.lower, interval.upper, ...unknown];
 }
 

@@ -18,6 +18,13 @@ export interface Table {
   readonly rows: readonly (readonly Cell[])[];
 }
 
+export const noUnknownColumn: Column = {
+  name: 'no_unknown',
+  unit: '',
+  meaning:
+    'Why there is no interval from what is not known although it was drawn: `too few draws` (fewer than 39), `nothing unknown` (no such number enters), `within the noise` (the draws differ by no more than their numbers of runs explain).',
+};
+
 export function typeOf({ type, unit }: Column): ColumnType {
   return type ?? (unit === '' ? 'text' : unit === 'year' ? 'integer' : 'number');
 }

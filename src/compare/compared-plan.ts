@@ -29,7 +29,11 @@ export function comparedPlans(run: PlansRun, beside: Beside): readonly ComparedP
         name,
         definition,
         probability: ever.probability,
-        intervals: { runs: ever.interval, unknown: ever.intervalFromUnknown },
+        intervals: {
+          runs: ever.interval,
+          unknown: ever.intervalFromUnknown,
+          ...(ever.noUnknown === undefined ? {} : { noUnknown: ever.noUnknown }),
+        },
         atEnd,
       })),
       animalsAtEnd: lastYear(one),

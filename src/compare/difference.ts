@@ -1,5 +1,7 @@
 // Any two plans in one objective: how far they lie apart in the same futures, and whether they can be told apart at all.
-import type { Interval } from '../results/results.ts';
+import { sameBytes } from '../numeric/bytes.ts';
+import { fromUnknown } from '../results/draws/intervals.ts';
+import type { FromUnknown, Interval } from '../results/results.ts';
 import type { Objective } from './objectives.ts';
 import {
   meanDifferenceFromRuns,
@@ -34,17 +36,27 @@ export function differenceOf(run: PlansRun, { objective, from, to }: Pair, ended
       ? ofShares(run, { objective, from, to }, ended)
       : ofMeans(run, { objective, from, to }, ended);
   if (areSame(run, { objective, from, to })) return { ...names, ...same(found.futures, run.draws.length > 0) };
-  const { estimate, interval, intervalFromUnknown } = found;
-  const apart = excludesZero(interval) && (intervalFromUnknown === null || excludesZero(intervalFromUnknown));
+  const { estimate, interval, intervalFromUnknown: seen } = found;
+  const enters = [from, to].some((plan) => isUnknown(run, plan, objective));
+  const unknown = run.draws.length === 0 ? noneDrawn : fromUnknown(seen, { draws: run.draws.length, enters });
+  // What few draws have seen is no interval, but where it holds 0 nothing is told apart.
+  const apart = excludesZero(interval) && (!enters || seen === null || excludesZero(seen));
   return {
     ...names,
     estimate,
     interval,
-    intervalFromUnknown,
+    ...unknown,
     method: interval.method,
     futures: found.futures,
     toldApart: apart,
   };
+}
+
+const noneDrawn: FromUnknown = { intervalFromUnknown: null };
+
+function isUnknown({ runs }: PlansRun, plan: number, { of }: Objective): boolean {
+  const { model = false, money = false } = runs[plan]?.unknown ?? {};
+  return model || (of === 'money' && money);
 }
 
 export function excludesZero({ lower, upper }: Pick<Estimate, 'lower' | 'upper'>): boolean {
@@ -99,10 +111,9 @@ function named({ lower, upper }: Pick<Estimate, 'lower' | 'upper'>, method: stri
 /** One and the same model down to its last byte, with the same number in every future: no chance is left in it. */
 function areSame({ runs }: PlansRun, { objective, from, to }: Pair): boolean {
   const [a, b] = [runs[from]?.compiled.image, runs[to]?.compiled.image];
-  if (a === undefined || b === undefined || a.byteLength !== b.byteLength) return false;
-  const [left, right] = [new Uint8Array(a), new Uint8Array(b)];
+  if (a === undefined || b === undefined || !sameBytes(a, b)) return false;
   const [before, after] = [objective.values[from], objective.values[to]];
-  return left.every((byte, i) => byte === right[i]) && before?.every((value, i) => value === after?.[i]) === true;
+  return before?.every((value, i) => value === after?.[i]) === true;
 }
 
 function same(futures: PairedCounts | null, drawn: boolean): Omit<PlanDifference, 'outcome' | 'of' | 'from' | 'to'> {

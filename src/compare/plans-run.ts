@@ -8,8 +8,15 @@ import { Ledger } from './ledger.ts';
 import { patchEndsOf, PatchPairs, type PatchEnds, type PatchPair } from './patch-pairs.ts';
 import type { MoneyOf, PlanToRun } from './plan.ts';
 
+/** Where numbers that are not exactly known enter; nowhere where nothing was drawn. */
+export interface UnknownEnters {
+  readonly model: boolean;
+  readonly money: boolean;
+}
+
 export interface PlanRun {
   readonly plan: PlanToRun;
+  readonly unknown: UnknownEnters;
   /** With as many replicates as were finished. */
   readonly compiled: CompiledModel;
   readonly results: RunResults;
@@ -105,10 +112,14 @@ export function keepBatch(
   }
 }
 
+export interface FinishedPlan extends Pick<PlanRun, 'compiled' | 'results'> {
+  /** Absent where nothing was drawn. */
+  readonly unknown?: UnknownEnters;
+}
+
 export function finishPlan(
   { plan, reduction, ledger, patches }: OpenPlan,
-  compiled: CompiledModel,
-  results: RunResults,
+  { compiled, results, unknown = { model: false, money: false } }: FinishedPlan,
 ): PlanRun {
-  return { plan, compiled, results, ledger, reduction, patches: patches.pairs };
+  return { plan, unknown, compiled, results, ledger, reduction, patches: patches.pairs };
 }

@@ -1,5 +1,13 @@
 // What a comparison says, as data: printed by `--json` and read by the page.
-import type { Chance, Interval, Quantiles, ReachedPrecision, RunResults } from '../results/results.ts';
+import type {
+  Chance,
+  FromUnknown,
+  Interval,
+  NoUnknown,
+  Quantiles,
+  ReachedPrecision,
+  RunResults,
+} from '../results/results.ts';
 import type { Better } from './best.ts';
 import type { PairedCounts } from './paired-share.ts';
 import type { PlanAction } from './plan.ts';
@@ -37,7 +45,12 @@ export interface PlanOutcome {
   readonly definition: string;
   /** Of having happened at some count. */
   readonly probability: number;
-  readonly intervals: { readonly runs: Interval; readonly unknown: Interval | null };
+  readonly intervals: {
+    readonly runs: Interval;
+    readonly unknown: Interval | null;
+    /** Why there is none, where it was drawn. */
+    readonly noUnknown?: NoUnknown;
+  };
   readonly atEnd: Chance;
 }
 
@@ -69,7 +82,7 @@ export interface ComparedPlan {
   readonly handled: RunResults['handled'];
 }
 
-export interface PlanDifference {
+export interface PlanDifference extends FromUnknown {
   /** Name of the objective. */
   readonly outcome: string;
   readonly of: 'chance' | 'animals' | 'money';
@@ -78,11 +91,10 @@ export interface PlanDifference {
   /** Under `to` less under `from`. */
   readonly estimate: number;
   readonly interval: Interval;
-  readonly intervalFromUnknown: Interval | null;
   readonly method: string;
   /** Futures by what became of them under the two; null for amounts. */
   readonly futures: PairedCounts | null;
-  /** No interval holds 0. */
+  /** No interval holds 0, nor does what few draws were seen of that from what is not known. */
   readonly toldApart: boolean;
 }
 

@@ -2,6 +2,7 @@
 import { batchesOf } from '../kernel/batch.ts';
 import type { Crew } from '../kernel/crew.ts';
 import type { BatchCounts } from '../kernel/output.ts';
+import type { ActionCost, Sums } from '../model/costs.ts';
 import type { Model } from '../model/model.ts';
 import { openPooled, summarise, withSettings, type CrewOptions } from '../pipeline.ts';
 import { DrawCollector } from '../results/draws/collect.ts';
@@ -26,6 +27,8 @@ interface OpenDraws {
   readonly opened: readonly OpenPlan[];
   readonly collectors: readonly DrawCollector[];
   readonly finished: { first: number; futures: number }[];
+  /** By plan the different prices that its draws had. */
+  readonly prices: readonly Set<string>[];
 }
 
 /** A draw that one plan cannot have is left out of all. */
@@ -41,7 +44,7 @@ export async function runDraws(
   const number = uncertainty.table === null ? most : Math.min(most, uncertainty.table.length);
   const opened = openPlans(plans, replicates * number, openPooled);
   const collectors = opened.map(({ plan, reduction }) => new DrawCollector(plan.compiled.model, reduction));
-  const open: OpenDraws = { base, opened, collectors, finished: [] };
+  const open: OpenDraws = { base, opened, collectors, finished: [], prices: opened.map(() => new Set<string>()) };
   let [told, done, stopped] = [0, 0, false];
   let precision: ReachedPrecision | null = null;
   const onBatch = (count: number): void =>
@@ -59,8 +62,11 @@ export async function runDraws(
   if (open.finished.length === 0) return null;
   const runs = opened.flatMap((one, i) => {
     const compiled = stopped ? withSettings(one.plan.compiled, { draws: done }) : one.plan.compiled;
-    const results = collectors[i]?.withDraws(summarise(compiled, one.reduction));
-    return results === undefined ? [] : [finishPlan(one, compiled, results)];
+    const collector = collectors[i];
+    if (collector === undefined) return [];
+    const results = collector.withDraws(summarise(compiled, one.reduction));
+    const unknown = { model: collector.enters, money: (open.prices[i]?.size ?? 0) > 1 };
+    return [finishPlan(one, { compiled, results, unknown })];
   });
   const futures = open.finished.length * replicates;
   return { runs, draws: open.finished, futures, precision: stopped ? null : precision };
@@ -74,7 +80,7 @@ interface Draw {
 
 /** Whether it was finished, be it by telling that it cannot be had. */
 async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: Draw): Promise<boolean> {
-  const { base, opened, collectors, finished } = open;
+  const { base, opened, collectors, finished, prices } = open;
   const own = opened.map(({ plan }) => plan.under(values));
   const failed = own.find((one): one is PlanModel & { compiled: null } => one.compiled === null);
   if (failed !== undefined) {
@@ -95,7 +101,15 @@ async function runDraw(crew: Crew, open: OpenDraws, { draw, values, options }: D
     keepBatch(opened, ofPlans, { offset, money });
     for (const batch of ofPlans) crew.release?.(batch);
   }
-  for (const collector of collectors) collector.finish(draw, values);
+  collectors.forEach((collector, i) => {
+    collector.finish(draw, values, images[i] ?? new ArrayBuffer(0));
+    prices[i]?.add(JSON.stringify(own[i]?.compiled?.cost.actions.map(pricesOf) ?? null));
+  });
   finished.push({ first: offset, futures });
   return true;
+}
+
+function pricesOf({ fixed, perAnimal }: ActionCost): unknown {
+  const texts = ({ least, middle, most }: Sums) => [[...least], [...middle], [...most]];
+  return [texts(fixed), perAnimal === null ? null : texts(perAnimal)];
 }

@@ -56,7 +56,8 @@ async function runTogether(crew: Crew, plans: readonly PlanToRun[], options: Cre
   const runs = opened.map((one) => {
     const { compiled } = one.plan;
     const cut = stopped ? withSettings(compiled, { replicates: done }) : compiled;
-    return finishPlan(one, cut, summarise({ ...cut, model: { ...cut.model, replicates: done } }, one.reduction));
+    const results = summarise({ ...cut, model: { ...cut.model, replicates: done } }, one.reduction);
+    return finishPlan(one, { compiled: cut, results });
   });
   return { runs, draws: [], futures: done, precision: stopped ? null : precision };
 }

@@ -1,4 +1,5 @@
 // One sentence on what the results support, under which rule, and how strongly. The rule is told, since it is not the only one.
+import { enoughDraws } from '../results/draws/intervals.ts';
 import type {
   ComparedPlan,
   Comparison,
@@ -19,9 +20,6 @@ export interface ToState {
   /** Of what is not known; 0 where it was not drawn. */
   readonly draws: number;
 }
-
-/** Of fewer draws the middle 95 % cannot be told from all of them: each end leaves out one in forty. */
-const enoughDraws = 39;
 
 export function statementOf(to: ToState): Statement {
   const [objective] = to.objectives;

@@ -1,7 +1,7 @@
 // What `skein compare --json` prints.
 import * as Type from 'typebox';
 import * as part from './parts.ts';
-import { Chance, Handled, Interval, Precision } from './results.ts';
+import { Chance, Handled, Interval, NoUnknown, Precision } from './results.ts';
 
 const scenario = part.text('Name of the plan.');
 const outcome = part.text('Name of the outcome or other objective.');
@@ -57,6 +57,7 @@ const Plan = Type.Object({
       intervals: Type.Object({
         runs: Interval,
         unknown: part.orNull(Interval),
+        noUnknown: NoUnknown,
       }),
       atEnd: Chance,
     }),
@@ -89,6 +90,7 @@ const Difference = Type.Object({
   estimate: part.maybe('Under `to` less under `from`, in the same futures.'),
   interval: DifferenceInterval,
   intervalFromUnknown: part.orNull(DifferenceInterval),
+  noUnknown: NoUnknown,
   method: part.text('How the interval was found, with the published source.'),
   futures: part.orNull(
     Type.Object(

@@ -10,12 +10,20 @@ export const Interval = Type.Object({
   from: Type.Union([Type.Literal('the number of runs'), Type.Literal('what is not known')]),
 });
 
+export const NoUnknown = Type.Optional(
+  Type.Union([Type.Literal('too few draws'), Type.Literal('nothing unknown'), Type.Literal('within the noise')], {
+    description:
+      'Why there is no interval from what is not known although it was drawn: fewer than 39 draws; no such number enters; the draws differ by no more than their numbers of runs explain.',
+  }),
+);
+
 export const Chance = Type.Object({
   probability: part.maybeShare('Share of the finished runs.'),
   interval: Interval,
   intervalFromUnknown: Type.Union([Interval, Type.Null()], {
-    description: 'From what is not known; null where the model gives no uncertainty.',
+    description: 'From what is not known; null where it was not drawn, or says nothing.',
   }),
+  noUnknown: NoUnknown,
 });
 
 const YearSummary = Type.Object({

@@ -1,6 +1,7 @@
 // The answer in sentences, the same on the page and in the terminal: what happens in how many futures, how sure the number
 // is and of what, and whose call the risk is.
-import type { Chance, OutcomeResult, RunResults } from '../results/results.ts';
+import { enoughDraws } from '../results/draws/intervals.ts';
+import type { Chance, NoUnknown, OutcomeResult, RunResults } from '../results/results.ts';
 import { of100, percent, plain, whole } from '../view/number.ts';
 
 export interface Answer {
@@ -55,22 +56,34 @@ function runsSentence(chance: Chance, results: RunResults): string {
   return `From the number of runs alone (${runs}), the chance lies between ${percent(lower)} and ${percent(upper)} (${how}).`;
 }
 
-function unknownSentence({ intervalFromUnknown }: Chance, { notDrawn, draws }: RunResults): string {
+function unknownSentence({ intervalFromUnknown, noUnknown }: Chance, { notDrawn, draws }: RunResults): string {
   if (notDrawn) {
     return `The model says how sure its numbers are, but what is not known was not drawn: \`--draws 200\` shows how far the answer
 could move for that reason.`.replaceAll('\n', ' ');
   }
+  const run = plain((draws?.number ?? 0) - (draws?.failed ?? 0));
+  if (noUnknown !== undefined) return `${noneWords(noUnknown, run)}${failedDraws(draws)}`;
   if (intervalFromUnknown === null) {
     return `The model gives no uncertainty for its numbers, so how far the answer could move because they are not exactly known is
 in none of the intervals here.`.replaceAll('\n', ' ');
   }
   const { lower, upper, level } = intervalFromUnknown;
-  const run = plain((draws?.number ?? 0) - (draws?.failed ?? 0));
   return `From what is not known about the numbers of the model, it lies between ${percent(lower)} and ${percent(upper)}
 (${plain(level * 100)}\u00a0%, ${run} draws of them). No number of runs narrows that.${failedDraws(draws)}`.replaceAll(
     '\n',
     ' ',
   );
+}
+
+function noneWords(reason: NoUnknown, run: string): string {
+  switch (reason) {
+    case 'too few draws':
+      return `What is not known about the numbers of the model was drawn ${run} times, too few to say how far the answer could move for that reason: from ${enoughDraws} draws on it is said.`;
+    case 'nothing unknown':
+      return 'No number that is not exactly known enters here: the draws of what is not known move nothing.';
+    case 'within the noise':
+      return `Over ${run} draws of what is not known it differs by no more than their numbers of runs explain.`;
+  }
 }
 
 function failedDraws(draws: RunResults['draws']): string {

@@ -11,6 +11,7 @@ import { sparkLine } from './spark-line.ts';
 import { whenWords } from './when-words.ts';
 import { fittedColumns } from './fitted-columns.ts';
 import { bold, dim, joinBlocks, printable, room, wrap, type TextStyle } from './terminal.ts';
+import { meaningsOf } from './unknown-words.ts';
 
 export interface RunTextStyle extends TextStyle {
   /** What one individual is called: 'females' or 'animals'. */
@@ -54,12 +55,21 @@ function outcomeTable(results: RunResults, style: TextStyle): string {
     return told.length === 0 ? [] : [wrap(`${outcome.name}: ${told.join('; ')}`, style)];
   });
   const table = fittedColumns(['chance of', 'is', '95 % from runs', 'from unknown'], rows, style);
-  return [table, ...(definitions.length > 0 ? ['', ...definitions] : [])].join('\n');
+  const reasons = meaningsOf(results.outcomes.flatMap(({ ever, atEnd }) => [ever.noUnknown, atEnd.noUnknown]));
+  return [
+    table,
+    ...(reasons === '' ? [] : [wrap(reasons, style)]),
+    ...(definitions.length > 0 ? ['', ...definitions] : []),
+  ].join('\n');
 }
 
-function chanceCells({ probability, interval, intervalFromUnknown }: Chance, unknown: string): readonly string[] {
+function chanceCells(
+  { probability, interval, intervalFromUnknown, noUnknown }: Chance,
+  none: string,
+): readonly string[] {
   const range = probability === 0 ? `at most ${percent(interval.upper)}` : between(interval);
-  return [percent(probability), range, intervalFromUnknown === null ? unknown : between(intervalFromUnknown)];
+  const unknown = intervalFromUnknown === null ? (noUnknown ?? none) : between(intervalFromUnknown);
+  return [percent(probability), range, unknown];
 }
 
 function between({ lower, upper }: { readonly lower: number; readonly upper: number }): string {

@@ -10,12 +10,23 @@ export interface Interval {
   readonly from: 'the number of runs' | 'what is not known';
 }
 
-export interface Chance {
+/**
+ * Why there is no interval from what is not known although it was drawn: its ends are not seen in so few draws; no number that is not
+ * exactly known enters; the draws differ by no more than their numbers of runs explain.
+ */
+export type NoUnknown = 'too few draws' | 'nothing unknown' | 'within the noise';
+
+export interface FromUnknown {
+  /** From what is not known; null where it was not drawn, or says nothing. */
+  readonly intervalFromUnknown: Interval | null;
+  /** Absent where there is one, and where nothing was drawn. */
+  readonly noUnknown?: NoUnknown;
+}
+
+export interface Chance extends FromUnknown {
   readonly probability: number;
   /** From the number of runs. */
   readonly interval: Interval;
-  /** From what is not known; null where the model gives no uncertainty. */
-  readonly intervalFromUnknown: Interval | null;
 }
 
 export interface Quantiles {

@@ -5,6 +5,7 @@ import type { PlanToRun } from '../../src/compare/plan.ts';
 import type { Comparison } from '../../src/compare/results.ts';
 import { runPlans } from '../../src/compare/run-plans.ts';
 import { runModel } from '../../src/pipeline.ts';
+import { fromUnknown } from '../../src/results/draws/intervals.ts';
 import { alone } from '../../src/threads/alone.ts';
 import { openThreads } from '../../src/threads/threads.ts';
 import { planOf } from './plans.ts';
@@ -197,7 +198,26 @@ test('where what is not known is drawn, the draw is the unit and all plans meet 
   const fewer = both.map(({ name }, p) =>
     planOf({ name, text: drawn(p === 0 ? 'adults' : 'adults + 0.1').replace('draws: 40', 'draws: 10') }),
   );
-  const rough = (await compared(fewer, { money: null })).statement;
-  expect(rough.strength).toBe('limited');
-  expect(rough.reservations).toEqual([expect.stringMatching(/^What is not known was drawn 10 times only/)]);
+  const rough = await compared(fewer, { money: null });
+  expect(rough.statement.strength).toBe('limited');
+  expect(rough.statement.reservations).toEqual([expect.stringMatching(/^What is not known was drawn 10 times only/)]);
+  // The ends of the middle 95 % are not seen in ten draws.
+  for (const { outcomes } of rough.scenarios)
+    expect(outcomes[0]!.intervals).toMatchObject({ unknown: null, noUnknown: 'too few draws' });
+  expect(rough.differences.every(({ noUnknown }) => noUnknown === 'too few draws')).toBe(true);
+  // What is drawn for another plan is nothing to the one that does not rest on it.
+  const known = [planOf({ name: 'as now', text: drawn('0.6') }), both[1]!];
+  const half = await compared(known, { money: null });
+  expect(half.scenarios[0]!.outcomes[0]!.intervals).toMatchObject({ unknown: null, noUnknown: 'nothing unknown' });
+  expect(half.scenarios[1]!.outcomes[0]!.intervals.unknown).not.toBeNull();
+  expect(half.differences.find(({ outcome }) => outcome === 'few')!.intervalFromUnknown).not.toBeNull();
+});
+
+test('draws that differ by no more than their runs explain are no interval without width', () => {
+  const alike = { lower: 0.14, upper: 0.14, level: 0.95, method: '', from: 'what is not known' as const };
+  const apart = { ...alike, upper: 0.2 };
+  expect(fromUnknown(alike, { draws: 60, enters: true }).noUnknown).toBe('within the noise');
+  expect(fromUnknown(apart, { draws: 38, enters: true }).noUnknown).toBe('too few draws');
+  expect(fromUnknown(apart, { draws: 39, enters: true })).toEqual({ intervalFromUnknown: apart });
+  expect(fromUnknown(apart, { draws: 200, enters: false }).noUnknown).toBe('nothing unknown');
 });

@@ -2,7 +2,17 @@
 import type { Comparison, ObjectiveWords, PlanDifference } from '../../compare/results.ts';
 import { fittedColumns } from '../fitted-columns.ts';
 import { joinBlocks, wrap, type TextStyle } from '../terminal.ts';
-import { between, bestWords, chanceWords, change, priceOfWords, priceWords, shareOf100 } from './words.ts';
+import {
+  between,
+  bestWords,
+  chanceWords,
+  change,
+  priceOfWords,
+  priceWords,
+  shareOf100,
+  isDrawn,
+  unknownWords,
+} from './words.ts';
 import type { CompareTextStyle } from './style.ts';
 
 export function detailsText(comparison: Comparison, style: CompareTextStyle): string {
@@ -38,13 +48,13 @@ export function differencesTable(
 ): string {
   const prices = gains?.prices ?? null;
   if (own.length === 0) return '';
-  const drawn = own.some(({ intervalFromUnknown }) => intervalFromUnknown !== null);
+  const drawn = own.some(isDrawn);
   const unit = { chance: 'points of a hundred', animals: style.animals, money: 'money now' }[of];
   const rows = own.map((one, k) => [
     gains === null ? `${one.to} against ${one.from}` : one.to,
     change(one),
     between(one.of, one.interval),
-    ...(drawn ? [one.intervalFromUnknown === null ? '' : between(one.of, one.intervalFromUnknown)] : []),
+    ...(drawn ? [unknownWords(one)] : []),
     apart(one),
     ...(prices === null ? [] : [prices[k] ?? '']),
   ]);

@@ -3,6 +3,7 @@ import type { Comparison, ComparedPlan } from '../../compare/results.ts';
 import { plain, whole } from '../../view/number.ts';
 import { fittedColumns } from '../fitted-columns.ts';
 import { wrap } from '../terminal.ts';
+import { meaningsOf } from '../unknown-words.ts';
 import type { CompareTextStyle } from './style.ts';
 import { bestWords, chanceWords, costWords, courseWords, moneyWords, rangeWords } from './words.ts';
 
@@ -23,9 +24,11 @@ export function chancesText({ scenarios, objectives, notDrawn, draws }: Comparis
   const first = [wrap(`Of 100 futures, with the 95 % interval from the number of runs${unknown}:`, style), own];
   if (draws === undefined) return first.join('\n');
   const over = table(({ outcomes }) =>
-    outcomes.map(({ intervals }) => (intervals.unknown === null ? '' : rangeWords(intervals.unknown))),
+    outcomes.map(({ intervals: { unknown: own, noUnknown } }) => (own === null ? (noUnknown ?? '') : rangeWords(own))),
   );
-  return [...first, '', wrap('Their 95 % intervals from what is not known:', style), over].join('\n');
+  const reasons = meaningsOf(scenarios.flatMap(({ outcomes }) => outcomes.map(({ intervals }) => intervals.noUnknown)));
+  const told = [wrap('Their 95 % intervals from what is not known:', style), over];
+  return [...first, '', ...told, ...(reasons === '' ? [] : [wrap(reasons, style)])].join('\n');
 }
 
 export function amountsText(comparison: Comparison, style: CompareTextStyle): string {

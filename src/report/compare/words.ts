@@ -57,6 +57,16 @@ export function between(
   return `${signed(of, lower)} to ${signed(of, upper)}`;
 }
 
+/** Whether what is not known was drawn, be it that there is no interval from it. */
+export function isDrawn({ intervalFromUnknown, noUnknown }: PlanDifference): boolean {
+  return intervalFromUnknown !== null || noUnknown !== undefined;
+}
+
+/** The interval from what is not known, or why there is none. */
+export function unknownWords({ of, intervalFromUnknown, noUnknown }: PlanDifference): string {
+  return intervalFromUnknown === null ? (noUnknown ?? '') : between(of, intervalFromUnknown);
+}
+
 function signed(of: PlanDifference['of'], value: number): string {
   const small = of === 'animals' && Math.abs(value) < 0.5;
   const rounded = small ? Math.abs(value).toFixed(1) : amount(of, Math.abs(value));

@@ -4,7 +4,7 @@ import { mark, type Markup } from '../../view/markup.ts';
 import { plain } from '../../view/number.ts';
 import { drawWhiskers, type Whisker, type WhiskerChart } from '../../view/plans/whiskers.ts';
 import { drawTable, type Row } from '../../view/table.ts';
-import { between, change } from '../compare/words.ts';
+import { between, change, unknownWords } from '../compare/words.ts';
 import { section } from '../section/section.ts';
 
 const widths = { wide: 720, narrow: 340 } as const;
@@ -78,7 +78,7 @@ function table({ differences }: Comparison): Markup {
   const rows = differences.map((one): Row => {
     const { futures } = one;
     const apart = futures === null ? '' : `${plain(futures.onlyFrom)} / ${plain(futures.onlyTo)}`;
-    const unknown = one.intervalFromUnknown === null ? '' : between(one.of, one.intervalFromUnknown);
+    const unknown = unknownWords(one);
     return [
       one.outcome,
       mark`<bdi>${one.to}</bdi> less <bdi>${one.from}</bdi>`,

@@ -5,6 +5,7 @@ import { percent, plain, whole } from '../../view/number.ts';
 import { drawTable, scrolling, type Row } from '../../view/table.ts';
 import { between, change, costWords, courseWords, priceOfWords, priceWords, shareOf100 } from '../compare/words.ts';
 import { prose, section } from '../section/section.ts';
+import { meaningsOf } from '../unknown-words.ts';
 
 export function plansSection(comparison: Comparison, animals: string): Markup {
   return section('plans', 'The plans', mark`${plansTable(comparison, animals)}${actionList(comparison)}`);
@@ -55,9 +56,9 @@ function chanceCell({ notDrawn, differences, scenarios }: Comparison, plan: Comp
   const found = plan.outcomes.find(({ name }) => name === outcome);
   if (found === undefined) return '';
   const { probability, intervals } = found;
-  const { runs, unknown: drawn } = intervals;
+  const { runs, unknown: drawn, noUnknown } = intervals;
   const range = probability === 0 ? `at most ${percent(runs.upper)}` : briefly(runs);
-  const none = notDrawn === true ? 'not drawn' : 'none given';
+  const none = noUnknown ?? (notDrawn === true ? 'not drawn' : 'none given');
   const second = drawn === null ? none : briefly(drawn);
   const against = differences.find(
     (one) => one.outcome === outcome && one.from === scenarios[0]?.name && one.to === plan.name,
@@ -95,7 +96,7 @@ function actionList({ scenarios }: Comparison): Markup | null {
   return items.length === 0 ? null : mark`<ul class="actions">${items}</ul>`;
 }
 
-function notes({ objectives, money, afterHorizon }: Comparison): Markup {
+function notes({ objectives, money, afterHorizon, scenarios }: Comparison): Markup {
   const definitions = objectives
     .filter(({ of }) => of === 'chance')
     .map(({ name, definition }) => mark`“<bdi>${name}</bdi>”: <bdi>${definition}</bdi>. `);
@@ -105,7 +106,9 @@ function notes({ objectives, money, afterHorizon }: Comparison): Markup {
       : `Costs are means over the futures in ${money.currency}${money.priceYear === null ? '' : ` at prices of ${money.priceYear}`}, discounted by ${percent(money.discount)} a year, the first year not. `;
   const beaten =
     'A plan is beaten in everything where another is at least as good in every chance and in cost, and better in one; the small numbers say how often that is so with as many other futures. ';
-  return mark`<p>${definitions}${prices}${beaten}${prose(afterHorizon)}</p>`;
+  const none = meaningsOf(scenarios.flatMap(({ outcomes }) => outcomes.map(({ intervals }) => intervals.noUnknown)));
+  const unknown = none === '' ? '' : `Where no interval from what is not known stands, ${none} `;
+  return mark`<p>${definitions}${prices}${unknown}${beaten}${prose(afterHorizon)}</p>`;
 }
 
 /** How sure it is which plan is best in what, and what a gain costs. */

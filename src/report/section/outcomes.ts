@@ -63,8 +63,9 @@ function capital(text: string): string {
   return `${text.slice(0, 1).toUpperCase()}${text.slice(1)}`;
 }
 
-function chanceCells(of: string, { probability, interval, intervalFromUnknown }: Chance, none: string): Markup {
-  const unknown = intervalFromUnknown === null ? none : range(intervalFromUnknown, null);
+function chanceCells(of: string, chance: Chance, none: string): Markup {
+  const { probability, interval, intervalFromUnknown, noUnknown } = chance;
+  const unknown = intervalFromUnknown === null ? (noUnknown ?? none) : range(intervalFromUnknown, null);
   return mark`<th scope="row" class="words">${of}</th><td><strong>${percent(probability)}</strong></td>
 <td>${range(interval, probability)}</td><td class="words">${unknown}</td>`;
 }

@@ -3,7 +3,8 @@ import type { BatchCounts } from '../../kernel/output.ts';
 import type { Model } from '../../model/model.ts';
 import type { Reduction } from '../reduction/reduction.ts';
 import type { Chance, DrawRow, OutcomeResult, RunResults } from '../results.ts';
-import { bandOverDraws, intervalFromRuns, intervalFromUnknown, type DrawCount } from './intervals.ts';
+import { Entering } from './entering.ts';
+import { bandOverDraws, fromUnknown, intervalFromRuns, intervalFromUnknown, type DrawCount } from './intervals.ts';
 import type { DrawnValues } from './plan.ts';
 
 /** Runs and hits of one draw that could be run, by outcome. */
@@ -21,6 +22,7 @@ export class DrawCollector {
   readonly #reduction: Reduction;
   readonly #rows: DrawRow[] = [];
   readonly #finished: FinishedDraw[] = [];
+  readonly #entering = new Entering();
   #offset = 0;
   #before: Counted;
 
@@ -35,8 +37,9 @@ export class DrawCollector {
     this.#reduction.take({ ...batch, first: batch.first + this.#offset, stopped });
   }
 
-  /** All batches of a draw were taken. */
-  finish(draw: number, values: DrawnValues): void {
+  /** All batches of a draw were taken, which ran this image. */
+  finish(draw: number, values: DrawnValues, image: ArrayBuffer): void {
+    this.#entering.see(image);
     const after = counted(this.#reduction);
     const less = (now: Float64Array, then: Float64Array | undefined) => now.map((value, t) => value - (then?.[t] ?? 0));
     const runs = after.runs - this.#before.runs;
@@ -53,6 +56,11 @@ export class DrawCollector {
   /** A draw that no model can have. */
   fail(draw: number, values: DrawnValues, failure: string): void {
     this.#rows.push({ draw: draw + 1, values, failure, ever: this.#model.outcomes.map(() => null) });
+  }
+
+  /** Whether what is not known enters the model. */
+  get enters(): boolean {
+    return this.#entering.enters;
   }
 
   /** Draws that could be run. */
@@ -85,8 +93,8 @@ export class DrawCollector {
     const band = bandOverDraws(curves);
     return {
       ...outcome,
-      ever: overDraws(outcome.ever, ever),
-      atEnd: overDraws(outcome.atEnd, atEnd),
+      ever: overDraws(outcome.ever, ever, this.enters),
+      atEnd: overDraws(outcome.atEnd, atEnd, this.enters),
       byYear: outcome.byYear.map((year) => ({
         ...year,
         lower: Math.max(0, year.ever - band),
@@ -96,8 +104,9 @@ export class DrawCollector {
   }
 }
 
-function overDraws({ probability }: Chance, draws: readonly DrawCount[]): Chance {
-  return { probability, interval: intervalFromRuns(draws), intervalFromUnknown: intervalFromUnknown(draws) };
+function overDraws({ probability }: Chance, draws: readonly DrawCount[], enters: boolean): Chance {
+  const unknown = fromUnknown(intervalFromUnknown(draws), { draws: draws.length, enters });
+  return { probability, interval: intervalFromRuns(draws), ...unknown };
 }
 
 /** Of the replicates that came and were not stopped. */

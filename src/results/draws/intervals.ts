@@ -1,7 +1,25 @@
 // Intervals over draws. The draw is the unit: runs of one draw share its values, so that they are no independent evidence of
 // what is not known.
-import type { Interval } from '../results.ts';
+import type { FromUnknown, Interval } from '../results.ts';
 import { wilson } from '../wilson.ts';
+
+/** Of fewer draws the middle 95 % cannot be told from all of them: each end leaves out one in forty. */
+export const enoughDraws = 39;
+
+export interface Drawn {
+  readonly draws: number;
+  /** Whether any number that is not exactly known enters what was run. */
+  readonly enters: boolean;
+}
+
+/** What may be told of an interval over draws, or why nothing of it. */
+export function fromUnknown(interval: Interval | null, { draws, enters }: Drawn): FromUnknown {
+  if (draws > 1 && !enters) return { intervalFromUnknown: null, noUnknown: 'nothing unknown' };
+  if (draws < enoughDraws) return { intervalFromUnknown: null, noUnknown: 'too few draws' };
+  if (interval === null || !(interval.lower < interval.upper))
+    return { intervalFromUnknown: null, noUnknown: 'within the noise' };
+  return { intervalFromUnknown: interval };
+}
 
 /** Hits and finished runs of one draw. */
 export interface DrawCount {

@@ -20,6 +20,7 @@ import type { PlanCost } from '../../model/costs.ts';
 import { ModelMemory } from '../../model/memory.ts';
 import { asNow, layActions, type Laid } from '../../spec/plans/lay.ts';
 import { withScenario } from '../../spec/plans/scenarios.ts';
+import { sameBytes } from '../../numeric/bytes.ts';
 import type { Spec } from '../../spec/schema/spec.ts';
 import type { Factor, Value } from '../design/factor.ts';
 import { namedFactors, type NamedFactors } from './named-factors.ts';
@@ -111,12 +112,6 @@ function isCompiled(moved: readonly MovedPlan[], { spec, scenarios }: Compiling)
     const own = moved[s];
     return compiled !== null && own !== undefined && sameBytes(own.image, compiled.image) && sameAsked(own, compiled);
   });
-}
-
-function sameBytes(a: ArrayBuffer, b: ArrayBuffer): boolean {
-  if (a.byteLength !== b.byteLength) return false;
-  const [left, right] = [new Uint8Array(a), new Uint8Array(b)];
-  return left.every((byte, i) => byte === right[i]);
 }
 
 /** What is asked of the runs, and what they cost, stand in no image. */
