@@ -24,6 +24,9 @@ const drawnFrom: ReadonlyMap<number, readonly Operand[]> = new Map([
       { word: layout.strikeOver, rows: 0 },
     ],
   ],
+  // Nothing of these lasts: they are worked out anew in every step of every image.
+  [layout.opResponse, []],
+  [layout.opDrivers, []],
 ]);
 
 interface Operand {
@@ -47,7 +50,9 @@ export function weatherSource(image: ArrayBuffer): string {
   for (let at = 0; at < program.length; at += layout.recordWords) {
     const word = (i: number): number => program[at + i] ?? layout.none;
     const opcode = word(layout.recordOpcode);
-    for (const { word: operand, rows } of drawnFrom.get(opcode) ?? []) {
+    const operands = drawnFrom.get(opcode);
+    if (operands === undefined) throw new Error(`What lasts of the condition ${opcode} is not known.`);
+    for (const { word: operand, rows } of operands) {
       const value = word(operand);
       const own =
         rows === 0 ? String(value) : Array.from({ length: rows }, (_, k) => (value < 0 ? '' : wordsOf(value + k)));
