@@ -120,19 +120,30 @@ test.each([
   expect(place.text.slice(place.column - 1).startsWith(word)).toBe(true);
 });
 
-test('percent are a share, whose standard error is one of a share', () => {
-  const moves =
-    'moves: { kind: move, from: North fen, to: South fen, number: { adult: 6 }, after: natal, handling-survival: ';
-  const told = [
-    '{ value: 95 %, uncertainty: { standard-error: 2 % } }',
-    '{ value: 0.95, uncertainty: { standard-error: 0.02 } }',
-  ];
+const moves =
+  'moves: { kind: move, from: North fen, to: South fen, number: { adult: 6 }, after: natal, handling-survival: ';
+
+test.each([
+  ['standard-error: 2 %', 'standard-error: 0.02', 'beta'],
+  ['interval: [90 %, 98 %]', 'interval: [0.9, 0.98]', 'beta'],
+  ['uniform: [0.9, 98 %]', 'uniform: [0.9, 0.98]', 'uniform'],
+  ['triangular: [90 %, 98 %]', 'triangular: [0.9, 0.98]', 'triangular'],
+])('percent are a share, in how sure it is, too: %s', (inPercent, inShares, shape) => {
+  const told = [`{ value: 95 %, uncertainty: { ${inPercent} } }`, `{ value: 0.95, uncertainty: { ${inShares} } }`];
   const [percent, share] = told.map((number) => {
     const { model } = compiledOf(fens({ actions: `  ${moves}${number} }\n`, scenarios: '  plan: [moves]\n' }), 'plan');
     return model.uncertainty!.parameters;
   });
-  expect(share![0]).toMatchObject({ name: 'moves_handling_survival', value: 0.95, distribution: { shape: 'beta' } });
+  expect(share![0]).toMatchObject({ name: 'moves_handling_survival', value: 0.95, distribution: { shape } });
   expect(percent).toEqual(share);
+});
+
+test('ends that were meant in percent are told', () => {
+  const number = '{ value: 95 %, uncertainty: { interval: [90, 98] } }';
+  const { diagnostics } = tryText(fens({ actions: `  ${moves}${number} }\n`, scenarios: '  plan: [moves]\n' }));
+  expect(diagnostics.map(({ code, fix }) => [code, fix])).toEqual([
+    ['impossible-uncertainty', 'If percent was meant, write [90 %, 98 %].'],
+  ]);
 });
 
 test('a name that is taken is told', () => {

@@ -123,6 +123,11 @@ test('a mistake in a section that may look in several ways is told for the one t
   expect(start('start:')).toEqual(['61 missing-value']);
 });
 
+test('where percent are not taken, the share is told', () => {
+  const { diagnostics } = readSpec(wholeText.replace(/^run: .*$/mu, 'run: { precision: 2 % }'), 'test.yaml');
+  expect(diagnostics.map(({ code, fix }) => [code, fix])).toEqual([['wrong-type', 'Write it as a share: 0.02.']]);
+});
+
 test('an expression in quotes has its mistake at the right character', () => {
   const { diagnostics } = readSpec(wholeText.replace('"min(0.5, cover)"', '"min(0.5, cover"'), 'hare.yaml');
   const [one] = diagnostics as [Diagnostic];

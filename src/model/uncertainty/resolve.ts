@@ -84,11 +84,17 @@ function distributionIn(context: Context, { spec, path, value, kind }: Asked): U
   }
   const key = given[0] ?? 'interval';
   const ends = spec.interval ?? spec.uniform ?? spec.triangular ?? [];
-  const [low = NaN, high = NaN] = ends;
+  const [low = NaN, high = NaN] = ends.map((end, i) =>
+    context.numbers.value(end, [...path, key, i], { year: context.time.firstYear }),
+  );
+  if (Number.isNaN(low) || Number.isNaN(high)) return null;
   if (!(low < high && (key === 'uniform' || (low <= value && value <= high)))) {
     fail(context, 'impossible-uncertainty', [...path, key], {
       message: `The ${key} of a number is its lower and its upper end, with the value between them`,
-      details: { found: `${low} to ${high} around ${value}` },
+      details: {
+        found: `${low} to ${high} around ${value}`,
+        ...(value < 1 && low > 1 && high <= 100 ? { fix: `If percent was meant, write [${low} %, ${high} %].` } : {}),
+      },
     });
     return null;
   }

@@ -17,7 +17,7 @@ export function sayNumbers({ parameters = {} }: Spec): Say {
 
 function doubtWords({ 'standard-error': error, interval, uniform, triangular }: UncertainSpec): string {
   if (error !== undefined) return `standard error ${error}`;
-  const [low = NaN, high = NaN] = interval ?? uniform ?? triangular ?? [];
+  const [low = '', high = ''] = interval ?? uniform ?? triangular ?? [];
   return `${interval === undefined ? 'somewhere from' : '95 % interval'} ${low} to ${high}`;
 }
 

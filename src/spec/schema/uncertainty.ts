@@ -4,6 +4,9 @@ import { expression } from './values.ts';
 
 const two = { minItems: 2, maxItems: 2 };
 
+/** An end of a range, as the standard error is written: as a share or in percent, or an expression. */
+const end = expression({ description: 'An end of it.', examples: [0.66], 'x-unit': 'that of the number' });
+
 export const Uncertain = Type.Object(
   {
     'standard-error': Type.Optional(
@@ -14,15 +17,15 @@ export const Uncertain = Type.Object(
       }),
     ),
     interval: Type.Optional(
-      Type.Array(Type.Number(), {
+      Type.Array(end, {
         ...two,
         title: 'two numbers',
         description: 'A 95 % interval of the estimate, around the value.',
-        examples: ['[0.66, 0.81]'],
+        examples: ['[0.66, 0.81]', '[66 %, 81 %]'],
       }),
     ),
     uniform: Type.Optional(
-      Type.Array(Type.Number(), {
+      Type.Array(end, {
         ...two,
         title: 'two numbers',
         description: 'Anything between these two is as likely.',
@@ -30,7 +33,7 @@ export const Uncertain = Type.Object(
       }),
     ),
     triangular: Type.Optional(
-      Type.Array(Type.Number(), {
+      Type.Array(end, {
         ...two,
         title: 'two numbers',
         description: 'The least and the most that it can be; the value is the likeliest.',

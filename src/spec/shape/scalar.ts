@@ -112,8 +112,10 @@ function foundIn(node: SourceNode): string {
 function adviceFor(node: SourceNode, shape: Shape): string | undefined {
   if (node.kind !== 'scalar') return undefined;
   if (sortOf(shape) === 'list') return `Write a list: [${node.source}].`;
-  const number = /^(-?\d[\d.]*)\s{0,9}\S{0,20}$/u.exec(node.source)?.[1];
+  const [, number, behind] = /^(-?\d[\d.]*)\s{0,9}(\S{0,20})$/u.exec(node.source) ?? [];
   if (sortOf(shape) !== 'number' || number === undefined) return undefined;
-  const unit = shape['x-unit'] === undefined ? '' : `, in ${shape['x-unit']}`;
+  const { 'x-unit': own } = shape;
+  if (behind === '%' && (own === undefined || own === 'share')) return `Write it as a share: ${Number(number) / 100}.`;
+  const unit = own === undefined ? '' : `, in ${own}`;
   return `Write the number alone, without quotes or a unit${unit}: ${number}.`;
 }
