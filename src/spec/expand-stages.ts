@@ -17,15 +17,9 @@ const kinds: Readonly<Record<string, Shape>> = namedSchemas;
 
 /** Classes of single years are called `juvenile 1`, `juvenile 2` and so on; those names may be used in the spec, too. */
 export function expandStages(spec: Spec): Expanded {
-  const stages = Object.entries(spec.duration ?? {}).filter(([, { as }]) => as === 'expanded');
-  if (stages.length === 0) return { spec, findings: [] };
   const findings: Finding[] = [];
-  const names = new Map(
-    stages.flatMap(([name, { years }]): [string, readonly string[]][] => {
-      const own = yearsOf(spec, { name, years }, findings);
-      return own === null ? [] : [[name, own]];
-    }),
-  );
+  const names = singleYears(spec, findings);
+  if (names.size === 0) return { spec, findings };
   const writer = new Writer(names, findings);
   const { named, ...sections } = spec;
   const whole = {
@@ -39,6 +33,17 @@ export function expandStages(spec: Spec): Expanded {
     ),
   };
   return isSpec(whole) ? { spec: whole, findings } : { spec, findings };
+}
+
+/** The names of the years of each stage that is followed year by year. What is wrong with one is told. */
+export function singleYears(spec: Spec, findings: Finding[] = []): Names {
+  const stages = Object.entries(spec.duration ?? {}).filter(([, { as }]) => as === 'expanded');
+  return new Map(
+    stages.flatMap(([name, { years }]): [string, readonly string[]][] => {
+      const own = yearsOf(spec, { name, years }, findings);
+      return own === null ? [] : [[name, own]];
+    }),
+  );
 }
 
 /** The shapes of the language say where names of classes stand, and nothing else is changed. */

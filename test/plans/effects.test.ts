@@ -67,6 +67,43 @@ test('a change in some patches and a change in all meet in the same rates', () =
   ]);
 });
 
+describe('a stage that is followed year by year', () => {
+  const threeYears = (actions: string, plan: string, more = ''): string =>
+    fens({ actions, scenarios: `  plan: [${plan}]\n`, more })
+      .replace('oldest:', 'duration: { young: { years: 3, as: expanded } }\noldest:')
+      .replace('litter: 2.6', 'litter: 26')
+      .replace('  survival: { young: { sd: 0.08 } }', '  survival: { adult: { sd: 0.08 } }');
+  const survivals = (text: string) => {
+    const { model } = compiledOf(text, 'plan');
+    const survival = model.phases.find(({ name }) => name === 'survival');
+    if (survival?.kind !== 'survival') throw new Error('There is a survival.');
+    const table = survival.survival.epochs[0]!;
+    return model.patches.map((_, p) => Array.from(table.slice(p * 4, p * 4 + 3)));
+  };
+  const one = '  one: { kind: change, rates: { survival: { young 2: { times: 0.5 } } } }\n';
+  const all = '  all: { kind: change, rates: { survival: { young: { times: 0.9 } } }, in: South fen }\n';
+
+  test('changes in one of its years, from what the stage has', () => {
+    expect(survivals(threeYears(one, 'one'))).toEqual(Array.from({ length: 3 }, () => [0.42, 0.21, 0.42]));
+  });
+
+  test.each(['one, all', 'all, one'])('changes as a whole, too: %s', (plan) => {
+    const [pool, , south] = survivals(threeYears(one + all, plan));
+    expect(pool).toEqual([0.42, 0.21, 0.42]);
+    [0.42 * 0.9, 0.42 * 0.9 * 0.5, 0.42 * 0.9].forEach((wanted, i) => expect(south![i]).toBeCloseTo(wanted, 15));
+  });
+
+  test('has in a patch what is written there for the stage before what is written everywhere for the year', () => {
+    const there = 'in: { South fen: { survival: { young: 0.3 } } }\n';
+    const text = threeYears(one, 'one', there).replace('{ young: 0.42,', '{ young: 0.42, young 2: 0.6,');
+    expect(survivals(text)).toEqual([
+      [0.42, 0.3, 0.42],
+      [0.42, 0.3, 0.42],
+      [0.3, 0.15, 0.3],
+    ]);
+  });
+});
+
 describe('the strength of crowding', () => {
   const coefficients = (deed: string) => {
     const text = fens({ actions: `  deed: ${deed}\n`, scenarios: '  plan: [deed]\n' });

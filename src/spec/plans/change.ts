@@ -1,9 +1,10 @@
 // Rates or named numbers that change.
 import type { EffectSpec } from '../schema/spec.ts';
 import type { SpecPath } from '../document.ts';
+import { singleYears } from '../expand-stages.ts';
 import type { Draft, NamedAction } from './draft.ts';
 import { addEffect } from './targets.ts';
-import { rateSection, type RateSection } from './rate-section.ts';
+import { rateSection, type ClassOrYear, type RateSection } from './rate-section.ts';
 import { tellMistake, tellUnknown } from './tell.ts';
 import { whenOf } from './when.ts';
 
@@ -32,7 +33,8 @@ export function layChange(draft: Draft, { name, spec }: NamedAction<'change'>): 
     const section = rateSection(draft, phase, [...path, 'rates', phase]);
     if (section === null) continue;
     for (const [one, effect] of Object.entries(classes)) {
-      layRate(draft, { section, one, patches, effect, when, path: [...path, 'rates', phase, one] });
+      const change = { section, patches, effect, when, path: [...path, 'rates', phase, one] };
+      for (const own of classesIn(draft, one)) layRate(draft, { ...change, one: own });
     }
   }
 }
@@ -79,10 +81,18 @@ function patchesOf(
   });
 }
 
+/** A stage that is followed year by year is its years, so that changes of it and of one year of it meet in the same numbers. */
+function classesIn({ spec }: Draft, one: string): readonly ClassOrYear[] {
+  const years = singleYears(spec);
+  const own = years.get(one);
+  if (own !== undefined) return own.map((name) => ({ name, stage: one }));
+  const stage = [...years].find(([, names]) => names.includes(one))?.[0] ?? null;
+  return [{ name: one, stage }];
+}
+
 interface RateChange {
   readonly section: RateSection;
-  /** A class. */
-  readonly one: string;
+  readonly one: ClassOrYear;
   readonly patches: readonly string[] | null;
   readonly effect: EffectSpec;
   readonly when: ReturnType<typeof whenOf>;
@@ -95,11 +105,11 @@ function layRate(draft: Draft, { section, one, patches, effect, when, path }: Ra
     const target = () => ({
       base: section.read(patch, one),
       dimension: 'share' as const,
-      words: `the rate of ${one} in ${patch}`,
+      words: `the rate of ${one.name} in ${patch}`,
       write: (expression: number | string) => {
-        section.write(patch, one, expression);
+        section.write(patch, one.name, expression);
       },
     });
-    addEffect(draft, ['in', patch, section.key, one], { target, effect, place: { when, path } });
+    addEffect(draft, ['in', patch, section.key, one.name], { target, effect, place: { when, path } });
   }
 }

@@ -5,11 +5,17 @@ import { tellUnknown } from './tell.ts';
 
 type Numbers = Readonly<Record<string, unknown>>;
 
+export interface ClassOrYear {
+  readonly name: string;
+  /** Of which it is a year; null for a class that is written itself. */
+  readonly stage: string | null;
+}
+
 export interface RateSection {
   /** The key under `in` and a patch. */
   readonly key: string;
-  /** What a class has in a patch before any action; null where it has none. */
-  readonly read: (patch: string, one: string) => number | string | null;
+  /** What a class has in a patch before any action, a year of a stage what the stage has; null where it has none. */
+  readonly read: (patch: string, one: ClassOrYear) => number | string | null;
   /** Writes under `in`. */
   readonly write: (patch: string, one: string, expression: number | string) => void;
 }
@@ -38,8 +44,12 @@ export function rateSection(draft: Draft, phase: string, path: SpecPath): RateSe
   const written = (patch: string): Numbers => numbersIn(spec.in?.[patch], key);
   return {
     key,
-    read: (patch, one) =>
-      expressionIn(written(patch)[one]) ?? expressionIn(typeof everywhere === 'object' ? everywhere[one] : everywhere),
+    read: (patch, { name, stage }) => {
+      const keys = stage === null ? [name] : [name, stage];
+      const own = keys.map((one) => written(patch)[one]);
+      const shared = typeof everywhere === 'object' ? keys.map((one) => everywhere[one]) : [everywhere];
+      return [...own, ...shared].map(expressionIn).find((found) => found !== null) ?? null;
+    },
     write: (patch, one, expression) => {
       spec.in = {
         ...spec.in,
