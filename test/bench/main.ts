@@ -7,7 +7,7 @@ import { compareAnimals, compareCourses } from './animals.ts';
 import { measureFlagship } from './flagship.ts';
 import { measureLargest, measureLosses } from './landscapes.ts';
 import { measureLarge } from './large.ts';
-import { compareSweep } from './growth-sweep.ts';
+import { compareSweep, compareSweepInTwo } from './growth-sweep.ts';
 import { compareLifeCycles } from './many.ts';
 import type { Comparison, Options } from './options.ts';
 import { comparePaths } from './path.ts';
@@ -32,6 +32,7 @@ const comparisons: Readonly<Record<string, (options: Options) => Comparison>> = 
   w4: (options) => ({ ...compareAnimals('w4', options), floors: { 'C, same width': 1, 'C, widest': 0.5, NumPy: 3 } }),
   lifecycles: compareLifeCycles,
   sweep: compareSweep,
+  'sweep-in-two': compareSweepInTwo,
 };
 const others = ['flagship', 'sweeps', 'plans', 'start', 'threads', 'large', 'landscapes', 'scaling'];
 

@@ -159,8 +159,11 @@ function measureMemory({ quick }: Options): SweepFigures['memory'] {
   return { points, megabytes: sweepCommand(points).megabytes };
 }
 
-/** The whole command over the ten patches in one thread, with its folder. */
-export function sweepCommand(points: number): {
+/** The whole command over the ten patches, with its folder. */
+export function sweepCommand(
+  points: number,
+  threads = 1,
+): {
   readonly seconds: number;
   readonly megabytes: number;
   readonly folder: string;
@@ -170,6 +173,16 @@ export function sweepCommand(points: number): {
   mkdirSync(work, { recursive: true });
   const over = Object.entries(overRates).flatMap(([name, { from, to }]) => ['--over', `${name}=${from}:${to}`]);
   const design = ['--design', 'sobol', '--points', String(points), '--measure', 'growth'];
-  const told = command(['sweep', tenPatches, ...over, ...design, '--threads', '1', '--quiet', '--out', folder]);
+  const told = command([
+    'sweep',
+    tenPatches,
+    ...over,
+    ...design,
+    '--threads',
+    String(threads),
+    '--quiet',
+    '--out',
+    folder,
+  ]);
   return { ...told, folder };
 }
