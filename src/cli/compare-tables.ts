@@ -38,8 +38,11 @@ function plansTable({ scenarios, money }: Comparison): Table {
         unit: 'animals a year',
         meaning: 'Change of the mean count over the last fifth of the years.',
       },
-      text('beaten', '`yes` where another plan is at least as good in everything and better in something, else `no`.'),
-      share('chance_beaten', 'Chance of being beaten in everything, with other futures of the same number.'),
+      text(
+        'beaten',
+        '`yes` where another plan is at least as good in all risks (outcomes) and in cost, and better in one of them, else `no`; where there are no outcomes, animals at the end stand for them.',
+      ),
+      share('chance_beaten', 'Chance of being beaten so, with other futures of the same number.'),
       share(
         'chance_beaten_draws',
         'The same as a share of the draws of what is not known; empty where nothing was drawn.',
@@ -83,7 +86,11 @@ function chancesTable({ scenarios }: Comparison): Table {
         meaning:
           'Money for a chance better by 1 than under the first plan (less of what is feared, more of what is hoped for); empty where nothing is gained for sure.',
       },
-      { name: 'cost_per_chance_lower', unit: 'money', meaning: 'Lower end, from the interval of the difference.' },
+      {
+        name: 'cost_per_chance_lower',
+        unit: 'money',
+        meaning: 'Lower end, from the interval of the difference and the range of prices.',
+      },
       { name: 'cost_per_chance_upper', unit: 'money', meaning: 'Upper end.' },
     ],
     rows: scenarios.flatMap(({ name, outcomes, prices }) =>
@@ -128,7 +135,13 @@ function differencesTable({ differences }: Comparison): Table {
       },
       { name: 'upper_unknown', unit: 'as the outcome', meaning: 'Upper end of it.' },
       noUnknownColumn,
-      text('told_apart', '`yes` where no interval holds 0.'),
+      {
+        name: 'lower_prices',
+        unit: 'as the outcome',
+        meaning: 'Of cost where prices are ranges: the least that the difference can be.',
+      },
+      { name: 'upper_prices', unit: 'as the outcome', meaning: 'The most that it can be.' },
+      text('told_apart', '`yes` where no interval holds 0, nor the range from prices.'),
       futures('both', 'Futures in which it happens under both plans; empty for amounts.'),
       futures('only_from', 'Under `from` only.'),
       futures('only_to', 'Under `to` only.'),
@@ -145,6 +158,8 @@ function differencesTable({ differences }: Comparison): Table {
       one.intervalFromUnknown?.lower ?? null,
       one.intervalFromUnknown?.upper ?? null,
       one.noUnknown ?? null,
+      one.prices?.lower ?? null,
+      one.prices?.upper ?? null,
       one.toldApart ? 'yes' : 'no',
       one.futures?.both ?? null,
       one.futures?.onlyFrom ?? null,

@@ -1,4 +1,4 @@
-// How sure it is which plan is best, and whether a plan is beaten in everything: over futures drawn again, or over draws of
+// How sure it is which plan is best, and whether a plan is beaten: over futures drawn again, or over draws of
 // what is not known. A row holds one number for each plan.
 import { resampled, resamples } from '../results/draws/intervals.ts';
 

@@ -1,9 +1,10 @@
-// One plan by itself, with what it costs and whether another is at least as good in everything.
+// One plan by itself, with what it costs and whether another is at least as good in all risks and in cost.
 import { isBeaten } from './best.ts';
 import { meanOf, varianceOf } from './paired-mean.ts';
 import type { Objective } from './objectives.ts';
 import type { Amount, ComparedPlan, OverBoth, PlanCost, PlanDifference, RiskPrice } from './results.ts';
 import type { PlanRun, PlansRun } from './plans-run.ts';
+import { priceSpan } from './price-span.ts';
 import { costPerRisk } from './worth-the-money.ts';
 
 interface Beside {
@@ -97,12 +98,15 @@ function pricesOf({ runs }: PlansRun, p: number, { differences, objectives }: Be
   if (now === undefined || own === undefined) return [];
   const [from, to] = [now.plan.name, own.plan.name];
   const more = amountOf(own.ledger.presentValue, own).mean - amountOf(now.ledger.presentValue, now).mean;
+  const ends = priceSpan(now, own) ?? { lower: more, upper: more };
   return differences
     .filter((one) => one.of === 'chance' && one.from === from && one.to === to)
     .map(({ outcome, estimate, interval, toldApart }): RiskPrice => {
       const hoped = objectives.find(({ name }) => name === outcome)?.better === 'more';
       const less = { estimate: -estimate, lower: -interval.upper, upper: -interval.lower };
-      const price = toldApart ? costPerRisk(more, hoped ? { estimate, ...interval } : less) : null;
+      const price = toldApart
+        ? costPerRisk({ estimate: more, ...ends }, hoped ? { estimate, ...interval } : less)
+        : null;
       if (price === null) return { outcome, costPerRisk: null, why: 'no reliable gain' };
       if (!(more > 0)) return { outcome, costPerRisk: null, why: 'costs no more' };
       return { outcome, costPerRisk: price, why: 'priced' };

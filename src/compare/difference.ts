@@ -20,6 +20,7 @@ import {
 } from './paired-share.ts';
 import type { PlanDifference } from './results.ts';
 import type { PlansRun } from './plans-run.ts';
+import { priceSpan } from './price-span.ts';
 
 export interface Pair {
   readonly objective: Objective;
@@ -40,19 +41,29 @@ export function differenceOf(run: PlansRun, { objective, from, to }: Pair, ended
   const enters = [from, to].some((plan) => isUnknown(run, plan, objective));
   const unknown = run.draws.length === 0 ? noneDrawn : fromUnknown(seen, { draws: run.draws.length, enters });
   // What few draws have seen is no interval, but where it holds 0 nothing is told apart.
-  const apart = excludesZero(interval) && (!enters || seen === null || excludesZero(seen));
+  const prices = pricesOf(run, { objective, from, to });
+  const apart =
+    excludesZero(interval) &&
+    (!enters || seen === null || excludesZero(seen)) &&
+    (prices === null || excludesZero(prices));
   return {
     ...names,
     estimate,
     interval,
     ...unknown,
     method: interval.method,
+    prices,
     futures: found.futures,
     toldApart: apart,
   };
 }
 
 const noneDrawn: FromUnknown = { intervalFromUnknown: null };
+
+function pricesOf({ runs }: PlansRun, { objective, from, to }: Pair): PlanDifference['prices'] {
+  const [before, after] = [runs[from], runs[to]];
+  return objective.of !== 'money' || before === undefined || after === undefined ? null : priceSpan(before, after);
+}
 
 function isUnknown({ runs }: PlansRun, plan: number, { of }: Objective): boolean {
   const { model = false, money = false } = runs[plan]?.unknown ?? {};
@@ -120,5 +131,5 @@ function same(futures: PairedCounts | null, drawn: boolean): Omit<PlanDifference
   const method = 'the two plans are one and the same model';
   const none: Interval = { lower: 0, upper: 0, level: 0.95, method, from: 'the number of runs' };
   const unknown: Interval | null = drawn ? { ...none, from: 'what is not known' } : null;
-  return { estimate: 0, interval: none, intervalFromUnknown: unknown, method, futures, toldApart: false };
+  return { estimate: 0, interval: none, intervalFromUnknown: unknown, method, prices: null, futures, toldApart: false };
 }

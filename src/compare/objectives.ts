@@ -9,7 +9,7 @@ export interface Objective {
   readonly of: 'chance' | 'animals' | 'money';
   /** Null where neither is better by itself. */
   readonly better: Better | null;
-  /** It counts for being beaten in everything. */
+  /** It counts for being beaten: in all risks and in cost. */
   readonly decides: boolean;
   /** By plan and future; 1 or 0 for a chance. */
   readonly values: readonly (Uint8Array | Float64Array)[];

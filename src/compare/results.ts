@@ -92,6 +92,8 @@ export interface PlanDifference extends FromUnknown {
   readonly estimate: number;
   readonly interval: Interval;
   readonly method: string;
+  /** Of money where prices are ranges: between which amounts the difference lies with every price anywhere in its range; else null. */
+  readonly prices: { readonly lower: number; readonly upper: number } | null;
   /** Futures by what became of them under the two; null for amounts. */
   readonly futures: PairedCounts | null;
   /** No interval holds 0, nor does what few draws were seen of that from what is not known. */
@@ -169,7 +171,7 @@ export interface ObjectiveWords {
   readonly of: 'chance' | 'animals' | 'money';
   /** Null where neither is better by itself. */
   readonly better: Better | null;
-  /** It counts for being beaten in everything. */
+  /** It counts for being beaten: in all risks and in cost. */
   readonly decides: boolean;
 }
 

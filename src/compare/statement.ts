@@ -9,7 +9,7 @@ import type {
   Statement,
   Strength,
 } from './results.ts';
-import { moneyWords, namesWords, percentWords, pointsWords } from './words.ts';
+import { costWords, namesWords, percentWords, pointsWords } from './words.ts';
 
 export interface ToState {
   readonly objectives: readonly ObjectiveWords[];
@@ -39,9 +39,11 @@ export function statementOf(to: ToState): Statement {
   const now = to.plans[0];
   const gaining = close.filter((plan) => now !== undefined && between(to, objective, now, plan)?.toldApart === true);
   const left = to.money === null ? gaining : cheapest(gaining);
-  const strength = strengthOf(to, { gains: now !== undefined && now !== best && apart(now), left });
-  const text = textOf(to, { objective, best, close, left });
-  const reservations = reservationsOf(to, best, close);
+  const nothing = nothingSeen(to, objective);
+  const dearer = maybeCheaper(to, gaining, left);
+  const strength = strengthOf(to, { gains: now !== undefined && now !== best && apart(now), left, dearer });
+  const text = nothing ?? textOf(to, { objective, best, close, left });
+  const reservations = reservationsOf(to, { together: nothing === null ? [best, ...close] : [], left, dearer });
   return { text, reservations, rule: ruleOf(to, objective.name), strength, plans: left.map(({ name }) => name) };
 }
 
@@ -82,17 +84,53 @@ and can tell from “${now}”${money === null ? '' : '; of these, the one that 
   return rule.replaceAll('\n', ' ');
 }
 
+/** Where no future of any plan came to an outcome, or every one did, it cannot tell plans apart. */
+function nothingSeen({ plans }: ToState, objective: ObjectiveWords): string | null {
+  if (objective.of !== 'chance') return null;
+  const values = plans.map((plan) => valueOf(plan, objective));
+  const [none, all] = [values.every((value) => value === 0), values.every((value) => value === 1)];
+  if (!none && !all) return null;
+  const seen = none ? 'No future of any plan came to' : 'Every future of every plan came to';
+  const height = none === (objective.better === 'less') ? 'higher' : 'lower';
+  const ask = `Ask for a ${height} threshold or ${none ? 'more' : 'fewer'} years (\`--years\`), or go by the other numbers`;
+  return `${seen} “${objective.name}”, so that it tells nothing of which plan is better. ${ask}.`;
+}
+
+/** Plans that would be left, too, if prices came to lie elsewhere in their ranges. */
+function maybeCheaper(
+  { differences }: ToState,
+  gaining: readonly ComparedPlan[],
+  left: readonly ComparedPlan[],
+): readonly ComparedPlan[] {
+  const [chosen] = left;
+  return gaining.filter(
+    (plan) =>
+      chosen !== undefined &&
+      !left.includes(plan) &&
+      differences.some(
+        ({ of, prices, from, to }) =>
+          of === 'money' &&
+          prices !== null &&
+          [from, to].includes(plan.name) &&
+          [from, to].includes(chosen.name) &&
+          !(prices.lower > 0 || prices.upper < 0),
+      ),
+  );
+}
+
 interface Standing {
+  readonly dearer: readonly ComparedPlan[];
   /** The best plan is told apart from the first one. */
   readonly gains: boolean;
   readonly left: readonly ComparedPlan[];
 }
 
-function strengthOf({ plans, draws, robustness }: ToState, { gains, left }: Standing): Strength {
+function strengthOf({ plans, draws, robustness }: ToState, { gains, left, dearer }: Standing): Strength {
   const now = plans[0];
   const idle = now !== undefined && left.includes(now);
   if (!gains || idle) return 'none';
-  const whole = draws >= enoughDraws && left.length === 1 && robustness.every(({ holds }) => holds !== false);
+  const single = left.length === 1 && dearer.length === 0;
+  const whole = draws >= enoughDraws && single && robustness.every(({ holds }) => holds !== false);
   return whole ? 'clear' : 'limited';
 }
 
@@ -133,8 +171,7 @@ function gainWords(to: ToState, { objective, now, chosen }: Gain): string {
   const ends =
     found === undefined ? [0, 0] : [found.interval.lower, found.interval.upper].map(Math.abs).sort((a, b) => a - b);
   const [least = 0, most = 0] = ends;
-  const cost =
-    chosen.cost === null || to.money === null ? '' : `, for ${moneyWords(chosen.cost.presentValue, to.money.currency)}`;
+  const cost = chosen.cost === null || to.money === null ? '' : `, for ${costWords(chosen.cost, to.money.currency)}`;
   if (objective.of !== 'chance') {
     const fewer = Math.round(Math.abs(after - before));
     return `${fewer} animals ${after > before ? 'more' : 'fewer'} at the end than under “${now.name}” (95 %: ${Math.round(least)} to ${Math.round(most)})${cost}`;
@@ -142,11 +179,23 @@ function gainWords(to: ToState, { objective, now, chosen }: Gain): string {
   return `a chance of “${objective.name}” of ${percentWords(after)} against ${percentWords(before)} under “${now.name}”, ${pointsWords(after - before)} ${after < before ? 'less' : 'more'} (95 %: ${(least * 100).toFixed(1)} to ${(most * 100).toFixed(1)})${cost}`;
 }
 
-function reservationsOf(to: ToState, best: ComparedPlan, close: readonly ComparedPlan[]): readonly string[] {
-  const together = [best, ...close.filter((plan) => plan !== best)].map(({ name }) => name);
+interface Reserved {
+  /** Plans that are not told apart. */
+  readonly together: readonly ComparedPlan[];
+  readonly left: readonly ComparedPlan[];
+  readonly dearer: readonly ComparedPlan[];
+}
+
+function reservationsOf(to: ToState, { together: alike, left, dearer }: Reserved): readonly string[] {
+  const together = [...new Set(alike)].map(({ name }) => name);
   const reversed = to.robustness.filter(({ holds }) => holds === false).map(({ variant }) => variant);
   return [
     ...(together.length < 2 ? [] : [`${namesWords(together)} cannot be told apart.`]),
+    ...(dearer.length === 0
+      ? []
+      : [
+          `Within the ranges of prices ${namesWords(dearer.map(({ name }) => name))} may cost no more than ${namesWords(left.map(({ name }) => name))}.`,
+        ]),
     ...unknownReservation(to.draws),
     ...(reversed.length === 0
       ? []

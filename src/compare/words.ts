@@ -17,6 +17,16 @@ export function moneyWords(amount: number, currency: string): string {
   return `${amount < 0 ? '−' : ''}${digits.replaceAll(/\B(?=(\d{3})+$)/g, ',')} ${currency}`;
 }
 
+/** With its range where prices are ranges. */
+export function costWords(
+  { presentValue, least, most }: { readonly presentValue: number; readonly least: number; readonly most: number },
+  currency: string,
+): string {
+  const middle = moneyWords(presentValue, currency);
+  const [low, high] = [least, most].map((amount) => moneyWords(amount, '').trim());
+  return least === most ? middle : `${middle} (${low} to ${high}, as prices are)`;
+}
+
 export function namesWords(names: readonly string[]): string {
   const quoted = names.map((name) => `“${name}”`);
   if (quoted.length < 2) return quoted.join('');

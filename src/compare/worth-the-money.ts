@@ -53,7 +53,14 @@ function at<T>(items: readonly T[], i: number): T {
 
 export interface CostPerRisk {
   readonly estimate: number;
-  /** From the ends of the interval of the risk removed; the cost is taken as it is. */
+  /** From the ends of the interval of the risk removed, and of the cost where prices are ranges. */
+  readonly lower: number;
+  readonly upper: number;
+}
+
+/** What a plan costs more than the other; its ends lie apart where prices are ranges. */
+export interface MoreCost {
+  readonly estimate: number;
   readonly lower: number;
   readonly upper: number;
 }
@@ -69,8 +76,8 @@ export interface RiskRemoved {
  * Money for each unit of risk less (such as one chance in one). Null where the interval of the risk removed does not lie
  * above 0: a cost for nothing reliable has no price.
  */
-export function costPerRisk(moreCost: number, removed: RiskRemoved): CostPerRisk | null {
+export function costPerRisk(more: MoreCost, removed: RiskRemoved): CostPerRisk | null {
   if (!(removed.lower > 0)) return null;
-  const ends = [moreCost / removed.lower, moreCost / removed.upper];
-  return { estimate: moreCost / removed.estimate, lower: Math.min(...ends), upper: Math.max(...ends) };
+  const ends = [more.lower, more.upper].flatMap((cost) => [cost / removed.lower, cost / removed.upper]);
+  return { estimate: more.estimate / removed.estimate, lower: Math.min(...ends), upper: Math.max(...ends) };
 }

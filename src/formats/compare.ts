@@ -66,7 +66,9 @@ const Plan = Type.Object({
   meanLowestCount: part.maybe('Mean over the runs of the lowest count of all animals.'),
   animalsTaken: part.orNull(Amount),
   changeAtEnd: part.maybe('How the mean count changes a year over the last fifth of the years.'),
-  notBeaten: Type.Boolean({ description: 'No other plan is at least as good in everything and better in something.' }),
+  notBeaten: Type.Boolean({
+    description: 'No other plan is at least as good in all risks and in cost and better in one of them.',
+  }),
   beaten: OverBoth,
   prices: Type.Array(
     Type.Object({
@@ -92,6 +94,15 @@ const Difference = Type.Object({
   intervalFromUnknown: part.orNull(DifferenceInterval),
   noUnknown: NoUnknown,
   method: part.text('How the interval was found, with the published source.'),
+  prices: part.orNull(
+    Type.Object(
+      { lower: Type.Number(), upper: Type.Number() },
+      {
+        description:
+          'Of money, where prices are ranges: between which amounts the difference lies with every price anywhere in its range, and the same in both plans.',
+      },
+    ),
+  ),
   futures: part.orNull(
     Type.Object(
       {
@@ -159,7 +170,7 @@ export const CompareSchema = Type.Object({
       definition: Type.String(),
       of,
       better: part.orNull(Type.Union([Type.Literal('less'), Type.Literal('more')])),
-      decides: Type.Boolean({ description: 'It counts for being beaten in everything.' }),
+      decides: Type.Boolean({ description: 'It counts for being beaten: in all risks and in cost.' }),
     }),
     { description: 'The first one decides the order of the plans.' },
   ),

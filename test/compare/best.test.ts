@@ -5,6 +5,9 @@ import { costPerRisk, notBeaten, stepsUp } from '../../src/compare/worth-the-mon
 
 const rows = (...all: readonly (readonly number[])[]) => all.map((row) => Float64Array.from(row));
 
+/** Without ranges of prices. */
+const just = (cost: number) => ({ estimate: cost, lower: cost, upper: cost });
+
 test('plans that are equally best share a draw', () => {
   const shares = sharesOfBest(rows([1, 2, 1], [3, 1, 2], [2, 2, 2]), 'less');
   expect([...shares].map((share) => share.toFixed(6))).toEqual(['0.277778', '0.444444', '0.277778']);
@@ -84,12 +87,18 @@ test('plans that are the same in both are all kept, and only one is a step', () 
 });
 
 test('risk removed has a price only where it is surely removed', () => {
-  expect(costPerRisk(1000, { estimate: 0.1, lower: 0.05, upper: 0.2 })).toEqual({
+  expect(costPerRisk(just(1000), { estimate: 0.1, lower: 0.05, upper: 0.2 })).toEqual({
     estimate: 10000,
     lower: 5000,
     upper: 20000,
   });
-  expect(costPerRisk(1000, { estimate: 0.1, lower: 0, upper: 0.2 })).toBeNull();
-  expect(costPerRisk(1000, { estimate: -0.1, lower: -0.2, upper: -0.02 })).toBeNull();
-  expect(costPerRisk(-1000, { estimate: 0.1, lower: 0.05, upper: 0.2 })?.lower).toBe(-20000);
+  expect(costPerRisk(just(1000), { estimate: 0.1, lower: 0, upper: 0.2 })).toBeNull();
+  expect(costPerRisk(just(1000), { estimate: -0.1, lower: -0.2, upper: -0.02 })).toBeNull();
+  expect(costPerRisk(just(-1000), { estimate: 0.1, lower: 0.05, upper: 0.2 })?.lower).toBe(-20000);
+  // Derived: at the least of the price and the most of the gain 800 / 0.2, at the most and the least 1300 / 0.05.
+  expect(costPerRisk({ estimate: 1000, lower: 800, upper: 1300 }, { estimate: 0.1, lower: 0.05, upper: 0.2 })).toEqual({
+    estimate: 10000,
+    lower: 4000,
+    upper: 26000,
+  });
 });

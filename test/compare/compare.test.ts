@@ -1,5 +1,9 @@
 // Whole comparisons of small plans under common chance.
 import { expect, test } from 'vitest';
+import { compareSpec } from '../../src/compare/compare-spec.ts';
+import { plansOf } from '../../src/compare/plans-of.ts';
+import { onlyPlans } from '../../src/spec/plans/scenarios.ts';
+import { readSpec } from '../../src/spec/read.ts';
 import { comparePlans, type ToCompare } from '../../src/compare/compare.ts';
 import type { PlanToRun } from '../../src/compare/plan.ts';
 import type { Comparison } from '../../src/compare/results.ts';
@@ -220,4 +224,50 @@ test('draws that differ by no more than their runs explain are no interval witho
   expect(fromUnknown(apart, { draws: 38, enters: true }).noUnknown).toBe('too few draws');
   expect(fromUnknown(apart, { draws: 39, enters: true })).toEqual({ intervalFromUnknown: apart });
   expect(fromUnknown(apart, { draws: 200, enters: false }).noUnknown).toBe('nothing unknown');
+});
+
+test('prices that are ranges are told of: as the range of a cost, of a difference, and of what a chance less costs', async () => {
+  const actions = `money: { currency: crowns }
+actions:
+  fence: { kind: change, in: Pond, rates: { survival: { newborn: { times: 1.3 } } }, cost: { once: [800, 1300] } }
+  wall: { kind: change, in: Pond, rates: { survival: { newborn: { times: 1.31 } } }, cost: { once: 1100 } }
+scenarios: { fence: [fence], wall: [wall], both: [fence, wall] }
+`;
+  const { spec } = readSpec(text(0.3, actions), 'ponds.yaml').document!;
+  const { comparison } = (await compareSpec(alone, { spec, plans: plansOf(spec).plans! }))!;
+  const between = (from: string, to: string) =>
+    comparison.differences.find((one) => one.of === 'money' && one.from === from && one.to === to)!;
+  expect(comparison.scenarios.map(({ cost }) => [cost!.least, cost!.presentValue, cost!.most])).toEqual([
+    [0, 0, 0],
+    [800, 1050, 1300],
+    [1100, 1100, 1100],
+    [1900, 2150, 2400],
+  ]);
+  expect(between('fence', 'wall')).toMatchObject({
+    estimate: 50,
+    prices: { lower: -200, upper: 300 },
+    toldApart: false,
+  });
+  // The fence has one price, wherever it is.
+  expect(between('fence', 'both')).toMatchObject({ prices: { lower: 1100, upper: 1100 }, toldApart: true });
+  expect(between('as now', 'fence')).toMatchObject({ prices: { lower: 800, upper: 1300 }, toldApart: true });
+  const risk = comparison.differences.find(({ outcome, to }) => outcome === 'few' && to === 'fence')!;
+  const price = comparison.scenarios[1]!.prices[0]!.costPerRisk!;
+  expect(price.lower).toBeCloseTo(800 / -risk.interval.lower, 6);
+  expect(price.upper).toBeCloseTo(1300 / -risk.interval.upper, 6);
+  const two = onlyPlans(spec, new Set(['fence', 'wall']));
+  const { statement } = (await compareSpec(alone, { spec: two, plans: plansOf(two).plans! }))!.comparison;
+  expect(statement.plans).toEqual(['fence']);
+  expect(statement.text).toContain('1,050 crowns (800 to 1,300, as prices are)');
+  expect(statement.reservations).toContain('Within the ranges of prices “wall” may cost no more than “fence”.');
+});
+
+test('an outcome that no future came to is said to tell nothing', async () => {
+  const never = plans().map(({ name }, i) =>
+    planOf({ name, text: text([0.3, 0.36, 0.3][i]!).replace('below: 6', 'below: 0.5') }, { years: 1 }),
+  );
+  const { statement } = await compared(never, { money: null });
+  expect(statement.text).toMatch(/^No future of any plan came to “few”, so that it tells nothing.*higher threshold/);
+  expect(statement.reservations.join(' ')).not.toContain('told apart');
+  expect(statement.strength).toBe('none');
 });

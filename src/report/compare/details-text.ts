@@ -3,14 +3,15 @@ import type { Comparison, ObjectiveWords, PlanDifference } from '../../compare/r
 import { fittedColumns } from '../fitted-columns.ts';
 import { joinBlocks, wrap, type TextStyle } from '../terminal.ts';
 import {
-  between,
+  beatenIn,
   bestWords,
+  between,
   chanceWords,
   change,
+  isDrawn,
   priceOfWords,
   priceWords,
   shareOf100,
-  isDrawn,
   unknownWords,
 } from './words.ts';
 import type { CompareTextStyle } from './style.ts';
@@ -101,8 +102,8 @@ function best(comparison: Comparison, style: TextStyle): string {
       ? 'with as many other futures'
       : 'with as many other futures / over the draws of what is not known';
   return [
-    wrap(`Of 100, how often best in, and beaten in everything by another (${over}; equals share):`, style),
-    fittedColumns(['plan', ...asked.map(({ name }) => name), 'beaten in everything'], rows, style),
+    wrap(`Of 100, how often best in, and ${beatenIn(comparison)} by another (${over}; equals share):`, style),
+    fittedColumns(['plan', ...asked.map(({ name }) => name), beatenIn(comparison)], rows, style),
   ].join('\n');
 }
 

@@ -2,10 +2,10 @@
 import type { Comparison, ComparedPlan } from '../../compare/results.ts';
 import { plain, whole } from '../../view/number.ts';
 import { fittedColumns } from '../fitted-columns.ts';
-import { wrap } from '../terminal.ts';
+import { joinBlocks, wrap } from '../terminal.ts';
 import { meaningsOf } from '../unknown-words.ts';
 import type { CompareTextStyle } from './style.ts';
-import { bestWords, chanceWords, costWords, courseWords, moneyWords, rangeWords } from './words.ts';
+import { areAlike, beatenIn, bestWords, chanceWords, courseWords, moneyWords, rangeWords } from './words.ts';
 
 /** With the intervals of both kinds. */
 export function chancesText({ scenarios, objectives, notDrawn, draws }: Comparison, style: CompareTextStyle): string {
@@ -32,25 +32,57 @@ export function chancesText({ scenarios, objectives, notDrawn, draws }: Comparis
 }
 
 export function amountsText(comparison: Comparison, style: CompareTextStyle): string {
-  const { scenarios, objectives, money, draws } = comparison;
+  const { scenarios, objectives, draws } = comparison;
   const [decides] = objectives;
-  const head = [
-    'plan',
-    `${style.animals} at the end`,
-    'then',
-    ...(money === null ? [] : ['cost now', 'undiscounted']),
-    ...(decides === undefined ? [] : [draws === undefined ? 'of 100 best' : 'of 100 best (runs / unknown)']),
-    'beaten in everything',
-  ];
-  const rows = scenarios.map((plan) => [
-    plan.name,
-    whole(plan.animalsAtEnd.mean),
-    courseWords(plan),
-    ...(plan.cost === null ? [] : [plain(plan.cost.presentValue), plain(plan.cost.undiscounted)]),
-    ...(decides === undefined ? [] : [bestWords(comparison, decides.name, plan.name)]),
-    plan.notBeaten ? 'no' : 'yes',
-  ]);
-  return fittedColumns(head, rows, style);
+  // Where all plans are equal by what decides, a share of being best says nothing.
+  const best = decides === undefined || areAlike(comparison, decides) ? null : decides.name;
+  const counted: Columns = {
+    head: [
+      `${style.animals} at the end`,
+      'then',
+      ...(best === null ? [] : [draws === undefined ? 'of 100 best' : 'of 100 best (runs / unknown)']),
+    ],
+    cells: (plan) => [
+      whole(plan.animalsAtEnd.mean),
+      courseWords(plan),
+      ...(best === null ? [] : [bestWords(comparison, best, plan.name)]),
+    ],
+  };
+  const beaten: Columns = { head: [beatenIn(comparison)], cells: ({ notBeaten }) => [notBeaten ? 'no' : 'yes'] };
+  const money = moneyColumns(comparison);
+  const table = (columns: readonly Columns[]): string =>
+    fittedColumns(
+      ['plan', ...columns.flatMap(({ head }) => head)],
+      scenarios.map((plan) => [plan.name, ...columns.flatMap(({ cells }) => cells(plan))]),
+      style,
+    );
+  // Ranges of costs would push the table over the edge of a terminal.
+  if (isRanged(comparison)) return joinBlocks([table([counted]), table([money, beaten])]).trimEnd();
+  return table([counted, money, beaten]);
+}
+
+interface Columns {
+  readonly head: readonly string[];
+  cells(plan: ComparedPlan): readonly string[];
+}
+
+function moneyColumns(comparison: Comparison): Columns {
+  if (comparison.money === null) return { head: [], cells: () => [] };
+  const ranged = isRanged(comparison);
+  return {
+    head: ['cost now', ...(ranged ? ['from the ends of prices'] : []), 'undiscounted'],
+    cells: ({ cost }) => {
+      if (cost === null) return [];
+      const { presentValue, undiscounted, least, most } = cost;
+      const range = least === most ? '' : `${plain(least)} to ${plain(most)}`;
+      return [plain(presentValue), ...(ranged ? [range] : []), plain(undiscounted)];
+    },
+  };
+}
+
+/** Whether any price is a range. */
+function isRanged({ scenarios }: Comparison): boolean {
+  return scenarios.some(({ cost }) => cost !== null && cost.least !== cost.most);
 }
 
 /** What the outcomes and the actions are, and in which money costs are told. */
@@ -64,10 +96,7 @@ export function meaningsText(comparison: Comparison, style: CompareTextStyle): s
   const plans = scenarios
     .filter((plan) => plan.actions.length > 0)
     .map((plan) => `“${plan.name}” is ${plan.actions.map(({ name }) => name).join(', ')}`);
-  const ranges = scenarios.flatMap(({ name, cost }) =>
-    cost === null || cost.least === cost.most ? [] : [`“${name}” ${costWords(cost)}`],
-  );
-  const between = ranges.length === 0 ? '' : ` Where prices are ranges: ${ranges.join('; ')}.`;
+  const between = isRanged(comparison) ? ' Prices that are ranges count with their middle.' : '';
   const told = [
     ...definitions,
     ...what,

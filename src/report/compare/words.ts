@@ -67,6 +67,23 @@ export function unknownWords({ of, intervalFromUnknown, noUnknown }: PlanDiffere
   return intervalFromUnknown === null ? (noUnknown ?? '') : between(of, intervalFromUnknown);
 }
 
+/** What a plan is beaten in by another that is as good in all of it and better in one. */
+export function beatenIn({ objectives }: Pick<Comparison, 'objectives'>): string {
+  const deciding = objectives.filter(({ decides }) => decides);
+  const what = [
+    ...(deciding.some(({ of }) => of === 'chance') ? ['risks'] : []),
+    ...(deciding.some(({ of }) => of === 'animals') ? ['animals at the end'] : []),
+    ...(deciding.some(({ of }) => of === 'money') ? ['cost'] : []),
+  ];
+  return `beaten in ${what.join(' and ')}`;
+}
+
+/** Whether all plans have the same number. */
+export function areAlike({ best }: Pick<Comparison, 'best'>, { name }: { readonly name: string }): boolean {
+  const own = best.filter(({ outcome }) => outcome === name);
+  return own.every(({ probability }) => Math.abs(probability * own.length - 1) < 1e-9);
+}
+
 function signed(of: PlanDifference['of'], value: number): string {
   const small = of === 'animals' && Math.abs(value) < 0.5;
   const rounded = small ? Math.abs(value).toFixed(1) : amount(of, Math.abs(value));

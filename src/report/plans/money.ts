@@ -31,7 +31,7 @@ export function moneySection(comparison: Comparison): Markup | null {
   });
   const chart = { outcome: objective.name, currency: money.currency, plans };
   const figure = mark`<figure class="still"><div class="wide">${drawCostRisk(chart, sizes.wide)}</div><div class="narrow">${drawCostRisk(chart, sizes.narrow)}</div>
-<figcaption>Filled: no other plan has both no higher cost and no higher chance. The upright lines are intervals of each chance by itself; whether two plans differ is told by the paired differences, not by whether these overlap.</figcaption></figure>`;
+<figcaption>Costs now, with prices that are ranges at their middle. Filled: no other plan has both no higher cost and no higher chance. The upright lines are intervals of each chance by itself; whether two plans differ is told by the paired differences, not by whether these overlap.</figcaption></figure>`;
   return section('money', 'Cost against risk', mark`${figure}${steps(comparison, both)}${priceTable(comparison)}`);
 }
 

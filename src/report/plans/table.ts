@@ -1,9 +1,18 @@
-// The table of plans against objectives, with both intervals, money, and which plan is beaten in everything.
+// The table of plans against objectives, with both intervals, money, and which plan is beaten in all risks and in cost.
 import type { Comparison, ComparedPlan } from '../../compare/results.ts';
 import { mark, type Content, type Markup } from '../../view/markup.ts';
 import { percent, plain, whole } from '../../view/number.ts';
 import { drawTable, scrolling, type Row } from '../../view/table.ts';
-import { between, change, costWords, courseWords, priceOfWords, priceWords, shareOf100 } from '../compare/words.ts';
+import {
+  beatenIn,
+  between,
+  change,
+  costWords,
+  courseWords,
+  priceOfWords,
+  priceWords,
+  shareOf100,
+} from '../compare/words.ts';
 import { prose, section } from '../section/section.ts';
 import { meaningsOf } from '../unknown-words.ts';
 
@@ -43,7 +52,7 @@ function plansTable(comparison: Comparison, animals: string): Markup {
           row(`cost now, ${money.currency}`, ({ cost }) => (cost === null ? '' : costWords(cost))),
           row('cost undiscounted', ({ cost }) => (cost === null ? '' : plain(cost.undiscounted))),
         ]),
-    row('beaten in everything', beatenCell),
+    row(beatenIn(comparison), beatenCell),
   ];
   const caption = `Plans over ${plain(comparison.replicates)} futures each, from ${firstYear} to ${firstYear + years - 1}`;
   return scrolling(
@@ -105,7 +114,7 @@ function notes({ objectives, money, afterHorizon, scenarios }: Comparison): Mark
       ? ''
       : `Costs are means over the futures in ${money.currency}${money.priceYear === null ? '' : ` at prices of ${money.priceYear}`}, discounted by ${percent(money.discount)} a year, the first year not. `;
   const beaten =
-    'A plan is beaten in everything where another is at least as good in every chance and in cost, and better in one; the small numbers say how often that is so with as many other futures. ';
+    'A plan is beaten where another is at least as good in every chance and in cost (prices at their middle), and better in one, whatever its animals at the end; the small numbers say how often that is so with as many other futures. ';
   const none = meaningsOf(scenarios.flatMap(({ outcomes }) => outcomes.map(({ intervals }) => intervals.noUnknown)));
   const unknown = none === '' ? '' : `Where no interval from what is not known stands, ${none} `;
   return mark`<p>${definitions}${prices}${unknown}${beaten}${prose(afterHorizon)}</p>`;
@@ -135,7 +144,9 @@ export function priceTable(comparison: Comparison): Markup | null {
   if (money === null || outcomes.length === 0) return null;
   const rows = scenarios
     .slice(1)
-    .map(({ name, prices }): Row => [name, ...prices.map((price) => priceWords(price, comparison))]);
-  const caption = `${priceOfWords(comparison)}, with the 95 % interval of the difference`;
+    .map(({ name, prices: own }): Row => [name, ...own.map((price) => priceWords(price, comparison))]);
+  const ranged = scenarios.some(({ cost }) => cost !== null && cost.least !== cost.most);
+  const prices = ranged ? ' and the range of prices' : '';
+  const caption = `${priceOfWords(comparison)}, with the 95 % interval of the difference${prices}`;
   return drawTable({ caption, head: ['plan', ...outcomes], rows });
 }
