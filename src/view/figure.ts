@@ -1,6 +1,6 @@
 // The frame of every figure: an SVG that stands alone (no style sheet, no script) and says in words what it shows.
 import type { Size } from './contract.ts';
-import { mark, type Content, type Markup } from './markup.ts';
+import { mark, Markup, type Content } from './markup.ts';
 import { paper, sans } from './palette.ts';
 
 export interface FigureWords {
@@ -13,6 +13,8 @@ export interface FigureWords {
 export interface FigureKind {
   /** Its parts are read one by one, not as one picture. */
   readonly live?: boolean;
+  /** One of hundreds: its label alone says what it shows. */
+  readonly brief?: boolean;
   /** Where the first and the last year stand, in pixels. */
   readonly years?: readonly [number, number];
 }
@@ -22,10 +24,13 @@ export function figure(size: Size, words: FigureWords, content: Content, kind: F
   const years = kind.years === undefined ? null : mark` data-left="${kind.years[0]}" data-right="${kind.years[1]}"`;
   const box = mark`viewBox="0 0 ${size.width} ${size.height}" width="${size.width}" height="${size.height}"`;
   const role = mark`role="${kind.live === true ? 'group' : 'img'}" aria-label="${label}"`;
-  return mark`<svg xmlns="http://www.w3.org/2000/svg" ${box} ${role}${years} font-family="${sans}" font-size="13">
-<title>${words.title}</title><desc>${words.description}</desc>
-<rect width="${size.width}" height="${size.height}" fill="${paper}"/>${content}</svg>`;
+  const said = kind.brief === true ? null : mark`<title>${words.title}</title><desc>${words.description}</desc>`;
+  return mark`<svg xmlns="http://www.w3.org/2000/svg" ${box} ${role}${years} font-family="${family}" font-size="13">
+${said}<rect width="${size.width}" height="${size.height}" fill="${paper}"/>${content}</svg>`;
 }
+
+/** Its quotes are single ones, and stand in double ones. */
+const family = new Markup(sans);
 
 /** About how wide a text of this size stands, without a browser to ask. */
 export function textWidth(text: string, fontSize: number): number {

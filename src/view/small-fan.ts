@@ -25,7 +25,7 @@ export function drawSmallFan(patch: SmallFan, years: Series, marked: number | nu
   const year = marked === null ? null : pick(years, marked);
   const content = mark`${frame(place)}${bands(place, thinned(years, years), thinnedFan(fan, years))}${dots(place, counts, 2.5)}${labels(patch, span, place)}
 ${cursor(place, year)}${reading(patch, years, marked, place)}`;
-  return figure(size, words(patch, years), content, { years: spanOf(place, years) });
+  return figure(size, words(patch, years), content, { years: spanOf(place, years), brief: true });
 }
 
 /** More points than this cannot be told apart in so small a picture, and hundreds of them make a page heavy. */
