@@ -1,4 +1,5 @@
 // One plan by itself, with what it costs and whether another is at least as good in all risks and in cost.
+import { criterionE } from '../analysis/criterion-e.ts';
 import { isBeaten } from './best.ts';
 import { meanOf, varianceOf } from './paired-mean.ts';
 import type { Objective } from './objectives.ts';
@@ -45,8 +46,14 @@ export function comparedPlans(run: PlansRun, beside: Beside): readonly ComparedP
       beaten: beside.beaten[p] ?? { runs: 0, draws: null },
       prices: cost === null || p === 0 ? [] : pricesOf(run, p, beside),
       handled: results.handled,
+      ...windowsOf(one),
     };
   });
+}
+
+function windowsOf({ compiled, results }: PlanRun): Pick<ComparedPlan, 'criterionE'> {
+  const found = criterionE(compiled, results);
+  return found === null ? {} : { criterionE: found };
 }
 
 function costOf(run: PlanRun): PlanCost {

@@ -1,5 +1,6 @@
 // What a comparison says, as data: printed by `--json` and read by the page.
 import type {
+  CriterionE,
   Chance,
   FromUnknown,
   Interval,
@@ -80,6 +81,8 @@ export interface ComparedPlan {
   readonly beaten: OverBoth;
   readonly prices: readonly RiskPrice[];
   readonly handled: RunResults['handled'];
+  /** Where an outcome is that nobody is left anywhere; plans change how long a generation is, and so the windows. */
+  readonly criterionE?: CriterionE;
 }
 
 export interface PlanDifference extends FromUnknown {

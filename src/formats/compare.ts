@@ -1,7 +1,7 @@
 // What `skein compare --json` prints.
 import * as Type from 'typebox';
 import * as part from './parts.ts';
-import { Chance, Handled, Interval, NoUnknown, Precision } from './results.ts';
+import { Criterion, Chance, Handled, Interval, NoUnknown, Precision } from './results.ts';
 
 const scenario = part.text('Name of the plan.');
 const outcome = part.text('Name of the outcome or other objective.');
@@ -82,6 +82,7 @@ const Plan = Type.Object({
     },
   ),
   handled: Type.Array(Handled),
+  criterionE: Type.Optional(Criterion),
 });
 
 const Difference = Type.Object({

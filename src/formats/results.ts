@@ -134,7 +134,7 @@ const Draws = Type.Object({
   ),
 });
 
-const Criterion = Type.Object(
+export const Criterion = Type.Object(
   {
     outcome: part.text('The outcome that nobody is left anywhere.'),
     generationLength: part.number('Mean age of mothers in the stable population near zero, in years.'),

@@ -18,6 +18,12 @@ export function criterionSaid({ outcome, generationLength, windows }: CriterionE
   };
 }
 
+/** Of plans beside others that have windows; nothing where each has. */
+export function withoutWindows(names: readonly string[]): string {
+  if (names.length === 0) return '';
+  return `Without a single generation length there are no windows: ${names.map((name) => `“${name}”`).join(', ')}.`;
+}
+
 /** Line by line, for a terminal. */
 export function criterionWords({ criterionE }: Pick<RunResults, 'criterionE'>): readonly string[] {
   if (criterionE === undefined) return [];

@@ -252,3 +252,27 @@ test('skein report of a model with plans writes the page of their comparison', (
   expect(told?.match(/the threshold of Endangered/gu)).toHaveLength(2);
   expect(told).toContain('there are no windows: “as now”, “posters”, “quota”.');
 });
+
+describe('what is said of outcomes and of animals that are handled', () => {
+  const [replicates, gone] = [
+    'replicates: 400',
+    'outcomes: { few: { of: [adult], below: 6 }, gone: { of: all, below: 1 } }',
+  ];
+  const two = ['--only', 'as now', '--only', 'fence'];
+  const written = text.replace(/^outcomes: .*$/mu, gone).replace(replicates, 'replicates: 20');
+
+  test('with --details the windows of criterion E, of each plan', () => {
+    const printed = skein(['compare', '-', ...two, '--details', '--quiet'], { input: written }).out;
+    const out = printed.replaceAll(/\s+/gu, ' ');
+    const leads = [...out.matchAll(/“([^”]+)”: Windows of criterion E of the IUCN Red List/gu)].map(([, name]) => name);
+    expect(leads).toEqual(['fence']);
+    // Two ponds alike that nobody leaves have no one stable distribution, so no one generation length.
+    expect(out).toContain('Without a single generation length there are no windows: “as now”.');
+    expect(out.match(/looks less far ahead than the threshold of Vulnerable/gu)).toHaveLength(1);
+    expect(out.match(/is for assessors to say/gu)).toHaveLength(1);
+    const { scenarios } = JSON.parse(
+      skein(['compare', '-', ...two, '--json', '--quiet'], { input: written }).out,
+    ) as Comparison;
+    expect(scenarios.map(({ criterionE }) => criterionE?.windows.length)).toEqual([undefined, 3]);
+  });
+});

@@ -1,5 +1,6 @@
 // What a comparison says in a terminal to those who ask for all of it: every pair of plans, chances of being best, prices, patches.
 import type { Comparison, ObjectiveWords, PlanDifference } from '../../compare/results.ts';
+import { criterionSaid, withoutWindows } from '../criterion-words.ts';
 import { fittedColumns } from '../fitted-columns.ts';
 import { joinBlocks, wrap, type TextStyle } from '../terminal.ts';
 import {
@@ -24,7 +25,23 @@ export function detailsText(comparison: Comparison, style: CompareTextStyle): st
     best(comparison, style),
     prices(comparison, style),
     patches(comparison, style),
+    criteria(comparison, style),
   ]).trimEnd();
+}
+
+/** Of each plan, as a run of it alone would say. */
+function criteria({ scenarios }: Comparison, style: CompareTextStyle): string {
+  const said = scenarios.flatMap(({ name, criterionE }) =>
+    criterionE === undefined ? [] : [{ name, ...criterionSaid(criterionE) }],
+  );
+  const lines = said.flatMap(({ name, lead, windows }) => [`“${name}”: ${lead}`, ...windows.map((one) => `- ${one}`)]);
+  const [first] = said;
+  if (first === undefined) return '';
+  const none = withoutWindows(scenarios.filter((one) => one.criterionE === undefined).map(({ name }) => name));
+  return [...lines, none, first.caution]
+    .filter((text) => text !== '')
+    .map((text) => wrap(text, style))
+    .join('\n');
 }
 
 /** Chances between any two plans, other objectives against the first plan. */
