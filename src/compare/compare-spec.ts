@@ -65,7 +65,8 @@ function compared({ spec, plans, run, robustness }: Parts): Comparison {
   const [first] = run.runs;
   if (first === undefined) throw new RangeError('There is no plan to compare.');
   const { provenance, cost } = first.compiled;
-  const cautions = [...new Set(run.runs.flatMap(({ compiled: { model } }) => standingCautions(model)))];
+  const models = run.runs.map(({ compiled: { model } }) => model);
+  const cautions = [...new Set(models.flatMap((model) => standingCautions(model, models)))];
   return comparePlans({
     run,
     hash: provenance.hash,

@@ -3,7 +3,8 @@ import { isHandling } from '../compile/image/handling.ts';
 import type { Model } from '../model/model.ts';
 import { basisWords } from './basis.ts';
 
-export function standingCautions(model: Model): readonly string[] {
+/** `plans` are all models of a comparison, so that one caution names what any of them does with animals. */
+export function standingCautions(model: Model, plans: readonly Model[] = [model]): readonly string[] {
   return [
     `Rank plans by these numbers rather than trust a risk as it stands: errors that plans share mostly cancel in a comparison,
 never in an absolute number.`,
@@ -14,20 +15,20 @@ that a model rests on (Fieberg & Ellner 2000); compare the two lengths.`,
     `How strongly good and bad years strike all patches together often moves the risk more than movement does; look at it
 before trusting that patches back each other up.`,
     basisWords(model),
-    ...handling(model),
-    `Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for
-conservation translocations. What a model says is one input to it.`,
+    handling(plans),
   ].map((text) => text.replaceAll('\n', ' '));
 }
 
-/** What the model itself has people do with animals. */
-function handling({ phases }: Model): readonly string[] {
-  const named = phases.filter(isHandling).map(({ name }) => `“${name}”`);
-  if (named.length === 0) return [];
-  return [
-    `In this model people take, move or release animals (${named.join(', ')}). None of it may be done because a model says so:
-ask the wildlife authority, hold the permits, follow IUCN/SSC (2013) for translocations, and count before and after.`,
-  ];
+/** What the models themselves have people do with animals, if anything. */
+function handling(models: readonly Model[]): string {
+  const named = new Set(models.flatMap(({ phases }) => phases.filter(isHandling).map(({ name }) => `“${name}”`)));
+  if (named.size === 0) {
+    return `Moving, taking or releasing animals needs permits, local law, qualified judgement and the process of IUCN/SSC (2013) for
+conservation translocations. What a model says is one input to it.`;
+  }
+  return `In this model people take, move or release animals (${[...named].join(', ')}). None of it may be done because a model says
+so: ask the wildlife authority, hold the permits, keep the law of the place, hear qualified people, follow IUCN/SSC (2013) for
+conservation translocations, and count before and after. What a model says is one input to it.`;
 }
 
 function leftOut({ crowding, phases, variation, catastrophes }: Model): readonly string[] {

@@ -275,4 +275,12 @@ describe('what is said of outcomes and of animals that are handled', () => {
     ) as Comparison;
     expect(scenarios.map(({ criterionE }) => criterionE?.windows.length)).toEqual([undefined, 3]);
   });
+
+  test('one caution for all plans on what people do with animals', () => {
+    const { out } = skein(['compare', '-', '--json', '--quiet'], { input: written });
+    const { cautions } = JSON.parse(out) as Comparison;
+    const said = cautions.filter((one) => /IUCN\/SSC/u.test(one));
+    expect(said).toHaveLength(1);
+    expect(said[0]).toContain('(“moves”, “quota”)');
+  });
 });
