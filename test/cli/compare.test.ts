@@ -283,4 +283,16 @@ describe('what is said of outcomes and of animals that are handled', () => {
     expect(said).toHaveLength(1);
     expect(said[0]).toContain('(“moves”, “quota”)');
   });
+
+  test('that a comparison and a sweep split no futures, unless quiet', () => {
+    const rare = written.replace('replicates: 20', 'replicates: 100, rare: true');
+    const compare = ['compare', '-', ...two];
+    expect(skein(compare, { input: rare }).err).toContain(
+      'A comparison goes by plain runs, so `rare` has no part in it',
+    );
+    expect(skein([...compare, '--quiet'], { input: rare }).err).toBe('');
+    const sweep = ['sweep', '-', '--over', 'share=0.1:0.2', '--plan'];
+    const input = rare.replace('survival: { newborn: 0.3', 'parameters: { share: 0.3 }\nsurvival: { newborn: share');
+    expect(skein(sweep, { input }).err).toContain('A sweep goes by plain runs, so `rare` has no part in it');
+  });
 });

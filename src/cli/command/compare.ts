@@ -15,6 +15,7 @@ import { writeOut } from '../output.ts';
 import { askedHiding } from '../places.ts';
 import { chosenPlans } from '../plans.ts';
 import { threadsFor, withCrew } from '../replicates.ts';
+import { tellNotSplit } from '../rare.ts';
 import { terminalAt } from '../terminal.ts';
 
 export interface CompareCommandOptions extends CommonOptions {
@@ -25,6 +26,7 @@ export interface CompareCommandOptions extends CommonOptions {
 
 export async function compareCommand(path: string | undefined, options: CompareCommandOptions): Promise<void> {
   const { compiled, robust } = await load(path, options);
+  tellNotSplit(compiled.model, 'A comparison', options.quiet);
   const spec = chosenPlans(compiled.spec, options.only);
   const plans = plansToCompare(plansOf(spec).plans);
   const folder = await askedFolder(options);

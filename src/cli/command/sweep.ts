@@ -12,6 +12,7 @@ import { specJson } from '../spec-json.ts';
 import { fillStore, msAPoint } from '../sweep/fill.ts';
 import { finishSweep } from '../sweep/finish.ts';
 import { askedOf, type SweepOptions } from '../sweep/flags.ts';
+import { tellNotSplit } from '../rare.ts';
 import { KeptParts } from '../sweep/kept-parts.ts';
 import { costText, planText } from '../sweep/plan-text.ts';
 import { openStore, type Store } from '../sweep/store.ts';
@@ -20,6 +21,7 @@ import { tellSweep, writeLog } from '../sweep/tell.ts';
 export async function sweepCommand(path: string, options: SweepOptions): Promise<void> {
   const started = new Date();
   const loaded = await loadModel(path, settingsOf(options), options);
+  tellNotSplit(loaded.compiled.model, 'A sweep', options.quiet);
   const spec = withoutSweep(loaded.compiled.spec);
   const manifest = manifestOf({ ...loaded.compiled, spec }, planOf(loaded, options), specJson(spec));
   const { quiet = false, threads = availableParallelism() } = options;
