@@ -79,12 +79,12 @@ function beginPair(h: usize): void {
     let entries = load<u32>(at);
     for (at += 4; entries > 0; entries--, at += 4, entryWeight += 8) {
       const entry = v128.load(tape + load<u32>(at));
-      least = f64x2.min(least, entry);
-      most = f64x2.max(most, entry);
+      least = f64x2.pmin(least, entry);
+      most = f64x2.pmax(most, entry);
       ratio = f64x2.add(ratio, f64x2.mul(entry, v128.load64_splat(entryWeight)));
     }
-    low = f64x2.min(low, ratio);
-    high = f64x2.max(high, ratio);
+    low = f64x2.pmin(low, ratio);
+    high = f64x2.pmax(high, ratio);
     quotient = f64x2.add(quotient, f64x2.mul(ratio, v128.load64_splat(rowWeight)));
     rowWeight += 8;
   }
@@ -96,7 +96,7 @@ function beginPair(h: usize): void {
   v128.store(own + moreAt, f64x2.splat(0));
   v128.store(own + growthAt, f64x2.splat(NaN));
   const numbers = v128.and(f64x2.gt(least, f64x2.splat(0)), f64x2.lt(most, f64x2.splat(Infinity)));
-  v128.store(own + doneAt, v128.not(numbers));
+  v128.store(own + doneAt, v128.not(v128.and(numbers, isNumber(quotient))));
 }
 
 /** σ of the next round; of those that are done one that makes nothing grow. */
@@ -133,10 +133,10 @@ function judge(h: usize): void {
     t = v128.load(room.nextLeft + at);
     const ofRight = f64x2.div(x, z);
     const ofLeft = f64x2.div(v128.load(room.left + at), t);
-    lowRight = f64x2.min(lowRight, ofRight);
-    highRight = f64x2.max(highRight, ofRight);
-    lowLeft = f64x2.min(lowLeft, ofLeft);
-    highLeft = f64x2.max(highLeft, ofLeft);
+    lowRight = f64x2.pmin(lowRight, ofRight);
+    highRight = f64x2.pmax(highRight, ofRight);
+    lowLeft = f64x2.pmin(lowLeft, ofLeft);
+    highLeft = f64x2.pmax(highLeft, ofLeft);
     above = f64x2.add(above, f64x2.mul(t, x));
     below = f64x2.add(below, f64x2.mul(t, z));
   }
@@ -148,8 +148,14 @@ function judge(h: usize): void {
     f64x2.div(f64x2.sub(highLeft, lowLeft), f64x2.sub(shift, lowLeft)),
   );
   const quotient = f64x2.sub(shift, f64x2.div(above, below));
-  const fine = v128.and(sameSign(lowRight, highRight), sameSign(lowLeft, highLeft));
+  const signs = v128.and(sameSign(lowRight, highRight), sameSign(lowLeft, highLeft));
+  const fine = v128.and(signs, isNumber(quotient));
   steer(own, fine, low, high, apart, quotient);
+}
+
+/** What is none on the way to it is none in the sums, whatever becomes of bounds: `pmin` and `pmax` pass it over. */
+function isNumber(x: v128): v128 {
+  return f64x2.eq(x, x);
 }
 
 function sameSign(low: v128, high: v128): v128 {

@@ -25,7 +25,8 @@ export function sobolSequence(dimensions: number): SobolSequence {
       const own = directions[dimension];
       let gray = (point ^ (point >>> 1)) >>> 0;
       let word = 0;
-      for (let bit = 0; gray !== 0; bit++, gray >>>= 1) if ((gray & 1) === 1) word ^= own?.[bit] ?? 0;
+      // Without a branch, which would be guessed wrongly every other time.
+      for (let bit = 0; gray !== 0; bit++, gray >>>= 1) word ^= (own?.[bit] ?? 0) & -(gray & 1);
       return word >>> 0;
     },
   };

@@ -55,10 +55,17 @@ export function partialRankCorrelations(
 /** Ranks with mean 0 and length 1; null where all are equal. */
 function standardRanks(values: Float64Array, order: Uint32Array): Float64Array | null {
   const ranks = new Float64Array(values.length);
+  const middle = (values.length - 1) / 2;
+  let next = values[order[0] ?? 0];
   for (let i = 0; i < order.length;) {
-    let end = i;
-    while (end < order.length && values[order[end] ?? 0] === values[order[i] ?? 0]) end++;
-    for (let k = i; k < end; k++) ranks[order[k] ?? 0] = (i + end - 1) / 2 - (values.length - 1) / 2;
+    // Far apart in memory, so that each is looked at once.
+    const value = next;
+    let end = i + 1;
+    for (; end < order.length; end++) {
+      next = values[order[end] ?? 0];
+      if (next !== value) break;
+    }
+    for (let k = i; k < end; k++) ranks[order[k] ?? 0] = (i + end - 1) / 2 - middle;
     i = end;
   }
   const length = Math.sqrt(dot(ranks, ranks));
