@@ -91,6 +91,12 @@ test('scenarios that are equal everywhere are said to be so, without shares of b
     width: 80,
     details: false,
   });
-  expect(text).toContain('best by growth (more is better): no scenario differs from another by it');
+  expect(text).toContain('best by growth (more is better)\nno scenario differs from another by it');
   expect(text).not.toContain('best at');
+});
+
+test('what stands out on a terminal with colour is no broken code', () => {
+  const summary = summariseSweep(swept((survival) => 0.8 + 0.4 * survival));
+  for (const details of [true, false])
+    expect(sweepText(summary, { colour: true, width: 80, details })).not.toContain('\uFFFD');
 });

@@ -24,7 +24,8 @@ export function quantityText(quantity: QuantitySummary, summary: SweepSummary, s
   const { head, cells } = tableOf(summary, quantity);
   const shown = style.details ? factors : factors.slice(0, fewRows);
   return [
-    wrap(`${bold(printable(name), style)}: ${range}${noisy}`, style),
+    bold(printable(name), style),
+    wrap(`${range}${noisy}`, style),
     `what matters most, by ${orderedBy}:`,
     fittedColumns(
       ['number', ...head],

@@ -4,7 +4,7 @@ import type { FactorRanking, Ranking } from '../../sweep/summary/ranking.ts';
 import type { QuantitySummary, SweepSummary } from '../../sweep/summary/summarise.ts';
 import { percent } from '../../view/number.ts';
 import { fittedColumns } from '../fitted-columns.ts';
-import { bold, printable, wrap } from '../terminal.ts';
+import { bold, wrap } from '../terminal.ts';
 import type { SweepTextStyle } from './style.ts';
 import { numberText, preferredWords } from './words.ts';
 
@@ -12,16 +12,22 @@ import { numberText, preferredWords } from './words.ts';
 const fewNumbers = 5;
 
 export function rankingText(ranking: Ranking, summary: SweepSummary, style: SweepTextStyle): string {
-  const { quantity, better, factors } = ranking;
-  const head = `${bold(`best by ${printable(quantity)}`, style)} (${better} is better)`;
+  const { quantity, better, factors, told } = ranking;
+  const head = wrap(`best by ${quantity} (${better} is better)`, style)
+    .split('\n')
+    .map((line) => bold(line, style))
+    .join('\n');
   if (factors.every(({ groups }) => groups.every(({ best }) => areEqual(best))))
-    return wrap(`${head}: no scenario differs from another by it`, style);
+    return [head, 'no scenario differs from another by it'].join('\n');
   const shown = style.details ? factors : factors.slice(0, fewNumbers);
   return [
-    wrap(`${head}: ${answer(ranking, style)}`, style),
+    head,
+    wrap(answer(ranking, style), style),
     plansTable(ranking, summary, style),
-    ...shown.map((factor) => wrap(`over ${factor.name}${changeWords(factor)}`, style)),
-    ...(shown.length < factors.length ? [`and over ${factors.length - shown.length} more numbers`] : []),
+    ...(told === 0 && !style.details
+      ? [wrap('Where the best plan changes is not told by so few runs: take more `--replicates`.', style)]
+      : shown.map((factor) => wrap(`over ${factor.name}${changeWords(factor)}`, style))),
+    ...(told > 0 && shown.length < factors.length ? [`and over ${factors.length - shown.length} more numbers`] : []),
   ].join('\n');
 }
 
