@@ -65,7 +65,7 @@ code{font:0.92em ui-monospace,"SF Mono",Menlo,Consolas,"DejaVu Sans Mono",monosp
 .beside figure{display:flex;flex-direction:column;margin:0 0 1.5rem}.beside figure svg{width:100%;max-width:26rem}.beside .definition{flex:1}.beside h3{margin-top:1rem}
 .smalls{display:grid;grid-template-columns:repeat(auto-fill,minmax(10.2rem,1fr));gap:1rem;margin:1rem 0}
 .smalls svg{width:100%;height:auto;display:block}
-.smalls>div{min-width:0;content-visibility:auto;contain-intrinsic-size:auto 172px auto 130px}
+.smalls>div{min-width:0;content-visibility:auto;contain-intrinsic-size:auto 172px auto 130px}.smalls:not(.plans)>div{aspect-ratio:172/130}
 .plans{width:100%}.plans th,.plans td{text-align:left;padding-right:.9rem}.plans thead th{max-width:none}.plans tbody th{min-width:8rem}.plans td small{display:block;color:var(--soft);font-size:.86rem}.plans .chosen{color:var(--deep);font-weight:600}.paper{display:none}.actions{padding-left:1.2rem;font-size:.98rem}.answer .note{max-width:21.25rem}
 .pair{display:grid;grid-template-columns:repeat(auto-fit,minmax(min(100%,20rem),1fr));gap:.5rem 1rem}.pair figcaption,.pair .save{grid-column:1/-1}.pair svg{width:100%}
 .smalls.plans>div{content-visibility:visible}.smalls.plans{grid-template-columns:repeat(auto-fill,minmax(13rem,1fr))}
