@@ -24,7 +24,7 @@ function runUntilProgress(words: readonly string[], signal: NodeJS.Signals): Pro
   child.stdout.on('data', (text: Buffer) => (stdout += text.toString()));
   child.stderr.on('data', (text: Buffer) => {
     stderr += text.toString();
-    if (sent || !stderr.includes('Replicates: ')) return;
+    if (sent || !/(?:Replicates|Points): /u.test(stderr)) return;
     sent = true;
     child.kill(signal);
   });
@@ -63,3 +63,24 @@ test.each([
   expect(readdirSync(out).filter((name) => name.endsWith('.tmp'))).toEqual([]);
   expect(readFileSync(join(out, 'results.json'), 'utf8')).toBe(stdout);
 });
+
+test.each([
+  ['SIGINT', '1'],
+  ['SIGTERM', '2'],
+] as const)(
+  '%s ends a sweep in %s threads with its finished parts and the command that goes on',
+  async (signal, threads) => {
+    const out = join(folder, `sweep-${threads}`);
+    const over = ['--over', 'survival.adult=0.5:0.8', '--over', 'wandering.leaving=0.02:0.3'];
+    const runs = ['--measure', 'lowest', '--replicates', '800', '--years', '50', '--threads', threads];
+    const words = ['sweep', 'models/two-ponds.yaml', ...over, '--design', 'sobol', '--points', '400', ...runs];
+    const { code, stdout, stderr } = await runUntilProgress([...words, '--out', out], signal);
+    expect({ code, stdout }).toEqual({ code: 3, stdout: '' });
+    expect(stderr).toMatch(
+      /Stopped with \d+ of \d+ parts done\. What is finished is kept\. The same command goes on:\n {2}skein sweep /u,
+    );
+    const parts = readdirSync(join(out, 'parts'));
+    expect(parts.length).toBeGreaterThan(0);
+    expect(parts.filter((name) => !name.endsWith('.parquet'))).toEqual([]);
+  },
+);
