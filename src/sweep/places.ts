@@ -2,7 +2,7 @@
 import type { SpecPath } from '../spec/document.ts';
 import { readQuantity, type Dimension } from '../spec/quantity.ts';
 import type { Spec } from '../spec/schema/spec.ts';
-import { unitAt } from '../spec/shape/unit-at.ts';
+import { takesExpression, unitAt } from '../spec/shape/unit-at.ts';
 import type { Value } from './design/factor.ts';
 
 /** Stands for the scenario that is run. */
@@ -32,10 +32,11 @@ export function placesIn(spec: Spec): readonly PlacedNumber[] {
   const { named, ...core } = spec;
   const known = new Set(Object.keys(spec.parameters ?? {}));
   const kept = Object.entries(core).filter(([key]) => !left.has(key) && !leftToo.has(key));
-  return [
+  const places = [
     ...kept.flatMap(([key, value]) => below(value, { name: key, path: [key], known })),
     ...Object.entries(named).flatMap(([key, value]) => below(value, { name: key, path: ['named', key], known })),
   ];
+  return places.filter(({ path, value }) => typeof value === 'number' || takesExpression(spec, path));
 }
 
 /** Of a place, as the language has it; empty for named parameters and for what has none. */

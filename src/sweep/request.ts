@@ -10,6 +10,7 @@ import { openDesign, type DesignPlan } from './design/design.ts';
 import type { Factor, Range, Value } from './design/factor.ts';
 import { mostDimensions } from './design/sobol.ts';
 import { isOfRuns, type MeasureName } from './measures.ts';
+import { misfitOf } from './misfit.ts';
 import { numberIn, placesIn, scenarioName } from './places.ts';
 
 export interface SweepPlan {
@@ -43,8 +44,25 @@ export function planSweep(asked: SweepSpec, compiled: CompiledModel): PlannedSwe
   const measures = measuresOf(asked, compiled, told);
   const scenarios = scenariosCompared(asked, compiled, told);
   const design = factors.length === 0 || findings.length > 0 ? null : designOf(asked, factors, told);
-  if (design !== null) weigh({ design, measures, scenarios }, compiled, told);
+  if (design !== null) {
+    checkFits(design, compiled, told);
+    weigh({ design, measures, scenarios }, compiled, told);
+  }
   return { plan: design === null || findings.length > 0 ? null : { design, measures, scenarios }, findings };
+}
+
+/** Refuses values that the text of a model could not have at their place either. */
+function checkFits(design: DesignPlan, { spec }: CompiledModel, told: Told): void {
+  for (const factor of design.factors) {
+    const misfit = misfitOf(spec, factor, design);
+    if (misfit === null) continue;
+    const { found, expected, between } = misfit;
+    const path = design.design === 'list' ? ['list'] : ['over', factor.name];
+    told.fail('sweep-range', path, `\`${factor.name}\` would be ${found}`, {
+      expected,
+      ...(between ? { fix: `List the values one by one: \`${factor.name}: [A, B, C]\`.` } : {}),
+    });
+  }
 }
 
 class Told {

@@ -66,13 +66,18 @@ function checkNumber(scalar: SourceScalar, shape: Shape, subject: Subject, repor
     tellWrongType(scalar, shape, subject, report);
     return;
   }
-  const whole = shape.type !== 'integer' || Number.isInteger(value);
-  if (whole && Number.isFinite(value) && within(value, shape)) return;
+  if (takesNumber(shape, value)) return;
   put(
     report,
     { code: 'out-of-range', message: `\`${subject.label}\` is outside its limits`, span: scalar.span },
     { found: scalar.source, expected: expectationOf(shape), fix: percentInstead(value, shape) },
   );
+}
+
+/** Whether a number is of the sort and within the limits of a shape of numbers. */
+export function takesNumber(shape: Shape, value: number): boolean {
+  const whole = shape.type !== 'integer' || Number.isInteger(value);
+  return whole && Number.isFinite(value) && within(value, shape);
 }
 
 function percentInstead(value: number, { minimum, maximum }: Shape): string | undefined {

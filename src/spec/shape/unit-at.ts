@@ -1,8 +1,9 @@
-// What the language says of a number at its place in a spec: its unit, as the reference has it, and whether a name may stand there.
+// What the language says of a number at its place in a spec: its unit, as the reference has it, its limits, and whether
+// a name may stand there.
 import { actionSchemas } from '../schema/actions.ts';
 import type { SpecPath } from '../document.ts';
 import { CoreSchema, namedSchemas, type Spec } from '../schema/spec.ts';
-import { branchesOf, isSeveral, shapeOfKey, type Shape } from './shape.ts';
+import { branchesOf, isSeveral, shapeOfKey, sortOf, type Shape } from './shape.ts';
 
 /** Empty where it has none, or takes numbers of any. What multiplies a number has none either. */
 export function unitAt(spec: Spec, path: SpecPath): string {
@@ -19,6 +20,12 @@ const formats: readonly string[] = ['expression', 'share', 'length', 'area', 'pe
 export function takesExpression(spec: Spec, path: SpecPath): boolean {
   const shapes = shapesOnTheWay(spec, path).at(-1) ?? [];
   return shapes.flatMap(branchesOf).some(({ type, format }) => type === 'string' && formats.includes(format ?? ''));
+}
+
+/** The shape of a plain number there; undefined where none may stand. */
+export function numberAt(spec: Spec, path: SpecPath): Shape | undefined {
+  const shapes = shapesOnTheWay(spec, path).at(-1) ?? [];
+  return shapes.flatMap(branchesOf).find((shape) => sortOf(shape) === 'number');
 }
 
 /** What may stand at each step of a path. */
