@@ -241,9 +241,15 @@ function kernelRule(context: Context, name: string, spec: DispersalSpec): Disper
 /** Areas as they are in this year, where they are not the same in all. */
 function areasOf(context: Context): { readonly areaKm2?: Float64Array } {
   const { firstYear } = context.time;
-  const areas = context.patches.map(
-    (patch, p) => context.numbers.attribute('area', whereIn(context, p, firstYear)) ?? patch.areaKm2 ?? NaN,
-  );
+  const areas = context.patches.map((patch, p) => {
+    const where = whereIn(context, p, firstYear);
+    const written = where.attributes?.get('area');
+    const value = context.numbers.attribute('area', where) ?? patch.areaKm2 ?? NaN;
+    if (typeof written === 'object') {
+      withinBounds(context, { ...written, what: 'area' }, { value, bounds: 'from zero', patch: patch.name });
+    }
+    return value;
+  });
   return areas.every((area, p) => area === context.patches[p]?.areaKm2) ? {} : { areaKm2: Float64Array.from(areas) };
 }
 

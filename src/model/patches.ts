@@ -1,6 +1,5 @@
 // Patches in the order of their names, in kilometres and square kilometres, with their attributes for expressions.
 import { readMeasure, readQuantity } from '../spec/quantity.ts';
-import { namesIn } from '../spec/expression/names.ts';
 import type { Finding } from '../spec/finding.ts';
 import type { InlinePatchSpec, Spec } from '../spec/schema/spec.ts';
 import { onEllipsoid, onPlane, type Ground } from './geography.ts';
@@ -43,7 +42,7 @@ function firstToLast(a: Written & { readonly name: string }, b: Written & { read
 export function withFirstNumbers(
   { patches, attributes }: ResolvedPatches,
   numbers: Numbers,
-  firstYear: number,
+  { firstYear, findings }: { readonly firstYear: number; readonly findings: Finding[] },
 ): readonly Patch[] {
   return patches.map((patch, p) => {
     const own = attributes[p] ?? new Map<string, Attribute>();
@@ -54,7 +53,9 @@ export function withFirstNumbers(
       const where = { year: firstYear, attributes: own, patch: patch.name, dimension: written.dimension };
       return numbers.value(written.expression, written.path, where);
     };
-    return { ...patch, areaKm2: first('area', patch.areaKm2), capacity: first('capacity', patch.capacity) };
+    const areaKm2 = first('area', patch.areaKm2);
+    if (areaKm2 !== null && areaKm2 <= 0) findings.push(noArea(patch.fileOrder, `${areaKm2} km2`));
+    return { ...patch, areaKm2, capacity: first('capacity', patch.capacity) };
   });
 }
 
@@ -153,26 +154,27 @@ function areaOf(
   area: number | string,
   { i, findings }: { readonly i: number; readonly findings: Finding[] },
 ): Exclude<Attribute, string> | null {
-  const measure = readMeasure(area, 'area');
-  if (typeof area === 'string' && measure.ok && namesIn(measure.ast).length > 0) {
+  const read = readQuantity(area, 'area');
+  if (typeof area === 'string' && !read.ok && readMeasure(area, 'area').ok) {
     return { expression: area, path: ['patches', i, 'area'], dimension: 'area' };
   }
-  const read = readQuantity(area, 'area');
   if (read.ok && read.value > 0) return read.value;
-  const path = ['patches', i, 'area'];
-  if (read.ok) {
-    findings.push({
-      severity: 'error',
-      code: 'out-of-range',
-      message: 'A patch has an area above zero',
-      path,
-      details: { found: String(area), expected: 'such as `140 ha`' },
-    });
-  } else {
+  if (read.ok) findings.push(noArea(i, String(area)));
+  else {
     const { code, message, span, ...details } = read.error;
-    findings.push({ severity: 'error', path, code, message, span, details });
+    findings.push({ severity: 'error', path: ['patches', i, 'area'], code, message, span, details });
   }
   return null;
+}
+
+function noArea(fileOrder: number, found: string): Finding {
+  return {
+    severity: 'error',
+    code: 'out-of-range',
+    message: 'A patch has an area above zero',
+    path: ['patches', fileOrder, 'area'],
+    details: { found, expected: 'such as `140 ha`' },
+  };
 }
 
 function refuseRepeats(spec: Spec, findings: Finding[]): void {

@@ -65,7 +65,7 @@ function contextOf(spec: Spec, findings: Finding[]): Context {
   const time = { firstYear: spec['first-year'] ?? 1, steps: spec.years };
   const drivers = resolveDrivers(spec, time, findings);
   const numbers = new Numbers(namedExpressions(spec), { attributes, drivers, findings });
-  const patches = withFirstNumbers(resolved, numbers, time.firstYear);
+  const patches = withFirstNumbers(resolved, numbers, { firstYear: time.firstYear, findings });
   const defaults: string[] = [];
   const classes = resolveClasses(spec, findings);
   if (spec['first-year'] === undefined)

@@ -34,6 +34,17 @@ describe('effects on one thing', () => {
     ]);
   });
 
+  test('change areas from the first year on', () => {
+    const area = (effect: string): number => {
+      const deed = `  deed: { kind: habitat, in: North fen, area: ${effect} }\n`;
+      const { model } = compiledOf(fens({ actions: deed, scenarios: '  plan: [deed]\n' }), 'plan');
+      return model.patches.find(({ name }) => name === 'North fen')!.areaKm2!;
+    };
+    expect(area('{ add: 12 ha }')).toBeCloseTo(1.12, 12);
+    expect(area('{ add: -90 ha }')).toBeCloseTo(0.1, 12);
+    expect(area('{ set: 140 ha }')).toBe(1.4);
+  });
+
   test('hold in their years and grow in equal steps', () => {
     expect(
       capacities(['{ kind: habitat, in: North fen, capacity: { add: 80 }, from: 2033, over: 4 years }'], 8),

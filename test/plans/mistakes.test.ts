@@ -1,6 +1,7 @@
 // What is told of plans that cannot be meant.
 import { expect, test } from 'vitest';
 import { renderDiagnostics } from '../../src/diagnostic/render.ts';
+import { modelText } from '../golden/models.ts';
 import { errorsOf, tryText } from '../pipeline/compile-text.ts';
 import { fens } from './landscape.ts';
 
@@ -21,6 +22,8 @@ test.each([
   ['{ kind: habitat, in: Nort fen, capacity: { add: 9 } }', 'unknown-patch'],
   ['{ kind: habitat, in: North fen }', 'plan-shape'],
   ['{ kind: habitat, in: North fen, capacity: { add: -120 } }', 'missing-capacity'],
+  ['{ kind: habitat, in: North fen, area: { add: -900 ha } }', 'out-of-range'],
+  ['{ kind: habitat, in: North fen, area: { times: 0 } }', 'out-of-range'],
   ['{ kind: habitat, in: North fen, quality: { cover: { times: 2 } } }', 'plan-shape'],
   ['{ kind: habitat, in: North fen, capacity: { add: 9 }, from: 2090 }', 'year-outside'],
   ['{ kind: habitat, in: North fen, capacity: { add: 9 }, from: 2040, until: 2035 }', 'year-outside'],
@@ -48,6 +51,15 @@ test.each([
 ])('an action that is none: %s', (action, code) => {
   const name = action.split(':')[0] ?? '';
   expect(errorsOf(fens({ actions: `  ${action}\n`, scenarios: `  plan: [${name}]\n` }))).toEqual([code]);
+});
+
+test('an area below zero in later years is told where chances of arrival are made from areas', () => {
+  const clearing = 'actions:\n  clearing: { kind: habitat, in: Poplars, area: { add: -900 ha }, from: 2030 }';
+  const planned = modelText('owl-network').replace(
+    /^run: \{/mu,
+    `${clearing}\nscenarios: { plan: [clearing] }\nrun: { scenario: plan,`,
+  );
+  expect(errorsOf(planned)).toEqual(['negative-rate']);
 });
 
 test('a mistake in what an action lays is told at the action', () => {

@@ -162,6 +162,11 @@ test('numbers of every kind, over all models', () => {
   expect([...taken.keys()]).toEqual(expect.arrayContaining(shortWays));
 });
 
+test('an area that is none is refused by either way', () => {
+  const spec = specOf(readFileSync('models/owl-network.yaml', 'utf8'));
+  expect(heldAgainstCompiler(spec, ['patches.Poplars.area'], [1.05, 1, 0, 1, -1])).toBe(3);
+});
+
 test('points of a sweep have the same numbers by either way, whatever is swept', () => {
   const whole = specOf(readFileSync('models/which-plan-where.yaml', 'utf8'));
   const spec: Spec = { ...whole, years: 8, run: { replicates: 16, seed: 3 } };
