@@ -1,6 +1,6 @@
 // Set-up on a fresh machine: the packages of the lock file, and a browser for the tests of the page.
 import { spawnSync } from 'node:child_process';
-import { copyFileSync, existsSync, mkdirSync, readFileSync } from 'node:fs';
+import { copyFileSync, existsSync, lstatSync, mkdirSync, readFileSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -13,16 +13,19 @@ export function run(command, words, options = {}) {
   return done;
 }
 
-/** Installs what the lock file names, unless exactly that is installed already. */
+/** Installs what the lock file names, unless exactly that is installed already, or packages are linked from another folder. */
 export function installPackages() {
-  const [lock, mark] = [join(root, 'package-lock.json'), join(root, 'node_modules', '.skein-lock.json')];
+  const folder = join(root, 'node_modules');
+  const [lock, mark] = [join(root, 'package-lock.json'), join(folder, '.skein-lock.json')];
+  // Installing through a link would empty the folder of another copy.
+  if (lstatSync(folder, { throwIfNoEntry: false })?.isSymbolicLink()) return;
   if (existsSync(mark) && readFileSync(mark, 'utf8') === readFileSync(lock, 'utf8')) return;
   console.error('Installing the packages of package-lock.json ...');
   run(process.platform === 'win32' ? 'npm.cmd' : 'npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error'], {
     shell: process.platform === 'win32',
     stdio: ['ignore', 'ignore', 'inherit'],
   });
-  mkdirSync(join(root, 'node_modules'), { recursive: true });
+  mkdirSync(folder, { recursive: true });
   copyFileSync(lock, mark);
 }
 
