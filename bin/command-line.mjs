@@ -78,7 +78,12 @@ async function asFunction(text) {
     minifyWhitespace: true,
     lineLimit: 120,
   });
-  return `function (module, exports, require, __dirname) {${code}\n}`;
+  return `function (module, exports, require, __dirname) {${escaped(code)}\n}`;
+}
+
+/** esbuild leaves what is not ASCII in regular expressions and tagged templates, which may ask for their raw text; none here does. */
+function escaped(code) {
+  return code.replace(/[^\0-\x7f]/g, (unit) => `\\u${unit.charCodeAt(0).toString(16).padStart(4, '0')}`);
 }
 
 /** Commander can start other programs as its commands. None is one here, and Node's part for it takes a while to load. */

@@ -104,3 +104,15 @@ test('V8 refuses it under other flags', () => {
   const words = ['--no-opt', 'bin/skein.cjs', 'run', join(root, ponds), '--replicates', '3', '--json', '--quiet'];
   expect(node(folder, words)).toBe(run(root));
 });
+
+test('what is not ASCII comes through the scripts: signs that are read, and signs that are written', () => {
+  const folder = copied();
+  const model = readFileSync(join(root, ponds), 'utf8');
+  const written = model.replace(/^survival:.*$/m, 'survival: { juvenile: 0.1 × 3, adult: 0.7 − 0.1 }');
+  expect(written).not.toBe(model);
+  writeFileSync(join(folder, 'model.yaml'), written);
+  node(folder, ['bin/skein.cjs', 'report', 'model.yaml', '-o', 'page.html', '--quiet']);
+  const page = readFileSync(join(folder, 'page.html'), 'utf8');
+  expect(page).toMatch(/skein [\d.]+ · [0-9a-f]+/);
+  expect(page).not.toMatch(/[\u0080-\u009f]/);
+});
