@@ -11,9 +11,12 @@ import { applySettings, type Settings } from '../../src/spec/settings.ts';
 import { openEvaluator } from '../../src/sweep/point/evaluate.ts';
 import { buildBlock } from '../../src/compile/block.ts';
 import type { Compiled } from '../../src/compile/year-map.ts';
+import { batchesOf } from '../../src/kernel/batch.ts';
+import { openRunner } from '../../src/kernel/run.ts';
 import { buildLandscape } from '../../src/landscape/build.ts';
 import { resolveModel } from '../../src/model/resolve.ts';
 import { leading } from '../../src/numeric/leading.ts';
+import { student95 } from '../../src/numeric/student.ts';
 import { openDesign } from '../../src/sweep/design/design.ts';
 import type { Factor } from '../../src/sweep/design/factor.ts';
 import { manyPoints } from '../../src/sweep/point/many-points.ts';
@@ -118,6 +121,25 @@ test('a point that is a whole comparison has the chances and the cost of every p
   expect(numbers['cost [as now]']).toBe(0);
 });
 
+test('what is the same in all futures has no error, and the error of a mean has n − 1', () => {
+  const spec = specOf('reed-hare', { years: 12, replicates: 40 });
+  const at = evaluatorOf(spec, { over: { adult_survival: [0.57] }, compare: 'all', measures: ['cost', 'animals'] });
+  const { numbers } = at([0.57]);
+  expect(numbers['cost [rewet the wash]']).toBeGreaterThan(100_000);
+  expect(numbers['cost [rewet the wash] (standard error)']).toBe(0);
+  // Derived from the ends of what every future came to: s / √n, s with n − 1.
+  const { model, image } = compileSpec(specOf('reed-hare', { years: 12, replicates: 40 })).compiled!;
+  const ends = batchesOf(40)
+    .map(openRunner(image, { steps: 12, seed: model.seed }))
+    .flatMap(({ counts, lanes }) => {
+      const width = counts.length / 13;
+      return Array.from({ length: lanes }, (_, lane) => counts[12 * width + lane]!);
+    });
+  const mean = ends.reduce((sum, end) => sum + end, 0) / 40;
+  const variance = ends.reduce((sum, end) => sum + (end - mean) ** 2, 0) / 39;
+  expect(numbers['animals [as now] (standard error)']).toBeCloseTo(Math.sqrt(variance / 40), 9);
+});
+
 test('plans are told apart at a point as a comparison tells them, and their differences have its intervals', async () => {
   const spec = specOf('reed-hare', { years: 12, replicates: 40 });
   const at = evaluatorOf(spec, {
@@ -145,6 +167,11 @@ test('plans are told apart at a point as a comparison tells them, and their diff
         const square = (futures.onlyFrom + futures.onlyTo) / 40;
         const error = Math.sqrt((square - estimate * estimate) / 40);
         expect(numbers[`${beside} (standard error of the difference)`]).toBeCloseTo(error, 12);
+      }
+      // Derived: Student's interval is t standard errors to each side.
+      if (futures === null && method !== 'the two plans are one and the same model') {
+        const half = student95(39) * numbers[`${beside} (standard error of the difference)`]!;
+        expect(half).toBeCloseTo((interval.upper - interval.lower) / 2, 9);
       }
       if (method === 'the two plans are one and the same model') continue;
       expect(numbers[`${beside} (lower end of the difference)`]).toBeCloseTo(interval.lower, 9);

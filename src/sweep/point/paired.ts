@@ -1,6 +1,6 @@
 // Plans against each other at one point, in the same futures: by what a comparison tells them apart.
 import { excludesZero } from '../../compare/difference.ts';
-import { meanDifference, meanOf } from '../../compare/paired-mean.ts';
+import { meanDifference, meanOf, varianceOf } from '../../compare/paired-mean.ts';
 import { countPairs, pairedShareDifference, type Estimate } from '../../compare/paired-share.ts';
 import type { Quantity } from '../measures.ts';
 
@@ -17,10 +17,12 @@ export function pairedNumbers(quantity: Quantity, from: Futures, to: Futures): r
   const differences = differencesOf(from, to);
   if (differences.length === 0) return [NaN, NaN, NaN, NaN];
   const mean = meanOf(differences);
-  const squares = differences.reduce((sum, value) => sum + value * value, 0);
-  const spread = Math.max(0, squares / differences.length - mean * mean);
+  const n = differences.length;
+  const variance = varianceOf(differences, mean);
+  // Of shares as of each share by itself, with n; of means as their interval has it.
+  const spread = quantity.outcome === undefined ? variance : (variance * (n - 1)) / n;
   const { lower, upper } = pairedInterval(quantity, from, to);
-  return [mean, Math.sqrt(spread / differences.length), lower, upper];
+  return [mean, Math.sqrt(spread / n), lower, upper];
 }
 
 /** By plan 1 where it is the best one or cannot be told from it, else 0; NaN where no future ended. The first of equals is the best. */

@@ -12,10 +12,12 @@ import { isOfRuns, type Quantity } from '../measures.ts';
 const wholeColumn = 0;
 const firstPatchColumn = 1;
 
-/** Number, sum and sum of squares of what is asked of the finished runs. */
+/** What is asked of the finished runs. */
 interface Sum {
   readonly n: number;
   readonly sum: number;
+  /** Sums of the distances from the first value, and of their squares: of what is always the same both are 0. */
+  readonly apart: number;
   readonly squares: number;
 }
 
@@ -37,7 +39,8 @@ export class Tally {
     const ofRuns = quantities.filter(({ measure }) => isOfRuns(measure));
     const kept = keepsFutures ? ofRuns : [];
     this.#futures = new Map(kept.map(({ name }) => [name, new Float64Array(model.replicates).fill(NaN)]));
-    const half = (): Half => new Half(model, ofRuns, { moneyOf, futures: this.#futures });
+    const origins = new Map<string, number>();
+    const half = (): Half => new Half(model, ofRuns, { moneyOf, futures: this.#futures, origins });
     this.#halves = [half(), half()];
   }
 
@@ -56,19 +59,26 @@ export class Tally {
     }
   }
 
-  /** Value, standard error, first half, second half of a quantity; NaN where no run was finished. */
+  /**
+   * Value, standard error, first half, second half of a quantity; NaN where no run was finished, and the standard error of a mean of
+   * one. That of a share p is √(p (1 − p) / n), that of a mean s / √n, s with n − 1.
+   */
   numbersOf(quantity: Quantity): readonly [number, number, number, number] {
     const [first, second] = [this.#halves[0].sumOf(quantity), this.#halves[1].sumOf(quantity)];
     const n = first.n + second.n;
-    const mean = (first.sum + second.sum) / n;
-    const spread = Math.max(0, (first.squares + second.squares) / n - mean * mean);
-    return [mean, Math.sqrt(spread / n), first.sum / first.n, second.sum / second.n];
+    const apart = first.apart + second.apart;
+    const squares = Math.max(0, first.squares + second.squares - (apart * apart) / n);
+    const freedom = quantity.outcome === undefined ? n - 1 : n;
+    const error = Math.sqrt(squares / freedom / n);
+    return [(first.sum + second.sum) / n, error, first.sum / first.n, second.sum / second.n];
   }
 }
 
 interface HalfOptions {
   readonly moneyOf: MoneyOf | null;
   readonly futures: ReadonlyMap<string, Float64Array>;
+  /** The first value of each measure, of both halves. */
+  readonly origins: Map<string, number>;
 }
 
 class Half {
@@ -78,23 +88,25 @@ class Half {
   /** By outcome; null where no quantity asks for it. */
   readonly #hits: readonly (Hits | null)[];
   /** By quantity that is no chance. */
-  readonly #sums: ReadonlyMap<string, { sum: number; squares: number }>;
+  readonly #sums: ReadonlyMap<string, { sum: number; apart: number; squares: number }>;
+  readonly #origins: Map<string, number>;
   readonly #moneyOf: MoneyOf | null;
   readonly #firstHandled: number;
   #runs = 0;
 
-  constructor(model: Model, quantities: readonly Quantity[], { moneyOf, futures }: HalfOptions) {
+  constructor(model: Model, quantities: readonly Quantity[], { moneyOf, futures, origins }: HalfOptions) {
     const { steps, replicates, outcomes } = model;
     this.#model = model;
     this.#quantities = quantities;
     this.#futures = futures;
+    this.#origins = origins;
     this.#moneyOf = moneyOf;
     this.#firstHandled = firstHandledColumn(model);
     this.#hits = outcomes.map(({ event, counts }, k) =>
       quantities.some(({ outcome }) => outcome === k) ? new Hits({ event, counts, steps, replicates }) : null,
     );
     const others = quantities.filter(({ outcome }) => outcome === undefined);
-    this.#sums = new Map(others.map(({ measure }) => [measure, { sum: 0, squares: 0 }]));
+    this.#sums = new Map(others.map(({ measure }) => [measure, { sum: 0, apart: 0, squares: 0 }]));
   }
 
   take({ first, counts }: BatchCounts, lane: number): void {
@@ -113,8 +125,12 @@ class Half {
     });
     for (const [measure, sums] of this.#sums) {
       const value = this.#valueOf(measure, counts.subarray(lane), columns);
+      const origin = this.#origins.get(measure) ?? value;
+      this.#origins.set(measure, origin);
+      const apart = value - origin;
       sums.sum += value;
-      sums.squares += value * value;
+      sums.apart += apart;
+      sums.squares += apart * apart;
       this.#futures.get(measure)?.fill(value, first + lane, first + lane + 1);
     }
   }
@@ -152,8 +168,8 @@ class Half {
   sumOf({ measure, outcome }: Quantity): Sum {
     const hits = outcome === undefined ? null : this.#hits[outcome];
     if (hits === null || hits === undefined)
-      return { n: this.#runs, ...(this.#sums.get(measure) ?? { sum: NaN, squares: NaN }) };
+      return { n: this.#runs, ...(this.#sums.get(measure) ?? { sum: NaN, apart: NaN, squares: NaN }) };
     const came = measure === 'chance' ? hits.firstAt.reduce((sum, runs) => sum + runs, 0) : (hits.nowAt.at(-1) ?? 0);
-    return { n: this.#runs, sum: came, squares: came };
+    return { n: this.#runs, sum: came, apart: came, squares: came };
   }
 }
