@@ -111,3 +111,39 @@ test('growth goes through 1 under a scenario of any name, and a difference of gr
     ['growth [mow less often less as now]', null],
   ]);
 });
+
+test('plans that come to the same are equal, though the halves of their replicates differ and are not of one size', () => {
+  // Derived: 5 of 51 futures each, 1 and 4 of them in the halves, or 2 and 3; of 25 and 26 futures.
+  const name = 'chance: few';
+  const swept = sweptOf(name, [
+    [5 / 51, 5 / 51],
+    [5 / 51, 6 / 51],
+  ]);
+  const numbers = new Map([
+    ...swept.numbers,
+    [`${name} [as now] (first half)`, Float64Array.of(1 / 25, 1 / 25)],
+    [`${name} [as now] (second half)`, Float64Array.of(4 / 26, 4 / 26)],
+    [`${name} [mow less often] (first half)`, Float64Array.of(2 / 25, 2 / 25)],
+    [`${name} [mow less often] (second half)`, Float64Array.of(3 / 26, 4 / 26)],
+  ]);
+  const { rankings, quantities } = summariseSweep({ ...swept, numbers });
+  expect(rankings[0]!.scenarios.map(({ best }) => best)).toEqual([0.25, 0.75]);
+  expect(quantities.find((one) => one.name.includes('less as now'))!.mean).toBeCloseTo(0.5 / 51, 12);
+});
+
+test('a measure from one run ranks by that run', () => {
+  const name = 'animals';
+  const swept = sweptOf(name, [
+    [5, 5],
+    [6, 7],
+  ]);
+  const none = Float64Array.of(NaN, NaN);
+  const numbers = new Map([
+    ...swept.numbers,
+    ...scenarios.map((one) => [`${name} [${one}] (first half)`, none] as const),
+    ...scenarios.map((one) => [`${name} [${one}] (second half)`, swept.numbers.get(`${name} [${one}]`)!] as const),
+  ]);
+  const [ranking] = summariseSweep({ ...swept, numbers }).rankings;
+  expect(ranking!.scenarios.map(({ best }) => best)).toEqual([0, 1]);
+  expect(ranking!.agree).toBeNull();
+});

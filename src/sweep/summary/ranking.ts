@@ -5,6 +5,8 @@ import { groupsOf, type RowsAsked } from './response.ts';
 
 export interface RankedScenario {
   readonly name: string;
+  /** By point, over all replicates: the two halves need not be of one size, and do not add up to the same last digit where scenarios are equal. */
+  readonly whole: Float64Array;
   readonly observed: Observed;
   /** By point 1 where it is best or cannot be told from the best; null without chance, where numbers say it. */
   readonly perhapsBest: Int8Array | null;
@@ -76,13 +78,8 @@ export function rankScenarios({ quantity, better, scenarios, factors, sampled, o
   const sign = better === 'less' ? 1 : -1;
   const half = (pick: (observed: Observed) => Float64Array) => scenarios.map(({ observed }) => pick(observed));
   const [first, second] = [half((observed) => observed.first), half((observed) => observed.second)];
-  const points = first[0]?.length ?? 0;
-  const worst = scenarios.map((_, s) =>
-    Float64Array.from(
-      { length: points },
-      (_unused, row) => sign * ((first[s]?.[row] ?? NaN) + (second[s]?.[row] ?? NaN)),
-    ),
-  );
+  const worst = scenarios.map(({ whole }) => whole.map((value) => sign * value));
+  const points = worst[0]?.length ?? 0;
   // A measure may be missing under one scenario only, such as animals that stand still.
   const isKnown = (row: number): boolean => worst.every((values) => !Number.isNaN(values[row] ?? NaN));
   const known = Uint32Array.from({ length: points }, (_, row) => row).filter(isKnown);
@@ -143,10 +140,17 @@ interface Known {
   readonly sign: number;
 }
 
-function agreement(first: readonly Float64Array[], second: readonly Float64Array[], { known, sign }: Known): number {
+/** Null where the halves have no runs. */
+function agreement(
+  first: readonly Float64Array[],
+  second: readonly Float64Array[],
+  { known, sign }: Known,
+): number | null {
+  const inBoth = known.filter((row) => [...first, ...second].every((own) => !Number.isNaN(own[row] ?? NaN)));
+  if (inBoth.length === 0) return null;
   const bestOf = (values: readonly Float64Array[], row: number): number =>
     values.reduce((top, own, s) => (sign * (own[row] ?? 0) < sign * (values[top]?.[row] ?? 0) ? s : top), 0);
-  return known.filter((row) => bestOf(first, row) === bestOf(second, row)).length / known.length;
+  return inBoth.filter((row) => bestOf(first, row) === bestOf(second, row)).length / inBoth.length;
 }
 
 interface Ranked {

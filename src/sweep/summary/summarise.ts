@@ -3,7 +3,7 @@
 import { isSampled, type DesignName } from '../design/design.ts';
 import { isText, levelsOf, type Value } from '../design/factor.ts';
 import { ownUnit } from '../manifest.ts';
-import { noiseShare, wholeAt, type Observed } from '../sensitivity/observed.ts';
+import { noiseShare, type Observed } from '../sensitivity/observed.ts';
 import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
 import { screening, type FactorScreen } from '../sensitivity/screening.ts';
 import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
@@ -96,6 +96,8 @@ interface QuantityColumn {
   readonly name: string;
   readonly unit: string;
   readonly meaning: string;
+  /** By point, over all replicates. */
+  readonly whole: Float64Array;
   readonly observed: Observed;
   /** Of a difference from runs: by point 1 where it is above 0 for sure, −1 below, else 0. */
   readonly told: Int8Array | null;
@@ -106,10 +108,11 @@ interface QuantityColumn {
 function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
   return manifest.quantities.flatMap((quantity) => {
     const column = manifest.columns.find(({ name }) => name === columnOf(quantity.name, quantity.scenario));
+    const whole = column === undefined ? undefined : numbers.get(column.name);
     const observed = column === undefined ? null : observedOf(numbers, column.name);
-    return column === undefined || observed === null
+    return column === undefined || observed === null || whole === undefined
       ? []
-      : [{ ...column, observed, told: null, growth: quantity.name === 'growth' }];
+      : [{ ...column, whole, observed, told: null, growth: quantity.name === 'growth' }];
   });
 }
 
@@ -128,7 +131,8 @@ function differenceColumns(swept: Swept): readonly QuantityColumn[] {
     const own = scenario === null || scenario === base ? null : observedOf(numbers, columnOf(name, scenario));
     const first = observedOf(numbers, columnOf(name, base));
     const column = manifest.columns.find((one) => one.name === columnOf(name, base));
-    if (own === null || first === null || column === undefined) return [];
+    const [ownWhole, firstWhole] = [scenario, base].map((one) => numbers.get(columnOf(name, one)));
+    if (own === null || first === null || column === undefined || !ownWhole || !firstWhole) return [];
     const half = own.first === own.second;
     const less = (a: Float64Array, b: Float64Array) => a.map((value, i) => value - (b[i] ?? NaN));
     const one = less(own.first, first.first);
@@ -136,7 +140,10 @@ function differenceColumns(swept: Swept): readonly QuantityColumn[] {
     const unit = column.unit === 'share' ? differenceOfShares : column.unit;
     const meaning = `${name} of ${String(scenario)} less that of ${base}, in the same futures.`;
     const told = swept.told.get(columnOf(name, scenario)) ?? null;
-    return [{ name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, observed, told, growth: false }];
+    const whole = less(ownWhole, firstWhole);
+    return [
+      { name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, whole, observed, told, growth: false },
+    ];
   });
 }
 
@@ -151,18 +158,17 @@ function rankingsOf(swept: Swept, orderOf: OrderOf): readonly Ranking[] {
   return manifest.quantities.flatMap(({ name, scenario, better }) => {
     if (scenario !== base || better === null) return [];
     const ranked = scenarios.flatMap((one) => {
-      const observed = observedOf(numbers, columnOf(name, one));
+      const [whole, observed] = [numbers.get(columnOf(name, one)), observedOf(numbers, columnOf(name, one))];
       const perhapsBest = swept.perhapsBest.get(columnOf(name, one)) ?? null;
-      return observed === null ? [] : [{ name: one, observed, perhapsBest }];
+      return observed === null || whole === undefined ? [] : [{ name: one, whole, observed, perhapsBest }];
     });
     return [rankScenarios({ quantity: name, better, scenarios: ranked, factors, sampled: isSampled(design), orderOf })];
   });
 }
 
 function summariseQuantity(swept: Swept, column: QuantityColumn, orderOf: OrderOf): QuantitySummary {
-  const { name, unit, meaning, observed, told, growth } = column;
+  const { name, unit, meaning, whole, observed, told, growth } = column;
   const { design, runs } = swept.manifest;
-  const whole = swept.numbers.get(name) ?? observed.first.map((_, row) => wholeAt(observed, row));
   const known = whole.some(Number.isNaN) ? whole.filter((value) => !Number.isNaN(value)) : whole;
   const count = design.factors.length;
   const shares = design.design === 'sobol indices' ? sharesOfVariance(observed, count) : null;
