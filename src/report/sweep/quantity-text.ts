@@ -1,10 +1,6 @@
 // What a sweep says of one measure in a terminal: its range, and what matters most for it.
-import {
-  differenceOfShares,
-  type FactorSummary,
-  type QuantitySummary,
-  type SweepSummary,
-} from '../../sweep/summary/summarise.ts';
+import { differenceOfShares } from '../../sweep/summary/columns.ts';
+import type { FactorSummary, QuantitySummary, SweepSummary } from '../../sweep/summary/summarise.ts';
 import { percent } from '../../view/number.ts';
 import { fittedColumns } from '../fitted-columns.ts';
 import { bold, printable, wrap } from '../terminal.ts';

@@ -1,21 +1,21 @@
 // What a sweep says in a terminal: which plan is best where, or for each measure its range and what matters most, the answer first.
-import { toldAssumes, type SweepSummary } from '../../sweep/summary/summarise.ts';
+import { toldAssumes } from '../../sweep/summary/assumptions.ts';
+import type { SweepSummary } from '../../sweep/summary/summarise.ts';
 import { bold, dim, joinBlocks, printable, wrap } from '../terminal.ts';
 import { quantityText } from './quantity-text.ts';
 import { rankingText } from './ranking-text.ts';
 import type { SweepTextStyle } from './style.ts';
-import { withUnit } from './words.ts';
+import { runsWords, withUnit } from './words.ts';
 
 export function sweepText(summary: SweepSummary, style: SweepTextStyle): string {
-  const { model, points, design, failed, quantities, rankings, assumptions, runs } = summary;
-  const of = runs === null ? '' : `, ${runs.replicates.toLocaleString('en')} runs of ${runs.years} years each`;
+  const { model, points, design, failed, quantities, rankings, assumptions } = summary;
   const swept = summary.factors.map(({ name }) => withUnit(name, summary));
   // Of plans, which is best where comes first, and all else is for those who ask.
   const isShort = rankings.length > 0 && !style.details;
   const taken = isShort ? assumptions.filter((text) => text === toldAssumes) : assumptions;
   return joinBlocks([
     bold(printable(model), style),
-    wrap(`${points.toLocaleString('en')} points (${design})${of}, over ${swept.join(', ')}`, style),
+    wrap(`${points.toLocaleString('en')} points (${design})${runsWords(summary)}, over ${swept.join(', ')}`, style),
     failed.points === 0 ? '' : failedText(summary, style),
     ...rankings.map((ranking) => rankingText(ranking, summary, style)),
     ...(isShort ? [] : quantities.map((quantity) => quantityText(quantity, summary, style))),

@@ -1,6 +1,7 @@
 // Numbers and names of a sweep as readers meet them, the same in a terminal and on the page.
 import type { FactorRanking, Switch } from '../../sweep/summary/ranking.ts';
-import { differenceOfShares, type QuantitySummary, type SweepSummary } from '../../sweep/summary/summarise.ts';
+import { differenceOfShares } from '../../sweep/summary/columns.ts';
+import type { QuantitySummary, SweepSummary } from '../../sweep/summary/summarise.ts';
 import { wilson } from '../../results/wilson.ts';
 import { percent } from '../../view/number.ts';
 
@@ -8,6 +9,13 @@ import { percent } from '../../view/number.ts';
 export function withUnit(name: string, { factors }: SweepSummary): string {
   const unit = factors.find((one) => one.name === name)?.unit ?? '';
   return unit === '' ? name : `${name} (${unit})`;
+}
+
+/** How much was run at each point, such as `200 runs of 50 years`; empty without chance. */
+export function runsWords({ runs }: SweepSummary): string {
+  if (runs === null) return '';
+  const { replicates, years } = runs;
+  return `, ${replicates.toLocaleString('en')} ${replicates === 1 ? 'run' : 'runs'} of ${years} ${years === 1 ? 'year' : 'years'} each`;
 }
 
 /** What a chance of nothing seen may still be. */

@@ -3,16 +3,15 @@
 import { isSampled, type DesignName } from '../design/design.ts';
 import { isText, levelsOf, type Value } from '../design/factor.ts';
 import { ownUnit } from '../manifest.ts';
-import { noiseShare, type Observed } from '../sensitivity/observed.ts';
+import { noiseShare } from '../sensitivity/observed.ts';
 import { partialRankCorrelations, type RankCorrelation } from '../sensitivity/rank-correlation.ts';
 import { screening, type FactorScreen } from '../sensitivity/screening.ts';
 import { sharesOfVariance, type FactorShares } from '../sensitivity/shares-of-variance.ts';
+import { assumptionsOf } from './assumptions.ts';
+import { differenceColumns, observedOf, quantityColumns, type QuantityColumn } from './columns.ts';
 import { rankScenarios, type Ranking } from './ranking.ts';
 import { crossings, openOrders, responseTo, type Response, type RowsAsked } from './response.ts';
 import { columnOf, type Swept } from './swept.ts';
-
-/** Unit of a chance less another one. */
-export const differenceOfShares = 'difference of shares';
 
 export interface SweepSummary {
   readonly format: 'skein-sweep-summary/1';
@@ -90,61 +89,6 @@ export function summariseSweep(swept: Swept): SweepSummary {
 function unitOf({ columns }: Swept['manifest'], name: string): string {
   const unit = columns.find((one) => one.name === name)?.unit ?? '';
   return unit === ownUnit ? '' : unit;
-}
-
-interface QuantityColumn {
-  readonly name: string;
-  readonly unit: string;
-  readonly meaning: string;
-  /** By point, over all replicates. */
-  readonly whole: Float64Array;
-  readonly observed: Observed;
-  /** Of a difference from runs: by point 1 where it is above 0 for sure, −1 below, else 0. */
-  readonly told: Int8Array | null;
-  /** Whether it is the growth of the model, of which it matters where it goes through 1. */
-  readonly growth: boolean;
-}
-
-function quantityColumns({ manifest, numbers }: Swept): readonly QuantityColumn[] {
-  return manifest.quantities.flatMap((quantity) => {
-    const column = manifest.columns.find(({ name }) => name === columnOf(quantity.name, quantity.scenario));
-    const whole = column === undefined ? undefined : numbers.get(column.name);
-    const observed = column === undefined ? null : observedOf(numbers, column.name);
-    return column === undefined || observed === null || whole === undefined
-      ? []
-      : [{ ...column, whole, observed, told: null, growth: quantity.name === 'growth' }];
-  });
-}
-
-function observedOf(numbers: Swept['numbers'], name: string): Observed | null {
-  const whole = numbers.get(name);
-  if (whole === undefined) return null;
-  return { first: numbers.get(`${name} (first half)`) ?? whole, second: numbers.get(`${name} (second half)`) ?? whole };
-}
-
-/** Of each scenario that is compared against the first, in the same futures. */
-function differenceColumns(swept: Swept): readonly QuantityColumn[] {
-  const { manifest, numbers } = swept;
-  const [base] = manifest.scenarios;
-  if (base === undefined) return [];
-  return manifest.quantities.flatMap(({ name, scenario }) => {
-    const own = scenario === null || scenario === base ? null : observedOf(numbers, columnOf(name, scenario));
-    const first = observedOf(numbers, columnOf(name, base));
-    const column = manifest.columns.find((one) => one.name === columnOf(name, base));
-    const [ownWhole, firstWhole] = [scenario, base].map((one) => numbers.get(columnOf(name, one)));
-    if (own === null || first === null || column === undefined || !ownWhole || !firstWhole) return [];
-    const half = own.first === own.second;
-    const less = (a: Float64Array, b: Float64Array) => a.map((value, i) => value - (b[i] ?? NaN));
-    const one = less(own.first, first.first);
-    const observed = { first: one, second: half ? one : less(own.second, first.second) };
-    const unit = column.unit === 'share' ? differenceOfShares : column.unit;
-    const meaning = `${name} of ${String(scenario)} less that of ${base}, in the same futures.`;
-    const told = swept.told.get(columnOf(name, scenario)) ?? null;
-    const whole = less(ownWhole, firstWhole);
-    return [
-      { name: `${name} [${String(scenario)} less ${base}]`, unit, meaning, whole, observed, told, growth: false },
-    ];
-  });
 }
 
 type OrderOf = RowsAsked['orderOf'];
@@ -274,38 +218,3 @@ function reachOf({ groups }: Response): number {
   const means = groups.map(({ mean }) => mean);
   return Math.max(...means) - Math.min(...means);
 }
-
-interface Drawn {
-  readonly runs: boolean;
-  /** Whether plans are told apart. */
-  readonly told: boolean;
-}
-
-function assumptionsOf(design: DesignName, { runs, told }: Drawn): readonly string[] {
-  const own: Readonly<Record<DesignName, readonly string[]>> = {
-    grid: [ranksAssume, explainedAssumes],
-    list: [ranksAssume, explainedAssumes],
-    'latin hypercube': [ranksAssume, explainedAssumes],
-    sobol: [ranksAssume, explainedAssumes],
-    'one at a time': [
-      'One number at a time says nothing of what two do together, and holds around the model as it stands only.',
-    ],
-    'sobol indices': [
-      'Shares of the variance (Saltelli et al. 2010, Jansen 1999) take the numbers as independent of each other and every value of their ranges as it is drawn; they answer to the ranges that were given. Bands are from drawing the rows again (95 %).',
-    ],
-    morris: [
-      'Screening (Morris 1991) ranks; it does not share out a variance. Effects are over the whole range of a number. A spread as large as the mean size says that the number acts together with others or not along a line.',
-    ],
-  };
-  const noise =
-    'Every point has the same futures (common random numbers). What comes from the number of replicates is told apart by running each point in two halves: products of one half with the other hold no noise on average.';
-  return [...own[design], ...(runs ? [noise] : []), ...(told ? [toldAssumes] : [])];
-}
-
-/** What telling plans apart rests on. */
-export const toldAssumes =
-  'Plans are told apart at a point where the 95 % interval of their paired difference does not hold 0 (of chances by Bonett & Price 2012, else by Student’s t), at each point by itself: of a hundred points at which two plans are equally good about five tell them apart by chance.';
-const ranksAssume =
-  'Partial rank correlations hold where the measure only rises or only falls with a number; noise of replicates draws them towards 0.';
-const explainedAssumes =
-  'The share of the variance between the values of one number takes the numbers as independent of each other, and leaves out what they do together.';
