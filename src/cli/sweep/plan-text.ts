@@ -1,18 +1,13 @@
 // What a sweep will do, in words, before it begins.
+import { counted, runsWords } from '../../report/sweep/words.ts';
 import { openDesign } from '../../sweep/design/design.ts';
 import type { Value } from '../../sweep/design/factor.ts';
 import { ownUnit, type Manifest } from '../../sweep/manifest.ts';
 
-const counted = (n: number, one: string, more = `${one}s`): string =>
-  `${n.toLocaleString('en')} ${n === 1 ? one : more}`;
-
 export function planText({ model, design, measures, points, parts, runs, columns }: Manifest): string {
   const names = design.factors.map(({ name }) => name);
   const first = openDesign(design).at(0);
-  const asked =
-    runs === null
-      ? ''
-      : `, from ${counted(runs.replicates, 'run')} of ${counted(runs.years, 'year')} each (seed ${runs.seed})`;
+  const asked = runs === null ? '' : `, from ${runsWords(runs, names)} (seed ${runs.seed})`;
   return [
     `${model}: ${counted(points, 'point')} (${design.design}) in ${counted(parts, 'part')}`,
     `  over      ${names.map((name) => name + unitIn(columns, name)).join(', ')}`,

@@ -12,14 +12,14 @@ import { drawResponse } from '../../view/sweep/response-curve.ts';
 import { scrolling } from '../../view/table.ts';
 import { writeDocument } from '../document.ts';
 import { styleSheet } from '../style.ts';
-import { noneSeen, numberText, preferredWords, runsWords, three, withUnit } from './words.ts';
+import { andRuns, noneSeen, numberText, preferredWords, three, withUnit } from './words.ts';
 
 export function sweepPage(swept: Swept, summary: SweepSummary): string {
   const maps = heatMaps(swept, summary);
   const preferred = preferredMaps(swept, summary);
   const { model, points, design, assumptions, tool, hash } = summary;
   const body = mark`<h1>${model}</h1>
-<p id="answer">${points.toLocaleString('en')} points (${design})${runsWords(summary)}, over ${summary.factors.map(({ name }) => withUnit(name, summary)).join(', ')}.</p>
+<p id="answer">${points.toLocaleString('en')} points (${design})${andRuns(summary)}, over ${summary.factors.map(({ name }) => withUnit(name, summary)).join(', ')}.</p>
 ${summary.rankings.map((ranking) => rankingSection(ranking, preferred, summary))}
 ${summary.quantities.map((quantity) => quantitySection(quantity, summary, maps))}
 <h2>What these numbers take for granted</h2>

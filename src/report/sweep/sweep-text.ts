@@ -5,7 +5,7 @@ import { bold, dim, joinBlocks, printable, wrap } from '../terminal.ts';
 import { quantityText } from './quantity-text.ts';
 import { rankingText } from './ranking-text.ts';
 import type { SweepTextStyle } from './style.ts';
-import { runsWords, withUnit } from './words.ts';
+import { andRuns, withUnit } from './words.ts';
 
 export function sweepText(summary: SweepSummary, style: SweepTextStyle): string {
   const { model, points, design, failed, quantities, rankings, assumptions } = summary;
@@ -15,7 +15,7 @@ export function sweepText(summary: SweepSummary, style: SweepTextStyle): string 
   const taken = isShort ? assumptions.filter((text) => text === toldAssumes) : assumptions;
   return joinBlocks([
     bold(printable(model), style),
-    wrap(`${points.toLocaleString('en')} points (${design})${runsWords(summary)}, over ${swept.join(', ')}`, style),
+    wrap(`${points.toLocaleString('en')} points (${design})${andRuns(summary)}, over ${swept.join(', ')}`, style),
     failed.points === 0 ? '' : failedText(summary, style),
     ...rankings.map((ranking) => rankingText(ranking, summary, style)),
     ...(isShort ? [] : quantities.map((quantity) => quantityText(quantity, summary, style))),

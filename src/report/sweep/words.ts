@@ -5,24 +5,40 @@ import type { QuantitySummary, SweepSummary } from '../../sweep/summary/summaris
 import { wilson } from '../../results/wilson.ts';
 import { percent } from '../../view/number.ts';
 
+type Runs = Omit<NonNullable<SweepSummary['runs']>, 'seed'>;
+
 /** A swept number as readers meet it, such as `patches.Pond.capacity (animals)`. */
 export function withUnit(name: string, { factors }: SweepSummary): string {
   const unit = factors.find((one) => one.name === name)?.unit ?? '';
   return unit === '' ? name : `${name} (${unit})`;
 }
 
-/** How much was run at each point, such as `200 runs of 50 years`; empty without chance. */
-export function runsWords({ runs }: SweepSummary): string {
-  if (runs === null) return '';
-  const { replicates, years } = runs;
-  return `, ${replicates.toLocaleString('en')} ${replicates === 1 ? 'run' : 'runs'} of ${years} ${years === 1 ? 'year' : 'years'} each`;
+/** A number of things by their name, which takes an s where it is not one. */
+export function counted(n: number, one: string): string {
+  return `${n.toLocaleString('en')} ${n === 1 ? one : `${one}s`}`;
+}
+
+/** How much is run at each point, such as `200 runs of 50 years each`; without the years where they are swept. */
+export function runsWords({ replicates, years }: Runs, swept: readonly string[]): string {
+  const length = swept.includes('years') ? '' : ` of ${counted(years, 'year')}`;
+  return `${counted(replicates, 'run')}${length} each`;
+}
+
+/** The same behind what else a sweep is; empty without chance. */
+export function andRuns({ runs, factors }: SweepSummary): string {
+  return runs === null
+    ? ''
+    : `, ${runsWords(
+        runs,
+        factors.map(({ name }) => name),
+      )}`;
 }
 
 /** What a chance of nothing seen may still be. */
 export function noneSeen({ unit, least }: QuantitySummary, { runs }: SweepSummary): string {
   if (unit !== 'share' || least !== 0 || runs === null) return '';
   const most = percent(wilson(0, runs.replicates).upper);
-  return `; 0\u00a0% of ${runs.replicates.toLocaleString('en')} runs of a point means at most ${most} (95\u00a0%)`;
+  return `; 0\u00a0% of ${counted(runs.replicates, 'run')} of a point means at most ${most} (95\u00a0%)`;
 }
 
 /** A number of a measure, for readers. */
